@@ -1,0 +1,77 @@
+import { createStore, type StoreApi } from 'zustand/vanilla';
+import type {
+  Analysis,
+  Columns,
+  ColumnsRequest,
+  HeartResults,
+  PlacedBeat,
+  SeparationFacts,
+} from '../../workers/analysis-api';
+import type { Findings } from '../recording/findings';
+import type { Recording } from '../recording/recording';
+import type { SlowWaveRhythm } from '../recording/rhythm';
+import type { RoleReasons } from '../recording/roles';
+
+/** Long work that the person can watch and stop. */
+export interface Progress {
+  readonly step: string;
+  readonly done: number;
+  readonly stop: () => void;
+}
+
+/** What the worker has found, as the panes read it. Only the study's controller writes here. */
+export interface AnalysisState {
+  readonly recording: Recording | null;
+  /** False while the file itself must be chosen again: figures stand, traces cannot be drawn. */
+  readonly fileAtHand: boolean;
+  readonly reasons: RoleReasons | null;
+  readonly separation: readonly SeparationFacts[];
+  readonly stomach: readonly SlowWaveRhythm[];
+  readonly heart: HeartResults | null;
+  readonly findings: Findings | null;
+  /** Edit number the results belong to; older than the session's: show grey. */
+  readonly edit: number;
+  readonly progress: Progress | null;
+  /** Grows when drawn signals change (study, roles, route): panes ask for columns again. */
+  readonly signalVersion: number;
+}
+
+export type AnalysisStore = StoreApi<AnalysisState>;
+
+/** Columns and beat places on demand; given to the panes by the shell. Null when superseded or failed. */
+export interface SignalAccess {
+  columns(request: ColumnsRequest): Promise<Columns | null>;
+  placeBeat(nearS: number): Promise<PlacedBeat | null>;
+}
+
+const EMPTY: AnalysisState = {
+  recording: null,
+  fileAtHand: false,
+  reasons: null,
+  separation: [],
+  stomach: [],
+  heart: null,
+  findings: null,
+  edit: 0,
+  progress: null,
+  signalVersion: 0,
+};
+
+export const createAnalysisStore = (): AnalysisStore => createStore<AnalysisState>()(() => EMPTY);
+
+/** Blanks every pane, before another study is opened. */
+export function blankAnalysis(store: AnalysisStore): void {
+  store.setState({ ...EMPTY, signalVersion: store.getState().signalVersion + 1 });
+}
+
+/** Takes over a reply: parts that did not change stay. */
+export function takeAnalysis(store: AnalysisStore, analysis: Analysis): void {
+  const { edit, separation, stomach, heart, findings } = analysis;
+  store.setState((before) => ({
+    edit,
+    findings,
+    separation: separation ?? before.separation,
+    stomach: stomach ?? before.stomach,
+    heart: heart ?? before.heart,
+  }));
+}

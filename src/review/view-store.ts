@@ -1,0 +1,97 @@
+import { createStore, type StoreApi } from 'zustand/vanilla';
+
+/** A window in time, in seconds from the start of the recording. */
+export interface TimeWindow {
+  readonly fromS: number;
+  readonly toS: number;
+}
+
+/** What a drag on the panes does. */
+export type Tool = 'look' | 'exclude';
+
+/** What is picked out: beats by their ticks, or one spoiled span. */
+export type Selection =
+  | { readonly kind: 'none' }
+  | { readonly kind: 'beats'; readonly ticks: readonly number[] }
+  | { readonly kind: 'span'; readonly id: number };
+
+/** Where the panes look; no part of the session and never undone. */
+export interface ViewState {
+  readonly durationS: number;
+  readonly minutes: TimeWindow;
+  /** Always lies inside `minutes`. */
+  readonly seconds: TimeWindow;
+  readonly cursorS: number | null;
+  /** uV from the middle to the edge of a trace row, by row key; absent: fitted. */
+  readonly gainsUv: Readonly<Record<string, number>>;
+  readonly selection: Selection;
+  readonly tool: Tool;
+  readonly identityHidden: boolean;
+}
+
+export type ViewStore = StoreApi<ViewState>;
+
+export const MINUTES_WIDTH_S = 1200;
+export const SECONDS_WIDTH_S = 10;
+const LEAST_SECONDS_S = 1;
+const LEAST_MINUTES_S = 60;
+
+export const createViewStore = (): ViewStore =>
+  createStore<ViewState>()(() => ({
+    durationS: 0,
+    minutes: { fromS: 0, toS: 0 },
+    seconds: { fromS: 0, toS: 0 },
+    cursorS: null,
+    gainsUv: {},
+    selection: { kind: 'none' },
+    tool: 'look',
+    identityHidden: false,
+  }));
+
+/** A window of the given width around a centre, pushed inside [0, durationS]; width is cut to what there is. */
+export function windowInside(centreS: number, widthS: number, durationS: number): TimeWindow {
+  const width = Math.min(widthS, durationS);
+  const fromS = Math.min(Math.max(0, centreS - width / 2), durationS - width);
+  return { fromS, toS: fromS + width };
+}
+
+const widthOf = (window: TimeWindow): number => window.toS - window.fromS;
+const centreOf = (window: TimeWindow): number => (window.fromS + window.toS) / 2;
+
+/** Begins to look at a study: its first 20 min and the 10 s in their middle. */
+export function lookAtStudy(store: ViewStore, durationS: number): void {
+  const minutes = windowInside(0, MINUTES_WIDTH_S, durationS);
+  store.setState({
+    durationS,
+    minutes,
+    seconds: windowInside(centreOf(minutes), SECONDS_WIDTH_S, durationS),
+    cursorS: null,
+    gainsUv: {},
+    selection: { kind: 'none' },
+    tool: 'look',
+  });
+}
+
+/** Moves the Seconds window; Minutes follows only as far as it must to keep it inside. */
+export function lookAtSeconds(store: ViewStore, centreS: number, widthS?: number): void {
+  const { seconds, minutes, durationS } = store.getState();
+  const width = Math.max(LEAST_SECONDS_S, widthS ?? widthOf(seconds));
+  const next = windowInside(
+    centreS,
+    Math.min(width, Math.max(LEAST_MINUTES_S, widthOf(minutes))),
+    durationS,
+  );
+  const shift = Math.min(0, next.fromS - minutes.fromS) + Math.max(0, next.toS - minutes.toS);
+  const around = { fromS: minutes.fromS + shift, toS: minutes.toS + shift };
+  store.setState({ seconds: next, minutes: shift === 0 ? minutes : around });
+}
+
+/** Moves or widens the Minutes window; Seconds is pushed inside it. */
+export function lookAtMinutes(store: ViewStore, centreS: number, widthS?: number): void {
+  const { seconds, minutes, durationS } = store.getState();
+  const width = Math.max(LEAST_MINUTES_S, widthS ?? widthOf(minutes));
+  const next = windowInside(centreS, width, durationS);
+  const secondsWidth = Math.min(widthOf(seconds), widthOf(next));
+  const fromS = Math.min(Math.max(next.fromS, seconds.fromS), next.toS - secondsWidth);
+  store.setState({ minutes: next, seconds: { fromS, toS: fromS + secondsWidth } });
+}

@@ -1,0 +1,139 @@
+import type { BeatList } from '../src/recording/beat';
+import type { Reply } from '../src/recording/failure';
+import type { Findings } from '../src/recording/findings';
+import type { BreathingSeries, HeartSegment, RrSeries } from '../src/recording/heart-series';
+import type { Lead } from '../src/recording/lead';
+import type { Phase } from '../src/recording/phase';
+import type { Recording } from '../src/recording/recording';
+import type { SlowWaveRhythm } from '../src/recording/rhythm';
+import type { RoleReasons, Roles } from '../src/recording/roles';
+import type { Settings } from '../src/recording/settings';
+import type { Interval, Span } from '../src/recording/span';
+
+/** Number a call is cancelled by. */
+export type JobId = number;
+
+/** How a delimited text file is to be read, where the reader's own proposal is overruled. */
+export interface TextReading {
+  readonly rateHz: number | null;
+  readonly unit: string | null;
+}
+
+/** A file opened and looked at: what the page needs before any figure. */
+export interface Opened {
+  readonly recording: Recording;
+  /** Finds the session of this study at once. */
+  readonly quickKey: string;
+}
+
+/** What the program proposes for a study that nobody has reviewed yet. */
+export interface Proposal {
+  readonly roles: Roles;
+  readonly reasons: RoleReasons;
+  readonly phases: readonly Phase[];
+  readonly phasesFrom: 'annotations' | 'none';
+  readonly spans: readonly Span[];
+  readonly beats: BeatList;
+}
+
+/** What a person has decided; the worker computes from the first step that a difference reaches. */
+export interface ReviewInputs {
+  readonly edit: number;
+  readonly roles: Roles;
+  readonly phases: readonly Phase[];
+  readonly settings: Settings;
+  readonly spans: readonly Span[];
+  readonly beats: BeatList;
+}
+
+/** Facts of the separation that the panes and dialogs show. */
+export interface SeparationFacts {
+  readonly lead: string;
+  readonly unclean: readonly Interval[];
+  readonly notes: readonly string[];
+  /** Seconds the drawn slow wave leads the recorded one at the phase's DF; 0 under `band`. */
+  readonly leadS: number;
+}
+
+export interface HeartResults {
+  readonly rr: RrSeries;
+  readonly segments: readonly HeartSegment[];
+  readonly breathing: BreathingSeries;
+  /** Median R height and local noise in uV, standard deviation of the R times in ms. */
+  readonly heightUv: number;
+  readonly noiseUv: number;
+  readonly timingSdMs: number;
+}
+
+/** Results by part; a part is null where it has not changed since the last reply to this page. */
+export interface Analysis {
+  readonly edit: number;
+  readonly separation: readonly SeparationFacts[] | null;
+  readonly stomach: readonly SlowWaveRhythm[] | null;
+  readonly heart: HeartResults | null;
+  readonly findings: Findings;
+}
+
+/** Columns for a pane: the least and the greatest value of each of `columns` equal parts of [fromS, toS). */
+export interface ColumnsRequest {
+  readonly lead: Lead;
+  readonly signal: 'recorded' | 'slow-wave' | 'heartbeat';
+  readonly fromS: number;
+  readonly toS: number;
+  readonly columns: number;
+}
+
+/** NaN where there is nothing. Where there are fewer samples than columns, `low` and `high` are equal and `timesS` are theirs. */
+export interface Columns {
+  readonly request: ColumnsRequest;
+  readonly timesS: Float64Array;
+  readonly low: Float32Array;
+  readonly high: Float32Array;
+}
+
+/** Where a beat put by hand near a time should stand. */
+export interface PlacedBeat {
+  readonly tick: number;
+  readonly visible: boolean;
+}
+
+export type WorkerNews =
+  | { readonly kind: 'alive' }
+  | {
+      readonly kind: 'progress';
+      readonly job: JobId;
+      /** What is being done, in words for the person. */
+      readonly step: string;
+      /** 0 to 1. */
+      readonly done: number;
+    };
+
+/** The one contract between page and worker. Replies are never thrown errors. */
+export interface AnalysisApi {
+  /** Hands over the page's ear; called once after the start. */
+  listen(ear: (news: WorkerNews) => void): void;
+  /** Makes the invented demo study as EDF+ bytes. */
+  demo(job: JobId): Promise<Reply<Blob>>;
+  /** Reads a file's header; the study open before stays open when this fails. */
+  open(
+    job: JobId,
+    file: Blob,
+    fileName: string,
+    reading: TextReading | null,
+  ): Promise<Reply<Opened>>;
+  /** Reads the signals once and proposes roles, phases, spans and beats; the parts given are taken as they are. */
+  propose(
+    job: JobId,
+    given: {
+      readonly roles: Roles | null;
+      readonly phases: readonly Phase[] | null;
+      readonly settings: Settings;
+    },
+  ): Promise<Reply<Proposal>>;
+  /** Finds all beats again, for another heart lead or route. */
+  detect(job: JobId, inputs: ReviewInputs): Promise<Reply<BeatList>>;
+  analyse(job: JobId, inputs: ReviewInputs): Promise<Reply<Analysis>>;
+  columns(request: ColumnsRequest): Promise<Reply<Columns>>;
+  placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
+  cancel(job: JobId): void;
+}
