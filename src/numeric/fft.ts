@@ -1,3 +1,4 @@
+/// <reference path="./fft-js.d.ts" />
 import FFT from 'fft.js';
 import { cos, sin } from './elementary';
 
