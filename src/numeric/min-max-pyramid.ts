@@ -13,7 +13,7 @@ interface Level {
 /** Least and greatest values of a long signal at several widths, so that hours draw as fast as minutes. */
 export interface MinMaxPyramid {
   readonly baseS: number;
-  /** Columns for [fromS, toS) from the coarsest level that is still finer than the columns asked for. */
+  /** Columns for [fromS, toS) from the coarsest level at most half as wide as the columns asked for. */
   columns(fromS: number, toS: number, columns: number): MinMaxColumns;
 }
 
@@ -67,7 +67,7 @@ function pyramidOf(base: Level): MinMaxPyramid {
     baseS: base.columnS,
     columns(fromS, toS, columns) {
       const widthS = (toS - fromS) / columns;
-      const level = levels.findLast((one) => one.columnS <= widthS) ?? base;
+      const level = levels.findLast((one) => 2 * one.columnS <= widthS) ?? base;
       return joinColumns(level, fromS, toS, columns);
     },
   };

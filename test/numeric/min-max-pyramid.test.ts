@@ -47,9 +47,10 @@ describe('columns for drawing a trace', () => {
       i >= 2000 && i < 3000 ? Number.NaN : 3,
     );
     const { low, timesS } = build(samples, 50, 100).columns(0, 100, 50);
-    expect([...low].map((value, i) => [timesS[i], Number.isNaN(value)] as const)).toEqual(
-      [...timesS].map((time) => [time, time > 40 && time < 60]),
-    );
+    const missing = [...timesS].filter((_, i) => Number.isNaN(low[i]));
+    const wellInside = [...timesS].filter((time) => time > 42 && time < 58);
+    expect(missing).toEqual(expect.arrayContaining(wellInside));
+    expect(missing.every((time) => time > 40 && time < 60)).toBe(true);
   });
 
   it('few samples come back as themselves, at their own times', () => {
