@@ -1,0 +1,35 @@
+export const THEME_CHOICES = ['system', 'light', 'dark'] as const;
+export type ThemeChoice = (typeof THEME_CHOICES)[number];
+
+/** What a person prefers on this computer; holds nothing of any study. */
+export interface Preferences {
+  readonly theme: ThemeChoice;
+  readonly plainKeys: boolean;
+}
+
+const KEY = 'bicadence.preferences';
+const DEFAULTS: Preferences = { theme: 'system', plainKeys: true };
+
+/** Preferences as kept; the defaults where nothing, or nothing sensible, is kept or storage is out of reach. */
+export function readPreferences(storage: Storage | null): Preferences {
+  try {
+    const kept: unknown = JSON.parse(storage?.getItem(KEY) ?? 'null');
+    if (typeof kept !== 'object' || kept === null) return DEFAULTS;
+    const { theme, plainKeys } = kept as Record<string, unknown>;
+    return {
+      theme: THEME_CHOICES.find((one) => one === theme) ?? DEFAULTS.theme,
+      plainKeys: typeof plainKeys === 'boolean' ? plainKeys : DEFAULTS.plainKeys,
+    };
+  } catch {
+    return DEFAULTS;
+  }
+}
+
+/** Keeps preferences; does nothing where storage is full or out of reach, since they only save a choice. */
+export function writePreferences(storage: Storage | null, preferences: Preferences): void {
+  try {
+    storage?.setItem(KEY, JSON.stringify(preferences));
+  } catch {
+    return;
+  }
+}
