@@ -114,13 +114,15 @@ export interface AnalysisApi {
   listen(ear: (news: WorkerNews) => void): void;
   /** Makes the invented demo study as EDF+ bytes. */
   demo(job: JobId): Promise<Reply<Blob>>;
-  /** Reads a file's header; the study open before stays open when this fails. */
+  /** Reads a file's header; the study open before stays in use until `accept`. */
   open(
     job: JobId,
     file: Blob,
     fileName: string,
     reading: TextReading | null,
   ): Promise<Reply<Opened>>;
+  /** Takes the study opened last into use and lets go of the one before. */
+  accept(): void;
   /** Reads the signals once and proposes roles, phases, spans and beats; the parts given are taken as they are. */
   propose(
     job: JobId,

@@ -1,0 +1,161 @@
+import * as Comlink from 'comlink';
+import type { BeatList } from '../src/recording/beat';
+import type { Failure, Reply } from '../src/recording/failure';
+import type {
+  Analysis,
+  AnalysisApi,
+  Columns,
+  ColumnsRequest,
+  JobId,
+  Opened,
+  PlacedBeat,
+  Proposal,
+  ReviewInputs,
+  TextReading,
+  WorkerNews,
+} from './analysis-api';
+
+/** A worker that has said nothing for so long is taken for dead. */
+const SILENCE_MS = 20_000;
+const WATCH_MS = 2_000;
+
+export interface CallOptions {
+  readonly signal?: AbortSignal;
+  readonly onProgress?: (step: string, done: number) => void;
+}
+
+/** The page's side of the worker: every call resolves to a reply, whatever happens to the worker. */
+export interface AnalysisClient {
+  demo(options?: CallOptions): Promise<Reply<Blob>>;
+  open(
+    file: Blob,
+    fileName: string,
+    reading: TextReading | null,
+    options?: CallOptions,
+  ): Promise<Reply<Opened>>;
+  accept(): Promise<void>;
+  propose(
+    given: Parameters<AnalysisApi['propose']>[1],
+    options?: CallOptions,
+  ): Promise<Reply<Proposal>>;
+  detect(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<BeatList>>;
+  analyse(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<Analysis>>;
+  columns(request: ColumnsRequest): Promise<Reply<Columns>>;
+  placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
+  /** Ends the worker for good. */
+  close(): void;
+}
+
+interface OpenCall {
+  readonly settle: (failure: Failure) => void;
+  readonly onProgress: CallOptions['onProgress'];
+}
+
+interface Line {
+  readonly worker: Worker;
+  readonly api: Comlink.Remote<AnalysisApi>;
+  lastSignMs: number;
+}
+
+const CRASHED: Failure = {
+  kind: 'crashed',
+  message: 'The part of the program that computes stopped unexpectedly and was started again.',
+  place: null,
+  remedy:
+    'Your edits are kept. The last step is done again by itself; if it stops once more, open the file again.',
+};
+
+/**
+ * A client over workers made by `startWorker`. After a crash, or when a busy worker gives no sign of life, every open call
+ * resolves to a `crashed` failure, a new worker starts and opens the accepted file again; `onRestart` tells the page.
+ */
+export function createAnalysisClient(
+  startWorker: () => Worker,
+  onRestart: () => void,
+): AnalysisClient {
+  const open = new Map<JobId, OpenCall>();
+  let nextJob: JobId = 1;
+  let line = connect();
+  let opening: readonly [Blob, string, TextReading | null] | null = null;
+  let accepted: readonly [Blob, string, TextReading | null] | null = null;
+
+  function connect(): Line {
+    const worker = startWorker();
+    const api = Comlink.wrap<AnalysisApi>(worker);
+    const made: Line = { worker, api, lastSignMs: performance.now() };
+    worker.addEventListener('error', () => restart(made));
+    worker.addEventListener('messageerror', () => restart(made));
+    const hear = (news: WorkerNews) => {
+      made.lastSignMs = performance.now();
+      if (news.kind === 'progress') open.get(news.job)?.onProgress?.(news.step, news.done);
+    };
+    void Promise.resolve(api.listen(Comlink.proxy(hear))).catch(() => restart(made));
+    return made;
+  }
+
+  function restart(dead: Line): void {
+    if (dead !== line) return;
+    dead.worker.terminate();
+    line = connect();
+    const calls = [...open.values()];
+    open.clear();
+    const again = accepted
+      ? line.api.open(0, ...accepted).then(() => line.api.accept())
+      : Promise.resolve();
+    void again.then(onRestart);
+    for (const call of calls) call.settle(CRASHED);
+  }
+
+  const watch = setInterval(() => {
+    if (open.size === 0) line.lastSignMs = performance.now();
+    else if (performance.now() - line.lastSignMs > SILENCE_MS) restart(line);
+  }, WATCH_MS);
+
+  function call<T>(
+    send: (api: Comlink.Remote<AnalysisApi>, job: JobId) => Promise<Reply<T>>,
+    options: CallOptions = {},
+  ): Promise<Reply<T>> {
+    const job = nextJob;
+    nextJob += 1;
+    const { api } = line;
+    return new Promise((resolve) => {
+      const settle = (failure: Failure) => resolve({ ok: false, failure });
+      open.set(job, { settle, onProgress: options.onProgress });
+      const stop = () => void api.cancel(job);
+      options.signal?.addEventListener('abort', stop, { once: true });
+      if (options.signal?.aborted) stop();
+      send(api, job).then(
+        (reply) => {
+          open.delete(job);
+          options.signal?.removeEventListener('abort', stop);
+          resolve(reply);
+        },
+        () => {
+          open.delete(job);
+          settle(CRASHED);
+        },
+      );
+    });
+  }
+
+  return {
+    demo: (options) => call((api, job) => api.demo(job), options),
+    open(file, fileName, reading, options) {
+      opening = [file, fileName, reading];
+      return call((api, job) => api.open(job, file, fileName, reading), options);
+    },
+    async accept() {
+      accepted = opening;
+      await line.api.accept();
+    },
+    propose: (given, options) => call((api, job) => api.propose(job, given), options),
+    detect: (inputs, options) => call((api, job) => api.detect(job, inputs), options),
+    analyse: (inputs, options) => call((api, job) => api.analyse(job, inputs), options),
+    columns: (request) => call((api) => api.columns(request)),
+    placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
+    close() {
+      clearInterval(watch);
+      line.worker.terminate();
+    },
+  };
+}
