@@ -1,0 +1,32 @@
+import { defineConfig } from 'playwright/test';
+import { BROWSER_FLAGS, findBrowser } from './browser.mjs';
+
+const PORT = 4391;
+const browser = findBrowser();
+
+export default defineConfig({
+  testDir: '.',
+  testMatch: '*.spec.ts',
+  outputDir: '../node_modules/.cache/e2e',
+  timeout: 120_000,
+  expect: { timeout: 20_000 },
+  fullyParallel: false,
+  workers: 1,
+  forbidOnly: true,
+  reporter: [['list'], ['json', { outputFile: '../node_modules/.cache/e2e-results.json' }]],
+  use: {
+    baseURL: `http://127.0.0.1:${PORT}/`,
+    viewport: { width: 1280, height: 720 },
+    launchOptions: {
+      args: BROWSER_FLAGS,
+      ...(browser ? { executablePath: browser } : {}),
+    },
+  },
+  webServer: {
+    command: 'node workers/dist/serve.mjs',
+    cwd: '..',
+    env: { PORT: String(PORT) },
+    url: `http://127.0.0.1:${PORT}/`,
+    reuseExistingServer: false,
+  },
+});

@@ -1,0 +1,59 @@
+import { type Figures, type FigureValue, numberFigure, withheld } from '../src/recording/figure';
+import { FIGURES } from '../src/recording/figure-catalogue';
+import type { FigureChange, PhaseFindings } from '../src/recording/findings';
+import { isFasting, isFed, type Phase } from '../src/recording/phase';
+
+/** Parts in which a fed phase is shown beside the whole of it. */
+const FED_PART_S = 1800;
+/** A shorter rest of a fed phase is no part of its own. */
+const LEAST_PART_S = 600;
+
+/** A phase, or a named part of one, that figures are computed for. */
+export interface Part extends Phase {
+  readonly phase: string;
+}
+
+/** Every phase whole, and each fed phase also as its first and second half hour as far as it lasts. */
+export function partsOf(phases: readonly Phase[]): readonly Part[] {
+  return phases.flatMap((phase) => {
+    const whole: Part = { ...phase, phase: phase.name };
+    return isFed(phase) ? [whole, ...fedParts(phase)] : [whole];
+  });
+}
+
+function fedParts(phase: Phase): readonly Part[] {
+  const lengthS = phase.toS - phase.fromS;
+  return [0, FED_PART_S].flatMap((fromS) => {
+    const toS = Math.min(fromS + FED_PART_S, lengthS);
+    if (toS - fromS < LEAST_PART_S || (fromS === 0 && toS === lengthS)) return [];
+    const name = `${phase.name} ${fromS / 60}-${Math.floor(toS / 60)}`;
+    return [{ name, phase: phase.name, fromS: phase.fromS + fromS, toS: phase.fromS + toS }];
+  });
+}
+
+/** What each fed phase and part changed against fasting; empty without a fasting phase. */
+export function changesOf(phases: readonly PhaseFindings[]): readonly FigureChange[] {
+  const fasting = phases.find((one) => isFasting(one));
+  if (!fasting) return [];
+  const fed = phases.filter((one) => isFed({ ...one, name: one.phase }));
+  return fed.flatMap((after) =>
+    FIGURES.filter(({ change }) => change === 'difference').map(({ key }) => ({
+      key,
+      from: fasting.name,
+      to: after.name,
+      value: changeOf(fasting.figures, after.figures, key),
+    })),
+  );
+}
+
+function changeOf(before: Figures, after: Figures, key: string): FigureValue {
+  const from = numberAt(before, key);
+  const to = numberAt(after, key);
+  if (from === null || to === null) return withheld('both phases need the figure as a number');
+  return numberFigure(to - from);
+}
+
+function numberAt(figures: Figures, key: string): number | null {
+  const figure = figures[key];
+  return figure?.kind === 'number' ? figure.value : null;
+}
