@@ -32,8 +32,17 @@ export interface Proposal {
   readonly reasons: RoleReasons;
   readonly phases: readonly Phase[];
   readonly phasesFrom: 'annotations' | 'none';
-  readonly spans: readonly Span[];
+  /** Without ids: whoever takes them gives them. */
+  readonly spans: readonly Omit<Span, 'id'>[];
   readonly beats: BeatList;
+}
+
+/** What is settled already when the program proposes the rest; null: to be proposed. */
+export interface Given {
+  readonly roles: Roles | null;
+  readonly phases: readonly Phase[] | null;
+  readonly spans: readonly Span[] | null;
+  readonly settings: Settings;
 }
 
 /** What a person has decided; the worker computes from the first step that a difference reaches. */
@@ -123,17 +132,10 @@ export interface AnalysisApi {
   ): Promise<Reply<Opened>>;
   /** Takes the study opened last into use and lets go of the one before. */
   accept(): void;
+  /** Roles from labels, rates and short stretches, for the first picture; the reported lead is not compared yet. */
+  firstRoles(job: JobId): Promise<Reply<Roles>>;
   /** Reads the signals once and proposes roles, phases, spans and beats; the parts given are taken as they are. */
-  propose(
-    job: JobId,
-    given: {
-      readonly roles: Roles | null;
-      readonly phases: readonly Phase[] | null;
-      readonly settings: Settings;
-    },
-  ): Promise<Reply<Proposal>>;
-  /** Finds all beats again, for another heart lead or route. */
-  detect(job: JobId, inputs: ReviewInputs): Promise<Reply<BeatList>>;
+  propose(job: JobId, given: Given): Promise<Reply<Proposal>>;
   analyse(job: JobId, inputs: ReviewInputs): Promise<Reply<Analysis>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;

@@ -1,11 +1,12 @@
 import * as Comlink from 'comlink';
-import type { BeatList } from '../src/recording/beat';
 import type { Failure, Reply } from '../src/recording/failure';
+import type { Roles } from '../src/recording/roles';
 import type {
   Analysis,
   AnalysisApi,
   Columns,
   ColumnsRequest,
+  Given,
   JobId,
   Opened,
   PlacedBeat,
@@ -34,11 +35,8 @@ export interface AnalysisClient {
     options?: CallOptions,
   ): Promise<Reply<Opened>>;
   accept(): Promise<void>;
-  propose(
-    given: Parameters<AnalysisApi['propose']>[1],
-    options?: CallOptions,
-  ): Promise<Reply<Proposal>>;
-  detect(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<BeatList>>;
+  firstRoles(options?: CallOptions): Promise<Reply<Roles>>;
+  propose(given: Given, options?: CallOptions): Promise<Reply<Proposal>>;
   analyse(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<Analysis>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
@@ -148,8 +146,8 @@ export function createAnalysisClient(
       accepted = opening;
       await line.api.accept();
     },
+    firstRoles: (options) => call((api, job) => api.firstRoles(job), options),
     propose: (given, options) => call((api, job) => api.propose(job, given), options),
-    detect: (inputs, options) => call((api, job) => api.detect(job, inputs), options),
     analyse: (inputs, options) => call((api, job) => api.analyse(job, inputs), options),
     columns: (request) => call((api) => api.columns(request)),
     placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
