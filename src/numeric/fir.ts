@@ -1,7 +1,7 @@
 import { extend } from './ends';
 import { centredKernel, kernelResponse, type Response } from './kernel';
 import { blockSizeFor, overlapSave } from './overlap-save';
-import { idealLowPass, kaiser, kaiserBeta, kaiserTaps } from './windows';
+import { amplitudeDb, idealLowPass, kaiser, kaiserBeta, kaiserTaps } from './windows';
 
 export interface LowPassSpec {
   readonly rateHz: number;
@@ -75,16 +75,20 @@ export function highPassTaps(spec: HighPassSpec): Float64Array {
   return taps;
 }
 
+/** What two ripples of one size can add up to. */
+const TWO_RIPPLES_DB = amplitudeDb(2);
+
 /**
  * Taps of a zero-phase band-pass: the difference of two low-passes of one length, set by the
- * narrower transition; gain exactly 0 at 0 Hz, 1 inside the band within the ripple.
+ * narrower transition, each 6 dB better than asked since their ripples add; gain exactly 0 at 0 Hz, 1 inside the band within the ripple.
  * Throws where the edges do not rise or lie above half the rate.
  */
 export function bandPassTaps(spec: BandPassSpec): Float64Array {
   const { rateHz, lowStopHz, lowPassHz, highPassHz, highStopHz, attenuationDb } = spec;
   checkEdges(rateHz, [lowStopHz, lowPassHz, highPassHz, highStopHz]);
   const transitionHz = Math.min(lowPassHz - lowStopHz, highStopHz - highPassHz);
-  const window = kaiser(kaiserTaps(attenuationDb, transitionHz, rateHz), kaiserBeta(attenuationDb));
+  const eachDb = attenuationDb + TWO_RIPPLES_DB;
+  const window = kaiser(kaiserTaps(eachDb, transitionHz, rateHz), kaiserBeta(eachDb));
   const taps = windowedSinc(window, (highPassHz + highStopHz) / 2, rateHz);
   const below = windowedSinc(window, (lowStopHz + lowPassHz) / 2, rateHz);
   for (let i = 0; i < taps.length; i++) taps[i] -= below[i];

@@ -42,6 +42,6 @@ export function logParabola(
   const c = log(Math.max(right, floor));
   const bend = a - 2 * b + c;
   if (!(bend < 0)) return { offset: 0, height: mid };
-  const offset = Math.max(-0.5, Math.min(0.5, (0.5 * (a - c)) / bend));
+  const offset = Math.max(-0.5, Math.min(0.5, (0.5 * (c - a)) / -bend));
   return { offset, height: exp(b - 0.25 * (a - c) * offset) };
 }
