@@ -1,0 +1,35 @@
+import { describe, expect, it } from 'vitest';
+import { parseArguments, WrongArguments } from '../../workers/command-line';
+
+describe('the command line', () => {
+  it('reads every option of files.md', () => {
+    const request = parseArguments(
+      'a.edf --slow #2~#3 --slow EGG1 --heart #1 --breath Resp --phases fasting:0-1800,meal:1800-2400,fed:0:42:00-5400 --route fractional --out results'.split(
+        ' ',
+      ),
+    );
+    expect(request).toMatchObject({
+      studies: ['a.edf'],
+      slow: ['#2~#3', 'EGG1'],
+      heart: '#1',
+      breath: 'Resp',
+      route: 'fractional',
+      out: 'results',
+    });
+    expect(request.phases?.at(-1)).toEqual({ name: 'fed', fromS: 2520, toS: 5400 });
+  });
+
+  it.each([
+    [[], 'at least one study'],
+    [['a.edf', '--colour', 'red'], '--colour'],
+    [['a.edf', '--out'], '--out wants a value'],
+    [['a.edf', '--route', 'magic'], 'magic'],
+    [['a.edf', '--phases', 'fasting:1800-0'], 'is no phase'],
+    [['a.edf', '--phases', 'fasting:0-600,fed:300-900'], 'begins before'],
+    [['a.edf', 'b.edf', '--session', 's.json'], 'one study'],
+    [['a.edf', '--rate', 'fast'], '--rate'],
+  ])('%j is refused in words', (words, part) => {
+    expect(() => parseArguments(words)).toThrow(WrongArguments);
+    expect(() => parseArguments(words)).toThrow(part);
+  });
+});

@@ -1,0 +1,114 @@
+import type { Phase } from '../src/recording/phase';
+import type { RouteName } from '../src/recording/settings';
+import { parseClock } from '../src/units/time';
+
+/** What the command line asks for. */
+export interface AnalyseRequest {
+  readonly studies: readonly string[];
+  readonly session: string | null;
+  readonly slow: readonly string[];
+  readonly heart: string | null;
+  readonly breath: string | null;
+  readonly phases: readonly Phase[] | null;
+  readonly route: RouteName | null;
+  readonly rateHz: number | null;
+  readonly unit: string | null;
+  readonly out: string;
+}
+
+export const USAGE = `npm run analyse -- STUDY... [options]
+  --session FILE   the review to compute from (one study only)
+  --slow LEAD      a slow-wave lead; the first one given is reported; may be repeated
+  --heart LEAD     the heart lead
+  --breath LEAD    the breathing lead
+  --phases LIST    fasting:0-1800,meal:1800-2400,fed:2400-5400 (seconds or h:mm:ss)
+  --route NAME     band or fractional
+  --rate HZ        sampling rate of delimited text without a time column
+  --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
+  --out DIR        where the files go (default: here)
+LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed, 2 wrong arguments.`;
+
+/** Wrong arguments, in words for the person. */
+export class WrongArguments extends Error {}
+
+const ROUTES: readonly RouteName[] = ['band', 'fractional'];
+
+/** Reads the arguments after the program's name. Throws WrongArguments. */
+export function parseArguments(words: readonly string[]): AnalyseRequest {
+  const single = new Map<string, string>();
+  const slow: string[] = [];
+  const studies: string[] = [];
+  for (let i = 0; i < words.length; i += 1) {
+    const word = words[i];
+    if (!word.startsWith('--')) {
+      studies.push(word);
+      continue;
+    }
+    const name = word.slice(2);
+    if (
+      !['session', 'slow', 'heart', 'breath', 'phases', 'route', 'rate', 'unit', 'out'].includes(
+        name,
+      )
+    )
+      throw new WrongArguments(`there is no option ${word}`);
+    const value = words.at(i + 1);
+    if (value === undefined || value.startsWith('--'))
+      throw new WrongArguments(`${word} wants a value`);
+    i += 1;
+    if (name === 'slow') slow.push(value);
+    else if (single.has(name)) throw new WrongArguments(`${word} is given twice`);
+    else single.set(name, value);
+  }
+  if (studies.length === 0) throw new WrongArguments('name at least one study file');
+  if (single.has('session') && studies.length > 1)
+    throw new WrongArguments('--session goes with one study');
+  const phases = single.get('phases');
+  return {
+    studies,
+    session: single.get('session') ?? null,
+    slow,
+    heart: single.get('heart') ?? null,
+    breath: single.get('breath') ?? null,
+    phases: phases === undefined ? null : parsePhases(phases),
+    route: parseRoute(single.get('route')),
+    rateHz: parseRate(single.get('rate')),
+    unit: single.get('unit') ?? null,
+    out: single.get('out') ?? '.',
+  };
+}
+
+function parseRoute(name: string | undefined): RouteName | null {
+  if (name === undefined) return null;
+  const route = ROUTES.find((one) => one === name);
+  if (!route) throw new WrongArguments(`--route is ${ROUTES.join(' or ')}, not "${name}"`);
+  return route;
+}
+
+function parseRate(text: string | undefined): number | null {
+  if (text === undefined) return null;
+  const rate = Number(text);
+  if (!(rate > 0) || !Number.isFinite(rate))
+    throw new WrongArguments(`--rate wants a number of samples a second above 0, not "${text}"`);
+  return rate;
+}
+
+function parsePhases(text: string): readonly Phase[] {
+  const phases = text.split(',').map((part): Phase => {
+    const match = /^([a-z]+(?:-\d+)?):([^-]+)-([^-]+)$/.exec(part.trim());
+    const fromS = match ? parseClock(match[2]) : null;
+    const toS = match ? parseClock(match[3]) : null;
+    if (!match || fromS === null || toS === null || toS <= fromS)
+      throw new WrongArguments(
+        `"${part}" is no phase; write fasting:0-1800 (name:from-to in seconds)`,
+      );
+    return { name: match[1], fromS, toS };
+  });
+  const sorted = [...phases].sort((a, b) => a.fromS - b.fromS);
+  sorted.forEach((phase, i) => {
+    if (i > 0 && phase.fromS < sorted[i - 1].toS)
+      throw new WrongArguments(`${phase.name} begins before ${sorted[i - 1].name} ends`);
+    if (sorted.some((other, j) => j < i && other.name === phase.name))
+      throw new WrongArguments(`${phase.name} is given twice`);
+  });
+  return sorted;
+}

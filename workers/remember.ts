@@ -1,0 +1,37 @@
+/** Remembers the last result of one step, and gives it again while its inputs are the same. */
+export interface Remembered<I, T> {
+  readonly of: (inputs: I) => T;
+  readonly forget: () => void;
+}
+
+/** A step that is computed again only when `key` of its inputs differs from the last one's. */
+export function remember<I, T>(
+  key: (inputs: I) => string,
+  compute: (inputs: I) => T,
+): Remembered<I, T> {
+  let last: { readonly key: string; readonly result: T } | null = null;
+  return {
+    of(inputs) {
+      const now = key(inputs);
+      if (!last || last.key !== now) last = { key: now, result: compute(inputs) };
+      return last.result;
+    },
+    forget() {
+      last = null;
+    },
+  };
+}
+
+const numbers = new WeakMap<object, number>();
+let next = 1;
+
+/** A number for an object that stays with it: two results of a step are the same when their numbers are. */
+export function identity(object: object | null): number {
+  if (object === null) return 0;
+  const known = numbers.get(object);
+  if (known !== undefined) return known;
+  const given = next;
+  next += 1;
+  numbers.set(object, given);
+  return given;
+}
