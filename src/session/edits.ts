@@ -6,6 +6,7 @@ import type {
   Signature,
   StudyIdentity,
 } from './document';
+import { holdsFiniteNumbers } from './finite-values';
 import { sameValue } from './same-value';
 
 export {
@@ -48,7 +49,6 @@ export function sign(state: SessionState, signature: Signature): Edit {
     if (state.signed.length === 0) throw new Error('there is nothing signed to amend');
     if (signature.reason.trim() === '') throw new Error('an amendment wants a reason');
   }
-  const kept: unknown = JSON.parse(JSON.stringify(signature));
-  if (!sameValue(kept, signature)) throw new Error('a signed figure is no finite number');
+  if (!holdsFiniteNumbers(signature)) throw new Error('a signed figure is no finite number');
   return { name: SIGNING[signature.meaning], changes: [{ kind: 'sign', signature }] };
 }

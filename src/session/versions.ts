@@ -1,0 +1,30 @@
+import { SESSION_VERSION } from './document';
+
+/** One step from a version of the session document to the next; `up` gets a document that its version's schema allowed. */
+export interface Migration {
+  readonly from: number;
+  readonly name: string;
+  readonly up: (document: Readonly<Record<string, unknown>>) => Readonly<Record<string, unknown>>;
+}
+
+/** The steps from version 1 on, one a version, without gaps. */
+export const MIGRATIONS: readonly Migration[] = [];
+
+/**
+ * A document brought from `version` to the one this program writes, through every step between. Throws Error where a step is
+ * missing.
+ */
+export function migrate(
+  document: Readonly<Record<string, unknown>>,
+  version: number,
+  migrations: readonly Migration[] = MIGRATIONS,
+  target: number = SESSION_VERSION,
+): Readonly<Record<string, unknown>> {
+  let current = document;
+  for (let from = version; from < target; from += 1) {
+    const step = migrations.find((one) => one.from === from);
+    if (!step) throw new Error(`no step leads on from version ${from}`);
+    current = { ...step.up(current), version: from + 1 };
+  }
+  return current;
+}

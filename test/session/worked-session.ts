@@ -1,0 +1,45 @@
+import { beatsOf } from '../../src/recording/beat';
+import type { Session } from '../../src/session/document';
+import {
+  addBeat,
+  addSpan,
+  changeSpan,
+  classBeats,
+  deleteBeats,
+  moveBeat,
+  removeSpans,
+  replaceAllBeats,
+  setField,
+  setStudy,
+  sign,
+} from '../../src/session/edits';
+import { appendEdit, appendRedo, appendUndo, beginSession } from '../../src/session/log';
+import { AT, inventedState, RATE_HZ, signature, span } from './invented-session';
+
+/** An invented session with every kind of change, undo and redo in its log. */
+export function workedSession(): Session {
+  let session = beginSession(inventedState());
+  const [first, second, third] = session.state.beats.ticks;
+  const put = (make: (so: Session) => Parameters<typeof appendEdit>[1]) => {
+    session = appendEdit(session, make(session), 'A. Tech', AT);
+  };
+  put(({ state }) => moveBeat(state, first, first + 640, RATE_HZ));
+  put(({ state }) => addBeat(state, 64, 'Q', 'placed', RATE_HZ));
+  put(({ state }) => classBeats(state, [second, third], 'V', RATE_HZ));
+  put(({ state }) => deleteBeats(state, [third], RATE_HZ));
+  session = appendUndo(session, 'A. Tech', AT);
+  session = appendUndo(session, 'A. Tech', AT);
+  session = appendRedo(session, 'A. Tech', AT);
+  put((so) => addSpan(so, { ...span(0, 200, 230), lead: '#1~#2', note: 'coughs, "twice"' }));
+  put(({ state }) => changeSpan(state, 6, { target: 'heart', cause: 'cough' }));
+  put(({ state }) => removeSpans(state, [3]));
+  put(({ state }) => setField(state, 'notes', 'calm\nπ ≈ 3', 'write remarks'));
+  put(({ state }) => setField(state, 'protocol', { ...state.protocol, ml: 250.5 }, 'protocol'));
+  put(({ state }) => setStudy(state, { ...state.study, code: 'INV-8' }, 'change code'));
+  const found = beatsOf([{ tick: 700, beatClass: 'S', origin: 'detected' }]);
+  put(({ state }) => replaceAllBeats(state, found, 'detect again'));
+  session = appendUndo(session, 'A. Tech', AT);
+  put(({ state }) => sign(state, { ...signature(13), meaning: 'prepared', name: 'A. Tech' }));
+  put(({ state }) => sign(state, signature(13)));
+  return session;
+}
