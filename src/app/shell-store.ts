@@ -15,8 +15,8 @@ export type DialogState =
       /** The session of this study that will be continued, where one is kept. */
       readonly kept?: KeptRow | null;
     }
-  /** Asks who edits; `then` runs once the name is set. Stands on top of the dialog that was open. */
-  | { readonly kind: 'reviewer'; readonly then: () => void }
+  /** Asks who edits; `act` runs once the name is set. Stands on top of the dialog that was open. */
+  | { readonly kind: 'reviewer'; readonly act: () => void }
   | { readonly kind: 'roles' }
   | { readonly kind: 'phases' }
   | { readonly kind: 'protocol' }

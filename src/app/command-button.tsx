@@ -1,0 +1,39 @@
+import { type Command, type CommandParts, canRun } from './commands';
+import { keyWords } from './key-names';
+
+interface CommandButtonProps {
+  readonly command: Command;
+  readonly parts: CommandParts;
+  /** Shorter words for the button; the tooltip has the command's own. */
+  readonly words?: string;
+  readonly className?: string;
+  readonly showKey?: boolean;
+  /** Runs after the command, as a menu that closes. */
+  readonly after?: () => void;
+}
+
+/** A button for a command of the table: its words, its key in the tooltip, off while it cannot act. */
+export function CommandButton(props: CommandButtonProps) {
+  const { command, parts, className = 'button', showKey = false, after } = props;
+  const words = command.wordsNow?.(parts) ?? command.words;
+  const key = command.keys[0];
+  return (
+    <button
+      type="button"
+      className={className}
+      title={key ? `${words} (${keyWords(key)})` : words}
+      disabled={!canRun(command, parts)}
+      onClick={() => {
+        command.run(parts);
+        after?.();
+      }}
+    >
+      <span>{props.words ?? words}</span>
+      {showKey && key ? (
+        <span className="key" aria-hidden="true">
+          {keyWords(key)}
+        </span>
+      ) : null}
+    </button>
+  );
+}

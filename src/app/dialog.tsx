@@ -1,0 +1,71 @@
+import { type ReactNode, useId, useLayoutEffect, useRef } from 'react';
+
+interface DialogProps {
+  readonly title: string;
+  /** Small line beneath the title. */
+  readonly subtitle?: string;
+  readonly size?: 'small' | 'medium' | 'large';
+  readonly onClose: () => void;
+  /** Runs on the form's submit button or Enter in a field; without it the dialog has no form. */
+  readonly onSubmit?: () => void;
+  readonly children: ReactNode;
+  /** Buttons at the foot; a lone Close where left out. */
+  readonly actions?: ReactNode;
+}
+
+/** A native modal dialog, shown as long as it is mounted: Escape closes it, focus goes back to where it was. */
+export function Dialog(props: DialogProps) {
+  const { title, subtitle, size = 'medium', onClose, onSubmit, children, actions } = props;
+  const ref = useRef<HTMLDialogElement>(null);
+  const titleId = useId();
+  useLayoutEffect(() => {
+    const dialog = ref.current;
+    if (dialog && !dialog.open) {
+      dialog.showModal();
+      dialog.querySelector<HTMLElement>('[data-autofocus]')?.focus();
+    }
+    return () => dialog?.close();
+  }, []);
+  const inside = (
+    <>
+      <header className="dialog-head">
+        <h2 id={titleId}>{title}</h2>
+        {subtitle ? <p className="quiet">{subtitle}</p> : null}
+      </header>
+      <div className="dialog-body">{children}</div>
+      <footer className="dialog-foot">
+        {actions ?? (
+          <button type="button" className="button strong" onClick={onClose}>
+            Close
+          </button>
+        )}
+      </footer>
+    </>
+  );
+  return (
+    <dialog
+      ref={ref}
+      className={`dialog ${size}`}
+      aria-labelledby={titleId}
+      onCancel={(event) => {
+        event.preventDefault();
+        onClose();
+      }}
+    >
+      {onSubmit ? (
+        <form
+          noValidate
+          className="dialog-frame"
+          onSubmit={(event) => {
+            event.preventDefault();
+            onSubmit();
+          }}
+        >
+          {inside}
+        </form>
+      ) : (
+        <div className="dialog-frame">{inside}</div>
+      )}
+    </dialog>
+  );
+}
