@@ -1,0 +1,172 @@
+import { bandPassTaps, convolveSame, highPassTaps, lowPassTaps } from '../numeric/fir';
+import { cascadeKernels, centredKernel, type Kernel } from '../numeric/kernel';
+import { blockSizeFor } from '../numeric/kernel-spectrum';
+import { createOverlapSave } from '../numeric/overlap-save';
+import type { HeartOutput } from '../recording/separated';
+import type { Settings } from '../recording/settings';
+import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
+import { createChunks } from './chunks';
+import { type LeadFacts, maskGaps } from './gaps';
+import { heartDecimation } from './heart-rate';
+import type { Route, RouteJob, SeparatedSlow } from './route';
+import { slowRateHz } from './slow-rate';
+import { gapsOf, uncleanStretches } from './unclean';
+import { withoutHoles } from './without-holes';
+
+/** Half the transition of an edge over the edge itself; the edge is the -6 dB point. */
+const EDGE_WIDTH = 0.5;
+const SLOW_ATTENUATION_DB = 44;
+const HEART_ATTENUATION_DB = 60;
+/**
+ * Share of a filter's half length within which the end of a lead is felt: beyond it the drawn wave
+ * is within 2 uV of the one drawn from a lead that goes on (100 uV wave over 1/f drift, by trial).
+ */
+const FELT_SHARE = 0.55;
+
+/**
+ * Taps of the slow wave's zero-phase band-pass (windowed sinc, Kaiser 1974) at the slow rate;
+ * `bandCpm` are its -6 dB points (the upper one lowered below half the rate), 44 dB down at half
+ * the lower edge. Throws where the lower edge is not below the upper one.
+ */
+export function slowBandTaps(rateHz: Hertz, bandCpm: readonly [Cpm, Cpm]): Float64Array {
+  const low = cpmToHz(bandCpm[0]);
+  const high = Math.min(cpmToHz(bandCpm[1]), 0.45 * rateHz);
+  if (!(low > 0 && low * (1 + EDGE_WIDTH) < high))
+    throw new Error(`no band between ${bandCpm[0]} and ${bandCpm[1]} cpm at ${rateHz} Hz`);
+  const width = Math.min(low * EDGE_WIDTH, 0.4 * (high - low));
+  const upper = Math.min(width, rateHz / 2 - high);
+  return bandPassTaps({
+    rateHz,
+    lowStopHz: low - width,
+    lowPassHz: low + width,
+    highPassHz: high - upper,
+    highStopHz: high + upper,
+    attenuationDb: SLOW_ATTENUATION_DB,
+  });
+}
+
+/** The band the heartbeat keeps at a rate: the upper edge at most 0.4 of it; null where nothing is left. */
+export function heartBandAt(
+  rateHz: Hertz,
+  bandHz: readonly [Hertz, Hertz],
+): readonly [Hertz, Hertz] | null {
+  const high = Math.min(bandHz[1], 0.4 * rateHz);
+  return high > 2 * bandHz[0] ? [bandHz[0], high] : null;
+}
+
+/**
+ * The heartbeat's zero-phase filter at the lead's own rate: a high-pass and a low-pass in one
+ * (windowed sincs, Kaiser 1974), -6 dB at the band's edges, the upper transition wide enough not
+ * to ring. `outputRateHz` is the rate it is folded to.
+ */
+export function heartBandKernel(
+  rateHz: Hertz,
+  outputRateHz: Hertz,
+  bandHz: readonly [Hertz, Hertz],
+): Kernel {
+  const [low, high] = bandHz;
+  const above = Math.min(0.2 * high, outputRateHz / 2 - high);
+  const highPass = highPassTaps({
+    rateHz,
+    stopHz: low * (1 - EDGE_WIDTH),
+    passHz: low * (1 + EDGE_WIDTH),
+    attenuationDb: HEART_ATTENUATION_DB,
+  });
+  const lowPass = lowPassTaps({
+    rateHz,
+    passHz: high - above,
+    stopHz: high + above,
+    attenuationDb: HEART_ATTENUATION_DB,
+  });
+  return cascadeKernels(centredKernel(highPass), centredKernel(lowPass));
+}
+
+function drawBand(
+  lead: string,
+  recorded: Float64Array,
+  rateHz: Hertz,
+  settings: Settings,
+): SeparatedSlow {
+  const taps = slowBandTaps(rateHz, settings.slowBandCpm);
+  const gaps = gapsOf(recorded);
+  const slowWave = convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
+  maskGaps(slowWave, gaps, 1);
+  const feltS = (FELT_SHARE * (taps.length - 1)) / 2 / rateHz;
+  const [low, high] = settings.slowBandCpm;
+  return {
+    lead,
+    route: 'band',
+    rateHz,
+    recorded,
+    slowWave,
+    forSpectra: recorded,
+    powerResponse: null,
+    unclean: uncleanStretches(gaps, recorded.length, rateHz, { afterS: feltS, beforeS: feltS }),
+    leadSAt: () => 0,
+    derivativeLeadSAt: () => 0,
+    notes: [
+      `Slow wave by a zero-phase band-pass of ${low}-${high} cpm (-6 dB), ${Math.round(taps.length / rateHz)} s long; spectra are those of the lead before it.`,
+    ],
+  };
+}
+
+/** The heartbeat's filter at work; null where the rate leaves no band. */
+function startHeart(job: RouteJob) {
+  const decimation = heartDecimation(job.rateHz);
+  const rateHz = job.rateHz / decimation;
+  const band = heartBandAt(rateHz, job.settings.heartBandHz);
+  if (!band) return null;
+  const kernel = heartBandKernel(job.rateHz, rateHz, band);
+  const filter = createOverlapSave({
+    blockSize: blockSizeFor([kernel], job.sampleCount, decimation),
+    kernels: [kernel],
+    decimate: decimation,
+    ends: 'reflect-odd',
+  });
+  const chunks = createChunks(Math.ceil(job.sampleCount / decimation));
+  return {
+    push(block: Float64Array): void {
+      chunks.add(filter.push(block)[0]);
+    },
+    finish(facts: LeadFacts): HeartOutput {
+      chunks.add(filter.finish()[0]);
+      const heartbeat = chunks.joined();
+      maskGaps(heartbeat, facts.gaps, decimation);
+      const feltS = (FELT_SHARE * kernel.origin) / job.rateHz;
+      const reach = { afterS: feltS, beforeS: feltS };
+      return {
+        lead: job.lead,
+        rateHz,
+        heartbeat,
+        decimation,
+        unclean: uncleanStretches(facts.gaps, facts.sampleCount, job.rateHz, reach),
+        notes: [`Heartbeat by a zero-phase band-pass of ${band[0]}-${band[1]} Hz (-6 dB).`],
+      };
+    },
+  };
+}
+
+/**
+ * Route `band`: slow wave and heartbeat by zero-phase FIR band-passes. Linear, without delay; rhythm
+ * figures are computed on the lead before the slow wave's band-pass.
+ */
+export const bandRoute: Route = {
+  start(job) {
+    const heart = job.heart ? startHeart(job) : null;
+    return {
+      push(block) {
+        heart?.push(block);
+      },
+      finish(recorded, facts) {
+        const rateHz = slowRateHz(job.rateHz);
+        return {
+          slow: job.slow ? drawBand(job.lead, recorded, rateHz, job.settings) : null,
+          heart: heart ? heart.finish(facts) : null,
+        };
+      },
+    };
+  },
+  redraw(slow, settings) {
+    return drawBand(slow.lead, slow.recorded, slow.rateHz, settings);
+  },
+};

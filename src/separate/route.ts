@@ -1,0 +1,41 @@
+import type { HeartOutput, SlowOutput } from '../recording/separated';
+import type { RouteName, Settings } from '../recording/settings';
+import type { Cpm, Hertz } from '../units/rate';
+import type { Seconds } from '../units/time';
+import type { LeadFacts } from './gaps';
+
+/** The slow-wave side of a lead, with what is needed to draw it anew without the file. */
+export interface SeparatedSlow extends SlowOutput {
+  readonly route: RouteName;
+  /** Lead in time of what spectra are computed on, before any shift of the drawn wave; 0 under `band`. */
+  readonly derivativeLeadSAt: (frequencyHz: Hertz) => Seconds;
+}
+
+/** What a route is asked to make of one lead. */
+export interface RouteJob {
+  readonly lead: string;
+  readonly rateHz: Hertz;
+  readonly sampleCount: number;
+  readonly settings: Settings;
+  readonly slow: boolean;
+  readonly heart: boolean;
+}
+
+/** A lead without holes runs in, the outputs asked for come out. */
+export interface RouteRun {
+  push(block: Float64Array): void;
+  /** `recorded` is the anti-aliased 4 Hz lead, NaN in gaps. */
+  finish(recorded: Float64Array, facts: LeadFacts): RouteOutputs;
+}
+
+export interface RouteOutputs {
+  readonly slow: SeparatedSlow | null;
+  readonly heart: HeartOutput | null;
+}
+
+/** One way of parting slow wave and heartbeat. */
+export interface Route {
+  start(job: RouteJob): RouteRun;
+  /** Draws the slow wave again from what is in memory, for other settings of the same route. */
+  redraw(slow: SeparatedSlow, settings: Settings, dfCpm: Cpm): SeparatedSlow;
+}
