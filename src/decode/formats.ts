@@ -1,0 +1,136 @@
+import type { SignalSource } from '../recording/recording';
+import { openDelimitedText, recognisesDelimitedText } from './delimited-text';
+import { openEdf } from './edf';
+import { fieldText } from './edf-fields';
+import { FIXED_BYTES, fixedField } from './edf-layout';
+import { readBytes } from './file-bytes';
+import type { Format, Recognition } from './format';
+import { refusal } from './refusals';
+import { looksLike } from './signatures';
+import type { TextReading } from './text-reading';
+
+const HEAD_BYTES = 64 * 1024;
+const LINE_FEED = 0x0a;
+
+/** A header of this family: 256 bytes without a line feed, the expected first bytes, and a reserved field that fits. */
+function headerRecognition(head: Uint8Array, version: RegExp, reserved: RegExp): Recognition {
+  const fixed = head.subarray(0, FIXED_BYTES);
+  const start = String.fromCharCode(...fixed.subarray(0, 8));
+  if (!version.test(start)) return 'no';
+  if (fixed.length < FIXED_BYTES) return fixed.includes(LINE_FEED) ? 'no' : 'possible';
+  if (!reserved.test(fieldText(fixedField(fixed, 'reserved')))) return 'no';
+  return fixed.includes(LINE_FEED) ? 'possible' : 'certain';
+}
+
+const EDF_VERSION = /^0[ \0]{7}$/;
+/** Byte 255, then letters (24-bit files). */
+const BDF_VERSION = /^\xff[ -~]{7}$/;
+
+function notYet(fileName: string, name: string, why: string, remedy: string) {
+  return refusal('not-supported', fileName, {
+    message: `this is ${name}, ${why}; such files cannot be read yet.`,
+    place: 'byte 192, reserved',
+    remedy,
+  });
+}
+
+const refuse24Bit = async (_file: Blob, fileName: string) => {
+  throw notYet(
+    fileName,
+    'a BDF or BDF+ file',
+    'with 24-bit samples',
+    'Export the recording as EDF or EDF+C (16 bit), scaled so that the abdominal leads fit.',
+  );
+};
+
+/** The table of formats. A new one is a row here and a file of its own. */
+export const FORMATS: readonly Format[] = [
+  {
+    name: 'EDF',
+    extensions: ['edf', 'rec'],
+    recognises: (head) => headerRecognition(head, EDF_VERSION, /^(?!EDF\+)/),
+    open: (file, fileName) => openEdf(file, fileName, 'EDF'),
+  },
+  {
+    name: 'EDF+C',
+    extensions: ['edf'],
+    recognises: (head) => headerRecognition(head, EDF_VERSION, /^EDF\+(?!D)/),
+    open: (file, fileName) => openEdf(file, fileName, 'EDF+C'),
+  },
+  {
+    name: 'EDF+D',
+    extensions: ['edf'],
+    recognises: (head) => headerRecognition(head, EDF_VERSION, /^EDF\+D/),
+    open: async (_file, fileName) => {
+      throw notYet(
+        fileName,
+        'an EDF+D file',
+        'a recording with gaps',
+        'Export it as EDF+C, or each uninterrupted part to a file of its own.',
+      );
+    },
+  },
+  {
+    name: 'BDF',
+    extensions: ['bdf'],
+    recognises: (head) => headerRecognition(head, BDF_VERSION, /^(?!BDF\+)/),
+    open: refuse24Bit,
+  },
+  {
+    name: 'BDF+',
+    extensions: ['bdf'],
+    recognises: (head) => headerRecognition(head, BDF_VERSION, /^BDF\+/),
+    open: refuse24Bit,
+  },
+  {
+    name: 'delimited text',
+    extensions: ['csv', 'tsv', 'txt', 'asc', 'dat'],
+    recognises: recognisesDelimitedText,
+    open: openDelimitedText,
+  },
+];
+
+/**
+ * The format of some bytes: the one row that is certain; else, among the rows that find it possible, one that the name's
+ * extension fits, or the first. Null where every row says no. Two rows certain of the same bytes are a programming error.
+ */
+export function chooseFormat(
+  formats: readonly Format[],
+  head: Uint8Array,
+  fileName: string,
+): Format | null {
+  const answers = formats.map((format) => format.recognises(head, fileName));
+  const certain = formats.filter((_, i) => answers[i] === 'certain');
+  if (certain.length > 1)
+    throw new Error(`formats claim the same bytes: ${certain.map((one) => one.name).join(', ')}`);
+  if (certain.length === 1) return certain[0];
+  const possible = formats.filter((_, i) => answers[i] === 'possible');
+  const extension = /\.([^.]+)$/.exec(fileName)?.[1].toLowerCase() ?? '';
+  return possible.find((one) => one.extensions.includes(extension)) ?? possible[0] ?? null;
+}
+
+/**
+ * Opens a recording by its content. `reading` holds what a person says about a text file. Throws a Refusal that names the
+ * file, what it looks like or where it breaks its format, and the remedy.
+ */
+export async function openRecording(
+  file: Blob,
+  fileName: string,
+  reading: TextReading | null,
+): Promise<SignalSource> {
+  const head = await readBytes(file, fileName, 0, HEAD_BYTES);
+  const likeness = looksLike(head);
+  const format = likeness === null ? chooseFormat(FORMATS, head, fileName) : null;
+  if (format) return format.open(file, fileName, reading);
+  throw refusal('wrong-input', fileName, {
+    message:
+      likeness === null
+        ? 'this is no format that can be read; its first bytes fit none.'
+        : `this looks like ${likeness}, not like a recording.`,
+    place: 'byte 0',
+    remedy:
+      likeness !== null && /archive/.test(likeness)
+        ? 'Unpack it and choose the recording inside.'
+        : 'Choose an EDF, EDF+C or delimited text file.',
+  });
+}
