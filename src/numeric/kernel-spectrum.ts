@@ -76,6 +76,10 @@ export function kernelSpectrum(options: KernelSpectrumOptions): KernelSpectrum {
   return { blockSize, decimate, outputs, before, after, hop, fold, bins };
 }
 
+/** Transforms of more points no longer fit the caches of usual processors and cost more (measured). */
+const CACHED_POINTS = 262_144;
+const UNCACHED_COST = 1.4;
+
 /**
  * A block size of little work per output for these kernels, by the count of operations,
  * and no larger than `sampleCount` samples need.
@@ -88,7 +92,8 @@ export function blockSizeFor(kernels: KernelSet, sampleCount: number, decimate =
   for (let size = 2, log2 = 1; size <= 0x2000000; size *= 2, log2++) {
     const hop = size - span;
     if (hop < 1) continue;
-    const work = (Math.ceil(sampleCount / hop) || 1) * size * (log2 + 4);
+    const slowness = size > CACHED_POINTS ? UNCACHED_COST : 1;
+    const work = (Math.ceil(sampleCount / hop) || 1) * size * (log2 + 4) * slowness;
     if (work >= leastWork) break;
     leastWork = work;
     best = size;

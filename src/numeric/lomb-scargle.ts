@@ -92,15 +92,7 @@ function createRotation(
       c[i] = cos(angle);
       s[i] = sin(angle);
     }
-    untilAnew = even ? RESYNC : 0;
-  }
-  function turn(): void {
-    for (let i = 0; i < n; i++) {
-      const turned = c[i] * stepCos[i] - s[i] * stepSin[i];
-      s[i] = s[i] * stepCos[i] + c[i] * stepSin[i];
-      c[i] = turned;
-    }
-    untilAnew -= 1;
+    untilAnew = even ? RESYNC : 1;
   }
   return {
     skip: () => {
@@ -108,13 +100,20 @@ function createRotation(
     },
     sumsAt: (freqHz, values) => {
       if (untilAnew === 0) anew(freqHz);
-      else turn();
-      let [xc, xs, cc, cs] = [0, 0, 0, 0];
+      untilAnew -= 1;
+      let xc = 0;
+      let xs = 0;
+      let cc = 0;
+      let cs = 0;
       for (let i = 0; i < n; i++) {
-        xc += values[i] * c[i];
-        xs += values[i] * s[i];
-        cc += c[i] * c[i];
-        cs += c[i] * s[i];
+        const ci = c[i];
+        const si = s[i];
+        xc += values[i] * ci;
+        xs += values[i] * si;
+        cc += ci * ci;
+        cs += ci * si;
+        c[i] = ci * stepCos[i] - si * stepSin[i];
+        s[i] = si * stepCos[i] + ci * stepSin[i];
       }
       return { xc, xs, cc, cs };
     },

@@ -191,8 +191,19 @@ export function createOverlapSave(options: OverlapSaveOptions): OverlapSave {
 
 /** The same over a whole signal at once: one array a kernel. */
 export function overlapSave(x: Float64Array, options: OverlapSaveOptions): Float64Array[] {
-  const stream = createOverlapSave(options);
-  const made = stream.push(x);
-  const rest = stream.finish();
-  return made.map((part, k) => join([part, rest[k]]));
+  const spectrum = 'spectrum' in options ? options.spectrum : kernelSpectrum(options);
+  const stream = new Stream(spectrum, options.ends ?? 'zero');
+  const length = Math.ceil(x.length / spectrum.decimate);
+  const whole = Array.from({ length: spectrum.outputs }, () => new Float64Array(length));
+  let at = 0;
+  const keep = (parts: Float64Array[]): void => {
+    parts.forEach((part, k) => {
+      whole[k].set(part, at);
+    });
+    at += parts[0].length;
+  };
+  for (let from = 0; from < x.length; from += spectrum.hop)
+    keep(stream.push(x.subarray(from, from + spectrum.hop)));
+  keep(stream.finish());
+  return whole;
 }
