@@ -1,5 +1,6 @@
 import { applyChange, inSpanOrder, invert } from './apply-change';
-import type { Edit, LogLine, Session, SessionState } from './document';
+import { BeatDraft } from './beat-draft';
+import type { Change, Edit, LogLine, Session, SessionState } from './document';
 import { emptyHistory, type History, nextHistory } from './history';
 
 /** Histories by log: kept beside the session, so that an edit at line 5,000 costs what one at line 5 does. */
@@ -20,7 +21,7 @@ export function appendLine(session: Session, line: LogLine): Session {
   if (line.n !== session.log.length + 1)
     throw new Error(`line ${line.n} cannot follow line ${session.log.length}`);
   const { history, edit } = nextHistory(historyOf(session), line);
-  const state = line.act.kind === 'undo' ? takeBack(session.state, edit) : put(session.state, edit);
+  const state = changesOf(line, edit).reduce(applyChange, session.state);
   const log = [...session.log, line];
   HISTORIES.set(log, history);
   return { start: session.start, log, state };
@@ -76,18 +77,27 @@ export function nextSpanId(session: Session): number {
   return historyOf(session).highestSpanId + 1;
 }
 
-/** The session that a log makes of a start. Throws as appendLine does. */
+/**
+ * The session that a log makes of a start; cost: the changes themselves, and beats once at the end. Throws as appendLine
+ * does.
+ */
 export function replaySession(start: SessionState, log: readonly LogLine[]): Session {
   let history = emptyHistory(start);
-  let state = start;
+  let rest = start;
+  const beats = new BeatDraft(start.beats);
+  const apply = (change: Change) => {
+    if (change.kind === 'beats') beats.change(change.removed, change.added);
+    else if (change.kind === 'all-beats') beats.replace(change.after);
+    else rest = applyChange(rest, change);
+  };
   log.forEach((line, i) => {
     if (line.n !== i + 1) throw new Error(`line ${line.n} stands in the place of line ${i + 1}`);
     const next = nextHistory(history, line);
     history = next.history;
-    state = line.act.kind === 'undo' ? takeBack(state, next.edit) : put(state, next.edit);
+    for (const change of changesOf(line, next.edit)) apply(change);
   });
   HISTORIES.set(log, history);
-  return { start, log, state };
+  return { start, log, state: { ...rest, beats: beats.list() } };
 }
 
 /** The state that a log makes of a start. Throws as appendLine does. */
@@ -106,8 +116,7 @@ function historyOf(session: Session): History {
   return history;
 }
 
-const put = (state: SessionState, edit: Edit): SessionState =>
-  edit.changes.reduce(applyChange, state);
-
-const takeBack = (state: SessionState, edit: Edit): SessionState =>
-  edit.changes.reduceRight((so, change) => applyChange(so, invert(change)), state);
+/** What a line does to the state: the edit's changes, or what takes them back, last first. */
+function changesOf(line: LogLine, edit: Edit): readonly Change[] {
+  return line.act.kind === 'undo' ? edit.changes.map(invert).reverse() : edit.changes;
+}

@@ -18,8 +18,13 @@ import {
  * what could not be read again (a number that is not finite, a part that the schema does not know).
  */
 export function sessionToDocument(session: Session, program: string): SessionDocument {
+  return readable(sessionDocument, documentOf(session, program));
+}
+
+/** As sessionToDocument, without the look at every part: for a session whose start and lines were looked at before. */
+export function documentOf(session: Session, program: string): SessionDocument {
   const state = keptState(session.state);
-  return readable(sessionDocument, {
+  return {
     format: SESSION_FORMAT,
     version: 1,
     program,
@@ -31,7 +36,7 @@ export function sessionToDocument(session: Session, program: string): SessionDoc
     readBy: lastNamed(session.state.signed, 'read'),
     start: keptState(session.start),
     log: session.log.map(keptForm),
-  });
+  };
 }
 
 /** The text of a session file: JSON, one line a part and one line a line of the log, ending with a line feed. */
