@@ -1,0 +1,134 @@
+import { removeLine } from '../numeric/detrend';
+import { medianAbsoluteDeviation, medianInPlace } from '../numeric/statistics';
+import { BEAT_CLASSES, type BeatList } from '../recording/beat';
+import type { BreathingSeries, RrSeries } from '../recording/heart-series';
+import type { Hertz } from '../units/rate';
+import type { Seconds } from '../units/time';
+import { NO_BREATHING } from './breathing';
+import {
+  BREATHING_WINDOW_S,
+  type BreathingSpectrum,
+  breathingCentres,
+  breathingPeak,
+  breathingSpectrum,
+} from './breathing-peak';
+import { beatTimes, firstAtOrAfter } from './rr-series';
+
+const RESAMPLED_RATE_HZ = 4;
+const SAMPLES = BREATHING_WINDOW_S * RESAMPLED_RATE_HZ;
+/** Share of a window's time that NN intervals must fill. */
+const LEAST_KEPT = 0.75;
+/** Values further from the median than this many spreads are drawn in: one odd beat is no breath. */
+const MOST_SPREADS = 3.5;
+
+export interface BreathingFromBeatsInput {
+  readonly rr: RrSeries;
+  readonly beats: BeatList;
+  /** Rate that the beats' ticks count in. */
+  readonly rateHz: Hertz;
+  /** One height a beat, from beatHeights; NaN where there is none. */
+  readonly heightsUv: Float64Array;
+  readonly durationS: Seconds;
+}
+
+interface Points {
+  readonly timesS: Float64Array;
+  readonly values: Float64Array;
+}
+
+function pointsWhere(
+  timesS: Float64Array,
+  values: Float64Array,
+  isGood: (i: number) => boolean,
+): Points {
+  const good = Array.from(timesS.keys()).filter((i) => isGood(i) && !Number.isNaN(values[i]));
+  return {
+    timesS: Float64Array.from(good, (i) => timesS[i]),
+    values: Float64Array.from(good, (i) => values[i]),
+  };
+}
+
+/** The points of one window on an even grid, by straight lines between them; null for fewer than 20 points. */
+function resampled(points: Points, fromS: Seconds): Float64Array | null {
+  const first = firstAtOrAfter(points.timesS, fromS);
+  const end = firstAtOrAfter(points.timesS, fromS + BREATHING_WINDOW_S);
+  if (end - first < 20) return null;
+  const values = points.values.slice(first, end);
+  const middle = medianInPlace(Float64Array.from(values));
+  const most = MOST_SPREADS * 1.4826 * medianAbsoluteDeviation(values);
+  const held = values.map((value) => Math.min(most, Math.max(-most, value - middle)));
+  const out = new Float64Array(SAMPLES);
+  let i = 0;
+  for (let k = 0; k < SAMPLES; k += 1) {
+    const timeS = fromS + k / RESAMPLED_RATE_HZ;
+    while (i < held.length - 2 && points.timesS[first + i + 1] <= timeS) i += 1;
+    const [left, right] = [points.timesS[first + i], points.timesS[first + i + 1]];
+    const part = Math.min(1, Math.max(0, (timeS - left) / (right - left)));
+    out[k] = held[i] + part * (held[i + 1] - held[i]);
+  }
+  return removeLine(out);
+}
+
+/** Spectrum scaled to a sum of 1; each value times its frequency where the background is like 1/f. Null where it is 0. */
+function shapeOf(window: Float64Array | null, whiten: boolean): BreathingSpectrum | null {
+  if (window === null) return null;
+  const { power, stepPerMinute } = breathingSpectrum(window, RESAMPLED_RATE_HZ);
+  let sum = 0;
+  for (let k = 0; k < power.length; k += 1) {
+    if (whiten) power[k] *= k;
+    sum += power[k];
+  }
+  return sum > 0 ? { power: power.map((value) => value / sum), stepPerMinute } : null;
+}
+
+/** What both spectra share: their geometric mean, so that a peak of one alone counts less; the one there is, else. */
+function shared(
+  a: BreathingSpectrum | null,
+  b: BreathingSpectrum | null,
+): BreathingSpectrum | null {
+  if (a === null || b === null) return a ?? b;
+  return {
+    power: a.power.map((value, k) => Math.sqrt(value * b.power[k])),
+    stepPerMinute: a.stepPerMinute,
+  };
+}
+
+/** NN seconds up to the end of each interval, to know how much of a window they fill. */
+function nnSecondsUpTo({ rrMs, nn }: RrSeries): Float64Array {
+  const sums = new Float64Array(rrMs.length + 1);
+  for (let i = 0; i < rrMs.length; i += 1) sums[i + 1] = sums[i] + (nn[i] * rrMs[i]) / 1000;
+  return sums;
+}
+
+/**
+ * Breathing rate over time derived from the heartbeat: the spectral peak that R height (Moody 1985) and NN intervals
+ * share in 60 s windows every 30 s. Nothing above half the window's heart rate can be seen (45 % of it is the ceiling);
+ * NaN where NN fill under three quarters of a window or no peak is clear.
+ */
+export function breathingFromBeats(input: BreathingFromBeatsInput): BreathingSeries {
+  const { rr, beats, rateHz, heightsUv, durationS } = input;
+  if (rr.rrMs.length < 20) return NO_BREATHING;
+  const normal = BEAT_CLASSES.indexOf('N');
+  const touchesNn = (beat: number) => rr.nn[beat] === 1 || rr.nn[beat - 1] === 1;
+  const heights = pointsWhere(
+    beatTimes(beats, rateHz),
+    heightsUv,
+    (beat) => beats.classes[beat] === normal && touchesNn(beat),
+  );
+  const intervals = pointsWhere(rr.timesS, rr.rrMs, (i) => rr.nn[i] === 1);
+  const upTo = nnSecondsUpTo(rr);
+  const centresS = breathingCentres(durationS);
+  const perMinute = centresS.map((centreS) => {
+    const fromS = centreS - BREATHING_WINDOW_S / 2;
+    const first = firstAtOrAfter(rr.timesS, fromS);
+    const end = firstAtOrAfter(rr.timesS, fromS + BREATHING_WINDOW_S);
+    if (upTo[end] - upTo[first] < LEAST_KEPT * BREATHING_WINDOW_S) return Number.NaN;
+    const beatsPerMinute = (60 * (end - first)) / BREATHING_WINDOW_S;
+    const both = shared(
+      shapeOf(resampled(heights, fromS), false),
+      shapeOf(resampled(intervals, fromS), true),
+    );
+    return both === null ? Number.NaN : breathingPeak(both, 0.45 * beatsPerMinute);
+  });
+  return { centresS, perMinute, from: 'derived' };
+}
