@@ -1,0 +1,84 @@
+import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
+import type { PhaseFindings } from '../recording/findings';
+import type { Settings } from '../recording/settings';
+import { goToStretch } from '../review/findings-go';
+import { figureWords, stretchWords } from '../review/findings-words';
+import { useAnalysis, useApp, useSession } from './app-context';
+import { Dialog } from './dialog';
+import { EpochTable, SegmentTable } from './figure-data';
+
+interface FigureDialogProps {
+  /** Key of the figure catalogue, and the name of the phase or part of it. */
+  readonly figure: string;
+  readonly phase: string;
+}
+
+/** One figure: its value, what it means, where that comes from, the settings in force, and the data behind it. */
+export function FigureDialog({ figure, phase }: FigureDialogProps) {
+  const { shell, view } = useApp();
+  const settings = useSession((state) => state.session?.state.settings);
+  const findings = useAnalysis((state) => state.findings);
+  const definition = FIGURES.find((one) => one.key === figure);
+  const part = findings?.phases.find((one) => one.name === phase);
+  if (!definition || !part || !settings) return null;
+  const close = () => shell.getState().closeDialog();
+  const go = (fromS: number, toS: number) => {
+    close();
+    goToStretch(view, fromS, toS);
+  };
+  return (
+    <Dialog
+      title={definition.label}
+      subtitle={`${part.name}, ${stretchWords(part.fromS, part.toS)}`}
+      onClose={close}
+      actions={
+        <>
+          <button type="button" className="button" onClick={() => go(part.fromS, part.toS)}>
+            Go to {part.name}
+          </button>
+          <button type="button" className="button strong" onClick={close}>
+            Close
+          </button>
+        </>
+      }
+    >
+      <FigureFacts definition={definition} part={part} settings={settings} />
+      {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}
+      {definition.organ === 'heart' ? <SegmentTable part={part} onGo={go} /> : null}
+    </Dialog>
+  );
+}
+
+interface FigureFactsProps {
+  readonly definition: FigureDefinition;
+  readonly part: PhaseFindings;
+  readonly settings: Settings;
+}
+
+function FigureFacts({ definition, part, settings }: FigureFactsProps) {
+  const { large, small } = figureWords(part.figures[definition.key], definition);
+  return (
+    <>
+      <p className="figure-value">
+        <strong>
+          {large} {large === '—' ? '' : definition.unit}
+        </strong>{' '}
+        <span className="quiet">{small.join('; ')}</span>
+      </p>
+      <dl className="facts-list">
+        <div>
+          <dt>Meaning</dt>
+          <dd>{definition.definition}</dd>
+        </div>
+        <div>
+          <dt>Source</dt>
+          <dd>{definition.source}</dd>
+        </div>
+        <div>
+          <dt>Settings</dt>
+          <dd>{definition.settings(settings)}</dd>
+        </div>
+      </dl>
+    </>
+  );
+}

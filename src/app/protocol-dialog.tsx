@@ -1,0 +1,82 @@
+import { useState } from 'react';
+import type { Protocol } from '../recording/protocol';
+import { useApp, useSession, withReviewer } from './app-context';
+import { Dialog } from './dialog';
+import { Field } from './fields';
+import {
+  PROTOCOL_NUMBERS,
+  PROTOCOL_TEXTS,
+  type ProtocolText,
+  protocolDraft,
+  readProtocol,
+} from './protocol-draft';
+
+const POSTURES = ['lying, trunk raised', 'lying flat', 'reclined chair', 'sitting'];
+const HINTS: Readonly<Partial<Record<ProtocolText, string>>> = {
+  medicines: 'Those that act on gut or heart rhythm, and when last taken.',
+  implants: 'Pacemaker, stimulator, pump.',
+};
+
+/** What was done around the recording; a report prints it beside the figures. */
+export function ProtocolDialog() {
+  const protocol = useSession((state) => state.session?.state.protocol);
+  return protocol ? <ProtocolForm before={protocol} /> : null;
+}
+
+function ProtocolForm({ before }: { readonly before: Protocol }) {
+  const parts = useApp();
+  const [draft, setDraft] = useState(() => protocolDraft(before));
+  const { protocol, errors } = readProtocol(draft);
+  const close = () => parts.shell.getState().closeDialog();
+  const save = () => {
+    if (Object.keys(errors).length > 0) return;
+    if (JSON.stringify(protocol) === JSON.stringify(before)) return close();
+    withReviewer(parts, () => {
+      parts.controller.changeProtocol(protocol);
+      close();
+    });
+  };
+  return (
+    <Dialog
+      title="Meal and protocol"
+      subtitle="What was done, as it was done. Leave empty what is not known."
+      onClose={close}
+      onSubmit={save}
+      actions={
+        <>
+          <button type="button" className="button" onClick={close}>
+            Leave as it was
+          </button>
+          <button type="submit" className="button strong">
+            Use this
+          </button>
+        </>
+      }
+    >
+      <div className="field-grid">
+        {PROTOCOL_NUMBERS.map(({ key, label, bounds }) => (
+          <Field
+            key={key}
+            label={label}
+            size="short"
+            inputMode="decimal"
+            unit={bounds.unit}
+            value={draft[key]}
+            error={errors[key]}
+            onChange={(text) => setDraft({ ...draft, [key]: text })}
+          />
+        ))}
+      </div>
+      {PROTOCOL_TEXTS.map(({ key, label }) => (
+        <Field
+          key={key}
+          label={label}
+          value={draft[key]}
+          {...(HINTS[key] ? { hint: HINTS[key] } : {})}
+          {...(key === 'posture' ? { suggestions: POSTURES } : {})}
+          onChange={(text) => setDraft({ ...draft, [key]: text })}
+        />
+      ))}
+    </Dialog>
+  );
+}

@@ -1,0 +1,212 @@
+import { useState } from 'react';
+import { BAND_PRESETS, bandsName, DEFAULT_SETTINGS, type Settings } from '../recording/settings';
+import { useAnalysis, useApp, useSession, withReviewer } from './app-context';
+import { Dialog } from './dialog';
+import { Choice, Field, Tick } from './fields';
+import {
+  readSettings,
+  SETTING_FIELDS,
+  type SettingErrors,
+  type SettingKey,
+  type SettingsDraft,
+  settingsDraft,
+  truncationWords,
+} from './settings-draft';
+
+const ROUTES = [
+  ['band', 'band: a filter without delay'],
+  ['fractional', 'fractional: derivative and smoothing'],
+] as const;
+const OWN = 'own';
+
+/** Everything that changes a figure and that a person may choose. */
+export function SettingsDialog() {
+  const settings = useSession((state) => state.session?.state.settings);
+  return settings ? <SettingsForm before={settings} /> : null;
+}
+
+function SettingsForm({ before }: { readonly before: Settings }) {
+  const parts = useApp();
+  const [draft, setDraft] = useState(() => settingsDraft(before));
+  const { settings, errors } = readSettings(draft);
+  const close = () => parts.shell.getState().closeDialog();
+  const save = () => {
+    if (!settings) return;
+    if (JSON.stringify(settings) === JSON.stringify(before)) return close();
+    withReviewer(parts, () => {
+      parts.controller.changeSettings(settings);
+      close();
+    });
+  };
+  return (
+    <Dialog
+      title="Settings of the figures"
+      subtitle="Kept with the session and printed with the report. A change computes the figures again."
+      size="large"
+      onClose={close}
+      onSubmit={save}
+      actions={
+        <>
+          <button
+            type="button"
+            className="button left"
+            onClick={() => setDraft(settingsDraft(DEFAULT_SETTINGS))}
+          >
+            Back to defaults
+          </button>
+          <button type="button" className="button" onClick={close}>
+            Leave as it was
+          </button>
+          <button type="submit" className="button strong" disabled={settings === null}>
+            Use these settings
+          </button>
+        </>
+      }
+    >
+      <FilterWarnings />
+      <div className="settings-columns">
+        <Separation draft={draft} errors={errors} onChange={setDraft} />
+        <div>
+          <RhythmSettings draft={draft} errors={errors} onChange={setDraft} />
+          <HeartSettings draft={draft} errors={errors} onChange={setDraft} />
+        </div>
+      </div>
+    </Dialog>
+  );
+}
+
+function FilterWarnings() {
+  const warnings = useAnalysis((state) => state.findings?.warnings);
+  const separation = useAnalysis((state) => state.separation);
+  const texts = [
+    ...(warnings ?? []).map((one) => one.text),
+    ...separation.flatMap((one) => one.notes),
+  ];
+  const once = [...new Set(texts)];
+  if (once.length === 0) return null;
+  return (
+    <ul className="findings-warnings" aria-label="Warnings about this recording's filters">
+      {once.map((text) => (
+        <li key={text}>{text}</li>
+      ))}
+    </ul>
+  );
+}
+
+interface SectionProps {
+  readonly draft: SettingsDraft;
+  readonly errors: SettingErrors;
+  readonly onChange: (draft: SettingsDraft) => void;
+}
+
+/** Number fields of some settings, side by side. */
+function Numbers({
+  draft,
+  errors,
+  onChange,
+  keys,
+}: SectionProps & { keys: readonly SettingKey[] }) {
+  return (
+    <div className="field-grid">
+      {keys.map((key) => {
+        const field = SETTING_FIELDS.find((one) => one.key === key);
+        return field ? (
+          <Field
+            key={key}
+            label={field.label}
+            size="short"
+            inputMode="decimal"
+            unit={field.bounds.unit}
+            value={draft.texts[key]}
+            error={errors[key]}
+            onChange={(text) => onChange({ ...draft, texts: { ...draft.texts, [key]: text } })}
+          />
+        ) : null;
+      })}
+    </div>
+  );
+}
+
+function Separation(props: SectionProps) {
+  const { draft, onChange } = props;
+  const fractional = draft.slowRoute === 'fractional' || draft.heartRoute === 'fractional';
+  return (
+    <div>
+      <fieldset>
+        <legend className="organ-stomach">Slow wave</legend>
+        <Choice
+          label="Route"
+          value={draft.slowRoute}
+          options={ROUTES}
+          onChange={(slowRoute) => onChange({ ...draft, slowRoute })}
+        />
+        <Numbers {...props} keys={['slowLow', 'slowHigh']} />
+        <p className="small quiet">
+          The band is what is drawn. Rhythm is computed on the lead before it.
+        </p>
+      </fieldset>
+      <fieldset>
+        <legend className="organ-heart">Heartbeat</legend>
+        <Choice
+          label="Route"
+          value={draft.heartRoute}
+          options={ROUTES}
+          onChange={(heartRoute) => onChange({ ...draft, heartRoute })}
+        />
+        <Numbers {...props} keys={['heartLow', 'heartHigh']} />
+      </fieldset>
+      <fieldset>
+        <legend>Fractional route</legend>
+        <p className="small quiet">
+          {fractional ? truncationWords(draft) : 'Acts where this route is chosen above.'}
+        </p>
+        <Numbers {...props} keys={['order', 'memory', 'slowWindow', 'heartWindow', 'polynomial']} />
+        <Tick
+          label="Shift the drawn slow wave back by the lead in time that the derivative gives it"
+          checked={draft.undoLead}
+          onChange={(undoLead) => onChange({ ...draft, undoLead })}
+        />
+      </fieldset>
+    </div>
+  );
+}
+
+const PRESET_KEYS = ['bandLow', 'normoLow', 'normoHigh', 'bandHigh'] as const;
+
+function RhythmSettings(props: SectionProps) {
+  const { draft, onChange } = props;
+  const presets = BAND_PRESETS.map((bands) => ({
+    name: bandsName(bands),
+    texts: settingsDraft({ ...DEFAULT_SETTINGS, rhythmBands: bands }).texts,
+  }));
+  const now = presets.find(({ texts }) =>
+    PRESET_KEYS.every((key) => texts[key] === draft.texts[key]),
+  );
+  return (
+    <fieldset>
+      <legend className="organ-stomach">Rhythm</legend>
+      <Choice
+        label="Band limits: brady, normo, tachy"
+        value={now?.name ?? OWN}
+        options={[...presets.map(({ name }) => [name, name] as const), [OWN, 'own limits, below']]}
+        onChange={(name) => {
+          const chosen = presets.find((preset) => preset.name === name);
+          if (!chosen) return;
+          const limits = Object.fromEntries(PRESET_KEYS.map((key) => [key, chosen.texts[key]]));
+          onChange({ ...draft, texts: { ...draft.texts, ...limits } });
+        }}
+      />
+      <Numbers {...props} keys={PRESET_KEYS} />
+      <Numbers {...props} keys={['epochLength', 'epochStep', 'maxSpoiled', 'falseAlarm']} />
+    </fieldset>
+  );
+}
+
+function HeartSettings(props: SectionProps) {
+  return (
+    <fieldset>
+      <legend className="organ-heart">Variability</legend>
+      <Numbers {...props} keys={['segment', 'minNn', 'lfLow', 'lfHigh', 'hfLow', 'hfHigh']} />
+    </fieldset>
+  );
+}

@@ -1,0 +1,107 @@
+import './styles.css';
+import { type ReactNode, useCallback, useMemo, useRef } from 'react';
+import { useStore } from 'zustand';
+import { type AppParts, AppProvider } from './app-context';
+import type { CommandParts, PageActs } from './commands';
+import { Dialogs } from './dialogs';
+import { Messages } from './messages';
+import { ProgressLine } from './progress-line';
+import { ReportFrame } from './report-frame';
+import { StartScreen } from './start-screen';
+import { TopBar } from './top-bar';
+import { useKeys } from './use-keys';
+import { useFileDrop, useHash, useLeaveGuard, useTheme } from './use-page';
+import { Workspace } from './workspace';
+
+const REPORT_HASH = '#report';
+
+interface ShellProps {
+  readonly parts: AppParts;
+  /** Draws the Whole study strip, and Minutes and Seconds below it. */
+  readonly panes: { readonly whole: ReactNode; readonly traces: ReactNode };
+  /** Draws the report; without it the page has no report view. */
+  readonly renderReport?: () => ReactNode;
+}
+
+/** The page: bar, start screen or study, dialogs, messages, keys, drops. */
+export function Shell({ parts, panes, renderReport }: ShellProps) {
+  const { shell, session } = parts;
+  const fileInput = useRef<HTMLInputElement>(null);
+  const hash = useHash();
+  const page = usePageActs(fileInput, renderReport !== undefined);
+  const commandParts = useMemo<CommandParts>(() => ({ ...parts, page }), [parts, page]);
+  const take = useTakeFiles(parts);
+  const over = useFileDrop(take);
+  useTheme(shell);
+  useLeaveGuard(session);
+  useKeys(commandParts);
+  const identityAsked = useStore(shell, (state) => state.dialog.kind === 'identity');
+  const studyThere = useStore(session, (state) => state.session !== null);
+  const studyShown = studyThere && !identityAsked;
+  const reportShown = studyShown && renderReport !== undefined && hash === REPORT_HASH;
+  return (
+    <AppProvider value={parts}>
+      <div className={reportShown ? 'app report-open' : 'app'}>
+        <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
+        <ProgressLine />
+        {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
+        {studyShown && !reportShown ? <Workspace panes={panes} page={page} /> : null}
+        {studyShown ? null : <StartScreen parts={commandParts} />}
+        <Messages />
+        <Dialogs page={page} />
+        {over ? <p className="drop-over">Drop the file to open it</p> : null}
+        <input
+          ref={fileInput}
+          type="file"
+          className="unseen"
+          tabIndex={-1}
+          aria-label="File to open"
+          onChange={(event) => {
+            take([...(event.target.files ?? [])]);
+            event.target.value = '';
+          }}
+        />
+      </div>
+    </AppProvider>
+  );
+}
+
+type InputRef = { readonly current: HTMLInputElement | null };
+
+function usePageActs(fileInput: InputRef, reportThere: boolean): PageActs {
+  return useMemo(
+    () => ({
+      chooseFile: () => choose(fileInput, ''),
+      chooseSession: () => choose(fileInput, '.json'),
+      toggleReport: () => {
+        window.location.hash = window.location.hash === REPORT_HASH ? '' : REPORT_HASH;
+      },
+      focusFindings: () => document.getElementById('findings')?.focus(),
+      reportThere,
+    }),
+    [fileInput, reportThere],
+  );
+}
+
+function choose(fileInput: InputRef, accept: string): void {
+  const input = fileInput.current;
+  if (!input) return;
+  input.accept = accept;
+  input.click();
+}
+
+/** Opens what was chosen or dropped: a session by its name's end, anything else as a study. */
+function useTakeFiles({ controller, shell }: AppParts): (files: readonly File[]) => void {
+  return useCallback(
+    (files) => {
+      const [file] = files;
+      if (!file) return;
+      if (files.length > 1)
+        shell.getState().say(`One file at a time: of ${files.length}, ${file.name} is opened.`);
+      void (/\.json$/i.test(file.name)
+        ? controller.openSessionFile(file)
+        : controller.openFile(file, null));
+    },
+    [controller, shell],
+  );
+}

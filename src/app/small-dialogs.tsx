@@ -1,0 +1,185 @@
+import { useState } from 'react';
+import type { Failure } from '../recording/failure';
+import { useApp } from './app-context';
+import type { PageActs } from './commands';
+import { Dialog } from './dialog';
+import { Choice, Field } from './fields';
+import { readNumber } from './number-field';
+
+/** Asks who edits, before the first edit; the name goes into the log. */
+export function ReviewerDialog({ act }: { readonly act: () => void }) {
+  const { session, shell } = useApp();
+  const [name, setName] = useState(session.getState().reviewer);
+  const [tried, setTried] = useState(false);
+  const close = () => shell.getState().closeDialog();
+  return (
+    <Dialog
+      title="Who reviews?"
+      subtitle="Your name or initials stand beside each of your edits in the log. They are typed, not authenticated."
+      size="small"
+      onClose={close}
+      onSubmit={() => {
+        setTried(true);
+        if (name.trim() === '') return;
+        session.getState().setReviewer(name.trim());
+        close();
+        act();
+      }}
+      actions={
+        <>
+          <button type="button" className="button" onClick={close}>
+            Not now
+          </button>
+          <button type="submit" className="button strong">
+            Go on
+          </button>
+        </>
+      }
+    >
+      <Field
+        label="Name or initials of the reviewer"
+        value={name}
+        onChange={setName}
+        required
+        autoFocus
+        error={tried && name.trim() === '' ? 'Type a name or initials.' : null}
+      />
+    </Dialog>
+  );
+}
+
+/** Something could not be done: what, where, and what to do about it. */
+export function FailureDialog({ failure }: { readonly failure: Failure }) {
+  const { shell } = useApp();
+  return (
+    <Dialog title="This did not work" size="small" onClose={() => shell.getState().closeDialog()}>
+      <FailureWords failure={failure} />
+    </Dialog>
+  );
+}
+
+function FailureWords({ failure }: { readonly failure: Failure }) {
+  return (
+    <>
+      <p className="failure-what">{failure.message}</p>
+      {failure.place === null ? null : <p className="quiet">Where: {failure.place}</p>}
+      <p>{failure.remedy}</p>
+    </>
+  );
+}
+
+const UNITS = [
+  ['', 'as the file says'],
+  ['uV', 'µV'],
+  ['mV', 'mV'],
+  ['V', 'V'],
+  ['nV', 'nV'],
+] as const;
+
+interface TextReadingProps {
+  readonly file: File;
+  readonly failure: Failure;
+}
+
+/** Asks for what a delimited text file does not say of itself, and opens it again. */
+export function TextReadingDialog({ file, failure }: TextReadingProps) {
+  const { controller, shell } = useApp();
+  const [rate, setRate] = useState('');
+  const [unit, setUnit] = useState<(typeof UNITS)[number][0]>('');
+  const [tried, setTried] = useState(false);
+  const read =
+    rate.trim() === '' ? null : readNumber(rate, { least: 0.5, most: 100_000, unit: 'Hz' });
+  const nothing = rate.trim() === '' && unit === '';
+  const close = () => shell.getState().closeDialog();
+  return (
+    <Dialog
+      title="How is this text file to be read?"
+      subtitle={file.name}
+      size="small"
+      onClose={close}
+      onSubmit={() => {
+        setTried(true);
+        if (nothing || (read && !read.ok)) return;
+        close();
+        void controller.openFile(file, {
+          rateHz: read?.ok ? read.value : null,
+          unit: unit === '' ? null : unit,
+        });
+      }}
+      actions={
+        <>
+          <button type="button" className="button" onClick={close}>
+            Do not open
+          </button>
+          <button type="submit" className="button strong">
+            Open again
+          </button>
+        </>
+      }
+    >
+      <FailureWords failure={failure} />
+      <Field
+        label="Samples a second (leave empty where a time column says it)"
+        value={rate}
+        onChange={setRate}
+        unit="Hz"
+        size="short"
+        inputMode="decimal"
+        autoFocus
+        error={
+          tried && read && !read.ok
+            ? read.error
+            : tried && nothing
+              ? 'Type the rate, or choose the unit below.'
+              : null
+        }
+      />
+      <Choice label="Unit of the values" value={unit} options={UNITS} onChange={setUnit} />
+    </Dialog>
+  );
+}
+
+interface SameFileProps {
+  readonly code: string;
+  readonly page: PageActs;
+}
+
+/** The figures of a kept session stand; the traces need the file again. */
+export function SameFileDialog({ code, page }: SameFileProps) {
+  const { shell } = useApp();
+  const close = () => shell.getState().closeDialog();
+  return (
+    <Dialog
+      title="Choose the same file to go on"
+      subtitle={`Session ${code}`}
+      size="small"
+      onClose={close}
+      actions={
+        <>
+          <button type="button" className="button" onClick={close}>
+            Figures only
+          </button>
+          <button
+            type="button"
+            className="button strong"
+            onClick={() => {
+              close();
+              page.chooseFile();
+            }}
+          >
+            Choose the file…
+          </button>
+        </>
+      }
+    >
+      <p>
+        The review is as you left it: edits, settings and figures are all here. A browser cannot
+        keep hold of the recording itself, so the traces need it once more.
+      </p>
+      <p className="quiet">
+        It is compared with the study of this session; another file is said to be one and changes
+        nothing.
+      </p>
+    </Dialog>
+  );
+}

@@ -1,0 +1,39 @@
+import type { ReactNode } from 'react';
+import { FindingsPane } from '../review/findings-pane';
+import { useAnalysis, useApp } from './app-context';
+import type { PageActs } from './commands';
+
+interface WorkspaceProps {
+  readonly panes: { readonly whole: ReactNode; readonly traces: ReactNode };
+  readonly page: PageActs;
+}
+
+/** A study on the page: Whole study above, the two panes below it, the findings beside them. */
+export function Workspace({ panes, page }: WorkspaceProps) {
+  const { session, analysis, view, shell, controller } = useApp();
+  const fileAtHand = useAnalysis((state) => state.fileAtHand);
+  const working = useAnalysis((state) => state.progress !== null);
+  return (
+    <main className="workspace">
+      {fileAtHand || working ? null : (
+        <p className="file-wanted">
+          The figures are here; the traces need the recording again.
+          <button type="button" className="button slight" onClick={page.chooseFile}>
+            Choose the same file to go on…
+          </button>
+        </p>
+      )}
+      <div className="place-whole">{panes.whole}</div>
+      <div className="place-traces">{panes.traces}</div>
+      <div className="place-findings">
+        <FindingsPane
+          session={session}
+          analysis={analysis}
+          view={view}
+          onFigure={(key, phase) => shell.getState().openDialog({ kind: 'figure', key, phase })}
+          onEdit={(edit) => controller.edit(edit)}
+        />
+      </div>
+    </main>
+  );
+}
