@@ -74,9 +74,9 @@ export function createFft(size: number): Fft {
 }
 
 const shared = new Map<number, Fft>();
-const LARGEST_SHARED = 65536;
+const LARGEST_SHARED = 262_144;
 
-/** The plan for a size, made once and kept (up to 65536 points; larger ones are made anew). */
+/** The plan for a size, made once and kept (up to 262 144 points; larger ones are made anew). */
 export function sharedFft(size: number): Fft {
   const known = shared.get(size);
   if (known) return known;

@@ -1,4 +1,4 @@
-import { createFft, isPowerOfTwo } from './fft';
+import { isPowerOfTwo, sharedFft } from './fft';
 import type { Kernel } from './kernel';
 
 /** One kernel, or two whose outputs are wanted of the same input. */
@@ -71,7 +71,7 @@ export function kernelSpectrum(options: KernelSpectrumOptions): KernelSpectrum {
       packed[2 * (j - origin + after) + part] = taps[j] / blockSize;
   });
   const bins = new Float64Array(2 * blockSize);
-  createFft(blockSize).forward(packed, bins);
+  sharedFft(blockSize).forward(packed, bins);
   const outputs = kernels.length;
   return { blockSize, decimate, outputs, before, after, hop, fold, bins };
 }

@@ -1,5 +1,5 @@
 import { cos, sin } from './elementary';
-import { createFft, nextPowerOfTwo } from './fft';
+import { nextPowerOfTwo, sharedFft } from './fft';
 
 /** One value of a frequency response. */
 export interface Response {
@@ -25,7 +25,7 @@ export function centredKernel(taps: Float64Array): Kernel {
 /** The one kernel that does what `first` and then `second` do. */
 export function cascadeKernels(first: Kernel, second: Kernel): Kernel {
   const length = first.taps.length + second.taps.length - 1;
-  const fft = createFft(nextPowerOfTwo(Math.max(2, length)));
+  const fft = sharedFft(nextPowerOfTwo(Math.max(2, length)));
   const packed = new Float64Array(2 * fft.size);
   for (let i = 0; i < first.taps.length; i++) packed[2 * i] = first.taps[i];
   const a = new Float64Array(2 * fft.size);

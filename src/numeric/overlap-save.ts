@@ -1,5 +1,5 @@
 import { type Ends, extendedAt } from './ends';
-import { createFft } from './fft';
+import { sharedFft } from './fft';
 import { type KernelSpectrum, type KernelSpectrumOptions, kernelSpectrum } from './kernel-spectrum';
 
 export type { Kernel } from './kernel';
@@ -33,8 +33,8 @@ export interface OverlapSave {
 function createBlockFilter(spectrum: KernelSpectrum): (block: Float64Array) => Float64Array {
   const { blockSize, fold, bins } = spectrum;
   const shortSize = blockSize / fold;
-  const forward = createFft(blockSize);
-  const back = fold === 1 ? forward : createFft(shortSize);
+  const forward = sharedFft(blockSize);
+  const back = fold === 1 ? forward : sharedFft(shortSize);
   const x = new Float64Array(2 * blockSize);
   const product = new Float64Array(2 * shortSize);
   const result = new Float64Array(2 * shortSize);

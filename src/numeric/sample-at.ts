@@ -23,9 +23,14 @@ interface Ratio {
   readonly under: number;
 }
 
-/** More phases than this are interpolated between rows instead of kept. */
+/** Ratios with larger denominators count as irrational. */
 const MOST_PHASES = 1024;
-/** Rows per input sample of the interpolated table; the error of a weight is below 1e-9. */
+/** Weights kept at most; where all phases have more, they are interpolated between fewer rows. */
+const MOST_WEIGHTS = 2_000_000;
+/**
+ * Rows per input sample of the interpolated table: a weight is within 1e-9 of the largest, but for
+ * the outermost, where the window ends in a step.
+ */
 const FINE_PHASES = 256;
 
 /** Continued fraction of x, to the precision of a double; Hardy & Wright 1938, chapter 10. */
@@ -66,18 +71,17 @@ interface Row {
 /** Gives the row for output k; the row's arrays may be used again by the next call. */
 type RowOf = (k: number) => Row;
 
-/** Kernel weights for an instant `fraction` (0 to 1) of a sample after input sample 0. */
+/** Kernel weights, from input sample -half on, for an instant `fraction` of a sample after 0. */
 function phaseWeights(
   fraction: number,
   half: number,
   options: InstantSamplerOptions,
 ): Float64Array {
   const { rateHz, passHz, stopHz, attenuationDb } = options;
-  const reach = Math.floor(half) + 1;
-  const weights = new Float64Array(2 * reach + 1);
+  const weights = new Float64Array(2 * half + 2);
   const beta = kaiserBeta(attenuationDb);
   for (let j = 0; j < weights.length; j++) {
-    const offset = j - reach - fraction;
+    const offset = j - half - fraction;
     const window = kaiserAt(offset / half, beta);
     if (window > 0) weights[j] = window * idealLowPass((passHz + stopHz) / 2, offset / rateHz);
   }
@@ -93,7 +97,6 @@ function sumOf(x: Float64Array): number {
 /** Rows for a rational ratio of the rates: `under` phases that come round again, made when met. */
 function exactRows(ratio: Ratio, half: number, options: InstantSamplerOptions): RowOf {
   const known: ({ weights: Float64Array; sum: number } | undefined)[] = [];
-  const reach = Math.floor(half) + 1;
   return (k) => {
     const position = k * ratio.over;
     const whole = Math.floor(position / ratio.under);
@@ -104,7 +107,7 @@ function exactRows(ratio: Ratio, half: number, options: InstantSamplerOptions): 
       row = { weights, sum: sumOf(weights) };
       known[phase] = row;
     }
-    return { first: whole - reach, weights: row.weights, sum: row.sum };
+    return { first: whole - half, weights: row.weights, sum: row.sum };
   };
 }
 
@@ -113,8 +116,7 @@ function fineRows(half: number, options: InstantSamplerOptions): RowOf {
   const table = Array.from({ length: FINE_PHASES + 3 }, (_, p) =>
     phaseWeights((p - 1) / FINE_PHASES, half, options),
   );
-  const reach = Math.floor(half) + 1;
-  const weights = new Float64Array(2 * reach + 1);
+  const weights = new Float64Array(2 * half + 2);
   return (k) => {
     const position = (k * options.rateHz) / options.outputRateHz;
     const whole = Math.floor(position);
@@ -128,7 +130,7 @@ function fineRows(half: number, options: InstantSamplerOptions): RowOf {
     const [rowA, rowB, rowC, rowD] = [table[at], table[at + 1], table[at + 2], table[at + 3]];
     for (let j = 0; j < weights.length; j++)
       weights[j] = a * rowA[j] + b * rowB[j] + c * rowC[j] + d * rowD[j];
-    return { first: whole - reach, weights, sum: sumOf(weights) };
+    return { first: whole - half, weights, sum: sumOf(weights) };
   };
 }
 
@@ -174,9 +176,9 @@ export function createInstantSampler(options: InstantSamplerOptions): InstantSam
   const { rateHz, outputRateHz, passHz, stopHz, attenuationDb } = options;
   const half = (kaiserTaps(attenuationDb, stopHz - passHz, rateHz) - 1) / 2 || 1;
   const ratio = ratioOf(rateHz / outputRateHz, MOST_PHASES);
-  const rowOf = ratio ? exactRows(ratio, half, options) : fineRows(half, options);
-  const span = 2 * Math.floor(half) + 3;
-  let kept = new Float64Array(4 * span);
+  const few = ratio && ratio.under * 2 * half <= MOST_WEIGHTS;
+  const rowOf = few ? exactRows(ratio, half, options) : fineRows(half, options);
+  let kept = new Float64Array(8 * (half + 1));
   let start = 0;
   let end = 0;
   let row = rowOf(0);
