@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { createInstantSampler, instantCount } from '../../src/numeric/sample-at';
-import { blocksOf, largestDifference, noise, sine } from './signals';
+import { blocksOf, largestDifference, noise, quickestMs, sine } from './signals';
 
 const LOW = { outputRateHz: 4, passHz: 0.5, stopHz: 3, attenuationDb: 80 };
 
@@ -105,8 +105,7 @@ describe('a lead sampled at the output’s own instants', () => {
 
   it('takes an hour at 1 kHz in well under a second', () => {
     const x = sine(3_600_000, 1000, 0.05);
-    const from = performance.now();
     expect(sampled(x, 1000, [10_000]).length).toBe(14_400);
-    expect(performance.now() - from).toBeLessThan(750);
+    expect(quickestMs(() => sampled(x, 1000, [10_000]))).toBeLessThan(300);
   });
 });
