@@ -1,6 +1,7 @@
 import { lombScargle } from '../numeric/lomb-scargle';
 import { welch } from '../numeric/spectrum';
 import { cubicSpline } from '../numeric/spline';
+import { mean } from '../numeric/statistics';
 import { hannPeriodic } from '../numeric/windows';
 import type { Hertz } from '../units/rate';
 import { type Band, bandPower } from './band-power';
