@@ -1,6 +1,6 @@
 import { createContext, useContext } from 'react';
 import { useStore } from 'zustand';
-import type { AnalysisState, AnalysisStore } from '../review/analysis-store';
+import type { AnalysisState, AnalysisStore, SignalAccess } from '../review/analysis-store';
 import type { ViewState, ViewStore } from '../review/view-store';
 import type { SessionStore, SessionStoreState } from '../session/store';
 import type { StudyController } from './controller';
@@ -13,6 +13,7 @@ export interface AppParts {
   readonly view: ViewStore;
   readonly shell: ShellStore;
   readonly controller: StudyController;
+  readonly signals: SignalAccess;
 }
 
 const PartsContext = createContext<AppParts | null>(null);

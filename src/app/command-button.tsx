@@ -1,4 +1,5 @@
-import { type Command, type CommandParts, canRun } from './commands';
+import type { Command, CommandParts } from './command';
+import { canRun } from './commands';
 import { keyWords } from './key-names';
 
 interface CommandButtonProps {

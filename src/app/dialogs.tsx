@@ -1,7 +1,8 @@
 import { AboutDialog } from './about-dialog';
 import { useShell } from './app-context';
-import type { PageActs } from './commands';
+import type { PageActs } from './command';
 import { FigureDialog } from './figure-dialog';
+import { GoToDialog } from './go-to-dialog';
 import { IdentityDialog } from './identity-dialog';
 import { KeysDialog } from './keys-dialog';
 import { PhasesDialog } from './phases-dialog';
@@ -41,6 +42,8 @@ function OneDialog({ state, page }: OneDialogProps) {
       return <ProtocolDialog />;
     case 'settings':
       return <SettingsDialog />;
+    case 'go-to':
+      return <GoToDialog />;
     case 'keys':
       return <KeysDialog />;
     case 'about':

@@ -1,5 +1,6 @@
 import { useApp, useShell } from './app-context';
-import { COMMAND_GROUPS, COMMANDS, GROUP_WORDS } from './commands';
+import { COMMAND_GROUPS, GROUP_WORDS } from './command';
+import { COMMANDS } from './commands';
 import { Dialog } from './dialog';
 import { Tick } from './fields';
 import { isPlainKey, keyWords } from './key-names';

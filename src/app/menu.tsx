@@ -1,6 +1,7 @@
 import { useEffect, useId, useRef, useState } from 'react';
+import type { Command, CommandParts } from './command';
 import { CommandButton } from './command-button';
-import { COMMANDS, type Command, type CommandParts } from './commands';
+import { COMMANDS } from './commands';
 
 interface MenuProps {
   readonly words: string;

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
+import type { CommandParts } from './command';
 import { CommandButton } from './command-button';
-import { type CommandParts, commandOf } from './commands';
+import { commandOf } from './commands';
 
 interface ReportFrameProps {
   readonly parts: CommandParts;

@@ -21,6 +21,7 @@ export type DialogState =
   | { readonly kind: 'phases' }
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
+  | { readonly kind: 'go-to' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
   | { readonly kind: 'sign' }
@@ -43,6 +44,8 @@ export interface ShellState {
   /** The dialog below a reviewer's dialog; it comes back when that one closes. */
   readonly under: DialogState;
   readonly messages: readonly Message[];
+  /** What the last act did, in the line at the foot; each one takes the place of the one before. */
+  readonly status: string;
   readonly theme: ThemeChoice;
   /** Keys that are a single letter, digit or sign act only while this is on. */
   readonly plainKeys: boolean;
@@ -50,6 +53,7 @@ export interface ShellState {
   closeDialog(): void;
   say(text: string, undo?: boolean): void;
   sayProblem(text: string): void;
+  tell(status: string): void;
   putAway(id: number): void;
   setTheme(theme: ThemeChoice): void;
   setPlainKeys(on: boolean): void;
@@ -79,6 +83,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       dialog: NONE,
       under: NONE,
       messages: [],
+      status: '',
       openDialog: (dialog) =>
         set((before) => ({
           dialog,
@@ -88,6 +93,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       closeDialog: () => set((before) => ({ dialog: before.under, under: NONE })),
       say: (text, undo = false) => add('note', text, undo),
       sayProblem: (text) => add('problem', text, false),
+      tell: (status) => set({ status }),
       putAway: (id) =>
         set((before) => ({ messages: before.messages.filter((one) => one.id !== id) })),
       setTheme: (theme) => prefer({ theme }),

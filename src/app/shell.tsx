@@ -1,11 +1,12 @@
 import './styles.css';
 import { type ReactNode, useCallback, useMemo, useRef } from 'react';
 import { useStore } from 'zustand';
+import { type PaneCommands, paneCommands } from '../review/pane-commands';
 import { type AppParts, AppProvider } from './app-context';
-import type { CommandParts, PageActs } from './commands';
+import type { CommandParts, PageActs } from './command';
 import { Dialogs } from './dialogs';
+import { FootLine } from './foot-line';
 import { Messages } from './messages';
-import { ProgressLine } from './progress-line';
 import { ReportFrame } from './report-frame';
 import { StartScreen } from './start-screen';
 import { TopBar } from './top-bar';
@@ -25,28 +26,33 @@ interface ShellProps {
 
 /** The page: bar, start screen or study, dialogs, messages, keys, drops. */
 export function Shell({ parts, panes, renderReport }: ShellProps) {
-  const { shell, session } = parts;
+  const { shell, session, analysis } = parts;
   const fileInput = useRef<HTMLInputElement>(null);
   const hash = useHash();
   const page = usePageActs(fileInput, renderReport !== undefined);
-  const commandParts = useMemo<CommandParts>(() => ({ ...parts, page }), [parts, page]);
+  const commandParts = useMemo<CommandParts>(
+    () => ({ ...parts, page, panes: panesOf(parts) }),
+    [parts, page],
+  );
   const take = useTakeFiles(parts);
   const over = useFileDrop(take);
   useTheme(shell);
   useLeaveGuard(session);
   useKeys(commandParts);
   const identityAsked = useStore(shell, (state) => state.dialog.kind === 'identity');
-  const studyThere = useStore(session, (state) => state.session !== null);
+  const sessionThere = useStore(session, (state) => state.session !== null);
+  const recordingThere = useStore(analysis, (state) => state.recording !== null);
+  const studyThere = sessionThere || recordingThere;
   const studyShown = studyThere && !identityAsked;
   const reportShown = studyShown && renderReport !== undefined && hash === REPORT_HASH;
   return (
     <AppProvider value={parts}>
       <div className={reportShown ? 'app report-open' : 'app'}>
         <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
-        <ProgressLine />
         {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
         {studyShown && !reportShown ? <Workspace panes={panes} page={page} /> : null}
         {studyShown ? null : <StartScreen parts={commandParts} />}
+        <FootLine />
         <Messages />
         <Dialogs page={page} />
         {over ? <p className="drop-over">Drop the file to open it</p> : null}
@@ -64,6 +70,15 @@ export function Shell({ parts, panes, renderReport }: ShellProps) {
       </div>
     </AppProvider>
   );
+}
+
+/** The acts of the panes, speaking and editing through the shell. */
+function panesOf({ session, analysis, view, signals, controller, shell }: AppParts): PaneCommands {
+  return paneCommands({ session, analysis, view }, signals, {
+    edit: (edit) => controller.edit(edit),
+    say: (text) => shell.getState().tell(text),
+    reportError: (text) => shell.getState().sayProblem(text),
+  });
 }
 
 type InputRef = { readonly current: HTMLInputElement | null };

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import type { Failure } from '../recording/failure';
 import { useApp } from './app-context';
-import type { PageActs } from './commands';
+import type { PageActs } from './command';
 import { Dialog } from './dialog';
 import { Choice, Field } from './fields';
 import { readNumber } from './number-field';

@@ -1,7 +1,7 @@
 import { useCallback, useEffect, useState } from 'react';
 import { useApp, useShell } from './app-context';
 import { CAUTIONS, PRIVACY } from './cautions';
-import type { CommandParts } from './commands';
+import type { CommandParts } from './command';
 import type { KeptRow } from './controller';
 import { localWords } from './study-words';
 

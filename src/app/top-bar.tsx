@@ -1,6 +1,7 @@
 import { useAnalysis, useSession, useView } from './app-context';
+import type { CommandParts } from './command';
 import { CommandButton } from './command-button';
-import { type CommandParts, commandOf } from './commands';
+import { commandOf } from './commands';
 import { Menu } from './menu';
 import { factsWords, keptWords, personWords } from './study-words';
 
@@ -31,12 +32,12 @@ function StudyStrip({ parts }: { readonly parts: CommandParts }) {
   const study = useSession((state) => state.session?.state.study ?? null);
   const recording = useAnalysis((state) => state.recording);
   const hidden = useView((state) => state.identityHidden);
-  if (!study) return null;
+  const code = study?.code ?? 'being opened';
   const person = recording && !hidden ? personWords(recording) : '';
   return (
     <div className="strip">
       <p className="who">
-        <strong>{hidden ? 'identity hidden' : study.code}</strong>
+        <strong>{hidden ? 'identity hidden' : code}</strong>
         {person ? <span className="person">{person}</span> : null}
         <CommandButton
           command={commandOf('hide-identity')}
@@ -44,7 +45,7 @@ function StudyStrip({ parts }: { readonly parts: CommandParts }) {
           words={hidden ? 'Show' : 'Hide'}
           className="button slight"
         />
-        {study.invented ? <span className="badge">invented data</span> : null}
+        {(study ?? recording)?.invented ? <span className="badge">invented data</span> : null}
       </p>
       <p className="facts">
         {recording ? <span>{factsWords(recording)}</span> : null}

@@ -1,5 +1,6 @@
 import { useEffect } from 'react';
-import { type CommandParts, canRun, commandForKey } from './commands';
+import type { CommandParts } from './command';
+import { canRun, commandForKey } from './commands';
 import { keyName } from './key-names';
 
 const TEXT_INPUTS = /^(text|search|url|tel|email|password|number|date|time)$/;

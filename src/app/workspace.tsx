@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import { FindingsPane } from '../review/findings-pane';
 import { useAnalysis, useApp } from './app-context';
-import type { PageActs } from './commands';
+import type { PageActs } from './command';
 
 interface WorkspaceProps {
   readonly panes: { readonly whole: ReactNode; readonly traces: ReactNode };

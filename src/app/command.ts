@@ -1,0 +1,51 @@
+import type { PaneCommands } from '../review/pane-commands';
+import type { AppParts } from './app-context';
+
+/** Headings of the keys page, in its order. */
+export const COMMAND_GROUPS = ['open', 'study', 'work', 'look', 'beats', 'spans', 'page'] as const;
+export type CommandGroup = (typeof COMMAND_GROUPS)[number];
+
+export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
+  open: 'Open and save',
+  study: 'The study',
+  work: 'Undo and stop',
+  look: 'Move and zoom',
+  beats: 'Beats',
+  spans: 'Spoiled spans',
+  page: 'The page',
+};
+
+/** Where a command acts: everywhere, or only while a study is on the page. */
+export type CommandContext = 'always' | 'study';
+
+/** What commands ask of the page around the stores. */
+export interface PageActs {
+  chooseFile(): void;
+  chooseSession(): void;
+  toggleReport(): void;
+  focusFindings(): void;
+  /** False while the report view is not part of the page. */
+  readonly reportThere: boolean;
+}
+
+export interface CommandParts extends AppParts {
+  readonly panes: PaneCommands;
+  readonly page: PageActs;
+}
+
+/** One act of the page. The table below feeds keys, tooltips, menus and the keys page. */
+export interface Command {
+  readonly id: string;
+  readonly words: string;
+  /** Names of keys as keyName writes them; the first is shown in tooltips. */
+  readonly keys: readonly string[];
+  readonly group: CommandGroup;
+  readonly when: CommandContext;
+  /** Menu of the top bar it is listed in. */
+  readonly menu?: 'open' | 'study' | 'help';
+  /** Words with what it would act on now ("Undo move beat"). */
+  readonly wordsNow?: (parts: CommandParts) => string;
+  /** False while there is nothing for it to act on. */
+  readonly ready?: (parts: CommandParts) => boolean;
+  readonly run: (parts: CommandParts) => void;
+}
