@@ -44,7 +44,7 @@ export default defineConfig(({ mode }) => {
             input: {
               analyse: 'workers/analyse.ts',
               serve: 'workers/serve.ts',
-              bench: 'workers/bench.ts',
+              bench: 'test/bench/bench.ts',
             },
             output: { entryFileNames: '[name].mjs', chunkFileNames: 'chunks/[name].mjs' },
           },

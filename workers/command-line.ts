@@ -62,6 +62,11 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
   if (studies.length === 0) throw new WrongArguments('name at least one study file');
   if (single.has('session') && studies.length > 1)
     throw new WrongArguments('--session goes with one study');
+  const settled = ['heart', 'breath', 'phases', 'route'].filter((name) => single.has(name));
+  if (single.has('session') && (slow.length > 0 || settled.length > 0))
+    throw new WrongArguments(
+      `a session settles leads, phases and route; leave out --${slow.length > 0 ? 'slow' : settled[0]} or --session`,
+    );
   const phases = single.get('phases');
   return {
     studies,

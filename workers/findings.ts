@@ -1,7 +1,9 @@
+import { pow } from '../src/numeric/elementary';
 import { type Figures, type FigureValue, numberFigure, withheld } from '../src/recording/figure';
-import { FIGURES } from '../src/recording/figure-catalogue';
+import { FIGURES, type FigureDefinition, type Organ } from '../src/recording/figure-catalogue';
 import type { FigureChange, PhaseFindings } from '../src/recording/findings';
 import { isFasting, isFed, type Phase } from '../src/recording/phase';
+import { coveredSeconds, type Span, type SpanCause } from '../src/recording/span';
 
 /** Parts in which a fed phase is shown beside the whole of it. */
 const FED_PART_S = 1800;
@@ -37,23 +39,55 @@ export function changesOf(phases: readonly PhaseFindings[]): readonly FigureChan
   if (!fasting) return [];
   const fed = phases.filter((one) => isFed({ ...one, name: one.phase }));
   return fed.flatMap((after) =>
-    FIGURES.filter(({ change }) => change === 'difference').map(({ key }) => ({
-      key,
+    FIGURES.filter(({ change }) => change === 'difference').map((figure) => ({
+      key: figure.key,
       from: fasting.name,
       to: after.name,
-      value: changeOf(fasting.figures, after.figures, key),
+      value: changeOf(fasting.figures, after.figures, figure),
     })),
   );
 }
 
-function changeOf(before: Figures, after: Figures, key: string): FigureValue {
+function changeOf(before: Figures, after: Figures, { key, unit }: FigureDefinition): FigureValue {
   const from = numberAt(before, key);
   const to = numberAt(after, key);
   if (from === null || to === null) return withheld('both phases need the figure as a number');
-  return numberFigure(to - from);
+  return numberFigure(
+    to - from,
+    unit === 'dB' ? `power × ${pow(10, (to - from) / 10).toFixed(1)}` : null,
+  );
 }
 
 function numberAt(figures: Figures, key: string): number | null {
   const figure = figures[key];
   return figure?.kind === 'number' ? figure.value : null;
+}
+
+/** Causes that say the person moved; the others are of the equipment. */
+const MOVEMENT: ReadonlySet<SpanCause> = new Set([
+  'talk',
+  'move',
+  'cough',
+  'eat',
+  'electrode',
+  'step',
+  'burst',
+]);
+
+/** Share of a part of the study under spans that tell of movement. */
+export function movementFigure(spans: readonly Span[], { fromS, toS }: Phase): FigureValue {
+  if (!(toS > fromS)) return withheld('the phase has no length');
+  const moved = spans.filter(({ cause }) => MOVEMENT.has(cause));
+  return numberFigure((100 * coveredSeconds(moved, fromS, toS)) / (toS - fromS));
+}
+
+/** The figures with every one of an organ withheld; as they are where the reason is null. */
+export function withholdOrgan(figures: Figures, organ: Organ, reason: string | null): Figures {
+  if (reason === null) return figures;
+  return {
+    ...figures,
+    ...Object.fromEntries(
+      FIGURES.filter((figure) => figure.organ === organ).map(({ key }) => [key, withheld(reason)]),
+    ),
+  };
 }

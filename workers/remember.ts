@@ -35,3 +35,12 @@ export function identity(object: object | null): number {
   numbers.set(object, given);
   return given;
 }
+
+/** Gives the value it was given last as long as the new one is equal to it, so that `identity` stays the same. */
+export function lastEqual<T>(equal: (a: T, b: T) => boolean): (value: T) => T {
+  let last: { readonly value: T } | null = null;
+  return (value) => {
+    if (!last || !equal(last.value, value)) last = { value };
+    return last.value;
+  };
+}

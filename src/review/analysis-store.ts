@@ -10,7 +10,7 @@ import type {
 import type { Findings } from '../recording/findings';
 import type { Recording } from '../recording/recording';
 import type { SlowWaveRhythm } from '../recording/rhythm';
-import type { RoleReasons } from '../recording/roles';
+import type { RoleReasons, Roles } from '../recording/roles';
 
 /** Long work that the person can watch and stop. */
 export interface Progress {
@@ -24,6 +24,8 @@ export interface AnalysisState {
   readonly recording: Recording | null;
   /** False while the file itself must be chosen again: figures stand, traces cannot be drawn. */
   readonly fileAtHand: boolean;
+  /** Roles to draw the first picture by, until the session begins. */
+  readonly firstRoles: Roles | null;
   readonly reasons: RoleReasons | null;
   readonly separation: readonly SeparationFacts[];
   readonly stomach: readonly SlowWaveRhythm[];
@@ -47,6 +49,7 @@ export interface SignalAccess {
 const EMPTY: AnalysisState = {
   recording: null,
   fileAtHand: false,
+  firstRoles: null,
   reasons: null,
   separation: [],
   stomach: [],

@@ -1,0 +1,156 @@
+import type { ReviewInputs } from '../../workers/analysis-api';
+import type { AnalysisClient } from '../../workers/analysis-client';
+import { type AnalysisStore, type SignalAccess, takeAnalysis } from '../review/analysis-store';
+import { asWork, beginWork, endWork } from '../review/idle';
+import type { Session } from '../session/document';
+import { editNumber, type SessionStore } from '../session/store';
+import type { ShellStore } from './shell-store';
+
+/** Work shorter than this shows no progress line. */
+const SHOW_PROGRESS_AFTER_MS = 200;
+
+/** What the worker is to compute from, as the session stands. */
+export function inputsOf(session: Session): ReviewInputs {
+  const { roles, phases, settings, spans, beats } = session.state;
+  return { edit: editNumber(session), roles, phases, settings, spans, beats };
+}
+
+/** True where both give the same figures: edits of words and protocol do not reach the worker. */
+function sameInputs(a: ReviewInputs, b: ReviewInputs): boolean {
+  return (
+    a.roles === b.roles &&
+    a.phases === b.phases &&
+    a.settings === b.settings &&
+    a.spans === b.spans &&
+    a.beats === b.beats
+  );
+}
+
+/** True where the signals themselves are to be made again, so that work under way is of no use any more. */
+function otherSignals(a: ReviewInputs, b: ReviewInputs): boolean {
+  return a.roles !== b.roles || a.settings !== b.settings;
+}
+
+/** Keeps the results in step with the session: one computation at a time, always ending with the last edit. */
+export interface AnalysisRunner {
+  readonly signals: SignalAccess;
+  /** Shows a progress line for long work and lets it be stopped; the signal is for the call. */
+  watched<T>(work: (watch: Watch) => Promise<T>): Promise<T>;
+  /** Computes again from the session as it stands, after the worker was started again or a study was opened. */
+  refresh(): void;
+  /** Forgets what was sent, before another study. */
+  reset(): void;
+}
+
+export interface Watch {
+  readonly signal: AbortSignal;
+  readonly onProgress: (step: string, done: number) => void;
+}
+
+interface RunnerParts {
+  readonly client: AnalysisClient;
+  readonly session: SessionStore;
+  readonly analysis: AnalysisStore;
+  readonly shell: ShellStore;
+}
+
+export function createAnalysisRunner({
+  client,
+  session,
+  analysis,
+  shell,
+}: RunnerParts): AnalysisRunner {
+  let sent: ReviewInputs | null = null;
+  let running: { readonly inputs: ReviewInputs; readonly abort: () => void } | null = null;
+
+  async function watched<T>(work: (watch: Watch) => Promise<T>): Promise<T> {
+    const controller = new AbortController();
+    const startMs = performance.now();
+    const stop = () => controller.abort();
+    const onProgress = (step: string, done: number) => {
+      if (performance.now() - startMs > SHOW_PROGRESS_AFTER_MS)
+        analysis.setState({ progress: { step, done, stop } });
+    };
+    beginWork();
+    try {
+      return await work({ signal: controller.signal, onProgress });
+    } finally {
+      analysis.setState({ progress: null });
+      endWork();
+    }
+  }
+
+  function follow(): void {
+    const open = session.getState().session;
+    if (!open || !analysis.getState().fileAtHand) return;
+    const inputs = inputsOf(open);
+    if (running) {
+      if (otherSignals(running.inputs, inputs)) running.abort();
+      return;
+    }
+    if (sent && sameInputs(sent, inputs)) {
+      analysis.setState({ edit: inputs.edit });
+      return;
+    }
+    void run(inputs);
+  }
+
+  async function run(inputs: ReviewInputs): Promise<void> {
+    const anew = !sent || otherSignals(sent, inputs);
+    sent = inputs;
+    const reply = await watched((watch) => {
+      const abort = new AbortController();
+      const stop = () => abort.abort();
+      watch.signal.addEventListener('abort', stop, { once: true });
+      running = { inputs, abort: stop };
+      return client.analyse(inputs, { ...watch, signal: abort.signal });
+    });
+    running = null;
+    if (sent !== inputs) return;
+    if (reply.ok) {
+      takeAnalysis(analysis, reply.value);
+      if (anew) analysis.setState((before) => ({ signalVersion: before.signalVersion + 1 }));
+    } else sent = null;
+    if (reply.ok) return movedOn(inputs) ? follow() : undefined;
+    if (reply.failure.kind === 'cancelled') {
+      if (!movedOn(inputs))
+        shell.getState().say('Stopped. The figures stay grey until they are computed again.');
+    } else if (reply.failure.kind !== 'crashed') {
+      shell.getState().openDialog({ kind: 'failure', failure: reply.failure });
+    }
+    if (movedOn(inputs)) follow();
+  }
+
+  const movedOn = (inputs: ReviewInputs): boolean => {
+    const open = session.getState().session;
+    return open !== null && editNumber(open) !== inputs.edit;
+  };
+
+  session.subscribe((now, before) => {
+    if (now.session !== before.session) follow();
+  });
+
+  return {
+    watched,
+    refresh() {
+      sent = null;
+      follow();
+    },
+    reset() {
+      sent = null;
+      running?.abort();
+    },
+    signals: {
+      async columns(request) {
+        const reply = await asWork(client.columns(request));
+        return reply.ok ? reply.value : null;
+      },
+      async placeBeat(nearS) {
+        const reply = await asWork(client.placeBeat(nearS));
+        if (reply.ok) return reply.value;
+        shell.getState().sayProblem(reply.failure.message);
+        return null;
+      },
+    },
+  };
+}

@@ -1,0 +1,238 @@
+import type { Given, Proposal, TextReading } from '../../workers/analysis-api';
+import { createAnalysisClient } from '../../workers/analysis-client';
+import { createHashClient } from '../../workers/hash-client';
+import { startModuleWorker } from '../../workers/start-worker';
+import { type Failure, Refusal, type Reply } from '../recording/failure';
+import type { Recording } from '../recording/recording';
+import { DEFAULT_SETTINGS } from '../recording/settings';
+import { type AnalysisStore, blankAnalysis, type SignalAccess } from '../review/analysis-store';
+import { lookAtStudy, type ViewStore } from '../review/view-store';
+import type { Edit, Session } from '../session/document';
+import { initialState, studyIdentity } from '../session/initial-state';
+import type { Keeper } from '../session/keeper';
+import { beginSession, redoableEdit, undoableEdit } from '../session/log';
+import type { SessionStore } from '../session/store';
+import { type AnalysisRunner, createAnalysisRunner } from './analysis-runner';
+import { withReviewer } from './app-context';
+import type { KeptRow, StudyController } from './controller';
+import { lastStudy } from './last-study';
+import type { ShellStore } from './shell-store';
+import { createStudyEdits } from './study-edits';
+import { createStudyFiles } from './study-files';
+import { createStudyKeeping } from './study-keeping';
+
+export interface ControllerParts {
+  readonly session: SessionStore;
+  readonly analysis: AnalysisStore;
+  readonly view: ViewStore;
+  readonly shell: ShellStore;
+  readonly keeper: Keeper;
+  readonly analysisWorkerUrl: string;
+  readonly hashWorkerUrl: string;
+}
+
+/** A study whose header has been read, until the person agrees that it is the one. */
+interface Opening {
+  readonly file: File;
+  readonly recording: Recording;
+  readonly quickKey: string;
+  readonly kept: Session | null;
+}
+
+/** A session as the identity dialog tells of it. */
+function keptRow({ state, log }: Session): KeptRow {
+  const { quickKey, code, start, invented } = state.study;
+  return { quickKey, code, start, invented, edits: log.length, lastUtc: log.at(-1)?.atUtc ?? null };
+}
+
+/** Leads a study from the file through worker and session to the stores that the page draws from. */
+export function createStudyController(parts: ControllerParts): StudyController & {
+  readonly signals: SignalAccess;
+} {
+  const { session, analysis, view, shell, keeper } = parts;
+  const client = createAnalysisClient(
+    () => startModuleWorker(parts.analysisWorkerUrl),
+    () => runner.refresh(),
+  );
+  const hash = createHashClient(() => startModuleWorker(parts.hashWorkerUrl));
+  const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, shell });
+  const keeping = createStudyKeeping({ keeper, hash, session, shell });
+  const files = createStudyFiles({ session, analysis, shell, keeping });
+  const propose = (given: Given) => runner.watched((watch) => client.propose(given, watch));
+  const edits = createStudyEdits({ session, shell, analysis, propose });
+  let opening: Opening | null = null;
+  let awaited: Session | null = null;
+
+  const fail = (failure: Failure): void => {
+    if (failure.kind === 'cancelled') shell.getState().say('Stopped. What was open is as it was.');
+    else shell.getState().openDialog({ kind: 'failure', failure });
+  };
+
+  async function open(file: File, reading: TextReading | null): Promise<void> {
+    const reply = await runner.watched((watch) => client.open(file, file.name, reading, watch));
+    if (!reply.ok) {
+      if (reply.failure.kind === 'wrong-input')
+        shell.getState().openDialog({ kind: 'text-reading', file, failure: reply.failure });
+      else fail(reply.failure);
+      return;
+    }
+    const { recording, quickKey } = reply.value;
+    const kept = await keptSession(quickKey);
+    opening = { file, recording, quickKey, kept };
+    shell.getState().openDialog({
+      kind: 'identity',
+      recording,
+      quickKey,
+      found: recording.found,
+      kept: kept && keptRow(kept),
+    });
+  }
+
+  async function keptSession(quickKey: string): Promise<Session | null> {
+    if (awaited?.state.study.quickKey === quickKey) return awaited;
+    try {
+      const found = await keeper.find(quickKey);
+      if (found?.note) shell.getState().say(found.note);
+      return found?.session ?? null;
+    } catch (error) {
+      if (!(error instanceof Refusal)) throw error;
+      fail(error.failure);
+      return null;
+    }
+  }
+
+  function blank(): void {
+    runner.reset();
+    keeping.end();
+    session.getState().close();
+    blankAnalysis(analysis);
+  }
+
+  async function begin({ file, recording, quickKey, kept }: Opening, code: string): Promise<void> {
+    blank();
+    await client.accept();
+    analysis.setState({ recording, fileAtHand: true });
+    lookAtStudy(view, recording.durationS);
+    lastStudy.remember(quickKey);
+    const first = await runner.watched((watch) => client.firstRoles(watch));
+    if (first.ok)
+      analysis.setState((before) => ({
+        firstRoles: first.value,
+        signalVersion: before.signalVersion + 1,
+      }));
+    const begun = kept ?? (await newSession(recording, quickKey, code));
+    if (!begun || analysis.getState().recording !== recording) return;
+    awaited = null;
+    session.getState().begin(begun);
+    void keeping.begin(begun).then(() => keeping.confirm(file));
+  }
+
+  async function newSession(
+    recording: Recording,
+    quickKey: string,
+    code: string,
+  ): Promise<Session | null> {
+    const settings = DEFAULT_SETTINGS;
+    const reply: Reply<Proposal> = await propose({
+      roles: null,
+      phases: null,
+      spans: null,
+      settings,
+    });
+    if (!reply.ok) {
+      blank();
+      fail(reply.failure);
+      return null;
+    }
+    analysis.setState({ reasons: reply.value.reasons });
+    const study = studyIdentity(recording, quickKey, code);
+    return beginSession(initialState(study, { ...reply.value, settings }));
+  }
+
+  function edit(one: Edit): void {
+    withReviewer({ session, shell }, () => {
+      try {
+        session.getState().apply(one);
+      } catch (error) {
+        if (!(error instanceof Refusal)) throw error;
+        shell.getState().sayProblem(`${error.failure.message} ${error.failure.remedy}`);
+      }
+    });
+  }
+
+  return {
+    signals: runner.signals,
+    openFile: open,
+    async openDemo() {
+      const reply = await runner.watched((watch) => client.demo(watch));
+      if (reply.ok) await open(new File([reply.value], 'invented-demo.edf'), null);
+      else fail(reply.failure);
+    },
+    async openSessionFile(file) {
+      const read = await files.readSession(file);
+      if (!read) return;
+      const { quickKey, code } = read.state.study;
+      awaited = null;
+      const refusal = files.refuseOlder(read, await keptSession(quickKey));
+      if (refusal) {
+        fail(refusal);
+        return;
+      }
+      awaited = read;
+      if (session.getState().session?.state.study.quickKey === quickKey) {
+        session.getState().begin(read);
+        await keeping.begin(read);
+      } else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
+    },
+    async continueKept(quickKey) {
+      const kept = await keptSession(quickKey);
+      if (!kept) return;
+      awaited = kept;
+      const { code, invented } = kept.state.study;
+      if (invented) await this.openDemo();
+      else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
+    },
+    async confirmIdentity(code) {
+      const confirmed = opening;
+      opening = null;
+      shell.getState().closeDialog();
+      if (confirmed) await begin(confirmed, code);
+    },
+    cancelOpening() {
+      opening = null;
+      awaited = null;
+      shell.getState().closeDialog();
+    },
+    async keptSessions() {
+      return (await keeper.list()).map((one) => ({ ...one, lastUtc: one.savedAtUtc }));
+    },
+    async forget(quickKey) {
+      await keeper.forget(quickKey);
+      lastStudy.forget(quickKey);
+    },
+    edit,
+    undo() {
+      const open = session.getState().session;
+      if (!open || !undoableEdit(open)) return;
+      withReviewer({ session, shell }, () => {
+        const name = session.getState().undo();
+        if (name) shell.getState().say(`Undone: ${name}.`);
+      });
+    },
+    redo() {
+      const open = session.getState().session;
+      if (!open || !redoableEdit(open)) return;
+      withReviewer({ session, shell }, () => {
+        const name = session.getState().redo();
+        if (name) shell.getState().say(`Done again: ${name}.`);
+      });
+    },
+    ...edits,
+    ...files.acts,
+    closeStudy() {
+      blank();
+      lastStudy.clear();
+    },
+    stop: () => analysis.getState().progress?.stop(),
+  };
+}

@@ -1,0 +1,101 @@
+import type { HashClient } from '../../workers/hash-client';
+import { Refusal } from '../recording/failure';
+import { confirmStudy } from '../session/confirm-study';
+import type { Session } from '../session/document';
+import type { KeptReport } from '../session/keep-writes';
+import { type Keeper, whereKept } from '../session/keeper';
+import { editNumber, type SessionStore } from '../session/store';
+import type { ShellStore } from './shell-store';
+
+/** Keeps every edit of the open session in this browser as it is made, and says where the work is. */
+export interface StudyKeeping {
+  /** Begins to keep a session that is not kept yet, or goes on with one that is. */
+  begin(session: Session): Promise<void>;
+  /** Reads the whole file for its SHA-256 and confirms the session by it. */
+  confirm(file: Blob): void;
+  /** Says that the session stands in a file now. */
+  inFile(fileName: string): void;
+  /** True where edits stand in no downloaded file. */
+  readonly onlyHere: () => boolean;
+  end(): void;
+}
+
+interface KeepingParts {
+  readonly keeper: Keeper;
+  readonly hash: HashClient;
+  readonly session: SessionStore;
+  readonly shell: ShellStore;
+}
+
+const keyOf = (session: Session | null): string | undefined => session?.state.study.quickKey;
+
+export function createStudyKeeping({ keeper, hash, session, shell }: KeepingParts): StudyKeeping {
+  let begun: string | undefined;
+  let fileEdit = 0;
+  let saidWhy = '';
+  let hashing: AbortController | null = null;
+  const current = () => session.getState();
+
+  function told(report: KeptReport): void {
+    const { session: open, kept } = current();
+    if (!open || keyOf(open) !== begun) return;
+    const newerInFile = kept.kind === 'file' && kept.edit >= report.edit;
+    if (!newerInFile) current().setKept(whereKept(report));
+    const why = report.journal?.message ?? '';
+    if (why !== '' && why !== saidWhy) shell.getState().sayProblem(why);
+    saidWhy = why;
+  }
+
+  function keep(open: Session): void {
+    current().setKept({ kind: 'saving', edit: editNumber(open) });
+    void keeper.append(open).then(told);
+  }
+
+  session.subscribe((now, before) => {
+    const grown = now.session && now.session.log !== before.session?.log;
+    if (grown && begun !== undefined && keyOf(now.session) === begun) keep(now.session);
+  });
+
+  return {
+    async begin(open) {
+      const where = current();
+      begun = keyOf(open);
+      fileEdit = 0;
+      where.setKept({ kind: 'saving', edit: editNumber(open) });
+      told(await keeper.begin(open));
+    },
+    confirm(file) {
+      hashing?.abort();
+      hashing = new AbortController();
+      void hash.hash(file, { signal: hashing.signal }).then((reply) => {
+        const open = current().session;
+        if (!reply.ok || !open || keyOf(open) !== begun) return;
+        try {
+          const confirmed = confirmStudy(open, reply.value);
+          if (confirmed === open) return;
+          session.setState({ session: confirmed });
+          void keeper.begin(confirmed).then(told);
+        } catch (error) {
+          if (!(error instanceof Refusal)) throw error;
+          shell.getState().openDialog({ kind: 'failure', failure: error.failure });
+        }
+      });
+    },
+    inFile(fileName) {
+      const open = current().session;
+      if (!open) return;
+      fileEdit = editNumber(open);
+      current().setKept({ kind: 'file', edit: fileEdit, fileName });
+    },
+    onlyHere: () => {
+      const open = current().session;
+      return open !== null && editNumber(open) > fileEdit;
+    },
+    end() {
+      hashing?.abort();
+      begun = undefined;
+      fileEdit = 0;
+      keeper.close();
+    },
+  };
+}

@@ -1,0 +1,143 @@
+import { createHash } from 'node:crypto';
+import { createReadStream, openAsBlob } from 'node:fs';
+import { mkdir, readFile, writeFile } from 'node:fs/promises';
+import { basename, extname, join } from 'node:path';
+import { exportFiles } from '../src/export/all-files';
+import { Refusal } from '../src/recording/failure';
+import { type Lead, parseLead } from '../src/recording/lead';
+import type { Recording } from '../src/recording/recording';
+import type { Roles } from '../src/recording/roles';
+import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
+import { confirmStudy } from '../src/session/confirm-study';
+import type { Session } from '../src/session/document';
+import { initialState, studyIdentity } from '../src/session/initial-state';
+import { beginSession } from '../src/session/log';
+import { textToSession } from '../src/session/read-document';
+import { editNumber } from '../src/session/store';
+import { PROGRAM } from '../src/units/program';
+import type { Opened } from './analysis-api';
+import { type AnalyseRequest, parseArguments, USAGE, WrongArguments } from './command-line';
+import { type Job, startJob } from './job';
+import { createPipeline, type Pipeline } from './pipeline';
+
+/** Roles with what the command line names in the place of what is proposed; the first slow lead named is reported. */
+function rolesWith(proposed: Roles, request: AnalyseRequest, recording: Recording): Roles {
+  const lead = (text: string): Lead => {
+    const found = parseLead(text, recording.channels);
+    if (found) return found;
+    const labels = recording.channels.map(({ label }, i) => `#${i + 1} ${label}`).join(', ');
+    throw new WrongArguments(`"${text}" names no lead of ${recording.fileName}; it has ${labels}`);
+  };
+  const named = request.slow.length > 0 ? { slow: request.slow.map(lead), reported: 0 } : {};
+  return {
+    ...proposed,
+    ...named,
+    heart: request.heart === null ? proposed.heart : lead(request.heart),
+    breath: request.breath === null ? proposed.breath : lead(request.breath),
+  };
+}
+
+async function proposedSession(
+  pipeline: Pipeline,
+  { recording, quickKey }: Opened,
+  request: AnalyseRequest,
+  job: Job,
+): Promise<Session> {
+  const { route } = request;
+  const settings: Settings = route
+    ? { ...DEFAULT_SETTINGS, slowRoute: route, heartRoute: route }
+    : DEFAULT_SETTINGS;
+  const named = request.slow.length > 0 || request.heart !== null || request.breath !== null;
+  const roles = named ? rolesWith(await pipeline.firstRoles(), request, recording) : null;
+  const proposal = await pipeline.propose(
+    { roles, phases: request.phases, spans: null, settings },
+    job,
+  );
+  const code = recording.identity.code ?? basename(recording.fileName, extname(recording.fileName));
+  return beginSession(
+    initialState(studyIdentity(recording, quickKey, code), { ...proposal, settings }),
+  );
+}
+
+async function keptSession(path: string, sha256: string): Promise<Session> {
+  return confirmStudy(textToSession(await readFile(path, 'utf8')), sha256);
+}
+
+async function sha256Of(path: string): Promise<string> {
+  const hash = createHash('sha256');
+  for await (const chunk of createReadStream(path)) hash.update(chunk);
+  return hash.digest('hex');
+}
+
+async function analyseStudy(path: string, folder: string, request: AnalyseRequest): Promise<void> {
+  const { job } = startJob(() => undefined);
+  const pipeline = createPipeline();
+  const file = await openAsBlob(path);
+  const opened = await pipeline.open(file, basename(path), {
+    rateHz: request.rateHz,
+    unit: request.unit,
+  });
+  pipeline.accept();
+  const sha256 = await sha256Of(path);
+  const session = request.session
+    ? await keptSession(request.session, sha256)
+    : confirmStudy(await proposedSession(pipeline, opened, request, job), sha256);
+  const { state } = session;
+  const edit = editNumber(session);
+  const analysis = await pipeline.analyse({ ...state, edit }, job);
+  const files = exportFiles({
+    recording: opened.recording,
+    state,
+    sha256,
+    program: PROGRAM,
+    edit,
+    stomach: analysis.stomach ?? [],
+    heart: analysis.heart,
+    findings: analysis.findings,
+  });
+  await mkdir(folder, { recursive: true });
+  for (const { name, text } of files) await writeFile(join(folder, name), text);
+}
+
+/** Folder names of several studies: the file's name without its ending, told apart by a number where two are equal. */
+function foldersOf(paths: readonly string[], out: string): readonly string[] {
+  if (paths.length === 1) return [out];
+  const used = new Map<string, number>();
+  return paths.map((path) => {
+    const name = basename(path, extname(path));
+    const count = (used.get(name) ?? 0) + 1;
+    used.set(name, count);
+    return join(out, count === 1 ? name : `${name}-${count}`);
+  });
+}
+
+function reasonOf(error: unknown): string {
+  if (!(error instanceof Refusal)) return error instanceof Error ? error.message : String(error);
+  const { message, place, remedy } = error.failure;
+  return [message, place ? `(${place})` : '', remedy].filter((part) => part !== '').join(' ');
+}
+
+async function main(words: readonly string[]): Promise<number> {
+  const request = parseArguments(words);
+  const folders = foldersOf(request.studies, request.out);
+  let failed = 0;
+  for (const [i, path] of request.studies.entries()) {
+    try {
+      await analyseStudy(path, folders[i], request);
+      process.stdout.write(`${path}: written to ${folders[i]}\n`);
+    } catch (error) {
+      if (error instanceof WrongArguments) throw error;
+      failed += 1;
+      process.stderr.write(`${path}: ${reasonOf(error)}\n`);
+    }
+  }
+  return failed > 0 ? 1 : 0;
+}
+
+try {
+  process.exitCode = await main(process.argv.slice(2));
+} catch (error) {
+  process.stderr.write(`${reasonOf(error)}\n`);
+  if (error instanceof WrongArguments) process.stderr.write(`\n${USAGE}\n`);
+  process.exitCode = error instanceof WrongArguments ? 2 : 1;
+}

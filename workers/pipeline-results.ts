@@ -1,0 +1,276 @@
+import { beatHeights } from '../src/heart/beat-heights';
+import { breathingFromLead } from '../src/heart/breathing';
+import { breathingFromBeats } from '../src/heart/breathing-from-beats';
+import type { Detection } from '../src/heart/detect';
+import { heartFigures, withheldHeartFigures } from '../src/heart/heart-figures';
+import { rrSeries } from '../src/heart/rr-series';
+import { seenInPassing } from '../src/heart/seen-in-passing';
+import type { BeatList } from '../src/recording/beat';
+import type { SeenInPassing } from '../src/recording/figure';
+import type { PhaseFindings } from '../src/recording/findings';
+import type { BreathingSeries } from '../src/recording/heart-series';
+import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { type Phase, phasesOrWhole } from '../src/recording/phase';
+import type { Recording } from '../src/recording/recording';
+import type { HeartOutput } from '../src/recording/separated';
+import type { Settings } from '../src/recording/settings';
+import { type Interval, joinIntervals, spansOf } from '../src/recording/span';
+import { filterWarnings } from '../src/separate/filter-warnings';
+import type { SeparatedSlow } from '../src/separate/route';
+import { stomachFigures } from '../src/stomach/figures';
+import { type StomachAnalysis, slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
+import { cpmToHz } from '../src/units/rate';
+import { TICKS_PER_SAMPLE } from '../src/units/ticks';
+import type { Analysis, HeartResults, ReviewInputs, SeparationFacts } from './analysis-api';
+import { changesOf, movementFigure, type Part, partsOf, withholdOrgan } from './findings';
+import type { Job } from './job';
+import { identity, lastEqual, type Remembered, remember } from './remember';
+
+/** Everything the figures are computed from. */
+export interface ResultInputs {
+  readonly inputs: ReviewInputs;
+  readonly slow: readonly SeparatedSlow[];
+  readonly heart: HeartOutput | null;
+  /** The heart lead's own rate, that of the ticks. */
+  readonly heartRateHz: number;
+  /** Stretches that carry no heartbeat. */
+  readonly blocked: readonly Interval[];
+  readonly detection: Detection | null;
+  readonly breathing: { readonly samples: Float64Array; readonly rateHz: number } | null;
+}
+
+export interface Results {
+  of(from: ResultInputs, job: Job): Promise<Analysis>;
+}
+
+interface StomachInputs {
+  readonly slow: SeparatedSlow;
+  readonly spoiled: readonly Interval[];
+  readonly phases: readonly Phase[];
+  readonly settings: Settings;
+  readonly breathing: BreathingSeries | null;
+}
+
+/** The heart side before phases: intervals, breathing, what was seen. */
+interface HeartSide {
+  readonly results: HeartResults;
+  readonly figuresOf: (part: Part) => ReturnType<typeof heartFigures>;
+  readonly seen: readonly SeenInPassing[];
+}
+
+/** The results of one study; a step is computed again only when something it depends on has changed. */
+export function createResults(recording: Recording): Results {
+  const beatsAsBefore = lastEqual<BeatList>(sameBeats);
+  const breathingAsBefore = lastEqual<BreathingSeries>(sameBreathing);
+  const leadBreathing = remember(
+    (samples: { samples: Float64Array; rateHz: number }) => String(identity(samples.samples)),
+    ({ samples, rateHz }) => breathingFromLead(samples, rateHz),
+  );
+  const heartStep = remember(heartKey, (from: HeartInputs) => heartSideOf(from, recording));
+  const stomachSteps = new Map<string, Remembered<StomachInputs, StomachAnalysis>>();
+  let delivered = { separation: '', stomach: '', heart: '' };
+
+  function stomachOf(inputs: StomachInputs): StomachAnalysis {
+    const { lead } = inputs.slow;
+    const step = stomachSteps.get(lead) ?? remember(stomachKey, slowWaveRhythm);
+    stomachSteps.set(lead, step);
+    return step.of(inputs);
+  }
+
+  return {
+    async of(from, job) {
+      const { inputs, slow } = from;
+      const { settings } = inputs;
+      const phases = phasesOrWhole(inputs.phases, recording.durationS);
+      const fromLead = from.breathing ? leadBreathing.of(from.breathing) : null;
+      const heart = from.heart
+        ? heartStep.of({
+            ...from,
+            heart: from.heart,
+            beats: beatsAsBefore(inputs.beats),
+            phases,
+            fromLead,
+          })
+        : null;
+      const series = heart?.results.breathing ?? fromLead;
+      const breathing = series && breathingAsBefore(series);
+      const stomach: StomachAnalysis[] = [];
+      for (const one of slow) {
+        await job.breathe();
+        const spoiled = stomachSpoiled(recording, inputs, one.lead);
+        stomach.push(stomachOf({ slow: one, spoiled, phases, settings, breathing }));
+        job.progress('Reading the rhythm', stomach.length / slow.length);
+      }
+      const findings = findingsOf(recording, inputs, phases, heart, stomach);
+      const now = {
+        separation: slow.map(identity).join() + stomach.map(identity).join(),
+        stomach: stomach.map(identity).join(),
+        heart: String(identity(heart)),
+      };
+      const before = delivered;
+      delivered = now;
+      return {
+        edit: inputs.edit,
+        separation:
+          now.separation === before.separation
+            ? null
+            : slow.map((one, i) => factsOf(one, stomach[i])),
+        stomach: now.stomach === before.stomach ? null : stomach.map((one) => one.rhythm),
+        heart: now.heart === before.heart ? null : (heart?.results ?? null),
+        findings,
+      };
+    },
+  };
+}
+
+interface HeartInputs extends ResultInputs {
+  readonly heart: HeartOutput;
+  readonly beats: BeatList;
+  readonly phases: readonly Phase[];
+  readonly fromLead: BreathingSeries | null;
+}
+
+const heartKey = (from: HeartInputs): string =>
+  JSON.stringify([
+    identity(from.heart),
+    identity(from.beats),
+    identity(from.detection),
+    identity(from.fromLead),
+    from.blocked,
+    from.phases,
+    from.inputs.settings.variability,
+  ]);
+
+function heartSideOf(from: HeartInputs, recording: Recording): HeartSide {
+  const { heart, beats, blocked, detection, fromLead } = from;
+  const { settings } = from.inputs;
+  const rateHz = from.heartRateHz;
+  const ticksPerSample = TICKS_PER_SAMPLE * heart.decimation;
+  const rr = rrSeries(beats, rateHz, blocked);
+  const heightsUv = beatHeights(heart.heartbeat, heart.rateHz, beats, ticksPerSample);
+  const breathing =
+    fromLead ??
+    breathingFromBeats({ rr, beats, rateHz, heightsUv, durationS: recording.durationS });
+  const timingSdMs = detection?.timingSdMs ?? Number.NaN;
+  const figuresOf = (part: Part) =>
+    heartFigures({ rr, beats, rateHz, part, blocked, settings, timingSdMs, breathing });
+  const segments = from.phases.flatMap(
+    (phase) => figuresOf({ ...phase, phase: phase.name }).segments,
+  );
+  return {
+    results: {
+      rr,
+      segments,
+      breathing,
+      heightUv: detection?.heightUv ?? 0,
+      noiseUv: detection?.noiseUv ?? 0,
+      timingSdMs,
+    },
+    figuresOf,
+    seen: seenInPassing({ rr, beats, rateHz, blocked, segments }),
+  };
+}
+
+const stomachKey = ({ slow, spoiled, phases, settings, breathing }: StomachInputs): string =>
+  JSON.stringify([
+    identity(slow),
+    identity(breathing),
+    spoiled,
+    phases,
+    settings.epoch,
+    settings.rhythmBands,
+  ]);
+
+/** Stretches of a lead that carry no slow wave: spoiled for the stomach, or missing. */
+function stomachSpoiled(
+  recording: Recording,
+  { roles, spans }: ReviewInputs,
+  key: string,
+): readonly Interval[] {
+  const lead = roles.slow.find((one) => leadKey(one) === key);
+  const channels = lead ? leadChannels(lead) : [];
+  const gaps = recording.gaps.filter(
+    ({ channel }) => channel === null || channels.includes(channel),
+  );
+  return joinIntervals([...spansOf(spans, key, 'stomach'), ...gaps]);
+}
+
+/** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */
+function factsOf(slow: SeparatedSlow, { rhythm }: StomachAnalysis): SeparationFacts {
+  const dfs = rhythm.epochs.flatMap(({ dfCpm }) => (dfCpm === null ? [] : [dfCpm]));
+  const usual = dfs.sort((a, b) => a - b).at(dfs.length >> 1) ?? 3;
+  return {
+    lead: slow.lead,
+    unclean: slow.unclean,
+    notes: slow.notes,
+    leadS: slow.leadSAt(cpmToHz(usual)),
+  };
+}
+
+function findingsOf(
+  recording: Recording,
+  inputs: ReviewInputs,
+  phases: readonly Phase[],
+  heart: HeartSide | null,
+  stomach: readonly StomachAnalysis[],
+): Analysis['findings'] {
+  const { roles, settings, spans } = inputs;
+  const reported = roles.slow[roles.reported];
+  const spoiled = stomachSpoiled(recording, inputs, leadKey(reported));
+  const stomachFilters = filterWarnings(channelsOf(recording, reported));
+  const heartFilters = roles.heart ? filterWarnings(channelsOf(recording, roles.heart)) : null;
+  const onReported = spans.filter(({ lead }) => lead === null || lead === leadKey(reported));
+  const phaseFindings = partsOf(phases).map((part): PhaseFindings => {
+    const slow = stomachFigures({
+      analysis: stomach[roles.reported],
+      phase: part,
+      spoiled,
+      settings,
+    });
+    const beat = heart?.figuresOf(part);
+    const figures = {
+      ...slow.figures,
+      ...(beat?.figures ?? withheldHeartFigures('no heart lead is chosen')),
+      movement_pct: movementFigure(onReported, part),
+    };
+    const withStomach = withholdOrgan(figures, 'stomach', stomachFilters.withholdStomach);
+    return {
+      ...part,
+      keptStomachS: slow.keptS,
+      keptHeartS: beat?.keptS ?? 0,
+      adequacyStomach: slow.adequacy,
+      adequacyHeart: beat?.adequacy ?? 'not-reportable',
+      figures: withholdOrgan(withStomach, 'heart', heartFilters?.withholdHeart ?? null),
+    };
+  });
+  return {
+    edit: inputs.edit,
+    phases: phaseFindings,
+    changes: changesOf(phaseFindings),
+    seen: heart?.seen ?? [],
+    warnings: [
+      ...stomachFilters.warnings.filter(({ about }) => about !== 'heart'),
+      ...(heartFilters?.warnings ?? []).filter(({ about }) => about === 'heart'),
+    ],
+  };
+}
+
+const channelsOf = (recording: Recording, lead: Lead) =>
+  leadChannels(lead).map((index) => recording.channels[index]);
+
+function sameBeats(a: BeatList, b: BeatList): boolean {
+  return (
+    sameArray(a.ticks, b.ticks) &&
+    sameArray(a.classes, b.classes) &&
+    sameArray(a.origins, b.origins)
+  );
+}
+
+const sameBreathing = (a: BreathingSeries, b: BreathingSeries): boolean =>
+  a.from === b.from && sameArray(a.centresS, b.centresS) && sameArray(a.perMinute, b.perMinute);
+
+function sameArray(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
+  if (a.length !== b.length) return false;
+  for (let i = 0; i < a.length; i += 1) if (!Object.is(a[i], b[i])) return false;
+  return true;
+}

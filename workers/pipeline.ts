@@ -1,0 +1,290 @@
+import { openRecording } from '../src/decode/formats';
+import { quickKey } from '../src/decode/quick-key';
+import { type Detection, detectBeats } from '../src/heart/detect';
+import { placeBeat } from '../src/heart/place-beat';
+import { measureQrs } from '../src/heart/qrs-quality';
+import { minMaxColumns } from '../src/numeric/min-max-columns';
+import { type BeatList, NO_BEATS } from '../src/recording/beat';
+import { Refusal } from '../src/recording/failure';
+import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { isFasting, phasesOrWhole } from '../src/recording/phase';
+import type { SignalSource } from '../src/recording/recording';
+import type { Roles } from '../src/recording/roles';
+import type { Settings } from '../src/recording/settings';
+import { type Interval, joinIntervals, type Span, spansOf } from '../src/recording/span';
+import { leadQuality } from '../src/stomach/lead-quality';
+import { TICKS_PER_SAMPLE } from '../src/units/ticks';
+import type {
+  Analysis,
+  Columns,
+  ColumnsRequest,
+  Given,
+  Opened,
+  PlacedBeat,
+  Proposal,
+  ReviewInputs,
+  TextReading,
+} from './analysis-api';
+import { inTurns, type Job } from './job';
+import { leadSamples } from './lead-pass';
+import { createResults, type Results } from './pipeline-results';
+import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
+import { phasesFromAnnotations } from './propose-phases';
+import { heartCandidates, proposeRoles, type QrsMeasure } from './propose-roles';
+
+/** Stretches of each candidate on which the heartbeat is measured, as parts of the study. */
+const MEASURED_AT = [0.1, 0.3, 0.5, 0.7, 0.9];
+const MEASURED_S = 12;
+/** Wider windows than this are drawn from the pyramid, narrower ones from the file's own samples. */
+const FROM_PYRAMID_S = 60;
+
+interface Study {
+  readonly source: SignalSource;
+  readonly signals: SignalStore;
+  readonly results: Results;
+  qrs: readonly QrsMeasure[] | null;
+  detection: { readonly key: string; readonly found: Detection } | null;
+  heartLead: Lead | null;
+}
+
+/** The way of a recording through the steps, the same for page and command line. Methods throw Refusal. */
+export interface Pipeline {
+  open(file: Blob, fileName: string, reading: TextReading | null): Promise<Opened>;
+  accept(): void;
+  firstRoles(): Promise<Roles>;
+  propose(given: Given, job: Job): Promise<Proposal>;
+  analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
+  columns(request: ColumnsRequest): Promise<Columns>;
+  placeBeat(nearS: number): PlacedBeat;
+}
+
+export function createPipeline(): Pipeline {
+  let opened: Study | null = null;
+  let current: Study | null = null;
+  const study = (): Study => {
+    if (!current) throw new Error('no study is open in the worker');
+    return current;
+  };
+  return {
+    async open(file, fileName, reading) {
+      const source = await openRecording(file, fileName, reading);
+      const key = await quickKey(file, fileName);
+      opened = {
+        source,
+        signals: new SignalStore(source),
+        results: createResults(source.recording),
+        qrs: null,
+        detection: null,
+        heartLead: null,
+      };
+      return { recording: source.recording, quickKey: key };
+    },
+    accept() {
+      if (opened) current = opened;
+      opened = null;
+    },
+    firstRoles: () => firstRoles(study()),
+    propose: (given, job) => propose(study(), given, job),
+    analyse: (inputs, job) => analyse(study(), inputs, job),
+    columns: (request) => columns(study(), request),
+    placeBeat: (nearS) => placeNear(study(), nearS),
+  };
+}
+
+async function firstRoles(study: Study): Promise<Roles> {
+  const { channels } = study.source.recording;
+  study.qrs ??= await measureHeartbeats(study.source);
+  return proposeRoles(channels, study.qrs, []).roles;
+}
+
+async function measureHeartbeats(source: SignalSource): Promise<readonly QrsMeasure[]> {
+  const measures: QrsMeasure[] = [];
+  for (const channel of heartCandidates(source.recording.channels)) {
+    const length = Math.round(MEASURED_S * channel.rateHz);
+    const parts = [];
+    for (const part of MEASURED_AT) {
+      const from = Math.max(0, Math.floor(part * channel.sampleCount - length / 2));
+      parts.push(measureQrs(await source.read(channel.index, from, from + length), channel.rateHz));
+    }
+    const [middle] = parts.sort((a, b) => a.quality - b.quality).slice(parts.length >> 1);
+    measures.push({ channel: channel.index, ...middle });
+  }
+  return measures;
+}
+
+async function propose(study: Study, given: Given, job: Job): Promise<Proposal> {
+  const { recording } = study.source;
+  const { settings } = given;
+  const first = given.roles ?? (await firstRoles(study));
+  const annotated = phasesFromAnnotations(recording.annotations, recording.durationS);
+  const phases = given.phases ?? annotated;
+  await study.signals.provide(wantedOf(first), settings, job);
+  const spans = proposedSpans(study, first);
+  const [before] = phasesOrWhole(phases.filter(isFasting), recording.durationS);
+  const qualities = first.slow.map((lead) => {
+    const { recorded, rateHz } = study.signals.slow(lead, settings);
+    const spoiled = spansOf(withIds(spans), leadKey(lead), 'stomach');
+    const { score, reason } = leadQuality(recorded, rateHz, spoiled, before);
+    return { quality: score, reason };
+  });
+  study.qrs ??= await measureHeartbeats(study.source);
+  const proposal = proposeRoles(recording.channels, study.qrs, qualities);
+  const roles = given.roles ?? proposal.roles;
+  return {
+    roles,
+    reasons: proposal.reasons,
+    phases,
+    phasesFrom: annotated.length > 0 ? 'annotations' : 'none',
+    spans: given.spans ? [] : spans,
+    beats: await beatsOf(study, roles.heart, given.spans ?? withIds(spans), settings, job),
+  };
+}
+
+function wantedOf(roles: Roles): readonly WantedLead[] {
+  const wants = (lead: Lead, part: Partial<WantedLead>): WantedLead => ({
+    slow: false,
+    heart: false,
+    breathing: false,
+    ...part,
+    lead,
+  });
+  return [
+    ...roles.slow.map((lead) => wants(lead, { slow: true })),
+    ...(roles.heart ? [wants(roles.heart, { heart: true })] : []),
+    ...(roles.breath ? [wants(roles.breath, { breathing: true })] : []),
+  ];
+}
+
+function proposedSpans(study: Study, roles: Roles): readonly Omit<Span, 'id'>[] {
+  const leads = new Map(
+    [...roles.slow, ...(roles.heart ? [roles.heart] : [])].map((lead) => [leadKey(lead), lead]),
+  );
+  return [...leads.values()].flatMap((lead) => study.signals.get(lead)?.proposedSpans ?? []);
+}
+
+const withIds = (spans: readonly Omit<Span, 'id'>[]): readonly Span[] =>
+  spans.map((span, i) => ({ ...span, id: i + 1 }));
+
+async function beatsOf(
+  study: Study,
+  lead: Lead | null,
+  spans: readonly Span[],
+  settings: Settings,
+  job: Job,
+): Promise<BeatList> {
+  if (!lead) return NO_BEATS;
+  const excluded = blockedOf(study, lead, spans);
+  return (await detectionOf(study, lead, excluded, settings, job))?.beats ?? NO_BEATS;
+}
+
+/** Stretches of a lead that carry no heartbeat: spoiled for the heart, or missing. */
+function blockedOf(study: Study, lead: Lead, spans: readonly Span[]): readonly Interval[] {
+  const channels = leadChannels(lead);
+  const gaps = study.source.recording.gaps.filter(
+    ({ channel }) => channel === null || channels.includes(channel),
+  );
+  return joinIntervals([...spansOf(spans, leadKey(lead), 'heart'), ...gaps]);
+}
+
+async function detectionOf(
+  study: Study,
+  lead: Lead,
+  excluded: readonly Interval[],
+  { heartRoute, heartBandHz, fractional }: Settings,
+  job: Job,
+): Promise<Detection | null> {
+  const heart = study.signals.heart(lead);
+  if (!heart) return null;
+  const key = JSON.stringify([leadKey(lead), excluded, heartRoute, heartBandHz, fractional]);
+  if (study.detection?.key !== key) {
+    const signal = {
+      heartbeat: heart.heartbeat,
+      rateHz: heart.rateHz,
+      ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
+      excluded,
+    };
+    study.detection = {
+      key,
+      found: await inTurns(detectBeats(signal), job, 'Finding the heartbeats'),
+    };
+  }
+  study.heartLead = lead;
+  return study.detection.found;
+}
+
+async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<Analysis> {
+  const { roles, settings } = inputs;
+  await study.signals.provide(wantedOf(roles), settings, job);
+  const { heart } = roles;
+  const found = heart
+    ? await detectionOf(
+        study,
+        heart,
+        blockedOf(study, heart, withIds(proposedSpans(study, roles))),
+        settings,
+        job,
+      )
+    : null;
+  return study.results.of(
+    {
+      inputs,
+      slow: roles.slow.map((lead) => study.signals.slow(lead, settings)),
+      heart: heart ? study.signals.heart(heart) : null,
+      heartRateHz: heart ? leadChannel(study.source.recording, heart).rateHz : 0,
+      blocked: heart ? blockedOf(study, heart, inputs.spans) : [],
+      detection: found,
+      breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
+    },
+    job,
+  );
+}
+
+async function columns(study: Study, request: ColumnsRequest): Promise<Columns> {
+  const { lead, signal, fromS, toS } = request;
+  if (!(toS > fromS) || !(request.columns >= 1)) throw new Error('columns want a width');
+  const kept = study.signals.get(lead);
+  const slow = study.signals.drawn(lead);
+  if (signal === 'slow-wave' && slow)
+    return { request, ...cut(slow.slowWave, slow.rateHz, request) };
+  if (signal === 'heartbeat' && kept?.heart)
+    return { request, ...cut(kept.heart.output.heartbeat, kept.heart.output.rateHz, request) };
+  if (signal !== 'recorded') return { request, ...cut([], 1, request) };
+  if (kept && toS - fromS > FROM_PYRAMID_S)
+    return { request, ...kept.pyramid.columns(fromS, toS, request.columns) };
+  const { rateHz } = leadChannel(study.source.recording, lead);
+  const first = Math.max(0, Math.floor(fromS * rateHz) - 1);
+  const read = new Map<number, Float64Array>();
+  for (const channel of leadChannels(lead))
+    read.set(channel, await study.source.read(channel, first, Math.ceil(toS * rateHz) + 2));
+  const samples = leadSamples(lead, (channel) => {
+    const found = read.get(channel);
+    if (!found) throw new Error(`channel ${channel} was not read`);
+    return found;
+  });
+  return { request, ...minMaxColumns(samples, rateHz, first, fromS, toS, request.columns) };
+}
+
+const cut = (
+  samples: ArrayLike<number>,
+  rateHz: number,
+  { fromS, toS, columns: n }: ColumnsRequest,
+) => minMaxColumns(samples, rateHz, 0, fromS, toS, n);
+
+function placeNear(study: Study, nearS: number): PlacedBeat {
+  const lead = study.heartLead;
+  const heart = lead ? study.signals.heart(lead) : null;
+  if (!lead || !heart || !study.detection)
+    throw new Refusal({
+      kind: 'wrong-input',
+      message: 'There is no heart lead to put a beat on.',
+      place: null,
+      remedy: 'Choose a heart lead first.',
+    });
+  return placeBeat({
+    heartbeat: heart.heartbeat,
+    rateHz: heart.rateHz,
+    ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
+    averages: study.detection.found.averages,
+    nearS,
+  });
+}
