@@ -56,7 +56,7 @@ export function breathingFromLead(samples: ArrayLike<number>, rateHz: Hertz): Br
   const x = blockMeans(samples, size);
   const workingHz = rateHz / size;
   const length = Math.floor(BREATHING_WINDOW_S * workingHz + 1e-9);
-  const centresS = breathingCentres(x.length / workingHz);
+  const centresS = breathingCentres(samples.length / rateHz);
   const perMinute = centresS.map((centreS) => {
     const from = Math.round((centreS - BREATHING_WINDOW_S / 2) * workingHz);
     const window = from + length <= x.length ? keptWindow(x, from, length) : null;

@@ -97,14 +97,29 @@ function isBeyond(limits: Limits, measures: Irregularity | null): boolean {
 }
 
 /**
+ * True where most intervals follow the one before within 5 % of the mean: random intervals that do so spread by 4 % at
+ * most, far below either limit, so that a calm rhythm needs no closer look.
+ */
+function isCalm(rrMs: Float64Array): boolean {
+  const near = 0.05 * mean(rrMs);
+  let calm = 0;
+  for (let i = 1; i < rrMs.length; i += 1) if (Math.abs(rrMs[i] - rrMs[i - 1]) < near) calm += 1;
+  return calm >= 0.6 * (rrMs.length - 1);
+}
+
+function isIrregular(limits: Limits, rrMs: Float64Array): boolean {
+  return !isCalm(rrMs) && isBeyond(limits, irregularityOf(rrMs));
+}
+
+/**
  * True where a stretch of intervals in ms is irregular as a whole or in either half (a bout of half the stretch is
  * enough to spoil its figures); halves are split by count. False for fewer than 48 intervals.
  */
 export function isIrregularStretch(rrMs: Float64Array): boolean {
   const half = Math.floor(rrMs.length / 2);
   return (
-    isBeyond(WHOLE_LIMITS, irregularityOf(rrMs)) ||
-    isBeyond(HALF_LIMITS, irregularityOf(rrMs.subarray(0, half))) ||
-    isBeyond(HALF_LIMITS, irregularityOf(rrMs.subarray(half)))
+    isIrregular(WHOLE_LIMITS, rrMs) ||
+    isIrregular(HALF_LIMITS, rrMs.subarray(0, half)) ||
+    isIrregular(HALF_LIMITS, rrMs.subarray(half))
   );
 }

@@ -4,16 +4,21 @@ import type { Phase } from '../recording/phase';
 import type { Settings } from '../recording/settings';
 import type { Interval } from '../recording/span';
 import type { Hertz } from '../units/rate';
-import { rhythmIntervals } from './rr-series';
-import { type Laid, layOut, type SegmentResult, segmentOf } from './segments';
+import { intervalsWithin, rhythmIntervals } from './rr-series';
+import { type Laid, layOut, type SegmentInput, type SegmentResult, segmentOf } from './segments';
 
-interface Known {
+/** A segment worked out before, with the intervals it was worked out from. */
+interface Held {
+  readonly timesS: Float64Array;
+  readonly rrMs: Float64Array;
+  readonly nn: Uint8Array;
   readonly rhythm: Uint8Array;
-  readonly segments: Map<string, SegmentResult>;
+  readonly result: SegmentResult;
 }
 
-/** An RR series is never changed in place, so what was worked out for it holds as long as it lives. */
-const known = new WeakMap<RrSeries, Known>();
+/** Enough for the phases of a day and pieces of them; a cache is emptied when it holds more. */
+const MOST_HELD = 2000;
+const held = new Map<string, Held>();
 
 export interface SegmentsAsked {
   readonly rr: RrSeries;
@@ -24,32 +29,69 @@ export interface SegmentsAsked {
   readonly settings: Settings;
 }
 
-function keyOf({ fromS, toS }: Laid, alone: boolean, { variability }: Settings): string {
+function keyOf({ fromS, toS, full }: Laid, alone: boolean, { variability }: Settings): string {
   const { segmentS, lfHz, hfHz, minNnShare } = variability;
-  return [fromS, toS, alone, segmentS, ...lfHz, ...hfHz, minNnShare].join(' ');
+  return [fromS, toS, full, alone, segmentS, ...lfHz, ...hfHz, minNnShare].join(' ');
+}
+
+function sameFrom(x: Float64Array | Uint8Array, first: number, was: ArrayLike<number>): boolean {
+  for (let i = 0; i < was.length; i += 1) if (x[first + i] !== was[i]) return false;
+  return true;
+}
+
+/** What is held under a key, where it stands on the very same intervals; with their places as they are now. */
+function recall(
+  key: string,
+  { rr, rhythm }: SegmentInput,
+  first: number,
+  end: number,
+): SegmentResult | null {
+  const one = held.get(key);
+  if (!one || one.rrMs.length !== end - first) return null;
+  const same =
+    sameFrom(rr.rrMs, first, one.rrMs) &&
+    sameFrom(rr.timesS, first, one.timesS) &&
+    sameFrom(rr.nn, first, one.nn) &&
+    sameFrom(rhythm, first, one.rhythm);
+  return same ? { ...one.result, first, end } : null;
+}
+
+function remember(key: string, { rr, rhythm }: SegmentInput, result: SegmentResult): void {
+  if (held.size >= MOST_HELD) held.clear();
+  const { first, end } = result;
+  held.set(key, {
+    timesS: rr.timesS.slice(first, end),
+    rrMs: rr.rrMs.slice(first, end),
+    nn: rr.nn.slice(first, end),
+    rhythm: rhythm.slice(first, end),
+    result,
+  });
+}
+
+/** The flags of the last series asked for: the parts of a study ask for the same ones. */
+const rhythms = new WeakMap<RrSeries, Uint8Array>();
+
+function rhythmOf({ rr, beats, rateHz, blocked }: SegmentsAsked): Uint8Array {
+  const known = rhythms.get(rr) ?? rhythmIntervals(beats, rateHz, blocked);
+  rhythms.set(rr, known);
+  return known;
 }
 
 /**
- * The segments of a part of the study. Phases and pieces of them share most segments ("fed" and "fed 0-30"), and an edit
- * asks for all of them at once, so each is worked out once for a series.
+ * The segments of a part of the study. Phases and pieces of them share segments ("fed" and "fed 0-30") and an edit changes
+ * one or two of a day's 288, so a segment is worked out anew only when its intervals differ from the last time.
  */
 export function segmentsOnce(asked: SegmentsAsked): readonly SegmentResult[] {
   const { rr, part, settings } = asked;
-  let about = known.get(rr);
-  if (!about) {
-    const rhythm = rhythmIntervals(asked.beats, asked.rateHz, asked.blocked);
-    about = { rhythm, segments: new Map() };
-    known.set(rr, about);
-  }
-  const { rhythm, segments } = about;
+  const input = { rr, rhythm: rhythmOf(asked), settings: settings.variability };
   const laid = layOut(part, settings.variability.segmentS);
+  const alone = laid.length === 1;
   return laid.map((one) => {
-    const alone = laid.length === 1;
     const key = keyOf(one, alone, settings);
-    const held =
-      segments.get(key) ??
-      segmentOf({ rr, rhythm, settings: settings.variability }, part.name, one, alone);
-    segments.set(key, held);
-    return { ...held, shown: { ...held.shown, phase: part.name } };
+    const { first, end } = intervalsWithin(rr, one.fromS, one.toS);
+    const known = recall(key, input, first, end);
+    const result = known ?? segmentOf(input, part.name, one, alone);
+    if (!known) remember(key, input, result);
+    return { ...result, shown: { ...result.shown, phase: part.name } };
   });
 }
