@@ -1,0 +1,35 @@
+import { type BeatList, beatAt } from '../recording/beat';
+import type { RrSeries } from '../recording/heart-series';
+import type { Hertz } from '../units/rate';
+import { TICKS_PER_SAMPLE, ticksToSeconds } from '../units/ticks';
+import { type Cell, csvText, flagCell, numberCell, timeCell } from './csv';
+
+const HEADER = ['time_s', 'sample', 'class', 'origin', 'rr_ms', 'nn', 'doubt'];
+
+/**
+ * beats.csv: one row a beat. `rateHz` is the heart lead's own rate; `rr` the intervals, each at the time of the beat that
+ * ends it (null: no intervals are known). The doubt column is empty until doubts exist.
+ */
+export function beatsCsv(beats: BeatList, rateHz: Hertz, rr: RrSeries | null): string {
+  return csvText(HEADER, beatRows(beats, rateHz, rr));
+}
+
+function* beatRows(beats: BeatList, rateHz: Hertz, rr: RrSeries | null): Generator<Cell[]> {
+  const halfTickS = 0.5 / (TICKS_PER_SAMPLE * rateHz);
+  let next = 0;
+  for (let i = 0; i < beats.ticks.length; i += 1) {
+    const { tick, beatClass, origin } = beatAt(beats, i);
+    const timeS = ticksToSeconds(tick, rateHz);
+    while (rr && next < rr.timesS.length && rr.timesS[next] < timeS - halfTickS) next += 1;
+    const ends = rr !== null && rr.timesS[next] < timeS + halfTickS;
+    yield [
+      timeCell(timeS),
+      numberCell(Math.round(tick / TICKS_PER_SAMPLE), 0),
+      beatClass,
+      origin,
+      ends ? numberCell(rr.rrMs[next], 1) : null,
+      ends ? flagCell(rr.nn[next] === 1) : null,
+      null,
+    ];
+  }
+}
