@@ -15,6 +15,11 @@ export type Selection =
   | { readonly kind: 'beats'; readonly ticks: readonly number[] }
   | { readonly kind: 'span'; readonly id: number };
 
+/** A stretch being drawn or dragged that is no edit yet: a new spoiled span (`spanId` null) or an old one's new place. */
+export interface Draft extends TimeWindow {
+  readonly spanId: number | null;
+}
+
 /** Where the panes look; no part of the session and never undone. */
 export interface ViewState {
   readonly durationS: number;
@@ -24,7 +29,12 @@ export interface ViewState {
   readonly cursorS: number | null;
   /** uV from the middle to the edge of a trace row, by row key; absent: fitted. */
   readonly gainsUv: Readonly<Record<string, number>>;
+  /** Key of the trace row that gain keys act on. */
+  readonly selectedRow: string | null;
+  /** Ends of the spectrogram's level scale in dB, the same for the whole study; null: fitted. */
+  readonly levelsDb: readonly [low: number, high: number] | null;
   readonly selection: Selection;
+  readonly draft: Draft | null;
   readonly tool: Tool;
   readonly identityHidden: boolean;
 }
@@ -43,7 +53,10 @@ export const createViewStore = (): ViewStore =>
     seconds: { fromS: 0, toS: 0 },
     cursorS: null,
     gainsUv: {},
+    selectedRow: null,
+    levelsDb: null,
     selection: { kind: 'none' },
+    draft: null,
     tool: 'look',
     identityHidden: false,
   }));
@@ -67,7 +80,10 @@ export function lookAtStudy(store: ViewStore, durationS: number): void {
     seconds: windowInside(centreOf(minutes), SECONDS_WIDTH_S, durationS),
     cursorS: null,
     gainsUv: {},
+    selectedRow: null,
+    levelsDb: null,
     selection: { kind: 'none' },
+    draft: null,
     tool: 'look',
   });
 }

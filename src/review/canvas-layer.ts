@@ -1,0 +1,53 @@
+/** A canvas over or under the rows of a pane, drawn in CSS pixels whatever the device pixel ratio. */
+export class CanvasLayer {
+  ratio = 1;
+  widthPx = 0;
+  heightPx = 0;
+
+  constructor(private readonly canvas: HTMLCanvasElement) {}
+
+  resize(widthPx: number, heightPx: number): void {
+    this.ratio = window.devicePixelRatio || 1;
+    this.widthPx = widthPx;
+    this.heightPx = heightPx;
+    this.canvas.width = Math.max(1, Math.round(widthPx * this.ratio));
+    this.canvas.height = Math.max(1, Math.round(heightPx * this.ratio));
+    this.canvas.style.width = `${widthPx}px`;
+    this.canvas.style.height = `${heightPx}px`;
+  }
+
+  /** A clear brush in CSS pixels; null where the browser gives none. */
+  begin(): CanvasRenderingContext2D | null {
+    const brush = this.canvas.getContext('2d');
+    if (!brush) return null;
+    brush.setTransform(this.ratio, 0, 0, this.ratio, 0, 0);
+    brush.clearRect(0, 0, this.widthPx, this.heightPx);
+    return brush;
+  }
+
+  /** The canvas font of the page at a size in CSS pixels. */
+  font(sizePx: number, weight = 400): string {
+    return `${weight} ${sizePx}px ${getComputedStyle(this.canvas).fontFamily}`;
+  }
+}
+
+/**
+ * Calls back with an element's size in CSS pixels, at first, whenever it changes and when the device pixel ratio does.
+ * Returns the way to stop.
+ */
+export function watchSize(element: Element, changed: () => void): () => void {
+  const observer = new ResizeObserver(changed);
+  observer.observe(element);
+  let media: MediaQueryList | null = null;
+  const ratioChanged = () => {
+    media?.removeEventListener('change', ratioChanged);
+    media = matchMedia(`(resolution: ${window.devicePixelRatio}dppx)`);
+    media.addEventListener('change', ratioChanged);
+    changed();
+  };
+  ratioChanged();
+  return () => {
+    observer.disconnect();
+    media?.removeEventListener('change', ratioChanged);
+  };
+}

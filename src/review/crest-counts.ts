@@ -1,0 +1,25 @@
+import { firstAtOrAfter } from './column-path';
+import type { TimeWindow } from './view-store';
+
+/** Crests of the drawn slow wave in one whole minute of the recording. */
+export interface CrestCount {
+  /** Middle of the minute. */
+  readonly atS: number;
+  readonly count: number;
+}
+
+/** Crests counted in every whole minute that begins inside a window and inside the study; `crestsS` ascending. */
+export function crestsPerMinute(
+  crestsS: ArrayLike<number>,
+  window: TimeWindow,
+  durationS: number,
+): readonly CrestCount[] {
+  const counts: CrestCount[] = [];
+  const end = Math.min(window.toS, durationS);
+  for (let minute = Math.ceil(window.fromS / 60); (minute + 1) * 60 <= end; minute += 1) {
+    const fromS = minute * 60;
+    const count = firstAtOrAfter(crestsS, fromS + 60) - firstAtOrAfter(crestsS, fromS);
+    counts.push({ atS: fromS + 30, count });
+  }
+  return counts;
+}

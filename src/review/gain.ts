@@ -1,0 +1,68 @@
+const NICE: readonly number[] = [1, 2, 5];
+const LEAST_UV = 1;
+const MOST_UV = 500_000;
+
+/** Gains a trace row can have, in uV from its middle to its edge: 1, 2, 5, 10 ... 500 000. */
+export const GAINS_UV: readonly number[] = [1, 10, 100, 1000, 10_000, 100_000].flatMap((decade) =>
+  NICE.map((one) => one * decade),
+);
+
+/** The least gain that shows `uv` whole; the largest gain where none does. */
+export function gainFor(uv: number): number {
+  if (!(uv > LEAST_UV)) return LEAST_UV;
+  return GAINS_UV.find((gain) => gain >= uv) ?? MOST_UV;
+}
+
+/** The next gain: `finer` shows the trace larger (fewer uV in the row), `coarser` smaller. */
+export function nextGain(gainUv: number, way: 'finer' | 'coarser'): number {
+  if (way === 'coarser') return GAINS_UV.find((gain) => gain > gainUv) ?? MOST_UV;
+  return [...GAINS_UV].reverse().find((gain) => gain < gainUv) ?? LEAST_UV;
+}
+
+/** Columns of a trace: the least and the greatest value of each part of time; NaN where there is nothing. */
+export interface LowHigh {
+  readonly low: ArrayLike<number>;
+  readonly high: ArrayLike<number>;
+}
+
+/** Mean of the columns' middles over [from, to); 0 where there is none. */
+export function middleUv({ low, high }: LowHigh, from: number, to: number): number {
+  let sum = 0;
+  let count = 0;
+  for (let i = from; i < to; i += 1) {
+    const value = (low[i] + high[i]) / 2;
+    if (!Number.isNaN(value)) {
+      sum += value;
+      count += 1;
+    }
+  }
+  return count === 0 ? 0 : sum / count;
+}
+
+/** Greatest distance of the columns from `centreUv` over [from, to); NaN where there is none. */
+function reachUv({ low, high }: LowHigh, from: number, to: number, centreUv: number): number {
+  let reach = Number.NaN;
+  for (let i = from; i < to; i += 1) {
+    const far = Math.max(high[i] - centreUv, centreUv - low[i]);
+    if (!Number.isNaN(far) && !(far <= reach)) reach = far;
+  }
+  return reach;
+}
+
+/**
+ * A gain in uV for a whole study that is looked at in windows of `perWindow` columns: four windows of five fit the row, so
+ * that a spoiled stretch does not make everything else small. `centred` rows are drawn about their mean in view, the others
+ * about zero.
+ */
+export function fittedGain(columns: LowHigh, perWindow: number, centred: boolean): number {
+  const width = Math.max(1, Math.round(perWindow));
+  const reaches: number[] = [];
+  for (let from = 0; from < columns.low.length; from += width) {
+    const to = Math.min(columns.low.length, from + width);
+    const reach = reachUv(columns, from, to, centred ? middleUv(columns, from, to) : 0);
+    if (!Number.isNaN(reach)) reaches.push(reach);
+  }
+  if (reaches.length === 0) return 100;
+  reaches.sort((a, b) => a - b);
+  return gainFor(reaches[Math.floor(0.8 * (reaches.length - 1))]);
+}

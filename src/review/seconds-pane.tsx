@@ -1,0 +1,65 @@
+import { useCallback, useMemo } from 'react';
+import { useStore } from 'zustand';
+import { PaneFrame } from './pane-frame';
+import type { PaneProps } from './pane-props';
+import { PinButtons } from './pin-buttons';
+import { secondsRows } from './rows';
+import { pinKey, type SecondsParts, secondsActs, secondsKind } from './seconds-view';
+import { BeatTable } from './twin-tables';
+import { type PaneSetup, useNotice, usePane, usePaneCommands } from './use-pane';
+
+const NO_HEART = 'No heart lead is chosen, so there are no beats to see.';
+
+/** The pane with the heart's time scale, where beats are mended. */
+export function SecondsPane(props: PaneProps) {
+  const { stores } = props;
+  const roles = useStore(stores.session, (state) => state.session?.state.roles);
+  const recording = useStore(stores.analysis, (state) => state.recording);
+  const rows = useMemo(
+    () => (roles && recording ? secondsRows(roles, recording) : []),
+    [roles, recording],
+  );
+  const commands = usePaneCommands(props);
+  const setUp = useCallback(
+    (section: HTMLElement): PaneSetup => {
+      const stage = section.querySelector('[data-part="stage"]');
+      if (!(stage instanceof HTMLElement)) throw new Error('Seconds has no stage');
+      const parts: SecondsParts = { buttons: new PinButtons(stage, commands), drag: null };
+      const keys = (event: KeyboardEvent) => {
+        if (event.target !== stage || !pinKey(commands, event)) return;
+        event.preventDefault();
+        event.stopPropagation();
+      };
+      stage.tabIndex = 0;
+      stage.setAttribute('role', 'application');
+      stage.setAttribute('aria-label', 'Beats: keys act on the selected ones');
+      stage.addEventListener('keydown', keys);
+      return {
+        kind: secondsKind(parts),
+        acts: (view) => secondsActs(view, commands, parts),
+        stop: () => {
+          parts.buttons.destroy();
+          stage.removeEventListener('keydown', keys);
+        },
+      };
+    },
+    [commands],
+  );
+  const sectionRef = usePane(props, rows, setUp);
+  const notice = useNotice(props);
+  const noHeart = roles !== undefined && recording !== null && rows.length === 0;
+  return (
+    <PaneFrame
+      name="seconds"
+      title="Seconds"
+      sectionRef={sectionRef}
+      rows={rows}
+      stores={stores}
+      commands={commands}
+      hasSlot={false}
+      notice={noHeart ? NO_HEART : notice}
+    >
+      <BeatTable stores={stores} commands={commands} />
+    </PaneFrame>
+  );
+}

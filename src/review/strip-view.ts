@@ -1,0 +1,253 @@
+import { leadKey } from '../recording/lead';
+import type { Phase } from '../recording/phase';
+import type { SessionState } from '../session/document';
+import { setField } from '../session/edits';
+import { CanvasLayer, watchSize } from './canvas-layer';
+import { FrameLoop } from './frame-loop';
+import { panGesture, slotEdgeGesture, slotGesture, wheelOver } from './gestures';
+import { Hatch } from './hatch';
+import { heartRateLine, rateColumns, rateLimits } from './heart-rate';
+import { nearestWithin, slotPart } from './hit';
+import { type PaneActs, tryEdit } from './pane-acts';
+import { movePhaseEdge, type PhaseEdge, phaseEdges } from './phase-edges';
+import type { PaneStores } from './row-view';
+import type { Gesture, StageActs } from './stage';
+import { stomachBlocks } from './stomach-blocks';
+import { PHASE_BOX, paintStrip, type StripScene } from './strip-paint';
+import type { ThemeTokens } from './theme-tokens';
+import { clockText, widthText } from './time-ticks';
+import { lookAtMinutes, lookAtSeconds } from './view-store';
+
+/** The elements of the strip. */
+export interface StripDom {
+  readonly stage: HTMLElement;
+  readonly canvas: HTMLCanvasElement;
+  readonly slot: HTMLElement;
+  readonly innerSlot: HTMLElement;
+  readonly cursorLine: HTMLElement;
+  readonly summary: HTMLElement;
+}
+
+const EDGE_PX = 6;
+
+/** The strip over the whole study: phases, stomach row, heart rate, spoiled spans, the Minutes slot. */
+export class StripView {
+  private readonly loop = new FrameLoop(() => this.draw());
+  private readonly layer: CanvasLayer;
+  private readonly hatch = new Hatch();
+  private readonly stops: (() => void)[] = [];
+  private draftPhases: readonly Phase[] | null = null;
+  private rate: { source: object; columns: StripScene['rate'] } | null = null;
+  private widthPx = 1;
+
+  constructor(
+    private readonly dom: StripDom,
+    private readonly stores: PaneStores,
+    private readonly act: PaneActs,
+    private tokens: ThemeTokens,
+  ) {
+    this.layer = new CanvasLayer(dom.canvas);
+    const { view, analysis, session } = stores;
+    this.stops.push(
+      watchSize(dom.stage, () => this.layout()),
+      analysis.subscribe(this.loop.ask),
+      session.subscribe((now, before) => {
+        if (now.session?.state !== before.session?.state) this.loop.ask();
+      }),
+      view.subscribe((now, before) => {
+        if (now.durationS !== before.durationS || now.draft !== before.draft) this.loop.ask();
+        if (now.selection !== before.selection) this.loop.ask();
+        if (now.minutes !== before.minutes || now.seconds !== before.seconds) this.placeSlots();
+        if (now.cursorS !== before.cursorS) this.placeCursor();
+      }),
+    );
+  }
+
+  readonly xOf = (atS: number): number =>
+    (atS / Math.max(1e-9, this.stores.view.getState().durationS)) * this.widthPx;
+
+  readonly sAt = (x: number): number => (x / this.widthPx) * this.stores.view.getState().durationS;
+
+  retheme(tokens: ThemeTokens): void {
+    this.tokens = tokens;
+    this.loop.ask();
+  }
+
+  private layout(): void {
+    const { width, height } = this.dom.stage.getBoundingClientRect();
+    if (width < 2) return;
+    this.widthPx = width;
+    this.rate = null;
+    this.layer.resize(width, height);
+    this.loop.ask();
+    this.placeSlots();
+    this.placeCursor();
+  }
+
+  private state(): SessionState | null {
+    return this.stores.session.getState().session?.state ?? null;
+  }
+
+  phases(): readonly Phase[] {
+    return this.draftPhases ?? this.state()?.phases ?? [];
+  }
+
+  /** Shows phases as they would be while a border is dragged; null: as they are. */
+  draft(phases: readonly Phase[] | null): void {
+    this.draftPhases = phases;
+    this.loop.ask();
+  }
+
+  private rateNow(durationS: number): StripScene['rate'] {
+    const rr = this.stores.analysis.getState().heart?.rr;
+    if (!rr || !(durationS > 0)) return null;
+    if (this.rate?.source !== rr) {
+      const line = heartRateLine(rr);
+      const limits = rateLimits(line.perMinute);
+      const columns = Math.max(1, Math.round(this.widthPx / 2));
+      const found = limits && { ...rateColumns(line, durationS, columns), limits };
+      this.rate = { source: rr, columns: found };
+    }
+    return this.rate.columns;
+  }
+
+  private draw(): void {
+    const brush = this.layer.begin();
+    const { durationS, draft, selection } = this.stores.view.getState();
+    const state = this.state();
+    if (!brush || !(durationS > 0)) return;
+    const reported = state?.roles.slow[state.roles.reported];
+    const { stomach } = this.stores.analysis.getState();
+    const key = reported && leadKey(reported);
+    const epochs = stomach.find((one) => one.lead === key)?.epochs ?? [];
+    const scene: StripScene = {
+      widthPx: this.widthPx,
+      phases: this.phases(),
+      blocks: stomachBlocks(epochs, state?.settings.epoch.stepS ?? 60),
+      rate: this.rateNow(durationS),
+      spans: state?.spans ?? [],
+      draft,
+      selection,
+      xOf: this.xOf,
+      tokens: this.tokens,
+      hatch: this.hatch.for(brush, this.tokens.quiet, this.layer.ratio, true),
+      font: this.layer.font(11),
+    };
+    paintStrip(brush, scene);
+    this.describe(scene, durationS);
+  }
+
+  private describe(scene: StripScene, durationS: number): void {
+    const clock = (atS: number) => clockText(atS, 1, 'h:mm:ss');
+    const phases = scene.phases.map(
+      (one) => `${one.name} ${clock(one.fromS)} to ${clock(one.toS)}`,
+    );
+    const count = (kind: string) => scene.blocks.filter((one) => one.kind === kind).length;
+    const kinds = ['brady', 'normo', 'tachy', 'none', 'mixed', 'undecided', 'spoiled']
+      .filter((kind) => count(kind) > 0)
+      .map((kind) => `${count(kind)} ${kind}`);
+    const limits = scene.rate?.limits;
+    const rate = limits ? ` Heart rate on a scale of ${limits[0]} to ${limits[1]} a minute.` : '';
+    const spans = `${scene.spans.length} spoiled spans.`;
+    const told = `Whole study, ${widthText(durationS)}. ${phases.join(', ')}. Stomach row, epochs: ${
+      kinds.join(', ') || 'none yet'
+    }.${rate} ${spans}`;
+    if (this.dom.summary.textContent !== told) this.dom.summary.textContent = told;
+  }
+
+  private placeSlots(): void {
+    const { minutes, seconds } = this.stores.view.getState();
+    for (const [slot, { fromS, toS }] of [
+      [this.dom.slot, minutes],
+      [this.dom.innerSlot, seconds],
+    ] as const) {
+      const left = this.xOf(fromS);
+      slot.style.transform = `translateX(${left}px)`;
+      slot.style.width = `${Math.max(1, this.xOf(toS) - left)}px`;
+    }
+  }
+
+  private placeCursor(): void {
+    const { cursorS } = this.stores.view.getState();
+    this.dom.cursorLine.hidden = cursorS === null;
+    if (cursorS !== null)
+      this.dom.cursorLine.style.transform = `translateX(${this.xOf(cursorS)}px)`;
+  }
+
+  /** The border of a phase under a place in the phases' row. */
+  edgeAt(x: number, y: number): PhaseEdge | null {
+    if (y > PHASE_BOX.bottomPx) return null;
+    const edges = phaseEdges(this.phases());
+    const found = nearestWithin(
+      x,
+      edges.map((edge) => this.xOf(edge.atS)),
+      EDGE_PX,
+    );
+    return found === null ? null : edges[found];
+  }
+
+  /** Drags a border of a phase; the phases are changed in one step when it is let go. */
+  edgeGesture(edge: PhaseEdge): Gesture {
+    const before = this.phases();
+    const { durationS } = this.stores.view.getState();
+    const moved = (x: number) => movePhaseEdge(before, edge, this.sAt(x), durationS);
+    return {
+      cursor: 'ew-resize',
+      move: (x) => this.draft(moved(x)),
+      drop: (x) => {
+        this.draft(null);
+        tryEdit(this.stores, this.act, ({ state }) =>
+          setField(state, 'phases', moved(x), 'move border of a phase'),
+        );
+      },
+      cancel: () => this.draft(null),
+    };
+  }
+
+  destroy(): void {
+    for (const stop of this.stops) stop();
+    this.loop.stop();
+  }
+}
+
+/** How the strip answers the pointer. */
+export function stripActs(strip: StripView, { view }: PaneStores): StageActs {
+  const click = (x: number) => {
+    lookAtMinutes(view, strip.sAt(x));
+    lookAtSeconds(view, strip.sAt(x));
+  };
+  const clickInSlot = (x: number) => lookAtSeconds(view, strip.sAt(x));
+  const slotAt = (x: number) => {
+    const { minutes } = view.getState();
+    return slotPart(x, strip.xOf(minutes.fromS), strip.xOf(minutes.toS));
+  };
+  return {
+    press: (x, y) => {
+      const edge = strip.edgeAt(x, y);
+      if (edge) return strip.edgeGesture(edge);
+      const part = slotAt(x);
+      if (part === 'body') return slotGesture(view, 'minutes', strip, x, clickInSlot);
+      if (part) return slotEdgeGesture(view, 'minutes', part, strip, x);
+      return stripPan(strip, view, x, click);
+    },
+    hover: (x, y) => {
+      if (strip.edgeAt(x, y)) return 'ew-resize';
+      const part = slotAt(x);
+      if (part === 'body') return 'grab';
+      return part ? 'ew-resize' : 'pointer';
+    },
+    point: (x) => view.setState({ cursorS: x === null ? null : strip.sAt(x) }),
+    wheel: (x, event) => wheelOver(view, 'minutes', strip, x, event),
+  };
+}
+
+/** Outside the slot a press brings the slot there and a drag takes it along. */
+function stripPan(
+  strip: StripView,
+  view: PaneStores['view'],
+  x: number,
+  click: (x: number) => void,
+): Gesture {
+  const still = panGesture(view, 'minutes', strip, x, click);
+  return { ...still, move: (to) => lookAtMinutes(view, strip.sAt(to)) };
+}
