@@ -40,16 +40,19 @@ describe('breathing from a lead', () => {
     [18, 1],
     [24, 10],
     [35, 250],
-  ])('%i a minute at %i Hz is told within 1.5 a minute in nearly every window', (rate, hz) => {
-    const { samples, perMinute } = belt(rate, 600, hz);
-    const series = breathingFromLead(samples, hz);
-    expect(series.from).toBe('lead');
-    expect(series.centresS[0]).toBe(30);
-    expect(series.centresS.length).toBe(19);
-    expect(told(series).length).toBeGreaterThanOrEqual(17);
-    const off = series.perMinute.map((one, i) => Math.abs(one - perMinute(series.centresS[i])));
-    expect(quantile(told({ perMinute: off }), 0.9)).toBeLessThan(1.5);
-  });
+  ])(
+    '%i a minute at %i Hz is told within 1.5 a minute or 6 % in nearly every window',
+    (rate, hz) => {
+      const { samples, perMinute } = belt(rate, 600, hz);
+      const series = breathingFromLead(samples, hz);
+      expect(series.from).toBe('lead');
+      expect(series.centresS[0]).toBe(30);
+      expect(series.centresS.length).toBe(19);
+      expect(told(series).length).toBeGreaterThanOrEqual(17);
+      const off = series.perMinute.map((one, i) => Math.abs(one - perMinute(series.centresS[i])));
+      expect(quantile(told({ perMinute: off }), 0.9)).toBeLessThan(Math.max(1.5, 0.06 * rate));
+    },
+  );
 
   it('is exact for a steady wave', () => {
     const wave = Float64Array.from({ length: 2400 }, (_, i) => cos(2 * Math.PI * 0.237 * (i / 4)));
