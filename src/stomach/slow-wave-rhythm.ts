@@ -1,0 +1,133 @@
+import type { BreathingSeries } from '../recording/heart-series';
+import type { Phase } from '../recording/phase';
+import type { Epoch, SlowWaveRhythm } from '../recording/rhythm';
+import type { SlowOutput } from '../recording/separated';
+import type { Settings } from '../recording/settings';
+import { type Interval, joinIntervals } from '../recording/span';
+import type { Seconds } from '../units/time';
+import { crestTimes } from './crests';
+import { breathingOf, crestRateCpm } from './epoch-flags';
+import { epochStarts } from './epoch-layout';
+import { type EpochInput, epochRhythm, type Spectrum } from './epoch-rhythm';
+import { keptSamples, missingStretches } from './kept-samples';
+import { type SharedWindows, sharedWindows } from './shared-windows';
+import { runningSpectrogram } from './spectrogram';
+
+export interface SlowWaveRhythmOptions {
+  readonly slow: SlowOutput;
+  /** Spoiled stretches that act on the stomach's figures of this lead. */
+  readonly spoiled: readonly Interval[];
+  /** At least one; the whole study where none is marked. */
+  readonly phases: readonly Phase[];
+  readonly settings: Settings;
+  /** Null where nothing is known of the breathing. */
+  readonly breathing: BreathingSeries | null;
+}
+
+/** The rhythm of one lead with the spectra its phases' figures are made of. */
+export interface StomachAnalysis {
+  readonly rhythm: SlowWaveRhythm;
+  /** One an epoch of rhythm.epochs: power density in uV2/Hz of the recorded lead; null where not kept. */
+  readonly epochSpectra: readonly (Float64Array | null)[];
+  /** Bin k of a spectrum lies at k * binCpm. */
+  readonly binCpm: number;
+  /** Stretches of the lead without samples. */
+  readonly missing: readonly Interval[];
+}
+
+interface Lead {
+  readonly options: SlowWaveRhythmOptions;
+  readonly windows: SharedWindows;
+  readonly halfWindows: SharedWindows;
+  readonly crestsS: Float64Array;
+}
+
+function halvesOf(lead: Lead, first: number): readonly [Spectrum, Spectrum] | null {
+  const { halfWindows, options } = lead;
+  const lengthS = options.settings.epoch.lengthS / 2;
+  const step = Math.round(lengthS * options.slow.rateHz);
+  const half = (from: number): Spectrum | null =>
+    halfWindows.at(from).spoiledFraction > options.settings.epoch.maxSpoiled
+      ? null
+      : { density: halfWindows.densityAt(from), binCpm: halfWindows.binCpm, lengthS };
+  const [before, after] = [half(first), half(first + step)];
+  return before && after ? [before, after] : null;
+}
+
+function epochInput(lead: Lead, first: number, fromS: Seconds): EpochInput {
+  const { windows, options, crestsS } = lead;
+  const { lengthS } = options.settings.epoch;
+  const window = windows.at(first);
+  return {
+    density: windows.densityAt(first),
+    binCpm: windows.binCpm,
+    lengthS,
+    samples: window.samples,
+    rateHz: options.slow.rateHz,
+    spoiledFraction: window.spoiledFraction,
+    crestCpm: crestRateCpm(crestsS, fromS, fromS + lengthS),
+    breathingCpm: breathingOf(options.breathing, fromS, fromS + lengthS),
+    halves: () => halvesOf(lead, first),
+  };
+}
+
+function analyseEpoch(lead: Lead, phase: string, fromS: Seconds) {
+  const { slow, settings } = lead.options;
+  const { lengthS, maxSpoiled } = settings.epoch;
+  const first = Math.max(0, Math.ceil(fromS * slow.rateHz - 1e-6));
+  const { spoiledFraction } = lead.windows.at(first);
+  const place = { lead: slow.lead, phase, fromS, toS: fromS + lengthS, spoiledFraction };
+  if (spoiledFraction > maxSpoiled || spoiledFraction === 1) {
+    const nothing = { dfCpm: null, dpDb: null, peakShare: null, rhythm: null, flags: [] };
+    const epoch: Epoch = { ...place, kept: false, ...nothing };
+    return { epoch, spectrum: null };
+  }
+  const input = epochInput(lead, first, fromS);
+  const epoch: Epoch = { ...place, kept: true, ...epochRhythm(input, settings) };
+  return { epoch, spectrum: input.density };
+}
+
+function windowsOf(options: SlowWaveRhythmOptions, kept: Uint8Array, lengthS: Seconds) {
+  const { forSpectra, rateHz, powerResponse } = options.slow;
+  return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse });
+}
+
+/**
+ * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
+ * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
+ * spectra; a phase that reaches past the lead ends with it.
+ */
+export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
+  const { slow, spoiled, phases, settings } = options;
+  const { lengthS } = settings.epoch;
+  const endS = slow.forSpectra.length / slow.rateHz;
+  const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
+  const missing = missingStretches(slow.forSpectra, slow.rateHz);
+  const lead: Lead = {
+    options,
+    windows: windowsOf(options, kept, lengthS),
+    halfWindows: windowsOf(options, kept, lengthS / 2),
+    crestsS: crestTimes(slow.slowWave, {
+      rateHz: slow.rateHz,
+      highCpm: settings.rhythmBands.highCpm,
+      unclean: joinIntervals([...slow.unclean, ...spoiled]),
+    }),
+  };
+  const analysed = phases.flatMap((phase) =>
+    epochStarts(
+      { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
+      settings.epoch,
+    ).map((fromS) => analyseEpoch(lead, phase.name, fromS)),
+  );
+  return {
+    rhythm: {
+      lead: slow.lead,
+      epochs: analysed.map(({ epoch }) => epoch),
+      spectrogram: runningSpectrogram(lead.windows, slow.forSpectra.length, slow.rateHz, settings),
+      crestsS: lead.crestsS,
+    },
+    epochSpectra: analysed.map(({ spectrum }) => spectrum),
+    binCpm: lead.windows.binCpm,
+    missing,
+  };
+}
