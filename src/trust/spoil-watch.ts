@@ -1,0 +1,202 @@
+import {
+  coveredSeconds,
+  type Interval,
+  joinIntervals,
+  type SpanCause,
+  type SpanTarget,
+} from '../recording/span';
+import type { Hertz } from '../units/rate';
+import type { Seconds } from '../units/time';
+import { type BaseColumns, createBaseColumns } from './base-columns';
+import { type Excursion, paddedAndJoined } from './excursions';
+import { flatLines } from './flat-line';
+import type { ProposedSpan } from './proposed-span';
+import type { Run } from './runs';
+import { slowMovements } from './slow-movements';
+import { jumpStretches, roughStretches } from './sudden-bursts';
+
+export interface SpoilWatchOptions {
+  /** Key of the lead, written into each span. */
+  readonly lead: string;
+  readonly rateHz: Hertz;
+  readonly railsUv: readonly [number, number] | null;
+  /** One digital step in uV; 0 where not known. */
+  readonly stepUv: number;
+  /** Time of the first sample; 0 unless given. */
+  readonly startS?: Seconds;
+}
+
+/** Watches one lead stream by and proposes what is spoiled. */
+export interface SpoilWatch {
+  /** Takes the next samples in uV, NaN where there are none. */
+  push(block: Float64Array): void;
+  /** The proposals, ascending, after the last sample. */
+  finish(): readonly ProposedSpan[];
+}
+
+/** A heartbeat cannot be judged below this rate, nor spoiled. */
+const HEART_NEEDS_HZ = 50;
+/** Columns this near to a gap, flat line or rail do not count for what else is found. */
+const NEAR_S = 0.5;
+
+interface Found {
+  readonly target: SpanTarget;
+  readonly cause: SpanCause;
+  readonly intervals: readonly Interval[];
+}
+
+const runIntervals = (runs: readonly Run[], rateHz: Hertz): readonly Interval[] =>
+  runs.map(({ from, to }) => ({ fromS: from / rateHz, toS: to / rateHz }));
+
+const columnIntervals = (found: readonly Excursion[], columnS: number): readonly Interval[] =>
+  found.map(({ from, to }) => ({ fromS: from * columnS, toS: to * columnS }));
+
+/** What of an interval list lies outside another, both joined. */
+function without(intervals: readonly Interval[], taken: readonly Interval[]): readonly Interval[] {
+  return intervals.filter(
+    ({ fromS, toS }) => coveredSeconds(taken, fromS, toS) < 0.5 * (toS - fromS),
+  );
+}
+
+/** Values by column as doubles, NaN where a column lies in or near one of the intervals. */
+function outside(values: Float32Array, columnS: number, taken: readonly Interval[]): Float64Array {
+  const left = Float64Array.from(values);
+  for (const { fromS, toS } of taken)
+    left.fill(
+      Number.NaN,
+      Math.max(0, Math.floor((fromS - NEAR_S) / columnS)),
+      Math.ceil((toS + NEAR_S) / columnS),
+    );
+  return left;
+}
+
+/** Gaps, rails and flat lines: the lead carries nothing there. */
+function emptyStretches(columns: BaseColumns, options: SpoilWatchOptions): readonly Found[] {
+  const { rateHz, stepUv } = options;
+  const gaps = runIntervals(columns.missing, rateHz);
+  const rails = paddedAndJoined(runIntervals(columns.railed, rateHz), NEAR_S, 2);
+  const flats = without(joinIntervals(flatLines(columns, rateHz, stepUv)), rails);
+  return [
+    { target: 'both', cause: 'gap', intervals: gaps },
+    { target: 'both', cause: 'rail', intervals: rails },
+    { target: 'both', cause: 'flat', intervals: paddedAndJoined(flats, 0.2, 1) },
+  ];
+}
+
+/** Stretches that spoil the heart: muscle bursts, and jumps that a detector would take for beats. */
+function heartBursts(
+  columns: BaseColumns,
+  taken: readonly Interval[],
+  options: SpoilWatchOptions,
+): readonly Interval[] {
+  if (options.rateHz < HEART_NEEDS_HZ) return [];
+  const { columnS } = columns;
+  const spread = columns.high.map((high, i) => high - columns.low[i]);
+  const rough = roughStretches(columns, outside(columns.roughness, columnS, taken), options.stepUv);
+  const jumps = jumpStretches(columns, outside(spread, columnS, taken), options.stepUv);
+  return paddedAndJoined(columnIntervals([...rough, ...jumps], columnS), 0.5, 3);
+}
+
+/** Steps and movements of the slow part of the lead. */
+function stomachMovements(
+  columns: BaseColumns,
+  taken: readonly Interval[],
+  stepUv: number,
+): { readonly steps: readonly Interval[]; readonly swings: readonly Interval[] } {
+  const { columnS } = columns;
+  const found = slowMovements(columns, outside(columns.mean, columnS, taken), stepUv);
+  const isStep = (one: { stepAt: number | null }) => one.stepAt !== null;
+  const pick = (list: typeof found) => paddedAndJoined(columnIntervals(list, columnS), 1, 6);
+  const steps = pick(found.filter(isStep));
+  return { steps, swings: without(pick(found.filter((one) => !isStep(one))), steps) };
+}
+
+/**
+ * Heart and stomach spans of one event become one for both, where the heart's lie within the stomach's and fill half of
+ * it; the rest stay apart, so that a long settling does not cost beats that can be read.
+ */
+function unite(
+  heart: readonly Interval[],
+  stomach: readonly Interval[],
+): { both: Interval[]; heart: Interval[]; stomach: Interval[] } {
+  const left = new Set(heart);
+  const both: Interval[] = [];
+  const alone: Interval[] = [];
+  for (const one of stomach) {
+    const meeting = heart.filter((h) => h.fromS < one.toS && h.toS > one.fromS);
+    const shared = coveredSeconds(meeting, one.fromS, one.toS);
+    const spread = meeting.reduce(
+      (sum, h) => ({ fromS: Math.min(sum.fromS, h.fromS), toS: Math.max(sum.toS, h.toS) }),
+      one,
+    );
+    if (shared < 0.5 * (spread.toS - spread.fromS)) {
+      alone.push(one);
+      continue;
+    }
+    both.push(spread);
+    for (const h of meeting) left.delete(h);
+  }
+  return { both: [...joinIntervals(both)], heart: [...left], stomach: alone };
+}
+
+function movements(
+  columns: BaseColumns,
+  taken: readonly Interval[],
+  options: SpoilWatchOptions,
+): readonly Found[] {
+  const bursts = heartBursts(columns, taken, options);
+  const { steps, swings } = stomachMovements(columns, taken, options.stepUv);
+  const step = unite(bursts, steps);
+  const burst = unite(step.heart, swings);
+  return [
+    { target: 'both', cause: 'step', intervals: step.both },
+    { target: 'stomach', cause: 'step', intervals: step.stomach },
+    { target: 'both', cause: 'burst', intervals: burst.both },
+    { target: 'stomach', cause: 'burst', intervals: burst.stomach },
+    { target: 'heart', cause: 'burst', intervals: burst.heart },
+  ];
+}
+
+const NOTES: Readonly<Partial<Record<SpanCause, string>>> = {
+  gap: 'no samples',
+  rail: 'at the end of the digitiser’s range',
+  flat: 'no change in the lead',
+  step: 'a jump, until it has settled',
+  burst: 'far over the recording’s own level',
+};
+
+/**
+ * Proposes the spoiled spans of one lead while it streams by: gaps, flat lines, rails, steps and bursts. Every limit is a
+ * multiple of the recording's own running level (median of 10 min), so that a large QRS, a strong slow wave or a slow
+ * drift is none; the rules are this program's, set on simulated studies. What memory it needs is 16 bytes for each 0.1 s.
+ */
+export function createSpoilWatch(options: SpoilWatchOptions): SpoilWatch {
+  const base = createBaseColumns(options);
+  const startS = options.startS ?? 0;
+  return {
+    push: (block) => base.push(block),
+    finish() {
+      const columns = base.finish();
+      const endS = columns.sampleCount / options.rateHz;
+      const empty = emptyStretches(columns, options);
+      const taken = empty.flatMap((found) => found.intervals);
+      const all = [...empty, ...movements(columns, taken, options)];
+      return all
+        .flatMap(({ target, cause, intervals }) =>
+          intervals.map(
+            ({ fromS, toS }): ProposedSpan => ({
+              fromS: startS + Math.max(0, fromS),
+              toS: startS + Math.min(endS, toS),
+              lead: options.lead,
+              target,
+              cause,
+              origin: 'proposed',
+              note: NOTES[cause] ?? '',
+            }),
+          ),
+        )
+        .filter((span) => span.toS > span.fromS)
+        .sort((a, b) => a.fromS - b.fromS || a.toS - b.toS);
+    },
+  };
+}
