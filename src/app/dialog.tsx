@@ -22,7 +22,11 @@ export function Dialog(props: DialogProps) {
     const dialog = ref.current;
     if (dialog && !dialog.open) {
       dialog.showModal();
-      dialog.querySelector<HTMLElement>('[data-autofocus]')?.focus();
+      const wanted =
+        dialog.querySelector<HTMLElement>('[data-autofocus]') ??
+        dialog.querySelector<HTMLElement>('.dialog-body :is(input, select, textarea)') ??
+        dialog.querySelector<HTMLElement>('.dialog-foot .strong');
+      wanted?.focus();
     }
     return () => dialog?.close();
   }, []);

@@ -133,6 +133,12 @@ interface TimeChipsProps {
   readonly onPut: (seconds: number) => void;
 }
 
+interface Chip {
+  readonly atS: number;
+  readonly text: string;
+}
+
+const sameChip = (a: Chip, b: Chip): boolean => a.atS === b.atS && a.text === b.text;
 const MOST_CHIPS = 80;
 
 function TimeChips({ annotations, events, field, onPut }: TimeChipsProps) {
@@ -145,7 +151,9 @@ function TimeChips({ annotations, events, field, onPut }: TimeChipsProps) {
         : []),
     ]),
     ...events.map(({ atS, text }) => ({ atS, text })),
-  ].sort((a, b) => a.atS - b.atS);
+  ]
+    .filter((one, i, all) => all.findIndex((it) => sameChip(it, one)) === i)
+    .sort((a, b) => a.atS - b.atS);
   if (chips.length === 0)
     return <p className="quiet">The file has no annotations to take times from.</p>;
   return (

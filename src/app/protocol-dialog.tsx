@@ -36,6 +36,17 @@ function ProtocolForm({ before }: { readonly before: Protocol }) {
       close();
     });
   };
+  const texts = (keys: readonly ProtocolText[]) =>
+    PROTOCOL_TEXTS.filter((one) => keys.includes(one.key)).map(({ key, label }) => (
+      <Field
+        key={key}
+        label={label}
+        value={draft[key]}
+        {...(HINTS[key] ? { hint: HINTS[key] } : {})}
+        {...(key === 'posture' ? { suggestions: POSTURES } : {})}
+        onChange={(text) => setDraft({ ...draft, [key]: text })}
+      />
+    ));
   return (
     <Dialog
       title="Meal and protocol"
@@ -53,6 +64,7 @@ function ProtocolForm({ before }: { readonly before: Protocol }) {
         </>
       }
     >
+      {texts(['meal'])}
       <div className="field-grid">
         {PROTOCOL_NUMBERS.map(({ key, label, bounds }) => (
           <Field
@@ -67,16 +79,7 @@ function ProtocolForm({ before }: { readonly before: Protocol }) {
           />
         ))}
       </div>
-      {PROTOCOL_TEXTS.map(({ key, label }) => (
-        <Field
-          key={key}
-          label={label}
-          value={draft[key]}
-          {...(HINTS[key] ? { hint: HINTS[key] } : {})}
-          {...(key === 'posture' ? { suggestions: POSTURES } : {})}
-          onChange={(text) => setDraft({ ...draft, [key]: text })}
-        />
-      ))}
+      {texts(['posture', 'medicines', 'implants'])}
     </Dialog>
   );
 }

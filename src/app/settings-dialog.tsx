@@ -198,6 +198,10 @@ function RhythmSettings(props: SectionProps) {
       />
       <Numbers {...props} keys={PRESET_KEYS} />
       <Numbers {...props} keys={['epochLength', 'epochStep', 'maxSpoiled', 'falseAlarm']} />
+      <p className="small quiet">
+        An epoch is kept up to that spoiled share. The false alarm is the chance, an epoch, that
+        noise alone passes for a rhythm.
+      </p>
     </fieldset>
   );
 }

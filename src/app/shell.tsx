@@ -59,8 +59,7 @@ export function Shell({ parts, panes, renderReport }: ShellProps) {
         <input
           ref={fileInput}
           type="file"
-          className="unseen"
-          tabIndex={-1}
+          hidden
           aria-label="File to open"
           onChange={(event) => {
             take([...(event.target.files ?? [])]);

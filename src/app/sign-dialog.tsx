@@ -123,6 +123,6 @@ function SignForm({ state }: { readonly state: SessionState }) {
 
 function studyWords({ study }: SessionState): string {
   const start = study.start === null ? 'start not known' : `recorded ${localWords(study.start)}`;
-  const hash = study.sha256 === null ? 'hash not known yet' : `hash ${study.sha256.slice(0, 12)}…`;
+  const hash = study.sha256 === null ? 'hash not known yet' : `hash ${study.sha256.slice(0, 12)}`;
   return `${start}, ${formatClock(study.durationS)} long, ${hash}`;
 }

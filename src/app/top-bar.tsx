@@ -48,8 +48,8 @@ function StudyStrip({ parts }: { readonly parts: CommandParts }) {
         {(study ?? recording)?.invented ? <span className="badge">invented data</span> : null}
       </p>
       <p className="facts">
-        {recording ? <span>{factsWords(recording)}</span> : null}
         <Kept />
+        {recording ? <span title={factsWords(recording)}>{factsWords(recording)}</span> : null}
       </p>
     </div>
   );

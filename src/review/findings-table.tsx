@@ -1,3 +1,4 @@
+import type { FigureValue } from '../recording/figure';
 import type { FigureDefinition, Organ } from '../recording/figure-catalogue';
 import { FIGURES } from '../recording/figure-catalogue';
 import type { Findings, PhaseFindings } from '../recording/findings';
@@ -6,7 +7,8 @@ import {
   changeWords,
   type FigureWords,
   figureWords,
-  sharedBasis,
+  NOT_COMPARED,
+  sharedWords,
   stretchWords,
 } from './findings-words';
 
@@ -113,49 +115,46 @@ interface OrganRowsProps {
 }
 
 function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRowsProps) {
-  const bases = phases.map((phase) => sharedBasis(phase, definitions));
   const [left, right] = phases;
+  const shared = phases.map((phase) =>
+    sharedWords(definitions.map((one) => phase.figures[one.key])),
+  );
+  const changes = definitions.map((one) => changeOf(findings, one.key, left, right));
+  const sharedChange = sharedWords(changes);
+  const notes = [
+    ...phases.flatMap((phase, i) => [
+      adequacyWords(phase, organ),
+      shared[i].reason === null ? '' : `${phase.name}: — ${shared[i].reason}`,
+    ]),
+    right && sharedChange.reason !== null ? `change: — ${sharedChange.reason}` : '',
+  ].filter((note) => note !== '');
   return (
     <tbody className={`organ-${organ}`}>
       <tr className="findings-organ">
         <th scope="rowgroup">{ORGAN_WORDS[organ]}</th>
         {phases.map((phase, i) => (
-          <td key={i === 0 ? 'left' : 'right'}>
-            <Adequacy words={adequacyWords(phase, organ)} />
-            {bases[i]}
-          </td>
+          <td key={i === 0 ? 'left' : 'right'}>{shared[i].basis}</td>
         ))}
         {right ? <td /> : null}
       </tr>
-      {definitions.map((definition) => (
+      {notes.length > 0 ? <NotesRow notes={notes} columns={right ? 4 : 2} /> : null}
+      {definitions.map((definition, row) => (
         <tr key={definition.key}>
-          <th scope="row">
-            <span className={`organ-square ${squareOf(definition)}`} aria-hidden="true" />
-            {definition.label}
-            {definition.unit ? <span className="unit"> {definition.unit}</span> : null}
-          </th>
+          <RowHead definition={definition} />
           {phases.map((phase, i) => (
             <FigureCell
               key={i === 0 ? 'left' : 'right'}
               words={figureWords(phase.figures[definition.key], definition)}
-              unsaid={bases[i]}
+              unsaid={[shared[i].basis, shared[i].reason]}
               about={`${definition.label}, ${phase.name}`}
-              unit={definition.unit}
               onOpen={() => onFigure(definition.key, phase.name)}
             />
           ))}
-          {left && right ? (
+          {right ? (
             <FigureCell
-              words={changeWords(
-                findings.changes.find(
-                  (one) =>
-                    one.key === definition.key && one.from === left.name && one.to === right.name,
-                )?.value,
-                definition,
-              )}
-              unsaid={null}
+              words={changeWords(changes[row], definition)}
+              unsaid={[NOT_COMPARED, sharedChange.reason]}
               about={`${definition.label}, change`}
-              unit={definition.unit}
               onOpen={() => onFigure(definition.key, right.name)}
             />
           ) : null}
@@ -165,36 +164,75 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
   );
 }
 
+function changeOf(
+  findings: Findings,
+  key: string,
+  left: PhaseFindings | undefined,
+  right: PhaseFindings | undefined,
+): FigureValue | undefined {
+  return findings.changes.find(
+    (one) => one.key === key && one.from === left?.name && one.to === right?.name,
+  )?.value;
+}
+
+interface NotesRowProps {
+  readonly notes: readonly string[];
+  readonly columns: number;
+}
+
+/** What holds for many figures of an organ: how much is left of a phase, why figures are withheld. */
+function NotesRow({ notes, columns }: NotesRowProps) {
+  return (
+    <tr className="findings-notes">
+      <td colSpan={columns}>
+        {notes.map((note) => (
+          <p key={note}>{note}</p>
+        ))}
+      </td>
+    </tr>
+  );
+}
+
+function RowHead({ definition }: { readonly definition: FigureDefinition }) {
+  const { label, unit } = definition;
+  return (
+    <th scope="row">
+      <span className={`organ-square ${squareOf(definition)}`} aria-hidden="true" />
+      {label}
+      {unit ? <span className="unit"> {shortUnit(unit)}</span> : null}
+    </th>
+  );
+}
+
+/** The table is narrow; that percentages are of time is in the definition. */
+const shortUnit = (unit: string): string => unit.replace('% of time', '%');
+
 const squareOf = ({ key, organ }: FigureDefinition): string =>
   key === 'movement_pct' ? 'movement' : organ;
 
-function Adequacy({ words }: { readonly words: string }) {
-  return words === '' ? null : <strong className="findings-limited">{words}</strong>;
-}
-
 interface FigureCellProps {
   readonly words: FigureWords;
-  /** A basis said once for all above, left out here. */
-  readonly unsaid: string | null;
+  /** Words said once above or plain to see: only read out here. */
+  readonly unsaid: readonly (string | null)[];
   readonly about: string;
-  readonly unit: string;
   readonly onOpen: () => void;
 }
 
-function FigureCell({ words, unsaid, about, unit, onOpen }: FigureCellProps) {
-  const small = words.small.filter((line) => line !== unsaid);
-  const value = words.large === '—' ? 'withheld' : `${words.large} ${unit}`.trim();
+function FigureCell({ words, unsaid, about, onOpen }: FigureCellProps) {
+  const small = words.small.filter((line) => !unsaid.includes(line));
+  const heard = words.small.filter((line) => unsaid.includes(line));
   return (
     <td>
       <button
         type="button"
         className="figure"
-        title={[`${about}: ${value}`, ...words.small].join('\n')}
-        aria-label={[`${about}: ${value}`, ...words.small].join(', ')}
+        title={[`${about}: ${words.large}`, ...words.small].join('\n')}
         onClick={onOpen}
       >
+        <span className="unseen">{about}: </span>
         <span className="figure-large">{words.large}</span>
         {small.length > 0 ? <span className="figure-small">{small.join('; ')}</span> : null}
+        {heard.length > 0 ? <span className="unseen">, {heard.join('; ')}</span> : null}
       </button>
     </td>
   );

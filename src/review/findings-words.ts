@@ -34,31 +34,46 @@ export function figureWords(
   }
 }
 
+/** Said of a figure that two phases of unlike length cannot be compared in, or that was not compared. */
+export const NOT_COMPARED = 'not compared';
+
 /** A change as the table shows it: with its sign, a plus too. */
 export function changeWords(
   value: FigureValue | undefined,
   definition: Pick<FigureDefinition, 'decimals' | 'change'>,
 ): FigureWords {
-  if (definition.change === 'none') return { large: '—', small: ['grows with length'] };
-  if (!value) return { large: '—', small: ['not compared'] };
+  if (definition.change === 'none') return { large: '—', small: [NOT_COMPARED] };
+  if (!value) return { large: '—', small: [NOT_COMPARED] };
   const words = figureWords(value, definition);
   const grows = value.kind === 'number' && /[1-9]/.test(words.large) && value.value > 0;
   return grows ? { ...words, large: `+${words.large}` } : words;
 }
 
-/** The basis that most of an organ's figures of a phase stand on, said once for all; null where none is shared. */
-export function sharedBasis(
-  phase: PhaseFindings,
-  definitions: readonly FigureDefinition[],
-): string | null {
-  const counts = new Map<string, number>();
-  for (const { key } of definitions) {
-    const value = phase.figures[key];
-    if (value?.kind !== 'number' || value.basis === null) continue;
-    counts.set(value.basis, (counts.get(value.basis) ?? 0) + 1);
+/** What is said once for many figures of an organ and phase, so that it need not stand beside each. */
+export interface SharedWords {
+  /** The basis that most of them stand on, null where none is shared. */
+  readonly basis: string | null;
+  /** The reason why several are withheld, null where none is shared. */
+  readonly reason: string | null;
+}
+
+/** What the figures of a column share. */
+export function sharedWords(values: readonly (FigureValue | undefined)[]): SharedWords {
+  const bases: string[] = [];
+  const reasons: string[] = [];
+  for (const value of values) {
+    if (value?.kind === 'number' && value.basis !== null) bases.push(value.basis);
+    if (value?.kind === 'withheld') reasons.push(value.reason);
   }
-  const [basis, count] = [...counts].sort((a, b) => b[1] - a[1])[0] ?? [null, 0];
-  return count >= 2 ? basis : null;
+  return { basis: mostUsed(bases, 2), reason: mostUsed(reasons, 3) };
+}
+
+/** The text that is there most often, null where none is there at least so often. */
+function mostUsed(texts: readonly string[], least: number): string | null {
+  const counts = new Map<string, number>();
+  for (const text of texts) counts.set(text, (counts.get(text) ?? 0) + 1);
+  const [text, count] = [...counts].sort((a, b) => b[1] - a[1])[0] ?? [null, 0];
+  return count >= least ? text : null;
 }
 
 /** What is left of a phase for an organ, in words; '' where nothing need be said. */
@@ -69,7 +84,8 @@ export function adequacyWords(phase: PhaseFindings, organ: Organ): string {
   if (adequacy === 'enough') return '';
   const keptS = stomach ? phase.keptStomachS : phase.keptHeartS;
   const share = Math.floor((100 * keptS) / (phase.toS - phase.fromS));
-  return `${adequacy === 'limited' ? 'limited' : 'not reportable'}: ${share} % kept`;
+  const word = adequacy === 'limited' ? 'limited' : 'not reportable';
+  return `${phase.name} is ${word}: ${share} % kept`;
 }
 
 /** From and to of a stretch, whole minutes without their seconds: "0:00–0:30". */
