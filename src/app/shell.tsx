@@ -1,7 +1,8 @@
 import './styles.css';
 import { type ReactNode, useCallback, useMemo, useRef } from 'react';
 import { useStore } from 'zustand';
-import { type PaneCommands, paneCommands } from '../review/pane-commands';
+import { paneCommands } from '../review/pane-commands';
+import type { PaneProps } from '../review/pane-props';
 import { type AppParts, AppProvider } from './app-context';
 import type { CommandParts, PageActs } from './command';
 import { Dialogs } from './dialogs';
@@ -18,25 +19,24 @@ const REPORT_HASH = '#report';
 
 interface ShellProps {
   readonly parts: AppParts;
-  /** Draws the Whole study strip, and Minutes and Seconds below it. */
-  readonly panes: { readonly whole: ReactNode; readonly traces: ReactNode };
   /** Draws the report; without it the page has no report view. */
   readonly renderReport?: () => ReactNode;
 }
 
 /** The page: bar, start screen or study, dialogs, messages, keys, drops. */
-export function Shell({ parts, panes, renderReport }: ShellProps) {
+export function Shell({ parts, renderReport }: ShellProps) {
   const { shell, session, analysis } = parts;
   const fileInput = useRef<HTMLInputElement>(null);
   const hash = useHash();
   const page = usePageActs(fileInput, renderReport !== undefined);
+  const panes = useMemo(() => panePartsOf(parts), [parts]);
   const commandParts = useMemo<CommandParts>(
-    () => ({ ...parts, page, panes: panesOf(parts) }),
-    [parts, page],
+    () => ({ ...parts, page, panes: paneCommands(panes.stores, panes.signals, panes.act) }),
+    [parts, page, panes],
   );
   const take = useTakeFiles(parts);
   const over = useFileDrop(take);
-  useTheme(shell);
+  const theme = useTheme(shell);
   useLeaveGuard(session);
   useKeys(commandParts);
   const identityAsked = useStore(shell, (state) => state.dialog.kind === 'identity');
@@ -50,7 +50,7 @@ export function Shell({ parts, panes, renderReport }: ShellProps) {
       <div className={reportShown ? 'app report-open' : 'app'}>
         <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
         {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
-        {studyShown && !reportShown ? <Workspace panes={panes} page={page} /> : null}
+        {studyShown && !reportShown ? <Workspace panes={{ ...panes, theme }} page={page} /> : null}
         {studyShown ? null : <StartScreen parts={commandParts} />}
         <FootLine />
         <Messages />
@@ -71,13 +71,18 @@ export function Shell({ parts, panes, renderReport }: ShellProps) {
   );
 }
 
-/** The acts of the panes, speaking and editing through the shell. */
-function panesOf({ session, analysis, view, signals, controller, shell }: AppParts): PaneCommands {
-  return paneCommands({ session, analysis, view }, signals, {
-    edit: (edit) => controller.edit(edit),
-    say: (text) => shell.getState().tell(text),
-    reportError: (text) => shell.getState().sayProblem(text),
-  });
+/** What the panes are given: they speak and edit through the shell. */
+function panePartsOf(parts: AppParts): Omit<PaneProps, 'theme'> {
+  const { session, analysis, view, signals, controller, shell } = parts;
+  return {
+    stores: { session, analysis, view },
+    signals,
+    act: {
+      edit: (edit) => controller.edit(edit),
+      say: (text) => shell.getState().tell(text),
+      reportError: (text) => shell.getState().sayProblem(text),
+    },
+  };
 }
 
 type InputRef = { readonly current: HTMLInputElement | null };

@@ -1,22 +1,26 @@
 import { useEffect, useLayoutEffect, useState, useSyncExternalStore } from 'react';
 import { useStore } from 'zustand';
-import { applyTheme } from '../review/theme-tokens';
+import { applyTheme, type ThemeName } from '../review/theme-tokens';
 import { editNumber } from '../session/store';
 import type { AppParts } from './app-context';
 import type { ShellStore } from './shell-store';
 import { hasUnfiledWork } from './study-words';
 
-/** Puts the chosen theme on the page; `system` follows the system while the page is open. */
-export function useTheme(shell: ShellStore): void {
+const DARK = '(prefers-color-scheme: dark)';
+
+const onSystemTheme = (tell: () => void) => {
+  const dark = window.matchMedia(DARK);
+  dark.addEventListener('change', tell);
+  return () => dark.removeEventListener('change', tell);
+};
+
+/** Puts the chosen theme on the page and returns it; `system` follows the system while the page is open. */
+export function useTheme(shell: ShellStore): ThemeName {
   const choice = useStore(shell, (state) => state.theme);
-  useLayoutEffect(() => {
-    const dark = window.matchMedia('(prefers-color-scheme: dark)');
-    const put = () =>
-      applyTheme(document, choice === 'system' ? (dark.matches ? 'dark' : 'light') : choice);
-    put();
-    dark.addEventListener('change', put);
-    return () => dark.removeEventListener('change', put);
-  }, [choice]);
+  const systemDark = useSyncExternalStore(onSystemTheme, () => window.matchMedia(DARK).matches);
+  const theme = choice === 'system' ? (systemDark ? 'dark' : 'light') : choice;
+  useLayoutEffect(() => applyTheme(document, theme), [theme]);
+  return theme;
 }
 
 /** Asks before the page is left while some of the work is in no file. */

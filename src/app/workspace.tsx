@@ -1,10 +1,10 @@
-import type { ReactNode } from 'react';
 import { FindingsPane } from '../review/findings-pane';
+import { type PaneProps, TracePanes, WholeStudyPane } from '../review/panes';
 import { useAnalysis, useApp } from './app-context';
 import type { PageActs } from './command';
 
 interface WorkspaceProps {
-  readonly panes: { readonly whole: ReactNode; readonly traces: ReactNode };
+  readonly panes: PaneProps;
   readonly page: PageActs;
 }
 
@@ -23,8 +23,12 @@ export function Workspace({ panes, page }: WorkspaceProps) {
           </button>
         </p>
       )}
-      <div className="place-whole">{panes.whole}</div>
-      <div className="place-traces">{panes.traces}</div>
+      <div className="place-whole">
+        <WholeStudyPane {...panes} />
+      </div>
+      <div className="place-traces">
+        <TracePanes {...panes} />
+      </div>
       <div className="place-findings">
         <FindingsPane
           session={session}

@@ -132,7 +132,7 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
     <tbody className={`organ-${organ}`}>
       <tr className="findings-organ">
         <th scope="rowgroup">{ORGAN_WORDS[organ]}</th>
-        {phases.map((phase, i) => (
+        {phases.map((_, i) => (
           <td key={i === 0 ? 'left' : 'right'}>{shared[i].basis}</td>
         ))}
         {right ? <td /> : null}

@@ -1,0 +1,25 @@
+import { createRoot } from 'react-dom/client';
+import analysisWorkerUrl from '../workers/analysis.worker?worker&url';
+import hashWorkerUrl from '../workers/hash.worker?worker&url';
+import { Shell } from './app/shell';
+import { createShellStore } from './app/shell-store';
+import { createStudyController } from './app/study-controller';
+import { createAnalysisStore } from './review/analysis-store';
+import { createViewStore } from './review/view-store';
+import { browserStores } from './session/browser-stores';
+import { createKeeper } from './session/keeper';
+import { createSessionStore } from './session/store';
+import { PROGRAM } from './units/program';
+
+const nowUtc = () => new Date().toISOString();
+const browser = browserStores();
+const session = createSessionStore(nowUtc);
+const analysis = createAnalysisStore();
+const view = createViewStore();
+const shell = createShellStore(browser.localStorage);
+const stores = { session, analysis, view, shell };
+const keeper = createKeeper({ ...browser, program: PROGRAM, nowUtc });
+const controller = createStudyController({ ...stores, keeper, analysisWorkerUrl, hashWorkerUrl });
+const root = document.getElementById('root');
+if (root)
+  createRoot(root).render(<Shell parts={{ ...stores, controller, signals: controller.signals }} />);
