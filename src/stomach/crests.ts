@@ -2,7 +2,7 @@ import type { Interval } from '../recording/span';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
 
 /** A crest stands at least this many local rms above the troughs on both sides. */
-const HEIGHT_RMS = 0.9;
+const HEIGHT_RMS = 0.5;
 /** The local rms is that of this many seconds on either side. */
 const RMS_HALF_S = 60;
 
@@ -91,7 +91,7 @@ function cleanRuns(x: Float64Array, options: CrestOptions): [from: number, to: n
 }
 
 /**
- * Times in seconds of the crests of a drawn slow wave: tops that stand 0.9 local rms above the
+ * Times in seconds of the crests of a drawn slow wave: tops that stand half a local rms above the
  * troughs on both sides, at least half a period of the band's upper limit apart, refined by a
  * parabola. None in gaps or unclean stretches. Their count is a check by eye on DF, no figure.
  */

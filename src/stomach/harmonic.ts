@@ -6,11 +6,13 @@ import type { SpectrumPeak } from './dominant-peak';
 
 /** A peak counts as the double of a lower one within this share of it. */
 const DOUBLE_TOLERANCE = 0.05;
+/** A lower peak this far below its double (20 dB) is a side lobe or chance, not the wave itself. */
+const LEAST_SHARE_OF_DOUBLE = 0.01;
 /** Consistency of phase from which two lines count as locked, and the least number of windows. */
 const LOCKED = 0.8;
 const LEAST_WINDOWS = 3;
 
-/** The lower peaks that `peak` may be the second harmonic of, nearest to its half first. */
+/** The lower peaks that `peak` may be the second harmonic of, at most 20 dB below it, nearest to its half first. */
 export function halfPeaks(
   peak: SpectrumPeak,
   peaks: readonly SpectrumPeak[],
@@ -18,6 +20,7 @@ export function halfPeaks(
   const miss = (lower: SpectrumPeak) => Math.abs(peak.cpm - 2 * lower.cpm) / (2 * lower.cpm);
   return peaks
     .filter((lower) => lower.cpm < peak.cpm && miss(lower) <= DOUBLE_TOLERANCE)
+    .filter((lower) => lower.density >= LEAST_SHARE_OF_DOUBLE * peak.density)
     .sort((a, b) => miss(a) - miss(b));
 }
 

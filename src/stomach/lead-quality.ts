@@ -73,26 +73,29 @@ function countSteps(x: Float64Array, kept: Uint8Array, rateHz: Hertz): number {
   return steps;
 }
 
-function filled(signal: Float64Array): Float64Array {
-  let last = signal.find((value) => !Number.isNaN(value)) ?? 0;
-  return signal.map((value) => {
-    if (!Number.isNaN(value)) last = value;
+/** The lead with everything not kept replaced by the last kept value, so that it does not leak into what is. */
+function held(signal: Float64Array, kept: Uint8Array): Float64Array {
+  let last = signal.find((_, i) => kept[i] === 1) ?? 0;
+  return signal.map((value, i) => {
+    if (kept[i] === 1) last = value;
     return last;
   });
 }
+
+const uv = (value: number) => (Number.isNaN(value) ? 'not known' : `${value.toFixed(1)} uV`);
 
 function describe(quality: Omit<LeadQuality, 'reason'>): string {
   const { keptShare, unrestUv, driftUvPerMin, steps } = quality;
   if (!(keptShare > 0)) return 'nothing of it is kept';
   const jumps = steps === 0 ? 'no steps' : steps === 1 ? '1 step' : `${steps} steps`;
   return (
-    `${Math.round(100 * keptShare)} % kept, unrest ${unrestUv.toFixed(1)} uV above 12 cpm, ` +
-    `drift ${driftUvPerMin.toFixed(1)} uV a minute, ${jumps}`
+    `${Math.round(100 * keptShare)} % kept, unrest ${uv(unrestUv)} above 12 cpm, ` +
+    `drift ${uv(driftUvPerMin)} a minute, ${jumps}`
   );
 }
 
 function disturbance(slice: Float64Array, kept: Uint8Array, rateHz: Hertz) {
-  const x = filled(slice);
+  const x = held(slice, kept);
   const above = Math.min(UNREST_FROM_HZ, 0.3 * rateHz);
   const fast = convolveSame(
     x,
