@@ -1,6 +1,7 @@
 /** A canvas over or under the rows of a pane, drawn in CSS pixels whatever the device pixel ratio. */
 export class CanvasLayer {
   ratio = 1;
+  private family = 'sans-serif';
   widthPx = 0;
   heightPx = 0;
 
@@ -8,6 +9,7 @@ export class CanvasLayer {
 
   resize(widthPx: number, heightPx: number): void {
     this.ratio = window.devicePixelRatio || 1;
+    this.family = getComputedStyle(this.canvas).fontFamily;
     this.widthPx = widthPx;
     this.heightPx = heightPx;
     this.canvas.width = Math.max(1, Math.round(widthPx * this.ratio));
@@ -27,7 +29,7 @@ export class CanvasLayer {
 
   /** The canvas font of the page at a size in CSS pixels. */
   font(sizePx: number, weight = 400): string {
-    return `${weight} ${sizePx}px ${getComputedStyle(this.canvas).fontFamily}`;
+    return `${weight} ${sizePx}px ${this.family}`;
   }
 }
 

@@ -1,8 +1,8 @@
-const NICE: readonly number[] = [1, 2, 5];
+const NICE: readonly number[] = [1, 1.5, 2, 3, 5, 7];
 const LEAST_UV = 1;
-const MOST_UV = 500_000;
+const MOST_UV = 700_000;
 
-/** Gains a trace row can have, in uV from its middle to its edge: 1, 2, 5, 10 ... 500 000. */
+/** Gains a trace row can have, in uV from its middle to its edge: 1, 1.5, 2, 3, 5, 7, 10 ... 700 000. */
 export const GAINS_UV: readonly number[] = [1, 10, 100, 1000, 10_000, 100_000].flatMap((decade) =>
   NICE.map((one) => one * decade),
 );

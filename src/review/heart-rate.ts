@@ -14,25 +14,33 @@ export function heartRateLine(rr: RrSeries): RateLine {
   return { timesS: rr.timesS, perMinute };
 }
 
+/** Rates of equal parts of time; NaN in parts without one. */
+export interface RateColumns {
+  readonly low: Float32Array;
+  readonly high: Float32Array;
+  readonly mean: Float32Array;
+}
+
 /**
- * Least and greatest rate in each of `columns` equal parts of [0, durationS); NaN in parts without one. Reduces a day's line
+ * Least, greatest and mean rate in each of `columns` equal parts of [0, durationS); NaN in parts without one. Reduces a day's line
  * to what a strip can show.
  */
-export function rateColumns(
-  line: RateLine,
-  durationS: number,
-  columns: number,
-): { readonly low: Float32Array; readonly high: Float32Array } {
+export function rateColumns(line: RateLine, durationS: number, columns: number): RateColumns {
   const low = new Float32Array(columns).fill(Number.NaN);
   const high = new Float32Array(columns).fill(Number.NaN);
+  const mean = new Float32Array(columns);
+  const counts = new Uint32Array(columns);
   for (let i = 0; i < line.timesS.length; i += 1) {
     const value = line.perMinute[i];
     if (Number.isNaN(value)) continue;
     const column = Math.min(columns - 1, Math.floor((line.timesS[i] / durationS) * columns));
     if (!(value >= low[column])) low[column] = value;
     if (!(value <= high[column])) high[column] = value;
+    mean[column] += value;
+    counts[column] += 1;
   }
-  return { low, high };
+  for (let i = 0; i < columns; i += 1) mean[i] = counts[i] > 0 ? mean[i] / counts[i] : Number.NaN;
+  return { low, high, mean };
 }
 
 /**

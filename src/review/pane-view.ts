@@ -43,6 +43,7 @@ export class PaneView {
   private readonly hatch = new Hatch();
   private readonly stops: (() => void)[] = [];
   private describing = 0;
+  private drawnAt = 0;
 
   constructor(
     readonly dom: PaneDom,
@@ -89,18 +90,12 @@ export class PaneView {
     const { view, analysis, session } = this.stores;
     const { name } = this.kind;
     const drawnFrom = (state: ViewState) =>
-      [
-        state[name],
-        name === 'minutes' ? state.seconds : null,
-        state.gainsUv,
-        state.levelsDb,
-        state.selection,
-        state.draft,
-      ] as const;
+      [state[name], state.gainsUv, state.levelsDb, state.selection, state.draft] as const;
     this.stops.push(
       view.subscribe((now, before) => {
         const [a, b] = [drawnFrom(now), drawnFrom(before)];
         if (a.some((part, i) => part !== b[i])) this.loop.ask();
+        else if (now.seconds !== before.seconds) this.kind.drawn?.(this);
         if (now.cursorS !== before.cursorS || now[name] !== before[name]) this.placeCursor();
       }),
       analysis.subscribe((now, before) => {
@@ -207,12 +202,18 @@ export class PaneView {
   }
 
   private describeSoon(): void {
-    if (this.describing === 0) beginWork();
-    else clearTimeout(this.describing);
+    this.drawnAt = performance.now();
+    if (this.describing !== 0) return;
+    beginWork();
     this.describing = window.setTimeout(() => this.describe(), DESCRIBE_MS);
   }
 
   private describe(): void {
+    const restMs = this.drawnAt + DESCRIBE_MS - performance.now();
+    if (restMs > 1) {
+      this.describing = window.setTimeout(() => this.describe(), restMs);
+      return;
+    }
     this.describing = 0;
     const { fromS, toS } = this.window;
     const clock = (atS: number) => clockText(atS, 1, 'h:mm:ss');

@@ -53,7 +53,7 @@ export function makePlot(host: HTMLElement, parts: PlotParts): uPlot {
   );
 }
 
-/** Shows [fromS, toS) and [low, high] and draws at once. */
+/** Shows [fromS, toS) and [low, high] and draws at once; the path is made anew only where scales or data changed. */
 export function showWindow(
   u: uPlot,
   { fromS, toS }: { readonly fromS: number; readonly toS: number },
@@ -62,7 +62,6 @@ export function showWindow(
   u.batch(() => {
     u.setScale('x', { min: fromS, max: toS });
     u.setScale('y', { min: low, max: high });
-    u.redraw(true, false);
   });
 }
 

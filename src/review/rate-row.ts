@@ -57,6 +57,8 @@ export class RateRowView implements RowView {
       this.line = { timesS: centresS, values: perMinute, apartS: () => BREATH_JOIN_S };
     }
     this.limits = this.line && rateLimits(this.line.values);
+    if (this.line)
+      this.u.setData([this.line.timesS, this.line.values] as unknown as uPlot.AlignedData, false);
     if (this.labels) {
       const [low, high] = this.limits ?? ['', ''];
       this.labels.replaceChildren(edgeLabel(String(high)), edgeLabel(String(low)));

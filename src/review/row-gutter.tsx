@@ -12,7 +12,7 @@ interface GutterProps<R extends Row> {
 /** Name, unit, scale and gain buttons of one row, left of its trace. */
 export function RowGutter({ row, stores, commands }: GutterProps<Row>) {
   return (
-    <div className={`gutter hue-${row.hue}`}>
+    <div className={`gutter of-${row.kind} hue-${row.hue}`}>
       {row.kind === 'signal' ? (
         <SignalGutter row={row} stores={stores} commands={commands} />
       ) : (

@@ -77,10 +77,10 @@ export function minutesRows(
   const slow = roles.slow.map((lead, index) =>
     signalRow('minutes', lead, recording, {
       signal: 'slow-wave',
-      note: roles.slow.length > 1 && index === roles.reported ? 'slow wave, reported' : 'slow wave',
+      note: 'slow wave',
       hue: 'stomach',
       centred: false,
-      weight: 1.3,
+      weight: roles.slow.length > 1 && index !== roles.reported ? 1.1 : 1.6,
     }),
   );
   const spectrogram: Row = {

@@ -95,9 +95,12 @@ function paintBeats(brush: CanvasRenderingContext2D, view: PaneView, parts: Seco
     brush.setLineDash([]);
     if (pin.selected) ringPin(brush, pin.x, tokens.focus);
     drawPinHead(brush, beatClass, pin.x, PIN_Y_PX, { colour: tokens.heart, paper: tokens.paper });
+    if (pin.x < 0 || pin.x > view.widthPx) continue;
     if (apart < LETTER_PX && beatClass === 'N' && !pin.selected) continue;
     brush.fillStyle = tokens.ink;
-    brush.fillText(beatClass, pin.x + 10, PIN_Y_PX + 0.5);
+    const left = pin.x + LETTER_PX > view.widthPx;
+    brush.textAlign = left ? 'right' : 'left';
+    brush.fillText(beatClass, pin.x + (left ? -10 : 10), PIN_Y_PX + 0.5);
   }
 }
 

@@ -11,7 +11,10 @@ import type { RowContext, RowView } from './row-view';
 import type { SignalRow } from './rows';
 import type { TimeWindow } from './view-store';
 
-const CREST_ROOM_PX = 13;
+const CREST_ROOM_PX = 17;
+const TICK_ROOM_PX = 7;
+/** Rows lower than this show the ticks of the crests without their counts. */
+const LEAST_COUNTED_PX = 36;
 const LEAST_CREST_PX = 3;
 const LEAST_DIGIT_PX = 12;
 
@@ -22,6 +25,7 @@ export class SignalRowView implements RowView {
   private window: TimeWindow = { fromS: 0, toS: 0 };
   private widthPx = 0;
   private heightPx = 0;
+  private family = 'sans-serif';
   private fitting = false;
   private gone = false;
 
@@ -66,6 +70,7 @@ export class SignalRowView implements RowView {
   resize(widthPx: number, heightPx: number): void {
     this.widthPx = widthPx;
     this.heightPx = heightPx;
+    this.family = getComputedStyle(this.u.root).fontFamily;
     this.u.setSize({ width: Math.max(1, widthPx), height: Math.max(1, heightPx) });
   }
 
@@ -83,9 +88,13 @@ export class SignalRowView implements RowView {
     showWindow(this.u, window, [centre - gain, centre + gain + room]);
   }
 
+  private crestRoomPx(): number {
+    return this.heightPx < LEAST_COUNTED_PX ? TICK_ROOM_PX : CREST_ROOM_PX;
+  }
+
   private crestRoomUv(gain: number): number {
-    const traceRoom = Math.max(1, this.heightPx - CREST_ROOM_PX);
-    return (2 * gain * CREST_ROOM_PX) / traceRoom;
+    const roomPx = this.crestRoomPx();
+    return (2 * gain * roomPx) / Math.max(1, this.heightPx - roomPx);
   }
 
   private fit(window: TimeWindow): void {
@@ -155,24 +164,25 @@ export class SignalRowView implements RowView {
       u.ctx.beginPath();
       for (let i = from; i < to; i += 1) {
         const x = x0 + crests[i] * perS;
-        u.ctx.moveTo(x, u.bbox.top + 1);
-        u.ctx.lineTo(x, u.bbox.top + 5 * ratio);
+        u.ctx.moveTo(x, u.bbox.top + (this.crestRoomPx() - 6) * ratio);
+        u.ctx.lineTo(x, u.bbox.top + (this.crestRoomPx() - 1) * ratio);
       }
       u.ctx.stroke();
     }
-    if (perS * 60 >= LEAST_DIGIT_PX * ratio) this.writeCounts(u, crests, ratio);
+    const counted = this.crestRoomPx() === CREST_ROOM_PX && perS * 60 >= LEAST_DIGIT_PX * ratio;
+    if (counted) this.writeCounts(u, crests, ratio);
     u.ctx.restore();
   }
 
   private writeCounts(u: uPlot, crests: Float64Array, ratio: number): void {
     const { x0, perS } = plotScale(u);
     u.ctx.fillStyle = this.context.tokens().quiet;
-    u.ctx.font = `${10 * ratio}px ${getComputedStyle(u.root).fontFamily}`;
+    u.ctx.font = `${11 * ratio}px ${this.family}`;
     u.ctx.textAlign = 'center';
     u.ctx.textBaseline = 'top';
     const { durationS } = this.context.stores.view.getState();
     for (const { atS, count } of crestsPerMinute(crests, this.window, durationS))
-      u.ctx.fillText(String(count), x0 + atS * perS, u.bbox.top + 3 * ratio);
+      u.ctx.fillText(String(count), x0 + atS * perS, u.bbox.top + ratio);
   }
 
   describe(): string {

@@ -1,6 +1,7 @@
 import type { Phase } from '../recording/phase';
 import { isMeal } from '../recording/phase';
 import type { Span } from '../recording/span';
+import type { RateColumns } from './heart-rate';
 import { draftedSpan } from './span-paint';
 import { joinedBlocks, type StomachBlock } from './stomach-blocks';
 import type { ThemeTokens } from './theme-tokens';
@@ -19,11 +20,7 @@ export interface StripScene {
   readonly widthPx: number;
   readonly phases: readonly Phase[];
   readonly blocks: readonly StomachBlock[];
-  readonly rate: {
-    readonly low: Float32Array;
-    readonly high: Float32Array;
-    readonly limits: readonly [number, number];
-  } | null;
+  readonly rate: (RateColumns & { readonly limits: readonly [number, number] }) | null;
   readonly spans: readonly Span[];
   readonly draft: Draft | null;
   readonly selection: Selection;
@@ -58,7 +55,7 @@ function paintPhases(brush: Brush, { phases, xOf, tokens, font }: StripScene): v
     brush.lineWidth = 1;
     brush.strokeRect(left, topPx + 0.5, width, height - 1);
     const clock = `${clockText(phase.fromS, 60, 'h:mm')}-${clockText(phase.toS, 60, 'h:mm')}`;
-    const words = [`${phase.name}  ${clock}`, phase.name].find(
+    const words = [`${phase.name} ${clock}`, phase.name].find(
       (text) => brush.measureText(text).width < width - 10,
     );
     if (!words) continue;
@@ -124,23 +121,23 @@ function paintRate(brush: Brush, { rate, widthPx, tokens }: StripScene): void {
     return bottomPx - ((inside - least) / (most - least)) * (bottomPx - topPx);
   };
   const perColumn = widthPx / rate.low.length;
-  brush.strokeStyle = tokens.heart;
-  brush.lineWidth = 1;
-  brush.beginPath();
+  const line = new Path2D();
+  brush.fillStyle = tokens.heartSoft;
   let joins = false;
   for (let i = 0; i < rate.low.length; i += 1) {
-    const [low, high] = [rate.low[i], rate.high[i]];
-    if (Number.isNaN(low)) {
-      joins = false;
-      continue;
-    }
+    const mean = rate.mean[i];
     const x = (i + 0.5) * perColumn;
-    if (joins) brush.lineTo(x, yOf(high));
-    else brush.moveTo(x, yOf(high));
-    brush.lineTo(x, yOf(low) + 0.5);
-    joins = true;
+    if (!Number.isNaN(mean)) {
+      const top = yOf(rate.high[i]);
+      brush.fillRect(x - perColumn / 2, top, perColumn, Math.max(1, yOf(rate.low[i]) - top));
+      if (joins) line.lineTo(x, yOf(mean));
+      else line.moveTo(x, yOf(mean));
+    }
+    joins = !Number.isNaN(mean);
   }
-  brush.stroke();
+  brush.strokeStyle = tokens.heart;
+  brush.lineWidth = 1.25;
+  brush.stroke(line);
 }
 
 function paintSpans(brush: Brush, scene: StripScene): void {

@@ -1,5 +1,5 @@
 import { leadKey } from '../recording/lead';
-import type { Phase } from '../recording/phase';
+import { type Phase, phasesOrWhole } from '../recording/phase';
 import type { SessionState } from '../session/document';
 import { setField } from '../session/edits';
 import { CanvasLayer, watchSize } from './canvas-layer';
@@ -122,7 +122,7 @@ export class StripView {
     const epochs = stomach.find((one) => one.lead === key)?.epochs ?? [];
     const scene: StripScene = {
       widthPx: this.widthPx,
-      phases: this.phases(),
+      phases: phasesOrWhole(this.phases(), durationS),
       blocks: stomachBlocks(epochs, state?.settings.epoch.stepS ?? 60),
       rate: this.rateNow(durationS),
       spans: state?.spans ?? [],

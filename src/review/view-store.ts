@@ -109,5 +109,10 @@ export function lookAtMinutes(store: ViewStore, centreS: number, widthS?: number
   const next = windowInside(centreS, width, durationS);
   const secondsWidth = Math.min(widthOf(seconds), widthOf(next));
   const fromS = Math.min(Math.max(next.fromS, seconds.fromS), next.toS - secondsWidth);
-  store.setState({ minutes: next, seconds: { fromS, toS: fromS + secondsWidth } });
+  const still =
+    Math.abs(fromS - seconds.fromS) < 1e-9 && Math.abs(secondsWidth - widthOf(seconds)) < 1e-9;
+  store.setState({
+    minutes: next,
+    seconds: still ? seconds : { fromS, toS: fromS + secondsWidth },
+  });
 }

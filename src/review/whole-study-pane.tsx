@@ -1,10 +1,8 @@
 import { useEffect, useRef } from 'react';
-import { useStore } from 'zustand';
 import type { PaneProps } from './pane-props';
 import { listenToStage } from './stage';
 import { type StripDom, StripView, stripActs } from './strip-view';
 import { THEMES } from './theme-tokens';
-import { widthText } from './time-ticks';
 
 function stripDom(section: HTMLElement): StripDom {
   const part = (name: string) => {
@@ -30,7 +28,6 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
   const stripRef = useRef<StripView | null>(null);
   const themeRef = useRef(theme);
   themeRef.current = theme;
-  const durationS = useStore(stores.view, (state) => state.durationS);
   useEffect(() => {
     const section = sectionRef.current;
     if (!section) return undefined;
@@ -48,10 +45,7 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
   return (
     <section className="pane whole" aria-label="Whole study" ref={sectionRef}>
       <div className="strip-gutter">
-        <div className="strip-title">
-          <h2>Whole study</h2>
-          <span className="pane-width">{durationS > 0 ? widthText(durationS) : ''}</span>
-        </div>
+        <h2 className="strip-title">Whole study</h2>
         <span className="strip-name hue-stomach">stomach row</span>
         <span className="strip-name hue-heart">heart rate</span>
       </div>
