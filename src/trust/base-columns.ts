@@ -1,5 +1,6 @@
 import type { Hertz } from '../units/rate';
-import { createRunCollector, type Run } from './runs';
+import type { Run } from './runs';
+import { createRuns } from './runs';
 
 /** What is kept of a lead: columns of about 0.1 s, and the runs of samples that say something by themselves. */
 export interface BaseColumns {
@@ -70,9 +71,9 @@ export function createBaseColumns(options: ColumnOptions): {
   const highs = growable();
   const means = growable();
   const roughs = growable();
-  const missing = createRunCollector(1);
-  const railed = createRunCollector(Math.max(3, Math.round(LEAST_RAILED_S * rateHz)));
-  const constant = createRunCollector(Math.max(2, Math.round(LEAST_CONSTANT_S * rateHz)));
+  const missing = createRuns(1);
+  const railed = createRuns(Math.max(3, Math.round(LEAST_RAILED_S * rateHz)));
+  const constant = createRuns(Math.max(2, Math.round(LEAST_CONSTANT_S * rateHz)));
   let [index, column, inColumn] = [0, 0, 0];
   let previous = Number.NaN;
   let [low, high, sum, squares] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY, 0, 0];
@@ -97,9 +98,12 @@ export function createBaseColumns(options: ColumnOptions): {
         if (value > high) high = value;
         sum += value;
         if (!Number.isNaN(step)) squares += step * step;
-        missing.step(index, Number.isNaN(value));
-        railed.step(index, value <= railLow || value >= railHigh);
-        constant.step(index, step === 0);
+        if (Number.isNaN(value)) missing.open(index);
+        else if (missing.isOpen) missing.close(index);
+        if (value <= railLow || value >= railHigh) railed.open(index);
+        else if (railed.isOpen) railed.close(index);
+        if (step === 0) constant.open(index);
+        else if (constant.isOpen) constant.close(index);
         previous = value;
         index += 1;
         inColumn += 1;

@@ -45,8 +45,8 @@ function nearlyFlat(columns: BaseColumns, stepUv: number): readonly Interval[] {
   const moving = range.filter((one) => one > 0);
   if (moving.length === 0) return [];
   const usual = quantile(moving, 0.6);
-  const steps = usual >= USUAL_STEPS * stepUv ? NEARLY_STEPS * stepUv : 0;
-  const limit = Math.max(steps, NEARLY_SHARE * usual);
+  if (usual < USUAL_STEPS * stepUv) return [];
+  const limit = Math.max(NEARLY_STEPS * stepUv, NEARLY_SHARE * usual);
   const stillness = range.map((one) => -one);
   const at = new Float64Array(range.length).fill(-limit * (1 + 1e-9) - 1e-12);
   const half = Math.floor(width / 2);

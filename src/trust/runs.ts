@@ -5,30 +5,35 @@ export interface Run {
 }
 
 /** Collects runs while samples pass one by one; keeps only those long enough. */
-export interface RunCollector {
-  /** Tells whether sample `index` is in; indexes come in order, none left out. */
-  step(index: number, isIn: boolean): void;
+export interface Runs {
+  readonly isOpen: boolean;
+  /** Sample `index` is in; begins a run where none is open. */
+  open(index: number): void;
+  /** Sample `index` is the first that is not in. */
+  close(index: number): void;
   /** The runs, after the last sample; `end` is how many samples there were. */
   finish(end: number): readonly Run[];
 }
 
 /** A collector of runs of at least `leastSamples`. */
-export function createRunCollector(leastSamples: number): RunCollector {
-  const runs: Run[] = [];
+export function createRuns(leastSamples: number): Runs {
+  const kept: Run[] = [];
   let from = -1;
-  const close = (to: number): void => {
-    if (from >= 0 && to - from >= leastSamples) runs.push({ from, to });
-    from = -1;
-  };
-  return {
-    step(index, isIn) {
-      if (isIn) {
-        if (from < 0) from = index;
-      } else if (from >= 0) close(index);
+  const runs = {
+    isOpen: false,
+    open(index: number) {
+      if (runs.isOpen) return;
+      runs.isOpen = true;
+      from = index;
     },
-    finish(end) {
-      close(end);
-      return runs;
+    close(index: number) {
+      if (runs.isOpen && index - from >= leastSamples) kept.push({ from, to: index });
+      runs.isOpen = false;
+    },
+    finish(end: number) {
+      runs.close(end);
+      return kept;
     },
   };
+  return runs;
 }

@@ -14,6 +14,12 @@ const STEP_HALF_S = 0.3;
 const STEP_STAYS_S = 2;
 const STEP_OVER_USUAL = 12;
 const STEP_KEEPS = 0.5;
+/** And this share of all that the lead swings meanwhile. */
+const STEP_SHARE = 0.6;
+/** After a step the lead has settled when two means of 20 s (a slow wave's cycle) differ by less than half a usual swing. */
+const SETTLE_MEAN_S = 20;
+const SETTLED_SHARE = 0.5;
+const LONGEST_SETTLING_S = 300;
 
 /** An excursion of the slow part of the lead, and whether it begins as a step does. */
 export interface SlowMovement extends Excursion {
@@ -43,25 +49,68 @@ function meanOf(track: Float64Array, from: number, to: number): number {
   return sum / count;
 }
 
+/** Slow part of the lead with its measures, each by column. */
+interface SlowPart {
+  readonly columnS: number;
+  readonly track: Float64Array;
+  readonly swing: Float64Array;
+  readonly usualSwing: Float64Array;
+  readonly change: Float64Array;
+  readonly usualChange: Float64Array;
+}
+
+function greatest(x: Float64Array, { from, to }: Excursion): number {
+  let most = 0;
+  for (let i = from; i < to; i += 1) if (x[i] > most) most = x[i];
+  return most;
+}
+
 /** Column of the sharpest lasting jump of an excursion, or null. */
-function stepWithin(
-  track: Float64Array,
-  change: Float64Array,
-  level: Float64Array,
-  { from, to }: Excursion,
-  columnS: number,
-): number | null {
+function stepWithin(slow: SlowPart, found: Excursion): number | null {
+  const { track, change, usualChange, columnS } = slow;
   let at = -1;
-  for (let i = from; i < to; i += 1) {
-    const over = Math.abs(change[i]) > STEP_OVER_USUAL * level[i];
+  for (let i = found.from; i < found.to; i += 1) {
+    const over = Math.abs(change[i]) > STEP_OVER_USUAL * usualChange[i];
     if (over && (at < 0 || Math.abs(change[i]) > Math.abs(change[at]))) at = i;
   }
-  if (at < 0) return null;
+  if (at < 0 || Math.abs(change[at]) < STEP_SHARE * greatest(slow.swing, found)) return null;
   const near = Math.round((2 * STEP_HALF_S) / columnS);
   const long = Math.round(STEP_STAYS_S / columnS);
   const kept = meanOf(track, at + near, at + long) - meanOf(track, at - long, at - near);
   return Math.abs(kept) > STEP_KEEPS * Math.abs(change[at]) ? at : null;
 }
+
+/** First column after a step from which on the lead has settled. */
+function settledFrom({ track, usualSwing, columnS }: SlowPart, stepAt: number): number {
+  const hop = Math.max(1, Math.round(1 / columnS));
+  const span = Math.max(1, Math.round(SETTLE_MEAN_S / columnS));
+  const last = Math.min(track.length, stepAt + Math.round(LONGEST_SETTLING_S / columnS));
+  for (let at = stepAt + hop; at < last; at += hop) {
+    const next = meanOf(track, at + span, at + 2 * span);
+    const still = Math.abs(meanOf(track, at, at + span) - next) < SETTLED_SHARE * usualSwing[at];
+    if (still || Number.isNaN(next)) return at;
+  }
+  return last;
+}
+
+function slowPart(columns: BaseColumns, mean: Float64Array, stepUv: number): SlowPart {
+  const { columnS } = columns;
+  const levelHalf = Math.round(LEVEL_HALF_S / columnS);
+  const track = slowTrack(mean, columnS);
+  const swing = slidingRange(track, track, swingWidth(columnS));
+  const change = changeAcross(track, Math.max(1, Math.round(STEP_HALF_S / columnS)));
+  const changes = change.map((value) => Math.abs(value));
+  return {
+    columnS,
+    track,
+    swing,
+    usualSwing: ownLevel(swing, levelHalf, 4 * stepUv),
+    change,
+    usualChange: ownLevel(changes, levelHalf, 4 * stepUv),
+  };
+}
+
+const swingWidth = (columnS: number): number => Math.max(3, Math.round(SWING_S / columnS));
 
 /**
  * Stretches where the slow part of the lead swings far more within 8 s than is usual about that time: movements, and steps
@@ -73,28 +122,17 @@ export function slowMovements(
   mean: Float64Array,
   stepUv: number,
 ): readonly SlowMovement[] {
-  const { columnS } = columns;
-  const levelHalf = Math.round(LEVEL_HALF_S / columnS);
-  const track = slowTrack(mean, columnS);
-  const width = Math.max(3, Math.round(SWING_S / columnS));
-  const swing = slidingRange(track, track, width);
-  const level = ownLevel(swing, levelHalf, 4 * stepUv);
-  const half = Math.max(1, Math.round(STEP_HALF_S / columnS));
-  const change = changeAcross(track, half);
-  const changeLevel = ownLevel(
-    change.map((value) => Math.abs(value)),
-    levelHalf,
-    4 * stepUv,
-  );
-  const edge = Math.floor(width / 2) - Math.round(1 / columnS);
+  const slow = slowPart(columns, mean, stepUv);
+  const edge = Math.floor(swingWidth(slow.columnS) / 2) - Math.round(1 / slow.columnS);
   return excursionsAbove(
-    swing,
-    level.map((value) => SWING.enter * value),
-    level.map((value) => SWING.leave * value),
+    slow.swing,
+    slow.usualSwing.map((value) => SWING.enter * value),
+    slow.usualSwing.map((value) => SWING.leave * value),
   ).map((found) => {
-    const stepAt = stepWithin(track, change, changeLevel, found, columnS);
+    const stepAt = stepWithin(slow, found);
     const from = found.from === 0 ? 0 : found.from + edge;
-    const to = found.to === columns.count ? found.to : found.to - edge;
+    const swung = found.to === columns.count ? found.to : found.to - edge;
+    const to = stepAt === null ? swung : Math.max(swung, settledFrom(slow, stepAt));
     return { from: Math.min(from, to - 1), to: Math.max(to, from + 1), stepAt };
   });
 }

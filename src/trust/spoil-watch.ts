@@ -91,9 +91,10 @@ function heartBursts(
 ): readonly Interval[] {
   if (options.rateHz < HEART_NEEDS_HZ) return [];
   const { columnS } = columns;
-  const spread = columns.high.map((high, i) => high - columns.low[i]);
   const rough = roughStretches(columns, outside(columns.roughness, columnS, taken), options.stepUv);
-  const jumps = jumpStretches(columns, outside(spread, columnS, taken), options.stepUv);
+  const low = outside(columns.low, columnS, taken);
+  const high = outside(columns.high, columnS, taken);
+  const jumps = jumpStretches(columns, low, high, options.stepUv);
   return paddedAndJoined(columnIntervals([...rough, ...jumps], columnS), 0.5, 3);
 }
 

@@ -1,5 +1,6 @@
-import { exp, sin } from '../../src/numeric/elementary';
 import { createRandom } from '../../src/numeric/random';
+
+const { exp, sin } = Math;
 
 /** An abdominal lead made up for these tests alone, in uV; nothing of it comes from the program's own simulator. */
 export interface Abdomen {
@@ -138,7 +139,8 @@ export const heave =
 export const moving =
   (fromS: number, lengthS: number, uv: number): Spoil =>
   (x, rateHz, random) => {
-    heave(fromS, lengthS, uv)(x, rateHz, random);
+    for (let at = 0; at < lengthS; at += 12)
+      heave(fromS + at, Math.min(12, lengthS - at), uv)(x, rateHz, random);
     muscle(fromS, lengthS, uv / 15)(x, rateHz, random);
     for (let k = 0; k < lengthS / 3; k += 1) {
       const at = fromS + lengthS * random.uniform();
