@@ -9,11 +9,24 @@ import type { SpectrumPeak } from './dominant-peak';
 const HALF_TOLERANCE = 0.07;
 const LEAST_CRESTS = 4;
 
-/** Crests per minute between the first and the last crest of [fromS, toS]; null where there are under four. */
+/** Place of the first of some ascending times that is at or after a time. */
+function firstFrom(timesS: Float64Array, fromS: Seconds): number {
+  let low = 0;
+  let high = timesS.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (timesS[middle] < fromS) low = middle + 1;
+    else high = middle;
+  }
+  return low;
+}
+
+/** Crests per minute between the first and the last crest of [fromS, toS); null where there are under four. */
 export function crestRateCpm(crestsS: Float64Array, fromS: Seconds, toS: Seconds): Cpm | null {
-  const inside = crestsS.filter((time) => time >= fromS && time <= toS);
-  if (inside.length < LEAST_CRESTS) return null;
-  return (60 * (inside.length - 1)) / (inside[inside.length - 1] - inside[0]);
+  const first = firstFrom(crestsS, fromS);
+  const last = firstFrom(crestsS, toS) - 1;
+  if (last - first + 1 < LEAST_CRESTS) return null;
+  return (60 * (last - first)) / (crestsS[last] - crestsS[first]);
 }
 
 /** True where the spectrum's peak lies at half of the rate of the crests: every second one differs. */
@@ -28,14 +41,10 @@ export function breathingOf(
   toS: Seconds,
 ): Cpm | null {
   if (!breathing || breathing.from === 'none') return null;
-  const rates: number[] = [];
-  let all = 0;
-  breathing.centresS.forEach((centre, i) => {
-    if (centre < fromS || centre > toS) return;
-    all += 1;
-    if (Number.isFinite(breathing.perMinute[i])) rates.push(breathing.perMinute[i]);
-  });
-  return rates.length > 0 && 2 * rates.length >= all ? median(rates) : null;
+  const first = firstFrom(breathing.centresS, fromS);
+  const end = firstFrom(breathing.centresS, toS);
+  const rates = breathing.perMinute.subarray(first, end).filter(Number.isFinite);
+  return rates.length > 0 && 2 * rates.length >= end - first ? median(rates) : null;
 }
 
 /** Where a line at a rate shows after sampling at `rateHz`. */

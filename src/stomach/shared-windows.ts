@@ -2,6 +2,9 @@ import { type PreparedWindow, type WindowSpectraOptions, windowSpectra } from '.
 
 /** Windows of one length of one lead, each made once however many ask for it. */
 export interface SharedWindows {
+  readonly options: WindowSpectraOptions;
+  /** What has been made so far, by first sample. */
+  readonly made: ReadonlyMap<number, MadeWindow>;
   readonly binCpm: number;
   readonly binCount: number;
   /** The window that begins at a sample; `first` is moved back where it would run past the end. */
@@ -9,31 +12,61 @@ export interface SharedWindows {
   densityAt(first: number): Float64Array;
 }
 
-/** Epochs and the picture's columns often lie on the same samples; this keeps them from being made twice. */
-export function sharedWindows(options: WindowSpectraOptions): SharedWindows {
+interface MadeWindow {
+  readonly window: PreparedWindow;
+  density: Float64Array | null;
+}
+
+const sameLead = (a: WindowSpectraOptions, b: WindowSpectraOptions) =>
+  a.signal === b.signal &&
+  a.rateHz === b.rateHz &&
+  a.lengthS === b.lengthS &&
+  a.powerResponse === b.powerResponse;
+
+/** Windows made before for the same lead in which nothing was spoiled or restored since. */
+function stillGood(options: WindowSpectraOptions, before: SharedWindows, length: number) {
+  const good = new Map<number, MadeWindow>();
+  if (!sameLead(options, before.options)) return good;
+  const [now, then] = [options.kept, before.options.kept];
+  for (const [first, made] of before.made) {
+    let i = first;
+    while (i < first + length && now[i] === then[i]) i += 1;
+    if (i === first + length) good.set(first, made);
+  }
+  return good;
+}
+
+/**
+ * Epochs and the picture's columns often lie on the same samples; this keeps them from being made
+ * twice. Given the windows made before of the same lead, those no edit has touched are taken over.
+ */
+export function sharedWindows(
+  options: WindowSpectraOptions,
+  before: SharedWindows | null = null,
+): SharedWindows {
   const spectra = windowSpectra(options);
-  const last = options.signal.length - spectra.taper.length;
-  const prepared = new Map<number, PreparedWindow>();
-  const densities = new Map<number, Float64Array>();
-  const at = (first: number) => {
+  const length = spectra.taper.length;
+  const last = options.signal.length - length;
+  const made = before ? stillGood(options, before, length) : new Map<number, MadeWindow>();
+  const madeAt = (first: number): MadeWindow => {
     const from = Math.min(first, last);
-    const known = prepared.get(from);
-    if (known) return known;
-    const window = spectra.prepare(from);
-    prepared.set(from, window);
-    return window;
+    let one = made.get(from);
+    if (!one) {
+      one = { window: spectra.prepare(from), density: null };
+      made.set(from, one);
+    }
+    return one;
   };
   return {
+    options,
+    made,
     binCpm: spectra.binCpm,
     binCount: spectra.binCount,
-    at,
+    at: (first) => madeAt(first).window,
     densityAt(first) {
-      const from = Math.min(first, last);
-      const known = densities.get(from);
-      if (known) return known;
-      const density = spectra.density(at(from));
-      densities.set(from, density);
-      return density;
+      const one = madeAt(first);
+      one.density ??= spectra.density(one.window);
+      return one.density;
     },
   };
 }

@@ -8,10 +8,11 @@ import type { Seconds } from '../units/time';
 import { crestTimes } from './crests';
 import { breathingOf, crestRateCpm } from './epoch-flags';
 import { epochStarts } from './epoch-layout';
-import { type EpochInput, epochRhythm, type Spectrum } from './epoch-rhythm';
+import type { EpochInput, Spectrum } from './epoch-rhythm';
 import { keptSamples, missingStretches } from './kept-samples';
 import { type SharedWindows, sharedWindows } from './shared-windows';
 import { runningSpectrogram } from './spectrogram';
+import { createStomachMemory, judgedEpoch, type StomachMemory } from './stomach-memory';
 
 export interface SlowWaveRhythmOptions {
   readonly slow: SlowOutput;
@@ -22,6 +23,8 @@ export interface SlowWaveRhythmOptions {
   readonly settings: Settings;
   /** Null where nothing is known of the breathing. */
   readonly breathing: BreathingSeries | null;
+  /** Kept from call to call, it spares what an edit has not touched; results are the same without. */
+  readonly memory?: StomachMemory;
 }
 
 /** The rhythm of one lead with the spectra its phases' figures are made of. */
@@ -36,6 +39,7 @@ export interface StomachAnalysis {
 }
 
 interface Lead {
+  readonly memory: StomachMemory;
   readonly options: SlowWaveRhythmOptions;
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
@@ -83,13 +87,18 @@ function analyseEpoch(lead: Lead, phase: string, fromS: Seconds) {
     return { epoch, spectrum: null };
   }
   const input = epochInput(lead, first, fromS);
-  const epoch: Epoch = { ...place, kept: true, ...epochRhythm(input, settings) };
+  const epoch: Epoch = { ...place, kept: true, ...judgedEpoch(lead.memory, input, settings) };
   return { epoch, spectrum: input.density };
 }
 
-function windowsOf(options: SlowWaveRhythmOptions, kept: Uint8Array, lengthS: Seconds) {
-  const { forSpectra, rateHz, powerResponse } = options.slow;
-  return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse });
+function windowsOf(
+  { slow }: SlowWaveRhythmOptions,
+  kept: Uint8Array,
+  lengthS: Seconds,
+  before: SharedWindows | null,
+): SharedWindows {
+  const { forSpectra, rateHz, powerResponse } = slow;
+  return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
 /**
@@ -103,10 +112,14 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
   const endS = slow.forSpectra.length / slow.rateHz;
   const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
   const missing = missingStretches(slow.forSpectra, slow.rateHz);
+  const memory = options.memory ?? createStomachMemory();
+  memory.windows = windowsOf(options, kept, lengthS, memory.windows);
+  memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
   const lead: Lead = {
+    memory,
     options,
-    windows: windowsOf(options, kept, lengthS),
-    halfWindows: windowsOf(options, kept, lengthS / 2),
+    windows: memory.windows,
+    halfWindows: memory.halfWindows,
     crestsS: crestTimes(slow.slowWave, {
       rateHz: slow.rateHz,
       highCpm: settings.rhythmBands.highCpm,

@@ -1,0 +1,40 @@
+import type { Settings } from '../recording/settings';
+import { type EpochInput, type EpochRhythm, epochRhythm } from './epoch-rhythm';
+import type { SharedWindows } from './shared-windows';
+
+interface Judged {
+  readonly circumstances: string;
+  readonly rhythm: EpochRhythm;
+}
+
+/** What one lead's analysis leaves for the next of the same lead: windows, spectra, judged epochs. */
+export interface StomachMemory {
+  windows: SharedWindows | null;
+  halfWindows: SharedWindows | null;
+  /** By the epoch's spectrum, which is made anew when anything in the epoch changes. */
+  readonly judged: WeakMap<Float64Array, Judged>;
+}
+
+/** An empty memory; use one a lead. */
+export function createStomachMemory(): StomachMemory {
+  return { windows: null, halfWindows: null, judged: new WeakMap() };
+}
+
+/** epochRhythm, taken from memory where spectrum, crests, breathing and settings are as before. */
+export function judgedEpoch(
+  memory: StomachMemory,
+  input: EpochInput,
+  settings: Settings,
+): EpochRhythm {
+  const circumstances = JSON.stringify([
+    input.crestCpm,
+    input.breathingCpm,
+    settings.rhythmBands,
+    settings.epoch,
+  ]);
+  const known = memory.judged.get(input.density);
+  if (known && known.circumstances === circumstances) return known.rhythm;
+  const rhythm = epochRhythm(input, settings);
+  memory.judged.set(input.density, { circumstances, rhythm });
+  return rhythm;
+}
