@@ -38,6 +38,8 @@ function wavesOf(beatClass: BeatClass, rrS: number, tWave: number): readonly Wav
 }
 
 const REACH = 4;
+/** Width of the widest wave above. */
+const WIDEST_S = 0.06;
 const STEPS_PER_WIDTH = 256;
 
 /** exp(-x2/2) for x from 0 to REACH and a step beyond. */
@@ -47,23 +49,30 @@ function gaussianTable(): Float64Array {
   return table;
 }
 
-/** Adds one wave to a lead, read from the table by straight lines (within 2e-6 of its height). */
-function addWave(
-  signal: Float64Array,
-  table: Float64Array,
-  centre: number,
-  width: number,
-  gain: number,
-): void {
-  const from = Math.max(0, Math.ceil(centre - REACH * width));
-  const to = Math.min(signal.length, Math.floor(centre + REACH * width) + 1);
+/** A Gaussian on the sample grid: `shape[i]` belongs to sample `from + i`, for i below `length`. */
+interface SampledWave {
+  from: number;
+  length: number;
+  readonly shape: Float64Array;
+}
+
+/** Reads a Gaussian of centre and width in samples from the table by straight lines (within 2e-6 of its height). */
+function sampleWave(wave: SampledWave, table: Float64Array, centre: number, width: number): void {
   const scale = STEPS_PER_WIDTH / width;
-  for (let n = from; n < to; n += 1) {
-    const place = Math.abs(n - centre) * scale;
+  wave.from = Math.ceil(centre - REACH * width);
+  wave.length = Math.floor(centre + REACH * width) + 1 - wave.from;
+  for (let i = 0; i < wave.length; i += 1) {
+    const place = Math.abs(wave.from + i - centre) * scale;
     const index = Math.floor(place);
     const low = table[index];
-    signal[n] += gain * (low + (table[index + 1] - low) * (place - index));
+    wave.shape[i] = low + (table[index + 1] - low) * (place - index);
   }
+}
+
+function addWave(signal: Float64Array, wave: SampledWave, gain: number): void {
+  const { from, shape } = wave;
+  const to = Math.min(wave.length, signal.length - from);
+  for (let i = Math.max(0, -from); i < to; i += 1) signal[from + i] += gain * shape[i];
 }
 
 /** Adds all beats to the samples of all leads. `movement` is breathing on the grid, which changes the height, or null. */
@@ -80,14 +89,17 @@ export function addBeats(
 ): void {
   const { heart, rateHz, grid, movement } = context;
   const table = gaussianTable();
+  const longest = Math.ceil(2 * REACH * WIDEST_S * rateHz) + 2;
+  const sampled: SampledWave = { from: 0, length: 0, shape: new Float64Array(longest) };
   for (const { timeS, beatClass, rrS } of beats) {
     const point = Math.min(grid.points - 1, Math.round(timeS / grid.stepS));
     const height = 1 + (movement === null ? 0 : heart.respiratoryHeight * movement[point]);
-    for (const wave of wavesOf(beatClass, rrS, heart.tWave))
+    for (const wave of wavesOf(beatClass, rrS, heart.tWave)) {
+      sampleWave(sampled, table, (timeS + wave.atS) * rateHz, wave.widthS * rateHz);
       for (let k = 0; k < leads.length; k += 1) {
         const angle = ((leads[k].heartAxisDeg - wave.angleDeg) * Math.PI) / 180;
-        const gain = height * leads[k].heartUv * wave.size * cos(angle);
-        addWave(signals[k], table, (timeS + wave.atS) * rateHz, wave.widthS * rateHz, gain);
+        addWave(signals[k], sampled, height * leads[k].heartUv * wave.size * cos(angle));
       }
+    }
   }
 }

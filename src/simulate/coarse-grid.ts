@@ -34,11 +34,12 @@ export function trackOnGrid(track: Track, grid: CoarseGrid): Float64Array {
   return values;
 }
 
-/** Running integral of a rate in cycles a second, in cycles from 0 (trapezoid rule). */
-export function cyclesOf(ratesHz: Float64Array, grid: CoarseGrid): Float64Array {
+/** Running integral of a rate in cycles a minute, in cycles from 0 (trapezoid rule). */
+export function cyclesOf(ratesPerMin: Float64Array, grid: CoarseGrid): Float64Array {
   const cycles = new Float64Array(grid.points);
+  const half = grid.stepS / 120;
   for (let i = 1; i < grid.points; i += 1)
-    cycles[i] = cycles[i - 1] + ((ratesHz[i - 1] + ratesHz[i]) / 2) * grid.stepS;
+    cycles[i] = cycles[i - 1] + (ratesPerMin[i - 1] + ratesPerMin[i]) * half;
   return cycles;
 }
 

@@ -5,8 +5,8 @@ import { addBeats } from './beat-shape';
 import { beatTimes, type TrueBeat } from './beat-times';
 import { addUpsampled, type CoarseGrid, coarseGrid } from './coarse-grid';
 import { addFastNoise, addMains, addSlowNoise } from './noise';
-import { breathing, slowWave, slowWaveOnLead } from './slow-sources';
-import type { ArtefactSpec, SimulationSpec } from './spec';
+import { breathing, type SlowWave, slowWave, slowWaveOnLead } from './slow-sources';
+import type { ArtefactSpec, LeadSpec, SimulationSpec } from './spec';
 
 /** What is known about an invented study. Courses over time have one value a point: point i is at i / rateHz seconds. */
 export interface StudyTruth {
@@ -74,17 +74,21 @@ export function simulateStudy(spec: SimulationSpec): SimulatedStudy {
       rateHz: 1 / grid.stepS,
       beats: beats.filter((beat) => beat.timeS * rateHz < samples),
       slowCpm: slow?.frequencyCpm ?? null,
-      slowAmplitudeUv: leads.map((lead) =>
-        slow
-          ? slow.amplitudeUv.map((uv) => uv * Math.abs(lead.slowGain))
-          : new Float64Array(grid.points),
-      ),
+      slowAmplitudeUv: leads.map((lead) => amplitudeOnLead(slow, lead, grid)),
       slowUv,
       breathsPerMin: breath?.ratePerMin ?? null,
       breathing: movement,
       spoiled: spec.artefacts,
     },
   };
+}
+
+function amplitudeOnLead(wave: SlowWave | null, lead: LeadSpec, grid: CoarseGrid): Float64Array {
+  const amplitude = new Float64Array(grid.points);
+  if (wave)
+    for (let i = 0; i < grid.points; i += 1)
+      amplitude[i] = wave.amplitudeUv[i] * Math.abs(lead.slowGain);
+  return amplitude;
 }
 
 const actsOn = (artefact: ArtefactSpec, lead: number): boolean =>
@@ -118,9 +122,9 @@ function mixLead(signal: Float64Array, index: number, parts: LeadParts): void {
   const { noise, rateHz, digitiser } = spec;
   const lead = spec.leads[index];
   const random = stream(spec.seed, STREAMS.lead + index);
-  const coarse = disturbance.slowUv.map((uv, i) => uv + slowUv[i]);
-  if (movement)
-    for (let i = 0; i < grid.points; i += 1) coarse[i] += lead.breathingUv * movement[i];
+  const coarse = slowUv.slice();
+  for (let i = 0; i < grid.points; i += 1)
+    coarse[i] += disturbance.slowUv[i] + (movement === null ? 0 : lead.breathingUv * movement[i]);
   addSlowNoise(coarse, noise, lead, grid, random);
   addUpsampled(signal, coarse, grid.every);
   const cycles = random.uniform();

@@ -27,10 +27,7 @@ export function slowWave(spec: SlowWaveSpec, grid: CoarseGrid, random: Random): 
   for (let i = 0; i < grid.points; i += 1) amplitudeUv[i] *= Math.max(0.1, change[i]);
   return {
     frequencyCpm,
-    cycles: cyclesOf(
-      frequencyCpm.map((cpm) => cpm / 60),
-      grid,
-    ),
+    cycles: cyclesOf(frequencyCpm, grid),
     amplitudeUv,
     secondHarmonic: spec.secondHarmonic,
   };
@@ -38,13 +35,15 @@ export function slowWave(spec: SlowWaveSpec, grid: CoarseGrid, random: Random): 
 
 /** The slow wave as a lead sees it: its gain, and later by its delay at the frequency of the moment. */
 export function slowWaveOnLead(wave: SlowWave, lead: LeadSpec): Float64Array {
-  return wave.cycles.map((cycles, i) => {
-    const place = cycles - (wave.frequencyCpm[i] / 60) * lead.slowDelayS;
-    const shape =
-      sineOf(place) +
-      (wave.secondHarmonic === 0 ? 0 : wave.secondHarmonic * sineOf(2 * place + HARMONIC_CYCLES));
-    return lead.slowGain * wave.amplitudeUv[i] * shape;
-  });
+  const { cycles, frequencyCpm, amplitudeUv, secondHarmonic } = wave;
+  const values = new Float64Array(cycles.length);
+  for (let i = 0; i < values.length; i += 1) {
+    const place = cycles[i] - (frequencyCpm[i] / 60) * lead.slowDelayS;
+    let shape = sineOf(place);
+    if (secondHarmonic !== 0) shape += secondHarmonic * sineOf(2 * place + HARMONIC_CYCLES);
+    values[i] = lead.slowGain * amplitudeUv[i] * shape;
+  }
+  return values;
 }
 
 /** Breathing on the coarse grid: its rate, and its movement from -1 to 1 (somewhat more at the crests). */
@@ -57,11 +56,10 @@ export function breathing(spec: BreathingSpec, grid: CoarseGrid, random: Random)
   const ratePerMin = trackOnGrid(spec.ratePerMin, grid);
   addWander(ratePerMin, random, spec.wanderPerMin, 20, grid.stepS);
   for (let i = 0; i < grid.points; i += 1) ratePerMin[i] = Math.max(1, ratePerMin[i]);
-  const cycles = cyclesOf(
-    ratePerMin.map((rate) => rate / 60),
-    grid,
-  );
-  const movement = cycles.map((place) => sineOf(place) + 0.15 * sineOf(2 * place + 0.2));
+  const cycles = cyclesOf(ratePerMin, grid);
+  const movement = new Float64Array(grid.points);
+  for (let i = 0; i < grid.points; i += 1)
+    movement[i] = sineOf(cycles[i]) + 0.15 * sineOf(2 * cycles[i] + 0.2);
   return { ratePerMin, movement };
 }
 
