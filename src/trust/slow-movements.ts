@@ -12,7 +12,7 @@ const SWING = { enter: 3.2, leave: 1.8 };
 /** A step rises within 0.6 s and stays for two; it is this much over the usual change in that time. */
 const STEP_HALF_S = 0.3;
 const STEP_STAYS_S = 2;
-const STEP_OVER_USUAL = 12;
+const STEP_OVER_USUAL = 8;
 const STEP_KEEPS = 0.5;
 /** And this share of all that the lead swings meanwhile. */
 const STEP_SHARE = 0.6;
@@ -112,17 +112,8 @@ function slowPart(columns: BaseColumns, mean: Float64Array, stepUv: number): Slo
 
 const swingWidth = (columnS: number): number => Math.max(3, Math.round(SWING_S / columnS));
 
-/**
- * Stretches where the slow part of the lead swings far more within 8 s than is usual about that time: movements, and steps
- * (an electrode's jump) until they have settled. A window that only reaches the movement with its edge is not counted.
- * `mean` is each column's, NaN where it does not count.
- */
-export function slowMovements(
-  columns: BaseColumns,
-  mean: Float64Array,
-  stepUv: number,
-): readonly SlowMovement[] {
-  const slow = slowPart(columns, mean, stepUv);
+/** Swings far over the usual, a step where one begins so. */
+function swings(slow: SlowPart, count: number): readonly SlowMovement[] {
   const edge = Math.floor(swingWidth(slow.columnS) / 2) - Math.round(1 / slow.columnS);
   return excursionsAbove(
     slow.swing,
@@ -131,8 +122,40 @@ export function slowMovements(
   ).map((found) => {
     const stepAt = stepWithin(slow, found);
     const from = found.from === 0 ? 0 : found.from + edge;
-    const swung = found.to === columns.count ? found.to : found.to - edge;
+    const swung = found.to === count ? found.to : found.to - edge;
     const to = stepAt === null ? swung : Math.max(swung, settledFrom(slow, stepAt));
     return { from: Math.min(from, to - 1), to: Math.max(to, from + 1), stepAt };
   });
+}
+
+/** Steps too small to be a swing of the lead, yet far sharper than anything usual. */
+function smallSteps(slow: SlowPart): readonly SlowMovement[] {
+  const sharpness = slow.change.map((value) => Math.abs(value));
+  const limit = slow.usualChange.map((value) => STEP_OVER_USUAL * value);
+  const reach = Math.round(1 / slow.columnS);
+  return excursionsAbove(sharpness, limit, limit).flatMap((found) => {
+    const near = {
+      from: Math.max(0, found.from - reach),
+      to: Math.min(slow.track.length, found.to + reach),
+    };
+    const stepAt = stepWithin(slow, near);
+    return stepAt === null ? [] : [{ from: near.from, to: settledFrom(slow, stepAt), stepAt }];
+  });
+}
+
+/**
+ * Stretches where the slow part of the lead swings far more within 8 s than is usual about that time: movements, and steps
+ * (an electrode's jump) until they have settled. A window that only reaches the movement with its edge is not counted.
+ * `mean` is each column's, NaN where it does not count. Those found may overlap.
+ */
+export function slowMovements(
+  columns: BaseColumns,
+  mean: Float64Array,
+  stepUv: number,
+): readonly SlowMovement[] {
+  const slow = slowPart(columns, mean, stepUv);
+  const large = swings(slow, columns.count);
+  const isApart = (one: SlowMovement) =>
+    !large.some((other) => other.from < one.to && one.from < other.to);
+  return [...large, ...smallSteps(slow).filter(isApart)];
 }
