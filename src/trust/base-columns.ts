@@ -1,6 +1,5 @@
 import type { Hertz } from '../units/rate';
-import type { Run } from './runs';
-import { createRuns } from './runs';
+import { createRuns, type Run, type Runs } from './runs';
 
 /** What is kept of a lead: columns of about 0.1 s, and the runs of samples that say something by themselves. */
 export interface BaseColumns {
@@ -31,6 +30,8 @@ const COLUMN_S = 0.1;
 const LEAST_CONSTANT_S = 0.5;
 const LEAST_RAILED_S = 0.02;
 
+type Growable = ReturnType<typeof growable>;
+
 /** Float32Array that grows by doubling. */
 function growable() {
   let values = new Float32Array(1024);
@@ -56,6 +57,116 @@ function railLimits({ railsUv, stepUv }: ColumnOptions): readonly [number, numbe
   return [low + slack, high - slack];
 }
 
+/** Sums of a column before its first sample. */
+const EMPTY = {
+  low: Number.POSITIVE_INFINITY,
+  high: Number.NEGATIVE_INFINITY,
+  sum: 0,
+  squares: 0,
+};
+
+function follow(runs: Runs, index: number, isIn: boolean): void {
+  if (isIn) runs.open(index);
+  else if (runs.isOpen) runs.close(index);
+}
+
+/** The columns and runs in the making. */
+interface Making {
+  readonly samplesPerColumn: number;
+  readonly rails: readonly [low: number, high: number];
+  readonly lows: Growable;
+  readonly highs: Growable;
+  readonly means: Growable;
+  readonly roughs: Growable;
+  readonly missing: Runs;
+  readonly railed: Runs;
+  readonly constant: Runs;
+  index: number;
+  column: number;
+  inColumn: number;
+  previous: number;
+  low: number;
+  high: number;
+  sum: number;
+  squares: number;
+}
+
+function begin(options: ColumnOptions): Making {
+  const { rateHz } = options;
+  const atLeast = (samples: number, seconds: number) =>
+    createRuns(Math.max(samples, Math.round(seconds * rateHz)));
+  return {
+    samplesPerColumn: Math.max(1, Math.round(COLUMN_S * rateHz)),
+    rails: railLimits(options),
+    lows: growable(),
+    highs: growable(),
+    means: growable(),
+    roughs: growable(),
+    missing: createRuns(1),
+    railed: atLeast(3, LEAST_RAILED_S),
+    constant: atLeast(2, LEAST_CONSTANT_S),
+    index: 0,
+    column: 0,
+    inColumn: 0,
+    previous: Number.NaN,
+    ...EMPTY,
+  };
+}
+
+/** The runs' share of samples [from, to) of a block; only called where one may be open or begin. */
+function followRuns(making: Making, block: Float64Array, from: number, to: number): void {
+  const [railLow, railHigh] = making.rails;
+  let previous = from > 0 ? block[from - 1] : making.previous;
+  for (let i = from; i < to; i += 1) {
+    const value = block[i];
+    const at = making.index + i - from;
+    follow(making.missing, at, Number.isNaN(value));
+    follow(making.railed, at, value <= railLow || value >= railHigh);
+    follow(making.constant, at, value === previous);
+    previous = value;
+  }
+}
+
+function closeColumn(making: Making): void {
+  const { column, low, high, sum, squares, samplesPerColumn } = making;
+  const whole = !Number.isNaN(sum);
+  making.lows.put(column, whole ? low : Number.NaN);
+  making.highs.put(column, whole ? high : Number.NaN);
+  making.means.put(column, sum / samplesPerColumn);
+  making.roughs.put(column, whole ? Math.sqrt(squares / samplesPerColumn) : Number.NaN);
+  Object.assign(making, EMPTY);
+  making.column += 1;
+  making.inColumn = 0;
+}
+
+/** Samples [from, to) of a block, all of the open column. Plain local sums: this loop meets every sample. */
+function take(making: Making, block: Float64Array, from: number, to: number): void {
+  let { low, high, sum, squares } = making;
+  let previous = from > 0 ? block[from - 1] : making.previous;
+  let still = 0;
+  for (let i = from; i < to; i += 1) {
+    const value = block[i];
+    const step = value - previous;
+    if (value < low) low = value;
+    if (value > high) high = value;
+    if (step === 0) still += 1;
+    sum += value;
+    if (!Number.isNaN(step)) squares += step * step;
+    previous = value;
+  }
+  const { missing, railed, constant, rails } = making;
+  const mayRun = still > 0 || Number.isNaN(sum) || low <= rails[0] || high >= rails[1];
+  if (mayRun || missing.isOpen || railed.isOpen || constant.isOpen)
+    followRuns(making, block, from, to);
+  making.low = low;
+  making.high = high;
+  making.sum = sum;
+  making.squares = squares;
+  making.index += to - from;
+  making.inColumn += to - from;
+  if (making.inColumn === making.samplesPerColumn) closeColumn(making);
+}
+
 /**
  * Turns a lead that streams by into base columns. Memory: 16 bytes a column of 0.1 s (at low rates a column is one
  * sample), whatever the rate. A last column that is not full is left out.
@@ -64,65 +175,31 @@ export function createBaseColumns(options: ColumnOptions): {
   push(block: Float64Array): void;
   finish(): BaseColumns;
 } {
-  const { rateHz } = options;
-  const samplesPerColumn = Math.max(1, Math.round(COLUMN_S * rateHz));
-  const [railLow, railHigh] = railLimits(options);
-  const lows = growable();
-  const highs = growable();
-  const means = growable();
-  const roughs = growable();
-  const missing = createRuns(1);
-  const railed = createRuns(Math.max(3, Math.round(LEAST_RAILED_S * rateHz)));
-  const constant = createRuns(Math.max(2, Math.round(LEAST_CONSTANT_S * rateHz)));
-  let [index, column, inColumn] = [0, 0, 0];
-  let previous = Number.NaN;
-  let [low, high, sum, squares] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY, 0, 0];
-
-  function closeColumn(): void {
-    const whole = !Number.isNaN(sum);
-    lows.put(column, whole ? low : Number.NaN);
-    highs.put(column, whole ? high : Number.NaN);
-    means.put(column, sum / samplesPerColumn);
-    roughs.put(column, whole ? Math.sqrt(squares / samplesPerColumn) : Number.NaN);
-    column += 1;
-    inColumn = 0;
-    [low, high, sum, squares] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY, 0, 0];
-  }
-
+  const making = begin(options);
+  const { samplesPerColumn } = making;
   return {
     push(block) {
-      for (let i = 0; i < block.length; i += 1) {
-        const value = block[i];
-        const step = value - previous;
-        if (value < low) low = value;
-        if (value > high) high = value;
-        sum += value;
-        if (!Number.isNaN(step)) squares += step * step;
-        if (Number.isNaN(value)) missing.open(index);
-        else if (missing.isOpen) missing.close(index);
-        if (value <= railLow || value >= railHigh) railed.open(index);
-        else if (railed.isOpen) railed.close(index);
-        if (step === 0) constant.open(index);
-        else if (constant.isOpen) constant.close(index);
-        previous = value;
-        index += 1;
-        inColumn += 1;
-        if (inColumn === samplesPerColumn) closeColumn();
+      for (let from = 0; from < block.length; ) {
+        const to = Math.min(block.length, from + samplesPerColumn - making.inColumn);
+        take(making, block, from, to);
+        from = to;
       }
+      if (block.length > 0) making.previous = block[block.length - 1];
     },
     finish() {
+      const { column, index } = making;
       return {
         samplesPerColumn,
-        columnS: samplesPerColumn / rateHz,
+        columnS: samplesPerColumn / options.rateHz,
         count: column,
-        low: lows.take(column),
-        high: highs.take(column),
-        mean: means.take(column),
-        roughness: roughs.take(column),
+        low: making.lows.take(column),
+        high: making.highs.take(column),
+        mean: making.means.take(column),
+        roughness: making.roughs.take(column),
         sampleCount: index,
-        missing: missing.finish(index),
-        railed: railed.finish(index),
-        constant: constant.finish(index),
+        missing: making.missing.finish(index),
+        railed: making.railed.finish(index),
+        constant: making.constant.finish(index),
       };
     },
   };
