@@ -1,3 +1,4 @@
+import { lazy, Suspense } from 'react';
 import { createRoot } from 'react-dom/client';
 import analysisWorkerUrl from '../workers/analysis.worker?worker&url';
 import hashWorkerUrl from '../workers/hash.worker?worker&url';
@@ -20,6 +21,19 @@ const shell = createShellStore(browser.localStorage);
 const stores = { session, analysis, view, shell };
 const keeper = createKeeper({ ...browser, program: PROGRAM, nowUtc });
 const controller = createStudyController({ ...stores, keeper, analysisWorkerUrl, hashWorkerUrl });
+const Report = lazy(() =>
+  import('./report/report-view').then(({ ReportView }) => ({ default: ReportView })),
+);
+const renderReport = () => (
+  <Suspense fallback={<output>Loading the report.</output>}>
+    <Report {...stores} signals={controller.signals} />
+  </Suspense>
+);
 const root = document.getElementById('root');
 if (root)
-  createRoot(root).render(<Shell parts={{ ...stores, controller, signals: controller.signals }} />);
+  createRoot(root).render(
+    <Shell
+      parts={{ ...stores, controller, signals: controller.signals }}
+      renderReport={renderReport}
+    />,
+  );

@@ -1,6 +1,6 @@
 import { openRecording } from '../src/decode/formats';
 import { quickKey } from '../src/decode/quick-key';
-import { type Detection, detectBeats } from '../src/heart/detect';
+import { type Detection, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
 import { measureQrs } from '../src/heart/qrs-quality';
 import { minMaxColumns } from '../src/numeric/min-max-columns';
@@ -205,7 +205,7 @@ async function detectionOf(
     };
     study.detection = {
       key,
-      found: await inTurns(detectBeats(signal), job, 'Finding the heartbeats'),
+      found: await inTurns(detectInSteps(signal), job, 'Finding the heartbeats'),
     };
   }
   study.heartLead = lead;

@@ -1,6 +1,6 @@
+import { CAUTIONS, PRIVACY } from '../recording/cautions';
 import { PROGRAM } from '../units/program';
 import { useApp, useShell } from './app-context';
-import { CAUTIONS, PRIVACY } from './cautions';
 import { Dialog } from './dialog';
 import { LIBRARIES } from './libraries';
 import { THEME_CHOICES } from './preferences';

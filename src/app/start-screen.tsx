@@ -1,6 +1,6 @@
 import { useCallback, useEffect, useState } from 'react';
+import { CAUTIONS, PRIVACY } from '../recording/cautions';
 import { useApp, useShell } from './app-context';
-import { CAUTIONS, PRIVACY } from './cautions';
 import type { CommandParts } from './command';
 import type { KeptRow } from './controller';
 import { localWords } from './study-words';

@@ -20,14 +20,12 @@ export interface ReportViewProps {
   readonly analysis: AnalysisStore;
   readonly view: ViewStore;
   readonly signals: SignalAccess;
-  readonly onSign: () => void;
-  readonly onClose: () => void;
 }
 
 const WAVE_COLUMNS = 960;
 
-/** The report view: what is printed, with the few acts around it that are not. */
-export function ReportView({ session, analysis, view, signals, onSign, onClose }: ReportViewProps) {
+/** The report of the session as it stands, drawn again with every edit. */
+export function ReportView({ session, analysis, view, signals }: ReportViewProps) {
   const open = useStore(session, (state) => state.session);
   const { recording, findings, stomach, heart, edit, fileAtHand } = useStore(analysis);
   const identityHidden = useStore(view, (state) => state.identityHidden);
@@ -78,26 +76,11 @@ export function ReportView({ session, analysis, view, signals, onSign, onClose }
   const stale = edit !== editNumber(open);
   return (
     <div className="report-view">
-      <div className="report-acts">
-        <button type="button" onClick={onClose}>
-          Back to the panes
-        </button>
-        <label>
-          <input
-            type="checkbox"
-            checked={identityHidden}
-            onChange={(event) => view.setState({ identityHidden: event.target.checked })}
-          />{' '}
-          Hide identity
-        </label>
-        <button type="button" onClick={onSign} disabled={stale}>
-          {model.status.kind === 'draft' ? 'Sign…' : 'Amend…'}
-        </button>
-        <button type="button" onClick={() => window.print()} disabled={stale}>
-          Print…
-        </button>
-        {stale && <output>The figures are being brought up to the last edit.</output>}
-      </div>
+      {stale && (
+        <output className="report-stale">
+          The figures are being brought up to the last edit; print once this line is gone.
+        </output>
+      )}
       <ReportPage model={model} pictures={pictures} />
     </div>
   );
