@@ -15,8 +15,8 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   page: 'The page',
 };
 
-/** Where a command acts: everywhere, or only while a study is on the page. */
-export type CommandContext = 'always' | 'study';
+/** Where a command acts: everywhere, only while a study is open, or only while its panes are in sight. */
+export type CommandContext = 'always' | 'study' | 'panes';
 
 /** What commands ask of the page around the stores. */
 export interface PageActs {
@@ -24,6 +24,7 @@ export interface PageActs {
   chooseSession(): void;
   toggleReport(): void;
   focusFindings(): void;
+  reportOpen(): boolean;
   /** False while the report view is not part of the page. */
   readonly reportThere: boolean;
 }

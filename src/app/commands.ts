@@ -5,8 +5,8 @@ import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './s
 
 /** Every act of the page. */
 export const COMMANDS: readonly Command[] = [
-  ...OPEN_COMMANDS,
   ...STUDY_COMMANDS,
+  ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
   ...PAGE_COMMANDS,
@@ -19,10 +19,13 @@ export function commandOf(id: string): Command {
   return found;
 }
 
-/** True where a command can act now. */
+/** True where a command can act now; what belongs to the panes cannot while they are not in sight. */
 export function canRun(command: Command, parts: CommandParts): boolean {
   const studyThere = parts.session.getState().session !== null;
-  return (command.when === 'always' || studyThere) && (command.ready?.(parts) ?? true);
+  const inPlace =
+    command.when === 'always' ||
+    (studyThere && !(command.when === 'panes' && parts.page.reportOpen()));
+  return inPlace && (command.ready?.(parts) ?? true);
 }
 
 /** The command a key stands for now; null where it stands for none, or is a plain key while those are off. */

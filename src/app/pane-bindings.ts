@@ -14,7 +14,7 @@ const paneCommand = (
   words,
   keys,
   group,
-  when: 'study',
+  when: 'panes',
   run: (parts) => act(parts.panes, parts),
   ...(ready ? { ready } : {}),
 });

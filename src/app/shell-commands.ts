@@ -200,7 +200,7 @@ export const PAGE_COMMANDS: readonly Command[] = [
     words: 'Go to the findings',
     keys: ['F6'],
     group: 'page',
-    when: 'study',
+    when: 'panes',
     run: ({ page }) => page.focusFindings(),
   },
   {

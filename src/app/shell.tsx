@@ -88,18 +88,19 @@ function panePartsOf(parts: AppParts): Omit<PaneProps, 'theme'> {
 type InputRef = { readonly current: HTMLInputElement | null };
 
 function usePageActs(fileInput: InputRef, reportThere: boolean): PageActs {
-  return useMemo(
-    () => ({
+  return useMemo(() => {
+    const reportOpen = () => reportThere && window.location.hash === REPORT_HASH;
+    return {
       chooseFile: () => choose(fileInput, ''),
       chooseSession: () => choose(fileInput, '.json'),
       toggleReport: () => {
-        window.location.hash = window.location.hash === REPORT_HASH ? '' : REPORT_HASH;
+        window.location.hash = reportOpen() ? '' : REPORT_HASH;
       },
+      reportOpen,
       focusFindings: () => document.getElementById('findings')?.focus(),
       reportThere,
-    }),
-    [fileInput, reportThere],
-  );
+    };
+  }, [fileInput, reportThere]);
 }
 
 function choose(fileInput: InputRef, accept: string): void {
