@@ -62,6 +62,19 @@ const EMPTY: AnalysisState = {
 
 export const createAnalysisStore = (): AnalysisStore => createStore<AnalysisState>()(() => EMPTY);
 
+const DRAWN = [
+  'recording',
+  'fileAtHand',
+  'separation',
+  'stomach',
+  'heart',
+  'signalVersion',
+] as const satisfies readonly (keyof AnalysisState)[];
+
+/** Whether two states differ in what the panes draw: news of progress alone are no reason to draw. */
+export const drawsDiffer = (now: AnalysisState, before: AnalysisState): boolean =>
+  DRAWN.some((part) => now[part] !== before[part]);
+
 /** Blanks every pane, before another study is opened. */
 export function blankAnalysis(store: AnalysisStore): void {
   store.setState({ ...EMPTY, signalVersion: store.getState().signalVersion + 1 });

@@ -6,7 +6,7 @@ import type { PaneProps } from './pane-props';
 import { minutesRows } from './rows';
 import { SpanBar } from './span-bar';
 import { EpochTable, SpanTable } from './twin-tables';
-import { type PaneSetup, useNotice, usePane, usePaneCommands } from './use-pane';
+import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 
 /** The pane with the stomach's time scale. */
 export function MinutesPane(props: PaneProps) {
@@ -36,7 +36,7 @@ export function MinutesPane(props: PaneProps) {
       stores={stores}
       commands={commands}
       hasSlot
-      notice={useNotice(props)}
+      notice={null}
     >
       <SpanBar stores={stores} commands={commands} />
       <EpochTable stores={stores} commands={commands} />

@@ -1,5 +1,5 @@
 import { leadKey } from '../recording/lead';
-import type { SignalAccess } from './analysis-store';
+import { drawsDiffer, type SignalAccess } from './analysis-store';
 import { CanvasLayer, watchSize } from './canvas-layer';
 import { FrameLoop } from './frame-loop';
 import { paintGrid } from './grid-paint';
@@ -101,7 +101,7 @@ export class PaneView {
       analysis.subscribe((now, before) => {
         if (now.signalVersion !== before.signalVersion)
           for (const row of this.rows) if (row instanceof SignalRowView) row.refetch();
-        this.loop.ask();
+        if (drawsDiffer(now, before)) this.loop.ask();
       }),
       session.subscribe((now, before) => {
         if (now.session?.state !== before.session?.state) this.loop.ask();
@@ -223,6 +223,7 @@ export class PaneView {
     endWork();
   }
 
+  /** Ends the drawing and leaves nothing of the study behind. */
   destroy(): void {
     for (const stop of this.stops) stop();
     this.loop.stop();
@@ -231,5 +232,11 @@ export class PaneView {
       endWork();
     }
     for (const row of this.rows) row.destroy();
+    this.under.begin();
+    this.over.begin();
+    this.dom.summary.textContent = '';
+    this.dom.cursorLine.hidden = true;
+    this.dom.cursorText.hidden = true;
+    if (this.dom.slot) this.dom.slot.style.width = '0';
   }
 }

@@ -1,7 +1,8 @@
 import { beatWords, openBeats } from './beat-commands';
 import type { PaneCommands } from './pane-commands';
 import type { PaneView } from './pane-view';
-import { PIN_Y_PX, pinKey, pinsInView } from './seconds-view';
+import { PIN_Y_PX, pinsInView } from './seconds-paint';
+import { pinKey } from './seconds-view';
 
 const MOST_BUTTONS = 60;
 const HALF_PX = 12;
@@ -37,6 +38,7 @@ export class PinButtons {
       button.remove();
       this.held.delete(tick);
     }
+    this.layer.tabIndex = pins.length > 0 ? -1 : 0;
     const tabStop = pins.find((pin) => pin.selected)?.tick ?? pins[0]?.tick;
     for (const pin of pins) {
       const held = this.held.get(pin.tick) ?? this.make(pin.tick);
@@ -59,8 +61,8 @@ export class PinButtons {
 
   /** A pin that was moved or deleted hands the focus to the one selected now; while pins have it, it follows the selection. */
   private carryFocus(selected: number | undefined): void {
-    const inLayer = this.layer.contains(document.activeElement);
-    if (selected === undefined || !(this.followsFocus || inLayer)) return;
+    const onPin = [...this.held.values()].some(({ button }) => button === document.activeElement);
+    if (selected === undefined || !(this.followsFocus || onPin)) return;
     this.followsFocus = false;
     const target = this.held.get(selected)?.button;
     if (target && target !== document.activeElement) target.focus({ preventScroll: true });

@@ -1,11 +1,13 @@
 import type { BeatClass } from '../recording/beat';
 
-const RADIUS_PX = 5;
+/** Radius of a pin's head where there is room. */
+export const PIN_RADIUS_PX = 5;
 
 /** Colours of a pin. */
 export interface PinInk {
   readonly colour: string;
   readonly paper: string;
+  readonly radiusPx: number;
 }
 
 /**
@@ -17,14 +19,14 @@ export function drawPinHead(
   beatClass: BeatClass,
   x: number,
   y: number,
-  { colour, paper }: PinInk,
+  { colour, paper, radiusPx }: PinInk,
 ): void {
   brush.fillStyle = colour;
   brush.strokeStyle = colour;
   brush.lineWidth = 1.5;
   brush.beginPath();
   if (beatClass === 'V') {
-    const reach = RADIUS_PX + 1.5;
+    const reach = radiusPx + 1.5;
     brush.moveTo(x, y - reach);
     brush.lineTo(x + reach, y);
     brush.lineTo(x, y + reach);
@@ -34,8 +36,8 @@ export function drawPinHead(
     return;
   }
   if (beatClass === 'F')
-    brush.rect(x - RADIUS_PX + 0.5, y - RADIUS_PX + 0.5, 2 * RADIUS_PX - 1, 2 * RADIUS_PX - 1);
-  else brush.arc(x, y, RADIUS_PX - (beatClass === 'N' ? 0 : 0.5), 0, 2 * Math.PI);
+    brush.rect(x - radiusPx + 0.5, y - radiusPx + 0.5, 2 * radiusPx - 1, 2 * radiusPx - 1);
+  else brush.arc(x, y, radiusPx - (beatClass === 'N' ? 0 : 0.5), 0, 2 * Math.PI);
   if (beatClass === 'N') {
     brush.fill();
     return;
@@ -46,13 +48,13 @@ export function drawPinHead(
   if (beatClass === 'S') {
     brush.fillStyle = colour;
     brush.beginPath();
-    brush.arc(x, y, RADIUS_PX - 0.5, Math.PI / 2, 1.5 * Math.PI);
+    brush.arc(x, y, radiusPx - 0.5, Math.PI / 2, 1.5 * Math.PI);
     brush.fill();
   }
   if (beatClass === 'Q') {
     brush.beginPath();
-    brush.moveTo(x - RADIUS_PX + 1, y);
-    brush.lineTo(x + RADIUS_PX - 1, y);
+    brush.moveTo(x - radiusPx + 1, y);
+    brush.lineTo(x + radiusPx - 1, y);
     brush.stroke();
   }
 }

@@ -68,7 +68,7 @@ function RowName({ row, stores, commands }: GutterProps<Row>) {
       type="button"
       className="row-name"
       aria-pressed={chosen}
-      title="Gain keys act on this row"
+      title={`${[row.name, row.note].filter(Boolean).join(', ')}: gain keys act on this row`}
       onClick={() => commands.selectRow(row.key)}
     >
       <span className="name">{row.name}</span>

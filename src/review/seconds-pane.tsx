@@ -6,7 +6,7 @@ import { PinButtons } from './pin-buttons';
 import { secondsRows } from './rows';
 import { pinKey, type SecondsParts, secondsActs, secondsKind } from './seconds-view';
 import { BeatTable } from './twin-tables';
-import { type PaneSetup, useNotice, usePane, usePaneCommands } from './use-pane';
+import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 
 const NO_HEART = 'No heart lead is chosen, so there are no beats to see.';
 
@@ -30,7 +30,6 @@ export function SecondsPane(props: PaneProps) {
         event.preventDefault();
         event.stopPropagation();
       };
-      stage.tabIndex = 0;
       stage.setAttribute('role', 'application');
       stage.setAttribute('aria-label', 'Beats: keys act on the selected ones');
       stage.addEventListener('keydown', keys);
@@ -46,7 +45,6 @@ export function SecondsPane(props: PaneProps) {
     [commands],
   );
   const sectionRef = usePane(props, rows, setUp);
-  const notice = useNotice(props);
   const noHeart = roles !== undefined && recording !== null && rows.length === 0;
   return (
     <PaneFrame
@@ -57,7 +55,7 @@ export function SecondsPane(props: PaneProps) {
       stores={stores}
       commands={commands}
       hasSlot={false}
-      notice={noHeart ? NO_HEART : notice}
+      notice={noHeart ? NO_HEART : null}
     >
       <BeatTable stores={stores} commands={commands} />
     </PaneFrame>

@@ -2,6 +2,7 @@ import { leadKey } from '../recording/lead';
 import { type Phase, phasesOrWhole } from '../recording/phase';
 import type { SessionState } from '../session/document';
 import { setField } from '../session/edits';
+import { drawsDiffer } from './analysis-store';
 import { CanvasLayer, watchSize } from './canvas-layer';
 import { FrameLoop } from './frame-loop';
 import { panGesture, slotEdgeGesture, slotGesture, wheelOver } from './gestures';
@@ -50,7 +51,9 @@ export class StripView {
     const { view, analysis, session } = stores;
     this.stops.push(
       watchSize(dom.stage, () => this.layout()),
-      analysis.subscribe(this.loop.ask),
+      analysis.subscribe((now, before) => {
+        if (drawsDiffer(now, before)) this.loop.ask();
+      }),
       session.subscribe((now, before) => {
         if (now.session?.state !== before.session?.state) this.loop.ask();
       }),
@@ -115,7 +118,12 @@ export class StripView {
     const brush = this.layer.begin();
     const { durationS, draft, selection } = this.stores.view.getState();
     const state = this.state();
-    if (!brush || !(durationS > 0)) return;
+    this.dom.slot.hidden = !state || !(durationS > 0);
+    this.dom.innerSlot.hidden = this.dom.slot.hidden;
+    if (!brush || this.dom.slot.hidden) {
+      this.dom.summary.textContent = '';
+      return;
+    }
     const reported = state?.roles.slow[state.roles.reported];
     const { stomach } = this.stores.analysis.getState();
     const key = reported && leadKey(reported);

@@ -1,5 +1,4 @@
 import { type RefObject, useEffect, useMemo, useRef } from 'react';
-import { useStore } from 'zustand';
 import { type PaneCommands, paneCommands } from './pane-commands';
 import { paneDom } from './pane-dom';
 import type { PaneProps } from './pane-props';
@@ -51,12 +50,4 @@ export function usePane(
 /** The acts of the panes, made once. */
 export function usePaneCommands({ stores, signals, act }: PaneProps): PaneCommands {
   return useMemo(() => paneCommands(stores, signals, act), [stores, signals, act]);
-}
-
-/** Words for a pane that cannot draw: no study, or the study's file is not at hand. Null where it can. */
-export function useNotice({ stores }: PaneProps): string | null {
-  const fileAtHand = useStore(stores.analysis, (state) => state.fileAtHand);
-  const there = useStore(stores.analysis, (state) => state.recording !== null);
-  if (!there || fileAtHand) return null;
-  return 'The traces are in the file: choose the same file to go on.';
 }

@@ -1,0 +1,44 @@
+import { describe, expect, it } from 'vitest';
+import { fittedGain, GAINS_UV, gainFor, middleUv, nextGain } from '../../src/review/gain';
+
+describe('the gain of a trace row', () => {
+  it('takes the least step that shows the whole wave', () => {
+    expect(gainFor(160)).toBe(200);
+    expect(gainFor(200)).toBe(200);
+    expect(gainFor(0)).toBe(1);
+    expect(gainFor(Number.NaN)).toBe(1);
+    expect(gainFor(9e9)).toBe(700_000);
+  });
+
+  it('goes up and down by neighbouring steps and stops at the ends', () => {
+    expect(nextGain(200, 'finer')).toBe(150);
+    expect(nextGain(200, 'coarser')).toBe(300);
+    expect(nextGain(1, 'finer')).toBe(1);
+    expect(nextGain(700_000, 'coarser')).toBe(700_000);
+    expect(GAINS_UV).toEqual([...GAINS_UV].sort((a, b) => a - b));
+  });
+
+  it('fits a steady wave exactly', () => {
+    const low = Array.from({ length: 100 }, () => -140);
+    const high = Array.from({ length: 100 }, () => 90);
+    expect(fittedGain({ low, high }, 10, false)).toBe(150);
+  });
+
+  it('is not made small by one spoiled stretch', () => {
+    const high = Array.from({ length: 100 }, (_, i) => (i >= 40 && i < 50 ? 5000 : 100));
+    expect(fittedGain({ low: high.map((v) => -v), high }, 10, false)).toBe(100);
+  });
+
+  it('does not count a standing offset of a recorded lead', () => {
+    const wave = (i: number) => 20_000 + 80 * Math.sin(i);
+    const low = Array.from({ length: 200 }, (_, i) => wave(i) - 5);
+    const high = low.map((v) => v + 10);
+    expect(fittedGain({ low, high }, 40, true)).toBe(100);
+  });
+
+  it('leaves gaps out of account', () => {
+    const low = [Number.NaN, -10, Number.NaN];
+    expect(middleUv({ low, high: [Number.NaN, 30, Number.NaN] }, 0, 3)).toBe(10);
+    expect(fittedGain({ low: [Number.NaN], high: [Number.NaN] }, 1, true)).toBe(100);
+  });
+});
