@@ -243,6 +243,17 @@ describe.each(['band', 'fractional'] as const)('route %s', (route) => {
     ).toBeLessThan(0.5);
   });
 
+  test('makes no jump of an offset of 50 mV, at the ends or beside a gap', () => {
+    const torn = lead.map((uv, i) =>
+      i >= 100 * RATE_HZ && i < 130.2 * RATE_HZ ? Number.NaN : uv + 50_000,
+    );
+    const { slow, heart } = separate(torn, { rateHz: RATE_HZ, settings });
+    const largest = (x: Float64Array | Float32Array) =>
+      x.reduce((most, uv) => (Number.isNaN(uv) ? most : Math.max(most, Math.abs(uv))), 0);
+    expect(largest(slow?.slowWave ?? new Float64Array(0))).toBeLessThan(250);
+    expect(largest(heart?.heartbeat ?? new Float32Array(0))).toBeLessThan(600);
+  });
+
   test('of a lead without a single sample gives nothing but gaps', () => {
     const { slow, heart } = separate(new Float64Array(60 * RATE_HZ).fill(Number.NaN), {
       rateHz: RATE_HZ,
