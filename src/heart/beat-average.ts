@@ -1,0 +1,131 @@
+import { align, TIMING_HALF_S, type Timer, timerOf } from './align';
+import type { HeartSignal } from './energy-pass';
+import { addShifted, crestPlace } from './sub-sample';
+import { readFilled } from './usable-signal';
+
+/** What an average beat shows before and after its fiducial point. */
+const BEFORE_S = 0.3;
+const AFTER_S = 0.5;
+/** How far a beat may lie from where it was found. */
+const SEARCH_S = 0.03;
+/** Beats an average is made of, at most; spread over the study. */
+const MOST_BEATS = 600;
+const ROUNDS = 3;
+/** Where the dominant extreme is looked for, about the middle of the complex. */
+const EXTREME_HALF_S = 0.07;
+/** Below this part of the opposite extreme the extreme of the study's sign is no landmark. */
+const LEAST_EXTREME = 0.25;
+
+/** An average of beats of one shape on the heartbeat signal. */
+export interface ShapeAverage {
+  readonly shape: number;
+  /** Beats of this shape. */
+  readonly count: number;
+  /** uV, from BEFORE_S before the middle to AFTER_S after it. */
+  readonly samples: Float64Array;
+  /** Index of the middle, where the timer sits. */
+  readonly middle: number;
+  /** Index, between samples, of the dominant extreme: where the time of a beat is read. */
+  readonly fiducial: number;
+  readonly timer: Timer;
+}
+
+/** Samples about a place, with where the place lies in them. */
+function rowAbout(signal: HeartSignal, sample: number, before: number, after: number) {
+  return readFilled(signal.samples, signal.usable, sample - before, sample + after + 1);
+}
+
+export const searchOf = (rateHz: number) => Math.max(2, Math.round(SEARCH_S * rateHz));
+
+/** Averages the beats found at whole samples, aligned to one another between samples. */
+export function averageBeats(
+  signal: HeartSignal,
+  shape: number,
+  beats: readonly number[],
+): Omit<ShapeAverage, 'fiducial'> {
+  const { rateHz } = signal;
+  const middle = Math.round(BEFORE_S * rateHz);
+  const length = middle + Math.round(AFTER_S * rateHz) + 1;
+  const half = Math.round(TIMING_HALF_S * rateHz);
+  const search = searchOf(rateHz);
+  const margin = search + 16;
+  const every = Math.max(1, beats.length / MOST_BEATS);
+  const rows: Float64Array[] = [];
+  for (let k = 0; Math.floor(k) < beats.length; k += every)
+    rows.push(rowAbout(signal, beats[Math.floor(k)], middle + margin, length - middle + margin));
+  let places = rows.map(() => middle + margin);
+  let samples = new Float64Array(length);
+  let timer = timerOf(samples.slice(middle - half, middle + half + 1));
+  for (let round = 0; round < ROUNDS; round += 1) {
+    samples = new Float64Array(length);
+    for (let r = 0; r < rows.length; r += 1) addShifted(samples, rows[r], places[r] - middle);
+    for (let i = 0; i < length; i += 1) samples[i] /= rows.length;
+    timer = timerOf(samples.slice(middle - half, middle + half + 1));
+    const now = timer;
+    places = rows.map((row) => align(row, now, middle + margin, search).place);
+  }
+  return { shape, count: beats.length, samples, middle, timer };
+}
+
+/** Sign of the dominant extreme of an average: that of its value farthest from the line through its surroundings. */
+export function dominantSign(
+  { samples, middle }: Pick<ShapeAverage, 'samples' | 'middle'>,
+  rateHz: number,
+): 1 | -1 {
+  const { high, low } = extremes(samples, middle, rateHz);
+  return samples[high] - baseline(samples, middle, rateHz) >=
+    baseline(samples, middle, rateHz) - samples[low]
+    ? 1
+    : -1;
+}
+
+/** Level just before the complex. */
+export function baseline(samples: ArrayLike<number>, middle: number, rateHz: number): number {
+  const from = Math.max(0, Math.round(middle - 0.12 * rateHz));
+  const to = Math.round(middle - 0.07 * rateHz);
+  let sum = 0;
+  for (let i = from; i <= to; i += 1) sum += samples[i];
+  return sum / (to - from + 1);
+}
+
+function extremes(samples: Float64Array, middle: number, rateHz: number) {
+  const reach = Math.round(EXTREME_HALF_S * rateHz);
+  let high = middle;
+  let low = middle;
+  for (let i = middle - reach; i <= middle + reach; i += 1) {
+    if (samples[i] > samples[high]) high = i;
+    if (samples[i] < samples[low]) low = i;
+  }
+  return { high, low };
+}
+
+/** Where the time of a beat is read: the extreme of the study's sign, or the other where that is no landmark. */
+export function fiducialOf(
+  average: Omit<ShapeAverage, 'fiducial'>,
+  sign: 1 | -1,
+  rateHz: number,
+): number {
+  const { samples, middle } = average;
+  const { high, low } = extremes(samples, middle, rateHz);
+  const level = baseline(samples, middle, rateHz);
+  const up = samples[high] - level;
+  const down = level - samples[low];
+  const own = sign > 0 ? up : down;
+  const other = sign > 0 ? down : up;
+  const use = own >= LEAST_EXTREME * other ? sign : sign > 0 ? -1 : 1;
+  return crestPlace(samples, use > 0 ? high : low, use);
+}
+
+/** Time of a beat found at a whole sample, in samples: where its average's fiducial point falls. */
+export function timeBeat(
+  signal: HeartSignal,
+  average: ShapeAverage,
+  sample: number,
+  search = searchOf(signal.rateHz),
+) {
+  const { timer, fiducial, middle } = average;
+  const before = timer.half + search + 8;
+  const row = rowAbout(signal, sample, before, before);
+  const { place, likeness, size } = align(row, timer, before, search);
+  return { time: sample + place - before + (fiducial - middle), likeness, size };
+}

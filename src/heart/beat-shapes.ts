@@ -1,0 +1,250 @@
+import { median } from '../numeric/statistics';
+import { latestWaveS } from './after-wave';
+import { noiseByHalfSecond } from './between-beats';
+import { chunksOf, type HeartSignal } from './energy-pass';
+import { filterBand, rmsAbout } from './qrs-bands';
+
+/** Half of the window a complex is known by, and how far a complex may lie from where it was found. */
+export const SHAPE_HALF_S = 0.12;
+export const SHAPE_LAG_S = 0.04;
+/** What is read about a beat, to each side: its T wave is to be known. */
+const ROW_HALF_S = 0.58;
+/** Beats that shapes are learned from, at most; spread over the study. */
+const MOST_BEATS = 4000;
+const MOST_SHAPES = 12;
+/** Least likeness of a noiseless complex to the average of its shape. */
+const LEAST_LIKENESS = 0.86;
+/** Averages more alike than this are one shape. */
+const SAME_SHAPE = 0.92;
+/** A wave carried along by a more frequent shape is at most so large beside it, and this much like what is found there. */
+const CARRIED_SIZE = 1.5;
+const CARRIED_LIKENESS = 0.78;
+/** The same where it overlaps the beat itself. */
+const SHIFTED_LIKENESS = 0.85;
+
+/** A shape of complex: the average of its beats in the shape band, uV, 2 half + 1 samples about its middle. */
+export interface Shape {
+  readonly average: Float64Array;
+  readonly half: number;
+  /** Root of the sum of squares of the average. */
+  readonly norm: number;
+  readonly count: number;
+  /** The average from `before` samples ahead of the middle to the end of the T wave, falling to 0 at both ends. */
+  readonly course: Float64Array;
+  readonly before: number;
+}
+
+/** The shape band about each beat, with room to both sides. */
+interface Windows {
+  readonly rows: readonly Float64Array[];
+  /** RMS of the window between beats, per row. */
+  readonly noise: readonly number[];
+  /** Half of the window compared, half of a row, and how far a window may be moved. */
+  readonly half: number;
+  readonly rowHalf: number;
+  readonly lag: number;
+  /** Latest place of a T wave after its beat, in samples. */
+  readonly latest: number;
+  /** Median RR in samples. */
+  readonly usualRr: number;
+  /** Samples stepped over when two windows are compared. */
+  readonly step: number;
+}
+
+/** Learns the shapes of the beats found so far, the most frequent first; yields the part done. */
+export function* learnShapes(
+  signal: HeartSignal,
+  beats: readonly number[],
+): Generator<number, Shape[]> {
+  const windows = yield* readWindows(signal, beats);
+  const settled = settle(windows, distinct(grow(windows), windows));
+  return settled.filter((shape) => shape.count >= Math.max(2, 0.002 * windows.rows.length));
+}
+
+function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<number, Windows> {
+  const { rateHz, bands, samples } = signal;
+  const half = Math.round(SHAPE_HALF_S * rateHz);
+  const lag = Math.round(SHAPE_LAG_S * rateHz);
+  const rowHalf = Math.round(ROW_HALF_S * rateHz);
+  const every = Math.max(1, beats.length / MOST_BEATS);
+  const rows: Float64Array[] = [];
+  const noise: number[] = [];
+  let taken = 0;
+  for (const { from, to, stretch, start } of chunksOf(signal, bands.reach + rowHalf)) {
+    if (Math.floor(taken) >= beats.length) break;
+    if (beats[Math.floor(taken)] >= to) continue;
+    const shape = filterBand(stretch, bands.shape);
+    const level = rmsAbout(shape, 2 * half + 1);
+    const quiet = noiseByHalfSecond(level, shape.length, rateHz, from - start, to - start, 0.2);
+    for (; Math.floor(taken) < beats.length; taken += every) {
+      const at = beats[Math.floor(taken)];
+      if (at >= to) break;
+      rows.push(shape.slice(at - start - rowHalf, at - start + rowHalf + 1));
+      noise.push(quiet[Math.floor((2 * (at - from)) / rateHz)]);
+    }
+    yield to / samples.length;
+  }
+  const rr = beats.map((at, i) => (i > 0 ? at - beats[i - 1] : rowHalf));
+  const usualRr = Math.round(median(rr));
+  const latest = Math.min(rowHalf - half, Math.round(latestWaveS(usualRr / rateHz) * rateHz));
+  const step = Math.max(1, Math.floor(rateHz / 120));
+  return { rows, noise, half, rowHalf, lag, latest, usualRr, step };
+}
+
+interface Match {
+  readonly value: number;
+  readonly at: number;
+}
+
+/**
+ * Likeness (normalised correlation, -1 to 1) of a row to an average, greatest over the places from `first` to `last` of the
+ * average's start in the row.
+ */
+function likeness(
+  row: Float64Array,
+  average: Float64Array,
+  first: number,
+  last: number,
+  step: number,
+): Match {
+  let value = -1;
+  let at = first;
+  for (let place = first; place <= last; place += step) {
+    let product = 0;
+    let rowPower = 1e-30;
+    let power = 1e-30;
+    for (let i = 0, j = place; i < average.length; i += step, j += step) {
+      product += average[i] * row[j];
+      rowPower += row[j] * row[j];
+      power += average[i] * average[i];
+    }
+    const here = product / Math.sqrt(rowPower * power);
+    if (here > value) {
+      value = here;
+      at = place;
+    }
+  }
+  return { value, at };
+}
+
+/** A shape while it is learned: the sum of its beats' rows, aligned. */
+interface Growing {
+  readonly sum: Float64Array;
+  count: number;
+}
+
+/** Noise lowers the likeness of a complex to its average by this factor. */
+function noiseFactor(rmsUv: number, noiseUv: number): number {
+  return Math.sqrt(Math.max(0.1, 1 - (noiseUv / Math.max(rmsUv, 1e-12)) ** 2));
+}
+
+const middle = (row: Float64Array, half: number) =>
+  row.subarray((row.length - 1) / 2 - half, (row.length + 1) / 2 + half);
+
+/** Sorts the rows into shapes in order of time: each joins the shape it is most like, or starts one. */
+function grow(windows: Windows): Growing[] {
+  const { rows, noise, half } = windows;
+  let shapes: Growing[] = [];
+  rows.forEach((row, i) => {
+    const factor = noiseFactor(rms(middle(row, half)), noise[i]);
+    let best: Growing | null = null;
+    let bestMatch: Match = { value: 0, at: 0 };
+    for (const shape of shapes) {
+      const match = matchMiddle(row, shape.sum, windows, windows.step);
+      const wanted = LEAST_LIKENESS * factor * (shape.count < 4 ? Math.sqrt(factor) : 1);
+      if (match.value < wanted || match.value <= bestMatch.value) continue;
+      best = shape;
+      bestMatch = match;
+    }
+    if (best) {
+      addRow(best, row, bestMatch.at, windows);
+      return;
+    }
+    if (shapes.length >= 2 * MOST_SHAPES)
+      shapes = [...shapes].sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
+    shapes.push({ sum: row.slice(), count: 1 });
+  });
+  return shapes.sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
+}
+
+/** The middle of a sum, found in a row near the row's middle. */
+function matchMiddle(row: Float64Array, sum: Float64Array, windows: Windows, step: number): Match {
+  const { half, rowHalf, lag } = windows;
+  return likeness(row, middle(sum, half), rowHalf - half - lag, rowHalf - half + lag, step);
+}
+
+function addRow(shape: Growing, row: Float64Array, at: number, { half, rowHalf }: Windows): void {
+  const shift = at - (rowHalf - half);
+  const from = Math.max(0, -shift);
+  const to = Math.min(row.length, row.length - shift);
+  for (let i = from; i < to; i += 1) shape.sum[i] += row[i + shift];
+  shape.count += 1;
+}
+
+function rms(x: Float64Array): number {
+  let sum = 0;
+  for (const value of x) sum += value * value;
+  return Math.sqrt(sum / x.length);
+}
+
+/**
+ * Leaves out shapes nearly alike to a more frequent one, and those that most beats of a more frequent shape carry with
+ * them: T and P waves.
+ */
+function distinct(shapes: readonly Growing[], windows: Windows): Growing[] {
+  const { half, rowHalf, lag, latest } = windows;
+  const start = rowHalf - half;
+  const kept: Growing[] = [];
+  const strength = ({ sum }: Growing) => rms(middle(sum, half));
+  for (const shape of [...shapes].sort((a, b) => strength(b) - strength(a))) {
+    const own = middle(shape.sum, half);
+    const size = rms(own) / shape.count;
+    const alike = kept.some(
+      (other) => matchMiddle(other.sum, shape.sum, windows, 1).value > SAME_SHAPE,
+    );
+    const carried = kept.some((other) => {
+      const host = strength(other) / other.count;
+      if (size > CARRIED_SIZE * host) return false;
+      const after = likeness(other.sum, own, start + lag, start + latest, 1);
+      const before = likeness(other.sum, own, 0, start - lag, 1);
+      const match = after.value > before.value ? after : before;
+      const there = rms(other.sum.subarray(match.at, match.at + own.length)) / other.count;
+      const apart = Math.abs(match.at - start) >= half;
+      return match.value > (apart ? CARRIED_LIKENESS : SHIFTED_LIKENESS) && there > size / 2;
+    });
+    if (!alike && !carried) kept.push(shape);
+  }
+  return kept;
+}
+
+/** Shares the rows out once more among the shapes, and averages those that fit. */
+function settle(windows: Windows, shapes: readonly Growing[]): Shape[] {
+  const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
+  const sums = shapes.map(() => ({
+    sum: new Float64Array(2 * rowHalf + 1),
+    count: 0,
+  }));
+  rows.forEach((row, i) => {
+    const matches = shapes.map(({ sum }) => matchMiddle(row, sum, windows, windows.step));
+    let best = 0;
+    matches.forEach((match, k) => {
+      if (match.value > matches[best].value) best = k;
+    });
+    const factor = noiseFactor(rms(middle(row, half)), noise[i]);
+    if (matches.length === 0 || matches[best].value < LEAST_LIKENESS * factor) return;
+    addRow(sums[best], row, matchMiddle(row, shapes[best].sum, windows, 1).at, windows);
+  });
+  return sums
+    .filter(({ count }) => count > 0)
+    .map(({ sum, count }) => {
+      const average = middle(sum, half).map((value) => value / count);
+      const norm = rms(average) * Math.sqrt(average.length);
+      const after = Math.max(half, Math.min(rowHalf, latest + half, usualRr - half));
+      const before = Math.max(half, Math.min(rowHalf, half + 3 * lag, usualRr - after));
+      const course = sum.slice(rowHalf - before, rowHalf + after + 1);
+      for (let i = 0; i < course.length; i += 1)
+        course[i] *= Math.min(1, i / lag, (course.length - 1 - i) / lag) / count;
+      return { average, half, norm, count, course, before };
+    })
+    .sort((a, b) => b.count - a.count);
+}

@@ -1,0 +1,85 @@
+import { quantileInPlace } from '../numeric/statistics';
+import type { Shape } from './beat-shapes';
+
+/** A stretch of signal is judged by so much on either side. */
+const SIDE_S = 1.5;
+
+/**
+ * Quantile of x (`length` values) over the 1.5 s before or after each half second from `from` on, whichever is more, so that a burst of noise
+ * is known from its first sample to its last.
+ */
+export function noiseByHalfSecond(
+  x: (at: number) => number,
+  length: number,
+  rateHz: number,
+  from: number,
+  to: number,
+  quantile: number,
+): Float64Array {
+  const count = Math.ceil((2 * (to - from)) / rateHz);
+  const lag = Math.round(2 * SIDE_S);
+  const step = Math.max(1, Math.floor(rateHz / 60));
+  const few = new Float64Array(Math.ceil((SIDE_S * rateHz) / step) + 2);
+  const sides = new Float64Array(count + lag);
+  for (let h = 0; h < sides.length; h += 1) {
+    const first = Math.max(0, Math.round(from + (h + 0.5 - lag) * 0.5 * rateHz));
+    const last = Math.min(length, Math.round(from + (h + 0.5) * 0.5 * rateHz));
+    let n = 0;
+    for (let i = first; i < last; i += step) few[n++] = x(i);
+    sides[h] = quantileInPlace(few, quantile, n);
+  }
+  const noise = new Float64Array(count);
+  for (let h = 0; h < count; h += 1) noise[h] = Math.max(sides[h], sides[h + lag]);
+  return noise;
+}
+
+/** The shape band with its projections on the shapes searched for. */
+export interface Projected {
+  readonly band: Float64Array;
+  readonly shapes: readonly Shape[];
+  /** Projection of the window about each sample on each shape's average of norm 1. */
+  readonly fits: readonly Float64Array[];
+  /** Root of the sum of squares of the window about a sample. */
+  readonly normAt: (sample: number) => number;
+}
+
+/** Best fitting shape within `reach` samples of a place, and where. */
+export function bestFit(
+  { fits, normAt }: Projected,
+  at: number,
+  reach: number,
+): { sample: number; shape: number; likeness: number } {
+  let sample = at;
+  let shape = 0;
+  let likeness = -1;
+  const last = Math.min(fits[0].length - 1, at + reach);
+  for (let i = Math.max(0, at - reach); i <= last; i += 1) {
+    const scale = 1 / (normAt(i) + 1e-12);
+    for (let k = 0; k < fits.length; k += 1) {
+      const like = fits[k][i] * scale;
+      if (like <= likeness) continue;
+      likeness = like;
+      sample = i;
+      shape = k;
+    }
+  }
+  return { sample, shape, likeness };
+}
+
+/** The band with the usual course of each beat taken out, in the beat's own size: what is between the beats. */
+export function withoutBeats(
+  projected: Projected,
+  beats: readonly number[],
+  reach: number,
+): Float64Array {
+  const rest = projected.band.slice();
+  for (const beat of beats) {
+    const { sample, shape } = bestFit(projected, beat, reach);
+    const { course, before, norm } = projected.shapes[shape];
+    const size = projected.fits[shape][sample] / norm;
+    const from = Math.max(0, before - sample);
+    const to = Math.min(course.length, rest.length - sample + before);
+    for (let i = from; i < to; i += 1) rest[sample - before + i] -= size * course[i];
+  }
+  return rest;
+}

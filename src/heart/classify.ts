@@ -1,0 +1,94 @@
+import type { BeatClass } from '../recording/beat';
+import type { Shape } from './beat-shapes';
+import type { RhythmAt } from './rhythm-path';
+import type { Candidate } from './shape-pass';
+
+/** Early: an interval below this part of the usual one. */
+const EARLY = 0.87;
+/** Early enough to be called supraventricular on timing alone, in a regular rhythm. */
+const CLEARLY_EARLY = 0.8;
+/** A rhythm whose intervals spread by less (logarithm of RR) is regular. */
+const REGULAR_SPREAD = 0.11;
+/** Slower shapes than this part of the main shape's mean frequency are wide. */
+const WIDE = 0.85;
+/** Less like its best shape than a usual beat by this much, a beat is of no known shape. */
+const UNLIKE = 0.25;
+/** Below this many noise standard deviations a complex is not clear. */
+const UNCLEAR = 2.5;
+
+/** What the shape of a group of beats says. */
+type ShapeKind = 'main' | 'usual' | 'wide';
+
+/**
+ * Classes of the beats (ANSI/AAMI EC57 letters) from shape, against the study's own averages, and timing: N like the most
+ * frequent shape; V wide and early, or of a shape most of whose beats are; S like N but early in a regular rhythm; Q not
+ * clear. F is left to people. A proposal to be reviewed, not a diagnosis. `meanHz` gives a candidate's own mean frequency.
+ */
+export function classifyBeats(
+  beats: readonly Candidate[],
+  shapes: readonly Shape[],
+  rhythmAt: (sample: number) => RhythmAt,
+  meanHz: (beat: Candidate) => number,
+): BeatClass[] {
+  const ratios = beats.map((beat, i) =>
+    i > 0 ? (beat.sample - beats[i - 1].sample) / rhythmAt(beat.sample).rrS : 1,
+  );
+  const main = mainShape(beats, shapes.length);
+  const kinds = shapes.map((_, k) => shapeKind(k, main, shapes, beats, ratios));
+  return beats.map((beat, i) => {
+    const rhythm = rhythmAt(beat.sample);
+    const known = beat.shape >= 0 && beat.likeness > beat.bestLikeness - UNLIKE;
+    if (!known) return oddClass(beat, ratios[i], shapes[main], meanHz);
+    if (beat.overNoise < UNCLEAR) return 'Q';
+    if (kinds[beat.shape] === 'wide') return 'V';
+    const early = ratios[i] < CLEARLY_EARLY && rhythm.spread < REGULAR_SPREAD;
+    return early && ratios[i - 1] > CLEARLY_EARLY ? 'S' : 'N';
+  });
+}
+
+function mainShape(beats: readonly Candidate[], count: number): number {
+  const counts = new Array<number>(Math.max(1, count)).fill(0);
+  for (const beat of beats) if (beat.shape >= 0) counts[beat.shape] += 1;
+  return counts.indexOf(Math.max(...counts));
+}
+
+function shapeKind(
+  k: number,
+  main: number,
+  shapes: readonly Shape[],
+  beats: readonly Candidate[],
+  ratios: readonly number[],
+): ShapeKind {
+  if (k === main) return 'main';
+  let own = 0;
+  let early = 0;
+  beats.forEach((beat, i) => {
+    if (beat.shape !== k) return;
+    own += 1;
+    if (ratios[i] < EARLY || (i > 0 && beats[i - 1].shape === k && ratios[i] < 1)) early += 1;
+  });
+  const wide = meanFrequency(shapes[k].average) < WIDE * meanFrequency(shapes[main].average);
+  return wide && early >= 0.4 * own ? 'wide' : 'usual';
+}
+
+/** Root of the mean square of slope over that of value: grows with the mean frequency (Hjorth 1970). */
+export function meanFrequency(x: Float64Array): number {
+  let slope = 0;
+  let value = 1e-30;
+  for (let i = 1; i < x.length; i += 1) {
+    slope += (x[i] - x[i - 1]) ** 2;
+    value += x[i] ** 2;
+  }
+  return Math.sqrt(slope / value);
+}
+
+function oddClass(
+  beat: Candidate,
+  ratio: number,
+  main: Shape | undefined,
+  meanHz: (beat: Candidate) => number,
+): BeatClass {
+  if (!main || beat.bestLikeness < 0.9) return 'Q';
+  const wide = meanHz(beat) < WIDE * meanFrequency(main.average);
+  return wide && ratio < EARLY ? 'V' : 'Q';
+}

@@ -1,0 +1,226 @@
+import { BEAT_CLASSES, BEAT_ORIGINS, type BeatClass, type BeatList } from '../recording/beat';
+import type { Interval } from '../recording/span';
+import {
+  averageBeats,
+  dominantSign,
+  fiducialOf,
+  type ShapeAverage,
+  timeBeat,
+} from './beat-average';
+import { measureBeats } from './beat-quality';
+import { classifyBeats, meanFrequency } from './classify';
+import type { HeartSignal } from './energy-pass';
+import { type FoundBeats, findBeats } from './find-beats';
+import { filterBand, LOWEST_RATE_HZ, qrsBands } from './qrs-bands';
+import { rhythmOf } from './rhythm-path';
+import { rhythmFromBeats } from './rhythm-track';
+import type { Candidate } from './shape-pass';
+import { crestPlace } from './sub-sample';
+import { readFilled, type Samples, usableRanges } from './usable-signal';
+
+export interface DetectionInput {
+  /** Heartbeat signal in uV (zero phase, about 0.5-40 Hz) at `rateHz`, from the recording's first sample on; NaN in gaps. */
+  readonly heartbeat: Samples;
+  /** 50 Hz or more; about 250-500 Hz is best. */
+  readonly rateHz: number;
+  /** Ticks (1/64 samples of the heart lead's own rate) in one sample of the heartbeat signal. */
+  readonly ticksPerSample: number;
+  /** Stretches in which no beat is looked for. */
+  readonly excluded?: readonly Interval[];
+}
+
+/** The average of the beats of one shape, as a person may look at it. */
+export interface AverageBeat {
+  readonly beatClass: BeatClass;
+  readonly count: number;
+  /** uV at rateHz. */
+  readonly samples: Float32Array;
+  readonly rateHz: number;
+  /** Index, between samples, of the point whose time is the beat's. */
+  readonly centre: number;
+}
+
+export interface Detection {
+  readonly beats: BeatList;
+  /** Sign of the dominant extreme of the usual beat. */
+  readonly sign: 1 | -1;
+  /** One a shape, the most frequent first. */
+  readonly averages: readonly AverageBeat[];
+  /** Standard deviation of the heartbeat signal between beats, uV. */
+  readonly noiseUv: number;
+  /** Median R height over the level before it, uV. */
+  readonly heightUv: number;
+  /** Standard deviation of the beats' times that the noise gives, ms. */
+  readonly timingSdMs: number;
+  /** What a person should know, in sentences. */
+  readonly notes: readonly string[];
+}
+
+/**
+ * Finds the heartbeats of a lead of any polarity: the same beats, to the tick, for a lead times -1. Beats, QRS energy, shape
+ * against the study's own averages and rhythm decide together; times are those of the matched filter below the sample.
+ * Classes N, S, V and Q are proposals. Ticks may be a fraction of a sample before the first or after the last sample.
+ */
+export function detectBeats(
+  input: DetectionInput,
+  onProgress: (done: number) => void = () => {},
+): Detection {
+  const steps = detectInSteps(input);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+    onProgress(step.value);
+  }
+}
+
+/** detectBeats in small steps, each some 10 ms; yields the part done, so that a worker can answer in between or stop. */
+export function* detectInSteps(input: DetectionInput): Generator<number, Detection> {
+  const { heartbeat, rateHz, ticksPerSample, excluded = [] } = input;
+  if (!(rateHz >= LOWEST_RATE_HZ))
+    return nothing(`No heartbeat can be read at ${rateHz} samples a second.`);
+  const signal: HeartSignal = {
+    samples: heartbeat,
+    rateHz,
+    usable: usableRanges(heartbeat, rateHz, excluded),
+    bands: qrsBands(rateHz),
+  };
+  const found = yield* findBeats(signal);
+  if (found.beats.length < 2) return nothing('No heartbeat was found in this lead.');
+  const averages = averagesOf(signal, found);
+  yield 0.95;
+  const sign = averages.length > 0 ? dominantSign(averages[0], rateHz) : 1;
+  const timed = averages.map((average) => ({
+    ...average,
+    fiducial: fiducialOf(average, sign, rateHz),
+  }));
+  const times = timesOf(signal, found.beats, timed, sign);
+  const classes = classesOf(signal, found);
+  const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;
+  return {
+    beats: listOf(times, classes, ticksPerSample),
+    sign,
+    averages: timed.map((average) => shown(average, found.beats, classes, rateHz)),
+    noiseUv: measured?.noiseUv ?? Number.NaN,
+    heightUv: measured?.heightUv ?? Number.NaN,
+    timingSdMs: measured?.timingSdMs ?? Number.NaN,
+    notes: [],
+  };
+}
+
+function nothing(note: string): Detection {
+  return {
+    beats: { ticks: new Float64Array(0), classes: new Uint8Array(0), origins: new Uint8Array(0) },
+    sign: 1,
+    averages: [],
+    noiseUv: Number.NaN,
+    heightUv: Number.NaN,
+    timingSdMs: Number.NaN,
+    notes: [note],
+  };
+}
+
+/** Likeness within this of a usual beat's counts a beat to its shape. */
+const OF_SHAPE = 0.25;
+const isOfShape = (beat: Candidate) =>
+  beat.shape >= 0 && beat.likeness > beat.bestLikeness - OF_SHAPE;
+
+/** Averages of the shapes that beats were found of, the most frequent first. */
+function averagesOf(signal: HeartSignal, { beats }: FoundBeats): Omit<ShapeAverage, 'fiducial'>[] {
+  const groups = new Map<number, number[]>();
+  for (const beat of beats) {
+    if (!isOfShape(beat)) continue;
+    const group = groups.get(beat.shape);
+    if (group) group.push(beat.sample);
+    else groups.set(beat.shape, [beat.sample]);
+  }
+  return [...groups]
+    .filter(([, group]) => group.length >= 3)
+    .map(([shape, group]) => averageBeats(signal, shape, group))
+    .sort((a, b) => b.count - a.count);
+}
+
+/** Half of the stretch in which the extreme of a beat of no known shape is looked for. */
+const ODD_HALF_S = 0.06;
+
+function timesOf(
+  signal: HeartSignal,
+  beats: readonly Candidate[],
+  averages: readonly ShapeAverage[],
+  sign: 1 | -1,
+): number[] {
+  const byShape = new Map(averages.map((average) => [average.shape, average]));
+  const reach = Math.round(ODD_HALF_S * signal.rateHz);
+  return beats.map((beat) => {
+    const average = byShape.get(beat.shape);
+    if (average && isOfShape(beat)) return timeBeat(signal, average, beat.sample).time;
+    const row = readFilled(
+      signal.samples,
+      signal.usable,
+      beat.sample - reach - 9,
+      beat.sample + reach + 10,
+    );
+    let at = reach + 9;
+    for (let i = 9; i < row.length - 9; i += 1) if (sign * row[i] > sign * row[at]) at = i;
+    return beat.sample - reach - 9 + crestPlace(row, at, sign);
+  });
+}
+
+function classesOf(signal: HeartSignal, { beats, shapes }: FoundBeats): BeatClass[] {
+  const { rateHz, bands, samples, usable } = signal;
+  const rhythm = rhythmFromBeats(
+    beats.map((beat) => beat.sample / rateHz),
+    () => rhythmOf(1, 0.3, 0.1),
+  );
+  const half = Math.round(0.12 * rateHz);
+  const meanHz = ({ sample }: Candidate) => {
+    const margin = half + bands.reach;
+    const row = filterBand(
+      readFilled(samples, usable, sample - margin, sample + margin + 1),
+      bands.shape,
+    );
+    return meanFrequency(row.subarray(bands.reach, row.length - bands.reach));
+  };
+  const rhythmAt = (sample: number) => {
+    const { rrS, ...rest } = rhythm(sample / rateHz);
+    return { rrS: rrS * rateHz, ...rest };
+  };
+  return classifyBeats(beats, shapes, rhythmAt, meanHz);
+}
+
+/** Beats at whole ticks, strictly ascending: of two at one tick the first stays. */
+function listOf(
+  times: readonly number[],
+  classes: readonly BeatClass[],
+  ticksPerSample: number,
+): BeatList {
+  const rows = times
+    .map((time, i) => ({ tick: Math.round(time * ticksPerSample), beatClass: classes[i] }))
+    .sort((a, b) => a.tick - b.tick)
+    .filter((row, i, all) => i === 0 || row.tick > all[i - 1].tick);
+  return {
+    ticks: Float64Array.from(rows, (row) => row.tick),
+    classes: Uint8Array.from(rows, (row) => BEAT_CLASSES.indexOf(row.beatClass)),
+    origins: new Uint8Array(rows.length).fill(BEAT_ORIGINS.indexOf('detected')),
+  };
+}
+
+/** An average as it is shown, under the class most of its beats have. */
+function shown(
+  average: ShapeAverage,
+  beats: readonly Candidate[],
+  classes: readonly BeatClass[],
+  rateHz: number,
+): AverageBeat {
+  const counts = new Map<BeatClass, number>();
+  beats.forEach((beat, i) => {
+    if (beat.shape === average.shape) counts.set(classes[i], (counts.get(classes[i]) ?? 0) + 1);
+  });
+  const [beatClass] = [...counts].sort((a, b) => b[1] - a[1])[0] ?? ['Q'];
+  return {
+    beatClass,
+    count: average.count,
+    samples: Float32Array.from(average.samples),
+    rateHz,
+    centre: average.fiducial,
+  };
+}

@@ -1,0 +1,60 @@
+import { log } from '../numeric/elementary';
+import type { Candidate } from './shape-pass';
+
+/** Spread of the logarithm of a beat's size about the usual: breathing alone moves it by half. */
+const SIZE_SPREAD = 0.35;
+/** Crests of noise against its own level, and the spread of the logarithm of that. */
+const NOISE_CREST = 2.2;
+const NOISE_SPREAD = 0.35;
+const LIKENESS_SPREAD = 0.12;
+
+/** Log density of a beat's size (times the usual), from its least value on. */
+function sizeFit(size: number): number {
+  if (!(size > 0)) return -9;
+  return Math.max(-9, -0.5 * (log(size) / SIZE_SPREAD) ** 2);
+}
+
+/** Log density of a crest of noise that is `overNoise` times the noise's level. */
+function noiseFit(overNoise: number): number {
+  if (!(overNoise > NOISE_CREST)) return 0;
+  return Math.max(-7, -0.5 * (log(overNoise / NOISE_CREST) / NOISE_SPREAD) ** 2);
+}
+
+/**
+ * Evidence of the QRS energy alone that a crest is a beat: the log-likelihood ratio, up to a constant, of a beat of usual
+ * energy against a crest of noise. About -9 to 7.
+ */
+export function energyEvidence(energyUv: number, beatUv: number, noiseUv: number): number {
+  if (!(energyUv > 0 && beatUv > 0)) return -9;
+  return sizeFit(energyUv / beatUv) - noiseFit(energyUv / (noiseUv + 1e-12));
+}
+
+/** The same for a first look, that must find beats to learn from: usual beats count as standing out of the noise. */
+export function firstEvidence(energyUv: number, beatUv: number, noiseUv: number): number {
+  return 2 + energyEvidence(energyUv, beatUv, Math.min(noiseUv, beatUv / 4));
+}
+
+/**
+ * Evidence of the shape: size and likeness against noise. `usualSize` is the size of beats near it. About -15 to 11.
+ */
+export function shapeEvidence(candidate: Candidate, usualSize: number): number {
+  const { size, likeness, overNoise, bestLikeness } = candidate;
+  const short = Math.max(0, 0.93 * bestLikeness - likeness) / LIKENESS_SPREAD;
+  const fit = Math.max(-6, -0.5 * short ** 2);
+  const more = likeness > 0.8 ? 20 * (likeness - 0.8) : 0;
+  return sizeFit(size / usualSize) + fit + more - noiseFit(overNoise);
+}
+
+/** What a beat unlike every learned shape costs. */
+const UNLIKE_COST = 3;
+
+/** Evidence of shape and energy together: of the better of a beat of a learned shape and one of a new shape. */
+export function evidenceOf(
+  candidate: Candidate,
+  usualSize: number,
+  beatUv: number,
+  noiseUv: number,
+): number {
+  const alone = energyEvidence(candidate.energyUv, beatUv, noiseUv) - UNLIKE_COST;
+  return candidate.shape < 0 ? alone : Math.max(alone, shapeEvidence(candidate, usualSize));
+}
