@@ -117,7 +117,7 @@ function useTakeFiles({ controller, shell }: AppParts): (files: readonly File[])
       const [file] = files;
       if (!file) return;
       if (files.length > 1)
-        shell.getState().say(`One file at a time: of ${files.length}, ${file.name} is opened.`);
+        shell.getState().say(`One file at a time: the first of ${files.length} is opened.`);
       void (/\.json$/i.test(file.name)
         ? controller.openSessionFile(file)
         : controller.openFile(file, null));

@@ -93,6 +93,7 @@ function SpanRow({ span, selected, session, view, onEdit }: SpanRowProps) {
   const remove = () => {
     const now = state();
     if (now) onEdit(removeSpans(now, [span.id]));
+    view.setState({ selection: { kind: 'none' } });
   };
   const pick = () => {
     view.setState({

@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { COMMAND_GROUPS, type Command, GROUP_WORDS } from '../../src/app/command';
-import { COMMANDS, commandOf } from '../../src/app/commands';
+import { COMMAND_GROUPS, type CommandParts, GROUP_WORDS } from '../../src/app/command';
+import { COMMANDS, commandForKey, commandOf } from '../../src/app/commands';
 import { isPlainKey, keyName, keyWords } from '../../src/app/key-names';
 import { BEAT_CLASSES } from '../../src/recording/beat';
 
@@ -16,18 +16,12 @@ const press = (key: string, parts: Partial<Parameters<typeof keyName>[0]> = {}) 
     ...parts,
   });
 
-/** Two commands meet where both can act at once: everywhere, or with a study open. */
-const meet = (a: Command, b: Command): boolean =>
-  a.when === b.when || a.when === 'always' || b.when === 'always';
-
 describe('the table of commands', () => {
-  it('gives no key to two commands that can act at once', () => {
+  it('gives no key to two commands: panes lie within a study, a study within the page', () => {
     const clashes = COMMANDS.flatMap((a, i) =>
-      COMMANDS.slice(i + 1)
-        .filter((b) => meet(a, b))
-        .flatMap((b) =>
-          a.keys.filter((key) => b.keys.includes(key)).map((key) => `${key}: ${a.id}, ${b.id}`),
-        ),
+      COMMANDS.slice(i + 1).flatMap((b) =>
+        a.keys.filter((key) => b.keys.includes(key)).map((key) => `${key}: ${a.id}, ${b.id}`),
+      ),
     );
     expect(clashes).toEqual([]);
   });
@@ -79,6 +73,32 @@ describe('the table of commands', () => {
     const page = readFileSync('src/app/keys-dialog.tsx', 'utf8');
     expect(page).toContain('COMMANDS');
     expect(page).not.toMatch(/Ctrl\+/);
+  });
+});
+
+/** Parts with a study open and a beat selected; `report` puts the report in the place of the panes. */
+const partsWith = (report: boolean, plainKeys = true): CommandParts => {
+  const parts = {
+    session: { getState: () => ({ session: {} }) },
+    view: { getState: () => ({ selection: { kind: 'beats', ticks: [1] } }) },
+    shell: { getState: () => ({ plainKeys }) },
+    page: { reportOpen: () => report, reportThere: true },
+  };
+  return parts as unknown as CommandParts;
+};
+
+describe('keys with a study open', () => {
+  it('edit beats only while the panes are in sight', () => {
+    expect(commandForKey('V', partsWith(false))?.id).toBe('class-V');
+    expect(commandForKey('Delete', partsWith(false))?.id).toBe('delete-selected');
+    expect(commandForKey('V', partsWith(true))).toBeNull();
+    expect(commandForKey('Delete', partsWith(true))).toBeNull();
+    expect(commandForKey('Shift+R', partsWith(true))?.id).toBe('report');
+  });
+
+  it('of a single character rest while they are switched off', () => {
+    expect(commandForKey('V', partsWith(false, false))).toBeNull();
+    expect(commandForKey('Ctrl+S', partsWith(false, false))?.id).toBe('download-session');
   });
 });
 
