@@ -47,6 +47,13 @@ describe('annotation lists (Kemp & Olivan 2003)', () => {
     ]);
   });
 
+  it('takes the record’s time from its first list only', () => {
+    const later = annotationBytes(30, '+1', 0x14, 'x', 0x14, 0, '+9', 0x14, 0x14, 0);
+    expect(parseRecordAnnotations(later).timeKeepingS).toBeNull();
+    const two = annotationBytes(30, '+1', 0x14, 0x14, 0, '+9', 0x14, 0x14, 0);
+    expect(parseRecordAnnotations(two).timeKeepingS).toBe(1);
+  });
+
   it('reads texts that share the time-keeping list', () => {
     const bytes = annotationBytes(30, '+3', 0x14, 0x14, 'drank', 0x14, 0);
     expect(parseRecordAnnotations(bytes)).toMatchObject({
