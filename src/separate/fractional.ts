@@ -162,7 +162,9 @@ function start(job: RouteJob): RouteRun {
     push(block) {
       if (block.length === 0) return;
       if (Number.isNaN(levelUv)) levelUv = block[0];
-      take(filter.push(block.map((value) => value - levelUv)));
+      const level = new Float64Array(block.length);
+      for (let i = 0; i < block.length; i++) level[i] = block[i] - levelUv;
+      take(filter.push(level));
     },
     finish(recorded, facts) {
       take(filter.finish());
