@@ -37,3 +37,4 @@ if (root)
       renderReport={renderReport}
     />,
   );
+void controller.resume();

@@ -38,6 +38,8 @@ export interface StudyController {
   openSessionFile(file: File): Promise<void>;
   /** Shows the figures of a kept session and asks for the same file. */
   continueKept(quickKey: string): Promise<void>;
+  /** After a reload: asks for the file of the study that was open in this tab. */
+  resume(): Promise<void>;
   /** The person agrees that this is the study, known by this code: only now is anything of it drawn. */
   confirmIdentity(code: string): Promise<void>;
   cancelOpening(): void;

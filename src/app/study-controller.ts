@@ -124,7 +124,20 @@ export function createStudyController(parts: ControllerParts): StudyController &
     if (!begun || analysis.getState().recording !== recording) return;
     awaited = null;
     session.getState().begin(begun);
-    void keeping.begin(begun).then(() => keeping.confirm(file));
+    await keeping.begin(begun);
+    onceFigures(() => keeping.confirm(file));
+  }
+
+  /** Reading the whole file for its hash waits for the first figures, since both want the processor. */
+  function onceFigures(act: () => void): void {
+    const { recording } = analysis.getState();
+    const stop = analysis.subscribe((state) => {
+      if (state.recording !== recording) stop();
+      else if (state.findings) {
+        stop();
+        act();
+      }
+    });
   }
 
   async function newSession(
@@ -160,14 +173,25 @@ export function createStudyController(parts: ControllerParts): StudyController &
     });
   }
 
+  async function openDemo() {
+    const reply = await runner.watched((watch) => client.demo(watch));
+    if (reply.ok) await open(new File([reply.value], 'invented-demo.edf'), null);
+    else fail(reply.failure);
+  }
+
+  async function continueKept(quickKey: string) {
+    const kept = await keptSession(quickKey);
+    if (!kept) return;
+    awaited = kept;
+    const { code, invented } = kept.state.study;
+    if (invented) await openDemo();
+    else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
+  }
+
   return {
     signals: runner.signals,
     openFile: open,
-    async openDemo() {
-      const reply = await runner.watched((watch) => client.demo(watch));
-      if (reply.ok) await open(new File([reply.value], 'invented-demo.edf'), null);
-      else fail(reply.failure);
-    },
+    openDemo,
     async openSessionFile(file) {
       const read = await files.readSession(file);
       if (!read) return;
@@ -184,13 +208,10 @@ export function createStudyController(parts: ControllerParts): StudyController &
         await keeping.begin(read);
       } else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
     },
-    async continueKept(quickKey) {
-      const kept = await keptSession(quickKey);
-      if (!kept) return;
-      awaited = kept;
-      const { code, invented } = kept.state.study;
-      if (invented) await this.openDemo();
-      else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
+    continueKept,
+    async resume() {
+      const quickKey = lastStudy.recall();
+      if (quickKey !== null) await continueKept(quickKey);
     },
     async confirmIdentity(code) {
       const confirmed = opening;

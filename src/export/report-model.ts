@@ -1,3 +1,4 @@
+import { adequacyReason } from '../recording/adequacy';
 import { BEAT_CLASSES, type BeatList } from '../recording/beat';
 import type { Findings, PhaseFindings } from '../recording/findings';
 import { leadName } from '../recording/lead';
@@ -143,23 +144,28 @@ function protocolFacts(protocol: Protocol): readonly Fact[] {
 
 const ADEQUACY_WORDS = {
   enough: 'enough',
-  limited: 'limited: over 30 % lost',
-  'not-reportable': 'not reportable: over 50 % lost',
+  limited: 'limited',
+  'not-reportable': 'not reportable',
 } as const;
 
 function adequacyRow(phase: PhaseFindings): AdequacyRow {
   const lengthS = phase.toS - phase.fromS;
   const kept = (seconds: number) =>
     `${(seconds / 60).toFixed(1)} (${Math.floor((100 * seconds) / lengthS)} %)`;
-  const words = (organ: string, adequacy: PhaseFindings['adequacyStomach']) =>
-    `${organ} ${ADEQUACY_WORDS[adequacy]}`;
+  const words = (organ: string, adequacy: PhaseFindings['adequacyStomach'], keptS: number) => {
+    const reason = adequacyReason(adequacy, keptS, lengthS);
+    return `${organ} ${ADEQUACY_WORDS[adequacy]}${reason === '' ? '' : ` (${reason})`}`;
+  };
   return {
     phase: phase.name,
     stretch: `${formatClock(phase.fromS)}–${formatClock(phase.toS)}`,
     minutes: (lengthS / 60).toFixed(1),
     stomach: kept(phase.keptStomachS),
     heart: kept(phase.keptHeartS),
-    words: `${words('stomach', phase.adequacyStomach)}; ${words('heart', phase.adequacyHeart)}`,
+    words: [
+      words('stomach', phase.adequacyStomach, phase.keptStomachS),
+      words('heart', phase.adequacyHeart, phase.keptHeartS),
+    ].join('; '),
   };
 }
 

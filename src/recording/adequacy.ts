@@ -38,3 +38,13 @@ export function coverageOf(lost: readonly Interval[], fromS: Seconds, toS: Secon
     adequacy: adequacy(keptS, lengthS),
   };
 }
+
+/** Why so little of a phase is left that its figures are limited or not reported; '' where enough is. */
+export function adequacyReason(adequacy: Adequacy, keptS: Seconds, lengthS: Seconds): string {
+  if (adequacy === 'enough') return '';
+  const share = lengthS > 0 ? Math.floor((100 * keptS) / lengthS) : 0;
+  const lost = 1 - share / 100 > NOT_REPORTABLE_LOSS;
+  return adequacy === 'not-reportable' && !lost
+    ? `${(keptS / 60).toFixed(1)} min kept are too few`
+    : `${share} % kept`;
+}

@@ -1,3 +1,4 @@
+import { adequacyReason } from '../recording/adequacy';
 import type { FigureValue } from '../recording/figure';
 import type { Organ } from '../recording/figure-catalogue';
 import type { Findings, PhaseFindings } from '../recording/findings';
@@ -44,9 +45,8 @@ export function adequacyWords(phase: PhaseFindings, organ: Organ): string {
   const adequacy = stomach ? phase.adequacyStomach : phase.adequacyHeart;
   if (adequacy === 'enough') return '';
   const keptS = stomach ? phase.keptStomachS : phase.keptHeartS;
-  const share = Math.floor((100 * keptS) / (phase.toS - phase.fromS));
   const word = adequacy === 'limited' ? 'limited' : 'not reportable';
-  return `${phase.name} is ${word}: ${share} % kept`;
+  return `${phase.name} is ${word}: ${adequacyReason(adequacy, keptS, phase.toS - phase.fromS)}`;
 }
 
 /** From and to of a stretch, whole minutes without their seconds: "0:00–0:30". */
