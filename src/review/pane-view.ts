@@ -11,6 +11,7 @@ import type { PaneStores, RowContext, RowView } from './row-view';
 import type { Row } from './rows';
 import { SignalRowView } from './signal-row';
 import { paintSpans, type RowBox } from './span-paint';
+import { Staleness } from './staleness';
 import type { ThemeTokens } from './theme-tokens';
 import { clockText, widthText } from './time-ticks';
 import type { TimeWindow, ViewState } from './view-store';
@@ -42,6 +43,7 @@ export class PaneView {
   readonly over: CanvasLayer;
   private readonly hatch = new Hatch();
   private readonly stops: (() => void)[] = [];
+  private readonly staleness: Staleness;
   private describing = 0;
   private drawnAt = 0;
 
@@ -55,10 +57,12 @@ export class PaneView {
   ) {
     this.under = new CanvasLayer(dom.under);
     this.over = new CanvasLayer(dom.over);
+    this.staleness = new Staleness(stores, this.loop.ask);
     const context: RowContext = {
       stores,
       signals,
       tokens: () => this.tokens,
+      stale: () => this.staleness.stale,
       redraw: this.loop.ask,
     };
     this.rows = rows.map((row) => makeRowView(row, dom, context));
@@ -226,6 +230,7 @@ export class PaneView {
   /** Ends the drawing and leaves nothing of the study behind. */
   destroy(): void {
     for (const stop of this.stops) stop();
+    this.staleness.stop();
     this.loop.stop();
     if (this.describing !== 0) {
       clearTimeout(this.describing);

@@ -25,7 +25,7 @@ export class RateRowView implements RowView {
     private readonly labels: HTMLElement | null,
   ) {
     this.u = makePlot(host, {
-      stroke: () => context.tokens()[row.hue],
+      stroke: () => context.tokens()[context.stale() ? 'quiet' : row.hue],
       width: 1,
       path: (u) => this.path(u),
     });

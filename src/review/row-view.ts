@@ -16,6 +16,8 @@ export interface RowContext {
   readonly stores: PaneStores;
   readonly signals: SignalAccess;
   readonly tokens: () => ThemeTokens;
+  /** Results are older than the last edit: drawn grey. */
+  readonly stale: () => boolean;
   /** Asks for a draw in the next frame. */
   readonly redraw: () => void;
 }

@@ -220,6 +220,7 @@ export class SpectrogramRowView implements RowView {
   private strokeWithHalo(ctx: CanvasRenderingContext2D, line: Path2D, marks: Path2D): void {
     const { dfHalo, dfLine } = this.context.tokens();
     ctx.save();
+    ctx.globalAlpha = this.context.stale() ? 0.4 : 1;
     ctx.lineJoin = 'round';
     ctx.strokeStyle = dfHalo;
     ctx.lineWidth = 4.5 * this.ratio;

@@ -13,6 +13,7 @@ import { type PaneActs, tryEdit } from './pane-acts';
 import { movePhaseEdge, type PhaseEdge, phaseEdges } from './phase-edges';
 import type { PaneStores } from './row-view';
 import type { Gesture, StageActs } from './stage';
+import { Staleness } from './staleness';
 import { stomachBlocks } from './stomach-blocks';
 import { PHASE_BOX, paintStrip, type StripScene } from './strip-paint';
 import type { ThemeTokens } from './theme-tokens';
@@ -39,6 +40,7 @@ export class StripView {
   private readonly stops: (() => void)[] = [];
   private draftPhases: readonly Phase[] | null = null;
   private rate: { source: object; columns: StripScene['rate'] } | null = null;
+  private readonly staleness: Staleness;
   private widthPx = 1;
 
   constructor(
@@ -48,6 +50,7 @@ export class StripView {
     private tokens: ThemeTokens,
   ) {
     this.layer = new CanvasLayer(dom.canvas);
+    this.staleness = new Staleness(stores, this.loop.ask);
     const { view, analysis, session } = stores;
     this.stops.push(
       watchSize(dom.stage, () => this.layout()),
@@ -137,7 +140,7 @@ export class StripView {
       draft,
       selection,
       xOf: this.xOf,
-      tokens: this.tokens,
+      tokens: this.staleness.stale ? greyed(this.tokens) : this.tokens,
       hatch: this.hatch.for(brush, this.tokens.quiet, this.layer.ratio, true),
       font: this.layer.font(11),
     };
@@ -214,9 +217,18 @@ export class StripView {
 
   destroy(): void {
     for (const stop of this.stops) stop();
+    this.staleness.stop();
     this.loop.stop();
   }
 }
+
+/** A theme with the organs' hues taken out, for results that are being computed again. */
+const greyed = (tokens: ThemeTokens): ThemeTokens => ({
+  ...tokens,
+  stomach: tokens.quiet,
+  heart: tokens.quiet,
+  heartSoft: tokens.rule,
+});
 
 /** How the strip answers the pointer. */
 export function stripActs(strip: StripView, { view }: PaneStores): StageActs {
