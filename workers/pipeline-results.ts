@@ -19,6 +19,7 @@ import { filterWarnings } from '../src/separate/filter-warnings';
 import type { SeparatedSlow } from '../src/separate/route';
 import { stomachFigures } from '../src/stomach/figures';
 import { type StomachAnalysis, slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
+import { createStomachMemory } from '../src/stomach/stomach-memory';
 import { cpmToHz } from '../src/units/rate';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import type { Analysis, HeartResults, ReviewInputs, SeparationFacts } from './analysis-api';
@@ -72,7 +73,10 @@ export function createResults(recording: Recording): Results {
 
   function stomachOf(inputs: StomachInputs): StomachAnalysis {
     const { lead } = inputs.slow;
-    const step = stomachSteps.get(lead) ?? remember(stomachKey, slowWaveRhythm);
+    const known = stomachSteps.get(lead);
+    if (known) return known.of(inputs);
+    const memory = createStomachMemory();
+    const step = remember(stomachKey, (one: StomachInputs) => slowWaveRhythm({ ...one, memory }));
     stomachSteps.set(lead, step);
     return step.of(inputs);
   }
