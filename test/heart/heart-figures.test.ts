@@ -292,6 +292,8 @@ describe('a segment that is held', () => {
     expect(after[1]).not.toBe(before[1]);
     const classed = lf(beatsAfter(rr, 0, `${'N'.repeat(450)}V`));
     expect(classed[1]).not.toBe(before[1]);
+    const early = lf(beatsAfter(rr, 0, `${'N'.repeat(450)}S`));
+    expect(early[1]).not.toBe(before[1]);
     expect(lf(beatsAfter(rr))).toEqual(before);
     const inserted = Float64Array.of(
       ...rr.subarray(0, 10),
@@ -307,7 +309,7 @@ describe('speed', () => {
   it('of all phases of an hour, of a day of beats and of an edit in it lets an edit be felt at once', () => {
     const timed = (beats: BeatList, parts: readonly (readonly [number, number])[]) => {
       const breathing = steadyBreathing(15, parts.at(-1)?.[1] ?? 0);
-      const begin = performance.now();
+      const begin = process.cpuUsage();
       const rr = rrSeries(beats, RATE_HZ, []);
       for (const [fromS, toS] of parts)
         heartFigures({
@@ -320,7 +322,7 @@ describe('speed', () => {
           timingSdMs: 1,
           breathing,
         });
-      return performance.now() - begin;
+      return process.cpuUsage(begin).user / 1000;
     };
     const parts = [
       [0, 1200],
@@ -338,9 +340,10 @@ describe('speed', () => {
     const editMs = timed(beatsAfter(intervals.map((one) => one + 1)), [[0, 90000]]);
     const [hourMs, dayMs] = [Math.min(...hours), Math.min(...days)];
     console.info(
-      `heart figures: 1 h ${hourMs.toFixed(1)} ms, ${intervals.length} beats ${dayMs.toFixed(0)} ms, then an edit ${editMs.toFixed(0)} ms`,
+      `heart figures: 1 h ${hourMs.toFixed(1)} ms, ${intervals.length} beats ${dayMs.toFixed(0)} ms, then an edit ${editMs.toFixed(0)} ms of processor time`,
     );
-    expect(hourMs).toBeLessThan(90);
-    expect(dayMs).toBeLessThan(1000);
+    expect(hourMs).toBeLessThan(120);
+    expect(dayMs).toBeLessThan(2000);
+    expect(editMs).toBeLessThan(dayMs / 2);
   }, 30000);
 });
