@@ -88,14 +88,6 @@ export function irregularityOf(rrMs: Float64Array): Irregularity | null {
   return { entropy: entropyOf(rrMs), unforeseen: unforeseenOf(rrMs) };
 }
 
-function isBeyond(limits: Limits, measures: Irregularity | null): boolean {
-  return (
-    measures !== null &&
-    measures.entropy > limits.entropy &&
-    measures.unforeseen > limits.unforeseen
-  );
-}
-
 /**
  * True where most intervals follow the one before within 5 % of the mean: random intervals that do so spread by 4 % at
  * most, far below either limit, so that a calm rhythm needs no closer look.
@@ -107,8 +99,10 @@ function isCalm(rrMs: Float64Array): boolean {
   return calm >= 0.6 * (rrMs.length - 1);
 }
 
+/** The cheap measure first: most rhythms need no more. */
 function isIrregular(limits: Limits, rrMs: Float64Array): boolean {
-  return !isCalm(rrMs) && isBeyond(limits, irregularityOf(rrMs));
+  if (rrMs.length < FEWEST_FOR_RHYTHM || isCalm(rrMs)) return false;
+  return unforeseenOf(rrMs) > limits.unforeseen && entropyOf(rrMs) > limits.entropy;
 }
 
 /**
