@@ -107,29 +107,9 @@ function choosing(
   select: (ticks: readonly number[]) => void,
 ): Pick<BeatCommands, Choosing> {
   const { view } = stores;
-  const step = (way: 1 | -1) => {
-    const open = openBeats(stores);
-    if (!open) return;
-    const { beats } = open.state;
-    const { seconds } = view.getState();
-    const chosen = selectedTicks(stores);
-    const middle = secondsToTicks((seconds.fromS + seconds.toS) / 2, open.rateHz);
-    const edge = way > 0 ? chosen[chosen.length - 1] : chosen[0];
-    const next =
-      way > 0
-        ? firstBeatAt(beats, edge === undefined ? middle : edge + 1)
-        : firstBeatAt(beats, edge ?? middle) - 1;
-    if (next < 0 || next >= beats.ticks.length) {
-      act.say(way > 0 ? 'No beat after this' : 'No beat before this');
-      return;
-    }
-    select([beats.ticks[next]]);
-    bringInSight(stores, ticksToSeconds(beats.ticks[next], open.rateHz));
-    act.say(beatWords(open, next));
-  };
   return {
-    selectNextBeat: () => step(1),
-    selectPreviousBeat: () => step(-1),
+    selectNextBeat: () => stepBeat(stores, act, select, 1),
+    selectPreviousBeat: () => stepBeat(stores, act, select, -1),
     selectBeat: (tick, extend) => {
       const chosen = selectedTicks(stores);
       const open = openBeats(stores);
@@ -152,6 +132,33 @@ function choosing(
     },
     clearSelection: () => view.setState({ selection: { kind: 'none' } }),
   };
+}
+
+/** Selects the beat one on from what is selected, brings it in sight and says it. */
+function stepBeat(
+  stores: PaneStores,
+  act: PaneActs,
+  select: (ticks: readonly number[]) => void,
+  way: 1 | -1,
+): void {
+  const open = openBeats(stores);
+  if (!open) return;
+  const { beats } = open.state;
+  const { seconds } = stores.view.getState();
+  const chosen = selectedTicks(stores);
+  const middle = secondsToTicks((seconds.fromS + seconds.toS) / 2, open.rateHz);
+  const edge = way > 0 ? chosen[chosen.length - 1] : chosen[0];
+  const next =
+    way > 0
+      ? firstBeatAt(beats, edge === undefined ? middle : edge + 1)
+      : firstBeatAt(beats, edge ?? middle) - 1;
+  if (next < 0 || next >= beats.ticks.length) {
+    act.say(way > 0 ? 'No beat after this' : 'No beat before this');
+    return;
+  }
+  select([beats.ticks[next]]);
+  bringInSight(stores, ticksToSeconds(beats.ticks[next], open.rateHz));
+  act.say(beatWords(open, next));
 }
 
 function placing(

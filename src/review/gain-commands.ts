@@ -87,23 +87,31 @@ export function gainCommands(
     },
     gainSame: (rowKey) => {
       const row = chosen(rowKey);
-      const gain = row && view.getState().gainsUv[row.key];
-      if (row?.kind !== 'signal' || gain === undefined) return;
-      const [pane] = row.key.split(':', 1);
-      const all = rowsNow(stores)
-        .filter((one) => one.kind === 'signal' && one.key.startsWith(`${pane}:`))
-        .map((one) => [one.key, gain] as const);
-      view.setState((now) => ({ gainsUv: { ...now.gainsUv, ...Object.fromEntries(all) } }));
-      act.say(`All rows of the pane: ${gain} uV from middle to edge`);
+      if (row?.kind === 'signal') shareGain(stores, act, row);
     },
-    cycleRow: () => {
-      const rows = rowsNow(stores).filter(hasGain);
-      if (rows.length === 0) return;
-      const at = rows.findIndex((row) => row.key === view.getState().selectedRow);
-      const row = rows[(at + 1) % rows.length];
-      view.setState({ selectedRow: row.key });
-      act.say(`Row ${row.name}${row.note === '' ? '' : `, ${row.note}`}`);
-    },
+    cycleRow: () => cycleRow(stores, act),
     selectRow: (rowKey) => view.setState({ selectedRow: rowKey }),
   };
+}
+
+function shareGain(stores: PaneStores, act: PaneActs, row: SignalRow): void {
+  const { view } = stores;
+  const gain = view.getState().gainsUv[row.key];
+  if (gain === undefined) return;
+  const [pane] = row.key.split(':', 1);
+  const all = rowsNow(stores)
+    .filter((one) => one.kind === 'signal' && one.key.startsWith(`${pane}:`))
+    .map((one) => [one.key, gain] as const);
+  view.setState((now) => ({ gainsUv: { ...now.gainsUv, ...Object.fromEntries(all) } }));
+  act.say(`All rows of the pane: ${gain} uV from middle to edge`);
+}
+
+function cycleRow(stores: PaneStores, act: PaneActs): void {
+  const { view } = stores;
+  const rows = rowsNow(stores).filter(hasGain);
+  if (rows.length === 0) return;
+  const at = rows.findIndex((row) => row.key === view.getState().selectedRow);
+  const row = rows[(at + 1) % rows.length];
+  view.setState({ selectedRow: row.key });
+  act.say(`Row ${row.name}${row.note === '' ? '' : `, ${row.note}`}`);
 }

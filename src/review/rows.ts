@@ -92,19 +92,22 @@ export function minutesRows(
     hue: 'stomach',
     weight: 2.8,
   };
-  const heart = roles.heart ? leadKey(roles.heart) : null;
+  return [...recorded, ...slow, spectrogram, ...rateRows(roles, has.breathing)];
+}
+
+function rateRows(roles: Roles, breathing: boolean): readonly Row[] {
   const rates: Row[] = [];
   if (roles.heart)
     rates.push({
       kind: 'heart-rate',
       key: 'minutes:heart-rate',
-      leadKey: heart,
+      leadKey: leadKey(roles.heart),
       name: 'Heart rate',
       note: '1/min',
       hue: 'heart',
       weight: 1.2,
     });
-  if (has.breathing)
+  if (breathing)
     rates.push({
       kind: 'breathing',
       key: 'minutes:breathing',
@@ -114,7 +117,7 @@ export function minutesRows(
       hue: 'breathing',
       weight: 0.9,
     });
-  return [...recorded, ...slow, spectrogram, ...rates];
+  return rates;
 }
 
 /** Rows of the Seconds pane below the pins; none without a heart lead. */

@@ -24,41 +24,51 @@ export function SpanBar({
       <span className="span-place">
         {span.origin === 'proposed' ? 'Proposed' : 'Drawn'} {place}
       </span>
-      <label>
-        not for
-        <select
-          value={span.target}
-          onChange={(event) => {
-            const target = SPAN_TARGETS.find((one) => one === event.target.value);
-            if (target) commands.changeSelectedSpan({ target });
-          }}
-        >
-          {SPAN_TARGETS.map((target) => (
-            <option key={target} value={target}>
-              {TARGET_WORDS[target]}
-            </option>
-          ))}
-        </select>
-      </label>
-      <label>
-        cause
-        <select
-          value={span.cause}
-          onChange={(event) => {
-            const cause = SPAN_CAUSES.find((one) => one === event.target.value);
-            if (cause) commands.changeSelectedSpan({ cause });
-          }}
-        >
-          {SPAN_CAUSES.map((cause) => (
-            <option key={cause} value={cause}>
-              {cause}
-            </option>
-          ))}
-        </select>
-      </label>
+      <Choice
+        words="not for"
+        value={span.target}
+        options={SPAN_TARGETS}
+        wordsOf={(target) => TARGET_WORDS[target]}
+        onChange={(target) => commands.changeSelectedSpan({ target })}
+      />
+      <Choice
+        words="cause"
+        value={span.cause}
+        options={SPAN_CAUSES}
+        wordsOf={(cause) => cause}
+        onChange={(cause) => commands.changeSelectedSpan({ cause })}
+      />
       <button type="button" onClick={() => commands.deleteSelectedSpan()}>
         Count it again
       </button>
     </fieldset>
+  );
+}
+
+function Choice<T extends string>(props: {
+  readonly words: string;
+  readonly value: T;
+  readonly options: readonly T[];
+  readonly wordsOf: (option: T) => string;
+  readonly onChange: (option: T) => void;
+}) {
+  const { words, value, options, wordsOf, onChange } = props;
+  return (
+    <label>
+      {words}
+      <select
+        value={value}
+        onChange={(event) => {
+          const chosen = options.find((option) => option === event.target.value);
+          if (chosen) onChange(chosen);
+        }}
+      >
+        {options.map((option) => (
+          <option key={option} value={option}>
+            {wordsOf(option)}
+          </option>
+        ))}
+      </select>
+    </label>
   );
 }

@@ -23,70 +23,93 @@ export interface StageActs {
 
 const STILL_PX = 4;
 
-/** Listens to pointer and wheel on a pane's drawing. Returns the way to stop. */
-export function listenToStage(stage: HTMLElement, acts: StageActs): () => void {
-  const stop = new AbortController();
-  const { signal } = stop;
-  let held: { gesture: Gesture; x: number; y: number; moved: boolean } | null = null;
-  const place = (event: MouseEvent): readonly [number, number] => {
-    const box = stage.getBoundingClientRect();
+/** The press that is held, and what it has become. */
+class Hold {
+  private held: { gesture: Gesture; x: number; y: number; moved: boolean } | null = null;
+
+  constructor(
+    private readonly stage: HTMLElement,
+    private readonly acts: StageActs,
+  ) {}
+
+  get active(): boolean {
+    return this.held !== null;
+  }
+
+  place(event: MouseEvent): readonly [number, number] {
+    const box = this.stage.getBoundingClientRect();
     return [event.clientX - box.left, event.clientY - box.top];
-  };
-  const release = () => {
-    held = null;
-    stage.style.cursor = '';
-  };
-  const cancel = () => {
-    held?.gesture.cancel?.();
-    release();
-  };
-  const down = (event: PointerEvent) => {
-    if (event.button !== 0 || held) return;
-    const [x, y] = place(event);
-    const gesture = acts.press(x, y, event);
+  }
+
+  down(event: PointerEvent): void {
+    if (event.button !== 0 || this.held) return;
+    const [x, y] = this.place(event);
+    const gesture = this.acts.press(x, y, event);
     if (!gesture) return;
-    held = { gesture, x, y, moved: false };
-    stage.setPointerCapture(event.pointerId);
-  };
-  const move = (event: PointerEvent) => {
-    const [x, y] = place(event);
-    acts.point(x);
+    this.held = { gesture, x, y, moved: false };
+    this.stage.setPointerCapture(event.pointerId);
+  }
+
+  move(event: PointerEvent): void {
+    const { held, stage } = this;
+    const [x, y] = this.place(event);
+    this.acts.point(x);
     if (!held) {
-      stage.style.cursor = acts.hover(x, y);
+      stage.style.cursor = this.acts.hover(x, y);
       return;
     }
     if (!held.moved && Math.abs(x - held.x) < STILL_PX && Math.abs(y - held.y) < STILL_PX) return;
     held.moved = true;
     stage.style.cursor = held.gesture.cursor ?? 'grabbing';
     held.gesture.move?.(x, y);
-  };
-  const up = (event: PointerEvent) => {
-    if (!held) return;
-    const { gesture, moved } = held;
-    const [x, y] = place(event);
-    release();
+  }
+
+  up(event: PointerEvent): void {
+    if (!this.held) return;
+    const { gesture, moved } = this.held;
+    const [x, y] = this.place(event);
+    this.release();
     if (moved) gesture.drop?.(x, y);
     else gesture.click?.(x, y);
-  };
+  }
+
+  cancel(): void {
+    this.held?.gesture.cancel?.();
+    this.release();
+  }
+
+  private release(): void {
+    this.held = null;
+    this.stage.style.cursor = '';
+  }
+}
+
+/** Listens to pointer and wheel on a pane's drawing. Returns the way to stop. */
+export function listenToStage(stage: HTMLElement, acts: StageActs): () => void {
+  const stop = new AbortController();
+  const { signal } = stop;
+  const hold = new Hold(stage, acts);
   const onEscape = (event: KeyboardEvent) => {
-    if (event.key !== 'Escape' || !held) return;
+    if (event.key !== 'Escape' || !hold.active) return;
     event.stopPropagation();
-    cancel();
+    hold.cancel();
   };
   const wheel = (event: WheelEvent) => {
     event.preventDefault();
-    acts.wheel(place(event)[0], event);
+    acts.wheel(hold.place(event)[0], event);
   };
-  stage.addEventListener('pointerdown', down, { signal });
-  stage.addEventListener('pointermove', move, { signal });
-  stage.addEventListener('pointerup', up, { signal });
-  stage.addEventListener('pointercancel', cancel, { signal });
-  stage.addEventListener('pointerleave', () => held || acts.point(null), { signal });
+  stage.addEventListener('pointerdown', (event) => hold.down(event), { signal });
+  stage.addEventListener('pointermove', (event) => hold.move(event), { signal });
+  stage.addEventListener('pointerup', (event) => hold.up(event), { signal });
+  stage.addEventListener('pointercancel', () => hold.cancel(), { signal });
+  stage.addEventListener('pointerleave', () => hold.active || acts.point(null), { signal });
   stage.addEventListener('wheel', wheel, { signal, passive: false });
-  stage.addEventListener('dblclick', (event) => acts.doubleClick?.(...place(event)), { signal });
+  stage.addEventListener('dblclick', (event) => acts.doubleClick?.(...hold.place(event)), {
+    signal,
+  });
   window.addEventListener('keydown', onEscape, { signal, capture: true });
   return () => {
-    cancel();
+    hold.cancel();
     stop.abort();
   };
 }
