@@ -40,8 +40,22 @@ export interface ResultInputs {
   readonly breathing: { readonly samples: Float64Array; readonly rateHz: number } | null;
 }
 
+/** All results, with a mark a part that changes when the part does. */
+export interface Computed {
+  readonly edit: number;
+  readonly separation: readonly SeparationFacts[];
+  readonly stomach: readonly StomachAnalysis[];
+  readonly heart: HeartResults | null;
+  readonly findings: Analysis['findings'];
+  readonly marks: Readonly<Record<'separation' | 'stomach' | 'heart', string>>;
+}
+
 export interface Results {
-  of(from: ResultInputs, job: Job): Promise<Analysis>;
+  of(from: ResultInputs, job: Job): Promise<Computed>;
+  /** What has changed since the last delivery; the rest is null. */
+  deliver(computed: Computed): Analysis;
+  /** Median DF of a lead when it was analysed last, 3 cpm where it has no rhythm. */
+  usualCpm(lead: string): number;
 }
 
 interface StomachInputs {
@@ -69,7 +83,8 @@ export function createResults(recording: Recording): Results {
   );
   const heartStep = remember(heartKey, (from: HeartInputs) => heartSideOf(from, recording));
   const stomachSteps = new Map<string, Remembered<StomachInputs, StomachAnalysis>>();
-  let delivered = { separation: '', stomach: '', heart: '' };
+  const usual = new Map<string, number>();
+  let delivered: Computed['marks'] = { separation: '', stomach: '', heart: '' };
 
   function stomachOf(inputs: StomachInputs): StomachAnalysis {
     const { lead } = inputs.slow;
@@ -82,6 +97,7 @@ export function createResults(recording: Recording): Results {
   }
 
   return {
+    usualCpm: (lead) => usual.get(lead) ?? 3,
     async of(from, job) {
       const { inputs, slow } = from;
       const { settings } = inputs;
@@ -103,24 +119,32 @@ export function createResults(recording: Recording): Results {
         await job.breathe();
         const spoiled = stomachSpoiled(recording, inputs, one.lead);
         stomach.push(stomachOf({ slow: one, spoiled, phases, settings, breathing }));
+        usual.set(one.lead, usualCpmOf(stomach[stomach.length - 1]));
         job.progress('Reading the rhythm', stomach.length / slow.length);
       }
       const findings = findingsOf(recording, inputs, phases, heart, stomach);
-      const now = {
-        separation: slow.map(identity).join() + stomach.map(identity).join(),
-        stomach: stomach.map(identity).join(),
-        heart: String(identity(heart)),
-      };
-      const before = delivered;
-      delivered = now;
+      const rhythms = stomach.map(identity).join();
       return {
         edit: inputs.edit,
-        separation:
-          now.separation === before.separation
-            ? null
-            : slow.map((one, i) => factsOf(one, stomach[i])),
-        stomach: now.stomach === before.stomach ? null : stomach.map((one) => one.rhythm),
-        heart: now.heart === before.heart ? null : (heart?.results ?? null),
+        separation: slow.map((one, i) => factsOf(one, stomach[i])),
+        stomach,
+        heart: heart?.results ?? null,
+        findings,
+        marks: {
+          separation: slow.map(identity).join() + rhythms,
+          stomach: rhythms,
+          heart: String(identity(heart)),
+        },
+      };
+    },
+    deliver({ edit, separation, stomach, heart, findings, marks }) {
+      const before = delivered;
+      delivered = marks;
+      return {
+        edit,
+        separation: marks.separation === before.separation ? null : separation,
+        stomach: marks.stomach === before.stomach ? null : stomach.map(({ rhythm }) => rhythm),
+        heart: marks.heart === before.heart ? null : heart,
         findings,
       };
     },
@@ -199,15 +223,18 @@ function stomachSpoiled(
   return joinIntervals([...spansOf(spans, key, 'stomach'), ...gaps]);
 }
 
-/** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */
-function factsOf(slow: SeparatedSlow, { rhythm }: StomachAnalysis): SeparationFacts {
+function usualCpmOf({ rhythm }: StomachAnalysis): number {
   const dfs = rhythm.epochs.flatMap(({ dfCpm }) => (dfCpm === null ? [] : [dfCpm]));
-  const usual = dfs.sort((a, b) => a - b).at(dfs.length >> 1) ?? 3;
+  return dfs.sort((a, b) => a - b).at(dfs.length >> 1) ?? 3;
+}
+
+/** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */
+function factsOf(slow: SeparatedSlow, analysis: StomachAnalysis): SeparationFacts {
   return {
     lead: slow.lead,
     unclean: slow.unclean,
     notes: slow.notes,
-    leadS: slow.leadSAt(cpmToHz(usual)),
+    leadS: slow.leadSAt(cpmToHz(usualCpmOf(analysis))),
   };
 }
 

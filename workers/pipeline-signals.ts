@@ -11,6 +11,9 @@ import { type BreathingSampler, createBreathingSampler } from './breathing-sampl
 import type { Job } from './job';
 import { type LeadConsumer, type LeadToRead, passOverLeads } from './lead-pass';
 
+/** The stomach's usual rhythm, until a recording's own is known. */
+const USUAL_CPM = 3;
+
 /** What is kept of one lead once the file has been read: nothing as long as the recording at its own rate but the heartbeat. */
 export interface LeadSignals {
   readonly lead: Lead;
@@ -94,15 +97,19 @@ export class SignalStore {
     }
   }
 
-  /** The slow wave of a lead under the settings; throws where it was not provided. */
-  slow(lead: Lead, settings: Settings): SeparatedSlow {
+  /**
+   * The slow wave of a lead under the settings, shifted by the derivative's lead at `dfCpm` where they ask for it; throws
+   * where it was not provided.
+   */
+  slow(lead: Lead, settings: Settings, dfCpm = USUAL_CPM): SeparatedSlow {
     const key = leadKey(lead);
     const slow = this.get(lead)?.slow;
     if (!slow) throw new Error(`the slow wave of ${key} was not provided`);
-    const drawnBy = JSON.stringify([settings.slowBandCpm, settings.fractional.undoLead]);
+    const { undoLead } = settings.fractional;
+    const drawnBy = JSON.stringify([settings.slowBandCpm, undoLead && dfCpm]);
     const before = this.#drawn.get(key);
     if (before?.from === slow.output && before.drawnBy === drawnBy) return before.output;
-    const output = redrawSlowWave(slow.output, settings);
+    const output = redrawSlowWave(slow.output, settings, dfCpm);
     this.#drawn.set(key, { from: slow.output, drawnBy, output });
     return output;
   }

@@ -225,18 +225,22 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
         job,
       )
     : null;
-  return study.results.of(
-    {
-      inputs,
-      slow: roles.slow.map((lead) => study.signals.slow(lead, settings)),
-      heart: heart ? study.signals.heart(heart) : null,
-      heartRateHz: heart ? leadChannel(study.source.recording, heart).rateHz : 0,
-      blocked: heart ? blockedOf(study, heart, inputs.spans) : [],
-      detection: found,
-      breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
-    },
-    job,
+  const from = {
+    inputs,
+    slow: roles.slow.map((lead) => study.signals.slow(lead, settings)),
+    heart: heart ? study.signals.heart(heart) : null,
+    heartRateHz: heart ? leadChannel(study.source.recording, heart).rateHz : 0,
+    blocked: heart ? blockedOf(study, heart, inputs.spans) : [],
+    detection: found,
+    breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
+  };
+  const first = await study.results.of(from, job);
+  if (settings.slowRoute === 'band' || !settings.fractional.undoLead)
+    return study.results.deliver(first);
+  const atOwnRhythm = roles.slow.map((lead) =>
+    study.signals.slow(lead, settings, study.results.usualCpm(leadKey(lead))),
   );
+  return study.results.deliver(await study.results.of({ ...from, slow: atOwnRhythm }, job));
 }
 
 async function columns(study: Study, request: ColumnsRequest): Promise<Columns> {
@@ -280,11 +284,10 @@ function placeNear(study: Study, nearS: number): PlacedBeat {
       place: null,
       remedy: 'Choose a heart lead first.',
     });
-  return placeBeat({
-    heartbeat: heart.heartbeat,
-    rateHz: heart.rateHz,
-    ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
-    averages: study.detection.found.averages,
+  const { averages, sign } = study.detection.found;
+  const ticksPerSample = TICKS_PER_SAMPLE * heart.decimation;
+  return placeBeat(
+    { heartbeat: heart.heartbeat, rateHz: heart.rateHz, ticksPerSample, averages, sign },
     nearS,
-  });
+  );
 }
