@@ -16,20 +16,8 @@ interface DialogProps {
 /** A native modal dialog, shown as long as it is mounted: Escape closes it, focus goes back to where it was. */
 export function Dialog(props: DialogProps) {
   const { title, subtitle, size = 'medium', onClose, onSubmit, children, actions } = props;
-  const ref = useRef<HTMLDialogElement>(null);
+  const ref = useModal();
   const titleId = useId();
-  useLayoutEffect(() => {
-    const dialog = ref.current;
-    if (dialog && !dialog.open) {
-      dialog.showModal();
-      const wanted =
-        dialog.querySelector<HTMLElement>('[data-autofocus]') ??
-        dialog.querySelector<HTMLElement>('.dialog-body :is(input, select, textarea)') ??
-        dialog.querySelector<HTMLElement>('.dialog-foot .strong');
-      wanted?.focus();
-    }
-    return () => dialog?.close();
-  }, []);
   const inside = (
     <>
       <header className="dialog-head">
@@ -72,4 +60,22 @@ export function Dialog(props: DialogProps) {
       )}
     </dialog>
   );
+}
+
+/** Shows a dialog while it is mounted, and puts the focus where the person begins. */
+function useModal() {
+  const ref = useRef<HTMLDialogElement>(null);
+  useLayoutEffect(() => {
+    const dialog = ref.current;
+    if (dialog && !dialog.open) {
+      dialog.showModal();
+      const wanted =
+        dialog.querySelector<HTMLElement>('[data-autofocus]') ??
+        dialog.querySelector<HTMLElement>('.dialog-body :is(input, select, textarea)') ??
+        dialog.querySelector<HTMLElement>('.dialog-foot .strong');
+      wanted?.focus();
+    }
+    return () => dialog?.close();
+  }, []);
+  return ref;
 }

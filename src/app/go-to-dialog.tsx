@@ -4,6 +4,7 @@ import { formatClock, parseClock } from '../units/time';
 import { useApp } from './app-context';
 import { Dialog } from './dialog';
 import { Field } from './fields';
+import { FormActions } from './form-actions';
 
 /** Goes to a typed time. */
 export function GoToDialog() {
@@ -25,16 +26,7 @@ export function GoToDialog() {
         close();
         goTo(view, atS);
       }}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Stay here
-          </button>
-          <button type="submit" className="button strong">
-            Go
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Stay here" go="Go" onStay={close} />}
     >
       <Field
         label="Time from the start"

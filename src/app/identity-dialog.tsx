@@ -2,8 +2,10 @@ import { useState } from 'react';
 import type { FoundInFile, Recording } from '../recording/recording';
 import { formatClock } from '../units/time';
 import { useApp } from './app-context';
+import type { KeptRow } from './controller';
 import { Dialog } from './dialog';
 import { Field } from './fields';
+import { FormActions } from './form-actions';
 import type { DialogState } from './shell-store';
 import { localWords, rateWords, startWords } from './study-words';
 
@@ -30,14 +32,11 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
         if (!missing) void controller.confirmIdentity(code.trim());
       }}
       actions={
-        <>
-          <button type="button" className="button" onClick={() => controller.cancelOpening()}>
-            Do not open
-          </button>
-          <button type="submit" className="button strong">
-            This is the study, open it
-          </button>
-        </>
+        <FormActions
+          stay="Do not open"
+          go="This is the study, open it"
+          onStay={() => controller.cancelOpening()}
+        />
       }
     >
       <HeaderFacts recording={recording} />
@@ -50,16 +49,15 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
         hint="Sessions are listed and named by this code. Do not type a name."
         error={tried && missing ? 'Type a code, for example the number of the study.' : null}
       />
-      {kept ? (
-        <p>
-          A session of this study is kept here
-          {kept.lastUtc === null ? '' : `, last changed ${localWords(kept.lastUtc)} UTC`}:{' '}
-          {kept.edits} {kept.edits === 1 ? 'edit' : 'edits'} will be there again.
-        </p>
-      ) : null}
+      {kept ? <p>{keptSessionWords(kept)}</p> : null}
       <Found found={found} />
     </Dialog>
   );
+}
+
+function keptSessionWords({ lastUtc, edits }: KeptRow): string {
+  const last = lastUtc === null ? '' : `, last changed ${localWords(lastUtc)} UTC`;
+  return `A session of this study is kept here${last}: ${edits} ${edits === 1 ? 'edit' : 'edits'} will be there again.`;
 }
 
 /** Name, code, birth year, date, start and length as the header has them. */

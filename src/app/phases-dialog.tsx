@@ -3,9 +3,17 @@ import type { Annotation, Recording } from '../recording/recording';
 import type { SessionState, TimedNote } from '../session/document';
 import { setField } from '../session/edits';
 import { formatClock } from '../units/time';
-import { useAnalysis, useApp, useSession, useView, withReviewer } from './app-context';
+import {
+  type AppParts,
+  useAnalysis,
+  useApp,
+  useSession,
+  useView,
+  withReviewer,
+} from './app-context';
 import { Dialog } from './dialog';
 import { EventsEditor } from './events-editor';
+import { FormActions } from './form-actions';
 import { addRow, type PhaseRow, proposedFed, readPhases, rowsOf, timeText } from './phase-draft';
 import { PhaseTable, type TimeField } from './phase-table';
 
@@ -33,19 +41,7 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
   const save = () => {
     setTried(true);
     if (Object.keys(errors).length > 0) return;
-    if (
-      phasesText(rowsOf(phases)) === phasesText(rowsOf(before.phases)) &&
-      events === before.events
-    )
-      return close();
-    withReviewer(parts, () => {
-      if (phasesText(rowsOf(phases)) !== phasesText(rowsOf(before.phases)))
-        parts.controller.changePhases(phases);
-      const now = parts.session.getState().session?.state;
-      if (now && events !== before.events)
-        parts.controller.edit(setField(now, 'events', events, 'change events'));
-      close();
-    });
+    saveAll(parts, before, { phases, events }, close);
   };
   const put = (seconds: number) =>
     setRows((now) =>
@@ -59,16 +55,7 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
       subtitle={`Times from the start of the recording, which is ${formatClock(durationS)} long: seconds, m:ss or h:mm:ss.`}
       onClose={close}
       onSubmit={save}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Leave as it was
-          </button>
-          <button type="submit" className="button strong">
-            Use these phases
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Leave as it was" go="Use these phases" onStay={close} />}
     >
       <PhaseTable
         rows={rows}
@@ -87,6 +74,27 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
       <EventsEditor events={events} durationS={durationS} onChange={setEvents} />
     </Dialog>
   );
+}
+
+/** One undo step for the phases and one for the events, each only where it changed. */
+function saveAll(
+  parts: AppParts,
+  before: SessionState,
+  { phases, events }: Pick<SessionState, 'phases' | 'events'>,
+  close: () => void,
+): void {
+  const newPhases = phasesText(rowsOf(phases)) !== phasesText(rowsOf(before.phases));
+  const newEvents = events !== before.events;
+  if (!newPhases && !newEvents) {
+    close();
+    return;
+  }
+  withReviewer(parts, () => {
+    if (newPhases) parts.controller.changePhases(phases);
+    const now = parts.session.getState().session?.state;
+    if (now && newEvents) parts.controller.edit(setField(now, 'events', events, 'change events'));
+    close();
+  });
 }
 
 const phasesText = (rows: readonly PhaseRow[]): string =>

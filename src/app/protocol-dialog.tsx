@@ -3,9 +3,11 @@ import type { Protocol } from '../recording/protocol';
 import { useApp, useSession, withReviewer } from './app-context';
 import { Dialog } from './dialog';
 import { Field } from './fields';
+import { FormActions } from './form-actions';
 import {
   PROTOCOL_NUMBERS,
   PROTOCOL_TEXTS,
+  type ProtocolDraft,
   type ProtocolText,
   protocolDraft,
   readProtocol,
@@ -36,35 +38,15 @@ function ProtocolForm({ before }: { readonly before: Protocol }) {
       close();
     });
   };
-  const texts = (keys: readonly ProtocolText[]) =>
-    PROTOCOL_TEXTS.filter((one) => keys.includes(one.key)).map(({ key, label }) => (
-      <Field
-        key={key}
-        label={label}
-        value={draft[key]}
-        {...(HINTS[key] ? { hint: HINTS[key] } : {})}
-        {...(key === 'posture' ? { suggestions: POSTURES } : {})}
-        onChange={(text) => setDraft({ ...draft, [key]: text })}
-      />
-    ));
   return (
     <Dialog
       title="Meal and protocol"
       subtitle="What was done, as it was done. Leave empty what is not known."
       onClose={close}
       onSubmit={save}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Leave as it was
-          </button>
-          <button type="submit" className="button strong">
-            Use this
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Leave as it was" go="Use this" onStay={close} />}
     >
-      {texts(['meal'])}
+      <Texts keys={['meal']} draft={draft} onChange={setDraft} />
       <div className="field-grid">
         {PROTOCOL_NUMBERS.map(({ key, label, bounds }) => (
           <Field
@@ -79,7 +61,26 @@ function ProtocolForm({ before }: { readonly before: Protocol }) {
           />
         ))}
       </div>
-      {texts(['posture', 'medicines', 'implants'])}
+      <Texts keys={['posture', 'medicines', 'implants']} draft={draft} onChange={setDraft} />
     </Dialog>
   );
+}
+
+interface TextsProps {
+  readonly keys: readonly ProtocolText[];
+  readonly draft: ProtocolDraft;
+  readonly onChange: (draft: ProtocolDraft) => void;
+}
+
+function Texts({ keys, draft, onChange }: TextsProps) {
+  return PROTOCOL_TEXTS.filter((one) => keys.includes(one.key)).map(({ key, label }) => (
+    <Field
+      key={key}
+      label={label}
+      value={draft[key]}
+      {...(HINTS[key] ? { hint: HINTS[key] } : {})}
+      {...(key === 'posture' ? { suggestions: POSTURES } : {})}
+      onChange={(text) => onChange({ ...draft, [key]: text })}
+    />
+  ));
 }

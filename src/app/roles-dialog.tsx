@@ -4,6 +4,7 @@ import type { Roles } from '../recording/roles';
 import { useAnalysis, useApp, useSession, withReviewer } from './app-context';
 import { Dialog } from './dialog';
 import { Field } from './fields';
+import { FormActions } from './form-actions';
 import { LeadChooser } from './lead-chooser';
 import {
   addSlowLead,
@@ -54,16 +55,7 @@ function RolesForm({ before, channels }: RolesFormProps) {
       subtitle="A lead is a channel, or one channel minus another."
       onClose={close}
       onSubmit={save}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Leave as it was
-          </button>
-          <button type="submit" className="button strong">
-            Use these leads
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Leave as it was" go="Use these leads" onStay={close} />}
     >
       <SlowLeads
         draft={draft}
@@ -93,8 +85,6 @@ function SlowLeads(props: LeadsProps & { readonly before: Roles }) {
   const { draft, before, channels, errors, onChange } = props;
   const reasons = useAnalysis((state) => state.reasons);
   const leadChoice = useSession((state) => state.session?.state.leadChoice ?? '');
-  const change = (next: LeadDraft) =>
-    onChange({ ...draft, slow: draft.slow.map((row) => (row.id === next.id ? next : row)) });
   const changed = draft.reported !== before.reported || wantsReason(draft, before, channels);
   return (
     <fieldset>
@@ -103,38 +93,7 @@ function SlowLeads(props: LeadsProps & { readonly before: Roles }) {
         Figures are those of the reported lead. It is chosen by the quality of its fasting phase,
         before any rhythm is drawn.
       </p>
-      {draft.slow.map((row, i) => (
-        <LeadChooser
-          key={row.id}
-          name={`Lead ${i + 1}`}
-          draft={row}
-          channels={channels}
-          optional={false}
-          error={errors?.slow[row.id] ?? null}
-          reason={reasons?.slow[i] ?? ''}
-          onChange={change}
-        >
-          <label className="tick">
-            <input
-              type="radio"
-              name="reported"
-              checked={row.id === draft.reported}
-              onChange={() => onChange({ ...draft, reported: row.id })}
-            />
-            <span>reported</span>
-          </label>
-          {draft.slow.length > 1 ? (
-            <button
-              type="button"
-              className="button slight"
-              aria-label={`Remove lead ${i + 1}`}
-              onClick={() => onChange(removeSlowLead(draft, row.id))}
-            >
-              Remove
-            </button>
-          ) : null}
-        </LeadChooser>
-      ))}
+      <SlowRows draft={draft} channels={channels} errors={errors} onChange={onChange} />
       {draft.slow.length < Math.min(MOST_SLOW_LEADS, 2 * channels.length) ? (
         <button
           type="button"
@@ -156,6 +115,44 @@ function SlowLeads(props: LeadsProps & { readonly before: Roles }) {
       ) : null}
     </fieldset>
   );
+}
+
+function SlowRows({ draft, channels, errors, onChange }: LeadsProps) {
+  const reasons = useAnalysis((state) => state.reasons);
+  const change = (next: LeadDraft) =>
+    onChange({ ...draft, slow: draft.slow.map((row) => (row.id === next.id ? next : row)) });
+  return draft.slow.map((row, i) => (
+    <LeadChooser
+      key={row.id}
+      name={`Lead ${i + 1}`}
+      draft={row}
+      channels={channels}
+      optional={false}
+      error={errors?.slow[row.id] ?? null}
+      reason={reasons?.slow[i] ?? ''}
+      onChange={change}
+    >
+      <label className="tick">
+        <input
+          type="radio"
+          name="reported"
+          checked={row.id === draft.reported}
+          onChange={() => onChange({ ...draft, reported: row.id })}
+        />
+        <span>reported</span>
+      </label>
+      {draft.slow.length > 1 ? (
+        <button
+          type="button"
+          className="button slight"
+          aria-label={`Remove lead ${i + 1}`}
+          onClick={() => onChange(removeSlowLead(draft, row.id))}
+        >
+          Remove
+        </button>
+      ) : null}
+    </LeadChooser>
+  ));
 }
 
 function wantsReason(draft: RolesDraft, before: Roles, channels: readonly Channel[]): boolean {

@@ -4,21 +4,15 @@ import { formatClock } from '../units/time';
 import { useAnalysis, useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { Field, TextArea, Tick } from './fields';
+import { FormActions } from './form-actions';
+import { meaningsNow, readSign, type SignDraft, type SignErrors, signDraft } from './sign-draft';
 import { localWords } from './study-words';
 
-type Meaning = Signature['meaning'];
-
-const MEANING_WORDS: Readonly<Record<Meaning, string>> = {
+const MEANING_WORDS: Readonly<Record<Signature['meaning'], string>> = {
   prepared: 'prepared: edited and ready to be read',
   read: 'read: looked at and concluded',
   amended: 'amended: changed after it was signed; the former stays',
 };
-
-/** The meanings a signature can have now: after a study was read, only an amendment. */
-export function meaningsNow(signed: readonly Signature[]): readonly Meaning[] {
-  const readBefore = signed.some((one) => one.meaning !== 'prepared');
-  return readBefore ? ['amended'] : ['prepared', 'read'];
-}
 
 /** Signing: confirm who it is, say what the signature means, keep the figures as they are. */
 export function SignDialog() {
@@ -28,30 +22,18 @@ export function SignDialog() {
 
 function SignForm({ state }: { readonly state: SessionState }) {
   const { controller, shell, session } = useApp();
-  const meanings = meaningsNow(state.signed);
-  const [meaning, setMeaning] = useState(meanings[0]);
-  const [name, setName] = useState(session.getState().reviewer);
-  const [reason, setReason] = useState('');
-  const [notes, setNotes] = useState(state.notes);
-  const [conclusion, setConclusion] = useState(state.conclusion);
-  const [sure, setSure] = useState(false);
+  const [draft, setDraft] = useState(() => signDraft(state, session.getState().reviewer));
   const [tried, setTried] = useState(false);
   const edit = useSession((now) => now.session?.log.length ?? 0);
   const computed = useAnalysis((now) => (now.findings ? now.edit : -1));
   const current = computed === edit;
-  const wantsReason = meaning === 'amended' && reason.trim() === '';
+  const { request, errors } = readSign(draft);
   const close = () => shell.getState().closeDialog();
   const sign = () => {
     setTried(true);
-    if (!current || !sure || wantsReason || name.trim() === '') return;
+    if (!current || !request) return;
     close();
-    controller.sign({
-      meaning,
-      name: name.trim(),
-      reason: meaning === 'amended' ? reason.trim() : '',
-      notes,
-      conclusion,
-    });
+    controller.sign(request);
   };
   return (
     <Dialog
@@ -59,65 +41,94 @@ function SignForm({ state }: { readonly state: SessionState }) {
       subtitle="The figures, settings and words are kept as they stand now. The name is typed, not authenticated."
       onClose={close}
       onSubmit={sign}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Not now
-          </button>
-          <button type="submit" className="button strong" disabled={!current}>
-            Sign
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Not now" go="Sign" onStay={close} disabled={!current} />}
     >
       {current ? null : (
         <p className="tab" role="status">
           Figures are of an earlier edit. Wait until they belong to edit {edit}.
         </p>
       )}
+      <SignFields
+        state={state}
+        draft={draft}
+        errors={tried ? errors : NO_ERRORS}
+        onChange={(parts) => setDraft({ ...draft, ...parts })}
+      />
+    </Dialog>
+  );
+}
+
+const NO_ERRORS: SignErrors = { sure: null, reason: null, name: null };
+
+interface SignFieldsProps {
+  readonly state: SessionState;
+  readonly draft: SignDraft;
+  readonly errors: SignErrors;
+  readonly onChange: (parts: Partial<SignDraft>) => void;
+}
+
+function SignFields({ state, draft, errors, onChange }: SignFieldsProps) {
+  return (
+    <>
       <Tick
         label={
           <>
             This is the study <strong>{state.study.code}</strong>, {studyWords(state)}.
           </>
         }
-        checked={sure}
-        onChange={setSure}
+        checked={draft.sure}
+        onChange={(sure) => onChange({ sure })}
       />
-      {tried && !sure ? <p className="field-error">Confirm which study it is.</p> : null}
-      <fieldset className="choices">
-        <legend>What the signature means</legend>
-        {meanings.map((one) => (
-          <label key={one} className="tick">
-            <input
-              type="radio"
-              name="meaning"
-              checked={meaning === one}
-              onChange={() => setMeaning(one)}
-            />
-            <span>{MEANING_WORDS[one]}</span>
-          </label>
-        ))}
-      </fieldset>
-      {meaning === 'amended' ? (
+      {errors.sure ? <p className="field-error">{errors.sure}</p> : null}
+      <Meanings state={state} draft={draft} onChange={onChange} />
+      {draft.meaning === 'amended' ? (
         <Field
           label="Reason for the amendment"
-          value={reason}
-          onChange={setReason}
+          value={draft.reason}
+          onChange={(reason) => onChange({ reason })}
           required
-          error={tried && wantsReason ? 'Say why it is amended.' : null}
+          error={errors.reason}
         />
       ) : null}
-      <TextArea label="Remarks" value={notes} onChange={setNotes} rows={3} />
-      <TextArea label="Conclusion" value={conclusion} onChange={setConclusion} rows={3} />
+      <TextArea
+        label="Remarks"
+        value={draft.notes}
+        onChange={(notes) => onChange({ notes })}
+        rows={3}
+      />
+      <TextArea
+        label="Conclusion"
+        value={draft.conclusion}
+        onChange={(conclusion) => onChange({ conclusion })}
+        rows={3}
+      />
       <Field
         label="Name"
-        value={name}
-        onChange={setName}
+        value={draft.name}
+        onChange={(name) => onChange({ name })}
         required
-        error={tried && name.trim() === '' ? 'Type your name.' : null}
+        error={errors.name}
       />
-    </Dialog>
+    </>
+  );
+}
+
+function Meanings({ state, draft, onChange }: Omit<SignFieldsProps, 'errors'>) {
+  return (
+    <fieldset className="choices">
+      <legend>What the signature means</legend>
+      {meaningsNow(state.signed).map((meaning) => (
+        <label key={meaning} className="tick">
+          <input
+            type="radio"
+            name="meaning"
+            checked={draft.meaning === meaning}
+            onChange={() => onChange({ meaning })}
+          />
+          <span>{MEANING_WORDS[meaning]}</span>
+        </label>
+      ))}
+    </fieldset>
   );
 }
 

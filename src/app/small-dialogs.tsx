@@ -4,6 +4,7 @@ import { useApp } from './app-context';
 import type { PageActs } from './command';
 import { Dialog } from './dialog';
 import { Choice, Field } from './fields';
+import { FormActions } from './form-actions';
 import { readNumber } from './number-field';
 
 /** Asks who edits, before the first edit; the name goes into the log. */
@@ -25,16 +26,7 @@ export function ReviewerDialog({ act }: { readonly act: () => void }) {
         close();
         act();
       }}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Not now
-          </button>
-          <button type="submit" className="button strong">
-            Go on
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Not now" go="Go on" onStay={close} />}
     >
       <Field
         label="Name or initials of the reviewer"
@@ -90,6 +82,11 @@ export function TextReadingDialog({ file, failure }: TextReadingProps) {
   const read =
     rate.trim() === '' ? null : readNumber(rate, { least: 0.5, most: 100_000, unit: 'Hz' });
   const nothing = rate.trim() === '' && unit === '';
+  const wrong = nothing
+    ? 'Type the rate, or choose the unit below.'
+    : read?.ok === false
+      ? read.error
+      : null;
   const close = () => shell.getState().closeDialog();
   return (
     <Dialog
@@ -99,23 +96,14 @@ export function TextReadingDialog({ file, failure }: TextReadingProps) {
       onClose={close}
       onSubmit={() => {
         setTried(true);
-        if (nothing || (read && !read.ok)) return;
+        if (wrong !== null) return;
         close();
         void controller.openFile(file, {
           rateHz: read?.ok ? read.value : null,
           unit: unit === '' ? null : unit,
         });
       }}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Do not open
-          </button>
-          <button type="submit" className="button strong">
-            Open again
-          </button>
-        </>
-      }
+      actions={<FormActions stay="Do not open" go="Open again" onStay={close} />}
     >
       <FailureWords failure={failure} />
       <Field
@@ -126,13 +114,7 @@ export function TextReadingDialog({ file, failure }: TextReadingProps) {
         size="short"
         inputMode="decimal"
         autoFocus
-        error={
-          tried && read && !read.ok
-            ? read.error
-            : tried && nothing
-              ? 'Type the rate, or choose the unit below.'
-              : null
-        }
+        error={tried ? wrong : null}
       />
       <Choice label="Unit of the values" value={unit} options={UNITS} onChange={setUnit} />
     </Dialog>

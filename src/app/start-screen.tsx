@@ -7,7 +7,6 @@ import { localWords } from './study-words';
 
 /** The page before a study is open: what the program is for, the ways in, the cautions. */
 export function StartScreen({ parts }: { readonly parts: CommandParts }) {
-  const { page, controller } = parts;
   return (
     <main className="start">
       <div className="start-ways">
@@ -21,32 +20,7 @@ export function StartScreen({ parts }: { readonly parts: CommandParts }) {
             the figures of both into one signed report.
           </p>
         </section>
-        <section aria-labelledby="start-open">
-          <h3 id="start-open">Open a recording</h3>
-          <p>
-            EDF, EDF+ or delimited text. Choose a file, or drop one anywhere on this page. {PRIVACY}
-          </p>
-          <p className="button-row">
-            <button type="button" className="button strong" onClick={page.chooseFile}>
-              Open a file…
-            </button>
-            <button type="button" className="button" onClick={page.chooseSession}>
-              Open a session file…
-            </button>
-          </p>
-        </section>
-        <section aria-labelledby="start-demo">
-          <h3 id="start-demo">Look round first</h3>
-          <p>
-            The demo study is invented: 90 minutes that the program generates, of nobody. It opens
-            like any file and says everywhere that it is made up.
-          </p>
-          <p className="button-row">
-            <button type="button" className="button" onClick={() => void controller.openDemo()}>
-              Try the demo study
-            </button>
-          </p>
-        </section>
+        <OpenWays parts={parts} />
         <KeptSessions />
       </div>
       <section className="start-cautions" aria-labelledby="start-cautions">
@@ -58,6 +32,40 @@ export function StartScreen({ parts }: { readonly parts: CommandParts }) {
         </ul>
       </section>
     </main>
+  );
+}
+
+function OpenWays({ parts }: { readonly parts: CommandParts }) {
+  const { page, controller } = parts;
+  return (
+    <>
+      <section aria-labelledby="start-open">
+        <h3 id="start-open">Open a recording</h3>
+        <p>
+          EDF, EDF+ or delimited text. Choose a file, or drop one anywhere on this page. {PRIVACY}
+        </p>
+        <p className="button-row">
+          <button type="button" className="button strong" onClick={page.chooseFile}>
+            Open a file…
+          </button>
+          <button type="button" className="button" onClick={page.chooseSession}>
+            Open a session file…
+          </button>
+        </p>
+      </section>
+      <section aria-labelledby="start-demo">
+        <h3 id="start-demo">Look round first</h3>
+        <p>
+          The demo study is invented: 90 minutes that the program generates, of nobody. It opens
+          like any file and says everywhere that it is made up.
+        </p>
+        <p className="button-row">
+          <button type="button" className="button" onClick={() => void controller.openDemo()}>
+            Try the demo study
+          </button>
+        </p>
+      </section>
+    </>
   );
 }
 

@@ -117,47 +117,59 @@ function SpanRow({ span, selected, session, view, onEdit }: SpanRowProps) {
         <span className="quiet small">{span.origin}</span>
       </button>
       {selected ? (
-        <div className="span-edit">
-          <label>
-            <span>for</span>
-            <select
-              value={span.target}
-              onChange={(event) => {
-                const target = SPAN_TARGETS.find((one) => one === event.target.value);
-                if (target) change({ target });
-              }}
-            >
-              {SPAN_TARGETS.map((target) => (
-                <option key={target}>{target}</option>
-              ))}
-            </select>
-          </label>
-          <label>
-            <span>cause</span>
-            <select
-              value={span.cause}
-              onChange={(event) => {
-                const cause = SPAN_CAUSES.find((one) => one === event.target.value);
-                if (cause) change({ cause });
-              }}
-            >
-              {SPAN_CAUSES.map((cause) => (
-                <option key={cause}>{cause}</option>
-              ))}
-            </select>
-          </label>
-          <button type="button" className="button slight" onClick={remove}>
-            Remove
-          </button>
-          <NoteField key={span.note} note={span.note} onCommit={(note) => change({ note })} />
-          <p className="small quiet">
-            {span.lead === null ? 'On all leads.' : `On lead ${span.lead}.`}
-          </p>
-        </div>
+        <SpanEdit span={span} onChange={change} onRemove={remove} />
       ) : span.note ? (
         <p className="small quiet span-note">{span.note}</p>
       ) : null}
     </li>
+  );
+}
+
+interface SpanEditProps {
+  readonly span: Span;
+  readonly onChange: (parts: Partial<Omit<Span, 'id'>>) => void;
+  readonly onRemove: () => void;
+}
+
+function SpanEdit({ span, onChange, onRemove }: SpanEditProps) {
+  return (
+    <div className="span-edit">
+      <label>
+        <span>for</span>
+        <select
+          value={span.target}
+          onChange={(event) => {
+            const target = SPAN_TARGETS.find((one) => one === event.target.value);
+            if (target) onChange({ target });
+          }}
+        >
+          {SPAN_TARGETS.map((target) => (
+            <option key={target}>{target}</option>
+          ))}
+        </select>
+      </label>
+      <label>
+        <span>cause</span>
+        <select
+          value={span.cause}
+          onChange={(event) => {
+            const cause = SPAN_CAUSES.find((one) => one === event.target.value);
+            if (cause) onChange({ cause });
+          }}
+        >
+          {SPAN_CAUSES.map((cause) => (
+            <option key={cause}>{cause}</option>
+          ))}
+        </select>
+      </label>
+      <button type="button" className="button slight" onClick={onRemove}>
+        Remove
+      </button>
+      <NoteField key={span.note} note={span.note} onCommit={(note) => onChange({ note })} />
+      <p className="small quiet">
+        {span.lead === null ? 'On all leads.' : `On lead ${span.lead}.`}
+      </p>
+    </div>
   );
 }
 

@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { LIBRARIES } from '../../src/app/libraries';
 import { createShellStore } from '../../src/app/shell-store';
-import { meaningsNow } from '../../src/app/sign-dialog';
+import { meaningsNow, readSign } from '../../src/app/sign-draft';
 import { hasUnfiledWork, keptWords, localWords } from '../../src/app/study-words';
 
 /** A Storage over a map, as browsers have it. */
@@ -119,6 +119,35 @@ describe('signing', () => {
     expect(meaningsNow([signed('prepared')])).toEqual(['prepared', 'read']);
     expect(meaningsNow([signed('prepared'), signed('read')])).toEqual(['amended']);
     expect(meaningsNow([signed('read'), signed('amended')])).toEqual(['amended']);
+  });
+});
+
+describe('a signature', () => {
+  const filled = {
+    meaning: 'read',
+    name: ' Ada ',
+    reason: 'left over',
+    notes: '',
+    conclusion: 'steady',
+    sure: true,
+  } as const;
+
+  it('wants the study confirmed and a name', () => {
+    expect(readSign(filled).request).toEqual({
+      meaning: 'read',
+      name: 'Ada',
+      reason: '',
+      notes: '',
+      conclusion: 'steady',
+    });
+    expect(readSign({ ...filled, sure: false }).request).toBeNull();
+    expect(readSign({ ...filled, name: ' ' }).errors.name).not.toBeNull();
+  });
+
+  it('wants a reason where it amends', () => {
+    const amended = { ...filled, meaning: 'amended' } as const;
+    expect(readSign({ ...amended, reason: ' ' }).errors.reason).not.toBeNull();
+    expect(readSign(amended).request?.reason).toBe('left over');
   });
 });
 
