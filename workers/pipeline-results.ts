@@ -26,6 +26,7 @@ import type { Analysis, HeartResults, ReviewInputs, SeparationFacts } from './an
 import { changesOf, movementFigure, type Part, partsOf, withholdOrgan } from './findings';
 import type { Job } from './job';
 import { identity, lastEqual, type Remembered, remember } from './remember';
+import { sameBeats, sameBreathing } from './same-series';
 
 /** Everything the figures are computed from. */
 export interface ResultInputs {
@@ -288,20 +289,3 @@ function findingsOf(
 
 const channelsOf = (recording: Recording, lead: Lead) =>
   leadChannels(lead).map((index) => recording.channels[index]);
-
-function sameBeats(a: BeatList, b: BeatList): boolean {
-  return (
-    sameArray(a.ticks, b.ticks) &&
-    sameArray(a.classes, b.classes) &&
-    sameArray(a.origins, b.origins)
-  );
-}
-
-const sameBreathing = (a: BreathingSeries, b: BreathingSeries): boolean =>
-  a.from === b.from && sameArray(a.centresS, b.centresS) && sameArray(a.perMinute, b.perMinute);
-
-function sameArray(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
-  if (a.length !== b.length) return false;
-  for (let i = 0; i < a.length; i += 1) if (!Object.is(a[i], b[i])) return false;
-  return true;
-}

@@ -1,0 +1,21 @@
+import type { BeatList } from '../src/recording/beat';
+import type { BreathingSeries } from '../src/recording/heart-series';
+
+/** True where both lists hold the same beats. */
+export function sameBeats(a: BeatList, b: BeatList): boolean {
+  return (
+    sameArray(a.ticks, b.ticks) &&
+    sameArray(a.classes, b.classes) &&
+    sameArray(a.origins, b.origins)
+  );
+}
+
+/** True where both series say the same, NaN being equal to itself. */
+export const sameBreathing = (a: BreathingSeries, b: BreathingSeries): boolean =>
+  a.from === b.from && sameArray(a.centresS, b.centresS) && sameArray(a.perMinute, b.perMinute);
+
+function sameArray(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
+  if (a.length !== b.length) return false;
+  for (let i = 0; i < a.length; i += 1) if (!Object.is(a[i], b[i])) return false;
+  return true;
+}
