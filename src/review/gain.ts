@@ -39,30 +39,48 @@ export function middleUv({ low, high }: LowHigh, from: number, to: number): numb
   return count === 0 ? 0 : sum / count;
 }
 
-/** Greatest distance of the columns from `centreUv` over [from, to); NaN where there is none. */
+const COLUMNS_SHARE = 0.9;
+const WINDOWS_SHARE = 0.8;
+const MARGIN = 1.15;
+
+/** The value that a share of some values do not exceed; NaN of none. Sorts in place. */
+function atShare(values: number[], share: number): number {
+  values.sort((a, b) => a - b);
+  return values.length === 0 ? Number.NaN : values[Math.floor(share * (values.length - 1))];
+}
+
+/** How far nine columns of ten stay from `centreUv` over [from, to); NaN where there is none. */
 function reachUv({ low, high }: LowHigh, from: number, to: number, centreUv: number): number {
-  let reach = Number.NaN;
+  const reaches: number[] = [];
   for (let i = from; i < to; i += 1) {
     const far = Math.max(high[i] - centreUv, centreUv - low[i]);
-    if (!Number.isNaN(far) && !(far <= reach)) reach = far;
+    if (!Number.isNaN(far)) reaches.push(far);
   }
-  return reach;
+  return atShare(reaches, COLUMNS_SHARE);
+}
+
+/** Middle of the columns' middles over [from, to) that a short artefact does not move; 0 where there is none. */
+function medianUv({ low, high }: LowHigh, from: number, to: number): number {
+  const middles: number[] = [];
+  for (let i = from; i < to; i += 1) {
+    const middle = (low[i] + high[i]) / 2;
+    if (!Number.isNaN(middle)) middles.push(middle);
+  }
+  return middles.length === 0 ? 0 : atShare(middles, 0.5);
 }
 
 /**
- * A gain in uV for a whole study that is looked at in windows of `perWindow` columns: four windows of five fit the row, so
- * that a spoiled stretch does not make everything else small. `centred` rows are drawn about their mean in view, the others
- * about zero.
+ * A gain in uV for a whole study that is looked at in windows of `perWindow` columns: with a little to spare it holds nine
+ * columns of ten in four windows of five, so that spoiled stretches do not make everything else small. `centred` rows are
+ * drawn about their middle in view, the others about zero.
  */
 export function fittedGain(columns: LowHigh, perWindow: number, centred: boolean): number {
   const width = Math.max(1, Math.round(perWindow));
   const reaches: number[] = [];
   for (let from = 0; from < columns.low.length; from += width) {
     const to = Math.min(columns.low.length, from + width);
-    const reach = reachUv(columns, from, to, centred ? middleUv(columns, from, to) : 0);
+    const reach = reachUv(columns, from, to, centred ? medianUv(columns, from, to) : 0);
     if (!Number.isNaN(reach)) reaches.push(reach);
   }
-  if (reaches.length === 0) return 100;
-  reaches.sort((a, b) => a - b);
-  return gainFor(reaches[Math.floor(0.8 * (reaches.length - 1))]);
+  return reaches.length === 0 ? 100 : gainFor(MARGIN * atShare(reaches, WINDOWS_SHARE));
 }

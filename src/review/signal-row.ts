@@ -1,5 +1,6 @@
 import type uPlot from 'uplot';
 import type { Columns } from '../../workers/analysis-api';
+import type { Interval } from '../recording/span';
 import { firstAtOrAfter, traceColumns } from './column-path';
 import { ColumnsFeed } from './columns-feed';
 import { crestsPerMinute } from './crest-counts';
@@ -133,16 +134,20 @@ export class SignalRowView implements RowView {
     return path;
   }
 
+  private unclean(): readonly Interval[] {
+    const { separation } = this.context.stores.analysis.getState();
+    return separation.find((one) => one.lead === this.row.leadKey)?.unclean ?? [];
+  }
+
   private shadeUnclean(u: uPlot): void {
     if (this.row.signal === 'recorded') return;
-    const { separation } = this.context.stores.analysis.getState();
-    const facts = separation.find((one) => one.lead === this.row.leadKey);
-    if (!facts) return;
+    const unclean = this.unclean();
+    if (unclean.length === 0) return;
     const { x0, perS } = plotScale(u);
     u.ctx.save();
     u.ctx.globalAlpha = 0.6;
     u.ctx.fillStyle = this.context.tokens().rule;
-    for (const { fromS, toS } of facts.unclean)
+    for (const { fromS, toS } of unclean)
       if (toS > this.window.fromS && fromS < this.window.toS)
         u.ctx.fillRect(x0 + fromS * perS, u.bbox.top, (toS - fromS) * perS, u.bbox.height);
     u.ctx.restore();
@@ -181,7 +186,7 @@ export class SignalRowView implements RowView {
     u.ctx.textAlign = 'center';
     u.ctx.textBaseline = 'top';
     const { durationS } = this.context.stores.view.getState();
-    for (const { atS, count } of crestsPerMinute(crests, this.window, durationS))
+    for (const { atS, count } of crestsPerMinute(crests, this.window, durationS, this.unclean()))
       u.ctx.fillText(String(count), x0 + atS * perS, u.bbox.top + ratio);
   }
 

@@ -18,22 +18,28 @@ describe('the gain of a trace row', () => {
     expect(GAINS_UV).toEqual([...GAINS_UV].sort((a, b) => a - b));
   });
 
-  it('fits a steady wave exactly', () => {
-    const low = Array.from({ length: 100 }, () => -140);
-    const high = Array.from({ length: 100 }, () => 90);
-    expect(fittedGain({ low, high }, 10, false)).toBe(150);
+  const steady = (count: number, uv: number) => Array.from({ length: count }, () => uv);
+
+  it('fits a steady wave with a little to spare', () => {
+    expect(fittedGain({ low: steady(100, -125), high: steady(100, 90) }, 10, false)).toBe(150);
   });
 
-  it('is not made small by one spoiled stretch', () => {
-    const high = Array.from({ length: 100 }, (_, i) => (i >= 40 && i < 50 ? 5000 : 100));
-    expect(fittedGain({ low: high.map((v) => -v), high }, 10, false)).toBe(100);
+  it('is not made small by one spoiled stretch, nor by a short artefact in every window', () => {
+    const stretch = steady(100, 80).map((v, i) => (i >= 40 && i < 50 ? 5000 : v));
+    const often = steady(100, 80).map((v, i) => (i % 20 === 3 ? 5000 : v));
+    for (const high of [stretch, often])
+      for (const centred of [true, false])
+        expect(fittedGain({ low: high.map((v) => -v), high }, 20, centred)).toBe(100);
+  });
+
+  it('shows R peaks that stand in one column of five', () => {
+    const high = steady(300, 10).map((v, i) => (i % 5 === 0 ? 170 : v));
+    expect(fittedGain({ low: steady(300, -10), high }, 60, false)).toBe(200);
   });
 
   it('does not count a standing offset of a recorded lead', () => {
-    const wave = (i: number) => 20_000 + 80 * Math.sin(i);
-    const low = Array.from({ length: 200 }, (_, i) => wave(i) - 5);
-    const high = low.map((v) => v + 10);
-    expect(fittedGain({ low, high }, 40, true)).toBe(100);
+    const low = Array.from({ length: 200 }, (_, i) => 20_000 + 80 * Math.sin(i) - 5);
+    expect(fittedGain({ low, high: low.map((v) => v + 10) }, 40, true)).toBe(100);
   });
 
   it('leaves gaps out of account', () => {

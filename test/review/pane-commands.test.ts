@@ -214,7 +214,7 @@ describe('gains', () => {
       columns: async (request) => ({
         request,
         timesS: Float64Array.of(1, 2),
-        low: Float32Array.of(-60, -65),
+        low: Float32Array.of(-60, -60),
         high: Float32Array.of(30, 20),
       }),
     });

@@ -25,13 +25,23 @@ const epoch = (fromS: number, parts: Partial<Epoch> = {}): Epoch => ({
 describe('crests counted by eye', () => {
   it('gives three a minute for a wave of three cycles a minute', () => {
     const crests = Array.from({ length: 60 }, (_, i) => 5 + 20 * i);
-    const counts = crestsPerMinute(crests, { fromS: 30, toS: 400 }, 1200);
+    const counts = crestsPerMinute(crests, { fromS: 30, toS: 400 }, 1200, []);
     expect(counts.map((one) => one.atS)).toEqual([90, 150, 210, 270, 330]);
     expect(counts.every((one) => one.count === 3)).toBe(true);
   });
 
+  it('leaves out minutes that the filter could not fill cleanly', () => {
+    const counts = crestsPerMinute([70], { fromS: 0, toS: 180 }, 180, [{ fromS: 0, toS: 50 }]);
+    expect(counts).toEqual([
+      { atS: 90, count: 1 },
+      { atS: 150, count: 0 },
+    ]);
+  });
+
   it('does not count a minute that the study cuts off', () => {
-    expect(crestsPerMinute([5], { fromS: 0, toS: 120 }, 90).map((one) => one.atS)).toEqual([30]);
+    expect(crestsPerMinute([5], { fromS: 0, toS: 120 }, 90, []).map((one) => one.atS)).toEqual([
+      30,
+    ]);
   });
 });
 
