@@ -1,8 +1,5 @@
-import type { Phase } from '../src/recording/phase';
+import { FED_AFTER_MEAL_S, type Phase } from '../src/recording/phase';
 import type { Annotation } from '../src/recording/recording';
-
-/** Time left out after a meal before the fed phase is proposed to begin (common practice, no single source). */
-export const AFTER_MEAL_S = 120;
 
 type Mark = 'fasting' | 'meal' | 'meal-end' | 'fed';
 
@@ -48,11 +45,11 @@ export function phasesFromAnnotations(
     if (i === 0 && mark === 'meal' && fromS > 0) add('fasting', 0, fromS);
     if (mark === 'meal') meals += 1;
     if (mark === 'meal-end') {
-      if (next?.mark !== 'fed') add('fed', fromS + AFTER_MEAL_S, next?.fromS ?? durationS);
+      if (next?.mark !== 'fed') add('fed', fromS + FED_AFTER_MEAL_S, next?.fromS ?? durationS);
     } else add(mark, fromS, untilS);
     const mealEndsUnmarked = mark === 'meal' && lasts !== null && lasts > 0;
     if (mealEndsUnmarked && next?.mark !== 'fed' && next?.mark !== 'meal-end')
-      add('fed', untilS + AFTER_MEAL_S, next?.fromS ?? durationS);
+      add('fed', untilS + FED_AFTER_MEAL_S, next?.fromS ?? durationS);
   });
   return withoutOverlap(phases);
 }

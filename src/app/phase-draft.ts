@@ -1,9 +1,6 @@
-import { isMeal, type Phase } from '../recording/phase';
+import { FED_AFTER_MEAL_S, isMeal, type Phase } from '../recording/phase';
 import type { TimedNote } from '../session/document';
 import { formatClock, parseClock } from '../units/time';
-
-/** Seconds after a meal's end at which its fed phase is proposed to begin: what was swallowed last still moves the trace. */
-export const FED_AFTER_MEAL_S = 120;
 
 /** A phase as it is being typed. */
 export interface PhaseRow {

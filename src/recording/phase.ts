@@ -17,3 +17,6 @@ export function phasesOrWhole(phases: readonly Phase[], durationS: Seconds): rea
 export const isMeal = (phase: Phase): boolean => /^meal(-\d+)?$/.test(phase.name);
 export const isFed = (phase: Phase): boolean => /^fed(-\d+)?$/.test(phase.name);
 export const isFasting = (phase: Phase): boolean => phase.name === 'fasting';
+
+/** Time after a meal before the fed phase is proposed to begin (common practice, no single source). */
+export const FED_AFTER_MEAL_S: Seconds = 120;
