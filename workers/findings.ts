@@ -54,7 +54,7 @@ function changeOf(before: Figures, after: Figures, { key, unit }: FigureDefiniti
   if (from === null || to === null) return withheld('both phases need the figure as a number');
   return numberFigure(
     to - from,
-    unit === 'dB' ? `power × ${pow(10, (to - from) / 10).toFixed(1)}` : null,
+    unit === 'dB' ? `× ${pow(10, (to - from) / 10).toFixed(1)}` : null,
   );
 }
 

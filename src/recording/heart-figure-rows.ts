@@ -150,7 +150,7 @@ export const HEART_ROWS: readonly FigureRow[] = [
     source: 'ANSI/AAMI EC57 classes',
     settings: beats,
   }),
-  figureRow('heart_kept_min', 'Kept, heart', 'min', 1, {
+  figureRow('heart_kept_min', 'Kept', 'min', 1, {
     main: true,
     change: 'none',
     definition: 'Minutes of the phase on the heart lead that no spoiled span for the heart covers.',

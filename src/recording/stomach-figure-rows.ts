@@ -70,19 +70,19 @@ export const STOMACH_ROWS: readonly FigureRow[] = [
     source: OWN_RULE,
     settings: bands,
   }),
-  figureRow('dp_mean_spectrum_db', 'DP, mean spectrum', 'dB', 1, {
+  figureRow('dp_mean_spectrum_db', 'Power, DP', 'dB', 1, {
     main: true,
     definition:
       'Power density at the DF of the phase’s mean spectrum, dB re 1 µV²/Hz. The change is the fed-to-fasting power ratio, each at its own DF.',
     source: 'Chen 1996 (concept)',
     settings: epochs,
   }),
-  figureRow('df_mean_spectrum_cpm', 'DF, mean spectrum', 'cpm', 2, {
+  figureRow('df_mean_spectrum_cpm', 'DF of mean spectrum', 'cpm', 2, {
     definition: 'Dominant frequency of the mean of the kept epochs’ spectra.',
     source: OWN_RULE,
     settings: epochs,
   }),
-  figureRow('dp_median_epoch_db', 'DP, median epoch', 'dB', 1, {
+  figureRow('dp_median_epoch_db', 'DP, median', 'dB', 1, {
     definition:
       'Median over the kept epochs with a rhythm of the power density at DF, dB re 1 µV²/Hz. The change is the median-epoch power ratio.',
     source: OWN_RULE,
@@ -105,7 +105,7 @@ export const STOMACH_ROWS: readonly FigureRow[] = [
     source: 'name: Bradshaw 2016, Neurogastroenterol Motil',
     settings: bands,
   }),
-  figureRow('stomach_kept_min', 'Kept, stomach', 'min', 1, {
+  figureRow('stomach_kept_min', 'Kept', 'min', 1, {
     main: true,
     change: 'none',
     definition:

@@ -8,7 +8,10 @@ import {
   type FigureWords,
   figureWords,
   NOT_COMPARED,
+  type SharedWords,
+  sharedMarks,
   sharedWords,
+  smallWords,
   stretchWords,
 } from './findings-words';
 
@@ -119,6 +122,8 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
   const shared = phases.map((phase) =>
     sharedWords(definitions.map((one) => phase.figures[one.key])),
   );
+  const marksOf = ({ key }: FigureDefinition) =>
+    sharedMarks(phases.map((phase) => phase.figures[key]));
   const changes = definitions.map((one) => changeOf(findings, one.key, left, right));
   const sharedChange = sharedWords(changes);
   const notes = [
@@ -140,12 +145,12 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
       {notes.length > 0 ? <NotesRow notes={notes} columns={right ? 4 : 2} /> : null}
       {definitions.map((definition, row) => (
         <tr key={definition.key}>
-          <RowHead definition={definition} />
+          <RowHead definition={definition} marks={marksOf(definition)} />
           {phases.map((phase, i) => (
             <FigureCell
               key={i === 0 ? 'left' : 'right'}
               words={figureWords(phase.figures[definition.key], definition)}
-              unsaid={[shared[i].basis, shared[i].reason]}
+              said={{ ...shared[i], marks: marksOf(definition) }}
               about={`${definition.label}, ${phase.name}`}
               onOpen={() => onFigure(definition.key, phase.name)}
             />
@@ -153,7 +158,7 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
           {right ? (
             <FigureCell
               words={changeWords(changes[row], definition)}
-              unsaid={[NOT_COMPARED, sharedChange.reason]}
+              said={{ basis: NOT_COMPARED, reason: sharedChange.reason, marks: [] }}
               about={`${definition.label}, change`}
               onOpen={() => onFigure(definition.key, right.name)}
             />
@@ -193,13 +198,20 @@ function NotesRow({ notes, columns }: NotesRowProps) {
   );
 }
 
-function RowHead({ definition }: { readonly definition: FigureDefinition }) {
+interface RowHeadProps {
+  readonly definition: FigureDefinition;
+  /** Marks that hold for the row in every phase. */
+  readonly marks: readonly string[];
+}
+
+function RowHead({ definition, marks }: RowHeadProps) {
   const { label, unit } = definition;
   return (
     <th scope="row">
       <span className={`organ-square ${squareOf(definition)}`} aria-hidden="true" />
       {label}
       {unit ? <span className="unit"> {shortUnit(unit)}</span> : null}
+      {marks.length > 0 ? <span className="figure-small">{marks.join('; ')}</span> : null}
     </th>
   );
 }
@@ -213,14 +225,15 @@ const squareOf = ({ key, organ }: FigureDefinition): string =>
 interface FigureCellProps {
   readonly words: FigureWords;
   /** Words said once above or plain to see: only read out here. */
-  readonly unsaid: readonly (string | null)[];
+  readonly said: SharedWords & { readonly marks: readonly string[] };
   readonly about: string;
   readonly onOpen: () => void;
 }
 
-function FigureCell({ words, unsaid, about, onOpen }: FigureCellProps) {
-  const small = words.small.filter((line) => !unsaid.includes(line));
-  const heard = words.small.filter((line) => unsaid.includes(line));
+function FigureCell({ words, said, about, onOpen }: FigureCellProps) {
+  const own = words.small.filter((line) => !said.marks.includes(line));
+  const small = smallWords(own, said);
+  const heard = words.small.filter((line) => !small.includes(line));
   return (
     <td>
       <button

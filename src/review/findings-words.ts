@@ -24,10 +24,40 @@ export function sharedWords(values: readonly (FigureValue | undefined)[]): Share
   const bases: string[] = [];
   const reasons: string[] = [];
   for (const value of values) {
-    if (value?.kind === 'number' && value.basis !== null) bases.push(value.basis);
+    if (value?.kind === 'number' && value.basis !== null) bases.push(wholeOf(value.basis));
     if (value?.kind === 'withheld') reasons.push(value.reason);
   }
   return { basis: mostUsed(bases, 2), reason: mostUsed(reasons, 3) };
+}
+
+const PART_OF = /^(\d+) of (\d+ \D+)$/;
+
+/** What a basis counts in all: "22 of 27 epochs" stands on 27 epochs. */
+const wholeOf = (basis: string): string => PART_OF.exec(basis)?.[2] ?? basis;
+
+/**
+ * The small lines beneath a figure once the shared words stand above: a part without its unit ("22 of 27"), nothing where
+ * the whole or none of it is counted, and no word on epochs filled, which the figure's dialog says.
+ */
+export function smallWords(
+  small: readonly string[],
+  { basis, reason }: SharedWords,
+): readonly string[] {
+  return small.flatMap((line) => {
+    if (line === basis || line === reason || line.startsWith('filled in ')) return [];
+    const part = PART_OF.exec(line);
+    if (!part || part[2] !== basis) return [line];
+    return part[1] === '0' ? [] : [line.replace(/ \D+$/, '')];
+  });
+}
+
+/** Marks that every value of a row carries: said once at its name. */
+export function sharedMarks(values: readonly (FigureValue | undefined)[]): readonly string[] {
+  const marks = values.map((value) => (value && value.kind !== 'withheld' ? value.marks : []));
+  const [first = [], ...others] = marks;
+  return first.filter(
+    (mark) => !mark.startsWith('filled in ') && others.every((some) => some.includes(mark)),
+  );
 }
 
 /** The text that is there most often, null where none is there at least so often. */

@@ -6,7 +6,9 @@ import {
   changeWords,
   figureWords,
   firstPair,
+  sharedMarks,
   sharedWords,
+  smallWords,
   stretchWords,
 } from '../../src/review/findings-words';
 
@@ -111,5 +113,26 @@ describe('the phases shown at first', () => {
     expect(stretchWords(0, 1800)).toBe('0:00–0:30');
     expect(stretchWords(2520, 5399.6)).toBe('0:42–1:30');
     expect(stretchWords(90, 3600)).toBe('0:01:30–1:00');
+  });
+});
+
+describe('the small lines once shared words stand above', () => {
+  const shared = { basis: '27 epochs', reason: null };
+
+  it('a part of the whole is written short, and none of it not at all', () => {
+    expect(smallWords(['22 of 27 epochs'], shared)).toEqual(['22 of 27']);
+    expect(smallWords(['0 of 27 epochs'], shared)).toEqual([]);
+    expect(smallWords(['27 epochs'], shared)).toEqual([]);
+    expect(smallWords(['44 epochs'], shared)).toEqual(['44 epochs']);
+  });
+
+  it('percentages of one whole share that whole, whatever their parts', () => {
+    const values = [numberFigure(81, '22 of 27 epochs'), numberFigure(19, '5 of 27 epochs')];
+    expect(sharedWords(values).basis).toBe('27 epochs');
+  });
+
+  it('a mark that holds in every phase is said once at the row', () => {
+    const lf = [numberFigure(1, null, ['inside LF', 'slow']), numberFigure(2, null, ['inside LF'])];
+    expect(sharedMarks(lf)).toEqual(['inside LF']);
   });
 });

@@ -45,7 +45,7 @@ describe('change between fasting and fed', () => {
       phase('fed', { dp_mean_spectrum_db: numberFigure(51.1) }),
     ]);
     const power = changes.find(({ key }) => key === 'dp_mean_spectrum_db')?.value;
-    expect(power).toMatchObject({ kind: 'number', basis: 'power × 2.5' });
+    expect(power).toMatchObject({ kind: 'number', basis: '× 2.5' });
   });
 
   it('a figure withheld on one side has no change, and says so', () => {
