@@ -1,30 +1,64 @@
+import { cos } from '../numeric/elementary';
 import { crestPlace } from './sub-sample';
 
 /** Half of the window that a beat is timed by: its QRS complex. */
 export const TIMING_HALF_S = 0.1;
 
+/** Part of the window over which its weight falls to 0 at each end, so that what lies at its edge does not matter. */
+const EDGE_PART = 0.25;
+
 /** What a beat is timed with: an average with mean and slope taken out, so that the baseline does not move the time. */
 export interface Timer {
+  /** Weights of the matched filter; they sum to 0, and so do they times their place. */
   readonly weights: Float64Array;
+  /** How much each sample of the window counts, 0 to 1. */
+  readonly taper: Float64Array;
   readonly half: number;
-  readonly norm: number;
+  /** What the filter gives on the average itself. */
+  readonly power: number;
 }
 
 /** Timer from the 2 half + 1 samples of an average about its middle. */
 export function timerOf(average: Float64Array): Timer {
   const half = (average.length - 1) / 2;
-  let mean = 0;
-  let slope = 0;
-  let spread = 0;
-  for (let i = 0; i < average.length; i += 1) {
-    mean += average[i] / average.length;
-    slope += average[i] * (i - half);
-    spread += (i - half) ** 2;
-  }
-  const weights = average.map((value, i) => value - mean - (slope / spread) * (i - half));
+  const taper = average.map((_, i) => edgeWeight(Math.min(i, 2 * half - i) / (2 * half)));
+  const line = lineOf(average, taper, 0);
+  const weights = average.map(
+    (value, i) => taper[i] * (value - line.mean - line.slope * (i - half)),
+  );
+  return { weights, taper, half, power: line.rest };
+}
+
+/** Cosine fall to both ends (Tukey 1967), by distance from the nearer end as part of the window. */
+function edgeWeight(fromEnd: number): number {
+  return fromEnd >= EDGE_PART
+    ? 1
+    : 0.5 - 0.5 * cos((Math.PI * (fromEnd + 0.01)) / (EDGE_PART + 0.01));
+}
+
+/** Weighted line through a part of x, from `from` on, and the weighted sum of squares about it. */
+function lineOf(
+  x: Float64Array,
+  taper: Float64Array,
+  from: number,
+): { mean: number; slope: number; rest: number } {
+  const half = (taper.length - 1) / 2;
+  let weight = 1e-30;
+  let level = 0;
+  let tilt = 0;
+  let spread = 1e-30;
   let power = 0;
-  for (const weight of weights) power += weight * weight;
-  return { weights, half, norm: Math.sqrt(power) };
+  for (let i = Math.max(0, -from); i < taper.length && from + i < x.length; i += 1) {
+    const value = x[from + i];
+    const part = taper[i];
+    weight += part;
+    level += part * value;
+    tilt += part * value * (i - half);
+    spread += part * (i - half) ** 2;
+    power += part * value * value;
+  }
+  const rest = power - (level * level) / weight - (tilt * tilt) / spread;
+  return { mean: level / weight, slope: tilt / spread, rest: Math.max(0, rest) };
 }
 
 export interface Alignment {
@@ -44,7 +78,7 @@ const MARGIN = 8;
  * within `search` samples of `near`, read between samples. The row must reach half + search + 8 samples to both sides.
  */
 export function align(row: Float64Array, timer: Timer, near: number, search: number): Alignment {
-  const { weights, half, norm } = timer;
+  const { weights, half, power } = timer;
   const lags = 2 * (search + MARGIN) + 1;
   const fits = new Float64Array(lags);
   let best = MARGIN;
@@ -56,30 +90,11 @@ export function align(row: Float64Array, timer: Timer, near: number, search: num
     fits[k] = sum;
   }
   for (let k = MARGIN; k < lags - MARGIN; k += 1) if (fits[k] > fits[best]) best = k;
-  const place = near - search - MARGIN + crestPlace(fits, best);
-  const at = near - search - MARGIN + best;
+  const from = near - search - MARGIN;
+  const rest = lineOf(row, timer.taper, from + best - half).rest;
   return {
-    place,
-    likeness: fits[best] / (norm * spreadOf(row, at - half, at + half) + 1e-12),
-    size: fits[best] / norm ** 2,
+    place: from + crestPlace(fits, best),
+    likeness: fits[best] / (Math.sqrt(power * rest) + 1e-12),
+    size: fits[best] / (power + 1e-12),
   };
-}
-
-/** Root of the sum of squares of row[from..to] about its line. */
-function spreadOf(row: Float64Array, from: number, to: number): number {
-  const centre = (from + to) / 2;
-  let n = 0;
-  let mean = 0;
-  let slope = 0;
-  let spread = 0;
-  let power = 0;
-  for (let i = Math.max(0, from); i <= to && i < row.length; i += 1) {
-    n += 1;
-    mean += row[i];
-    power += row[i] * row[i];
-    slope += row[i] * (i - centre);
-    spread += (i - centre) ** 2;
-  }
-  if (n < 3) return 0;
-  return Math.sqrt(Math.max(0, power - (mean * mean) / n - (slope * slope) / spread));
 }

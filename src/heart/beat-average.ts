@@ -116,6 +116,30 @@ export function fiducialOf(
   return crestPlace(samples, use > 0 ? high : low, use);
 }
 
+/** Averages this much like the main one take their fiducial point from it. */
+const SAME_COURSE = 0.9;
+
+/** Averages with their fiducial points, those like the first one with the same point of the course. */
+export function withFiducials(
+  averages: readonly Omit<ShapeAverage, 'fiducial'>[],
+  sign: 1 | -1,
+  rateHz: number,
+): ShapeAverage[] {
+  if (averages.length === 0) return [];
+  const [main] = averages;
+  const point = fiducialOf(main, sign, rateHz);
+  const search = Math.round(EXTREME_HALF_S * rateHz);
+  return averages.map((average, k) => {
+    if (k === 0) return { ...average, fiducial: point };
+    const { place, likeness } = align(average.samples, main.timer, average.middle, search);
+    const same = likeness > SAME_COURSE;
+    return {
+      ...average,
+      fiducial: same ? place + point - main.middle : fiducialOf(average, sign, rateHz),
+    };
+  });
+}
+
 /** Time of a beat found at a whole sample, in samples: where its average's fiducial point falls. */
 export function timeBeat(
   signal: HeartSignal,

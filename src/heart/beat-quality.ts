@@ -22,16 +22,16 @@ export interface BeatQuality {
 }
 
 /**
- * Measures height, noise and timing error. The timing error is the matched filter's (Kay 1993, chapter 3): the noise as seen
- * by the slope of the average, over the slope's energy. The noise is taken where it is, between the beats, so it need not be
- * white. `times` in samples, ascending.
+ * Measures height, noise and timing error. The timing error is the matched filter's to first order (Kay 1993, chapter 3): its
+ * answer to the slope of the noise over its bend at a beat. The noise is taken where it is, between the beats, so it need not
+ * be white. `times` in samples, ascending.
  */
 export function measureBeats(
   signal: HeartSignal,
   main: ShapeAverage,
   times: ArrayLike<number>,
 ): BeatQuality {
-  const slopes = slopesOf(main.timer);
+  const bend = bendOf(main);
   const every = Math.max(1, times.length / MOST_PLACES);
   const errors: number[] = [];
   const noise: number[] = [];
@@ -42,8 +42,8 @@ export function measureBeats(
     const rr = times[i + 1] - times[i];
     const at = Math.round(times[i] + QUIET_PART * rr);
     if (rr < 2.2 * signal.rateHz && isUsable(signal.usable, at, half)) {
-      const row = readFilled(signal.samples, signal.usable, at - half, at + half + 1);
-      errors.push(dot(row, slopes.weights) / slopes.energy);
+      const row = readFilled(signal.samples, signal.usable, at - half - 1, at + half + 2);
+      errors.push(slopeUnder(main.timer, row) / bend);
       noise.push(rmsAboutLine(row));
     }
     heights.push(heightAt(signal, times[i]));
@@ -56,16 +56,21 @@ export function measureBeats(
   };
 }
 
-/** Slope of the average by sample, and its energy against the average itself. */
-function slopesOf({ weights }: Timer): { weights: Float64Array; energy: number } {
-  const slopes = new Float64Array(weights.length);
-  for (let i = 1; i < weights.length - 1; i += 1) slopes[i] = (weights[i + 1] - weights[i - 1]) / 2;
-  return { weights: slopes, energy: dot(slopes, slopes) };
+/** How much the average bends under its own filter: what a slope of noise is divided by to give a shift in samples. */
+function bendOf({ timer, samples, middle }: ShapeAverage): number {
+  const from = middle - timer.half;
+  let bend = 0;
+  for (let i = 0; i < timer.weights.length; i += 1) {
+    const at = from + i;
+    bend -= timer.weights[i] * (samples[at + 1] - 2 * samples[at] + samples[at - 1]);
+  }
+  return bend;
 }
 
-function dot(a: Float64Array, b: Float64Array): number {
+/** The filter's answer to the slope of a row that reaches one sample beyond its window. */
+function slopeUnder({ weights }: Timer, row: Float64Array): number {
   let sum = 0;
-  for (let i = 0; i < a.length; i += 1) sum += a[i] * b[i];
+  for (let i = 0; i < weights.length; i += 1) sum += (weights[i] * (row[i + 2] - row[i])) / 2;
   return sum;
 }
 

@@ -1,3 +1,4 @@
+import { log10 } from '../numeric/elementary';
 import { quantileInPlace } from '../numeric/statistics';
 import type { Shape } from './beat-shapes';
 
@@ -41,29 +42,38 @@ export interface Projected {
   readonly fits: readonly Float64Array[];
   /** Root of the sum of squares of the window about a sample. */
   readonly normAt: (sample: number) => number;
+  /** What the rarity of each shape costs it. */
+  readonly costs: readonly number[];
+}
+
+/** A shape seen a tenth as often must be more alike by so much: of two that fit, the frequent one is likelier. */
+const RARITY_COST = 0.06;
+
+/** What the rarity of each shape costs it, as likeness; 0 for the most frequent. */
+export function rarityCosts(shapes: readonly Shape[]): number[] {
+  const most = Math.max(...shapes.map(({ count }) => count));
+  return shapes.map(({ count }) => RARITY_COST * log10(most / count));
 }
 
 /** Best fitting shape within `reach` samples of a place, and where. */
 export function bestFit(
-  { fits, normAt }: Projected,
+  { fits, normAt, costs }: Projected,
   at: number,
   reach: number,
 ): { sample: number; shape: number; likeness: number } {
-  let sample = at;
-  let shape = 0;
-  let likeness = -1;
+  let best = { sample: at, shape: 0, likeness: -1 };
+  let value = -2;
   const last = Math.min(fits[0].length - 1, at + reach);
   for (let i = Math.max(0, at - reach); i <= last; i += 1) {
     const scale = 1 / (normAt(i) + 1e-12);
     for (let k = 0; k < fits.length; k += 1) {
-      const like = fits[k][i] * scale;
-      if (like <= likeness) continue;
-      likeness = like;
-      sample = i;
-      shape = k;
+      const likeness = fits[k][i] * scale;
+      if (likeness - costs[k] <= value) continue;
+      value = likeness - costs[k];
+      best = { sample: i, shape: k, likeness };
     }
   }
-  return { sample, shape, likeness };
+  return best;
 }
 
 /** The band with the usual course of each beat taken out, in the beat's own size: what is between the beats. */

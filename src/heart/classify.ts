@@ -16,12 +16,14 @@ const UNLIKE = 0.25;
 /** Below this many noise standard deviations a complex is not clear. */
 const UNCLEAR = 2.5;
 
+/** Shapes slower than this are wide whenever their beats come. */
+const VERY_WIDE = 0.65;
 /** What the shape of a group of beats says. */
 type ShapeKind = 'main' | 'usual' | 'wide';
 
 /**
  * Classes of the beats (ANSI/AAMI EC57 letters) from shape, against the study's own averages, and timing: N like the most
- * frequent shape; V wide and early, or of a shape most of whose beats are; S like N but early in a regular rhythm; Q not
+ * frequent shape; V of a shape that is very wide beside it, or wide and mostly early; S like N but early in a regular rhythm; Q not
  * clear. F is left to people. A proposal to be reviewed, not a diagnosis. `meanHz` gives a candidate's own mean frequency.
  */
 export function classifyBeats(
@@ -67,8 +69,8 @@ function shapeKind(
     own += 1;
     if (ratios[i] < EARLY || (i > 0 && beats[i - 1].shape === k && ratios[i] < 1)) early += 1;
   });
-  const wide = meanFrequency(shapes[k].average) < WIDE * meanFrequency(shapes[main].average);
-  return wide && early >= 0.4 * own ? 'wide' : 'usual';
+  const pace = meanFrequency(shapes[k].average) / meanFrequency(shapes[main].average);
+  return pace < VERY_WIDE || (pace < WIDE && early >= 0.4 * own) ? 'wide' : 'usual';
 }
 
 /** Root of the mean square of slope over that of value: grows with the mean frequency (Hjorth 1970). */

@@ -3,9 +3,9 @@ import type { Interval } from '../recording/span';
 import {
   averageBeats,
   dominantSign,
-  fiducialOf,
   type ShapeAverage,
   timeBeat,
+  withFiducials,
 } from './beat-average';
 import { measureBeats } from './beat-quality';
 import { classifyBeats, meanFrequency } from './classify';
@@ -89,10 +89,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const averages = averagesOf(signal, found);
   yield 0.95;
   const sign = averages.length > 0 ? dominantSign(averages[0], rateHz) : 1;
-  const timed = averages.map((average) => ({
-    ...average,
-    fiducial: fiducialOf(average, sign, rateHz),
-  }));
+  const timed = withFiducials(averages, sign, rateHz);
   const times = timesOf(signal, found.beats, timed, sign);
   const classes = classesOf(signal, found);
   const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;

@@ -7,6 +7,11 @@ const SIZE_SPREAD = 0.35;
 const NOISE_CREST = 2.2;
 const NOISE_SPREAD = 0.35;
 const LIKENESS_SPREAD = 0.12;
+/** Weaker QRS energy than this is no heartbeat: that of an R peak of about 1 uV. */
+const LEAST_ENERGY_UV = 0.5;
+/** Where noise leaves a usual beat less like its shape than this, a beat can hardly be seen, and less and less is believed. */
+const SEEABLE = 0.6;
+const UNSEEN_COST = 10;
 
 /** Log density of a beat's size (times the usual), from its least value on. */
 function sizeFit(size: number): number {
@@ -25,7 +30,7 @@ function noiseFit(overNoise: number): number {
  * energy against a crest of noise. About -9 to 7.
  */
 export function energyEvidence(energyUv: number, beatUv: number, noiseUv: number): number {
-  if (!(energyUv > 0 && beatUv > 0)) return -9;
+  if (!(energyUv > LEAST_ENERGY_UV && beatUv > LEAST_ENERGY_UV)) return -9;
   return sizeFit(energyUv / beatUv) - noiseFit(energyUv / (noiseUv + 1e-12));
 }
 
@@ -42,7 +47,8 @@ export function shapeEvidence(candidate: Candidate, usualSize: number): number {
   const short = Math.max(0, 0.93 * bestLikeness - likeness) / LIKENESS_SPREAD;
   const fit = Math.max(-6, -0.5 * short ** 2);
   const more = likeness > 0.8 ? 20 * (likeness - 0.8) : 0;
-  return sizeFit(size / usualSize) + fit + more - noiseFit(overNoise);
+  const unseen = (UNSEEN_COST * Math.max(0, SEEABLE - bestLikeness)) / SEEABLE;
+  return sizeFit(size / usualSize) + fit + more - noiseFit(overNoise) - unseen;
 }
 
 /** What a beat unlike every learned shape costs. */
@@ -56,5 +62,6 @@ export function evidenceOf(
   noiseUv: number,
 ): number {
   const alone = energyEvidence(candidate.energyUv, beatUv, noiseUv) - UNLIKE_COST;
+  if (!(beatUv > LEAST_ENERGY_UV)) return -9;
   return candidate.shape < 0 ? alone : Math.max(alone, shapeEvidence(candidate, usualSize));
 }

@@ -1,7 +1,13 @@
 import type { KernelSpectrum } from '../numeric/kernel-spectrum';
 import { blockSizeFor, kernelSpectrum, overlapSave } from '../numeric/overlap-save';
 import { SHAPE_LAG_S, type Shape } from './beat-shapes';
-import { bestFit, noiseByHalfSecond, type Projected, withoutBeats } from './between-beats';
+import {
+  bestFit,
+  noiseByHalfSecond,
+  type Projected,
+  rarityCosts,
+  withoutBeats,
+} from './between-beats';
 import {
   CREST_APART_S,
   type Crest,
@@ -109,6 +115,7 @@ function projectBand(
     shapes,
     fits: plans.flatMap((spectrum) => overlapSave(band, { spectrum, ends: 'zero' })),
     normAt: (sample) => scale * rms(sample),
+    costs: rarityCosts(shapes),
   };
 }
 
