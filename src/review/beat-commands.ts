@@ -176,6 +176,13 @@ function placing(
       act.reportError('No beat could be added: the recording was not read here. Try again.');
       return;
     }
+    const there = beatWithin(stores, found.tick, CROWDED_S);
+    if (there !== null) {
+      select([there]);
+      const place = formatClock(ticksToSeconds(there, rateHz), 3);
+      act.reportError(`A beat stands at ${place} already. Move or delete it instead.`);
+      return;
+    }
     const origin = found.visible ? 'added' : 'placed';
     const made = tryEdit(stores, act, ({ state }) =>
       addBeat(state, found.tick, 'N', origin, rateHz),
@@ -226,6 +233,21 @@ function moving(
       if (open) move(fromTick, secondsToTicks(atS, open.rateHz));
     },
   };
+}
+
+/** Two beats cannot stand this close. */
+const CROWDED_S = 0.1;
+
+/** Tick of the beat nearest to one, where it is closer than a time; else null. */
+function beatWithin(stores: PaneStores, tick: number, withinS: number): number | null {
+  const open = openBeats(stores);
+  if (!open) return null;
+  const { ticks } = open.state.beats;
+  const next = firstBeatAt(open.state.beats, tick);
+  const near = [ticks[next - 1], ticks[next]]
+    .filter((one) => Math.abs(one - tick) < secondsToTicks(withinS, open.rateHz))
+    .sort((a, b) => Math.abs(a - tick) - Math.abs(b - tick));
+  return near[0] ?? null;
 }
 
 /** Pans Seconds so that a time is clear of its ends. */

@@ -125,6 +125,15 @@ describe('mending beats', () => {
     expect(study.said.at(-1)).toMatch(/not NN/);
   });
 
+  it('does not add a second beat to one that stands there, and selects that one', async () => {
+    const study = paneStudy({ placeBeat: async () => ({ tick: 30.02 * SECOND, visible: true }) });
+    study.commands.addBeatNear(30.1);
+    await idle();
+    expect(study.edits).toEqual([]);
+    expect(study.errors[0]).toMatch(/stands at 0:00:30.000 already/);
+    expect(chosen(study)).toEqual([30]);
+  });
+
   it('tells when the recording could not be read there', async () => {
     const study = paneStudy();
     study.commands.addBeatNear(30.25);
