@@ -51,6 +51,9 @@ const LOOK: readonly Command[] = [
   ),
   paneCommand('go-start', 'Go to the start', ['Home'], 'look', (p) => p.home()),
   paneCommand('go-end', 'Go to the end', ['End'], 'look', (p) => p.end()),
+  paneCommand('toggle-leads', 'Minutes: all leads, or the reported one', ['L'], 'look', (p) =>
+    p.toggleLeads(),
+  ),
   paneCommand('next-row', 'Next trace row', ['R'], 'look', (p) => p.cycleRow()),
   paneCommand('gain-up', 'Trace row: larger', ['Shift+ArrowUp'], 'look', (p) => p.gainUp()),
   paneCommand('gain-down', 'Trace row: smaller', ['Shift+ArrowDown'], 'look', (p) => p.gainDown()),

@@ -1,3 +1,4 @@
+import { leadsShownNow } from './leads-shown';
 import { goTo, panBy, type WindowName, zoomAt } from './navigate';
 import type { PaneActs } from './pane-acts';
 import type { PaneStores } from './row-view';
@@ -22,6 +23,8 @@ export interface LookCommands {
   home(): void;
   end(): void;
   toggleTool(): void;
+  /** Minutes draws every slow-wave lead, or only the reported one. */
+  toggleLeads(): void;
 }
 
 const PAN_SHARE = 0.25;
@@ -70,6 +73,11 @@ export function lookCommands({ view }: PaneStores, act: PaneActs): LookCommands 
       const tool = view.getState().tool === 'look' ? 'exclude' : 'look';
       view.setState({ tool });
       act.say(tool === 'look' ? 'Dragging moves' : 'Dragging excludes a stretch');
+    },
+    toggleLeads: () => {
+      const leadsShown = leadsShownNow(view) === 'all' ? 'reported' : 'all';
+      view.setState({ leadsShown });
+      act.say(leadsShown === 'all' ? 'All slow-wave leads' : 'The reported lead only');
     },
   };
 }

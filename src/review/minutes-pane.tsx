@@ -1,17 +1,25 @@
 import { useCallback, useMemo } from 'react';
 import { useStore } from 'zustand';
+import { useLeadsShown } from './leads-shown';
 import { MINUTES, minutesActs } from './minutes-view';
 import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
-import { minutesRows } from './rows';
+import { minutesRows, reportedOnly } from './rows';
 import { SpanBar } from './span-bar';
 import { EpochTable, SpanTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
+import { useRoles } from './use-roles';
 
 /** The pane with the stomach's time scale. */
 export function MinutesPane(props: PaneProps) {
   const { stores } = props;
-  const roles = useStore(stores.session, (state) => state.session?.state.roles);
+  const allRoles = useRoles(stores);
+  const shown = useLeadsShown(stores.view);
+  const several = (allRoles?.slow.length ?? 0) > 1;
+  const roles = useMemo(
+    () => (allRoles && shown === 'reported' ? reportedOnly(allRoles) : allRoles),
+    [allRoles, shown],
+  );
   const recording = useStore(stores.analysis, (state) => state.recording);
   const breathing = useStore(stores.analysis, (state) => {
     const from = state.heart?.breathing.from;
@@ -38,6 +46,11 @@ export function MinutesPane(props: PaneProps) {
       hasSlot
       notice={null}
     >
+      {several && (
+        <button type="button" className="leads-toggle" onClick={commands.toggleLeads}>
+          {shown === 'all' ? 'Reported lead only' : `Show all ${allRoles?.slow.length} leads`}
+        </button>
+      )}
       <SpanBar stores={stores} commands={commands} />
       <EpochTable stores={stores} commands={commands} />
       <SpanTable stores={stores} commands={commands} />

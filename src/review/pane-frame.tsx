@@ -1,6 +1,8 @@
 import type { ReactNode, RefObject } from 'react';
 import { useStore } from 'zustand';
 import type { GainCommands } from './gain-commands';
+import type { LookCommands } from './look-commands';
+import { PaneMoves } from './pane-moves';
 import { RowGutter } from './row-gutter';
 import type { PaneStores } from './row-view';
 import type { Row } from './rows';
@@ -12,7 +14,7 @@ interface PaneFrameProps {
   readonly sectionRef: RefObject<HTMLElement | null>;
   readonly rows: readonly Row[];
   readonly stores: PaneStores;
-  readonly commands: GainCommands;
+  readonly commands: GainCommands & LookCommands;
   readonly hasSlot: boolean;
   /** Words over the drawing where there is nothing to draw. */
   readonly notice: string | null;
@@ -39,7 +41,9 @@ export function PaneFrame(props: PaneFrameProps) {
             <div className="row-plot" data-part={`plot ${row.key}`} />
           </div>
         ))}
-        <div className="pane-axis" />
+        <div className="pane-axis">
+          <PaneMoves name={name} title={title} commands={commands} />
+        </div>
         <canvas className="pane-over" data-part="over" />
         <div className="pane-stage" data-part="stage">
           {props.hasSlot && <div className="slot" data-part="slot" />}

@@ -58,6 +58,11 @@ export function recordedLeads(roles: Roles): readonly Lead[] {
   return [...slow.slice(0, MOST_RECORDED - 1), heart];
 }
 
+/** The roles with the reported lead as the only one for the slow wave. */
+export function reportedOnly(roles: Roles): Roles {
+  return { ...roles, slow: roles.slow.slice(roles.reported, roles.reported + 1), reported: 0 };
+}
+
 /** Rows of the Minutes pane from top to bottom. */
 export function minutesRows(
   roles: Roles,

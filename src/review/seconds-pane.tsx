@@ -1,5 +1,6 @@
 import { useCallback, useMemo } from 'react';
 import { useStore } from 'zustand';
+import { BeatBar } from './beat-bar';
 import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
 import { PinButtons } from './pin-buttons';
@@ -7,13 +8,14 @@ import { secondsRows } from './rows';
 import { pinKey, type SecondsParts, secondsActs, secondsKind } from './seconds-view';
 import { BeatTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
+import { useRoles } from './use-roles';
 
 const NO_HEART = 'No heart lead is chosen, so there are no beats to see.';
 
 /** The pane with the heart's time scale, where beats are mended. */
 export function SecondsPane(props: PaneProps) {
   const { stores } = props;
-  const roles = useStore(stores.session, (state) => state.session?.state.roles);
+  const roles = useRoles(stores);
   const recording = useStore(stores.analysis, (state) => state.recording);
   const rows = useMemo(
     () => (roles && recording ? secondsRows(roles, recording) : []),
@@ -45,7 +47,7 @@ export function SecondsPane(props: PaneProps) {
     [commands],
   );
   const sectionRef = usePane(props, rows, setUp);
-  const noHeart = roles !== undefined && recording !== null && rows.length === 0;
+  const noHeart = roles !== null && recording !== null && rows.length === 0;
   return (
     <PaneFrame
       name="seconds"
@@ -57,6 +59,7 @@ export function SecondsPane(props: PaneProps) {
       hasSlot={false}
       notice={noHeart ? NO_HEART : null}
     >
+      <BeatBar stores={stores} commands={commands} />
       <BeatTable stores={stores} commands={commands} />
     </PaneFrame>
   );

@@ -36,6 +36,8 @@ export interface ViewState {
   readonly selection: Selection;
   readonly draft: Draft | null;
   readonly tool: Tool;
+  /** Leads that Minutes draws; null: as many as fit the height of the page. */
+  readonly leadsShown: 'all' | 'reported' | null;
   readonly identityHidden: boolean;
 }
 
@@ -58,6 +60,7 @@ export const createViewStore = (): ViewStore =>
     selection: { kind: 'none' },
     draft: null,
     tool: 'look',
+    leadsShown: null,
     identityHidden: false,
   }));
 
