@@ -21,6 +21,11 @@ const CARRIED_SIZE = 1.5;
 const CARRIED_LIKENESS = 0.78;
 /** The same where it overlaps the beat itself. */
 const SHIFTED_LIKENESS = 0.85;
+/** A row starts a shape where noise lowers its likeness no more than this, or little more than usual. */
+const CLEAR_FACTOR = 0.9;
+const CLEAR_PART = 0.97;
+/** Noise sorted by likeness is less alike than this. */
+const LEAST_COHERENCE = 0.45;
 
 /** A shape of complex: the average of its beats in the shape band, uV, 2 half + 1 samples about its middle. */
 export interface Shape {
@@ -29,6 +34,8 @@ export interface Shape {
   /** Root of the sum of squares of the average. */
   readonly norm: number;
   readonly count: number;
+  /** Mean correlation of its beats with one another, -1 to 1. */
+  readonly coherence: number;
   /** The average from `before` samples ahead of the middle to the end of the T wave, falling to 0 at both ends. */
   readonly course: Float64Array;
   readonly before: number;
@@ -51,14 +58,22 @@ interface Windows {
   readonly step: number;
 }
 
-/** Learns the shapes of the beats found so far, the most frequent first; yields the part done. */
+/**
+ * Learns the shapes of the beats found so far: the most frequent first, then those that many beats share most closely, since
+ * noise makes frequent shapes too, of poor likeness. Yields the part done.
+ */
 export function* learnShapes(
   signal: HeartSignal,
   beats: readonly number[],
 ): Generator<number, Shape[]> {
   const windows = yield* readWindows(signal, beats);
   const settled = settle(windows, distinct(grow(windows), windows));
-  return settled.filter((shape) => shape.count >= Math.max(2, 0.002 * windows.rows.length));
+  return byWorth(settled.filter(({ count }) => count >= Math.max(2, 0.001 * windows.rows.length)));
+}
+
+function byWorth([main, ...others]: readonly Shape[]): Shape[] {
+  const worth = ({ count, coherence }: Shape) => count * coherence ** 2 * coherence ** 2;
+  return main ? [main, ...others.sort((a, b) => worth(b) - worth(a))] : [];
 }
 
 function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<number, Windows> {
@@ -141,12 +156,14 @@ function noiseFactor(rmsUv: number, noiseUv: number): number {
 const middle = (row: Float64Array, half: number) =>
   row.subarray((row.length - 1) / 2 - half, (row.length + 1) / 2 + half);
 
-/** Sorts the rows into shapes in order of time: each joins the shape it is most like, or starts one. */
+/** Sorts the rows into shapes in order of time: each joins the shape it is most like, or, where it is clear of noise, starts one. */
 function grow(windows: Windows): Growing[] {
   const { rows, noise, half } = windows;
+  const factors = rows.map((row, i) => noiseFactor(rms(middle(row, half)), noise[i]));
+  const clear = Math.min(CLEAR_FACTOR, CLEAR_PART * median(factors));
   let shapes: Growing[] = [];
   rows.forEach((row, i) => {
-    const factor = noiseFactor(rms(middle(row, half)), noise[i]);
+    const factor = factors[i];
     let best: Growing | null = null;
     let bestMatch: Match = { value: 0, at: 0 };
     for (const shape of shapes) {
@@ -156,10 +173,8 @@ function grow(windows: Windows): Growing[] {
       best = shape;
       bestMatch = match;
     }
-    if (best) {
-      addRow(best, row, bestMatch.at, windows);
-      return;
-    }
+    if (best) addRow(best, row, bestMatch.at, windows);
+    if (best || factor < clear) return;
     if (shapes.length >= 2 * MOST_SHAPES)
       shapes = [...shapes].sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
     shapes.push({ sum: row.slice(), count: 1 });
@@ -217,13 +232,17 @@ function distinct(shapes: readonly Growing[], windows: Windows): Growing[] {
   return kept;
 }
 
+/** Mean correlation of the beats of a shape with one another; 1 for a single beat. */
+function coherence({ sum, count, power }: Growing & { power: number }, half: number): number {
+  if (count < 2) return 1;
+  const shared = (rms(middle(sum, half)) / count) ** 2 / (power / count);
+  return (count * shared - 1) / (count - 1);
+}
+
 /** Shares the rows out once more among the shapes, and averages those that fit. */
 function settle(windows: Windows, shapes: readonly Growing[]): Shape[] {
   const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
-  const sums = shapes.map(() => ({
-    sum: new Float64Array(2 * rowHalf + 1),
-    count: 0,
-  }));
+  const sums = shapes.map(() => ({ sum: new Float64Array(2 * rowHalf + 1), count: 0, power: 0 }));
   rows.forEach((row, i) => {
     const matches = shapes.map(({ sum }) => matchMiddle(row, sum, windows, windows.step));
     let best = 0;
@@ -232,11 +251,15 @@ function settle(windows: Windows, shapes: readonly Growing[]): Shape[] {
     });
     const factor = noiseFactor(rms(middle(row, half)), noise[i]);
     if (matches.length === 0 || matches[best].value < LEAST_LIKENESS * factor) return;
-    addRow(sums[best], row, matchMiddle(row, shapes[best].sum, windows, 1).at, windows);
+    const { at } = matchMiddle(row, shapes[best].sum, windows, 1);
+    addRow(sums[best], row, at, windows);
+    sums[best].power += rms(row.subarray(at, at + 2 * half + 1)) ** 2;
   });
   return sums
     .filter(({ count }) => count > 0)
-    .map(({ sum, count }) => {
+    .map((group) => ({ ...group, alike: coherence(group, half) }))
+    .filter(({ alike }) => alike > LEAST_COHERENCE)
+    .map(({ sum, count, alike }) => {
       const average = middle(sum, half).map((value) => value / count);
       const norm = rms(average) * Math.sqrt(average.length);
       const after = Math.max(half, Math.min(rowHalf, latest + half, usualRr - half));
@@ -244,7 +267,7 @@ function settle(windows: Windows, shapes: readonly Growing[]): Shape[] {
       const course = sum.slice(rowHalf - before, rowHalf + after + 1);
       for (let i = 0; i < course.length; i += 1)
         course[i] *= Math.min(1, i / lag, (course.length - 1 - i) / lag) / count;
-      return { average, half, norm, count, course, before };
+      return { average, half, norm, count, course, before, coherence: alike };
     })
     .sort((a, b) => b.count - a.count);
 }

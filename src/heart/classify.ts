@@ -13,8 +13,15 @@ const REGULAR_SPREAD = 0.11;
 const WIDE = 0.85;
 /** Less like its best shape than a usual beat by this much, a beat is of no known shape. */
 const UNLIKE = 0.25;
+/** The same for an early beat in a clean stretch: its own shape is looked at. */
+const EARLY_UNLIKE = 0.1;
 /** Below this many noise standard deviations a complex is not clear. */
 const UNCLEAR = 2.5;
+/** Above these a complex is clear. */
+const CLEAR = 3.5;
+const CLEAR_LIKENESS = 0.75;
+/** A shape whose beats are less like one another may be noise. */
+const COHERENT = 0.7;
 
 /** Shapes slower than this are wide whenever their beats come. */
 const VERY_WIDE = 0.65;
@@ -42,10 +49,22 @@ export function classifyBeats(
     const known = beat.shape >= 0 && beat.likeness > beat.bestLikeness - UNLIKE;
     if (!known) return oddClass(beat, ratios[i], shapes[main], meanHz);
     if (beat.overNoise < UNCLEAR) return 'Q';
-    if (kinds[beat.shape] === 'wide') return 'V';
-    const early = ratios[i] < CLEARLY_EARLY && rhythm.spread < REGULAR_SPREAD;
+    const tolerance = EARLY_UNLIKE + (1 - beat.bestLikeness) / 2;
+    if (ratios[i] < EARLY && beat.likeness < beat.bestLikeness - tolerance) {
+      const odd = oddClass(beat, ratios[i], shapes[main], meanHz);
+      if (odd !== 'Q') return odd;
+    }
+    const sure = clearlyOfShape(beat) && shapes[beat.shape].coherence > COHERENT;
+    if (kinds[beat.shape] === 'wide') return sure ? 'V' : 'Q';
+    const early =
+      ratios[i] < CLEARLY_EARLY && rhythm.spread < REGULAR_SPREAD && clearlyOfShape(beat);
     return early && ratios[i - 1] > CLEARLY_EARLY ? 'S' : 'N';
   });
+}
+
+/** A class other than N wants more than the likeness that noise lends. */
+function clearlyOfShape({ likeness, bestLikeness, overNoise }: Candidate): boolean {
+  return overNoise > CLEAR && bestLikeness > CLEAR_LIKENESS && likeness > CLEAR_LIKENESS;
 }
 
 function mainShape(beats: readonly Candidate[], count: number): number {
