@@ -37,6 +37,8 @@ const MEASURED_AT = [0.1, 0.3, 0.5, 0.7, 0.9];
 const MEASURED_S = 12;
 /** Wider windows than this are drawn from the pyramid, narrower ones from the file's own samples. */
 const FROM_PYRAMID_S = 60;
+/** Without a pyramid, wider windows than this many samples wait for it. */
+const MOST_SAMPLES = 8_000_000;
 
 interface Study {
   readonly source: SignalSource;
@@ -256,6 +258,7 @@ async function columns(study: Study, request: ColumnsRequest): Promise<Columns> 
   if (kept && toS - fromS > FROM_PYRAMID_S)
     return { request, ...kept.pyramid.columns(fromS, toS, request.columns) };
   const { rateHz } = leadChannel(study.source.recording, lead);
+  if ((toS - fromS) * rateHz > MOST_SAMPLES) return { request, ...cut([], 1, request) };
   const first = Math.max(0, Math.floor(fromS * rateHz) - 1);
   const read = new Map<number, Float64Array>();
   for (const channel of leadChannels(lead))

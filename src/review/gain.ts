@@ -72,9 +72,9 @@ function medianUv({ low, high }: LowHigh, from: number, to: number): number {
 /**
  * A gain in uV for a whole study that is looked at in windows of `perWindow` columns: with a little to spare it holds nine
  * columns of ten in four windows of five, so that spoiled stretches do not make everything else small. `centred` rows are
- * drawn about their middle in view, the others about zero.
+ * drawn about their middle in view, the others about zero. Null where there is nothing to fit.
  */
-export function fittedGain(columns: LowHigh, perWindow: number, centred: boolean): number {
+export function fittedGain(columns: LowHigh, perWindow: number, centred: boolean): number | null {
   const width = Math.max(1, Math.round(perWindow));
   const reaches: number[] = [];
   for (let from = 0; from < columns.low.length; from += width) {
@@ -82,5 +82,5 @@ export function fittedGain(columns: LowHigh, perWindow: number, centred: boolean
     const reach = reachUv(columns, from, to, centred ? medianUv(columns, from, to) : 0);
     if (!Number.isNaN(reach)) reaches.push(reach);
   }
-  return reaches.length === 0 ? 100 : gainFor(MARGIN * atShare(reaches, WINDOWS_SHARE));
+  return reaches.length === 0 ? null : gainFor(MARGIN * atShare(reaches, WINDOWS_SHARE));
 }

@@ -28,6 +28,8 @@ export class SignalRowView implements RowView {
   private heightPx = 0;
   private family = 'sans-serif';
   private fitting = false;
+  /** Counts the fits asked for, so that one of signals that are no more is not taken. */
+  private fitNumber = 0;
   private gone = false;
 
   constructor(
@@ -59,6 +61,8 @@ export class SignalRowView implements RowView {
   /** Forgets the columns: what they show has changed. */
   refetch(): void {
     this.feed.drop();
+    this.fitting = false;
+    this.fitNumber += 1;
     this.u.setData(
       [
         [0, 1],
@@ -101,10 +105,12 @@ export class SignalRowView implements RowView {
   private fit(window: TimeWindow): void {
     if (this.fitting) return;
     this.fitting = true;
+    const { fitNumber } = this;
     const { view } = this.context.stores;
     const { durationS } = view.getState();
     const wanted = wholeStudyGain(this.context.signals, this.row, window, durationS);
     const store = (gain: number | null): void => {
+      if (fitNumber !== this.fitNumber) return;
       this.fitting = gain === null;
       if (gain === null || view.getState().gainsUv[this.row.key] !== undefined) return;
       view.setState((now) => ({ gainsUv: { ...now.gainsUv, [this.row.key]: gain } }));
