@@ -71,7 +71,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
   async function open(file: File, reading: TextReading | null): Promise<void> {
     const reply = await runner.watched((watch) => client.open(file, file.name, reading, watch));
     if (!reply.ok) {
-      if (reply.failure.kind === 'wrong-input')
+      if (reply.failure.kind === 'needs-reading')
         shell.getState().openDialog({ kind: 'text-reading', file, failure: reply.failure });
       else fail(reply.failure);
       return;

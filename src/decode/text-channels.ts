@@ -28,13 +28,13 @@ interface ChannelsInput {
 
 /**
  * The signal columns with their labels and units: the unit the file states, else the one a person gave. Throws a Refusal of
- * kind `wrong-input` where no column is a voltage: it asks for the unit where one states none, else says which there are.
+ * kind `needs-reading` where a column states no unit and none was given, `wrong-input` where no column is a voltage.
  */
 export function textChannels(input: ChannelsInput, found: FoundInFile[]): readonly TextChannel[] {
   const { fileName, layout, header, time, reading } = input;
   const givenUnit = reading?.unit ?? null;
   if (givenUnit !== null && microvoltsPerUnit(givenUnit) === null)
-    throw refusal('wrong-input', fileName, {
+    throw refusal('needs-reading', fileName, {
       message: `the unit ${quoted(givenUnit)} is none of V, mV, uV, nV.`,
       place: 'unit',
       remedy: 'Give the unit as V, mV, uV or nV.',
@@ -74,7 +74,7 @@ function noVoltage(fileName: string, channels: readonly TextChannel[]): Refusal 
     });
   const silent = channels.find((channel) => channel.unit.text === '');
   if (silent)
-    return refusal('wrong-input', fileName, {
+    return refusal('needs-reading', fileName, {
       message: `column ${silent.column + 1} (“${silent.label}”) does not say its unit.`,
       place: `column ${silent.column + 1}`,
       remedy: 'Give the unit of the columns: V, mV, uV or nV.',

@@ -13,7 +13,7 @@ export interface TextClock {
 }
 
 /**
- * The rate a person gave, else the one of the time column. Throws a Refusal of kind `wrong-input` where neither says it, and
+ * The rate a person gave, else the one of the time column. Throws a Refusal of kind `needs-reading` where neither says it, and
  * `broken-format` where the times do not rise evenly.
  */
 export function textClock(
@@ -32,7 +32,7 @@ export function textClock(
   const given = reading?.rateHz ?? null;
   if (given !== null) return { rateHz: checkedRate(fileName, given), places: null, length };
   if (rows.timesS === null)
-    throw refusal('wrong-input', fileName, {
+    throw refusal('needs-reading', fileName, {
       message: 'the table has no time column, so its sampling rate is not known.',
       place: null,
       remedy: 'Give the rate in samples a second.',
@@ -57,7 +57,7 @@ export function textClock(
 
 function checkedRate(fileName: string, rateHz: number): Hertz {
   if (Number.isFinite(rateHz) && rateHz > 0 && rateHz <= 1e6) return rateHz;
-  throw refusal('wrong-input', fileName, {
+  throw refusal('needs-reading', fileName, {
     message: `a rate of ${rateHz} samples a second cannot be.`,
     place: 'rate',
     remedy: 'Give the rate as a positive number of samples a second.',

@@ -4,6 +4,8 @@ export type FailureKind =
   | 'not-supported'
   | 'broken-format'
   | 'wrong-input'
+  /** Text that does not say its rate or unit, until a person does. */
+  | 'needs-reading'
   | 'cancelled'
   | 'crashed'
   | 'out-of-memory'

@@ -207,14 +207,14 @@ describe('the time column', () => {
 describe('refusals of text', () => {
   it('ask for the rate', async () => {
     expect(await refused(open('E1 (uV)\n1\n2\n3\n'))).toMatchObject({
-      kind: 'wrong-input',
+      kind: 'needs-reading',
       remedy: 'Give the rate in samples a second.',
     });
   });
 
   it('ask for the unit', async () => {
     expect(await refused(open('t (s),E1\n0,1\n0.5,2\n1,3\n'))).toMatchObject({
-      kind: 'wrong-input',
+      kind: 'needs-reading',
       message: 'study.csv: column 2 (“E1”) does not say its unit.',
       remedy: 'Give the unit of the columns: V, mV, uV or nV.',
     });
