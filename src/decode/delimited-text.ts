@@ -90,7 +90,7 @@ export async function openDelimitedText(
 /** Asks for the rate before a long file is read in vain. */
 function refuseWithoutRate(fileName: string, time: TimeColumn, reading: TextReading | null): void {
   if ((reading?.rateHz ?? null) !== null) return;
-  throw refusal('wrong-input', fileName, {
+  throw refusal('needs-reading', fileName, {
     message:
       time.kind === 'counter'
         ? 'the first column only counts the rows, so the sampling rate is not known.'
