@@ -43,7 +43,7 @@ function triangular(heart: PartOfHeart): FigureValue {
 function spreadFigures(heart: PartOfHeart): Figures {
   const { regularTime: time } = heart;
   const marks = irregularMarks(heart);
-  const pairs = `${time.pairCount} pairs of ${time.nnCount} NN`;
+  const pairs = `${time.pairCount} pairs`;
   const count = (needed: number, there: number, what: string) =>
     `needs ${needed} ${what}; ${there} ${there === 1 ? 'is' : 'are'} left`;
   const twoNn = count(2, time.nnCount, 'NN');

@@ -124,6 +124,11 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
   );
   const marksOf = ({ key }: FigureDefinition) =>
     sharedMarks(phases.map((phase) => phase.figures[key]));
+  const marksBefore = (row: number) => definitions.slice(0, row).flatMap(marksOf);
+  const firstMarks = (row: number) => {
+    const said = marksBefore(row);
+    return marksOf(definitions[row]).filter((mark) => !said.includes(mark));
+  };
   const changes = definitions.map((one) => changeOf(findings, one.key, left, right));
   const sharedChange = sharedWords(changes);
   const notes = [
@@ -145,7 +150,7 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
       {notes.length > 0 ? <NotesRow notes={notes} columns={right ? 4 : 2} /> : null}
       {definitions.map((definition, row) => (
         <tr key={definition.key}>
-          <RowHead definition={definition} marks={marksOf(definition)} />
+          <RowHead definition={definition} marks={firstMarks(row)} />
           {phases.map((phase, i) => (
             <FigureCell
               key={i === 0 ? 'left' : 'right'}
@@ -200,7 +205,7 @@ function NotesRow({ notes, columns }: NotesRowProps) {
 
 interface RowHeadProps {
   readonly definition: FigureDefinition;
-  /** Marks that hold for the row in every phase. */
+  /** Marks that hold for the row in every phase and that no row above has said. */
   readonly marks: readonly string[];
 }
 

@@ -46,7 +46,7 @@ export function smallWords(
   return small.flatMap((line) => {
     if (line === basis || line === reason || line.startsWith('filled in ')) return [];
     const part = PART_OF.exec(line);
-    if (!part || part[2] !== basis) return [line];
+    if (!part) return [line];
     return part[1] === '0' ? [] : [line.replace(/ \D+$/, '')];
   });
 }
