@@ -1,0 +1,93 @@
+import { readFileSync } from 'node:fs';
+import { basename } from 'node:path';
+import { gzipSync } from 'node:zlib';
+import { RECORD } from './support';
+
+/** A file as the page is given it. */
+export interface GivenFile {
+  readonly name: string;
+  readonly mimeType: string;
+  readonly buffer: Buffer;
+}
+
+const given = (name: string, buffer: Buffer): GivenFile => ({
+  name,
+  mimeType: 'application/octet-stream',
+  buffer,
+});
+
+/** Fields of an EDF header by their first byte and length (Kemp 1992; EDF+ 2003 for the last). */
+const PATIENT = [8, 80] as const;
+const RECORD_DURATION = [244, 8] as const;
+const RESERVED = [192, 44] as const;
+
+/** The record with a field of its header written anew. */
+function withField([at, length]: readonly [number, number], text: string): Buffer {
+  const bytes = readFileSync(RECORD);
+  bytes.write(text.padEnd(length).slice(0, length), at, 'latin1');
+  return bytes;
+}
+
+/** The record as if it were of a person: an invented one, in the subfields of EDF+. */
+export const namedRecord = (): GivenFile =>
+  given('visit-7.edf', withField(PATIENT, 'ZZ-0077 F 02-MAY-1961 Avila_Example'));
+
+/** Cut off inside the header. */
+export const cutHeader = (): GivenFile => given('cut.edf', readFileSync(RECORD).subarray(0, 500));
+
+/** Says of itself that it has gaps. */
+export const withGaps = (): GivenFile => given('gaps.edf', withField(RESERVED, 'EDF+D'));
+
+/** A header of the 24-bit sister format. */
+export function of24Bit(): GivenFile {
+  const bytes = withField(RESERVED, '24BIT');
+  bytes[0] = 0xff;
+  bytes.write('BIOSEMI', 1, 'latin1');
+  return given('wide.bdf', bytes);
+}
+
+/** Packed, under the name of a recording. */
+export const packed = (): GivenFile => given('packed.edf', gzipSync(readFileSync(RECORD)));
+
+/** Records of no length, so that no rate can be known. */
+export const noDuration = (): GivenFile => given('still.edf', withField(RECORD_DURATION, '0'));
+
+/** Samples of the record's first signal in uV, every `every`-th of them. */
+export function microvolts(every = 1): { readonly rateHz: number; readonly uv: readonly number[] } {
+  const bytes = readFileSync(RECORD);
+  const text = (at: number, length: number) => bytes.toString('latin1', at, at + length).trim();
+  const count = Number(text(252, 4));
+  const field = (before: number, length: number, signal: number) =>
+    Number(text(256 + before * count + length * signal, length));
+  const samples = Array.from({ length: count }, (_, signal) => field(216, 8, signal));
+  const [low, high] = [field(104, 8, 0), field(112, 8, 0)];
+  const [digitalLow, digitalHigh] = [field(120, 8, 0), field(128, 8, 0)];
+  const records = Number(text(236, 8));
+  const recordBytes = 2 * samples.reduce((sum, one) => sum + one, 0);
+  const uv: number[] = [];
+  for (let i = 0; i < records * samples[0]; i += every) {
+    const record = Math.floor(i / samples[0]);
+    const at = Number(text(184, 8)) + record * recordBytes + 2 * (i % samples[0]);
+    const digital = bytes.readInt16LE(at);
+    uv.push(low + ((digital - digitalLow) * (high - low)) / (digitalHigh - digitalLow));
+  }
+  return { rateHz: samples[0] / Number(text(244, 8)) / every, uv };
+}
+
+/** One column of samples as text, under a header line or none. */
+export function textOf(name: string, header: string | null, values: readonly string[]): GivenFile {
+  const lines = header === null ? values : [header, ...values];
+  return { name, mimeType: 'text/csv', buffer: Buffer.from(`${lines.join('\n')}\n`) };
+}
+
+/** A column of times and a column of samples. */
+export function timedText(name: string, unit: string, perMicrovolt: number): GivenFile {
+  const { rateHz, uv } = microvolts(3);
+  const rows = uv.map(
+    (value, i) => `${(i / rateHz).toFixed(6)},${(Math.round(value) * perMicrovolt).toFixed(3)}`,
+  );
+  return textOf(name, `time (s),E1 (${unit})`, rows);
+}
+
+/** The record as the page would be given it by hand. */
+export const recordFile = (): GivenFile => given(basename(RECORD), readFileSync(RECORD));
