@@ -53,6 +53,8 @@ interface Line {
   readonly worker: Worker;
   readonly api: Comlink.Remote<AnalysisApi>;
   lastSignMs: number;
+  /** False until the worker has said anything. */
+  spoke: boolean;
 }
 
 const CRASHED: Failure = {
@@ -61,6 +63,17 @@ const CRASHED: Failure = {
   place: null,
   remedy:
     'Your edits are kept. The last step is done again by itself; if it stops once more, open the file again.',
+};
+
+/** Workers in a row that ended without a word before no further one is started. */
+const MOST_BARREN = 3;
+
+const NEVER_STARTED: Failure = {
+  kind: 'crashed',
+  message: 'The part of the program that computes cannot be started in this browser.',
+  place: null,
+  remedy:
+    'Reload the page. If that does not help, use a current version of a browser, or ask who serves this page whether all of its files are there.',
 };
 
 /**
@@ -73,6 +86,7 @@ export function createAnalysisClient(
 ): AnalysisClient {
   const open = new Map<JobId, OpenCall>();
   let nextJob: JobId = 1;
+  let barren = 0;
   let line = connect();
   let opening: readonly [Blob, string, TextReading | null] | null = null;
   let accepted: readonly [Blob, string, TextReading | null] | null = null;
@@ -80,11 +94,12 @@ export function createAnalysisClient(
   function connect(): Line {
     const worker = startWorker();
     const api = Comlink.wrap<AnalysisApi>(worker);
-    const made: Line = { worker, api, lastSignMs: performance.now() };
+    const made: Line = { worker, api, lastSignMs: performance.now(), spoke: false };
     worker.addEventListener('error', () => restart(made));
     worker.addEventListener('messageerror', () => restart(made));
     const hear = (news: WorkerNews) => {
       made.lastSignMs = performance.now();
+      made.spoke = true;
       if (news.kind === 'progress') open.get(news.job)?.onProgress?.(news.step, news.done);
     };
     void Promise.resolve(api.listen(Comlink.proxy(hear))).catch(() => restart(made));
@@ -94,9 +109,14 @@ export function createAnalysisClient(
   function restart(dead: Line): void {
     if (dead !== line) return;
     dead.worker.terminate();
-    line = connect();
+    barren = dead.spoke ? 0 : barren + 1;
     const calls = [...open.values()];
     open.clear();
+    if (barren >= MOST_BARREN) {
+      for (const call of calls) call.settle(NEVER_STARTED);
+      return;
+    }
+    line = connect();
     const again = accepted
       ? line.api.open(0, ...accepted).then(() => line.api.accept())
       : Promise.resolve();
@@ -116,6 +136,7 @@ export function createAnalysisClient(
     const job = nextJob;
     nextJob += 1;
     const { api } = line;
+    if (barren >= MOST_BARREN) return Promise.resolve({ ok: false, failure: NEVER_STARTED });
     return new Promise((resolve) => {
       const settle = (failure: Failure) => resolve({ ok: false, failure });
       open.set(job, { settle, onProgress: options.onProgress });
