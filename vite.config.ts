@@ -1,3 +1,4 @@
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import react from '@vitejs/plugin-react';
 import { defineConfig } from 'vitest/config';
 
@@ -26,14 +27,37 @@ const contentSecurityPolicy = {
   ],
 };
 
+/** Licence texts of every package that the page ships, as one file beside it; the bundles carry no comments. */
+const licences = {
+  name: 'licences',
+  apply: 'build' as const,
+  generateBundle(this: {
+    emitFile(file: { type: 'asset'; fileName: string; source: string }): void;
+  }) {
+    const { packages } = JSON.parse(readFileSync('package-lock.json', 'utf8')) as {
+      packages: Record<string, { version?: string; license?: string; dev?: boolean }>;
+    };
+    const namesByText = new Map<string, string[]>();
+    for (const [path, { version, license, dev }] of Object.entries(packages)) {
+      if (!path.startsWith('node_modules/') || dev || !existsSync(path)) continue;
+      const file = readdirSync(path).find((name) => /^licen[cs]e/i.test(name));
+      const text = file ? readFileSync(`${path}/${file}`, 'utf8').trim() : '';
+      const name = `${path.replace('node_modules/', '')} ${version} (${license})`;
+      namesByText.set(text, [...(namesByText.get(text) ?? []), name]);
+    }
+    const parts = [...namesByText].map(([text, names]) => `${names.join('\n')}\n\n${text}\n`);
+    this.emitFile({ type: 'asset', fileName: 'licences.txt', source: parts.join('\n----\n\n') });
+  },
+};
+
 export default defineConfig(({ mode }) => {
   const node = mode === 'node';
   return {
     base: './',
     appType: 'mpa',
     publicDir: node ? false : 'public',
-    plugins: node ? [] : [react(), contentSecurityPolicy],
-    worker: { format: 'es' },
+    plugins: node ? [] : [react(), contentSecurityPolicy, licences],
+    worker: { format: 'es', rolldownOptions: { output: { comments: { legal: false } } } },
     build: node
       ? {
           ssr: true,
@@ -54,6 +78,8 @@ export default defineConfig(({ mode }) => {
           target: 'es2022',
           assetsInlineLimit: 0,
           modulePreload: { polyfill: false },
+          chunkSizeWarningLimit: 600,
+          rolldownOptions: { output: { comments: { legal: false } } },
         },
     test: {
       include: ['test/**/*.test.ts'],

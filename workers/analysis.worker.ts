@@ -1,7 +1,6 @@
 import * as Comlink from 'comlink';
 import { type Failure, Refusal, type Reply } from '../src/recording/failure';
 import type { AnalysisApi, JobId, WorkerNews } from './analysis-api';
-import { demoStudyFile } from './demo-study';
 import { type Job, type JobControl, startJob } from './job';
 import { createPipeline } from './pipeline';
 
@@ -59,7 +58,11 @@ const api: AnalysisApi = {
   listen(ear) {
     tell = ear;
   },
-  demo: (id) => inJob(id, () => demoStudyFile()),
+  demo: (id) =>
+    inJob(id, async () => {
+      const { demoStudyFile } = await import('./demo-study');
+      return demoStudyFile();
+    }),
   open: (id, file, fileName, reading) => inJob(id, () => pipeline.open(file, fileName, reading)),
   accept: () => pipeline.accept(),
   firstRoles: (id) => inJob(id, () => pipeline.firstRoles()),

@@ -1,24 +1,38 @@
-import { AboutDialog } from './about-dialog';
+import { lazy, Suspense } from 'react';
 import { useShell } from './app-context';
 import type { PageActs } from './command';
-import { FigureDialog } from './figure-dialog';
-import { GoToDialog } from './go-to-dialog';
 import { IdentityDialog } from './identity-dialog';
-import { KeysDialog } from './keys-dialog';
-import { PhasesDialog } from './phases-dialog';
-import { ProtocolDialog } from './protocol-dialog';
-import { RolesDialog } from './roles-dialog';
-import { SettingsDialog } from './settings-dialog';
 import type { DialogState } from './shell-store';
-import { SignDialog } from './sign-dialog';
 import { FailureDialog, ReviewerDialog, SameFileDialog, TextReadingDialog } from './small-dialogs';
+
+type Later = typeof import('./later-dialogs');
+
+/** A dialog that is fetched when it is opened first, since most visits open few of them. */
+const later = <K extends keyof Later>(name: K) =>
+  lazy<Later[K]>(() => import('./later-dialogs').then((all) => ({ default: all[name] })));
+
+const AboutDialog = later('AboutDialog');
+const FigureDialog = later('FigureDialog');
+const GoToDialog = later('GoToDialog');
+const KeysDialog = later('KeysDialog');
+const PhasesDialog = later('PhasesDialog');
+const ProtocolDialog = later('ProtocolDialog');
+const RolesDialog = later('RolesDialog');
+const SettingsDialog = later('SettingsDialog');
+const SignDialog = later('SignDialog');
 
 /** The open dialog, and the one below a reviewer's dialog. */
 export function Dialogs({ page }: { readonly page: PageActs }) {
   const dialog = useShell((state) => state.dialog);
   const under = useShell((state) => state.under);
   const shown = [under, dialog].filter((one) => one.kind !== 'none');
-  return shown.map((one) => <OneDialog key={one.kind} state={one} page={page} />);
+  return (
+    <Suspense fallback={null}>
+      {shown.map((one) => (
+        <OneDialog key={one.kind} state={one} page={page} />
+      ))}
+    </Suspense>
+  );
 }
 
 interface OneDialogProps {

@@ -1,7 +1,6 @@
-import { exportFiles } from '../export/all-files';
-import { storedZip } from '../export/stored-zip';
 import { type Failure, Refusal } from '../recording/failure';
 import type { AnalysisStore } from '../review/analysis-store';
+import { asWork } from '../review/idle';
 import type { LogLine, Session } from '../session/document';
 import { safeCode, sessionFileName } from '../session/file-name';
 import { textToSession } from '../session/read-document';
@@ -50,18 +49,12 @@ export function createStudyFiles({ session, analysis, shell, keeping }: FilePart
       }
       const { state } = open;
       const { sha256 } = state.study;
-      const files = exportFiles({
-        recording,
-        state,
-        sha256,
-        program: PROGRAM,
-        edit,
-        stomach,
-        heart,
-        findings,
+      const input = { recording, state, sha256, program: PROGRAM, edit, stomach, heart, findings };
+      const saved = import('./results-zip').then(({ resultsZip }) => {
+        download(`${safeCode(state.study.code)}-results.zip`, resultsZip(input), 'application/zip');
+        shell.getState().say(IDENTIFYING);
       });
-      download(`${safeCode(state.study.code)}-results.zip`, storedZip(files), 'application/zip');
-      shell.getState().say(IDENTIFYING);
+      void asWork(saved);
     },
   };
 

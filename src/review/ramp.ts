@@ -1,4 +1,4 @@
-import { parseHex } from './contrast';
+import { parseHex } from './hex-colour';
 
 const STEPS = 256;
 

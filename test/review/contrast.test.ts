@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest';
-import { contrastRatio, relativeLuminance } from '../../src/review/contrast';
 import {
   applyTheme,
   CSS_NAMES,
@@ -7,6 +6,7 @@ import {
   type ThemeName,
   type ThemeTokens,
 } from '../../src/review/theme-tokens';
+import { contrastRatio, relativeLuminance } from './wcag-contrast';
 
 const NAMES: readonly ThemeName[] = ['light', 'dark'];
 

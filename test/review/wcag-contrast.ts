@@ -1,24 +1,10 @@
-import { pow } from '../numeric/elementary';
-
-/** A colour as red, green and blue, each 0 to 255. */
-export type Rgb = readonly [red: number, green: number, blue: number];
-
-/** Reads "#rrggbb". Throws RangeError for anything else. */
-export function parseHex(hex: string): Rgb {
-  const match = /^#([0-9a-f]{2})([0-9a-f]{2})([0-9a-f]{2})$/i.exec(hex);
-  if (!match) throw new RangeError(`a colour is written #rrggbb, not ${hex}`);
-  return [
-    Number.parseInt(match[1], 16),
-    Number.parseInt(match[2], 16),
-    Number.parseInt(match[3], 16),
-  ];
-}
+import { parseHex } from '../../src/review/hex-colour';
 
 /** Relative luminance of an sRGB colour, 0 (black) to 1 (white). Method: WCAG 2.1, definition of relative luminance. */
 export function relativeLuminance(hex: string): number {
   const [red, green, blue] = parseHex(hex).map((value) => {
     const part = value / 255;
-    return part <= 0.03928 ? part / 12.92 : pow((part + 0.055) / 1.055, 2.4);
+    return part <= 0.03928 ? part / 12.92 : ((part + 0.055) / 1.055) ** 2.4;
   });
   return 0.2126 * red + 0.7152 * green + 0.0722 * blue;
 }

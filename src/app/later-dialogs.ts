@@ -1,0 +1,9 @@
+export { AboutDialog } from './about-dialog';
+export { FigureDialog } from './figure-dialog';
+export { GoToDialog } from './go-to-dialog';
+export { KeysDialog } from './keys-dialog';
+export { PhasesDialog } from './phases-dialog';
+export { ProtocolDialog } from './protocol-dialog';
+export { RolesDialog } from './roles-dialog';
+export { SettingsDialog } from './settings-dialog';
+export { SignDialog } from './sign-dialog';
