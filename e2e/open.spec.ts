@@ -6,7 +6,7 @@ import {
   chooseFile,
   dialogOf,
   expectNoTroubles,
-  figure,
+  figureNumber,
   figuresThere,
   freshPage,
   IDENTITY,
@@ -19,6 +19,7 @@ import {
   REFUSED,
   reviewAs,
   settled,
+  showAllLeads,
   told,
   undoName,
   words,
@@ -94,6 +95,7 @@ test.describe('with a recording open', () => {
   test.afterEach(() => expectNoTroubles(page));
 
   test('the leads are parted and every row is drawn', async () => {
+    await showAllLeads(page);
     await expectDrawn(page, 'Minutes');
     await expectDrawn(page, 'Seconds');
     const minutes = await told(page, 'Minutes');
@@ -104,7 +106,7 @@ test.describe('with a recording open', () => {
     expect(minutes).toMatch(/Spectrogram 1 to 9 cpm/);
     expect(await told(page, 'Seconds')).toMatch(/E\d, heartbeat: -?\d+ to \d+ uV/);
     // 3.1 cpm is what the fixture's maker put in (truth.json).
-    expect(Number(await figure(page, 'DF, median'))).toBeCloseTo(3.1, 1);
+    expect(await figureNumber(page, 'df_median_cpm')).toBeCloseTo(3.1, 1);
   });
 
   test('the roles come with a reason each and are changed in one dialog, as one undo step', async () => {
@@ -135,7 +137,7 @@ test.describe('with a recording open', () => {
     const reason = dialog.getByLabel('Reason for reporting another lead');
     if (await reason.isVisible()) await reason.fill('a difference was wanted');
     await dialog.getByRole('button', { name: 'Use these leads' }).click();
-    await settled(page);
+    await showAllLeads(page);
     await expectDrawn(page, 'Minutes');
     expect(await told(page, 'Minutes')).toMatch(/E1 − E3, slow wave: -?\d+ to \d+ uV/);
     await press(page, 'Control+z');

@@ -44,12 +44,18 @@ export interface Box {
   readonly height: number;
 }
 
-/** Where the drawing of a pane is on the page. */
-export async function stageBox(page: Page, name: 'Whole study' | 'Minutes' | 'Seconds') {
-  const box = await pane(page, name).locator('[data-part="stage"]').boundingBox();
-  if (!box) throw new Error(`${name} has no drawing`);
+/** Where a part of the page is; throws where it is not to be seen. */
+export async function boxOf(part: Locator): Promise<Box> {
+  const box = await part.boundingBox();
+  if (!box) throw new Error(`${part} is not on the page`);
   return box;
 }
+
+export const centreOf = ({ x, y, width, height }: Box) => ({ x: x + width / 2, y: y + height / 2 });
+
+/** Where the drawing of a pane is on the page. */
+export const stageBox = (page: Page, name: 'Whole study' | 'Minutes' | 'Seconds'): Promise<Box> =>
+  boxOf(pane(page, name).locator('[data-part="stage"]'));
 
 /** Where a time stands in a pane whose window is known. */
 export const xOfTime = (box: Box, window: readonly [number, number], atS: number): number =>

@@ -6,6 +6,7 @@ import {
   type Locator,
   type Page,
 } from 'playwright/test';
+import { FIGURES } from '../src/recording/figure-catalogue';
 
 /** Folder of the open data fixture, record 208; its origin and licence are beside it. */
 export const RECORD_FOLDER = fileURLToPath(new URL('../test/fixtures/record208/', import.meta.url));
@@ -139,6 +140,13 @@ export async function told(page: Page, name: 'Whole study' | 'Minutes' | 'Second
   return (await pane(page, name).locator('[data-part="summary"]').textContent()) ?? '';
 }
 
+/** Shows the rows of all slow-wave leads, where a low page shows the reported one alone. */
+export async function showAllLeads(page: Page): Promise<void> {
+  const button = page.getByRole('button', { name: /^Show all \d+ leads$/ });
+  if (await button.isVisible()) await button.click();
+  await settled(page);
+}
+
 /** What the Undo button would take back, '' where nothing. */
 export async function undoName(page: Page): Promise<string> {
   const button = bar(page).getByRole('button', { name: /^Undo/ });
@@ -156,12 +164,25 @@ export async function keptHere(page: Page, edit: number): Promise<void> {
   await expect(bar(page)).toContainText(`in this browser only, edit ${edit}`);
 }
 
-/** The large part of a figure in Findings: a number, a count, or a dash. */
-export async function figure(page: Page, label: string, phase = 'fasting'): Promise<string> {
-  await settled(page);
-  const button = findings(page).getByRole('button', { name: `${label}, ${phase}: ` });
-  return words(await button.first().locator('.figure-large').textContent());
+/** The button of a figure in Findings, by its key in the catalogue (the keys are stable, the labels may be bettered). */
+export function figureButton(page: Page, key: string, phase = 'fasting'): Locator {
+  const label = FIGURES.find((one) => one.key === key)?.label;
+  if (label === undefined) throw new Error(`no figure ${key}`);
+  return findings(page).locator('button.figure', {
+    has: page.locator('.unseen', { hasText: `${label}, ${phase}: ` }),
+  });
 }
+
+/** The large part of a figure in Findings: a number, a count, or a dash. */
+export async function figure(page: Page, key: string, phase = 'fasting'): Promise<string> {
+  await settled(page);
+  const large = figureButton(page, key, phase).first().locator('.figure-large');
+  return words(await large.textContent()).replace('−', '-');
+}
+
+/** A figure as a number. */
+export const figureNumber = async (page: Page, key: string, phase = 'fasting'): Promise<number> =>
+  Number(await figure(page, key, phase));
 
 /** All figures in sight, in words, to compare a whole column at once. */
 export async function allFigures(page: Page): Promise<readonly string[]> {
