@@ -12,7 +12,7 @@ export const latestWaveS = (rrS: number) => Math.min(LAST_S, PART_OF_RR * rrS);
 /** A usual after-wave below this part of its beat's energy is no rival. */
 const LEAST_PART = 0.12;
 /** What follows with more than this part of its beat's energy is another beat, as where every second beat is early. */
-const MOST_PART = 0.85;
+const MOST_PART = 0.83;
 /** An energy this many times the usual after-wave's is no after-wave. */
 const CLEARLY_MORE = 1.9;
 const MOST_COST = 12;

@@ -1,6 +1,8 @@
 import { median } from '../numeric/statistics';
 import { latestWaveS } from './after-wave';
+import { type Growing, type Match, matchMiddle, middle, type Rows, rms } from './beat-rows';
 import { noiseByHalfSecond } from './between-beats';
+import { distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
 
@@ -14,16 +16,11 @@ const MOST_BEATS = 4000;
 const MOST_SHAPES = 12;
 /** Least likeness of a noiseless complex to the average of its shape. */
 const LEAST_LIKENESS = 0.86;
-/** Averages more alike than this are one shape. */
-const SAME_SHAPE = 0.92;
-/** A wave carried along by a more frequent shape is at most so large beside it, and this much like what is found there. */
-const CARRIED_SIZE = 1.5;
-const CARRIED_LIKENESS = 0.78;
-/** The same where it overlaps the beat itself. */
-const SHIFTED_LIKENESS = 0.85;
-/** A row starts a shape where noise lowers its likeness no more than this, or little more than usual. */
+/** A row is clear where noise lowers its likeness no more than this, or little more than usual. */
 const CLEAR_FACTOR = 0.9;
 const CLEAR_PART = 0.97;
+/** Likeness asked of the beats of a shape that no clear row started. */
+const STRICT_LIKENESS = 0.9;
 /** Noise sorted by likeness is less alike than this. */
 const LEAST_COHERENCE = 0.45;
 
@@ -41,23 +38,6 @@ export interface Shape {
   readonly before: number;
 }
 
-/** The shape band about each beat, with room to both sides. */
-interface Windows {
-  readonly rows: readonly Float64Array[];
-  /** RMS of the window between beats, per row. */
-  readonly noise: readonly number[];
-  /** Half of the window compared, half of a row, and how far a window may be moved. */
-  readonly half: number;
-  readonly rowHalf: number;
-  readonly lag: number;
-  /** Latest place of a T wave after its beat, in samples. */
-  readonly latest: number;
-  /** Median RR in samples. */
-  readonly usualRr: number;
-  /** Samples stepped over when two windows are compared. */
-  readonly step: number;
-}
-
 /**
  * Learns the shapes of the beats found so far: the most frequent first, then those that many beats share most closely, since
  * noise makes frequent shapes too, of poor likeness. Yields the part done.
@@ -67,7 +47,10 @@ export function* learnShapes(
   beats: readonly number[],
 ): Generator<number, Shape[]> {
   const windows = yield* readWindows(signal, beats);
-  const settled = settle(windows, distinct(grow(windows), windows));
+  const settled = settle(
+    windows,
+    distinctShapes(grow(windows), windows, signal.rateHz, signal.bands),
+  );
   return byWorth(settled.filter(({ count }) => count >= Math.max(2, 0.001 * windows.rows.length)));
 }
 
@@ -76,7 +59,7 @@ function byWorth([main, ...others]: readonly Shape[]): Shape[] {
   return main ? [main, ...others.sort((a, b) => worth(b) - worth(a))] : [];
 }
 
-function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<number, Windows> {
+function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<number, Rows> {
   const { rateHz, bands, samples } = signal;
   const half = Math.round(SHAPE_HALF_S * rateHz);
   const lag = Math.round(SHAPE_LAG_S * rateHz);
@@ -106,58 +89,13 @@ function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<
   return { rows, noise, half, rowHalf, lag, latest, usualRr, step };
 }
 
-interface Match {
-  readonly value: number;
-  readonly at: number;
-}
-
-/**
- * Likeness (normalised correlation, -1 to 1) of a row to an average, greatest over the places from `first` to `last` of the
- * average's start in the row.
- */
-function likeness(
-  row: Float64Array,
-  average: Float64Array,
-  first: number,
-  last: number,
-  step: number,
-): Match {
-  let value = -1;
-  let at = first;
-  for (let place = first; place <= last; place += step) {
-    let product = 0;
-    let rowPower = 1e-30;
-    let power = 1e-30;
-    for (let i = 0, j = place; i < average.length; i += step, j += step) {
-      product += average[i] * row[j];
-      rowPower += row[j] * row[j];
-      power += average[i] * average[i];
-    }
-    const here = product / Math.sqrt(rowPower * power);
-    if (here > value) {
-      value = here;
-      at = place;
-    }
-  }
-  return { value, at };
-}
-
-/** A shape while it is learned: the sum of its beats' rows, aligned. */
-interface Growing {
-  readonly sum: Float64Array;
-  count: number;
-}
-
 /** Noise lowers the likeness of a complex to its average by this factor. */
 function noiseFactor(rmsUv: number, noiseUv: number): number {
   return Math.sqrt(Math.max(0.1, 1 - (noiseUv / Math.max(rmsUv, 1e-12)) ** 2));
 }
 
-const middle = (row: Float64Array, half: number) =>
-  row.subarray((row.length - 1) / 2 - half, (row.length + 1) / 2 + half);
-
-/** Sorts the rows into shapes in order of time: each joins the shape it is most like, or, where it is clear of noise, starts one. */
-function grow(windows: Windows): Growing[] {
+/** Sorts the rows into shapes in order of time: each joins the shape it is most like, or starts one. */
+function grow(windows: Rows): Growing[] {
   const { rows, noise, half } = windows;
   const factors = rows.map((row, i) => noiseFactor(rms(middle(row, half)), noise[i]));
   const clear = Math.min(CLEAR_FACTOR, CLEAR_PART * median(factors));
@@ -168,68 +106,29 @@ function grow(windows: Windows): Growing[] {
     let bestMatch: Match = { value: 0, at: 0 };
     for (const shape of shapes) {
       const match = matchMiddle(row, shape.sum, windows, windows.step);
-      const wanted = LEAST_LIKENESS * factor * (shape.count < 4 ? Math.sqrt(factor) : 1);
+      const young = shape.count < 4 ? Math.sqrt(factor) : 1;
+      const wanted = shape.strict ? STRICT_LIKENESS : LEAST_LIKENESS * factor * young;
       if (match.value < wanted || match.value <= bestMatch.value) continue;
       best = shape;
       bestMatch = match;
     }
-    if (best) addRow(best, row, bestMatch.at, windows);
-    if (best || factor < clear) return;
+    if (best) {
+      addRow(best, row, bestMatch.at, windows);
+      return;
+    }
     if (shapes.length >= 2 * MOST_SHAPES)
       shapes = [...shapes].sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
-    shapes.push({ sum: row.slice(), count: 1 });
+    shapes.push({ sum: row.slice(), count: 1, strict: factor < clear });
   });
   return shapes.sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
 }
 
-/** The middle of a sum, found in a row near the row's middle. */
-function matchMiddle(row: Float64Array, sum: Float64Array, windows: Windows, step: number): Match {
-  const { half, rowHalf, lag } = windows;
-  return likeness(row, middle(sum, half), rowHalf - half - lag, rowHalf - half + lag, step);
-}
-
-function addRow(shape: Growing, row: Float64Array, at: number, { half, rowHalf }: Windows): void {
+function addRow(shape: Growing, row: Float64Array, at: number, { half, rowHalf }: Rows): void {
   const shift = at - (rowHalf - half);
   const from = Math.max(0, -shift);
   const to = Math.min(row.length, row.length - shift);
   for (let i = from; i < to; i += 1) shape.sum[i] += row[i + shift];
   shape.count += 1;
-}
-
-function rms(x: Float64Array): number {
-  let sum = 0;
-  for (const value of x) sum += value * value;
-  return Math.sqrt(sum / x.length);
-}
-
-/**
- * Leaves out shapes nearly alike to a more frequent one, and those that most beats of a more frequent shape carry with
- * them: T and P waves.
- */
-function distinct(shapes: readonly Growing[], windows: Windows): Growing[] {
-  const { half, rowHalf, lag, latest } = windows;
-  const start = rowHalf - half;
-  const kept: Growing[] = [];
-  const strength = ({ sum }: Growing) => rms(middle(sum, half));
-  for (const shape of [...shapes].sort((a, b) => strength(b) - strength(a))) {
-    const own = middle(shape.sum, half);
-    const size = rms(own) / shape.count;
-    const alike = kept.some(
-      (other) => matchMiddle(other.sum, shape.sum, windows, 1).value > SAME_SHAPE,
-    );
-    const carried = kept.some((other) => {
-      const host = strength(other) / other.count;
-      if (size > CARRIED_SIZE * host) return false;
-      const after = likeness(other.sum, own, start + lag, start + latest, 1);
-      const before = likeness(other.sum, own, 0, start - lag, 1);
-      const match = after.value > before.value ? after : before;
-      const there = rms(other.sum.subarray(match.at, match.at + own.length)) / other.count;
-      const apart = Math.abs(match.at - start) >= half;
-      return match.value > (apart ? CARRIED_LIKENESS : SHIFTED_LIKENESS) && there > size / 2;
-    });
-    if (!alike && !carried) kept.push(shape);
-  }
-  return kept;
 }
 
 /** Mean correlation of the beats of a shape with one another; 1 for a single beat. */
@@ -240,17 +139,24 @@ function coherence({ sum, count, power }: Growing & { power: number }, half: num
 }
 
 /** Shares the rows out once more among the shapes, and averages those that fit. */
-function settle(windows: Windows, shapes: readonly Growing[]): Shape[] {
+function settle(windows: Rows, shapes: readonly Growing[]): Shape[] {
   const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
-  const sums = shapes.map(() => ({ sum: new Float64Array(2 * rowHalf + 1), count: 0, power: 0 }));
+  const sums = shapes.map(({ strict }) => ({
+    sum: new Float64Array(2 * rowHalf + 1),
+    count: 0,
+    power: 0,
+    strict,
+  }));
   rows.forEach((row, i) => {
     const matches = shapes.map(({ sum }) => matchMiddle(row, sum, windows, windows.step));
     let best = 0;
     matches.forEach((match, k) => {
       if (match.value > matches[best].value) best = k;
     });
+    if (matches.length === 0) return;
     const factor = noiseFactor(rms(middle(row, half)), noise[i]);
-    if (matches.length === 0 || matches[best].value < LEAST_LIKENESS * factor) return;
+    const wanted = shapes[best].strict ? STRICT_LIKENESS : LEAST_LIKENESS * factor;
+    if (matches[best].value < wanted) return;
     const { at } = matchMiddle(row, shapes[best].sum, windows, 1);
     addRow(sums[best], row, at, windows);
     sums[best].power += rms(row.subarray(at, at + 2 * half + 1)) ** 2;

@@ -55,7 +55,8 @@ export function classifyBeats(
       if (odd !== 'Q') return odd;
     }
     const sure = clearlyOfShape(beat) && shapes[beat.shape].coherence > COHERENT;
-    if (kinds[beat.shape] === 'wide') return sure ? 'V' : 'Q';
+    if (kinds[beat.shape] === 'wide')
+      return sure ? 'V' : oddClass(beat, ratios[i], shapes[main], meanHz);
     const early =
       ratios[i] < CLEARLY_EARLY && rhythm.spread < REGULAR_SPREAD && clearlyOfShape(beat);
     return early && ratios[i - 1] > CLEARLY_EARLY ? 'S' : 'N';

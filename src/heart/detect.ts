@@ -86,11 +86,10 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   };
   const found = yield* findBeats(signal);
   if (found.beats.length < 2) return nothing('No heartbeat was found in this lead.');
-  const averages = averagesOf(signal, found);
-  yield 0.95;
+  const averages = yield* averagesOf(signal, found);
   const sign = averages.length > 0 ? dominantSign(averages[0], rateHz) : 1;
   const timed = withFiducials(averages, sign, rateHz);
-  const times = timesOf(signal, found.beats, timed, sign);
+  const times = yield* timesOf(signal, found.beats, timed, sign);
   const classes = classesOf(signal, found);
   const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;
   return {
@@ -116,13 +115,18 @@ function nothing(note: string): Detection {
   };
 }
 
+/** Beats an average is made of, at least. */
+const FEWEST = 3;
 /** Likeness within this of a usual beat's counts a beat to its shape. */
 const OF_SHAPE = 0.25;
 const isOfShape = (beat: Candidate) =>
   beat.shape >= 0 && beat.likeness > beat.bestLikeness - OF_SHAPE;
 
 /** Averages of the shapes that beats were found of, the most frequent first. */
-function averagesOf(signal: HeartSignal, { beats }: FoundBeats): Omit<ShapeAverage, 'fiducial'>[] {
+function* averagesOf(
+  signal: HeartSignal,
+  { beats }: FoundBeats,
+): Generator<number, Omit<ShapeAverage, 'fiducial'>[]> {
   const groups = new Map<number, number[]>();
   for (const beat of beats) {
     if (!isOfShape(beat)) continue;
@@ -130,36 +134,50 @@ function averagesOf(signal: HeartSignal, { beats }: FoundBeats): Omit<ShapeAvera
     if (group) group.push(beat.sample);
     else groups.set(beat.shape, [beat.sample]);
   }
-  return [...groups]
-    .filter(([, group]) => group.length >= 3)
-    .map(([shape, group]) => averageBeats(signal, shape, group))
-    .sort((a, b) => b.count - a.count);
+  const averages: Omit<ShapeAverage, 'fiducial'>[] = [];
+  for (const [shape, group] of groups) {
+    if (group.length >= FEWEST) averages.push(averageBeats(signal, shape, group));
+    yield 0.94;
+  }
+  return averages.sort((a, b) => b.count - a.count);
 }
 
 /** Half of the stretch in which the extreme of a beat of no known shape is looked for. */
 const ODD_HALF_S = 0.06;
+/** Samples beside it that the place between samples is read from. */
+const MARGIN = 9;
 
-function timesOf(
+/** Beats timed between two steps. */
+const BEATS_A_STEP = 500;
+
+function* timesOf(
   signal: HeartSignal,
   beats: readonly Candidate[],
   averages: readonly ShapeAverage[],
   sign: 1 | -1,
-): number[] {
+): Generator<number, number[]> {
   const byShape = new Map(averages.map((average) => [average.shape, average]));
-  const reach = Math.round(ODD_HALF_S * signal.rateHz);
-  return beats.map((beat) => {
-    const average = byShape.get(beat.shape);
-    if (average && isOfShape(beat)) return timeBeat(signal, average, beat.sample).time;
-    const row = readFilled(
-      signal.samples,
-      signal.usable,
-      beat.sample - reach - 9,
-      beat.sample + reach + 10,
+  const times: number[] = [];
+  for (const beat of beats) {
+    const average = isOfShape(beat) ? byShape.get(beat.shape) : undefined;
+    times.push(
+      average
+        ? timeBeat(signal, average, beat.sample).time
+        : extremeNear(signal, beat.sample, sign),
     );
-    let at = reach + 9;
-    for (let i = 9; i < row.length - 9; i += 1) if (sign * row[i] > sign * row[at]) at = i;
-    return beat.sample - reach - 9 + crestPlace(row, at, sign);
-  });
+    if (times.length % BEATS_A_STEP === 0) yield 0.95 + (0.04 * times.length) / beats.length;
+  }
+  return times;
+}
+
+/** Time of the extreme of a beat of no known shape, in samples. */
+function extremeNear({ samples, usable, rateHz }: HeartSignal, near: number, sign: 1 | -1): number {
+  const reach = Math.round(ODD_HALF_S * rateHz);
+  const start = near - reach - MARGIN;
+  const row = readFilled(samples, usable, start, near + reach + MARGIN + 1);
+  let at = reach + MARGIN;
+  for (let i = MARGIN; i < row.length - MARGIN; i += 1) if (sign * row[i] > sign * row[at]) at = i;
+  return start + crestPlace(row, at, sign);
 }
 
 function classesOf(signal: HeartSignal, { beats, shapes }: FoundBeats): BeatClass[] {

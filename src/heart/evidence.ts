@@ -19,10 +19,10 @@ function sizeFit(size: number): number {
   return Math.max(-9, -0.5 * (log(size) / SIZE_SPREAD) ** 2);
 }
 
-/** Log density of a crest of noise that is `overNoise` times the noise's level. */
-function noiseFit(overNoise: number): number {
+/** Log density of a crest of noise that is `overNoise` times the noise's level, from its least value on. */
+function noiseFit(overNoise: number, least: number): number {
   if (!(overNoise > NOISE_CREST)) return 0;
-  return Math.max(-7, -0.5 * (log(overNoise / NOISE_CREST) / NOISE_SPREAD) ** 2);
+  return Math.max(least, -0.5 * (log(overNoise / NOISE_CREST) / NOISE_SPREAD) ** 2);
 }
 
 /**
@@ -31,7 +31,7 @@ function noiseFit(overNoise: number): number {
  */
 export function energyEvidence(energyUv: number, beatUv: number, noiseUv: number): number {
   if (!(energyUv > LEAST_ENERGY_UV && beatUv > LEAST_ENERGY_UV)) return -9;
-  return sizeFit(energyUv / beatUv) - noiseFit(energyUv / (noiseUv + 1e-12));
+  return sizeFit(energyUv / beatUv) - noiseFit(energyUv / (noiseUv + 1e-12), -7);
 }
 
 /** The same for a first look, that must find beats to learn from: usual beats count as standing out of the noise. */
@@ -40,15 +40,26 @@ export function firstEvidence(energyUv: number, beatUv: number, noiseUv: number)
 }
 
 /**
- * Evidence of the shape: size and likeness against noise. `usualSize` is the size of beats near it. About -15 to 11.
+ * Evidence of the shape: size and likeness against noise. `usualSize` is the size of beats near it. About -25 to 14.
  */
 export function shapeEvidence(candidate: Candidate, usualSize: number): number {
   const { size, likeness, overNoise, bestLikeness } = candidate;
   const short = Math.max(0, 0.93 * bestLikeness - likeness) / LIKENESS_SPREAD;
   const fit = Math.max(-6, -0.5 * short ** 2);
   const more = likeness > 0.8 ? 20 * (likeness - 0.8) : 0;
+  const clear = Math.max(overNoise, clearByFit(likeness));
   const unseen = (UNSEEN_COST * Math.max(0, SEEABLE - bestLikeness)) / SEEABLE;
-  return sizeFit(size / usualSize) + fit + more - noiseFit(overNoise) - unseen;
+  return sizeFit(size / usualSize) + fit + more - noiseFit(clear, -10) - unseen;
+}
+
+/** Independent values of a window, and how far over noise its fit must be before that counts as more than chance. */
+const WINDOW_FREEDOM = 8;
+const FIT_BY_CHANCE = 3;
+
+/** Size over noise as the complex itself shows it: a fit this good leaves little room for noise, whatever lies around. */
+function clearByFit(likeness: number): number {
+  const rest = Math.sqrt(Math.max(1e-4, 1 - likeness ** 2) / WINDOW_FREEDOM);
+  return Math.max(0, likeness) / rest - FIT_BY_CHANCE;
 }
 
 /** What a beat unlike every learned shape costs. */

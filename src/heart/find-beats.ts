@@ -22,8 +22,10 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
   const { rateHz, samples } = signal;
   const energy = yield* scaled(energyPass(signal), 0, 0.3);
   const levels = levelsOf(energy, Math.ceil(samples.length / rateHz));
+  yield 0.3;
   const fallback = rhythmFromEnergy(energy, levels);
-  const first = firstBeats(energy, levels, rateHz, fallback);
+  yield 0.3;
+  const first = yield* firstBeats(energy, levels, rateHz, fallback);
   const shapes = yield* scaled(learnShapes(signal, first), 0.3, 0.5);
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
   let times = first.map((sample) => sample / rateHz);
@@ -39,6 +41,7 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
     const path = likelyPath(candidates, scores, hosts, { energy, rateHz, rhythm });
     beats = path.map((i) => candidates[i]);
     times = beats.map((beat) => beat.sample / rateHz);
+    yield 0.92;
   }
   return { beats: present(beats), shapes, levels, energy, candidates };
 }
@@ -76,12 +79,12 @@ function likelyPath(
   );
 }
 
-function firstBeats(
+function* firstBeats(
   energy: Energy,
   levels: Levels,
   rateHz: number,
   start: (timeS: number) => RhythmAt,
-): number[] {
+): Generator<number, number[]> {
   const { crests } = energy;
   const times = crests.map(({ sample }) => sample / rateHz);
   const scores = crests.map(({ sample, energyUv }) => {
@@ -98,6 +101,7 @@ function firstBeats(
       rhythm,
     );
     path = likelyPath(places, scores, hosts, { energy, rateHz, rhythm });
+    yield 0.3;
   }
   return path.map((i) => crests[i].sample);
 }

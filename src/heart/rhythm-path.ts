@@ -35,7 +35,7 @@ export function intervalFit(rrS: number, rhythm: RhythmAt): number {
   const usual = sure - 0.5 * (logRatio(rrS, usualS) / spread) ** 2;
   const side =
     ratio < 1
-      ? rare - 10 * Math.max(0, 0.75 - ratio)
+      ? rare - 5 * Math.max(0, 0.75 - ratio)
       : rare - 1.8 * Math.min(1, Math.max(0, ratio - 1.3) * 2) - 0.5 * Math.max(0, ratio - 2);
   const fit = Math.max(usual, side, -BREAK_COST - 3);
   return rrS < DOUBTFUL_S ? fit - 40 * (DOUBTFUL_S - rrS) : fit;

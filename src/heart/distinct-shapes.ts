@@ -1,0 +1,73 @@
+import { type Growing, likeness, matchMiddle, middle, type Rows, rms } from './beat-rows';
+import { filterBand, type QrsBands, rmsAbout } from './qrs-bands';
+
+/** Averages more alike than this are one shape. */
+const SAME_SHAPE = 0.92;
+/** A wave carried along by a more frequent shape is this much like what is found beside that one. */
+const CARRIED_LIKENESS = 0.78;
+/** The same where it overlaps the beat itself: the same beat, cut out elsewhere. */
+const SHIFTED_LIKENESS = 0.85;
+/** T and P waves have at most this part of their beat's energy in the QRS band; a beat that always follows has more. */
+const CARRIED_PART = 0.75;
+/** P waves begin at most this long before the middle of their beat (common practice, no source). */
+const EARLIEST_P_S = 0.26;
+const ENERGY_S = 0.1;
+
+/**
+ * Leaves out shapes nearly alike to a stronger one, and those that most beats of a stronger shape carry with them: T and P
+ * waves.
+ */
+export function distinctShapes(
+  shapes: readonly Growing[],
+  rows: Rows,
+  rateHz: number,
+  bands: QrsBands,
+): Growing[] {
+  const { half, rowHalf } = rows;
+  const kept: { shape: Growing; energy: number }[] = [];
+  const strength = ({ sum }: Growing) => rms(middle(sum, half));
+  for (const shape of [...shapes].sort((a, b) => strength(b) - strength(a))) {
+    const energy = qrsEnergy(shape, rowHalf, rateHz, bands);
+    const known = kept.some(
+      (other) =>
+        matchMiddle(other.shape.sum, shape.sum, rows, 1).value > SAME_SHAPE ||
+        isCarried(shape, other.shape, rows, energy / other.energy, rateHz),
+    );
+    if (!known) kept.push({ shape, energy });
+  }
+  return kept.map(({ shape }) => shape);
+}
+
+/** Energy of an average in the QRS band: the greatest root mean square over 100 ms near its middle. */
+function qrsEnergy(
+  { sum, count }: Growing,
+  centre: number,
+  rateHz: number,
+  bands: QrsBands,
+): number {
+  const rmsAt = rmsAbout(filterBand(sum, bands.energy), Math.round(ENERGY_S * rateHz));
+  const reach = Math.round(0.06 * rateHz);
+  let greatest = 1e-12;
+  for (let i = centre - reach; i <= centre + reach; i += 1) greatest = Math.max(greatest, rmsAt(i));
+  return greatest / count;
+}
+
+/** Whether a shape is found beside the beats of another, of like size: before it as a P wave, or after it as a T wave. */
+function isCarried(
+  shape: Growing,
+  other: Growing,
+  { half, rowHalf, lag, latest }: Rows,
+  energyPart: number,
+  rateHz: number,
+): boolean {
+  const own = middle(shape.sum, half);
+  const start = rowHalf - half;
+  const earliest = Math.max(0, start - Math.round(EARLIEST_P_S * rateHz));
+  const after = likeness(other.sum, own, start + lag, start + latest, 1);
+  const before = likeness(other.sum, own, earliest, start - lag, 1);
+  const match = after.value > before.value ? after : before;
+  const there = rms(other.sum.subarray(match.at, match.at + own.length)) / other.count;
+  if (there < rms(own) / shape.count / 2) return false;
+  if (Math.abs(match.at - start) < half) return match.value > SHIFTED_LIKENESS;
+  return match.value > CARRIED_LIKENESS && energyPart < CARRIED_PART;
+}
