@@ -33,7 +33,7 @@ function fedParts(phase: Phase): readonly Part[] {
   });
 }
 
-/** What each fed phase and part changed against fasting; empty without a fasting phase. */
+/** What each fed phase and part changed, from the figures as printed, against fasting; empty without a fasting phase. */
 export function changesOf(phases: readonly PhaseFindings[]): readonly FigureChange[] {
   const fasting = phases.find((one) => isFasting(one));
   if (!fasting) return [];
@@ -48,19 +48,20 @@ export function changesOf(phases: readonly PhaseFindings[]): readonly FigureChan
   );
 }
 
-function changeOf(before: Figures, after: Figures, { key, unit }: FigureDefinition): FigureValue {
-  const from = numberAt(before, key);
-  const to = numberAt(after, key);
+function changeOf(before: Figures, after: Figures, figure: FigureDefinition): FigureValue {
+  const from = numberAt(before, figure);
+  const to = numberAt(after, figure);
   if (from === null || to === null) return withheld('both phases need the figure as a number');
   return numberFigure(
     to - from,
-    unit === 'dB' ? `× ${pow(10, (to - from) / 10).toFixed(1)}` : null,
+    figure.unit === 'dB' ? `× ${pow(10, (to - from) / 10).toFixed(1)}` : null,
   );
 }
 
-function numberAt(figures: Figures, key: string): number | null {
+/** A figure as it is printed, so that what stands side by side adds up. */
+function numberAt(figures: Figures, { key, decimals }: FigureDefinition): number | null {
   const figure = figures[key];
-  return figure?.kind === 'number' ? figure.value : null;
+  return figure?.kind === 'number' ? Number(figure.value.toFixed(decimals)) : null;
 }
 
 /** Causes that say the person moved; the others are of the equipment. */

@@ -63,6 +63,8 @@ export type ShellStore = StoreApi<ShellState>;
 
 const NONE: DialogState = { kind: 'none' };
 const MOST_MESSAGES = 4;
+/** How long the status line speaks of an act. */
+const STATUS_MS = 12_000;
 
 /** The store of the page's own state: dialog, messages, theme, keys. Preferences are kept in local storage. */
 export function createShellStore(storage: Storage | null): ShellStore {
@@ -93,7 +95,10 @@ export function createShellStore(storage: Storage | null): ShellStore {
       closeDialog: () => set((before) => ({ dialog: before.under, under: NONE })),
       say: (text, undo = false) => add('note', text, undo),
       sayProblem: (text) => add('problem', text, false),
-      tell: (status) => set({ status }),
+      tell: (status) => {
+        set({ status });
+        setTimeout(() => set((now) => (now.status === status ? { status: '' } : now)), STATUS_MS);
+      },
       putAway: (id) =>
         set((before) => ({ messages: before.messages.filter((one) => one.id !== id) })),
       setTheme: (theme) => prefer({ theme }),

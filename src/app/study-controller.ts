@@ -237,7 +237,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       if (!open || !undoableEdit(open)) return;
       withReviewer({ session, shell }, () => {
         const name = session.getState().undo();
-        if (name) shell.getState().say(`Undone: ${name}.`);
+        if (name) shell.getState().tell(`Undone: ${name}`);
       });
     },
     redo() {
@@ -245,7 +245,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       if (!open || !redoableEdit(open)) return;
       withReviewer({ session, shell }, () => {
         const name = session.getState().redo();
-        if (name) shell.getState().say(`Done again: ${name}.`);
+        if (name) shell.getState().tell(`Done again: ${name}`);
       });
     },
     ...edits,

@@ -9,6 +9,12 @@ const NORMAL = BEAT_CLASSES.indexOf('N');
 const SUPRAVENTRICULAR = BEAT_CLASSES.indexOf('S');
 const PLACED = BEAT_ORIGINS.indexOf('placed');
 
+/**
+ * Intervals outside these limits are no NN: shorter ones hold a beat too many, longer ones miss beats or are a pause, which is
+ * told of apart. Common practice, no single source.
+ */
+export const NN_LIMITS_MS = [300, 2000] as const;
+
 /** Times of the beats in seconds from the start of the recording. */
 export function beatTimes(beats: BeatList, rateHz: Hertz): Float64Array {
   return beats.ticks.map((tick) => ticksToSeconds(tick, rateHz));
@@ -32,7 +38,7 @@ export function blockedIntervals(timesS: Float64Array, blocked: readonly Interva
 /**
  * RR intervals between neighbouring beats of any class, one fewer than there are beats; interval i runs from beat i to
  * beat i + 1 and stands at the latter's time. An interval is NN where both beats are N and neither is placed, and nothing
- * blocked lies between (Task Force 1996). A Q beat stands in the list, so that nothing is ever joined across it.
+ * blocked lies between (Task Force 1996), and where it lies within NN_LIMITS_MS. A Q beat stands in the list, so that nothing is ever joined across it.
  * `rateHz` is the rate the ticks count in; `blocked` holds the spoiled spans for the heart and the gaps, in any order.
  */
 export function rrSeries(beats: BeatList, rateHz: Hertz, blocked: readonly Interval[]): RrSeries {
@@ -45,7 +51,8 @@ export function rrSeries(beats: BeatList, rateHz: Hertz, blocked: readonly Inter
     beats.classes[beat] === NORMAL && beats.origins[beat] !== PLACED;
   for (let i = 0; i < count; i += 1) {
     rrMs[i] = (1000 * (beats.ticks[i + 1] - beats.ticks[i])) / (TICKS_PER_SAMPLE * rateHz);
-    nn[i] = inBlocked[i] === 0 && carries(i) && carries(i + 1) ? 1 : 0;
+    const likely = rrMs[i] >= NN_LIMITS_MS[0] && rrMs[i] <= NN_LIMITS_MS[1];
+    nn[i] = likely && inBlocked[i] === 0 && carries(i) && carries(i + 1) ? 1 : 0;
   }
   return { timesS: times.slice(1), rrMs, nn };
 }

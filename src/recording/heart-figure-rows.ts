@@ -2,7 +2,7 @@ import { type FigureRow, figureRow, OWN_RULE } from './figure-definition';
 import type { Settings } from './settings';
 
 const beats = () =>
-  'NN intervals: between two N beats, neither placed, nothing spoiled, missing or unusable between';
+  'NN intervals: between two N beats, neither placed, nothing spoiled, missing or unusable between, 300 to 2000 ms long';
 const spectra = (s: Settings) =>
   `Segments of ${s.variability.segmentS} s; LF ${s.variability.lfHz.join('-')} Hz, HF ${s.variability.hfHz.join('-')} Hz; at least ${Math.round(100 * s.variability.minNnShare)} % NN`;
 

@@ -61,11 +61,13 @@ export const STOMACH_ROWS: readonly FigureRow[] = [
     settings: bands,
   }),
   figureRow('time_mixed_pct', 'Mixed', '% of time', 0, {
+    main: true,
     definition: 'Share of the kept epochs in which the rhythm changes inside the epoch.',
     source: OWN_RULE,
     settings: bands,
   }),
   figureRow('time_undecided_pct', 'Not decidable', '% of time', 0, {
+    main: true,
     definition: 'Share of the kept epochs whose peak may be breathing or drift.',
     source: OWN_RULE,
     settings: bands,

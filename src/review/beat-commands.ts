@@ -75,14 +75,17 @@ export function beatCommands(
   return {
     ...choosing(stores, act, select),
     ...placing(stores, signals, act, select),
-    ...moving(stores, act, select),
+    ...moving(stores, signals, act, select),
     deleteSelectedBeats: () => {
       const ticks = selectedTicks(stores);
       const open = openBeats(stores);
       if (ticks.length === 0 || !open) return;
-      const after = firstBeatAt(open.state.beats, ticks[ticks.length - 1] + 1);
+      const { beats } = open.state;
+      const after = firstBeatAt(beats, ticks[ticks.length - 1] + 1);
       tryEdit(stores, act, ({ state }) => deleteBeats(state, ticks, open.rateHz));
-      if (after < open.state.beats.ticks.length) select([open.state.beats.ticks[after]]);
+      const { seconds } = view.getState();
+      const [, end] = beatsInView(beats, seconds, open.rateHz);
+      if (after < end) select([beats.ticks[after]]);
       else view.setState({ selection: { kind: 'none' } });
     },
     classSelected: (beatClass) => {
@@ -205,19 +208,27 @@ function placing(
 
 function moving(
   stores: PaneStores,
+  signals: SignalAccess,
   act: PaneActs,
   select: (ticks: readonly number[]) => void,
 ): Pick<BeatCommands, 'moveSelected' | 'moveSelectedBySamples' | 'moveBeatTo'> {
-  const move = (fromTick: number, wanted: number) => {
+  const moved = async (fromTick: number, wanted: number) => {
     const open = openBeats(stores);
     if (!open) return;
-    const last = secondsToTicks(stores.view.getState().durationS, open.rateHz);
-    const toTick = Math.min(Math.max(0, wanted), last);
+    const { rateHz } = open;
+    const toTick = betweenNeighbours(stores, open, fromTick, wanted);
+    const found = await signals.placeBeat(ticksToSeconds(toTick, rateHz));
+    const onPeak =
+      found?.visible === true && Math.abs(found.tick - toTick) <= secondsToTicks(ON_PEAK_S, rateHz);
+    const origin = onPeak ? 'moved' : 'placed';
     const made = tryEdit(stores, act, ({ state }) =>
-      moveBeat(state, fromTick, toTick, open.rateHz),
+      moveBeat(state, fromTick, toTick, rateHz, origin),
     );
-    if (made) select([toTick]);
+    if (!made) return;
+    select([toTick]);
+    if (!onPeak) act.say('No R peak is visible here: the beat is placed, its intervals are not NN');
   };
+  const move = (fromTick: number, wanted: number) => void asWork(moved(fromTick, wanted));
   const moveBy = (ticksOf: (rateHz: number) => number) => {
     const open = openBeats(stores);
     const ticks = selectedTicks(stores);
@@ -237,6 +248,24 @@ function moving(
 
 /** Two beats cannot stand this close. */
 const CROWDED_S = 0.1;
+/** A beat moved farther than this from the R peak near it stands on no R peak. */
+const ON_PEAK_S = 0.06;
+
+/** A place for a moved beat that passes none of its neighbours and stays in the study. */
+function betweenNeighbours(
+  { view }: PaneStores,
+  { state, rateHz }: Open,
+  fromTick: number,
+  wanted: number,
+): number {
+  const { ticks } = state.beats;
+  const index = firstBeatAt(state.beats, fromTick);
+  const apart = secondsToTicks(CROWDED_S, rateHz);
+  const low = index > 0 ? ticks[index - 1] + apart : 0;
+  const end = secondsToTicks(view.getState().durationS, rateHz);
+  const high = index + 1 < ticks.length ? ticks[index + 1] - apart : end;
+  return Math.min(Math.max(Math.min(low, fromTick), wanted), Math.max(high, fromTick));
+}
 
 /** Tick of the beat nearest to one, where it is closer than a time; else null. */
 function beatWithin(stores: PaneStores, tick: number, withinS: number): number | null {

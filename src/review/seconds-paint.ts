@@ -8,7 +8,9 @@ import { drawPinHead, PIN_RADIUS_PX } from './pin-shapes';
 
 /** Middle of the pins' heads, in CSS pixels from the pane's top. */
 export const PIN_Y_PX = 13;
-const LETTER_PX = 22;
+const LETTER_PX = 26;
+/** From the middle of a pin to its letter: clear of the ring round a selected one. */
+const LETTER_OFF_PX = 13;
 const LEAST_APART_PX = 3;
 const LEAST_RADIUS_PX = 2.5;
 const LEAST_ODD_RADIUS_PX = 4;
@@ -105,7 +107,7 @@ function paintPin(
   brush.fillStyle = tokens.ink;
   brush.textAlign = crowded ? 'center' : left ? 'right' : 'left';
   if (crowded) brush.fillText(beatClass, pin.x, PIN_Y_PX + 11);
-  else brush.fillText(beatClass, pin.x + (left ? -10 : 10), PIN_Y_PX + 0.5);
+  else brush.fillText(beatClass, pin.x + (left ? -LETTER_OFF_PX : LETTER_OFF_PX), PIN_Y_PX + 0.5);
 }
 
 function ringPin(brush: CanvasRenderingContext2D, x: number, colour: string): void {

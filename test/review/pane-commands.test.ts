@@ -79,21 +79,32 @@ describe('mending beats', () => {
     expect(study.edits).toEqual([]);
   });
 
-  it('moves a beat by one sample of its lead, or by milliseconds, and keeps it selected', () => {
-    const study = paneStudy();
+  it('moves a beat by one sample of its lead, or by milliseconds, and keeps it selected', async () => {
+    const study = paneStudy({ placeBeat: async () => ({ tick: 10 * SECOND, visible: true }) });
     study.commands.selectBeat(10 * SECOND, false);
     study.commands.moveSelectedBySamples(1);
+    await idle();
     expect(beatOf(study, 10 * SECOND + 64)).toEqual(['N', 'moved']);
     study.commands.moveSelected(-10);
+    await idle();
     expect(beatOf(study, 10 * SECOND + 64 - 0.01 * SECOND)).toEqual(['N', 'moved']);
     expect(chosen(study)).toEqual([10 + 0.004 - 0.01]);
   });
 
-  it('refuses to move a beat onto another, in words', () => {
-    const study = paneStudy();
-    study.commands.moveBeatTo(10 * SECOND, 11);
-    expect(study.edits).toEqual([]);
-    expect(study.errors[0]).toMatch(/stands at 0:00:11.0 already/);
+  it('a beat moved away from its R peak is placed: its intervals are not NN', async () => {
+    const study = paneStudy({ placeBeat: async () => ({ tick: 10 * SECOND, visible: true }) });
+    study.commands.moveBeatTo(10 * SECOND, 10.3);
+    await idle();
+    expect(beatOf(study, 10.3 * SECOND)).toEqual(['N', 'placed']);
+    expect(study.said.at(-1)).toMatch(/not NN/);
+  });
+
+  it('a beat never passes its neighbours, however far it is dragged', async () => {
+    const study = paneStudy({ placeBeat: async (s) => ({ tick: s * SECOND, visible: true }) });
+    study.commands.moveBeatTo(10 * SECOND, 3);
+    await idle();
+    expect(beatOf(study, 9.1 * SECOND)).toEqual(['N', 'moved']);
+    expect(study.state().beats.ticks).toHaveLength(599);
   });
 
   it('deletes what is selected and goes on to the beat after it', () => {
