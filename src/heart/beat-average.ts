@@ -35,7 +35,7 @@ function rowAbout(signal: HeartSignal, sample: number, before: number, after: nu
   return readFilled(signal.samples, signal.usable, sample - before, sample + after + 1);
 }
 
-export const searchOf = (rateHz: number) => Math.max(2, Math.round(SEARCH_S * rateHz));
+const searchOf = (rateHz: number) => Math.max(2, Math.round(SEARCH_S * rateHz));
 
 /** Averages the beats found at whole samples, aligned to one another between samples. */
 export function averageBeats(
@@ -100,11 +100,7 @@ function extremes(samples: Float64Array, middle: number, rateHz: number) {
 }
 
 /** Where the time of a beat is read: the extreme of the study's sign, or the other where that is no landmark. */
-export function fiducialOf(
-  average: Omit<ShapeAverage, 'fiducial'>,
-  sign: 1 | -1,
-  rateHz: number,
-): number {
+function fiducialOf(average: Omit<ShapeAverage, 'fiducial'>, sign: 1 | -1, rateHz: number): number {
   const { samples, middle } = average;
   const { high, low } = extremes(samples, middle, rateHz);
   const level = baseline(samples, middle, rateHz);

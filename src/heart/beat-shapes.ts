@@ -7,7 +7,7 @@ import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
 
 /** Half of the window a complex is known by, and how far a complex may lie from where it was found. */
-export const SHAPE_HALF_S = 0.12;
+const SHAPE_HALF_S = 0.12;
 export const SHAPE_LAG_S = 0.04;
 /** What is read about a beat, to each side: its T wave is to be known. */
 const ROW_HALF_S = 0.58;

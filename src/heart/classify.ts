@@ -46,8 +46,7 @@ export function classifyBeats(
   const kinds = shapes.map((_, k) => shapeKind(k, main, shapes, beats, ratios));
   return beats.map((beat, i) => {
     const rhythm = rhythmAt(beat.sample);
-    const known = beat.shape >= 0 && beat.likeness > beat.bestLikeness - UNLIKE;
-    if (!known) return oddClass(beat, ratios[i], shapes[main], meanHz);
+    if (!isOfShape(beat)) return oddClass(beat, ratios[i], shapes[main], meanHz);
     if (beat.overNoise < UNCLEAR) return 'Q';
     const tolerance = EARLY_UNLIKE + (1 - beat.bestLikeness) / 2;
     if (ratios[i] < EARLY && beat.likeness < beat.bestLikeness - tolerance) {
@@ -62,6 +61,10 @@ export function classifyBeats(
     return early && ratios[i - 1] > CLEARLY_EARLY ? 'S' : 'N';
   });
 }
+
+/** Whether a beat is of the shape that fits it best. */
+export const isOfShape = (beat: Candidate) =>
+  beat.shape >= 0 && beat.likeness > beat.bestLikeness - UNLIKE;
 
 /** A class other than N wants more than the likeness that noise lends. */
 function clearlyOfShape({ likeness, bestLikeness, overNoise }: Candidate): boolean {

@@ -8,7 +8,7 @@ import {
   withFiducials,
 } from './beat-average';
 import { measureBeats } from './beat-quality';
-import { classifyBeats, meanFrequency } from './classify';
+import { classifyBeats, isOfShape, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
 import { filterBand, LOWEST_RATE_HZ, qrsBands } from './qrs-bands';
@@ -117,10 +117,6 @@ function nothing(note: string): Detection {
 
 /** Beats an average is made of, at least. */
 const FEWEST = 3;
-/** Likeness within this of a usual beat's counts a beat to its shape. */
-const OF_SHAPE = 0.25;
-const isOfShape = (beat: Candidate) =>
-  beat.shape >= 0 && beat.likeness > beat.bestLikeness - OF_SHAPE;
 
 /** Averages of the shapes that beats were found of, the most frequent first. */
 function* averagesOf(

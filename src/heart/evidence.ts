@@ -29,7 +29,7 @@ function noiseFit(overNoise: number, least: number): number {
  * Evidence of the QRS energy alone that a crest is a beat: the log-likelihood ratio, up to a constant, of a beat of usual
  * energy against a crest of noise. About -9 to 7.
  */
-export function energyEvidence(energyUv: number, beatUv: number, noiseUv: number): number {
+function energyEvidence(energyUv: number, beatUv: number, noiseUv: number): number {
   if (!(energyUv > LEAST_ENERGY_UV && beatUv > LEAST_ENERGY_UV)) return -9;
   return sizeFit(energyUv / beatUv) - noiseFit(energyUv / (noiseUv + 1e-12), -7);
 }
@@ -42,7 +42,7 @@ export function firstEvidence(energyUv: number, beatUv: number, noiseUv: number)
 /**
  * Evidence of the shape: size and likeness against noise. `usualSize` is the size of beats near it. About -25 to 14.
  */
-export function shapeEvidence(candidate: Candidate, usualSize: number): number {
+function shapeEvidence(candidate: Candidate, usualSize: number): number {
   const { size, likeness, overNoise, bestLikeness } = candidate;
   const short = Math.max(0, 0.93 * bestLikeness - likeness) / LIKENESS_SPREAD;
   const fit = Math.max(-6, -0.5 * short ** 2);

@@ -10,9 +10,6 @@ import { type Candidate, shapePass } from './shape-pass';
 export interface FoundBeats {
   readonly beats: readonly Candidate[];
   readonly shapes: readonly Shape[];
-  readonly levels: Levels;
-  readonly energy: Energy;
-  readonly candidates: readonly Candidate[];
 }
 
 const NEIGHBOURS = 7;
@@ -43,7 +40,7 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
     times = beats.map((beat) => beat.sample / rateHz);
     yield 0.92;
   }
-  return { beats: present(beats), shapes, levels, energy, candidates };
+  return { beats: present(beats), shapes };
 }
 
 /** Runs a pass and reports its part of the whole. */

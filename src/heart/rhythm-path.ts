@@ -1,7 +1,7 @@
 import { log } from '../numeric/elementary';
 
 /** No two heartbeats are nearer than this (physiological refractory period; common practice, no source). */
-export const REFRACTORY_S = 0.2;
+const REFRACTORY_S = 0.2;
 /** Below this an interval is doubtful in itself. */
 const DOUBTFUL_S = 0.3;
 /** What a break of the rhythm costs at most, the start of the study included. */

@@ -2,7 +2,7 @@ import { sinc } from '../numeric/elementary';
 import { kaiserAt } from '../numeric/windows';
 
 /** Steps of a sample that values are read at, and samples used to each side: for signals up to a third of the rate. */
-export const SUB_STEPS = 64;
+const SUB_STEPS = 64;
 const SIDE = 8;
 const BETA = 7;
 

@@ -69,7 +69,7 @@ export function readFilled(
 }
 
 /** Index of the first range that ends after a sample (their count where none does). */
-export function firstRangeAfter(ranges: readonly SampleRange[], sample: number): number {
+function firstRangeAfter(ranges: readonly SampleRange[], sample: number): number {
   let low = 0;
   let high = ranges.length;
   while (low < high) {
