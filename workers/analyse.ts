@@ -92,7 +92,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     program: PROGRAM,
     edit,
     stomach: analysis.stomach ?? [],
-    heart: analysis.heart,
+    heart: analysis.heart?.value ?? null,
     findings: analysis.findings,
   });
   await mkdir(folder, { recursive: true });

@@ -79,7 +79,8 @@ export interface Analysis {
   readonly edit: number;
   readonly separation: readonly SeparationFacts[] | null;
   readonly stomach: readonly SlowWaveRhythm[] | null;
-  readonly heart: HeartResults | null;
+  /** `value` is null where there is no heart lead. */
+  readonly heart: { readonly value: HeartResults | null } | null;
   readonly findings: Findings;
 }
 

@@ -51,7 +51,7 @@ export function changesOf(phases: readonly PhaseFindings[]): readonly FigureChan
 function changeOf(before: Figures, after: Figures, figure: FigureDefinition): FigureValue {
   const from = numberAt(before, figure);
   const to = numberAt(after, figure);
-  if (from === null || to === null) return withheld('both phases need the figure as a number');
+  if (from === null || to === null) return withheld('only where both phases have the figure');
   return numberFigure(
     to - from,
     figure.unit === 'dB' ? `× ${pow(10, (to - from) / 10).toFixed(1)}` : null,

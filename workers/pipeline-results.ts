@@ -145,7 +145,7 @@ export function createResults(recording: Recording): Results {
         edit,
         separation: marks.separation === before.separation ? null : separation,
         stomach: marks.stomach === before.stomach ? null : stomach.map(({ rhythm }) => rhythm),
-        heart: marks.heart === before.heart ? null : heart,
+        heart: marks.heart === before.heart ? null : { value: heart },
         findings,
       };
     },

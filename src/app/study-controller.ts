@@ -165,7 +165,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
   function edit(one: Edit): void {
     withReviewer({ session, shell }, () => {
       try {
-        session.getState().apply(one);
+        if (!edits.findsFreed(one)) session.getState().apply(one);
       } catch (error) {
         if (!(error instanceof Refusal)) throw error;
         shell.getState().sayProblem(`${error.failure.message} ${error.failure.remedy}`);
@@ -248,7 +248,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
         if (name) shell.getState().tell(`Done again: ${name}`);
       });
     },
-    ...edits,
+    ...edits.acts,
     ...files.acts,
     closeStudy() {
       blank();

@@ -1,13 +1,17 @@
 import type { Given, Proposal } from '../../workers/analysis-api';
 import type { Reply } from '../recording/failure';
-import { leadKey, sameLead } from '../recording/lead';
+import { leadChannels, leadKey, sameLead } from '../recording/lead';
 import type { Roles } from '../recording/roles';
 import type { Settings } from '../recording/settings';
+import type { Interval } from '../recording/span';
 import type { AnalysisStore } from '../review/analysis-store';
+import { applyChange } from '../session/apply-change';
 import type { Change, Edit, Session, SessionState } from '../session/document';
-import { addSpans, replaceAllBeats, setField, sign } from '../session/edits';
+import { addSpans, replaceAllBeats, replaceBeatsWithin, setField, sign } from '../session/edits';
+import { freedForHeart } from '../session/freed-spans';
 import { editNumber, type SessionStore } from '../session/store';
 import { PROGRAM } from '../units/program';
+import { secondsToTicks } from '../units/ticks';
 import { withReviewer } from './app-context';
 import type { SignRequest, StudyController } from './controller';
 import type { ShellStore } from './shell-store';
@@ -24,6 +28,15 @@ type EditActs = Pick<
   'changeRoles' | 'changePhases' | 'changeSettings' | 'changeProtocol' | 'detectAgain' | 'sign'
 >;
 
+export interface StudyEdits {
+  readonly acts: EditActs;
+  /**
+   * Takes over an edit that lets a stretch count for the heart again: its beats are looked for, and both are one undo step.
+   * False where the edit does no such thing and is to be applied as it is.
+   */
+  readonly findsFreed: (edit: Edit) => boolean;
+}
+
 const joined = (name: string, edits: readonly Edit[]): Edit => ({
   name,
   changes: edits.flatMap((one): readonly Change[] => one.changes),
@@ -38,7 +51,7 @@ function sameBeatsUnder(a: SessionState, roles: Roles, settings: Settings): bool
 }
 
 /** Acts that change what the session says; where beats or proposals must be made anew, both are one undo step. */
-export function createStudyEdits({ session, analysis, shell, propose }: EditParts): EditActs {
+export function createStudyEdits({ session, analysis, shell, propose }: EditParts): StudyEdits {
   const now = () => new Date().toISOString();
 
   function withOpen(act: (open: Session) => void): void {
@@ -73,7 +86,7 @@ export function createStudyEdits({ session, analysis, shell, propose }: EditPart
     apply(joined(rest.name, [rest, addSpans(latest, fresh, 'propose spans'), ...beats]));
   }
 
-  return {
+  const acts: EditActs = {
     changeRoles(roles, reason) {
       withOpen((open) => {
         const { state } = open;
@@ -110,6 +123,49 @@ export function createStudyEdits({ session, analysis, shell, propose }: EditPart
     },
     sign(request) {
       withOpen((open) => signWith(open, request));
+    },
+  };
+
+  async function withFreedBeats(
+    edit: Edit,
+    after: SessionState,
+    freed: readonly Interval[],
+    rateHz: number,
+  ) {
+    const { roles, phases, spans, settings } = after;
+    const reply = await propose({ roles, phases, spans, settings });
+    const latest = session.getState().session;
+    if (!latest || latest.state.study.quickKey !== after.study.quickKey) return;
+    if (!reply.ok) {
+      apply(edit);
+      return;
+    }
+    const { beats } = reply.value;
+    const found = freed.map(({ fromS, toS }) =>
+      replaceBeatsWithin(
+        latest.state,
+        secondsToTicks(fromS, rateHz),
+        secondsToTicks(toS, rateHz),
+        beats,
+        edit.name,
+      ),
+    );
+    apply(joined(edit.name, [edit, ...found]));
+  }
+
+  return {
+    acts,
+    findsFreed(edit) {
+      const open = session.getState().session;
+      const { recording, fileAtHand } = analysis.getState();
+      const heart = open?.state.roles.heart;
+      if (!open || !recording || !heart || !fileAtHand) return false;
+      if (!edit.changes.some(({ kind }) => kind === 'spans')) return false;
+      const after = edit.changes.reduce(applyChange, open.state);
+      const { rateHz } = recording.channels[leadChannels(heart)[0]];
+      const freed = freedForHeart(open.state, after, rateHz);
+      if (freed.length > 0) void withFreedBeats(edit, after, freed, rateHz);
+      return freed.length > 0;
     },
   };
 

@@ -42,7 +42,7 @@ export function coverageOf(lost: readonly Interval[], fromS: Seconds, toS: Secon
 /** Why so little of a phase is left that its figures are limited or not reported; '' where enough is. */
 export function adequacyReason(adequacy: Adequacy, keptS: Seconds, lengthS: Seconds): string {
   if (adequacy === 'enough') return '';
-  const share = lengthS > 0 ? Math.floor((100 * keptS) / lengthS) : 0;
+  const share = lengthS > 0 ? Math.round((100 * keptS) / lengthS) : 0;
   const lost = 1 - share / 100 > NOT_REPORTABLE_LOSS;
   return adequacy === 'not-reportable' && !lost
     ? `${(keptS / 60).toFixed(1)} min kept are too few`

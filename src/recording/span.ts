@@ -74,3 +74,21 @@ export function coveredSeconds(
     0,
   );
 }
+
+/** What is left of some intervals where others are taken away, ascending and without overlap. */
+export function withoutIntervals(
+  intervals: readonly Interval[],
+  taken: readonly Interval[],
+): readonly Interval[] {
+  const gone = joinIntervals(taken);
+  return joinIntervals(intervals).flatMap(({ fromS, toS }) => {
+    const left: Interval[] = [];
+    let at = fromS;
+    for (const one of gone) {
+      if (one.toS <= at || one.fromS >= toS) continue;
+      if (one.fromS > at) left.push({ fromS: at, toS: one.fromS });
+      at = Math.max(at, one.toS);
+    }
+    return at < toS ? [...left, { fromS: at, toS }] : left;
+  });
+}

@@ -88,6 +88,6 @@ export function takeAnalysis(store: AnalysisStore, analysis: Analysis): void {
     findings,
     separation: separation ?? before.separation,
     stomach: stomach ?? before.stomach,
-    heart: heart ?? before.heart,
+    heart: heart ? heart.value : before.heart,
   }));
 }

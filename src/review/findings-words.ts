@@ -44,7 +44,13 @@ export function smallWords(
   { basis, reason }: SharedWords,
 ): readonly string[] {
   return small.flatMap((line) => {
-    if (line === basis || line === reason || line.startsWith('filled in ')) return [];
+    if (
+      line === basis ||
+      line === reason ||
+      line.startsWith('filled in ') ||
+      line.startsWith('limited: ')
+    )
+      return [];
     const part = PART_OF.exec(line);
     if (!part) return [line];
     return part[1] === '0' ? [] : [line.replace(/ \D+$/, '')];
@@ -73,9 +79,10 @@ export function adequacyWords(phase: PhaseFindings, organ: Organ): string {
   if (organ === 'breathing') return '';
   const stomach = organ === 'stomach';
   const adequacy = stomach ? phase.adequacyStomach : phase.adequacyHeart;
-  if (adequacy === 'enough') return '';
+  const nothing = phase.figures[stomach ? 'stomach_kept_min' : 'heart_kept_min'];
+  if (adequacy === 'enough' || nothing?.kind === 'withheld') return '';
   const keptS = stomach ? phase.keptStomachS : phase.keptHeartS;
-  const word = adequacy === 'limited' ? 'limited' : 'not reportable';
+  const word = adequacy === 'limited' ? 'limited' : 'without percentages';
   return `${phase.name} is ${word}: ${adequacyReason(adequacy, keptS, phase.toS - phase.fromS)}`;
 }
 

@@ -31,7 +31,10 @@ export function rowsNow({ session, analysis }: PaneStores): readonly Row[] {
   const roles = session.getState().session?.state.roles;
   const { recording } = analysis.getState();
   if (!roles || !recording) return [];
-  return [...minutesRows(roles, recording, { breathing: false }), ...secondsRows(roles, recording)];
+  return [
+    ...minutesRows(roles, recording, { breathing: false, route: 'band' }),
+    ...secondsRows(roles, recording),
+  ];
 }
 
 /** Ends of the level scale in force. */

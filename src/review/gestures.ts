@@ -1,5 +1,5 @@
 import type { Span } from '../recording/span';
-import { dragEnd, insideStudy, panBy, type WindowName, zoomAt } from './navigate';
+import { dragEnd, panBy, type WindowName, zoomAt } from './navigate';
 import type { Gesture } from './stage';
 import { lookAtMinutes, lookAtSeconds, type ViewStore } from './view-store';
 
@@ -69,17 +69,24 @@ export function slotEdgeGesture(
   };
 }
 
+/** A time kept inside what a pane shows: nobody excludes what they do not see. */
+function insideWindow(store: ViewStore, name: WindowName, atS: number): number {
+  const { fromS, toS } = store.getState()[name];
+  return Math.min(Math.max(fromS, atS), toS);
+}
+
 /** Draws a new spoiled span from where the press began. */
 export function drawSpanGesture(
   store: ViewStore,
+  name: WindowName,
   place: TimePlace,
   startX: number,
   done: (fromS: number, toS: number) => void,
   click: (x: number) => void,
 ): Gesture {
-  const anchor = insideStudy(store.getState(), place.sAt(startX));
+  const anchor = insideWindow(store, name, place.sAt(startX));
   const stretch = (x: number) => {
-    const other = insideStudy(store.getState(), place.sAt(x));
+    const other = insideWindow(store, name, place.sAt(x));
     return { fromS: Math.min(anchor, other), toS: Math.max(anchor, other) };
   };
   const clear = () => store.setState({ draft: null });
@@ -101,13 +108,14 @@ const LEAST_SPAN_S = 0.1;
 /** Drags one end of a spoiled span. */
 export function spanEndGesture(
   store: ViewStore,
+  name: WindowName,
   place: TimePlace,
   span: Span,
   end: 'left' | 'right',
   done: (fromS: number, toS: number) => void,
 ): Gesture {
   const stretch = (x: number) => {
-    const at = insideStudy(store.getState(), place.sAt(x));
+    const at = insideWindow(store, name, place.sAt(x));
     return end === 'left'
       ? { fromS: Math.min(at, span.toS - LEAST_SPAN_S), toS: span.toS }
       : { fromS: span.fromS, toS: Math.max(at, span.fromS + LEAST_SPAN_S) };

@@ -12,6 +12,8 @@ export interface GridScene {
   readonly axisPx: number;
   readonly coarsest: 'h:mm' | 'h:mm:ss';
   readonly phases: readonly Phase[];
+  /** What was noted at a time, ascending; marked above the rows where there is room. */
+  readonly events: readonly { readonly atS: number; readonly text: string }[];
   /** Room for names of phases above the rows, 0 for none. */
   readonly headPx: number;
   readonly xOf: (atS: number) => number;
@@ -46,6 +48,7 @@ export function paintGrid(brush: CanvasRenderingContext2D, scene: GridScene): vo
     brush.fillText(text, x, bottomPx + 3 + (axisPx - 3) / 2);
   }
   paintPhases(brush, scene);
+  paintEvents(brush, scene);
 }
 
 function paintPhases(brush: CanvasRenderingContext2D, scene: GridScene): void {
@@ -70,4 +73,38 @@ function paintPhases(brush: CanvasRenderingContext2D, scene: GridScene): void {
     if (room > brush.measureText(name).width)
       brush.fillText(name, left, topPx - headPx + headPx / 2 + 1);
   }
+}
+
+const EVENT_TEXT_PX = 120;
+
+/** Events: a tick over all rows, and the text beside it as far as it reaches before the next one. */
+function paintEvents(brush: CanvasRenderingContext2D, scene: GridScene): void {
+  const { window, topPx, bottomPx, headPx, xOf, tokens, widthPx } = scene;
+  if (headPx === 0) return;
+  const seen = scene.events.filter(({ atS }) => atS >= window.fromS && atS <= window.toS);
+  brush.strokeStyle = tokens.quiet;
+  brush.fillStyle = tokens.quiet;
+  brush.textAlign = 'left';
+  brush.setLineDash([1, 4]);
+  seen.forEach(({ atS, text }, i) => {
+    const x = Math.round(xOf(atS)) + 0.5;
+    brush.beginPath();
+    brush.moveTo(x, topPx - 8);
+    brush.lineTo(x, bottomPx);
+    brush.stroke();
+    const next = seen.at(i + 1);
+    const room = Math.min(next ? xOf(next.atS) : widthPx, x + EVENT_TEXT_PX) - x - 8;
+    brush.fillText(fitted(brush, text, room), x + 3, topPx - 6);
+  });
+  brush.setLineDash([]);
+}
+
+/** A text cut to a width, with an ellipsis where something is left out; '' where nothing fits. */
+function fitted(brush: CanvasRenderingContext2D, text: string, widthPx: number): string {
+  if (brush.measureText(text).width <= widthPx) return text;
+  for (let length = text.length - 1; length > 1; length -= 1) {
+    const part = `${text.slice(0, length)}…`;
+    if (brush.measureText(part).width <= widthPx) return part;
+  }
+  return '';
 }

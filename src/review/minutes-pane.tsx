@@ -15,6 +15,7 @@ export function MinutesPane(props: PaneProps) {
   const { stores } = props;
   const allRoles = useRoles(stores);
   const shown = useLeadsShown(stores.view);
+  const excluding = useStore(stores.view, (state) => state.tool === 'exclude');
   const several = (allRoles?.slow.length ?? 0) > 1;
   const roles = useMemo(
     () => (allRoles && shown === 'reported' ? reportedOnly(allRoles) : allRoles),
@@ -25,9 +26,13 @@ export function MinutesPane(props: PaneProps) {
     const from = state.heart?.breathing.from;
     return from === 'lead' || from === 'derived';
   });
+  const route = useStore(
+    stores.session,
+    (state) => state.session?.state.settings.slowRoute ?? 'band',
+  );
   const rows = useMemo(
-    () => (roles && recording ? minutesRows(roles, recording, { breathing }) : []),
-    [roles, recording, breathing],
+    () => (roles && recording ? minutesRows(roles, recording, { breathing, route }) : []),
+    [roles, recording, breathing, route],
   );
   const commands = usePaneCommands(props);
   const setUp = useCallback(
@@ -46,11 +51,16 @@ export function MinutesPane(props: PaneProps) {
       hasSlot
       notice={null}
     >
-      {several && (
-        <button type="button" className="leads-toggle" onClick={commands.toggleLeads}>
-          {shown === 'all' ? 'Reported lead only' : `Show all ${allRoles?.slow.length} leads`}
+      <div className="pane-switches">
+        <button type="button" aria-pressed={excluding} title="Key E" onClick={commands.toggleTool}>
+          {excluding ? 'Dragging excludes' : 'Exclude by dragging'}
         </button>
-      )}
+        {several && (
+          <button type="button" title="Key L" onClick={commands.toggleLeads}>
+            {shown === 'all' ? 'Reported lead only' : `Show all ${allRoles?.slow.length} leads`}
+          </button>
+        )}
+      </div>
       <SpanBar stores={stores} commands={commands} />
       <EpochTable stores={stores} commands={commands} />
       <SpanTable stores={stores} commands={commands} />

@@ -69,7 +69,7 @@ export function spanGesture(
   const span = selectedSpan(view.stores);
   const end = selectedEndAt(view, x);
   if (span && end)
-    return spanEndGesture(store, view, span, end, (fromS, toS) =>
+    return spanEndGesture(store, view.kind.name, view, span, end, (fromS, toS) =>
       commands.changeSelectedSpan(
         end === 'left' ? { fromS: roundStretch(view, fromS) } : { toS: roundStretch(view, toS) },
       ),
@@ -77,7 +77,7 @@ export function spanGesture(
   if (!excludes) return null;
   const exclude = (fromS: number, toS: number) =>
     commands.excludeRange(roundStretch(view, fromS), roundStretch(view, toS));
-  return drawSpanGesture(store, view, x, exclude, click);
+  return drawSpanGesture(store, view.kind.name, view, x, exclude, click);
 }
 
 /** Selects the spoiled span under a place, or nothing. */

@@ -6,6 +6,7 @@ import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
 import { beginWork, endWork } from './idle';
 import { makeRowView } from './make-row';
+import { notedEvents } from './noted-events';
 import type { PaneDom } from './pane-dom';
 import type { PaneStores, RowContext, RowView } from './row-view';
 import type { Row } from './rows';
@@ -159,6 +160,7 @@ export class PaneView {
       axisPx: this.axisPx,
       coarsest: this.kind.coarsest,
       phases: this.stores.session.getState().session?.state.phases ?? [],
+      events: notedEvents(this.stores),
       headPx: this.kind.showsPhaseNames ? this.topPx : 0,
       xOf: this.xOf,
       tokens: this.tokens,

@@ -1,6 +1,7 @@
 import { type Lead, leadKey, leadName } from '../recording/lead';
 import type { Recording } from '../recording/recording';
 import type { Roles } from '../recording/roles';
+import type { RouteName } from '../recording/settings';
 
 /** A row that shows one drawn signal of one lead. */
 export interface SignalRow {
@@ -67,7 +68,7 @@ export function reportedOnly(roles: Roles): Roles {
 export function minutesRows(
   roles: Roles,
   recording: Recording,
-  has: { readonly breathing: boolean },
+  has: { readonly breathing: boolean; readonly route: RouteName },
 ): readonly Row[] {
   const reported = roles.slow[roles.reported];
   const recorded = recordedLeads(roles).map((lead) =>
@@ -82,7 +83,7 @@ export function minutesRows(
   const slow = roles.slow.map((lead, index) =>
     signalRow('minutes', lead, recording, {
       signal: 'slow-wave',
-      note: 'slow wave',
+      note: has.route === 'band' ? 'slow wave' : `slow wave, ${has.route}`,
       hue: 'stomach',
       centred: false,
       weight: roles.slow.length > 1 && index !== roles.reported ? 1.1 : 1.6,

@@ -25,7 +25,7 @@ export function SpanBar({
         {span.origin === 'proposed' ? 'Proposed' : 'Drawn'} {place}
       </span>
       <Choice
-        words="not for"
+        words="excluded for"
         value={span.target}
         options={SPAN_TARGETS}
         wordsOf={(target) => TARGET_WORDS[target]}
@@ -39,7 +39,7 @@ export function SpanBar({
         onChange={(cause) => commands.changeSelectedSpan({ cause })}
       />
       <button type="button" onClick={() => commands.deleteSelectedSpan()}>
-        Count it again
+        Include again
       </button>
     </fieldset>
   );

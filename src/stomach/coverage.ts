@@ -23,7 +23,7 @@ export interface StomachCoverage {
   readonly marks: readonly string[];
 }
 
-const percent = (share: number) => Math.round(100 * share);
+const percent = (share: number) => 100 - Math.round(100 * (1 - share));
 
 function reasonToWithhold(keptS: Seconds, lost: number): string | null {
   if (lost > NOTHING_ABOVE + ROUNDING) return `${percent(lost)} % of the phase is lost (over 50 %)`;

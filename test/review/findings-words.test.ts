@@ -85,7 +85,7 @@ describe('how much of a phase is left', () => {
     expect(adequacyWords(limited, 'stomach')).toBe('fasting is limited: 61 % kept');
     expect(adequacyWords(limited, 'heart')).toBe('');
     const gone = phase('fed', { adequacyHeart: 'not-reportable', keptHeartS: 180 });
-    expect(adequacyWords(gone, 'heart')).toBe('fed is not reportable: 10 % kept');
+    expect(adequacyWords(gone, 'heart')).toBe('fed is without percentages: 10 % kept');
   });
 });
 

@@ -21,7 +21,9 @@ const kinds = (rows: readonly Row[]) =>
 
 describe('the rows of Minutes', () => {
   it('show recorded leads, slow waves, spectrogram and heart rate', () => {
-    expect(kinds(minutesRows(roles([0, 1], 2), recording, { breathing: true }))).toEqual([
+    expect(
+      kinds(minutesRows(roles([0, 1], 2), recording, { breathing: true, route: 'band' })),
+    ).toEqual([
       'recorded #1',
       'recorded #2',
       'recorded #3',
@@ -34,7 +36,7 @@ describe('the rows of Minutes', () => {
   });
 
   it('show a lead that serves both once', () => {
-    const rows = minutesRows(roles([0], 0), recording, { breathing: false });
+    const rows = minutesRows(roles([0], 0), recording, { breathing: false, route: 'band' });
     expect(kinds(rows)).toEqual(['recorded #1', 'slow-wave #1', 'spectrogram', 'heart-rate']);
   });
 
@@ -49,7 +51,7 @@ describe('the rows of Minutes', () => {
 
   it('have keys of their own', () => {
     const all = [
-      ...minutesRows(roles([0, 1], 0), recording, { breathing: true }),
+      ...minutesRows(roles([0, 1], 0), recording, { breathing: true, route: 'band' }),
       ...secondsRows(roles([0, 1], 0), recording),
     ].map((row) => row.key);
     expect(new Set(all).size).toBe(all.length);
@@ -58,7 +60,7 @@ describe('the rows of Minutes', () => {
 
 describe('where a spoiled span is hatched', () => {
   const rows = [
-    ...minutesRows(roles([0], 1), recording, { breathing: true }),
+    ...minutesRows(roles([0], 1), recording, { breathing: true, route: 'band' }),
     ...secondsRows(roles([0], 1), recording),
   ];
   const hit = (target: 'stomach' | 'heart' | 'both', lead: string | null) =>
