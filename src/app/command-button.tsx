@@ -7,6 +7,8 @@ interface CommandButtonProps {
   readonly parts: CommandParts;
   /** Shorter words for the button; the tooltip has the command's own. */
   readonly words?: string;
+  /** True where the shorter words leave out what the command would act on: it is read out all the same. */
+  readonly readWhole?: boolean;
   readonly className?: string;
   readonly showKey?: boolean;
   /** Runs after the command, as a menu that closes. */
@@ -18,12 +20,15 @@ export function CommandButton(props: CommandButtonProps) {
   const { command, parts, className = 'button', showKey = false, after } = props;
   const words = command.wordsNow?.(parts) ?? command.words;
   const key = command.keys[0];
+  const able = canRun(command, parts);
+  const why = able ? '' : (command.whyNot?.(parts) ?? '');
   return (
     <button
       type="button"
       className={className}
-      title={key ? `${words} (${keyWords(key)})` : words}
-      disabled={!canRun(command, parts)}
+      title={`${key ? `${words} (${keyWords(key)})` : words}${why ? `: ${why}` : ''}`}
+      aria-label={props.readWhole ? words : undefined}
+      disabled={!able}
       onClick={() => {
         command.run(parts);
         after?.();

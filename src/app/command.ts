@@ -48,5 +48,7 @@ export interface Command {
   readonly wordsNow?: (parts: CommandParts) => string;
   /** False while there is nothing for it to act on. */
   readonly ready?: (parts: CommandParts) => boolean;
+  /** Why it cannot act now, for its tooltip; '' where that is plain. */
+  readonly whyNot?: (parts: CommandParts) => string;
   readonly run: (parts: CommandParts) => void;
 }

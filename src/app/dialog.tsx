@@ -1,4 +1,4 @@
-import { type ReactNode, useId, useLayoutEffect, useRef } from 'react';
+import { type ReactNode, type RefObject, useId, useLayoutEffect, useRef } from 'react';
 
 interface DialogProps {
   readonly title: string;
@@ -51,6 +51,7 @@ export function Dialog(props: DialogProps) {
           onSubmit={(event) => {
             event.preventDefault();
             onSubmit();
+            focusFirstFault(ref);
           }}
         >
           {inside}
@@ -59,6 +60,13 @@ export function Dialog(props: DialogProps) {
         <div className="dialog-frame">{inside}</div>
       )}
     </dialog>
+  );
+}
+
+/** A refused form puts the focus where the first thing is wrong, once what is wrong has been drawn. */
+function focusFirstFault(ref: RefObject<HTMLDialogElement | null>): void {
+  requestAnimationFrame(() =>
+    ref.current?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus(),
   );
 }
 

@@ -1,26 +1,42 @@
-import { useState } from 'react';
+import type { KeyboardEvent } from 'react';
 import type { TimedNote } from '../session/document';
 import { Field } from './fields';
-import { addEvent, timeText } from './phase-draft';
+import { addEvent, type EventDraft, isBlank, NO_EVENT, timeText } from './phase-draft';
+
+/** Events with the one that is being typed. */
+export interface EventsDraft {
+  readonly events: readonly TimedNote[];
+  readonly typed: EventDraft;
+  /** True once adding was tried: from then on what is wrong is said beside the fields. */
+  readonly tried: boolean;
+}
 
 interface EventsEditorProps {
-  readonly events: readonly TimedNote[];
+  readonly draft: EventsDraft;
   readonly durationS: number;
-  readonly onChange: (events: readonly TimedNote[]) => void;
+  readonly onChange: (draft: EventsDraft) => void;
 }
 
 /** What happened and when, as the reviewer notes it ("turned over", "drank 200 ml"). */
-export function EventsEditor({ events, durationS, onChange }: EventsEditorProps) {
-  const [at, setAt] = useState('');
-  const [text, setText] = useState('');
-  const [errors, setErrors] = useState<{ at?: string; text?: string }>({});
-  const add = () => {
-    const grown = addEvent(events, { at, text }, durationS);
-    if (!grown.ok) return setErrors(grown);
-    onChange(grown.events);
-    setErrors({});
-    setAt('');
-    setText('');
+export function EventsEditor({ draft, durationS, onChange }: EventsEditorProps) {
+  const { events, typed, tried } = draft;
+  const grown = addEvent(events, typed, durationS);
+  const wrong = tried && !grown.ok ? grown : null;
+  const type = (parts: Partial<EventDraft>) => {
+    const next = { ...typed, ...parts };
+    onChange({ events, typed: next, tried: tried && !isBlank(next) });
+  };
+  const add = () =>
+    onChange(
+      grown.ok
+        ? { events: grown.events, typed: NO_EVENT, tried: false }
+        : { ...draft, tried: true },
+    );
+  const addOnEnter = (event: KeyboardEvent<HTMLFieldSetElement>) => {
+    if (event.key !== 'Enter' || !(event.target instanceof HTMLInputElement)) return;
+    event.preventDefault();
+    add();
+    if (grown.ok) event.currentTarget.querySelector('input')?.focus();
   };
   return (
     <section aria-labelledby="events-title">
@@ -35,20 +51,33 @@ export function EventsEditor({ events, durationS, onChange }: EventsEditorProps)
               type="button"
               className="button slight"
               aria-label={`Remove event at ${timeText(event.atS)}`}
-              onClick={() => onChange(events.filter((other) => other.id !== event.id))}
+              onClick={() =>
+                onChange({ ...draft, events: events.filter((other) => other.id !== event.id) })
+              }
             >
               Remove
             </button>
           </li>
         ))}
       </ul>
-      <div className="event-new">
-        <Field label="at" size="short" value={at} onChange={setAt} error={errors.at} />
-        <Field label="what happened" value={text} onChange={setText} error={errors.text} />
+      <fieldset className="event-new" aria-label="New event" onKeyDown={addOnEnter}>
+        <Field
+          label="at"
+          size="short"
+          value={typed.at}
+          onChange={(at) => type({ at })}
+          error={wrong?.at}
+        />
+        <Field
+          label="what happened"
+          value={typed.text}
+          onChange={(text) => type({ text })}
+          error={wrong?.text}
+        />
         <button type="button" className="button slight" onClick={add}>
           Add event
         </button>
-      </div>
+      </fieldset>
     </section>
   );
 }

@@ -1,11 +1,12 @@
 import { useState } from 'react';
 import type { FoundInFile, Recording } from '../recording/recording';
 import { formatClock } from '../units/time';
-import { useApp } from './app-context';
+import { useApp, useShell } from './app-context';
 import type { KeptRow } from './controller';
 import { Dialog } from './dialog';
 import { Field } from './fields';
 import { FormActions } from './form-actions';
+import { codeFault, offeredCode } from './identity-draft';
 import type { DialogState } from './shell-store';
 import { localWords, rateWords, startWords } from './study-words';
 
@@ -15,9 +16,10 @@ type IdentityState = Extract<DialogState, { kind: 'identity' }>;
 export function IdentityDialog({ state }: { readonly state: IdentityState }) {
   const { controller } = useApp();
   const { recording, found, kept } = state;
-  const [code, setCode] = useState(kept?.code ?? recording.identity.code ?? '');
+  const wanted = useShell((now) => now.wanted);
+  const [code, setCode] = useState(() => offeredCode(recording.identity, kept?.code ?? null));
   const [tried, setTried] = useState(false);
-  const missing = code.trim() === '';
+  const fault = codeFault(code, recording.identity);
   return (
     <Dialog
       title="Is this the right study?"
@@ -29,7 +31,7 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
       onClose={() => controller.cancelOpening()}
       onSubmit={() => {
         setTried(true);
-        if (!missing) void controller.confirmIdentity(code.trim());
+        if (fault === null) void controller.confirmIdentity(code.trim());
       }}
       actions={
         <FormActions
@@ -39,6 +41,12 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
         />
       }
     >
+      {wanted && wanted.quickKey !== state.quickKey ? (
+        <p className="failure-what">
+          This is not the file of session {wanted.code} but another study. Opening it leaves that
+          session as it is.
+        </p>
+      ) : null}
       <HeaderFacts recording={recording} />
       <Field
         label="Code the study is kept under"
@@ -47,7 +55,7 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
         required
         autoFocus
         hint="Sessions are listed and named by this code. Do not type a name."
-        error={tried && missing ? 'Type a code, for example the number of the study.' : null}
+        error={tried ? fault : null}
       />
       {kept ? <p>{keptSessionWords(kept)}</p> : null}
       <Found found={found} />

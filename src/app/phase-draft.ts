@@ -123,14 +123,31 @@ export interface EventDraft {
   readonly text: string;
 }
 
+export const NO_EVENT: EventDraft = { at: '', text: '' };
+
+/** True where nothing of an event has been typed. */
+export const isBlank = ({ at, text }: EventDraft): boolean =>
+  at.trim() === '' && text.trim() === '';
+
+export type GrownEvents =
+  | { readonly ok: true; readonly events: readonly TimedNote[] }
+  | { readonly ok: false; readonly at?: string; readonly text?: string };
+
+/** The events as they are to be kept: with the typed one where something is typed, or what is wrong with it. */
+export function withTypedEvent(
+  events: readonly TimedNote[],
+  draft: EventDraft,
+  durationS: number,
+): GrownEvents {
+  return isBlank(draft) ? { ok: true, events } : addEvent(events, draft, durationS);
+}
+
 /** The events with one more, in ascending time, or what is wrong with the typed one. */
 export function addEvent(
   events: readonly TimedNote[],
   { at, text }: EventDraft,
   durationS: number,
-):
-  | { readonly ok: true; readonly events: readonly TimedNote[] }
-  | { readonly ok: false; readonly at?: string; readonly text?: string } {
+): GrownEvents {
   const atS = parseClock(at);
   const wrongAt =
     atS === null

@@ -12,9 +12,18 @@ import {
   withReviewer,
 } from './app-context';
 import { Dialog } from './dialog';
-import { EventsEditor } from './events-editor';
+import { type EventsDraft, EventsEditor } from './events-editor';
 import { FormActions } from './form-actions';
-import { addRow, type PhaseRow, proposedFed, readPhases, rowsOf, timeText } from './phase-draft';
+import {
+  addRow,
+  NO_EVENT,
+  type PhaseRow,
+  proposedFed,
+  readPhases,
+  rowsOf,
+  timeText,
+  withTypedEvent,
+} from './phase-draft';
 import { PhaseTable, type TimeField } from './phase-table';
 
 /** Phases by typed times, with the file's annotations and the reviewer's events at hand. */
@@ -33,15 +42,21 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
   const parts = useApp();
   const { durationS } = before.study;
   const [rows, setRows] = useState(() => rowsOf(before.phases));
-  const [events, setEvents] = useState(before.events);
+  const [noted, setNoted] = useState<EventsDraft>({
+    events: before.events,
+    typed: NO_EVENT,
+    tried: false,
+  });
   const [field, setTimeField] = useState<TimeField | null>(null);
   const [tried, setTried] = useState(false);
   const { phases, errors } = readPhases(rows, durationS);
   const close = () => parts.shell.getState().closeDialog();
   const save = () => {
     setTried(true);
-    if (Object.keys(errors).length > 0) return;
-    saveAll(parts, before, { phases, events }, close);
+    const grown = withTypedEvent(noted.events, noted.typed, durationS);
+    if (!grown.ok) setNoted({ ...noted, tried: true });
+    if (!grown.ok || Object.keys(errors).length > 0) return;
+    saveAll(parts, before, { phases, events: grown.events }, close);
   };
   const put = (seconds: number) =>
     setRows((now) =>
@@ -67,11 +82,11 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
       <RowActs rows={rows} durationS={durationS} onChange={setRows} />
       <TimeChips
         annotations={recording?.annotations ?? []}
-        events={events}
+        events={noted.events}
         field={field}
         onPut={put}
       />
-      <EventsEditor events={events} durationS={durationS} onChange={setEvents} />
+      <EventsEditor draft={noted} durationS={durationS} onChange={setNoted} />
     </Dialog>
   );
 }

@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import type { Channel } from '../recording/channel';
-import type { Roles } from '../recording/roles';
+import type { RoleReasons, Roles } from '../recording/roles';
 import { useAnalysis, useApp, useSession, withReviewer } from './app-context';
 import { Dialog } from './dialog';
 import { Field } from './fields';
@@ -11,6 +11,7 @@ import {
   BREATH_ID,
   HEART_ID,
   type LeadDraft,
+  leadReason,
   type RolesDraft,
   type RolesErrors,
   readRoles,
@@ -83,7 +84,6 @@ interface LeadsProps {
 
 function SlowLeads(props: LeadsProps & { readonly before: Roles }) {
   const { draft, before, channels, errors, onChange } = props;
-  const reasons = useAnalysis((state) => state.reasons);
   const leadChoice = useSession((state) => state.session?.state.leadChoice ?? '');
   const changed = draft.reported !== before.reported || wantsReason(draft, before, channels);
   return (
@@ -103,7 +103,6 @@ function SlowLeads(props: LeadsProps & { readonly before: Roles }) {
           Add a slow-wave lead
         </button>
       ) : null}
-      <p className="small quiet">Why this lead is reported: {leadChoice || reasons?.reported}</p>
       {changed ? (
         <Field
           label="Reason for reporting another lead"
@@ -112,13 +111,15 @@ function SlowLeads(props: LeadsProps & { readonly before: Roles }) {
           error={errors?.reason}
           required
         />
-      ) : null}
+      ) : (
+        <p className="small quiet">Why this lead is reported: {leadChoice}</p>
+      )}
     </fieldset>
   );
 }
 
 function SlowRows({ draft, channels, errors, onChange }: LeadsProps) {
-  const reasons = useAnalysis((state) => state.reasons);
+  const { proposed, reasons } = useProposal();
   const change = (next: LeadDraft) =>
     onChange({ ...draft, slow: draft.slow.map((row) => (row.id === next.id ? next : row)) });
   return draft.slow.map((row, i) => (
@@ -129,7 +130,7 @@ function SlowRows({ draft, channels, errors, onChange }: LeadsProps) {
       channels={channels}
       optional={false}
       error={errors?.slow[row.id] ?? null}
-      reason={reasons?.slow[i] ?? ''}
+      reason={leadReason(row, proposed?.slow ?? [], reasons?.slow ?? null)}
       onChange={change}
     >
       <label className="tick">
@@ -155,13 +156,20 @@ function SlowRows({ draft, channels, errors, onChange }: LeadsProps) {
   ));
 }
 
+/** The roles the program proposed at the beginning of the session, and why. */
+function useProposal(): { readonly proposed: Roles | null; readonly reasons: RoleReasons | null } {
+  const proposed = useSession((state) => state.session?.start.roles ?? null);
+  const reasons = useAnalysis((state) => state.reasons);
+  return { proposed, reasons };
+}
+
 function wantsReason(draft: RolesDraft, before: Roles, channels: readonly Channel[]): boolean {
   const { roles } = readRoles({ ...draft, reason: 'asked' }, before, channels);
   return roles !== null && reportedChanged(before, roles);
 }
 
 function OtherLeads({ draft, channels, errors, onChange }: LeadsProps) {
-  const reasons = useAnalysis((state) => state.reasons);
+  const { proposed, reasons } = useProposal();
   return (
     <>
       <fieldset>
@@ -172,7 +180,7 @@ function OtherLeads({ draft, channels, errors, onChange }: LeadsProps) {
           channels={channels}
           optional
           error={errors?.heart ?? null}
-          reason={reasons?.heart ?? ''}
+          reason={leadReason(draft.heart, [proposed?.heart ?? null], reasons && [reasons.heart])}
           onChange={(heart) => onChange({ ...draft, heart: { ...heart, id: HEART_ID } })}
         />
         <p className="small quiet">Another heart lead means that all beats are found again.</p>
@@ -185,7 +193,7 @@ function OtherLeads({ draft, channels, errors, onChange }: LeadsProps) {
           channels={channels}
           optional
           error={errors?.breath ?? null}
-          reason={reasons?.breath ?? ''}
+          reason={leadReason(draft.breath, [proposed?.breath ?? null], reasons && [reasons.breath])}
           onChange={(breath) => onChange({ ...draft, breath: { ...breath, id: BREATH_ID } })}
         />
       </fieldset>

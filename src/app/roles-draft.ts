@@ -71,6 +71,25 @@ function readLead({ plus, minus }: LeadDraft, channels: readonly Channel[]): Rea
   return { lead: { kind: 'difference', plus, minus }, error: null };
 }
 
+/**
+ * Why a lead stands in a row: the program's reason where it is the very lead the program proposed, else that a person chose
+ * it. `proposed` and `reasons` go together by place; `reasons` is null where the program's are not known any more.
+ */
+export function leadReason(
+  row: LeadDraft,
+  proposed: readonly (Lead | null)[],
+  reasons: readonly string[] | null,
+): string {
+  const place = proposed.findIndex((lead) => {
+    const one = draftOf(lead, row.id);
+    return one.plus === row.plus && one.minus === row.minus;
+  });
+  return place < 0 ? CHOSEN_BY_HAND : (reasons?.[place] ?? PROPOSED);
+}
+
+const CHOSEN_BY_HAND = 'chosen by hand';
+const PROPOSED = 'proposed by the program';
+
 const reportedOf = (roles: Roles): Lead | undefined => roles.slow[roles.reported];
 
 /** True where the reported slow-wave lead is another one than before. */

@@ -9,9 +9,10 @@ import {
   type SettingErrors,
   type SettingKey,
   type SettingsDraft,
+  settingActs,
   settingsDraft,
-  truncationWords,
 } from './settings-draft';
+import { heartRouteWords, slowRouteWords, truncationWords } from './settings-words';
 
 const ROUTES = [
   ['band', 'band: a filter without delay'],
@@ -28,7 +29,7 @@ export function SettingsDialog() {
 function SettingsForm({ before }: { readonly before: Settings }) {
   const parts = useApp();
   const [draft, setDraft] = useState(() => settingsDraft(before));
-  const { settings, errors } = readSettings(draft);
+  const { settings, errors } = readSettings(draft, before);
   const close = () => parts.shell.getState().closeDialog();
   const save = () => {
     if (!settings) return;
@@ -63,7 +64,7 @@ function SettingsForm({ before }: { readonly before: Settings }) {
         </>
       }
     >
-      <FilterWarnings />
+      <InForce />
       <div className="settings-columns">
         <Separation draft={draft} errors={errors} onChange={setDraft} />
         <div>
@@ -75,21 +76,29 @@ function SettingsForm({ before }: { readonly before: Settings }) {
   );
 }
 
-function FilterWarnings() {
+/** What the figures on screen were made with, and what the recording's own filters do to them. */
+function InForce() {
   const warnings = useAnalysis((state) => state.findings?.warnings);
   const separation = useAnalysis((state) => state.separation);
-  const texts = [
-    ...(warnings ?? []).map((one) => one.text),
-    ...separation.flatMap((one) => one.notes),
-  ];
-  const once = [...new Set(texts)];
-  if (once.length === 0) return null;
+  const now = [...new Set(separation.flatMap((one) => one.notes))];
+  const texts = [...new Set((warnings ?? []).map((one) => one.text))];
   return (
-    <ul className="findings-warnings" aria-label="Warnings about this recording's filters">
-      {once.map((text) => (
-        <li key={text}>{text}</li>
-      ))}
-    </ul>
+    <>
+      {now.length > 0 ? (
+        <div className="small quiet">
+          {now.map((note, i) => (
+            <p key={note}>{i === 0 ? `Now: ${note}` : note}</p>
+          ))}
+        </div>
+      ) : null}
+      {texts.length > 0 ? (
+        <ul className="findings-warnings" aria-label="Warnings about this recording's filters">
+          {texts.map((text) => (
+            <li key={text}>{text}</li>
+          ))}
+        </ul>
+      ) : null}
+    </>
   );
 }
 
@@ -99,16 +108,18 @@ interface SectionProps {
   readonly onChange: (draft: SettingsDraft) => void;
 }
 
-/** Number fields of some settings, side by side. */
+/** Number fields of some settings, side by side: those that act under the chosen routes. */
 function Numbers({
   draft,
   errors,
   onChange,
   keys,
 }: SectionProps & { keys: readonly SettingKey[] }) {
+  const acting = keys.filter((key) => settingActs(key, draft));
+  if (acting.length === 0) return null;
   return (
     <div className="field-grid">
-      {keys.map((key) => {
+      {acting.map((key) => {
         const field = SETTING_FIELDS.find((one) => one.key === key);
         return field ? (
           <Field
@@ -141,9 +152,7 @@ function Separation(props: SectionProps) {
           onChange={(slowRoute) => onChange({ ...draft, slowRoute })}
         />
         <Numbers {...props} keys={['slowLow', 'slowHigh']} />
-        <p className="small quiet">
-          The band is what is drawn. Rhythm is computed on the lead before it.
-        </p>
+        <p className="small quiet">{slowRouteWords(draft)}</p>
       </fieldset>
       <fieldset>
         <legend className="organ-heart">Heartbeat</legend>
@@ -154,20 +163,29 @@ function Separation(props: SectionProps) {
           onChange={(heartRoute) => onChange({ ...draft, heartRoute })}
         />
         <Numbers {...props} keys={['heartLow', 'heartHigh']} />
+        <p className="small quiet">{heartRouteWords(draft)}</p>
       </fieldset>
-      <fieldset>
-        <legend>Fractional route</legend>
-        <p className="small quiet">
-          {fractional ? truncationWords(draft) : 'Acts where this route is chosen above.'}
-        </p>
-        <Numbers {...props} keys={['order', 'memory', 'slowWindow', 'heartWindow', 'polynomial']} />
+      {fractional ? <Fractional {...props} /> : null}
+    </div>
+  );
+}
+
+/** Settings of the fractional route, which one or both of the routes above use. */
+function Fractional(props: SectionProps) {
+  const { draft, onChange } = props;
+  return (
+    <fieldset>
+      <legend>Fractional route</legend>
+      <Numbers {...props} keys={['order', 'memory', 'slowWindow', 'heartWindow', 'polynomial']} />
+      {draft.slowRoute === 'fractional' ? (
         <Tick
-          label="Shift the drawn slow wave back by the lead in time that the derivative gives it"
+          label="Undo the time by which the derivative puts the drawn slow wave ahead"
           checked={draft.undoLead}
           onChange={(undoLead) => onChange({ ...draft, undoLead })}
         />
-      </fieldset>
-    </div>
+      ) : null}
+      <p className="small quiet">{truncationWords(draft)}</p>
+    </fieldset>
   );
 }
 
@@ -199,7 +217,7 @@ function RhythmSettings(props: SectionProps) {
       <Numbers {...props} keys={PRESET_KEYS} />
       <Numbers {...props} keys={['epochLength', 'epochStep', 'maxSpoiled', 'falseAlarm']} />
       <p className="small quiet">
-        An epoch is kept up to that spoiled share. The false alarm is the chance, an epoch, that
+        An epoch with a larger spoiled share is left out. False alarm: the chance that an epoch of
         noise alone passes for a rhythm.
       </p>
     </fieldset>

@@ -1,4 +1,3 @@
-import { truncationBound } from '../numeric/grunwald-letnikov';
 import type { RouteName, Settings } from '../recording/settings';
 import { type NumberBounds, numberText, readNumber } from './number-field';
 
@@ -102,15 +101,55 @@ const ASCENDING: readonly (readonly [SettingKey, SettingKey])[] = [
   ['hfLow', 'hfHigh'],
 ];
 
-/** Reads what was typed: settings (null while something is wrong) and what is wrong, by field. */
-export function readSettings(draft: SettingsDraft): {
-  readonly settings: Settings | null;
+type RouteChoice = Pick<SettingsDraft, 'slowRoute' | 'heartRoute'>;
+
+/** Fields that serve a route: each group acts, and is offered, only where its route is chosen. */
+const ROUTE_GROUPS: readonly {
+  readonly keys: readonly SettingKey[];
+  readonly acts: (chosen: RouteChoice) => boolean;
+}[] = [
+  { keys: ['slowLow', 'slowHigh'], acts: ({ slowRoute }) => slowRoute === 'band' },
+  { keys: ['heartLow', 'heartHigh'], acts: ({ heartRoute }) => heartRoute === 'band' },
+  {
+    keys: ['order', 'memory', 'polynomial'],
+    acts: ({ slowRoute, heartRoute }) => slowRoute === 'fractional' || heartRoute === 'fractional',
+  },
+  { keys: ['slowWindow'], acts: ({ slowRoute }) => slowRoute === 'fractional' },
+  { keys: ['heartWindow'], acts: ({ heartRoute }) => heartRoute === 'fractional' },
+];
+
+/** True where a field has an effect under the chosen routes. */
+export function settingActs(key: SettingKey, chosen: RouteChoice): boolean {
+  return ROUTE_GROUPS.every(({ keys, acts }) => !keys.includes(key) || acts(chosen));
+}
+
+/**
+ * Reads what was typed: settings (null while something is wrong) and what is wrong, by field. Fields that the chosen routes
+ * do not use cannot be wrong: where they make no sense, what was in force `before` stays in them.
+ */
+export function readSettings(
+  draft: SettingsDraft,
+  before: Settings,
+): { readonly settings: Settings | null; readonly errors: SettingErrors } {
+  const typed = readTexts(draft.texts);
+  const kept = settingsDraft(before).texts;
+  const resting = ROUTE_GROUPS.filter(
+    ({ keys, acts }) => !acts(draft) && keys.some((key) => typed.errors[key]),
+  ).flatMap(({ keys }) => keys);
+  const texts = { ...draft.texts, ...Object.fromEntries(resting.map((key) => [key, kept[key]])) };
+  const { values, errors } = resting.length > 0 ? readTexts(texts) : typed;
+  if (Object.keys(errors).length > 0) return { settings: null, errors };
+  return { settings: settingsOf(draft, values), errors };
+}
+
+function readTexts(texts: SettingsDraft['texts']): {
+  readonly values: Record<SettingKey, number>;
   readonly errors: SettingErrors;
 } {
   const errors: Partial<Record<SettingKey, string>> = {};
   const values = {} as Record<SettingKey, number>;
   for (const { key, bounds } of SETTING_FIELDS) {
-    const read = readNumber(draft.texts[key], bounds);
+    const read = readNumber(texts[key], bounds);
     if (read.ok) values[key] = read.value;
     else errors[key] = read.error;
   }
@@ -119,8 +158,7 @@ export function readSettings(draft: SettingsDraft): {
       errors[high] = `Must be above ${numberText(values[low])}.`;
   if (!errors.epochStep && !errors.epochLength && values.epochStep > values.epochLength)
     errors.epochStep = 'The step cannot be longer than the epoch.';
-  if (Object.keys(errors).length > 0) return { settings: null, errors };
-  return { settings: settingsOf(draft, values), errors };
+  return { values, errors };
 }
 
 const share = (percent: number): number => Number((percent / 100).toPrecision(12));
@@ -158,20 +196,4 @@ function settingsOf(draft: SettingsDraft, v: Readonly<Record<SettingKey, number>
       minNnShare: share(v.minNn),
     },
   };
-}
-
-/** What the fixed memory of the derivative leaves out at most, in words; '' while order or memory cannot be read. */
-export function truncationWords(draft: SettingsDraft): string {
-  const value = (key: SettingKey) => {
-    const bounds = SETTING_FIELDS.find((one) => one.key === key)?.bounds;
-    const read = bounds ? readNumber(draft.texts[key], bounds) : null;
-    return read?.ok ? read.value : null;
-  };
-  const order = value('order');
-  const memory = value('memory');
-  if (order === null || memory === null) return '';
-  if (order === 0 || order === 1) return 'At this order nothing older than one sample enters.';
-  const bound = truncationBound(order, memory);
-  const size = bound >= 0.1 ? bound.toFixed(2) : bound.toPrecision(2);
-  return `What is older than ${numberText(memory)} s is left out. At worst, for a lead that stands still at 1 µV, the derivative is off by ${size} µV per second to the power ${numberText(order)}; the mean is removed first, and a wave that swings about zero loses far less.`;
 }

@@ -16,6 +16,10 @@ const redoable = ({ session }: CommandParts) => {
   return open && redoableEdit(open);
 };
 
+const figuresThere = ({ analysis }: CommandParts) => analysis.getState().findings !== null;
+const figuresWhyNot = (parts: CommandParts) =>
+  figuresThere(parts) ? '' : 'the figures are not there yet';
+
 /** Ways in and out. */
 export const OPEN_COMMANDS: readonly Command[] = [
   {
@@ -70,7 +74,8 @@ export const OPEN_COMMANDS: readonly Command[] = [
     group: 'open',
     when: 'study',
     menu: 'study',
-    ready: ({ analysis }) => analysis.getState().findings !== null,
+    ready: figuresThere,
+    whyNot: figuresWhyNot,
     run: ({ controller }) => controller.downloadExports(),
   },
 ];
@@ -130,7 +135,8 @@ export const STUDY_COMMANDS: readonly Command[] = [
     group: 'study',
     when: 'study',
     menu: 'study',
-    ready: ({ analysis }) => analysis.getState().findings !== null,
+    ready: figuresThere,
+    whyNot: figuresWhyNot,
     run: dialog('sign'),
   },
   {

@@ -35,14 +35,20 @@ export interface Message {
   readonly id: number;
   readonly kind: 'note' | 'problem';
   readonly text: string;
-  /** True where the message may offer to undo what it tells of. */
-  readonly undo: boolean;
+}
+
+/** The session whose file is asked for, until a study is open again. */
+export interface WantedStudy {
+  readonly code: string;
+  readonly quickKey: string;
 }
 
 export interface ShellState {
   readonly dialog: DialogState;
   /** The dialog below a reviewer's dialog; it comes back when that one closes. */
   readonly under: DialogState;
+  readonly wanted: WantedStudy | null;
+  /** Oldest first: all problems that have not been put away, and the notes that are in sight. */
   readonly messages: readonly Message[];
   /** What the last act did, in the line at the foot; each one takes the place of the one before. */
   readonly status: string;
@@ -51,7 +57,7 @@ export interface ShellState {
   readonly plainKeys: boolean;
   openDialog(dialog: DialogState): void;
   closeDialog(): void;
-  say(text: string, undo?: boolean): void;
+  say(text: string): void;
   sayProblem(text: string): void;
   tell(status: string): void;
   putAway(id: number): void;
@@ -62,18 +68,41 @@ export interface ShellState {
 export type ShellStore = StoreApi<ShellState>;
 
 const NONE: DialogState = { kind: 'none' };
-const MOST_MESSAGES = 4;
+const MOST_IN_SIGHT = 2;
 /** How long the status line speaks of an act. */
 const STATUS_MS = 12_000;
+
+/**
+ * The messages that are shown, oldest first: two at most. A problem keeps its place beside newer notes; further problems wait
+ * until one is put away.
+ */
+export function messagesInSight(messages: readonly Message[]): readonly Message[] {
+  const problems = messages.filter(({ kind }) => kind === 'problem');
+  const notes = messages.filter(({ kind }) => kind === 'note');
+  const places = Math.max(MOST_IN_SIGHT - notes.length, 1);
+  const shownProblems = problems.slice(0, places);
+  const shownNotes = notes.slice(-Math.max(MOST_IN_SIGHT - shownProblems.length, 0));
+  return messages.filter((one) => shownProblems.includes(one) || shownNotes.includes(one));
+}
+
+/** One message more; notes that go out of sight are gone, and what is said already is not said twice. */
+function withMessage(messages: readonly Message[], message: Message): readonly Message[] {
+  const others = messages.filter(
+    ({ kind, text }) => !(kind === message.kind && text === message.text),
+  );
+  const grown = [...others, message];
+  const inSight = messagesInSight(grown);
+  return grown.filter((one) => one.kind === 'problem' || inSight.includes(one));
+}
 
 /** The store of the page's own state: dialog, messages, theme, keys. Preferences are kept in local storage. */
 export function createShellStore(storage: Storage | null): ShellStore {
   let nextId = 1;
   return createStore<ShellState>()((set, get) => {
-    const add = (kind: Message['kind'], text: string, undo: boolean) => {
-      const message = { id: nextId, kind, text, undo };
+    const add = (kind: Message['kind'], text: string) => {
+      const message = { id: nextId, kind, text };
       nextId += 1;
-      set((before) => ({ messages: [...before.messages, message].slice(-MOST_MESSAGES) }));
+      set((before) => ({ messages: withMessage(before.messages, message) }));
     };
     const prefer = (change: Partial<Pick<ShellState, 'theme' | 'plainKeys'>>) => {
       set(change);
@@ -84,17 +113,27 @@ export function createShellStore(storage: Storage | null): ShellStore {
       ...readPreferences(storage),
       dialog: NONE,
       under: NONE,
+      wanted: null,
       messages: [],
       status: '',
       openDialog: (dialog) =>
         set((before) => ({
           dialog,
+          wanted:
+            dialog.kind === 'choose-same-file'
+              ? { code: dialog.code, quickKey: dialog.quickKey }
+              : before.wanted,
           under:
             dialog.kind === 'reviewer' && before.dialog.kind !== 'reviewer' ? before.dialog : NONE,
         })),
-      closeDialog: () => set((before) => ({ dialog: before.under, under: NONE })),
-      say: (text, undo = false) => add('note', text, undo),
-      sayProblem: (text) => add('problem', text, false),
+      closeDialog: () =>
+        set((before) => ({
+          dialog: before.under,
+          under: NONE,
+          wanted: before.dialog.kind === 'identity' ? null : before.wanted,
+        })),
+      say: (text) => add('note', text),
+      sayProblem: (text) => add('problem', text),
       tell: (status) => {
         set({ status });
         setTimeout(() => set((now) => (now.status === status ? { status: '' } : now)), STATUS_MS);

@@ -1,11 +1,12 @@
 import './styles.css';
-import { type ReactNode, useCallback, useMemo, useRef } from 'react';
+import { type ReactNode, useCallback, useEffect, useMemo, useRef } from 'react';
 import { useStore } from 'zustand';
 import { paneCommands } from '../review/pane-commands';
 import type { PaneProps } from '../review/pane-props';
 import { type AppParts, AppProvider } from './app-context';
 import type { CommandParts, PageActs } from './command';
 import { Dialogs } from './dialogs';
+import { useEditStatus } from './edit-status';
 import { FootLine } from './foot-line';
 import { Messages } from './messages';
 import { ReportFrame } from './report-frame';
@@ -39,11 +40,13 @@ export function Shell({ parts, renderReport }: ShellProps) {
   const theme = useTheme(shell);
   useLeaveGuard(session);
   useKeys(commandParts);
-  const identityAsked = useStore(shell, (state) => state.dialog.kind === 'identity');
+  useEditStatus(parts);
+  const otherAsked = useOtherStudyAsked(parts);
   const sessionThere = useStore(session, (state) => state.session !== null);
   const recordingThere = useStore(analysis, (state) => state.recording !== null);
   const studyThere = sessionThere || recordingThere;
-  const studyShown = studyThere && !identityAsked;
+  const studyShown = studyThere && !otherAsked;
+  useReviewFirst(studyShown, hash);
   const reportShown = studyShown && renderReport !== undefined && hash === REPORT_HASH;
   return (
     <AppProvider value={parts}>
@@ -69,6 +72,22 @@ export function Shell({ parts, renderReport }: ShellProps) {
       </div>
     </AppProvider>
   );
+}
+
+/** True while a dialog asks about another study than the open one, so that nothing of this one is taken for it. */
+function useOtherStudyAsked({ shell, session }: AppParts): boolean {
+  const asked = useStore(shell, (state) => state.dialog);
+  const open = useStore(session, (state) => state.session?.state.study.quickKey);
+  return (
+    asked.kind === 'identity' || (asked.kind === 'choose-same-file' && asked.quickKey !== open)
+  );
+}
+
+/** A study opens on its traces: the report of what was open before is left. */
+function useReviewFirst(studyShown: boolean, hash: string): void {
+  useEffect(() => {
+    if (!studyShown && hash === REPORT_HASH) window.location.replace('#');
+  }, [studyShown, hash]);
 }
 
 /** What the panes are given: they speak and edit through the shell. */

@@ -126,7 +126,7 @@ interface SameFileProps {
   readonly page: PageActs;
 }
 
-/** The figures of a kept session stand; the traces need the file again. */
+/** A kept or opened session needs its recording once more. */
 export function SameFileDialog({ code, page }: SameFileProps) {
   const { shell } = useApp();
   const close = () => shell.getState().closeDialog();
@@ -139,7 +139,7 @@ export function SameFileDialog({ code, page }: SameFileProps) {
       actions={
         <>
           <button type="button" className="button" onClick={close}>
-            Figures only
+            Not now
           </button>
           <button
             type="button"
@@ -155,12 +155,12 @@ export function SameFileDialog({ code, page }: SameFileProps) {
       }
     >
       <p>
-        The review is as you left it: edits, settings and figures are all here. A browser cannot
-        keep hold of the recording itself, so the traces need it once more.
+        The review of this session is here as it was left: leads, phases, beats, spans, settings and
+        the log. A browser cannot keep the recording itself, so choose its file once more; the
+        traces are drawn and the figures computed again from it.
       </p>
       <p className="quiet">
-        It is compared with the study of this session; another file is said to be one and changes
-        nothing.
+        If another file is chosen, the program says so, and this session stays as it is.
       </p>
     </Dialog>
   );

@@ -3,6 +3,7 @@ import type { CommandParts } from './command';
 import { CommandButton } from './command-button';
 import { commandOf } from './commands';
 import { Menu } from './menu';
+import { signatureState } from './signature-words';
 import { factsWords, keptWords, personWords } from './study-words';
 
 interface TopBarProps {
@@ -33,7 +34,8 @@ function StudyStrip({ parts }: { readonly parts: CommandParts }) {
   const recording = useAnalysis((state) => state.recording);
   const hidden = useView((state) => state.identityHidden);
   const code = study?.code ?? 'being opened';
-  const person = recording && !hidden ? personWords(recording) : '';
+  const invented = (study ?? recording)?.invented ?? false;
+  const person = recording && !hidden && !invented ? personWords(recording) : '';
   return (
     <div className="strip">
       <p className="who">
@@ -45,10 +47,11 @@ function StudyStrip({ parts }: { readonly parts: CommandParts }) {
           words={hidden ? 'Show' : 'Hide'}
           className="button slight"
         />
-        {(study ?? recording)?.invented ? <span className="badge">invented data</span> : null}
+        {invented ? <span className="badge">invented data</span> : null}
       </p>
       <p className="facts">
         <Kept />
+        <Signed />
         {recording ? <span title={factsWords(recording)}>{factsWords(recording)}</span> : null}
       </p>
     </div>
@@ -61,6 +64,16 @@ function Kept() {
   const words = keptWords(kept, edit);
   return (
     <span className={kept.kind === 'nowhere' ? 'kept tab' : 'kept'} title={words}>
+      {words}
+    </span>
+  );
+}
+
+function Signed() {
+  const session = useSession((state) => state.session);
+  const { words, changed } = session ? signatureState(session) : { words: '', changed: false };
+  return words === '' ? null : (
+    <span className={changed ? 'signed tab' : 'signed'} title={words}>
       {words}
     </span>
   );
@@ -89,7 +102,7 @@ function StudyActs({ parts, reportShown }: StudyActsProps) {
   return (
     <>
       <CommandButton command={commandOf('undo')} parts={parts} className="button named" />
-      <CommandButton command={commandOf('redo')} parts={parts} words="Redo" />
+      <CommandButton command={commandOf('redo')} parts={parts} words="Redo" readWhole />
       <Menu words="Study" name="study" parts={parts} />
       <CommandButton command={commandOf('settings')} parts={parts} words="Settings" />
       {parts.page.reportThere ? (

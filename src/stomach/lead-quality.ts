@@ -82,7 +82,7 @@ function held(signal: Float64Array, kept: Uint8Array): Float64Array {
   });
 }
 
-const uv = (value: number) => (Number.isNaN(value) ? 'not known' : `${value.toFixed(1)} uV`);
+const uv = (value: number) => (Number.isNaN(value) ? 'not known' : `${value.toFixed(1)} µV`);
 
 function describe(quality: Omit<LeadQuality, 'reason'>): string {
   const { keptShare, unrestUv, driftUvPerMin, steps } = quality;

@@ -7,6 +7,7 @@ import {
   proposedFed,
   readPhases,
   rowsOf,
+  withTypedEvent,
 } from '../../src/app/phase-draft';
 
 const STUDY_S = 5400;
@@ -109,6 +110,27 @@ describe('events', () => {
       ok: false,
       at: 'The recording ends at 1:30:00.',
       text: 'Say what happened.',
+    });
+  });
+
+  it('are kept with the one that is typed but not yet added; a blank one is none', () => {
+    const noted = [{ id: 1, atS: 60, text: 'cough' }];
+    expect(withTypedEvent(noted, { at: ' ', text: '' }, STUDY_S)).toEqual({
+      ok: true,
+      events: noted,
+    });
+    const grown = withTypedEvent(noted, { at: '12:30', text: 'nausea' }, STUDY_S);
+    expect(grown.ok && grown.events.map(({ atS, text }) => [atS, text])).toEqual([
+      [60, 'cough'],
+      [750, 'nausea'],
+    ]);
+    expect(withTypedEvent(noted, { at: '12:30', text: '' }, STUDY_S)).toEqual({
+      ok: false,
+      text: 'Say what happened.',
+    });
+    expect(withTypedEvent(noted, { at: '', text: 'nausea' }, STUDY_S)).toMatchObject({
+      ok: false,
+      at: expect.stringMatching(/h:mm:ss/),
     });
   });
 });

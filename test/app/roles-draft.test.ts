@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import {
   addSlowLead,
+  leadReason,
   readRoles,
   removeSlowLead,
   reportedChanged,
@@ -71,5 +72,27 @@ describe('leads and their roles', () => {
     expect(errors.slow[7]).toMatch(/already/);
     const grown = addSlowLead(draft, CHANNELS);
     expect(grown.slow[2].plus).toBe(2);
+  });
+});
+
+describe('the reason beside a lead', () => {
+  const reasons = ['quiet', 'restless'];
+  const row = (plus: number | null, minus: number | null = null) => ({ id: 9, plus, minus });
+
+  it('is the program’s only for the lead the program chose, wherever it stands', () => {
+    expect(leadReason(row(0), BEFORE.slow, reasons)).toBe('quiet');
+    expect(leadReason(row(1), BEFORE.slow, reasons)).toBe('restless');
+    expect(leadReason(row(0, 1), BEFORE.slow, reasons)).toBe('chosen by hand');
+    expect(leadReason(row(2), BEFORE.slow, reasons)).toBe('chosen by hand');
+  });
+
+  it('tells "none" by hand from "none" because no channel serves', () => {
+    expect(leadReason(row(null), [BEFORE.heart], ['clearest heartbeat'])).toBe('chosen by hand');
+    expect(leadReason(row(null), [null], ['no channel in volts'])).toBe('no channel in volts');
+  });
+
+  it('is at least told apart where the program’s words are not at hand, as after a reload', () => {
+    expect(leadReason(row(0), BEFORE.slow, null)).toBe('proposed by the program');
+    expect(leadReason(row(2), BEFORE.slow, null)).toBe('chosen by hand');
   });
 });

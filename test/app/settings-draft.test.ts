@@ -1,11 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { protocolDraft, readProtocol } from '../../src/app/protocol-draft';
 import {
-  readSettings,
+  readSettings as readDraft,
   type SettingKey,
+  type SettingsDraft,
+  settingActs,
   settingsDraft,
-  truncationWords,
 } from '../../src/app/settings-draft';
+import { heartRouteWords, slowRouteWords, truncationWords } from '../../src/app/settings-words';
 import { EMPTY_PROTOCOL } from '../../src/recording/protocol';
 import { BAND_PRESETS, DEFAULT_SETTINGS } from '../../src/recording/settings';
 
@@ -13,6 +15,8 @@ const typed = (change: Partial<Record<SettingKey, string>>) => {
   const draft = settingsDraft(DEFAULT_SETTINGS);
   return { ...draft, texts: { ...draft.texts, ...change } };
 };
+
+const readSettings = (draft: SettingsDraft) => readDraft(draft, DEFAULT_SETTINGS);
 
 describe('typed settings', () => {
   it('come back to the last digit where nothing was typed, shares shown as percent too', () => {
@@ -34,9 +38,50 @@ describe('typed settings', () => {
     expect(readSettings(typed({ slowLow: '12' })).errors.slowHigh).toMatch(/above 12/);
     expect(readSettings(typed({ normoHigh: '2' })).errors.normoHigh).toMatch(/above 2/);
     expect(readSettings(typed({ epochStep: '300' })).errors.epochStep).toMatch(/longer/);
-    expect(readSettings(typed({ polynomial: '2.5' })).errors.polynomial).toMatch(/whole/);
-    expect(readSettings(typed({ order: '' })).errors.order).toMatch(/0 to 1/);
-    expect(readSettings(typed({ order: '1.2' })).settings).toBeNull();
+    const derived = (change: Partial<Record<SettingKey, string>>) =>
+      readSettings({ ...typed(change), slowRoute: 'fractional' });
+    expect(derived({ polynomial: '2.5' }).errors.polynomial).toMatch(/whole/);
+    expect(derived({ order: '' }).errors.order).toMatch(/0 to 1/);
+    expect(derived({ order: '1.2' }).settings).toBeNull();
+  });
+});
+
+describe('fields of a route', () => {
+  const fractional = { slowRoute: 'fractional', heartRoute: 'band' } as const;
+
+  it('act only where the route is chosen', () => {
+    const band = { slowRoute: 'band', heartRoute: 'band' } as const;
+    expect(settingActs('slowLow', band)).toBe(true);
+    expect(settingActs('order', band)).toBe(false);
+    expect(settingActs('slowLow', fractional)).toBe(false);
+    expect(settingActs('heartHigh', fractional)).toBe(true);
+    expect(settingActs('order', fractional)).toBe(true);
+    expect(settingActs('slowWindow', fractional)).toBe(true);
+    expect(settingActs('heartWindow', fractional)).toBe(false);
+    expect(settingActs('falseAlarm', fractional)).toBe(true);
+  });
+
+  it('cannot be wrong where they do not act: what was in force stays in them', () => {
+    const before = { ...DEFAULT_SETTINGS, slowBandCpm: [1, 9] as const };
+    const broken = { ...settingsDraft(before), ...fractional };
+    const typedWrong = { ...broken, texts: { ...broken.texts, slowLow: 'x', slowHigh: '7' } };
+    expect(readDraft(typedWrong, before)).toEqual({
+      settings: { ...before, ...fractional },
+      errors: {},
+    });
+    const stillWrong = { ...typedWrong, slowRoute: 'band' as const };
+    expect(readDraft(stillWrong, before).errors.slowLow).toMatch(/Type a number/);
+  });
+
+  it('keep what was typed where it makes sense, for the day the route comes back', () => {
+    const draft = { ...typed({ slowLow: '1.2' }), ...fractional };
+    expect(readSettings(draft).settings?.slowBandCpm).toEqual([1.2, 10]);
+  });
+
+  it('stand beside words that follow the choice', () => {
+    expect(slowRouteWords({ slowRoute: 'band' })).toMatch(/within this band/);
+    expect(slowRouteWords({ slowRoute: 'fractional' })).toMatch(/derivative.*no band limits/);
+    expect(heartRouteWords({ heartRoute: 'fractional' })).not.toMatch(/within this band/);
   });
 });
 

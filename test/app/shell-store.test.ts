@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { LIBRARIES } from '../../src/app/libraries';
-import { createShellStore } from '../../src/app/shell-store';
+import { createShellStore, type DialogState, messagesInSight } from '../../src/app/shell-store';
 import { meaningsNow, readSign } from '../../src/app/sign-draft';
 import { hasUnfiledWork, keptWords, localWords } from '../../src/app/study-words';
 
@@ -76,15 +76,51 @@ describe('preferences', () => {
 });
 
 describe('messages', () => {
-  it('are few, and problems among them stay told apart', () => {
+  const texts = (store: ReturnType<typeof createShellStore>) =>
+    messagesInSight(store.getState().messages).map((one) => one.text);
+
+  it('are two at most: the newest notes', () => {
     const store = createShellStore(null);
-    for (let i = 0; i < 9; i += 1) store.getState().say(`note ${i}`);
+    for (const text of ['one', 'two', 'three']) store.getState().say(text);
+    expect(texts(store)).toEqual(['two', 'three']);
+    expect(store.getState().messages.length).toBe(2);
+  });
+
+  it('leave a problem where it is until it is put away, and further problems wait', () => {
+    const store = createShellStore(null);
     store.getState().sayProblem('storage is full');
-    const { messages } = store.getState();
-    expect(messages.length).toBeLessThanOrEqual(4);
-    expect(messages.at(-1)).toMatchObject({ kind: 'problem', text: 'storage is full' });
-    store.getState().putAway(messages[0].id);
-    expect(store.getState().messages.length).toBe(messages.length - 1);
+    store.getState().sayProblem('the worker stopped');
+    store.getState().sayProblem('the hash differs');
+    expect(texts(store)).toEqual(['storage is full', 'the worker stopped']);
+    store.getState().say('one');
+    store.getState().say('two');
+    expect(texts(store)).toEqual(['storage is full', 'two']);
+    for (const text of ['storage is full', 'two']) {
+      const shown = store.getState().messages.find((one) => one.text === text);
+      if (shown) store.getState().putAway(shown.id);
+    }
+    expect(texts(store)).toEqual(['the worker stopped', 'the hash differs']);
+  });
+
+  it('do not say twice what stands there already', () => {
+    const store = createShellStore(null);
+    store.getState().sayProblem('storage is full');
+    store.getState().sayProblem('storage is full');
+    expect(store.getState().messages.length).toBe(1);
+  });
+});
+
+describe('the session whose file is asked for', () => {
+  it('is remembered until a study has been agreed to or left', () => {
+    const store = createShellStore(null);
+    const { openDialog, closeDialog } = store.getState();
+    openDialog({ kind: 'choose-same-file', code: 'EG-0815', quickKey: 'k' });
+    closeDialog();
+    expect(store.getState().wanted).toEqual({ code: 'EG-0815', quickKey: 'k' });
+    openDialog({ kind: 'identity', quickKey: 'other' } as DialogState);
+    expect(store.getState().wanted?.code).toBe('EG-0815');
+    closeDialog();
+    expect(store.getState().wanted).toBeNull();
   });
 });
 

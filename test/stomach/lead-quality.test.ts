@@ -20,7 +20,7 @@ describe('quality of a slow-wave lead', () => {
     expect(restless.score).toBeLessThan(0.75 * quiet.score);
     expect(restless.unrestUv).toBeGreaterThan(45);
     expect(restless.reason).toMatch(
-      /^100 % kept, unrest \d\d\.\d uV above 12 cpm, drift .* no steps$/,
+      /^100 % kept, unrest \d\d\.\d µV above 12 cpm, drift .* no steps$/,
     );
   });
 

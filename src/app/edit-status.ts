@@ -1,0 +1,53 @@
+import { useEffect } from 'react';
+import type { LogLine, Session } from '../session/document';
+import type { AppParts } from './app-context';
+import { signatureState } from './signature-words';
+
+const signs = ({ act }: LogLine): boolean =>
+  act.kind === 'edit' && act.edit.changes.some(({ kind }) => kind === 'sign');
+
+/** What the foot line says of a new line of the log: the edit by its name; '' for undo and redo, which say so themselves. */
+export function editStatus(line: LogLine): string {
+  return line.act.kind === 'edit' && !signs(line) ? `Done: ${line.act.edit.name}` : '';
+}
+
+/** What a person must hear when an edit takes a signature out of force; null where it does not. */
+export function signatureLost(before: Session, now: Session): string | null {
+  const [was, is] = [signatureState(before), signatureState(now)];
+  if (was.words === '' || was.changed || !is.changed) return null;
+  return `The report is a draft again: ${is.words}.`;
+}
+
+/** True where one session is the other with more lines in its log. */
+const grewFrom = (now: Session, before: Session): boolean =>
+  now.start === before.start && now.log.length > before.log.length;
+
+/** Calls once the act is over: signing writes its words first, as an edit of their own. */
+function afterTheAct(
+  session: AppParts['session'],
+  was: Session,
+  tell: (was: Session, is: Session) => void,
+): void {
+  queueMicrotask(() => {
+    const is = session.getState().session;
+    if (is && grewFrom(is, was)) tell(was, is);
+  });
+}
+
+/** Tells of each edit in the foot line, and of a signature that no longer stands. */
+export function useEditStatus({ session, shell }: Pick<AppParts, 'session' | 'shell'>): void {
+  useEffect(
+    () =>
+      session.subscribe((now, before) => {
+        if (!now.session || !before.session || !grewFrom(now.session, before.session)) return;
+        const last = now.session.log.at(-1);
+        const status = last ? editStatus(last) : '';
+        if (status !== '') shell.getState().tell(status);
+        afterTheAct(session, before.session, (was, is) => {
+          const lost = signatureLost(was, is);
+          if (lost !== null) shell.getState().say(lost);
+        });
+      }),
+    [session, shell],
+  );
+}

@@ -1,0 +1,34 @@
+import { truncationBound } from '../numeric/grunwald-letnikov';
+import { numberText, readNumber } from './number-field';
+import { SETTING_FIELDS, type SettingKey, type SettingsDraft } from './settings-draft';
+
+function typedNumber(draft: SettingsDraft, key: SettingKey): number | null {
+  const bounds = SETTING_FIELDS.find((one) => one.key === key)?.bounds;
+  const read = bounds ? readNumber(draft.texts[key], bounds) : null;
+  return read?.ok ? read.value : null;
+}
+
+/** What the chosen route of the slow wave draws, and what its rhythm is computed on. */
+export function slowRouteWords({ slowRoute }: Pick<SettingsDraft, 'slowRoute'>): string {
+  return slowRoute === 'band'
+    ? 'Drawn: the lead within this band. The rhythm is computed on the lead before it.'
+    : 'Drawn: the derivative of the lead, smoothed, with no band limits. The rhythm is computed on it, with what the derivative does to each frequency divided out.';
+}
+
+/** What the chosen route of the heartbeat finds beats on. */
+export function heartRouteWords({ heartRoute }: Pick<SettingsDraft, 'heartRoute'>): string {
+  return heartRoute === 'band'
+    ? 'Beats are found on the lead within this band.'
+    : 'Beats are found on the derivative of the smoothed lead, with no band limits.';
+}
+
+/** What the fixed memory of the derivative leaves out at most, in words; '' while order or memory cannot be read. */
+export function truncationWords(draft: SettingsDraft): string {
+  const order = typedNumber(draft, 'order');
+  const memory = typedNumber(draft, 'memory');
+  if (order === null || memory === null) return '';
+  if (order === 0 || order === 1) return 'At this order nothing older than one sample enters.';
+  const bound = truncationBound(order, memory);
+  const size = bound >= 0.1 ? bound.toFixed(2) : bound.toPrecision(2);
+  return `What is older than ${numberText(memory)} s is left out. At worst, for a lead that stands still at 1 µV, the derivative is off by ${size} µV per second to the power ${numberText(order)}; the mean is removed first, and a wave that swings about zero loses far less.`;
+}
