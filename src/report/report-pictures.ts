@@ -5,9 +5,11 @@ import type { SlowWaveRhythm } from '../recording/rhythm';
 import type { Settings } from '../recording/settings';
 import { type Interval, joinIntervals, spansOf } from '../recording/span';
 import type { SessionState } from '../session/document';
+import { spectrogramWords, trendWords, wavesWords } from './picture-words';
 import { spectrogramPicture } from './pictures/spectrogram-picture';
 import { trendPicture } from './pictures/trend-picture';
-import { reachOf, wavePicture } from './pictures/wave-picture';
+import { breathingRow, heartRateRow, powerRow } from './pictures/trend-rows';
+import { wavesPicture } from './pictures/waves-picture';
 
 /** A stretch of slow wave to show: the middle of a phase. */
 export interface Excerpt {
@@ -37,39 +39,69 @@ export interface PictureInput {
   readonly waves: readonly { readonly excerpt: Excerpt; readonly columns: Columns }[];
 }
 
-export interface ReportPictures {
-  readonly spectrogram: string;
-  readonly trend: string;
-  readonly waves: readonly { readonly name: string; readonly svg: string }[];
+/** A picture of the printed page as SVG text, and in words for those who do not see it. */
+export interface ReportPicture {
+  readonly svg: string;
+  readonly words: string;
 }
 
-/** The pictures of the printed page as SVG text: pure functions of the results, so that no canvas is needed. */
+export interface ReportPictures {
+  readonly spectrogram: ReportPicture;
+  readonly trend: ReportPicture;
+  /** Null where the file is not at hand to draw from. */
+  readonly waves: ReportPicture | null;
+}
+
+/** The pictures of the printed page: pure functions of the results, so that no canvas is needed. */
 export function reportPictures(input: PictureInput): ReportPictures {
-  const { state, settings, rhythm, heart, durationS, waves } = input;
-  const key = leadKey(state.roles.slow[state.roles.reported]);
-  const spoiled: readonly Interval[] = joinIntervals(spansOf(state.spans, key, 'stomach'));
-  const phases = phasesOrWhole(state.phases, durationS);
-  const reachUv = reachOf(waves.map(({ columns }) => columns));
+  const spoiled = spoiledOf(input.state);
+  const excerpts = input.waves.map(({ excerpt, columns }) => ({ ...excerpt, signal: columns }));
   return {
-    spectrogram: spectrogramPicture({
-      rhythm,
-      phases,
-      spoiled,
-      bands: settings.rhythmBands,
-      durationS,
-      stepS: settings.epoch.stepS,
-    }),
-    trend: trendPicture({
-      epochs: rhythm.epochs,
-      rr: heart?.rr ?? null,
-      breathing: heart?.breathing ?? null,
-      phases,
-      spoiled,
-      durationS,
-    }),
-    waves: waves.map(({ excerpt, columns }) => ({
-      name: excerpt.name,
-      svg: wavePicture(columns, excerpt.name, excerpt.fromS, excerpt.toS, reachUv),
-    })),
+    spectrogram: spectrogramOf(input, spoiled.stomach),
+    trend: trendOf(input, spoiled),
+    waves:
+      excerpts.length > 0
+        ? { svg: wavesPicture(excerpts, spoiled.stomach), words: wavesWords(excerpts) }
+        : null,
   };
+}
+
+function spoiledOf({ roles, spans }: SessionState) {
+  const of = (key: string, organ: 'stomach' | 'heart'): readonly Interval[] =>
+    joinIntervals(spansOf(spans, key, organ));
+  return {
+    stomach: of(leadKey(roles.slow[roles.reported]), 'stomach'),
+    heart: roles.heart ? of(leadKey(roles.heart), 'heart') : [],
+  };
+}
+
+function spectrogramOf(
+  { state, settings, rhythm, durationS, waves }: PictureInput,
+  spoiled: readonly Interval[],
+): ReportPicture {
+  const phases = phasesOrWhole(state.phases, durationS);
+  const { rhythmBands, epoch } = settings;
+  const svg = spectrogramPicture({
+    rhythm,
+    phases,
+    spoiled,
+    bands: rhythmBands,
+    durationS,
+    stepS: epoch.stepS,
+    marked: waves.map(({ excerpt }) => excerpt),
+  });
+  return { svg, words: spectrogramWords(rhythm.epochs, phases, rhythmBands, spoiled) };
+}
+
+function trendOf(
+  { state, rhythm, heart, durationS }: PictureInput,
+  spoiled: ReturnType<typeof spoiledOf>,
+): ReportPicture {
+  const rows = [
+    powerRow(rhythm.epochs),
+    heartRateRow(heart?.rr ?? null, durationS),
+    breathingRow(heart?.breathing ?? null),
+  ];
+  const phases = phasesOrWhole(state.phases, durationS);
+  return { svg: trendPicture({ rows, phases, spoiled, durationS }), words: trendWords(rows) };
 }

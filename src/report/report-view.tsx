@@ -1,11 +1,13 @@
-import { useEffect, useMemo, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { reportModel } from '../export/report-model';
 import type { AnalysisStore, SignalAccess } from '../review/analysis-store';
 import { asWork } from '../review/idle';
 import type { ViewStore } from '../review/view-store';
+import type { SessionState } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
 import { PROGRAM } from '../units/program';
+import { usePageFoot } from './page-foot';
 import { ReportPage } from './report-page';
 import {
   excerptsOf,
@@ -27,61 +29,93 @@ const WAVE_COLUMNS = 960;
 /** The report of the session as it stands, drawn again with every edit. */
 export function ReportView({ session, analysis, view, signals }: ReportViewProps) {
   const open = useStore(session, (state) => state.session);
-  const { recording, findings, stomach, heart, edit, fileAtHand } = useStore(analysis);
+  const { recording, findings, edit } = useStore(analysis);
   const identityHidden = useStore(view, (state) => state.identityHidden);
-  const [waves, setWaves] = useState<PictureInput['waves']>([]);
-  const state = open?.state;
-  const lead = state?.roles.slow[state.roles.reported];
-  const phases = state?.phases;
-  const durationS = recording?.durationS ?? 0;
+  const pictures = usePictures(open?.state ?? null, analysis, signals);
+  const model = useMemo(
+    () =>
+      open && recording && findings
+        ? reportModel({ recording, session: open, findings, program: PROGRAM, identityHidden })
+        : null,
+    [open, recording, findings, identityHidden],
+  );
+  usePageFoot(model?.foot ?? null);
+  const page = useFocusOnce(model !== null);
+  if (!open || !model) return <p className="report-waiting">The figures are being computed.</p>;
+  const stale = model.kind === 'draft' && edit !== editNumber(open);
+  return (
+    <section className="report-view" aria-label="Report" ref={page}>
+      {stale && (
+        <output className="report-stale">
+          Not current: the figures are of an earlier edit. Print once this line is gone.
+        </output>
+      )}
+      <ReportPage model={model} pictures={pictures} />
+    </section>
+  );
+}
 
+/** Gives the focus to an element when it is first there, so that keys scroll it at once. */
+function useFocusOnce(there: boolean) {
+  const place = useRef<HTMLElement>(null);
   useEffect(() => {
-    if (!lead || !phases || !fileAtHand) return;
-    let current = true;
-    const excerpts = excerptsOf(phases, durationS);
-    const asked = excerpts.map(async (excerpt) => {
-      const { fromS, toS } = excerpt;
-      const columns = await signals.columns({
-        lead,
-        signal: 'slow-wave',
-        fromS,
-        toS,
-        columns: WAVE_COLUMNS,
-      });
-      return columns ? [{ excerpt, columns }] : [];
-    });
-    void asWork(Promise.all(asked)).then((found) => {
-      if (current) setWaves(found.flat());
-    });
-    return () => {
-      current = false;
-    };
-  }, [lead, phases, durationS, fileAtHand, signals]);
+    if (!there || !place.current) return;
+    place.current.tabIndex = -1;
+    place.current.focus({ preventScroll: true });
+  }, [there]);
+  return place;
+}
 
-  const pictures = useMemo((): ReportPictures | null => {
+/** The pictures; null until a slow wave has been analysed. */
+function usePictures(
+  state: SessionState | null,
+  analysis: AnalysisStore,
+  signals: SignalAccess,
+): ReportPictures | null {
+  const { recording, stomach, heart, fileAtHand, signalVersion } = useStore(analysis);
+  const durationS = recording?.durationS ?? 0;
+  const version = fileAtHand ? signalVersion : null;
+  const waves = useWaves(state, durationS, version, signals);
+  return useMemo(() => {
     const rhythm = state ? stomach[state.roles.reported] : undefined;
     if (!state || !rhythm) return null;
     return reportPictures({ state, settings: state.settings, rhythm, heart, durationS, waves });
   }, [state, stomach, heart, durationS, waves]);
-
-  if (!open || !recording || !findings)
-    return <p className="report-waiting">The figures are being computed.</p>;
-  const model = reportModel({
-    recording,
-    session: open,
-    findings,
-    program: PROGRAM,
-    identityHidden,
-  });
-  const stale = edit !== editNumber(open);
-  return (
-    <div className="report-view">
-      {stale && (
-        <output className="report-stale">
-          The figures are being brought up to the last edit; print once this line is gone.
-        </output>
-      )}
-      <ReportPage model={model} pictures={pictures} />
-    </div>
-  );
 }
+
+/** The slow wave of the excerpts, asked for again when phases, lead or `version` change; null: no file to draw from. */
+function useWaves(
+  state: SessionState | null,
+  durationS: number,
+  version: number | null,
+  signals: SignalAccess,
+): PictureInput['waves'] {
+  const [drawn, setDrawn] = useState<DrawnWaves | null>(null);
+  const lead = state?.roles.slow[state.roles.reported];
+  const phases = state?.phases;
+  useEffect(() => {
+    if (!lead || !phases || version === null) return;
+    let current = true;
+    const asked = excerptsOf(phases, durationS).map(async (excerpt) => {
+      const { fromS, toS } = excerpt;
+      const request = { lead, signal: 'slow-wave', fromS, toS, columns: WAVE_COLUMNS } as const;
+      const columns = await signals.columns(request);
+      return columns ? [{ excerpt, columns }] : [];
+    });
+    void asWork(Promise.all(asked)).then((found) => {
+      if (current) setDrawn({ version, waves: found.flat() });
+    });
+    return () => {
+      current = false;
+      setDrawn(null);
+    };
+  }, [lead, phases, durationS, version, signals]);
+  return drawn?.waves ?? NO_WAVES;
+}
+
+interface DrawnWaves {
+  readonly version: number;
+  readonly waves: PictureInput['waves'];
+}
+
+const NO_WAVES: PictureInput['waves'] = [];

@@ -1,8 +1,15 @@
 import { inflateSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
+import { base64 } from '../../src/report/pictures/base64';
 import { indexedPng } from '../../src/report/pictures/indexed-png';
-import { escapeXml, pathThrough, timeAxis } from '../../src/report/pictures/svg';
-import { niceBar, wavePicture } from '../../src/report/pictures/wave-picture';
+import {
+  escapeXml,
+  hatched,
+  PICTURE_WIDTH,
+  pathThrough,
+  timeAxis,
+  timeScale,
+} from '../../src/report/pictures/svg';
 
 describe('pictures of the printed page', () => {
   it('the PNG is one that zlib and the PNG layout of the W3C agree with', () => {
@@ -50,13 +57,43 @@ describe('pictures of the printed page', () => {
     expect(escapeXml('<b onclick="x">&')).toBe('&lt;b onclick=&quot;x&quot;&gt;&amp;');
   });
 
-  it('the wave’s bar is a round number no taller than half the picture', () => {
-    expect([3, 49, 50, 180].map(niceBar)).toEqual([2, 20, 50, 100]);
-    const svg = wavePicture({ timesS: [0, 10], low: [-40, 40], high: [-40, 40] }, 'fed', 0, 10, 50);
-    expect(svg).toContain('50 µV');
+  it('bytes become base64 as RFC 4648 has it', () => {
+    const bytes = Uint8Array.from({ length: 257 }, (_, i) => (i * 7) % 256);
+    for (const length of [0, 1, 2, 3, 256, 257])
+      expect(base64(bytes.subarray(0, length))).toBe(
+        Buffer.from(bytes.subarray(0, length)).toString('base64'),
+      );
   });
 
-  it('the time axis of a study of hours writes hours and minutes', () => {
-    expect(timeAxis(0, 5400, 10)).toContain('>0:30<');
+  it('the time axis of a study of hours writes hours and minutes, of minutes seconds too', () => {
+    expect(timeAxis(timeScale(0, 5400), 10)).toContain('>0:30<');
+    expect(timeAxis(timeScale(780, 1020), 10)).toContain('>0:14:00<');
+  });
+
+  it('no label of the time axis reaches past the picture, at either end and for any length', () => {
+    const letterWidth = 6.4;
+    for (const durationS of [120, 240, 5400, 7200, 86400]) {
+      const labels = [
+        ...timeAxis(timeScale(0, durationS), 10).matchAll(/<text x="([\d.]+)".*?>([^<]+)</g),
+      ];
+      expect(labels.length).toBeGreaterThan(2);
+      for (const [, x, text] of labels)
+        expect(Number(x) + (letterWidth * text.length) / 2).toBeLessThanOrEqual(PICTURE_WIDTH);
+    }
+  });
+
+  it('hatching stays inside its stretch, and one outside the plot is not drawn', () => {
+    const scale = timeScale(0, 100, 0, 100);
+    const svg = hatched([{ fromS: 40, toS: 60 }], scale, 10, 50);
+    const points = [...svg.matchAll(/[ML]([\d.]+) ([\d.]+)/g)].map(([, x, y]) => [
+      Number(x),
+      Number(y),
+    ]);
+    expect(points.length).toBeGreaterThan(10);
+    for (const [x, y] of points) {
+      expect(x >= 40 && x <= 60).toBe(true);
+      expect(y >= 10 && y <= 50).toBe(true);
+    }
+    expect(hatched([{ fromS: 120, toS: 140 }], scale, 10, 50)).toBe('');
   });
 });

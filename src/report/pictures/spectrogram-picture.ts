@@ -2,8 +2,11 @@ import type { Phase } from '../../recording/phase';
 import type { Epoch, SlowWaveRhythm } from '../../recording/rhythm';
 import type { RhythmBands } from '../../recording/settings';
 import type { Interval } from '../../recording/span';
+import { base64 } from './base64';
 import { indexedPng } from './indexed-png';
-import { phasesBar } from './phases-bar';
+import { phaseEdges, phasesBar } from './phases-bar';
+import { levelRange, spectrogramPixels } from './spectrogram-pixels';
+import { RAMP_PALETTE, RAMP_STOPS } from './spectrogram-ramp';
 import {
   at,
   GUTTER,
@@ -11,22 +14,17 @@ import {
   INK,
   label,
   line,
-  PICTURE_WIDTH,
+  PLOT_END,
   picture,
   QUIET,
+  type TimeScale,
   timeAxis,
   timeScale,
   valueScale,
 } from './svg';
 
-const TOP = 4;
-const PLOT = 150;
-/** Rows of the picture; finer than the eye parts on paper. */
-const ROWS = 128;
-const STEPS = 64;
-const PAPER = [247, 245, 240] as const;
-const TEAL = [31, 122, 114] as const;
-const DARK = [16, 30, 40] as const;
+const LEGEND = 13;
+const PLOT = 160;
 
 export interface SpectrogramInput {
   readonly rhythm: SlowWaveRhythm;
@@ -35,108 +33,90 @@ export interface SpectrogramInput {
   readonly bands: RhythmBands;
   readonly durationS: number;
   readonly stepS: number;
+  /** Stretches shown larger elsewhere: barred at the foot of the plot. */
+  readonly marked: readonly Interval[];
 }
 
 /** Spectrogram of the reported lead with its DF line, limits, scale and phases; the scale is fixed for the whole study. */
 export function spectrogramPicture(input: SpectrogramInput): string {
-  const { rhythm, phases, spoiled, bands, durationS, stepS } = input;
-  const x = timeScale(0, durationS);
-  const bar = phasesBar(phases, x, TOP);
-  const top = bar.bottomY + 4;
+  const { rhythm, phases, spoiled, bands, durationS, stepS, marked } = input;
+  const scale = timeScale(0, durationS);
+  const bar = phasesBar(phases, scale, LEGEND + 4);
+  const top = bar.bottomY + 3;
   const bottom = top + PLOT;
   const y = valueScale(bands.lowCpm, bands.highCpm, top, bottom);
-  const [lowDb, highDb] = levelRange(rhythm.spectrogram.levelDb);
-  return picture(bottom + 22, 'Spectrogram of the slow wave with its dominant frequency', [
+  const range = levelRange(rhythm.spectrogram.levelDb);
+  return picture(bottom + 18, 'Spectrogram of the slow wave with its dominant frequency', [
+    legend(range),
     bar.svg,
-    spectrogramImage(input, x, top, [lowDb, highDb]),
-    hatched(spoiled, x, top, bottom),
-    ...[bands.normoLowCpm, bands.normoHighCpm].map((cpm) =>
-      line(
-        GUTTER,
-        y(cpm),
-        PICTURE_WIDTH - 8,
-        y(cpm),
-        INK,
-        'stroke-dasharray="4 3" stroke-width="0.6"',
-      ),
+    spectrogramImage(input, scale, top, range),
+    hatched(spoiled, scale, top, bottom),
+    phaseEdges(phases, scale, top, bottom),
+    ...[bands.normoLowCpm, bands.normoHighCpm].map((cpm) => limit(y(cpm))),
+    dfLine(rhythm.epochs, scale, y, stepS),
+    ...ticksCpm(bands).map((cpm) =>
+      label(GUTTER - 5, cpm === bands.highCpm ? top + 8 : y(cpm) + 3.5, String(cpm), 'end', QUIET),
     ),
-    dfLine(rhythm.epochs, x, y, stepS),
-    ...[1, 2, 3, 4, 5, 6, 7, 8, 9]
-      .filter((cpm) => cpm >= bands.lowCpm && cpm <= bands.highCpm)
-      .map((cpm) => label(GUTTER - 5, y(cpm) + 3.5, String(cpm), 'end', QUIET)),
-    label(2, top + 10, 'cpm'),
-    label(2, top + 34, `${highDb} dB`, 'start', QUIET),
-    scaleBar(top + 38),
-    label(2, top + 112, `${lowDb} dB`, 'start', QUIET),
-    timeAxis(0, durationS, bottom),
+    label(2, top + 8, 'Slow wave'),
+    label(2, top + 20, 'cpm', 'start', QUIET),
+    ...marked.map(({ fromS, toS }) =>
+      line(scale.x(fromS), bottom, scale.x(toS), bottom, INK, 'stroke-width="4"'),
+    ),
+    timeAxis(scale, bottom),
   ]);
 }
 
-function levelRange(levelDb: Float32Array): readonly [number, number] {
-  const levels = Float32Array.from(levelDb.filter((level) => Number.isFinite(level))).sort();
-  if (levels.length === 0) return [0, 60];
-  const high = Math.ceil(levels[Math.floor(0.995 * (levels.length - 1))] / 5) * 5;
-  const low = Math.floor(levels[Math.floor(0.1 * (levels.length - 1))] / 5) * 5;
-  return [Math.min(low, high - 20), high];
+/** Whole numbers of the search band; so many that their labels stay apart. */
+function ticksCpm({ lowCpm, highCpm }: RhythmBands): readonly number[] {
+  const first = Math.ceil(lowCpm);
+  const count = Math.floor(highCpm) - first + 1;
+  const step = Math.ceil(count / 12);
+  return Array.from({ length: Math.ceil(count / step) }, (_, i) => first + i * step);
 }
 
-function shade(step: number): readonly [number, number, number] {
-  const place = (2 * step) / (STEPS - 1);
-  const [from, to, share] = place <= 1 ? [PAPER, TEAL, place] : [TEAL, DARK, place - 1];
-  const mix = (part: number) => Math.round(from[part] * (1 - share) + to[part] * share);
-  return [mix(0), mix(1), mix(2)];
+/** A limit of the normal band: dashes with a light edge, so that they stand out of dark and of light. */
+function limit(y: number): string {
+  const dashes = 'stroke-dasharray="4 3"';
+  return (
+    line(GUTTER, y, PLOT_END, y, '#ffffff', 'stroke-width="1.6"') +
+    line(GUTTER, y, PLOT_END, y, '#000000', `${dashes} stroke-width="0.8"`)
+  );
 }
 
-/** Index 0 is clear; 1 to STEPS run from paper to ink. */
-const PALETTE: readonly (readonly [number, number, number])[] = [
-  [255, 255, 255],
-  ...Array.from({ length: STEPS }, (_, step) => shade(step)),
-];
+const LEGEND_WIDTH = 160;
+
+/** The level scale right above the plot, away from its axes: least and greatest level and the colours between. */
+function legend([lowDb, highDb]: readonly [number, number]): string {
+  const endX = PLOT_END - 96;
+  const fromX = endX - LEGEND_WIDTH;
+  const stops = RAMP_STOPS.map(
+    (colour, i) => `<stop offset="${at(i / (RAMP_STOPS.length - 1))}" stop-color="${colour}"/>`,
+  );
+  return [
+    `<defs><linearGradient id="levels">${stops.join('')}</linearGradient></defs>`,
+    label(fromX - 4, 10, String(lowDb), 'end', QUIET),
+    `<rect x="${fromX}" y="2" width="${LEGEND_WIDTH}" height="9" fill="url(#levels)" stroke="${QUIET}" stroke-width="0.5"/>`,
+    label(endX + 4, 10, `${highDb} dB re 1 µV²/Hz`, 'start', QUIET),
+  ].join('');
+}
 
 function spectrogramImage(
   { rhythm, bands, stepS }: SpectrogramInput,
-  x: (seconds: number) => number,
+  { x }: TimeScale,
   top: number,
-  [lowDb, highDb]: readonly [number, number],
+  range: readonly [number, number],
 ): string {
-  const { centresS, firstCpm, stepCpm, binCount, levelDb } = rhythm.spectrogram;
-  const columns = centresS.length;
-  if (columns === 0) return '';
-  const pixels = new Uint8Array(columns * ROWS);
-  for (let row = 0; row < ROWS; row += 1) {
-    const cpm = bands.highCpm - ((row + 0.5) / ROWS) * (bands.highCpm - bands.lowCpm);
-    const bin = Math.min(binCount - 1, Math.max(0, Math.round((cpm - firstCpm) / stepCpm)));
-    for (let column = 0; column < columns; column += 1) {
-      const level = levelDb[column * binCount + bin];
-      const place = Math.round(((level - lowDb) / (highDb - lowDb)) * (STEPS - 1));
-      pixels[row * columns + column] = Number.isFinite(level)
-        ? 1 + Math.min(STEPS - 1, Math.max(0, place))
-        : 0;
-    }
-  }
-  const png = indexedPng(pixels, columns, ROWS, PALETTE);
-  const fromX = x(centresS[0] - stepS / 2);
-  const width = x(centresS[columns - 1] + stepS / 2) - fromX;
-  return `<image x="${at(fromX)}" y="${at(top)}" width="${at(width)}" height="${PLOT}" preserveAspectRatio="none" href="data:image/png;base64,${base64(png)}"/>`;
-}
-
-const LETTERS = 'ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789+/';
-
-function base64(bytes: Uint8Array): string {
-  const out: string[] = [];
-  for (let i = 0; i < bytes.length; i += 3) {
-    const left = bytes.length - i;
-    const three =
-      (bytes[i] << 16) | ((left > 1 ? bytes[i + 1] : 0) << 8) | (left > 2 ? bytes[i + 2] : 0);
-    const sixes = [three >>> 18, (three >>> 12) & 63, (three >>> 6) & 63, three & 63];
-    out.push(sixes.map((six, place) => (place > left ? '=' : LETTERS[six])).join(''));
-  }
-  return out.join('');
+  const { lowCpm, highCpm } = bands;
+  const image = spectrogramPixels(rhythm.spectrogram, stepS, [lowCpm, highCpm], range);
+  if (!image) return '';
+  const { pixels, width, height, fromS, toS } = image;
+  const png = base64(indexedPng(pixels, width, height, RAMP_PALETTE));
+  return `<image x="${at(x(fromS))}" y="${at(top)}" width="${at(x(toS) - x(fromS))}" height="${PLOT}" preserveAspectRatio="none" href="data:image/png;base64,${png}"/>`;
 }
 
 function dfLine(
   epochs: readonly Epoch[],
-  x: (seconds: number) => number,
+  { x }: TimeScale,
   y: (cpm: number) => number,
   stepS: number,
 ): string {
@@ -152,12 +132,4 @@ function dfLine(
   const path = steps.join('');
   const round = 'stroke-linecap="round" stroke-linejoin="round"';
   return `<path d="${path}" stroke="#ffffff" stroke-width="4" ${round}/><path d="${path}" stroke="#000000" stroke-width="1.4" ${round}/>`;
-}
-
-function scaleBar(top: number): string {
-  const height = 62 / 16;
-  return Array.from({ length: 16 }, (_, i) => {
-    const [r, g, b] = shade(Math.round(((15 - i) / 15) * (STEPS - 1)));
-    return `<rect x="2" y="${at(top + i * height)}" width="10" height="${at(height + 0.2)}" fill="rgb(${r} ${g} ${b})"/>`;
-  }).join('');
 }

@@ -1,0 +1,64 @@
+import { adequacyReason } from '../recording/adequacy';
+import type { Adequacy, Findings, PhaseFindings } from '../recording/findings';
+import { isMeal } from '../recording/phase';
+import { formatClock } from '../units/time';
+import { createNotes, type Note, type Notes } from './report-notes';
+
+/** How much of a phase one organ's figures stand on. */
+export interface KeptPart {
+  /** Minutes kept. */
+  readonly minutes: string;
+  readonly percent: string;
+  readonly words: string;
+  readonly letters: readonly string[];
+}
+
+/** One phase or part: how long it is and how much of it the figures stand on. */
+export interface AdequacyRow {
+  readonly phase: string;
+  readonly stretch: string;
+  readonly minutes: string;
+  readonly stomach: KeptPart;
+  readonly heart: KeptPart;
+  /** False for a meal: its minutes are drawn, no figure is made of them. */
+  readonly analysed: boolean;
+}
+
+export interface AdequacyTable {
+  readonly rows: readonly AdequacyRow[];
+  readonly notes: readonly Note[];
+}
+
+const WORDS: Readonly<Record<Adequacy, string>> = {
+  enough: 'enough',
+  limited: 'limited',
+  'not-reportable': 'not reportable',
+};
+
+/** The first table of the report: may the figures be read at all? */
+export function adequacyTable({ phases }: Findings): AdequacyTable {
+  const notes = createNotes();
+  return { rows: phases.map((phase) => rowOf(phase, notes)), notes: notes.list() };
+}
+
+function rowOf(phase: PhaseFindings, notes: Notes): AdequacyRow {
+  const lengthS = phase.toS - phase.fromS;
+  const analysed = !isMeal({ ...phase, name: phase.phase });
+  const kept = (keptS: number, adequacy: Adequacy): KeptPart => {
+    const reason = analysed ? adequacyReason(adequacy, keptS, lengthS) : '';
+    return {
+      minutes: (keptS / 60).toFixed(1),
+      percent: `${lengthS > 0 ? Math.floor((100 * keptS) / lengthS) : 0} %`,
+      words: WORDS[adequacy],
+      letters: reason === '' ? [] : [notes.letterOf(`${WORDS[adequacy]}: ${reason}`)],
+    };
+  };
+  return {
+    phase: phase.name,
+    stretch: `${formatClock(phase.fromS)}–${formatClock(phase.toS)}`,
+    minutes: (lengthS / 60).toFixed(1),
+    stomach: kept(phase.keptStomachS, phase.adequacyStomach),
+    heart: kept(phase.keptHeartS, phase.adequacyHeart),
+    analysed,
+  };
+}
