@@ -35,7 +35,7 @@ function otherSignals(a: ReviewInputs, b: ReviewInputs): boolean {
 export interface AnalysisRunner {
   readonly signals: SignalAccess;
   /** Shows a progress line for long work and lets it be stopped; the signal is for the call. */
-  watched<T>(work: (watch: Watch) => Promise<T>): Promise<T>;
+  watched<T>(step: string, work: (watch: Watch) => Promise<T>): Promise<T>;
   /** Computes again from the session as it stands, after the worker was started again or a study was opened. */
   refresh(): void;
   /** Forgets what was sent, before another study. */
@@ -63,18 +63,21 @@ export function createAnalysisRunner({
   let sent: ReviewInputs | null = null;
   let running: { readonly inputs: ReviewInputs; readonly abort: () => void } | null = null;
 
-  async function watched<T>(work: (watch: Watch) => Promise<T>): Promise<T> {
+  async function watched<T>(first: string, work: (watch: Watch) => Promise<T>): Promise<T> {
     const controller = new AbortController();
     const startMs = performance.now();
     const stop = () => controller.abort();
     const onProgress = (step: string, done: number) => {
+      clearTimeout(shown);
       if (performance.now() - startMs > SHOW_PROGRESS_AFTER_MS)
         analysis.setState({ progress: { step, done, stop } });
     };
+    const shown = setTimeout(() => onProgress(first, 0), SHOW_PROGRESS_AFTER_MS + 1);
     beginWork();
     try {
       return await work({ signal: controller.signal, onProgress });
     } finally {
+      clearTimeout(shown);
       analysis.setState({ progress: null });
       endWork();
     }
@@ -98,7 +101,7 @@ export function createAnalysisRunner({
   async function run(inputs: ReviewInputs): Promise<void> {
     const anew = !sent || otherSignals(sent, inputs);
     sent = inputs;
-    const reply = await watched((watch) => {
+    const reply = await watched('Computing the figures', (watch) => {
       const abort = new AbortController();
       const stop = () => abort.abort();
       watch.signal.addEventListener('abort', stop, { once: true });

@@ -39,6 +39,15 @@ interface Opening {
   readonly kept: Session | null;
 }
 
+/** Another file was chosen than the one a session waits for. */
+const otherFile = (fileName: string, code: string): Failure => ({
+  kind: 'wrong-input',
+  message: `${fileName} is not the file that session ${code} was made on. Nothing was opened or changed.`,
+  place: null,
+  remedy:
+    'Continue the session again and choose its own file; or open this file once more to begin a review of its own.',
+});
+
 /** A session as the identity dialog tells of it. */
 function keptRow({ state, log }: Session): KeptRow {
   const { quickKey, code, start, invented } = state.study;
@@ -58,7 +67,8 @@ export function createStudyController(parts: ControllerParts): StudyController &
   const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, shell });
   const keeping = createStudyKeeping({ keeper, hash, session, shell });
   const files = createStudyFiles({ session, analysis, shell, keeping });
-  const propose = (given: Given) => runner.watched((watch) => client.propose(given, watch));
+  const propose = (given: Given) =>
+    runner.watched('Reading the recording', (watch) => client.propose(given, watch));
   const edits = createStudyEdits({ session, shell, analysis, propose });
   let opening: Opening | null = null;
   let awaited: Session | null = null;
@@ -69,7 +79,9 @@ export function createStudyController(parts: ControllerParts): StudyController &
   };
 
   async function open(file: File, reading: TextReading | null): Promise<void> {
-    const reply = await runner.watched((watch) => client.open(file, file.name, reading, watch));
+    const reply = await runner.watched('Opening the file', (watch) =>
+      client.open(file, file.name, reading, watch),
+    );
     if (!reply.ok) {
       if (reply.failure.kind === 'needs-reading')
         shell.getState().openDialog({ kind: 'text-reading', file, failure: reply.failure });
@@ -77,6 +89,11 @@ export function createStudyController(parts: ControllerParts): StudyController &
       return;
     }
     const { recording, quickKey } = reply.value;
+    if (awaited && awaited.state.study.quickKey !== quickKey) {
+      fail(otherFile(file.name, awaited.state.study.code));
+      awaited = null;
+      return;
+    }
     const kept = await keptSession(quickKey);
     opening = { file, recording, quickKey, kept };
     shell.getState().openDialog({
@@ -114,7 +131,10 @@ export function createStudyController(parts: ControllerParts): StudyController &
     analysis.setState({ recording, fileAtHand: true });
     lookAtStudy(view, recording.durationS);
     lastStudy.remember(quickKey);
-    const first = await runner.watched((watch) => client.firstRoles(watch));
+    window.location.hash = '';
+    const first = await runner.watched('Looking for the leads', (watch) =>
+      client.firstRoles(watch),
+    );
     if (first.ok)
       analysis.setState((before) => ({
         firstRoles: first.value,
@@ -174,7 +194,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
   }
 
   async function openDemo() {
-    const reply = await runner.watched((watch) => client.demo(watch));
+    const reply = await runner.watched('Making the demo study', (watch) => client.demo(watch));
     if (reply.ok) await open(new File([reply.value], 'invented-demo.edf'), null);
     else fail(reply.failure);
   }
@@ -203,7 +223,9 @@ export function createStudyController(parts: ControllerParts): StudyController &
         return;
       }
       awaited = read;
-      if (session.getState().session?.state.study.quickKey === quickKey) {
+      const open = session.getState().session;
+      if (open?.state.study.quickKey !== quickKey) blank();
+      if (open?.state.study.quickKey === quickKey) {
         session.getState().begin(read);
         await keeping.begin(read);
       } else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });

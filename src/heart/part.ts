@@ -54,6 +54,14 @@ export function irregularMarks(heart: PartOfHeart): readonly string[] {
   return count > 0 ? [`${count} of ${judged.length} segments irregular, left out`] : [];
 }
 
+/** What to print beside a figure of NN intervals where too many intervals are none; empty where enough are. */
+export function sparseMarks(heart: PartOfHeart): readonly string[] {
+  const share = heart.allTime.nnCount / (heart.end - heart.first);
+  return share < heart.settings.minNnShare
+    ? [`only ${Math.round(100 * share)} % of the intervals are NN`]
+    : [];
+}
+
 /** Why no segment carries a figure, in words that count the segments by reason. */
 export function noSegmentReason(heart: PartOfHeart): FigureValue {
   const judged = judgedSegments(heart);

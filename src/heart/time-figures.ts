@@ -5,6 +5,7 @@ import {
   minutes,
   nothingRegular,
   type PartOfHeart,
+  sparseMarks,
 } from './part';
 import { rmssdFloorMs } from './timing-floor';
 import { triangularIndex } from './variability';
@@ -42,7 +43,7 @@ function triangular(heart: PartOfHeart): FigureValue {
 
 function spreadFigures(heart: PartOfHeart): Figures {
   const { regularTime: time } = heart;
-  const marks = irregularMarks(heart);
+  const marks = [...irregularMarks(heart), ...sparseMarks(heart)];
   const pairs = `${time.pairCount} pairs`;
   const count = (needed: number, there: number, what: string) =>
     `needs ${needed} ${what}; ${there} ${there === 1 ? 'is' : 'are'} left`;

@@ -33,3 +33,6 @@ export interface SeenInPassing {
   readonly toS: number;
   readonly text: string;
 }
+
+/** How the mark of a figure begins whose epochs are kept though a part of each is spoiled. */
+export const PARTLY_SPOILED = 'partly spoiled';

@@ -95,7 +95,7 @@ function PhaseHead({ phase, names, words, onPick, onGo }: PhaseHeadProps) {
           ))}
         </select>
       ) : (
-        phase.name
+        <span className="phase-name">{phase.name}</span>
       )}
       <button
         type="button"
@@ -150,7 +150,11 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
       {notes.length > 0 ? <NotesRow notes={notes} columns={right ? 4 : 2} /> : null}
       {definitions.map((definition, row) => (
         <tr key={definition.key}>
-          <RowHead definition={definition} marks={firstMarks(row)} />
+          <RowHead
+            definition={definition}
+            marks={firstMarks(row)}
+            onOpen={() => left && onFigure(definition.key, left.name)}
+          />
           {phases.map((phase, i) => (
             <FigureCell
               key={i === 0 ? 'left' : 'right'}
@@ -207,15 +211,18 @@ interface RowHeadProps {
   readonly definition: FigureDefinition;
   /** Marks that hold for the row in every phase and that no row above has said. */
   readonly marks: readonly string[];
+  readonly onOpen: () => void;
 }
 
-function RowHead({ definition, marks }: RowHeadProps) {
+function RowHead({ definition, marks, onOpen }: RowHeadProps) {
   const { label, unit } = definition;
   return (
     <th scope="row">
       <span className={`organ-square ${squareOf(definition)}`} aria-hidden="true" />
-      {label}
-      {unit ? <span className="unit"> {shortUnit(unit)}</span> : null}
+      <button type="button" className="figure-name" tabIndex={-1} onClick={onOpen}>
+        {label}
+        {unit ? <span className="unit"> {shortUnit(unit)}</span> : null}
+      </button>
       {marks.length > 0 ? <span className="figure-small">{marks.join('; ')}</span> : null}
     </th>
   );

@@ -1,5 +1,5 @@
 import { adequacyReason } from '../recording/adequacy';
-import type { FigureValue } from '../recording/figure';
+import { type FigureValue, PARTLY_SPOILED } from '../recording/figure';
 import type { Organ } from '../recording/figure-catalogue';
 import type { Findings, PhaseFindings } from '../recording/findings';
 import { formatClock } from '../units/time';
@@ -47,7 +47,7 @@ export function smallWords(
     if (
       line === basis ||
       line === reason ||
-      line.startsWith('filled in ') ||
+      line.startsWith(PARTLY_SPOILED) ||
       line.startsWith('limited: ')
     )
       return [];
@@ -62,7 +62,7 @@ export function sharedMarks(values: readonly (FigureValue | undefined)[]): reado
   const marks = values.map((value) => (value && value.kind !== 'withheld' ? value.marks : []));
   const [first = [], ...others] = marks;
   return first.filter(
-    (mark) => !mark.startsWith('filled in ') && others.every((some) => some.includes(mark)),
+    (mark) => !mark.startsWith(PARTLY_SPOILED) && others.every((some) => some.includes(mark)),
   );
 }
 

@@ -1,5 +1,11 @@
 import { mean, median, standardDeviation } from '../numeric/statistics';
-import { type Figures, type FigureValue, numberFigure, withheld } from '../recording/figure';
+import {
+  type Figures,
+  type FigureValue,
+  numberFigure,
+  PARTLY_SPOILED,
+  withheld,
+} from '../recording/figure';
 import type { Adequacy } from '../recording/findings';
 import type { Epoch, EpochFlag, Rhythm } from '../recording/rhythm';
 import type { Settings } from '../recording/settings';
@@ -63,12 +69,17 @@ export function instabilityPercent(values: ArrayLike<number>): number {
   return (100 * standardDeviation(values)) / mean(values);
 }
 
+const FLAG_WORDS: readonly (readonly [EpochFlag, string])[] = [
+  ['harmonic', 'larger harmonic'],
+  ['half', 'peak at half the crest rate'],
+  ['filled', PARTLY_SPOILED],
+];
+
 /** How many of the epochs carry each flag that acts, as marks. */
 function flagMarks(epochs: readonly Epoch[]): string[] {
-  const acting: readonly EpochFlag[] = ['harmonic', 'half', 'filled'];
-  return acting.flatMap((flag) => {
+  return FLAG_WORDS.flatMap(([flag, words]) => {
     const count = epochs.filter((epoch) => epoch.flags.includes(flag)).length;
-    return count > 0 ? [`${flag} in ${plural(count, 'epoch')}`] : [];
+    return count > 0 ? [`${words} in ${plural(count, 'epoch')}`] : [];
   });
 }
 
