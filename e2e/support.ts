@@ -115,6 +115,13 @@ export async function press(page: Page, key: string): Promise<void> {
   await settled(page);
 }
 
+/** Puts away all messages to the person, which lie over the panes. */
+export async function putMessagesAway(page: Page): Promise<void> {
+  await page.getByRole('button', { name: 'Put away' }).evaluateAll((buttons) => {
+    for (const button of buttons) if (button instanceof HTMLElement) button.click();
+  });
+}
+
 /** Goes to a time by the dialog; the middle of Seconds stands there. */
 export async function goTo(page: Page, time: string): Promise<void> {
   await page.keyboard.press('Control+g');
@@ -166,9 +173,10 @@ export async function keptHere(page: Page, edit: number): Promise<void> {
 
 /** The button of a figure in Findings, by its key in the catalogue (the keys are stable, the labels may be bettered). */
 export function figureButton(page: Page, key: string, phase = 'fasting'): Locator {
-  const label = FIGURES.find((one) => one.key === key)?.label;
-  if (label === undefined) throw new Error(`no figure ${key}`);
-  return findings(page).locator('button.figure', {
+  const definition = FIGURES.find((one) => one.key === key);
+  if (!definition) throw new Error(`no figure ${key}`);
+  const { label, organ } = definition;
+  return findings(page).locator(`.organ-${organ} button.figure`, {
     has: page.locator('.unseen', { hasText: `${label}, ${phase}: ` }),
   });
 }
