@@ -51,6 +51,10 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
     void keeper.append(open).then(told);
   }
 
+  document.addEventListener('visibilitychange', () => {
+    if (document.visibilityState === 'hidden') void keeper.snapshot();
+  });
+
   session.subscribe((now, before) => {
     const grown = now.session && now.session.log !== before.session?.log;
     if (grown && begun !== undefined && keyOf(now.session) === begun) keep(now.session);
