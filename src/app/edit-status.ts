@@ -1,7 +1,7 @@
 import { useEffect } from 'react';
 import type { LogLine, Session } from '../session/document';
 import type { AppParts } from './app-context';
-import { signatureState } from './signature-words';
+import { signatureLost } from './signature-words';
 
 const signs = ({ act }: LogLine): boolean =>
   act.kind === 'edit' && act.edit.changes.some(({ kind }) => kind === 'sign');
@@ -9,13 +9,6 @@ const signs = ({ act }: LogLine): boolean =>
 /** What the foot line says of a new line of the log: the edit by its name; '' for undo and redo, which say so themselves. */
 export function editStatus(line: LogLine): string {
   return line.act.kind === 'edit' && !signs(line) ? `Done: ${line.act.edit.name}` : '';
-}
-
-/** What a person must hear when an edit takes a signature out of force; null where it does not. */
-export function signatureLost(before: Session, now: Session): string | null {
-  const [was, is] = [signatureState(before), signatureState(now)];
-  if (was.words === '' || was.changed || !is.changed) return null;
-  return `The report is a draft again: ${is.words}.`;
 }
 
 /** True where one session is the other with more lines in its log. */

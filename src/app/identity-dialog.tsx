@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import type { FoundInFile, Recording } from '../recording/recording';
 import { formatClock } from '../units/time';
-import { useApp, useShell } from './app-context';
+import { useApp } from './app-context';
 import type { KeptRow } from './controller';
 import { Dialog } from './dialog';
 import { Field } from './fields';
@@ -16,7 +16,6 @@ type IdentityState = Extract<DialogState, { kind: 'identity' }>;
 export function IdentityDialog({ state }: { readonly state: IdentityState }) {
   const { controller } = useApp();
   const { recording, found, kept } = state;
-  const wanted = useShell((now) => now.wanted);
   const [code, setCode] = useState(() => offeredCode(recording.identity, kept?.code ?? null));
   const [tried, setTried] = useState(false);
   const fault = codeFault(code, recording.identity);
@@ -41,12 +40,6 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
         />
       }
     >
-      {wanted && wanted.quickKey !== state.quickKey ? (
-        <p className="failure-what">
-          This is not the file of session {wanted.code} but another study. Opening it leaves that
-          session as it is.
-        </p>
-      ) : null}
       <HeaderFacts recording={recording} />
       <Field
         label="Code the study is kept under"

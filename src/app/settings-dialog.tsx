@@ -12,7 +12,7 @@ import {
   settingActs,
   settingsDraft,
 } from './settings-draft';
-import { heartRouteWords, slowRouteWords, truncationWords } from './settings-words';
+import { heartRouteWords, nowWords, slowRouteWords, truncationWords } from './settings-words';
 
 const ROUTES = [
   ['band', 'band: a filter without delay'],
@@ -87,7 +87,7 @@ function InForce() {
       {now.length > 0 ? (
         <div className="small quiet">
           {now.map((note, i) => (
-            <p key={note}>{i === 0 ? `Now: ${note}` : note}</p>
+            <p key={note}>{i === 0 ? nowWords(note) : note}</p>
           ))}
         </div>
       ) : null}

@@ -8,6 +8,10 @@ function typedNumber(draft: SettingsDraft, key: SettingKey): number | null {
   return read?.ok ? read.value : null;
 }
 
+/** The first sentence of what is in force: "Slow wave by ..." as "Now: slow wave by ...". */
+export const nowWords = (note: string): string =>
+  `Now: ${note.charAt(0).toLowerCase()}${note.slice(1)}`;
+
 /** What the chosen route of the slow wave draws, and what its rhythm is computed on. */
 export function slowRouteWords({ slowRoute }: Pick<SettingsDraft, 'slowRoute'>): string {
   return slowRoute === 'band'

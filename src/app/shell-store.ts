@@ -37,17 +37,10 @@ export interface Message {
   readonly text: string;
 }
 
-/** The session whose file is asked for, until a study is open again. */
-export interface WantedStudy {
-  readonly code: string;
-  readonly quickKey: string;
-}
-
 export interface ShellState {
   readonly dialog: DialogState;
   /** The dialog below a reviewer's dialog; it comes back when that one closes. */
   readonly under: DialogState;
-  readonly wanted: WantedStudy | null;
   /** Oldest first: all problems that have not been put away, and the notes that are in sight. */
   readonly messages: readonly Message[];
   /** What the last act did, in the line at the foot; each one takes the place of the one before. */
@@ -113,25 +106,15 @@ export function createShellStore(storage: Storage | null): ShellStore {
       ...readPreferences(storage),
       dialog: NONE,
       under: NONE,
-      wanted: null,
       messages: [],
       status: '',
       openDialog: (dialog) =>
         set((before) => ({
           dialog,
-          wanted:
-            dialog.kind === 'choose-same-file'
-              ? { code: dialog.code, quickKey: dialog.quickKey }
-              : before.wanted,
           under:
             dialog.kind === 'reviewer' && before.dialog.kind !== 'reviewer' ? before.dialog : NONE,
         })),
-      closeDialog: () =>
-        set((before) => ({
-          dialog: before.under,
-          under: NONE,
-          wanted: before.dialog.kind === 'identity' ? null : before.wanted,
-        })),
+      closeDialog: () => set((before) => ({ dialog: before.under, under: NONE })),
       say: (text) => add('note', text),
       sayProblem: (text) => add('problem', text),
       tell: (status) => {

@@ -159,9 +159,7 @@ export function SameFileDialog({ code, page }: SameFileProps) {
         the log. A browser cannot keep the recording itself, so choose its file once more; the
         traces are drawn and the figures computed again from it.
       </p>
-      <p className="quiet">
-        If another file is chosen, the program says so, and this session stays as it is.
-      </p>
+      <p className="quiet">If another file is chosen, the program says so and opens nothing.</p>
     </Dialog>
   );
 }

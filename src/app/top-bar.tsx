@@ -71,10 +71,11 @@ function Kept() {
 
 function Signed() {
   const session = useSession((state) => state.session);
-  const { words, changed } = session ? signatureState(session) : { words: '', changed: false };
-  return words === '' ? null : (
-    <span className={changed ? 'signed tab' : 'signed'} title={words}>
-      {words}
+  const signature = session && signatureState(session);
+  if (!signature || signature.words === '') return null;
+  return (
+    <span className={signature.changed ? 'signed tab' : 'signed'} title={signature.whole}>
+      {signature.words}
     </span>
   );
 }

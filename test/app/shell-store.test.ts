@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { LIBRARIES } from '../../src/app/libraries';
-import { createShellStore, type DialogState, messagesInSight } from '../../src/app/shell-store';
+import { createShellStore, messagesInSight } from '../../src/app/shell-store';
 import { meaningsNow, readSign } from '../../src/app/sign-draft';
 import { hasUnfiledWork, keptWords, localWords } from '../../src/app/study-words';
 
@@ -107,20 +107,6 @@ describe('messages', () => {
     store.getState().sayProblem('storage is full');
     store.getState().sayProblem('storage is full');
     expect(store.getState().messages.length).toBe(1);
-  });
-});
-
-describe('the session whose file is asked for', () => {
-  it('is remembered until a study has been agreed to or left', () => {
-    const store = createShellStore(null);
-    const { openDialog, closeDialog } = store.getState();
-    openDialog({ kind: 'choose-same-file', code: 'EG-0815', quickKey: 'k' });
-    closeDialog();
-    expect(store.getState().wanted).toEqual({ code: 'EG-0815', quickKey: 'k' });
-    openDialog({ kind: 'identity', quickKey: 'other' } as DialogState);
-    expect(store.getState().wanted?.code).toBe('EG-0815');
-    closeDialog();
-    expect(store.getState().wanted).toBeNull();
   });
 });
 

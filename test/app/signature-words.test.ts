@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { editStatus, signatureLost } from '../../src/app/edit-status';
-import { signatureState } from '../../src/app/signature-words';
+import { editStatus } from '../../src/app/edit-status';
+import { signatureLost, signatureState } from '../../src/app/signature-words';
 import type { LogLine, Session, Signature } from '../../src/session/document';
 
 /** A session of which only log and signatures matter here: `edits` lines, signed at some of them. */
@@ -12,20 +12,21 @@ function sessionWith(edits: number, signed: readonly (readonly [Signature['meani
 
 describe('the signature in the bar', () => {
   it('is not spoken of before anybody has signed', () => {
-    expect(signatureState(sessionWith(4, []))).toEqual({ words: '', changed: false });
+    expect(signatureState(sessionWith(4, []))).toMatchObject({ words: '', changed: false });
   });
 
   it('says by whom the study was prepared, read or amended; signing itself is one more line of the log', () => {
     const words = (meaning: Signature['meaning']) =>
       signatureState(sessionWith(5, [[meaning, 4]])).words;
-    expect(words('prepared')).toMatch(/^prepared by A\. Technician/);
+    expect(words('prepared')).toBe('prepared by A. Technician');
     expect(words('read')).toBe('signed as read by A. Technician');
     expect(words('amended')).toBe('amended and signed by A. Technician');
   });
 
   it('says that the study was changed since', () => {
-    const { words, changed } = signatureState(sessionWith(6, [['read', 4]]));
-    expect(words).toMatch(/^changed since A\. Technician signed it/);
+    const { words, whole, changed } = signatureState(sessionWith(6, [['read', 4]]));
+    expect(words).toBe('changed since signed');
+    expect(whole).toMatch(/^changed since A\. Technician signed it/);
     expect(changed).toBe(true);
   });
 });
@@ -35,9 +36,17 @@ describe('an edit of a signed study', () => {
   const edited = sessionWith(6, [['read', 4]]);
 
   it('says once that the report is a draft again', () => {
-    expect(signatureLost(read, edited)).toMatch(/draft again: changed since A\. Technician/);
+    expect(signatureLost(read, edited)).toMatch(/draft again\. Changed since A\. Technician/);
     expect(signatureLost(edited, sessionWith(7, [['read', 4]]))).toBeNull();
     expect(signatureLost(sessionWith(1, []), sessionWith(2, []))).toBeNull();
+  });
+
+  it('says only that it was changed where it had not been read yet, and was a draft', () => {
+    const words = signatureLost(
+      sessionWith(5, [['prepared', 4]]),
+      sessionWith(6, [['prepared', 4]]),
+    );
+    expect(words).toMatch(/^Changed since A\. Technician prepared it/);
   });
 
   it('says nothing where the edit is a new signature', () => {
