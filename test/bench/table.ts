@@ -4,7 +4,7 @@ const HEAD = ['part', 'what', 'value', 'budget', 'note'] as const;
 
 function valueWords({ value, decimals, unit }: Measured): string {
   if (!Number.isFinite(value)) return '-';
-  const small = value !== 0 && Math.abs(value) < 0.5 * 10 ** -decimals;
+  const small = value !== 0 && Math.abs(value) < 0.001;
   return `${small ? value.toExponential(1) : value.toFixed(decimals)} ${unit}`.trim();
 }
 
