@@ -3,12 +3,9 @@ import type { LogLine, Session } from '../session/document';
 import type { AppParts } from './app-context';
 import { signatureLost } from './signature-words';
 
-const signs = ({ act }: LogLine): boolean =>
-  act.kind === 'edit' && act.edit.changes.some(({ kind }) => kind === 'sign');
-
 /** What the foot line says of a new line of the log: the edit by its name; '' for undo and redo, which say so themselves. */
 export function editStatus(line: LogLine): string {
-  return line.act.kind === 'edit' && !signs(line) ? `Done: ${line.act.edit.name}` : '';
+  return line.act.kind === 'edit' ? `Done: ${line.act.edit.name}` : '';
 }
 
 /** True where one session is the other with more lines in its log. */

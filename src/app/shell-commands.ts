@@ -217,10 +217,10 @@ export const PAGE_COMMANDS: readonly Command[] = [
     when: 'always',
     menu: 'help',
     run: ({ shell }) => {
-      const { theme, setTheme, say } = shell.getState();
+      const { theme, setTheme, tell } = shell.getState();
       const next = THEME_CHOICES[(THEME_CHOICES.indexOf(theme) + 1) % THEME_CHOICES.length];
       setTheme(next);
-      say(next === 'system' ? 'Theme as the system has it' : `Theme: ${next}`);
+      tell(next === 'system' ? 'Theme as the system has it' : `Theme: ${next}`);
     },
   },
   {
