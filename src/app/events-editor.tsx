@@ -41,25 +41,7 @@ export function EventsEditor({ draft, durationS, onChange }: EventsEditorProps) 
   return (
     <section aria-labelledby="events-title">
       <h3 id="events-title">Events</h3>
-      {events.length === 0 ? <p className="quiet">None noted.</p> : null}
-      <ul className="event-list">
-        {events.map((event) => (
-          <li key={event.id}>
-            <span>{timeText(event.atS)}</span>
-            <span>{event.text}</span>
-            <button
-              type="button"
-              className="button slight"
-              aria-label={`Remove event at ${timeText(event.atS)}`}
-              onClick={() =>
-                onChange({ ...draft, events: events.filter((other) => other.id !== event.id) })
-              }
-            >
-              Remove
-            </button>
-          </li>
-        ))}
-      </ul>
+      <EventList events={events} onChange={(left) => onChange({ ...draft, events: left })} />
       <fieldset className="event-new" aria-label="New event" onKeyDown={addOnEnter}>
         <Field
           label="at"
@@ -79,5 +61,32 @@ export function EventsEditor({ draft, durationS, onChange }: EventsEditorProps) 
         </button>
       </fieldset>
     </section>
+  );
+}
+
+interface EventListProps {
+  readonly events: readonly TimedNote[];
+  readonly onChange: (events: readonly TimedNote[]) => void;
+}
+
+function EventList({ events, onChange }: EventListProps) {
+  if (events.length === 0) return <p className="quiet">None noted.</p>;
+  return (
+    <ul className="event-list">
+      {events.map((event) => (
+        <li key={event.id}>
+          <span>{timeText(event.atS)}</span>
+          <span>{event.text}</span>
+          <button
+            type="button"
+            className="button slight"
+            aria-label={`Remove event at ${timeText(event.atS)}`}
+            onClick={() => onChange(events.filter((other) => other.id !== event.id))}
+          >
+            Remove
+          </button>
+        </li>
+      ))}
+    </ul>
   );
 }

@@ -42,11 +42,7 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
   const parts = useApp();
   const { durationS } = before.study;
   const [rows, setRows] = useState(() => rowsOf(before.phases));
-  const [noted, setNoted] = useState<EventsDraft>({
-    events: before.events,
-    typed: NO_EVENT,
-    tried: false,
-  });
+  const [noted, setNoted] = useState(() => eventsDraft(before.events));
   const [field, setTimeField] = useState<TimeField | null>(null);
   const [tried, setTried] = useState(false);
   const { phases, errors } = readPhases(rows, durationS);
@@ -90,6 +86,12 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
     </Dialog>
   );
 }
+
+const eventsDraft = (events: readonly TimedNote[]): EventsDraft => ({
+  events,
+  typed: NO_EVENT,
+  tried: false,
+});
 
 /** One undo step for the phases and one for the events, each only where it changed. */
 function saveAll(
