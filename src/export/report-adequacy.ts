@@ -19,7 +19,8 @@ export interface AdequacyRow {
   readonly stretch: string;
   readonly minutes: string;
   readonly stomach: KeptPart;
-  readonly heart: KeptPart;
+  /** Null where the study has no heart lead. */
+  readonly heart: KeptPart | null;
   /** False for a meal: its minutes are drawn, no figure is made of them. */
   readonly analysed: boolean;
 }
@@ -36,12 +37,12 @@ const WORDS: Readonly<Record<Adequacy, string>> = {
 };
 
 /** The first table of the report: may the figures be read at all? */
-export function adequacyTable({ phases }: Findings): AdequacyTable {
+export function adequacyTable({ phases }: Findings, heartLead: boolean): AdequacyTable {
   const notes = createNotes();
-  return { rows: phases.map((phase) => rowOf(phase, notes)), notes: notes.list() };
+  return { rows: phases.map((phase) => rowOf(phase, heartLead, notes)), notes: notes.list() };
 }
 
-function rowOf(phase: PhaseFindings, notes: Notes): AdequacyRow {
+function rowOf(phase: PhaseFindings, heartLead: boolean, notes: Notes): AdequacyRow {
   const lengthS = phase.toS - phase.fromS;
   const analysed = !isMeal({ ...phase, name: phase.phase });
   const kept = (keptS: number, adequacy: Adequacy): KeptPart => {
@@ -58,7 +59,7 @@ function rowOf(phase: PhaseFindings, notes: Notes): AdequacyRow {
     stretch: `${formatClock(phase.fromS)}–${formatClock(phase.toS)}`,
     minutes: (lengthS / 60).toFixed(1),
     stomach: kept(phase.keptStomachS, phase.adequacyStomach),
-    heart: kept(phase.keptHeartS, phase.adequacyHeart),
+    heart: heartLead ? kept(phase.keptHeartS, phase.adequacyHeart) : null,
     analysed,
   };
 }

@@ -23,6 +23,7 @@ export function studyFacts(
   const others = roles.slow
     .filter((_, place) => place !== roles.reported)
     .map((lead) => free(leadName(lead, channels)));
+  const derived = roles.heart ? 'no lead; derived from the heartbeat' : 'no lead';
   const sha256 = signed?.sha256 ?? study.sha256 ?? 'not computed yet';
   return [
     {
@@ -32,12 +33,7 @@ export function studyFacts(
     { name: 'Reported lead', words: `${reported}${why}` },
     ...(others.length > 0 ? [{ name: 'Other leads', words: others.join(', ') }] : []),
     { name: 'Heart lead', words: roles.heart ? free(leadName(roles.heart, channels)) : 'none' },
-    {
-      name: 'Breathing',
-      words: roles.breath
-        ? free(leadName(roles.breath, channels))
-        : 'no lead; derived from the heartbeat',
-    },
+    { name: 'Breathing', words: roles.breath ? free(leadName(roles.breath, channels)) : derived },
     { name: 'Program', words: program },
     ...(hide ? [] : [{ name: 'SHA-256', words: sha256 }]),
   ];

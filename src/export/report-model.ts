@@ -73,11 +73,11 @@ export function reportModel(input: ReportInput): ReportModel {
     foot: [
       identityHidden ? 'identity hidden' : state.study.code,
       ...(recording.invented ? ['invented data'] : []),
-      words,
+      words.replace(/^Draft/, 'DRAFT'),
     ].join(' · '),
     identityHidden,
     identity: identityFacts(recording, state, identityHidden),
-    adequacy: adequacyTable(findings),
+    adequacy: adequacyTable(findings, state.roles.heart !== null),
     warnings: warningsOf(recording, findings).map(hide),
     protocol: protocolFacts(state.protocol, hide),
     events: state.events.map(({ atS, text }) => ({ name: formatClock(atS), words: hide(text) })),

@@ -72,7 +72,13 @@ function Row({ row }: { readonly row: AdequacyRow }) {
   );
 }
 
-function Kept({ part, analysed }: { readonly part: KeptPart; readonly analysed: boolean }) {
+function Kept({ part, analysed }: { readonly part: KeptPart | null; readonly analysed: boolean }) {
+  if (!part)
+    return (
+      <td colSpan={3} className="report-left report-kept-from">
+        no heart lead
+      </td>
+    );
   return (
     <>
       <td>{part.minutes}</td>

@@ -98,7 +98,7 @@ function RhythmOverTime({
       )}
       <Picture
         picture={pictures.trend}
-        caption="Dominant power (DP), heart rate and breathing. Hatched: spoiled."
+        caption="The course over the study; DP: dominant power. Hatched: spoiled."
       />
     </Part>
   );

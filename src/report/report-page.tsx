@@ -50,11 +50,10 @@ function Sheet({
   );
 }
 
-/** On paper one mark repeats on every page, however many a sheet takes; on screen each sheet has its own. */
+/**
+ * DRAFT across the sheet, written by report.css since it says again what the status says. On paper one mark repeats on every
+ * page, however many a sheet takes; on screen each sheet has its own.
+ */
 function Watermark({ kind }: { readonly kind: 'on-paper' | 'on-screen' }) {
-  return (
-    <p className={`report-watermark ${kind}`} aria-hidden="true">
-      <span>DRAFT</span>
-    </p>
-  );
+  return <div className={`report-watermark ${kind}`} aria-hidden="true" />;
 }

@@ -57,7 +57,7 @@ describe('who the report is of', () => {
   it('is said with code, name and birth year, and that invented data is invented', () => {
     const { identity, foot } = model();
     expect(identity.map(({ name }) => name)).toEqual(['Code', 'Name', 'Born', 'Recorded', 'Data']);
-    expect(foot).toBe('INV-7 · invented data · Draft of edit 0: not signed');
+    expect(foot).toBe('INV-7 · invented data · DRAFT of edit 0: not signed');
   });
 
   it('is on no line of a report whose identity is hidden', () => {
@@ -140,6 +140,16 @@ describe('what the figures stand on', () => {
     expect(notes.map(({ text }) => text)).toEqual([
       'limited: 61 % kept',
       'not reportable: 5.0 min kept are too few',
+    ]);
+  });
+
+  it('a study without a heart lead has no minutes of the heart', () => {
+    const roles = { ...input.state.roles, heart: null };
+    const { adequacy, making } = model({ state: { roles } });
+    expect(adequacy.rows[0].heart).toBeNull();
+    expect([factOf(making, 'Heart lead'), factOf(making, 'Breathing')]).toEqual([
+      'none',
+      'no lead',
     ]);
   });
 

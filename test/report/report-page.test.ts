@@ -42,8 +42,9 @@ function page(signed: boolean): string {
 
 describe('the printed page', () => {
   it('a draft carries its mark on every sheet and once for paper; a signed one carries none', () => {
-    expect(page(false).match(/DRAFT/g)).toHaveLength(4);
-    expect(page(true)).not.toContain('DRAFT');
+    expect(page(false).match(/report-watermark on-screen/g)).toHaveLength(3);
+    expect(page(false).match(/report-watermark on-paper/g)).toHaveLength(1);
+    expect(page(true)).not.toContain('report-watermark');
     expect(page(true)).toContain('Final: signed 2026-03-01 10:00 UTC by A. Reader');
     expect(page(true)).toContain('Name, typed, not authenticated');
   });
