@@ -45,6 +45,7 @@ function spreadFigures(heart: PartOfHeart): Figures {
   const { regularTime: time } = heart;
   const marks = [...irregularMarks(heart), ...sparseMarks(heart)];
   const pairs = `${time.pairCount} pairs`;
+  const whole = `${time.nnCount} NN, ${minutes(time.nnSeconds)} min`;
   const count = (needed: number, there: number, what: string) =>
     `needs ${needed} ${what}; ${there} ${there === 1 ? 'is' : 'are'} left`;
   const twoNn = count(2, time.nnCount, 'NN');
@@ -53,16 +54,11 @@ function spreadFigures(heart: PartOfHeart): Figures {
   const sd2Lack = time.pairCount < 2 ? twoPairs : 'the pairs left do not stand for all NN';
   return {
     rmssd_ms: given(time.rmssdMs, pairs, marks, onePair),
-    sdnn_whole_ms: given(
-      time.sdnnMs,
-      `${time.nnCount} NN, ${minutes(time.nnSeconds)} min`,
-      marks,
-      twoNn,
-    ),
+    sdnn_whole_ms: given(time.sdnnMs, whole, marks, twoNn),
     sdsd_ms: given(time.sdsdMs, pairs, marks, twoPairs),
     pnn50_pct: percentOfPairs(heart, pairs, onePair),
     sd1_ms: given(time.sd1Ms, pairs, marks, twoPairs),
-    sd2_ms: given(time.sd2Ms, pairs, marks, sd2Lack),
+    sd2_ms: given(time.sd2Ms, whole, marks, sd2Lack),
     triangular_index: triangular(heart),
   };
 }

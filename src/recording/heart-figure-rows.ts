@@ -59,7 +59,9 @@ export const HEART_ROWS: readonly FigureRow[] = [
     settings: beats,
   }),
   figureRow('sd2_ms', 'SD2', 'ms', 1, {
-    definition: 'Spread along the identity line: √(2 SDNN² − SDSD² / 2).',
+    change: 'none',
+    definition:
+      'Spread along the identity line: √(2 SDNN² − SDSD² / 2), with SDNN of the whole phase; grows with length, so it carries its minutes and no change.',
     source: 'Brennan 2001, IEEE Trans Biomed Eng',
     settings: beats,
   }),
@@ -134,7 +136,8 @@ export const HEART_ROWS: readonly FigureRow[] = [
   figureRow('nn_share_pct', 'NN share', '%', 0, {
     main: true,
     change: 'none',
-    definition: 'NN intervals over all RR intervals of the phase.',
+    definition:
+      'NN intervals over all RR intervals of the phase. It tells how much there is to go by, so it is given also where over half of the phase is lost.',
     source: TASK_FORCE,
     settings: beats,
   }),

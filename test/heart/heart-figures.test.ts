@@ -66,6 +66,7 @@ describe('figures of a phase', () => {
     expect(number(thirty.figures.rmssd_ms).basis).toMatch(/^\d+ pairs$/);
     expect(number(thirty.figures.sdnn_ms).basis).toBe('6 of 6 segments');
     expect(number(thirty.figures.sdnn_whole_ms).basis).toMatch(/ NN, 30\.0 min$/);
+    expect(number(thirty.figures.sd2_ms).basis).toBe(number(thirty.figures.sdnn_whole_ms).basis);
     expect(number(thirty.figures.triangular_index).basis).toMatch(/ NN, 30\.0 min$/);
     expect(number(thirty.figures.heart_kept_min).value).toBe(30);
     expect(thirty.keptS).toBe(1800);
