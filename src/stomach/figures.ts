@@ -29,13 +29,7 @@ export interface StomachFiguresOptions {
 export interface StomachFigures {
   readonly figures: Figures;
   readonly keptS: Seconds;
-  /** Kept over all seconds of the phase, 0 to 1. */
-  readonly coverage: number;
   readonly adequacy: Adequacy;
-  /** Null where no epoch is kept. */
-  readonly meanSpectrum: MeanSpectrum | null;
-  /** Median power density at DF of the epochs with a rhythm, uV2/Hz; null where there is none. */
-  readonly medianDensity: number | null;
 }
 
 /** Kept epochs of a phase with their spectra. */
@@ -87,7 +81,10 @@ const NO_RHYTHM = 'no kept epoch has a rhythm';
 const TOO_FEW = 'fewer than two epochs have a rhythm';
 const NOTHING_KEPT = 'no epoch is kept';
 
-function frequencyFigures(epochs: readonly Epoch[], marks: readonly string[]): Figures {
+function frequencyFigures(
+  epochs: readonly Epoch[],
+  { marks, overHalfLost }: StomachCoverage,
+): Figures {
   const steady = epochs.filter(hasRhythm);
   const df = steady.flatMap(({ dfCpm }) => (dfCpm === null ? [] : [dfCpm]));
   const dp = steady.flatMap(({ dpDb }) => (dpDb === null ? [] : [densityOfDb(dpDb)]));
@@ -96,12 +93,14 @@ function frequencyFigures(epochs: readonly Epoch[], marks: readonly string[]): F
     df.length >= least
       ? numberFigure(value(), basis, [...marks, ...extra])
       : withheld(df.length === 0 ? NO_RHYTHM : TOO_FEW);
+  const instability = (values: readonly number[]) =>
+    overHalfLost === null ? from(2, () => instabilityPercent(values)) : withheld(overHalfLost);
   return {
     df_median_cpm: from(1, () => median(df), flagMarks(steady)),
     df_mean_cpm: from(1, () => mean(df)),
     df_sd_cpm: from(2, () => standardDeviation(df)),
-    df_instability_pct: from(2, () => instabilityPercent(df)),
-    dp_instability_pct: from(2, () => instabilityPercent(dp)),
+    df_instability_pct: instability(df),
+    dp_instability_pct: instability(dp),
     dp_median_epoch_db: from(1, () => densityDb(median(dp))),
   };
 }
@@ -124,7 +123,7 @@ function timeFigure(
 function spectrumFigures(
   spectrum: MeanSpectrum | null,
   settings: Settings,
-  marks: readonly string[],
+  { marks, overHalfLost }: StomachCoverage,
 ): Figures {
   if (!spectrum) {
     const none = withheld(NOTHING_KEPT);
@@ -139,10 +138,12 @@ function spectrumFigures(
   const basis = plural(spectrum.epochs, 'epoch');
   const { peak } = spectrum;
   const shares = bandShares(spectrum.density, spectrum.binCpm, settings.rhythmBands);
-  const share = (value: number) =>
-    Number.isFinite(value)
+  const share = (value: number) => {
+    if (overHalfLost !== null) return withheld(overHalfLost);
+    return Number.isFinite(value)
       ? numberFigure(100 * value, basis, marks)
       : withheld('no power in the search band');
+  };
   const peakless = withheld('the mean spectrum has no peak in the search band');
   return {
     dp_mean_spectrum_db: peak ? numberFigure(peak.dpDb, basis, marks) : peakless,
@@ -156,28 +157,25 @@ function spectrumFigures(
 /**
  * All stomach figures of a phase or a part of it, by key of the figure catalogue, over the kept
  * epochs that lie wholly inside. DF statistics are over epochs with a rhythm of one band; percent
- * of time over all kept epochs, as counts or withheld where coverage says so; power is averaged
- * before decibels are taken.
+ * of time over all kept epochs, as counts or withheld where coverage says so; no figure in percent
+ * where over half of the phase is lost; power is averaged before decibels are taken.
  */
 export function stomachFigures(options: StomachFiguresOptions): StomachFigures {
   const { analysis, phase, spoiled, settings } = options;
   const coverage = stomachCoverage(phase, [...spoiled, ...analysis.missing]);
   const { epochs, spectra } = keptEpochs(analysis, phase.fromS, phase.toS);
   const spectrum = meanSpectrum(spectra, analysis.binCpm, settings.rhythmBands);
-  const dp = epochs
-    .filter(hasRhythm)
-    .flatMap(({ dpDb }) => (dpDb === null ? [] : [densityOfDb(dpDb)]));
   const time = (rhythm: Rhythm) => timeFigure(epochs, rhythm, coverage);
   return {
     figures: {
-      ...frequencyFigures(epochs, coverage.marks),
+      ...frequencyFigures(epochs, coverage),
       time_normo_pct: time('normo'),
       time_brady_pct: time('brady'),
       time_tachy_pct: time('tachy'),
       time_none_pct: time('none'),
       time_mixed_pct: time('mixed'),
       time_undecided_pct: time('undecided'),
-      ...spectrumFigures(spectrum, settings, coverage.marks),
+      ...spectrumFigures(spectrum, settings, coverage),
       stomach_kept_min: numberFigure(
         coverage.keptS / 60,
         `of ${((phase.toS - phase.fromS) / 60).toFixed(1)} min`,
@@ -185,9 +183,6 @@ export function stomachFigures(options: StomachFiguresOptions): StomachFigures {
       ),
     },
     keptS: coverage.keptS,
-    coverage: coverage.coverage,
     adequacy: coverage.adequacy,
-    meanSpectrum: spectrum,
-    medianDensity: dp.length > 0 ? median(dp) : null,
   };
 }

@@ -10,7 +10,6 @@ import { densityDb } from '../../src/stomach/dominant-peak';
 import { instabilityPercent, stomachFigures } from '../../src/stomach/figures';
 import { meanSpectrum } from '../../src/stomach/mean-spectrum';
 import type { StomachAnalysis } from '../../src/stomach/slow-wave-rhythm';
-import { spectrumChange } from '../../src/stomach/spectrum-change';
 import { leadOf, noise, RATE_HZ, rhythmOfLead, wave } from './leads';
 
 const { arithmetic } = JSON.parse(
@@ -191,15 +190,9 @@ describe('the power ratio of two phases', () => {
   test('of 2.4 is 3.802 dB (CV-18), from mean spectra and from median epochs', () => {
     const fasting = figuresOf(times(20, 'normo'));
     const fed = figuresOf(Array(20).fill({ rhythm: 'normo', dfCpm: 3.5, density: 2.4 * 8e5 }));
-    const change = spectrumChange(fasting, fed);
-    expect(change.meanSpectra?.linear).toBeCloseTo(2.4, 9);
-    expect(change.meanSpectra?.db).toBeCloseTo(arithmetic.db_of_2_4, 9);
-    expect(change.medianEpochs?.db).toBeCloseTo(3.802, 3);
-  });
-
-  test('is not given where a phase has no rhythm or nothing kept', () => {
-    const change = spectrumChange(figuresOf(times(12, 'none')), figuresOf([]));
-    expect(change).toEqual({ meanSpectra: null, medianEpochs: null });
+    const change = (key: string) => numberOf(fed.figures[key]) - numberOf(fasting.figures[key]);
+    expect(change('dp_mean_spectrum_db')).toBeCloseTo(arithmetic.db_of_2_4, 9);
+    expect(change('dp_median_epoch_db')).toBeCloseTo(3.802, 3);
   });
 
   test('does not change when the whole study is twice as large (CV-62)', () => {
@@ -214,14 +207,16 @@ describe('the power ratio of two phases', () => {
         [0, 1200],
         [1200, 2400],
       ].map(([fromS, toS]) =>
-        stomachFigures({
-          analysis,
-          phase: { name: 'part', fromS, toS },
-          spoiled: [],
-          settings: DEFAULT_SETTINGS,
-        }),
+        numberOf(
+          stomachFigures({
+            analysis,
+            phase: { name: 'part', fromS, toS },
+            spoiled: [],
+            settings: DEFAULT_SETTINGS,
+          }).figures.dp_mean_spectrum_db,
+        ),
       );
-      return spectrumChange(before, after).meanSpectra?.db ?? Number.NaN;
+      return after - before;
     });
     expect(ratios[1]).toBeCloseTo(ratios[0], 9);
     expect(ratios[0]).toBeCloseTo(20 * Math.log10(130 / 80), 0);
@@ -239,6 +234,21 @@ describe('coverage', () => {
       marks: ['limited: 31 % of the phase is lost'],
     });
     expect(lost(918)).toMatchObject({ adequacy: 'not-reportable', percentages: 'withheld' });
+  });
+
+  test('over half lost: no figure in percent, whatever it is a percentage of', () => {
+    const inPercent = FIGURES.filter(({ organ, unit }) => organ === 'stomach' && /^%/.test(unit));
+    const { figures } = figuresOf(times(57, 'normo'), [{ fromS: 0, toS: 1860 }]);
+    for (const { key } of inPercent)
+      expect(figures[key], key).toEqual({
+        kind: 'withheld',
+        reason: '52 % of the phase is lost (over 50 %)',
+      });
+    expect(inPercent).toHaveLength(11);
+    expect(figures.df_median_cpm).toMatchObject({ kind: 'number' });
+    const half = figuresOf(times(57, 'normo'), [{ fromS: 0, toS: 1800 }]).figures;
+    expect(half.df_instability_pct.kind).toBe('number');
+    expect(half.share_normo_pct.kind).toBe('number');
   });
 
   test('counts overlapping spoiled stretches once', () => {
