@@ -13,7 +13,10 @@ interface DialogProps {
   readonly actions?: ReactNode;
 }
 
-/** A native modal dialog, shown as long as it is mounted: Escape closes it, focus goes back to where it was. */
+/**
+ * A native modal dialog, shown as long as it is mounted: Escape closes it, focus goes back to where it was. Browsers close a
+ * dialog that opened by itself without asking first, so its closing counts as Escape does.
+ */
 export function Dialog(props: DialogProps) {
   const { title, subtitle, size = 'medium', onClose, onSubmit, children, actions } = props;
   const ref = useModal();
@@ -42,6 +45,9 @@ export function Dialog(props: DialogProps) {
       onCancel={(event) => {
         event.preventDefault();
         onClose();
+      }}
+      onClose={(event) => {
+        if (ref.current === event.currentTarget && !event.currentTarget.open) onClose();
       }}
     >
       {onSubmit ? (
