@@ -16,7 +16,6 @@ export function ThirdSheet({ model }: { readonly model: ReportModel }) {
         <Facts facts={model.making} />
         <h3>Settings</h3>
         <Facts facts={model.settings} />
-        <h3>Spoiled spans</h3>
         <Spans rows={model.spans} />
       </Part>
       <Differences model={model} />
@@ -25,12 +24,12 @@ export function ThirdSheet({ model }: { readonly model: ReportModel }) {
 }
 
 function Spans({ rows }: { readonly rows: readonly SpanRow[] }) {
-  if (rows.length === 0) return <p>None.</p>;
+  if (rows.length === 0) return <p>No spoiled spans.</p>;
   return (
     <table className="report-table report-spans">
       <thead>
         <tr>
-          <th scope="col">by cause</th>
+          <th scope="col">Spoiled spans by cause</th>
           {rows.map(({ cause }) => (
             <th scope="col" key={cause}>
               {cause}
