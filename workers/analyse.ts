@@ -73,11 +73,9 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   const { job } = startJob(() => undefined);
   const pipeline = createPipeline();
   const file = await openAsBlob(path);
-  const opened = await pipeline.open(file, basename(path), {
-    rateHz: request.rateHz,
-    unit: request.unit,
-  });
-  pipeline.accept();
+  const reading = { rateHz: request.rateHz, unit: request.unit };
+  const opened = await pipeline.open(1, file, basename(path), reading, job);
+  pipeline.accept(opened.ticket);
   const sha256 = await sha256Of(path);
   const session = request.session
     ? await keptSession(request.session, sha256)

@@ -24,6 +24,8 @@ export interface Opened {
   readonly recording: Recording;
   /** Finds the session of this study at once. */
   readonly quickKey: string;
+  /** Accepts this very opening. */
+  readonly ticket: JobId;
 }
 
 /** What the program proposes for a study that nobody has reviewed yet. */
@@ -131,8 +133,8 @@ export interface AnalysisApi {
     fileName: string,
     reading: TextReading | null,
   ): Promise<Reply<Opened>>;
-  /** Takes the study opened last into use and lets go of the one before. */
-  accept(): void;
+  /** Takes the study that the call `ticket` opened into use and lets go of the one before; false where there is none. */
+  accept(ticket: JobId): boolean;
   /** Roles from labels, rates and short stretches, for the first picture; the reported lead is not compared yet. */
   firstRoles(job: JobId): Promise<Reply<Roles>>;
   /** Reads the signals once and proposes roles, phases, spans and beats; the parts given are taken as they are. */

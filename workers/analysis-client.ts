@@ -34,7 +34,8 @@ export interface AnalysisClient {
     reading: TextReading | null,
     options?: CallOptions,
   ): Promise<Reply<Opened>>;
-  accept(): Promise<void>;
+  /** Takes an opened study into use; false where the worker does not have it any more. */
+  accept(ticket: JobId): Promise<boolean>;
   firstRoles(options?: CallOptions): Promise<Reply<Roles>>;
   propose(given: Given, options?: CallOptions): Promise<Reply<Proposal>>;
   analyse(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<Analysis>>;
@@ -49,12 +50,16 @@ interface OpenCall {
   readonly onProgress: CallOptions['onProgress'];
 }
 
+type OpenArguments = readonly [Blob, string, TextReading | null];
+
 interface Line {
   readonly worker: Worker;
   readonly api: Comlink.Remote<AnalysisApi>;
   lastSignMs: number;
   /** False until the worker has said anything. */
   spoke: boolean;
+  /** Ends when a worker that was started again has the accepted study. */
+  ready: Promise<unknown>;
 }
 
 const CRASHED: Failure = {
@@ -78,23 +83,30 @@ const NEVER_STARTED: Failure = {
 
 /**
  * A client over workers made by `startWorker`. After a crash, or when a busy worker gives no sign of life, every open call
- * resolves to a `crashed` failure, a new worker starts and opens the accepted file again; `onRestart` tells the page.
+ * resolves to a `crashed` failure, a new worker starts and opens the accepted file again; `onRestart` tells the page, with
+ * the failure where the file could not be opened again. Calls made meanwhile wait for it.
  */
 export function createAnalysisClient(
   startWorker: () => Worker,
-  onRestart: () => void,
+  onRestart: (failure: Failure | null) => void,
 ): AnalysisClient {
   const open = new Map<JobId, OpenCall>();
   let nextJob: JobId = 1;
   let barren = 0;
   let line = connect();
-  let opening: readonly [Blob, string, TextReading | null] | null = null;
-  let accepted: readonly [Blob, string, TextReading | null] | null = null;
+  const openings = new Map<JobId, OpenArguments>();
+  let accepted: OpenArguments | null = null;
 
   function connect(): Line {
     const worker = startWorker();
     const api = Comlink.wrap<AnalysisApi>(worker);
-    const made: Line = { worker, api, lastSignMs: performance.now(), spoke: false };
+    const made: Line = {
+      worker,
+      api,
+      lastSignMs: performance.now(),
+      spoke: false,
+      ready: Promise.resolve(),
+    };
     worker.addEventListener('error', () => restart(made));
     worker.addEventListener('messageerror', () => restart(made));
     const hear = (news: WorkerNews) => {
@@ -117,11 +129,19 @@ export function createAnalysisClient(
       return;
     }
     line = connect();
-    const again = accepted
-      ? line.api.open(0, ...accepted).then(() => line.api.accept())
-      : Promise.resolve();
+    openings.clear();
+    const again = reopen(line);
+    line.ready = again;
     void again.then(onRestart);
     for (const call of calls) call.settle(CRASHED);
+  }
+
+  async function reopen({ api }: Line): Promise<Failure | null> {
+    if (!accepted) return null;
+    const reply = await api.open(0, ...accepted);
+    if (!reply.ok) return reply.failure;
+    await api.accept(reply.value.ticket);
+    return null;
   }
 
   const watch = setInterval(() => {
@@ -135,7 +155,7 @@ export function createAnalysisClient(
   ): Promise<Reply<T>> {
     const job = nextJob;
     nextJob += 1;
-    const { api } = line;
+    const { api, ready } = line;
     if (barren >= MOST_BARREN) return Promise.resolve({ ok: false, failure: NEVER_STARTED });
     return new Promise((resolve) => {
       const settle = (failure: Failure) => resolve({ ok: false, failure });
@@ -143,7 +163,8 @@ export function createAnalysisClient(
       const stop = () => void api.cancel(job);
       options.signal?.addEventListener('abort', stop, { once: true });
       if (options.signal?.aborted) stop();
-      send(api, job).then(
+      const sent = ready.then(() => send(api, job));
+      sent.then(
         (reply) => {
           open.delete(job);
           options.signal?.removeEventListener('abort', stop);
@@ -159,13 +180,17 @@ export function createAnalysisClient(
 
   return {
     demo: (options) => call((api, job) => api.demo(job), options),
-    open(file, fileName, reading, options) {
-      opening = [file, fileName, reading];
-      return call((api, job) => api.open(job, file, fileName, reading), options);
-    },
-    async accept() {
-      accepted = opening;
-      await line.api.accept();
+    open: (file, fileName, reading, options) =>
+      call((api, job) => {
+        openings.set(job, [file, fileName, reading]);
+        return api.open(job, file, fileName, reading);
+      }, options),
+    async accept(ticket) {
+      const asked = openings.get(ticket);
+      if (!asked || !(await line.api.accept(ticket))) return false;
+      accepted = asked;
+      openings.clear();
+      return true;
     },
     firstRoles: (options) => call((api, job) => api.firstRoles(job), options),
     propose: (given, options) => call((api, job) => api.propose(job, given), options),

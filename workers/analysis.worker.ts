@@ -63,8 +63,9 @@ const api: AnalysisApi = {
       const { demoStudyFile } = await import('./demo-study');
       return demoStudyFile();
     }),
-  open: (id, file, fileName, reading) => inJob(id, () => pipeline.open(file, fileName, reading)),
-  accept: () => pipeline.accept(),
+  open: (id, file, fileName, reading) =>
+    inJob(id, (job) => pipeline.open(id, file, fileName, reading, job)),
+  accept: (ticket) => pipeline.accept(ticket),
   firstRoles: (id) => inJob(id, () => pipeline.firstRoles()),
   propose: (id, given) => inJob(id, (job) => pipeline.propose(given, job)),
   analyse: (id, inputs) => inJob(id, (job) => pipeline.analyse(inputs, job)),

@@ -19,6 +19,7 @@ import type {
   Columns,
   ColumnsRequest,
   Given,
+  JobId,
   Opened,
   PlacedBeat,
   Proposal,
@@ -47,12 +48,20 @@ interface Study {
   qrs: readonly QrsMeasure[] | null;
   detection: { readonly key: string; readonly found: Detection } | null;
   heartLead: Lead | null;
+  /** Ends when the long work under way does. */
+  busy: Promise<void>;
 }
 
 /** The way of a recording through the steps, the same for page and command line. Methods throw Refusal. */
 export interface Pipeline {
-  open(file: Blob, fileName: string, reading: TextReading | null): Promise<Opened>;
-  accept(): void;
+  open(
+    ticket: JobId,
+    file: Blob,
+    fileName: string,
+    reading: TextReading | null,
+    job: Job,
+  ): Promise<Opened>;
+  accept(ticket: JobId): boolean;
   firstRoles(): Promise<Roles>;
   propose(given: Given, job: Job): Promise<Proposal>;
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
@@ -61,36 +70,54 @@ export interface Pipeline {
 }
 
 export function createPipeline(): Pipeline {
-  let opened: Study | null = null;
+  let opened: { readonly ticket: JobId; readonly study: Study } | null = null;
   let current: Study | null = null;
   const study = (): Study => {
     if (!current) throw new Error('no study is open in the worker');
     return current;
   };
   return {
-    async open(file, fileName, reading) {
+    async open(ticket, file, fileName, reading, job) {
       const source = await openRecording(file, fileName, reading);
       const key = await quickKey(file, fileName);
-      opened = {
+      await job.breathe();
+      const study: Study = {
         source,
         signals: new SignalStore(source),
         results: createResults(source.recording),
         qrs: null,
         detection: null,
         heartLead: null,
+        busy: Promise.resolve(),
       };
-      return { recording: source.recording, quickKey: key };
+      opened = { ticket, study };
+      return { recording: source.recording, quickKey: key, ticket };
     },
-    accept() {
-      if (opened) current = opened;
+    accept(ticket) {
+      if (opened?.ticket !== ticket) return false;
+      current = opened.study;
       opened = null;
+      return true;
     },
     firstRoles: () => firstRoles(study()),
-    propose: (given, job) => propose(study(), given, job),
-    analyse: (inputs, job) => analyse(study(), inputs, job),
+    propose: (given, job) => inLine(study(), job, (one) => propose(one, given, job)),
+    analyse: (inputs, job) => inLine(study(), job, (one) => analyse(one, inputs, job)),
     columns: (request) => columns(study(), request),
     placeBeat: (nearS) => placeNear(study(), nearS),
   };
+}
+
+/** Long work on one study is done one piece after the other, since each piece changes what the next one finds. */
+function inLine<T>(study: Study, job: Job, work: (study: Study) => Promise<T>): Promise<T> {
+  const done = study.busy.then(async () => {
+    await job.breathe();
+    return work(study);
+  });
+  study.busy = done.then(
+    () => undefined,
+    () => undefined,
+  );
+  return done;
 }
 
 async function firstRoles(study: Study): Promise<Roles> {

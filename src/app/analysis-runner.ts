@@ -38,7 +38,7 @@ export interface AnalysisRunner {
   watched<T>(step: string, work: (watch: Watch) => Promise<T>): Promise<T>;
   /** Computes again from the session as it stands, after the worker was started again or a study was opened. */
   refresh(): void;
-  /** Forgets what was sent, before another study. */
+  /** Forgets what was sent and stops all work, before another study. */
   reset(): void;
 }
 
@@ -61,10 +61,14 @@ export function createAnalysisRunner({
   shell,
 }: RunnerParts): AnalysisRunner {
   let sent: ReviewInputs | null = null;
+  /** Grows with every study, so that a late reply is not taken for this one's. */
+  let visit = 0;
+  const abortable = new Set<AbortController>();
   let running: { readonly inputs: ReviewInputs; readonly abort: () => void } | null = null;
 
   async function watched<T>(first: string, work: (watch: Watch) => Promise<T>): Promise<T> {
     const controller = new AbortController();
+    abortable.add(controller);
     const startMs = performance.now();
     const stop = () => controller.abort();
     const onProgress = (step: string, done: number) => {
@@ -78,7 +82,8 @@ export function createAnalysisRunner({
       return await work({ signal: controller.signal, onProgress });
     } finally {
       clearTimeout(shown);
-      analysis.setState({ progress: null });
+      abortable.delete(controller);
+      if (abortable.size === 0) analysis.setState({ progress: null });
       endWork();
     }
   }
@@ -100,6 +105,7 @@ export function createAnalysisRunner({
 
   async function run(inputs: ReviewInputs): Promise<void> {
     const anew = !sent || otherSignals(sent, inputs);
+    const started = visit;
     sent = inputs;
     const reply = await watched('Computing the figures', (watch) => {
       const abort = new AbortController();
@@ -109,12 +115,13 @@ export function createAnalysisRunner({
       return client.analyse(inputs, { ...watch, signal: abort.signal });
     });
     running = null;
-    if (sent !== inputs) return;
+    if (visit !== started) return follow();
     if (reply.ok) {
       takeAnalysis(analysis, reply.value);
       if (anew) analysis.setState((before) => ({ signalVersion: before.signalVersion + 1 }));
-    } else sent = null;
-    if (reply.ok) return movedOn(inputs) ? follow() : undefined;
+      return follow();
+    }
+    sent = null;
     if (reply.failure.kind === 'cancelled') {
       if (!movedOn(inputs))
         shell.getState().say('Stopped. The figures stay grey until they are computed again.');
@@ -141,7 +148,8 @@ export function createAnalysisRunner({
     },
     reset() {
       sent = null;
-      running?.abort();
+      visit += 1;
+      for (const controller of abortable) controller.abort();
     },
     signals: {
       async columns(request) {

@@ -41,16 +41,19 @@ export function IdentityDialog({ state }: { readonly state: IdentityState }) {
       }
     >
       <HeaderFacts recording={recording} />
-      <Field
-        label="Code the study is kept under"
-        value={code}
-        onChange={setCode}
-        required
-        autoFocus
-        hint="Sessions are listed and named by this code. Do not type a name."
-        error={tried ? fault : null}
-      />
-      {kept ? <p>{keptSessionWords(kept)}</p> : null}
+      {kept ? (
+        <p>{`Code ${kept.code}. ${keptSessionWords(kept)}`}</p>
+      ) : (
+        <Field
+          label="Code the study is kept under"
+          value={code}
+          onChange={setCode}
+          required
+          autoFocus
+          hint="Sessions are listed and named by this code. Do not type a name."
+          error={tried ? fault : null}
+        />
+      )}
       <Found found={found} />
     </Dialog>
   );

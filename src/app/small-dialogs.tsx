@@ -128,24 +128,24 @@ interface SameFileProps {
 
 /** A kept or opened session needs its recording once more. */
 export function SameFileDialog({ code, page }: SameFileProps) {
-  const { shell } = useApp();
-  const close = () => shell.getState().closeDialog();
+  const { shell, controller } = useApp();
+  const notNow = () => controller.cancelOpening();
   return (
     <Dialog
       title="Choose the same file to go on"
       subtitle={`Session ${code}`}
       size="small"
-      onClose={close}
+      onClose={notNow}
       actions={
         <>
-          <button type="button" className="button" onClick={close}>
+          <button type="button" className="button" onClick={notNow}>
             Not now
           </button>
           <button
             type="button"
             className="button strong"
             onClick={() => {
-              close();
+              shell.getState().closeDialog();
               page.chooseFile();
             }}
           >

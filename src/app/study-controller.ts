@@ -14,8 +14,9 @@ import { beginSession, redoableEdit, undoableEdit } from '../session/log';
 import type { SessionStore } from '../session/store';
 import { type AnalysisRunner, createAnalysisRunner } from './analysis-runner';
 import { withReviewer } from './app-context';
-import type { KeptRow, StudyController } from './controller';
+import type { StudyController } from './controller';
 import { lastStudy } from './last-study';
+import { keptRow, LOST_OPENING, otherFile, otherReading } from './opening-words';
 import type { ShellStore } from './shell-store';
 import { createStudyEdits } from './study-edits';
 import { createStudyFiles } from './study-files';
@@ -36,22 +37,8 @@ interface Opening {
   readonly file: File;
   readonly recording: Recording;
   readonly quickKey: string;
+  readonly ticket: number;
   readonly kept: Session | null;
-}
-
-/** Another file was chosen than the one a session waits for. */
-const otherFile = (fileName: string, code: string): Failure => ({
-  kind: 'wrong-input',
-  message: `${fileName} is not the file that session ${code} was made on. Nothing was opened or changed.`,
-  place: null,
-  remedy:
-    'Continue the session again and choose its own file; or open this file once more to begin a review of its own.',
-});
-
-/** A session as the identity dialog tells of it. */
-function keptRow({ state, log }: Session): KeptRow {
-  const { quickKey, code, start, invented } = state.study;
-  return { quickKey, code, start, invented, edits: log.length, lastUtc: log.at(-1)?.atUtc ?? null };
 }
 
 /** Leads a study from the file through worker and session to the stores that the page draws from. */
@@ -61,7 +48,12 @@ export function createStudyController(parts: ControllerParts): StudyController &
   const { session, analysis, view, shell, keeper } = parts;
   const client = createAnalysisClient(
     () => startModuleWorker(parts.analysisWorkerUrl),
-    () => runner.refresh(),
+    (failure) => {
+      runner.refresh();
+      if (!failure) return;
+      analysis.setState({ fileAtHand: false });
+      fail(failure);
+    },
   );
   const hash = createHashClient(() => startModuleWorker(parts.hashWorkerUrl));
   const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, shell });
@@ -69,33 +61,51 @@ export function createStudyController(parts: ControllerParts): StudyController &
   const files = createStudyFiles({ session, analysis, shell, keeping });
   const propose = (given: Given) =>
     runner.watched('Reading the recording', (watch) => client.propose(given, watch));
-  const edits = createStudyEdits({ session, shell, analysis, propose });
+  const edits = createStudyEdits({
+    session,
+    shell,
+    analysis,
+    propose,
+    refresh: () => runner.refresh(),
+    confirmed: () => keeping.confirmed(),
+  });
   let opening: Opening | null = null;
   let awaited: Session | null = null;
+  /** The attempt to open made last; an earlier one that ends later is let go. */
+  let attempt = 0;
 
-  const fail = (failure: Failure): void => {
-    if (failure.kind === 'cancelled') shell.getState().say('Stopped. What was open is as it was.');
+  const fail = (failure: Failure, stopped = 'Stopped. What was open is as it was.'): void => {
+    if (failure.kind === 'cancelled') shell.getState().say(stopped);
     else shell.getState().openDialog({ kind: 'failure', failure });
   };
 
   async function open(file: File, reading: TextReading | null): Promise<void> {
+    attempt += 1;
+    const own = attempt;
     const reply = await runner.watched('Opening the file', (watch) =>
       client.open(file, file.name, reading, watch),
     );
+    if (own !== attempt) return;
     if (!reply.ok) {
       if (reply.failure.kind === 'needs-reading')
         shell.getState().openDialog({ kind: 'text-reading', file, failure: reply.failure });
       else fail(reply.failure);
       return;
     }
-    const { recording, quickKey } = reply.value;
+    const { recording, quickKey, ticket } = reply.value;
     if (awaited && awaited.state.study.quickKey !== quickKey) {
       fail(otherFile(file.name, awaited.state.study.code));
       awaited = null;
       return;
     }
     const kept = await keptSession(quickKey);
-    opening = { file, recording, quickKey, kept };
+    if (own !== attempt) return;
+    const fault = kept && otherReading(kept, recording);
+    if (fault) {
+      fail(fault);
+      return;
+    }
+    opening = { file, recording, quickKey, ticket, kept };
     shell.getState().openDialog({
       kind: 'identity',
       recording,
@@ -125,9 +135,14 @@ export function createStudyController(parts: ControllerParts): StudyController &
     blankAnalysis(analysis);
   }
 
-  async function begin({ file, recording, quickKey, kept }: Opening, code: string): Promise<void> {
+  async function begin(from: Opening, code: string): Promise<void> {
+    const { file, recording, quickKey, ticket, kept } = from;
     blank();
-    await client.accept();
+    if (!(await client.accept(ticket))) {
+      fail(LOST_OPENING);
+      return;
+    }
+    const here = () => analysis.getState().recording === recording;
     analysis.setState({ recording, fileAtHand: true });
     lookAtStudy(view, recording.durationS);
     lastStudy.remember(quickKey);
@@ -135,17 +150,21 @@ export function createStudyController(parts: ControllerParts): StudyController &
     const first = await runner.watched('Looking for the leads', (watch) =>
       client.firstRoles(watch),
     );
-    if (first.ok)
+    if (first.ok && here())
       analysis.setState((before) => ({
         firstRoles: first.value,
         signalVersion: before.signalVersion + 1,
       }));
     const begun = kept ?? (await newSession(recording, quickKey, code));
-    if (!begun || analysis.getState().recording !== recording) return;
+    if (!begun || !here()) return;
     awaited = null;
     session.getState().begin(begun);
     await keeping.begin(begun);
-    onceFigures(() => keeping.confirm(file));
+    const closeOther = (failure: Failure) => {
+      blank();
+      fail(failure);
+    };
+    onceFigures(() => keeping.confirm(file, closeOther));
   }
 
   /** Reading the whole file for its hash waits for the first figures, since both want the processor. */
@@ -166,15 +185,11 @@ export function createStudyController(parts: ControllerParts): StudyController &
     code: string,
   ): Promise<Session | null> {
     const settings = DEFAULT_SETTINGS;
-    const reply: Reply<Proposal> = await propose({
-      roles: null,
-      phases: null,
-      spans: null,
-      settings,
-    });
+    const reply = await propose({ roles: null, phases: null, spans: null, settings });
+    if (analysis.getState().recording !== recording) return null;
     if (!reply.ok) {
       blank();
-      fail(reply.failure);
+      fail(reply.failure, 'Stopped. No study is open.');
       return null;
     }
     analysis.setState({ reasons: reply.value.reasons });
@@ -242,6 +257,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       if (confirmed) await begin(confirmed, code);
     },
     cancelOpening() {
+      attempt += 1;
       opening = null;
       awaited = null;
       shell.getState().closeDialog();

@@ -20,6 +20,10 @@ interface FileParts {
   readonly keeping: StudyKeeping;
 }
 
+/** Said where results or a signature would stand for a file that is not known yet. */
+export const NOT_CONFIRMED =
+  'The file could not be read to its end for its SHA-256, so it is not sure which file these figures are of. Open the file again.';
+
 const IDENTIFYING =
   'A heartbeat trace can itself identify a person: keep the file as you keep the recording.';
 
@@ -48,13 +52,19 @@ export function createStudyFiles({ session, analysis, shell, keeping }: FilePart
         return;
       }
       const { state } = open;
-      const { sha256 } = state.study;
-      const input = { recording, state, sha256, program: PROGRAM, edit, stomach, heart, findings };
-      const saved = import('./results-zip').then(({ resultsZip }) => {
-        download(`${safeCode(state.study.code)}-results.zip`, resultsZip(input), 'application/zip');
+      const results = { recording, state, program: PROGRAM, edit, stomach, heart, findings };
+      const save = async () => {
+        if (!(await keeping.confirmed())) {
+          shell.getState().sayProblem(NOT_CONFIRMED);
+          return;
+        }
+        const { resultsZip } = await import('./results-zip');
+        const sha256 = session.getState().session?.state.study.sha256 ?? null;
+        const zip = resultsZip({ ...results, sha256 });
+        download(`${safeCode(state.study.code)}-results.zip`, zip, 'application/zip');
         shell.getState().say(IDENTIFYING);
-      });
-      void asWork(saved);
+      };
+      void asWork(save());
     },
   };
 

@@ -1,5 +1,5 @@
 import type { HashClient } from '../../workers/hash-client';
-import { Refusal } from '../recording/failure';
+import { type Failure, Refusal } from '../recording/failure';
 import { confirmStudy } from '../session/confirm-study';
 import type { Session } from '../session/document';
 import type { KeptReport } from '../session/keep-writes';
@@ -11,12 +11,15 @@ import type { ShellStore } from './shell-store';
 export interface StudyKeeping {
   /** Begins to keep a session that is not kept yet, or goes on with one that is. */
   begin(session: Session): Promise<void>;
-  /** Reads the whole file for its SHA-256 and confirms the session by it. */
-  confirm(file: Blob): void;
+  /**
+   * Reads the whole file for its SHA-256 and confirms the session by it. Where it belongs to another file, keeping ends and
+   * `otherFile` is told.
+   */
+  confirm(file: Blob, otherFile: (failure: Failure) => void): void;
+  /** Settles once the open study's SHA-256 is confirmed; false where it could not be. */
+  confirmed(): Promise<boolean>;
   /** Says that the session stands in a file now. */
   inFile(fileName: string): void;
-  /** True where edits stand in no downloaded file. */
-  readonly onlyHere: () => boolean;
   end(): void;
 }
 
@@ -31,9 +34,9 @@ const keyOf = (session: Session | null): string | undefined => session?.state.st
 
 export function createStudyKeeping({ keeper, hash, session, shell }: KeepingParts): StudyKeeping {
   let begun: string | undefined;
-  let fileEdit = 0;
   let saidWhy = '';
   let hashing: AbortController | null = null;
+  let confirming: Promise<boolean> = Promise.resolve(false);
   const current = () => session.getState();
 
   function told(report: KeptReport): void {
@@ -64,41 +67,39 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
     async begin(open) {
       const where = current();
       begun = keyOf(open);
-      fileEdit = 0;
       where.setKept({ kind: 'saving', edit: editNumber(open) });
       told(await keeper.begin(open));
     },
-    confirm(file) {
+    confirm(file, otherFile) {
       hashing?.abort();
       hashing = new AbortController();
-      void hash.hash(file, { signal: hashing.signal }).then((reply) => {
+      confirming = hash.hash(file, { signal: hashing.signal }).then((reply) => {
         const open = current().session;
-        if (!reply.ok || !open || keyOf(open) !== begun) return;
+        if (!reply.ok || !open || keyOf(open) !== begun) return false;
         try {
-          const confirmed = confirmStudy(open, reply.value);
-          if (confirmed === open) return;
-          session.setState({ session: confirmed });
-          void keeper.begin(confirmed).then(told);
+          const known = confirmStudy(open, reply.value);
+          if (known !== open) {
+            session.setState({ session: known });
+            void keeper.begin(known).then(told);
+          }
+          return true;
         } catch (error) {
           if (!(error instanceof Refusal)) throw error;
-          shell.getState().openDialog({ kind: 'failure', failure: error.failure });
+          otherFile(error.failure);
+          return false;
         }
       });
     },
+    confirmed: () => confirming,
     inFile(fileName) {
       const open = current().session;
       if (!open) return;
-      fileEdit = editNumber(open);
-      current().setKept({ kind: 'file', edit: fileEdit, fileName });
-    },
-    onlyHere: () => {
-      const open = current().session;
-      return open !== null && editNumber(open) > fileEdit;
+      current().setKept({ kind: 'file', edit: editNumber(open), fileName });
     },
     end() {
       hashing?.abort();
       begun = undefined;
-      fileEdit = 0;
+      confirming = Promise.resolve(false);
       keeper.close();
     },
   };

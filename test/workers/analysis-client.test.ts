@@ -1,7 +1,7 @@
 import * as Comlink from 'comlink';
 import { afterEach, describe, expect, it } from 'vitest';
-import { Refusal } from '../../src/recording/failure';
-import type { AnalysisApi, WorkerNews } from '../../workers/analysis-api';
+import type { Failure } from '../../src/recording/failure';
+import type { AnalysisApi, Opened, WorkerNews } from '../../workers/analysis-api';
 import { type AnalysisClient, createAnalysisClient } from '../../workers/analysis-client';
 
 /** A worker over a message channel in this process, as far as the client sees one. */
@@ -25,6 +25,8 @@ class ChannelWorker extends EventTarget {
     this.near.close();
   }
 }
+
+const BROKEN: Failure = { kind: 'broken-format', message: 'no', place: null, remedy: '' };
 
 interface Seen {
   readonly opened: string[];
@@ -50,16 +52,14 @@ function serve(speaks: boolean) {
         seen.tell = ear;
         if (speaks) ear({ kind: 'alive' });
       },
-      open: async (_job, _file, fileName) => {
+      open: async (ticket, _file, fileName) => {
         seen.opened.push(fileName);
-        return {
-          ok: false,
-          failure: new Refusal({ kind: 'broken-format', message: 'no', place: null, remedy: '' })
-            .failure,
-        };
+        if (fileName === 'broken.edf') return { ok: false, failure: BROKEN };
+        return { ok: true, value: { ticket } as Opened };
       },
       accept: () => {
         seen.accepted += 1;
+        return true;
       },
       demo: () =>
         new Promise((resolve) => {
@@ -90,15 +90,14 @@ const until = async (true_: () => boolean) => {
 describe('the page’s side of the worker', () => {
   it('a refusal comes back as a reply, not as an error', async () => {
     const { client } = serve(true);
-    const reply = await client.open(new Blob(), 'a.edf', null);
+    const reply = await client.open(new Blob(), 'broken.edf', null);
     expect(reply).toMatchObject({ ok: false, failure: { kind: 'broken-format' } });
   });
 
   it('a crash answers every open call, and the accepted file is opened again', async () => {
     const { client, seen, crash, restarts, workers } = serve(true);
-    await client.open(new Blob(), 'a.edf', null);
-    await client.accept();
-    await until(() => seen.accepted === 1);
+    const opened = await client.open(new Blob(), 'a.edf', null);
+    expect(opened.ok && (await client.accept(opened.value.ticket))).toBe(true);
     const call = client.demo();
     await until(() => seen.end !== null);
     crash();
@@ -107,6 +106,26 @@ describe('the page’s side of the worker', () => {
     expect(seen.opened).toEqual(['a.edf', 'a.edf']);
     expect(seen.accepted).toBe(2);
     expect(workers).toHaveLength(2);
+  });
+
+  it('of two files opened quickly, the one agreed to is the one in use, also after a crash', async () => {
+    const { client, seen, crash, restarts } = serve(true);
+    const [a] = await Promise.all([
+      client.open(new Blob(), 'a.edf', null),
+      client.open(new Blob(), 'b.edf', null),
+    ]);
+    expect(a.ok && (await client.accept(a.value.ticket))).toBe(true);
+    crash();
+    await until(() => restarts() === 1);
+    expect(seen.opened.at(-1)).toBe('a.edf');
+  });
+
+  it('a study opened before a crash and not agreed to is not taken for another', async () => {
+    const { client, crash, restarts } = serve(true);
+    const opened = await client.open(new Blob(), 'a.edf', null);
+    crash();
+    await until(() => restarts() === 1);
+    expect(opened.ok && (await client.accept(opened.value.ticket))).toBe(false);
   });
 
   it('stopping goes by the job’s number; progress reaches the one who asked', async () => {

@@ -51,8 +51,10 @@ describe('the way of a real recording through the steps', () => {
     pipeline = createPipeline();
     job = startJob(() => undefined).job;
     const path = new URL('record208-abdomen.edf', FIXTURE);
-    await pipeline.open(await openAsBlob(path), 'record208-abdomen.edf', null);
-    pipeline.accept();
+    const file = await openAsBlob(path);
+    const { ticket } = await pipeline.open(1, file, 'record208-abdomen.edf', null, job);
+    expect(pipeline.accept(ticket + 1)).toBe(false);
+    expect(pipeline.accept(ticket)).toBe(true);
     proposal = await pipeline.propose(
       { roles: null, phases: null, spans: null, settings: DEFAULT_SETTINGS },
       job,
