@@ -1,8 +1,8 @@
-import type { Given, Proposal, TextReading } from '../../workers/analysis-api';
+import type { Given, TextReading } from '../../workers/analysis-api';
 import { createAnalysisClient } from '../../workers/analysis-client';
 import { createHashClient } from '../../workers/hash-client';
 import { startModuleWorker } from '../../workers/start-worker';
-import { type Failure, Refusal, type Reply } from '../recording/failure';
+import { type Failure, Refusal } from '../recording/failure';
 import type { Recording } from '../recording/recording';
 import { DEFAULT_SETTINGS } from '../recording/settings';
 import { type AnalysisStore, blankAnalysis, type SignalAccess } from '../review/analysis-store';
@@ -239,7 +239,6 @@ export function createStudyController(parts: ControllerParts): StudyController &
       }
       awaited = read;
       const open = session.getState().session;
-      if (open?.state.study.quickKey !== quickKey) blank();
       if (open?.state.study.quickKey === quickKey) {
         session.getState().begin(read);
         await keeping.begin(read);

@@ -1,6 +1,7 @@
 import { truncationBound } from '../numeric/grunwald-letnikov';
 import type { Kernel } from '../numeric/kernel';
 import { blockSizeFor, type KernelSpectrum, kernelSpectrum } from '../numeric/kernel-spectrum';
+import { nanRuns } from '../numeric/nan-runs';
 import { createOverlapSave } from '../numeric/overlap-save';
 import type { HeartOutput } from '../recording/separated';
 import type { Settings } from '../recording/settings';
@@ -16,7 +17,7 @@ import {
 import { type LeadFacts, maskGaps } from './gaps';
 import type { Route, RouteJob, RouteRun, SeparatedSlow } from './route';
 import { createSlowSampler, slowRateHz, slowSamplerReachS } from './slow-rate';
-import { gapsOf, uncleanStretches } from './unclean';
+import { uncleanStretches } from './unclean';
 import { withoutHoles } from './without-holes';
 
 /** What the two outputs need of the settings at one rate, with the spectrum for one overlap-save pass. */
@@ -76,7 +77,7 @@ function describe(settings: Settings, kernels: FractionalKernels): string[] {
   const bound = order > 0 ? truncationBound(order, memoryS) * kernels.slowScale : 0;
   const leadS = kernels.slowResponse(SLOW_SCALE_HZ).leadS;
   return [
-    `Slow wave by a derivative of order ${order} over ${memoryS} s, then Savitzky-Golay smoothing of ${kernels.slowWindow} samples (polynomial ${polynomialOrder}); scaled to uV at 3 cpm, where it leads by ${leadS.toFixed(2)} s.`,
+    `Slow wave by a derivative of order ${order} over ${memoryS} s, then Savitzky-Golay smoothing of ${kernels.slowWindow} samples (polynomial ${polynomialOrder}); scaled to µV at 3 cpm, where it runs ahead by ${leadS.toFixed(2)} s.`,
     `What lies more than ${memoryS} s back can change it by at most ${(100 * bound).toFixed(1)} % of the lead's largest distance from its mean (truncation bound; far less for a wave).`,
   ];
 }
@@ -87,7 +88,7 @@ function draw(slow: SeparatedSlow, settings: Settings, dfCpm: Cpm): SeparatedSlo
     return { ...slow, slowWave: slow.forSpectra, leadSAt: slow.derivativeLeadSAt };
   const shiftS = slow.derivativeLeadSAt(cpmToHz(dfCpm));
   const slowWave = delayed(withoutHoles(slow.forSpectra), shiftS, slow.rateHz);
-  maskGaps(slowWave, gapsOf(slow.forSpectra), 1);
+  maskGaps(slowWave, nanRuns(slow.forSpectra), 1);
   return { ...slow, slowWave, leadSAt: (hz) => slow.derivativeLeadSAt(hz) - shiftS };
 }
 
@@ -142,7 +143,7 @@ function heartOutput(
     decimation,
     unclean: uncleanStretches(facts.gaps, facts.sampleCount, job.rateHz, reach),
     notes: [
-      `Heartbeat by Savitzky-Golay smoothing of ${kernels.heartWindow} samples (polynomial ${polynomialOrder}), then a derivative of order ${order} over ${memoryS} s; scaled to uV at ${scaleHz} Hz.`,
+      `Heartbeat by Savitzky-Golay smoothing of ${kernels.heartWindow} samples (polynomial ${polynomialOrder}), then a derivative of order ${order} over ${memoryS} s; scaled to µV at ${scaleHz} Hz.`,
     ],
   };
 }
