@@ -1,7 +1,6 @@
 /** Remembers the last result of one step, and gives it again while its inputs are the same. */
 export interface Remembered<I, T> {
   readonly of: (inputs: I) => T;
-  readonly forget: () => void;
 }
 
 /** A step that is computed again only when `key` of its inputs differs from the last one's. */
@@ -15,9 +14,6 @@ export function remember<I, T>(
       const now = key(inputs);
       if (!last || last.key !== now) last = { key: now, result: compute(inputs) };
       return last.result;
-    },
-    forget() {
-      last = null;
     },
   };
 }

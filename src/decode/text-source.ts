@@ -1,3 +1,4 @@
+import { nanRuns } from '../numeric/nan-runs';
 import type { Channel } from '../recording/channel';
 import type { Gap, Recording, SignalSource } from '../recording/recording';
 import type { Hertz } from '../units/rate';
@@ -48,17 +49,6 @@ export function gapsOf(signals: readonly Float64Array[], rateHz: Hertz): readonl
     }
   });
   return gaps.sort((a, b) => a.fromS - b.fromS || (a.channel ?? -1) - (b.channel ?? -1));
-}
-
-function nanRuns(samples: Float64Array): { readonly from: number; readonly to: number }[] {
-  const runs: { from: number; to: number }[] = [];
-  for (let i = 0; i < samples.length; i += 1) {
-    if (!Number.isNaN(samples[i])) continue;
-    const last = runs.at(-1);
-    if (last && last.to === i) last.to = i + 1;
-    else runs.push({ from: i, to: i + 1 });
-  }
-  return runs;
 }
 
 /** A channel of a text file: no digitiser, no filters known. */

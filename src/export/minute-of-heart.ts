@@ -1,3 +1,4 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import type { RrSeries } from '../recording/heart-series';
 
 /** Figures of the NN intervals that end in one minute; null where there are none to make them of. */
@@ -15,7 +16,7 @@ export function minuteOfHeart(rr: RrSeries, fromS: number): MinuteOfHeart {
   let count = 0;
   let squares = 0;
   let pairs = 0;
-  for (let i = firstFrom(rr.timesS, fromS); i < rr.timesS.length; i += 1) {
+  for (let i = firstAtOrAfter(rr.timesS, fromS); i < rr.timesS.length; i += 1) {
     if (rr.timesS[i] >= fromS + 60) break;
     if (rr.nn[i] !== 1) continue;
     sum += rr.rrMs[i];
@@ -33,14 +34,3 @@ export function minuteOfHeart(rr: RrSeries, fromS: number): MinuteOfHeart {
 /** Whether interval i begins at the beat that ends the one before; times are compared to the microsecond. */
 const shareBeat = (rr: RrSeries, i: number): boolean =>
   Math.abs(rr.timesS[i] - rr.timesS[i - 1] - rr.rrMs[i] / 1000) < 1e-6;
-
-function firstFrom(timesS: Float64Array, fromS: number): number {
-  let low = 0;
-  let high = timesS.length;
-  while (low < high) {
-    const middle = (low + high) >>> 1;
-    if (timesS[middle] < fromS) low = middle + 1;
-    else high = middle;
-  }
-  return low;
-}

@@ -1,4 +1,5 @@
 import { removeLine } from '../numeric/detrend';
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import { medianAbsoluteDeviation, medianInPlace } from '../numeric/statistics';
 import { BEAT_CLASSES, type BeatList } from '../recording/beat';
 import type { BreathingSeries, RrSeries } from '../recording/heart-series';
@@ -12,7 +13,7 @@ import {
   breathingPeak,
   breathingSpectrum,
 } from './breathing-peak';
-import { beatTimes, firstAtOrAfter } from './rr-series';
+import { beatTimes } from './rr-series';
 
 const RESAMPLED_RATE_HZ = 4;
 const SAMPLES = BREATHING_WINDOW_S * RESAMPLED_RATE_HZ;

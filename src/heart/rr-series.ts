@@ -1,3 +1,4 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import { BEAT_CLASSES, BEAT_ORIGINS, type BeatList } from '../recording/beat';
 import type { RrSeries } from '../recording/heart-series';
 import { type Interval, joinIntervals } from '../recording/span';
@@ -71,18 +72,6 @@ export function rhythmIntervals(
     (beats.classes[beat] === NORMAL || beats.classes[beat] === SUPRAVENTRICULAR) &&
     beats.origins[beat] !== PLACED;
   return inBlocked.map((isBlocked, i) => (isBlocked === 0 && tells(i) && tells(i + 1) ? 1 : 0));
-}
-
-/** Index of the first of ascending times that is at or after a time. */
-export function firstAtOrAfter(timesS: Float64Array, timeS: Seconds): number {
-  let low = 0;
-  let high = timesS.length;
-  while (low < high) {
-    const middle = (low + high) >>> 1;
-    if (timesS[middle] < timeS) low = middle + 1;
-    else high = middle;
-  }
-  return low;
 }
 
 /** Intervals [first, end) of a series that lie wholly in [fromS, toS): they begin at or after fromS and end before toS. */

@@ -1,10 +1,11 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import type { HeartSegment, RrSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import type { Settings } from '../recording/settings';
 import type { Seconds } from '../units/time';
 import type { Band } from './band-power';
 import { isIrregularStretch } from './irregularity';
-import { firstAtOrAfter, intervalsWithin } from './rr-series';
+import { intervalsWithin } from './rr-series';
 import { timeDomain } from './variability';
 import { lombBandPowers, welchBandPowers } from './variability-spectrum';
 

@@ -1,14 +1,4 @@
-/** The place of `value` in ascending sorted[0..count): how many are smaller. */
-function placeOf(sorted: Float64Array, count: number, value: number): number {
-  let low = 0;
-  let high = count;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if (sorted[middle] < value) low = middle + 1;
-    else high = middle;
-  }
-  return low;
-}
+import { firstAtOrAfter } from './first-at-or-after';
 
 function quantileOfSorted(sorted: Float64Array, count: number, q: number): number {
   if (count === 0) return Number.NaN;
@@ -53,14 +43,14 @@ function runEach(x: Float64Array, half: number, q: number): Float64Array {
   let count = 0;
   const insert = (value: number): void => {
     if (Number.isNaN(value)) return;
-    const place = placeOf(sorted, count, value);
+    const place = firstAtOrAfter(sorted, value, count);
     sorted.copyWithin(place + 1, place, count);
     sorted[place] = value;
     count += 1;
   };
   const remove = (value: number): void => {
     if (Number.isNaN(value)) return;
-    const place = placeOf(sorted, count, value);
+    const place = firstAtOrAfter(sorted, value, count);
     sorted.copyWithin(place, place + 1, count);
     count -= 1;
   };

@@ -1,3 +1,5 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
+
 /** Beat classes of ANSI/AAMI EC57: normal, supraventricular, ventricular, fusion, unknown or not usable. */
 export const BEAT_CLASSES = ['N', 'S', 'V', 'F', 'Q'] as const;
 export type BeatClass = (typeof BEAT_CLASSES)[number];
@@ -41,14 +43,7 @@ export function beatAt(beats: BeatList, index: number): Beat {
 
 /** Index of the first beat at or after a tick (the length where there is none). */
 export function firstBeatAt(beats: BeatList, tick: number): number {
-  let low = 0;
-  let high = beats.ticks.length;
-  while (low < high) {
-    const middle = (low + high) >>> 1;
-    if (beats.ticks[middle] < tick) low = middle + 1;
-    else high = middle;
-  }
-  return low;
+  return firstAtOrAfter(beats.ticks, tick);
 }
 
 /** Beats from rows in any order. Throws RangeError where two rows share a tick or a tick is no whole number. */

@@ -36,5 +36,3 @@ export const FIGURES: readonly FigureDefinition[] = [
   ...withOrgan('heart', HEART_ROWS),
   ...withOrgan('breathing', BREATHING_ROWS),
 ];
-
-export type FigureKey = string;

@@ -12,18 +12,6 @@ export interface PlotScale {
   readonly perUv: number;
 }
 
-/** First index whose value is at or above `wanted`, in an ascending array. */
-export function firstAtOrAfter(ascending: ArrayLike<number>, wanted: number): number {
-  let low = 0;
-  let high = ascending.length;
-  while (low < high) {
-    const middle = (low + high) >>> 1;
-    if (ascending[middle] < wanted) low = middle + 1;
-    else high = middle;
-  }
-  return low;
-}
-
 /**
  * Draws columns [from, to): one vertical line a column from its low to its high, stretched to meet the column before so that
  * the trace has no holes, and broken where values are NaN. Where low and high agree (samples) it is a plain line.

@@ -1,5 +1,5 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import type { Interval } from '../recording/span';
-import { firstAtOrAfter } from './column-path';
 import type { TimeWindow } from './view-store';
 
 /** Crests of the drawn slow wave in one whole minute of the recording. */

@@ -1,4 +1,5 @@
-import { firstAtOrAfter, type PathSink, type PlotScale, traceColumns } from './column-path';
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
+import { type PathSink, type PlotScale, traceColumns } from './column-path';
 
 /** A line of values against time; NaN breaks it. `apartS(i)` is the longest time to the point before that still joins. */
 export interface ValueLine {

@@ -1,7 +1,8 @@
 import type uPlot from 'uplot';
 import type { Columns } from '../../workers/analysis-api';
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import type { Interval } from '../recording/span';
-import { firstAtOrAfter, traceColumns } from './column-path';
+import { traceColumns } from './column-path';
 import { ColumnsFeed } from './columns-feed';
 import { crestsPerMinute } from './crest-counts';
 import { wholeStudyGain } from './fit';

@@ -1,6 +1,7 @@
 import { bandPassTaps, convolveSame, highPassTaps, lowPassTaps } from '../numeric/fir';
 import { cascadeKernels, centredKernel, type Kernel } from '../numeric/kernel';
 import { blockSizeFor } from '../numeric/kernel-spectrum';
+import { nanRuns } from '../numeric/nan-runs';
 import { createOverlapSave } from '../numeric/overlap-save';
 import type { HeartOutput } from '../recording/separated';
 import type { Settings } from '../recording/settings';
@@ -10,7 +11,7 @@ import { type LeadFacts, maskGaps } from './gaps';
 import { heartDecimation } from './heart-rate';
 import type { Route, RouteJob, SeparatedSlow } from './route';
 import { slowRateHz } from './slow-rate';
-import { gapsOf, uncleanStretches } from './unclean';
+import { uncleanStretches } from './unclean';
 import { withoutHoles } from './without-holes';
 
 /** Half the transition of an edge over the edge itself; the edge is the -6 dB point. */
@@ -88,7 +89,7 @@ function drawBand(
   settings: Settings,
 ): SeparatedSlow {
   const taps = slowBandTaps(rateHz, settings.slowBandCpm);
-  const gaps = gapsOf(recorded);
+  const gaps = nanRuns(recorded);
   const slowWave = convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
   maskGaps(slowWave, gaps, 1);
   const feltS = (FELT_SHARE * (taps.length - 1)) / 2 / rateHz;

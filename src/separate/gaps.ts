@@ -1,8 +1,7 @@
-/** Missing samples [from, to) of a lead, in its own samples. */
-export interface SampleGap {
-  readonly from: number;
-  readonly to: number;
-}
+import type { SampleRun } from '../numeric/nan-runs';
+
+/** Missing samples of a lead, in its own samples. */
+export type SampleGap = SampleRun;
 
 /** What was seen of a lead once its last sample has come. */
 export interface LeadFacts {

@@ -34,18 +34,3 @@ export function uncleanStretches(
     inside(endS - reach.beforeS, endS),
   ]);
 }
-
-/** The gaps of a signal that carries them as NaN. */
-export function gapsOf(signal: Float64Array): readonly SampleGap[] {
-  const gaps: SampleGap[] = [];
-  let from = -1;
-  for (let i = 0; i <= signal.length; i++) {
-    const missing = i < signal.length && Number.isNaN(signal[i]);
-    if (missing && from < 0) from = i;
-    if (!missing && from >= 0) {
-      gaps.push({ from, to: i });
-      from = -1;
-    }
-  }
-  return gaps;
-}

@@ -1,3 +1,4 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import { median } from '../numeric/statistics';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { RhythmBands } from '../recording/settings';
@@ -9,22 +10,10 @@ import type { SpectrumPeak } from './dominant-peak';
 const HALF_TOLERANCE = 0.07;
 const LEAST_CRESTS = 4;
 
-/** Place of the first of some ascending times that is at or after a time. */
-function firstFrom(timesS: Float64Array, fromS: Seconds): number {
-  let low = 0;
-  let high = timesS.length;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if (timesS[middle] < fromS) low = middle + 1;
-    else high = middle;
-  }
-  return low;
-}
-
 /** Crests per minute between the first and the last crest of [fromS, toS); null where there are under four. */
 export function crestRateCpm(crestsS: Float64Array, fromS: Seconds, toS: Seconds): Cpm | null {
-  const first = firstFrom(crestsS, fromS);
-  const last = firstFrom(crestsS, toS) - 1;
+  const first = firstAtOrAfter(crestsS, fromS);
+  const last = firstAtOrAfter(crestsS, toS) - 1;
   if (last - first + 1 < LEAST_CRESTS) return null;
   return (60 * (last - first)) / (crestsS[last] - crestsS[first]);
 }
@@ -41,8 +30,8 @@ export function breathingOf(
   toS: Seconds,
 ): Cpm | null {
   if (!breathing || breathing.from === 'none') return null;
-  const first = firstFrom(breathing.centresS, fromS);
-  const end = firstFrom(breathing.centresS, toS);
+  const first = firstAtOrAfter(breathing.centresS, fromS);
+  const end = firstAtOrAfter(breathing.centresS, toS);
   const rates = breathing.perMinute.subarray(first, end).filter(Number.isFinite);
   return rates.length > 0 && 2 * rates.length >= end - first ? median(rates) : null;
 }

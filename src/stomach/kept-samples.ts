@@ -1,3 +1,4 @@
+import { nanRuns } from '../numeric/nan-runs';
 import type { Interval } from '../recording/span';
 import type { Hertz } from '../units/rate';
 
@@ -19,15 +20,5 @@ export function keptSamples(
 
 /** Stretches of missing samples (NaN) in seconds. */
 export function missingStretches(signal: Float64Array, rateHz: Hertz): readonly Interval[] {
-  const stretches: Interval[] = [];
-  let from = -1;
-  for (let i = 0; i <= signal.length; i++) {
-    const missing = i < signal.length && Number.isNaN(signal[i]);
-    if (missing && from < 0) from = i;
-    if (!missing && from >= 0) {
-      stretches.push({ fromS: from / rateHz, toS: i / rateHz });
-      from = -1;
-    }
-  }
-  return stretches;
+  return nanRuns(signal).map(({ from, to }) => ({ fromS: from / rateHz, toS: to / rateHz }));
 }

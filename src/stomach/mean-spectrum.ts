@@ -9,7 +9,7 @@ export interface MeanSpectrum {
   readonly binCpm: number;
   readonly epochs: number;
   /** Null where the mean has no local maximum in the search band. */
-  readonly peak: { readonly dfCpm: Cpm; readonly density: number; readonly dpDb: number } | null;
+  readonly peak: { readonly dfCpm: Cpm; readonly dpDb: number } | null;
 }
 
 /** Mean of densities bin by bin, with its dominant peak; null of none. */
@@ -27,7 +27,7 @@ export function meanSpectrum(
     density,
     binCpm,
     epochs: densities.length,
-    peak: peak && { dfCpm: peak.cpm, density: peak.density, dpDb: densityDb(peak.density) },
+    peak: peak && { dfCpm: peak.cpm, dpDb: densityDb(peak.density) },
   };
 }
 

@@ -1,5 +1,5 @@
 import { describe, expect, it, vi } from 'vitest';
-import { firstAtOrAfter, traceColumns } from '../../src/review/column-path';
+import { traceColumns } from '../../src/review/column-path';
 import { type ColumnSpan, columnsServe, columnsWanted } from '../../src/review/column-windows';
 import { ColumnsFeed } from '../../src/review/columns-feed';
 import { isIdle } from '../../src/review/idle';
@@ -75,10 +75,6 @@ describe('the path of a trace', () => {
       'M2,97',
       'L2,97',
     ]);
-  });
-
-  it('finds the first time at or after a place', () => {
-    expect([0, 2, 2.5, 9].map((t) => firstAtOrAfter([1, 2, 3], t))).toEqual([0, 1, 2, 3]);
   });
 });
 
