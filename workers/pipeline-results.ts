@@ -2,29 +2,28 @@ import { beatHeights } from '../src/heart/beat-heights';
 import { breathingFromLead } from '../src/heart/breathing';
 import { breathingFromBeats } from '../src/heart/breathing-from-beats';
 import type { Detection } from '../src/heart/detect';
-import { heartFigures, withheldHeartFigures } from '../src/heart/heart-figures';
+import { heartFigures } from '../src/heart/heart-figures';
 import { rrSeries } from '../src/heart/rr-series';
 import { seenInPassing } from '../src/heart/seen-in-passing';
 import type { BeatList } from '../src/recording/beat';
 import type { SeenInPassing } from '../src/recording/figure';
-import type { PhaseFindings } from '../src/recording/findings';
 import type { BreathingSeries } from '../src/recording/heart-series';
-import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { leadChannels, leadKey } from '../src/recording/lead';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
 import type { Recording } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import { type Interval, joinIntervals, spansOf } from '../src/recording/span';
-import { filterWarnings } from '../src/separate/filter-warnings';
 import type { SeparatedSlow } from '../src/separate/route';
-import { stomachFigures } from '../src/stomach/figures';
 import { type StomachAnalysis, slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
 import { createStomachMemory } from '../src/stomach/stomach-memory';
+import { usualCpm } from '../src/stomach/usual-cpm';
 import { cpmToHz } from '../src/units/rate';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import type { Analysis, HeartResults, ReviewInputs, SeparationFacts } from './analysis-api';
-import { changesOf, movementFigure, type Part, partsOf, withholdOrgan } from './findings';
+import type { Part } from './findings';
 import type { Job } from './job';
+import { findingsOf } from './pipeline-findings';
 import { identity, lastEqual, type Remembered, remember } from './remember';
 import { sameBeats, sameBreathing } from './same-series';
 
@@ -120,10 +119,22 @@ export function createResults(recording: Recording): Results {
         await job.breathe();
         const spoiled = stomachSpoiled(recording, inputs, one.lead);
         stomach.push(stomachOf({ slow: one, spoiled, phases, settings, breathing }));
-        usual.set(one.lead, usualCpmOf(stomach[stomach.length - 1]));
+        usual.set(one.lead, usualCpm(stomach[stomach.length - 1].rhythm));
         job.progress('Reading the rhythm', stomach.length / slow.length);
       }
-      const findings = findingsOf(recording, inputs, phases, heart, stomach);
+      const findings = findingsOf({
+        recording,
+        inputs,
+        phases,
+        heart,
+        stomach,
+        spoiled: stomachSpoiled(
+          recording,
+          inputs,
+          leadKey(inputs.roles.slow[inputs.roles.reported]),
+        ),
+        breathing: fromLead,
+      });
       const rhythms = stomach.map(identity).join();
       return {
         edit: inputs.edit,
@@ -224,68 +235,12 @@ function stomachSpoiled(
   return joinIntervals([...spansOf(spans, key, 'stomach'), ...gaps]);
 }
 
-function usualCpmOf({ rhythm }: StomachAnalysis): number {
-  const dfs = rhythm.epochs.flatMap(({ dfCpm }) => (dfCpm === null ? [] : [dfCpm]));
-  return dfs.sort((a, b) => a - b).at(dfs.length >> 1) ?? 3;
-}
-
 /** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */
 function factsOf(slow: SeparatedSlow, analysis: StomachAnalysis): SeparationFacts {
   return {
     lead: slow.lead,
     unclean: slow.unclean,
     notes: slow.notes,
-    leadS: slow.leadSAt(cpmToHz(usualCpmOf(analysis))),
+    leadS: slow.leadSAt(cpmToHz(usualCpm(analysis.rhythm))),
   };
 }
-
-function findingsOf(
-  recording: Recording,
-  inputs: ReviewInputs,
-  phases: readonly Phase[],
-  heart: HeartSide | null,
-  stomach: readonly StomachAnalysis[],
-): Analysis['findings'] {
-  const { roles, settings, spans } = inputs;
-  const reported = roles.slow[roles.reported];
-  const spoiled = stomachSpoiled(recording, inputs, leadKey(reported));
-  const stomachFilters = filterWarnings(channelsOf(recording, reported));
-  const heartFilters = roles.heart ? filterWarnings(channelsOf(recording, roles.heart)) : null;
-  const onReported = spans.filter(({ lead }) => lead === null || lead === leadKey(reported));
-  const phaseFindings = partsOf(phases).map((part): PhaseFindings => {
-    const slow = stomachFigures({
-      analysis: stomach[roles.reported],
-      phase: part,
-      spoiled,
-      settings,
-    });
-    const beat = heart?.figuresOf(part);
-    const figures = {
-      ...slow.figures,
-      ...(beat?.figures ?? withheldHeartFigures('no heart lead is chosen')),
-      movement_pct: movementFigure(onReported, part),
-    };
-    const withStomach = withholdOrgan(figures, 'stomach', stomachFilters.withholdStomach);
-    return {
-      ...part,
-      keptStomachS: slow.keptS,
-      keptHeartS: beat?.keptS ?? 0,
-      adequacyStomach: slow.adequacy,
-      adequacyHeart: beat?.adequacy ?? 'not-reportable',
-      figures: withholdOrgan(withStomach, 'heart', heartFilters?.withholdHeart ?? null),
-    };
-  });
-  return {
-    edit: inputs.edit,
-    phases: phaseFindings,
-    changes: changesOf(phaseFindings),
-    seen: heart?.seen ?? [],
-    warnings: [
-      ...stomachFilters.warnings.filter(({ about }) => about !== 'heart'),
-      ...(heartFilters?.warnings ?? []).filter(({ about }) => about === 'heart'),
-    ],
-  };
-}
-
-const channelsOf = (recording: Recording, lead: Lead) =>
-  leadChannels(lead).map((index) => recording.channels[index]);

@@ -15,6 +15,7 @@ import { type StomachCoverage, stomachCoverage } from './coverage';
 import { densityOfDb } from './decibel';
 import { densityDb } from './dominant-peak';
 import { bandShares, type MeanSpectrum, meanSpectrum } from './mean-spectrum';
+import { hasRhythm } from './rhythm-class';
 import type { StomachAnalysis } from './slow-wave-rhythm';
 
 export interface StomachFiguresOptions {
@@ -53,10 +54,6 @@ function keptEpochs(analysis: StomachAnalysis, fromS: Seconds, toS: Seconds): Ke
   });
   return { epochs, spectra };
 }
-
-/** An epoch has a rhythm where DF is of one band: neither none, mixed nor undecided. */
-const hasRhythm = (epoch: Epoch) =>
-  epoch.rhythm === 'brady' || epoch.rhythm === 'normo' || epoch.rhythm === 'tachy';
 
 /** 100 SD / mean with n - 1, in percent. */
 export function instabilityPercent(values: ArrayLike<number>): number {

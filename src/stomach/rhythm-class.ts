@@ -1,3 +1,4 @@
+import type { Epoch } from '../recording/rhythm';
 import type { RhythmBands } from '../recording/settings';
 import type { Cpm } from '../units/rate';
 
@@ -7,3 +8,7 @@ export function rhythmOf(dfCpm: Cpm, bands: RhythmBands): 'brady' | 'normo' | 't
   if (dfCpm < bands.normoLowCpm) return 'brady';
   return dfCpm < bands.normoHighCpm ? 'normo' : 'tachy';
 }
+
+/** An epoch has a rhythm where DF is of one band: neither none, mixed nor undecided. */
+export const hasRhythm = ({ rhythm }: Pick<Epoch, 'rhythm'>): boolean =>
+  rhythm === 'brady' || rhythm === 'normo' || rhythm === 'tachy';
