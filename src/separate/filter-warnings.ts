@@ -59,20 +59,44 @@ function heartReason(lowPassHz: Hertz | null, rateHz: Hertz): string | null {
   return why && `no heartbeat can be read in this recording (${why})`;
 }
 
+const TILT_UNKNOWN = 'from 0.05 Hz on it would tilt the band of the slow wave';
+
+/** What cannot be told of a lead, because the file does not state it. */
+function unknownFilters(channels: readonly Channel[]): readonly StudyWarning[] {
+  const unknown = channels.filter(({ prefilter }) => prefilter.kind === 'unknown');
+  const noHighPass = channels.filter(
+    ({ prefilter }) => prefilter.kind === 'stated' && prefilter.highPassHz === null,
+  );
+  const filters = `${labels(unknown)}: the filters of the recording are unknown`;
+  const ofUnknown: readonly StudyWarning[] = [
+    {
+      about: 'stomach',
+      text: `${filters}, so also whether there is a high-pass; ${TILT_UNKNOWN}.`,
+    },
+    {
+      about: 'heart',
+      text: `${filters}, so also whether there is a low-pass; under ${LEAST_LOW_PASS_HZ} Hz it would leave no heartbeat to read.`,
+    },
+  ];
+  const ofNoHighPass: readonly StudyWarning[] = [
+    {
+      about: 'stomach',
+      text: `${labels(noHighPass)}: the file states no high-pass, so whether there is one is unknown; ${TILT_UNKNOWN}.`,
+    },
+  ];
+  return [...(unknown.length > 0 ? ofUnknown : []), ...(noHighPass.length > 0 ? ofNoHighPass : [])];
+}
+
 /**
  * What the filters and the rate of a lead's channels mean for its figures: a high-pass from 0.05 Hz
  * is warned of, from 0.3 Hz stomach figures are withheld; a low-pass under 5 Hz or a rate under
  * 50 Hz withholds heart figures; under 4 Hz an aliased heartbeat can look like a slow wave; where
- * the file does not say, that is said. Of a difference of two channels the stronger filter counts.
+ * the file does not state the filters, or no high-pass, that is said to be unknown for the organ it
+ * matters to. Of a difference of two channels the stronger filter counts.
  */
 export function filterWarnings(channels: readonly Channel[]): FilterWarnings {
   const warnings: StudyWarning[] = [];
-  const unknown = channels.filter(({ prefilter }) => prefilter.kind === 'unknown');
-  if (unknown.length > 0)
-    warnings.push({
-      about: 'study',
-      text: `${labels(unknown)}: the filters of the recording are unknown; a high-pass from 0.05 Hz on would tilt the band of the slow wave.`,
-    });
+  warnings.push(...unknownFilters(channels));
   const highPassHz = strongest(channels, 'highPassHz', Math.max);
   let withholdStomach: string | null = null;
   if (highPassHz !== null && highPassHz >= TILTING_HIGH_PASS_HZ)

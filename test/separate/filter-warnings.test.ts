@@ -69,8 +69,25 @@ describe('filters a file states', () => {
 
   test('unknown: it is said', () => {
     const found = filterWarnings([channel('unknown')]);
-    expect(found.warnings[0].text).toMatch(/EGG 1: the filters of the recording are unknown/);
+    expect(found.warnings.map(({ about }) => about)).toEqual(['stomach', 'heart']);
+    for (const { text } of found.warnings)
+      expect(text).toMatch(/EGG 1: the filters of the recording are unknown/);
     expect(found.withholdHeart).toBeNull();
+  });
+
+  test('a low-pass alone: that the high-pass is unknown is said of the stomach', () => {
+    const found = filterWarnings([channel({ lowPassHz: 35 })]);
+    expect(found.warnings).toHaveLength(1);
+    expect(found.warnings[0].about).toBe('stomach');
+    expect(found.warnings[0].text).toMatch(/EGG 1: the file states no high-pass.*unknown/);
+  });
+
+  test('of a difference the channel that states no high-pass is named, beside what the other states', () => {
+    const pair = [channel({ lowPassHz: 35 }), { ...channel({ highPassHz: 0.1 }), label: 'EGG 2' }];
+    expect(texts(pair)).toEqual([
+      expect.stringMatching(/^EGG 1: the file states no high-pass/),
+      expect.stringMatching(/^EGG 1 and EGG 2: the file states a high-pass of 0\.1 Hz/),
+    ]);
   });
 
   test('of a difference of two channels the stronger counts', () => {
