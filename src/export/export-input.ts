@@ -20,5 +20,7 @@ export interface ExportInput {
     readonly segments: readonly HeartSegment[];
     readonly breathing: BreathingSeries;
   } | null;
+  /** Of the breathing lead, with or without a heart lead; where it is not given, the heart's own stands. */
+  readonly breathing?: BreathingSeries | null;
   readonly findings: Findings;
 }

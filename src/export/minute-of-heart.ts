@@ -1,5 +1,6 @@
 import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import type { RrSeries } from '../recording/heart-series';
+import type { Interval } from '../recording/span';
 
 /** Figures of the NN intervals that end in one minute; null where there are none to make them of. */
 export interface MinuteOfHeart {
@@ -9,9 +10,15 @@ export interface MinuteOfHeart {
 
 /**
  * Heart rate (60000 / mean NN) and RMSSD (Task Force 1996) of the intervals that end in [fromS, fromS + 60). A pair counts
- * for RMSSD where both are NN, both end in the minute, and they share a beat.
+ * for RMSSD where both are NN, both end in the minute and outside the `irregular` stretches, and they share a beat.
  */
-export function minuteOfHeart(rr: RrSeries, fromS: number): MinuteOfHeart {
+export function minuteOfHeart(
+  rr: RrSeries,
+  fromS: number,
+  irregular: readonly Interval[],
+): MinuteOfHeart {
+  const near = irregular.filter((one) => one.fromS < fromS + 60 && one.toS > fromS);
+  const lies = (timeS: number) => near.some((one) => one.fromS <= timeS && timeS < one.toS);
   let sum = 0;
   let count = 0;
   let squares = 0;
@@ -22,6 +29,7 @@ export function minuteOfHeart(rr: RrSeries, fromS: number): MinuteOfHeart {
     sum += rr.rrMs[i];
     count += 1;
     if (i === 0 || rr.nn[i - 1] !== 1 || rr.timesS[i - 1] < fromS || !shareBeat(rr, i)) continue;
+    if (lies(rr.timesS[i]) || lies(rr.timesS[i - 1])) continue;
     squares += (rr.rrMs[i] - rr.rrMs[i - 1]) ** 2;
     pairs += 1;
   }

@@ -27,19 +27,22 @@ const HEADER = [
   'spoiled_fraction',
 ];
 
-type Input = Pick<ExportInput, 'recording' | 'state' | 'stomach' | 'heart'>;
+type Input = Pick<ExportInput, 'recording' | 'state' | 'stomach' | 'heart' | 'breathing'>;
 
 /**
  * minutes.csv: one row a minute and slow-wave lead, minute after minute; minute 0 begins with the recording and the last may
  * be cut short. Stomach: the epoch whose centre is nearest to the minute's start, at most half a minute away. Heart: the NN
- * intervals that end in the minute. Breathing: the window centred nearest to the minute's middle, at most half a minute away.
+ * intervals that end in the minute, for RMSSD only those outside irregular segments. Breathing: the window centred nearest to the minute's middle, at most half a minute away.
  * Spoiled: the share of the minute that spans for the stomach on the row's lead cover. Open doubts stay empty until they exist.
  */
 export function minutesCsv(input: Input): string {
   return csvText(HEADER, minuteRows(input));
 }
 
-function* minuteRows({ recording, state, stomach, heart }: Input): Generator<Cell[]> {
+function* minuteRows(input: Input): Generator<Cell[]> {
+  const { recording, state, stomach, heart } = input;
+  const series = input.breathing ?? heart?.breathing ?? null;
+  const irregular = (heart?.segments ?? []).filter((one) => one.state === 'irregular');
   const phases = phasesOrWhole(state.phases, recording.durationS);
   const rateHz = leadRate(state.roles.heart, recording);
   const leads = stomach.map(({ lead, epochs }) => ({
@@ -51,8 +54,8 @@ function* minuteRows({ recording, state, stomach, heart }: Input): Generator<Cel
     const fromS = minute * 60;
     const toS = Math.min(fromS + 60, recording.durationS);
     const phase = phases.find((one) => one.fromS <= fromS && fromS < one.toS)?.name ?? null;
-    const beats = heart && minuteOfHeart(heart.rr, fromS);
-    const breathing = heart && breathingNear(heart.breathing, fromS + 30);
+    const beats = heart && minuteOfHeart(heart.rr, fromS, irregular);
+    const breathing = series && breathingNear(series, fromS + 30);
     for (const { lead, epochs, spans } of leads) {
       const epoch = epochs.get(minute) ?? null;
       const spoiled = coveredSeconds(spans, fromS, toS) / (toS - fromS);

@@ -124,8 +124,8 @@ describe('minutes.csv', () => {
     expect(second).toMatchObject({ heart_rate_bpm: '', rmssd_ms: '', beats: '0', open_doubts: '' });
     const rr = input.heart?.rr;
     if (!rr) throw new Error('heart');
-    expect(minuteOfHeart(rr, 0).heartRateBpm).toBeCloseTo(73.998, 3);
-    expect(minuteOfHeart(rr, 0).rmssdMs).toBeCloseTo(42.485, 3);
+    expect(minuteOfHeart(rr, 0, []).heartRateBpm).toBeCloseTo(73.998, 3);
+    expect(minuteOfHeart(rr, 0, []).rmssdMs).toBeCloseTo(42.485, 3);
   });
   it('pairs no intervals across one that is not NN, was removed, or ends in another minute', () => {
     const rr = input.heart?.rr;
@@ -133,12 +133,37 @@ describe('minutes.csv', () => {
     // By hand: without 790 the pairs are 800-810, 860-800, 800-805: sqrt((100 + 3600 + 25) / 3).
     const expected = Math.sqrt(3725 / 3);
     const notNn = { ...rr, nn: Uint8Array.of(1, 1, 0, 1, 1, 1) };
-    expect(minuteOfHeart(notNn, 0).rmssdMs).toBeCloseTo(expected, 9);
+    expect(minuteOfHeart(notNn, 0, []).rmssdMs).toBeCloseTo(expected, 9);
     const without = (column: Float64Array) => column.filter((_, i) => i !== 2);
     const removed = { timesS: without(rr.timesS), rrMs: without(rr.rrMs), nn: rr.nn.slice(1) };
-    expect(minuteOfHeart(removed, 0).rmssdMs).toBeCloseTo(expected, 9);
+    expect(minuteOfHeart(removed, 0, []).rmssdMs).toBeCloseTo(expected, 9);
     // A minute that begins at 12.3 s holds the intervals 790 ending at 12.4 and all after it.
-    expect(minuteOfHeart(rr, 12.3).rmssdMs).toBeCloseTo(Math.sqrt((4900 + 3600 + 25) / 3), 9);
+    expect(minuteOfHeart(rr, 12.3, []).rmssdMs).toBeCloseTo(Math.sqrt((4900 + 3600 + 25) / 3), 9);
+  });
+  it('has no RMSSD where the minute lies in a segment whose rhythm is irregular, but its heart rate', () => {
+    const heart = input.heart;
+    if (!heart) throw new Error('heart');
+    const segment = (state: 'irregular' | 'used', fromS: number, toS: number) => ({
+      phase: 'fasting',
+      fromS,
+      toS,
+      nnShare: 1,
+      state,
+      sdnnMs: null,
+      lfMs2: null,
+      hfMs2: null,
+    });
+    const minute = (...segments: ReturnType<typeof segment>[]) =>
+      table('minutes.csv', { ...input, heart: { ...heart, segments } })[0];
+    expect(minute(segment('irregular', 0, 150))).toMatchObject({
+      heart_rate_bpm: '74.0',
+      rmssd_ms: '',
+    });
+    expect(minute(segment('used', 0, 150)).rmssd_ms).toBe('42.5');
+    // By hand: with what ends before 12 s left out the pairs are 790-860, 860-800, 800-805.
+    expect(minute(segment('irregular', 0, 12), segment('used', 12, 150)).rmssd_ms).toBe(
+      Math.sqrt((4900 + 3600 + 25) / 3).toFixed(1),
+    );
   });
   it('has the stomach columns of the epoch centred at the start of the minute', () => {
     const rows = table('minutes.csv');
@@ -161,6 +186,16 @@ describe('minutes.csv', () => {
   });
   it('has the breathing of the window around it, and nothing where that cannot be told', () => {
     expect(table('minutes.csv').map((row) => row.breathing_bpm)).toEqual(['14.3', '', '']);
+  });
+  it('has the breathing of its own lead also where there is no heart lead', () => {
+    const breathing = {
+      centresS: Float64Array.of(30, 90),
+      perMinute: Float64Array.of(15.2, 16.1),
+      from: 'lead' as const,
+    };
+    const rows = table('minutes.csv', { ...input, heart: null, breathing });
+    expect(rows.map((row) => row.breathing_bpm)).toEqual(['15.2', '16.1', '']);
+    expect(rows[0]).toMatchObject({ heart_rate_bpm: '', rmssd_ms: '' });
   });
 });
 
