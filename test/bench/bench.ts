@@ -55,7 +55,12 @@ async function measure({ parts, minutes }: Asked, folder: string): Promise<reado
   const rows: Measured[] = [];
   for (const name of parts) {
     say(`${name} (${loadWords()}) ...`);
-    rows.push(...(await PARTS[name](bench)));
+    try {
+      rows.push(...(await PARTS[name](bench)));
+    } catch (error) {
+      process.stderr.write(`${name} failed: ${error instanceof Error ? error.stack : error}\n`);
+      process.exitCode = 1;
+    }
   }
   return rows;
 }

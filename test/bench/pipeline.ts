@@ -8,6 +8,7 @@ import { type Bench, medianTimed, type Part, type Timed, timed, timeLine } from 
 
 const PART = 'pipeline';
 const ROUNDS = 3;
+const TICKET = 1;
 const STEPS = ['open', 'firstRoles', 'propose', 'analyse', 'again'] as const;
 type Step = (typeof STEPS)[number];
 
@@ -42,8 +43,11 @@ async function walk(path: string, times: Record<Step, Timed[]>): Promise<void> {
     times[name].push(took);
     return took.made;
   };
-  await step('open', async () => pipeline.open(await openAsBlob(path), 'invented.edf', null));
-  pipeline.accept();
+  await step('open', async () => {
+    const file = await openAsBlob(path);
+    return pipeline.open(TICKET, file, 'invented.edf', null, job());
+  });
+  pipeline.accept(TICKET);
   await step('firstRoles', () => pipeline.firstRoles());
   const proposal = await step('propose', () => pipeline.propose(given, job()));
   await step('analyse', () => analyse(pipeline, proposal, 0));
