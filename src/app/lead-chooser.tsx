@@ -1,12 +1,15 @@
 import type { ReactNode } from 'react';
 import type { Channel } from '../recording/channel';
+import type { LeadUse } from '../recording/lead';
 import { Choice } from './fields';
-import type { LeadDraft } from './roles-draft';
+import { canServe, type LeadDraft } from './roles-draft';
 
 interface LeadChooserProps {
   readonly name: string;
   readonly draft: LeadDraft;
   readonly channels: readonly Channel[];
+  /** Channels that cannot serve it are not offered; one that stands there already is. */
+  readonly use: LeadUse;
   /** True where "none" is a choice. */
   readonly optional: boolean;
   readonly error: string | null;
@@ -20,10 +23,11 @@ const NONE = 'none';
 
 /** Two lists that make a lead: a channel, and what is taken from it. */
 export function LeadChooser(props: LeadChooserProps) {
-  const { name, draft, channels, optional, error, reason, onChange, children } = props;
-  const options = channels.map(
-    (channel) => [String(channel.index), channelWords(channel)] as const,
-  );
+  const { name, draft, channels, use, optional, error, reason, onChange, children } = props;
+  const chosen = [draft.plus, draft.minus];
+  const options = channels
+    .filter(({ index }) => chosen.includes(index) || canServe(index, channels, use))
+    .map((channel) => [String(channel.index), channelWords(channel)] as const);
   const numberOf = (value: string) => (value === NONE ? null : Number(value));
   return (
     <div className="lead-row">

@@ -128,6 +128,7 @@ function SlowRows({ draft, channels, errors, onChange }: LeadsProps) {
       name={`Lead ${i + 1}`}
       draft={row}
       channels={channels}
+      use="slow-wave"
       optional={false}
       error={errors?.slow[row.id] ?? null}
       reason={leadReason(row, proposed?.slow ?? [], reasons?.slow ?? null)}
@@ -178,6 +179,7 @@ function OtherLeads({ draft, channels, errors, onChange }: LeadsProps) {
           name="Heart lead"
           draft={draft.heart}
           channels={channels}
+          use="heart"
           optional
           error={errors?.heart ?? null}
           reason={leadReason(draft.heart, [proposed?.heart ?? null], reasons && [reasons.heart])}
@@ -191,6 +193,7 @@ function OtherLeads({ draft, channels, errors, onChange }: LeadsProps) {
           name="Breathing lead"
           draft={draft.breath}
           channels={channels}
+          use="breathing"
           optional
           error={errors?.breath ?? null}
           reason={leadReason(draft.breath, [proposed?.breath ?? null], reasons && [reasons.breath])}

@@ -1,5 +1,5 @@
 import type { Channel } from '../recording/channel';
-import { type Lead, leadKey, sameLead } from '../recording/lead';
+import { type Lead, type LeadUse, leadFault, leadKey, sameLead } from '../recording/lead';
 import type { Roles } from '../recording/roles';
 
 /** A lead as it is being chosen: channel numbers from 0; `minus` null for the channel itself, `plus` null for no lead. */
@@ -44,11 +44,13 @@ export const rolesDraft = (roles: Roles): RolesDraft => ({
   reason: '',
 });
 
-/** A slow-wave row more, on the first channel that no row uses alone. */
+/** A slow-wave row more, on the first channel that can serve and that no row uses alone. */
 export function addSlowLead(draft: RolesDraft, channels: readonly Channel[]): RolesDraft {
   const id = 1 + Math.max(0, ...draft.slow.map((row) => row.id));
   const used = new Set(draft.slow.filter((row) => row.minus === null).map((row) => row.plus));
-  const free = channels.find((channel) => !used.has(channel.index))?.index ?? 0;
+  const free =
+    channels.find(({ index }) => !used.has(index) && canServe(index, channels, 'slow-wave'))
+      ?.index ?? 0;
   return { ...draft, slow: [...draft.slow, { id, plus: free, minus: null }] };
 }
 
@@ -59,16 +61,22 @@ export function removeSlowLead(draft: RolesDraft, id: number): RolesDraft {
   return { ...draft, slow, reported };
 }
 
+/** Whether a channel alone can serve. */
+export const canServe = (channel: number, channels: readonly Channel[], use: LeadUse): boolean =>
+  leadFault({ kind: 'channel', channel }, channels, use) === null;
+
 type ReadLead = { readonly lead: Lead | null; readonly error: string | null };
 
-function readLead({ plus, minus }: LeadDraft, channels: readonly Channel[]): ReadLead {
+function readLead(
+  { plus, minus }: LeadDraft,
+  channels: readonly Channel[],
+  use: LeadUse,
+): ReadLead {
   if (plus === null) return { lead: null, error: null };
-  if (minus === null) return { lead: { kind: 'channel', channel: plus }, error: null };
-  if (plus === minus) return { lead: null, error: 'A channel minus itself is nothing.' };
-  const [a, b] = [channels[plus], channels[minus]];
-  if (a && b && a.rateHz !== b.rateHz)
-    return { lead: null, error: `Rates differ: ${a.rateHz} and ${b.rateHz} Hz.` };
-  return { lead: { kind: 'difference', plus, minus }, error: null };
+  const lead: Lead =
+    minus === null ? { kind: 'channel', channel: plus } : { kind: 'difference', plus, minus };
+  const error = leadFault(lead, channels, use);
+  return { lead: error === null ? lead : null, error };
 }
 
 /**
@@ -107,15 +115,15 @@ export function readRoles(
   const slowErrors: Record<number, string> = {};
   const slow: Lead[] = [];
   for (const row of draft.slow) {
-    const { lead, error } = readLead(row, channels);
+    const { lead, error } = readLead(row, channels, 'slow-wave');
     if (error) slowErrors[row.id] = error;
     else if (!lead) slowErrors[row.id] = 'Choose a channel.';
     else if (slow.some((other) => leadKey(other) === leadKey(lead)))
       slowErrors[row.id] = 'This lead is in the list already.';
     else slow.push(lead);
   }
-  const heart = readLead(draft.heart, channels);
-  const breath = readLead(draft.breath, channels);
+  const heart = readLead(draft.heart, channels, 'heart');
+  const breath = readLead(draft.breath, channels, 'breathing');
   const place = draft.slow.findIndex((row) => row.id === draft.reported);
   const roles: Roles = {
     slow,

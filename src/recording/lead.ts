@@ -44,6 +44,24 @@ export function parseLead(text: string, channels: readonly Channel[]): Lead | nu
   return { kind: 'difference', plus, minus };
 }
 
+/** What a lead serves; a breathing lead may be in any unit, since only the rate of its signal counts. */
+export type LeadUse = 'slow-wave' | 'heart' | 'breathing';
+
+/** Why a lead cannot serve, in words for the person; null where it can. */
+export function leadFault(lead: Lead, channels: readonly Channel[], use: LeadUse): string | null {
+  const numbers = leadChannels(lead);
+  const missing = numbers.find((index) => channels[index] === undefined);
+  if (missing !== undefined) return `There is no channel #${missing + 1}.`;
+  if (new Set(numbers).size < numbers.length) return 'A channel minus itself is nothing.';
+  const parts = numbers.map((index) => channels[index]);
+  const rates = [...new Set(parts.map(({ rateHz }) => rateHz))];
+  if (rates.length > 1) return `Rates differ: ${rates.join(' and ')} Hz.`;
+  const strange = parts.find(({ unit }) => unit.kind === 'unknown');
+  return strange && use !== 'breathing'
+    ? `${strange.label} is in "${strange.unit.text}", no unit of volts: it can serve as breathing lead only.`
+    : null;
+}
+
 export function sameLead(a: Lead, b: Lead): boolean {
   return leadKey(a) === leadKey(b);
 }

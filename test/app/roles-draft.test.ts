@@ -64,6 +64,18 @@ describe('leads and their roles', () => {
     expect(heart(1, 0)).toBeNull();
   });
 
+  it('in a unit that is no voltage are refused for stomach and heart, and serve for breathing', () => {
+    const belt: Channel = { ...channel(2, 250), unit: { kind: 'unknown', text: 'cmH2O' } };
+    const channels = [channel(0, 250), channel(1, 250), belt, channel(3, 250)];
+    const on = { id: 5, plus: 2, minus: null };
+    const read = (part: object) => readRoles({ ...rolesDraft(BEFORE), ...part }, BEFORE, channels);
+    expect(read({ heart: on }).errors.heart).toMatch(/cmH2O/);
+    expect(read({ slow: [on], reported: 5 }).errors.slow[5]).toMatch(/cmH2O/);
+    expect(read({ heart: { ...on, plus: 0, minus: 2 } }).roles).toBeNull();
+    expect(read({ breath: on }).roles?.breath).toEqual({ kind: 'channel', channel: 2 });
+    expect(addSlowLead(rolesDraft(BEFORE), channels).slow[2].plus).toBe(3);
+  });
+
   it('do not hold the same slow-wave lead twice', () => {
     const draft = rolesDraft(BEFORE);
     const twice = { ...draft, slow: [...draft.slow, { id: 7, plus: 0, minus: null }] };
