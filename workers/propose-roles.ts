@@ -1,5 +1,5 @@
 import type { Channel } from '../src/recording/channel';
-import { type Lead, leadName } from '../src/recording/lead';
+import { type Lead, leadKey, leadName } from '../src/recording/lead';
 import type { RoleReasons, Roles } from '../src/recording/roles';
 
 /** Below this a heartbeat cannot be read (numbers.md). */
@@ -36,6 +36,19 @@ export interface SlowMeasure {
   readonly reason: string;
 }
 
+/** What the measures of quality are of. */
+export interface MeasuredOn {
+  /** One for each measure, in their order. */
+  readonly leads: readonly Lead[];
+  /** The part of the study that was measured; null where it is not said. */
+  readonly over: 'fasting' | 'whole' | null;
+}
+
+const OVER = {
+  fasting: ' in the fasting phase',
+  whole: ' over the whole study, no fasting phase being known',
+};
+
 const leadOf = (channel: Channel): Lead => ({ kind: 'channel', channel: channel.index });
 const isVoltage = (channel: Channel): boolean => channel.unit.kind === 'voltage';
 
@@ -61,16 +74,25 @@ export function slowCandidates(channels: readonly Channel[]): readonly Channel[]
 }
 
 /**
- * Roles from labels, rates, the measured heartbeat and the measured quality of each slow-wave candidate (same order as
- * `slowCandidates`). The candidates keep the file's order; the reported lead is the one of best quality, the first of equals.
+ * Roles from labels, rates, the measured heartbeat and the measured quality of slow-wave leads: those of `measured`, or
+ * where that is left out the candidates in the order of `slowCandidates`. The candidates keep the file's order; the reported
+ * lead is the one of best quality, the first of equals; one that was not measured is never put before one that was.
  */
 export function proposeRoles(
   channels: readonly Channel[],
   qrs: readonly QrsMeasure[],
   slow: readonly SlowMeasure[],
+  measured?: MeasuredOn,
 ): { readonly roles: Roles; readonly reasons: RoleReasons } {
   const candidates = slowCandidates(channels);
-  const reported = slow.reduce((best, one, i) => (one.quality > slow[best].quality ? i : best), 0);
+  const { leads, over } = measured ?? { leads: candidates.map(leadOf), over: null };
+  const byLead = new Map(slow.map((one, i) => [leadKey(leads[i]), one]));
+  const measures = candidates.map((one) => byLead.get(leadKey(leadOf(one))));
+  const quality = (place: number) => measures[place]?.quality ?? Number.NEGATIVE_INFINITY;
+  const reported = measures.reduce(
+    (best, _, place) => (quality(place) > quality(best) ? place : best),
+    0,
+  );
   const heart = proposeHeart(channels, qrs);
   const breath = channels.find((one) => labelHint(one.label) === 'breathing');
   return {
@@ -81,10 +103,12 @@ export function proposeRoles(
       breath: breath ? leadOf(breath) : null,
     },
     reasons: {
-      slow: candidates.map((one, i) => `${slowReason(one)}; ${slow[i]?.reason ?? 'not measured'}`),
+      slow: candidates.map(
+        (one, i) => `${slowReason(one)}; ${measures[i]?.reason ?? 'not measured'}`,
+      ),
       reported:
         candidates.length > 1
-          ? `best quality of ${candidates.length} leads in the fasting phase, taken before any rhythm was looked at`
+          ? `best quality of ${candidates.length} leads${over === null ? '' : OVER[over]}, taken before any rhythm was looked at`
           : 'the only slow-wave lead',
       heart: heart.reason,
       breath: breath

@@ -49,6 +49,35 @@ describe('proposed roles', () => {
     expect(reasons.heart).toContain('600');
   });
 
+  it('a measure belongs to the lead it was taken of, whatever leads were measured', () => {
+    const { roles, reasons } = proposeRoles(
+      channels,
+      [],
+      [
+        { quality: 0.9, reason: 'of the heart lead' },
+        { quality: 0.4, reason: 'of EGG 2' },
+      ],
+      {
+        leads: [
+          { kind: 'channel', channel: 2 },
+          { kind: 'channel', channel: 1 },
+        ],
+        over: 'fasting',
+      },
+    );
+    expect(roles.reported).toBe(1);
+    expect(reasons.slow[0]).toMatch(/not measured$/);
+    expect(reasons.slow[1]).toMatch(/of EGG 2$/);
+  });
+
+  it('the reason names what was measured: the fasting phase, or the whole study', () => {
+    const reported = (over: 'fasting' | 'whole' | null) =>
+      proposeRoles(channels, [], [], { leads: [], over }).reasons.reported;
+    expect(reported('fasting')).toMatch(/^best quality of 2 leads in the fasting phase,/);
+    expect(reported('whole')).toMatch(/over the whole study, no fasting phase being known,/);
+    expect(reported(null)).not.toMatch(/fasting|whole/);
+  });
+
   it('a recording sampled below 50 Hz gets no heart lead, and is told why', () => {
     const slow = [channel(0, 'EGG', 4)];
     expect(heartCandidates(slow)).toEqual([]);
