@@ -4,7 +4,6 @@ import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { basename, extname, join } from 'node:path';
 import { exportFiles } from '../src/export/all-files';
 import { Refusal } from '../src/recording/failure';
-import { type Lead, parseLead } from '../src/recording/lead';
 import type { Recording } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
@@ -15,52 +14,56 @@ import { beginSession } from '../src/session/log';
 import { textToSession } from '../src/session/read-document';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
-import type { Opened } from './analysis-api';
+import type { Opened, Proposal } from './analysis-api';
+import { checkRoles, codeOf, phasesWithin, rolesWith } from './command-choices';
 import { type AnalyseRequest, parseArguments, USAGE, WrongArguments } from './command-line';
 import { type Job, startJob } from './job';
 import { createPipeline, type Pipeline } from './pipeline';
 
-/** Roles with what the command line names in the place of what is proposed; the first slow lead named is reported. */
-function rolesWith(proposed: Roles, request: AnalyseRequest, recording: Recording): Roles {
-  const lead = (text: string): Lead => {
-    const found = parseLead(text, recording.channels);
-    if (found) return found;
-    const labels = recording.channels.map(({ label }, i) => `#${i + 1} ${label}`).join(', ');
-    throw new WrongArguments(`"${text}" names no lead of ${recording.fileName}; it has ${labels}`);
-  };
-  const named = request.slow.length > 0 ? { slow: request.slow.map(lead), reported: 0 } : {};
-  return {
-    ...proposed,
-    ...named,
-    heart: request.heart === null ? proposed.heart : lead(request.heart),
-    breath: request.breath === null ? proposed.breath : lead(request.breath),
-  };
+const NAMED = 'named on the command line';
+
+/** What the program proposes, with the leads that the command line names in the place of its own. */
+async function proposalOf(
+  pipeline: Pipeline,
+  recording: Recording,
+  request: AnalyseRequest,
+  settings: Settings,
+  job: Job,
+): Promise<Proposal> {
+  const phases = request.phases && phasesWithin(request.phases, recording);
+  const propose = (roles: Roles | null) =>
+    pipeline.propose({ roles, phases, spans: null, settings }, job);
+  const slowNamed = request.slow.length > 0;
+  const own = slowNamed ? null : await propose(null);
+  if (own && request.heart === null && request.breath === null) return own;
+  const roles = rolesWith(own?.roles ?? (await pipeline.firstRoles()), request, recording);
+  checkRoles(roles, recording);
+  const proposal = await propose(roles);
+  const reported = own?.reasons.reported ?? NAMED;
+  return { ...proposal, reasons: { ...proposal.reasons, reported } };
 }
 
 async function proposedSession(
   pipeline: Pipeline,
   { recording, quickKey }: Opened,
   request: AnalyseRequest,
+  sha256: string,
   job: Job,
 ): Promise<Session> {
   const { route } = request;
   const settings: Settings = route
     ? { ...DEFAULT_SETTINGS, slowRoute: route, heartRoute: route }
     : DEFAULT_SETTINGS;
-  const named = request.slow.length > 0 || request.heart !== null || request.breath !== null;
-  const roles = named ? rolesWith(await pipeline.firstRoles(), request, recording) : null;
-  const proposal = await pipeline.propose(
-    { roles, phases: request.phases, spans: null, settings },
-    job,
-  );
-  const code = recording.identity.code ?? basename(recording.fileName, extname(recording.fileName));
-  return beginSession(
-    initialState(studyIdentity(recording, quickKey, code), { ...proposal, settings }),
-  );
+  const proposal = await proposalOf(pipeline, recording, request, settings, job);
+  const study = studyIdentity(recording, quickKey, codeOf(request.code, recording, sha256));
+  return confirmStudy(beginSession(initialState(study, { ...proposal, settings })), sha256);
 }
 
-async function keptSession(path: string, sha256: string): Promise<Session> {
-  return confirmStudy(textToSession(await readFile(path, 'utf8')), sha256);
+async function keptSession(path: string, recording: Recording, sha256: string): Promise<Session> {
+  const session = confirmStudy(textToSession(await readFile(path, 'utf8')), sha256);
+  checkRoles(session.state.roles, recording);
+  phasesWithin(session.state.phases, recording);
+  return session;
 }
 
 async function sha256Of(path: string): Promise<string> {
@@ -78,8 +81,8 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   pipeline.accept(opened.ticket);
   const sha256 = await sha256Of(path);
   const session = request.session
-    ? await keptSession(request.session, sha256)
-    : confirmStudy(await proposedSession(pipeline, opened, request, job), sha256);
+    ? await keptSession(request.session, opened.recording, sha256)
+    : await proposedSession(pipeline, opened, request, sha256, job);
   const { state } = session;
   const edit = editNumber(session);
   const analysis = await pipeline.analyse({ ...state, edit }, job);

@@ -6,6 +6,7 @@ import { parseClock } from '../src/units/time';
 export interface AnalyseRequest {
   readonly studies: readonly string[];
   readonly session: string | null;
+  readonly code: string | null;
   readonly slow: readonly string[];
   readonly heart: string | null;
   readonly breath: string | null;
@@ -18,6 +19,8 @@ export interface AnalyseRequest {
 
 export const USAGE = `npm run analyse -- STUDY... [options]
   --session FILE   the review to compute from (one study only)
+  --code CODE      what the study is called (one study only; default: the header's code, else study- and
+                   the first 8 digits of its SHA-256)
   --slow LEAD      a slow-wave lead; the first one given is reported; may be repeated
   --heart LEAD     the heart lead
   --breath LEAD    the breathing lead
@@ -31,6 +34,18 @@ LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 
 /** Wrong arguments, in words for the person. */
 export class WrongArguments extends Error {}
 
+const OPTIONS = [
+  'session',
+  'code',
+  'slow',
+  'heart',
+  'breath',
+  'phases',
+  'route',
+  'rate',
+  'unit',
+  'out',
+];
 const ROUTES: readonly RouteName[] = ['band', 'fractional'];
 
 /** Reads the arguments after the program's name. Throws WrongArguments. */
@@ -45,12 +60,7 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
       continue;
     }
     const name = word.slice(2);
-    if (
-      !['session', 'slow', 'heart', 'breath', 'phases', 'route', 'rate', 'unit', 'out'].includes(
-        name,
-      )
-    )
-      throw new WrongArguments(`there is no option ${word}`);
+    if (!OPTIONS.includes(name)) throw new WrongArguments(`there is no option ${word}`);
     const value = words.at(i + 1);
     if (value === undefined || value.startsWith('--'))
       throw new WrongArguments(`${word} wants a value`);
@@ -60,17 +70,20 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
     else single.set(name, value);
   }
   if (studies.length === 0) throw new WrongArguments('name at least one study file');
-  if (single.has('session') && studies.length > 1)
-    throw new WrongArguments('--session goes with one study');
-  const settled = ['heart', 'breath', 'phases', 'route'].filter((name) => single.has(name));
+  for (const name of ['session', 'code'])
+    if (single.has(name) && studies.length > 1)
+      throw new WrongArguments(`--${name} goes with one study`);
+  if (single.get('code')?.trim() === '') throw new WrongArguments('--code wants a value');
+  const settled = ['code', 'heart', 'breath', 'phases', 'route'].filter((name) => single.has(name));
   if (single.has('session') && (slow.length > 0 || settled.length > 0))
     throw new WrongArguments(
-      `a session settles leads, phases and route; leave out --${slow.length > 0 ? 'slow' : settled[0]} or --session`,
+      `a session settles code, leads, phases and route; leave out --${slow.length > 0 ? 'slow' : settled[0]} or --session`,
     );
   const phases = single.get('phases');
   return {
     studies,
     session: single.get('session') ?? null,
+    code: single.get('code')?.trim() ?? null,
     slow,
     heart: single.get('heart') ?? null,
     breath: single.get('breath') ?? null,

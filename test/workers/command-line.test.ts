@@ -16,6 +16,8 @@ describe('the command line', () => {
       route: 'fractional',
       out: 'results',
     });
+    expect(parseArguments(['a.edf', '--code', ' INV-7 ']).code).toBe('INV-7');
+    expect(request.code).toBeNull();
     expect(request.phases?.at(-1)).toEqual({ name: 'fed', fromS: 2520, toS: 5400 });
   });
 
@@ -28,6 +30,9 @@ describe('the command line', () => {
     [['a.edf', '--phases', 'fasting:0-600,fed:300-900'], 'begins before'],
     [['a.edf', 'b.edf', '--session', 's.json'], 'one study'],
     [['a.edf', '--rate', 'fast'], '--rate'],
+    [['a.edf', 'b.edf', '--code', 'X'], '--code goes with one study'],
+    [['a.edf', '--session', 's.json', '--code', 'X'], 'leave out --code'],
+    [['a.edf', '--code', ' '], '--code wants a value'],
   ])('%j is refused in words', (words, part) => {
     expect(() => parseArguments(words)).toThrow(WrongArguments);
     expect(() => parseArguments(words)).toThrow(part);
