@@ -1,0 +1,103 @@
+import { execFile } from 'node:child_process';
+import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { promisify } from 'node:util';
+import { expect, type Page, test } from 'playwright/test';
+import {
+  expectNoTroubles,
+  freshPage,
+  goTo,
+  openStudy,
+  press,
+  RECORD,
+  RECORD_CODE,
+  RECORD_FOLDER,
+  reviewAs,
+} from './support';
+import { downloadResults, downloadSession, unzipStored } from './support-results';
+
+const ROOT = fileURLToPath(new URL('..', import.meta.url));
+const NAMES = ['beats.csv', 'epochs.csv', 'minutes.csv', 'spans.csv', 'findings.json'];
+const run = promisify(execFile);
+const analyse = (...words: readonly string[]) =>
+  run(process.execPath, ['workers/dist/analyse.mjs', ...words], { cwd: ROOT });
+
+let page: Page;
+let folder: string;
+test.beforeAll(async ({ browser }) => {
+  folder = await mkdtemp(join(tmpdir(), 'bicadence-e2e-'));
+  page = await freshPage(browser);
+  await openStudy(page);
+  await reviewAs(page);
+});
+test.afterAll(async () => {
+  await page.context().close();
+  await rm(folder, { recursive: true, force: true });
+});
+test.afterEach(() => expectNoTroubles(page));
+
+/** The page's zip holds, byte for byte, what the command line wrote into a folder. */
+async function expectSameBytes(out: string): Promise<void> {
+  const zip = await downloadResults(page);
+  expect(zip.name).toBe(`${RECORD_CODE}-results.zip`);
+  const files = unzipStored(zip.bytes);
+  expect([...files.keys()]).toEqual(NAMES);
+  expect((await readdir(out)).sort()).toEqual([...NAMES].sort());
+  for (const [name, bytes] of files) {
+    const written = await readFile(join(out, name));
+    expect(bytes.toString('utf8'), name).toBe(written.toString('utf8'));
+    expect(bytes.equals(written), name).toBe(true);
+  }
+}
+
+test('without an edit the page gives the bytes of the command line', async () => {
+  const out = join(folder, 'plain');
+  await analyse(RECORD, '--out', out);
+  await expectSameBytes(out);
+});
+
+test('with edits, spans, phases and other settings too, by the downloaded session', async () => {
+  await goTo(page, '0:31');
+  await press(page, '.');
+  await press(page, 'v');
+  await press(page, '.');
+  await press(page, 'Delete');
+  await goTo(page, '3:00');
+  await press(page, 'Control+e');
+  await press(page, '2');
+  await page.keyboard.press('Shift+S');
+  const settings = page.getByRole('dialog', { name: 'Settings of the figures' });
+  await settings.getByLabel('Route').first().selectOption('fractional');
+  await settings.getByRole('button', { name: 'Use these settings' }).click();
+  await page.keyboard.press('Shift+P');
+  const phases = page.getByRole('dialog', { name: 'Phases and events' });
+  await phases.getByLabel('to', { exact: true }).first().fill('4:30');
+  await phases.getByRole('button', { name: 'Use these phases' }).click();
+  const zip = await downloadResults(page);
+  const session = join(folder, 'edited.bicadence.json');
+  await writeFile(session, (await downloadSession(page)).bytes);
+  const out = join(folder, 'edited');
+  await analyse(RECORD, '--session', session, '--out', out);
+  await expectSameBytes(out);
+  expect((await downloadResults(page)).bytes.equals(zip.bytes), 'the same again').toBe(true);
+  const findings = JSON.parse(await readFile(join(out, 'findings.json'), 'utf8'));
+  expect(findings).toMatchObject({ edit: 6, settings: { slow_route: 'fractional' } });
+});
+
+test('the command line refuses a session of another study, and says why', async () => {
+  const document = JSON.parse((await downloadSession(page)).bytes.toString('utf8'));
+  const other = `${RECORD_FOLDER}record208-rates.edf`;
+  const unhashed = { ...document, study: { ...document.study, sha256: null } };
+  for (const [name, content] of Object.entries({ document, unhashed })) {
+    const session = join(folder, `${name}.bicadence.json`);
+    await writeFile(session, JSON.stringify(content));
+    const failure = await analyse(other, '--session', session, '--out', join(folder, name)).then(
+      () => null,
+      (error: { readonly code?: number; readonly stderr?: string }) => error,
+    );
+    expect(failure?.code, name).toBe(1);
+    expect(failure?.stderr).toMatch(/not the one that session MITDB-208 was made on/);
+  }
+});
