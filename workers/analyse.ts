@@ -5,7 +5,6 @@ import { basename, extname, join } from 'node:path';
 import { exportFiles } from '../src/export/all-files';
 import { Refusal } from '../src/recording/failure';
 import type { Recording } from '../src/recording/recording';
-import type { Roles } from '../src/recording/roles';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
 import { confirmStudy } from '../src/session/confirm-study';
 import type { Session } from '../src/session/document';
@@ -14,34 +13,12 @@ import { beginSession } from '../src/session/log';
 import { textToSession } from '../src/session/read-document';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
-import type { Opened, Proposal } from './analysis-api';
-import { checkRoles, codeOf, phasesWithin, rolesWith } from './command-choices';
+import type { Opened } from './analysis-api';
+import { checkRoles, codeOf, phasesWithin } from './command-choices';
 import { type AnalyseRequest, parseArguments, USAGE, WrongArguments } from './command-line';
+import { proposalOf } from './command-proposal';
 import { type Job, startJob } from './job';
 import { createPipeline, type Pipeline } from './pipeline';
-
-const NAMED = 'named on the command line';
-
-/** What the program proposes, with the leads that the command line names in the place of its own. */
-async function proposalOf(
-  pipeline: Pipeline,
-  recording: Recording,
-  request: AnalyseRequest,
-  settings: Settings,
-  job: Job,
-): Promise<Proposal> {
-  const phases = request.phases && phasesWithin(request.phases, recording);
-  const propose = (roles: Roles | null) =>
-    pipeline.propose({ roles, phases, spans: null, settings }, job);
-  const slowNamed = request.slow.length > 0;
-  const own = slowNamed ? null : await propose(null);
-  if (own && request.heart === null && request.breath === null) return own;
-  const roles = rolesWith(own?.roles ?? (await pipeline.firstRoles()), request, recording);
-  checkRoles(roles, recording);
-  const proposal = await propose(roles);
-  const reported = own?.reasons.reported ?? NAMED;
-  return { ...proposal, reasons: { ...proposal.reasons, reported } };
-}
 
 async function proposedSession(
   pipeline: Pipeline,
