@@ -71,6 +71,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     edit,
     stomach: analysis.stomach ?? [],
     heart: analysis.heart?.value ?? null,
+    breathing: analysis.breathing,
     findings: analysis.findings,
   });
   await mkdir(folder, { recursive: true });

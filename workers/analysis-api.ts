@@ -69,7 +69,6 @@ export interface SeparationFacts {
 export interface HeartResults {
   readonly rr: RrSeries;
   readonly segments: readonly HeartSegment[];
-  readonly breathing: BreathingSeries;
   /** Median R height and local noise in uV, standard deviation of the R times in ms. */
   readonly heightUv: number;
   readonly noiseUv: number;
@@ -83,6 +82,8 @@ export interface Analysis {
   readonly stomach: readonly SlowWaveRhythm[] | null;
   /** `value` is null where there is no heart lead. */
   readonly heart: { readonly value: HeartResults | null } | null;
+  /** Of the breathing lead, else derived from the heartbeat; null where there is neither. */
+  readonly breathing: BreathingSeries | null;
   readonly findings: Findings;
 }
 

@@ -46,6 +46,7 @@ export interface Computed {
   readonly separation: readonly SeparationFacts[];
   readonly stomach: readonly StomachAnalysis[];
   readonly heart: HeartResults | null;
+  readonly breathing: BreathingSeries | null;
   readonly findings: Analysis['findings'];
   readonly marks: Readonly<Record<'separation' | 'stomach' | 'heart', string>>;
 }
@@ -69,6 +70,7 @@ interface StomachInputs {
 /** The heart side before phases: intervals, breathing, what was seen. */
 interface HeartSide {
   readonly results: HeartResults;
+  readonly breathing: BreathingSeries;
   readonly figuresOf: (part: Part) => ReturnType<typeof heartFigures>;
   readonly seen: readonly SeenInPassing[];
 }
@@ -112,7 +114,7 @@ export function createResults(recording: Recording): Results {
             fromLead,
           })
         : null;
-      const series = heart?.results.breathing ?? fromLead;
+      const series = heart?.breathing ?? fromLead;
       const breathing = series && breathingAsBefore(series);
       const stomach: StomachAnalysis[] = [];
       for (const one of slow) {
@@ -141,6 +143,7 @@ export function createResults(recording: Recording): Results {
         separation: slow.map((one, i) => factsOf(one, stomach[i])),
         stomach,
         heart: heart?.results ?? null,
+        breathing,
         findings,
         marks: {
           separation: slow.map(identity).join() + rhythms,
@@ -149,7 +152,7 @@ export function createResults(recording: Recording): Results {
         },
       };
     },
-    deliver({ edit, separation, stomach, heart, findings, marks }) {
+    deliver({ edit, separation, stomach, heart, breathing, findings, marks }) {
       const before = delivered;
       delivered = marks;
       return {
@@ -157,6 +160,7 @@ export function createResults(recording: Recording): Results {
         separation: marks.separation === before.separation ? null : separation,
         stomach: marks.stomach === before.stomach ? null : stomach.map(({ rhythm }) => rhythm),
         heart: marks.heart === before.heart ? null : { value: heart },
+        breathing,
         findings,
       };
     },
@@ -201,11 +205,11 @@ function heartSideOf(from: HeartInputs, recording: Recording): HeartSide {
     results: {
       rr,
       segments,
-      breathing,
       heightUv: detection?.heightUv ?? 0,
       noiseUv: detection?.noiseUv ?? 0,
       timingSdMs,
     },
+    breathing,
     figuresOf,
     seen: seenInPassing({ rr, beats, rateHz, blocked, segments }),
   };

@@ -2,8 +2,6 @@ import { openRecording } from '../src/decode/formats';
 import { quickKey } from '../src/decode/quick-key';
 import { type Detection, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
-import { measureQrs } from '../src/heart/qrs-quality';
-import { minMaxColumns } from '../src/numeric/min-max-columns';
 import { type BeatList, NO_BEATS } from '../src/recording/beat';
 import { Refusal } from '../src/recording/failure';
 import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
@@ -27,21 +25,12 @@ import type {
   TextReading,
 } from './analysis-api';
 import { inTurns, type Job } from './job';
-import { leadSamples } from './lead-pass';
+import { columnsOf } from './pipeline-columns';
+import { measureHeartbeats } from './pipeline-measures';
 import { createResults, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
 import { phasesFromAnnotations } from './propose-phases';
-import { heartCandidates, proposeRoles, type QrsMeasure } from './propose-roles';
-
-/** Stretches of each candidate on which the heartbeat is measured, as parts of the study. */
-const MEASURED_AT = [0.15, 0.5, 0.85];
-const MEASURED_S = 12;
-/** Rate at which the heartbeat is measured for that; its band ends far below. */
-const MEASURED_HZ = 250;
-/** Wider windows than this are drawn from the pyramid, narrower ones from the file's own samples. */
-const FROM_PYRAMID_S = 60;
-/** Without a pyramid, wider windows than this many samples wait for it. */
-const MOST_SAMPLES = 2_500_000;
+import { proposeRoles, type QrsMeasure } from './propose-roles';
 
 interface Study {
   readonly source: SignalSource;
@@ -104,7 +93,7 @@ export function createPipeline(): Pipeline {
     firstRoles: () => firstRoles(study()),
     propose: (given, job) => inLine(study(), job, (one) => propose(one, given, job)),
     analyse: (inputs, job) => inLine(study(), job, (one) => analyse(one, inputs, job)),
-    columns: (request) => columns(study(), request),
+    columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
   };
 }
@@ -128,33 +117,6 @@ async function firstRoles(study: Study): Promise<Roles> {
   return proposeRoles(channels, study.qrs, []).roles;
 }
 
-async function measureHeartbeats(source: SignalSource): Promise<readonly QrsMeasure[]> {
-  const measures: QrsMeasure[] = [];
-  for (const channel of heartCandidates(source.recording.channels)) {
-    const length = Math.round(MEASURED_S * channel.rateHz);
-    const every = Math.max(1, Math.floor(channel.rateHz / MEASURED_HZ));
-    const parts = [];
-    for (const part of MEASURED_AT) {
-      const from = Math.max(0, Math.floor(part * channel.sampleCount - length / 2));
-      const samples = await source.read(channel.index, from, from + length);
-      parts.push(measureQrs(meansOf(samples, every), channel.rateHz / every));
-    }
-    const [middle] = parts.sort((a, b) => a.quality - b.quality).slice(parts.length >> 1);
-    measures.push({ channel: channel.index, ...middle });
-  }
-  return measures;
-}
-
-/** Means of so many samples each; a rest is left out. */
-function meansOf(samples: Float64Array, every: number): Float64Array {
-  if (every === 1) return samples;
-  return Float64Array.from({ length: Math.floor(samples.length / every) }, (_, i) => {
-    let sum = 0;
-    for (let j = i * every; j < (i + 1) * every; j += 1) sum += samples[j];
-    return sum / every;
-  });
-}
-
 async function propose(study: Study, given: Given, job: Job): Promise<Proposal> {
   const { recording } = study.source;
   const { settings } = given;
@@ -171,7 +133,11 @@ async function propose(study: Study, given: Given, job: Job): Promise<Proposal> 
     return { quality: score, reason };
   });
   study.qrs ??= await measureHeartbeats(study.source);
-  const proposal = proposeRoles(recording.channels, study.qrs, qualities);
+  const over = phases.some(isFasting) ? 'fasting' : 'whole';
+  const proposal = proposeRoles(recording.channels, study.qrs, qualities, {
+    leads: first.slow,
+    over,
+  });
   const roles = given.roles ?? proposal.roles;
   return {
     roles,
@@ -285,38 +251,6 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
   );
   return study.results.deliver(await study.results.of({ ...from, slow: atOwnRhythm }, job));
 }
-
-async function columns(study: Study, request: ColumnsRequest): Promise<Columns> {
-  const { lead, signal, fromS, toS } = request;
-  if (!(toS > fromS) || !(request.columns >= 1)) throw new Error('columns want a width');
-  const kept = study.signals.get(lead);
-  const slow = study.signals.drawn(lead);
-  if (signal === 'slow-wave' && slow)
-    return { request, ...cut(slow.slowWave, slow.rateHz, request) };
-  if (signal === 'heartbeat' && kept?.heart)
-    return { request, ...cut(kept.heart.output.heartbeat, kept.heart.output.rateHz, request) };
-  if (signal !== 'recorded') return { request, ...cut([], 1, request) };
-  if (kept && toS - fromS > FROM_PYRAMID_S)
-    return { request, ...kept.pyramid.columns(fromS, toS, request.columns) };
-  const { rateHz } = leadChannel(study.source.recording, lead);
-  if ((toS - fromS) * rateHz > MOST_SAMPLES) return { request, ...cut([], 1, request) };
-  const first = Math.max(0, Math.floor(fromS * rateHz) - 1);
-  const read = new Map<number, Float64Array>();
-  for (const channel of leadChannels(lead))
-    read.set(channel, await study.source.read(channel, first, Math.ceil(toS * rateHz) + 2));
-  const samples = leadSamples(lead, (channel) => {
-    const found = read.get(channel);
-    if (!found) throw new Error(`channel ${channel} was not read`);
-    return found;
-  });
-  return { request, ...minMaxColumns(samples, rateHz, first, fromS, toS, request.columns) };
-}
-
-const cut = (
-  samples: ArrayLike<number>,
-  rateHz: number,
-  { fromS, toS, columns: n }: ColumnsRequest,
-) => minMaxColumns(samples, rateHz, 0, fromS, toS, n);
 
 function placeNear(study: Study, nearS: number): PlacedBeat {
   const lead = study.heartLead;

@@ -45,14 +45,23 @@ export function createStudyFiles({ session, analysis, shell, keeping }: FilePart
     },
     downloadExports() {
       const open = session.getState().session;
-      const { recording, stomach, heart, findings, edit } = analysis.getState();
+      const { recording, stomach, heart, breathing, findings, edit } = analysis.getState();
       if (!open || !recording || !findings) return;
       if (edit !== editNumber(open)) {
         shell.getState().sayProblem('The figures are not up to date yet. Download once they are.');
         return;
       }
       const { state } = open;
-      const results = { recording, state, program: PROGRAM, edit, stomach, heart, findings };
+      const results = {
+        recording,
+        state,
+        program: PROGRAM,
+        edit,
+        stomach,
+        heart,
+        breathing,
+        findings,
+      };
       const save = async () => {
         if (!(await keeping.confirmed())) {
           shell.getState().sayProblem(NOT_CONFIRMED);

@@ -18,9 +18,8 @@ export interface ExportInput {
   readonly heart: {
     readonly rr: RrSeries;
     readonly segments: readonly HeartSegment[];
-    readonly breathing: BreathingSeries;
   } | null;
-  /** Of the breathing lead, with or without a heart lead; where it is not given, the heart's own stands. */
-  readonly breathing?: BreathingSeries | null;
+  /** Of the breathing lead, else derived from the heartbeat; null where there is neither. */
+  readonly breathing: BreathingSeries | null;
   readonly findings: Findings;
 }

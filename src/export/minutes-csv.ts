@@ -41,7 +41,7 @@ export function minutesCsv(input: Input): string {
 
 function* minuteRows(input: Input): Generator<Cell[]> {
   const { recording, state, stomach, heart } = input;
-  const series = input.breathing ?? heart?.breathing ?? null;
+  const series = input.breathing;
   const irregular = (heart?.segments ?? []).filter((one) => one.state === 'irregular');
   const phases = phasesOrWhole(state.phases, recording.durationS);
   const rateHz = leadRate(state.roles.heart, recording);

@@ -1,4 +1,5 @@
 import type { Columns, HeartResults } from '../../workers/analysis-api';
+import type { BreathingSeries } from '../recording/heart-series';
 import { leadKey } from '../recording/lead';
 import { isFasting, isFed, type Phase, phasesOrWhole } from '../recording/phase';
 import type { SlowWaveRhythm } from '../recording/rhythm';
@@ -35,6 +36,7 @@ export interface PictureInput {
   readonly settings: Settings;
   readonly rhythm: SlowWaveRhythm;
   readonly heart: HeartResults | null;
+  readonly breathing: BreathingSeries | null;
   readonly durationS: number;
   readonly waves: readonly { readonly excerpt: Excerpt; readonly columns: Columns }[];
 }
@@ -94,13 +96,13 @@ function spectrogramOf(
 }
 
 function trendOf(
-  { state, rhythm, heart, durationS }: PictureInput,
+  { state, rhythm, heart, breathing, durationS }: PictureInput,
   spoiled: ReturnType<typeof spoiledOf>,
 ): ReportPicture {
   const rows = [
     powerRow(rhythm.epochs),
     heartRateRow(heart?.rr ?? null, durationS),
-    breathingRow(heart?.breathing ?? null),
+    breathingRow(breathing),
   ];
   const phases = phasesOrWhole(state.phases, durationS);
   return { svg: trendPicture({ rows, phases, spoiled, durationS }), words: trendWords(rows) };

@@ -72,15 +72,16 @@ function usePictures(
   analysis: AnalysisStore,
   signals: SignalAccess,
 ): ReportPictures | null {
-  const { recording, stomach, heart, fileAtHand, signalVersion } = useStore(analysis);
+  const { recording, stomach, heart, breathing, fileAtHand, signalVersion } = useStore(analysis);
   const durationS = recording?.durationS ?? 0;
   const version = fileAtHand ? signalVersion : null;
   const waves = useWaves(state, durationS, version, signals);
   return useMemo(() => {
     const rhythm = state ? stomach[state.roles.reported] : undefined;
     if (!state || !rhythm) return null;
-    return reportPictures({ state, settings: state.settings, rhythm, heart, durationS, waves });
-  }, [state, stomach, heart, durationS, waves]);
+    const { settings } = state;
+    return reportPictures({ state, settings, rhythm, heart, breathing, durationS, waves });
+  }, [state, stomach, heart, breathing, durationS, waves]);
 }
 
 /** The slow wave of the excerpts, asked for again when phases, lead or `version` change; null: no file to draw from. */

@@ -8,6 +8,7 @@ import type {
   SeparationFacts,
 } from '../../workers/analysis-api';
 import type { Findings } from '../recording/findings';
+import type { BreathingSeries } from '../recording/heart-series';
 import type { Recording } from '../recording/recording';
 import type { SlowWaveRhythm } from '../recording/rhythm';
 import type { RoleReasons, Roles } from '../recording/roles';
@@ -30,6 +31,7 @@ export interface AnalysisState {
   readonly separation: readonly SeparationFacts[];
   readonly stomach: readonly SlowWaveRhythm[];
   readonly heart: HeartResults | null;
+  readonly breathing: BreathingSeries | null;
   readonly findings: Findings | null;
   /** Edit number the results belong to; older than the session's: show grey. */
   readonly edit: number;
@@ -54,6 +56,7 @@ const EMPTY: AnalysisState = {
   separation: [],
   stomach: [],
   heart: null,
+  breathing: null,
   findings: null,
   edit: 0,
   progress: null,
@@ -82,9 +85,10 @@ export function blankAnalysis(store: AnalysisStore): void {
 
 /** Takes over a reply: parts that did not change stay. */
 export function takeAnalysis(store: AnalysisStore, analysis: Analysis): void {
-  const { edit, separation, stomach, heart, findings } = analysis;
+  const { edit, separation, stomach, heart, breathing, findings } = analysis;
   store.setState((before) => ({
     edit,
+    breathing,
     findings,
     separation: separation ?? before.separation,
     stomach: stomach ?? before.stomach,

@@ -23,7 +23,7 @@ export function MinutesPane(props: PaneProps) {
   );
   const recording = useStore(stores.analysis, (state) => state.recording);
   const breathing = useStore(stores.analysis, (state) => {
-    const from = state.heart?.breathing.from;
+    const from = state.breathing?.from;
     return from === 'lead' || from === 'derived';
   });
   const route = useStore(

@@ -43,17 +43,19 @@ export class RateRowView implements RowView {
   }
 
   private read(): void {
-    const { heart } = this.context.stores.analysis.getState();
-    const source = (this.row.kind === 'heart-rate' ? heart?.rr : heart?.breathing) ?? null;
+    const { heart, breathing } = this.context.stores.analysis.getState();
+    const rr = this.row.kind === 'heart-rate' ? (heart?.rr ?? null) : null;
+    const breaths = this.row.kind === 'breathing' ? breathing : null;
+    const source = rr ?? breaths;
     if (source === this.source) return;
     this.source = source;
-    if (!heart) this.line = null;
-    else if (this.row.kind === 'heart-rate') {
-      const { timesS, perMinute } = heartRateLine(heart.rr);
+    this.line = null;
+    if (rr) {
+      const { timesS, perMinute } = heartRateLine(rr);
       const apartS = (i: number) => 60 / perMinute[i] + JOIN_SPARE_S;
       this.line = { timesS, values: perMinute, apartS };
-    } else {
-      const { centresS, perMinute } = heart.breathing;
+    } else if (breaths) {
+      const { centresS, perMinute } = breaths;
       this.line = { timesS: centresS, values: perMinute, apartS: () => BREATH_JOIN_S };
     }
     this.limits = this.line && rateLimits(this.line.values);

@@ -106,11 +106,11 @@ export function inventedInput(): ExportInput {
         nn: new Uint8Array(CV_23_RR_MS.length).fill(1),
       },
       segments: [],
-      breathing: {
-        centresS: Float64Array.of(30, 45, 90),
-        perMinute: Float64Array.of(14.26, 20, Number.NaN),
-        from: 'lead',
-      },
+    },
+    breathing: {
+      centresS: Float64Array.of(30, 45, 90),
+      perMinute: Float64Array.of(14.26, 20, Number.NaN),
+      from: 'lead',
     },
     findings: signature(7).findings,
   };

@@ -34,6 +34,7 @@ function page(signed: boolean): string {
     settings: state.settings,
     rhythm: stomach[0],
     heart: null,
+    breathing: null,
     durationS: recording.durationS,
     waves: [],
   });
