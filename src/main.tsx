@@ -6,6 +6,7 @@ import { Shell } from './app/shell';
 import { createShellStore } from './app/shell-store';
 import { createStudyController } from './app/study-controller';
 import { createAnalysisStore } from './review/analysis-store';
+import { asWork } from './review/idle';
 import { createViewStore } from './review/view-store';
 import { browserStores } from './session/browser-stores';
 import { createKeeper } from './session/keeper';
@@ -22,7 +23,7 @@ const stores = { session, analysis, view, shell };
 const keeper = createKeeper({ ...browser, program: PROGRAM, nowUtc });
 const controller = createStudyController({ ...stores, keeper, analysisWorkerUrl, hashWorkerUrl });
 const Report = lazy(() =>
-  import('./report/report-view').then(({ ReportView }) => ({ default: ReportView })),
+  asWork(import('./report/report-view')).then(({ ReportView }) => ({ default: ReportView })),
 );
 const renderReport = () => (
   <Suspense fallback={<output>Loading the report.</output>}>

@@ -4,7 +4,6 @@ import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { basename, extname, join } from 'node:path';
 import { exportFiles } from '../src/export/all-files';
 import { Refusal } from '../src/recording/failure';
-import type { Recording } from '../src/recording/recording';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
 import { confirmStudy } from '../src/session/confirm-study';
 import type { Session } from '../src/session/document';
@@ -33,11 +32,19 @@ async function proposedSession(
     : DEFAULT_SETTINGS;
   const proposal = await proposalOf(pipeline, recording, request, settings, job);
   const study = studyIdentity(recording, quickKey, codeOf(request.code, recording, sha256));
-  return confirmStudy(beginSession(initialState(study, { ...proposal, settings })), sha256);
+  return confirmStudy(
+    beginSession(initialState(study, { ...proposal, settings })),
+    sha256,
+    quickKey,
+  );
 }
 
-async function keptSession(path: string, recording: Recording, sha256: string): Promise<Session> {
-  const session = confirmStudy(textToSession(await readFile(path, 'utf8')), sha256);
+async function keptSession(
+  path: string,
+  { recording, quickKey }: Opened,
+  sha256: string,
+): Promise<Session> {
+  const session = confirmStudy(textToSession(await readFile(path, 'utf8')), sha256, quickKey);
   checkRoles(session.state.roles, recording);
   phasesWithin(session.state.phases, recording);
   return session;
@@ -58,7 +65,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   pipeline.accept(opened.ticket);
   const sha256 = await sha256Of(path);
   const session = request.session
-    ? await keptSession(request.session, opened.recording, sha256)
+    ? await keptSession(request.session, opened, sha256)
     : await proposedSession(pipeline, opened, request, sha256, job);
   const { state } = session;
   const edit = editNumber(session);

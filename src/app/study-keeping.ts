@@ -77,7 +77,7 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
         const open = current().session;
         if (!reply.ok || !open || keyOf(open) !== begun) return false;
         try {
-          const known = confirmStudy(open, reply.value);
+          const known = confirmStudy(open, reply.value, open.state.study.quickKey);
           if (known !== open) {
             session.setState({ session: known });
             void keeper.begin(known).then(told);

@@ -28,7 +28,8 @@ export function SecondsPane(props: PaneProps) {
       if (!(stage instanceof HTMLElement)) throw new Error('Seconds has no stage');
       const parts: SecondsParts = { buttons: new PinButtons(stage, commands), drag: null };
       const keys = (event: KeyboardEvent) => {
-        if (event.target !== stage || !pinKey(commands, event)) return;
+        const chosen = stores.view.getState().selection.kind === 'beats';
+        if (event.target !== stage || !chosen || !pinKey(commands, event)) return;
         event.preventDefault();
         event.stopPropagation();
       };
@@ -44,7 +45,7 @@ export function SecondsPane(props: PaneProps) {
         },
       };
     },
-    [commands],
+    [commands, stores],
   );
   const sectionRef = usePane(props, rows, setUp);
   const noHeart = roles !== null && recording !== null && rows.length === 0;

@@ -128,16 +128,20 @@ describe('fields', () => {
 describe('confirming the study', () => {
   const session = beginSession(state);
   const hash = '0f'.repeat(32);
+  const { quickKey } = state.study;
   it('writes a hash that was not known yet into the session without a line in its log', () => {
-    const confirmed = confirmStudy(session, hash);
+    const confirmed = confirmStudy(session, hash, quickKey);
     expect(confirmed.state.study.sha256).toBe(hash);
     expect(confirmed.start.study.sha256).toBe(hash);
     expect(confirmed.log).toEqual([]);
-    expect(confirmStudy(confirmed, hash)).toBe(confirmed);
+    expect(confirmStudy(confirmed, hash, quickKey)).toBe(confirmed);
+  });
+  it('refuses another file also while its own hash is not known', () => {
+    expect(() => confirmStudy(session, hash, `other-${quickKey}`)).toThrow(/not the one/);
   });
   it('refuses another file', () => {
-    const confirmed = confirmStudy(session, hash);
-    expect(() => confirmStudy(confirmed, 'ee'.repeat(32))).toThrow(
+    const confirmed = confirmStudy(session, hash, quickKey);
+    expect(() => confirmStudy(confirmed, 'ee'.repeat(32), quickKey)).toThrow(
       /not the one that session INV-7 was made on.*eeeeeeee.*0f0f0f0f/,
     );
   });
