@@ -1,7 +1,7 @@
 import { defineConfig } from 'playwright/test';
 import { BROWSER_FLAGS, findBrowser } from './browser.mjs';
 
-const PORT = 4391;
+const PORT = Number(process.env.E2E_PORT ?? 4391);
 const browser = findBrowser();
 
 export default defineConfig({
