@@ -1,4 +1,3 @@
-import { createSHA256 } from 'hash-wasm';
 import { readBytes } from './file-bytes';
 
 const MEGABYTE = 1024 * 1024;
@@ -9,9 +8,21 @@ const MEGABYTE = 1024 * 1024;
  * Throws a Refusal where the file cannot be read.
  */
 export async function quickKey(file: Blob, fileName = 'the file'): Promise<string> {
-  const hash = await createSHA256();
-  hash.update(`${file.size}\n`);
-  hash.update(await readBytes(file, fileName, 0, MEGABYTE));
-  hash.update(await readBytes(file, fileName, Math.max(0, file.size - MEGABYTE), file.size));
-  return hash.digest('hex');
+  const parts = [
+    new TextEncoder().encode(`${file.size}\n`),
+    await readBytes(file, fileName, 0, MEGABYTE),
+    await readBytes(file, fileName, Math.max(0, file.size - MEGABYTE), file.size),
+  ];
+  return sha256(new Uint8Array(await new Blob(parts).arrayBuffer()));
+}
+
+/** SHA-256 by the browser's own code; where it has none (a page served without https), by a library fetched for it. */
+async function sha256(bytes: Uint8Array<ArrayBuffer>): Promise<string> {
+  const subtle: SubtleCrypto | undefined = globalThis.crypto?.subtle;
+  if (!subtle) {
+    const library = await import('hash-wasm');
+    return library.sha256(bytes);
+  }
+  const digest = new Uint8Array(await subtle.digest('SHA-256', bytes));
+  return Array.from(digest, (byte) => byte.toString(16).padStart(2, '0')).join('');
 }
