@@ -169,13 +169,15 @@ export function createStudyController(parts: ControllerParts): StudyController &
 
   /** Reading the whole file for its hash waits for the first figures, since both want the processor. */
   function onceFigures(act: () => void): void {
-    const { recording } = analysis.getState();
+    const { recording, findings } = analysis.getState();
+    if (findings) {
+      act();
+      return;
+    }
     const stop = analysis.subscribe((state) => {
-      if (state.recording !== recording) stop();
-      else if (state.findings) {
-        stop();
-        act();
-      }
+      if (state.recording === recording && !state.findings) return;
+      stop();
+      if (state.recording === recording) act();
     });
   }
 
