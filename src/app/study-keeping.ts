@@ -37,6 +37,7 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
   let saidWhy = '';
   let hashing: AbortController | null = null;
   let confirming: Promise<boolean> = Promise.resolve(false);
+  let settle: (confirmed: boolean) => void = () => undefined;
   const current = () => session.getState();
 
   function told(report: KeptReport): void {
@@ -67,13 +68,17 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
     async begin(open) {
       const where = current();
       begun = keyOf(open);
+      settle(false);
+      confirming = new Promise((resolve) => {
+        settle = resolve;
+      });
       where.setKept({ kind: 'saving', edit: editNumber(open) });
       told(await keeper.begin(open));
     },
     confirm(file, otherFile) {
       hashing?.abort();
       hashing = new AbortController();
-      confirming = hash.hash(file, { signal: hashing.signal }).then((reply) => {
+      const confirmed = hash.hash(file, { signal: hashing.signal }).then((reply) => {
         const open = current().session;
         if (!reply.ok || !open || keyOf(open) !== begun) return false;
         try {
@@ -89,6 +94,7 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
           return false;
         }
       });
+      void confirmed.then(settle);
     },
     confirmed: () => confirming,
     inFile(fileName) {
@@ -99,7 +105,7 @@ export function createStudyKeeping({ keeper, hash, session, shell }: KeepingPart
     end() {
       hashing?.abort();
       begun = undefined;
-      confirming = Promise.resolve(false);
+      settle(false);
       keeper.close();
     },
   };
