@@ -88,11 +88,9 @@ export function intervalsByHand(
     const startS = Number(beats[i].time_s);
     const endS = Number(beat.time_s);
     const spoiled = spoils.some(([fromS, toS]) => fromS < endS && toS > startS);
-    return {
-      endS,
-      rrMs: 1000 * (endS - startS),
-      nn: carries(beats[i]) && carries(beat) && !spoiled,
-    };
+    const rrMs = 1000 * (endS - startS);
+    const likely = rrMs >= 300 && rrMs <= 2000;
+    return { endS, rrMs, nn: carries(beats[i]) && carries(beat) && !spoiled && likely };
   });
 }
 
