@@ -131,7 +131,7 @@ test('what Seconds shows is excluded by a key; whom it is for and why are keys a
   await expectCounted({ stomach: whole, heart: whole });
   await spanBar().getByLabel('cause').selectOption('cough');
   await settled(page);
-  await spanBar().getByLabel('not for').selectOption('heart');
+  await spanBar().getByLabel('excluded for').selectOption('heart');
   await settled(page);
   const note = findings(page).getByLabel('note');
   await note.fill('coughed, then still');

@@ -101,7 +101,7 @@ export async function openStudy(
 }
 
 /** Says who reviews, so that edits are not stopped by the question. */
-export async function reviewAs(page: Page, name = 'E. Example'): Promise<void> {
+export async function reviewAs(page: Page, name = 'T. Technician'): Promise<void> {
   await page.getByRole('button', { name: /^Reviewer: / }).click();
   const dialog = dialogOf(page, 'Who reviews?');
   await dialog.getByLabel('Name or initials of the reviewer').fill(name);

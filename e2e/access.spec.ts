@@ -1,0 +1,169 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, type Page, test } from 'playwright/test';
+import {
+  chooseFile,
+  dialogOf,
+  expectNoTroubles,
+  figureButton,
+  findings,
+  freshPage,
+  goTo,
+  IDENTITY,
+  LONG_MS,
+  openStudy,
+  press,
+  RECORD,
+  REFUSED,
+  reviewAs,
+  settled,
+} from './support';
+import { packed, textOf } from './support-files';
+import { downloadSession } from './support-results';
+
+let page: Page;
+test.beforeAll(async ({ browser }) => {
+  page = await freshPage(browser);
+});
+test.afterAll(() => page.context().close());
+test.afterEach(() => expectNoTroubles(page));
+
+/** WCAG 2.2 A and AA and axe's best practices find nothing, in the light and in the dark theme. */
+async function expectClean(): Promise<void> {
+  for (const colorScheme of ['light', 'dark'] as const) {
+    await page.emulateMedia({ colorScheme });
+    await settled(page);
+    const { violations } = await new AxeBuilder({ page }).analyze();
+    const found = violations.map(({ id, help, nodes }) => ({
+      theme: colorScheme,
+      id,
+      help,
+      where: nodes.slice(0, 4).map(({ target, any, all, none }) => ({
+        target: target.join(' '),
+        why: [...any, ...all, ...none].map(({ message }) => message).join(' '),
+      })),
+    }));
+    expect(found).toEqual([]);
+  }
+}
+
+test('the start screen', async () => {
+  await expect(page.getByRole('heading', { name: 'Open a recording' })).toBeVisible();
+  await expectClean();
+});
+
+test('the dialog that says why a file is refused', async () => {
+  await chooseFile(page, packed());
+  await expect(dialogOf(page, REFUSED)).toBeVisible({ timeout: LONG_MS });
+  await expectClean();
+  await page.keyboard.press('Escape');
+});
+
+test('the dialog that asks how a text file is to be read', async () => {
+  const rows = Array.from({ length: 2000 }, (_, i) => String(i % 50));
+  await chooseFile(page, textOf('belly.csv', 'E1 (uV)', rows));
+  const dialog = dialogOf(page, 'How is this text file to be read?');
+  await expect(dialog).toBeVisible({ timeout: LONG_MS });
+  await dialog.getByRole('button', { name: 'Open again' }).click();
+  await expectClean();
+  await page.keyboard.press('Escape');
+});
+
+test('the dialog of who it is', async () => {
+  await chooseFile(page, RECORD);
+  await expect(dialogOf(page, IDENTITY)).toBeVisible({ timeout: LONG_MS });
+  await expectClean();
+  await page.keyboard.press('Escape');
+});
+
+test.describe('a study is open', () => {
+  test.beforeAll(async () => {
+    await openStudy(page);
+  });
+
+  test('the panes', expectClean);
+
+  test('the dialog that asks who reviews', async () => {
+    await goTo(page, '0:31');
+    await press(page, 'Control+e');
+    await expect(dialogOf(page, 'Who reviews?')).toBeVisible();
+    await expectClean();
+    await page.keyboard.press('Escape');
+  });
+
+  test('the panes with a chosen span and all that opens in Findings', async () => {
+    await reviewAs(page);
+    await goTo(page, '0:31');
+    await press(page, 'Control+e');
+    await findings(page).getByRole('button', { name: 'All figures' }).click();
+    for (const table of await page.locator('details.twin > summary').all())
+      await table.press('Enter');
+    await expectClean();
+    for (const table of await page.locator('details.twin > summary').all())
+      await table.press('Enter');
+    await findings(page).getByRole('button', { name: 'Main figures only' }).click();
+  });
+
+  test('the panes with a chosen beat and a menu open', async () => {
+    await goTo(page, '0:31');
+    await press(page, 'Escape');
+    await press(page, '.');
+    await page.getByRole('button', { name: /^Study/ }).click();
+    await expectClean();
+    await page.keyboard.press('Escape');
+    await press(page, 'Escape');
+  });
+
+  const dialogs: readonly (readonly [string, string])[] = [
+    ['Shift+L', 'Leads and their roles'],
+    ['Shift+P', 'Phases and events'],
+    ['Shift+K', 'Meal and protocol'],
+    ['Shift+S', 'Settings of the figures'],
+    ['Control+g', 'Go to a time'],
+    ['?', 'Keys'],
+    ['Shift+F', 'Sign'],
+  ];
+  for (const [key, title] of dialogs)
+    test(`the dialog "${title}"`, async () => {
+      await press(page, key);
+      await expect(dialogOf(page, title)).toBeVisible();
+      await expectClean();
+      await page.keyboard.press('Escape');
+      await expect(page.getByRole('dialog')).toBeHidden();
+    });
+
+  test('the dialog about the program', async () => {
+    await press(page, 'Shift+A');
+    await expect(page.getByRole('dialog')).toBeVisible();
+    await expectClean();
+    await page.keyboard.press('Escape');
+  });
+
+  test('the dialog of a figure', async () => {
+    await figureButton(page, 'rmssd_ms').first().click();
+    await expect(page.getByRole('dialog')).toBeVisible();
+    await expectClean();
+    await page.keyboard.press('Escape');
+  });
+
+  test('the report', async () => {
+    await press(page, 'Shift+R');
+    await expect(page.getByRole('article', { name: 'Report' })).toBeVisible({ timeout: LONG_MS });
+    await expectClean();
+    await press(page, 'Shift+R');
+  });
+
+  test('the start screen with kept sessions, and the dialog that asks for the same file', async () => {
+    const { bytes } = await downloadSession(page);
+    await press(page, 'Shift+Q');
+    await expect(page.getByRole('main')).toContainText('edit');
+    await expectClean();
+    await chooseFile(page, {
+      name: 'kept.bicadence.json',
+      mimeType: 'application/json',
+      buffer: bytes,
+    });
+    await expect(dialogOf(page, /same file/i)).toBeVisible();
+    await expectClean();
+    await page.keyboard.press('Escape');
+  });
+});

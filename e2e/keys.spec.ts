@@ -1,0 +1,295 @@
+import { expect, type Page, test } from 'playwright/test';
+import { COMMANDS } from '../src/app/commands';
+import { keyWords } from '../src/app/key-names';
+import {
+  bar,
+  dialogOf,
+  editNumber,
+  expectNoTroubles,
+  findings,
+  freshPage,
+  goTo,
+  keptHere,
+  openStudy,
+  pane,
+  press,
+  reviewAs,
+  settled,
+  told,
+  undoName,
+  words,
+} from './support';
+import { windowOf } from './support-drawing';
+import { downloaded } from './support-results';
+
+let page: Page;
+test.beforeAll(async ({ browser }) => {
+  page = await freshPage(browser);
+  await openStudy(page);
+  await reviewAs(page);
+});
+test.afterAll(() => page.context().close());
+test.afterEach(() => expectNoTroubles(page));
+
+/** What a person sees of the page, by name. */
+const SIGHTS = {
+  dialog: async () => {
+    const open = page.getByRole('dialog');
+    if ((await open.count()) === 0) return '';
+    return words(await open.getByRole('heading', { level: 2 }).textContent());
+  },
+  seconds: () => told(page, 'Seconds'),
+  minutes: () => told(page, 'Minutes'),
+  undo: () => undoName(page),
+  status: async () => words(await page.locator('.foot-status').textContent()),
+  chosen: async () => {
+    const pressed = pane(page, 'Seconds').locator('button.pin[aria-pressed="true"]');
+    const names = await pressed.evaluateAll((all) =>
+      all.map((one) => one.getAttribute('aria-label')),
+    );
+    return names.join('; ');
+  },
+  span: async () => {
+    const group = page.getByRole('group', { name: /^Spoiled span / });
+    if ((await group.count()) === 0) return '';
+    const target = await group.getByLabel('excluded for').inputValue();
+    return `${await group.getAttribute('aria-label')} ${target}`;
+  },
+  bar: async () => words(await bar(page).textContent()),
+  theme: async () => words(await page.locator('html').getAttribute('data-theme')),
+  focus: () => page.evaluate(() => document.activeElement?.id ?? ''),
+  view: () => page.evaluate(() => window.location.hash),
+} satisfies Record<string, () => Promise<string>>;
+
+type Sight = keyof typeof SIGHTS;
+
+/** Keys to press first, what to look at, and what is to be seen after the command's key, or how its window moves. */
+type Check = readonly [before: string, sight: Sight, after: RegExp | WindowChange];
+type WindowChange = 'earlier' | 'later' | 'closer' | 'wider';
+
+const CHECKS: Readonly<Record<string, Check>> = {
+  roles: ['', 'dialog', /^Leads and their roles$/],
+  phases: ['', 'dialog', /^Phases and events$/],
+  protocol: ['', 'dialog', /^Meal and protocol$/],
+  settings: ['', 'dialog', /^Settings of the figures$/],
+  sign: ['', 'dialog', /^Sign$/],
+  reviewer: ['', 'dialog', /^Who reviews\?$/],
+  'go-to': ['', 'dialog', /^Go to a time$/],
+  keys: ['', 'dialog', /^Keys$/],
+  about: ['', 'dialog', /Bicadence/],
+  report: ['', 'view', /^#report$/],
+  'detect-again': ['. Delete', 'undo', /^detect beats again$/],
+  undo: ['. v', 'undo', /^$/],
+  redo: ['. v Control+z', 'undo', /^class beat .* as V$/],
+  'hide-identity': ['', 'bar', /identity hidden/],
+  findings: ['', 'focus', /^findings$/],
+  theme: ['', 'theme', /^(light|dark)$/],
+  'seconds-left': ['', 'seconds', 'earlier'],
+  'seconds-right': ['', 'seconds', 'later'],
+  'seconds-page-left': ['', 'seconds', 'earlier'],
+  'seconds-page-right': ['', 'seconds', 'later'],
+  'seconds-in': ['', 'seconds', 'closer'],
+  'seconds-out': ['', 'seconds', 'wider'],
+  'minutes-left': ['i i', 'minutes', 'earlier'],
+  'minutes-right': ['i i', 'minutes', 'later'],
+  'minutes-in': ['', 'minutes', 'closer'],
+  'minutes-out': ['i i', 'minutes', 'wider'],
+  'usual-widths': ['i -', 'minutes', 'wider'],
+  'go-start': ['', 'seconds', /from 0:00:00 to 0:00:10\./],
+  'go-end': ['', 'seconds', /from 0:04:50 to 0:05:00\./],
+  'toggle-leads': ['', 'minutes', /E1, slow wave.*E3, slow wave/],
+  'next-row': ['', 'status', /^Row /],
+  'gain-up': ['r', 'status', /uV from middle to edge$/],
+  'gain-down': ['r', 'status', /uV from middle to edge$/],
+  'gain-fit': ['r Shift+ArrowUp Shift+ArrowUp', 'status', /uV from middle to edge$/],
+  'gain-same': ['r', 'status', /^All rows of the pane: \d+ uV/],
+  'next-beat': ['', 'chosen', /^beat [NSVFQ] at 0:00:3\d/],
+  'previous-beat': ['', 'chosen', /^beat [NSVFQ] at 0:00:[23]\d/],
+  'beats-in-view': ['', 'chosen', /^(beat .*; ){10,}/],
+  'clear-selection': ['.', 'chosen', /^$/],
+  'add-beat': ['', 'undo', /^(add|place) beat at 0:00:/],
+  'delete-selected': ['.', 'undo', /^delete beat at 0:00:/],
+  'class-N': ['. v', 'undo', / as N$/],
+  'class-S': ['.', 'undo', / as S$/],
+  'class-V': ['.', 'undo', / as V$/],
+  'class-F': ['.', 'undo', / as F$/],
+  'class-Q': ['.', 'undo', / as Q$/],
+  'beat-sample-left': ['.', 'undo', /^move beat at 0:00:/],
+  'beat-sample-right': ['.', 'undo', /^move beat at 0:00:/],
+  'beat-10-left': ['.', 'undo', /^move beat at 0:00:/],
+  'beat-10-right': ['.', 'undo', /^move beat at 0:00:/],
+  'toggle-tool': ['', 'status', /^Dragging excludes a stretch$/],
+  'exclude-seconds': ['', 'span', /0:00:2\d.* to 0:00:3\d.* both$/],
+  'next-span': ['Control+e Escape Home', 'span', /^Spoiled span 0:00:2\d/],
+  'previous-span': ['Control+e Escape End', 'span', /^Spoiled span 0:00:2\d/],
+  'span-for-stomach': ['Control+e', 'span', / stomach$/],
+  'span-for-heart': ['Control+e', 'span', / heart$/],
+  'span-for-both': ['Control+e 1', 'span', / both$/],
+};
+
+/** Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. */
+const ELSEWHERE = [
+  'open-file',
+  'open-session',
+  'open-demo',
+  'close-study',
+  'download-session',
+  'download-results',
+  'stop',
+];
+
+/** A key of the table as Playwright presses it. */
+const pressed = (name: string): string => {
+  const plain = name.replace('Ctrl+', 'Control+');
+  return /^[A-Z]$/.test(plain) || /^Control\+[A-Z]$/.test(plain)
+    ? plain.replace(/[A-Z]$/, (letter) => letter.toLowerCase())
+    : plain;
+};
+
+/** Back to where each check begins: no dialog, no selection, nothing undone is left, Seconds about 0:31. */
+async function begin(): Promise<void> {
+  if (page.url().endsWith('#report')) await press(page, 'Shift+R');
+  for (let i = 0; i < 3 && (await SIGHTS.dialog()) !== ''; i += 1) await press(page, 'Escape');
+  while ((await SIGHTS.undo()) !== '') await press(page, 'Control+z');
+  await press(page, 'Escape');
+  await goTo(page, '0:31');
+  await press(page, 'w');
+}
+
+function expectMoved(before: string, after: string, way: WindowChange): void {
+  const [from, to] = [windowOf(before), windowOf(after)];
+  if (way === 'earlier') expect(to[0]).toBeLessThan(from[0]);
+  if (way === 'later') expect(to[0]).toBeGreaterThan(from[0]);
+  if (way === 'closer') expect(to[1] - to[0]).toBeLessThan(from[1] - from[0]);
+  if (way === 'wider') expect(to[1] - to[0]).toBeGreaterThan(from[1] - from[0]);
+}
+
+test('the keys page lists every command with its keys', async () => {
+  await press(page, '?');
+  const dialog = dialogOf(page, 'Keys');
+  for (const command of COMMANDS) {
+    const row = dialog.locator('.keys-list > div', {
+      has: page.locator('dt', { hasText: command.words }),
+    });
+    for (const key of command.keys)
+      await expect(row.first().getByText(keyWords(key), { exact: true })).toBeVisible();
+  }
+  await press(page, 'Escape');
+});
+
+test('every command is tested here', () => {
+  const ids = COMMANDS.map(({ id }) => id);
+  expect([...Object.keys(CHECKS), ...ELSEWHERE].sort()).toEqual([...ids].sort());
+});
+
+for (const command of COMMANDS.filter(({ id }) => id in CHECKS))
+  test(`${command.words}: ${command.keys.join(', ')}`, async () => {
+    const [prepare, sight, wanted] = CHECKS[command.id];
+    for (const key of command.keys) {
+      await begin();
+      for (const one of prepare.split(' ').filter((part) => part !== '')) await press(page, one);
+      const before = await SIGHTS[sight]();
+      await press(page, pressed(key));
+      if (typeof wanted === 'string') expectMoved(before, await SIGHTS[sight](), wanted);
+      else {
+        await expect.poll(SIGHTS[sight]).toMatch(wanted);
+        if (sight !== 'theme') expect(await SIGHTS[sight]()).not.toBe(before);
+      }
+      if (/^(theme|toggle-tool|hide-identity|toggle-leads)$/.test(command.id))
+        await press(page, pressed(key));
+    }
+    await begin();
+  });
+
+test('files are given and asked for by keys', async () => {
+  const session = await downloaded(page, () => page.keyboard.press('Control+s'));
+  expect(session.name).toMatch(/\.bicadence\.json$/);
+  const results = await downloaded(page, () => page.keyboard.press('Control+Shift+s'));
+  expect(results.name).toMatch(/-results\.zip$/);
+  for (const key of ['Control+o', 'Control+Shift+o']) {
+    const chooser = page.waitForEvent('filechooser');
+    await page.keyboard.press(key);
+    await (await chooser).setFiles([]);
+  }
+});
+
+test('no key acts while a person types in a field', async () => {
+  await begin();
+  await press(page, 'Control+e');
+  const edit = await editNumber(page);
+  const note = findings(page).getByLabel('note');
+  await note.click();
+  const place = await told(page, 'Seconds');
+  for (const key of 'nsvfqaehgwiorl.,+-=?0123') await page.keyboard.press(key);
+  for (const key of ['ArrowLeft', 'ArrowRight', 'Home', 'End', 'Delete', 'Backspace', 'Shift+Q'])
+    await page.keyboard.press(key);
+  await settled(page);
+  expect(await SIGHTS.dialog()).toBe('');
+  expect(await told(page, 'Seconds')).toBe(place);
+  expect(await editNumber(page)).toBe(edit);
+  await note.fill('one edit, not one a letter');
+  await note.press('Enter');
+  await keptHere(page, edit + 1);
+  await begin();
+});
+
+test('keys of a single character can be turned off; the others go on', async () => {
+  await press(page, '?');
+  const box = dialogOf(page, 'Keys').getByRole('checkbox');
+  await box.uncheck();
+  await page.keyboard.press('Escape');
+  await press(page, '.');
+  expect(await SIGHTS.chosen()).toBe('');
+  await press(page, 'Control+a');
+  expect(await SIGHTS.chosen()).not.toBe('');
+  await press(page, 'F1');
+  await box.check();
+  await page.keyboard.press('Escape');
+  await press(page, 'Escape');
+});
+
+test('Tab reaches every control in sight, and always shows where it is', async () => {
+  await begin();
+  const controls = await page.evaluate(() => {
+    const all = document.querySelectorAll<HTMLElement>('button, select, input, summary, a[href]');
+    let count = 0;
+    for (const one of all) {
+      if (!one.checkVisibility({ visibilityProperty: true }) || one.tabIndex < 0) continue;
+      if (one.matches(':disabled')) continue;
+      one.dataset.wanted = String(count);
+      count += 1;
+    }
+    return count;
+  });
+  const reached = new Set<string>();
+  await page.locator('body').focus();
+  for (let i = 0; i < controls + 20 && reached.size < controls; i += 1) {
+    await page.keyboard.press('Tab');
+    const one = await page.evaluate(() => {
+      const { activeElement } = document;
+      if (!(activeElement instanceof HTMLElement)) return null;
+      const { outlineStyle, boxShadow } = getComputedStyle(activeElement);
+      const shown = outlineStyle !== 'none' || boxShadow !== 'none';
+      return { wanted: activeElement.dataset.wanted ?? '', shown, text: activeElement.outerHTML };
+    });
+    if (!one || one.wanted === '') continue;
+    reached.add(one.wanted);
+    expect(one.shown, `focus is seen on ${one.text.slice(0, 120)}`).toBe(true);
+  }
+  const missed = await page.evaluate(
+    (seen) =>
+      [...document.querySelectorAll<HTMLElement>('[data-wanted]')]
+        .filter((one) => !seen.includes(one.dataset.wanted ?? ''))
+        .map((one) => one.outerHTML.slice(0, 120)),
+    [...reached],
+  );
+  expect(missed).toEqual([]);
+});
+
+test('the demo study opens and a study closes by keys', async () => {
+  await press(page, 'Shift+Q');
+  await expect(page.getByRole('heading', { name: 'Open a recording' })).toBeVisible();
+  await page.keyboard.press('Shift+M');
+  await expect(page.getByRole('dialog')).toContainText(/invented/i, { timeout: 60_000 });
+  await page.keyboard.press('Escape');
+});
