@@ -203,7 +203,7 @@ test.describe('by keyboard', () => {
   for (const beatClass of ['S', 'V', 'F', 'Q'])
     test(`a beat is put in class ${beatClass}`, async () => {
       const name = new RegExp(`^class beat at 0:00:.* as ${beatClass}$`);
-      await expectSeen(name, () => press(page, beatClass.toLowerCase()));
+      await expectOneStep(name, () => press(page, beatClass.toLowerCase()));
       await press(page, 'Control+Shift+z');
       await expect(beat.pin).toHaveAccessibleName(new RegExp(`^beat ${beatClass} `));
       await press(page, 'n');
