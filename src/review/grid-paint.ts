@@ -71,11 +71,14 @@ function paintPhases(brush: CanvasRenderingContext2D, scene: GridScene): void {
     const left = Math.max(0, xOf(fromS)) + 5;
     const room = Math.min(widthPx, xOf(toS)) - left;
     if (room > brush.measureText(name).width)
-      brush.fillText(name, left, topPx - headPx + headPx / 2 + 1);
+      brush.fillText(name, left, topPx - headPx + NAME_Y_PX);
   }
 }
 
 const EVENT_TEXT_PX = 120;
+/** Names of phases stand in the upper half of the head, events in the lower one. */
+const NAME_Y_PX = 8;
+const EVENT_UP_PX = 6;
 
 /** Events: a tick over all rows, and the text beside it as far as it reaches before the next one. */
 function paintEvents(brush: CanvasRenderingContext2D, scene: GridScene): void {
@@ -94,7 +97,7 @@ function paintEvents(brush: CanvasRenderingContext2D, scene: GridScene): void {
     brush.stroke();
     const next = seen.at(i + 1);
     const room = Math.min(next ? xOf(next.atS) : widthPx, x + EVENT_TEXT_PX) - x - 8;
-    brush.fillText(fitted(brush, text, room), x + 3, topPx - 6);
+    brush.fillText(fitted(brush, text, room), x + 3, topPx - EVENT_UP_PX);
   });
   brush.setLineDash([]);
 }
