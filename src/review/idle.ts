@@ -29,3 +29,5 @@ export function asWork<T>(work: Promise<T>): Promise<T> {
 
 /** True while nothing is under way. */
 export const isIdle = (): boolean => outstanding === 0;
+
+tell();
