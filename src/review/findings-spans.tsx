@@ -103,18 +103,13 @@ function SpanRow({ span, selected, session, view, onEdit }: SpanRowProps) {
   };
   return (
     <li className={selected ? 'span-row selected' : 'span-row'}>
-      <button
-        type="button"
-        className="span-pick"
-        aria-expanded={selected}
-        aria-label={`${stretch}, ${span.cause}, for ${targetWords(span)}, ${span.origin}: go there`}
-        onClick={pick}
-      >
+      <button type="button" className="span-pick" aria-expanded={selected} onClick={pick}>
         <span className="go">{stretch}</span>
         <span>
           {span.cause}, {targetWords(span)}
         </span>
         <span className="quiet small">{span.origin}</span>
+        <span className="unseen">: go there</span>
       </button>
       {selected ? (
         <SpanEdit span={span} onChange={change} onRemove={remove} />

@@ -148,7 +148,7 @@ function SpanRows({ stores, commands }: TableProps) {
       <caption>Spoiled spans</caption>
       <thead>
         <tr>
-          {['from', 'to', 'not for', 'cause', 'lead', 'origin', ''].map((name) => (
+          {['from', 'to', 'excluded for', 'cause', 'lead', 'origin', 'place'].map((name) => (
             <th scope="col" key={name}>
               {name}
             </th>
