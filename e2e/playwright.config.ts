@@ -13,6 +13,7 @@ export default defineConfig({
   fullyParallel: false,
   workers: 1,
   forbidOnly: true,
+  retries: process.env.CI ? 1 : 0,
   reporter: [['list'], ['json', { outputFile: '../node_modules/.cache/e2e-results.json' }]],
   use: {
     baseURL: `http://127.0.0.1:${PORT}/`,
