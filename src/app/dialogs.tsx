@@ -1,4 +1,5 @@
 import { lazy, Suspense } from 'react';
+import { asWork } from '../review/idle';
 import { useShell } from './app-context';
 import type { PageActs } from './command';
 import { IdentityDialog } from './identity-dialog';
@@ -9,7 +10,7 @@ type Later = typeof import('./later-dialogs');
 
 /** A dialog that is fetched when it is opened first, since most visits open few of them. */
 const later = <K extends keyof Later>(name: K) =>
-  lazy<Later[K]>(() => import('./later-dialogs').then((all) => ({ default: all[name] })));
+  lazy<Later[K]>(() => asWork(import('./later-dialogs')).then((all) => ({ default: all[name] })));
 
 const AboutDialog = later('AboutDialog');
 const FigureDialog = later('FigureDialog');
