@@ -179,6 +179,12 @@ test.describe('with a recording open', () => {
     await dialog.getByRole('button', { name: 'Do not open' }).click();
     await expect(bar(page)).toContainText(RECORD_CODE);
     expect(await allFigures(page)).toEqual(before);
+    await chooseFile(page, namedRecord());
+    await expect(dialog).toBeVisible();
+    await page.keyboard.press('Escape');
+    await expect(dialog).toBeHidden();
+    expect(await allFigures(page)).toEqual(before);
+    await expectDrawn(page, 'Seconds');
   });
 });
 
@@ -202,16 +208,5 @@ test('the demo study says that it is invented wherever it is seen', async ({ bro
   await agree(page);
   await figuresThere(page);
   expectNoTroubles(page);
-  await page.context().close();
-});
-
-test('the open study stays while a dialog of another is left by Escape', async ({ browser }) => {
-  const page = await freshPage(browser);
-  await openStudy(page);
-  await chooseFile(page, namedRecord());
-  await expect(dialogOf(page, IDENTITY)).toBeVisible({ timeout: LONG_MS });
-  await page.keyboard.press('Escape');
-  await expect(bar(page)).toContainText(RECORD_CODE);
-  await expectDrawn(page, 'Seconds');
   await page.context().close();
 });
