@@ -6,6 +6,7 @@ import {
   expectNoTroubles,
   figure,
   figureButton,
+  findings,
   freshPage,
   goTo,
   pane,
@@ -227,25 +228,28 @@ test.describe('settings', () => {
     expect(await told(page, 'Minutes')).toBe(before);
   });
 
-  test('stopping the work leaves the study as it was and usable', async () => {
-    const before = await allFigures(page);
-    const dialog = await open();
-    for (const route of await dialog.getByLabel('Route', { exact: true }).all())
-      await route.selectOption('fractional');
-    await dialog.getByRole('button', { name: 'Use these settings' }).click();
-    const work = page.getByRole('region', { name: 'Work under way' });
-    await work.waitFor();
-    await work.getByRole('button', { name: 'Stop' }).click();
-    await expect(page.getByRole('region', { name: 'Messages' })).toContainText('Stopped.');
-    await expect(work).toBeHidden();
-    await goTo(page, '0:20:00');
-    await expectDrawn(page, 'Seconds');
-    if ((await undoName(page)) === 'change settings') await press(page, 'Control+z');
-    expect(await allFigures(page)).toEqual(before);
-    await press(page, '.');
-    await press(page, 'v');
-    expect(await undoName(page)).toMatch(/^class beat at 0:(19|20):/);
-    await press(page, 'Control+z');
-    expect(await allFigures(page)).toEqual(before);
-  });
+  for (const way of ['button', 'key'] as const)
+    test(`stopping the work by its ${way} leaves the study as it was and usable`, async () => {
+      const before = await allFigures(page);
+      const dialog = await open();
+      for (const route of await dialog.getByLabel('Route', { exact: true }).all())
+        await route.selectOption('fractional');
+      await dialog.getByRole('button', { name: 'Use these settings' }).click();
+      const work = page.getByRole('region', { name: 'Work under way' });
+      await work.waitFor();
+      if (way === 'key') await page.keyboard.press('Shift+X');
+      else await work.getByRole('button', { name: 'Stop' }).click();
+      await expect(page.getByRole('region', { name: 'Messages' })).toContainText('Stopped.');
+      await expect(work).toBeHidden();
+      await expect(findings(page).getByRole('status')).not.toContainText('updating');
+      if ((await undoName(page)) === 'change settings') await press(page, 'Control+z');
+      expect(await allFigures(page)).toEqual(before);
+      await goTo(page, '0:20:00');
+      await expectDrawn(page, 'Seconds');
+      await press(page, '.');
+      await press(page, 'v');
+      expect(await undoName(page)).toMatch(/^class beat at 0:(19|20):/);
+      await press(page, 'Control+z');
+      expect(await allFigures(page)).toEqual(before);
+    });
 });
