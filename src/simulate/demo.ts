@@ -109,7 +109,7 @@ export const DEMO_SPEC: SimulationSpec = {
       [90, 175],
     ),
     amplitudeWander: 0.15,
-    secondHarmonic: 0.18,
+    harmonics: [0.18],
   },
   heart: {
     rateBpm: points([0, 66], [25, 62], [31, 71], [40, 75], [55, 72], [90, 68]),

@@ -8,19 +8,27 @@ import type { LeadSpec, NoiseSpec } from './spec';
 /** Correlation times of the processes whose sum falls about as 1/f from 0.002 to 0.2 Hz, in s. */
 const BACKGROUND_TIMES_S = [1, 4, 16, 64];
 
-/** Adds what is slow to the coarse values of a lead: background like 1/f, and electrode drift that settles. */
-export function addSlowNoise(
+/** Adds the background like 1/f to the coarse values of a lead. */
+export function addBackground(
   coarse: Float64Array,
   spec: NoiseSpec,
-  lead: LeadSpec,
   grid: CoarseGrid,
   random: Random,
 ): void {
   const each = spec.backgroundUv / Math.sqrt(BACKGROUND_TIMES_S.length);
   for (const timeS of BACKGROUND_TIMES_S) addWander(coarse, random, each, timeS, grid.stepS);
-  if (lead.driftUv !== 0)
-    for (let i = 0; i < grid.points; i += 1)
-      coarse[i] += lead.driftUv * exp((-i * grid.stepS) / spec.driftS);
+}
+
+/** Adds the electrodes' drift, which settles, to the coarse values of a lead. */
+export function addDrift(
+  coarse: Float64Array,
+  spec: NoiseSpec,
+  lead: LeadSpec,
+  grid: CoarseGrid,
+): void {
+  if (lead.driftUv === 0) return;
+  for (let i = 0; i < grid.points; i += 1)
+    coarse[i] += lead.driftUv * exp((-i * grid.stepS) / spec.driftS);
 }
 
 /** Adds white and muscle noise to samples; `muscleUv` is the root mean square of the latter at each coarse point. */

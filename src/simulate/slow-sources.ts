@@ -4,7 +4,7 @@ import { addWander, type CoarseGrid, cyclesOf, trackOnGrid } from './coarse-grid
 import type { BreathingSpec, LeadSpec, SlowWaveSpec } from './spec';
 
 const TWO_PI = 2 * Math.PI;
-/** Phase of the second harmonic at the fundamental's rising zero, in cycles: the wave falls faster than it rises. */
+/** Phase of harmonic k at the fundamental's rising zero, in cycles for each of k - 1: the wave falls faster than it rises. */
 const HARMONIC_CYCLES = 0.1;
 const LEAST_CPM = 0.2;
 
@@ -13,7 +13,7 @@ export interface SlowWave {
   readonly frequencyCpm: Float64Array;
   readonly cycles: Float64Array;
   readonly amplitudeUv: Float64Array;
-  readonly secondHarmonic: number;
+  readonly harmonics: readonly number[];
 }
 
 /** Frequency, phase and amplitude of a slow wave over time. */
@@ -29,18 +29,19 @@ export function slowWave(spec: SlowWaveSpec, grid: CoarseGrid, random: Random): 
     frequencyCpm,
     cycles: cyclesOf(frequencyCpm, grid),
     amplitudeUv,
-    secondHarmonic: spec.secondHarmonic,
+    harmonics: spec.harmonics,
   };
 }
 
 /** The slow wave as a lead sees it: its gain, and later by its delay at the frequency of the moment. */
 export function slowWaveOnLead(wave: SlowWave, lead: LeadSpec): Float64Array {
-  const { cycles, frequencyCpm, amplitudeUv, secondHarmonic } = wave;
+  const { cycles, frequencyCpm, amplitudeUv, harmonics } = wave;
   const values = new Float64Array(cycles.length);
   for (let i = 0; i < values.length; i += 1) {
     const place = cycles[i] - (frequencyCpm[i] / 60) * lead.slowDelayS;
     let shape = sineOf(place);
-    if (secondHarmonic !== 0) shape += secondHarmonic * sineOf(2 * place + HARMONIC_CYCLES);
+    for (let k = 0; k < harmonics.length; k += 1)
+      shape += harmonics[k] * sineOf((k + 2) * place + (k + 1) * HARMONIC_CYCLES);
     values[i] = lead.slowGain * amplitudeUv[i] * shape;
   }
   return values;

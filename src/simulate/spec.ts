@@ -37,8 +37,11 @@ export interface SlowWaveSpec {
   readonly amplitudeUv: Track;
   /** Standard deviation of a slow random change of amplitude, as a share of it. */
   readonly amplitudeWander: number;
-  /** Amplitude of the second harmonic as a share of the fundamental. */
-  readonly secondHarmonic: number;
+  /**
+   * Amplitudes of the second, third ... harmonic as shares of the fundamental; empty for a sine. 1/2, 1/3, 1/4 ... is a
+   * sawtooth.
+   */
+  readonly harmonics: readonly number[];
 }
 
 export interface HeartSpec {
@@ -128,7 +131,7 @@ export const PLAIN_STUDY: SimulationSpec = {
     wanderS: 120,
     amplitudeUv: 150,
     amplitudeWander: 0,
-    secondHarmonic: 0.15,
+    harmonics: [0.15],
   },
   heart: {
     rateBpm: 66,

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { simulateStudy } from '../../src/simulate/simulate-study';
+import { SOURCES, simulateSources, simulateStudy } from '../../src/simulate/simulate-study';
 import {
   type HeartSpec,
   PLAIN_LEAD,
@@ -79,7 +79,7 @@ describe('its slow wave', () => {
       ...SLOW,
       frequencyCpm: 3,
       amplitudeUv: 100,
-      secondHarmonic: 0,
+      harmonics: [],
     };
     const { signals, truth } = simulateStudy({ ...ONLY, slowWave });
     for (let n = 0; n < signals[0].length; n += 97)
@@ -89,7 +89,7 @@ describe('its slow wave', () => {
   });
 
   it('arrives later, smaller or turned round on another lead', () => {
-    const slowWave: SlowWaveSpec = { ...SLOW, secondHarmonic: 0.2 };
+    const slowWave: SlowWaveSpec = { ...SLOW, harmonics: [0.2] };
     const leads = [PLAIN_LEAD, { ...PLAIN_LEAD, slowGain: -0.5, slowDelayS: 4 }];
     const { signals } = simulateStudy({ ...ONLY, leads, slowWave });
     for (let n = 1000; n < 100_000; n += 997)
@@ -102,7 +102,7 @@ describe('its slow wave', () => {
       { atS: 300, value: 4 },
       { atS: 600, value: 4 },
     ];
-    const slowWave: SlowWaveSpec = { ...SLOW, frequencyCpm: track, secondHarmonic: 0 };
+    const slowWave: SlowWaveSpec = { ...SLOW, frequencyCpm: track, harmonics: [] };
     const [signal] = simulateStudy({ ...ONLY, slowWave }).signals;
     let crossings = 0;
     for (let n = 1; n < signal.length; n += 1)
@@ -255,5 +255,51 @@ describe('its spoiled stretches', () => {
     expect(inside(spoil('flat', 0).signals[1]).size).toBe(1);
     expect([...inside(spoil('rail', 1).signals[1])]).toEqual([3276.7]);
     expect([...inside(spoil('rail', -1).signals[1])]).toEqual([-3276.7]);
+  });
+});
+
+describe('its sources', () => {
+  it('kept apart add up to the lead that is rounded', () => {
+    const spec: SimulationSpec = {
+      ...PLAIN_STUDY,
+      leads: [PLAIN_LEAD, { ...PLAIN_LEAD, heartAxisDeg: 150, driftUv: -300 }],
+      artefacts: [{ cause: 'move', fromS: 100, toS: 130, leads: [1], sizeUv: 300 }],
+      digitiser: null,
+    };
+    const { signals, truth } = simulateStudy(spec);
+    const apart = simulateSources(spec);
+    expect(apart.truth).toEqual(truth);
+    apart.leads.forEach((lead, k) => {
+      for (let n = 0; n < signals[k].length; n += 1) {
+        const sum = SOURCES.reduce((total, source) => total + lead[source][n], 0);
+        if (Math.abs(sum - signals[k][n]) > 1e-9) throw new Error(`lead ${k}, sample ${n}`);
+      }
+      for (const source of SOURCES)
+        expect(rms(lead[source]) > 0, source).toBe(!(k === 0 && /drift|artefacts/.test(source)));
+    });
+  });
+
+  it('of the slow wave is a sawtooth where its harmonics are those of one: 6 and 9.5 dB down', () => {
+    const slowWave: SlowWaveSpec = { ...SLOW, frequencyCpm: 3, harmonics: [1 / 2, 1 / 3] };
+    const [lead] = simulateSources({ ...ONLY, rateHz: 25, slowWave }).leads;
+    const [one, two, three] = [0.05, 0.1, 0.15].map((hz) => amplitudeAt(lead['slow wave'], hz, 25));
+    expect(20 * Math.log10(two / one)).toBeCloseTo(-6.02, 1);
+    expect(20 * Math.log10(three / one)).toBeCloseTo(-9.54, 1);
+  });
+
+  it('of the background fall about as 1/f from 0.005 to 0.2 Hz and have the size asked for', () => {
+    const noise = { ...SILENCE, backgroundUv: 20 };
+    const [lead] = simulateSources({ ...ONLY, durationS: 14_400, rateHz: 1, noise }).leads;
+    expect(rms(lead.background)).toBeGreaterThan(16);
+    expect(rms(lead.background)).toBeLessThan(24);
+    const powerAbout = (hz: number) => {
+      let sum = 0;
+      for (let k = 0; k < 60; k += 1)
+        sum += amplitudeAt(lead.background, hz * (0.7 + 0.01 * k), 1) ** 2;
+      return sum;
+    };
+    const slope = Math.log(powerAbout(0.1) / powerAbout(0.01)) / Math.log(10);
+    expect(slope).toBeGreaterThan(-1.35);
+    expect(slope).toBeLessThan(-0.65);
   });
 });
