@@ -8,8 +8,8 @@ export function binHz(rateHz: number, size: number): number {
   return rateHz / size;
 }
 
-/** Full interleaved spectrum of real values. */
-function realSpectrum(x: Float64Array): Float64Array {
+/** Full interleaved spectrum of real values, any number of them from 1. */
+export function realSpectrum(x: Float64Array): Float64Array {
   const out = new Float64Array(2 * x.length);
   if (isPowerOfTwo(x.length) && x.length > 1) {
     sharedFft(x.length).forwardReal(x, out);
@@ -60,7 +60,8 @@ export interface WelchOptions {
   readonly detrend: 'none' | 'mean' | 'line';
 }
 
-function detrended(segment: Float64Array, kind: WelchOptions['detrend']): Float64Array {
+/** A segment less its mean or its fitted line; the same array where nothing is taken off. */
+export function detrended(segment: Float64Array, kind: WelchOptions['detrend']): Float64Array {
   if (kind === 'none') return segment;
   if (kind === 'line') return removeLine(segment);
   const level = mean(segment);

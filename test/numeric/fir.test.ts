@@ -10,15 +10,24 @@ import {
 import { cascadeKernels, centredKernel, kernelResponse } from '../../src/numeric/kernel';
 import { amplitudeDb } from '../../src/numeric/windows';
 import reference from '../reference/numeric-filters.json';
+import octave from '../reference/numeric-octave.json';
 import { filteredByDefinition, largestDifference, noise } from './signals';
 
-// Reference: scipy.signal.firwin and numpy, test/reference/numeric-filters.py.
+// Reference: scipy.signal.firwin and numpy, test/reference/numeric-filters.py; kaiserord, kaiser
+// and conv of Octave, test/reference/numeric-octave.m.
 
 describe('Kaiser windowed-sinc taps', () => {
   it('of a low-pass are those of scipy.signal.firwin', () => {
     const [rateHz, passHz, stopHz, attenuationDb] = reference.lowPass.spec;
     const taps = lowPassTaps({ rateHz, passHz, stopHz, attenuationDb });
     expect(largestDifference(taps, reference.lowPass.taps)).toBeLessThan(1e-15);
+  });
+
+  it('of a low-pass, and the signal filtered by them, are Octave’s', () => {
+    const taps = lowPassTaps({ rateHz: 250, passHz: 40, stopHz: 45, attenuationDb: 60 });
+    expect(largestDifference(taps, octave.fir.taps)).toBeLessThan(1e-14);
+    const y = convolveSame(Float64Array.from(octave.fir.x), taps, 'zero');
+    expect(largestDifference(y, octave.fir.y)).toBeLessThan(1e-12);
   });
 
   it('of a band-pass are those of firwin but for the exact zero at 0 Hz', () => {

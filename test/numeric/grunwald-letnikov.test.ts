@@ -7,10 +7,12 @@ import {
 } from '../../src/numeric/grunwald-letnikov';
 import { reciprocalGamma } from '../../src/numeric/special';
 import reference from '../reference/numeric-filters.json';
+import fixed from '../reference/numeric-instants.json';
 import { largestDifference, sine } from './signals';
 
 // Exact values: Oldham & Spanier 1974, D^a t^n = Gamma(n+1)/Gamma(n+1-a) t^(n-a). Weights and
-// responses: mpmath and numpy, test/reference/numeric-filters.py.
+// responses: mpmath and numpy, test/reference/numeric-filters.py. Fixed memory: scipy.signal.lfilter
+// with weights, gain and phase of mpmath, test/reference/numeric-instants.py.
 
 const STEP = 0.01;
 const ramp = Float64Array.from({ length: 401 }, (_, i) => i * STEP);
@@ -70,6 +72,25 @@ describe('the half derivative', () => {
     expect(y[60]).toBeCloseTo(grunwaldLetnikovWeights(0.5, 51)[50], 14);
     expect(Math.abs(y[61])).toBeLessThan(1e-15);
     expect(grunwaldLetnikov(new Float64Array(0), 0.5, 1).length).toBe(0);
+  });
+});
+
+describe('the operator of fixed memory', () => {
+  it.each(fixed.glMemory)('of $memory samples, order $order, is scipy’s filter', (entry) => {
+    const { x, y, order, step, memory } = entry;
+    const got = grunwaldLetnikov(Float64Array.from(x), order, step, memory);
+    const size = Math.max(...y.map(Math.abs));
+    expect(largestDifference(got, y) / size).toBeLessThan(1e-12);
+  });
+
+  it.each(fixed.glMemory)('of $memory samples, order $order, has mpmath’s gain', (entry) => {
+    const { order, step, memory, response } = entry;
+    const scale = step ** -order;
+    for (const [freqHz, re, im] of response) {
+      const got = grunwaldLetnikovResponse(order, step, memory, freqHz);
+      expect(Math.abs(got.re - re) / scale).toBeLessThan(1e-12);
+      expect(Math.abs(got.im - im) / scale).toBeLessThan(1e-12);
+    }
   });
 });
 

@@ -1,6 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { createInstantSampler, instantCount } from '../../src/numeric/sample-at';
+import reference from '../reference/numeric-instants.json';
 import { blocksOf, largestDifference, noise, quickestMs, sine } from './signals';
+
+// Reference: scipy.signal.upfirdn and scipy.special.i0, test/reference/numeric-instants.py; elsewhere
+// the sums and waves written out below.
 
 const LOW = { outputRateHz: 4, passHz: 0.5, stopHz: 3, attenuationDb: 80 };
 
@@ -27,6 +31,16 @@ describe('a lead sampled at the output’s own instants', () => {
       // 80 dB: a ripple of 1e-4; at a few taps Kaiser's length formula falls short of its promise.
       expect(largestDifference(inside(y), inside(wanted))).toBeLessThan(rateHz < 10 ? 0.04 : 0.015);
       expect(y.length).toBe(instantCount(length, rateHz, 4));
+    },
+  );
+
+  it.each(reference.instants)(
+    'of $rate Hz at $outputRate Hz is scipy’s low-pass at those instants, ends included',
+    ({ rate, outputRate, x, y }) => {
+      const options = { ...reference.design, outputRateHz: outputRate };
+      const got = sampled(Float64Array.from(x), rate, [117], options);
+      const size = Math.max(...y.map(Math.abs));
+      expect(largestDifference(got, y) / size).toBeLessThan(1e-9);
     },
   );
 

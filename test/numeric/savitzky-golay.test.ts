@@ -6,10 +6,12 @@ import {
   savitzkyGolayWeights,
 } from '../../src/numeric/savitzky-golay';
 import reference from '../reference/numeric-filters.json';
+import octave from '../reference/numeric-octave.json';
 import { largestDifference } from './signals';
 
 // Tables: Savitzky & Golay 1964, re-derived (field notes 3.3). Series: scipy.signal.savgol_filter,
-// mode 'interp'. Long windows: mpmath at 200 digits. test/reference/numeric-filters.py.
+// mode 'interp', and sgolayfilt of Octave. Long windows: mpmath at 200 digits.
+// test/reference/numeric-filters.py, numeric-octave.m.
 
 const over = (norm: number, ...integers: number[]) => integers.map((value) => value / norm);
 
@@ -69,6 +71,14 @@ describe('Savitzky-Golay smoothing', () => {
         entry.derivative,
       );
       expect(largestDifference(y, entry.y)).toBeLessThan(1e-11);
+    },
+  );
+
+  it.each(octave.savgol)(
+    'is Octave’s for window $window, order $order, derivative $derivative, ends included',
+    ({ x, y, window, order, derivative }) => {
+      const got = savitzkyGolay(Float64Array.from(x), window, order, derivative);
+      expect(largestDifference(got, y)).toBeLessThan(1e-11);
     },
   );
 

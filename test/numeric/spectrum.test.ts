@@ -3,10 +3,12 @@ import { lombScargle } from '../../src/numeric/lomb-scargle';
 import { localMaxima, logParabola } from '../../src/numeric/peaks';
 import { binHz, powerDensity, welch } from '../../src/numeric/spectrum';
 import { hannPeriodic } from '../../src/numeric/windows';
+import octave from '../reference/numeric-octave.json';
 import reference from '../reference/numeric-spectra.json';
 import { largestDifference, noise, quickestMs, sine } from './signals';
 
-// Reference: scipy.signal.periodogram, welch, lombscargle; test/reference/numeric-spectra.py.
+// Reference: scipy.signal.periodogram, welch, lombscargle, test/reference/numeric-spectra.py; pwelch
+// of Octave, test/reference/numeric-octave.m.
 
 const sum = (x: ArrayLike<number>) => Array.from(x).reduce((total, value) => total + value, 0);
 
@@ -64,6 +66,17 @@ describe('Welch spectrum', () => {
     });
     const scale = Math.max(...entry.density);
     expect(largestDifference(got, entry.density) / scale).toBeLessThan(1e-13);
+  });
+
+  it('is Octave’s', () => {
+    const got = welch(Float64Array.from(octave.pair.x), {
+      rateHz: 4,
+      taper: hannPeriodic(128),
+      step: 32,
+      size: 128,
+      detrend: 'none',
+    });
+    expect(largestDifference(got, octave.pair.density)).toBeLessThan(1e-13);
   });
 
   it('gives LF 200, HF 50 ms2 for 20 ms at 0.10 and 10 ms at 0.25 Hz (CV-28)', () => {
