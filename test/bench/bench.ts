@@ -2,6 +2,7 @@ import { mkdtemp, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
+import { accuracy } from './accuracy/accuracy';
 import { detection } from './detection';
 import { loadWords, machineFacts } from './machine';
 import type { Bench, Measured, Part } from './measured';
@@ -17,6 +18,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   pipeline,
   opening,
   'page-size': pageSize,
+  accuracy,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]

@@ -1,0 +1,109 @@
+import { type Detection, detectBeats } from '../../../src/heart/detect';
+import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
+import { type Interval, joinIntervals } from '../../../src/recording/span';
+import { createSeparation } from '../../../src/separate/separation';
+import { addEcgNoise } from '../../../src/simulate/ecg-noise';
+import { createRandom } from '../../../src/numeric/random';
+import { createSpoilWatch } from '../../../src/trust/spoil-watch';
+import { TICKS_PER_SAMPLE } from '../../../src/units/ticks';
+
+const PIECE = 16384;
+
+export interface LeadToScore {
+  /** In uV. */
+  readonly signal: Float64Array;
+  readonly rateHz: number;
+  readonly stepUv: number;
+  readonly railUv: number;
+}
+
+/** The usual height of an R peak in an abdominal mixture, in uV; null: the ECG as it was recorded. */
+export type Level = null | 100 | 50 | 25;
+export const LEVELS: readonly Level[] = [null, 100, 50, 25];
+export const levelWords = (level: Level) => (level === null ? 'as recorded' : `${level} uV`);
+
+const SLOW_UV = 200;
+const BREATH_UV = 60;
+
+/** An ECG with R peaks of `heightUv` scaled to a level and mixed with what an abdominal lead holds; all of it invented. */
+export function atLevel(ecg: LeadToScore, heightUv: number, level: Level, seed: number): LeadToScore {
+  if (level === null) return ecg;
+  const { rateHz } = ecg;
+  const random = createRandom(seed + 77_000);
+  const [slowCycle, breathCycle] = [random.uniform(), random.uniform()];
+  const signal = ecg.signal.map((uv, i) => {
+    const t = i / rateHz;
+    const slow = 2 * Math.PI * (0.05 * t + slowCycle);
+    return (
+      (uv * level) / heightUv +
+      SLOW_UV * (Math.sin(slow) + 0.2 * Math.sin(2 * slow + 0.6)) +
+      BREATH_UV * Math.sin(2 * Math.PI * (0.25 * t + breathCycle))
+    );
+  });
+  addEcgNoise(
+    signal,
+    rateHz,
+    {
+      wanderUv: 15,
+      muscleUv: 2.5,
+      burstsPerMin: 4,
+      burstUv: 14,
+      burstS: 2,
+      motionPerMin: 0,
+      motionUv: 0,
+      humUv: 20,
+      humHz: 50,
+      stepsPerHour: 0,
+      stepUv: 0,
+      popsPerHour: 0,
+      popUv: 0,
+    },
+    random,
+  );
+  const stepUv = 4000 / 65535;
+  return {
+    rateHz,
+    stepUv,
+    railUv: 2000,
+    signal: signal.map((uv) => Math.max(-2000, Math.min(2000, Math.round(uv / stepUv) * stepUv))),
+  };
+}
+
+export interface Found {
+  readonly timesS: readonly number[];
+  readonly detection: Detection;
+  /** Its own spoiled spans for the heart. */
+  readonly excluded: readonly Interval[];
+  readonly heartbeat: Float32Array;
+}
+
+/** Beats as the program finds them unaided: separation by the default route, its own spoiled spans, detection. */
+export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): Found {
+  const separation = createSeparation({
+    lead: '1',
+    rateHz,
+    sampleCount: signal.length,
+    settings: DEFAULT_SETTINGS,
+    wants: { slow: false, heart: true },
+  });
+  const watch = createSpoilWatch({ lead: '1', rateHz, railsUv: [-railUv, railUv], stepUv });
+  for (let from = 0; from < signal.length; from += PIECE) {
+    separation.push(signal.subarray(from, from + PIECE));
+    watch.push(signal.subarray(from, from + PIECE));
+  }
+  const { heart } = separation.finish();
+  if (!heart) throw new Error('the heartbeat was wanted');
+  const excluded = joinIntervals(watch.finish().filter(({ target }) => target !== 'stomach'));
+  const detection = detectBeats({
+    heartbeat: heart.heartbeat,
+    rateHz: heart.rateHz,
+    ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
+    excluded,
+  });
+  return {
+    timesS: Array.from(detection.beats.ticks, (tick) => tick / (TICKS_PER_SAMPLE * rateHz)),
+    detection,
+    excluded,
+    heartbeat: heart.heartbeat,
+  };
+}
