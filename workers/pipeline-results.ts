@@ -3,9 +3,9 @@ import { breathingFromLead } from '../src/heart/breathing';
 import { breathingFromBeats } from '../src/heart/breathing-from-beats';
 import type { Detection } from '../src/heart/detect';
 import { heartFigures } from '../src/heart/heart-figures';
-import { rrSeries } from '../src/heart/rr-series';
+import { beatTimes, rrSeries } from '../src/heart/rr-series';
 import { seenInPassing } from '../src/heart/seen-in-passing';
-import type { BeatList } from '../src/recording/beat';
+import { BEAT_CLASSES, type BeatList } from '../src/recording/beat';
 import type { SeenInPassing } from '../src/recording/figure';
 import type { BreathingSeries } from '../src/recording/heart-series';
 import { leadChannels, leadKey } from '../src/recording/lead';
@@ -47,6 +47,8 @@ export interface Computed {
   readonly stomach: readonly StomachAnalysis[];
   readonly heart: HeartResults | null;
   readonly breathing: BreathingSeries | null;
+  /** Heights of the normal beats, which breathing sways; null without a heart lead. */
+  readonly heights: BeatHeights | null;
   readonly findings: Analysis['findings'];
   readonly marks: Readonly<Record<'separation' | 'stomach' | 'heart', string>>;
 }
@@ -67,8 +69,15 @@ interface StomachInputs {
   readonly breathing: BreathingSeries | null;
 }
 
+/** Height of each normal beat in uV, NaN where it cannot be measured. */
+export interface BeatHeights {
+  readonly timesS: Float64Array;
+  readonly heightsUv: Float64Array;
+}
+
 /** The heart side before phases: intervals, breathing, what was seen. */
 interface HeartSide {
+  readonly heights: BeatHeights;
   readonly results: HeartResults;
   readonly breathing: BreathingSeries;
   readonly figuresOf: (part: Part) => ReturnType<typeof heartFigures>;
@@ -144,6 +153,7 @@ export function createResults(recording: Recording): Results {
         stomach,
         heart: heart?.results ?? null,
         breathing,
+        heights: heart?.heights ?? null,
         findings,
         marks: {
           separation: slow.map(identity).join() + rhythms,
@@ -210,8 +220,18 @@ function heartSideOf(from: HeartInputs, recording: Recording): HeartSide {
       timingSdMs,
     },
     breathing,
+    heights: normalHeights(beats, rateHz, heightsUv),
     figuresOf,
     seen: seenInPassing({ rr, beats, rateHz, blocked, segments }),
+  };
+}
+
+function normalHeights(beats: BeatList, rateHz: number, heightsUv: Float64Array): BeatHeights {
+  const normal = BEAT_CLASSES.indexOf('N');
+  const isNormal = (_: number, i: number) => beats.classes[i] === normal;
+  return {
+    timesS: beatTimes(beats, rateHz).filter(isNormal),
+    heightsUv: heightsUv.filter(isNormal),
   };
 }
 

@@ -3,13 +3,15 @@ import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
 import type { Recording, SignalSource } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
-import type { Span } from '../src/recording/span';
+import type { Interval, Span } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { createSeparation, redrawSlowWave, type Separation } from '../src/separate/separation';
+import { keptSamples } from '../src/stomach/kept-samples';
 import { createSpoilWatch, type SpoilWatch } from '../src/trust/spoil-watch';
 import { type BreathingSampler, createBreathingSampler } from './breathing-sampler';
 import type { Job } from './job';
 import { type LeadConsumer, type LeadToRead, passOverLeads } from './lead-pass';
+import { identity } from './remember';
 
 /** The stomach's usual rhythm, until a recording's own is known. */
 const USUAL_CPM = 3;
@@ -52,6 +54,26 @@ const heartMadeBy = ({ heartRoute, heartBandHz, fractional }: Settings): string 
         heartBandHz,
         { ...fractional, undoLead: false, slowWindowMs: 0 },
       ]);
+
+/** What a slow wave is drawn with. */
+export interface SlowWish {
+  /** Spoiled stretches that act on the stomach's figures of this lead. */
+  readonly spoiled: readonly Interval[];
+  readonly dfCpm?: number;
+  readonly breathing?: Float64Array | null;
+}
+
+/** All that a drawn slow wave depends on beside the parted lead. */
+function drawnByOf(
+  { slowRoute, slowBandCpm, slowGain, fractional }: Settings,
+  { spoiled, dfCpm, breathing }: Required<SlowWish>,
+): string {
+  return JSON.stringify(
+    slowRoute === 'band'
+      ? [slowBandCpm, slowGain, breathing && identity(breathing), spoiled]
+      : fractional.undoLead && dfCpm,
+  );
+}
 
 /** A slow wave under some settings, and what it was drawn from. */
 interface Drawn {
@@ -97,20 +119,31 @@ export class SignalStore {
     }
   }
 
-  /**
-   * The slow wave of a lead under the settings, shifted by the derivative's lead at `dfCpm` where they ask for it; throws
-   * where it was not provided.
-   */
-  slow(lead: Lead, settings: Settings, dfCpm = USUAL_CPM): SeparatedSlow {
-    const key = leadKey(lead);
+  /** The lead at the slow wave's rate, before any band; throws where it was not provided. */
+  recorded(lead: Lead): Pick<SeparatedSlow, 'recorded' | 'rateHz'> {
+    return this.#parted(lead);
+  }
+
+  #parted(lead: Lead): SeparatedSlow {
     const slow = this.get(lead)?.slow;
-    if (!slow) throw new Error(`the slow wave of ${key} was not provided`);
-    const { undoLead } = settings.fractional;
-    const drawnBy = JSON.stringify([settings.slowBandCpm, undoLead && dfCpm]);
+    if (!slow) throw new Error(`the slow wave of ${leadKey(lead)} was not provided`);
+    return slow.output;
+  }
+
+  /**
+   * The slow wave of a lead under the settings, what is spoiled for the stomach bridged and breathing taken out where a
+   * reference is given; throws where it was not provided.
+   */
+  slow(lead: Lead, settings: Settings, wish: SlowWish): SeparatedSlow {
+    const key = leadKey(lead);
+    const from = this.#parted(lead);
+    const { spoiled, dfCpm = USUAL_CPM, breathing = null } = wish;
+    const drawnBy = drawnByOf(settings, { spoiled, dfCpm, breathing });
     const before = this.#drawn.get(key);
-    if (before?.from === slow.output && before.drawnBy === drawnBy) return before.output;
-    const output = redrawSlowWave(slow.output, settings, dfCpm);
-    this.#drawn.set(key, { from: slow.output, drawnBy, output });
+    if (before?.from === from && before.drawnBy === drawnBy) return before.output;
+    const kept = keptSamples(from.recorded, from.rateHz, spoiled);
+    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing });
+    this.#drawn.set(key, { from, drawnBy, output });
     return output;
   }
 

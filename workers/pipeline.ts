@@ -10,6 +10,7 @@ import type { SignalSource } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
 import type { Settings } from '../src/recording/settings';
 import { type Interval, joinIntervals, type Span, spansOf } from '../src/recording/span';
+import type { SeparatedSlow } from '../src/separate/route';
 import { leadQuality } from '../src/stomach/lead-quality';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import type {
@@ -24,13 +25,20 @@ import type {
   ReviewInputs,
   TextReading,
 } from './analysis-api';
+import {
+  breathesWithin,
+  breathingReference,
+  type ReferenceInputs,
+  referenceKey,
+} from './breathing-reference';
 import { inTurns, type Job } from './job';
 import { columnsOf } from './pipeline-columns';
 import { measureHeartbeats } from './pipeline-measures';
-import { createResults, type Results } from './pipeline-results';
+import { type Computed, createResults, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
 import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
+import { type Remembered, remember } from './remember';
 
 interface Study {
   readonly source: SignalSource;
@@ -39,6 +47,7 @@ interface Study {
   qrs: readonly QrsMeasure[] | null;
   detection: { readonly key: string; readonly found: Detection } | null;
   heartLead: Lead | null;
+  readonly reference: Remembered<ReferenceInputs, Float64Array | null>;
   /** Ends when the long work under way does. */
   busy: Promise<void>;
 }
@@ -58,6 +67,8 @@ export interface Pipeline {
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
+  /** The slow wave of a lead as it was drawn last; null before the first analysis. */
+  slowWave(lead: Lead): SeparatedSlow | null;
 }
 
 export function createPipeline(): Pipeline {
@@ -79,6 +90,7 @@ export function createPipeline(): Pipeline {
         qrs: null,
         detection: null,
         heartLead: null,
+        reference: remember(referenceKey, breathingReference),
         busy: Promise.resolve(),
       };
       opened = { ticket, study };
@@ -95,6 +107,7 @@ export function createPipeline(): Pipeline {
     analyse: (inputs, job) => inLine(study(), job, (one) => analyse(one, inputs, job)),
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
+    slowWave: (lead) => study().signals.drawn(lead),
   };
 }
 
@@ -127,7 +140,7 @@ async function propose(study: Study, given: Given, job: Job): Promise<Proposal> 
   const spans = proposedSpans(study, first);
   const [before] = phasesOrWhole(phases.filter(isFasting), recording.durationS);
   const qualities = first.slow.map((lead) => {
-    const { recorded, rateHz } = study.signals.slow(lead, settings);
+    const { recorded, rateHz } = study.signals.recorded(lead);
     const spoiled = spansOf(withIds(spans), leadKey(lead), 'stomach');
     const { score, reason } = leadQuality(recorded, rateHz, spoiled, before);
     return { quality: score, reason };
@@ -225,6 +238,7 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
   const { roles, settings } = inputs;
   await study.signals.provide(wantedOf(roles), settings, job);
   const { heart } = roles;
+  const spoiledOf = (lead: Lead) => spansOf(inputs.spans, leadKey(lead), 'stomach');
   const found = heart
     ? await detectionOf(
         study,
@@ -236,7 +250,9 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
     : null;
   const from = {
     inputs,
-    slow: roles.slow.map((lead) => study.signals.slow(lead, settings)),
+    slow: roles.slow.map((lead) =>
+      study.signals.slow(lead, settings, { spoiled: spoiledOf(lead) }),
+    ),
     heart: heart ? study.signals.heart(heart) : null,
     heartRateHz: heart ? leadChannel(study.source.recording, heart).rateHz : 0,
     blocked: heart ? blockedOf(study, heart, inputs.spans) : [],
@@ -244,12 +260,46 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
     breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
   };
   const first = await study.results.of(from, job);
-  if (settings.slowRoute === 'band' || !settings.fractional.undoLead)
-    return study.results.deliver(first);
-  const atOwnRhythm = roles.slow.map((lead) =>
-    study.signals.slow(lead, settings, study.results.usualCpm(leadKey(lead))),
-  );
-  return study.results.deliver(await study.results.of({ ...from, slow: atOwnRhythm }, job));
+  const slow = redrawn(study, inputs, from.slow, { first, spoiledOf });
+  return study.results.deliver(slow ? await study.results.of({ ...from, slow }, job) : first);
+}
+
+/**
+ * The slow waves drawn once more where the first results ask for it: at each lead's own rhythm, where the derivative's lead
+ * is undone, or without breathing, where it lies inside the band; null where the first drawing holds.
+ */
+function redrawn(
+  study: Study,
+  { roles, settings }: ReviewInputs,
+  drawn: readonly SeparatedSlow[],
+  known: { readonly first: Computed; readonly spoiledOf: (lead: Lead) => readonly Interval[] },
+): readonly SeparatedSlow[] | null {
+  const { first, spoiledOf } = known;
+  const wish = (lead: Lead) => ({ spoiled: spoiledOf(lead) });
+  if (settings.slowRoute === 'fractional')
+    return settings.fractional.undoLead
+      ? roles.slow.map((lead) =>
+          study.signals.slow(lead, settings, {
+            ...wish(lead),
+            dfCpm: study.results.usualCpm(leadKey(lead)),
+          }),
+        )
+      : null;
+  if (
+    settings.breathingOut === 'never' ||
+    !breathesWithin(first.breathing, settings.slowBandCpm[1])
+  )
+    return null;
+  return roles.slow.map((lead, i) => {
+    const { rateHz, recorded } = drawn[i];
+    const breathing = study.reference.of({
+      breath: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
+      heights: first.heights,
+      rateHz,
+      length: recorded.length,
+    });
+    return study.signals.slow(lead, settings, { ...wish(lead), breathing });
+  });
 }
 
 function placeNear(study: Study, nearS: number): PlacedBeat {

@@ -12,7 +12,14 @@ import {
   settingActs,
   settingsDraft,
 } from './settings-draft';
-import { heartRouteWords, nowWords, slowRouteWords, truncationWords } from './settings-words';
+import {
+  BREATHING_OUT_CHOICES,
+  heartRouteWords,
+  nowWords,
+  SLOW_GAIN_CHOICES,
+  slowRouteWords,
+  truncationWords,
+} from './settings-words';
 
 const ROUTES = [
   ['band', 'band: a filter without delay'],
@@ -152,6 +159,22 @@ function Separation(props: SectionProps) {
           onChange={(slowRoute) => onChange({ ...draft, slowRoute })}
         />
         <Numbers {...props} keys={['slowLow', 'slowHigh']} />
+        {draft.slowRoute === 'band' ? (
+          <>
+            <Choice
+              label="Frequencies in the band"
+              value={draft.slowGain}
+              options={SLOW_GAIN_CHOICES}
+              onChange={(slowGain) => onChange({ ...draft, slowGain })}
+            />
+            <Choice
+              label="Breathing in the drawn wave"
+              value={draft.breathingOut}
+              options={BREATHING_OUT_CHOICES}
+              onChange={(breathingOut) => onChange({ ...draft, breathingOut })}
+            />
+          </>
+        ) : null}
         <p className="small quiet">{slowRouteWords(draft)}</p>
       </fieldset>
       <fieldset>

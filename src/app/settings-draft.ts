@@ -1,4 +1,4 @@
-import type { RouteName, Settings } from '../recording/settings';
+import type { BreathingOut, RouteName, Settings, SlowGain } from '../recording/settings';
 import { type NumberBounds, numberText, readNumber } from './number-field';
 
 export type SettingKey =
@@ -73,6 +73,8 @@ export interface SettingsDraft {
   readonly slowRoute: RouteName;
   readonly heartRoute: RouteName;
   readonly undoLead: boolean;
+  readonly slowGain: SlowGain;
+  readonly breathingOut: BreathingOut;
   readonly texts: Readonly<Record<SettingKey, string>>;
 }
 
@@ -86,6 +88,8 @@ export function settingsDraft(settings: Settings): SettingsDraft {
     slowRoute: settings.slowRoute,
     heartRoute: settings.heartRoute,
     undoLead: settings.fractional.undoLead,
+    slowGain: settings.slowGain,
+    breathingOut: settings.breathingOut,
     texts,
   };
 }
@@ -168,6 +172,8 @@ function settingsOf(draft: SettingsDraft, v: Readonly<Record<SettingKey, number>
     slowRoute: draft.slowRoute,
     heartRoute: draft.heartRoute,
     slowBandCpm: [v.slowLow, v.slowHigh],
+    slowGain: draft.slowGain,
+    breathingOut: draft.breathingOut,
     heartBandHz: [v.heartLow, v.heartHigh],
     fractional: {
       order: v.order,

@@ -1,4 +1,5 @@
 import { truncationBound } from '../numeric/grunwald-letnikov';
+import type { BreathingOut, SlowGain } from '../recording/settings';
 import { numberText, readNumber } from './number-field';
 import { SETTING_FIELDS, type SettingKey, type SettingsDraft } from './settings-draft';
 
@@ -12,10 +13,31 @@ function typedNumber(draft: SettingsDraft, key: SettingKey): number | null {
 export const nowWords = (note: string): string =>
   `Now: ${note.charAt(0).toLowerCase()}${note.slice(1)}`;
 
+/** How the frequencies of the band may be weighed, in words. */
+export const SLOW_GAIN_CHOICES: readonly (readonly [SlowGain, string])[] = [
+  ['fitted', 'by how far each stands out of the background'],
+  ['even', 'all alike'],
+];
+
+/** What may become of breathing in the drawn wave, in words. */
+export const BREATHING_OUT_CHOICES: readonly (readonly [BreathingOut, string])[] = [
+  ['where-it-helps', 'taken out where that measurably helps'],
+  ['never', 'left in'],
+];
+
+const GAIN_WORDS: Readonly<Record<SlowGain, string>> = {
+  fitted:
+    'Drawn: the lead within this band, with what does not stand out of its own background lowered to a tenth, and harmonics kept up to 15 cpm.',
+  even: 'Drawn: the lead within this band.',
+};
+
 /** What the chosen route of the slow wave draws, and what its rhythm is computed on. */
-export function slowRouteWords({ slowRoute }: Pick<SettingsDraft, 'slowRoute'>): string {
+export function slowRouteWords({
+  slowRoute,
+  slowGain,
+}: Pick<SettingsDraft, 'slowRoute' | 'slowGain'>): string {
   return slowRoute === 'band'
-    ? 'Drawn: the lead within this band. The rhythm is computed on the lead before it.'
+    ? `${GAIN_WORDS[slowGain]} The rhythm is computed on the lead before it.`
     : 'Drawn: the derivative of the lead, smoothed, with no band limits. The rhythm is computed on it, with what the derivative does to each frequency divided out.';
 }
 

@@ -123,12 +123,24 @@ export function spanRows(spans: readonly Span[], durationS: number): readonly Sp
 
 const percent = (share: number): string => `${Math.round(100 * share)} %`;
 
+/** How the slow wave is drawn inside its band. */
+const drawingWords = ({ slowGain, breathingOut }: Settings): string =>
+  [
+    slowGain === 'fitted'
+      ? 'frequencies weighed by how far they stand out of the background'
+      : 'all frequencies alike',
+    breathingOut === 'never'
+      ? 'breathing left in'
+      : 'breathing taken out where that measurably helps',
+  ].join(', ');
+
 function routeWords(route: RouteName, organ: 'slow' | 'heart', settings: Settings): string {
   const band =
     organ === 'slow'
       ? `${settings.slowBandCpm.join('–')} cpm`
       : `${settings.heartBandHz.join('–')} Hz`;
-  if (route !== 'fractional') return `${route}, ${band}`;
+  if (route !== 'fractional')
+    return organ === 'slow' ? `${route}, ${band}, ${drawingWords(settings)}` : `${route}, ${band}`;
   const { order, memoryS, slowWindowMs, heartWindowMs, polynomialOrder } = settings.fractional;
   const windowMs = organ === 'slow' ? slowWindowMs : heartWindowMs;
   return `fractional, order ${order}, memory ${memoryS} s, window ${windowMs} ms, polynomial ${polynomialOrder}`;

@@ -3,6 +3,14 @@ import type { Seconds } from '../units/time';
 
 export type RouteName = 'band' | 'fractional';
 
+/** How route `band` weighs the frequencies inside its band: all alike, or by how far each stands out of the lead's own background. */
+export const SLOW_GAINS = ['fitted', 'even'] as const;
+export type SlowGain = (typeof SLOW_GAINS)[number];
+
+/** Whether breathing is taken out of the drawn slow wave: where a reference for it measurably helps, or never. */
+export const BREATHING_OUT = ['where-it-helps', 'never'] as const;
+export type BreathingOut = (typeof BREATHING_OUT)[number];
+
 /** Limits of the rhythm bands, half-open: brady [low, normoLow), normo [normoLow, normoHigh), tachy [normoHigh, high). */
 export interface RhythmBands {
   readonly lowCpm: Cpm;
@@ -16,6 +24,8 @@ export interface Settings {
   readonly slowRoute: RouteName;
   readonly heartRoute: RouteName;
   readonly slowBandCpm: readonly [low: Cpm, high: Cpm];
+  readonly slowGain: SlowGain;
+  readonly breathingOut: BreathingOut;
   readonly heartBandHz: readonly [low: Hertz, high: Hertz];
   readonly fractional: {
     /** Derivative order, 0 to 1. */
@@ -50,6 +60,8 @@ export const DEFAULT_SETTINGS: Settings = {
   slowRoute: 'band',
   heartRoute: 'band',
   slowBandCpm: [0.8, 10],
+  slowGain: 'fitted',
+  breathingOut: 'where-it-helps',
   heartBandHz: [0.5, 40],
   fractional: {
     order: 0.5,

@@ -6,16 +6,27 @@ import { createOverlapSave } from '../numeric/overlap-save';
 import type { HeartOutput } from '../recording/separated';
 import type { Settings } from '../recording/settings';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
+import type { Seconds } from '../units/time';
+import { withoutBreathing } from './breathing-out';
+import { bridged } from './bridge';
 import { createChunks } from './chunks';
+import { fittedGain, gainTaps } from './fitted-gain';
 import { type LeadFacts, maskGaps } from './gaps';
 import { heartDecimation } from './heart-rate';
-import type { Route, RouteJob, SeparatedSlow } from './route';
+import { type LeadSpectra, leadSpectra } from './lead-spectra';
+import type { Drawing, Route, RouteJob, SeparatedSlow } from './route';
 import { slowRateHz } from './slow-rate';
 import { uncleanStretches } from './unclean';
 import { withoutHoles } from './without-holes';
 
 /** Half the transition of an edge over the edge itself; the edge is the -6 dB point. */
 const EDGE_WIDTH = 0.5;
+/** Harmonics of what stands out are drawn up to here. */
+const HARMONICS_TO_CPM = 15;
+/** Half the length of the fitted gain's own filter: that of the windows it is read off. */
+const GAIN_HALF_S = 120;
+/** What the lead is foretold by at both ends, so that a filter has something to run over. */
+const MARGIN_S = 180;
 const SLOW_ATTENUATION_DB = 44;
 const HEART_ATTENUATION_DB = 60;
 /**
@@ -82,18 +93,69 @@ export function heartBandKernel(
   return cascadeKernels(centredKernel(highPass), centredKernel(lowPass));
 }
 
+/** Samples that are there, 1, and those in gaps, 0. */
+const present = (recorded: Float64Array) =>
+  Uint8Array.from(recorded, (value) => (Number.isNaN(value) ? 0 : 1));
+
+/** A lead that a filter can run over, and the spectra of what was there. */
+interface Bridged {
+  /** The lead with `margin` samples more at both ends. */
+  readonly whole: Float64Array;
+  readonly spectra: LeadSpectra;
+  readonly breathingTakenOutS: Seconds;
+}
+
+const marginOf = (rateHz: Hertz) => Math.round(MARGIN_S * rateHz);
+
+/** The lead with what is spoiled or missing bridged and breathing taken out; null where too little is there to go by. */
+function bridgedLead(
+  recorded: Float64Array,
+  rateHz: Hertz,
+  { kept, breathing }: Omit<Drawing, 'dfCpm'>,
+): Bridged | null {
+  const first = leadSpectra(recorded, kept, rateHz, 'zero');
+  if (!first) return null;
+  const margin = marginOf(rateHz);
+  const whole = bridged(recorded, kept, rateHz, first, margin);
+  const inside = whole.subarray(margin, margin + recorded.length);
+  const { lead, takenOutS } = breathing
+    ? withoutBreathing(inside, breathing, rateHz)
+    : { lead: inside, takenOutS: 0 };
+  whole.set(lead, margin);
+  const spectra = leadSpectra(lead, kept, rateHz, 'bridged');
+  return spectra && { whole, spectra, breathingTakenOutS: takenOutS };
+}
+
+/** The lead's filter as taps: the band alone, or the band with the gain fitted to the lead's own spectrum. */
+function drawingTaps(
+  rateHz: Hertz,
+  { slowBandCpm, slowGain }: Settings,
+  spectra: LeadSpectra | null,
+): Float64Array {
+  if (slowGain === 'even' || !spectra) return slowBandTaps(rateHz, slowBandCpm);
+  const [low, high] = slowBandCpm;
+  const band = centredKernel(slowBandTaps(rateHz, [low, Math.max(high, HARMONICS_TO_CPM)]));
+  const gain = gainTaps(fittedGain(spectra, high), spectra.size, Math.round(GAIN_HALF_S * rateHz));
+  return cascadeKernels(band, centredKernel(gain)).taps;
+}
+
 function drawBand(
   lead: string,
   recorded: Float64Array,
   rateHz: Hertz,
   settings: Settings,
+  drawing: Omit<Drawing, 'dfCpm'>,
 ): SeparatedSlow {
-  const taps = slowBandTaps(rateHz, settings.slowBandCpm);
+  const ready = bridgedLead(recorded, rateHz, drawing);
+  const taps = drawingTaps(rateHz, settings, ready?.spectra ?? null);
   const gaps = nanRuns(recorded);
-  const slowWave = convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
+  const margin = marginOf(rateHz);
+  const slowWave = ready
+    ? convolveSame(ready.whole, taps, 'zero').slice(margin, margin + recorded.length)
+    : convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
   maskGaps(slowWave, gaps, 1);
-  const feltS = (FELT_SHARE * (taps.length - 1)) / 2 / rateHz;
-  const [low, high] = settings.slowBandCpm;
+  const bandTaps = slowBandTaps(rateHz, settings.slowBandCpm).length;
+  const feltS = (FELT_SHARE * (bandTaps - 1)) / 2 / rateHz;
   return {
     lead,
     route: 'band',
@@ -106,10 +168,25 @@ function drawBand(
     leadSAt: () => 0,
     derivativeLeadSAt: () => 0,
     notes: [
-      `Slow wave by a zero-phase band-pass of ${low}-${high} cpm (-6 dB), ${Math.round(taps.length / rateHz)} s long; spectra are those of the lead before it.`,
+      drawnWords(settings, Math.round(taps.length / rateHz), ready !== null),
+      ...breathingWords(ready?.breathingTakenOutS ?? 0),
     ],
   };
 }
+
+function drawnWords({ slowBandCpm, slowGain }: Settings, lengthS: number, fitted: boolean): string {
+  const [low, high] = slowBandCpm;
+  const weighed =
+    slowGain === 'fitted' && fitted
+      ? ", frequencies weighed by how far they stand out of the lead's own background"
+      : '';
+  return `Slow wave by a zero-phase band-pass of ${low}-${high} cpm (-6 dB), ${lengthS} s long${weighed}; spectra are those of the lead before it.`;
+}
+
+const breathingWords = (takenOutS: Seconds): readonly string[] =>
+  takenOutS > 0
+    ? [`Breathing is taken out of the drawn wave over ${Math.round(takenOutS / 60)} min.`]
+    : [];
 
 /** The heartbeat's filter at work; null where the rate leaves no band. */
 function startHeart(job: RouteJob) {
@@ -161,13 +238,18 @@ export const bandRoute: Route = {
       finish(recorded, facts) {
         const rateHz = slowRateHz(job.rateHz);
         return {
-          slow: job.slow ? drawBand(job.lead, recorded, rateHz, job.settings) : null,
+          slow: job.slow
+            ? drawBand(job.lead, recorded, rateHz, job.settings, {
+                kept: present(recorded),
+                breathing: null,
+              })
+            : null,
           heart: heart ? heart.finish(facts) : null,
         };
       },
     };
   },
-  redraw(slow, settings) {
-    return drawBand(slow.lead, slow.recorded, slow.rateHz, settings);
+  redraw(slow, settings, drawing) {
+    return drawBand(slow.lead, slow.recorded, slow.rateHz, settings, drawing);
   },
 };

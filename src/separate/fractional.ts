@@ -193,4 +193,7 @@ function start(job: RouteJob): RouteRun {
  * Route `fractional`: a fractional derivative and Savitzky-Golay smoothing, slow wave and heartbeat
  * by one overlap-save pass. The derivative tilts the spectrum and leads in phase; both are stated.
  */
-export const fractionalRoute: Route = { start, redraw: draw };
+export const fractionalRoute: Route = {
+  start,
+  redraw: (slow, settings, { dfCpm }) => draw(slow, settings, dfCpm),
+};

@@ -33,9 +33,19 @@ export interface RouteOutputs {
   readonly heart: HeartOutput | null;
 }
 
+/** What a slow wave is drawn with, beside the settings. */
+export interface Drawing {
+  /** The lead's usual rhythm: its lead in time under a derivative is undone there. */
+  readonly dfCpm: Cpm;
+  /** 0 where a sample at the slow rate is missing or spoiled, else 1. */
+  readonly kept: Uint8Array;
+  /** A reference for breathing at the slow rate, NaN where there is none; null where none is used. */
+  readonly breathing: Float64Array | null;
+}
+
 /** One way of parting slow wave and heartbeat. */
 export interface Route {
   start(job: RouteJob): RouteRun;
-  /** Draws the slow wave again from what is in memory, for other settings of the same route. */
-  redraw(slow: SeparatedSlow, settings: Settings, dfCpm: Cpm): SeparatedSlow;
+  /** Draws the slow wave again from what is in memory, for other settings of the same route or another drawing. */
+  redraw(slow: SeparatedSlow, settings: Settings, drawing: Drawing): SeparatedSlow;
 }

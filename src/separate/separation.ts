@@ -1,8 +1,8 @@
 import type { HeartOutput } from '../recording/separated';
 import type { Settings } from '../recording/settings';
-import type { Cpm, Hertz } from '../units/rate';
+import type { Hertz } from '../units/rate';
 import { createGapFiller, maskGaps } from './gaps';
-import type { RouteRun, SeparatedSlow } from './route';
+import type { Drawing, RouteRun, SeparatedSlow } from './route';
 import { ROUTES } from './routes';
 import { createSlowSampler, slowRateHz } from './slow-rate';
 
@@ -71,16 +71,15 @@ export function createSeparation(options: SeparationOptions): Separation {
 }
 
 /**
- * The slow wave drawn again for other settings of the same route (band limits; shift by the
- * derivative's lead at `dfCpm`), from what is in memory. Throws where the route is another: then
- * the lead has to be read again.
+ * The slow wave drawn again for other settings of the same route, other spoiled stretches or another reference for
+ * breathing, from what is in memory. Throws where the route is another: then the lead has to be read again.
  */
 export function redrawSlowWave(
   slow: SeparatedSlow,
   settings: Settings,
-  dfCpm: Cpm = 3,
+  drawing: Drawing,
 ): SeparatedSlow {
   if (slow.route !== settings.slowRoute)
     throw new Error(`a slow wave of route ${slow.route} cannot be drawn by ${settings.slowRoute}`);
-  return ROUTES[slow.route].redraw(slow, settings, dfCpm);
+  return ROUTES[slow.route].redraw(slow, settings, drawing);
 }

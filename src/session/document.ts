@@ -7,7 +7,7 @@ import type { Settings } from '../recording/settings';
 import type { Span } from '../recording/span';
 
 /** Version of the session document this program writes; older ones are migrated by named steps. */
-export const SESSION_VERSION = 1;
+export const SESSION_VERSION = 2;
 
 /** The study a session belongs to; names are not kept. */
 export interface StudyIdentity {

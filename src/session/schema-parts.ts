@@ -3,7 +3,7 @@ import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
-import type { Settings } from '../recording/settings';
+import { BREATHING_OUT, type Settings, SLOW_GAINS } from '../recording/settings';
 import { SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
 import type { Signature, StudyIdentity, TimedNote } from './document';
 
@@ -76,6 +76,8 @@ export const settings: SchemaOf<Settings> = v.strictObject({
   slowRoute: route,
   heartRoute: route,
   slowBandCpm: pair,
+  slowGain: v.picklist(SLOW_GAINS),
+  breathingOut: v.picklist(BREATHING_OUT),
   heartBandHz: pair,
   fractional: v.strictObject({
     order: number,

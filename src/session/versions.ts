@@ -7,8 +7,24 @@ export interface Migration {
   readonly up: (document: Readonly<Record<string, unknown>>) => Readonly<Record<string, unknown>>;
 }
 
+/** A value with every settings object in it, wherever it stands, given what version 1 did without saying so. */
+function withDrawing(value: unknown): unknown {
+  if (Array.isArray(value)) return value.map(withDrawing);
+  if (typeof value !== 'object' || value === null) return value;
+  const entries = Object.entries(value).map(([key, one]) => [key, withDrawing(one)] as const);
+  const said = 'slowRoute' in value ? { slowGain: 'even', breathingOut: 'never' } : {};
+  return { ...Object.fromEntries(entries), ...said };
+}
+
 /** The steps from version 1 on, one a version, without gaps. */
-export const MIGRATIONS: readonly Migration[] = [];
+export const MIGRATIONS: readonly Migration[] = [
+  {
+    from: 1,
+    name: 'settings say how the slow wave is drawn',
+    up: (document) =>
+      Object.fromEntries(Object.entries(document).map(([key, one]) => [key, withDrawing(one)])),
+  },
+];
 
 /**
  * A document brought from `version` to the one this program writes, through every step between. Throws Error where a step is

@@ -20,7 +20,7 @@ export const accuracy: Part = async ({ say }: Bench): Promise<readonly Measured[
       family,
       heart: heartScore(found, study.truth, spec.rateHz),
       slow: study.truth.slowCpm
-        ? slowWaveScore(study.signals[0], leads[0], study.truth, spec.rateHz)
+        ? slowWaveScore(found.slowWave, study.signals[0], leads[0], study.truth, spec.rateHz)
         : null,
       rhythm: rhythmScore(found.epochs, study.truth),
     };

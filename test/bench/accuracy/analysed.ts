@@ -20,6 +20,8 @@ export interface Analysed {
   readonly rr: RrSeries;
   readonly timingSdMs: number;
   readonly findings: Findings;
+  /** The drawn slow wave at 4 Hz. */
+  readonly slowWave: Float64Array;
 }
 
 /** The study as an EDF+ file, rounded as its digitiser says. */
@@ -71,7 +73,8 @@ export async function analysed(study: SimulatedStudy, spec: SimulationSpec): Pro
   const inputs = { edit: 0, roles, phases: PHASES, settings: DEFAULT_SETTINGS, spans, beats };
   const analysis = await pipeline.analyse(inputs, job);
   const heart = analysis.heart?.value;
-  if (!heart || !analysis.stomach) throw new Error('the first analysis holds every part');
+  const slow = pipeline.slowWave(lead);
+  if (!heart || !slow || !analysis.stomach) throw new Error('the first analysis holds every part');
   return {
     beats,
     spans,
@@ -80,5 +83,6 @@ export async function analysed(study: SimulatedStudy, spec: SimulationSpec): Pro
     rr: heart.rr,
     timingSdMs: heart.timingSdMs,
     findings: analysis.findings,
+    slowWave: slow.slowWave,
   };
 }

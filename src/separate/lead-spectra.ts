@@ -1,0 +1,73 @@
+import { removeLine } from '../numeric/detrend';
+import { nextPowerOfTwo } from '../numeric/fft';
+import { powerDensity } from '../numeric/spectrum';
+import { hannPeriodic } from '../numeric/windows';
+import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
+
+const WINDOW_S = 240;
+const STEP_S = 60;
+/** Largest part of a window, weighted by the taper, that may be missing. */
+const MOST_MISSING = 0.25;
+
+/** Spectra of a slow lead over the study, of its kept samples. */
+export interface LeadSpectra {
+  /** One a window that is kept: one-sided density in uV2/Hz, bin k at k * binCpm. */
+  readonly windows: readonly Float64Array[];
+  readonly mean: Float64Array;
+  readonly binCpm: Cpm;
+  /** Points of the transform. */
+  readonly size: number;
+}
+
+/** Whether what is missing is 0 in the windows, or has been bridged. */
+export type Missing = 'zero' | 'bridged';
+
+/**
+ * Periodograms of 240 s Hann windows a minute apart (the whole lead where it is shorter), zero-padded to the next power of
+ * two of at least four times; the line is taken off. Missing samples (`kept` 0) are 0 after that and the power of a line is
+ * made whole, unless they have been bridged. Null where no window is three quarters there.
+ */
+export function leadSpectra(
+  lead: Float64Array,
+  kept: Uint8Array,
+  rateHz: Hertz,
+  missing: Missing,
+): LeadSpectra | null {
+  const length = Math.min(lead.length, Math.round(WINDOW_S * rateHz));
+  if (length < 2) return null;
+  const step = Math.max(1, Math.round(STEP_S * rateHz));
+  const taper = hannPeriodic(length);
+  const whole = taper.reduce((sum, weight) => sum + weight, 0);
+  const size = nextPowerOfTwo(4 * Math.round(WINDOW_S * rateHz));
+  const windows: Float64Array[] = [];
+  for (let from = 0; from + length <= lead.length; from += step) {
+    const mask = kept.subarray(from, from + length);
+    const present = taper.reduce((sum, weight, i) => sum + weight * mask[i], 0);
+    if (present < (1 - MOST_MISSING) * whole) continue;
+    const values = lead.slice(from, from + length);
+    windows.push(
+      missing === 'bridged'
+        ? powerDensity(removeLine(values), taper, rateHz, size)
+        : zeroedDensity(values, mask, taper, rateHz, size, (whole / present) ** 2),
+    );
+  }
+  if (windows.length === 0) return null;
+  const mean = new Float64Array(windows[0].length);
+  for (const one of windows) for (let k = 0; k < mean.length; k += 1) mean[k] += one[k];
+  for (let k = 0; k < mean.length; k += 1) mean[k] /= windows.length;
+  return { windows, mean, binCpm: hzToCpm(rateHz / size), size };
+}
+
+function zeroedDensity(
+  values: Float64Array,
+  mask: Uint8Array,
+  taper: Float64Array,
+  rateHz: Hertz,
+  size: number,
+  correction: number,
+): Float64Array {
+  for (let i = 0; i < values.length; i += 1) if (mask[i] === 0) values[i] = 0;
+  const level = removeLine(values, mask);
+  for (let i = 0; i < level.length; i += 1) level[i] *= mask[i];
+  return powerDensity(level, taper, rateHz, size).map((value) => correction * value);
+}
