@@ -4,7 +4,7 @@ import { blockSizeFor } from '../numeric/kernel-spectrum';
 import { nanRuns } from '../numeric/nan-runs';
 import { createOverlapSave } from '../numeric/overlap-save';
 import type { HeartOutput } from '../recording/separated';
-import type { Settings } from '../recording/settings';
+import type { Settings, SlowGain } from '../recording/settings';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
 import type { Seconds } from '../units/time';
 import { withoutBreathing } from './breathing-out';
@@ -99,7 +99,8 @@ const present = (recorded: Float64Array) =>
 
 /** A lead that a filter can run over, and the spectra of what was there. */
 interface Bridged {
-  /** The lead with `margin` samples more at both ends. */
+  readonly lead: Float64Array;
+  /** The same with foretold samples before and after it. */
   readonly whole: Float64Array;
   readonly spectra: LeadSpectra;
   readonly breathingTakenOutS: Seconds;
@@ -123,7 +124,21 @@ function bridgedLead(
     : { lead: inside, takenOutS: 0 };
   whole.set(lead, margin);
   const spectra = leadSpectra(lead, kept, rateHz, 'bridged');
-  return spectra && { whole, spectra, breathingTakenOutS: takenOutS };
+  return spectra && { lead, whole, spectra, breathingTakenOutS: takenOutS };
+}
+
+/**
+ * A bridged lead filtered. Beyond its ends lies what its spectrum foretells; under an even gain, where nothing is fitted to
+ * the lead, it is turned about its end values.
+ */
+function convolveWithin(
+  { lead, whole }: Bridged,
+  taps: Float64Array,
+  gain: SlowGain,
+): Float64Array {
+  if (gain === 'even') return convolveSame(lead, taps, 'reflect-odd');
+  const margin = (whole.length - lead.length) / 2;
+  return convolveSame(whole, taps, 'zero').slice(margin, margin + lead.length);
 }
 
 /** The lead's filter as taps: the band alone, or the band with the gain fitted to the lead's own spectrum. */
@@ -149,9 +164,8 @@ function drawBand(
   const ready = bridgedLead(recorded, rateHz, drawing);
   const taps = drawingTaps(rateHz, settings, ready?.spectra ?? null);
   const gaps = nanRuns(recorded);
-  const margin = marginOf(rateHz);
   const slowWave = ready
-    ? convolveSame(ready.whole, taps, 'zero').slice(margin, margin + recorded.length)
+    ? convolveWithin(ready, taps, settings.slowGain)
     : convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
   maskGaps(slowWave, gaps, 1);
   const bandTaps = slowBandTaps(rateHz, settings.slowBandCpm).length;

@@ -15,6 +15,8 @@ const WINDOW_S = 60;
 const LEAST_REAL = 0.5;
 const NEIGHBOURS = 4;
 const RIDGE = 1e-6;
+/** Part of a window over which the reference must be known. */
+const LEAST_KNOWN = 0.9;
 
 /** A lead with its breathing taken out where that is real. */
 export interface WithoutBreathing {
@@ -104,15 +106,16 @@ function explained({ among, withLead }: Products, shares: Float64Array) {
 }
 
 /** Windows in which what their neighbours foretell of breathing is really there. */
-function realWindows(windows: readonly Products[]): boolean[] {
+function realWindows(windows: readonly (Products | undefined)[]): boolean[] {
   const tests = windows.map((one, w) =>
-    explained(one, sharesOver([windows[w - 2], windows[w + 2]])),
+    one ? explained(one, sharesOver([windows[w - 2], windows[w + 2]])) : { explained: 0, size: 0 },
   );
-  return tests.map((_, w) => {
+  return tests.map((test, w) => {
+    if (test.size === 0) return false;
     let [sum, size] = [0, 0];
-    for (const test of tests.slice(Math.max(0, w - NEIGHBOURS), w + NEIGHBOURS + 1)) {
-      sum += test.explained;
-      size += test.size;
+    for (const near of tests.slice(Math.max(0, w - NEIGHBOURS), w + NEIGHBOURS + 1)) {
+      sum += near.explained;
+      size += near.size;
     }
     return sum > LEAST_REAL * size;
   });
@@ -151,14 +154,18 @@ export function withoutBreathing(
   const shapes = shapesOf(inBand(known, rateHz));
   const band = inBand(lead, rateHz);
   const taper = hannPeriodic(2 * step);
-  const windows: Products[] = [];
-  for (let from = 0; from + taper.length <= lead.length; from += step)
-    windows.push(productsOf(band, shapes, taper, from));
+  const windows: (Products | undefined)[] = [];
+  for (let from = 0; from + taper.length <= lead.length; from += step) {
+    const there = reference.subarray(from, from + taper.length).filter((one) => !Number.isNaN(one));
+    const isKnown = there.length >= LEAST_KNOWN * taper.length;
+    windows.push(isKnown ? productsOf(band, shapes, taper, from) : undefined);
+  }
   const real = realWindows(windows);
   const out = lead.slice();
   let takenOut = 0;
-  windows.forEach(({ from }, w) => {
-    if (!real[w]) return;
+  windows.forEach((one, w) => {
+    if (!one || !real[w]) return;
+    const { from } = one;
     const shares = sharesOver([windows[w - 1], windows[w], windows[w + 1]]);
     for (let i = 0; i < taper.length; i += 1) {
       let breath = 0;

@@ -68,6 +68,11 @@ interface Sides {
   readonly after: readonly number[];
 }
 
+/** Mean of a lead at some places; 0 of none. */
+function meanAt(lead: Float64Array, places: readonly number[]): number {
+  return places.reduce((sum, i) => sum + lead[i], 0) / Math.max(1, places.length);
+}
+
 /**
  * The most likely values at `wanted` given what lies on the sides, each side having a level of its own (kriging with an
  * unknown mean a side; Matheron 1963): the values without level, and the two levels.
@@ -85,7 +90,11 @@ function mostLikely(
   for (let i = 0; i < n; i += 1)
     for (let j = 0; j <= i; j += 1) matrix[i * n + j] = at(Math.abs(places[i] - places[j]));
   for (let i = 0; i < n; i += 1) matrix[i * n + i] *= 1 + UNFORESEEN;
-  const values = Float64Array.from(places, (i) => lead[i]);
+  const [nearBefore, nearAfter] = [meanAt(lead, before), meanAt(lead, after)];
+  const values = Float64Array.from(
+    places,
+    (place, i) => lead[place] - (i < before.length ? nearBefore : nearAfter),
+  );
   const isBefore = Float64Array.from(places, (_, i) => (i < before.length ? 1 : 0));
   const isAfter = isBefore.map((one) => 1 - one);
   const [solved, solvedBefore, solvedAfter] = [values.slice(), isBefore.slice(), isAfter.slice()];
@@ -110,7 +119,7 @@ function mostLikely(
     for (let i = 0; i < n; i += 1) sum += weights[i] * at(Math.abs(places[i] - wanted.from - t));
     filled[t] = sum;
   }
-  return { filled, levelBefore, levelAfter };
+  return { filled, levelBefore: levelBefore + nearBefore, levelAfter: levelAfter + nearAfter };
 }
 
 /**

@@ -1,5 +1,6 @@
 import * as v from 'valibot';
 import { BEAT_CLASSES, BEAT_ORIGINS } from '../recording/beat';
+import { SESSION_VERSION } from './document';
 import {
   events,
   phases,
@@ -95,7 +96,7 @@ const none = v.pipe(v.strictTuple([]), v.readonly());
  */
 export const sessionDocument = v.strictObject({
   format: v.literal(SESSION_FORMAT),
-  version: v.literal(1),
+  version: v.literal(SESSION_VERSION),
   program: text,
   ...stateParts,
   symptoms: none,

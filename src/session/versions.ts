@@ -13,7 +13,7 @@ function withDrawing(value: unknown): unknown {
   if (typeof value !== 'object' || value === null) return value;
   const entries = Object.entries(value).map(([key, one]) => [key, withDrawing(one)] as const);
   const said = 'slowRoute' in value ? { slowGain: 'even', breathingOut: 'never' } : {};
-  return { ...Object.fromEntries(entries), ...said };
+  return { ...said, ...Object.fromEntries(entries) };
 }
 
 /** The steps from version 1 on, one a version, without gaps. */

@@ -1,7 +1,14 @@
 import * as v from 'valibot';
 import type { Beat } from '../recording/beat';
 import { compactBeats } from './compact-beats';
-import type { Change, LogLine, Session, SessionState, Signature } from './document';
+import {
+  type Change,
+  type LogLine,
+  SESSION_VERSION,
+  type Session,
+  type SessionState,
+  type Signature,
+} from './document';
 import {
   type KeptBeat,
   type KeptChange,
@@ -26,7 +33,7 @@ export function documentOf(session: Session, program: string): SessionDocument {
   const state = keptState(session.state);
   return {
     format: SESSION_FORMAT,
-    version: 1,
+    version: SESSION_VERSION,
     program,
     ...state,
     symptoms: [],

@@ -39,7 +39,7 @@ describe('typed settings', () => {
     expect(readSettings(typed({ normoHigh: '2' })).errors.normoHigh).toMatch(/above 2/);
     expect(readSettings(typed({ epochStep: '300' })).errors.epochStep).toMatch(/longer/);
     const derived = (change: Partial<Record<SettingKey, string>>) =>
-      readSettings({ ...typed(change), slowRoute: 'fractional' });
+      readSettings({ ...typed(change), slowRoute: 'fractional', slowGain: 'even' });
     expect(derived({ polynomial: '2.5' }).errors.polynomial).toMatch(/whole/);
     expect(derived({ order: '' }).errors.order).toMatch(/0 to 1/);
     expect(derived({ order: '1.2' }).settings).toBeNull();
@@ -79,8 +79,10 @@ describe('fields of a route', () => {
   });
 
   it('stand beside words that follow the choice', () => {
-    expect(slowRouteWords({ slowRoute: 'band' })).toMatch(/within this band/);
-    expect(slowRouteWords({ slowRoute: 'fractional' })).toMatch(/derivative.*no band limits/);
+    expect(slowRouteWords({ slowRoute: 'band', slowGain: 'even' })).toMatch(/within this band/);
+    expect(slowRouteWords({ slowRoute: 'fractional', slowGain: 'even' })).toMatch(
+      /derivative.*no band limits/,
+    );
     expect(heartRouteWords({ heartRoute: 'fractional' })).not.toMatch(/within this band/);
   });
 });

@@ -29,6 +29,7 @@ function separated(one: Case, route: RouteName, block: number) {
     ...DEFAULT_SETTINGS,
     slowRoute: route,
     heartRoute: route,
+    slowGain: 'even' as const,
     fractional: { ...DEFAULT_SETTINGS.fractional, memoryS: one.fractional.memory_s },
   };
   const separation = createSeparation({

@@ -56,7 +56,19 @@ function worst(from: number, to: number, missAt: (i: number) => number): number 
   return largest;
 }
 
-const both = (route: RouteName) => ({ slowRoute: route, heartRoute: route });
+const both = (route: RouteName) => ({
+  slowRoute: route,
+  heartRoute: route,
+  slowGain: 'even' as const,
+});
+const EVEN = { slowGain: 'even' } as const;
+
+/** Everything of a lead is kept, and nothing is known of the breathing. */
+const PLAINLY = (slow: { readonly recorded: Float64Array }) => ({
+  dfCpm: 3,
+  kept: new Uint8Array(slow.recorded.length).fill(1),
+  breathing: null,
+});
 
 describe('the anti-aliased 4 Hz lead', () => {
   test.each([3.85, 4, 4.15, 7.9, 8.1, 12.05, 16])(
@@ -114,7 +126,10 @@ describe('route band', () => {
 
   test('has its edges 6 dB down at the band of the settings', () => {
     for (const cpm of [0.8, 10]) {
-      const { slowWave } = slowOf(signalOf(3000, 10, tone(100, cpm / 60)), { rateHz: 10 });
+      const { slowWave } = slowOf(signalOf(3000, 10, tone(100, cpm / 60)), {
+        rateHz: 10,
+        settings: EVEN,
+      });
       expect(middleSize(slowWave)).toBeGreaterThan(48);
       expect(middleSize(slowWave)).toBeLessThan(52);
     }
@@ -269,7 +284,7 @@ describe('routes of their own for slow wave and heartbeat', () => {
     const lead = signalOf(200, 250, (t) => tone(100, 0.05)(t) + tone(100, 8)(t));
     const mixed = separate(lead, {
       rateHz: 250,
-      settings: { slowRoute: 'band', heartRoute: 'fractional' },
+      settings: { ...both('band'), heartRoute: 'fractional' },
     });
     const band = separate(lead, { rateHz: 250, settings: both('band') });
     expect(mixed.slow?.slowWave).toEqual(band.slow?.slowWave);
@@ -299,16 +314,17 @@ describe('route fractional', () => {
   });
 
   test('shifted back by its lead lies on the recorded wave', () => {
-    const undone = redrawSlowWave(slow, {
+    const undoing = {
       ...DEFAULT_SETTINGS,
       ...settings,
       fractional: { ...DEFAULT_SETTINGS.fractional, undoLead: true },
-    });
+    };
+    const undone = redrawSlowWave(slow, undoing, PLAINLY(slow));
     expect(undone.leadSAt(0.05)).toBeCloseTo(0, 12);
     expect(
       worst(600, 1200, (i) => Math.abs(undone.slowWave[i] - tone(100, 0.05)(i / 4))),
     ).toBeLessThan(0.3);
-    const back = redrawSlowWave(undone, { ...DEFAULT_SETTINGS, ...settings });
+    const back = redrawSlowWave(undone, { ...DEFAULT_SETTINGS, ...settings }, PLAINLY(slow));
     expect(back.slowWave).toEqual(slow.slowWave);
     expect(back.leadSAt(0.05)).toBe(slow.leadSAt(0.05));
   });
@@ -318,13 +334,14 @@ describe('route fractional', () => {
   });
 
   test('refuses to be drawn again by another route', () => {
-    expect(() => redrawSlowWave(slow, DEFAULT_SETTINGS)).toThrow(/route fractional/);
+    expect(() => redrawSlowWave(slow, DEFAULT_SETTINGS, PLAINLY(slow))).toThrow(/route fractional/);
   });
 });
 
 test('route band drawn again for a narrower band is what separation gives for it', () => {
   const lead = signalOf(400, 50, (t) => tone(100, 0.05)(t) + tone(100, 0.12)(t));
   const narrow = { ...DEFAULT_SETTINGS, slowBandCpm: [1.5, 5] as const };
-  const redrawn = redrawSlowWave(slowOf(lead, { rateHz: 50 }), narrow);
+  const slow = slowOf(lead, { rateHz: 50 });
+  const redrawn = redrawSlowWave(slow, narrow, PLAINLY(slow));
   expect(redrawn.slowWave).toEqual(slowOf(lead, { rateHz: 50, settings: narrow }).slowWave);
 });

@@ -189,6 +189,24 @@ describe('versions', () => {
   );
 });
 
+describe('a session of version 1', () => {
+  it('keeps the drawing it was made with: every settings object in it says so', () => {
+    const sample = readFileSync('test/fixtures/session-v1.json', 'utf8');
+    const session = textToSession(sample);
+    const drawing = { slowGain: 'even', breathingOut: 'never' };
+    expect(session.state.settings).toMatchObject(drawing);
+    for (const signed of session.state.signed) expect(signed.settings).toMatchObject(drawing);
+  });
+
+  it('keeps what a newer program has written into its journal since', () => {
+    const document = { version: 1, log: [{ settings: { slowRoute: 'band', slowGain: 'fitted' } }] };
+    expect(migrate(document, 1)).toEqual({
+      version: 2,
+      log: [{ settings: { slowRoute: 'band', slowGain: 'fitted', breathingOut: 'never' } }],
+    });
+  });
+});
+
 describe('the name of a session file', () => {
   it('is the code in characters that every system allows', () => {
     expect(sessionFileName(worked)).toBe('INV-8.bicadence.json');

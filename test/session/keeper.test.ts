@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { Session } from '../../src/session/document';
+import { SESSION_VERSION, type Session } from '../../src/session/document';
 import { setField } from '../../src/session/edits';
 import { createKeeper, type Keeper, whereKept } from '../../src/session/keeper';
 import { appendEdit, beginSession } from '../../src/session/log';
@@ -193,7 +193,9 @@ describe('nothing kept is overwritten', () => {
     await worked(keeper, 1);
     await keeper.snapshot();
     const head = here.store.head.get(KEY);
-    const text = here.store.snapshot.get(KEY)?.text.replace('"version":1', '"version":9');
+    const text = here.store.snapshot
+      .get(KEY)
+      ?.text.replace(`"version":${SESSION_VERSION}`, '"version":9');
     if (!head || !text) throw new Error('kept');
     here.store.head.set(KEY, { ...head, version: 9 });
     here.store.snapshot.set(KEY, { n: 1, text });
