@@ -21,10 +21,10 @@ describe('the error of DF of one 240 s epoch in white noise', () => {
   });
 
   test.each([
-    [1, 1.1, 1.7],
-    [20, 1.1, 1.7],
+    [1, 1.4, 1.75],
+    [20, 1.4, 1.75],
   ])(
-    'is near that at %d times the noise’s power: the taper costs a third',
+    'is near that at %d times the noise’s power: the taper costs a factor of 1.6',
     (ratio, least, most) => {
       const random = createRandom(53);
       const noiseUv = 100 / Math.sqrt(2 * ratio);
