@@ -4,7 +4,8 @@ import { atan2 } from './elementary';
 /**
  * The analytic signal of real x, interleaved re, im (Gabor 1946): x and its Hilbert transform, by
  * taking the negative frequencies out of its spectrum. x counts as periodic, so about one period of
- * a band-passed x at either end is not to be believed. Any length; O(n log n).
+ * a band-passed x at either end is not to be believed. Any length; O(n log n). A NaN spoils all of it,
+ * so gaps are to be filled before.
  */
 export function analyticSignal(x: Float64Array): Float64Array {
   const n = x.length;

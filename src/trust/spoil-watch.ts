@@ -36,6 +36,9 @@ export interface SpoilWatch {
 
 /** A heartbeat cannot be judged below this rate, nor spoiled. */
 const HEART_NEEDS_HZ = 50;
+/** What spoils the heart is made longer by this, and joined where less than the second parts it: a beat hardly fits. */
+const HEART_PAD_S = 0.15;
+const HEART_NEAR_S = 1.2;
 /** Columns this near to a gap, flat line or rail do not count for what else is found. */
 const NEAR_S = 0.5;
 
@@ -94,8 +97,9 @@ function heartBursts(
   const rough = roughStretches(columns, outside(columns.roughness, columnS, taken), options.stepUv);
   const low = outside(columns.low, columnS, taken);
   const high = outside(columns.high, columnS, taken);
-  const jumps = jumpStretches(columns, low, high, options.stepUv);
-  return paddedAndJoined(columnIntervals([...rough, ...jumps], columnS), 0.5, 3);
+  const mean = outside(columns.mean, columnS, taken);
+  const jumps = jumpStretches(columns, low, high, mean, options.stepUv);
+  return paddedAndJoined(columnIntervals([...rough, ...jumps], columnS), HEART_PAD_S, HEART_NEAR_S);
 }
 
 /** Steps and movements of the slow part of the lead. */
@@ -112,9 +116,16 @@ function stomachMovements(
   return { steps, swings: without(pick(found.filter((one) => !isStep(one))), steps) };
 }
 
+/** Heart and stomach spans whose ends differ by no more than this are one. */
+const SAME_END_S = 1;
+
+const near = (a: Interval, b: Interval): boolean =>
+  Math.abs(a.fromS - b.fromS) <= SAME_END_S && Math.abs(a.toS - b.toS) <= SAME_END_S;
+
 /**
- * Heart and stomach spans of one event become one for both, where the heart's lie within the stomach's and fill half of
- * it; the rest stay apart, so that a long settling does not cost beats that can be read.
+ * Heart and stomach spans of one event: a stomach span that a heart's fills by half takes its ends in too, and where the
+ * ends agree the two become one for both. The heart's never grow by the stomach's, so that a long settling does not cost
+ * beats that can be read.
  */
 function unite(
   heart: readonly Interval[],
@@ -125,19 +136,17 @@ function unite(
   const alone: Interval[] = [];
   for (const one of stomach) {
     const meeting = heart.filter((h) => h.fromS < one.toS && h.toS > one.fromS);
-    const shared = coveredSeconds(meeting, one.fromS, one.toS);
     const spread = meeting.reduce(
       (sum, h) => ({ fromS: Math.min(sum.fromS, h.fromS), toS: Math.max(sum.toS, h.toS) }),
       one,
     );
-    if (shared < 0.5 * (spread.toS - spread.fromS)) {
-      alone.push(one);
-      continue;
-    }
-    both.push(spread);
-    for (const h of meeting) left.delete(h);
+    const shared = coveredSeconds(meeting, one.fromS, one.toS);
+    const event = shared < 0.5 * (spread.toS - spread.fromS) ? one : spread;
+    const same = meeting.length === 1 && near(meeting[0], event) ? meeting[0] : null;
+    if (same) left.delete(same);
+    (same ? both : alone).push(event);
   }
-  return { both: [...joinIntervals(both)], heart: [...left], stomach: alone };
+  return { both: [...joinIntervals(both)], heart: [...left], stomach: [...joinIntervals(alone)] };
 }
 
 function movements(

@@ -1,6 +1,6 @@
 import { runningQuantile } from '../numeric/running-quantile';
-import { quantile } from '../numeric/statistics';
 import type { BaseColumns } from './base-columns';
+import { withoutBeats } from './beat-like-jumps';
 import { type Excursion, excursionsAbove } from './excursions';
 import { ownLevel } from './own-level';
 import { slidingRange } from './sliding-range';
@@ -9,16 +9,20 @@ import { slidingRange } from './sliding-range';
 export const LEVEL_HALF_S = 300;
 
 /** Times the own level at which a burst begins and ends; set on simulated studies (test/trust). */
-const ROUGH = { enter: 3, leave: 1.7 };
+const ROUGH = { enter: 2.5, leave: 1.6 };
 const JUMP = { enter: 3.2, leave: 2 };
 /** Roughness between beats that is this share of the beats' own does no harm. */
-const HARMLESS_SHARE = 0.18;
-/** Between beats: the lower third of a second's columns. */
+const HARMLESS_SHARE = 0.2;
+/** Between beats: the lowest tenth of a second's columns, also where T waves fill most of it. */
 const WINDOW_S = 1.1;
-const BETWEEN_BEATS = 0.3;
+const BETWEEN_BEATS = 0.1;
+/** As long as any interval between beats, or nearly: it holds a QRS complex. */
+const HOLDS_BEAT_S = 1.5;
+/** Longer than a QRS complex is rough. */
+const OVER_QRS_S = 0.3;
 
-const times = (level: Float64Array, factor: number, atLeast = 0): Float64Array =>
-  level.map((value) => Math.max(atLeast, factor * value));
+const times = (level: Float64Array, factor: number): Float64Array =>
+  level.map((value) => factor * value);
 
 const oddCount = (seconds: number, columnS: number): number =>
   2 * Math.floor(seconds / columnS / 2) + 1;
@@ -33,43 +37,78 @@ function blankWhereFew(y: Float64Array, x: Float64Array, half: number): void {
   }
 }
 
+/** The greatest value of each 1.5 s, which is that of a QRS complex, at the recording's own level. */
+function beatLevel(x: Float64Array, columnS: number, floor: number): Float64Array {
+  const zero = x.map((value) => (Number.isNaN(value) ? Number.NaN : 0));
+  const eachSecond = slidingRange(zero, x, oddCount(HOLDS_BEAT_S, columnS));
+  return ownLevel(eachSecond, Math.round(LEVEL_HALF_S / columnS), floor);
+}
+
 /**
- * Muscle bursts: stretches where the roughness between the beats (the lower third of each second's columns, so that QRS
- * complexes have no say) is far over the recording's own level and would matter beside its beats.
+ * A stretch whose ends are told by the columns themselves: from the first to the last of those about it that are rough for
+ * longer than a QRS complex. As it was where none is.
+ */
+function sharpEnds(
+  found: Excursion,
+  roughness: Float64Array,
+  leave: Float64Array,
+  columnS: number,
+): Excursion {
+  const reach = Math.round(WINDOW_S / columnS / 2);
+  const run = Math.max(1, Math.round(OVER_QRS_S / columnS));
+  const first = Math.max(0, found.from - reach);
+  const last = Math.min(roughness.length, found.to + reach);
+  let [from, to, rough] = [-1, -1, 0];
+  for (let i = first; i < last; i += 1) {
+    rough = roughness[i] > leave[i] ? rough + 1 : 0;
+    if (rough < run) continue;
+    if (from < 0) from = i - run + 1;
+    to = i + 1;
+  }
+  return from < 0 ? found : { from, to };
+}
+
+/**
+ * Muscle bursts and hum: stretches where the roughness between the beats (the lowest tenth of each second's columns, so that
+ * QRS complexes have no say) is far over the recording's own level and would matter beside its beats.
  */
 export function roughStretches(
-  columns: BaseColumns,
+  { columnS }: BaseColumns,
   roughness: Float64Array,
   stepUv: number,
 ): readonly Excursion[] {
-  const { columnS } = columns;
   const width = oddCount(WINDOW_S, columnS);
   const between = runningQuantile(roughness, width, BETWEEN_BEATS);
   blankWhereFew(between, roughness, (width - 1) / 2);
-  const known = roughness.filter((value) => !Number.isNaN(value));
-  if (known.length === 0) return [];
-  const harmless = HARMLESS_SHARE * quantile(known, 0.95);
   const level = ownLevel(between, Math.round(LEVEL_HALF_S / columnS), 0.7 * stepUv);
-  return excursionsAbove(
-    between,
-    times(level, ROUGH.enter, harmless),
-    times(level, ROUGH.leave, 0.6 * harmless),
+  const harmless = times(beatLevel(roughness, columnS, 0), HARMLESS_SHARE);
+  const limit = (factor: number, share: number) =>
+    level.map((value, i) => Math.max(factor * value, share * harmless[i]));
+  const leave = limit(ROUGH.leave, 0.6);
+  return excursionsAbove(between, limit(ROUGH.enter, 1), leave).map((found) =>
+    sharpEnds(found, roughness, leave, columnS),
   );
 }
 
 /**
- * Jumps within 0.2 s that are several times as high as what each second usually holds, which is its QRS: what a detector
- * would take for a beat. `low` and `high` are the columns' own, NaN where they do not count.
+ * Jumps within 0.2 s that are several times as high as what each second usually holds, which is its QRS, and are no beats of
+ * another kind: what a detector would take for a beat. `low`, `high` and `mean` are the columns' own, NaN where they do not
+ * count.
  */
 export function jumpStretches(
-  { columnS }: BaseColumns,
+  columns: BaseColumns,
   low: Float64Array,
   high: Float64Array,
+  mean: Float64Array,
   stepUv: number,
 ): readonly Excursion[] {
   const spread = slidingRange(low, high, 2);
-  const zero = spread.map((value) => (Number.isNaN(value) ? Number.NaN : 0));
-  const eachSecond = slidingRange(zero, spread, oddCount(1.5, columnS));
-  const level = ownLevel(eachSecond, Math.round(LEVEL_HALF_S / columnS), 4 * stepUv);
-  return excursionsAbove(spread, times(level, JUMP.enter), times(level, JUMP.leave));
+  const level = beatLevel(spread, columns.columnS, 4 * stepUv);
+  const leave = times(level, JUMP.leave);
+  const raised = excursionsAbove(spread, leave, leave);
+  const enter = times(level, JUMP.enter);
+  return withoutBeats(raised, columns, mean).filter(({ from, to }) => {
+    for (let i = from; i < to; i += 1) if (spread[i] > enter[i]) return true;
+    return false;
+  });
 }

@@ -6,7 +6,7 @@ import reference from '../reference/numeric-bootstrap.json';
 import { noise } from './signals';
 
 // Reference: the same draws by a Mersenne Twister written in Python and checked against numpy's,
-// quantiles by numpy; test/reference/numeric-bootstrap.py.
+// quantiles by numpy, whose interpolation rounds in another order; test/reference/numeric-bootstrap.py.
 
 type Statistic = (x: Float64Array) => number;
 
