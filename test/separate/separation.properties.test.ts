@@ -26,6 +26,7 @@ function separated(blocks: readonly Float64Array[], route: RouteName, rateHz = R
     sampleCount: blocks.reduce((sum, block) => sum + block.length, 0),
     settings: {
       ...DEFAULT_SETTINGS,
+      slowGain: 'even',
       slowRoute: route,
       heartRoute: route,
       fractional: { ...DEFAULT_SETTINGS.fractional, memoryS: 20 },
@@ -201,3 +202,38 @@ function largestOrNaN(a: Float64Array, b: Float64Array): number {
   const holes = (x: Float64Array) => x.reduce((sum, value) => sum + Number(Number.isNaN(value)), 0);
   return holes(a) === holes(b) ? largestDifference(there(a), there(b)) : Number.POSITIVE_INFINITY;
 }
+
+describe('route band with the gain fitted to the lead', () => {
+  const fitted = (x: Float64Array) => {
+    const separation = createSeparation({
+      lead: '#1',
+      rateHz: RATE_HZ,
+      sampleCount: x.length,
+      settings: DEFAULT_SETTINGS,
+      wants: { slow: true, heart: false },
+    });
+    separation.push(x);
+    const { slow } = separation.finish();
+    if (!slow) throw new Error('a slow wave was asked for');
+    return slow.slowWave;
+  };
+
+  it('turns over with its lead and grows with it: the gain is that of shape, not of size', () => {
+    fc.assert(
+      fc.property(draws, numbers(0.1, 10), (draw, factor) => {
+        const x = wide(draw);
+        x.fill(Number.NaN, 9_000, 9_100);
+        const plain = fitted(x);
+        const size = sizeOf(plain.filter((one) => !Number.isNaN(one)));
+        for (const by of [factor, -factor]) {
+          const got = fitted(times(by, x));
+          const misses = got.map((value, i) => value - by * plain[i]);
+          expect(Math.max(...misses.filter(Number.isFinite).map(Math.abs))).toBeLessThan(
+            1e-9 * factor * size,
+          );
+        }
+      }),
+      always(5),
+    );
+  });
+});
