@@ -1,9 +1,9 @@
 import { type Detection, detectBeats } from '../../../src/heart/detect';
-import { createRandom } from '../../../src/numeric/random';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
 import { type Interval, joinIntervals } from '../../../src/recording/span';
 import { createSeparation } from '../../../src/separate/separation';
 import { addEcgNoise } from '../../../src/simulate/ecg-noise';
+import { createRandom } from '../../../src/numeric/random';
 import { createSpoilWatch } from '../../../src/trust/spoil-watch';
 import { TICKS_PER_SAMPLE } from '../../../src/units/ticks';
 
@@ -26,12 +26,7 @@ const SLOW_UV = 200;
 const BREATH_UV = 60;
 
 /** An ECG with R peaks of `heightUv` scaled to a level and mixed with what an abdominal lead holds; all of it invented. */
-export function atLevel(
-  ecg: LeadToScore,
-  heightUv: number,
-  level: Level,
-  seed: number,
-): LeadToScore {
+export function atLevel(ecg: LeadToScore, heightUv: number, level: Level, seed: number): LeadToScore {
   if (level === null) return ecg;
   const { rateHz } = ecg;
   const random = createRandom(seed + 77_000);
