@@ -258,4 +258,22 @@ describe('the min-max pyramid', () => {
       always(40),
     );
   });
+
+  it('holds the least and greatest of the samples in each column, and of no others', () => {
+    fc.assert(
+      fc.property(signals(500, 3_000), fc.constantFrom(10, 50, 125, 250), (x, rateHz) => {
+        const builder = createPyramidBuilder(rateHz);
+        builder.push(x);
+        const width = Math.round(0.2 * rateHz);
+        const whole = Math.floor(x.length / width);
+        const got = builder.finish().columns(0, (whole * width) / rateHz, whole);
+        for (let i = 0; i < whole; i += 1) {
+          const samples = x.subarray(i * width, (i + 1) * width);
+          expect(got.low[i]).toBe(Math.fround(Math.min(...samples)));
+          expect(got.high[i]).toBe(Math.fround(Math.max(...samples)));
+        }
+      }),
+      always(40),
+    );
+  });
 });
