@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { uniqueLabels } from '../../src/decode/labels';
+import { always } from '../properties';
 
 describe('labels', () => {
   it('stay as they are where they are unique', () => {
@@ -24,6 +25,7 @@ describe('labels', () => {
         expect(new Set(unique).size).toBe(labels.length);
         expect(unique.every((one) => one.trim() !== '')).toBe(true);
       }),
+      always(100),
     );
   });
 });

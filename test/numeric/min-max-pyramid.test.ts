@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { minMaxColumns } from '../../src/numeric/min-max-columns';
 import { createPyramidBuilder } from '../../src/numeric/min-max-pyramid';
+import { always } from '../properties';
 
 const build = (samples: number[], rateHz: number, blockSize: number) => {
   const builder = createPyramidBuilder(rateHz);
@@ -38,7 +39,7 @@ describe('columns for drawing a trace', () => {
           expect(Math.max(...finite(high)) - Math.max(...samples)).toBeCloseTo(0, 12);
         },
       ),
-      { numRuns: 60 },
+      always(60),
     );
   });
 

@@ -11,6 +11,7 @@ import { documentToSession, readLine, textToSession } from '../../src/session/re
 import { sameValue } from '../../src/session/same-value';
 import { MIGRATIONS, migrate } from '../../src/session/versions';
 import { documentText, lineToKept, sessionToDocument } from '../../src/session/write-document';
+import { always } from '../properties';
 import { workedSession } from './worked-session';
 
 const worked = workedSession();
@@ -40,6 +41,7 @@ describe('beats in a file', () => {
         const through = JSON.parse(JSON.stringify(compactBeats(beats)));
         expect(sameValue(expandBeats(through), beats)).toBe(true);
       }),
+      always(100),
     );
   });
   it('are small: first tick, differences, and runs of class and origin', () => {

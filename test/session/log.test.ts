@@ -25,6 +25,7 @@ import {
   undoableEdit,
 } from '../../src/session/log';
 import { sameValue } from '../../src/session/same-value';
+import { always } from '../properties';
 import { AT, inventedState, RATE_HZ, signature, span } from './invented-session';
 
 const note = (session: Session, text: string): Session =>
@@ -156,7 +157,7 @@ describe('replay', () => {
         expect(session.log.length).toBeGreaterThanOrEqual(length);
         expect(sameValue({ ...session.state, signed: [] }, session.start)).toBe(true);
       }),
-      { numRuns: 60 },
+      always(60),
     );
   });
 
