@@ -123,7 +123,8 @@ function bridgedLead(
     ? withoutBreathing(inside, breathing, rateHz)
     : { lead: inside, takenOutS: 0 };
   whole.set(lead, margin);
-  const spectra = leadSpectra(lead, kept, rateHz, 'bridged');
+  const untouched = takenOutS === 0 && !kept.includes(0);
+  const spectra = untouched ? first : leadSpectra(lead, kept, rateHz, 'bridged');
   return spectra && { lead, whole, spectra, breathingTakenOutS: takenOutS };
 }
 

@@ -9,7 +9,7 @@ const SIDE_S = 60;
 /** Kept pieces shorter than this between two stretches are bridged with them: too short to set a level by. */
 const LEAST_PIECE_S = 8;
 /** Samples a second that the sides are read at. */
-const READ_HZ = 2;
+const READ_HZ = 1;
 /** Share of the lead's variance that counts as unforeseeable, so that the equations stay well set. */
 const UNFORESEEN = 1e-4;
 

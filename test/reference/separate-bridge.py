@@ -9,7 +9,7 @@ import json
 import numpy as np
 
 RATE, SIZE, N, FROM, TO = 2.0, 4096, 400, 190, 214
-SIDE, UNFORESEEN = 120, 1e-4
+SIDE, STEP, UNFORESEEN = 60, 2, 1e-4  # a minute on each side, read once a second
 k = np.arange(SIZE // 2 + 1)
 f = k * RATE / SIZE
 density = 50 / (1 + (f / 0.02) ** 2) + 8000 * np.exp(-(((f - 0.05) / 0.002) ** 2))
@@ -22,8 +22,8 @@ cov = np.fft.ifft(full).real
 t = np.arange(N) / RATE
 x = 60 * np.sin(2 * np.pi * 0.05 * t + 0.4) + 15 * np.cos(2 * np.pi * 0.11 * t) + 0.02 * t
 x[TO:] += 5000
-before = np.arange(FROM - 1, FROM - 1 - SIDE, -1)
-after = np.arange(TO, TO + SIDE)
+before = np.arange(FROM - 1, FROM - 1 - SIDE * STEP, -STEP)
+after = np.arange(TO, TO + SIDE * STEP, STEP)
 after = after[after < N]
 places = np.concatenate([before, after])
 C = cov[np.abs(places[:, None] - places[None, :])]
