@@ -59,7 +59,7 @@ function widened({ lowCpm, highCpm }: Band, cellCpm: Cpm): Band {
 const inside = (cpm: Cpm, { lowCpm, highCpm }: Band) => cpm >= lowCpm && cpm <= highCpm;
 
 /** Breathing that changes its rate spreads so far beyond it; a peak there is its flank where it is so many times lower. */
-const FLANK_CPM = 1;
+const FLANK_CPM = 1.5;
 const FLANK_TIMES = 4;
 
 function onFlank({ density, binCpm }: Spectrum, peakCpm: Cpm, { lowCpm, highCpm }: Band): boolean {

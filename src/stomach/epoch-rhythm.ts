@@ -1,6 +1,7 @@
 import type { EpochFlag, Rhythm } from '../recording/rhythm';
 import type { Settings } from '../recording/settings';
 import type { Cpm } from '../units/rate';
+import type { Seconds } from '../units/time';
 import { besidePeak, independentValues, type Spectrum, standsOut } from './background';
 import {
   type Band,
@@ -91,6 +92,12 @@ function isSameWave(slower: HalfRhythm, faster: HalfRhythm, settings: Settings):
   return halfPeaks(peak, peaks).some(({ density }) => density >= GONE * slower.peak.density);
 }
 
+/** True where two peaks are of different bands and clearly apart. */
+function differ(a: SpectrumPeak, b: SpectrumPeak, lengthS: Seconds, settings: Settings): boolean {
+  if (Math.abs(a.cpm - b.cpm) < (LEAST_CHANGE_CELLS * 60) / lengthS) return false;
+  return rhythmOf(a.cpm, settings.rhythmBands) !== rhythmOf(b.cpm, settings.rhythmBands);
+}
+
 /**
  * True where both halves have a rhythm of their own, of different bands and clearly apart, and one
  * is not the other's harmonic. Breathing is no rhythm here.
@@ -98,19 +105,21 @@ function isSameWave(slower: HalfRhythm, faster: HalfRhythm, settings: Settings):
 function changesInside(input: EpochInput, settings: Settings): boolean {
   const halves = input.halves();
   if (!halves) return false;
-  const { rhythmBands, epoch } = settings;
+  const [first, second] = halves.map((half) =>
+    highestPeak(bandPeaks(half.density, half.binCpm, searchBand(settings))),
+  );
+  if (!first || !second || !differ(first, second, input.lengthS, settings)) return false;
   const found = halves.flatMap((half): HalfRhythm[] => {
-    const dominant = dominantOf(half, epoch.falseAlarm / 2, settings);
+    const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings);
     if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing)) return [];
     return [{ half, peak: dominant.peak }];
   });
   if (found.length < 2) return false;
   const [slower, faster] = found.sort((a, b) => a.peak.cpm - b.peak.cpm);
-  const changeCpm = faster.peak.cpm - slower.peak.cpm;
-  if (changeCpm < (LEAST_CHANGE_CELLS * 60) / input.lengthS) return false;
-  if (rhythmOf(slower.peak.cpm, rhythmBands) === rhythmOf(faster.peak.cpm, rhythmBands))
-    return false;
-  return !isSameWave(slower, faster, settings);
+  return (
+    differ(slower.peak, faster.peak, input.lengthS, settings) &&
+    !isSameWave(slower, faster, settings)
+  );
 }
 
 function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, settings: Settings) {

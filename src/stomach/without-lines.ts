@@ -1,6 +1,21 @@
 import { cos, sin } from '../numeric/elementary';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
 
+/** cos and sin of k steps of an angle, turned on from one to the next. */
+function wavesOf(step: number, count: number): readonly [Float64Array, Float64Array] {
+  const [turnRe, turnIm] = [cos(step), sin(step)];
+  const [re, im] = [new Float64Array(count), new Float64Array(count)];
+  let [a, b] = [1, 0];
+  for (let k = 0; k < count; k++) {
+    re[k] = a;
+    im[k] = b;
+    const next = a * turnRe - b * turnIm;
+    b = b * turnRe + a * turnIm;
+    a = next;
+  }
+  return [re, im];
+}
+
 /** Part of a wave's energy below which what is left of it by the waves before is rounding. */
 const NOTHING_NEW = 1e-9;
 
@@ -27,8 +42,7 @@ export function withoutLines(
   };
   for (const cpm of frequenciesCpm) {
     const step = (2 * Math.PI * cpmToHz(cpm)) / rateHz;
-    for (const part of [cos, sin]) {
-      const wave = rest.map((_, i) => part(step * i));
+    for (const wave of wavesOf(step, x.length)) {
       const before = product(wave, wave);
       for (const earlier of made) takeOff(wave, earlier);
       const energy = product(wave, wave);
