@@ -148,6 +148,42 @@ describe('the place of a beat in a row', () => {
     );
   });
 
+  it('of a lopsided beat is found on any slope, since the filter gives nothing for a line', () => {
+    const lopsided = (i: number) =>
+      Math.exp(-0.5 * (i / 3) ** 2) - 0.6 * Math.exp(-0.5 * ((i - 9) / 4) ** 2);
+    const average = Float64Array.from({ length: 51 }, (_, i) => lopsided(i - 25));
+    const { weights } = timerOf(average);
+    const rowAt = (place: number) =>
+      Float64Array.from({ length: 200 }, (_, i) => 100 * lopsided(i - place));
+    const offset = align(rowAt(100), timerOf(average), 100, 12).place - 100;
+    const sum = (at: (i: number) => number) =>
+      weights.reduce((total, weight, i) => total + weight * at(i), 0);
+    expect(Math.abs(sum(() => 1))).toBeLessThan(1e-12);
+    expect(Math.abs(sum((i) => i - 25))).toBeLessThan(1e-11);
+    fc.assert(
+      fc.property(
+        numbers(92, 108),
+        numbers(-1_000, 1_000),
+        numbers(-30, 30),
+        (place, uv, slope) => {
+          const row = rowAt(place);
+          const plain = align(row, timerOf(average), 100, 12);
+          const tilted = align(
+            row.map((value, i) => value + uv + slope * i),
+            timerOf(average),
+            100,
+            12,
+          );
+          // A lopsided shape has an offset of its own, a few hundredths of a sample, one for every beat.
+          expect(Math.abs(plain.place - place - offset)).toBeLessThan(0.02);
+          expect(Math.abs(tilted.place - plain.place)).toBeLessThan(1e-9);
+          expect(Math.abs(tilted.size - plain.size)).toBeLessThan(1e-9);
+        },
+      ),
+      always(50),
+    );
+  });
+
   it('moves by whole samples with the row, to the bit', () => {
     fc.assert(
       fc.property(numbers(95, 105), fc.integer({ min: -20, max: 20 }), (place, by) => {
