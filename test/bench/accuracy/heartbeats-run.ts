@@ -1,9 +1,9 @@
 import { type Detection, detectBeats } from '../../../src/heart/detect';
+import { createRandom } from '../../../src/numeric/random';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
 import { type Interval, joinIntervals } from '../../../src/recording/span';
 import { createSeparation } from '../../../src/separate/separation';
 import { addEcgNoise } from '../../../src/simulate/ecg-noise';
-import { createRandom } from '../../../src/numeric/random';
 import { createSpoilWatch } from '../../../src/trust/spoil-watch';
 import { TICKS_PER_SAMPLE } from '../../../src/units/ticks';
 
@@ -26,7 +26,12 @@ const SLOW_UV = 200;
 const BREATH_UV = 60;
 
 /** An ECG with R peaks of `heightUv` scaled to a level and mixed with what an abdominal lead holds; all of it invented. */
-export function atLevel(ecg: LeadToScore, heightUv: number, level: Level, seed: number): LeadToScore {
+export function atLevel(
+  ecg: LeadToScore,
+  heightUv: number,
+  level: Level,
+  seed: number,
+): LeadToScore {
   if (level === null) return ecg;
   const { rateHz } = ecg;
   const random = createRandom(seed + 77_000);
@@ -46,8 +51,8 @@ export function atLevel(ecg: LeadToScore, heightUv: number, level: Level, seed: 
     {
       wanderUv: 15,
       muscleUv: 2.5,
-      burstsPerMin: 4,
-      burstUv: 14,
+      burstsPerMin: 5,
+      burstUv: 18,
       burstS: 2,
       motionPerMin: 0,
       motionUv: 0,
@@ -77,8 +82,14 @@ export interface Found {
   readonly heartbeat: Float32Array;
 }
 
-/** Beats as the program finds them unaided: separation by the default route, its own spoiled spans, detection. */
-export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): Found {
+/**
+ * Beats as the program finds them unaided: separation by the default route, its own spoiled spans, detection. With `spans`
+ * 'empty' only those where the lead carries nothing are left out, so that what the others take away can be told.
+ */
+export function findAsProgram(
+  { signal, rateHz, stepUv, railUv }: LeadToScore,
+  spans: 'own' | 'empty' = 'own',
+): Found {
   const separation = createSeparation({
     lead: '1',
     rateHz,
@@ -93,7 +104,12 @@ export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): 
   }
   const { heart } = separation.finish();
   if (!heart) throw new Error('the heartbeat was wanted');
-  const excluded = joinIntervals(watch.finish().filter(({ target }) => target !== 'stomach'));
+  const excluded = joinIntervals(
+    watch
+      .finish()
+      .filter(({ target }) => target !== 'stomach')
+      .filter(({ cause }) => spans === 'own' || cause === 'rail' || cause === 'flat'),
+  );
   const detection = detectBeats({
     heartbeat: heart.heartbeat,
     rateHz: heart.rateHz,
