@@ -1,3 +1,4 @@
+import { median } from '../numeric/statistics';
 import { align, TIMING_HALF_S, type Timer, timerOf } from './align';
 import type { HeartSignal } from './energy-pass';
 import { addShifted, crestPlace } from './sub-sample';
@@ -12,9 +13,15 @@ const SEARCH_S = 0.03;
 const MOST_BEATS = 600;
 const ROUNDS = 3;
 /** Where the dominant extreme is looked for, about the middle of the complex. */
-const EXTREME_HALF_S = 0.07;
+const EXTREME_HALF_S = 0.09;
 /** Below this part of the opposite extreme the extreme of the study's sign is no landmark. */
-const LEAST_EXTREME = 0.25;
+const LEAST_EXTREME = 0.6;
+/** What stands out is measured over so much to both sides: wide T waves hardly do. */
+const OUT_S = 0.05;
+/** How far a crest may lie from where the average stands out most. */
+const CLIMB_S = 0.025;
+/** The level before the complex: the middle value of this stretch ahead of its middle. */
+const LEVEL_S = [0.28, 0.13] as const;
 
 /** An average of beats of one shape on the heartbeat signal. */
 export interface ShapeAverage {
@@ -67,49 +74,53 @@ export function averageBeats(
   return { shape, count: beats.length, samples, middle, timer };
 }
 
-/** Sign of the dominant extreme of an average: that of its value farthest from the line through its surroundings. */
+/** Sign of the dominant extreme of an average: of what stands out of its surroundings most. */
 export function dominantSign(
   { samples, middle }: Pick<ShapeAverage, 'samples' | 'middle'>,
   rateHz: number,
 ): 1 | -1 {
-  const { high, low } = extremes(samples, middle, rateHz);
-  return samples[high] - baseline(samples, middle, rateHz) >=
-    baseline(samples, middle, rateHz) - samples[low]
-    ? 1
-    : -1;
+  const { up, down } = extremes(samples, middle, rateHz);
+  return up >= down ? 1 : -1;
 }
 
-/** Level just before the complex. */
+/** Level before the complex. */
 export function baseline(samples: ArrayLike<number>, middle: number, rateHz: number): number {
-  const from = Math.max(0, Math.round(middle - 0.12 * rateHz));
-  const to = Math.round(middle - 0.07 * rateHz);
-  let sum = 0;
-  for (let i = from; i <= to; i += 1) sum += samples[i];
-  return sum / (to - from + 1);
+  const from = Math.max(0, Math.round(middle - LEVEL_S[0] * rateHz));
+  const to = Math.round(middle - LEVEL_S[1] * rateHz);
+  return median(Float64Array.from({ length: to - from + 1 }, (_, i) => samples[from + i]));
 }
 
+/** Where an average stands out most, upwards and downwards, of the line from OUT_S before each place to OUT_S after it. */
 function extremes(samples: Float64Array, middle: number, rateHz: number) {
   const reach = Math.round(EXTREME_HALF_S * rateHz);
-  let high = middle;
-  let low = middle;
+  const out = Math.round(OUT_S * rateHz);
+  let [high, low, up, down] = [middle, middle, 0, 0];
   for (let i = middle - reach; i <= middle + reach; i += 1) {
-    if (samples[i] > samples[high]) high = i;
-    if (samples[i] < samples[low]) low = i;
+    const over = samples[i] - (samples[i - out] + samples[i + out]) / 2;
+    if (over > up) [high, up] = [i, over];
+    if (-over > down) [low, down] = [i, -over];
   }
-  return { high, low };
+  return { high, low, up, down };
+}
+
+/** The crest that the samples climb to from a place, within CLIMB_S. */
+function climb(samples: Float64Array, from: number, sign: 1 | -1, rateHz: number): number {
+  const most = Math.round(CLIMB_S * rateHz);
+  let at = from;
+  for (let k = 0; k < most; k += 1) {
+    if (sign * samples[at + 1] > sign * samples[at]) at += 1;
+    else if (sign * samples[at - 1] > sign * samples[at]) at -= 1;
+  }
+  return at;
 }
 
 /** Where the time of a beat is read: the extreme of the study's sign, or the other where that is no landmark. */
 function fiducialOf(average: Omit<ShapeAverage, 'fiducial'>, sign: 1 | -1, rateHz: number): number {
   const { samples, middle } = average;
-  const { high, low } = extremes(samples, middle, rateHz);
-  const level = baseline(samples, middle, rateHz);
-  const up = samples[high] - level;
-  const down = level - samples[low];
-  const own = sign > 0 ? up : down;
-  const other = sign > 0 ? down : up;
+  const { high, low, up, down } = extremes(samples, middle, rateHz);
+  const [own, other] = sign > 0 ? [up, down] : [down, up];
   const use = own >= LEAST_EXTREME * other ? sign : sign > 0 ? -1 : 1;
-  return crestPlace(samples, use > 0 ? high : low, use);
+  return crestPlace(samples, climb(samples, use > 0 ? high : low, use, rateHz), use);
 }
 
 /** Averages this much like the main one take their fiducial point from it. */

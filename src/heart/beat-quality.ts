@@ -75,7 +75,7 @@ function slopeUnder({ weights }: Timer, row: Float64Array): number {
 }
 
 function heightAt({ samples, usable, rateHz }: HeartSignal, time: number): number {
-  const before = Math.round(0.2 * rateHz);
+  const before = Math.round(0.3 * rateHz);
   const at = Math.round(time);
   const row = readFilled(samples, usable, at - before, at + 2);
   return row[before] - baseline(row, before, rateHz);

@@ -5,6 +5,7 @@ import { noiseByHalfSecond } from './between-beats';
 import { distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
+import { type SideWave, sideWaves } from './side-waves';
 
 /** Half of the window a complex is known by, and how far a complex may lie from where it was found. */
 const SHAPE_HALF_S = 0.12;
@@ -36,6 +37,8 @@ export interface Shape {
   /** The average from `before` samples ahead of the middle to the end of the T wave, falling to 0 at both ends. */
   readonly course: Float64Array;
   readonly before: number;
+  /** The P and T waves its beats carry. */
+  readonly waves: readonly SideWave[];
 }
 
 /**
@@ -47,10 +50,8 @@ export function* learnShapes(
   beats: readonly number[],
 ): Generator<number, Shape[]> {
   const windows = yield* readWindows(signal, beats);
-  const settled = settle(
-    windows,
-    distinctShapes(grow(windows), windows, signal.rateHz, signal.bands),
-  );
+  const { rateHz, bands } = signal;
+  const settled = settle(windows, distinctShapes(grow(windows), windows, rateHz, bands), rateHz);
   return byWorth(settled.filter(({ count }) => count >= Math.max(2, 0.001 * windows.rows.length)));
 }
 
@@ -138,8 +139,19 @@ function coherence({ sum, count, power }: Growing & { power: number }, half: num
   return (count * shared - 1) / (count - 1);
 }
 
+/** How far the energy of a sum has its middle from that of the row, in samples; at most twice the lag. */
+function offCentre(sum: Float64Array, half: number, lag: number): number {
+  let power = 1e-30;
+  let moment = 0;
+  middle(sum, half).forEach((value, i) => {
+    power += value * value;
+    moment += (i - half) * value * value;
+  });
+  return Math.max(-2 * lag, Math.min(2 * lag, Math.round(moment / power)));
+}
+
 /** Shares the rows out once more among the shapes, and averages those that fit. */
-function settle(windows: Rows, shapes: readonly Growing[]): Shape[] {
+function settle(windows: Rows, shapes: readonly Growing[], rateHz: number): Shape[] {
   const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
   const sums = shapes.map(({ strict }) => ({
     sum: new Float64Array(2 * rowHalf + 1),
@@ -165,15 +177,25 @@ function settle(windows: Rows, shapes: readonly Growing[]): Shape[] {
     .filter(({ count }) => count > 0)
     .map((group) => ({ ...group, alike: coherence(group, half) }))
     .filter(({ alike }) => alike > LEAST_COHERENCE)
-    .map(({ sum, count, alike }) => {
-      const average = middle(sum, half).map((value) => value / count);
+    .map(({ sum, count, strict, alike }) => {
+      const centre = rowHalf + offCentre(sum, half, lag);
+      const average = sum.slice(centre - half, centre + half + 1).map((value) => value / count);
       const norm = rms(average) * Math.sqrt(average.length);
-      const after = Math.max(half, Math.min(rowHalf, latest + half, usualRr - half));
-      const before = Math.max(half, Math.min(rowHalf, half + 3 * lag, usualRr - after));
-      const course = sum.slice(rowHalf - before, rowHalf + after + 1);
+      const after = Math.max(half, Math.min(rowHalf - 2 * lag, latest + half, usualRr - half));
+      const before = Math.max(half, Math.min(rowHalf - 2 * lag, half + 3 * lag, usualRr - after));
+      const course = sum.slice(centre - before, centre + after + 1);
       for (let i = 0; i < course.length; i += 1)
         course[i] *= Math.min(1, i / lag, (course.length - 1 - i) / lag) / count;
-      return { average, half, norm, count, course, before, coherence: alike };
+      return {
+        average,
+        half,
+        norm,
+        count,
+        course,
+        before,
+        waves: sideWaves({ sum, count, strict }, centre, half, rateHz),
+        coherence: alike,
+      };
     })
     .sort((a, b) => b.count - a.count);
 }

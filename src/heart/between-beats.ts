@@ -55,12 +55,20 @@ export function rarityCosts(shapes: readonly Shape[]): number[] {
   return shapes.map(({ count }) => RARITY_COST * log10(most / count));
 }
 
+/** A place with the shape that fits it best, their normalised correlation, and the size beside the shape's own. */
+export interface Fitted {
+  readonly sample: number;
+  readonly shape: number;
+  readonly likeness: number;
+  readonly size: number;
+}
+
 /** Best fitting shape within `reach` samples of a place, and where. */
 export function bestFit(
-  { fits, normAt, costs }: Projected,
+  { fits, normAt, costs, shapes }: Projected,
   at: number,
   reach: number,
-): { sample: number; shape: number; likeness: number } {
+): Fitted {
   let best = { sample: at, shape: 0, likeness: -1 };
   let value = -2;
   const last = Math.min(fits[0].length - 1, at + reach);
@@ -73,7 +81,7 @@ export function bestFit(
       best = { sample: i, shape: k, likeness };
     }
   }
-  return best;
+  return { ...best, size: fits[best.shape][best.sample] / shapes[best.shape].norm };
 }
 
 /** The band with the usual course of each beat taken out, in the beat's own size: what is between the beats. */
@@ -84,9 +92,8 @@ export function withoutBeats(
 ): Float64Array {
   const rest = projected.band.slice();
   for (const beat of beats) {
-    const { sample, shape } = bestFit(projected, beat, reach);
-    const { course, before, norm } = projected.shapes[shape];
-    const size = projected.fits[shape][sample] / norm;
+    const { sample, shape, size } = bestFit(projected, beat, reach);
+    const { course, before } = projected.shapes[shape];
     const from = Math.max(0, before - sample);
     const to = Math.min(course.length, rest.length - sample + before);
     for (let i = from; i < to; i += 1) rest[sample - before + i] -= size * course[i];

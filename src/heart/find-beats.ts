@@ -2,7 +2,7 @@ import { medianInPlace } from '../numeric/statistics';
 import { afterWaveCosts, type Host } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
-import { evidenceOf, firstEvidence } from './evidence';
+import { firstEvidence, placeEvidence, sizeEvidence } from './evidence';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
@@ -12,7 +12,18 @@ export interface FoundBeats {
   readonly shapes: readonly Shape[];
 }
 
+/** A place with its evidence. */
+type Weighed = Candidate & { readonly score: number };
+
 const NEIGHBOURS = 7;
+/** Looks by shape, energy and rhythm together; the first without rhythm. */
+const ROUNDS = 3;
+/** Likeness of the places that sizes are learned from before beats are known. */
+const ALIKE = 0.7;
+/** A rhythm that says nothing: the first look by shape is to find beats of any rhythm. */
+const NO_RHYTHM: RhythmAt = { rrS: 0.8, spread: 10, sure: 0, rare: 0 };
+/** What a T wave's time and energy weigh beside its shape, by the same regression as the evidence. */
+const WAVE_WEIGHT = 0.37;
 
 /** Finds the beats: first by energy and rhythm, then by shape, energy and rhythm together. */
 export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
@@ -25,22 +36,24 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
   const first = yield* firstBeats(energy, levels, rateHz, fallback);
   const shapes = yield* scaled(learnShapes(signal, first), 0.3, 0.5);
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
-  let times = first.map((sample) => sample / rateHz);
-  let beats: Candidate[] = [];
-  for (let round = 0; round < 2; round += 1) {
-    const sizes = usualSizes(round === 0 ? candidates.filter((c) => c.likeness > 0.7) : beats);
-    const scores = candidates.map((candidate) => {
-      const s = Math.min(levels.beat.length - 1, Math.floor(candidate.sample / rateHz));
-      return evidenceOf(candidate, sizes(candidate.sample), levels.beat[s], levels.noise[s]);
-    });
+  const evidence = candidates.map((candidate) => {
+    const s = Math.min(levels.beat.length - 1, Math.floor(candidate.sample / rateHz));
+    return placeEvidence(candidate, levels.beat[s], levels.noise[s]);
+  });
+  let beats: Weighed[] = [];
+  for (let round = 0; round < ROUNDS; round += 1) {
+    const sizes = usualSizes(
+      round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
+    );
+    const scores = evidence.map((value, i) => value + sizeEvidence(candidates[i], sizes));
     const hosts = round === 0 ? likeliest(candidates, first, rateHz) : beats;
-    const rhythm = rhythmFromBeats(times, fallback);
-    const path = likelyPath(candidates, scores, hosts, { energy, rateHz, rhythm });
-    beats = path.map((i) => candidates[i]);
-    times = beats.map((beat) => beat.sample / rateHz);
+    const times = beats.map((beat) => beat.sample / rateHz);
+    const rhythm = round === 0 ? () => NO_RHYTHM : rhythmFromBeats(times, fallback);
+    const path = likelyPath(candidates, scores, hosts, { energy, rateHz, rhythm }, WAVE_WEIGHT);
+    beats = path.map((i) => ({ ...candidates[i], score: scores[i] }));
     yield 0.92;
   }
-  return { beats: present(beats), shapes };
+  return { beats: present(beats, shapes), shapes };
 }
 
 /** Runs a pass and reports its part of the whole. */
@@ -64,6 +77,7 @@ function likelyPath(
   scores: readonly number[],
   hosts: readonly Host[],
   { energy, rateHz, rhythm }: Surroundings,
+  weight: number,
 ): number[] {
   const weighed = places.map((place, i) => ({ ...place, score: scores[i] }));
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
@@ -71,7 +85,7 @@ function likelyPath(
   const times = places.map((place) => place.sample / rateHz);
   return bestPath(
     times,
-    costs.map((cost, i) => cost + scores[i]),
+    costs.map((cost, i) => weight * cost + scores[i]),
     rhythm,
   );
 }
@@ -97,7 +111,7 @@ function* firstBeats(
       path.map((i) => times[i]),
       rhythm,
     );
-    path = likelyPath(places, scores, hosts, { energy, rateHz, rhythm });
+    path = likelyPath(places, scores, hosts, { energy, rateHz, rhythm }, 1);
     yield 0.3;
   }
   return path.map((i) => crests[i].sample);
@@ -142,29 +156,31 @@ function usualSizes(beats: readonly Candidate[]): (sample: number) => number {
 }
 
 /** Beats to each side that tell whether there is a heartbeat at all. */
-const PRESENCE_NEIGHBOURS = 15;
-/** Noise alone gives a median likeness or a median size over noise below these. */
+const PRESENCE_NEIGHBOURS = 20;
+/** Noise alone gives shapes whose beats are little like one another, and median likeness and size over noise below these. */
+const LEAST_COHERENCE = 0.65;
 const LEAST_LIKENESS = 0.8;
-const LEAST_OVER_NOISE = 2.8;
-/** A size over noise that needs no likeness. */
-const CLEAR_OVER_NOISE = 3.6;
+const LEAST_OVER_NOISE = 3.6;
+/** Beats of shapes this much alike need no more than some evidence, as where T waves fill all there is between them. */
+const SURE_COHERENCE = 0.75;
+const LEAST_EVIDENCE = 1;
 
-/** The beats of stretches where most of them stand out of the noise or are like their shapes: noise alone has no heartbeat. */
-function present(beats: readonly Candidate[]): Candidate[] {
-  const likeness = new Float64Array(2 * PRESENCE_NEIGHBOURS + 1);
-  const overNoise = new Float64Array(2 * PRESENCE_NEIGHBOURS + 1);
-  return beats.filter((_, i) => {
+/** The beats of stretches where most of them are like their shapes or stand out of the noise: noise alone has no heartbeat. */
+function present(beats: readonly Weighed[], shapes: readonly Shape[]): Candidate[] {
+  const few = new Float64Array(2 * PRESENCE_NEIGHBOURS + 1);
+  const medianAbout = (i: number, value: (beat: Weighed) => number) => {
     const first = Math.max(0, i - PRESENCE_NEIGHBOURS);
     const last = Math.min(beats.length - 1, i + PRESENCE_NEIGHBOURS);
-    for (let j = first; j <= last; j += 1) {
-      likeness[j - first] = beats[j].likeness;
-      overNoise[j - first] = beats[j].overNoise;
-    }
-    const count = last - first + 1;
-    const clear = medianInPlace(overNoise, count);
+    for (let j = first; j <= last; j += 1) few[j - first] = value(beats[j]);
+    return medianInPlace(few, last - first + 1);
+  };
+  const coherence = ({ shape }: Weighed) => shapes[shape]?.coherence ?? 0;
+  return beats.filter((_, i) => {
+    if (medianAbout(i, ({ overNoise }) => overNoise) > LEAST_OVER_NOISE) return true;
+    const alike = medianAbout(i, coherence);
     return (
-      clear > CLEAR_OVER_NOISE ||
-      (clear > LEAST_OVER_NOISE && medianInPlace(likeness, count) > LEAST_LIKENESS)
+      (alike > LEAST_COHERENCE && medianAbout(i, ({ likeness }) => likeness) > LEAST_LIKENESS) ||
+      (alike > SURE_COHERENCE && medianAbout(i, ({ score }) => score) > LEAST_EVIDENCE)
     );
   });
 }

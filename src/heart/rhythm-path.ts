@@ -4,6 +4,15 @@ import { log } from '../numeric/elementary';
 const REFRACTORY_S = 0.2;
 /** Below this an interval is doubtful in itself. */
 const DOUBTFUL_S = 0.3;
+/** What the rhythm weighs beside each beat's own evidence: more, and it would make beats and lose irregular ones. */
+const WEIGHT = 0.6;
+/** What a beat costs for being earlier still than three quarters of the usual interval, for each whole interval. */
+const EARLINESS = 3;
+/** An early beat that follows an early one at the same interval is a run: it costs this part of what the first did. */
+const RUN_PART = 0.5;
+const RUN_SPREAD = 0.15;
+/** Earlier than this part of the usual interval, a beat is followed by a pause. */
+const EARLY = 0.87;
 /** What a break of the rhythm costs at most, the start of the study included. */
 const BREAK_COST = 5;
 
@@ -27,17 +36,23 @@ export const logRatio = (a: number, b: number) => (2 * (a - b)) / (a + b);
 
 /**
  * How well an interval fits the rhythm: about 1 for the usual one, down to -8; a log-probability up to a constant.
- * Near the usual interval it falls as a normal density of log RR; beyond, early beats and pauses stay possible at a price.
+ * Near the usual interval it falls as a normal density of log RR; beyond, early beats and pauses stay possible at a price,
+ * but a pause that makes up for an early beat (`beforeS` is the interval before) is as usual as any,
+ * and early beats come in runs.
  */
-export function intervalFit(rrS: number, rhythm: RhythmAt): number {
+export function intervalFit(rrS: number, rhythm: RhythmAt, beforeS = rhythm.rrS): number {
   const { rrS: usualS, spread, sure, rare } = rhythm;
   const ratio = rrS / usualS;
-  const usual = sure - 0.5 * (logRatio(rrS, usualS) / spread) ** 2;
+  const off = Math.abs(logRatio(rrS, usualS));
+  const early = beforeS < EARLY * usualS;
+  const made = early ? Math.abs(logRatio(rrS + beforeS, 2 * usualS)) : off;
+  const usual = sure - 0.5 * (Math.min(off, made) / spread) ** 2;
   const side =
     ratio < 1
-      ? rare - 5 * Math.max(0, 0.75 - ratio)
+      ? rare - EARLINESS * Math.max(0, 0.75 - ratio)
       : rare - 1.8 * Math.min(1, Math.max(0, ratio - 1.3) * 2) - 0.5 * Math.max(0, ratio - 2);
-  const fit = Math.max(usual, side, -BREAK_COST - 3);
+  const again = RUN_PART * rare - 0.5 * (logRatio(rrS, beforeS) / RUN_SPREAD) ** 2;
+  const fit = WEIGHT * Math.max(usual, side, early ? again : side, -BREAK_COST - 3);
   return rrS < DOUBTFUL_S ? fit - 40 * (DOUBTFUL_S - rrS) : fit;
 }
 
@@ -70,7 +85,9 @@ export function bestPath(
     for (let i = j - 1; i >= old; i -= 1) {
       const rrS = timesS[j] - timesS[i];
       if (rrS < REFRACTORY_S) continue;
-      const sum = total[i] + intervalFit(rrS, rhythm);
+      const before = previous[i];
+      const beforeS = before < 0 ? rhythm.rrS : timesS[i] - timesS[before];
+      const sum = total[i] + intervalFit(rrS, rhythm, beforeS);
       if (sum > best) {
         best = sum;
         from = i;

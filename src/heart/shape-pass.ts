@@ -1,13 +1,7 @@
 import type { KernelSpectrum } from '../numeric/kernel-spectrum';
 import { blockSizeFor, kernelSpectrum, overlapSave } from '../numeric/overlap-save';
 import { SHAPE_LAG_S, type Shape } from './beat-shapes';
-import {
-  bestFit,
-  noiseByHalfSecond,
-  type Projected,
-  rarityCosts,
-  withoutBeats,
-} from './between-beats';
+import { type Projected, rarityCosts } from './between-beats';
 import {
   CREST_APART_S,
   type Crest,
@@ -18,13 +12,12 @@ import {
 } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
 import { isUsable } from './usable-signal';
+import { fittedPlaces, weigher } from './weigh-places';
 
 /** Shapes searched for over the whole study, at most. */
 const MOST_SEARCHED = 4;
 /** A place is worth weighing from this part of a shape's usual size on. */
 const LEAST_SIZE = 0.2;
-/** Independent values in a window of the shape band: twice its width in Hz times its length in s, less the slope of its edges. */
-const WINDOW_FREEDOM = 8;
 
 /** A place where a beat may be. */
 export interface Candidate {
@@ -40,8 +33,14 @@ export interface Candidate {
   readonly overNoise: number;
   /** Likeness of a usual beat in this noise to its own shape. */
   readonly bestLikeness: number;
-  /** QRS energy at the nearest crest, 0 where none is near. */
+  /** QRS energy there. */
   readonly energyUv: number;
+  /** Share of the learned beats that have the shape. */
+  readonly share: number;
+  /** How much it is like a P or T wave of the usual beats, 0 to 1. */
+  readonly likeWave: number;
+  /** Root mean square of the shape band over the window about it. */
+  readonly rmsUv: number;
 }
 
 /** Looks for the learned shapes everywhere, `first` being the beats they were learned from; yields the part done. */
@@ -66,25 +65,51 @@ export function* shapePass(
     while (firstFrom < first.length && first[firstFrom] < start) firstFrom += 1;
     for (let i = firstFrom; i < first.length && first[i] < start + stretch.length; i += 1)
       near.push(first[i] - start);
-    const weigh = weigher(projected, near, { rateHz, half, from: from - start, to: to - start });
     const crests: Crest[] = [];
     for (; crestFrom < energy.crests.length && energy.crests[crestFrom].sample < to; crestFrom += 1)
       crests.push({
         ...energy.crests[crestFrom],
         sample: energy.crests[crestFrom].sample - start,
       });
-    for (const place of placesOf(projected, crests, apart, from - start, to - start)) {
-      const weighed = weigh(place.sample);
-      const sample = weighed.sample + start;
-      if (isUsable(usable, sample)) found.push({ ...weighed, sample, energyUv: place.energyUv });
+    const places = placesOf(projected, crests, apart, from - start, to - start);
+    const fitted = fittedPlaces(projected, places, Math.round(SHAPE_LAG_S * rateHz));
+    const weigh = weigher(projected, near, fitted, {
+      rateHz,
+      half,
+      from: from - start,
+      to: to - start,
+    });
+    for (const fit of fitted) {
+      const sample = fit.sample + start;
+      const energyUv = energyAt(energy, sample / rateHz);
+      if (isUsable(usable, sample)) found.push({ ...weigh(fit), sample, energyUv });
     }
     yield to / samples.length;
   }
   return found.sort((a, b) => a.sample - b.sample);
 }
 
+/** The greatest energy within a step of the envelope of a time. */
+function energyAt({ envelope, envelopeHz }: Energy, timeS: number): number {
+  const at = Math.round(timeS * envelopeHz);
+  let greatest = 0;
+  for (let i = at - 1; i <= at + 1; i += 1) if (envelope[i] > greatest) greatest = envelope[i];
+  return greatest;
+}
+
 function unlike({ sample, energyUv }: Crest): Candidate {
-  return { sample, shape: -1, size: 0, likeness: 0, overNoise: 0, bestLikeness: 1, energyUv };
+  return {
+    sample,
+    shape: -1,
+    size: 0,
+    likeness: 0,
+    overNoise: 0,
+    bestLikeness: 1,
+    energyUv,
+    share: 1,
+    likeWave: 0,
+    rmsUv: energyUv,
+  };
 }
 
 /** Plans the projections on all shapes, two to a filter. */
@@ -119,69 +144,18 @@ function projectBand(
   };
 }
 
-/** Places worth weighing: crests of the projections, with the energy's crest at each, and crests of the energy alone. */
+/** Places worth weighing: crests of the projection on each shape, and crests of the energy. */
 function placesOf(
   { fits, shapes }: Projected,
   crests: readonly Crest[],
   apart: number,
   from: number,
   to: number,
-): Crest[] {
-  const best = new Float64Array(fits[0].length);
+): number[] {
+  const places = crests.map(({ sample }) => sample);
   fits.forEach((fit, k) => {
-    const scale = 1 / shapes[k].norm;
-    for (let i = 0; i < best.length; i += 1) best[i] = Math.max(best[i], fit[i] * scale);
+    const least = LEAST_SIZE * shapes[k].norm;
+    for (const at of crestsIn(fit, from, to, apart)) if (fit[at] > least) places.push(at);
   });
-  const places = crestsIn(best, from, to, apart)
-    .filter((at) => best[at] > LEAST_SIZE)
-    .map((sample) => ({ sample, energyUv: 0 }));
-  const alone: Crest[] = [];
-  let next = 0;
-  for (const crest of crests) {
-    while (
-      next < places.length - 1 &&
-      Math.abs(places[next + 1].sample - crest.sample) <=
-        Math.abs(places[next].sample - crest.sample)
-    )
-      next += 1;
-    const place = places[next];
-    if (place && Math.abs(place.sample - crest.sample) <= apart)
-      place.energyUv = Math.max(place.energyUv, crest.energyUv);
-    else alone.push(crest);
-  }
-  return [...places, ...alone];
-}
-
-interface View {
-  readonly rateHz: number;
-  readonly half: number;
-  readonly from: number;
-  readonly to: number;
-}
-
-/** Weighs a place: which shape fits best near it, how well, how large, against the noise between the beats near it. */
-function weigher(
-  projected: Projected,
-  beats: readonly number[],
-  { rateHz, half, from, to }: View,
-): (at: number) => Omit<Candidate, 'energyUv'> {
-  const { shapes, fits } = projected;
-  const reach = Math.round(SHAPE_LAG_S * rateHz);
-  const rest = rmsAbout(withoutBeats(projected, beats, reach), 2 * half + 1);
-  const noise = noiseByHalfSecond(rest, projected.band.length, rateHz, from, to, 0.5);
-  return (at) => {
-    const moment = Math.min(noise.length - 1, Math.max(0, Math.floor((2 * (at - from)) / rateHz)));
-    const noisePower = noise[moment] ** 2 * (2 * half + 1);
-    const { sample, shape, likeness } = bestFit(projected, at, reach);
-    const { norm } = shapes[shape];
-    const fit = fits[shape][sample];
-    return {
-      sample,
-      shape,
-      likeness,
-      size: fit / norm,
-      overNoise: fit / (Math.sqrt(noisePower / WINDOW_FREEDOM) + 1e-12),
-      bestLikeness: norm / Math.sqrt(norm ** 2 + noisePower),
-    };
-  };
+  return places.sort((a, b) => a - b);
 }
