@@ -1,5 +1,6 @@
 import { log } from '../numeric/elementary';
 import { mean, medianInPlace } from '../numeric/statistics';
+import { isBrokenByJumps, isPatterned } from './broken-rhythm';
 
 /** Two measures of how little of a rhythm can be foreseen; a rhythm is irregular where both are high. */
 export interface Irregularity {
@@ -106,14 +107,18 @@ function isIrregular(limits: Limits, rrMs: Float64Array): boolean {
 }
 
 /**
- * True where a stretch of intervals in ms is irregular as a whole or in either half (a bout of half the stretch is
- * enough to spoil its figures); halves are split by count. False for fewer than 48 intervals.
+ * True where a stretch of intervals in ms is irregular: nothing foretells its intervals, in the whole or in either half (a
+ * bout of half the stretch is enough to spoil its figures; halves are split by count), or it is broken by jumps, or repeats a
+ * pattern of early beats. False for fewer than 48 intervals.
  */
 export function isIrregularStretch(rrMs: Float64Array): boolean {
+  if (rrMs.length < FEWEST_FOR_RHYTHM) return false;
   const half = Math.floor(rrMs.length / 2);
   return (
     isIrregular(WHOLE_LIMITS, rrMs) ||
     isIrregular(HALF_LIMITS, rrMs.subarray(0, half)) ||
-    isIrregular(HALF_LIMITS, rrMs.subarray(half))
+    isIrregular(HALF_LIMITS, rrMs.subarray(half)) ||
+    isBrokenByJumps(rrMs) ||
+    isPatterned(rrMs)
   );
 }

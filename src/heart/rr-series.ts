@@ -8,6 +8,9 @@ import type { Seconds } from '../units/time';
 
 const NORMAL = BEAT_CLASSES.indexOf('N');
 const SUPRAVENTRICULAR = BEAT_CLASSES.indexOf('S');
+const ECTOPIC: readonly number[] = (['S', 'V', 'F'] as const).map((one) =>
+  BEAT_CLASSES.indexOf(one),
+);
 const PLACED = BEAT_ORIGINS.indexOf('placed');
 
 /**
@@ -58,20 +61,33 @@ export function rrSeries(beats: BeatList, rateHz: Hertz, blocked: readonly Inter
   return { timesS: times.slice(1), rrMs, nn };
 }
 
-/**
- * Intervals that tell the rhythm, 1 or 0 each: as NN, but S beats count too, since a rhythm that comes from above the
- * ventricles is what is to be judged.
- */
-export function rhythmIntervals(
+/** What each interval says of the rhythm, one value an interval. */
+export interface RhythmFlags {
+  /**
+   * 1 for intervals that tell the rhythm: as NN, but S beats count too, since a rhythm that comes from above the ventricles is
+   * what is to be judged.
+   */
+  readonly tells: Uint8Array;
+  /** 1 for intervals that end in an S, V or F beat, with nothing blocked between. */
+  readonly ectopic: Uint8Array;
+}
+
+/** The flags of beats; `rateHz` and `blocked` as for rrSeries. */
+export function rhythmFlags(
   beats: BeatList,
   rateHz: Hertz,
   blocked: readonly Interval[],
-): Uint8Array {
+): RhythmFlags {
   const inBlocked = blockedIntervals(beatTimes(beats, rateHz), blocked);
   const tells = (beat: number) =>
     (beats.classes[beat] === NORMAL || beats.classes[beat] === SUPRAVENTRICULAR) &&
     beats.origins[beat] !== PLACED;
-  return inBlocked.map((isBlocked, i) => (isBlocked === 0 && tells(i) && tells(i + 1) ? 1 : 0));
+  return {
+    tells: inBlocked.map((isBlocked, i) => (isBlocked === 0 && tells(i) && tells(i + 1) ? 1 : 0)),
+    ectopic: inBlocked.map((isBlocked, i) =>
+      isBlocked === 0 && ECTOPIC.includes(beats.classes[i + 1]) ? 1 : 0,
+    ),
+  };
 }
 
 /** Intervals [first, end) of a series that lie wholly in [fromS, toS): they begin at or after fromS and end before toS. */

@@ -4,7 +4,7 @@ import type { Phase } from '../recording/phase';
 import type { Settings } from '../recording/settings';
 import type { Interval } from '../recording/span';
 import type { Hertz } from '../units/rate';
-import { intervalsWithin, rhythmIntervals } from './rr-series';
+import { intervalsWithin, type RhythmFlags, rhythmFlags } from './rr-series';
 import { type Laid, layOut, type SegmentInput, type SegmentResult, segmentOf } from './segments';
 
 /** A segment worked out before, with the intervals it was worked out from. */
@@ -12,7 +12,7 @@ interface Held {
   readonly timesS: Float64Array;
   readonly rrMs: Float64Array;
   readonly nn: Uint8Array;
-  readonly rhythm: Uint8Array;
+  readonly rhythm: RhythmFlags;
   readonly result: SegmentResult;
 }
 
@@ -52,7 +52,8 @@ function recall(
     sameFrom(rr.rrMs, first, one.rrMs) &&
     sameFrom(rr.timesS, first, one.timesS) &&
     sameFrom(rr.nn, first, one.nn) &&
-    sameFrom(rhythm, first, one.rhythm);
+    sameFrom(rhythm.tells, first, one.rhythm.tells) &&
+    sameFrom(rhythm.ectopic, first, one.rhythm.ectopic);
   return same ? { ...one.result, first, end } : null;
 }
 
@@ -63,16 +64,19 @@ function remember(key: string, { rr, rhythm }: SegmentInput, result: SegmentResu
     timesS: rr.timesS.slice(first, end),
     rrMs: rr.rrMs.slice(first, end),
     nn: rr.nn.slice(first, end),
-    rhythm: rhythm.slice(first, end),
+    rhythm: {
+      tells: rhythm.tells.slice(first, end),
+      ectopic: rhythm.ectopic.slice(first, end),
+    },
     result,
   });
 }
 
 /** The flags of the last series asked for: the parts of a study ask for the same ones. */
-const rhythms = new WeakMap<RrSeries, Uint8Array>();
+const rhythms = new WeakMap<RrSeries, RhythmFlags>();
 
-function rhythmOf({ rr, beats, rateHz, blocked }: SegmentsAsked): Uint8Array {
-  const known = rhythms.get(rr) ?? rhythmIntervals(beats, rateHz, blocked);
+function rhythmOf({ rr, beats, rateHz, blocked }: SegmentsAsked): RhythmFlags {
+  const known = rhythms.get(rr) ?? rhythmFlags(beats, rateHz, blocked);
   rhythms.set(rr, known);
   return known;
 }

@@ -4,8 +4,8 @@ import type { Phase } from '../recording/phase';
 import type { Settings } from '../recording/settings';
 import type { Seconds } from '../units/time';
 import type { Band } from './band-power';
-import { isIrregularStretch } from './irregularity';
-import { intervalsWithin } from './rr-series';
+import { FEWEST_FOR_RHYTHM, isIrregularStretch } from './irregularity';
+import { intervalsWithin, type RhythmFlags } from './rr-series';
 import { timeDomain } from './variability';
 import { lombBandPowers, welchBandPowers } from './variability-spectrum';
 
@@ -31,8 +31,7 @@ export interface SegmentResult {
 
 export interface SegmentInput {
   readonly rr: RrSeries;
-  /** Intervals that tell the rhythm, from rhythmIntervals. */
-  readonly rhythm: Uint8Array;
+  readonly rhythm: RhythmFlags;
   readonly settings: Settings['variability'];
 }
 
@@ -124,14 +123,22 @@ function nnShareOf(nnCount: number, all: number, nnSeconds: number, lengthS: Sec
   return Math.min(nnCount / all, nnSeconds / Math.max(beatS, lengthS - beatS), 1);
 }
 
+/** A rhythm with more early beats than this is not a normal one with a few (common practice, no source). */
+const MOST_ECTOPIC = 0.1;
+
+function isIrregular({ rr, rhythm }: SegmentInput, first: number, end: number): boolean {
+  const ectopic = rhythm.ectopic.subarray(first, end).reduce((sum, one) => sum + one, 0);
+  if (end - first >= FEWEST_FOR_RHYTHM && ectopic > MOST_ECTOPIC * (end - first)) return true;
+  return isIrregularStretch(chosen(rr.rrMs, rhythm.tells, first, end));
+}
+
 function stateOf(
   input: SegmentInput,
   laid: Laid,
   alone: boolean,
   found: { first: number; end: number; nnShare: number },
 ): HeartSegment['state'] {
-  if (isIrregularStretch(chosen(input.rr.rrMs, input.rhythm, found.first, found.end)))
-    return 'irregular';
+  if (isIrregular(input, found.first, found.end)) return 'irregular';
   if (!laid.full && !(alone && laid.toS - laid.fromS >= HF_NEEDS_S - ROUNDING_S))
     return 'too-short';
   return found.nnShare < input.settings.minNnShare - 1e-9 ? 'too-few-nn' : 'used';

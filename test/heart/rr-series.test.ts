@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { intervalsWithin, rhythmIntervals, rrSeries } from '../../src/heart/rr-series';
+import { intervalsWithin, rhythmFlags, rrSeries } from '../../src/heart/rr-series';
 import { beatsOf, NO_BEATS } from '../../src/recording/beat';
 import { beatsAfter, RATE_HZ } from './beats';
 
@@ -63,9 +63,9 @@ describe('RR series', () => {
 
   it('judges the rhythm by S beats too, but not by V or spoiled ones', () => {
     const beats = beatsAfter(even(6), 0, 'NSNVNNN');
-    expect([...rhythmIntervals(beats, RATE_HZ, [{ fromS: 5.2, toS: 5.3 }])]).toEqual([
-      1, 1, 0, 0, 1, 0,
-    ]);
+    const { tells, ectopic } = rhythmFlags(beats, RATE_HZ, [{ fromS: 5.2, toS: 5.3 }]);
+    expect([...tells]).toEqual([1, 1, 0, 0, 1, 0]);
+    expect([...ectopic]).toEqual([1, 0, 1, 0, 0, 0]);
   });
 
   it('gives a part only the intervals that lie wholly in it', () => {
