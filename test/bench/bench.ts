@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
+import { heartbeats } from './accuracy/heartbeats';
 import { detection } from './detection';
 import { loadWords, machineFacts } from './machine';
 import type { Bench, Measured, Part } from './measured';
@@ -19,6 +20,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   opening,
   'page-size': pageSize,
   accuracy,
+  heartbeats,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]

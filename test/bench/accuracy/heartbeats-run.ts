@@ -1,4 +1,4 @@
-import { type Detection, detectBeats } from '../../../src/heart/detect';
+import { detectBeats } from '../../../src/heart/detect';
 import { createRandom } from '../../../src/numeric/random';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
 import { type Interval, joinIntervals } from '../../../src/recording/span';
@@ -76,20 +76,15 @@ export function atLevel(
 
 export interface Found {
   readonly timesS: readonly number[];
-  readonly detection: Detection;
-  /** Its own spoiled spans for the heart. */
-  readonly excluded: readonly Interval[];
-  readonly heartbeat: Float32Array;
+  /** All spans for the heart that the program proposes. */
+  readonly proposed: readonly Interval[];
 }
 
 /**
- * Beats as the program finds them unaided: separation by the default route, its own spoiled spans, detection. With `spans`
- * 'empty' only those where the lead carries nothing are left out, so that what the others take away can be told.
+ * Beats as the program finds them: separation by the default route, then detection, with only those of its own spoiled spans
+ * left out where the lead carries nothing, so that detector and spans can be judged apart.
  */
-export function findAsProgram(
-  { signal, rateHz, stepUv, railUv }: LeadToScore,
-  spans: 'own' | 'empty' = 'own',
-): Found {
+export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): Found {
   const separation = createSeparation({
     lead: '1',
     rateHz,
@@ -104,22 +99,16 @@ export function findAsProgram(
   }
   const { heart } = separation.finish();
   if (!heart) throw new Error('the heartbeat was wanted');
-  const excluded = joinIntervals(
-    watch
-      .finish()
-      .filter(({ target }) => target !== 'stomach')
-      .filter(({ cause }) => spans === 'own' || cause === 'rail' || cause === 'flat'),
-  );
-  const detection = detectBeats({
+  const spans = watch.finish().filter(({ target }) => target !== 'stomach');
+  const empty = spans.filter(({ cause }) => cause === 'rail' || cause === 'flat');
+  const { beats } = detectBeats({
     heartbeat: heart.heartbeat,
     rateHz: heart.rateHz,
     ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
-    excluded,
+    excluded: joinIntervals(empty),
   });
   return {
-    timesS: Array.from(detection.beats.ticks, (tick) => tick / (TICKS_PER_SAMPLE * rateHz)),
-    detection,
-    excluded,
-    heartbeat: heart.heartbeat,
+    timesS: Array.from(beats.ticks, (tick) => tick / (TICKS_PER_SAMPLE * rateHz)),
+    proposed: joinIntervals(spans),
   };
 }
