@@ -46,17 +46,6 @@ export function blocksOf(x: Float64Array, lengths: readonly number[]): Float64Ar
   return blocks;
 }
 
-/** The quickest of five runs in ms, so that a busy machine does not decide. */
-export function quickestMs(run: () => void): number {
-  let quickest = Number.POSITIVE_INFINITY;
-  for (let k = 0; k < 5; k++) {
-    const from = performance.now();
-    run();
-    quickest = Math.min(quickest, performance.now() - from);
-  }
-  return quickest;
-}
-
 /** amplitude sin(2 pi f t + phase) at `length` samples of a rate. */
 export function sine(
   length: number,
