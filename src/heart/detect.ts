@@ -11,6 +11,7 @@ import { measureBeats } from './beat-quality';
 import { classifyBeats, isOfShape, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
+import { withMisfitsUnusable } from './out-of-place';
 import { filterBand, LOWEST_RATE_HZ, qrsBands } from './qrs-bands';
 import { rhythmOf } from './rhythm-path';
 import { rhythmFromBeats } from './rhythm-track';
@@ -93,7 +94,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const classes = classesOf(signal, found);
   const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;
   return {
-    beats: listOf(times, classes, ticksPerSample),
+    beats: withMisfitsUnusable(listOf(times, classes, ticksPerSample), signal, ticksPerSample),
     sign,
     averages: timed.map((average) => shown(average, found.beats, classes, rateHz)),
     noiseUv: measured?.noiseUv ?? Number.NaN,

@@ -1,10 +1,12 @@
 import { firstAtOrAfter } from '../numeric/first-at-or-after';
-import { median } from '../numeric/statistics';
+import { quantile } from '../numeric/statistics';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { RhythmBands } from '../recording/settings';
 import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
 import type { Seconds } from '../units/time';
-import type { SpectrumPeak } from './dominant-peak';
+import type { Spectrum } from './background';
+import { type Band, bandSum, type SpectrumPeak } from './dominant-peak';
+import { isLocked, type SampledPart } from './harmonic';
 
 /** DF and half of the crest rate count as equal within this share. */
 const HALF_TOLERANCE = 0.07;
@@ -23,45 +25,73 @@ export function atHalfOfCrests(dfCpm: Cpm, crestCpm: Cpm | null): boolean {
   return crestCpm !== null && Math.abs(2 * dfCpm - crestCpm) <= HALF_TOLERANCE * crestCpm;
 }
 
-/** Median breathing rate of an epoch; null where under half of its values can be told. */
+/**
+ * Between which rates the breathing of an epoch lies, from the tenth to the ninetieth percentile of
+ * what is told; null where under half of its values can be told.
+ */
 export function breathingOf(
   breathing: BreathingSeries | null,
   fromS: Seconds,
   toS: Seconds,
-): Cpm | null {
+): Band | null {
   if (!breathing || breathing.from === 'none') return null;
   const first = firstAtOrAfter(breathing.centresS, fromS);
   const end = firstAtOrAfter(breathing.centresS, toS);
   const rates = breathing.perMinute.subarray(first, end).filter(Number.isFinite);
-  return rates.length > 0 && 2 * rates.length >= end - first ? median(rates) : null;
+  if (rates.length === 0 || 2 * rates.length < end - first) return null;
+  return { lowCpm: quantile(rates, 0.1), highCpm: quantile(rates, 0.9) };
 }
 
-/** Where a line at a rate shows after sampling at `rateHz`. */
-function aliasOf(cpm: Cpm, rateHz: Hertz): Cpm {
+/** Where lines of a band show after sampling at `rateHz`. */
+function aliasOf({ lowCpm, highCpm }: Band, rateHz: Hertz): Band {
   const sampling = hzToCpm(rateHz);
-  return Math.abs(cpm - sampling * Math.round(cpm / sampling));
+  const seen = (cpm: Cpm) => Math.abs(cpm - sampling * Math.round(cpm / sampling));
+  const [a, b] = [seen(lowCpm), seen(highCpm)];
+  return { lowCpm: Math.min(a, b), highCpm: Math.max(a, b) };
 }
+
+/** A band with a margin of one resolution cell and half of its own width: a minute's rates are means. */
+function widened({ lowCpm, highCpm }: Band, cellCpm: Cpm): Band {
+  const margin = cellCpm + (highCpm - lowCpm) / 2;
+  return { lowCpm: lowCpm - margin, highCpm: highCpm + margin };
+}
+
+const inside = (cpm: Cpm, { lowCpm, highCpm }: Band) => cpm >= lowCpm && cpm <= highCpm;
+
+/** Breathing that changes its rate spreads so far beyond it; a peak there is its flank where it is so many times lower. */
+const FLANK_CPM = 1.5;
+const FLANK_TIMES = 4;
+
+function onFlank({ density, binCpm }: Spectrum, peakCpm: Cpm, { lowCpm, highCpm }: Band): boolean {
+  if (!inside(peakCpm, { lowCpm: lowCpm - FLANK_CPM, highCpm: highCpm + FLANK_CPM })) return false;
+  const least = FLANK_TIMES * density[Math.round(peakCpm / binCpm)];
+  const from = Math.max(0, Math.round(lowCpm / binCpm));
+  return density.subarray(from, Math.round(highCpm / binCpm)).some((value) => value > least);
+}
+
+/** Least power at the breathing rate, as a share of that at its double, for the double to be breathing (our rule). */
+const LEAST_SHARE_OF_DOUBLE = 0.1;
 
 /**
- * True where a peak may be breathing: at its rate or the alias of it, or at half of it where the
- * breathing line itself is in the lead and at least as strong (a subharmonic weaker than its
- * fundamental). Tolerance one resolution cell (0.25 cpm for 240 s).
+ * True where a peak may be breathing: at its rate or the alias of it, or on the flank of it; at half of it where the power
+ * at the rate itself is at least that at the half and locked to it, as where every breath has two
+ * humps; at its
+ * double where the power at the rate is at least a tenth of that at the double.
  */
 export function atBreathing(
-  peak: SpectrumPeak,
-  breathingCpm: Cpm | null,
-  options: {
-    readonly rateHz: Hertz;
-    readonly lengthS: Seconds;
-    readonly densityAt: (cpm: Cpm) => number;
-  },
+  part: Spectrum & SampledPart,
+  peakCpm: Cpm,
+  breathing: Band | null,
 ): boolean {
-  if (breathingCpm === null) return false;
-  const tolerance = 60 / options.lengthS;
-  const near = (cpm: Cpm) => Math.abs(peak.cpm - cpm) <= tolerance;
-  const seen = aliasOf(breathingCpm, options.rateHz);
-  if (near(seen)) return true;
-  return near(seen / 2) && options.densityAt(seen) >= peak.density;
+  if (breathing === null) return false;
+  const { density, binCpm, lengthS, rateHz } = part;
+  const seen = aliasOf(breathing, rateHz);
+  const at = (ratio: number) =>
+    widened({ lowCpm: ratio * seen.lowCpm, highCpm: ratio * seen.highCpm }, 60 / lengthS);
+  const power = (ratio: number) => bandSum(density, binCpm, at(ratio));
+  if (inside(peakCpm, at(1)) || onFlank(part, peakCpm, at(1))) return true;
+  if (inside(peakCpm, at(0.5))) return power(1) >= power(0.5) && isLocked(part, peakCpm);
+  return inside(peakCpm, at(2)) && power(1) >= LEAST_SHARE_OF_DOUBLE * power(2);
 }
 
 const LEAST_DRIFT_CPM = 0.25;

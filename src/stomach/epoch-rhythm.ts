@@ -1,8 +1,8 @@
 import type { EpochFlag, Rhythm } from '../recording/rhythm';
 import type { Settings } from '../recording/settings';
-import type { Cpm, Hertz } from '../units/rate';
+import type { Cpm } from '../units/rate';
 import type { Seconds } from '../units/time';
-import { independentValues, standsOut } from './background';
+import { besidePeak, independentValues, type Spectrum, standsOut } from './background';
 import {
   type Band,
   bandPeaks,
@@ -12,26 +12,19 @@ import {
   type SpectrumPeak,
 } from './dominant-peak';
 import { atBreathing, atHalfOfCrests, onDrift } from './epoch-flags';
-import { halfPeaks, isLocked } from './harmonic';
+import { halfPeaks, isLocked, type SampledPart } from './harmonic';
 import { rhythmOf } from './rhythm-class';
 
-/** A spectrum with what is needed to judge a peak of it. */
-export interface Spectrum {
-  readonly density: Float64Array;
-  readonly binCpm: number;
-  readonly lengthS: Seconds;
-}
+/** An epoch or one half of it. */
+export type EpochPart = Spectrum & SampledPart;
 
 /** One kept epoch, ready to be judged. */
-export interface EpochInput extends Spectrum {
-  /** Detrended, spoiled samples 0. */
-  readonly samples: Float64Array;
-  readonly rateHz: Hertz;
-  readonly spoiledFraction: number;
+export interface EpochInput extends EpochPart {
   readonly crestCpm: Cpm | null;
-  readonly breathingCpm: Cpm | null;
-  /** Spectra of its two halves; null where one of them is too spoiled. Asked for only when needed. */
-  readonly halves: () => readonly [Spectrum, Spectrum] | null;
+  /** Between which rates the breathing lies; null where it is not known. */
+  readonly breathing: Band | null;
+  /** Its two halves; null where one of them is too spoiled. Asked for only when needed. */
+  readonly halves: () => readonly [EpochPart, EpochPart] | null;
 }
 
 export interface EpochRhythm {
@@ -44,105 +37,130 @@ export interface EpochRhythm {
 
 const searchBand = (settings: Settings): Band => settings.rhythmBands;
 
-/** The highest peak of a spectrum if it stands out of the background at the rate given. */
-function outstandingPeak(
-  spectrum: Spectrum,
-  band: Band,
-  falseAlarm: number,
-): { readonly peak: SpectrumPeak | null; readonly outstanding: boolean } {
-  const { density, binCpm, lengthS } = spectrum;
-  const peak = highestPeak(bandPeaks(density, binCpm, band));
-  const independent = independentValues(band, lengthS);
-  const outstanding =
-    peak !== null && standsOut(density, binCpm, peak, { lengthS, falseAlarm, independent });
-  return { peak, outstanding };
+/** The peak that gives a part its rhythm, or only the highest where none stands out. */
+interface Dominant {
+  readonly peak: SpectrumPeak;
+  readonly outstanding: boolean;
+  /** True where a higher peak, its locked double, has given way to it. */
+  readonly harmonic: boolean;
 }
 
 /**
  * The lower peak whose locked double `peak` is, or null. The place of the lower peak is given by
  * the double, so it is tested as one value and not as the highest of many.
  */
-function fundamentalOf(input: EpochInput, peak: SpectrumPeak, settings: Settings) {
-  const { density, binCpm, lengthS, samples, rateHz } = input;
-  const peaks = bandPeaks(density, binCpm, searchBand(settings));
+function fundamentalOf(part: EpochPart, peak: SpectrumPeak, settings: Settings) {
+  const peaks = bandPeaks(besidePeak(part, peak.cpm), part.binCpm, searchBand(settings));
   const { falseAlarm } = settings.epoch;
   return (
     halfPeaks(peak, peaks).find(
       (lower) =>
-        standsOut(density, binCpm, lower, { lengthS, falseAlarm, independent: 1 }) &&
-        isLocked(samples, rateHz, lengthS, lower.cpm),
+        standsOut(part, lower, { falseAlarm, independent: 1, besideCpm: [peak.cpm] }) &&
+        isLocked(part, lower.cpm),
     ) ?? null
   );
 }
 
+function dominantOf(part: EpochPart, falseAlarm: number, settings: Settings): Dominant | null {
+  const band = searchBand(settings);
+  const peak = highestPeak(bandPeaks(part.density, part.binCpm, band));
+  if (!peak) return null;
+  const independent = independentValues(band, part.lengthS);
+  const outstanding = standsOut(part, peak, { falseAlarm, independent });
+  const lower = outstanding ? fundamentalOf(part, peak, settings) : null;
+  return { peak: lower ?? peak, outstanding, harmonic: lower !== null };
+}
+
 /** Least change of DF from one half to the other that is more than one half can resolve. */
 const LEAST_CHANGE_CELLS = 3;
+/** From one half to the other a wave and its harmonic may wander apart by this share of the double. */
+const DOUBLE_ACROSS_HALVES = 0.15;
+/** A line whose power falls below this share from one half to the other is not there in the other. */
+const GONE = 0.1;
+
+interface HalfRhythm {
+  readonly half: EpochPart;
+  readonly peak: SpectrumPeak;
+}
+
+/** True where the faster half's peak is a harmonic of the slower's rhythm, which is there in it as well. */
+function isSameWave(slower: HalfRhythm, faster: HalfRhythm, settings: Settings): boolean {
+  const double = 2 * slower.peak.cpm;
+  if (Math.abs(faster.peak.cpm - double) > DOUBLE_ACROSS_HALVES * double) return false;
+  const { half, peak } = faster;
+  const peaks = bandPeaks(besidePeak(half, peak.cpm), half.binCpm, searchBand(settings));
+  return halfPeaks(peak, peaks).some(({ density }) => density >= GONE * slower.peak.density);
+}
+
+/** True where two peaks are of different bands and clearly apart. */
+function differ(a: SpectrumPeak, b: SpectrumPeak, lengthS: Seconds, settings: Settings): boolean {
+  if (Math.abs(a.cpm - b.cpm) < (LEAST_CHANGE_CELLS * 60) / lengthS) return false;
+  return rhythmOf(a.cpm, settings.rhythmBands) !== rhythmOf(b.cpm, settings.rhythmBands);
+}
 
 /**
  * True where both halves have a rhythm of their own, of different bands and clearly apart, and one
- * is not the other's harmonic.
+ * is not the other's harmonic. Breathing is no rhythm here.
  */
 function changesInside(input: EpochInput, settings: Settings): boolean {
   const halves = input.halves();
   if (!halves) return false;
-  const band = searchBand(settings);
-  const [before, after] = halves.map((half) =>
-    outstandingPeak(half, band, settings.epoch.falseAlarm / 2),
+  const [first, second] = halves.map((half) =>
+    highestPeak(bandPeaks(half.density, half.binCpm, searchBand(settings))),
   );
-  if (!before.outstanding || !after.outstanding || !before.peak || !after.peak) return false;
-  const [low, high] =
-    before.peak.cpm < after.peak.cpm ? [before.peak, after.peak] : [after.peak, before.peak];
-  if (high.cpm - low.cpm < (LEAST_CHANGE_CELLS * 60) / input.lengthS) return false;
-  if (rhythmOf(low.cpm, settings.rhythmBands) === rhythmOf(high.cpm, settings.rhythmBands))
-    return false;
-  const doubled = halfPeaks(high, [low]).length > 0;
-  return !(doubled && isLocked(input.samples, input.rateHz, input.lengthS, low.cpm));
+  if (!first || !second || !differ(first, second, input.lengthS, settings)) return false;
+  const found = halves.flatMap((half): HalfRhythm[] => {
+    const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings);
+    if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing)) return [];
+    return [{ half, peak: dominant.peak }];
+  });
+  if (found.length < 2) return false;
+  const [slower, faster] = found.sort((a, b) => a.peak.cpm - b.peak.cpm);
+  return (
+    differ(slower.peak, faster.peak, input.lengthS, settings) &&
+    !isSameWave(slower, faster, settings)
+  );
 }
 
 function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, settings: Settings) {
-  const { density, binCpm, rateHz, lengthS } = input;
-  const densityAt = (cpm: Cpm) => density[Math.round(cpm / binCpm)] ?? 0;
+  const { density, binCpm } = input;
   const flags: EpochFlag[] = [];
   if (harmonic) flags.push('harmonic');
   if (!harmonic && atHalfOfCrests(peak.cpm, input.crestCpm)) flags.push('half');
-  if (atBreathing(peak, input.breathingCpm, { rateHz, lengthS, densityAt }))
-    flags.push('breathing');
+  if (atBreathing(input, peak.cpm, input.breathing)) flags.push('breathing');
   if (onDrift(density, binCpm, peak, settings.rhythmBands)) flags.push('drift');
   return flags;
 }
 
 /**
  * DF, DP, peak share, rhythm and flags of one kept epoch. The dominant peak is the highest local
- * maximum of the search band; a locked double gives way to its lower peak; without a peak that
- * stands out of the local background there is no rhythm; a peak that may be breathing or drift is
- * not decidable; two rhythms in its halves make it mixed.
+ * maximum of the search band; a locked double gives way to its lower peak; two rhythms in its
+ * halves make it mixed; without a peak that stands out of the local background there is no rhythm;
+ * a peak that may be breathing or drift is not decidable.
  */
 export function epochRhythm(input: EpochInput, settings: Settings): EpochRhythm {
   const { density, binCpm } = input;
-  const band = searchBand(settings);
   const filled: readonly EpochFlag[] = input.spoiledFraction > 0 ? ['filled'] : [];
-  const found = outstandingPeak(input, band, settings.epoch.falseAlarm);
-  if (!found.peak)
-    return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
-  const lower = found.outstanding ? fundamentalOf(input, found.peak, settings) : null;
-  const peak = lower ?? found.peak;
-  const flags = found.outstanding ? flagsOf(input, peak, lower !== null, settings) : [];
+  const found = dominantOf(input, settings.epoch.falseAlarm, settings);
+  if (!found) return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
+  const { peak, outstanding, harmonic } = found;
+  const flags = outstanding ? flagsOf(input, peak, harmonic, settings) : [];
   return {
     dfCpm: peak.cpm,
     dpDb: densityDb(peak.density),
-    peakShare: peakShare(density, binCpm, peak.cpm, band),
-    rhythm: found.outstanding ? decide(input, peak, flags, settings) : 'none',
+    peakShare: peakShare(density, binCpm, peak.cpm, searchBand(settings)),
+    rhythm: decide(input, found, flags, settings),
     flags: [...flags, ...filled],
   };
 }
 
 function decide(
   input: EpochInput,
-  peak: SpectrumPeak,
+  { peak, outstanding }: Dominant,
   flags: readonly EpochFlag[],
   settings: Settings,
 ): Rhythm {
   if (flags.includes('breathing') || flags.includes('drift')) return 'undecided';
   if (changesInside(input, settings)) return 'mixed';
-  return rhythmOf(peak.cpm, settings.rhythmBands);
+  return outstanding ? rhythmOf(peak.cpm, settings.rhythmBands) : 'none';
 }

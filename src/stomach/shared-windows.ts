@@ -1,3 +1,4 @@
+import type { Cpm } from '../units/rate';
 import { type PreparedWindow, type WindowSpectraOptions, windowSpectra } from './window-spectrum';
 
 /** Windows of one length of one lead, each made once however many ask for it. */
@@ -10,6 +11,8 @@ export interface SharedWindows {
   /** The window that begins at a sample; `first` is moved back where it would run past the end. */
   at(first: number): PreparedWindow;
   densityAt(first: number): Float64Array;
+  /** Density of the window that begins at a sample with lines at these frequencies taken off; not kept. */
+  densityWithout(first: number, frequenciesCpm: readonly Cpm[]): Float64Array;
 }
 
 interface MadeWindow {
@@ -68,5 +71,7 @@ export function sharedWindows(
       one.density ??= spectra.density(one.window);
       return one.density;
     },
+    densityWithout: (first, frequenciesCpm) =>
+      spectra.densityWithout(madeAt(first).window, frequenciesCpm),
   };
 }

@@ -8,7 +8,7 @@ import type { Seconds } from '../units/time';
 import { crestTimes } from './crests';
 import { breathingOf, crestRateCpm } from './epoch-flags';
 import { epochStarts } from './epoch-layout';
-import type { EpochInput, Spectrum } from './epoch-rhythm';
+import type { EpochInput, EpochPart } from './epoch-rhythm';
 import { keptSamples, missingStretches } from './kept-samples';
 import { type SharedWindows, sharedWindows } from './shared-windows';
 import { runningSpectrogram } from './spectrogram';
@@ -46,14 +46,32 @@ interface Lead {
   readonly crestsS: Float64Array;
 }
 
-function halvesOf(lead: Lead, first: number): readonly [Spectrum, Spectrum] | null {
+function partOf(windows: SharedWindows, first: number): EpochPart {
+  const { samples, kept, spoiledFraction } = windows.at(first);
+  const { lengthS, rateHz } = windows.options;
+  return {
+    samples,
+    kept,
+    rateHz,
+    density: windows.densityAt(first),
+    binCpm: windows.binCpm,
+    lengthS,
+    spoiledFraction,
+    without:
+      spoiledFraction > 0
+        ? (frequenciesCpm) => windows.densityWithout(first, frequenciesCpm)
+        : null,
+  };
+}
+
+function halvesOf(lead: Lead, first: number): readonly [EpochPart, EpochPart] | null {
   const { halfWindows, options } = lead;
   const lengthS = options.settings.epoch.lengthS / 2;
   const step = Math.round(lengthS * options.slow.rateHz);
-  const half = (from: number): Spectrum | null =>
+  const half = (from: number): EpochPart | null =>
     halfWindows.at(from).spoiledFraction > options.settings.epoch.maxSpoiled
       ? null
-      : { density: halfWindows.densityAt(from), binCpm: halfWindows.binCpm, lengthS };
+      : partOf(halfWindows, from);
   const [before, after] = [half(first), half(first + step)];
   return before && after ? [before, after] : null;
 }
@@ -61,16 +79,10 @@ function halvesOf(lead: Lead, first: number): readonly [Spectrum, Spectrum] | nu
 function epochInput(lead: Lead, first: number, fromS: Seconds): EpochInput {
   const { windows, options, crestsS } = lead;
   const { lengthS } = options.settings.epoch;
-  const window = windows.at(first);
   return {
-    density: windows.densityAt(first),
-    binCpm: windows.binCpm,
-    lengthS,
-    samples: window.samples,
-    rateHz: options.slow.rateHz,
-    spoiledFraction: window.spoiledFraction,
+    ...partOf(windows, first),
     crestCpm: crestRateCpm(crestsS, fromS, fromS + lengthS),
-    breathingCpm: breathingOf(options.breathing, fromS, fromS + lengthS),
+    breathing: breathingOf(options.breathing, fromS, fromS + lengthS),
     halves: () => halvesOf(lead, first),
   };
 }

@@ -28,7 +28,7 @@ export function judgedEpoch(
 ): EpochRhythm {
   const circumstances = JSON.stringify([
     input.crestCpm,
-    input.breathingCpm,
+    input.breathing,
     settings.rhythmBands,
     settings.epoch,
   ]);

@@ -2,15 +2,18 @@ import { fitLine } from '../numeric/detrend';
 import { nextPowerOfTwo } from '../numeric/fft';
 import { powerDensity } from '../numeric/spectrum';
 import { hannPeriodic } from '../numeric/windows';
-import { type Hertz, hzToCpm } from '../units/rate';
+import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
+import { withoutLines } from './without-lines';
 
-/** Frequencies beyond this are not needed by any stomach figure. */
-const HIGHEST_CPM = 15.5;
+/** Frequencies beyond this are not needed by any stomach figure: breathing whose half lies in the band is below. */
+const HIGHEST_CPM = 19;
 
 /** One stretch of a lead made ready for a spectrum. */
 export interface PreparedWindow {
   /** Mean and line of the kept samples taken off, spoiled samples 0. */
   readonly samples: Float64Array;
+  /** 1 where a sample is kept. */
+  readonly kept: Uint8Array;
   /** Sum of the taper over spoiled samples over the sum of the taper, 0 to 1. */
   readonly spoiledFraction: number;
 }
@@ -19,11 +22,13 @@ export interface PreparedWindow {
 export interface WindowSpectra {
   readonly taper: Float64Array;
   readonly binCpm: number;
-  /** Bins 0 .. binCount - 1 are given, up to 15.5 cpm or half the rate. */
+  /** Bins 0 .. binCount - 1 are given, up to 19 cpm or half the rate. */
   readonly binCount: number;
   prepare(first: number): PreparedWindow;
   /** One-sided density in uV2/Hz of the recorded lead, corrected for what was spoiled. */
   density(window: PreparedWindow): Float64Array;
+  /** The same of what is left when lines at these frequencies are fitted to the kept samples and taken off. */
+  densityWithout(window: PreparedWindow, frequenciesCpm: readonly Cpm[]): Float64Array;
 }
 
 export interface WindowSpectraOptions {
@@ -63,6 +68,12 @@ export function windowSpectra(options: WindowSpectraOptions): WindowSpectra {
   const binHz = rateHz / size;
   const binCount = Math.min(size / 2 + 1, Math.ceil(HIGHEST_CPM / hzToCpm(binHz)) + 1);
   const factor = unresponse(powerResponse, binHz, binCount);
+  const densityOf = (samples: Float64Array, spoiledFraction: number) => {
+    const density = powerDensity(samples, taper, rateHz, size).slice(0, binCount);
+    const whole = 1 / (1 - spoiledFraction) ** 2;
+    for (let k = 0; k < binCount; k++) density[k] *= whole * (factor ? factor[k] : 1);
+    return density;
+  };
   return {
     taper,
     binCpm: hzToCpm(binHz),
@@ -80,13 +91,16 @@ export function windowSpectra(options: WindowSpectraOptions): WindowSpectra {
         keptTaper += taper[i];
       }
       const spoiledFraction = Math.min(1, Math.max(0, 1 - keptTaper / taperSum));
-      return { samples, spoiledFraction: spoiledFraction < 1e-12 ? 0 : spoiledFraction };
+      return {
+        samples,
+        kept: weights,
+        spoiledFraction: spoiledFraction < 1e-12 ? 0 : spoiledFraction,
+      };
     },
-    density(window) {
-      const density = powerDensity(window.samples, taper, rateHz, size).slice(0, binCount);
-      const whole = 1 / (1 - window.spoiledFraction) ** 2;
-      for (let k = 0; k < binCount; k++) density[k] *= whole * (factor ? factor[k] : 1);
-      return density;
+    density: ({ samples, spoiledFraction }) => densityOf(samples, spoiledFraction),
+    densityWithout({ samples, kept: there, spoiledFraction }, frequenciesCpm) {
+      const weights = taper.map((value, i) => (there[i] === 0 ? 0 : value));
+      return densityOf(withoutLines(samples, weights, frequenciesCpm, rateHz), spoiledFraction);
     },
   };
 }

@@ -12,9 +12,16 @@ export interface BaseColumns {
   readonly mean: Float32Array;
   /** Root mean square of the steps from sample to sample in uV. */
   readonly roughness: Float32Array;
+  /**
+   * Root mean square in uV of the change from each mean of about 18 ms to the next: what disturbs the reading of beats as far
+   * as it is like a QRS complex; hardly any mains hum.
+   */
+  readonly likeQrs: Float32Array;
   readonly sampleCount: number;
   readonly missing: readonly Run[];
   readonly railed: readonly Run[];
+  /** Runs of 20 ms or more that begin with a jump and stay within a step of their first value. */
+  readonly stopped: readonly Stop[];
   /** Runs of exactly equal samples of half a second or more. */
   readonly constant: readonly Run[];
 }
@@ -26,9 +33,18 @@ export interface ColumnOptions {
   readonly stepUv: number;
 }
 
+/** A run with the value at which it stops dead. */
+export interface Stop extends Run {
+  readonly valueUv: number;
+}
+
 const COLUMN_S = 0.1;
 const LEAST_CONSTANT_S = 0.5;
 const LEAST_RAILED_S = 0.02;
+/** A jump into a stop is this many steps from one sample to the next. */
+const STOP_JUMP_STEPS = 8;
+/** Means over a period of 55 Hz keep less than a tenth of hum at 50 or 60 Hz, and most of what a QRS complex is made of. */
+const MEANS_HZ = 55;
 
 type Growable = ReturnType<typeof growable>;
 
@@ -63,11 +79,59 @@ const EMPTY = {
   high: Number.NEGATIVE_INFINITY,
   sum: 0,
   squares: 0,
+  changes: 0,
 };
 
 function follow(runs: Runs, index: number, isIn: boolean): void {
   if (isIn) runs.open(index);
   else if (runs.isOpen) runs.close(index);
+}
+
+/** Change from the mean of one half of the latest samples to that of the other, kept up as they come. */
+interface Change {
+  readonly latest: Float64Array;
+  at: number;
+  sum: number;
+}
+
+const createChange = (half: number): Change => ({
+  latest: new Float64Array(2 * half).fill(Number.NaN),
+  at: 0,
+  sum: Number.NaN,
+});
+
+/** The change with the next sample; 0 while samples are missing. */
+function nextChange(change: Change, value: number): number {
+  const { latest } = change;
+  const half = latest.length / 2;
+  if (Number.isNaN(value) || Number.isNaN(change.sum)) {
+    latest.fill(value);
+    change.sum = Number.isNaN(value) ? Number.NaN : 0;
+    return 0;
+  }
+  const { at } = change;
+  change.sum += value - 2 * latest[at < half ? at + half : at - half] + latest[at];
+  latest[at] = value;
+  change.at = at + 1 === latest.length ? 0 : at + 1;
+  return change.sum / half;
+}
+
+/** A run in the making that may be a stop; `from` is -1 where there is none. */
+interface Stopping {
+  readonly withinUv: number;
+  readonly least: number;
+  readonly kept: Stop[];
+  from: number;
+  valueUv: number;
+}
+
+/** Follows stops at sample `at`; called for each sample that comes with a jump, and for each while one is open. */
+function followStop(stopping: Stopping, at: number, value: number, jumped: boolean): void {
+  const { withinUv, least, kept, from, valueUv } = stopping;
+  if (from >= 0 && Math.abs(value - valueUv) <= withinUv) return;
+  if (from >= 0 && at - from >= least) kept.push({ from, to: at, valueUv });
+  stopping.from = jumped ? at : -1;
+  stopping.valueUv = value;
 }
 
 /** The columns and runs in the making. */
@@ -78,9 +142,12 @@ interface Making {
   readonly highs: Growable;
   readonly means: Growable;
   readonly roughs: Growable;
+  readonly likeQrs: Growable;
   readonly missing: Runs;
   readonly railed: Runs;
   readonly constant: Runs;
+  readonly change: Change;
+  readonly stopping: Stopping;
   index: number;
   column: number;
   inColumn: number;
@@ -89,6 +156,7 @@ interface Making {
   high: number;
   sum: number;
   squares: number;
+  changes: number;
 }
 
 function begin(options: ColumnOptions): Making {
@@ -102,9 +170,18 @@ function begin(options: ColumnOptions): Making {
     highs: growable(),
     means: growable(),
     roughs: growable(),
+    likeQrs: growable(),
     missing: createRuns(1),
     railed: atLeast(3, LEAST_RAILED_S),
     constant: atLeast(2, LEAST_CONSTANT_S),
+    change: createChange(Math.max(1, Math.round(rateHz / MEANS_HZ))),
+    stopping: {
+      withinUv: 1.01 * options.stepUv,
+      least: Math.max(4, Math.round(LEAST_RAILED_S * rateHz)),
+      kept: [],
+      from: -1,
+      valueUv: Number.NaN,
+    },
     index: 0,
     column: 0,
     inColumn: 0,
@@ -128,12 +205,13 @@ function followRuns(making: Making, block: Float64Array, from: number, to: numbe
 }
 
 function closeColumn(making: Making): void {
-  const { column, low, high, sum, squares, samplesPerColumn } = making;
+  const { column, low, high, sum, squares, changes, samplesPerColumn } = making;
   const whole = !Number.isNaN(sum);
   making.lows.put(column, whole ? low : Number.NaN);
   making.highs.put(column, whole ? high : Number.NaN);
   making.means.put(column, sum / samplesPerColumn);
   making.roughs.put(column, whole ? Math.sqrt(squares / samplesPerColumn) : Number.NaN);
+  making.likeQrs.put(column, whole ? Math.sqrt(changes / samplesPerColumn) : Number.NaN);
   Object.assign(making, EMPTY);
   making.column += 1;
   making.inColumn = 0;
@@ -141,17 +219,23 @@ function closeColumn(making: Making): void {
 
 /** Samples [from, to) of a block, all of the open column. Plain local sums: this loop meets every sample. */
 function take(making: Making, block: Float64Array, from: number, to: number): void {
-  let { low, high, sum, squares } = making;
+  let { low, high, sum, squares, changes } = making;
   let previous = from > 0 ? block[from - 1] : making.previous;
   let still = 0;
+  const { change, stopping } = making;
+  const jumpUv = STOP_JUMP_STEPS * stopping.withinUv;
   for (let i = from; i < to; i += 1) {
     const value = block[i];
     const step = value - previous;
+    const apart = nextChange(change, value);
     if (value < low) low = value;
     if (value > high) high = value;
     if (step === 0) still += 1;
+    const jumped = Math.abs(step) > jumpUv;
+    if (jumped || stopping.from >= 0) followStop(stopping, making.index + i - from, value, jumped);
     sum += value;
     if (!Number.isNaN(step)) squares += step * step;
+    changes += apart * apart;
     previous = value;
   }
   const { missing, railed, constant, rails } = making;
@@ -162,13 +246,14 @@ function take(making: Making, block: Float64Array, from: number, to: number): vo
   making.high = high;
   making.sum = sum;
   making.squares = squares;
+  making.changes = changes;
   making.index += to - from;
   making.inColumn += to - from;
   if (making.inColumn === making.samplesPerColumn) closeColumn(making);
 }
 
 /**
- * Turns a lead that streams by into base columns. Memory: 16 bytes a column of 0.1 s (at low rates a column is one
+ * Turns a lead that streams by into base columns. Memory: 20 bytes a column of 0.1 s (at low rates a column is one
  * sample), whatever the rate. A last column that is not full is left out.
  */
 export function createBaseColumns(options: ColumnOptions): {
@@ -187,7 +272,8 @@ export function createBaseColumns(options: ColumnOptions): {
       if (block.length > 0) making.previous = block[block.length - 1];
     },
     finish() {
-      const { column, index } = making;
+      const { column, index, stopping } = making;
+      followStop(stopping, index, Number.NaN, false);
       return {
         samplesPerColumn,
         columnS: samplesPerColumn / options.rateHz,
@@ -196,9 +282,11 @@ export function createBaseColumns(options: ColumnOptions): {
         high: making.highs.take(column),
         mean: making.means.take(column),
         roughness: making.roughs.take(column),
+        likeQrs: making.likeQrs.take(column),
         sampleCount: index,
         missing: making.missing.finish(index),
         railed: making.railed.finish(index),
+        stopped: stopping.kept,
         constant: making.constant.finish(index),
       };
     },

@@ -10,6 +10,7 @@ import type { Seconds } from '../units/time';
 import { type BaseColumns, createBaseColumns } from './base-columns';
 import { type Excursion, paddedAndJoined } from './excursions';
 import { flatLines } from './flat-line';
+import { flatTops } from './flat-tops';
 import type { ProposedSpan } from './proposed-span';
 import type { Run } from './runs';
 import { slowMovements } from './slow-movements';
@@ -77,7 +78,8 @@ function outside(values: Float32Array, columnS: number, taken: readonly Interval
 function emptyStretches(columns: BaseColumns, options: SpoilWatchOptions): readonly Found[] {
   const { rateHz, stepUv } = options;
   const gaps = runIntervals(columns.missing, rateHz);
-  const rails = paddedAndJoined(runIntervals(columns.railed, rateHz), NEAR_S, 2);
+  const railed = [...columns.railed, ...flatTops(columns)];
+  const rails = paddedAndJoined(runIntervals(railed, rateHz), NEAR_S, 2);
   const flats = without(joinIntervals(flatLines(columns, rateHz, stepUv)), rails);
   return [
     { target: 'both', cause: 'gap', intervals: gaps },
@@ -94,7 +96,9 @@ function heartBursts(
 ): readonly Interval[] {
   if (options.rateHz < HEART_NEEDS_HZ) return [];
   const { columnS } = columns;
-  const rough = roughStretches(columns, outside(columns.roughness, columnS, taken), options.stepUv);
+  const roughness = outside(columns.roughness, columnS, taken);
+  const likeQrs = outside(columns.likeQrs, columnS, taken);
+  const rough = roughStretches(columns, roughness, likeQrs, options.stepUv);
   const low = outside(columns.low, columnS, taken);
   const high = outside(columns.high, columnS, taken);
   const mean = outside(columns.mean, columnS, taken);
@@ -169,7 +173,7 @@ function movements(
 
 const NOTES: Readonly<Partial<Record<SpanCause, string>>> = {
   gap: 'no samples',
-  rail: 'at the end of the digitiser’s range',
+  rail: 'at the end of the digitiser’s or the amplifier’s range',
   flat: 'no change in the lead',
   step: 'a jump, until it has settled',
   burst: 'far over the recording’s own level',
@@ -178,7 +182,7 @@ const NOTES: Readonly<Partial<Record<SpanCause, string>>> = {
 /**
  * Proposes the spoiled spans of one lead while it streams by: gaps, flat lines, rails, steps and bursts. Every limit is a
  * multiple of the recording's own running level (median of 10 min), so that a large QRS, a strong slow wave or a slow
- * drift is none; the rules are this program's, set on simulated studies. What memory it needs is 16 bytes for each 0.1 s.
+ * drift is none; the rules are this program's, set on simulated studies. What memory it needs is 20 bytes for each 0.1 s.
  */
 export function createSpoilWatch(options: SpoilWatchOptions): SpoilWatch {
   const base = createBaseColumns(options);

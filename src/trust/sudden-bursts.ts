@@ -1,4 +1,5 @@
 import { runningQuantile } from '../numeric/running-quantile';
+import { median } from '../numeric/statistics';
 import type { BaseColumns } from './base-columns';
 import { withoutBeats } from './beat-like-jumps';
 import { type Excursion, excursionsAbove } from './excursions';
@@ -11,11 +12,11 @@ export const LEVEL_HALF_S = 300;
 /** Times the own level at which a burst begins and ends; set on simulated studies (test/trust). */
 const ROUGH = { enter: 2.5, leave: 1.6 };
 const JUMP = { enter: 3.2, leave: 2 };
-/** Roughness between beats that is this share of the beats' own does no harm. */
+/** Beats can be read where the lead between them is less than this share as much like a QRS complex as they are. */
 const HARMLESS_SHARE = 0.2;
-/** Between beats: the lowest tenth of a second's columns, also where T waves fill most of it. */
+/** Between beats: the lowest fifth of a second's columns, also where T waves fill most of it. */
 const WINDOW_S = 1.1;
-const BETWEEN_BEATS = 0.1;
+const BETWEEN_BEATS = 0.2;
 /** As long as any interval between beats, or nearly: it holds a QRS complex. */
 const HOLDS_BEAT_S = 1.5;
 /** Longer than a QRS complex is rough. */
@@ -68,26 +69,37 @@ function sharpEnds(
   return from < 0 ? found : { from, to };
 }
 
+/** Roughness or likeness between the beats: that of the lowest fifth of each second's columns, NaN where too few are there. */
+function betweenBeats(x: Float64Array, columnS: number): Float64Array {
+  const width = oddCount(WINDOW_S, columnS);
+  const between = runningQuantile(x, width, BETWEEN_BEATS);
+  blankWhereFew(between, x, (width - 1) / 2);
+  return between;
+}
+
+function medianWithin(x: Float64Array, { from, to }: Excursion): number {
+  const known = x.subarray(from, to).filter((value) => !Number.isNaN(value));
+  return known.length > 0 ? median(known) : Number.NaN;
+}
+
 /**
- * Muscle bursts and hum: stretches where the roughness between the beats (the lowest tenth of each second's columns, so that
- * QRS complexes have no say) is far over the recording's own level and would matter beside its beats.
+ * Muscle bursts and hum: stretches where the roughness between the beats is far over the recording's own level, as long as
+ * beats cannot be read there for certain. `roughness` and `likeQrs` are the columns' own, NaN where they do not count.
  */
 export function roughStretches(
   { columnS }: BaseColumns,
   roughness: Float64Array,
+  likeQrs: Float64Array,
   stepUv: number,
 ): readonly Excursion[] {
-  const width = oddCount(WINDOW_S, columnS);
-  const between = runningQuantile(roughness, width, BETWEEN_BEATS);
-  blankWhereFew(between, roughness, (width - 1) / 2);
+  const between = betweenBeats(roughness, columnS);
   const level = ownLevel(between, Math.round(LEVEL_HALF_S / columnS), 0.7 * stepUv);
-  const harmless = times(beatLevel(roughness, columnS, 0), HARMLESS_SHARE);
-  const limit = (factor: number, share: number) =>
-    level.map((value, i) => Math.max(factor * value, share * harmless[i]));
-  const leave = limit(ROUGH.leave, 0.6);
-  return excursionsAbove(between, limit(ROUGH.enter, 1), leave).map((found) =>
-    sharpEnds(found, roughness, leave, columnS),
-  );
+  const leave = times(level, ROUGH.leave);
+  const disturbance = betweenBeats(likeQrs, columnS);
+  const beats = times(beatLevel(likeQrs, columnS, 0), HARMLESS_SHARE);
+  return excursionsAbove(between, times(level, ROUGH.enter), leave)
+    .filter((found) => !(medianWithin(disturbance, found) < medianWithin(beats, found)))
+    .map((found) => sharpEnds(found, roughness, leave, columnS));
 }
 
 /**

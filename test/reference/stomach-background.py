@@ -59,7 +59,8 @@ def judge(p, df, seconds, false_alarm=0.05):
     f = numpy.arange(len(p)) * df
     use = (f >= 0.5) & (f <= 15) & (numpy.abs(f - peak) >= 0.75 * wide)
     for ratio in (0.5, 2, 3):
-        use &= numpy.abs(f - ratio * peak) >= 0.5 * wide
+        if ratio * peak >= wide:
+            use &= numpy.abs(f - ratio * peak) >= 0.5 * wide
     x, y = numpy.log(f[use]), numpy.log(p[use])
     keep = numpy.ones(len(x), bool)
     for turn in range(2):
@@ -69,13 +70,18 @@ def judge(p, df, seconds, false_alarm=0.05):
         line = lambda at: my + slope * (at - mx)
         if turn == 0:
             keep = y - line(x) < 3
-    leverage = 1.5 * 60 / seconds / df * (1 / keep.sum() + (numpy.log(peak) - mx) ** 2 / squares)
+    per_value = 1.5 * 60 / seconds / df
+    flanks = keep & (numpy.abs(f[use] - peak) <= 2.75 * wide)
+    raised = 0
+    if flanks.sum() >= 4 * per_value:
+        raised = max(0, numpy.median((y - line(x))[flanks]) - numpy.log(numpy.log(2)) - EULER)
+    leverage = per_value * (1 / keep.sum() + (numpy.log(peak) - mx) ** 2 / squares)
     cells = 8 * seconds / 60
     threshold = numpy.log(-numpy.log(1 - (1 - false_alarm) ** (1 / cells)))
     threshold += 0.08 * (numpy.log(false_alarm) / numpy.log(0.05)) ** 2 + 1.25 * leverage
-    ratio = numpy.log(top) - line(numpy.log(peak)) - EULER
+    ratio = numpy.log(top) - line(numpy.log(peak)) - EULER - raised
     return {"peak_cpm": float(peak), "log_ratio": float(ratio), "leverage": float(leverage),
-            "threshold": float(threshold), "rhythm": bool(ratio > threshold)}
+            "threshold": float(threshold), "raised": float(raised), "rhythm": bool(ratio > threshold)}
 
 
 def alarms(exponent, seconds, count, false_alarm=0.05):

@@ -33,7 +33,7 @@ const reference: Reference = JSON.parse(
   readFileSync(new URL('../reference/stomach-background.json', import.meta.url), 'utf8'),
 );
 const BAND = DEFAULT_SETTINGS.rhythmBands;
-const OPTIONS = { lengthS: 240, falseAlarm: 0.05, independent: independentValues(BAND, 240) };
+const OPTIONS = { falseAlarm: 0.05, independent: independentValues(BAND, 240) };
 
 function densityOf(signal: Float64Array) {
   const kept = new Uint8Array(signal.length).fill(1);
@@ -55,7 +55,8 @@ describe('the background of a peak', () => {
       expect(background.leverage).toBeCloseTo(judged.leverage, 8);
       const threshold = peakThreshold(0.05, OPTIONS.independent, background.leverage);
       expect(threshold).toBeCloseTo(judged.threshold, 8);
-      expect(standsOut(density, binCpm, peak, OPTIONS)).toBe(judged.rhythm);
+      const spectrum = { density, binCpm, lengthS: 240, spoiledFraction: 0, without: null };
+      expect(standsOut(spectrum, peak, OPTIONS)).toBe(judged.rhythm);
     },
   );
 
@@ -73,23 +74,23 @@ describe('the background of a peak', () => {
 });
 
 describe('a recording of noise alone', () => {
-  test('gave a rhythm in 3.4 to 5.4 % of 4 min epochs in the simulation, where 5 % are asked for', () => {
+  test('gave a rhythm in 2.3 to 4.5 % of 4 min epochs in the simulation, where at most 5 % are asked for', () => {
     const rates = reference.false_alarms.filter((one) => one.epoch_s === 240 && one.asked === 0.05);
     expect(rates).toHaveLength(6);
     for (const { false_alarms } of rates) {
-      expect(false_alarms).toBeGreaterThan(0.033);
-      expect(false_alarms).toBeLessThan(0.0545);
+      expect(false_alarms).toBeGreaterThan(0.023);
+      expect(false_alarms).toBeLessThan(0.045);
     }
   });
 
-  test.each([0, 1, 2])('of 1/f^%d has no rhythm in about 95 %% of its epochs', (exponent) => {
+  test.each([0, 1, 2])('of 1/f^%d has no rhythm in 95 to 99 %% of its epochs', (exponent) => {
     const settings = {
       ...DEFAULT_SETTINGS,
       epoch: { ...DEFAULT_SETTINGS.epoch, stepS: 240 },
     };
     const signal = noise(960 * 400, exponent, 40, 17 + exponent);
     const counts = tally(rhythmOfLead(signal, { settings }).rhythm.epochs);
-    expect(counts.none / 400).toBeGreaterThan(0.92);
+    expect(counts.none / 400).toBeGreaterThan(0.95);
     expect(counts.none / 400).toBeLessThan(0.99);
   });
 });
@@ -97,7 +98,7 @@ describe('a recording of noise alone', () => {
 describe('a wave in noise', () => {
   test('of 25 times the background was found in nearly all epochs at 3 and 5.5 cpm', () => {
     const strong = reference.power.filter((one) => one.line_over_background === 25 && one.cpm > 2);
-    for (const { found } of strong) expect(found).toBeGreaterThan(0.97);
+    for (const { found } of strong) expect(found).toBeGreaterThan(0.96);
   });
 
   test('of 100 uV in 1/f noise of 60 uV is normo all the time, with DF within 0.1 cpm', () => {

@@ -17,7 +17,7 @@ describe('crests of the drawn slow wave', () => {
   });
 
   test('count a weak stretch beside a strong one', () => {
-    const signal = leadOf(30, (t) => wave(t < 900 ? 300 : 40, 3, t));
+    const signal = leadOf(30, (t) => wave(t < 900 ? 300 : 15, 3, t));
     const weak = crestTimes(signal, options).filter((time) => time > 1000);
     expect(weak.length).toBeGreaterThanOrEqual(39);
     expect(weak.length).toBeLessThanOrEqual(41);

@@ -1,10 +1,10 @@
 import { describe, expect, test } from 'vitest';
 import { createRandom } from '../../src/numeric/random';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
-import { peakThreshold } from '../../src/stomach/background';
+import { backgroundAt, peakThreshold } from '../../src/stomach/background';
 import { dominantPeak } from '../../src/stomach/dominant-peak';
 import { windowSpectra } from '../../src/stomach/window-spectrum';
-import { leadOf, RATE_HZ, wave } from './leads';
+import { leadOf, noise, RATE_HZ, wave } from './leads';
 
 // What theory allows: the least error of a tone's frequency (Cramer-Rao; Rife & Boorstyn 1974; Kay
 // 1993) and the highest of m independent values of noise (field notes 2.3).
@@ -53,4 +53,25 @@ test('the highest of 34 values of known noise passes 6.497 times their mean once
   const one = -Math.log(0.05);
   const over = Math.exp(peakThreshold(0.05, 34, 0) - peakThreshold(0.05, 1, 0));
   expect(over * one).toBeCloseTo(6.497, 3);
+});
+
+test('a strong line far from the peak, as breathing is, leaves the background under the peak as it was', () => {
+  const rest = noise(RATE_HZ * 3600, 1, 20, 8);
+  const backgroundOf = (signal: Float64Array) => {
+    const spectra = windowSpectra({
+      signal,
+      kept: new Uint8Array(signal.length).fill(1),
+      rateHz: RATE_HZ,
+      lengthS: 240,
+      powerResponse: null,
+    });
+    return backgroundAt(spectra.density(spectra.prepare(0)), spectra.binCpm, 3, 240)?.density ?? 0;
+  };
+  const changes = Array.from({ length: 15 }, (_, epoch) => {
+    const quiet = rest.slice(960 * epoch, 960 * (epoch + 1));
+    const breathing = leadOf(4, (t) => wave(400, 12.3, t, epoch));
+    return Math.log(backgroundOf(quiet.map((uv, i) => uv + breathing[i])) / backgroundOf(quiet));
+  });
+  const mean = changes.reduce((sum, change) => sum + change, 0) / changes.length;
+  expect(Math.abs(mean)).toBeLessThan(0.1);
 });

@@ -20,6 +20,23 @@ describe('base columns', () => {
     expect(columns.sampleCount).toBe(14);
   });
 
+  it('measure what is like a QRS complex and not the mains hum beside it', () => {
+    const likeOf = (hz: number) => {
+      const base = createBaseColumns({ rateHz: 500, railsUv: null, stepUv: 0 });
+      base.push(
+        Float64Array.from({ length: 5000 }, (_, i) => Math.sin((2 * Math.PI * hz * i) / 500)),
+      );
+      return base.finish().likeQrs[50];
+    };
+    // A sine against itself 18 ms later, both averaged over 18 ms: 2 sin2(pi f T) / (pi f T), over root 2.
+    const gain = (hz: number) => {
+      const x = Math.PI * hz * 0.018;
+      return (Math.SQRT2 * Math.sin(x) ** 2) / x;
+    };
+    for (const hz of [10, 20, 30]) expect(likeOf(hz)).toBeCloseTo(gain(hz), 1);
+    for (const hz of [50, 60]) expect(likeOf(hz)).toBeLessThan(0.1 * gain(20));
+  });
+
   it('count a sample at the rail within half a step of it, three or more in a row', () => {
     const base = createBaseColumns({ rateHz: 50, railsUv: [100, -100], stepUv: 1 });
     base.push(Float64Array.of(0, 99.6, 0, 100, 100, 100, 0, -99.7, -100, -99.9, -99));

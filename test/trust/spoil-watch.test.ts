@@ -72,7 +72,7 @@ describe('a clean recording', () => {
 describe('a spoiled recording', () => {
   const clean = abdomen(QUIET);
   const how = [
-    muscle(200, 8, 40),
+    muscle(200, 8, 80),
     muscle(400, 30, 100),
     heave(500, 20, 800),
     heave(600, 12, 1500),
@@ -223,6 +223,30 @@ describe('a weak heartbeat', () => {
   });
 });
 
+describe('beats of another kind', () => {
+  const made = { ...QUIET, lengthS: 900, qrsUv: 60, breathUv: 30 };
+
+  /** The lead with bumps of the given heights (uV), 80 ms wide, at times of no pattern. */
+  const withBumps = (heightsUv: readonly number[]) => {
+    const x = abdomen(made);
+    heightsUv.forEach((heightUv, k) => {
+      const atS = 40 + 37.3 * k + 5 * Math.sin(7 * k);
+      for (let i = Math.floor((atS - 0.3) * 250); i < (atS + 0.3) * 250; i += 1)
+        x[i] += heightUv * Math.exp(-(((i / 250 - atS) / 0.04) ** 2));
+    });
+    return told(watched(digitised(x, 0.2), 250, 0.2));
+  };
+
+  it('are no spoil, though eight times as high as the usual ones: they come again', () => {
+    expect(withBumps(Array.from({ length: 20 }, (_, k) => 480 + 20 * (k % 4)))).toEqual([]);
+  });
+
+  it('are told from pops of all heights', () => {
+    const heights = Array.from({ length: 8 }, (_, k) => 300 * 1.5 ** k);
+    expect(withBumps(heights)).toHaveLength(8);
+  });
+});
+
 describe('flat lines', () => {
   const made = { ...QUIET, lengthS: 300 };
   const clean = digitised(abdomen(made), made.stepUv);
@@ -247,6 +271,29 @@ describe('flat lines', () => {
 
   it('from beginning to end are one span', () => {
     expect(told(watched(new Float64Array(25000), 250, 0.2))).toEqual(['flat both 0.0-100.0']);
+  });
+});
+
+describe('an amplifier at its limit', () => {
+  const made = { ...QUIET, lengthS: 900, driftUv: 0 };
+  const { x, spoiled } = spoil(abdomen(made), made.rateHz, 9, [
+    moving(300, 20, 9000),
+    moving(600, 10, 9000),
+  ]);
+  const within = (uv: number) =>
+    watched(digitised(x, 0.25, [-uv, uv]), 250, 0.25).filter((one) => one.cause === 'rail');
+
+  it('of 5 mV is a rail though the digitiser reaches 16 mV', () => {
+    const rails = within(5000);
+    expect(rails.length).toBeGreaterThan(1);
+    for (const { fromS, toS, target } of rails) {
+      expect(target).toBe('both');
+      expect(spoiled.some((one) => fromS > one.fromS - 1 && toS < one.toS + 1)).toBe(true);
+    }
+  });
+
+  it('is none where the lead does not reach it', () => {
+    expect(within(15000)).toEqual([]);
   });
 });
 

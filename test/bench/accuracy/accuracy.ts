@@ -1,8 +1,10 @@
 import { simulateSources, simulateStudy } from '../../../src/simulate/simulate-study';
 import type { Bench, Measured, Part } from '../measured';
 import { analysed } from './analysed';
+import { epochLines } from './epochs-alone';
 import { drawStudies } from './families';
 import { heartScore } from './heart-score';
+import { powerRatioError } from './power-ratio';
 import { rhythmScore } from './rhythm-score';
 import { slowWaveScore } from './slow-wave-score';
 import { linesOf, type Scored } from './summary';
@@ -23,6 +25,9 @@ export const accuracy: Part = async ({ say }: Bench): Promise<readonly Measured[
         ? slowWaveScore(found.slowWave, study.signals[0], leads[0], study.truth, spec.rateHz)
         : null,
       rhythm: rhythmScore(found.epochs, study.truth),
+      ratioPct: study.truth.slowCpm
+        ? powerRatioError(found.findings, leads[0]['slow wave'], spec.rateHz)
+        : null,
     };
     scored.push(one);
     if (process.env.ACCURACY_VERBOSE)
@@ -35,5 +40,5 @@ export const accuracy: Part = async ({ say }: Bench): Promise<readonly Measured[
         }),
       );
   }
-  return linesOf(scored);
+  return [...linesOf(scored), ...epochLines()];
 };

@@ -11,6 +11,8 @@ export interface Scored {
   /** Null where the study has no slow wave. */
   readonly slow: SlowWaveScore | null;
   readonly rhythm: RhythmScore;
+  /** Error of the fed-to-fasting power ratio, percent; null where the study has no slow wave. */
+  readonly ratioPct: number | null;
 }
 
 const PART = 'accuracy';
@@ -220,6 +222,20 @@ function rhythmLines(name: string, scores: readonly RhythmScore[]): readonly Mea
   ];
 }
 
+function ratioLines(name: string, scored: readonly Scored[]): readonly Measured[] {
+  const errors = scored.flatMap(({ ratioPct }) => (ratioPct === null ? [] : [ratioPct]));
+  return [
+    line(
+      `fed-to-fasting power ratio, median error: ${name}`,
+      median(errors.map(Math.abs)),
+      '%',
+      2,
+      '5',
+      `worst ${worst(errors).toFixed(1)} %; ${errors.length} studies`,
+    ),
+  ];
+}
+
 /** The lines of the table. */
 export function linesOf(scored: readonly Scored[]): readonly Measured[] {
   const waves = (of: readonly Scored[]) => of.flatMap(({ slow }) => (slow ? [slow] : []));
@@ -232,6 +248,13 @@ export function linesOf(scored: readonly Scored[]): readonly Measured[] {
     ...rhythmLines(
       'all',
       scored.map(({ rhythm }) => rhythm),
+    ),
+    ...ratioLines('all', scored),
+    ...FAMILIES.flatMap((family) =>
+      ratioLines(
+        family,
+        scored.filter((one) => one.family === family),
+      ),
     ),
     ...FAMILIES.flatMap((family) =>
       rhythmLines(
