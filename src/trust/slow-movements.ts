@@ -2,8 +2,10 @@ import { runningMedian } from '../numeric/running-quantile';
 import type { BaseColumns } from './base-columns';
 import { type Excursion, excursionsAbove } from './excursions';
 import { ownLevel } from './own-level';
+import { settlingTimeS } from './settling';
 import { slidingRange } from './sliding-range';
 import { LEVEL_HALF_S } from './sudden-bursts';
+import { unforeseen } from './unforeseen';
 
 /** Swings are measured over this long: more than a slow wave's rise, less than its cycle. */
 export const SWING_S = 8;
@@ -16,10 +18,13 @@ const STEP_OVER_USUAL = 8;
 const STEP_KEEPS = 0.5;
 /** And this share of all that the lead swings meanwhile. */
 const STEP_SHARE = 0.6;
-/** After a step the lead has settled when two means of 20 s (a slow wave's cycle) differ by less than half a usual swing. */
-const SETTLE_MEAN_S = 20;
-const SETTLED_SHARE = 0.5;
-const LONGEST_SETTLING_S = 300;
+/** After a step the lead has settled when what is left of it is less than this share of a usual swing. */
+const SETTLED_SHARE = 0.1;
+/** Times its own level at which a surprise begins and ends, and the least share of a usual swing that does harm. */
+const SURPRISE = { enter: 9, leave: 4.5 };
+const SURPRISE_SHARE = 0.2;
+const SURPRISE_HALF_S = 0.8;
+const TRIM_SHARE = 0.1;
 
 /** An excursion of the slow part of the lead, and whether it begins as a step does. */
 export interface SlowMovement extends Excursion {
@@ -82,15 +87,9 @@ function stepWithin(slow: SlowPart, found: Excursion): number | null {
 
 /** First column after a step from which on the lead has settled. */
 function settledFrom({ track, usualSwing, columnS }: SlowPart, stepAt: number): number {
-  const hop = Math.max(1, Math.round(1 / columnS));
-  const span = Math.max(1, Math.round(SETTLE_MEAN_S / columnS));
-  const last = Math.min(track.length, stepAt + Math.round(LONGEST_SETTLING_S / columnS));
-  for (let at = stepAt + hop; at < last; at += hop) {
-    const next = meanOf(track, at + span, at + 2 * span);
-    const still = Math.abs(meanOf(track, at, at + span) - next) < SETTLED_SHARE * usualSwing[at];
-    if (still || Number.isNaN(next)) return at;
-  }
-  return last;
+  const from = stepAt + Math.max(1, Math.round(STEP_HALF_S / columnS));
+  const settlingS = settlingTimeS(track, from, columnS, SETTLED_SHARE * usualSwing[stepAt]);
+  return Math.min(track.length, from + Math.round(settlingS / columnS));
 }
 
 function slowPart(columns: BaseColumns, mean: Float64Array, stepUv: number): SlowPart {
@@ -143,6 +142,40 @@ function smallSteps(slow: SlowPart): readonly SlowMovement[] {
   });
 }
 
+/** An excursion without what is small beside its greatest value at its ends, which is the filter's own. */
+function trimmed({ from, to }: Excursion, x: Float64Array): Excursion {
+  const least = TRIM_SHARE * greatest(x, { from, to });
+  let [first, last] = [from, to - 1];
+  while (x[first] < least) first += 1;
+  while (x[last] < least) last -= 1;
+  return { from: first, to: last + 1 };
+}
+
+/**
+ * Pops, coughs and talk: what nothing about it foretells, of a size that a filter would make a wave of, from the first to the
+ * last such half second.
+ */
+function surprises(slow: SlowPart, mean: Float64Array): readonly SlowMovement[] {
+  const { columnS, usualSwing } = slow;
+  const found = unforeseen(mean, columnS);
+  if (!found) return [];
+  const { sizeUv, every } = found;
+  const level = ownLevel(sizeUv, Math.round(LEVEL_HALF_S / columnS / every), 0);
+  const limit = (times: number, share: number) =>
+    level.map((value, i) =>
+      Math.max(times * value, share * SURPRISE_SHARE * usualSwing[i * every]),
+    );
+  const margin = Math.round(SURPRISE_HALF_S / columnS);
+  const raised = excursionsAbove(sizeUv, limit(SURPRISE.enter, 1), limit(SURPRISE.leave, 0.5));
+  return raised
+    .map((found) => trimmed(found, sizeUv))
+    .map(({ from, to }) => ({
+      from: Math.max(0, from * every - margin),
+      to: Math.min(mean.length, to * every + margin),
+      stepAt: null,
+    }));
+}
+
 /**
  * Stretches where the slow part of the lead swings far more within 8 s than is usual about that time: movements, and steps
  * (an electrode's jump) until they have settled. A window that only reaches the movement with its edge is not counted.
@@ -154,8 +187,9 @@ export function slowMovements(
   stepUv: number,
 ): readonly SlowMovement[] {
   const slow = slowPart(columns, mean, stepUv);
+  const apartFrom = (others: readonly SlowMovement[]) => (one: SlowMovement) =>
+    !others.some((other) => other.from < one.to && one.from < other.to);
   const large = swings(slow, columns.count);
-  const isApart = (one: SlowMovement) =>
-    !large.some((other) => other.from < one.to && one.from < other.to);
-  return [...large, ...smallSteps(slow).filter(isApart)];
+  const steps = [...large, ...smallSteps(slow).filter(apartFrom(large))];
+  return [...steps, ...surprises(slow, mean).filter(apartFrom(steps))];
 }

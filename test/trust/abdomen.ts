@@ -149,13 +149,13 @@ export const moving =
     return { fromS, toS: fromS + lengthS, cause: 'burst', target: 'both' };
   };
 
-/** A jump of `uv` that settles with the given time constant (Infinity: it stays). The first three constants are spoiled. */
+/** A jump of `uv` that settles with the given time constant (Infinity: it stays). Four constants are spoiled: 2 % is left then. */
 export const jump =
   (fromS: number, uv: number, settleS: number): Spoil =>
   (x, rateHz) => {
     const endS = x.length / rateHz;
     each(x, rateHz, [fromS, endS], (value, _, t) => value + uv * exp(-t / settleS));
-    const lasting = Number.isFinite(settleS) ? 3 * settleS : 1;
+    const lasting = Number.isFinite(settleS) ? 4 * settleS : 1;
     return { fromS: fromS - 0.5, toS: fromS + lasting, cause: 'step', target: 'stomach' };
   };
 
