@@ -38,13 +38,13 @@ test.afterAll(async () => {
 });
 test.afterEach(() => expectNoTroubles(page));
 
-/** The page's zip holds, byte for byte, what the command line wrote into a folder. */
+/** The page's zip holds, byte for byte, what the command line wrote into a folder beside the separated signals. */
 async function expectSameBytes(out: string): Promise<void> {
   const zip = await downloadResults(page);
   expect(zip.name).toBe(`${RECORD_CODE}-results.zip`);
   const files = unzipStored(zip.bytes);
   expect([...files.keys()]).toEqual(NAMES);
-  expect((await readdir(out)).sort()).toEqual([...NAMES].sort());
+  expect((await readdir(out)).sort()).toEqual([...NAMES, 'separated.edf'].sort());
   for (const [name, bytes] of files) {
     const written = await readFile(join(out, name));
     expect(bytes.toString('utf8'), name).toBe(written.toString('utf8'));

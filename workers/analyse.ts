@@ -3,10 +3,13 @@ import { createReadStream, openAsBlob } from 'node:fs';
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { basename, extname, join } from 'node:path';
 import { exportFiles } from '../src/export/all-files';
+import { separatedEdf } from '../src/export/separated-edf';
+import { NO_BEATS } from '../src/recording/beat';
 import { Refusal } from '../src/recording/failure';
+import { leadChannels, leadKey } from '../src/recording/lead';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
 import { confirmStudy } from '../src/session/confirm-study';
-import type { Session } from '../src/session/document';
+import type { Session, SessionState } from '../src/session/document';
 import { initialState, studyIdentity } from '../src/session/initial-state';
 import { beginSession } from '../src/session/log';
 import { textToSession } from '../src/session/read-document';
@@ -83,6 +86,40 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   });
   await mkdir(folder, { recursive: true });
   for (const { name, text } of files) await writeFile(join(folder, name), text);
+  const separated = separatedOf(pipeline, opened, state);
+  await writeFile(join(folder, 'separated.edf'), Buffer.concat(separated));
+}
+
+/** The separated signals of the analysed state, as an EDF+ file. */
+function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionState) {
+  const { roles, settings } = state;
+  const heartbeat = roles.heart && pipeline.heartbeat(roles.heart);
+  return separatedEdf({
+    code: state.study.code,
+    start: recording.start.kind === 'known' ? recording.start.local : null,
+    durationS: recording.durationS,
+    program: PROGRAM,
+    slow: roles.slow.flatMap((lead) => {
+      const drawn = pipeline.slowWave(lead);
+      if (!drawn) return [];
+      const { rateHz, slowWave } = drawn;
+      const prefilter = `slow wave, route ${settings.slowRoute}`;
+      return [{ label: `slow ${leadKey(lead)}`, rateHz, samples: slowWave, prefilter }];
+    }),
+    heart:
+      roles.heart && heartbeat
+        ? {
+            label: `heart ${leadKey(roles.heart)}`,
+            rateHz: heartbeat.rateHz,
+            samples: heartbeat.heartbeat,
+            prefilter: `heartbeat, route ${settings.heartRoute}`,
+          }
+        : null,
+    beats: heartbeat ? state.beats : NO_BEATS,
+    beatRateHz: roles.heart ? recording.channels[leadChannels(roles.heart)[0]].rateHz : 1,
+    phases: state.phases,
+    spans: state.spans,
+  });
 }
 
 /** Folder names of several studies: the file's name without its ending, told apart by a number where two are equal. */

@@ -8,6 +8,7 @@ import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
+import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import { type Interval, joinIntervals, type Span, spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
@@ -69,6 +70,8 @@ export interface Pipeline {
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
   slowWave(lead: Lead): SeparatedSlow | null;
+  /** The heartbeat of a lead; null where it was not read for one. */
+  heartbeat(lead: Lead): HeartOutput | null;
 }
 
 export function createPipeline(): Pipeline {
@@ -108,6 +111,7 @@ export function createPipeline(): Pipeline {
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
+    heartbeat: (lead) => study().signals.heart(lead),
   };
 }
 
