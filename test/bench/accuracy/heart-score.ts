@@ -1,6 +1,7 @@
 import { intervalsWithin, rrSeries } from '../../../src/heart/rr-series';
 import { timeDomain } from '../../../src/heart/variability';
 import { lombBandPowers } from '../../../src/heart/variability-spectrum';
+import { median } from '../../../src/numeric/statistics';
 import { BEAT_CLASSES, type BeatList } from '../../../src/recording/beat';
 import type { RrSeries } from '../../../src/recording/heart-series';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
@@ -8,7 +9,9 @@ import { type Interval, joinIntervals } from '../../../src/recording/span';
 import type { StudyTruth } from '../../../src/simulate/simulate-study';
 import { TICKS_PER_SAMPLE } from '../../../src/units/ticks';
 import { type MatchCounts, matchBeats } from '../../heart/score';
+
 import type { Analysed } from './analysed';
+import { type SpanScore, spanScore } from './span-score';
 
 /** Beats this near a spoiled stretch are not scored: what is spoiled has no sharp edge. */
 const MARGIN_S = 1;
@@ -33,8 +36,16 @@ export interface HeartScore {
   >;
   readonly timingSdMs: number;
   readonly segments: readonly SegmentErrors[];
-  /** Segments of normal rhythm that were withheld though nine tenths of them are neither spoiled nor ectopic. */
+  /** Segments that were withheld: those called irregular, and those of others that hold nothing spoiled and few ectopic beats. */
+  readonly irregular: number;
   readonly withheld: number;
+  /** 5 min segments, whatever became of them. */
+  readonly all: number;
+  readonly spans: SpanScore;
+  /** What is said to have been seen; none of these studies holds anything to see. */
+  readonly seen: number;
+  /** Phases whose LF/HF bears the mark of slow breathing where breathing is not, or lacks it where it is. */
+  readonly wrongMarks: number;
 }
 
 const inside = (stretches: readonly Interval[], timeS: number) =>
@@ -58,6 +69,20 @@ function truthBeats(truth: StudyTruth, rateHz: number): BeatList {
 function spread(values: readonly number[]): number {
   const mean = values.reduce((sum, one) => sum + one, 0) / values.length;
   return Math.sqrt(values.reduce((sum, one) => sum + (one - mean) ** 2, 0) / (values.length - 1));
+}
+
+/** Breathing this near to 9 a minute may be marked or not. */
+const NEARLY_9 = 0.5;
+
+/** Phases whose mark of slow breathing beside LF/HF is wrong. */
+function wrongMarksOf({ findings }: Analysed, { breathsPerMin, rateHz }: StudyTruth): number {
+  return findings.phases.filter(({ figures, fromS, toS }) => {
+    const ratio = figures.lf_hf_ratio;
+    if (!breathsPerMin || ratio.kind !== 'number') return false;
+    const breaths = median(breathsPerMin.subarray(fromS * rateHz, toS * rateHz));
+    const marked = ratio.marks.includes('breathing below 9 a minute');
+    return Math.abs(breaths - 9) > NEARLY_9 && marked !== breaths < 9;
+  }).length;
 }
 
 function figuresOf(rr: RrSeries, fromS: number, toS: number) {
@@ -94,28 +119,6 @@ export function heartScore(found: Analysed, truth: StudyTruth, rateHz: number): 
     if (BEAT_CLASSES[found.beats.classes[d]] === beatClass) classes[beatClass].right += 1;
   }
   const normal = pairs.filter(([r]) => truth.beats[r].beatClass === 'N');
-  const rr = rrSeries(truthBeats(truth, rateHz), rateHz, []);
-  const segments: SegmentErrors[] = [];
-  let withheld = 0;
-  for (const { fromS, toS, state } of found.segments) {
-    if (toS - fromS < 299) continue;
-    const real = figuresOf(rr, fromS, toS);
-    const spoiledHere = spoiled.some((one) => one.fromS < toS && one.toS > fromS);
-    if (state !== 'used') {
-      if (!spoiledHere && real.count >= 0.93 * real.all) withheld += 1;
-      continue;
-    }
-    const ours = figuresOf(found.rr, fromS, toS);
-    segments.push({
-      clean: !spoiledHere && real.count === real.all,
-      sdnnPct: offBy(ours.sdnnMs, real.sdnnMs),
-      rmssdPct: offBy(ours.rmssdMs, real.rmssdMs),
-      rmssdMs: ours.rmssdMs - real.rmssdMs,
-      floorMs: Math.sqrt(6) * found.timingSdMs,
-      lfPct: offBy(ours.lf, real.lf),
-      hfPct: offBy(ours.hf, real.hf),
-    });
-  }
   return {
     beats: {
       truePositive: pairs.length,
@@ -124,7 +127,41 @@ export function heartScore(found: Analysed, truth: StudyTruth, rateHz: number): 
     },
     classes,
     timingSdMs: 1000 * spread(normal.map(([r, d]) => foundS[d] - truth.beats[r].timeS)),
-    segments,
-    withheld,
+    ...segmentScores(found, truth, rateHz),
+    spans: spanScore(found.spans, truth),
+    seen: found.findings.seen.length,
+    wrongMarks: wrongMarksOf(found, truth),
   };
+}
+
+/** The printed figures of each 5 min segment against those of all its true NN intervals. */
+function segmentScores(
+  found: Analysed,
+  truth: StudyTruth,
+  rateHz: number,
+): Pick<HeartScore, 'segments' | 'irregular' | 'withheld' | 'all'> {
+  const spoiled = spoiledOf(truth, MARGIN_S);
+  const rr = rrSeries(truthBeats(truth, rateHz), rateHz, []);
+  const segments: SegmentErrors[] = [];
+  let [irregular, withheld, all] = [0, 0, 0];
+  for (const { fromS, toS, state, sdnnMs, lfMs2, hfMs2 } of found.segments) {
+    if (toS - fromS < 299) continue;
+    all += 1;
+    const real = figuresOf(rr, fromS, toS);
+    const spoiledHere = spoiled.some((one) => one.fromS < toS && one.toS > fromS);
+    if (state === 'irregular') irregular += 1;
+    else if (state !== 'used' && !spoiledHere && real.count >= 0.93 * real.all) withheld += 1;
+    if (state !== 'used' || sdnnMs === null || lfMs2 === null || hfMs2 === null) continue;
+    const { rmssdMs } = figuresOf(found.rr, fromS, toS);
+    segments.push({
+      clean: !spoiledHere && real.count === real.all,
+      sdnnPct: offBy(sdnnMs, real.sdnnMs),
+      rmssdPct: offBy(rmssdMs, real.rmssdMs),
+      rmssdMs: rmssdMs - real.rmssdMs,
+      floorMs: Math.sqrt(6) * found.timingSdMs,
+      lfPct: offBy(lfMs2, real.lf),
+      hfPct: offBy(hfMs2, real.hf),
+    });
+  }
+  return { segments, irregular, withheld, all };
 }
