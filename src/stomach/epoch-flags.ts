@@ -1,5 +1,5 @@
 import { firstAtOrAfter } from '../numeric/first-at-or-after';
-import { quantile } from '../numeric/statistics';
+import { median, quantile } from '../numeric/statistics';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { RhythmBands } from '../recording/settings';
 import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
@@ -25,9 +25,12 @@ export function atHalfOfCrests(dfCpm: Cpm, crestCpm: Cpm | null): boolean {
   return crestCpm !== null && Math.abs(2 * dfCpm - crestCpm) <= HALF_TOLERANCE * crestCpm;
 }
 
+/** Rates further than this from the median are another rhythm taken for breathing, not its own unrest. */
+const MOST_UNREST_PER_MIN = 0.8;
+
 /**
  * Between which rates the breathing of an epoch lies, from the tenth to the ninetieth percentile of
- * what is told; null where under half of its values can be told.
+ * what is told, at most 0.8 a minute from the median; null where under half of it can be told.
  */
 export function breathingOf(
   breathing: BreathingSeries | null,
@@ -39,7 +42,11 @@ export function breathingOf(
   const end = firstAtOrAfter(breathing.centresS, toS);
   const rates = breathing.perMinute.subarray(first, end).filter(Number.isFinite);
   if (rates.length === 0 || 2 * rates.length < end - first) return null;
-  return { lowCpm: quantile(rates, 0.1), highCpm: quantile(rates, 0.9) };
+  const middle = median(rates);
+  return {
+    lowCpm: Math.max(quantile(rates, 0.1), middle - MOST_UNREST_PER_MIN),
+    highCpm: Math.min(quantile(rates, 0.9), middle + MOST_UNREST_PER_MIN),
+  };
 }
 
 /** Where lines of a band show after sampling at `rateHz`. */

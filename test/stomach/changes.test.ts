@@ -133,4 +133,12 @@ describe('breathing in the band of the stomach', () => {
     const signal = sumOf(uv, slow, quiet);
     expect(shareOf(signal, 'tachy', { breathing: ratesOf(cpm) })).toBeGreaterThanOrEqual(0.95);
   });
+
+  test('read now as 5 and now as 15 a minute leaves a 3 cpm wave normogastria', () => {
+    const slow = sumOf(wandering(3, 60, { wanderCpm: 0.05 }).uv, quiet);
+    const { centresS } = ratesOf(slow);
+    const perMinute = centresS.map((_, k) => (k % 2 === 0 ? 5 : 15));
+    const breathing: BreathingSeries = { centresS, perMinute, from: 'derived' };
+    expect(shareOf(slow, 'normo', { breathing })).toBe(1);
+  });
 });
