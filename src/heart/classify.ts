@@ -15,8 +15,9 @@ const WIDE = 0.85;
 const UNLIKE = 0.25;
 /** The same for an early beat in a clean stretch: its own shape is looked at. */
 const EARLY_UNLIKE = 0.1;
-/** Below this many noise standard deviations a complex is not clear. */
+/** Below this many noise standard deviations a complex is not clear, unless it is as like its shape as this. */
 const UNCLEAR = 2.5;
+const PLAIN_LIKENESS = 0.9;
 /** Above these a complex is clear. */
 const CLEAR = 3.5;
 const CLEAR_LIKENESS = 0.75;
@@ -25,6 +26,9 @@ const COHERENT = 0.7;
 
 /** Shapes slower than this are wide whenever their beats come. */
 const VERY_WIDE = 0.65;
+/** Shapes that are somewhat wide are ventricular where so many of their beats are early; those hardly wider where these are. */
+const OFTEN_EARLY = 0.4;
+const MOSTLY_EARLY = 0.7;
 /** What the shape of a group of beats says. */
 type ShapeKind = 'main' | 'usual' | 'wide';
 
@@ -47,7 +51,7 @@ export function classifyBeats(
   return beats.map((beat, i) => {
     const rhythm = rhythmAt(beat.sample);
     if (!isOfShape(beat)) return oddClass(beat, ratios[i], shapes[main], meanHz);
-    if (beat.overNoise < UNCLEAR) return 'Q';
+    if (beat.overNoise < UNCLEAR && beat.likeness < PLAIN_LIKENESS) return 'Q';
     const tolerance = EARLY_UNLIKE + (1 - beat.bestLikeness) / 2;
     if (ratios[i] < EARLY && beat.likeness < beat.bestLikeness - tolerance) {
       const odd = oddClass(beat, ratios[i], shapes[main], meanHz);
@@ -93,7 +97,11 @@ function shapeKind(
     if (ratios[i] < EARLY || (i > 0 && beats[i - 1].shape === k && ratios[i] < 1)) early += 1;
   });
   const pace = meanFrequency(shapes[k].average) / meanFrequency(shapes[main].average);
-  return pace < VERY_WIDE || (pace < WIDE && early >= 0.4 * own) ? 'wide' : 'usual';
+  const wide =
+    pace < VERY_WIDE ||
+    (pace < WIDE && early >= OFTEN_EARLY * own) ||
+    (pace < 1 && early >= MOSTLY_EARLY * own);
+  return wide ? 'wide' : 'usual';
 }
 
 /** Root of the mean square of slope over that of value: grows with the mean frequency (Hjorth 1970). */

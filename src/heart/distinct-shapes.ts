@@ -11,6 +11,9 @@ const SHIFTED_LIKENESS = 0.85;
 const CARRIED_PART = 0.75;
 /** P waves begin at most this long before the middle of their beat (common practice, no source). */
 const EARLIEST_P_S = 0.26;
+/** What every beat of a shape carries but was taken for a beat far less often is no beat, with this part of the energy even. */
+const RARE_PART = 0.5;
+const CARRIED_PART_IF_RARE = 1.1;
 const ENERGY_S = 0.1;
 
 /**
@@ -69,5 +72,8 @@ function isCarried(
   const there = rms(other.sum.subarray(match.at, match.at + own.length)) / other.count;
   if (there < rms(own) / shape.count / 2) return false;
   if (Math.abs(match.at - start) < half) return match.value > SHIFTED_LIKENESS;
-  return match.value > CARRIED_LIKENESS && energyPart < CARRIED_PART;
+  const rare = shape.count < RARE_PART * other.count;
+  return (
+    match.value > CARRIED_LIKENESS && energyPart < (rare ? CARRIED_PART_IF_RARE : CARRIED_PART)
+  );
 }

@@ -13,6 +13,8 @@ import { likeSideWave, type SideWave } from './side-waves';
 /** Side waves of shapes with at least this share of the beats are looked for everywhere. */
 const LEAST_CARRIER = 0.1;
 const BEAT_LIKENESS = 0.9;
+/** A shape seen less often than this part of the carrier's beats cannot be what follows each of them. */
+const RIVAL_PART = 0.5;
 /** Likeness from which a place counts as a beat when the noise between beats is measured. */
 const PLAIN_LIKENESS = 0.85;
 /** Independent values in a window of the shape band: twice its width in Hz times its length in s, less the slope of its edges. */
@@ -100,16 +102,17 @@ export function weigher(
   };
 }
 
-/** Side waves of the frequent shapes; what is like a beat is a beat that always follows, as in a run. */
+/** Side waves of the frequent shapes; what is like a shape as frequent is a beat that always follows, as in a run. */
 function usualWaves(shapes: readonly Shape[], learned: number, lag: number): SideWave[] {
+  const isBeat = (wave: SideWave, carrier: Shape) =>
+    shapes.some(
+      ({ average, half, count }) =>
+        count > RIVAL_PART * carrier.count &&
+        likeSideWave(average, half, 2 * lag, [wave]) > BEAT_LIKENESS,
+    );
   return shapes
     .filter(({ count }) => count > LEAST_CARRIER * learned)
-    .flatMap((shape) => shape.waves)
-    .filter((wave) =>
-      shapes.every(
-        ({ average, half }) => likeSideWave(average, half, 2 * lag, [wave]) < BEAT_LIKENESS,
-      ),
-    );
+    .flatMap((shape) => shape.waves.filter((wave) => !isBeat(wave, shape)));
 }
 
 /** Both lists together, of the second only what is farther than `apart` from all of the first; both ascending. */

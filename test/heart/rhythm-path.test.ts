@@ -35,4 +35,10 @@ describe('the path of beats through candidates', () => {
     expect(at(0.5)).toBeGreaterThan(at(0.25));
     expect(at(0.9)).toBeGreaterThan(at(1.6));
   });
+
+  it('takes a pause that makes up for an early beat as usual, and a run of early beats for likelier than single ones', () => {
+    expect(intervalFit(1.12, steady, 0.48)).toBeCloseTo(intervalFit(0.8, steady), 10);
+    expect(intervalFit(1.12, steady, 0.8)).toBeLessThan(intervalFit(1.12, steady, 0.48));
+    expect(intervalFit(0.4, steady, 0.4)).toBeGreaterThan(intervalFit(0.4, steady, 0.8));
+  });
 });
