@@ -1,40 +1,16 @@
 import type { FoundInFile, Recording, SignalSource } from '../recording/recording';
 import { readBytes } from './file-bytes';
-import type { Recognition } from './format';
 import { refusal } from './refusals';
 import { type TextChannel, textChannels } from './text-channels';
 import { textClock } from './text-clock';
 import { detectLayout, type TextLayout } from './text-dialect';
+import { HEAD_BYTES, headLines } from './text-head';
 import { readTextHeader, type TextHeader } from './text-header';
-import { detectEncoding, linesOf, type TextEncoding } from './text-lines';
+import type { TextEncoding } from './text-lines';
 import type { TextReading } from './text-reading';
 import { readRows, type TextRows } from './text-rows';
 import { gapsOf, memorySource, textChannel } from './text-source';
 import { findTimeColumn, type TimeColumn } from './text-time-column';
-
-const HEAD_BYTES = 64 * 1024;
-
-/** Text is possible where the bytes decode without control characters and some lines are rows of numbers, or the name says so. */
-export function recognisesDelimitedText(head: Uint8Array, fileName: string): Recognition {
-  const { text, lines } = headLines(head);
-  if (/[^\P{Cc}\t\r\n\f]/u.test(text)) return 'no';
-  if (detectLayout(lines) !== null) return 'possible';
-  return /\.(csv|tsv|txt|asc)$/i.test(fileName) ? 'possible' : 'no';
-}
-
-interface HeadLines {
-  readonly encoding: TextEncoding;
-  readonly text: string;
-  /** Without a last line that the end of the head may have cut. */
-  readonly lines: readonly string[];
-}
-
-function headLines(head: Uint8Array): HeadLines {
-  const encoding = detectEncoding(head);
-  const text = new TextDecoder(encoding).decode(head, { stream: true });
-  const lines = linesOf(text);
-  return { encoding, text, lines: head.length < HEAD_BYTES ? lines : lines.slice(0, -1) };
-}
 
 /**
  * Opens a table of samples as text: comma, semicolon, tab or blanks between cells, decimal point or comma, with or without

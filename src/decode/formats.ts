@@ -1,5 +1,4 @@
 import type { SignalSource } from '../recording/recording';
-import { openDelimitedText, recognisesDelimitedText } from './delimited-text';
 import { openEdf } from './edf';
 import { fieldText } from './edf-fields';
 import { FIXED_BYTES, fixedField } from './edf-layout';
@@ -7,6 +6,7 @@ import { readBytes } from './file-bytes';
 import type { Format, Recognition } from './format';
 import { refusal } from './refusals';
 import { looksLike } from './signatures';
+import { recognisesDelimitedText } from './text-head';
 import type { TextReading } from './text-reading';
 
 const HEAD_BYTES = 64 * 1024;
@@ -86,7 +86,11 @@ export const FORMATS: readonly Format[] = [
     name: 'delimited text',
     extensions: ['csv', 'tsv', 'txt', 'asc', 'dat'],
     recognises: recognisesDelimitedText,
-    open: openDelimitedText,
+    /** The reader is fetched with the first text file: most recordings are none. */
+    open: async (file, fileName, reading) => {
+      const { openDelimitedText } = await import('./delimited-text');
+      return openDelimitedText(file, fileName, reading);
+    },
   },
 ];
 
