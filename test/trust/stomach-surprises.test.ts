@@ -3,6 +3,7 @@ import { createRandom } from '../../src/numeric/random';
 import { coveredSeconds } from '../../src/recording/span';
 import { settlingTimeS } from '../../src/trust/settling';
 import { createSpoilWatch } from '../../src/trust/spoil-watch';
+import { unforeseen } from '../../src/trust/unforeseen';
 
 const RATE_HZ = 50;
 const SECONDS = 1200;
@@ -92,5 +93,42 @@ describe('the time that a step takes to settle', () => {
   it('is nothing where the lead jumps and stays, or falls by less than matters', () => {
     expect(settlingTimeS(new Float64Array(3000).fill(500), 0, 0.1, 20)).toBe(0);
     expect(settlingTimeS(fall(15, 5), 0, 0.1, 20)).toBe(0);
+  });
+});
+
+describe('what nothing foretells', () => {
+  const columns = (extra: (t: number) => number) => {
+    const x = lead(cpm(3, 150), extra);
+    return Float64Array.from({ length: SECONDS * 10 }, (_, c) => {
+      const column = x.subarray(5 * c, 5 * c + 5);
+      return column.reduce((sum, one) => sum + one, 0) / 5;
+    });
+  };
+
+  it('is a pop in its own seconds, not in those that a prediction has seen it in', () => {
+    const found = unforeseen(
+      columns((t) => (t >= EVENT_S && t < EVENT_S + 1 ? 1000 : 0)),
+      0.1,
+    );
+    if (!found) throw new Error('there are columns enough');
+    const at = (fromS: number, toS: number) =>
+      Math.max(...found.sizeUv.slice(2 * (EVENT_S + fromS), 2 * (EVENT_S + toS)));
+    expect(at(-1, 2)).toBeGreaterThan(300);
+    expect(at(4, 15)).toBeLessThan(0.1 * at(-1, 2));
+    expect(at(-15, -4)).toBeLessThan(0.1 * at(-1, 2));
+  });
+
+  it('is next to nothing of a slow wave and breathing', () => {
+    const found = unforeseen(
+      columns(() => 0),
+      0.1,
+    );
+    const sizes = found ? [...found.sizeUv].sort((a, b) => a - b) : [];
+    expect(sizes[Math.floor(0.99 * sizes.length)]).toBeLessThan(15);
+  });
+
+  it('is not told where columns are too few or a second apart', () => {
+    expect(unforeseen(new Float64Array(100), 0.1)).toBeNull();
+    expect(unforeseen(new Float64Array(5000), 1)).toBeNull();
   });
 });
