@@ -12,6 +12,7 @@ import {
   breathingCentres,
   breathingPeak,
   breathingSpectrum,
+  shareNear,
 } from './breathing-peak';
 import { beatTimes } from './rr-series';
 
@@ -21,6 +22,13 @@ const SAMPLES = BREATHING_WINDOW_S * RESAMPLED_RATE_HZ;
 const LEAST_KEPT = 0.75;
 /** Values further from the median than this many spreads are drawn in: one odd beat is no breath. */
 const MOST_SPREADS = 3.5;
+
+/**
+ * Below this rate the intervals have waves of their own (about 6 a minute) that are not breathing, so that R height must show
+ * it too: more of its power near the rate than noise alone has.
+ */
+const ALONE_FROM_PER_MINUTE = 9;
+const SEEN_IN_HEIGHT = 0.5;
 
 export interface BreathingFromBeatsInput {
   readonly rr: RrSeries;
@@ -94,6 +102,27 @@ function shared(
   };
 }
 
+/** A spectrum with nothing below a rate. */
+function without({ power, stepPerMinute }: BreathingSpectrum, below: number): BreathingSpectrum {
+  return {
+    power: power.map((value, k) => (k * stepPerMinute < below ? 0 : value)),
+    stepPerMinute,
+  };
+}
+
+function rateOf(
+  ofHeight: BreathingSpectrum | null,
+  ofIntervals: BreathingSpectrum | null,
+  ceilingPerMinute: number,
+): number {
+  const both = shared(ofHeight, ofIntervals);
+  if (both === null) return Number.NaN;
+  const rate = breathingPeak(both, ceilingPerMinute);
+  if (!(rate < ALONE_FROM_PER_MINUTE)) return rate;
+  const seen = ofHeight !== null && shareNear(ofHeight, rate, ceilingPerMinute) >= SEEN_IN_HEIGHT;
+  return seen ? rate : breathingPeak(without(both, ALONE_FROM_PER_MINUTE), ceilingPerMinute);
+}
+
 /** NN seconds up to the end of each interval, to know how much of a window they fill. */
 function nnSecondsUpTo({ rrMs, nn }: RrSeries): Float64Array {
   const sums = new Float64Array(rrMs.length + 1);
@@ -104,7 +133,7 @@ function nnSecondsUpTo({ rrMs, nn }: RrSeries): Float64Array {
 /**
  * Breathing rate over time derived from the heartbeat: the spectral peak that R height (Moody 1985) and NN intervals
  * share in 60 s windows every 30 s. Nothing above half the window's heart rate can be seen (45 % of it is the ceiling);
- * NaN where NN fill under three quarters of a window or no peak is clear.
+ * NaN where NN fill under three quarters of a window or no peak is clear; one below 9 a minute must be seen in R height too.
  */
 export function breathingFromBeats(input: BreathingFromBeatsInput): BreathingSeries {
   const { rr, beats, rateHz, heightsUv, durationS } = input;
@@ -125,11 +154,9 @@ export function breathingFromBeats(input: BreathingFromBeatsInput): BreathingSer
     const end = firstAtOrAfter(rr.timesS, fromS + BREATHING_WINDOW_S);
     if (upTo[end] - upTo[first] < LEAST_KEPT * BREATHING_WINDOW_S) return Number.NaN;
     const beatsPerMinute = (60 * (end - first)) / BREATHING_WINDOW_S;
-    const both = shared(
-      shapeOf(resampled(heights, fromS), false),
-      shapeOf(resampled(intervals, fromS), true),
-    );
-    return both === null ? Number.NaN : breathingPeak(both, 0.45 * beatsPerMinute);
+    const ofHeight = shapeOf(resampled(heights, fromS), false);
+    const ofIntervals = shapeOf(resampled(intervals, fromS), true);
+    return rateOf(ofHeight, ofIntervals, 0.45 * beatsPerMinute);
   });
   return { centresS, perMinute, from: 'derived' };
 }

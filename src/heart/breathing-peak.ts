@@ -52,25 +52,39 @@ function largestPeak(power: Float64Array, low: number, high: number): number | n
   return bend < 0 ? best + (0.5 * (before - after)) / bend : best;
 }
 
+/** Indexes of a spectrum between which breathing is looked for. */
+function bandOf({ power, stepPerMinute }: BreathingSpectrum, ceilingPerMinute: number) {
+  const top = Math.min(FASTEST_PER_MINUTE, ceilingPerMinute);
+  const low = Math.ceil(SLOWEST_PER_MINUTE / stepPerMinute);
+  return { low, high: Math.min(power.length - 2, Math.floor(top / stepPerMinute)) };
+}
+
+/** Share of the power between 4 a minute and the ceiling (40 at most) that lies within 2.5 a minute of a rate. */
+export function shareNear(
+  spectrum: BreathingSpectrum,
+  perMinute: number,
+  ceilingPerMinute: number,
+): number {
+  const { power, stepPerMinute } = spectrum;
+  const { low, high } = bandOf(spectrum, ceilingPerMinute);
+  let [all, near] = [0, 0];
+  for (let k = low; k <= high; k += 1) {
+    all += power[k];
+    if (Math.abs(k * stepPerMinute - perMinute) <= PEAK_HALF_WIDTH) near += power[k];
+  }
+  return near / all;
+}
+
 /**
  * Breathing rate a minute of a spectrum: its largest local maximum between 4 and the smaller of 40 and the ceiling, where
  * half of the power of that band lies within 2.5 a minute of it; else NaN (the rule is this program's).
  */
-export function breathingPeak(
-  { power, stepPerMinute }: BreathingSpectrum,
-  ceilingPerMinute: number,
-): number {
-  const top = Math.min(FASTEST_PER_MINUTE, ceilingPerMinute);
-  const low = Math.ceil(SLOWEST_PER_MINUTE / stepPerMinute);
-  const high = Math.min(power.length - 2, Math.floor(top / stepPerMinute));
-  const peak = largestPeak(power, low, high);
+export function breathingPeak(spectrum: BreathingSpectrum, ceilingPerMinute: number): number {
+  const { low, high } = bandOf(spectrum, ceilingPerMinute);
+  const peak = largestPeak(spectrum.power, low, high);
   if (peak === null) return Number.NaN;
-  let [all, near] = [0, 0];
-  for (let k = low; k <= high; k += 1) {
-    all += power[k];
-    if (Math.abs(k - peak) * stepPerMinute <= PEAK_HALF_WIDTH) near += power[k];
-  }
-  return near >= CLEAR_SHARE * all ? peak * stepPerMinute : Number.NaN;
+  const perMinute = peak * spectrum.stepPerMinute;
+  return shareNear(spectrum, perMinute, ceilingPerMinute) >= CLEAR_SHARE ? perMinute : Number.NaN;
 }
 
 /** Centres of the windows that fit a length. */

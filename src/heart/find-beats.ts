@@ -36,10 +36,7 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
   const first = yield* firstBeats(energy, levels, rateHz, fallback);
   const shapes = yield* scaled(learnShapes(signal, first), 0.3, 0.5);
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
-  const evidence = candidates.map((candidate) => {
-    const s = Math.min(levels.beat.length - 1, Math.floor(candidate.sample / rateHz));
-    return placeEvidence(candidate, levels.beat[s], levels.noise[s]);
-  });
+  const evidence = yield* evidenceOf(candidates, levels, rateHz);
   let beats: Weighed[] = [];
   for (let round = 0; round < ROUNDS; round += 1) {
     const sizes = usualSizes(
@@ -54,6 +51,23 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
     yield 0.92;
   }
   return { beats: present(beats, shapes), shapes };
+}
+
+/** Places weighed between two steps. */
+const PLACES_A_STEP = 4000;
+
+function* evidenceOf(
+  candidates: readonly Candidate[],
+  levels: Levels,
+  rateHz: number,
+): Generator<number, number[]> {
+  const evidence: number[] = [];
+  for (const candidate of candidates) {
+    const s = Math.min(levels.beat.length - 1, Math.floor(candidate.sample / rateHz));
+    evidence.push(placeEvidence(candidate, levels.beat[s], levels.noise[s]));
+    if (evidence.length % PLACES_A_STEP === 0) yield 0.9;
+  }
+  return evidence;
 }
 
 /** Runs a pass and reports its part of the whole. */

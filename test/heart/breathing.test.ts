@@ -146,6 +146,13 @@ describe('breathing from the beats', () => {
       NO_BREATHING,
     );
   });
+
+  it('is not told from the 0.1 Hz wave of the intervals, but from slow breaths that move R height too', () => {
+    expect(told(derive(66, 15, 0.005, 0)).filter((one) => one < 9)).toHaveLength(0);
+    const slow = told(derive(66, 6, 0.05, 0.15));
+    expect(slow.length).toBeGreaterThanOrEqual(14);
+    expect(quantile(errors({ perMinute: slow }, 6), 0.9)).toBeLessThan(1);
+  });
 });
 
 describe('beat heights', () => {
