@@ -13,6 +13,7 @@ import {
 } from './dominant-peak';
 import { atBreathing, atHalfOfCrests, onDrift } from './epoch-flags';
 import { halfPeaks, isLocked, type SampledPart } from './harmonic';
+import { lentSupport } from './lent-support';
 import { rhythmOf } from './rhythm-class';
 
 /** An epoch or one half of it. */
@@ -25,6 +26,8 @@ export interface EpochInput extends EpochPart {
   readonly breathing: Band | null;
   /** Its two halves; null where one of them is too spoiled. Asked for only when needed. */
   readonly halves: () => readonly [EpochPart, EpochPart] | null;
+  /** Windows of the same phase and length that share no sample with it, the nearest two on either side. */
+  readonly beside: readonly Spectrum[];
 }
 
 export interface EpochRhythm {
@@ -61,12 +64,18 @@ function fundamentalOf(part: EpochPart, peak: SpectrumPeak, settings: Settings) 
   );
 }
 
-function dominantOf(part: EpochPart, falseAlarm: number, settings: Settings): Dominant | null {
+function dominantOf(
+  part: EpochPart,
+  falseAlarm: number,
+  settings: Settings,
+  beside: readonly Spectrum[] = [],
+): Dominant | null {
   const band = searchBand(settings);
   const peak = highestPeak(bandPeaks(part.density, part.binCpm, band));
   if (!peak) return null;
   const independent = independentValues(band, part.lengthS);
-  const outstanding = standsOut(part, peak, { falseAlarm, independent });
+  const lent = () => lentSupport(beside, peak.cpm);
+  const outstanding = standsOut(part, peak, { falseAlarm, independent, lent });
   const lower = outstanding ? fundamentalOf(part, peak, settings) : null;
   return { peak: lower ?? peak, outstanding, harmonic: lower !== null };
 }
@@ -141,7 +150,7 @@ function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, setti
 export function epochRhythm(input: EpochInput, settings: Settings): EpochRhythm {
   const { density, binCpm } = input;
   const filled: readonly EpochFlag[] = input.spoiledFraction > 0 ? ['filled'] : [];
-  const found = dominantOf(input, settings.epoch.falseAlarm, settings);
+  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input.beside);
   if (!found) return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
   const { peak, outstanding, harmonic } = found;
   const flags = outstanding ? flagsOf(input, peak, harmonic, settings) : [];

@@ -76,7 +76,21 @@ function halvesOf(lead: Lead, first: number): readonly [EpochPart, EpochPart] | 
   return before && after ? [before, after] : null;
 }
 
-function epochInput(lead: Lead, first: number, fromS: Seconds): EpochInput {
+/** The two windows before an epoch and the two after it that share no sample with it, where the phase and what is kept allow. */
+function besideOf(lead: Lead, phase: Interval, first: number): readonly EpochPart[] {
+  const { windows, options } = lead;
+  const { rateHz } = options.slow;
+  const length = Math.round(options.settings.epoch.lengthS * rateHz);
+  return [-2, -1, 1, 2].flatMap((place) => {
+    const from = first + place * length;
+    const inside = from >= phase.fromS * rateHz - 1 && from + length <= phase.toS * rateHz + 1;
+    if (!inside || from < 0 || from + length > options.slow.forSpectra.length) return [];
+    const { spoiledFraction } = windows.at(from);
+    return spoiledFraction > options.settings.epoch.maxSpoiled ? [] : [partOf(windows, from)];
+  });
+}
+
+function epochInput(lead: Lead, phase: Interval, first: number, fromS: Seconds): EpochInput {
   const { windows, options, crestsS } = lead;
   const { lengthS } = options.settings.epoch;
   return {
@@ -84,21 +98,28 @@ function epochInput(lead: Lead, first: number, fromS: Seconds): EpochInput {
     crestCpm: crestRateCpm(crestsS, fromS, fromS + lengthS),
     breathing: breathingOf(options.breathing, fromS, fromS + lengthS),
     halves: () => halvesOf(lead, first),
+    beside: besideOf(lead, phase, first),
   };
 }
 
-function analyseEpoch(lead: Lead, phase: string, fromS: Seconds) {
+function analyseEpoch(lead: Lead, phase: Phase, fromS: Seconds) {
   const { slow, settings } = lead.options;
   const { lengthS, maxSpoiled } = settings.epoch;
   const first = Math.max(0, Math.ceil(fromS * slow.rateHz - 1e-6));
   const { spoiledFraction } = lead.windows.at(first);
-  const place = { lead: slow.lead, phase, fromS, toS: fromS + lengthS, spoiledFraction };
+  const place = {
+    lead: slow.lead,
+    phase: phase.name,
+    fromS,
+    toS: fromS + lengthS,
+    spoiledFraction,
+  };
   if (spoiledFraction > maxSpoiled || spoiledFraction === 1) {
     const nothing = { dfCpm: null, dpDb: null, peakShare: null, rhythm: null, flags: [] };
     const epoch: Epoch = { ...place, kept: false, ...nothing };
     return { epoch, spectrum: null };
   }
-  const input = epochInput(lead, first, fromS);
+  const input = epochInput(lead, phase, first, fromS);
   const epoch: Epoch = { ...place, kept: true, ...judgedEpoch(lead.memory, input, settings) };
   return { epoch, spectrum: input.density };
 }
@@ -142,7 +163,7 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
     epochStarts(
       { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
       settings.epoch,
-    ).map((fromS) => analyseEpoch(lead, phase.name, fromS)),
+    ).map((fromS) => analyseEpoch(lead, phase, fromS)),
   );
   return {
     rhythm: {

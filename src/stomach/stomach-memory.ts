@@ -4,6 +4,8 @@ import type { SharedWindows } from './shared-windows';
 
 interface Judged {
   readonly circumstances: string;
+  /** Spectra of the windows beside it. */
+  readonly beside: readonly Float64Array[];
   readonly rhythm: EpochRhythm;
 }
 
@@ -33,8 +35,11 @@ export function judgedEpoch(
     settings.epoch,
   ]);
   const known = memory.judged.get(input.density);
-  if (known && known.circumstances === circumstances) return known.rhythm;
+  const beside = input.beside.map(({ density }) => density);
+  const sameBeside =
+    known?.beside.length === beside.length && beside.every((one, i) => one === known.beside[i]);
+  if (known && sameBeside && known.circumstances === circumstances) return known.rhythm;
   const rhythm = epochRhythm(input, settings);
-  memory.judged.set(input.density, { circumstances, rhythm });
+  memory.judged.set(input.density, { circumstances, beside, rhythm });
   return rhythm;
 }

@@ -78,7 +78,7 @@ def judge(p, df, seconds, false_alarm=0.05):
     leverage = per_value * (1 / keep.sum() + (numpy.log(peak) - mx) ** 2 / squares)
     cells = 8 * seconds / 60
     threshold = numpy.log(-numpy.log(1 - (1 - false_alarm) ** (1 / cells)))
-    threshold += 0.08 * (numpy.log(false_alarm) / numpy.log(0.05)) ** 2 + 1.25 * leverage
+    threshold += 0.12 * (numpy.log(false_alarm) / numpy.log(0.05)) ** 2 + 1.25 * leverage
     ratio = numpy.log(top) - line(numpy.log(peak)) - EULER - raised
     return {"peak_cpm": float(peak), "log_ratio": float(ratio), "leverage": float(leverage),
             "threshold": float(threshold), "raised": float(raised), "rhythm": bool(ratio > threshold)}

@@ -74,11 +74,11 @@ describe('the background of a peak', () => {
 });
 
 describe('a recording of noise alone', () => {
-  test('gave a rhythm in 2.3 to 4.5 % of 4 min epochs in the simulation, where at most 5 % are asked for', () => {
+  test('gave a rhythm in 2.1 to 4.5 % of 4 min epochs in the simulation, where at most 5 % are asked for', () => {
     const rates = reference.false_alarms.filter((one) => one.epoch_s === 240 && one.asked === 0.05);
     expect(rates).toHaveLength(6);
     for (const { false_alarms } of rates) {
-      expect(false_alarms).toBeGreaterThan(0.023);
+      expect(false_alarms).toBeGreaterThan(0.021);
       expect(false_alarms).toBeLessThan(0.045);
     }
   });
