@@ -101,6 +101,22 @@ describe('a spoiled recording', () => {
       expect(shareFound(spans, 'heart', at), `${at.cause} at ${at.fromS}`).toBeGreaterThan(0.9);
   });
 
+  it('has bursts found for the heart from their first to their last quarter of a second, and no more', () => {
+    const heart = actingOn(spans, 'heart');
+    for (const { fromS, toS, target } of spoiled) {
+      if (target !== 'heart') continue;
+      const meeting = heart.filter((one) => one.fromS < toS && one.toS > fromS);
+      // A burst swells and fades within a tenth of its length, so that its very ends do no harm.
+      const swellS = 0.1 * (toS - fromS);
+      const first = Math.min(...meeting.map((one) => one.fromS));
+      const last = Math.max(...meeting.map((one) => one.toS));
+      expect(first, `from ${fromS}`).toBeGreaterThan(fromS - 0.3);
+      expect(first, `from ${fromS}`).toBeLessThan(fromS + 0.25 + swellS);
+      expect(last, `to ${toS}`).toBeLessThan(toS + 0.3);
+      expect(last, `to ${toS}`).toBeGreaterThan(toS - 0.25 - swellS);
+    }
+  });
+
   it('has every movement, step and empty stretch found for the stomach', () => {
     for (const at of spoiled.filter((one) => one.target === 'both'))
       expect(shareFound(spans, 'stomach', at), `${at.cause} at ${at.fromS}`).toBeGreaterThan(0.95);
@@ -234,7 +250,7 @@ describe('beats of another kind', () => {
       for (let i = Math.floor((atS - 0.3) * 250); i < (atS + 0.3) * 250; i += 1)
         x[i] += heightUv * Math.exp(-(((i / 250 - atS) / 0.04) ** 2));
     });
-    return told(watched(digitised(x, 0.2), 250, 0.2));
+    return told(actingOn(watched(digitised(x, 0.2), 250, 0.2), 'heart'));
   };
 
   it('are no spoil, though eight times as high as the usual ones: they come again', () => {
