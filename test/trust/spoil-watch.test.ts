@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { createRandom } from '../../src/numeric/random';
 import { coveredSeconds } from '../../src/recording/span';
 import type { ProposedSpan } from '../../src/trust/proposed-span';
 import { createSpoilWatch } from '../../src/trust/spoil-watch';
@@ -236,6 +237,25 @@ describe('a weak heartbeat', () => {
     expect(burst(30)).toHaveLength(1);
     expect(burst(30)[0]).toMatch(/^burst heart/);
     expect(burst(1000)).toEqual([]);
+  });
+});
+
+describe('muscle that sets in at once', () => {
+  it('is spoiled from its first sample to its last, and at most a beat beside it', () => {
+    const made = { ...QUIET, lengthS: 600 };
+    const x = abdomen(made);
+    const random = createRandom(12);
+    for (const fromS of [100, 200.37, 300.71, 400.05])
+      for (let i = Math.round(fromS * 250); i < (fromS + 6.3) * 250; i += 1)
+        x[i] += 90 * random.gaussian();
+    const heart = actingOn(watched(digitised(x, 0.2), 250, 0.2), 'heart');
+    expect(heart).toHaveLength(4);
+    [100, 200.37, 300.71, 400.05].forEach((fromS, k) => {
+      expect(Math.abs(heart[k].fromS - fromS), `${k}`).toBeLessThan(0.41);
+      expect(heart[k].fromS, `${k}`).toBeLessThan(fromS + 0.05);
+      expect(Math.abs(heart[k].toS - fromS - 6.3), `${k}`).toBeLessThan(0.41);
+      expect(heart[k].toS, `${k}`).toBeGreaterThan(fromS + 6.25);
+    });
   });
 });
 
