@@ -43,6 +43,8 @@ export interface AverageBeat {
 
 export interface Detection {
   readonly beats: BeatList;
+  /** Ticks of the beats that little but the rhythm speaks for, ascending: a person should look. */
+  readonly doubtful: Float64Array;
   /** Sign of the dominant extreme of the usual beat. */
   readonly sign: 1 | -1;
   /** One a shape, the most frequent first. */
@@ -95,6 +97,10 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;
   return {
     beats: withMisfitsUnusable(listOf(times, classes, ticksPerSample), signal, ticksPerSample),
+    doubtful: Float64Array.from(
+      times.filter((_, i) => found.beats[i].score < SURE_EVIDENCE),
+      (time) => Math.round(time * ticksPerSample),
+    ).sort(),
     sign,
     averages: timed.map((average) => shown(average, found.beats, classes, rateHz)),
     noiseUv: measured?.noiseUv ?? Number.NaN,
@@ -107,6 +113,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
 function nothing(note: string): Detection {
   return {
     beats: { ticks: new Float64Array(0), classes: new Uint8Array(0), origins: new Uint8Array(0) },
+    doubtful: new Float64Array(0),
     sign: 1,
     averages: [],
     noiseUv: Number.NaN,
@@ -116,6 +123,8 @@ function nothing(note: string): Detection {
   };
 }
 
+/** Log-odds from which a beat needs no rhythm to be believed: ten to one. */
+const SURE_EVIDENCE = 2.3;
 /** Beats an average is made of, at least. */
 const FEWEST = 3;
 

@@ -8,12 +8,12 @@ import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
 
 export interface FoundBeats {
-  readonly beats: readonly Candidate[];
+  readonly beats: readonly Weighed[];
   readonly shapes: readonly Shape[];
 }
 
-/** A place with its evidence. */
-type Weighed = Candidate & { readonly score: number };
+/** A place with its evidence: log-odds of a beat without what the rhythm says. */
+export type Weighed = Candidate & { readonly score: number };
 
 const NEIGHBOURS = 7;
 /** Looks by shape, energy and rhythm together; the first without rhythm. */
@@ -180,7 +180,7 @@ const SURE_COHERENCE = 0.75;
 const LEAST_EVIDENCE = 1;
 
 /** The beats of stretches where most of them are like their shapes or stand out of the noise: noise alone has no heartbeat. */
-function present(beats: readonly Weighed[], shapes: readonly Shape[]): Candidate[] {
+function present(beats: readonly Weighed[], shapes: readonly Shape[]): Weighed[] {
   const few = new Float64Array(2 * PRESENCE_NEIGHBOURS + 1);
   const medianAbout = (i: number, value: (beat: Weighed) => number) => {
     const first = Math.max(0, i - PRESENCE_NEIGHBOURS);

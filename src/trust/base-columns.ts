@@ -1,5 +1,7 @@
 import type { Hertz } from '../units/rate';
+import { type Change, createChange, nextChange } from './mean-change';
 import { createRuns, type Run, type Runs } from './runs';
+import { followStop, type Stop, type Stopping } from './stops';
 
 /** What is kept of a lead: columns of about 0.1 s, and the runs of samples that say something by themselves. */
 export interface BaseColumns {
@@ -31,11 +33,6 @@ export interface ColumnOptions {
   readonly railsUv: readonly [low: number, high: number] | null;
   /** One digital step in uV, 0 where not known. */
   readonly stepUv: number;
-}
-
-/** A run with the value at which it stops dead. */
-export interface Stop extends Run {
-  readonly valueUv: number;
 }
 
 const COLUMN_S = 0.1;
@@ -85,53 +82,6 @@ const EMPTY = {
 function follow(runs: Runs, index: number, isIn: boolean): void {
   if (isIn) runs.open(index);
   else if (runs.isOpen) runs.close(index);
-}
-
-/** Change from the mean of one half of the latest samples to that of the other, kept up as they come. */
-interface Change {
-  readonly latest: Float64Array;
-  at: number;
-  sum: number;
-}
-
-const createChange = (half: number): Change => ({
-  latest: new Float64Array(2 * half).fill(Number.NaN),
-  at: 0,
-  sum: Number.NaN,
-});
-
-/** The change with the next sample; 0 while samples are missing. */
-function nextChange(change: Change, value: number): number {
-  const { latest } = change;
-  const half = latest.length / 2;
-  if (Number.isNaN(value) || Number.isNaN(change.sum)) {
-    latest.fill(value);
-    change.sum = Number.isNaN(value) ? Number.NaN : 0;
-    return 0;
-  }
-  const { at } = change;
-  change.sum += value - 2 * latest[at < half ? at + half : at - half] + latest[at];
-  latest[at] = value;
-  change.at = at + 1 === latest.length ? 0 : at + 1;
-  return change.sum / half;
-}
-
-/** A run in the making that may be a stop; `from` is -1 where there is none. */
-interface Stopping {
-  readonly withinUv: number;
-  readonly least: number;
-  readonly kept: Stop[];
-  from: number;
-  valueUv: number;
-}
-
-/** Follows stops at sample `at`; called for each sample that comes with a jump, and for each while one is open. */
-function followStop(stopping: Stopping, at: number, value: number, jumped: boolean): void {
-  const { withinUv, least, kept, from, valueUv } = stopping;
-  if (from >= 0 && Math.abs(value - valueUv) <= withinUv) return;
-  if (from >= 0 && at - from >= least) kept.push({ from, to: at, valueUv });
-  stopping.from = jumped ? at : -1;
-  stopping.valueUv = value;
 }
 
 /** The columns and runs in the making. */

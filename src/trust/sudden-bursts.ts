@@ -19,8 +19,6 @@ const WINDOW_S = 1.1;
 const BETWEEN_BEATS = 0.2;
 /** As long as any interval between beats, or nearly: it holds a QRS complex. */
 const HOLDS_BEAT_S = 1.5;
-/** Longer than a QRS complex is rough. */
-const OVER_QRS_S = 0.3;
 
 const times = (level: Float64Array, factor: number): Float64Array =>
   level.map((value) => factor * value);
@@ -46,8 +44,8 @@ function beatLevel(x: Float64Array, columnS: number, floor: number): Float64Arra
 }
 
 /**
- * A stretch whose ends are told by the columns themselves: from the first to the last of those about it that are rough for
- * longer than a QRS complex. As it was where none is.
+ * A stretch whose ends are told by the columns themselves: from half a window inside each end outwards as long as they are
+ * rough, which may take in a QRS complex that adjoins.
  */
 function sharpEnds(
   found: Excursion,
@@ -56,17 +54,14 @@ function sharpEnds(
   columnS: number,
 ): Excursion {
   const reach = Math.round(WINDOW_S / columnS / 2);
-  const run = Math.max(1, Math.round(OVER_QRS_S / columnS));
-  const first = Math.max(0, found.from - reach);
-  const last = Math.min(roughness.length, found.to + reach);
-  let [from, to, rough] = [-1, -1, 0];
-  for (let i = first; i < last; i += 1) {
-    rough = roughness[i] > leave[i] ? rough + 1 : 0;
-    if (rough < run) continue;
-    if (from < 0) from = i - run + 1;
-    to = i + 1;
-  }
-  return from < 0 ? found : { from, to };
+  const middle = Math.floor((found.from + found.to) / 2);
+  let from = Math.min(middle, found.from + reach);
+  let to = Math.max(middle + 1, found.to - reach);
+  const least = Math.max(0, found.from - reach);
+  const most = Math.min(roughness.length, found.to + reach);
+  while (from > least && roughness[from - 1] > leave[from - 1]) from -= 1;
+  while (to < most && roughness[to] > leave[to]) to += 1;
+  return { from, to };
 }
 
 /** Roughness or likeness between the beats: that of the lowest fifth of each second's columns, NaN where too few are there. */

@@ -157,6 +157,18 @@ describe('the beat detector', () => {
     expect(found.notes[0]).toContain('4 samples a second');
   });
 
+  it('says of which beats it is unsure: those that noise hides, none of a clean lead', () => {
+    const { raw } = study({}, NARROW, 100);
+    expect(detect(addNoise(raw.slice(), RATE, { seed: 5, whiteUv: 2 })).doubtful.length).toBe(0);
+    const random = testRandom(9);
+    for (let i = 100 * RATE; i < 104 * RATE; i += 1) raw[i] += 70 * random.normal();
+    const found = detect(addNoise(raw, RATE, { seed: 5, whiteUv: 2 }));
+    const times = Array.from(found.doubtful, (tick) => tick / (64 * RATE));
+    expect(times.length).toBeGreaterThan(0);
+    expect(times.every((time) => time > 99.5 && time < 104.5)).toBe(true);
+    expect(Array.from(found.doubtful).every((tick) => found.beats.ticks.includes(tick))).toBe(true);
+  });
+
   it('works in steps that report rising progress', () => {
     const { raw } = study({}, NARROW, 100);
     const steps = detectInSteps({

@@ -204,6 +204,19 @@ describe('figures withheld, with the reason', () => {
     expect(number(alone.heart_rate_bpm).value).toBeGreaterThan(80);
   });
 
+  it('a segment in which more than one beat in ten is early, whatever its class', () => {
+    const rr = sinus(310);
+    const states = ['S', 'V', 'F'].map((letter) => {
+      const letters = [...rr.keys()].map((i) => (i % 9 === 7 ? letter : 'N')).join('');
+      return figuresOf({ beats: beatsAfter(rr, 0, letters), toS: 300 }).segments[0].state;
+    });
+    expect(states).toEqual(['irregular', 'irregular', 'irregular']);
+    const few = [...rr.keys()].map((i) => (i % 15 === 7 ? 'V' : 'N')).join('');
+    expect(figuresOf({ beats: beatsAfter(rr, 0, few), toS: 300 }).segments[0].state).toBe(
+      'too-few-nn',
+    );
+  });
+
   it('percentages where over half of the phase is lost', () => {
     const beats = beatsAfter(sinus(1210));
     const blocked = [{ fromS: 500, toS: 1150 }];

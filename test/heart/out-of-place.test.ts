@@ -1,6 +1,10 @@
 import { describe, expect, it } from 'vitest';
+import { detectBeats } from '../../src/heart/detect';
 import { beatsOutOfPlace } from '../../src/heart/out-of-place';
+import { BEAT_CLASSES } from '../../src/recording/beat';
+import { heartbeatOf } from './record208';
 import { randomIntervals, randomOf, sinusIntervals, withEarlyBeats } from './rhythms';
+import { addBeats, addNoise, NARROW, planBeats } from './simulated-heart';
 
 function timesAfter(rrMs: ArrayLike<number>): number[] {
   const times = [1];
@@ -68,6 +72,35 @@ describe('a beat that contradicts the rhythm about it', () => {
   it('is none among too few beats to learn a rhythm from', () => {
     expect(flagged(timesAfter([800, 1600, 860, 800, 805]))).toEqual([]);
     expect(flagged([])).toEqual([]);
+  });
+});
+
+describe('detected beats', () => {
+  const rateHz = 250;
+  const beats = planBeats({ seed: 5, seconds: 120, meanRrS: 0.85, spread: 0.01 });
+  const detect = (shown: typeof beats, hiddenS: readonly [number, number] | null = null) => {
+    const raw = addBeats(new Float64Array(120 * rateHz), rateHz, shown, 200, NARROW);
+    const noisy = addNoise(raw, rateHz, { seed: 6, whiteUv: 2 });
+    const excluded = hiddenS ? [{ fromS: hiddenS[0], toS: hiddenS[1] }] : [];
+    return detectBeats({
+      heartbeat: heartbeatOf(noisy, rateHz),
+      rateHz,
+      ticksPerSample: 64,
+      excluded,
+    }).beats;
+  };
+  const lettersOf = ({ classes }: ReturnType<typeof detect>) =>
+    [...classes].map((one) => BEAT_CLASSES[one]).join('');
+
+  it('bear class Q after a beat that is not there, and nowhere else', () => {
+    expect(lettersOf(detect(beats))).toBe('N'.repeat(beats.length));
+    const missed = beats.filter((_, i) => i !== 60);
+    expect(lettersOf(detect(missed))).toBe(`${'N'.repeat(60)}Q${'N'.repeat(beats.length - 62)}`);
+  });
+
+  it('bear none where a spoiled span hides the missed beat', () => {
+    const atS = beats[60].timeS;
+    expect(lettersOf(detect(beats, [atS - 0.2, atS + 0.2]))).toBe('N'.repeat(beats.length - 1));
   });
 });
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { createRandom } from '../../src/numeric/random';
 import { coveredSeconds } from '../../src/recording/span';
 import type { ProposedSpan } from '../../src/trust/proposed-span';
 import { createSpoilWatch } from '../../src/trust/spoil-watch';
@@ -99,6 +100,22 @@ describe('a spoiled recording', () => {
   it('has nearly every spoiled second found for the heart', () => {
     for (const at of spoiled.filter((one) => one.target !== 'stomach'))
       expect(shareFound(spans, 'heart', at), `${at.cause} at ${at.fromS}`).toBeGreaterThan(0.9);
+  });
+
+  it('has bursts found for the heart from their first to their last quarter of a second, and no more', () => {
+    const heart = actingOn(spans, 'heart');
+    for (const { fromS, toS, target } of spoiled) {
+      if (target !== 'heart') continue;
+      const meeting = heart.filter((one) => one.fromS < toS && one.toS > fromS);
+      // A burst swells and fades within a tenth of its length, so that its very ends do no harm.
+      const swellS = 0.1 * (toS - fromS);
+      const first = Math.min(...meeting.map((one) => one.fromS));
+      const last = Math.max(...meeting.map((one) => one.toS));
+      expect(first, `from ${fromS}`).toBeGreaterThan(fromS - 0.3);
+      expect(first, `from ${fromS}`).toBeLessThan(fromS + 0.25 + swellS);
+      expect(last, `to ${toS}`).toBeLessThan(toS + 0.3);
+      expect(last, `to ${toS}`).toBeGreaterThan(toS - 0.25 - swellS);
+    }
   });
 
   it('has every movement, step and empty stretch found for the stomach', () => {
@@ -223,6 +240,25 @@ describe('a weak heartbeat', () => {
   });
 });
 
+describe('muscle that sets in at once', () => {
+  it('is spoiled from its first sample to its last, and at most a beat beside it', () => {
+    const made = { ...QUIET, lengthS: 600 };
+    const x = abdomen(made);
+    const random = createRandom(12);
+    for (const fromS of [100, 200.37, 300.71, 400.05])
+      for (let i = Math.round(fromS * 250); i < (fromS + 6.3) * 250; i += 1)
+        x[i] += 90 * random.gaussian();
+    const heart = actingOn(watched(digitised(x, 0.2), 250, 0.2), 'heart');
+    expect(heart).toHaveLength(4);
+    [100, 200.37, 300.71, 400.05].forEach((fromS, k) => {
+      expect(Math.abs(heart[k].fromS - fromS), `${k}`).toBeLessThan(0.41);
+      expect(heart[k].fromS, `${k}`).toBeLessThan(fromS + 0.05);
+      expect(Math.abs(heart[k].toS - fromS - 6.3), `${k}`).toBeLessThan(0.41);
+      expect(heart[k].toS, `${k}`).toBeGreaterThan(fromS + 6.25);
+    });
+  });
+});
+
 describe('beats of another kind', () => {
   const made = { ...QUIET, lengthS: 900, qrsUv: 60, breathUv: 30 };
 
@@ -234,7 +270,7 @@ describe('beats of another kind', () => {
       for (let i = Math.floor((atS - 0.3) * 250); i < (atS + 0.3) * 250; i += 1)
         x[i] += heightUv * Math.exp(-(((i / 250 - atS) / 0.04) ** 2));
     });
-    return told(watched(digitised(x, 0.2), 250, 0.2));
+    return told(actingOn(watched(digitised(x, 0.2), 250, 0.2), 'heart'));
   };
 
   it('are no spoil, though eight times as high as the usual ones: they come again', () => {
