@@ -18,7 +18,7 @@ const share = (epochs: readonly Epoch[]) =>
 const noise = BACKGROUNDS['1/f'](LENGTH, 77);
 const wave = (uvAt: (t: number) => number) =>
   fieldWave(LENGTH, { cpmAt: () => 3, uvAt, seed: 3, wanderCpm: 0.05, wanderShare: 0.15 }).uv;
-const UV = 20;
+const UV = 13;
 
 /** One epoch in five carries the wave, so that none has a neighbour with it; the others are the same noise. */
 const alone = (t: number) => (Math.floor(t / 240) % 5 === 2 ? UV : 0);
