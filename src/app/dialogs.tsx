@@ -4,7 +4,7 @@ import { useShell } from './app-context';
 import type { PageActs } from './command';
 import { IdentityDialog } from './identity-dialog';
 import type { DialogState } from './shell-store';
-import { FailureDialog, ReviewerDialog, SameFileDialog, TextReadingDialog } from './small-dialogs';
+import { FailureDialog, ReviewerDialog } from './small-dialogs';
 
 type Later = typeof import('./later-dialogs');
 
@@ -19,8 +19,10 @@ const KeysDialog = later('KeysDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
+const SameFileDialog = later('SameFileDialog');
 const SettingsDialog = later('SettingsDialog');
 const SignDialog = later('SignDialog');
+const TextReadingDialog = later('TextReadingDialog');
 
 /** The open dialog, and the one below a reviewer's dialog. */
 export function Dialogs({ page }: { readonly page: PageActs }) {

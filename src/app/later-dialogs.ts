@@ -1,5 +1,6 @@
 export { AboutDialog } from './about-dialog';
 export { FigureDialog } from './figure-dialog';
+export { SameFileDialog, TextReadingDialog } from './file-dialogs';
 export { GoToDialog } from './go-to-dialog';
 export { KeysDialog } from './keys-dialog';
 export { PhasesDialog } from './phases-dialog';

@@ -24,7 +24,7 @@ export const accuracy: Part = async ({ say }: Bench): Promise<readonly Measured[
       slow: study.truth.slowCpm
         ? slowWaveScore(found.slowWave, study.signals[0], leads[0], study.truth, spec.rateHz)
         : null,
-      rhythm: rhythmScore(found.epochs, study.truth),
+      rhythm: rhythmScore(found.epochs, study.truth, spec.leads[0].breathingUv),
       ratioPct: study.truth.slowCpm
         ? powerRatioError(found.findings, leads[0]['slow wave'], spec.rateHz)
         : null,

@@ -39,10 +39,8 @@ export function drawStudies(seed: number): readonly DrawnStudy[] {
   return FAMILIES.flatMap((family, f) =>
     Array.from({ length: EACH }, (_, i) => {
       const own = seed * 1000 + f * EACH + i;
-      return {
-        family,
-        spec: MAKERS[family](createDraw(own), { ...ordinary(createDraw(own)), seed: own }),
-      };
+      const base = { ...ordinary(createDraw(own)), seed: own };
+      return { family, spec: MAKERS[family](createDraw(own), base, i) };
     }),
   );
 }
@@ -154,7 +152,8 @@ const SIZES: Readonly<Record<string, (draw: Draw) => readonly [seconds: number, 
 const onLead = (spec: SimulationSpec, lead: Partial<SimulationSpec['leads'][number]>) =>
   spec.leads.map((one) => ({ ...one, ...lead }));
 
-type Maker = (draw: Draw, base: SimulationSpec) => SimulationSpec;
+/** Makes the study of a number (0 to 7) of a family. */
+type Maker = (draw: Draw, base: SimulationSpec, number: number) => SimulationSpec;
 
 const MAKERS: Readonly<Record<Family, Maker>> = {
   ordinary: (_, base) => base,
@@ -174,27 +173,34 @@ const MAKERS: Readonly<Record<Family, Maker>> = {
     slowWave: { ...mealWave(draw, draw.between(80, 150)), harmonics: [draw.between(0.35, 0.5)] },
     breathing: { ratePerMin: 12, wanderPerMin: 0.4 },
   }),
-  'changing rhythms': (draw, base) => changing(draw, base),
+  'changing rhythms': (draw, base, number) => changing(draw, base, CHANGING[number]),
 };
 
-/** Bouts of other rhythms, a sawtooth, breathing inside the band, or nothing at all beside the background. */
-function changing(draw: Draw, base: SimulationSpec): SimulationSpec {
-  const kind = draw.pick([
-    'bouts',
-    'bouts',
-    'bouts',
-    'sawtooth',
-    'slow breathing',
-    'silent',
-  ] as const);
+/** What the eight studies of the family hold: bouts of other rhythms, a sawtooth, breathing inside the band, no slow wave at all. */
+const CHANGING = [
+  'bouts',
+  'bouts',
+  'bouts',
+  'bouts',
+  'sawtooth',
+  'slow breathing beside a wave',
+  'slow breathing alone',
+  'no wave',
+] as const;
+
+function changing(
+  draw: Draw,
+  base: SimulationSpec,
+  kind: (typeof CHANGING)[number],
+): SimulationSpec {
   const wave = mealWave(draw, draw.between(100, 250));
-  if (kind === 'silent') return { ...base, slowWave: null };
+  if (kind === 'no wave') return { ...base, slowWave: null };
   if (kind === 'sawtooth')
     return { ...base, slowWave: { ...wave, harmonics: [1 / 2, 1 / 3, 1 / 4] } };
-  if (kind === 'slow breathing')
+  if (kind !== 'bouts')
     return {
       ...base,
-      slowWave: draw.chance(0.5) ? null : { ...wave, amplitudeUv: 60 },
+      slowWave: kind === 'slow breathing alone' ? null : { ...wave, amplitudeUv: 60 },
       leads: onLead(base, { breathingUv: draw.between(80, 200) }),
       breathing: { ratePerMin: draw.between(5, 8), wanderPerMin: 0.1 },
     };

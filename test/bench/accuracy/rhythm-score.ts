@@ -4,7 +4,7 @@ import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
 import type { StudyTruth } from '../../../src/simulate/simulate-study';
 import { rhythmOf } from '../../../src/stomach/rhythm-class';
 
-const { rhythmBands, epoch: EPOCH } = DEFAULT_SETTINGS;
+const { rhythmBands } = DEFAULT_SETTINGS;
 /** A frequency that moves by less inside an epoch is steady. */
 const STEADY_CPM = 0.2;
 /** The nearer a steady frequency lies to a limit, the less its class says. */
@@ -19,6 +19,9 @@ export interface RhythmScore {
   /** Kept epochs with a true change of class by over a quarter of their weight, and how many are called mixed. */
   readonly changing: number;
   readonly mixed: number;
+  /** Kept epochs in which breathing inside the search band is stronger than the wave, and how many are not decidable for it. */
+  readonly breathing: number;
+  readonly knownAsBreathing: number;
   /** Kept epochs of a study without a slow wave, and how many were given a rhythm. */
   readonly silent: number;
   readonly falseRhythm: number;
@@ -55,15 +58,40 @@ function truthOf(truth: StudyTruth, cpm: Float64Array, { fromS, toS }: Epoch): E
 
 const LIMITS = [rhythmBands.normoLowCpm, rhythmBands.normoHighCpm];
 
-/** Rhythm of the epochs against the true course of the frequency. */
-export function rhythmScore(epochs: readonly Epoch[], truth: StudyTruth): RhythmScore {
+/** True where breathing lies inside the search band and is stronger than the wave over an epoch. */
+function breathingLeads(truth: StudyTruth, breathingUv: number, { fromS, toS }: Epoch): boolean {
+  const middle = Math.round(((fromS + toS) / 2) * truth.rateHz);
+  const rate = truth.breathsPerMin?.[middle] ?? Number.POSITIVE_INFINITY;
+  return rate < rhythmBands.highCpm && breathingUv > truth.slowAmplitudeUv[0][middle];
+}
+
+/** Rhythm of the epochs of a lead against the true course of the frequency; `breathingUv` is the peak of breathing on it. */
+export function rhythmScore(
+  epochs: readonly Epoch[],
+  truth: StudyTruth,
+  breathingUv: number,
+): RhythmScore {
   const dfErrors: number[] = [];
   const what: Record<string, number> = {};
-  const count = { steady: 0, right: 0, changing: 0, mixed: 0, silent: 0, falseRhythm: 0 };
+  const count = {
+    steady: 0,
+    right: 0,
+    changing: 0,
+    mixed: 0,
+    breathing: 0,
+    knownAsBreathing: 0,
+    silent: 0,
+    falseRhythm: 0,
+  };
   const isRhythm = (one: Epoch) =>
     one.rhythm === 'brady' || one.rhythm === 'normo' || one.rhythm === 'tachy';
   for (const one of epochs) {
     if (!one.kept) continue;
+    if (breathingLeads(truth, breathingUv, one)) {
+      count.breathing += 1;
+      if (one.rhythm === 'undecided') count.knownAsBreathing += 1;
+      continue;
+    }
     if (!truth.slowCpm) {
       count.silent += 1;
       if (isRhythm(one) || one.rhythm === 'mixed') count.falseRhythm += 1;
@@ -87,5 +115,3 @@ export function rhythmScore(epochs: readonly Epoch[], truth: StudyTruth): Rhythm
   }
   return { dfErrors, ...count, what };
 }
-
-export const EPOCH_S = EPOCH.lengthS;

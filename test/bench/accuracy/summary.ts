@@ -36,7 +36,7 @@ function slowLines(
 
 function rhythmLines(name: string, scores: readonly RhythmScore[]): readonly Measured[] {
   const errors = scores.flatMap((one) => one.dfErrors);
-  const of = (key: 'steady' | 'right' | 'changing' | 'mixed' | 'silent' | 'falseRhythm') =>
+  const of = (key: Exclude<keyof RhythmScore, 'dfErrors' | 'what'>) =>
     sum(scores.map((one) => one[key]));
   const what: Record<string, number> = {};
   for (const one of scores)
@@ -76,7 +76,15 @@ function rhythmLines(name: string, scores: readonly RhythmScore[]): readonly Mea
       '5',
       `${of('silent')} epochs`,
     ),
-  ];
+    line(
+      `breathing in the band known as such: ${name}`,
+      (100 * of('knownAsBreathing')) / of('breathing'),
+      '%',
+      1,
+      '',
+      `${of('breathing')} epochs`,
+    ),
+  ].filter(({ value }) => Number.isFinite(value));
 }
 
 function ratioLines(name: string, scored: readonly Scored[]): readonly Measured[] {
