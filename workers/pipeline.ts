@@ -1,8 +1,8 @@
 import { openRecording } from '../src/decode/formats';
 import { quickKey } from '../src/decode/quick-key';
-import { type Detection, detectInSteps } from '../src/heart/detect';
+import { type Detection, type DetectionInput, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
-import { type BeatList, NO_BEATS } from '../src/recording/beat';
+import { NO_BEATS } from '../src/recording/beat';
 import { Refusal } from '../src/recording/failure';
 import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
@@ -33,6 +33,7 @@ import {
   referenceKey,
 } from './breathing-reference';
 import { inTurns, type Job } from './job';
+import { doubtedOf, judgedSpans } from './judged-spans';
 import { columnsOf } from './pipeline-columns';
 import { measureHeartbeats } from './pipeline-measures';
 import { type Computed, createResults, type Results } from './pipeline-results';
@@ -161,8 +162,7 @@ async function propose(study: Study, given: Given, job: Job): Promise<Proposal> 
     reasons: proposal.reasons,
     phases,
     phasesFrom: annotated.length > 0 ? 'annotations' : 'none',
-    spans: given.spans ? [] : spans,
-    beats: await beatsOf(study, roles.heart, given.spans ?? withIds(spans), settings, job),
+    ...(await heartOf(study, roles.heart, given, spans, job)),
   };
 }
 
@@ -191,16 +191,34 @@ function proposedSpans(study: Study, roles: Roles): readonly Omit<Span, 'id'>[] 
 const withIds = (spans: readonly Omit<Span, 'id'>[]): readonly Span[] =>
   spans.map((span, i) => ({ ...span, id: i + 1 }));
 
-async function beatsOf(
+/** The spans to propose and the beats: none of the former where some are given, else those the beats can be read in fall away. */
+async function heartOf(
   study: Study,
   lead: Lead | null,
-  spans: readonly Span[],
-  settings: Settings,
+  { spans: given, settings }: Given,
+  proposed: readonly Omit<Span, 'id'>[],
   job: Job,
-): Promise<BeatList> {
-  if (!lead) return NO_BEATS;
-  const excluded = blockedOf(study, lead, spans);
-  return (await detectionOf(study, lead, excluded, settings, job))?.beats ?? NO_BEATS;
+): Promise<Pick<Proposal, 'spans' | 'beats'>> {
+  if (given) {
+    const excluded = lead ? blockedOf(study, lead, given) : [];
+    const found = lead ? await detectionOf(study, lead, { excluded }, settings, job) : null;
+    return { spans: [], beats: found?.beats ?? NO_BEATS };
+  }
+  if (!lead) return { spans: proposed, beats: NO_BEATS };
+  const found = await detectionOf(study, lead, toJudge(study, lead, proposed), settings, job);
+  const spans = judgedSpans(proposed, doubtedOf(lead, proposed), found?.legible ?? []);
+  return { spans, beats: found?.beats ?? NO_BEATS };
+}
+
+type LookedIn = Pick<DetectionInput, 'excluded' | 'doubted'>;
+
+function toJudge(study: Study, lead: Lead, proposed: readonly Omit<Span, 'id'>[]): LookedIn {
+  const doubted = doubtedOf(lead, proposed);
+  const others = proposed.filter((span) => !doubted.includes(span));
+  return {
+    excluded: blockedOf(study, lead, withIds(others)),
+    doubted: doubted.map(({ fromS, toS }) => ({ fromS, toS })),
+  };
 }
 
 /** Stretches of a lead that carry no heartbeat: spoiled for the heart, or missing. */
@@ -215,19 +233,27 @@ function blockedOf(study: Study, lead: Lead, spans: readonly Span[]): readonly I
 async function detectionOf(
   study: Study,
   lead: Lead,
-  excluded: readonly Interval[],
+  { excluded = [], doubted = [] }: LookedIn,
   { heartRoute, heartBandHz, fractional }: Settings,
   job: Job,
 ): Promise<Detection | null> {
   const heart = study.signals.heart(lead);
   if (!heart) return null;
-  const key = JSON.stringify([leadKey(lead), excluded, heartRoute, heartBandHz, fractional]);
+  const key = JSON.stringify([
+    leadKey(lead),
+    excluded,
+    doubted,
+    heartRoute,
+    heartBandHz,
+    fractional,
+  ]);
   if (study.detection?.key !== key) {
     const signal = {
       heartbeat: heart.heartbeat,
       rateHz: heart.rateHz,
       ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
       excluded,
+      doubted,
     };
     study.detection = {
       key,
@@ -247,7 +273,7 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
     ? await detectionOf(
         study,
         heart,
-        blockedOf(study, heart, withIds(proposedSpans(study, roles))),
+        toJudge(study, heart, proposedSpans(study, roles)),
         settings,
         job,
       )

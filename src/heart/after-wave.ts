@@ -35,17 +35,16 @@ export interface Weighed extends Host {
 
 /**
  * What speaks against each place (ascending) being a beat because it may be the T wave of a likely beat before it; 0 or less.
- * The energy that usually follows a beat is learned for each shape (the median over `hosts`, as part of the beat's own
+ * The energy that usually follows a beat is learned for each shape (`courses`, as part of the beat's own
  * energy), so that a T wave is known by coming after every beat at its time and of its size, however tall it is.
  */
 export function afterWaveCosts(
   places: readonly Weighed[],
-  hosts: readonly Host[],
+  courses: ReadonlyMap<number, Float64Array>,
   energy: Energy,
   rateHz: number,
   rrAt: (sample: number) => number,
 ): Float64Array {
-  const courses = usualCourses(hosts, energy, rateHz);
   const costs = new Float64Array(places.length);
   for (let j = 0, first = 0; j < places.length; j += 1) {
     const latest = latestWaveS(rrAt(places[j].sample));
@@ -79,8 +78,8 @@ function greatestNear(course: Float64Array, at: number): number {
   return greatest;
 }
 
-/** Course of each shape with beats enough, and of all beats as -1. */
-function usualCourses(
+/** Energy after the beats of each shape with beats enough, and of all beats as -1: medians over `hosts`. */
+export function usualCourses(
   hosts: readonly Host[],
   energy: Energy,
   rateHz: number,

@@ -15,6 +15,8 @@ const ROW_HALF_S = 0.58;
 /** Beats that shapes are learned from, at most; spread over the study. */
 const MOST_BEATS = 4000;
 const MOST_SHAPES = 12;
+/** Beats compared with the shapes between two steps. */
+const ROWS_A_STEP = 200;
 /** Least likeness of a noiseless complex to the average of its shape. */
 const LEAST_LIKENESS = 0.86;
 /** A row is clear where noise lowers its likeness no more than this, or little more than usual. */
@@ -51,7 +53,10 @@ export function* learnShapes(
 ): Generator<number, Shape[]> {
   const windows = yield* readWindows(signal, beats);
   const { rateHz, bands } = signal;
-  const settled = settle(windows, distinctShapes(grow(windows), windows, rateHz, bands), rateHz);
+  const grown = yield* grow(windows);
+  const distinct = distinctShapes(grown, windows, rateHz, bands);
+  yield 1;
+  const settled = yield* settle(windows, distinct, rateHz);
   return byWorth(settled.filter(({ count }) => count >= Math.max(2, 0.001 * windows.rows.length)));
 }
 
@@ -96,12 +101,14 @@ function noiseFactor(rmsUv: number, noiseUv: number): number {
 }
 
 /** Sorts the rows into shapes in order of time: each joins the shape it is most like, or starts one. */
-function grow(windows: Rows): Growing[] {
+function* grow(windows: Rows): Generator<number, Growing[]> {
   const { rows, noise, half } = windows;
   const factors = rows.map((row, i) => noiseFactor(rms(middle(row, half)), noise[i]));
   const clear = Math.min(CLEAR_FACTOR, CLEAR_PART * median(factors));
   let shapes: Growing[] = [];
-  rows.forEach((row, i) => {
+  for (let i = 0; i < rows.length; i += 1) {
+    if (i % ROWS_A_STEP === 0) yield 1;
+    const row = rows[i];
     const factor = factors[i];
     let best: Growing | null = null;
     let bestMatch: Match = { value: 0, at: 0 };
@@ -115,12 +122,12 @@ function grow(windows: Rows): Growing[] {
     }
     if (best) {
       addRow(best, row, bestMatch.at, windows);
-      return;
+      continue;
     }
     if (shapes.length >= 2 * MOST_SHAPES)
       shapes = [...shapes].sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
     shapes.push({ sum: row.slice(), count: 1, strict: factor < clear });
-  });
+  }
   return shapes.sort((a, b) => b.count - a.count).slice(0, MOST_SHAPES);
 }
 
@@ -151,7 +158,11 @@ function offCentre(sum: Float64Array, half: number, lag: number): number {
 }
 
 /** Shares the rows out once more among the shapes, and averages those that fit. */
-function settle(windows: Rows, shapes: readonly Growing[], rateHz: number): Shape[] {
+function* settle(
+  windows: Rows,
+  shapes: readonly Growing[],
+  rateHz: number,
+): Generator<number, Shape[]> {
   const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
   const sums = shapes.map(({ strict }) => ({
     sum: new Float64Array(2 * rowHalf + 1),
@@ -159,20 +170,22 @@ function settle(windows: Rows, shapes: readonly Growing[], rateHz: number): Shap
     power: 0,
     strict,
   }));
-  rows.forEach((row, i) => {
+  for (let i = 0; i < rows.length; i += 1) {
+    if (i % ROWS_A_STEP === 0) yield 1;
+    const row = rows[i];
     const matches = shapes.map(({ sum }) => matchMiddle(row, sum, windows, windows.step));
     let best = 0;
     matches.forEach((match, k) => {
       if (match.value > matches[best].value) best = k;
     });
-    if (matches.length === 0) return;
+    if (matches.length === 0) continue;
     const factor = noiseFactor(rms(middle(row, half)), noise[i]);
     const wanted = shapes[best].strict ? STRICT_LIKENESS : LEAST_LIKENESS * factor;
-    if (matches[best].value < wanted) return;
+    if (matches[best].value < wanted) continue;
     const { at } = matchMiddle(row, shapes[best].sum, windows, 1);
     addRow(sums[best], row, at, windows);
     sums[best].power += rms(row.subarray(at, at + 2 * half + 1)) ** 2;
-  });
+  }
   return sums
     .filter(({ count }) => count > 0)
     .map((group) => ({ ...group, alike: coherence(group, half) }))

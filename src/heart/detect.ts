@@ -1,22 +1,18 @@
 import { BEAT_CLASSES, BEAT_ORIGINS, type BeatClass, type BeatList } from '../recording/beat';
 import type { Interval } from '../recording/span';
-import {
-  averageBeats,
-  dominantSign,
-  type ShapeAverage,
-  timeBeat,
-  withFiducials,
-} from './beat-average';
+import { dominantSign, type ShapeAverage, withFiducials } from './beat-average';
 import { measureBeats } from './beat-quality';
-import { classifyBeats, isOfShape, meanFrequency } from './classify';
+import { classifyBeats, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
+import { legibleStretches } from './legible';
 import { withMisfitsUnusable } from './out-of-place';
+import { decidedPlaces, expectedWrong, loudPlaces } from './place-odds';
 import { filterBand, LOWEST_RATE_HZ, qrsBands } from './qrs-bands';
 import { rhythmOf } from './rhythm-path';
 import { rhythmFromBeats } from './rhythm-track';
 import type { Candidate } from './shape-pass';
-import { crestPlace } from './sub-sample';
+import { averagesOf, timesOf } from './timed-beats';
 import { readFilled, type Samples, usableRanges } from './usable-signal';
 
 export interface DetectionInput {
@@ -28,6 +24,8 @@ export interface DetectionInput {
   readonly ticksPerSample: number;
   /** Stretches in which no beat is looked for. */
   readonly excluded?: readonly Interval[];
+  /** Stretches, ascending, in which beats count only where what is found there can be read. */
+  readonly doubted?: readonly Interval[];
 }
 
 /** The average of the beats of one shape, as a person may look at it. */
@@ -43,6 +41,8 @@ export interface AverageBeat {
 
 export interface Detection {
   readonly beats: BeatList;
+  /** Whether beats can be read in each doubted stretch; no beat of another one is given. Empty where no beat is found. */
+  readonly legible: readonly boolean[];
   /** Ticks of the beats that little but the rhythm speaks for, ascending: a person should look. */
   readonly doubtful: Float64Array;
   /** Sign of the dominant extreme of the usual beat. */
@@ -78,7 +78,7 @@ export function detectBeats(
 
 /** detectBeats in small steps, each some 10 ms; yields the part done, so that a worker can answer in between or stop. */
 export function* detectInSteps(input: DetectionInput): Generator<number, Detection> {
-  const { heartbeat, rateHz, ticksPerSample, excluded = [] } = input;
+  const { heartbeat, rateHz, ticksPerSample, excluded = [], doubted = [] } = input;
   if (!(rateHz >= LOWEST_RATE_HZ))
     return nothing(`No heartbeat can be read at ${rateHz} samples a second.`);
   const signal: HeartSignal = {
@@ -87,16 +87,34 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
     usable: usableRanges(heartbeat, rateHz, excluded),
     bands: qrsBands(rateHz),
   };
-  const found = yield* findBeats(signal);
+  const { shapes, places, beats: all } = yield* findBeats(signal);
+  yield 0.93;
+  const allS = all.map(({ sample }) => sample / rateHz);
+  const decided = decidedPlaces(all, places, rateHz, rhythmBy(all, rateHz));
+  const isLoud = loudPlaces(all, places, decided, rateHz);
+  yield 0.93;
+  const legible = legibleStretches(doubted, allS, decided);
+  const barred = doubted.filter((_, k) => !legible[k]);
+  const found = { shapes, beats: all.filter((_, i) => !isWithin(allS[i], barred)) };
   if (found.beats.length < 2) return nothing('No heartbeat was found in this lead.');
-  const averages = yield* averagesOf(signal, found);
+  const averages = yield* averagesOf(signal, found.beats);
   const sign = averages.length > 0 ? dominantSign(averages[0], rateHz) : 1;
   const timed = withFiducials(averages, sign, rateHz);
   const times = yield* timesOf(signal, found.beats, timed, sign);
+  yield 0.99;
   const classes = classesOf(signal, found);
+  yield 0.99;
   const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;
+  yield 0.99;
+  const list = listOf(times, classes, ticksPerSample);
   return {
-    beats: withMisfitsUnusable(listOf(times, classes, ticksPerSample), signal, ticksPerSample),
+    beats: withMisfitsUnusable(
+      list,
+      signal,
+      ticksPerSample,
+      (fromS, toS) => expectedWrong(decided, fromS, toS) > LEAST_DOUBT || isLoud(fromS, toS),
+    ),
+    legible,
     doubtful: Float64Array.from(
       times.filter((_, i) => found.beats[i].score < SURE_EVIDENCE),
       (time) => Math.round(time * ticksPerSample),
@@ -113,6 +131,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
 function nothing(note: string): Detection {
   return {
     beats: { ticks: new Float64Array(0), classes: new Uint8Array(0), origins: new Uint8Array(0) },
+    legible: [],
     doubtful: new Float64Array(0),
     sign: 1,
     averages: [],
@@ -125,73 +144,24 @@ function nothing(note: string): Detection {
 
 /** Log-odds from which a beat needs no rhythm to be believed: ten to one. */
 const SURE_EVIDENCE = 2.3;
-/** Beats an average is made of, at least. */
-const FEWEST = 3;
-
-/** Averages of the shapes that beats were found of, the most frequent first. */
-function* averagesOf(
-  signal: HeartSignal,
-  { beats }: FoundBeats,
-): Generator<number, Omit<ShapeAverage, 'fiducial'>[]> {
-  const groups = new Map<number, number[]>();
-  for (const beat of beats) {
-    if (!isOfShape(beat)) continue;
-    const group = groups.get(beat.shape);
-    if (group) group.push(beat.sample);
-    else groups.set(beat.shape, [beat.sample]);
-  }
-  const averages: Omit<ShapeAverage, 'fiducial'>[] = [];
-  for (const [shape, group] of groups) {
-    if (group.length >= FEWEST) averages.push(averageBeats(signal, shape, group));
-    yield 0.94;
-  }
-  return averages.sort((a, b) => b.count - a.count);
-}
-
-/** Half of the stretch in which the extreme of a beat of no known shape is looked for. */
-const ODD_HALF_S = 0.06;
-/** Samples beside it that the place between samples is read from. */
-const MARGIN = 9;
-
-/** Beats timed between two steps. */
-const BEATS_A_STEP = 500;
-
-function* timesOf(
-  signal: HeartSignal,
-  beats: readonly Candidate[],
-  averages: readonly ShapeAverage[],
-  sign: 1 | -1,
-): Generator<number, number[]> {
-  const byShape = new Map(averages.map((average) => [average.shape, average]));
-  const times: number[] = [];
-  for (const beat of beats) {
-    const average = isOfShape(beat) ? byShape.get(beat.shape) : undefined;
-    times.push(
-      average
-        ? timeBeat(signal, average, beat.sample).time
-        : extremeNear(signal, beat.sample, sign),
-    );
-    if (times.length % BEATS_A_STEP === 0) yield 0.95 + (0.04 * times.length) / beats.length;
-  }
-  return times;
-}
-
-/** Time of the extreme of a beat of no known shape, in samples. */
-function extremeNear({ samples, usable, rateHz }: HeartSignal, near: number, sign: 1 | -1): number {
-  const reach = Math.round(ODD_HALF_S * rateHz);
-  const start = near - reach - MARGIN;
-  const row = readFilled(samples, usable, start, near + reach + MARGIN + 1);
-  let at = reach + MARGIN;
-  for (let i = MARGIN; i < row.length - MARGIN; i += 1) if (sign * row[i] > sign * row[at]) at = i;
-  return start + crestPlace(row, at, sign);
-}
-
-function classesOf(signal: HeartSignal, { beats, shapes }: FoundBeats): BeatClass[] {
-  const { rateHz, bands, samples, usable } = signal;
-  const rhythm = rhythmFromBeats(
-    beats.map((beat) => beat.sample / rateHz),
+/** Beats too many and missed to be expected about a beat that is not in doubt, at most. */
+const LEAST_DOUBT = 0.03;
+/** Rhythm of beats found; of fewer than tell it one that says little. */
+const rhythmBy = (beats: readonly Candidate[], rateHz: number) =>
+  rhythmFromBeats(
+    beats.map(({ sample }) => sample / rateHz),
     () => rhythmOf(1, 0.3, 0.1),
   );
+
+const isWithin = (timeS: number, intervals: readonly Interval[]) =>
+  intervals.some(({ fromS, toS }) => timeS >= fromS && timeS < toS);
+
+function classesOf(
+  signal: HeartSignal,
+  { beats, shapes }: Pick<FoundBeats, 'beats' | 'shapes'>,
+): BeatClass[] {
+  const { rateHz, bands, samples, usable } = signal;
+  const rhythm = rhythmBy(beats, rateHz);
   const half = Math.round(0.12 * rateHz);
   const meanHz = ({ sample }: Candidate) => {
     const margin = half + bands.reach;

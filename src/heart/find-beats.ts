@@ -1,5 +1,5 @@
 import { medianInPlace } from '../numeric/statistics';
-import { afterWaveCosts, type Host } from './after-wave';
+import { afterWaveCosts, type Host, usualCourses } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
 import { firstEvidence, placeEvidence, sizeEvidence } from './evidence';
@@ -10,6 +10,8 @@ import { type Candidate, shapePass } from './shape-pass';
 export interface FoundBeats {
   readonly beats: readonly Weighed[];
   readonly shapes: readonly Shape[];
+  /** All places that were weighed, ascending; the score of each holds what it is worth as a T wave too. */
+  readonly places: readonly Weighed[];
 }
 
 /** A place with its evidence: log-odds of a beat without what the rhythm says. */
@@ -38,23 +40,29 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
   const evidence = yield* evidenceOf(candidates, levels, rateHz);
   let beats: Weighed[] = [];
+  let places: Weighed[] = [];
   for (let round = 0; round < ROUNDS; round += 1) {
     const sizes = usualSizes(
       round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
     );
     const scores = evidence.map((value, i) => value + sizeEvidence(candidates[i], sizes));
+    yield 0.92;
     const hosts = round === 0 ? likeliest(candidates, first, rateHz) : beats;
     const times = beats.map((beat) => beat.sample / rateHz);
     const rhythm = round === 0 ? () => NO_RHYTHM : rhythmFromBeats(times, fallback);
-    const path = likelyPath(candidates, scores, hosts, { energy, rateHz, rhythm }, WAVE_WEIGHT);
+    const around = { energy, rateHz, rhythm, done: 0.92 };
+    const { path, worth } = yield* likelyPath(candidates, scores, hosts, around, WAVE_WEIGHT);
     beats = path.map((i) => ({ ...candidates[i], score: scores[i] }));
     yield 0.92;
+    if (round === ROUNDS - 1)
+      places = candidates.map((place, i) => ({ ...place, score: worth[i] }));
+    yield 0.92;
   }
-  return { beats: present(beats, shapes), shapes };
+  return { beats: present(beats, shapes), shapes, places };
 }
 
 /** Places weighed between two steps. */
-const PLACES_A_STEP = 4000;
+const PLACES_A_STEP = 2000;
 
 function* evidenceOf(
   candidates: readonly Candidate[],
@@ -83,25 +91,38 @@ interface Surroundings {
   readonly energy: Energy;
   readonly rateHz: number;
   readonly rhythm: (timeS: number) => RhythmAt;
+  /** Part of the whole that is done. */
+  readonly done: number;
 }
 
-/** The likeliest beats among places, T waves of likely beats held back. */
-function likelyPath(
+/** The likeliest beats among places, T waves of likely beats held back; yields `done` in between. */
+function* likelyPath(
   places: readonly (Host & { readonly energyUv: number })[],
   scores: readonly number[],
   hosts: readonly Host[],
-  { energy, rateHz, rhythm }: Surroundings,
+  { energy, rateHz, rhythm, done }: Surroundings,
   weight: number,
-): number[] {
+): Generator<number, { readonly path: number[]; readonly worth: readonly number[] }> {
   const weighed = places.map((place, i) => ({ ...place, score: scores[i] }));
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
-  const costs = afterWaveCosts(weighed, hosts, energy, rateHz, rrAt);
+  yield done;
+  const courses = usualCourses(hosts, energy, rateHz);
+  yield done;
+  const costs = afterWaveCosts(weighed, courses, energy, rateHz, rrAt);
+  yield done;
   const times = places.map((place) => place.sample / rateHz);
-  return bestPath(
-    times,
-    costs.map((cost, i) => weight * cost + scores[i]),
-    rhythm,
-  );
+  const worth = scores.map((score, i) => score + weight * costs[i]);
+  const path = yield* quietly(bestPath(times, worth, rhythm), done);
+  return { path, worth };
+}
+
+/** Runs a pass that says nothing of its progress. */
+function* quietly<T>(pass: Generator<void, T>, done: number): Generator<number, T> {
+  for (;;) {
+    const step = pass.next();
+    if (step.done) return step.value;
+    yield done;
+  }
 }
 
 function* firstBeats(
@@ -116,17 +137,19 @@ function* firstBeats(
     const s = Math.min(levels.beat.length - 1, Math.floor(sample / rateHz));
     return firstEvidence(energyUv, levels.beat[s], levels.noise[s]);
   });
+  yield 0.3;
   const places = crests.map((crest) => ({ ...crest, shape: 0 }));
   let rhythm = start;
-  let path: number[] = bestPath(times, scores, rhythm);
+  let path: number[] = yield* quietly(bestPath(times, scores, rhythm), 0.3);
   for (let round = 0; round < 2; round += 1) {
     const hosts = path.map((i) => places[i]);
     rhythm = rhythmFromBeats(
       path.map((i) => times[i]),
       rhythm,
     );
-    path = likelyPath(places, scores, hosts, { energy, rateHz, rhythm }, 1);
     yield 0.3;
+    const around = { energy, rateHz, rhythm, done: 0.3 };
+    path = (yield* likelyPath(places, scores, hosts, around, 1)).path;
   }
   return path.map((i) => crests[i].sample);
 }

@@ -163,17 +163,27 @@ function brokenIntervals(times: Float64Array, ranges: readonly SampleRange[]): U
   );
 }
 
-/** The beats with those of class N that contradict the rhythm about them put in class Q; `usable` in samples. */
+/** Beside a beat so much of what lies about it belongs to the beat itself. */
+const BESIDE_S = 0.1;
+
+/**
+ * The beats with those of class N that contradict the rhythm about them put in class Q, as far as they are in doubt: a pause
+ * in which nothing lies that might be a beat is one, and so is an early beat that is plain to see. `isDoubtful` says whether
+ * a beat too many or missed is to be feared between two times (s); `usable` in samples.
+ */
 export function withMisfitsUnusable(
   beats: BeatList,
   { usable, rateHz }: Pick<HeartSignal, 'usable' | 'rateHz'>,
   ticksPerSample: number,
+  isDoubtful: (fromS: number, toS: number) => boolean,
 ): BeatList {
   const samples = beats.ticks.map((tick) => tick / ticksPerSample);
-  const flags = beatsOutOfPlace(
-    samples.map((sample) => sample / rateHz),
-    beats.classes.map((one) => (one === NORMAL ? 1 : 0)),
-    brokenIntervals(samples, usable),
-  );
+  const timesS = samples.map((sample) => sample / rateHz);
+  const judged = beats.classes.map((one, i) => {
+    const fromS = (timesS[i - 1] ?? 0) + BESIDE_S;
+    const toS = (timesS[i + 1] ?? timesS[i] + 1) - BESIDE_S;
+    return one === NORMAL && isDoubtful(fromS, toS) ? 1 : 0;
+  });
+  const flags = beatsOutOfPlace(timesS, judged, brokenIntervals(samples, usable));
   return { ...beats, classes: beats.classes.map((one, i) => (flags[i] === 1 ? UNUSABLE : one)) };
 }

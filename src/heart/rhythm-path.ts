@@ -56,16 +56,19 @@ export function intervalFit(rrS: number, rhythm: RhythmAt, beforeS = rhythm.rrS)
   return rrS < DOUBTFUL_S ? fit - 40 * (DOUBTFUL_S - rrS) : fit;
 }
 
+/** Candidates between two rests. */
+const A_STEP = 2000;
+
 /**
  * The beats among candidates: the sequence with the greatest sum of each beat's own evidence and of how each interval
  * fits the rhythm, found by dynamic programming (Bellman 1957). Times in s, ascending; scores positive for and negative
- * against a beat. Returns indexes into the candidates, ascending. Linear in their number.
+ * against a beat. Returns indexes into the candidates, ascending. Linear in their number; takes a rest now and then.
  */
-export function bestPath(
+export function* bestPath(
   timesS: ArrayLike<number>,
   scores: ArrayLike<number>,
   rhythmAt: (timeS: number) => RhythmAt,
-): number[] {
+): Generator<void, number[]> {
   const count = timesS.length;
   const total = new Float64Array(count);
   const previous = new Int32Array(count).fill(-1);
@@ -95,6 +98,7 @@ export function bestPath(
     }
     total[j] = best + scores[j];
     previous[j] = from;
+    if (j % A_STEP === A_STEP - 1) yield;
   }
   let end = -1;
   for (let j = 0; j < count; j += 1) if (total[j] > (end < 0 ? 0 : total[end])) end = j;

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { detectBeats } from '../../src/heart/detect';
-import { beatsOutOfPlace } from '../../src/heart/out-of-place';
+import { beatsOutOfPlace, withMisfitsUnusable } from '../../src/heart/out-of-place';
 import { BEAT_CLASSES } from '../../src/recording/beat';
 import { heartbeatOf } from './record208';
 import { randomIntervals, randomOf, sinusIntervals, withEarlyBeats } from './rhythms';
@@ -92,10 +92,23 @@ describe('detected beats', () => {
   const lettersOf = ({ classes }: ReturnType<typeof detect>) =>
     [...classes].map((one) => BEAT_CLASSES[one]).join('');
 
-  it('bear class Q after a beat that is not there, and nowhere else', () => {
+  it('bear class N throughout, also after a pause in which nothing lies', () => {
     expect(lettersOf(detect(beats))).toBe('N'.repeat(beats.length));
     const missed = beats.filter((_, i) => i !== 60);
-    expect(lettersOf(detect(missed))).toBe(`${'N'.repeat(60)}Q${'N'.repeat(beats.length - 62)}`);
+    expect(lettersOf(detect(missed))).toBe('N'.repeat(missed.length));
+  });
+
+  it('bear class Q after a pause in which a beat may have been missed, and nowhere else', () => {
+    const list = detect(beats.filter((_, i) => i !== 60));
+    const usable = [{ from: 0, to: 120 * rateHz }];
+    const missedAtS = beats[60].timeS;
+    const judged = withMisfitsUnusable(
+      list,
+      { usable, rateHz },
+      64,
+      (fromS, toS) => fromS < missedAtS && toS > missedAtS,
+    );
+    expect(lettersOf(judged)).toBe(`${'N'.repeat(60)}Q${'N'.repeat(beats.length - 62)}`);
   });
 
   it('bear none where a spoiled span hides the missed beat', () => {

@@ -2,8 +2,13 @@ import { describe, expect, it } from 'vitest';
 import { bestPath, intervalFit, rhythmOf } from '../../src/heart/rhythm-path';
 
 const steady = rhythmOf(0.8, 0.06, 0.05);
-const path = (times: readonly number[], scores: readonly number[]) =>
-  bestPath(times, scores, () => steady);
+function path(times: readonly number[], scores: readonly number[]): number[] {
+  const steps = bestPath(times, scores, () => steady);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
 
 describe('the path of beats through candidates', () => {
   it('takes a doubtful candidate in rhythm and leaves one out of rhythm', () => {

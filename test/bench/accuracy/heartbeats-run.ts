@@ -1,13 +1,16 @@
 import { detectBeats } from '../../../src/heart/detect';
 import { createRandom } from '../../../src/numeric/random';
+import { leadKey } from '../../../src/recording/lead';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
 import { type Interval, joinIntervals } from '../../../src/recording/span';
 import { createSeparation } from '../../../src/separate/separation';
 import { addEcgNoise } from '../../../src/simulate/ecg-noise';
 import { createSpoilWatch } from '../../../src/trust/spoil-watch';
 import { TICKS_PER_SAMPLE } from '../../../src/units/ticks';
+import { doubtedOf, judgedSpans } from '../../../workers/judged-spans';
 
 const PIECE = 16384;
+const LEAD = { kind: 'channel', channel: 0 } as const;
 
 export interface LeadToScore {
   /** In uV. */
@@ -76,39 +79,44 @@ export function atLevel(
 
 export interface Found {
   readonly timesS: readonly number[];
-  /** All spans for the heart that the program proposes. */
+  /** The spans for the heart that the program proposes in the end. */
   readonly proposed: readonly Interval[];
 }
 
-/**
- * Beats as the program finds them: separation by the default route, then detection, with only those of its own spoiled spans
- * left out where the lead carries nothing, so that detector and spans can be judged apart.
- */
+/** Beats as the program finds them: separation by the default route, its own spoiled spans, then detection. */
 export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): Found {
   const separation = createSeparation({
-    lead: '1',
+    lead: leadKey(LEAD),
     rateHz,
     sampleCount: signal.length,
     settings: DEFAULT_SETTINGS,
     wants: { slow: false, heart: true },
   });
-  const watch = createSpoilWatch({ lead: '1', rateHz, railsUv: [-railUv, railUv], stepUv });
+  const watch = createSpoilWatch({
+    lead: leadKey(LEAD),
+    rateHz,
+    railsUv: [-railUv, railUv],
+    stepUv,
+  });
   for (let from = 0; from < signal.length; from += PIECE) {
     separation.push(signal.subarray(from, from + PIECE));
     watch.push(signal.subarray(from, from + PIECE));
   }
   const { heart } = separation.finish();
   if (!heart) throw new Error('the heartbeat was wanted');
-  const spans = watch.finish().filter(({ target }) => target !== 'stomach');
-  const empty = spans.filter(({ cause }) => cause === 'rail' || cause === 'flat');
-  const { beats } = detectBeats({
+  const spans = watch.finish();
+  const doubted = doubtedOf(LEAD, spans);
+  const empty = spans.filter((span) => span.target !== 'stomach' && !doubted.includes(span));
+  const { beats, legible } = detectBeats({
     heartbeat: heart.heartbeat,
     rateHz: heart.rateHz,
     ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
     excluded: joinIntervals(empty),
+    doubted,
   });
+  const kept = judgedSpans(spans, doubted, legible).filter(({ target }) => target !== 'stomach');
   return {
     timesS: Array.from(beats.ticks, (tick) => tick / (TICKS_PER_SAMPLE * rateHz)),
-    proposed: joinIntervals(spans),
+    proposed: joinIntervals(kept),
   };
 }

@@ -11,11 +11,11 @@ import { type DrawnRecord, drawRecord } from './heartbeats-records';
 import { atLevel, findAsProgram, LEVELS, type Level, levelWords } from './heartbeats-run';
 
 const PART = 'heartbeats';
-const SECONDS = 600;
-/** Records the detector's weights were set on, and those only looked at to check them. */
+const SECONDS = 400;
+/** Some of the records the detector's weights were set on, and some of those only looked at to check them: two of each rhythm. */
 const SETS = [
-  { name: 'set on', seeds: [1, 48] },
-  { name: 'held out', seeds: [1001, 1048] },
+  { name: 'set on', seeds: [1, 24] },
+  { name: 'held out', seeds: [1001, 1024] },
 ] as const;
 const AIMS: ReadonlyMap<Level, string> = new Map([
   [null, '99.75/99.8'],
@@ -120,8 +120,8 @@ function familyLines(scored: readonly Scored[]): string[] {
 
 /**
  * Beats found in invented surface ECGs of known beats, as recorded and mixed into an abdominal lead at three heights, scored
- * by ANSI/AAMI EC57 over the whole record. Only spans where the lead carries nothing are left out; how many true beats lie
- * in spans the program would propose besides is a line of its own.
+ * by ANSI/AAMI EC57 over the whole record, spans the program proposes itself included; how many true beats lie in those is a
+ * line of its own.
  */
 export const heartbeats: Part = async ({ say }: Bench): Promise<readonly Measured[]> => {
   const lines: Measured[] = [];
