@@ -44,7 +44,8 @@ const SHAPELESS_COST = 3;
 
 /**
  * Weights of what is known of a place in the log-odds that it is a beat, by logistic regression (Cox 1958) on 48 invented
- * records at four heights; the part a rhythm has in it is left to the path. Above `from` (up to `to`) each acts as a line.
+ * records at four heights (test/reference/heart-evidence.py); the part a rhythm has in it is left to the path. Above `from` (up to
+ * `to`) each acts as a line.
  */
 const CONSTANT = -2.8;
 /** Unlikeness: logarithm of the part of the window's amplitude that the shape leaves over. */
@@ -65,10 +66,10 @@ const ENERGY = { weight: 1.25, from: -1.2 };
 const MORE_ENERGY = -3.2;
 
 /** Where noise leaves a usual beat less like its shape than `seen`, only what is as like as `sure` is believed. */
-const UNSEEN = { weight: -8, seen: 0.6, unsure: 0.6, sure: 0.9 };
+const UNSEEN = { weight: -6, seen: 0.6, unsure: 0.6, sure: 0.9 };
 
 /** Noise makes a beat less like its shape: what it takes from a usual beat's likeness is given back by this, up to so much. */
-const NOISY = { weight: 5, most: 0.25 };
+const NOISY = { weight: 6, most: 0.25 };
 
 /** What speaks against a place where noise hides a usual beat; 0 where it does not, or where the shape is plain all the same. */
 function unseen({ bestLikeness, likeness }: Candidate): number {
