@@ -11,6 +11,7 @@ import {
   putMessagesAway,
   RECORD_SECONDS,
   reviewAs,
+  STEADY,
   settled,
   told,
   undoName,
@@ -21,7 +22,7 @@ import { intervalsByHand, type Row, rmssdByHand, roundedTo, tables } from './sup
 let page: Page;
 test.beforeAll(async ({ browser }) => {
   page = await freshPage(browser);
-  await openStudy(page);
+  await openStudy(page, STEADY);
   await reviewAs(page);
 });
 test.afterAll(() => page.context().close());

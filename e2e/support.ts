@@ -12,6 +12,8 @@ import { FIGURES } from '../src/recording/figure-catalogue';
 export const RECORD_FOLDER = fileURLToPath(new URL('../test/fixtures/record208/', import.meta.url));
 /** Five minutes, E1-E3 in uV at 360 Hz, one phase `fasting` over its whole length. */
 export const RECORD = `${RECORD_FOLDER}record208-abdomen.edf`;
+/** Five invented minutes in sinus rhythm: variability figures stand on them. */
+export const STEADY = `${RECORD_FOLDER.replace('record208', 'steady')}steady.edf`;
 export const RECORD_CODE = 'MITDB-208';
 export const RECORD_SECONDS = 300;
 

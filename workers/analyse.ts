@@ -90,6 +90,12 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   await writeFile(join(folder, 'separated.edf'), Buffer.concat(separated));
 }
 
+/** What made the slow wave, in the 80 characters of a header's field. */
+const slowPrefilter = ({ slowRoute, slowBandCpm, slowGain, breathingOut }: Settings): string =>
+  slowRoute === 'band'
+    ? `slow wave, band ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
+    : `slow wave, ${slowRoute}`;
+
 /** The separated signals of the analysed state, as an EDF+ file. */
 function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionState) {
   const { roles, settings } = state;
@@ -103,7 +109,7 @@ function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionSt
       const drawn = pipeline.slowWave(lead);
       if (!drawn) return [];
       const { rateHz, slowWave } = drawn;
-      const prefilter = `slow wave, route ${settings.slowRoute}`;
+      const prefilter = slowPrefilter(settings);
       return [{ label: `slow ${leadKey(lead)}`, rateHz, samples: slowWave, prefilter }];
     }),
     heart:

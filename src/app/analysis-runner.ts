@@ -118,7 +118,8 @@ export function createAnalysisRunner({
     if (visit !== started) return follow();
     if (reply.ok) {
       takeAnalysis(analysis, reply.value);
-      if (anew) analysis.setState((before) => ({ signalVersion: before.signalVersion + 1 }));
+      if (anew || reply.value.separation !== null)
+        analysis.setState((before) => ({ signalVersion: before.signalVersion + 1 }));
       return follow();
     }
     sent = null;

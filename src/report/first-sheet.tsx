@@ -91,7 +91,7 @@ function RhythmOverTime({
       {pictures.waves ? (
         <Picture
           picture={pictures.waves}
-          caption="Slow wave in the minutes that are barred above, all at one scale."
+          caption="Slow wave in the minutes that are barred above, all at one scale. Dotted where spoiled: foretold from the minutes beside it, not recorded."
         />
       ) : (
         <p>The slow wave is drawn once the study’s file is at hand.</p>

@@ -5,8 +5,9 @@ import { nanRuns } from '../numeric/nan-runs';
 import { createOverlapSave } from '../numeric/overlap-save';
 import type { HeartOutput } from '../recording/separated';
 import type { Settings, SlowGain } from '../recording/settings';
+import type { Interval } from '../recording/span';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
-import type { Seconds } from '../units/time';
+import { formatClock } from '../units/time';
 import { withoutBreathing } from './breathing-out';
 import { bridged } from './bridge';
 import { createChunks } from './chunks';
@@ -103,7 +104,7 @@ interface Bridged {
   /** The same with foretold samples before and after it. */
   readonly whole: Float64Array;
   readonly spectra: LeadSpectra;
-  readonly breathingTakenOutS: Seconds;
+  readonly breathingOut: readonly Interval[];
 }
 
 const marginOf = (rateHz: Hertz) => Math.round(MARGIN_S * rateHz);
@@ -119,13 +120,13 @@ function bridgedLead(
   const margin = marginOf(rateHz);
   const whole = bridged(recorded, kept, rateHz, first, margin);
   const inside = whole.subarray(margin, margin + recorded.length);
-  const { lead, takenOutS } = breathing
+  const { lead, takenOut } = breathing
     ? withoutBreathing(inside, breathing, rateHz)
-    : { lead: inside, takenOutS: 0 };
+    : { lead: inside, takenOut: [] };
   whole.set(lead, margin);
-  const untouched = takenOutS === 0 && !kept.includes(0);
+  const untouched = takenOut.length === 0 && !kept.includes(0);
   const spectra = untouched ? first : leadSpectra(lead, kept, rateHz, 'bridged');
-  return spectra && { lead, whole, spectra, breathingTakenOutS: takenOutS };
+  return spectra && { lead, whole, spectra, breathingOut: takenOut };
 }
 
 /**
@@ -184,7 +185,7 @@ function drawBand(
     derivativeLeadSAt: () => 0,
     notes: [
       drawnWords(settings, Math.round(taps.length / rateHz), ready !== null),
-      ...breathingWords(ready?.breathingTakenOutS ?? 0),
+      ...breathingWords(ready?.breathingOut ?? []),
     ],
   };
 }
@@ -195,12 +196,16 @@ function drawnWords({ slowBandCpm, slowGain }: Settings, lengthS: number, fitted
     slowGain === 'fitted' && fitted
       ? ", frequencies weighed by how far they stand out of the lead's own background"
       : '';
-  return `Slow wave by a zero-phase band-pass of ${low}-${high} cpm (-6 dB), ${lengthS} s long${weighed}; spectra are those of the lead before it.`;
+  return `Slow wave by a zero-phase band-pass of ${low}-${high} cpm${weighed === '' ? ' (-6 dB)' : ''}, ${lengthS} s long${weighed}; spectra are those of the lead before it.`;
 }
 
-const breathingWords = (takenOutS: Seconds): readonly string[] =>
-  takenOutS > 0
-    ? [`Breathing is taken out of the drawn wave over ${Math.round(takenOutS / 60)} min.`]
+const breathingWords = (takenOut: readonly Interval[]): readonly string[] =>
+  takenOut.length > 0
+    ? [
+        `Breathing is taken out of the drawn wave in ${takenOut
+          .map(({ fromS, toS }) => `${formatClock(fromS)}-${formatClock(toS)}`)
+          .join(', ')}.`,
+      ]
     : [];
 
 /** The heartbeat's filter at work; null where the rate leaves no band. */

@@ -1,9 +1,10 @@
 import { analyticSignal } from '../numeric/analytic-signal';
 import { choleskySolve } from '../numeric/cholesky';
 import { bandPassTaps, convolveSame } from '../numeric/fir';
+import { median } from '../numeric/statistics';
 import { hannPeriodic } from '../numeric/windows';
+import { type Interval, joinIntervals } from '../recording/span';
 import { cpmToHz, type Hertz } from '../units/rate';
-import type { Seconds } from '../units/time';
 
 /** Breathing is looked for between these; slower than four a minute is not parted from the slow wave by any reference. */
 const BREATHING_CPM = [4, 30] as const;
@@ -14,6 +15,11 @@ const WINDOW_S = 60;
 /** What windows a minute away foretell must be there by at least this part, over nine windows, to be taken out. */
 const LEAST_REAL = 0.5;
 const NEIGHBOURS = 4;
+/** Where it is there in this part of the windows, it is taken out in all, so that it does not come and go. */
+const MOSTLY = 0.7;
+/** Windows to each side over which shares are usual, and how far from the usual they may lie, as a part of it. */
+const USUAL_WINDOWS = 20;
+const FARTHEST = 0.5;
 const RIDGE = 1e-6;
 /** Part of a window over which the reference must be known. */
 const LEAST_KNOWN = 0.9;
@@ -21,8 +27,8 @@ const LEAST_KNOWN = 0.9;
 /** A lead with its breathing taken out where that is real. */
 export interface WithoutBreathing {
   readonly lead: Float64Array;
-  /** Time over which something was taken out. */
-  readonly takenOutS: Seconds;
+  /** Where something was taken out. */
+  readonly takenOut: readonly Interval[];
 }
 
 /** Reference and its quarter-cycle neighbour, and the same for its second harmonic, of like size: the shapes breathing may take. */
@@ -110,7 +116,7 @@ function realWindows(windows: readonly (Products | undefined)[]): boolean[] {
   const tests = windows.map((one, w) =>
     one ? explained(one, sharesOver([windows[w - 2], windows[w + 2]])) : { explained: 0, size: 0 },
   );
-  return tests.map((test, w) => {
+  const real = tests.map((test, w) => {
     if (test.size === 0) return false;
     let [sum, size] = [0, 0];
     for (const near of tests.slice(Math.max(0, w - NEIGHBOURS), w + NEIGHBOURS + 1)) {
@@ -118,6 +124,28 @@ function realWindows(windows: readonly (Products | undefined)[]): boolean[] {
       size += near.size;
     }
     return sum > LEAST_REAL * size;
+  });
+  const known = tests.filter(({ size }) => size > 0).length;
+  const mostly = real.filter((one) => one).length >= MOSTLY * known;
+  return mostly ? tests.map(({ size }) => size > 0) : real;
+}
+
+/**
+ * Shares of each window, held to what is usual over some twenty minutes about it: where they lie further from that than half
+ * of its size, the usual ones are taken. How breathing reaches a lead changes slowly; what comes at the breathing rate for a
+ * few minutes is not breathing.
+ */
+function heldShares(windows: readonly (Products | undefined)[]): (Float64Array | null)[] {
+  const own = windows.map((one, w) =>
+    one ? sharesOver([windows[w - 1], one, windows[w + 1]]) : null,
+  );
+  return own.map((shares, w) => {
+    if (!shares) return null;
+    const near = own.slice(Math.max(0, w - USUAL_WINDOWS), w + USUAL_WINDOWS + 1);
+    const there = near.filter((one) => one !== null);
+    const usual = shares.map((_, a) => median(there.map((one) => one[a])));
+    const apart = Math.hypot(shares[0] - usual[0], shares[1] - usual[1]);
+    return apart > FARTHEST * Math.hypot(usual[0], usual[1]) ? usual : shares;
   });
 }
 
@@ -149,7 +177,7 @@ export function withoutBreathing(
 ): WithoutBreathing {
   const length = Math.round(WINDOW_S * rateHz);
   const step = Math.floor(length / 2);
-  if (lead.length < 4 * length) return { lead, takenOutS: 0 };
+  if (lead.length < 4 * length) return { lead, takenOut: [] };
   const known = reference.map((value) => (Number.isNaN(value) ? 0 : value));
   const shapes = shapesOf(inBand(known, rateHz));
   const band = inBand(lead, rateHz);
@@ -161,18 +189,20 @@ export function withoutBreathing(
     windows.push(isKnown ? productsOf(band, shapes, taper, from) : undefined);
   }
   const real = realWindows(windows);
+  const held = heldShares(windows);
   const out = lead.slice();
-  let takenOut = 0;
+  const takenOut: Interval[] = [];
   windows.forEach((one, w) => {
-    if (!one || !real[w]) return;
+    const shares = held[w];
+    if (!one || !shares || !real[w]) return;
     const { from } = one;
-    const shares = sharesOver([windows[w - 1], windows[w], windows[w + 1]]);
     for (let i = 0; i < taper.length; i += 1) {
       let breath = 0;
       for (let a = 0; a < shares.length; a += 1) breath += shares[a] * shapes[a][from + i];
       out[from + i] -= taper[i] * breath;
     }
-    takenOut += step / rateHz;
+    const middleS = (from + step) / rateHz;
+    takenOut.push({ fromS: middleS - WINDOW_S / 4, toS: middleS + WINDOW_S / 4 });
   });
-  return { lead: out, takenOutS: takenOut };
+  return { lead: out, takenOut: joinIntervals(takenOut) };
 }

@@ -8,6 +8,8 @@ import type { LeadSpectra } from './lead-spectra';
 const SIDE_S = 60;
 /** Kept pieces shorter than this between two stretches are bridged with them: too short to set a level by. */
 const LEAST_PIECE_S = 8;
+/** What is spoiled reaches so far into what is not: the low-pass before 4 Hz rings on it. */
+const SMEAR_S = 1.5;
 /** Samples a second that the sides are read at. */
 const READ_HZ = 1;
 /** Share of the lead's variance that counts as unforeseeable, so that the equations stay well set. */
@@ -26,17 +28,21 @@ export function autocovariance({ mean, size }: LeadSpectra, rateHz: Hertz): Floa
   return Float64Array.from({ length: size / 2 }, (_, lag) => out[2 * lag]);
 }
 
-/** Stretches of missing samples, those joined that only a short piece parts. */
-function stretchesOf(kept: Uint8Array, leastPiece: number): SampleRun[] {
+/** Stretches of missing samples, each longer by `smear` at both ends (not those that end the lead), those joined that only a short piece parts. */
+function stretchesOf(kept: Uint8Array, leastPiece: number, smear: number): SampleRun[] {
   const runs: { from: number; to: number }[] = [];
   let from = -1;
   for (let i = 0; i <= kept.length; i += 1) {
     const missing = i < kept.length && kept[i] === 0;
     if (missing && from < 0) from = i;
     if (missing || from < 0) continue;
+    const run = {
+      from: Math.max(0, from - (i < kept.length ? smear : 0)),
+      to: Math.min(kept.length, i + (from > 0 ? smear : 0)),
+    };
     const last = runs.at(-1);
-    if (last && from - last.to < leastPiece) last.to = i;
-    else runs.push({ from, to: i });
+    if (last && run.from - last.to < leastPiece) last.to = run.to;
+    else runs.push(run);
     from = -1;
   }
   const first = runs.at(0);
@@ -143,7 +149,11 @@ export function bridged(
   const covariance = autocovariance(spectra, rateHz);
   const every = Math.max(1, Math.round(rateHz / READ_HZ));
   const most = Math.round((SIDE_S * rateHz) / every);
-  const stretches = stretchesOf(mask, Math.round(LEAST_PIECE_S * rateHz));
+  const stretches = stretchesOf(
+    mask,
+    Math.round(LEAST_PIECE_S * rateHz),
+    Math.round(SMEAR_S * rateHz),
+  );
   const isMissing = new Uint8Array(length);
   for (const { from, to } of stretches) isMissing.fill(1, from, to);
   stretches.forEach((stretch) => {

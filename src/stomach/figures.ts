@@ -74,7 +74,7 @@ function flagMarks(epochs: readonly Epoch[]): string[] {
   });
 }
 
-const NO_RHYTHM = 'no kept epoch has a rhythm';
+const NO_RHYTHM = 'no kept epoch has a rhythm that can be told';
 const TOO_FEW = 'fewer than two epochs have a rhythm';
 const NOTHING_KEPT = 'no epoch is kept';
 

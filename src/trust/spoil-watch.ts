@@ -42,6 +42,9 @@ const HEART_PAD_S = 0.15;
 const HEART_NEAR_S = 1.2;
 /** Columns this near to a gap, flat line or rail do not count for what else is found. */
 const NEAR_S = 0.5;
+/** At the edge of a rail this long the low-pass before 4 Hz rings for so long. */
+const LONG_RAIL_S = 0.5;
+const RAIL_RINGS_S = 2;
 
 interface Found {
   readonly target: SpanTarget;
@@ -79,7 +82,12 @@ function emptyStretches(columns: BaseColumns, options: SpoilWatchOptions): reado
   const { rateHz, stepUv } = options;
   const gaps = runIntervals(columns.missing, rateHz);
   const railed = [...columns.railed, ...flatTops(columns)];
-  const rails = paddedAndJoined(runIntervals(railed, rateHz), NEAR_S, 2);
+  const found = runIntervals(railed, rateHz);
+  const long = found.filter(({ fromS, toS }) => toS - fromS >= LONG_RAIL_S);
+  const rails = joinIntervals([
+    ...paddedAndJoined(found, NEAR_S, 2),
+    ...paddedAndJoined(long, RAIL_RINGS_S, 2),
+  ]);
   const flats = without(joinIntervals(flatLines(columns, rateHz, stepUv)), rails);
   return [
     { target: 'both', cause: 'gap', intervals: gaps },

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { createRandom } from '../../src/numeric/random';
+import { coveredSeconds, type Interval } from '../../src/recording/span';
 import { withoutBreathing } from '../../src/separate/breathing-out';
 
 const RATE_HZ = 4;
@@ -32,6 +33,7 @@ const noise = (() => {
   const random = createRandom(3);
   return wave.map(() => 8 * random.gaussian());
 })();
+const lengthOf = (stretches: readonly Interval[]) => coveredSeconds(stretches, 0, SECONDS);
 const power = (x: Float64Array) =>
   x.subarray(400, LENGTH - 400).reduce((sum, one) => sum + one * one, 0) / (LENGTH - 800);
 
@@ -39,18 +41,18 @@ describe('breathing taken out by a reference', () => {
   it('of another shape and later leaves a hundredth of its power, and the slow wave', () => {
     const { belt, inLead } = breathing(6.5, 1);
     const lead = wave.map((uv, i) => uv + noise[i] + 120 * inLead[i]);
-    const { lead: out, takenOutS } = withoutBreathing(lead, belt, RATE_HZ);
+    const { lead: out, takenOut } = withoutBreathing(lead, belt, RATE_HZ);
     const left = out.map((uv, i) => uv - wave[i] - noise[i]);
     expect(power(left) / power(inLead.map((one) => 120 * one))).toBeLessThan(0.01);
-    expect(takenOutS).toBeGreaterThan(0.95 * SECONDS);
+    expect(lengthOf(takenOut)).toBeGreaterThan(0.95 * SECONDS);
   });
 
   it('changes nothing where the lead holds no breathing', () => {
     const { belt } = breathing(6.5, 1);
     const lead = wave.map((uv, i) => uv + noise[i]);
-    const { lead: out, takenOutS } = withoutBreathing(lead, belt, RATE_HZ);
+    const { lead: out, takenOut } = withoutBreathing(lead, belt, RATE_HZ);
     expect(power(out.map((uv, i) => uv - lead[i]))).toBeLessThan(0.005 * power(lead));
-    expect(takenOutS).toBeLessThan(0.25 * SECONDS);
+    expect(lengthOf(takenOut)).toBeLessThan(0.25 * SECONDS);
   });
 
   it('leaves breathing in where the reference is that of somebody else', () => {
@@ -65,14 +67,29 @@ describe('breathing taken out by a reference', () => {
     const { belt, inLead } = breathing(6.5, 1);
     const lead = wave.map((uv, i) => uv + 120 * inLead[i]);
     const half = belt.map((one, i) => (i < LENGTH / 2 ? one : Number.NaN));
-    const { lead: out, takenOutS } = withoutBreathing(lead, half, RATE_HZ);
+    const { lead: out, takenOut } = withoutBreathing(lead, half, RATE_HZ);
     expect(out.slice(LENGTH / 2 + 400)).toEqual(lead.slice(LENGTH / 2 + 400));
-    expect(takenOutS).toBeGreaterThan(0.4 * SECONDS);
-    expect(takenOutS).toBeLessThan(0.6 * SECONDS);
+    expect(lengthOf(takenOut)).toBeGreaterThan(0.4 * SECONDS);
+    expect(lengthOf(takenOut)).toBeLessThan(0.6 * SECONDS);
+  });
+
+  it('does not take a bout of the stomach at the breathing rate for breathing', () => {
+    const { belt, inLead } = breathing(6.1, 4, 0);
+    const bout = wave.map((_, i) =>
+      i > 600 * RATE_HZ && i < 1020 * RATE_HZ
+        ? 80 * Math.sin((2 * Math.PI * 6.1 * i) / 60 / RATE_HZ)
+        : 0,
+    );
+    const lead = wave.map((uv, i) => uv + noise[i] + 25 * inLead[i] + bout[i]);
+    const { lead: out } = withoutBreathing(lead, belt, RATE_HZ);
+    const inside = (x: Float64Array) => x.slice(660 * RATE_HZ, 960 * RATE_HZ);
+    const left = inside(out.map((uv, i) => uv - wave[i] - noise[i]));
+    const share = (x: Float64Array) => x.reduce((sum, one) => sum + one * one, 0);
+    expect(share(left) / share(inside(bout))).toBeGreaterThan(0.4);
   });
 
   it('leaves a lead too short to learn from as it is', () => {
     const short = wave.slice(0, 600);
-    expect(withoutBreathing(short, short, RATE_HZ)).toEqual({ lead: short, takenOutS: 0 });
+    expect(withoutBreathing(short, short, RATE_HZ)).toEqual({ lead: short, takenOut: [] });
   });
 });

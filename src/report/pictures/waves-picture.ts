@@ -40,7 +40,7 @@ const BETWEEN = 56;
 
 /**
  * Stretches of the slow wave for the eye, two in a row: is there a wave, and how tall is it? All have the same scale in uV, so
- * that before and after the meal can be compared.
+ * that before and after the meal can be compared. Dotted where spoiled: what stands there is foretold or disturbed.
  */
 export function wavesPicture(
   excerpts: readonly WaveExcerpt[],
@@ -80,17 +80,24 @@ function excerptPart(
   const bottom = plotTop + PLOT;
   const y = valueScale(-reachUv, reachUv, plotTop, bottom);
   const inside = (uv: number) => Math.min(bottom, Math.max(plotTop, y(uv)));
-  const points: (readonly [number, number])[] = [];
+  const isSpoiled = (time: number) => spoiled.some((one) => time >= one.fromS && time <= one.toS);
+  const pieces: { readonly spoiled: boolean; readonly points: [number, number][] }[] = [];
   for (let i = 0; i < signal.timesS.length; i += 1) {
     const time = signal.timesS[i];
     if (time < fromS || time > toS) continue;
-    points.push([scale.x(time), inside(signal.low[i])]);
-    if (signal.high[i] !== signal.low[i]) points.push([scale.x(time), inside(signal.high[i])]);
+    const here: [number, number][] = [[scale.x(time), inside(signal.low[i])]];
+    if (signal.high[i] !== signal.low[i]) here.push([scale.x(time), inside(signal.high[i])]);
+    const last = pieces.at(-1);
+    if (last?.spoiled === isSpoiled(time)) last.points.push(...here);
+    else pieces.push({ spoiled: isSpoiled(time), points: here });
   }
+  const drawn = (which: boolean) =>
+    pieces.flatMap((one) => (one.spoiled === which ? [pathThrough(one.points)] : [])).join('');
   return [
     hatched(spoiled, scale, plotTop, bottom),
     line(fromX, y(0), toX, y(0), RULE, 'stroke-width="0.5"'),
-    `<path d="${pathThrough(points)}" stroke="${STOMACH}" stroke-width="1.1" stroke-linejoin="round"/>`,
+    `<path d="${drawn(false)}" stroke="${STOMACH}" stroke-width="1.1" stroke-linejoin="round"/>`,
+    `<path d="${drawn(true)}" stroke="${STOMACH}" stroke-width="0.7" stroke-dasharray="1 2"/>`,
     label(fromX, top + 9, `${name}, ${formatClock(fromS)}–${formatClock(toS)}`, 'start', INK),
     timeAxis(scale, bottom),
   ].join('');
