@@ -66,10 +66,10 @@ const ENERGY = { weight: 1.25, from: -1.2 };
 const MORE_ENERGY = -3.2;
 
 /** Where noise leaves a usual beat less like its shape than `seen`, only what is as like as `sure` is believed. */
-const UNSEEN = { weight: -6, seen: 0.6, unsure: 0.6, sure: 0.9 };
+const UNSEEN = { weight: -8, seen: 0.6, unsure: 0.6, sure: 0.9 };
 
 /** Noise makes a beat less like its shape: what it takes from a usual beat's likeness is given back by this, up to so much. */
-const NOISY = { weight: 6, most: 0.25 };
+const NOISY = { weight: 5, most: 0.25 };
 
 /** What speaks against a place where noise hides a usual beat; 0 where it does not, or where the shape is plain all the same. */
 function unseen({ bestLikeness, likeness }: Candidate): number {
