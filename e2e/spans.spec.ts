@@ -102,6 +102,36 @@ test('a stretch is excluded by dragging with the exclude tool: hatched, counted,
   await press(page, 'Control+z');
 });
 
+test('the drawn slow wave follows a span at once: it stands as when it is drawn anew', async () => {
+  await goTo(page, '2:05');
+  const minutes = await stageBox(page, 'Minutes');
+  const y = minutes.y + 0.4 * minutes.height;
+  /** Without the last pixels, where the frame of the pane stands. */
+  const inside = { ...minutes, width: minutes.width - 20 };
+  const at = (atS: number) => [xOfTime(minutes, WHOLE, atS), y] as const;
+  await press(page, 'e');
+  await drag(page, at(120), at(135));
+  await press(page, 'e');
+  await press(page, 'Escape');
+  const anew = async () => {
+    await press(page, 'Shift+R');
+    await press(page, 'Shift+R');
+    await settled(page);
+  };
+  for (const act of [async () => undefined, () => press(page, 'Control+z')]) {
+    await act();
+    await settled(page);
+    await page.waitForTimeout(400);
+    const [followed] = await pictures([inside]);
+    await anew();
+    await expect
+      .poll(async () => (await pictures([inside]))[0] === followed, {
+        message: 'Minutes is the same after a visit to the report',
+      })
+      .toBe(true);
+  }
+});
+
 test('a stretch is excluded by a drag with Alt held, in Seconds too', async () => {
   await goTo(page, '0:30');
   await putMessagesAway(page);

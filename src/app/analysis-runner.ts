@@ -107,6 +107,7 @@ export function createAnalysisRunner({
     const anew = !sent || otherSignals(sent, inputs);
     const started = visit;
     sent = inputs;
+    analysis.setState({ stopped: false });
     const reply = await watched('Computing the figures', (watch) => {
       const abort = new AbortController();
       const stop = () => abort.abort();
@@ -124,8 +125,10 @@ export function createAnalysisRunner({
     }
     sent = null;
     if (reply.failure.kind === 'cancelled') {
-      if (!movedOn(inputs))
+      if (!movedOn(inputs)) {
+        analysis.setState({ stopped: true });
         shell.getState().say('Stopped. The figures stay grey until they are computed again.');
+      }
     } else if (reply.failure.kind !== 'crashed') {
       shell.getState().openDialog({ kind: 'failure', failure: reply.failure });
     }

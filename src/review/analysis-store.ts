@@ -35,6 +35,8 @@ export interface AnalysisState {
   readonly findings: Findings | null;
   /** Edit number the results belong to; older than the session's: show grey. */
   readonly edit: number;
+  /** The last computation was stopped: the results stay older than the session until the next one. */
+  readonly stopped: boolean;
   readonly progress: Progress | null;
   /** Grows when drawn signals change (study, roles, route): panes ask for columns again. */
   readonly signalVersion: number;
@@ -59,6 +61,7 @@ const EMPTY: AnalysisState = {
   breathing: null,
   findings: null,
   edit: 0,
+  stopped: false,
   progress: null,
   signalVersion: 0,
 };

@@ -27,6 +27,7 @@ export function FindingsPane({ session, analysis, view, onFigure, onEdit }: Find
   const computed = useStore(analysis, (state) => state.edit);
   const edit = useStore(session, (state) => state.session?.log.length ?? 0);
   const working = useStore(analysis, (state) => state.progress !== null);
+  const stopped = useStore(analysis, (state) => state.stopped);
   const stale = findings !== null && computed < edit;
   const go = (fromS: number, toS: number) => goToStretch(view, fromS, toS);
   return (
@@ -34,11 +35,14 @@ export function FindingsPane({ session, analysis, view, onFigure, onEdit }: Find
       <header className="findings-head">
         <h2 id="findings-title">Findings</h2>
         <p className="small quiet" role="status">
-          {statusWords(findings !== null, stale, working, computed)}
+          {statusWords(findings !== null, stale ? { stopped } : null, working, computed)}
         </p>
       </header>
       {findings ? (
-        <div className={stale ? 'findings-body stale' : 'findings-body'} aria-busy={stale}>
+        <div
+          className={stale ? 'findings-body stale' : 'findings-body'}
+          aria-busy={stale && !stopped}
+        >
           <Warnings findings={findings} />
           <PhaseFigures findings={findings} onFigure={onFigure} onGo={go} />
           <Seen findings={findings} onGo={go} />
@@ -49,9 +53,15 @@ export function FindingsPane({ session, analysis, view, onFigure, onEdit }: Find
   );
 }
 
-function statusWords(there: boolean, stale: boolean, working: boolean, edit: number): string {
+function statusWords(
+  there: boolean,
+  stale: { readonly stopped: boolean } | null,
+  working: boolean,
+  edit: number,
+): string {
   if (!there) return working ? 'being computed' : 'no figures yet';
-  return stale ? `of edit ${edit}, updating` : `of edit ${edit}`;
+  if (!stale) return `of edit ${edit}`;
+  return stale.stopped ? `of edit ${edit}, then stopped` : `of edit ${edit}, updating`;
 }
 
 function Warnings({ findings }: { readonly findings: Findings }) {
