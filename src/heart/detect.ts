@@ -90,10 +90,11 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const { shapes, places, beats: all } = yield* findBeats(signal);
   yield 0.93;
   const allS = all.map(({ sample }) => sample / rateHz);
-  const decided = decidedPlaces(all, places, rateHz, rhythmBy(all, rateHz));
+  const rhythm = rhythmBy(all, rateHz);
+  const decided = decidedPlaces(all, places, rateHz, rhythm);
   const isLoud = loudPlaces(all, places, decided, rateHz);
   yield 0.93;
-  const legible = legibleStretches(doubted, allS, decided);
+  const legible = legibleStretches(doubted, allS, decided, (s) => rhythm(s).rrS, isLoud);
   const barred = doubted.filter((_, k) => !legible[k]);
   const found = { shapes, beats: all.filter((_, i) => !isWithin(allS[i], barred)) };
   if (found.beats.length < 2) return nothing('No heartbeat was found in this lead.');

@@ -44,7 +44,8 @@ const SHAPELESS_COST = 3;
 
 /**
  * Weights of what is known of a place in the log-odds that it is a beat, by logistic regression (Cox 1958) on 48 invented
- * records at four heights; the part a rhythm has in it is left to the path. Above `from` (up to `to`) each acts as a line.
+ * records at four heights (test/reference/heart-evidence.py); the part a rhythm has in it is left to the path. Above `from` (up to
+ * `to`) each acts as a line.
  */
 const CONSTANT = -2.8;
 /** Unlikeness: logarithm of the part of the window's amplitude that the shape leaves over. */

@@ -144,6 +144,18 @@ describe('in an abdominal lead the beat detector', () => {
     expect(matchBeats(times, timesOf(raw))).toMatchObject({ falseNegative: 0, falsePositive: 0 });
   });
 
+  it('takes stays at a rail too short for a span for no beat, and loses none beside them', () => {
+    const raw = empty();
+    const times = beatsOn(raw, 100);
+    addNoise(raw, RATE, { seed: 4, whiteUv: 2, slowUv: 200 });
+    for (let k = 20; k < times.length - 1; k += 40) {
+      const from = Math.round(((times[k] + times[k + 1]) / 2) * RATE);
+      raw.fill(2000, from, from + 5);
+    }
+    const { falseNegative, falsePositive } = matchBeats(times, timesOf(raw));
+    expect({ falseNegative, falsePositive }).toEqual({ falseNegative: 0, falsePositive: 0 });
+  });
+
   it('needs no more than steps of 1 uV, and bears offsets of 300 mV and a baseline that swings ten times the QRS', () => {
     const random = testRandom(3);
     const raw = empty();

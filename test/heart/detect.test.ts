@@ -124,6 +124,32 @@ describe('the beat detector', () => {
     expect(matching).toMatchObject({ falseNegative: 0, falsePositive: 0 });
   });
 
+  it('gives beats in doubted stretches only where they can be read', () => {
+    const { beats, raw } = study({}, NARROW, 100);
+    const random = testRandom(9);
+    for (let i = 150 * RATE; i < 153 * RATE; i += 1) raw[i] += 250 * random.normal();
+    const found = detectBeats({
+      heartbeat: heartbeatOf(addNoise(raw, RATE, { seed: 5, whiteUv: 2 }), RATE),
+      rateHz: RATE,
+      ticksPerSample: 64,
+      doubted: [
+        { fromS: 60, toS: 70 },
+        { fromS: 150, toS: 153 },
+      ],
+    });
+    expect(found.legible).toEqual([true, false]);
+    const within = (list: readonly number[], fromS: number, toS: number) =>
+      list.filter((time) => time >= fromS && time < toS).length;
+    expect(within(timesOf(found), 150, 153)).toBe(0);
+    expect(within(timesOf(found), 60, 70)).toBe(
+      within(
+        beats.map(({ timeS }) => timeS),
+        60,
+        70,
+      ),
+    );
+  });
+
   it('looks for no beat in an excluded stretch and keeps those around it', () => {
     const { beats, raw } = study({}, NARROW, 100);
     const excluded = [{ fromS: 60, toS: 70 }];

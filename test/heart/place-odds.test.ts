@@ -57,18 +57,31 @@ it('a beat may be hidden in what is as loud as one, or weaker where no P or T wa
 });
 
 describe('a stretch', () => {
-  const stretch = [{ fromS: 4, toS: 9 }];
-  const timesOf = (beats: typeof usual) => beats.map(({ sample }) => sample / rateHz);
+  const legible = (beats: typeof usual, others: typeof usual = [], loud = false) => {
+    const timesS = beats.map(({ sample }) => sample / rateHz);
+    const [answer] = legibleStretches(
+      [{ fromS: 4, toS: 9 }],
+      timesS,
+      decide(beats, others),
+      () => 0.8,
+      () => loud,
+    );
+    return answer;
+  };
 
-  it('is legible where its beats are plain, and where nothing in it may be a beat', () => {
-    expect(legibleStretches(stretch, timesOf(usual), decide(usual))).toEqual([true]);
-    expect(legibleStretches([{ fromS: 0.3, toS: 0.5 }], timesOf(usual), decide(usual))).toEqual([
-      true,
-    ]);
+  it('is legible where its beats are plain', () => {
+    expect(legible(usual)).toBe(true);
+    expect(legible(usual, [], true)).toBe(true);
   });
 
   it('is not where places as likely as not lie between them', () => {
     const others = [4.4, 5.2, 6, 6.8].map((s) => at(s, 5));
-    expect(legibleStretches(stretch, timesOf(usual), decide(usual, others))).toEqual([false]);
+    expect(legible(usual, others)).toBe(false);
+  });
+
+  it('is not where something loud fills a pause, but is where the pause is quiet', () => {
+    const paused = usual.filter((_, i) => i !== 8);
+    expect(legible(paused)).toBe(true);
+    expect(legible(paused, [], true)).toBe(false);
   });
 });
