@@ -94,7 +94,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const decided = decidedPlaces(all, places, rateHz, rhythm);
   const isLoud = loudPlaces(all, places, decided, rateHz);
   yield 0.93;
-  const legible = legibleStretches(doubted, allS, decided, (s) => rhythm(s).rrS, isLoud);
+  const legible = legibleStretches(doubted, allS, decided, (s) => rhythm(s).rrS);
   const barred = doubted.filter((_, k) => !legible[k]);
   const found = { shapes, beats: all.filter((_, i) => !isWithin(allS[i], barred)) };
   if (found.beats.length < 2) return nothing('No heartbeat was found in this lead.');

@@ -57,31 +57,26 @@ it('a beat may be hidden in what is as loud as one, or weaker where no P or T wa
 });
 
 describe('a stretch', () => {
-  const legible = (beats: typeof usual, others: typeof usual = [], loud = false) => {
-    const timesS = beats.map(({ sample }) => sample / rateHz);
-    const [answer] = legibleStretches(
-      [{ fromS: 4, toS: 9 }],
-      timesS,
-      decide(beats, others),
-      () => 0.8,
-      () => loud,
-    );
-    return answer;
-  };
+  const stretch = [{ fromS: 4, toS: 9 }];
+  const usualRrS = () => 0.8;
+  const timesOf = (beats: typeof usual) => beats.map(({ sample }) => sample / rateHz);
 
-  it('is legible where its beats are plain', () => {
-    expect(legible(usual)).toBe(true);
-    expect(legible(usual, [], true)).toBe(true);
+  it('is legible where its beats are plain, and where nothing in it may be a beat', () => {
+    expect(legibleStretches(stretch, timesOf(usual), decide(usual), usualRrS)).toEqual([true]);
+    expect(
+      legibleStretches([{ fromS: 0.3, toS: 0.5 }], timesOf(usual), decide(usual), usualRrS),
+    ).toEqual([true]);
+  });
+
+  it('is not where it holds none of the beats that the rhythm lets expect', () => {
+    const none = usual.filter(({ sample }) => sample / rateHz < 4 || sample / rateHz > 9);
+    expect(legibleStretches(stretch, timesOf(none), decide(none), usualRrS)).toEqual([false]);
   });
 
   it('is not where places as likely as not lie between them', () => {
     const others = [4.4, 5.2, 6, 6.8].map((s) => at(s, 5));
-    expect(legible(usual, others)).toBe(false);
-  });
-
-  it('is not where something loud fills a pause, but is where the pause is quiet', () => {
-    const paused = usual.filter((_, i) => i !== 8);
-    expect(legible(paused)).toBe(true);
-    expect(legible(paused, [], true)).toBe(false);
+    expect(legibleStretches(stretch, timesOf(usual), decide(usual, others), usualRrS)).toEqual([
+      false,
+    ]);
   });
 });
