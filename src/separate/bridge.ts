@@ -1,5 +1,5 @@
 import { choleskySolve } from '../numeric/cholesky';
-import { sharedFft } from '../numeric/fft';
+import { evenInverse } from '../numeric/even-inverse';
 import type { SampleRun } from '../numeric/nan-runs';
 import type { Hertz } from '../units/rate';
 import type { LeadSpectra } from './lead-spectra';
@@ -16,16 +16,11 @@ const READ_HZ = 1;
 const UNFORESEEN = 1e-4;
 
 /** Autocovariance of a lead by lag in samples, from its mean spectrum: the inverse transform of the density. */
-export function autocovariance({ mean, size }: LeadSpectra, rateHz: Hertz): Float64Array {
-  const spectrum = new Float64Array(2 * size);
-  for (let k = 0; k < size; k += 1) {
-    const bin = Math.min(k, size - k);
-    const both = bin === 0 || 2 * bin === size ? 1 : 0.5;
-    spectrum[2 * k] = both * mean[bin] * rateHz;
-  }
-  const out = new Float64Array(2 * size);
-  sharedFft(size).inverse(spectrum, out);
-  return Float64Array.from({ length: size / 2 }, (_, lag) => out[2 * lag]);
+function autocovariance({ mean, size }: LeadSpectra, rateHz: Hertz): Float64Array {
+  const twoSided = mean.map(
+    (density, bin) => (bin === 0 || 2 * bin === size ? 1 : 0.5) * density * rateHz,
+  );
+  return evenInverse(twoSided, size);
 }
 
 /** Stretches of missing samples, each longer by `smear` at both ends (not those that end the lead), those joined that only a short piece parts. */

@@ -1,5 +1,5 @@
 import { cos } from '../numeric/elementary';
-import { sharedFft } from '../numeric/fft';
+import { evenInverse } from '../numeric/even-inverse';
 import { localMaxima } from '../numeric/peaks';
 import type { Cpm } from '../units/rate';
 import { leadBackground } from './lead-background';
@@ -75,12 +75,9 @@ export function fittedGain(spectra: LeadSpectra, highCpm: Cpm): Float64Array {
 
 /** Zero-phase taps of a gain by bin of a transform of `size` points, `half` to each side under a Hann lag window. */
 export function gainTaps(gain: Float64Array, size: number, half: number): Float64Array {
-  const spectrum = new Float64Array(2 * size);
-  for (let k = 0; k < size; k += 1) spectrum[2 * k] = gain[Math.min(k, size - k)];
-  const out = new Float64Array(2 * size);
-  sharedFft(size).inverse(spectrum, out);
+  const response = evenInverse(gain, size);
   return Float64Array.from({ length: 2 * half + 1 }, (_, i) => {
     const lag = Math.abs(i - half);
-    return out[2 * lag] * (0.5 + 0.5 * cos((Math.PI * lag) / (half + 1)));
+    return response[lag] * (0.5 + 0.5 * cos((Math.PI * lag) / (half + 1)));
   });
 }

@@ -63,6 +63,9 @@ export function wavesPicture(
   return picture(rows * ROW, 'Slow wave', [...bars, ...drawn]);
 }
 
+const liesIn = (stretches: readonly Interval[], time: number): boolean =>
+  stretches.some(({ fromS, toS }) => time >= fromS && time <= toS);
+
 interface Place {
   readonly fromX: number;
   readonly toX: number;
@@ -80,16 +83,16 @@ function excerptPart(
   const bottom = plotTop + PLOT;
   const y = valueScale(-reachUv, reachUv, plotTop, bottom);
   const inside = (uv: number) => Math.min(bottom, Math.max(plotTop, y(uv)));
-  const isSpoiled = (time: number) => spoiled.some((one) => time >= one.fromS && time <= one.toS);
   const pieces: { readonly spoiled: boolean; readonly points: [number, number][] }[] = [];
   for (let i = 0; i < signal.timesS.length; i += 1) {
     const time = signal.timesS[i];
     if (time < fromS || time > toS) continue;
     const here: [number, number][] = [[scale.x(time), inside(signal.low[i])]];
     if (signal.high[i] !== signal.low[i]) here.push([scale.x(time), inside(signal.high[i])]);
+    const isSpoiled = liesIn(spoiled, time);
     const last = pieces.at(-1);
-    if (last?.spoiled === isSpoiled(time)) last.points.push(...here);
-    else pieces.push({ spoiled: isSpoiled(time), points: here });
+    if (last?.spoiled === isSpoiled) last.points.push(...here);
+    else pieces.push({ spoiled: isSpoiled, points: here });
   }
   const drawn = (which: boolean) =>
     pieces.flatMap((one) => (one.spoiled === which ? [pathThrough(one.points)] : [])).join('');
@@ -131,9 +134,7 @@ export function reachOf(excerpts: readonly WaveExcerpt[], spoiled: readonly Inte
   const heights = excerpts.flatMap(({ fromS, toS, signal }) => {
     const cut = spoiled.filter((one) => one.toS > fromS && one.fromS < toS);
     return Array.from(signal.timesS, (time, i) =>
-      cut.some((one) => time >= one.fromS && time <= one.toS)
-        ? Number.NaN
-        : Math.max(-signal.low[i], signal.high[i]),
+      liesIn(cut, time) ? Number.NaN : Math.max(-signal.low[i], signal.high[i]),
     ).filter((height) => Number.isFinite(height));
   });
   heights.sort((a, b) => a - b);
