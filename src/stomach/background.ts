@@ -207,8 +207,8 @@ export function standsOut(
     readonly independent: number;
     /** Stronger lines, which the holes of a spoiled window spread. */
     readonly besideCpm?: readonly Cpm[];
-    /** What the minutes beside it lend, as a multiple of the background: so much less is asked of the peak. */
-    readonly lent?: () => number;
+    /** The least background at the peak that the minutes beside it allow, uV2/Hz. */
+    readonly leastBackground?: number;
   },
 ): boolean {
   if (!(peak.density > 0)) return false;
@@ -219,7 +219,6 @@ export function standsOut(
   const threshold =
     peakThreshold(options.falseAlarm, options.independent, background.leverage) +
     PER_SPOILED * spoiledFraction;
-  const times = height / background.density;
-  if (log(times) > threshold) return true;
-  return options.lent !== undefined && log(times + options.lent()) > threshold;
+  const least = options.leastBackground ?? 0;
+  return log(height / Math.max(least, background.density)) > threshold;
 }

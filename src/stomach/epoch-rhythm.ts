@@ -13,8 +13,9 @@ import {
 } from './dominant-peak';
 import { atBreathing, atHalfOfCrests, onDrift } from './epoch-flags';
 import { halfPeaks, isLocked, type SampledPart } from './harmonic';
-import { lentSupport } from './lent-support';
 import { rhythmOf } from './rhythm-class';
+import { steadyPeak } from './steady-wave';
+import { leastBackground, type WindowRow } from './window-row';
 
 /** An epoch or one half of it. */
 export type EpochPart = Spectrum & SampledPart;
@@ -26,8 +27,8 @@ export interface EpochInput extends EpochPart {
   readonly breathing: Band | null;
   /** Its two halves; null where one of them is too spoiled. Asked for only when needed. */
   readonly halves: () => readonly [EpochPart, EpochPart] | null;
-  /** Windows of the same phase and length that share no sample with it, the nearest two on either side. */
-  readonly beside: readonly Spectrum[];
+  /** The epoch among the windows beside it; null where these are too few to say anything. */
+  readonly row: WindowRow | null;
 }
 
 export interface EpochRhythm {
@@ -68,16 +69,21 @@ function dominantOf(
   part: EpochPart,
   falseAlarm: number,
   settings: Settings,
-  beside: readonly Spectrum[] = [],
+  row: WindowRow | null = null,
 ): Dominant | null {
   const band = searchBand(settings);
-  const peak = highestPeak(bandPeaks(part.density, part.binCpm, band));
-  if (!peak) return null;
-  const independent = independentValues(band, part.lengthS);
-  const lent = () => lentSupport(beside, peak.cpm);
-  const outstanding = standsOut(part, peak, { falseAlarm, independent, lent });
-  const lower = outstanding ? fundamentalOf(part, peak, settings) : null;
-  return { peak: lower ?? peak, outstanding, harmonic: lower !== null };
+  const peaks = bandPeaks(part.density, part.binCpm, band);
+  const highest = highestPeak(peaks);
+  if (!highest) return null;
+  const alone = standsOut(part, highest, {
+    falseAlarm,
+    independent: independentValues(band, part.lengthS),
+    leastBackground: row ? leastBackground(row, part.density, highest) : 0,
+  });
+  const peak = alone ? highest : row && steadyPeak(row, part.density, peaks, falseAlarm);
+  if (!peak) return { peak: highest, outstanding: false, harmonic: false };
+  const lower = fundamentalOf(part, peak, settings);
+  return { peak: lower ?? peak, outstanding: true, harmonic: lower !== null };
 }
 
 /** Least change of DF from one half to the other that is more than one half can resolve. */
@@ -150,7 +156,7 @@ function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, setti
 export function epochRhythm(input: EpochInput, settings: Settings): EpochRhythm {
   const { density, binCpm } = input;
   const filled: readonly EpochFlag[] = input.spoiledFraction > 0 ? ['filled'] : [];
-  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input.beside);
+  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input.row);
   if (!found) return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
   const { peak, outstanding, harmonic } = found;
   const flags = outstanding ? flagsOf(input, peak, harmonic, settings) : [];

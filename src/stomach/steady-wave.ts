@@ -1,0 +1,130 @@
+import { exp, log } from '../numeric/elementary';
+import { besselI0 } from '../numeric/special';
+import type { Cpm } from '../units/rate';
+import type { SpectrumPeak } from './dominant-peak';
+import type { RowWindow, WindowRow } from './window-row';
+
+/** Powers a wave may have over the background, at its peak of one window. Stronger ones are found alone. */
+const POWERS = [3.5, 7, 14, 28];
+/** From window to window a wave wanders (standard deviation), and where it is looked for in each. */
+const WANDER_CPM = 0.1;
+const OFFSETS_CPM = [-0.2, -0.1, 0, 0.1, 0.2];
+/** How often a wave goes on from one window to the next, and comes back from a pause. */
+const STAYS = 0.9;
+const RETURNS = 0.7;
+const USUALLY_THERE = RETURNS / (1 - STAYS + RETURNS);
+/** Amplitudes over noise beyond which a window proves no more. */
+const MOST_PROOF = 60;
+/** Own height below which a peak cannot be the wave, over the background. */
+const LEAST_OWN_LOG = -0.3;
+
+/** Likelihood of a height (over its background) with a wave of a power over that of noise alone (Rice 1944). */
+const likelihoodRatio = (power: number, height: number): number =>
+  exp(-power) * besselI0(Math.min(MOST_PROOF, 2 * Math.sqrt(power * height)));
+
+const WEIGHTS = OFFSETS_CPM.map((cpm) => exp(-0.5 * (cpm / WANDER_CPM) ** 2));
+const ALL_WEIGHTS = WEIGHTS.reduce((sum, weight) => sum + weight, 0);
+
+/** What a row says of a wave at the place of one of the epoch's peaks. */
+export interface WaveEvidence {
+  /** Log likelihood of the row with the wave in the epoch over that of no wave in any window. */
+  readonly there: number;
+  /** Log odds that the wave is in the epoch, given that it is in the row. */
+  readonly here: number;
+}
+
+/** Likelihood ratio of each window beside the epoch for each power, by place. */
+function besideRatios(
+  windows: readonly RowWindow[],
+  binCpm: number,
+  cpm: Cpm,
+  level: number,
+): ReadonlyMap<number, readonly number[]> {
+  return new Map(
+    windows
+      .filter(({ place }) => place !== 0)
+      .map(({ place, over }) => {
+        const heights = OFFSETS_CPM.map((offset) =>
+          exp(over[Math.round((cpm + offset) / binCpm)] - level),
+        );
+        const ratios = POWERS.map(
+          (power) =>
+            heights.reduce(
+              (sum, height, i) => sum + WEIGHTS[i] * likelihoodRatio(power, height),
+              0,
+            ) / ALL_WEIGHTS,
+        );
+        return [place, ratios] as const;
+      }),
+  );
+}
+
+/** Likelihood of the windows on one side, `step` apart, where the wave is there and where it pauses in the epoch. */
+function sideLikelihood(
+  ratios: ReadonlyMap<number, readonly number[]>,
+  step: 1 | -1,
+  power: number,
+): readonly [there: number, pausing: number] {
+  const far = Math.max(0, ...[...ratios.keys()].map((place) => step * place));
+  let [there, pausing] = [1, 1];
+  for (let away = far; away >= 1; away -= 1) {
+    const seen = (ratios.get(step * away)?.[power] ?? 1) * there;
+    [there, pausing] = [
+      STAYS * seen + (1 - STAYS) * pausing,
+      RETURNS * seen + (1 - RETURNS) * pausing,
+    ];
+  }
+  return [there, pausing];
+}
+
+/**
+ * Evidence of a row for a wave at `cpm`, where the epoch's own peak stands `ownLog` over its line: a
+ * wave of one unknown power that goes on from window to window, pauses and comes back (a hidden
+ * Markov chain of two states), each window's height being Rice's.
+ */
+export function waveEvidence(
+  { windows, binCpm }: WindowRow,
+  cpm: Cpm,
+  ownLog: number,
+  level: number,
+): WaveEvidence {
+  const ratios = besideRatios(windows, binCpm, cpm, level);
+  let [there, pausing] = [0, 0];
+  POWERS.forEach((power, i) => {
+    const before = sideLikelihood(ratios, -1, i);
+    const after = sideLikelihood(ratios, 1, i);
+    const own = likelihoodRatio(power, exp(ownLog - level));
+    there += (USUALLY_THERE * before[0] * after[0] * own) / POWERS.length;
+    pausing += ((1 - USUALLY_THERE) * before[1] * after[1]) / POWERS.length;
+  });
+  return { there: log(there), here: log(there / pausing) };
+}
+
+/** Evidence asked for at a false-alarm rate of 5 %; the highest of the peaks of noise passes it in under 1 % of epochs. */
+const ASKED = { there: 4, falseAlarm: 0.05 };
+
+/**
+ * The peak of an epoch for which the row has the most evidence, where that is enough at the
+ * false-alarm rate and the wave is rather in the epoch than pausing; else null.
+ */
+export function steadyPeak(
+  row: WindowRow,
+  density: Float64Array,
+  peaks: readonly SpectrumPeak[],
+  falseAlarm: number,
+): SpectrumPeak | null {
+  const own = row.windows.find(({ place }) => place === 0);
+  if (!own) return null;
+  let most = ASKED.there - log(falseAlarm / ASKED.falseAlarm);
+  let found: SpectrumPeak | null = null;
+  for (const peak of peaks) {
+    const ownLog = own.over[peak.bin] + log(peak.density / density[peak.bin]);
+    const level = row.levelAt(peak.cpm);
+    if (ownLog - level < LEAST_OWN_LOG) continue;
+    const { there, here } = waveEvidence(row, peak.cpm, ownLog, level);
+    if (here <= 0 || there <= most) continue;
+    most = there;
+    found = peak;
+  }
+  return found;
+}
