@@ -78,7 +78,7 @@ function dominantOf(
   const alone = standsOut(part, highest, {
     falseAlarm,
     independent: independentValues(band, part.lengthS),
-    leastBackground: row ? leastBackground(row, part.density, highest) : 0,
+    ...(row && { leastBackground: () => leastBackground(row, part.density, highest) }),
   });
   const peak = alone ? highest : row && steadyPeak(row, part.density, peaks, falseAlarm);
   if (!peak) return { peak: highest, outstanding: false, harmonic: false };

@@ -1,20 +1,23 @@
-import { log } from '../numeric/elementary';
-import type { SmoothLevel } from './smooth-level';
+import { exp, log } from '../numeric/elementary';
+import { EULER, type SmoothLevel } from './smooth-level';
 
 /** Bins so far above the line (natural logarithm) are lines, not background. */
 const LINE_LOG = 3;
-/** Mean of the logarithm of an exponential variable of mean 1 is minus this (Euler's constant). */
-const EULER = 0.5772156649015329;
 
-/**
- * Natural logarithm of a window's density over the 1/f^b line through all of it: of noise of that
- * colour exp of it has the mean 1. Bin 0 is 0.
- */
-export function overBackground(density: Float64Array, smooth: SmoothLevel): Float64Array {
+/** A window's density over its own background line, by bin; bin 0 says nothing. */
+export interface OverBackground {
+  /** Noise of a colour that the line follows has the mean 1. */
+  readonly times: Float64Array;
+  /** Its natural logarithm. */
+  readonly log: Float64Array;
+}
+
+/** A window's density over the 1/f^b line through all of it (least squares of logarithms). */
+export function overBackground(density: Float64Array, smooth: SmoothLevel): OverBackground {
   const floor = 1e-12 * density.reduce((most, value) => Math.max(most, value), 1e-280);
-  const y = density.map((value) => log(Math.max(floor, value)));
-  const line = smooth.through(y, 1, LINE_LOG);
-  for (let k = 1; k < y.length; k += 1) y[k] -= line[k] + EULER;
-  y[0] = 0;
-  return y;
+  const over = density.map((value) => log(Math.max(floor, value)));
+  const line = smooth.through(over, 1, LINE_LOG);
+  over[0] = 0;
+  for (let k = 1; k < over.length; k += 1) over[k] -= line[k] + EULER;
+  return { log: over, times: over.map(exp) };
 }

@@ -1,5 +1,5 @@
 import type { Cpm } from '../units/rate';
-import { overBackground } from './over-background';
+import { type OverBackground, overBackground } from './over-background';
 import { type SmoothLevel, smoothLevel } from './smooth-level';
 import { type PreparedWindow, type WindowSpectraOptions, windowSpectra } from './window-spectrum';
 
@@ -13,8 +13,8 @@ export interface SharedWindows {
   /** The window that begins at a sample; `first` is moved back where it would run past the end. */
   at(first: number): PreparedWindow;
   densityAt(first: number): Float64Array;
-  /** Natural logarithm of its density over its own background line. */
-  overAt(first: number): Float64Array;
+  /** Its density over its own background line; where it has holes, with these bridged. */
+  overAt(first: number): OverBackground;
   readonly smooth: SmoothLevel;
   /** Density of the window that begins at a sample with lines at these frequencies taken off; not kept. */
   densityWithout(first: number, frequenciesCpm: readonly Cpm[]): Float64Array;
@@ -23,7 +23,7 @@ export interface SharedWindows {
 interface MadeWindow {
   readonly window: PreparedWindow;
   density: Float64Array | null;
-  over: Float64Array | null;
+  over: OverBackground | null;
 }
 
 const sameLead = (a: WindowSpectraOptions, b: WindowSpectraOptions) =>

@@ -4,6 +4,8 @@ import { log } from '../numeric/elementary';
 const FIT_CPM = { lowCpm: 0.5, highCpm: 15 };
 const MOST_DEGREE = 3;
 const PASSES = 3;
+/** Mean of the logarithm of an exponential variable of mean 1 is minus this (Euler's constant). */
+export const EULER = 0.5772156649015329;
 
 /** The smooth course of a logarithm of density over the logarithm of frequency. */
 export interface SmoothLevel {
@@ -14,9 +16,20 @@ export interface SmoothLevel {
   through(y: Float64Array, degree: number, most: number): Float64Array;
 }
 
+let known: { readonly binCpm: number; readonly logs: Float64Array } | null = null;
+
+/** Natural logarithms of the frequencies of `count` bins; 0 for bin 0. Those of the last bin width are kept. */
+export function logFrequencies(binCpm: number, count: number): Float64Array {
+  if (known === null || known.binCpm !== binCpm || known.logs.length < count) {
+    const logs = Float64Array.from({ length: count }, (_, k) => (k === 0 ? 0 : log(k * binCpm)));
+    known = { binCpm, logs };
+  }
+  return known.logs.subarray(0, count);
+}
+
 /** Polynomials in log frequency, orthonormal over the bins from..end. */
 function orthonormal(binCpm: number, count: number, from: number, end: number): Float64Array[] {
-  const x = Float64Array.from({ length: count }, (_, k) => (k === 0 ? 0 : log(k * binCpm)));
+  const x = logFrequencies(binCpm, count);
   const made: Float64Array[] = [];
   for (let degree = 0; degree <= MOST_DEGREE; degree += 1) {
     const last = made[degree - 1];

@@ -2,7 +2,7 @@ import { exp, log } from '../numeric/elementary';
 import { besselI0 } from '../numeric/special';
 import type { Cpm } from '../units/rate';
 import type { SpectrumPeak } from './dominant-peak';
-import type { RowWindow, WindowRow } from './window-row';
+import type { WindowRow } from './window-row';
 
 /** Powers a wave may have over the background, at its peak of one window. Stronger ones are found alone. */
 const POWERS = [3.5, 7, 14, 28];
@@ -15,8 +15,6 @@ const RETURNS = 0.7;
 const USUALLY_THERE = RETURNS / (1 - STAYS + RETURNS);
 /** Amplitudes over noise beyond which a window proves no more. */
 const MOST_PROOF = 60;
-/** Own height below which a peak cannot be the wave, over the background. */
-const LEAST_OWN_LOG = -0.3;
 
 /** Likelihood of a height (over its background) with a wave of a power over that of noise alone (Rice 1944). */
 const likelihoodRatio = (power: number, height: number): number =>
@@ -26,37 +24,49 @@ const WEIGHTS = OFFSETS_CPM.map((cpm) => exp(-0.5 * (cpm / WANDER_CPM) ** 2));
 const ALL_WEIGHTS = WEIGHTS.reduce((sum, weight) => sum + weight, 0);
 
 /** What a row says of a wave at the place of one of the epoch's peaks. */
-export interface WaveEvidence {
+interface WaveEvidence {
   /** Log likelihood of the row with the wave in the epoch over that of no wave in any window. */
   readonly there: number;
   /** Log odds that the wave is in the epoch, given that it is in the row. */
   readonly here: number;
 }
 
+/** Heights of a window over the background of the row, about a place. */
+interface Heights {
+  readonly place: number;
+  readonly heights: readonly number[];
+}
+
+function heightsOf({ windows, binCpm }: WindowRow, cpm: Cpm, level: number): readonly Heights[] {
+  const per = exp(-level);
+  const bins = OFFSETS_CPM.map((offset) => Math.round((cpm + offset) / binCpm));
+  return windows
+    .filter(({ place }) => place !== 0)
+    .map(({ place, over }) => ({ place, heights: bins.map((bin) => per * over.times[bin]) }));
+}
+
 /** Likelihood ratio of each window beside the epoch for each power, by place. */
-function besideRatios(
-  windows: readonly RowWindow[],
-  binCpm: number,
-  cpm: Cpm,
-  level: number,
-): ReadonlyMap<number, readonly number[]> {
+function ratiosOf(beside: readonly Heights[]): ReadonlyMap<number, readonly number[]> {
   return new Map(
-    windows
-      .filter(({ place }) => place !== 0)
-      .map(({ place, over }) => {
-        const heights = OFFSETS_CPM.map((offset) =>
-          exp(over[Math.round((cpm + offset) / binCpm)] - level),
-        );
-        const ratios = POWERS.map(
-          (power) =>
-            heights.reduce(
-              (sum, height, i) => sum + WEIGHTS[i] * likelihoodRatio(power, height),
-              0,
-            ) / ALL_WEIGHTS,
-        );
-        return [place, ratios] as const;
-      }),
+    beside.map(({ place, heights }) => [
+      place,
+      POWERS.map(
+        (power) =>
+          heights.reduce((sum, height, i) => sum + WEIGHTS[i] * likelihoodRatio(power, height), 0) /
+          ALL_WEIGHTS,
+      ),
+    ]),
   );
+}
+
+/** No power makes the log likelihood ratio of a height more than the height less this, nor of a lower one more than 0. */
+const LOSS_AT_BEST = 1.8;
+
+/** True where the windows cannot reach the evidence asked for, whatever the power: most places of noise. */
+function isHopeless(own: number, beside: readonly Heights[], asked: number): boolean {
+  let most = Math.max(0, own - LOSS_AT_BEST);
+  for (const { heights } of beside) most += Math.max(0, Math.max(...heights) - LOSS_AT_BEST);
+  return most < asked;
 }
 
 /** Likelihood of the windows on one side, `step` apart, where the wave is there and where it pauses in the epoch. */
@@ -78,23 +88,18 @@ function sideLikelihood(
 }
 
 /**
- * Evidence of a row for a wave at `cpm`, where the epoch's own peak stands `ownLog` over its line: a
+ * Evidence for a wave that gave the epoch's own peak its height and the windows beside it theirs: a
  * wave of one unknown power that goes on from window to window, pauses and comes back (a hidden
  * Markov chain of two states), each window's height being Rice's.
  */
-export function waveEvidence(
-  { windows, binCpm }: WindowRow,
-  cpm: Cpm,
-  ownLog: number,
-  level: number,
-): WaveEvidence {
-  const ratios = besideRatios(windows, binCpm, cpm, level);
+function waveEvidence(own: number, beside: readonly Heights[]): WaveEvidence {
+  const ratios = ratiosOf(beside);
   let [there, pausing] = [0, 0];
   POWERS.forEach((power, i) => {
     const before = sideLikelihood(ratios, -1, i);
     const after = sideLikelihood(ratios, 1, i);
-    const own = likelihoodRatio(power, exp(ownLog - level));
-    there += (USUALLY_THERE * before[0] * after[0] * own) / POWERS.length;
+    const seen = likelihoodRatio(power, own);
+    there += (USUALLY_THERE * before[0] * after[0] * seen) / POWERS.length;
     pausing += ((1 - USUALLY_THERE) * before[1] * after[1]) / POWERS.length;
   });
   return { there: log(there), here: log(there / pausing) };
@@ -118,10 +123,11 @@ export function steadyPeak(
   let most = ASKED.there - log(falseAlarm / ASKED.falseAlarm);
   let found: SpectrumPeak | null = null;
   for (const peak of peaks) {
-    const ownLog = own.over[peak.bin] + log(peak.density / density[peak.bin]);
     const level = row.levelAt(peak.cpm);
-    if (ownLog - level < LEAST_OWN_LOG) continue;
-    const { there, here } = waveEvidence(row, peak.cpm, ownLog, level);
+    const height = (exp(-level) * own.over.times[peak.bin] * peak.density) / density[peak.bin];
+    const beside = heightsOf(row, peak.cpm, level);
+    if (isHopeless(height, beside, most)) continue;
+    const { there, here } = waveEvidence(height, beside);
     if (here <= 0 || there <= most) continue;
     most = there;
     found = peak;

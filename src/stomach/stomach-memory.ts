@@ -1,11 +1,12 @@
 import type { Settings } from '../recording/settings';
 import { type EpochInput, type EpochRhythm, epochRhythm } from './epoch-rhythm';
+import type { OverBackground } from './over-background';
 import type { SharedWindows } from './shared-windows';
 
 interface Judged {
   readonly circumstances: string;
-  /** Spectra of the row it was judged in. */
-  readonly row: readonly Float64Array[];
+  /** The row it was judged in. */
+  readonly row: readonly OverBackground[];
   readonly rhythm: EpochRhythm;
 }
 

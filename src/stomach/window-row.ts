@@ -2,14 +2,14 @@ import { exp } from '../numeric/elementary';
 import type { Cpm } from '../units/rate';
 import type { Seconds } from '../units/time';
 import type { SpectrumPeak } from './dominant-peak';
+import type { OverBackground } from './over-background';
 import type { SharedWindows } from './shared-windows';
-import type { SmoothLevel } from './smooth-level';
+import { EULER, type SmoothLevel } from './smooth-level';
 
 /** A window of a row that share no sample; place counts windows from the epoch's own, which is 0. */
 export interface RowWindow {
   readonly place: number;
-  /** Natural logarithm of its density over its own 1/f^b line (over-background.ts). */
-  readonly over: Float64Array;
+  readonly over: OverBackground;
 }
 
 /** An epoch and the independent windows beside it in its phase, by place. */
@@ -27,8 +27,6 @@ const LINE_LOG = { one: 3, least: 0.2 };
 /** Where the flanks of a place lie, for 240 s: beyond the main lobe of a line there. */
 const FLANK = { nearCpm: 0.4, farCpm: 1.3, leastBins: 4, lowestCpm: 0.45 };
 const FLANK_LENGTH_S = 240;
-/** Mean of the logarithm of an exponential variable of mean 1 is minus this (Euler's constant). */
-const EULER = 0.5772156649015329;
 /** Half of the most by which the higher flank may lift the background over the lower one: more is another line. */
 const MOST_ABOVE_LOWER = 0.35;
 
@@ -45,9 +43,9 @@ function rowLevel(
     smooth,
   }: { readonly binCpm: number; readonly lengthS: Seconds; readonly smooth: SmoothLevel },
 ): (cpm: Cpm) => number {
-  const mean = new Float64Array(windows[0].over.length);
+  const mean = new Float64Array(windows[0].over.log.length);
   for (const { over } of windows)
-    for (let k = 0; k < mean.length; k += 1) mean[k] += over[k] / windows.length;
+    for (let k = 0; k < mean.length; k += 1) mean[k] += over.log[k] / windows.length;
   const most = LINE_LOG.one / Math.sqrt(windows.length) + LINE_LOG.least;
   const curve = smooth.through(mean, CURVE_DEGREE, most);
   const scale = FLANK_LENGTH_S / lengthS;
@@ -78,7 +76,7 @@ export function leastBackground(
   { bin, cpm }: SpectrumPeak,
 ): number {
   const own = row.windows.find(({ place }) => place === 0);
-  return own ? density[bin] * exp(row.levelAt(cpm) - own.over[bin]) : 0;
+  return own ? density[bin] * exp(row.levelAt(cpm) - own.over.log[bin]) : 0;
 }
 
 /** Windows of a row, the epoch's own among them, from which its background can be told. */
