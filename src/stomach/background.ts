@@ -211,17 +211,24 @@ export function standsOut(
     readonly besideCpm?: readonly Cpm[];
     /** The least background at the peak that the minutes beside it allow, uV2/Hz; asked for near the limit only. */
     readonly leastBackground?: () => number;
+    /** A longer window that holds this one: its background is as good, and known nearer to slow peaks. */
+    readonly whole?: Spectrum;
   },
 ): boolean {
   if (!(peak.density > 0)) return false;
   const { binCpm, lengthS, spoiledFraction } = spectrum;
   const { height, background: density } = freedOfLeaks(spectrum, peak, options.besideCpm ?? []);
+  const thresholdOver = ({ leverage }: Background) =>
+    peakThreshold(options.falseAlarm, options.independent, leverage) +
+    PER_SPOILED * spoiledFraction;
   const background = backgroundAt(density, binCpm, peak.cpm, lengthS);
   if (!background) return false;
-  const threshold =
-    peakThreshold(options.falseAlarm, options.independent, background.leverage) +
-    PER_SPOILED * spoiledFraction;
+  const threshold = thresholdOver(background);
   const above = log(height / background.density) - threshold;
-  if (above <= 0 || above > FAR_ABOVE_LOG || !options.leastBackground) return above > 0;
-  return log(height / options.leastBackground()) > threshold;
+  if (above > FAR_ABOVE_LOG) return true;
+  if (above > 0)
+    return !options.leastBackground || log(height / options.leastBackground()) > threshold;
+  const { whole } = options;
+  const longer = whole && backgroundAt(whole.density, whole.binCpm, peak.cpm, whole.lengthS);
+  return longer ? log(height / longer.density) > thresholdOver(longer) : false;
 }

@@ -65,11 +65,17 @@ function fundamentalOf(part: EpochPart, peak: SpectrumPeak, settings: Settings) 
   );
 }
 
+/** What else is known when a part is judged: the row of an epoch, or the epoch that a half is of. */
+interface Around {
+  readonly row?: WindowRow | null;
+  readonly whole?: EpochPart;
+}
+
 function dominantOf(
   part: EpochPart,
   falseAlarm: number,
   settings: Settings,
-  row: WindowRow | null = null,
+  { row = null, whole }: Around,
 ): Dominant | null {
   const band = searchBand(settings);
   const peaks = bandPeaks(part.density, part.binCpm, band);
@@ -78,6 +84,7 @@ function dominantOf(
   const alone = standsOut(part, highest, {
     falseAlarm,
     independent: independentValues(band, part.lengthS),
+    ...(whole && { whole }),
     ...(row && { leastBackground: () => leastBackground(row, part.density, highest) }),
   });
   const peak = alone ? highest : row && steadyPeak(row, part.density, peaks, falseAlarm);
@@ -88,10 +95,12 @@ function dominantOf(
 
 /** Least change of DF from one half to the other that is more than one half can resolve. */
 const LEAST_CHANGE_CELLS = 3;
-/** From one half to the other a wave and its harmonic may wander apart by this share of the double. */
-const DOUBLE_ACROSS_HALVES = 0.15;
+/** From one half to the other a wave and its harmonic may wander apart by this share of the double, and at least so much. */
+const DOUBLE_ACROSS_HALVES = { share: 0.15, leastCpm: 0.75 };
 /** A line whose power falls below this share from one half to the other is not there in the other. */
-const GONE = 0.1;
+const GONE = 0.2;
+/** So far the wave of the slower half may have wandered in the other. */
+const WANDER_CPM = 0.3;
 
 interface HalfRhythm {
   readonly half: EpochPart;
@@ -99,12 +108,15 @@ interface HalfRhythm {
 }
 
 /** True where the faster half's peak is a harmonic of the slower's rhythm, which is there in it as well. */
-function isSameWave(slower: HalfRhythm, faster: HalfRhythm, settings: Settings): boolean {
+function isSameWave(slower: HalfRhythm, faster: HalfRhythm): boolean {
   const double = 2 * slower.peak.cpm;
-  if (Math.abs(faster.peak.cpm - double) > DOUBLE_ACROSS_HALVES * double) return false;
+  const { share, leastCpm } = DOUBLE_ACROSS_HALVES;
+  if (Math.abs(faster.peak.cpm - double) > Math.max(share * double, leastCpm)) return false;
   const { half, peak } = faster;
-  const peaks = bandPeaks(besidePeak(half, peak.cpm), half.binCpm, searchBand(settings));
-  return halfPeaks(peak, peaks).some(({ density }) => density >= GONE * slower.peak.density);
+  const from = Math.max(1, Math.round((slower.peak.cpm - WANDER_CPM) / half.binCpm));
+  const to = Math.round((slower.peak.cpm + WANDER_CPM) / half.binCpm);
+  const near = besidePeak(half, peak.cpm).subarray(from, to + 1);
+  return near.some((density) => density >= GONE * slower.peak.density);
 }
 
 /** True where two peaks are of different bands and clearly apart. */
@@ -125,16 +137,13 @@ function changesInside(input: EpochInput, settings: Settings): boolean {
   );
   if (!first || !second || !differ(first, second, input.lengthS, settings)) return false;
   const found = halves.flatMap((half): HalfRhythm[] => {
-    const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings);
+    const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings, { whole: input });
     if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing)) return [];
     return [{ half, peak: dominant.peak }];
   });
   if (found.length < 2) return false;
   const [slower, faster] = found.sort((a, b) => a.peak.cpm - b.peak.cpm);
-  return (
-    differ(slower.peak, faster.peak, input.lengthS, settings) &&
-    !isSameWave(slower, faster, settings)
-  );
+  return differ(slower.peak, faster.peak, input.lengthS, settings) && !isSameWave(slower, faster);
 }
 
 function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, settings: Settings) {
@@ -156,7 +165,7 @@ function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, setti
 export function epochRhythm(input: EpochInput, settings: Settings): EpochRhythm {
   const { density, binCpm } = input;
   const filled: readonly EpochFlag[] = input.spoiledFraction > 0 ? ['filled'] : [];
-  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input.row);
+  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input);
   if (!found) return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
   const { peak, outstanding, harmonic } = found;
   const flags = outstanding ? flagsOf(input, peak, harmonic, settings) : [];

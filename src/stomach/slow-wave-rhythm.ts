@@ -37,6 +37,8 @@ export interface StomachAnalysis {
   readonly binCpm: number;
   /** Stretches of the lead without samples. */
   readonly missing: readonly Interval[];
+  /** The breathing its epochs were judged beside; null where nothing is known of it. */
+  readonly breathing: BreathingSeries | null;
 }
 
 interface Lead {
@@ -182,5 +184,6 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
     epochSpectra: analysed.map(({ spectrum }) => spectrum),
     binCpm: lead.windows.binCpm,
     missing,
+    breathing: options.breathing,
   };
 }

@@ -106,7 +106,7 @@ function waveEvidence(own: number, beside: readonly Heights[]): WaveEvidence {
 }
 
 /** Evidence asked for at a false-alarm rate of 5 %; the highest of the peaks of noise passes it in under 1 % of epochs. */
-const ASKED = { there: 4, falseAlarm: 0.05 };
+const ASKED = { there: 3.5, falseAlarm: 0.05 };
 
 /**
  * The peak of an epoch for which the row has the most evidence, where that is enough at the

@@ -61,6 +61,7 @@ function analysisOf(made: readonly Made[]): StomachAnalysis {
     epochSpectra: made.map(({ dfCpm = 3, density = 8e5 }) => peaked(dfCpm, density)),
     binCpm: BIN_CPM,
     missing: [],
+    breathing: null,
   };
 }
 
