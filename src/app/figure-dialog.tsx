@@ -1,4 +1,5 @@
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
+import { FIGURE_MEANINGS } from '../recording/figure-meanings';
 import type { PhaseFindings } from '../recording/findings';
 import type { Settings } from '../recording/settings';
 import { goToStretch } from '../review/findings-go';
@@ -57,6 +58,7 @@ interface FigureFactsProps {
 
 function FigureFacts({ definition, part, settings }: FigureFactsProps) {
   const { large, small } = figureWords(part.figures[definition.key], definition);
+  const meaning = FIGURE_MEANINGS[definition.key];
   return (
     <>
       <p className="figure-value">
@@ -68,15 +70,15 @@ function FigureFacts({ definition, part, settings }: FigureFactsProps) {
       <dl className="facts-list">
         <div>
           <dt>Meaning</dt>
-          <dd>{definition.definition}</dd>
+          <dd>{meaning.definition}</dd>
         </div>
         <div>
           <dt>Source</dt>
-          <dd>{definition.source}</dd>
+          <dd>{meaning.source}</dd>
         </div>
         <div>
           <dt>Settings</dt>
-          <dd>{definition.settings(settings)}</dd>
+          <dd>{meaning.settings(settings)}</dd>
         </div>
       </dl>
     </>
