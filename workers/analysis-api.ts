@@ -1,4 +1,5 @@
 import type { BeatList } from '../src/recording/beat';
+import type { Doubt } from '../src/recording/doubt';
 import type { Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { BreathingSeries, HeartSegment, RrSeries } from '../src/recording/heart-series';
@@ -55,6 +56,13 @@ export interface ReviewInputs {
   readonly settings: Settings;
   readonly spans: readonly Span[];
   readonly beats: BeatList;
+}
+
+/** The doubts of a review as it stood at an edit; those in its `settled` are left out. */
+export interface DoubtList {
+  readonly edit: number;
+  /** The one that moves a figure most comes first. */
+  readonly open: readonly Doubt[];
 }
 
 /** Facts of the separation that the panes and dialogs show. */
