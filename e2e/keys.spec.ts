@@ -75,6 +75,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   sign: ['', 'dialog', /^Sign$/],
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
+  log: ['', 'dialog', /^Log$/],
   keys: ['', 'dialog', /^Keys$/],
   about: ['', 'dialog', /Bicadence/],
   report: ['', 'view', /^#report$/],

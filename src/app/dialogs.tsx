@@ -16,6 +16,7 @@ const AboutDialog = later('AboutDialog');
 const FigureDialog = later('FigureDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
+const LogDialog = later('LogDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
@@ -65,6 +66,8 @@ function OneDialog({ state, page }: OneDialogProps) {
       return <KeysDialog />;
     case 'about':
       return <AboutDialog />;
+    case 'log':
+      return <LogDialog page={page} />;
     case 'sign':
       return <SignDialog />;
     case 'text-reading':

@@ -24,6 +24,7 @@ export type DialogState =
   | { readonly kind: 'go-to' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
+  | { readonly kind: 'log' }
   | { readonly kind: 'sign' }
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
