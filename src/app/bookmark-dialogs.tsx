@@ -95,6 +95,7 @@ function BookmarkRow({ bookmark, onGo }: BookmarkRowProps) {
       <button
         type="button"
         className="go"
+        data-autofocus
         aria-label={`Go to the bookmark at ${at}`}
         onClick={onGo}
       >
