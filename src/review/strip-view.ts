@@ -18,6 +18,7 @@ import type { Gesture, StageActs } from './stage';
 import { Staleness } from './staleness';
 import { stomachBlocks } from './stomach-blocks';
 import { FLAG, PHASE_BOX, paintStrip, type StripScene } from './strip-paint';
+import { stripSpans } from './strip-spans';
 import type { ThemeTokens } from './theme-tokens';
 import { clockText, widthText } from './time-ticks';
 import { lookAtMinutes, lookAtSeconds } from './view-store';
@@ -151,7 +152,10 @@ export class StripView {
       phases: phasesOrWhole(this.phases(), durationS),
       blocks: stomachBlocks(epochs, state?.settings.epoch.stepS ?? 60),
       rate: this.rateNow(durationS),
-      spans: state?.spans ?? [],
+      spans: stripSpans(state?.spans ?? [], {
+        stomach: key ?? null,
+        heart: state?.roles.heart ? leadKey(state.roles.heart) : null,
+      }),
       bookmarksS: this.bookmarks().map(bookmarkAtS),
       draft,
       selection,
@@ -175,7 +179,7 @@ export class StripView {
       .map((kind) => `${count(kind)} ${kind}`);
     const limits = scene.rate?.limits;
     const rate = limits ? ` Heart rate on a scale of ${limits[0]} to ${limits[1]} a minute.` : '';
-    const spans = `${scene.spans.length} spoiled spans.`;
+    const spans = `${scene.spans.length} spoiled ${scene.spans.length === 1 ? 'span' : 'spans'}.`;
     const flags = this.bookmarks().map(
       (one, i, all) => ` ${bookmarkWords(one, i + 1, all.length)}.`,
     );
