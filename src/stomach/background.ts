@@ -209,7 +209,7 @@ export function standsOut(
     readonly independent: number;
     /** Stronger lines, which the holes of a spoiled window spread. */
     readonly besideCpm?: readonly Cpm[];
-    /** The least background at the peak that the minutes beside it allow, uV2/Hz; asked for near the limit only. */
+    /** The least background at the peak that the windows beside it allow, uV2/Hz; asked for near the limit only. */
     readonly leastBackground?: () => number;
     /** A longer window that holds this one: its background is as good, and known nearer to slow peaks. */
     readonly whole?: Spectrum;

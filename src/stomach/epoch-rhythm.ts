@@ -45,6 +45,8 @@ const searchBand = (settings: Settings): Band => settings.rhythmBands;
 interface Dominant {
   readonly peak: SpectrumPeak;
   readonly outstanding: boolean;
+  /** True where it stands out by itself, without the windows beside it. */
+  readonly alone: boolean;
   /** True where a higher peak, its locked double, has given way to it. */
   readonly harmonic: boolean;
 }
@@ -88,9 +90,9 @@ function dominantOf(
     ...(row && { leastBackground: () => leastBackground(row, part.density, highest) }),
   });
   const peak = alone ? highest : row && steadyPeak(row, part.density, peaks, falseAlarm);
-  if (!peak) return { peak: highest, outstanding: false, harmonic: false };
+  if (!peak) return { peak: highest, outstanding: false, alone, harmonic: false };
   const lower = fundamentalOf(part, peak, settings);
-  return { peak: lower ?? peak, outstanding: true, harmonic: lower !== null };
+  return { peak: lower ?? peak, outstanding: true, alone, harmonic: lower !== null };
 }
 
 /** Least change of DF from one half to the other that is more than one half can resolve. */
@@ -138,7 +140,8 @@ function changesInside(input: EpochInput, settings: Settings): boolean {
   if (!first || !second || !differ(first, second, input.lengthS, settings)) return false;
   const found = halves.flatMap((half): HalfRhythm[] => {
     const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings, { whole: input });
-    if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing)) return [];
+    if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing, true))
+      return [];
     return [{ half, peak: dominant.peak }];
   });
   if (found.length < 2) return false;
@@ -146,29 +149,30 @@ function changesInside(input: EpochInput, settings: Settings): boolean {
   return differ(slower.peak, faster.peak, input.lengthS, settings) && !isSameWave(slower, faster);
 }
 
-function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, settings: Settings) {
+function flagsOf(input: EpochInput, { peak, alone, harmonic }: Dominant, settings: Settings) {
   const { density, binCpm } = input;
   const flags: EpochFlag[] = [];
   if (harmonic) flags.push('harmonic');
   if (!harmonic && atHalfOfCrests(peak.cpm, input.crestCpm)) flags.push('half');
-  if (atBreathing(input, peak.cpm, input.breathing)) flags.push('breathing');
+  if (atBreathing(input, peak.cpm, input.breathing, alone)) flags.push('breathing');
   if (onDrift(density, binCpm, peak, settings.rhythmBands)) flags.push('drift');
   return flags;
 }
 
 /**
  * DF, DP, peak share, rhythm and flags of one kept epoch. The dominant peak is the highest local
- * maximum of the search band; a locked double gives way to its lower peak; two rhythms in its
- * halves make it mixed; without a peak that stands out of the local background there is no rhythm;
- * a peak that may be breathing or drift is not decidable.
+ * maximum of the search band where that stands out by itself, else the one for which the epoch and
+ * the independent windows beside it have the most evidence, where that is enough; a locked double
+ * gives way to its lower peak; two rhythms in its halves make it mixed; without such a peak there is
+ * no rhythm; a peak that may be breathing or drift is not decidable.
  */
 export function epochRhythm(input: EpochInput, settings: Settings): EpochRhythm {
   const { density, binCpm } = input;
   const filled: readonly EpochFlag[] = input.spoiledFraction > 0 ? ['filled'] : [];
   const found = dominantOf(input, settings.epoch.falseAlarm, settings, input);
   if (!found) return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
-  const { peak, outstanding, harmonic } = found;
-  const flags = outstanding ? flagsOf(input, peak, harmonic, settings) : [];
+  const { peak, outstanding } = found;
+  const flags = outstanding ? flagsOf(input, found, settings) : [];
   return {
     dfCpm: peak.cpm,
     dpDb: densityDb(peak.density),

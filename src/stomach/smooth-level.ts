@@ -1,16 +1,16 @@
 import { log } from '../numeric/elementary';
 
-/** Where the background is estimated; 0.5 cpm keeps clear of what taking off a line takes away. */
-const FIT_CPM = { lowCpm: 0.5, highCpm: 15 };
+/** Where the background is estimated: clear of what taking off a line takes away, and of most breathing. */
+const FIT_CPM = { lowCpm: 0.5, highCpm: 12 };
 const MOST_DEGREE = 3;
-const PASSES = 3;
+const PASSES = 6;
 /** Mean of the logarithm of an exponential variable of mean 1 is minus this (Euler's constant). */
 export const EULER = 0.5772156649015329;
 
 /** The smooth course of a logarithm of density over the logarithm of frequency. */
 export interface SmoothLevel {
   /**
-   * The polynomial of degree 1 or 2 in log frequency through `y` in 0.5-15 cpm by least squares;
+   * The polynomial of degree 1 to 3 in log frequency through `y` in 0.5-12 cpm by least squares;
    * what stands more than `most` above it is a line, not background, and has no say. Bin 0 is 0.
    */
   through(y: Float64Array, degree: number, most: number): Float64Array;
@@ -27,7 +27,7 @@ export function logFrequencies(binCpm: number, count: number): Float64Array {
   return known.logs.subarray(0, count);
 }
 
-/** Polynomials in log frequency, orthonormal over the bins from..end. */
+/** Polynomials in log frequency, orthonormal over the bins from..end under the weights of `product`. */
 function orthonormal(binCpm: number, count: number, from: number, end: number): Float64Array[] {
   const x = logFrequencies(binCpm, count);
   const made: Float64Array[] = [];
@@ -44,9 +44,10 @@ function orthonormal(binCpm: number, count: number, from: number, end: number): 
   return made;
 }
 
+/** Each octave weighs the same, so that breathing above the search band does not tilt what lies below. */
 function product(a: Float64Array, b: Float64Array, from: number, end: number): number {
   let sum = 0;
-  for (let k = from; k < end; k += 1) sum += a[k] * b[k];
+  for (let k = from; k < end; k += 1) sum += (a[k] * b[k]) / k;
   return sum;
 }
 

@@ -13,11 +13,11 @@ const OFFSETS_CPM = [-0.2, -0.1, 0, 0.1, 0.2];
 const STAYS = 0.9;
 const RETURNS = 0.7;
 const USUALLY_THERE = RETURNS / (1 - STAYS + RETURNS);
-/** Amplitudes over noise beyond which a window proves no more. */
+/** The argument of I0 beyond which a window proves no more. */
 const MOST_PROOF = 60;
 
-/** Likelihood of a height (over its background) with a wave of a power over that of noise alone (Rice 1944). */
-const likelihoodRatio = (power: number, height: number): number =>
+/** Likelihood of a height over the background with a wave of a power over it, against that of noise alone (Rice 1944). */
+export const likelihoodRatio = (power: number, height: number): number =>
   exp(-power) * besselI0(Math.min(MOST_PROOF, 2 * Math.sqrt(power * height)));
 
 const WEIGHTS = OFFSETS_CPM.map((cpm) => exp(-0.5 * (cpm / WANDER_CPM) ** 2));
@@ -105,7 +105,7 @@ function waveEvidence(own: number, beside: readonly Heights[]): WaveEvidence {
   return { there: log(there), here: log(there / pausing) };
 }
 
-/** Evidence asked for at a false-alarm rate of 5 %; the highest of the peaks of noise passes it in under 1 % of epochs. */
+/** Evidence asked for at a false-alarm rate of 5 %; the highest of the peaks of noise passes it in about 1 % of epochs. */
 const ASKED = { there: 3.5, falseAlarm: 0.05 };
 
 /**

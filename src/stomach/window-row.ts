@@ -6,7 +6,7 @@ import type { OverBackground } from './over-background';
 import type { SharedWindows } from './shared-windows';
 import { EULER, type SmoothLevel } from './smooth-level';
 
-/** A window of a row that share no sample; place counts windows from the epoch's own, which is 0. */
+/** A window of a row in which none shares a sample with another; place counts windows from the epoch's own, which is 0. */
 export interface RowWindow {
   readonly place: number;
   readonly over: OverBackground;
@@ -20,20 +20,22 @@ export interface WindowRow {
   readonly levelAt: (cpm: Cpm) => number;
 }
 
-/** Degree of the curve that noise of a row may have over its windows' own lines. */
+/** Degree of the curve in log frequency that noise of a row may have over its windows' own lines. */
 const CURVE_DEGREE = 3;
 /** What stands so far above the curve is a line; the mean of fewer windows scatters more. */
 const LINE_LOG = { one: 3, least: 0.2 };
 /** Where the flanks of a place lie, for 240 s: beyond the main lobe of a line there. */
 const FLANK = { nearCpm: 0.4, farCpm: 1.3, leastBins: 4, lowestCpm: 0.45 };
 const FLANK_LENGTH_S = 240;
+/** The top of a hump stands higher than its flanks: so many times as far over the curve (in logarithms; measured). */
+const TOP_OVER_FLANKS = 1.4;
 /** Half of the most by which the higher flank may lift the background over the lower one: more is another line. */
-const MOST_ABOVE_LOWER = 0.35;
+const MOST_ABOVE_LOWER = 0.6;
 
 /**
- * The background of a row over its windows' own lines, as a natural logarithm by frequency: a
- * parabola in log frequency through the mean of their logarithms, lifted to the flanks on both
- * sides of a place where these are higher. What is as wide as its flanks is no line but a hump.
+ * The background of a row over its windows' own lines, as a natural logarithm by frequency: a cubic
+ * in log frequency through the mean of their logarithms, lifted where the flanks on both sides of a
+ * place are higher. What is as wide as its flanks is no line but a hump.
  */
 function rowLevel(
   windows: readonly RowWindow[],
@@ -65,7 +67,7 @@ function rowLevel(
       below === null || above === null
         ? (below ?? above ?? 0)
         : Math.min(below, above) + Math.min(MOST_ABOVE_LOWER, Math.abs(below - above) / 2);
-    return curve[Math.round(cpm / binCpm)] + EULER + Math.max(0, 1.4 * flanks);
+    return curve[Math.round(cpm / binCpm)] + EULER + Math.max(0, TOP_OVER_FLANKS * flanks);
   };
 }
 
