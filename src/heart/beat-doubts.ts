@@ -1,22 +1,49 @@
 import type { Doubt } from '../recording/doubt';
+import { type BeatLook, createBeatLooks } from './beat-looks';
 import { type BeatDoubtsInput, type DoubtView, doubtView, type Reason } from './doubt-view';
-import { gapReasons } from './gap-doubts';
+import { gapReason } from './gap-doubts';
 import { oddsReasons } from './odds-doubts';
-import { rhythmReasons } from './rhythm-doubts';
-import { shapeReasons } from './shape-doubts';
+import { rhythmReason } from './rhythm-doubts';
+import { shapeReason } from './shape-doubts';
 
-/** Doubts of beats in ascending time, one a beat, without their effects. */
-export function beatDoubts(input: BeatDoubtsInput): readonly Doubt[] {
-  const view = doubtView(input);
+/** Beats looked at between two steps. */
+const BEATS_A_STEP = 40;
+
+/**
+ * Doubts of beats in ascending time, one a beat, without their effects, in small steps: yields the part done. `lookAt` tells
+ * how the heartbeat looks at a tick.
+ */
+export function* beatDoubtsInSteps(
+  input: BeatDoubtsInput,
+  lookAt: (tick: number) => BeatLook,
+): Generator<number, readonly Doubt[]> {
+  const looks: BeatLook[] = [];
+  for (const tick of input.beats.ticks) {
+    looks.push(lookAt(tick));
+    if (looks.length % BEATS_A_STEP === 0) yield (0.5 * looks.length) / input.beats.ticks.length;
+  }
+  const view = doubtView(input, looks);
   const byBeat = new Map<number, Reason>();
-  for (const find of [gapReasons, rhythmReasons, shapeReasons, oddsReasons])
-    for (const reason of find(view)) {
-      const before = byBeat.get(reason.beat);
-      if (!before || reason.strength > before.strength) byBeat.set(reason.beat, reason);
-    }
-  return [...byBeat.values()]
-    .sort((a, b) => a.beat - b.beat)
-    .map((reason) => doubtOf(view, reason));
+  const take = (reason: Reason | null) => {
+    const before = reason && byBeat.get(reason.beat);
+    if (reason && !(before && before.strength >= reason.strength)) byBeat.set(reason.beat, reason);
+  };
+  for (let beat = 0; beat < view.count; beat += 1) {
+    for (const find of [gapReason, rhythmReason, shapeReason]) take(find(view, beat));
+    if (beat % BEATS_A_STEP === 0) yield 0.5 + (0.5 * beat) / view.count;
+  }
+  oddsReasons(view).forEach(take);
+  return [...byBeat.values()].sort((a, b) => a.beat - b.beat).map((one) => doubtOf(view, one));
+}
+
+/** The doubts of beats at once. */
+export function beatDoubts(input: BeatDoubtsInput): readonly Doubt[] {
+  const looks = createBeatLooks({ ...input, averages: input.detection.averages });
+  const steps = beatDoubtsInSteps(input, looks);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
 }
 
 const BEFORE_GAP: readonly Doubt['kind'][] = ['missed-beat'];

@@ -1,10 +1,18 @@
 import { log } from '../numeric/elementary';
-import { medianInPlace } from '../numeric/statistics';
-import { BEAT_ORIGINS, type Beat, type BeatClass, type BeatList, beatAt } from '../recording/beat';
+import { runningMedian } from '../numeric/running-quantile';
+import {
+  BEAT_ORIGINS,
+  type Beat,
+  type BeatClass,
+  type BeatList,
+  type BeatOrigin,
+  beatAt,
+  firstBeatAt,
+} from '../recording/beat';
 import type { DoubtKind, Mend } from '../recording/doubt';
 import type { Interval } from '../recording/span';
 import type { Hertz } from '../units/rate';
-import { type BeatLook, createBeatLooks, likenessTo } from './beat-looks';
+import { type BeatLook, likenessTo } from './beat-looks';
 import type { Detection } from './detect';
 import { type Foretelling, foretellings } from './rhythm-foretold';
 import { beatTimes, blockedIntervals } from './rr-series';
@@ -47,7 +55,6 @@ export interface DoubtView extends BeatDoubtsInput {
   /** Whether the detector put it there: beats that a person put or moved are theirs. */
   readonly isOwn: (beat: number) => boolean;
   readonly look: (beat: number) => BeatLook;
-  readonly lookAtTick: (tick: number) => BeatLook;
   /** Likeness to the averages of classes, NaN where there are none. */
   readonly likeness: (beat: number, classes: readonly BeatClass[]) => number;
   /** Usual likeness to the best average, and usual size, of the beats about one. */
@@ -55,19 +62,18 @@ export interface DoubtView extends BeatDoubtsInput {
   readonly usualSize: (beat: number) => number;
 }
 
-const USUAL_OF = 10;
+/** Beats that tell what is usual about one. */
+const USUAL_OF = 21;
 
 /** Beats of classes that have the shape of normal ones. */
 export const NARROW = ['N', 'S'] as const;
 export const WIDE = ['V', 'F'] as const;
 
-export function doubtView(
-  input: BeatDoubtsInput,
-  lookAtTick: (tick: number) => BeatLook = createBeatLooks({
-    ...input,
-    averages: input.detection.averages,
-  }),
-): DoubtView {
+/** Beats that nobody has put or moved by hand. */
+const OWN: readonly BeatOrigin[] = ['detected', 'imported'];
+
+/** The view of beats; `looks` is how each of them looks. */
+export function doubtView(input: BeatDoubtsInput, looks: readonly BeatLook[]): DoubtView {
   const { beats, rateHz, blocked, detection } = input;
   const timesS = beatTimes(beats, rateHz);
   const broken = blockedIntervals(timesS, blocked);
@@ -77,18 +83,9 @@ export function doubtView(
   const rrMs = timesS.map((timeS, i) =>
     i === 0 || broken[i - 1] === 1 ? Number.NaN : 1000 * (timeS - timesS[i - 1]),
   );
-  const look = (beat: number) => lookAtTick(beats.ticks[beat]);
-  const detected = [BEAT_ORIGINS.indexOf('detected'), BEAT_ORIGINS.indexOf('imported')];
-  const few = new Float64Array(2 * USUAL_OF + 1);
-  const medianAbout = (beat: number, value: (i: number) => number) => {
-    let n = 0;
-    const last = Math.min(timesS.length - 1, beat + USUAL_OF);
-    for (let i = Math.max(0, beat - USUAL_OF); i <= last; i += 1) {
-      const one = value(i);
-      if (!Number.isNaN(one)) few[n++] = one;
-    }
-    return medianInPlace(few, n);
-  };
+  const usual = (value: (look: BeatLook) => number) =>
+    runningMedian(Float64Array.from(looks, value), USUAL_OF);
+  const [likenesses, sizes] = [usual(bestLikeness), usual(({ size }) => size)];
   return {
     ...input,
     count: timesS.length,
@@ -97,12 +94,11 @@ export function doubtView(
     logRr,
     ways: foretellings(logRr),
     classOf: (beat) => beatAt(beats, beat).beatClass,
-    isOwn: (beat) => detected.includes(beats.origins[beat]),
-    look,
-    lookAtTick,
-    likeness: (beat, classes) => likenessTo(look(beat), detection.averages, classes),
-    usualLikeness: (beat) => medianAbout(beat, (i) => bestLikeness(look(i))),
-    usualSize: (beat) => medianAbout(beat, (i) => look(i).size),
+    isOwn: (beat) => OWN.includes(BEAT_ORIGINS[beats.origins[beat]]),
+    look: (beat) => looks[beat],
+    likeness: (beat, classes) => likenessTo(looks[beat], detection.averages, classes),
+    usualLikeness: (beat) => likenesses[beat],
+    usualSize: (beat) => sizes[beat],
   };
 }
 
@@ -127,12 +123,11 @@ export const removal = ({ beats }: DoubtView, beat: number): Mend => ({
 
 /** The change that puts beats in; null where each place is taken. */
 export function insertion({ beats }: DoubtView, wanted: readonly Beat[]): Mend | null {
-  const taken = new Set(beats.ticks);
-  const added = wanted.filter(({ tick }) => {
-    if (taken.has(tick)) return false;
-    taken.add(tick);
-    return true;
-  });
+  const added = wanted.filter(
+    ({ tick }, i) =>
+      beats.ticks[firstBeatAt(beats, tick)] !== tick &&
+      wanted.findIndex((other) => other.tick === tick) === i,
+  );
   if (added.length === 0) return null;
   const verb = added.every(({ origin }) => origin === 'placed') ? 'place' : 'insert';
   const words = added.length === 1 ? `${verb} beat` : `${verb} ${added.length} beats`;

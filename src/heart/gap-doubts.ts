@@ -79,18 +79,13 @@ export function bestBetween(view: DoubtView, fromS: number, toS: number): Seen |
   return best;
 }
 
-/** Intervals in which beats may be missing. */
-export function gapReasons(view: DoubtView): readonly Reason[] {
-  const reasons: Reason[] = [];
-  for (let beat = 1; beat < view.count; beat += 1) {
-    const long = longInterval(view, beat);
-    const reason = long && gapReason(view, beat, long);
-    if (reason) reasons.push(reason);
-  }
-  return reasons;
+/** Why beats may be missing in the interval that ends at a beat; null where none seem to. */
+export function gapReason(view: DoubtView, beat: number): Reason | null {
+  const long = beat > 0 ? longInterval(view, beat) : null;
+  return long && reasonOf(view, beat, long);
 }
 
-function gapReason(view: DoubtView, beat: number, { usualMs, parts }: LongInterval): Reason | null {
+function reasonOf(view: DoubtView, beat: number, { usualMs, parts }: LongInterval): Reason | null {
   const { timesS, rrMs } = view;
   const [fromS, toS] = [timesS[beat - 1], timesS[beat]];
   const rr = Math.round(rrMs[beat]);

@@ -56,15 +56,10 @@ const isExtra = ({ before, after, spread }: Standing) =>
 const isEarly = ({ before, spread }: Standing) =>
   before < -OUT_SPREADS * spread && before < log(EARLY_PART);
 
-/** Beats too many, early or on time where their class says otherwise. */
-export function rhythmReasons(view: DoubtView): readonly Reason[] {
-  const reasons: Reason[] = [];
-  for (let beat = 1; beat < view.count; beat += 1) {
-    if (!view.isOwn(beat) || Number.isNaN(view.rrMs[beat])) continue;
-    const reason = nearReason(view, beat) ?? placeReason(view, beat);
-    if (reason) reasons.push(reason);
-  }
-  return reasons;
+/** Why a beat may be too many, early, or on time where its class says otherwise; null where it is none of these. */
+export function rhythmReason(view: DoubtView, beat: number): Reason | null {
+  if (!view.isOwn(beat) || Number.isNaN(view.rrMs[beat])) return null;
+  return nearReason(view, beat) ?? placeReason(view, beat);
 }
 
 /** Two beats so near that they are one. */

@@ -23,19 +23,15 @@ const FAR = 0.13;
 
 const percent = (share: number) => `${Math.round(100 * share)} %`;
 
-/** Beats that do not look as their class does. */
-export function shapeReasons(view: DoubtView): readonly Reason[] {
-  const reasons: Reason[] = [];
-  for (let beat = 0; beat < view.count; beat += 1) {
-    if (!view.isOwn(beat) || Number.isNaN(bestLikeness(view.look(beat)))) continue;
-    const reason =
-      turnedReason(view, beat) ??
-      classReason(view, beat) ??
-      lowReason(view, beat) ??
-      oddReason(view, beat);
-    if (reason) reasons.push(reason);
-  }
-  return reasons;
+/** Why a beat does not look as its class does; null where it does. */
+export function shapeReason(view: DoubtView, beat: number): Reason | null {
+  if (!view.isOwn(beat) || Number.isNaN(bestLikeness(view.look(beat)))) return null;
+  return (
+    turnedReason(view, beat) ??
+    classReason(view, beat) ??
+    lowReason(view, beat) ??
+    oddReason(view, beat)
+  );
 }
 
 function turnedReason(view: DoubtView, beat: number): Reason | null {
