@@ -75,6 +75,9 @@ const CHECKS: Readonly<Record<string, Check>> = {
   sign: ['', 'dialog', /^Sign$/],
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
+  log: ['', 'dialog', /^Log$/],
+  'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
+  bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
   about: ['', 'dialog', /Bicadence/],
   report: ['', 'view', /^#report$/],
@@ -127,7 +130,10 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'span-for-both': ['Control+e 1', 'span', / both$/],
 };
 
-/** Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. */
+/**
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
+ * stepped through in room.spec.
+ */
 const ELSEWHERE = [
   'open-file',
   'open-session',
@@ -135,6 +141,8 @@ const ELSEWHERE = [
   'close-study',
   'download-session',
   'download-results',
+  'next-bookmark',
+  'previous-bookmark',
   'stop',
 ];
 
