@@ -81,6 +81,9 @@ const CHECKS: Readonly<Record<string, Check>> = {
   sign: ['', 'dialog', /^Sign$/],
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
+  log: ['', 'dialog', /^Log$/],
+  'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
+  bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
   about: ['', 'dialog', /Bicadence/],
   report: ['', 'view', /^#report$/],
@@ -136,7 +139,10 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'span-for-both': ['Control+e 1', 'span', / both$/],
 };
 
-/** Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. */
+/**
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
+ * stepped through in room.spec.
+ */
 const ELSEWHERE = [
   'open-file',
   'open-session',
@@ -144,6 +150,8 @@ const ELSEWHERE = [
   'close-study',
   'download-session',
   'download-results',
+  'next-bookmark',
+  'previous-bookmark',
   'stop',
 ];
 
@@ -315,25 +323,25 @@ test('a key is changed by the person, shown and obeyed everywhere, and given bac
   );
   await page.keyboard.press('Control+w');
   await expect(dialog.getByRole('alert')).toContainText('kept by the browser');
-  await page.keyboard.press('y');
+  await page.keyboard.press('j');
   await expect(dialog.getByRole('alert')).toHaveCount(0);
-  expect((await keysOnPage()).get('next-beat')).toEqual(['Y']);
+  expect((await keysOnPage()).get('next-beat')).toEqual(['J']);
   await change('Drag to exclude, or to look').click();
   await page.keyboard.press('Escape');
   await expect(dialog, 'Escape leaves the key as it was').toBeVisible();
   await change('Drag to exclude, or to look').click();
-  await page.keyboard.press('x');
+  await page.keyboard.press('z');
   await page.keyboard.press('Escape');
   await expect(dialog).toBeHidden();
   await press(page, '.');
   expect(await SIGHTS.chosen()).toBe('');
-  await press(page, 'y');
+  await press(page, 'j');
   expect(await SIGHTS.chosen()).toMatch(/^beat /);
   const drag = page.getByRole('button', { name: 'Exclude by dragging' });
-  await expect(drag).toHaveAttribute('title', 'Drag to exclude, or to look (X)');
+  await expect(drag).toHaveAttribute('title', 'Drag to exclude, or to look (Z)');
   const kept = await page.evaluate(() => localStorage.getItem('bicadence.preferences'));
   expect(JSON.parse(kept ?? '')).toMatchObject({
-    ownKeys: { 'next-beat': 'Y', 'toggle-tool': 'X' },
+    ownKeys: { 'next-beat': 'J', 'toggle-tool': 'Z' },
   });
   await press(page, 'F1');
   await dialog.getByRole('button', { name: 'Back to the given keys (2 changed)' }).click();

@@ -1,3 +1,4 @@
+import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
 import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
@@ -9,6 +10,7 @@ export const COMMANDS: readonly Command[] = [
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...BOOKMARK_COMMANDS,
   ...PAGE_COMMANDS,
 ];
 

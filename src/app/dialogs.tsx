@@ -14,9 +14,12 @@ const later = <K extends keyof Later>(name: K) =>
 
 const AboutDialog = later('AboutDialog');
 const BeatsBetweenDialog = later('BeatsBetweenDialog');
+const AddBookmarkDialog = later('AddBookmarkDialog');
+const BookmarksDialog = later('BookmarksDialog');
 const FigureDialog = later('FigureDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
+const LogDialog = later('LogDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
@@ -64,10 +67,16 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <GoToDialog />;
     case 'beats-between':
       return <BeatsBetweenDialog parts={parts} />;
+    case 'add-bookmark':
+      return <AddBookmarkDialog />;
+    case 'bookmarks':
+      return <BookmarksDialog />;
     case 'keys':
       return <KeysDialog parts={parts} />;
     case 'about':
       return <AboutDialog />;
+    case 'log':
+      return <LogDialog page={parts.page} />;
     case 'sign':
       return <SignDialog />;
     case 'text-reading':

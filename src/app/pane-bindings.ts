@@ -83,7 +83,7 @@ const BEATS: readonly Command[] = [
   paneCommand(
     'beats-between',
     'Select beats from one time to another…',
-    ['Ctrl+B'],
+    ['Shift+V'],
     'beats',
     (_, { shell }) => shell.getState().openDialog({ kind: 'beats-between' }),
   ),

@@ -24,8 +24,11 @@ export type DialogState =
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
   | { readonly kind: 'beats-between' }
+  | { readonly kind: 'add-bookmark' }
+  | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
+  | { readonly kind: 'log' }
   | { readonly kind: 'sign' }
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
