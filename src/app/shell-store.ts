@@ -2,6 +2,7 @@ import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
 import type { KeptRow } from './controller';
+import type { OwnKeys } from './own-keys';
 import { readPreferences, type ThemeChoice, writePreferences } from './preferences';
 
 /** The dialog that stands over the page. */
@@ -22,6 +23,7 @@ export type DialogState =
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
+  | { readonly kind: 'beats-between' }
   | { readonly kind: 'add-bookmark' }
   | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }
@@ -51,6 +53,8 @@ export interface ShellState {
   readonly theme: ThemeChoice;
   /** Keys that are a single letter, digit or sign act only while this is on. */
   readonly plainKeys: boolean;
+  /** Keys the person has given to commands instead of those of the table. */
+  readonly ownKeys: OwnKeys;
   openDialog(dialog: DialogState): void;
   closeDialog(): void;
   say(text: string): void;
@@ -59,6 +63,7 @@ export interface ShellState {
   putAway(id: number): void;
   setTheme(theme: ThemeChoice): void;
   setPlainKeys(on: boolean): void;
+  setOwnKeys(ownKeys: OwnKeys): void;
 }
 
 export type ShellStore = StoreApi<ShellState>;
@@ -100,10 +105,10 @@ export function createShellStore(storage: Storage | null): ShellStore {
       nextId += 1;
       set((before) => ({ messages: withMessage(before.messages, message) }));
     };
-    const prefer = (change: Partial<Pick<ShellState, 'theme' | 'plainKeys'>>) => {
+    const prefer = (change: Partial<Pick<ShellState, 'theme' | 'plainKeys' | 'ownKeys'>>) => {
       set(change);
-      const { theme, plainKeys } = get();
-      writePreferences(storage, { theme, plainKeys });
+      const { theme, plainKeys, ownKeys } = get();
+      writePreferences(storage, { theme, plainKeys, ownKeys });
     };
     return {
       ...readPreferences(storage),
@@ -128,6 +133,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
         set((before) => ({ messages: before.messages.filter((one) => one.id !== id) })),
       setTheme: (theme) => prefer({ theme }),
       setPlainKeys: (plainKeys) => prefer({ plainKeys }),
+      setOwnKeys: (ownKeys) => prefer({ ownKeys }),
     };
   });
 }
