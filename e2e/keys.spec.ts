@@ -69,7 +69,11 @@ type WindowChange = 'earlier' | 'later' | 'closer' | 'wider';
 
 const CHECKS: Readonly<Record<string, Check>> = {
   roles: ['', 'dialog', /^Leads and their roles$/],
-  phases: ['', 'dialog', /^Phases and events$/],
+  phases: ['', 'dialog', /^Phases$/],
+  spans: ['', 'dialog', /^Spoiled spans$/],
+  notes: ['', 'dialog', /^Events and symptoms$/],
+  'event-here': ['', 'dialog', /^Events and symptoms$/],
+  'symptom-here': ['', 'dialog', /^Events and symptoms$/],
   protocol: ['', 'dialog', /^Meal and protocol$/],
   settings: ['', 'dialog', /^Settings of the figures$/],
   sign: ['', 'dialog', /^Sign$/],

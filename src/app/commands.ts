@@ -2,6 +2,7 @@ import type { Command, CommandParts } from './command';
 import { isPlainKey } from './key-names';
 import { PANE_COMMANDS } from './pane-bindings';
 import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './shell-commands';
+import { TIME_COMMANDS } from './time-commands';
 
 /** Every act of the page. */
 export const COMMANDS: readonly Command[] = [
@@ -9,6 +10,7 @@ export const COMMANDS: readonly Command[] = [
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...TIME_COMMANDS,
   ...PAGE_COMMANDS,
 ];
 
