@@ -6,7 +6,7 @@ export interface NoteDraft {
   readonly kind: NotedKind;
   readonly at: string;
   readonly text: string;
-  /** '' while none is chosen; events have none. */
+  /** '' while none is typed; events have none. */
   readonly score: string;
 }
 
@@ -15,7 +15,7 @@ export type ReadNote =
   | { readonly ok: true; readonly note: Noted }
   | { readonly ok: false; readonly faults: NoteFaults };
 
-export const SCORES: readonly number[] = Array.from({ length: HIGHEST_SCORE + 1 }, (_, i) => i);
+const SCORE = { least: 0, most: HIGHEST_SCORE, unit: '', whole: true } as const;
 
 export const blankNote = (kind: NotedKind, atS: number | null): NoteDraft => ({
   kind,
@@ -38,10 +38,7 @@ export function readNote({ kind, at, text, score }: NoteDraft, frame: TimeFrame)
   const words = text.trim();
   const wrongText =
     words !== '' ? null : kind === 'event' ? 'Say what happened.' : 'Say what is felt.';
-  const wrongScore =
-    kind === 'symptom' && !SCORES.some((one) => String(one) === score)
-      ? `Choose a score from 0 to ${HIGHEST_SCORE}.`
-      : null;
+  const scored = readNumber(kind === 'symptom' ? score : '0', SCORE);
   if ((read.kind !== 'study' && read.kind !== 'clock') || wrongText !== null || wrongScore !== null)
     return {
       ok: false,

@@ -57,17 +57,21 @@ export function TimeField({ places = [], frame, ...field }: TimeFieldProps) {
   const { label, value, onChange, error } = field;
   const hidden = useView((view) => view.identityHidden);
   return (
-    <div className="time-field">
-      <Field {...field} size="short" hint={error ? '' : readWords(value, frame, hidden)} />
-      {places.length > 0 ? (
-        <PlaceChoice
-          label={`${label}: at an annotation or event`}
-          places={places}
-          hidden={hidden}
-          onChoose={(atS) => onChange(timeText(atS))}
-        />
-      ) : null}
-    </div>
+    <Field
+      {...field}
+      size="short"
+      hint={error ? '' : readWords(value, frame, hidden)}
+      beside={
+        places.length > 0 ? (
+          <PlaceChoice
+            label={`At an annotation or event (${label})`}
+            places={places}
+            hidden={hidden}
+            onChoose={(atS) => onChange(timeText(atS))}
+          />
+        ) : null
+      }
+    />
   );
 }
 
