@@ -1,5 +1,6 @@
 import { HIGHEST_SCORE, type KeptNote, type Noted, type NotedKind } from '../session/note-edits';
 import { readTypedTime, type TimeFrame, timeText, typedTimeFault } from '../units/typed-time';
+import { readNumber } from './number-field';
 
 /** An event or symptom as it is being typed. */
 export interface NoteDraft {
@@ -39,13 +40,13 @@ export function readNote({ kind, at, text, score }: NoteDraft, frame: TimeFrame)
   const wrongText =
     words !== '' ? null : kind === 'event' ? 'Say what happened.' : 'Say what is felt.';
   const scored = readNumber(kind === 'symptom' ? score : '0', SCORE);
-  if ((read.kind !== 'study' && read.kind !== 'clock') || wrongText !== null || wrongScore !== null)
+  if ((read.kind !== 'study' && read.kind !== 'clock') || wrongText !== null || !scored.ok)
     return {
       ok: false,
       faults: {
         ...(wrongAt === null ? {} : { at: wrongAt }),
         ...(wrongText === null ? {} : { text: wrongText }),
-        ...(wrongScore === null ? {} : { score: wrongScore }),
+        ...(scored.ok ? {} : { score: scored.error }),
       },
     };
   const { atS } = read;
@@ -54,6 +55,6 @@ export function readNote({ kind, at, text, score }: NoteDraft, frame: TimeFrame)
     note:
       kind === 'event'
         ? { kind, atS, text: words }
-        : { kind, atS, text: words, score: Number(score) },
+        : { kind, atS, text: words, score: scored.value },
   };
 }

@@ -13,14 +13,7 @@ import { timeText } from '../units/typed-time';
 import { useApp, useSession, useView, withReviewer } from './app-context';
 import { Dialog } from './dialog';
 import { Choice, Field } from './fields';
-import {
-  blankNote,
-  draftOf,
-  type NoteDraft,
-  type NoteFaults,
-  readNote,
-  SCORES,
-} from './note-draft';
+import { blankNote, draftOf, type NoteDraft, type NoteFaults, readNote } from './note-draft';
 import { TimeField, timeRule, useTimeFrame } from './time-field';
 
 /** Where an event or symptom is to be written at once; the dialog closes when it is. */
@@ -175,10 +168,11 @@ function NoteFields({ draft, fixed, faults, onChange }: NoteFieldsProps) {
         error={faults.text}
       />
       {symptom ? (
-        <Choice
-          label="score, 10 is worst"
+        <Field
+          label="score, 0 to 10"
+          size="short"
+          inputMode="decimal"
           value={draft.score}
-          options={[['', 'choose'], ...SCORES.map((one) => [String(one), String(one)] as const)]}
           onChange={(score) => type({ score })}
           error={faults.score}
         />

@@ -28,7 +28,7 @@ describe('a typed event or symptom', () => {
       ok: false,
       faults: {
         at: 'The recording ends at 1:30:00.',
-        score: 'Choose a score from 0 to 10.',
+        score: 'Type a whole number from 0 to 10.',
       },
     });
   });
