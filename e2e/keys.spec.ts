@@ -79,6 +79,8 @@ const CHECKS: Readonly<Record<string, Check>> = {
   sign: ['', 'dialog', /^Sign$/],
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
+  'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
+  bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
   about: ['', 'dialog', /Bicadence/],
   report: ['', 'view', /^#report$/],
@@ -131,7 +133,10 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'span-for-both': ['Control+e 1', 'span', / both$/],
 };
 
-/** Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. */
+/**
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
+ * stepped through in room.spec.
+ */
 const ELSEWHERE = [
   'open-file',
   'open-session',
@@ -139,6 +144,8 @@ const ELSEWHERE = [
   'close-study',
   'download-session',
   'download-results',
+  'next-bookmark',
+  'previous-bookmark',
   'stop',
 ];
 

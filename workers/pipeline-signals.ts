@@ -5,6 +5,7 @@ import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import type { Interval, Span } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
+import { loadRoutes, type Routes } from '../src/separate/routes';
 import { createSeparation, redrawSlowWave, type Separation } from '../src/separate/separation';
 import { keptSamples } from '../src/stomach/kept-samples';
 import { createSpoilWatch, type SpoilWatch } from '../src/trust/spoil-watch';
@@ -91,6 +92,7 @@ export class SignalStore {
   readonly #source: SignalSource;
   readonly #kept = new Map<string, LeadSignals>();
   readonly #drawn = new Map<string, Drawn>();
+  #routes: Routes = new Map();
 
   constructor(source: SignalSource) {
     this.#source = source;
@@ -104,6 +106,8 @@ export class SignalStore {
   async provide(wanted: readonly WantedLead[], settings: Settings, job: Job): Promise<void> {
     const missing = joinWanted(wanted).filter((one) => !this.#has(one, settings));
     if (missing.length === 0) return;
+    const { slowRoute, heartRoute } = settings;
+    this.#routes = new Map([...this.#routes, ...(await loadRoutes([slowRoute, heartRoute]))]);
     const readings = missing.map((one) => this.#begin(one, settings));
     await passOverLeads(this.#source, readings, job, 'Reading the recording');
     for (const reading of readings) {
@@ -142,7 +146,7 @@ export class SignalStore {
     const before = this.#drawn.get(key);
     if (before?.from === from && before.drawnBy === drawnBy) return before.output;
     const kept = keptSamples(from.recorded, from.rateHz, spoiled);
-    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing });
+    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing }, this.#routes);
     this.#drawn.set(key, { from, drawnBy, output });
     return output;
   }
@@ -183,7 +187,14 @@ export class SignalStore {
       : null;
     const separation: Separation | null =
       wanted.slow || wanted.heart
-        ? createSeparation({ lead: key, rateHz, sampleCount, settings, wants: wanted })
+        ? createSeparation({
+            lead: key,
+            rateHz,
+            sampleCount,
+            settings,
+            routes: this.#routes,
+            wants: wanted,
+          })
         : null;
     const breathing: BreathingSampler | null = wanted.breathing
       ? createBreathingSampler(rateHz)

@@ -3,6 +3,7 @@ import { quickKey } from '../src/decode/quick-key';
 import { type Detection, type DetectionInput, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
 import { NO_BEATS } from '../src/recording/beat';
+import type { SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import { type Lead, leadKey } from '../src/recording/lead';
 import { lostOn } from '../src/recording/lost';
@@ -19,8 +20,10 @@ import type {
   Analysis,
   Columns,
   ColumnsRequest,
+  DoubtList,
   Given,
   JobId,
+  LookAlikes,
   Opened,
   PlacedBeat,
   Proposal,
@@ -36,12 +39,20 @@ import {
 import { inTurns, type Job } from './job';
 import { doubtedOf, judgedSpans } from './judged-spans';
 import { columnsOf } from './pipeline-columns';
+import { type DoubtInputs, doubtList, lookAlikes } from './pipeline-doubts';
 import { measureHeartbeats } from './pipeline-measures';
-import { type Computed, createResults, type Results } from './pipeline-results';
+import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
 import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
 import { type Remembered, remember } from './remember';
+import { sameReview } from './same-series';
+
+/** Results with what they were computed from. */
+interface Reckoned {
+  readonly from: ResultInputs;
+  readonly computed: Computed;
+}
 
 interface Study {
   readonly source: SignalSource;
@@ -51,6 +62,8 @@ interface Study {
   detection: { readonly key: string; readonly found: Detection } | null;
   heartLead: Lead | null;
   readonly reference: Remembered<ReferenceInputs, Float64Array | null>;
+  /** What the last analysis stood on and gave. */
+  last: Reckoned | null;
   /** Ends when the long work under way does. */
   busy: Promise<void>;
 }
@@ -68,6 +81,13 @@ export interface Pipeline {
   firstRoles(): Promise<Roles>;
   propose(given: Given, job: Job): Promise<Proposal>;
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
+  doubts(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<DoubtList>;
+  lookAlikes(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    doubtId: string,
+    job: Job,
+  ): Promise<LookAlikes>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -96,6 +116,7 @@ export function createPipeline(): Pipeline {
         detection: null,
         heartLead: null,
         reference: remember(referenceKey, breathingReference),
+        last: null,
         busy: Promise.resolve(),
       };
       opened = { ticket, study };
@@ -110,6 +131,14 @@ export function createPipeline(): Pipeline {
     firstRoles: () => firstRoles(study()),
     propose: (given, job) => inLine(study(), job, (one) => propose(one, given, job)),
     analyse: (inputs, job) => inLine(study(), job, (one) => analyse(one, inputs, job)),
+    async doubts(inputs, settled, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return doubtList(from, settled, job);
+    },
+    async lookAlikes(inputs, settled, doubtId, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return lookAlikes(from, settled, doubtId);
+    },
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
@@ -262,6 +291,18 @@ async function detectionOf(
 }
 
 async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<Analysis> {
+  const { computed } = await reckon(study, inputs, job);
+  return study.results.deliver(computed);
+}
+
+/** What the doubts of a review stand on: the last analysis where it was of the same review. */
+async function doubtInputs(study: Study, inputs: ReviewInputs, job: Job): Promise<DoubtInputs> {
+  const known = study.last && sameReview(study.last.from.inputs, inputs) ? study.last : null;
+  const { from, computed } = known ?? (await reckon(study, inputs, job));
+  return { ...from, inputs, computed, recording: study.source.recording };
+}
+
+async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Reckoned> {
   const { roles, settings } = inputs;
   await study.signals.provide(wantedOf(roles), settings, job);
   const { heart } = roles;
@@ -288,7 +329,9 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
   };
   const first = await study.results.of(from, job);
   const slow = redrawn(study, inputs, from.slow, { first, spoiledOf });
-  return study.results.deliver(slow ? await study.results.of({ ...from, slow }, job) : first);
+  const last = slow ? { ...from, slow } : from;
+  study.last = { from: last, computed: slow ? await study.results.of(last, job) : first };
+  return study.last;
 }
 
 /**

@@ -1,3 +1,4 @@
+import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
 import { isPlainKey } from './key-names';
 import { PANE_COMMANDS } from './pane-bindings';
@@ -11,6 +12,7 @@ export const COMMANDS: readonly Command[] = [
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
   ...TIME_COMMANDS,
+  ...BOOKMARK_COMMANDS,
   ...PAGE_COMMANDS,
 ];
 

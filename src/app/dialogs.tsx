@@ -13,6 +13,8 @@ const later = <K extends keyof Later>(name: K) =>
   lazy<Later[K]>(() => asWork(import('./later-dialogs')).then((all) => ({ default: all[name] })));
 
 const AboutDialog = later('AboutDialog');
+const AddBookmarkDialog = later('AddBookmarkDialog');
+const BookmarksDialog = later('BookmarksDialog');
 const FigureDialog = later('FigureDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
@@ -67,6 +69,10 @@ function OneDialog({ state, page }: OneDialogProps) {
       return <SettingsDialog />;
     case 'go-to':
       return <GoToDialog />;
+    case 'add-bookmark':
+      return <AddBookmarkDialog />;
+    case 'bookmarks':
+      return <BookmarksDialog />;
     case 'keys':
       return <KeysDialog />;
     case 'about':

@@ -29,6 +29,8 @@ export type DialogState =
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
+  | { readonly kind: 'add-bookmark' }
+  | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
   | { readonly kind: 'sign' }
