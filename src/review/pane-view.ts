@@ -95,7 +95,15 @@ export class PaneView {
     const { view, analysis, session } = this.stores;
     const { name } = this.kind;
     const drawnFrom = (state: ViewState) =>
-      [state[name], state.gainsUv, state.levelsDb, state.selection, state.draft] as const;
+      [
+        state[name],
+        state.gainsUv,
+        state.levelsDb,
+        state.selection,
+        state.draft,
+        state.phaseDraft,
+        state.identityHidden,
+      ] as const;
     this.stops.push(
       view.subscribe((now, before) => {
         const [a, b] = [drawnFrom(now), drawnFrom(before)];
@@ -159,7 +167,10 @@ export class PaneView {
       bottomPx: this.bottomPx,
       axisPx: this.axisPx,
       coarsest: this.kind.coarsest,
-      phases: this.stores.session.getState().session?.state.phases ?? [],
+      phases:
+        this.stores.view.getState().phaseDraft?.phases ??
+        this.stores.session.getState().session?.state.phases ??
+        [],
       events: notedEvents(this.stores),
       headPx: this.kind.showsPhaseNames ? this.topPx : 0,
       xOf: this.xOf,
