@@ -13,6 +13,17 @@ const writeHere =
 /** What is noted and excluded at typed times. */
 export const TIME_COMMANDS: readonly Command[] = [
   {
+    id: 'phase-borders',
+    words: 'Move the borders of phases by keys',
+    keys: ['Shift+G'],
+    group: 'study',
+    when: 'panes',
+    menu: 'study',
+    ready: ({ session }) => (session.getState().session?.state.phases.length ?? 0) > 0,
+    whyNot: () => 'no phase is marked',
+    run: ({ panes }) => panes.movePhaseBorders(),
+  },
+  {
     id: 'spans',
     words: 'Spoiled spans by number…',
     keys: ['Shift+H'],

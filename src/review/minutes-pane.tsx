@@ -1,14 +1,17 @@
-import { useCallback, useMemo } from 'react';
+import { lazy, Suspense, useCallback, useMemo } from 'react';
 import { useStore } from 'zustand';
+import { asWork } from './idle';
 import { useLeadsShown } from './leads-shown';
 import { MINUTES, minutesActs } from './minutes-view';
 import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
 import { minutesRows, reportedOnly } from './rows';
-import { SpanBar } from './span-bar';
 import { EpochTable, SpanTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 import { useRoles } from './use-roles';
+
+/** Fetched when a span is selected first. */
+const SpanBar = lazy(() => asWork(import('./span-bar')).then((all) => ({ default: all.SpanBar })));
 
 /** The pane with the stomach's time scale. */
 export function MinutesPane(props: PaneProps) {
@@ -16,6 +19,7 @@ export function MinutesPane(props: PaneProps) {
   const allRoles = useRoles(stores);
   const shown = useLeadsShown(stores.view);
   const excluding = useStore(stores.view, (state) => state.tool === 'exclude');
+  const chosen = useStore(stores.view, (state) => state.selection.kind === 'span');
   const several = (allRoles?.slow.length ?? 0) > 1;
   const roles = useMemo(
     () => (allRoles && shown === 'reported' ? reportedOnly(allRoles) : allRoles),
@@ -61,7 +65,11 @@ export function MinutesPane(props: PaneProps) {
           </button>
         )}
       </div>
-      <SpanBar stores={stores} commands={commands} />
+      {chosen && (
+        <Suspense fallback={null}>
+          <SpanBar stores={stores} commands={commands} />
+        </Suspense>
+      )}
       <EpochTable stores={stores} commands={commands} />
       <SpanTable stores={stores} commands={commands} />
     </PaneFrame>

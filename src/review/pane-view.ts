@@ -6,7 +6,7 @@ import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
 import { beginWork, endWork } from './idle';
 import { makeRowView } from './make-row';
-import { notedEvents } from './noted-events';
+import { notedEvents, notedWords } from './noted-events';
 import type { PaneDom } from './pane-dom';
 import type { PaneStores, RowContext, RowView } from './row-view';
 import type { Row } from './rows';
@@ -236,7 +236,7 @@ export class PaneView {
     const clock = (atS: number) => clockText(atS, 1, 'h:mm:ss');
     const from = `${this.kind.title}, ${widthText(toS - fromS)} from ${clock(fromS)} to ${clock(toS)}.`;
     const rows = this.rows.map((row) => `${row.describe()}.`).join(' ');
-    this.dom.summary.textContent = `${from} ${rows}`;
+    this.dom.summary.textContent = `${from} ${rows}${notedWords(this.stores, fromS, toS)}`;
     endWork();
   }
 
