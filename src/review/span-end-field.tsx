@@ -26,7 +26,7 @@ const STEPS_S: Readonly<Record<string, number>> = {
 
 /**
  * One end of the selected span: typed, or moved by the arrows up and down by 1 s, with Shift by 10 s, with Ctrl to the next
- * annotation or event. Enter or going on keeps it, Escape takes it back.
+ * annotation or event. Enter or going on keeps it, Escape takes it back; once more, the keys are the page's again.
  */
 export function SpanEndField({ stores, commands, span, end }: SpanEndFieldProps) {
   const id = useId();
@@ -57,7 +57,7 @@ export function SpanEndField({ stores, commands, span, end }: SpanEndFieldProps)
     setTyped(null);
     stores.view.setState({ draft: moveSpanEnd(span, end, inside) });
   };
-  const onKey = (event: KeyboardEvent) => {
+  const onKey = (event: KeyboardEvent<HTMLInputElement>) => {
     const by = STEPS_S[event.key];
     const place =
       by && (event.ctrlKey || event.metaKey)
@@ -66,7 +66,8 @@ export function SpanEndField({ stores, commands, span, end }: SpanEndFieldProps)
     if (place) step({ atS: place.atS, snap: place.text });
     else if (by) step({ atS: atS + by * (event.shiftKey ? 10 : 1), snap: null });
     else if (event.key === 'Enter') keep();
-    else if (event.key === 'Escape') clear();
+    else if (event.key === 'Escape' && (own || typed !== null)) clear();
+    else if (event.key === 'Escape') event.currentTarget.blur();
     else return;
     event.preventDefault();
     event.stopPropagation();
