@@ -121,7 +121,7 @@ test.describe('a study is open', () => {
   const dialogs: readonly (readonly [string, string])[] = [
     ['Shift+L', 'Leads and their roles'],
     ['Shift+P', 'Phases'],
-    ['Shift+H', 'Spoiled spans'],
+    ['Shift+Z', 'Spoiled spans'],
     ['Shift+E', 'Events and symptoms'],
     ['Shift+K', 'Meal and protocol'],
     ['Shift+S', 'Settings of the figures'],

@@ -133,7 +133,7 @@ test('a border of a phase is moved by the arrow keys, and says the minutes that 
 
 test('a span is typed, changed and taken away without the mouse, each as one step', async () => {
   const before = await allFigures(page);
-  const dialog = await openDialog('Shift+H', 'Spoiled spans');
+  const dialog = await openDialog('Shift+Z', 'Spoiled spans');
   const [from, to] = ['from', 'to'].map((end) => dialog.getByLabel(end, { exact: true }));
   await expect(from).toBeFocused();
   await page.keyboard.type('0:30');
@@ -162,7 +162,7 @@ test('a span is typed, changed and taken away without the mouse, each as one ste
   ]);
   await press(page, 'Control+z');
   await backAndForth(before);
-  await openDialog('Shift+H', 'Spoiled spans');
+  await openDialog('Shift+Z', 'Spoiled spans');
   await dialog.getByRole('button', { name: 'Remove the span 0:00:30 to 0:00:45.5' }).press('Enter');
   await expect(dialog.getByText('Nothing is excluded.')).toBeVisible();
   await page.keyboard.press('Escape');

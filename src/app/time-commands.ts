@@ -26,7 +26,7 @@ export const TIME_COMMANDS: readonly Command[] = [
   {
     id: 'spans',
     words: 'Spoiled spans by number…',
-    keys: ['Shift+H'],
+    keys: ['Shift+Z'],
     group: 'spans',
     when: 'study',
     menu: 'study',

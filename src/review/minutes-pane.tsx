@@ -1,17 +1,15 @@
-import { lazy, Suspense, useCallback, useMemo } from 'react';
+import { useCallback, useMemo } from 'react';
 import { useStore } from 'zustand';
-import { asWork } from './idle';
+import { useCommandLinks } from './command-links';
 import { useLeadsShown } from './leads-shown';
 import { MINUTES, minutesActs } from './minutes-view';
 import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
 import { minutesRows, reportedOnly } from './rows';
+import { SelectionBar } from './selection-bar';
 import { EpochTable, SpanTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 import { useRoles } from './use-roles';
-
-/** Fetched when a span is selected first. */
-const SpanBar = lazy(() => asWork(import('./span-bar')).then((all) => ({ default: all.SpanBar })));
 
 /** The pane with the stomach's time scale. */
 export function MinutesPane(props: PaneProps) {
@@ -19,7 +17,6 @@ export function MinutesPane(props: PaneProps) {
   const allRoles = useRoles(stores);
   const shown = useLeadsShown(stores.view);
   const excluding = useStore(stores.view, (state) => state.tool === 'exclude');
-  const chosen = useStore(stores.view, (state) => state.selection.kind === 'span');
   const several = (allRoles?.slow.length ?? 0) > 1;
   const roles = useMemo(
     () => (allRoles && shown === 'reported' ? reportedOnly(allRoles) : allRoles),
@@ -38,6 +35,7 @@ export function MinutesPane(props: PaneProps) {
     () => (roles && recording ? minutesRows(roles, recording, { breathing, route }) : []),
     [roles, recording, breathing, route],
   );
+  const { hint } = useCommandLinks();
   const commands = usePaneCommands(props);
   const setUp = useCallback(
     (): PaneSetup => ({ kind: MINUTES, acts: (view) => minutesActs(view, commands) }),
@@ -56,20 +54,25 @@ export function MinutesPane(props: PaneProps) {
       notice={null}
     >
       <div className="pane-switches">
-        <button type="button" aria-pressed={excluding} title="Key E" onClick={commands.toggleTool}>
+        <button
+          type="button"
+          aria-pressed={excluding}
+          title={hint('Drag to exclude, or to look', 'toggle-tool')}
+          onClick={commands.toggleTool}
+        >
           {excluding ? 'Dragging excludes' : 'Exclude by dragging'}
         </button>
         {several && (
-          <button type="button" title="Key L" onClick={commands.toggleLeads}>
+          <button
+            type="button"
+            title={hint('All leads, or the reported one', 'toggle-leads')}
+            onClick={commands.toggleLeads}
+          >
             {shown === 'all' ? 'Reported lead only' : `Show all ${allRoles?.slow.length} leads`}
           </button>
         )}
       </div>
-      {chosen && (
-        <Suspense fallback={null}>
-          <SpanBar stores={stores} commands={commands} />
-        </Suspense>
-      )}
+      <SelectionBar of="span" stores={stores} commands={commands} />
       <EpochTable stores={stores} commands={commands} />
       <SpanTable stores={stores} commands={commands} />
     </PaneFrame>

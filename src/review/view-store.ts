@@ -13,7 +13,8 @@ export type Tool = 'look' | 'exclude';
 /** What is picked out: beats by their ticks, or one spoiled span. */
 export type Selection =
   | { readonly kind: 'none' }
-  | { readonly kind: 'beats'; readonly ticks: readonly number[] }
+  /** `anchor`: the end that stays while the selection grows or shrinks, where it does. */
+  | { readonly kind: 'beats'; readonly ticks: readonly number[]; readonly anchor?: number }
   | { readonly kind: 'span'; readonly id: number };
 
 /** Where an edge is being moved to, and what stands at that time where it was snapped to something. */
