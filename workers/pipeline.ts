@@ -21,6 +21,7 @@ import type {
   Columns,
   ColumnsRequest,
   DoubtList,
+  FoundWithin,
   Given,
   JobId,
   LookAlikes,
@@ -29,6 +30,7 @@ import type {
   Proposal,
   ReviewInputs,
   TextReading,
+  WithinRequest,
 } from './analysis-api';
 import {
   breathesWithin,
@@ -43,6 +45,7 @@ import { type DoubtInputs, doubtList, lookAlikes } from './pipeline-doubts';
 import { measureHeartbeats } from './pipeline-measures';
 import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
+import { detectWithin } from './pipeline-within';
 import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
 import { type Remembered, remember } from './remember';
@@ -90,6 +93,8 @@ export interface Pipeline {
   ): Promise<LookAlikes>;
   /** The figures of other states of the study, which leave what was found for the review as it is. */
   figuresOf(states: readonly ReviewInputs[], job: Job): Promise<readonly Findings[]>;
+  /** Finds the beats of a stretch with other choices; what was found for the review stays as it is. */
+  detectWithin(request: WithinRequest, job: Job): Promise<FoundWithin>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -142,6 +147,10 @@ export function createPipeline(): Pipeline {
       return lookAlikes(from, settled, doubtId);
     },
     figuresOf: (states, job) => figuresOf(study(), states, job),
+    detectWithin(request, job) {
+      const { source, signals } = study();
+      return detectWithin({ source, kept: signals.heart(request.heartLead), request }, job);
+    },
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),

@@ -17,6 +17,7 @@ const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
 const FigureDialog = later('FigureDialog');
+const FindWithinDialog = later('FindWithinDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
 const LogDialog = later('LogDialog');
@@ -65,6 +66,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <SettingsDialog />;
     case 'go-to':
       return <GoToDialog />;
+    case 'find-within':
+      return <FindWithinDialog />;
     case 'beats-between':
       return <BeatsBetweenDialog parts={parts} />;
     case 'add-bookmark':

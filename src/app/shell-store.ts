@@ -24,6 +24,7 @@ export type DialogState =
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
   | { readonly kind: 'beats-between' }
+  | { readonly kind: 'find-within' }
   | { readonly kind: 'add-bookmark' }
   | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }

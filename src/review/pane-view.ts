@@ -95,7 +95,14 @@ export class PaneView {
     const { view, analysis, session } = this.stores;
     const { name } = this.kind;
     const drawnFrom = (state: ViewState) =>
-      [state[name], state.gainsUv, state.levelsDb, state.selection, state.draft] as const;
+      [
+        state[name],
+        state.gainsUv,
+        state.levelsDb,
+        state.selection,
+        state.draft,
+        state.preview,
+      ] as const;
     this.stops.push(
       view.subscribe((now, before) => {
         const [a, b] = [drawnFrom(now), drawnFrom(before)];

@@ -21,6 +21,13 @@ export interface Draft extends TimeWindow {
   readonly spanId: number | null;
 }
 
+/** Beats that finding them again in a stretch would change, before it is taken. */
+export interface BeatPreview extends TimeWindow {
+  readonly gained: readonly number[];
+  readonly lost: readonly number[];
+  readonly moved: readonly (readonly [fromTick: number, toTick: number])[];
+}
+
 /** Where the panes look; no part of the session and never undone. */
 export interface ViewState {
   readonly durationS: number;
@@ -36,6 +43,7 @@ export interface ViewState {
   readonly levelsDb: readonly [low: number, high: number] | null;
   readonly selection: Selection;
   readonly draft: Draft | null;
+  readonly preview: BeatPreview | null;
   readonly tool: Tool;
   /** Leads that Minutes draws; null: as many as fit the height of the page. */
   readonly leadsShown: 'all' | 'reported' | null;
@@ -60,6 +68,7 @@ export const createViewStore = (): ViewStore =>
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    preview: null,
     tool: 'look',
     leadsShown: null,
     identityHidden: false,
@@ -88,6 +97,7 @@ export function lookAtStudy(store: ViewStore, durationS: number): void {
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    preview: null,
     tool: 'look',
   });
 }
