@@ -117,6 +117,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'extend-later': ['.', 'chosen', /^beat .*; beat [^;]*$/],
   'extend-earlier': ['.', 'chosen', /^beat .*; beat [^;]*$/],
   'beats-between': ['', 'dialog', /^Select beats from one time to another$/],
+  'find-within': ['', 'dialog', /^Find the beats of a stretch again$/],
   'beats-in-view': ['', 'chosen', /^(beat .*; ){10,}/],
   'clear-selection': ['.', 'chosen', /^$/],
   'add-beat': ['', 'undo', /^(add|place) beat at 0:00:/],

@@ -42,7 +42,15 @@ export function FindWithinDialog() {
   });
   const { durationS } = view.getState();
   const read = readRange(range, durationS);
+  const [before] = useState(() => {
+    const { minutes, seconds } = view.getState();
+    return { minutes, seconds };
+  });
   const close = () => shell.getState().closeDialog();
+  const leave = () => {
+    view.setState(before);
+    close();
+  };
   const channels = recording?.channels ?? [];
   const leads = state ? leadsToLookIn(state.roles, channels) : [];
   const lead = leads.find((one) => leadKey(one) === choices.lead);
@@ -60,13 +68,13 @@ export function FindWithinDialog() {
     <Dialog
       title="Find the beats of a stretch again"
       size="above"
-      onClose={close}
+      onClose={leave}
       onSubmit={take}
       actions={
         <FormActions
           stay="Leave them"
           go="Take the change"
-          onStay={close}
+          onStay={leave}
           disabled={!change || foundEdit(change, '').changes.length === 0}
         />
       }
