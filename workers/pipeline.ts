@@ -46,7 +46,6 @@ import { type DoubtInputs, doubtList, lookAlikes, openDoubts } from './pipeline-
 import { measureHeartbeats } from './pipeline-measures';
 import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
-import { detectWithin } from './pipeline-within';
 import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
 import { type Remembered, remember } from './remember';
@@ -158,8 +157,9 @@ export function createPipeline(): Pipeline {
       return lookAlikes(from, settled, doubtId, job);
     },
     figuresOf: (states, job) => figuresOf(study(), states, job),
-    detectWithin(request, job) {
+    async detectWithin(request, job) {
       const { source, signals } = study();
+      const { detectWithin } = await import('./pipeline-within');
       return detectWithin({ source, kept: signals.heart(request.heartLead), request }, job);
     },
     columns: (request) => columnsOf(study().source, study().signals, request),
