@@ -12,6 +12,7 @@ import { confirmStudy } from '../src/session/confirm-study';
 import type { Session, SessionState } from '../src/session/document';
 import { initialState, studyIdentity } from '../src/session/initial-state';
 import { beginSession } from '../src/session/log';
+import { notesOf } from '../src/session/note-edits';
 import { textToSession } from '../src/session/read-document';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
@@ -73,6 +74,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   const { state } = session;
   const edit = editNumber(session);
   const analysis = await pipeline.analyse({ ...state, edit }, job);
+  const openDoubts = await pipeline.openDoubts({ ...state, edit }, state.doubts, job);
   const files = exportFiles({
     recording: opened.recording,
     state,
@@ -83,6 +85,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     heart: analysis.heart?.value ?? null,
     breathing: analysis.breathing,
     findings: analysis.findings,
+    openDoubts,
   });
   await mkdir(folder, { recursive: true });
   for (const { name, text } of files) await writeFile(join(folder, name), text);
@@ -125,6 +128,7 @@ function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionSt
     beatRateHz: roles.heart ? recording.channels[leadChannels(roles.heart)[0]].rateHz : 1,
     phases: state.phases,
     spans: state.spans,
+    notes: notesOf(state),
   });
 }
 

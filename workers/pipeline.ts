@@ -3,16 +3,17 @@ import { quickKey } from '../src/decode/quick-key';
 import { type Detection, type DetectionInput, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
 import { NO_BEATS } from '../src/recording/beat';
-import type { SettledDoubt } from '../src/recording/doubt';
+import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
-import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { type Lead, leadKey } from '../src/recording/lead';
+import { lostOn } from '../src/recording/lost';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
-import { type Interval, joinIntervals, type Span, spansOf } from '../src/recording/span';
+import { type Interval, type Span, spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { leadQuality } from '../src/stomach/lead-quality';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
@@ -39,7 +40,7 @@ import {
 import { inTurns, type Job } from './job';
 import { doubtedOf, judgedSpans } from './judged-spans';
 import { columnsOf } from './pipeline-columns';
-import { type DoubtInputs, doubtList, lookAlikes } from './pipeline-doubts';
+import { type DoubtInputs, doubtList, lookAlikes, openDoubts } from './pipeline-doubts';
 import { measureHeartbeats } from './pipeline-measures';
 import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
@@ -82,6 +83,12 @@ export interface Pipeline {
   propose(given: Given, job: Job): Promise<Proposal>;
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
   doubts(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<DoubtList>;
+  /** The open doubts in the order of time without their effects, which takes far less. */
+  openDoubts(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    job: Job,
+  ): Promise<readonly Doubt[]>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -137,9 +144,13 @@ export function createPipeline(): Pipeline {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       return doubtList(from, settled, job);
     },
+    async openDoubts(inputs, settled, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return openDoubts(from, settled, job);
+    },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
-      return lookAlikes(from, settled, doubtId);
+      return lookAlikes(from, settled, doubtId, job);
     },
     figuresOf: (states, job) => figuresOf(study(), states, job),
     columns: (request) => columnsOf(study().source, study().signals, request),
@@ -256,11 +267,7 @@ function toJudge(study: Study, lead: Lead, proposed: readonly Omit<Span, 'id'>[]
 
 /** Stretches of a lead that carry no heartbeat: spoiled for the heart, or missing. */
 function blockedOf(study: Study, lead: Lead, spans: readonly Span[]): readonly Interval[] {
-  const channels = leadChannels(lead);
-  const gaps = study.source.recording.gaps.filter(
-    ({ channel }) => channel === null || channels.includes(channel),
-  );
-  return joinIntervals([...spansOf(spans, leadKey(lead), 'heart'), ...gaps]);
+  return lostOn(lead, 'heart', spans, study.source.recording.gaps);
 }
 
 async function detectionOf(
