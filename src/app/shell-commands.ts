@@ -4,7 +4,7 @@ import { editNameShown } from './edit-name';
 import { THEME_CHOICES } from './preferences';
 
 const dialog =
-  (kind: 'roles' | 'phases' | 'protocol' | 'settings' | 'keys' | 'about' | 'log' | 'sign') =>
+  (kind: 'roles' | 'phases' | 'protocol' | 'settings' | 'keys' | 'about' | 'sign') =>
   ({ shell }: CommandParts) =>
     shell.getState().openDialog({ kind });
 
@@ -131,15 +131,6 @@ export const STUDY_COMMANDS: readonly Command[] = [
     ready: ({ session, analysis }) =>
       analysis.getState().fileAtHand && session.getState().session?.state.roles.heart != null,
     run: ({ controller }) => controller.detectAgain(),
-  },
-  {
-    id: 'log',
-    words: 'Log: who changed what…',
-    keys: ['Shift+H'],
-    group: 'study',
-    when: 'study',
-    menu: 'study',
-    run: dialog('log'),
   },
   {
     id: 'sign',
