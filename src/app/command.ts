@@ -2,7 +2,16 @@ import type { PaneCommands } from '../review/pane-commands';
 import type { AppParts } from './app-context';
 
 /** Headings of the keys page, in its order. */
-export const COMMAND_GROUPS = ['open', 'study', 'work', 'look', 'beats', 'spans', 'page'] as const;
+export const COMMAND_GROUPS = [
+  'open',
+  'study',
+  'work',
+  'look',
+  'beats',
+  'spans',
+  'room',
+  'page',
+] as const;
 export type CommandGroup = (typeof COMMAND_GROUPS)[number];
 
 export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
@@ -12,11 +21,25 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   look: 'Move and zoom',
   beats: 'Beats',
   spans: 'Spoiled spans',
+  room: 'Room view',
   page: 'The page',
 };
 
-/** Where a command acts: everywhere, only while a study is open, or only while its panes are in sight. */
-export type CommandContext = 'always' | 'study' | 'panes';
+/** Where a command acts: everywhere, only while a study is open, only while its panes are in sight, only in the room view. */
+export type CommandContext = 'always' | 'study' | 'panes' | 'room';
+
+/** What commands ask of the room view. */
+export interface RoomActs {
+  leave(): void;
+  /** Brings the trace row below (1) or above (-1) forward. */
+  stepRow(way: 1 | -1): void;
+  penOn(): boolean;
+  togglePen(): void;
+  /** Moves the pen by CSS pixels; it draws while it is down. */
+  movePen(byX: number, byY: number): void;
+  pressPen(): void;
+  toggleKeys(): void;
+}
 
 /** What commands ask of the page around the stores. */
 export interface PageActs {
@@ -27,6 +50,9 @@ export interface PageActs {
   reportOpen(): boolean;
   /** False while the report view is not part of the page. */
   readonly reportThere: boolean;
+  enterRoom(): void;
+  /** The room view while it is in sight, else null. */
+  readonly room: RoomActs | null;
 }
 
 export interface CommandParts extends AppParts {

@@ -1,4 +1,5 @@
 import type { TextReading } from '../../workers/analysis-api';
+import type { AnalysisClient } from '../../workers/analysis-client';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
@@ -27,6 +28,13 @@ export interface SignRequest {
   readonly conclusion: string;
 }
 
+/** The worker of the open study, lent: one borrower at a time, while the review itself rests. */
+export interface LentWorker {
+  readonly client: AnalysisClient;
+  /** Has the figures of the review itself computed again, after the worker was asked for others. */
+  giveBack(): void;
+}
+
 /**
  * What the shell asks of whoever leads a study through worker, session and stores. Failures are shown by the controller
  * through the shell's store (dialog `failure`, `text-reading` or a message); the promises settle when the act is over.
@@ -48,6 +56,8 @@ export interface StudyController {
   forget(quickKey: string): Promise<void>;
   /** Applies one edit; asks for the reviewer first where none is set. */
   edit(edit: Edit): void;
+  /** The worker, for a copy of the review that shows edits and keeps none. */
+  lend(): LentWorker;
   undo(): void;
   redo(): void;
   /** `reason` says why the reported lead changed; '' where it did not. */
