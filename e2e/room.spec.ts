@@ -39,13 +39,13 @@ const room = () => page.locator('.room');
 const says = async () => words(await room().getByRole('status').textContent());
 
 async function enter(): Promise<void> {
-  await page.keyboard.press('Shift+V');
+  await page.keyboard.press('F9');
   await expect(page.getByRole('heading', { name: 'Room view' })).toBeVisible({ timeout: LONG_MS });
   await settled(page);
 }
 
 async function leave(): Promise<void> {
-  await press(page, 'Shift+V');
+  await press(page, 'F9');
   await expect(room()).toHaveCount(0);
   await expect(pane(page, 'Minutes')).toBeVisible();
 }

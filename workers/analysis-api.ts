@@ -65,7 +65,7 @@ export interface DoubtList {
   readonly open: readonly Doubt[];
 }
 
-/** A doubted beat with its second of heartbeat. */
+/** A doubted beat with its second of heartbeat; the doubt comes without its effect. */
 export interface LookAlike {
   readonly doubt: Doubt;
   /** Correlation with the beat asked for at their best alignment, -1 to 1; 1 for that beat itself. */
@@ -184,6 +184,11 @@ export interface AnalysisApi {
     settled: readonly SettledDoubt[],
     doubtId: string,
   ): Promise<Reply<LookAlikes>>;
+  /**
+   * The figures that other states of the open study give, in the order asked for; results, signals and columns of the review
+   * itself stay as they are.
+   */
+  figuresOf(job: JobId, states: readonly ReviewInputs[]): Promise<Reply<readonly Findings[]>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   cancel(job: JobId): void;

@@ -3,8 +3,9 @@ import { quickKey } from '../src/decode/quick-key';
 import { type Detection, type DetectionInput, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
 import { NO_BEATS } from '../src/recording/beat';
-import type { SettledDoubt } from '../src/recording/doubt';
+import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
+import type { Findings } from '../src/recording/findings';
 import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
@@ -38,7 +39,7 @@ import {
 import { inTurns, type Job } from './job';
 import { doubtedOf, judgedSpans } from './judged-spans';
 import { columnsOf } from './pipeline-columns';
-import { type DoubtInputs, doubtList, lookAlikes } from './pipeline-doubts';
+import { type DoubtInputs, doubtList, lookAlikes, openDoubts } from './pipeline-doubts';
 import { measureHeartbeats } from './pipeline-measures';
 import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
@@ -81,12 +82,20 @@ export interface Pipeline {
   propose(given: Given, job: Job): Promise<Proposal>;
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
   doubts(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<DoubtList>;
+  /** The open doubts in the order of time without their effects, which takes far less. */
+  openDoubts(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    job: Job,
+  ): Promise<readonly Doubt[]>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
     doubtId: string,
     job: Job,
   ): Promise<LookAlikes>;
+  /** The figures of other states of the study, which leave what was found for the review as it is. */
+  figuresOf(states: readonly ReviewInputs[], job: Job): Promise<readonly Findings[]>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -134,10 +143,15 @@ export function createPipeline(): Pipeline {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       return doubtList(from, settled, job);
     },
+    async openDoubts(inputs, settled, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return openDoubts(from, settled, job);
+    },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
-      return lookAlikes(from, settled, doubtId);
+      return lookAlikes(from, settled, doubtId, job);
     },
+    figuresOf: (states, job) => figuresOf(study(), states, job),
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
@@ -335,6 +349,36 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
   const last = slow ? { ...from, slow } : from;
   study.last = { from: last, computed: slow ? await study.results.of(last, job) : first };
   return study.last;
+}
+
+/**
+ * The same study with room of its own for what is found: it begins with the signals and beats that are there, and what it
+ * adds is not seen by the other.
+ */
+const apartFrom = (study: Study): Study => ({
+  ...study,
+  signals: study.signals.apart(),
+  results: createResults(study.source.recording),
+  reference: remember(referenceKey, breathingReference),
+});
+
+async function figuresOf(
+  study: Study,
+  states: readonly ReviewInputs[],
+  job: Job,
+): Promise<readonly Findings[]> {
+  let apart: Study | null = null;
+  const found: Findings[] = [];
+  for (const inputs of states) {
+    job.progress('Computing the figures of other states', found.length / states.length);
+    const quiet: Job = { breathe: () => job.breathe(), progress: () => undefined };
+    const { computed } = await inLine(study, job, () => {
+      apart ??= apartFrom(study);
+      return reckon(apart, inputs, quiet);
+    });
+    found.push(computed.findings);
+  }
+  return found;
 }
 
 /**

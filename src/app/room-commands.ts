@@ -6,7 +6,7 @@ import type { Command, CommandParts, RoomActs } from './command';
  * print, save, or show a dialog.
  */
 export const ACTS_IN_ROOM =
-  /^(seconds-(left|right|page-left|page-right|in|out)|minutes-(left|right|in|out)|usual-widths|go-start|go-end|gain-(up|down|fit)|(next|previous)-(beat|span|bookmark)|beats-in-view|clear-selection|add-beat|delete-selected|class-[NSVFQ]|beat-(sample|10)-(left|right)|exclude-seconds|span-for-(stomach|heart|both)|undo|redo|stop|theme|room)$/;
+  /^(seconds-(left|right|page-left|page-right|in|out)|minutes-(left|right|in|out)|usual-widths|go-start|go-end|gain-(up|down|fit)|(next|previous)-(beat|span|bookmark)|beats-in-view|extend-(later|earlier)|clear-selection|add-beat|delete-selected|class-[NSVFQ]|beat-(sample|10)-(left|right)|exclude-seconds|span-for-(stomach|heart|both)|undo|redo|stop|theme|room)$/;
 
 const roomRow = (
   id: string,
@@ -71,7 +71,7 @@ export const ROOM_DOOR: readonly Command[] = [
   {
     id: 'room',
     words: 'Room view, or back to the review',
-    keys: ['Shift+V'],
+    keys: ['F9'],
     group: 'room',
     when: 'study',
     ready: (parts) => parts.page.room !== null || upToDate(parts),

@@ -41,7 +41,11 @@ export function ForwardPane(props: PaneProps & { readonly row: Row }) {
       if (name === 'minutes') return { kind: MINUTES, acts: (view) => minutesActs(view, commands) };
       const stage = section.querySelector('[data-part="stage"]');
       if (!(stage instanceof HTMLElement)) throw new Error('the trace row has no stage');
-      const parts: SecondsParts = { buttons: new PinButtons(stage, commands), drag: null };
+      const parts: SecondsParts = {
+        buttons: new PinButtons(stage, commands),
+        drag: null,
+        band: null,
+      };
       return {
         kind: secondsKind(parts),
         acts: (view) => secondsActs(view, commands, parts),

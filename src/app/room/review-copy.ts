@@ -55,7 +55,7 @@ export function copyReview(
   });
 
   const shell = createShellStore(null);
-  const { theme, plainKeys } = parts.shell.getState();
-  shell.setState({ theme, plainKeys });
+  const { theme, plainKeys, ownKeys } = parts.shell.getState();
+  shell.setState({ theme, plainKeys, ownKeys });
   return { session, analysis, view, shell };
 }

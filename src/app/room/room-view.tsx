@@ -10,6 +10,7 @@ import type { CommandParts } from '../command';
 import { CommandButton } from '../command-button';
 import { COMMANDS, commandOf } from '../commands';
 import { useEditStatus } from '../edit-status';
+import { keysOf } from '../own-keys';
 import { ACTS_IN_ROOM } from '../room-commands';
 import { useKeys } from '../use-keys';
 import { PenLayer } from './pen-layer';
@@ -104,7 +105,8 @@ const KEPT_FROM_BROWSER = /^(Ctrl\+P|Ctrl\+Shift\+P|Ctrl\+R|Ctrl\+Shift\+R|F5|Ct
 
 function useRoomKeys(commands: CommandParts): void {
   useKeys(commands, (name) => {
-    const named = COMMANDS.filter(({ keys }) => keys.includes(name));
+    const { ownKeys } = commands.shell.getState();
+    const named = COMMANDS.filter((one) => keysOf(one, ownKeys).includes(name));
     const acts = named.some(({ id, when }) => when === 'room' || ACTS_IN_ROOM.test(id));
     if (acts || (named.length === 0 && !KEPT_FROM_BROWSER.test(name))) return false;
     const about = named.length > 0 ? `${named[0].words.replace('…', '')}: ` : '';
