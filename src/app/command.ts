@@ -9,6 +9,7 @@ export const COMMAND_GROUPS = [
   'look',
   'beats',
   'spans',
+  'notes',
   'room',
   'page',
 ] as const;
@@ -21,6 +22,7 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   look: 'Move and zoom',
   beats: 'Beats',
   spans: 'Spoiled spans',
+  notes: 'Events and symptoms',
   room: 'Room view',
   page: 'The page',
 };

@@ -4,6 +4,7 @@ import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
 import { ACTS_IN_ROOM, ROOM_COMMANDS, ROOM_DOOR } from './room-commands';
 import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './shell-commands';
+import { TIME_COMMANDS } from './time-commands';
 
 /** Every act of the page. */
 export const COMMANDS: readonly Command[] = [
@@ -12,6 +13,7 @@ export const COMMANDS: readonly Command[] = [
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...TIME_COMMANDS,
   ...BOOKMARK_COMMANDS,
   ...ROOM_DOOR,
   ...PAGE_COMMANDS,

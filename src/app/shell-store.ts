@@ -1,6 +1,7 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
+import type { NotedKind } from '../session/note-edits';
 import type { KeptRow } from './controller';
 import type { OwnKeys } from './own-keys';
 import { readPreferences, type ThemeChoice, writePreferences } from './preferences';
@@ -20,6 +21,12 @@ export type DialogState =
   | { readonly kind: 'reviewer'; readonly act: () => void }
   | { readonly kind: 'roles' }
   | { readonly kind: 'phases' }
+  | { readonly kind: 'spans' }
+  /** `here`: what is to be written at which time; null: all that is written. */
+  | {
+      readonly kind: 'notes';
+      readonly here: { readonly kind: NotedKind; readonly atS: number } | null;
+    }
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }

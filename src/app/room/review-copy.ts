@@ -49,6 +49,8 @@ export function copyReview(
     ...parts.view.getState(),
     cursorS: null,
     draft: null,
+    phaseDraft: null,
+    bordersShown: false,
     selection: { kind: 'none' },
     tool: 'look',
     identityHidden: true,

@@ -66,7 +66,7 @@ export function recordingWithout(recording: Recording): Recording {
     identity: { code: null, name: null, sex: null, birthYear: null, recordingText: '' },
     start: { kind: 'unknown', raw: '' },
     channels: recording.channels.map(plainChannel),
-    annotations: [],
+    annotations: recording.annotations.map((one) => ({ ...one, text: '' })),
     found: [],
   };
 }
