@@ -1,5 +1,6 @@
 import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
+import { HISTORY_COMMANDS } from './history-commands';
 import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
 import { ACTS_IN_ROOM, ROOM_COMMANDS, ROOM_DOOR } from './room-commands';
@@ -10,6 +11,7 @@ import { TIME_COMMANDS } from './time-commands';
 export const COMMANDS: readonly Command[] = [
   ...ROOM_COMMANDS,
   ...STUDY_COMMANDS,
+  ...HISTORY_COMMANDS,
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
