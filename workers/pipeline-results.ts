@@ -8,12 +8,12 @@ import { seenInPassing } from '../src/heart/seen-in-passing';
 import { BEAT_CLASSES, type BeatList } from '../src/recording/beat';
 import type { SeenInPassing } from '../src/recording/figure';
 import type { BreathingSeries } from '../src/recording/heart-series';
-import { leadChannels, leadKey } from '../src/recording/lead';
+import { leadKey } from '../src/recording/lead';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
 import type { Recording } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
-import { type Interval, joinIntervals, spansOf } from '../src/recording/span';
+import type { Interval } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { type StomachAnalysis, slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
 import { createStomachMemory } from '../src/stomach/stomach-memory';
@@ -26,6 +26,7 @@ import type { Job } from './job';
 import { findingsOf } from './pipeline-findings';
 import { identity, lastEqual, type Remembered, remember } from './remember';
 import { sameBeats, sameBreathing } from './same-series';
+import { spoiledFor } from './spoiled-for';
 
 /** Everything the figures are computed from. */
 export interface ResultInputs {
@@ -252,11 +253,7 @@ function stomachSpoiled(
   key: string,
 ): readonly Interval[] {
   const lead = roles.slow.find((one) => leadKey(one) === key);
-  const channels = lead ? leadChannels(lead) : [];
-  const gaps = recording.gaps.filter(
-    ({ channel }) => channel === null || channels.includes(channel),
-  );
-  return joinIntervals([...spansOf(spans, key, 'stomach'), ...gaps]);
+  return lead ? spoiledFor('stomach', recording, lead, spans) : [];
 }
 
 /** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */

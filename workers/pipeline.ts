@@ -6,13 +6,13 @@ import { NO_BEATS } from '../src/recording/beat';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
-import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { type Lead, leadKey } from '../src/recording/lead';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
-import { type Interval, joinIntervals, type Span, spansOf } from '../src/recording/span';
+import { type Interval, type Span, spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { leadQuality } from '../src/stomach/lead-quality';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
@@ -47,6 +47,7 @@ import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
 import { type Remembered, remember } from './remember';
 import { sameReview } from './same-series';
+import { spoiledFor } from './spoiled-for';
 
 /** Results with what they were computed from. */
 interface Reckoned {
@@ -266,11 +267,7 @@ function toJudge(study: Study, lead: Lead, proposed: readonly Omit<Span, 'id'>[]
 
 /** Stretches of a lead that carry no heartbeat: spoiled for the heart, or missing. */
 function blockedOf(study: Study, lead: Lead, spans: readonly Span[]): readonly Interval[] {
-  const channels = leadChannels(lead);
-  const gaps = study.source.recording.gaps.filter(
-    ({ channel }) => channel === null || channels.includes(channel),
-  );
-  return joinIntervals([...spansOf(spans, leadKey(lead), 'heart'), ...gaps]);
+  return spoiledFor('heart', study.source.recording, lead, spans);
 }
 
 async function detectionOf(
