@@ -120,7 +120,9 @@ test.describe('a study is open', () => {
 
   const dialogs: readonly (readonly [string, string])[] = [
     ['Shift+L', 'Leads and their roles'],
-    ['Shift+P', 'Phases and events'],
+    ['Shift+P', 'Phases'],
+    ['Shift+Z', 'Spoiled spans'],
+    ['Shift+E', 'Events and symptoms'],
     ['Shift+K', 'Meal and protocol'],
     ['Shift+S', 'Settings of the figures'],
     ['Control+g', 'Go to a time'],

@@ -1,8 +1,10 @@
 import { expect, type Locator, type Page, test } from 'playwright/test';
+import { FIGURES } from '../src/recording/figure-catalogue';
 import {
   allFigures,
   editNumber,
   expectNoTroubles,
+  figure,
   figureNumber,
   freshPage,
   goTo,
@@ -320,6 +322,22 @@ test.describe('by keyboard', () => {
     await expectSeen(/^add beat at 0:00:/, () => press(page, 'a'));
     await press(page, 'Control+z');
   });
+});
+
+test('an edit is told with what it did to the figures, and undo too', async () => {
+  await goTo(page, '0:31');
+  await press(page, '.');
+  await press(page, 'Delete');
+  const status = page.locator('.foot-status');
+  const told = /^Done: delete beat at 0:00:3\d.*; (.+) fasting (.+) to ([\d.−]+)/;
+  await expect(status).toHaveText(told);
+  const [, label, before, after] = told.exec((await status.textContent()) ?? '') ?? [];
+  const found = FIGURES.find((one) => one.label === label.replace(/,$/, ''));
+  if (!found) throw new Error(`no figure ${label}`);
+  expect(await figure(page, found.key)).toBe(after.replace('−', '-'));
+  await press(page, 'Control+z');
+  await expect(status).toHaveText(/^Undone: delete beat .* fasting .+ to /);
+  expect(await figure(page, found.key)).toBe(before.replace('−', '-'));
 });
 
 test('undo and redo go through all steps, each by its name', async () => {

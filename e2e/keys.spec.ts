@@ -63,6 +63,7 @@ const SIGHTS = {
   },
   bar: async () => words(await bar(page).textContent()),
   theme: async () => words(await page.locator('html').getAttribute('data-theme')),
+  focused: () => page.evaluate(() => document.activeElement?.getAttribute('aria-label') ?? ''),
   focus: () => page.evaluate(() => document.activeElement?.id ?? ''),
   view: () => page.evaluate(() => window.location.hash),
 } satisfies Record<string, () => Promise<string>>;
@@ -75,7 +76,12 @@ type WindowChange = 'earlier' | 'later' | 'closer' | 'wider';
 
 const CHECKS: Readonly<Record<string, Check>> = {
   roles: ['', 'dialog', /^Leads and their roles$/],
-  phases: ['', 'dialog', /^Phases and events$/],
+  phases: ['', 'dialog', /^Phases$/],
+  'phase-borders': ['', 'focused', /^(start|end) of fasting$/],
+  spans: ['', 'dialog', /^Spoiled spans$/],
+  notes: ['', 'dialog', /^Events and symptoms$/],
+  'event-here': ['', 'dialog', /^Events and symptoms$/],
+  'symptom-here': ['', 'dialog', /^Events and symptoms$/],
   protocol: ['', 'dialog', /^Meal and protocol$/],
   settings: ['', 'dialog', /^Settings of the figures$/],
   sign: ['', 'dialog', /^Sign$/],

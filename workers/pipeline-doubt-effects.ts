@@ -5,6 +5,7 @@ import { rrSeries } from '../src/heart/rr-series';
 import { type BeatList, changeBeats, firstBeatAt } from '../src/recording/beat';
 import type { Doubt, DoubtEffect, Mend } from '../src/recording/doubt';
 import { type Figures, type FigureValue, numberOf } from '../src/recording/figure';
+import { lostOn } from '../src/recording/lost';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
 import type { Interval, Span, SpanTarget } from '../src/recording/span';
 import { stomachFigures } from '../src/stomach/figures';
@@ -14,7 +15,6 @@ import { createStomachMemory, type StomachMemory } from '../src/stomach/stomach-
 import { secondsToTicks } from '../src/units/ticks';
 import type { Job } from './job';
 import type { DoubtInputs } from './pipeline-doubts';
-import { spoiledFor } from './spoiled-for';
 
 /** Figures that a doubt may move, in the order they are shown. */
 const HEART_KEYS = ['heart_rate_bpm', 'rmssd_ms', 'sdnn_ms', 'lf_ms2', 'hf_ms2'] as const;
@@ -135,7 +135,7 @@ function heartSide(from: DoubtInputs, part: Phase): Side {
       if (mend.kind === 'beats')
         return figuresOf(changeBeats(near, mend.removed, mend.added), from.blocked).figures;
       const spans = spansAfter(inputs.spans, mend);
-      const blocked = roles.heart ? spoiledFor('heart', recording, roles.heart, spans) : [];
+      const blocked = roles.heart ? lostOn(roles.heart, 'heart', spans, recording.gaps) : [];
       return figuresOf(near, blocked).figures;
     },
   };
@@ -164,7 +164,7 @@ function stomachSide({ inputs, recording, slow, computed }: DoubtInputs, part: P
   const phases = phasesOrWhole(inputs.phases, recording.durationS);
   const { breathing } = computed;
   const figuresOf = (spans: readonly Span[]) => {
-    const spoiled = spoiledFor('stomach', recording, lead, spans);
+    const spoiled = lostOn(lead, 'stomach', spans, recording.gaps);
     const options = { slow: drawn, spoiled, phases, settings, breathing, memory };
     const analysis = slowWaveRhythm(options);
     return { analysis, ...stomachFigures({ analysis, phase: part, spoiled, settings }) };

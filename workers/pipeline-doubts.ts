@@ -7,6 +7,7 @@ import { alikeTo, averageRow, LOOK_BEFORE_S } from '../src/heart/look-alikes';
 import { stillOpen } from '../src/heart/open-doubts';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
+import { lostOn } from '../src/recording/lost';
 import type { Recording } from '../src/recording/recording';
 import { spansOf } from '../src/recording/span';
 import { epochDoubts } from '../src/stomach/epoch-doubts';
@@ -16,7 +17,6 @@ import type { DoubtList, LookAlikes } from './analysis-api';
 import { inTurns, type Job } from './job';
 import { withEffects } from './pipeline-doubt-effects';
 import type { Computed, ResultInputs } from './pipeline-results';
-import { spoiledFor } from './spoiled-for';
 
 /** Everything the doubts of a review are read from. */
 export interface DoubtInputs extends ResultInputs {
@@ -64,7 +64,7 @@ async function heartDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[
 function stomachDoubts({ inputs, recording, slow, computed }: DoubtInputs): readonly Doubt[] {
   const { roles, settings, spans } = inputs;
   const { lead, recorded, rateHz } = slow[roles.reported];
-  const gaps = spoiledFor('stomach', recording, roles.slow[roles.reported], []);
+  const gaps = lostOn(roles.slow[roles.reported], 'stomach', [], recording.gaps);
   const own = spansOf(spans, lead, 'stomach');
   const { epochs } = computed.stomach[roles.reported].rhythm;
   return [

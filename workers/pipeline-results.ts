@@ -9,6 +9,7 @@ import { BEAT_CLASSES, type BeatList } from '../src/recording/beat';
 import type { SeenInPassing } from '../src/recording/figure';
 import type { BreathingSeries } from '../src/recording/heart-series';
 import { leadKey } from '../src/recording/lead';
+import { lostOn } from '../src/recording/lost';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
 import type { Recording } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
@@ -26,7 +27,6 @@ import type { Job } from './job';
 import { findingsOf } from './pipeline-findings';
 import { identity, lastEqual, type Remembered, remember } from './remember';
 import { sameBeats, sameBreathing } from './same-series';
-import { spoiledFor } from './spoiled-for';
 
 /** Everything the figures are computed from. */
 export interface ResultInputs {
@@ -253,7 +253,7 @@ function stomachSpoiled(
   key: string,
 ): readonly Interval[] {
   const lead = roles.slow.find((one) => leadKey(one) === key);
-  return lead ? spoiledFor('stomach', recording, lead, spans) : [];
+  return lead ? lostOn(lead, 'stomach', spans, recording.gaps) : [];
 }
 
 /** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */

@@ -7,6 +7,7 @@ import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import { type Lead, leadKey } from '../src/recording/lead';
+import { lostOn } from '../src/recording/lost';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
@@ -47,7 +48,6 @@ import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
 import { type Remembered, remember } from './remember';
 import { sameReview } from './same-series';
-import { spoiledFor } from './spoiled-for';
 
 /** Results with what they were computed from. */
 interface Reckoned {
@@ -267,7 +267,7 @@ function toJudge(study: Study, lead: Lead, proposed: readonly Omit<Span, 'id'>[]
 
 /** Stretches of a lead that carry no heartbeat: spoiled for the heart, or missing. */
 function blockedOf(study: Study, lead: Lead, spans: readonly Span[]): readonly Interval[] {
-  return spoiledFor('heart', study.source.recording, lead, spans);
+  return lostOn(lead, 'heart', spans, study.source.recording.gaps);
 }
 
 async function detectionOf(

@@ -3,6 +3,7 @@ import type { Command, CommandParts } from './command';
 import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
 import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './shell-commands';
+import { TIME_COMMANDS } from './time-commands';
 
 /** Every act of the page. */
 export const COMMANDS: readonly Command[] = [
@@ -10,6 +11,7 @@ export const COMMANDS: readonly Command[] = [
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...TIME_COMMANDS,
   ...BOOKMARK_COMMANDS,
   ...PAGE_COMMANDS,
 ];

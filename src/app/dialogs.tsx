@@ -20,12 +20,14 @@ const FigureDialog = later('FigureDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
 const LogDialog = later('LogDialog');
+const NotesDialog = later('NotesDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
 const SameFileDialog = later('SameFileDialog');
 const SettingsDialog = later('SettingsDialog');
 const SignDialog = later('SignDialog');
+const SpansDialog = later('SpansDialog');
 const TextReadingDialog = later('TextReadingDialog');
 
 /** The open dialog, and the one below a reviewer's dialog. */
@@ -59,6 +61,10 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <RolesDialog />;
     case 'phases':
       return <PhasesDialog />;
+    case 'spans':
+      return <SpansDialog />;
+    case 'notes':
+      return <NotesDialog here={state.here} />;
     case 'protocol':
       return <ProtocolDialog />;
     case 'settings':

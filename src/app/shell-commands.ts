@@ -93,7 +93,7 @@ export const STUDY_COMMANDS: readonly Command[] = [
   },
   {
     id: 'phases',
-    words: 'Phases and events…',
+    words: 'Phases…',
     keys: ['Shift+P'],
     group: 'study',
     when: 'study',

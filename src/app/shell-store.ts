@@ -1,6 +1,7 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
+import type { NotedKind } from '../session/note-edits';
 import type { KeptRow } from './controller';
 import type { OwnKeys } from './own-keys';
 import { readPreferences, type ThemeChoice, writePreferences } from './preferences';
@@ -20,6 +21,12 @@ export type DialogState =
   | { readonly kind: 'reviewer'; readonly act: () => void }
   | { readonly kind: 'roles' }
   | { readonly kind: 'phases' }
+  | { readonly kind: 'spans' }
+  /** `here`: what is to be written at which time; null: all that is written. */
+  | {
+      readonly kind: 'notes';
+      readonly here: { readonly kind: NotedKind; readonly atS: number } | null;
+    }
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
@@ -50,6 +57,8 @@ export interface ShellState {
   readonly messages: readonly Message[];
   /** What the last act did, in the line at the foot; each one takes the place of the one before. */
   readonly status: string;
+  /** What that act did to the figures, once it is known; '' until then. */
+  readonly statusMore: string;
   readonly theme: ThemeChoice;
   /** Keys that are a single letter, digit or sign act only while this is on. */
   readonly plainKeys: boolean;
@@ -60,6 +69,8 @@ export interface ShellState {
   say(text: string): void;
   sayProblem(text: string): void;
   tell(status: string): void;
+  /** Adds to the status line what the act did to the figures. */
+  tellMore(statusMore: string): void;
   putAway(id: number): void;
   setTheme(theme: ThemeChoice): void;
   setPlainKeys(on: boolean): void;
@@ -116,6 +127,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       under: NONE,
       messages: [],
       status: '',
+      statusMore: '',
       openDialog: (dialog) =>
         set((before) => ({
           dialog,
@@ -126,9 +138,13 @@ export function createShellStore(storage: Storage | null): ShellStore {
       say: (text) => add('note', text),
       sayProblem: (text) => add('problem', text),
       tell: (status) => {
-        set({ status });
-        setTimeout(() => set((now) => (now.status === status ? { status: '' } : now)), STATUS_MS);
+        set({ status, statusMore: '' });
+        setTimeout(
+          () => set((now) => (now.status === status ? { status: '', statusMore: '' } : now)),
+          STATUS_MS,
+        );
       },
+      tellMore: (statusMore) => set((now) => (now.status === '' ? now : { statusMore })),
       putAway: (id) =>
         set((before) => ({ messages: before.messages.filter((one) => one.id !== id) })),
       setTheme: (theme) => prefer({ theme }),
