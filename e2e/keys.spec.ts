@@ -88,6 +88,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
   log: ['', 'dialog', /^Log$/],
+  compare: ['', 'dialog', /^Compare with another session$/],
   'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
   bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
@@ -123,6 +124,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'extend-later': ['.', 'chosen', /^beat .*; beat [^;]*$/],
   'extend-earlier': ['.', 'chosen', /^beat .*; beat [^;]*$/],
   'beats-between': ['', 'dialog', /^Select beats from one time to another$/],
+  'find-within': ['', 'dialog', /^Find the beats of a stretch again$/],
   'beats-in-view': ['', 'chosen', /^(beat .*; ){10,}/],
   'clear-selection': ['.', 'chosen', /^$/],
   'add-beat': ['', 'undo', /^(add|place) beat at 0:00:/],
@@ -147,7 +149,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
 
 /**
  * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
- * stepped through in room.spec.
+ * stepped through in room.spec, differences of two sessions in history.spec.
  */
 const ELSEWHERE = [
   'open-file',
@@ -157,6 +159,8 @@ const ELSEWHERE = [
   'download-session',
   'download-results',
   'next-bookmark',
+  'next-difference',
+  'previous-difference',
   'previous-bookmark',
   'stop',
 ];

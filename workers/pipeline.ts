@@ -22,6 +22,7 @@ import type {
   Columns,
   ColumnsRequest,
   DoubtList,
+  FoundWithin,
   Given,
   JobId,
   LookAlikes,
@@ -30,6 +31,7 @@ import type {
   Proposal,
   ReviewInputs,
   TextReading,
+  WithinRequest,
 } from './analysis-api';
 import {
   breathesWithin,
@@ -97,6 +99,8 @@ export interface Pipeline {
   ): Promise<LookAlikes>;
   /** The figures of other states of the study, which leave what was found for the review as it is. */
   figuresOf(states: readonly ReviewInputs[], job: Job): Promise<readonly Findings[]>;
+  /** Finds the beats of a stretch with other choices; what was found for the review stays as it is. */
+  detectWithin(request: WithinRequest, job: Job): Promise<FoundWithin>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -153,6 +157,11 @@ export function createPipeline(): Pipeline {
       return lookAlikes(from, settled, doubtId, job);
     },
     figuresOf: (states, job) => figuresOf(study(), states, job),
+    async detectWithin(request, job) {
+      const { source, signals } = study();
+      const { detectWithin } = await import('./pipeline-within');
+      return detectWithin({ source, kept: signals.heart(request.heartLead), request }, job);
+    },
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),

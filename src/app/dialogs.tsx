@@ -16,7 +16,9 @@ const AboutDialog = later('AboutDialog');
 const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
+const CompareDialog = later('CompareDialog');
 const FigureDialog = later('FigureDialog');
+const FindWithinDialog = later('FindWithinDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
 const LogDialog = later('LogDialog');
@@ -71,6 +73,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <SettingsDialog />;
     case 'go-to':
       return <GoToDialog />;
+    case 'find-within':
+      return <FindWithinDialog />;
     case 'beats-between':
       return <BeatsBetweenDialog parts={parts} />;
     case 'add-bookmark':
@@ -81,6 +85,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <KeysDialog parts={parts} />;
     case 'about':
       return <AboutDialog />;
+    case 'compare':
+      return <CompareDialog parts={parts} />;
     case 'log':
       return <LogDialog page={parts.page} />;
     case 'sign':

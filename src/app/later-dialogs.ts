@@ -1,8 +1,10 @@
 export { AboutDialog } from './about-dialog';
 export { BeatsBetweenDialog } from './beats-between-dialog';
 export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
+export { CompareDialog } from './compare-dialog';
 export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';
+export { FindWithinDialog } from './find-within-dialog';
 export { GoToDialog } from './go-to-dialog';
 export { KeysDialog } from './keys-dialog';
 export { LogDialog } from './log-dialog';

@@ -101,6 +101,7 @@ export class PaneView {
         state.levelsDb,
         state.selection,
         state.draft,
+        state.preview,
         state.phaseDraft,
         state.identityHidden,
       ] as const;

@@ -35,6 +35,13 @@ export interface PhaseDraft {
   readonly moved: Moved;
 }
 
+/** Beats that finding them again in a stretch would change, before it is taken. */
+export interface BeatPreview extends TimeWindow {
+  readonly gained: readonly number[];
+  readonly lost: readonly number[];
+  readonly moved: readonly (readonly [fromTick: number, toTick: number])[];
+}
+
 /** Where the panes look; no part of the session and never undone. */
 export interface ViewState {
   readonly durationS: number;
@@ -50,6 +57,7 @@ export interface ViewState {
   readonly levelsDb: readonly [low: number, high: number] | null;
   readonly selection: Selection;
   readonly draft: Draft | null;
+  readonly preview: BeatPreview | null;
   readonly phaseDraft: PhaseDraft | null;
   /** True while the borders of phases stand in Whole study to be moved by keys. */
   readonly bordersShown: boolean;
@@ -77,6 +85,7 @@ export const createViewStore = (): ViewStore =>
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    preview: null,
     phaseDraft: null,
     bordersShown: false,
     tool: 'look',
@@ -107,6 +116,7 @@ export function lookAtStudy(store: ViewStore, durationS: number): void {
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    preview: null,
     phaseDraft: null,
     bordersShown: false,
     tool: 'look',
