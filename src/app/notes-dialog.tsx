@@ -12,6 +12,7 @@ import {
 import { timeText } from '../units/typed-time';
 import { useApp, useSession, useView, withReviewer } from './app-context';
 import { Dialog } from './dialog';
+import { editNameShown } from './edit-name';
 import { Choice, Field } from './fields';
 import { blankNote, draftOf, type NoteDraft, type NoteFaults, readNote } from './note-draft';
 import { TimeField, timeRule, useTimeFrame } from './time-field';
@@ -52,7 +53,8 @@ function NotesForm({
   const put = (edit: Edit) =>
     withReviewer(parts, () => {
       parts.controller.edit(edit);
-      setDone(`Done: ${edit.name}`);
+      const { identityHidden } = parts.view.getState();
+      setDone(`Done: ${editNameShown(edit.name, identityHidden)}`);
     });
   const save = () => {
     setTried(true);
@@ -79,7 +81,7 @@ function NotesForm({
         </>
       }
     >
-      <fieldset ref={form} className="note-form">
+      <fieldset ref={form}>
         <legend>{changing ? `Change the ${changing.kind}` : 'Write an event or a symptom'}</legend>
         <NoteFields
           draft={draft}
@@ -144,7 +146,7 @@ function NoteFields({ draft, fixed, faults, onChange }: NoteFieldsProps) {
   const type = (parts: Partial<NoteDraft>) => onChange({ ...draft, ...parts });
   const symptom = draft.kind === 'symptom';
   return (
-    <div className="note-fields">
+    <div className={fixed ? 'note-fields fixed' : 'note-fields'}>
       {fixed ? null : (
         <Choice
           label="what it is"

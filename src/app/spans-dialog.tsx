@@ -76,7 +76,7 @@ function SpansForm({ session }: { readonly session: Session }) {
         </>
       }
     >
-      <fieldset ref={form} className="span-form">
+      <fieldset ref={form}>
         <legend>
           {changing ? `Change the span at ${timeText(changing.fromS)}` : 'Exclude a stretch'}
         </legend>

@@ -98,6 +98,7 @@ interface StudyActsProps {
 }
 
 function StudyActs({ parts, reportShown }: StudyActsProps) {
+  useView((state) => state.identityHidden);
   useSession((state) => state.session);
   useAnalysis((state) => state.findings);
   return (
