@@ -53,7 +53,7 @@ export function* energyPass(signal: HeartSignal): Generator<number, Energy> {
     const energy = stretch;
     for (let i = 0; i < energy.length; i += 1) energy[i] = rms(i);
     for (let i = Math.ceil(from / step) * step; i < to; i += step)
-      if (isUsable(usable, i, apart)) envelope[i / step] = energy[i - start];
+      if (isUsable(usable, i)) envelope[i / step] = energy[i - start];
     for (const at of crestsIn(energy, from - start, to - start, apart))
       if (isUsable(usable, at + start)) crests.push({ sample: at + start, energyUv: energy[at] });
     yield to / samples.length;
