@@ -5,7 +5,7 @@ import { noiseByHalfSecond } from './between-beats';
 import { distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
-import { type SideWave, sideWaves } from './side-waves';
+import { likeSideWave, type SideWave, sideWaves } from './side-waves';
 
 /** Half of the window a complex is known by, and how far a complex may lie from where it was found. */
 const SHAPE_HALF_S = 0.12;
@@ -57,7 +57,25 @@ export function* learnShapes(
   const distinct = distinctShapes(grown, windows, rateHz, bands);
   yield 1;
   const settled = yield* settle(windows, distinct, rateHz);
-  return byWorth(settled.filter(({ count }) => count >= Math.max(2, 0.001 * windows.rows.length)));
+  const kept = settled.filter(
+    (shape) =>
+      shape.count >= Math.max(2, 0.001 * windows.rows.length) &&
+      !settled.some((other) => isSideWaveOf(shape, other, windows.lag)),
+  );
+  return byWorth(kept);
+}
+
+/** A shape this much rarer and smaller than another that is this much like one of its side waves is that wave standing alone. */
+const WAVE_RARER = 0.5;
+const WAVE_SMALLER = 0.5;
+const WAVE_LIKENESS = 0.85;
+
+function isSideWaveOf(shape: Shape, other: Shape, lag: number): boolean {
+  return (
+    shape.count < WAVE_RARER * other.count &&
+    shape.norm < WAVE_SMALLER * other.norm &&
+    likeSideWave(shape.average, shape.half, 2 * lag, other.waves) > WAVE_LIKENESS
+  );
 }
 
 function byWorth([main, ...others]: readonly Shape[]): Shape[] {
