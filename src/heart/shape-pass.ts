@@ -15,7 +15,7 @@ import { isUsable } from './usable-signal';
 import { fittedPlaces, weigher } from './weigh-places';
 
 /** Shapes searched for over the whole study, at most. */
-const MOST_SEARCHED = Number(process.env.MS ?? 6);
+const MOST_SEARCHED = 4;
 /** A place is worth weighing from this part of a shape's usual size on. */
 const LEAST_SIZE = 0.2;
 
