@@ -65,17 +65,22 @@ export function* learnShapes(
   return byWorth(kept);
 }
 
-/** A shape this much rarer and smaller than another that is this much like one of its side waves is that wave standing alone. */
+/**
+ * A shape this much rarer than another that is this much like one of its side waves, and of its size, is that wave standing
+ * alone: a beat that always follows would be as frequent. Large ones are T waves as tall as R, and taken for beats in number.
+ */
 const WAVE_RARER = 0.5;
-const WAVE_SMALLER = 0.5;
-const WAVE_LIKENESS = 0.85;
+const LARGE_COUNT = 0.1;
+const WAVE_LIKENESS = 0.97;
+const SMALL_PART = 0.5;
+const SMALL_LIKENESS = 0.85;
 
 function isSideWaveOf(shape: Shape, other: Shape, lag: number): boolean {
-  return (
-    shape.count < WAVE_RARER * other.count &&
-    shape.norm < WAVE_SMALLER * other.norm &&
-    likeSideWave(shape.average, shape.half, 2 * lag, other.waves) > WAVE_LIKENESS
-  );
+  if (!(shape.count < WAVE_RARER * other.count)) return false;
+  const isSmall = shape.norm < SMALL_PART * other.norm;
+  if (!isSmall && shape.count < LARGE_COUNT * other.count) return false;
+  const alike = likeSideWave(shape.average, shape.half, 2 * lag, other.waves);
+  return alike > (isSmall ? SMALL_LIKENESS : WAVE_LIKENESS);
 }
 
 function byWorth([main, ...others]: readonly Shape[]): Shape[] {
