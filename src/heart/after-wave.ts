@@ -31,6 +31,8 @@ export interface Weighed extends Host {
   readonly energyUv: number;
   /** Evidence that it is a beat; positive for. */
   readonly score: number;
+  /** What its shape says against a beat if it may be a T wave; 0 or less. */
+  readonly asT: number;
 }
 
 /**
@@ -44,6 +46,7 @@ export function afterWaveCosts(
   energy: Energy,
   rateHz: number,
   rrAt: (sample: number) => number,
+  weight: number,
 ): Float64Array {
   const costs = new Float64Array(places.length);
   for (let j = 0, first = 0; j < places.length; j += 1) {
@@ -58,7 +61,7 @@ export function afterWaveCosts(
       const usual = course ? greatestNear(course, at) : 0;
       costs[j] = Math.min(
         costs[j],
-        sure * waveCost(places[j].energyUv / places[i].energyUv, usual),
+        sure * (weight * waveCost(places[j].energyUv / places[i].energyUv, usual) + places[j].asT),
       );
     }
   }

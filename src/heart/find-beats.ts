@@ -2,7 +2,7 @@ import { medianInPlace } from '../numeric/statistics';
 import { afterWaveCosts, type Host, usualCourses } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
-import { firstEvidence, placeEvidence, sizeEvidence } from './evidence';
+import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
@@ -97,21 +97,25 @@ interface Surroundings {
 
 /** The likeliest beats among places, T waves of likely beats held back; yields `done` in between. */
 function* likelyPath(
-  places: readonly (Host & { readonly energyUv: number })[],
+  places: readonly (Host & { readonly energyUv: number; readonly likeT: number })[],
   scores: readonly number[],
   hosts: readonly Host[],
   { energy, rateHz, rhythm, done }: Surroundings,
   weight: number,
 ): Generator<number, { readonly path: number[]; readonly worth: readonly number[] }> {
-  const weighed = places.map((place, i) => ({ ...place, score: scores[i] }));
+  const weighed = places.map((place, i) => ({
+    ...place,
+    score: scores[i],
+    asT: waveEvidence(place.likeT),
+  }));
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
   yield done;
   const courses = usualCourses(hosts, energy, rateHz);
   yield done;
-  const costs = afterWaveCosts(weighed, courses, energy, rateHz, rrAt);
+  const costs = afterWaveCosts(weighed, courses, energy, rateHz, rrAt, weight);
   yield done;
   const times = places.map((place) => place.sample / rateHz);
-  const worth = scores.map((score, i) => score + weight * costs[i]);
+  const worth = scores.map((score, i) => score + costs[i]);
   const path = yield* quietly(bestPath(times, worth, rhythm), done);
   return { path, worth };
 }
@@ -138,7 +142,7 @@ function* firstBeats(
     return firstEvidence(energyUv, levels.beat[s], levels.noise[s]);
   });
   yield 0.3;
-  const places = crests.map((crest) => ({ ...crest, shape: 0 }));
+  const places = crests.map((crest) => ({ ...crest, shape: 0, likeT: 0 }));
   let rhythm = start;
   let path: number[] = yield* quietly(bestPath(times, scores, rhythm), 0.3);
   for (let round = 0; round < 2; round += 1) {

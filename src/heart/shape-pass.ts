@@ -37,8 +37,9 @@ export interface Candidate {
   readonly energyUv: number;
   /** Share of the learned beats that have the shape. */
   readonly share: number;
-  /** How much it is like a P or T wave of the usual beats, 0 to 1. */
-  readonly likeWave: number;
+  /** How much it is like a P wave and like a T wave of the usual beats, 0 to 1. */
+  readonly likeP: number;
+  readonly likeT: number;
   /** Root mean square of the shape band over the window about it. */
   readonly rmsUv: number;
 }
@@ -107,7 +108,8 @@ function unlike({ sample, energyUv }: Crest): Candidate {
     bestLikeness: 1,
     energyUv,
     share: 1,
-    likeWave: 0,
+    likeP: 0,
+    likeT: 0,
     rmsUv: energyUv,
   };
 }

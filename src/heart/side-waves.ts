@@ -14,6 +14,7 @@ const STEP = 2;
 
 /** A P or T wave in the shape band, its mean and slope taken out. */
 export interface SideWave {
+  readonly kind: 'P' | 'T';
   /** uV about its middle, weighted by `taper`, which falls to 0 at both ends. */
   readonly weights: Float64Array;
   readonly taper: Float64Array;
@@ -34,17 +35,17 @@ export function sideWaves(
 ): SideWave[] {
   const own = rms(sum.subarray(centre - half, centre + half + 1)) / count;
   const waves: SideWave[] = [];
-  for (const { within, halfS } of [
-    { within: P_S, halfS: P_HALF_S },
-    { within: T_S, halfS: T_HALF_S },
-  ]) {
+  for (const { kind, within, halfS } of [
+    { kind: 'P', within: P_S, halfS: P_HALF_S },
+    { kind: 'T', within: T_S, halfS: T_HALF_S },
+  ] as const) {
     const [fromS, toS] = within;
     const reach = Math.round(halfS * rateHz);
     const from = Math.max(reach, centre + Math.round(fromS * rateHz));
     const to = Math.min(sum.length - 1 - reach, centre + Math.round(toS * rateHz));
     const stretches: SideWave[] = [];
     for (let at = from; at <= to; at += STEP)
-      stretches.push(sideWaveOf(sum.subarray(at - reach, at + reach + 1), count));
+      stretches.push(sideWaveOf(kind, sum.subarray(at - reach, at + reach + 1), count));
     const best = greatestCrest(stretches.map(({ norm }) => norm / Math.sqrt(2 * reach + 1)));
     if (best.value > LEAST_PART * own) waves.push(stretches[best.at]);
   }
@@ -60,7 +61,7 @@ function greatestCrest(x: readonly number[]): { at: number; value: number } {
 }
 
 /** Mean and slope are taken out: the slow feet of the QRS complex beside a wave tilt it. */
-function sideWaveOf(x: Float64Array, count: number): SideWave {
+function sideWaveOf(kind: SideWave['kind'], x: Float64Array, count: number): SideWave {
   const half = (x.length - 1) / 2;
   const taper = x.map((_, i) => (1 - ((i - half) / (half + 1)) ** 2) ** 2);
   let [level, tilt, mass, spread] = [0, 0, 0, 0];
@@ -76,7 +77,7 @@ function sideWaveOf(x: Float64Array, count: number): SideWave {
     power += taper[i] * rest * rest;
     return taper[i] * rest;
   });
-  return { weights, taper, norm: Math.sqrt(power) };
+  return { kind, weights, taper, norm: Math.sqrt(power) };
 }
 
 /** How much a place is like a side wave of usual size, 0 to 1: likeness within `lag` samples, less where size is far off. */
