@@ -3,6 +3,7 @@ import { afterWaveCosts, type Host, usualCourses } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
 import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
+import { quietly, scaled } from './in-steps';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
@@ -31,9 +32,9 @@ const WAVE_WEIGHT = 0.37;
 export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
   const { rateHz, samples } = signal;
   const energy = yield* scaled(energyPass(signal), 0, 0.3);
-  const levels = levelsOf(energy, Math.ceil(samples.length / rateHz));
+  const levels = yield* quietly(levelsOf(energy, Math.ceil(samples.length / rateHz)), 0.3);
   yield 0.3;
-  const fallback = rhythmFromEnergy(energy, levels);
+  const fallback = yield* quietly(rhythmFromEnergy(energy, levels), 0.3);
   yield 0.3;
   const first = yield* firstBeats(energy, levels, rateHz, fallback);
   const shapes = yield* scaled(learnShapes(signal, first), 0.3, 0.5);
@@ -78,15 +79,6 @@ function* evidenceOf(
   return evidence;
 }
 
-/** Runs a pass and reports its part of the whole. */
-function* scaled<T>(pass: Generator<number, T>, from: number, to: number): Generator<number, T> {
-  for (;;) {
-    const step = pass.next();
-    if (step.done) return step.value;
-    yield from + (to - from) * step.value;
-  }
-}
-
 interface Surroundings {
   readonly energy: Energy;
   readonly rateHz: number;
@@ -110,23 +102,17 @@ function* likelyPath(
   }));
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
   yield done;
-  const courses = usualCourses(hosts, energy, rateHz);
+  const courses = yield* quietly(usualCourses(hosts, energy, rateHz), done);
   yield done;
-  const costs = afterWaveCosts(weighed, courses, energy, rateHz, rrAt, weight);
+  const costs = yield* quietly(
+    afterWaveCosts(weighed, courses, energy, rateHz, rrAt, weight),
+    done,
+  );
   yield done;
   const times = places.map((place) => place.sample / rateHz);
   const worth = scores.map((score, i) => score + costs[i]);
   const path = yield* quietly(bestPath(times, worth, rhythm), done);
   return { path, worth };
-}
-
-/** Runs a pass that says nothing of its progress. */
-function* quietly<T>(pass: Generator<void, T>, done: number): Generator<number, T> {
-  for (;;) {
-    const step = pass.next();
-    if (step.done) return step.value;
-    yield done;
-  }
 }
 
 function* firstBeats(
