@@ -1,7 +1,7 @@
 import { median } from '../numeric/statistics';
 import { latestWaveS } from './after-wave';
 import { type Growing, type Match, matchMiddle, middle, type Rows, rms } from './beat-rows';
-import { noiseByHalfSecond } from './between-beats';
+import { noiseByHalfSecond, SIDE_S } from './between-beats';
 import { distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
@@ -94,10 +94,11 @@ function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<
   const lag = Math.round(SHAPE_LAG_S * rateHz);
   const rowHalf = Math.round(ROW_HALF_S * rateHz);
   const every = Math.max(1, beats.length / MOST_BEATS);
+  const margin = bands.reach + half + Math.ceil(SIDE_S * rateHz);
   const rows: Float64Array[] = [];
   const noise: number[] = [];
   let taken = 0;
-  for (const { from, to, stretch, start } of chunksOf(signal, bands.reach + rowHalf)) {
+  for (const { from, to, stretch, start } of chunksOf(signal, margin)) {
     if (Math.floor(taken) >= beats.length) break;
     if (beats[Math.floor(taken)] >= to) continue;
     const shape = filterBand(stretch, bands.shape);

@@ -4,6 +4,7 @@ import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
 import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
 import { quietly, scaled } from './in-steps';
+import type { Judged } from './place-odds';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
@@ -12,7 +13,7 @@ export interface FoundBeats {
   readonly beats: readonly Weighed[];
   readonly shapes: readonly Shape[];
   /** All places that were weighed, ascending; the score of each holds what it is worth as a T wave too. */
-  readonly places: readonly Weighed[];
+  readonly places: readonly Judged[];
 }
 
 /** A place with its evidence: log-odds of a beat without what the rhythm says. */
@@ -41,25 +42,29 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
   const evidence = yield* evidenceOf(candidates, levels, rateHz);
   let beats: Weighed[] = [];
-  let places: Weighed[] = [];
+  let places: Judged[] = [];
   for (let round = 0; round < ROUNDS; round += 1) {
     const sizes = usualSizes(
       round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
     );
+    yield 0.92;
     const scores = evidence.map((value, i) => value + sizeEvidence(candidates[i], sizes));
     yield 0.92;
     const hosts = round === 0 ? likeliest(candidates, first, rateHz) : beats;
+    yield 0.92;
     const times = beats.map((beat) => beat.sample / rateHz);
     const rhythm = round === 0 ? () => NO_RHYTHM : rhythmFromBeats(times, fallback);
+    yield 0.92;
     const around = { energy, rateHz, rhythm, done: 0.92 };
     const { path, worth } = yield* likelyPath(candidates, scores, hosts, around, WAVE_WEIGHT);
     beats = path.map((i) => ({ ...candidates[i], score: scores[i] }));
     yield 0.92;
     if (round === ROUNDS - 1)
-      places = candidates.map((place, i) => ({ ...place, score: worth[i] }));
+      places = candidates.map(({ sample, energyUv }, i) => ({ sample, energyUv, score: worth[i] }));
     yield 0.92;
   }
-  return { beats: present(beats, shapes), shapes, places };
+  const kept = yield* present(beats, shapes);
+  return { beats: kept, shapes, places };
 }
 
 /** Places weighed between two steps. */
@@ -95,10 +100,12 @@ function* likelyPath(
   { energy, rateHz, rhythm, done }: Surroundings,
   weight: number,
 ): Generator<number, { readonly path: number[]; readonly worth: readonly number[] }> {
-  const weighed = places.map((place, i) => ({
-    ...place,
+  const weighed = places.map(({ sample, shape, energyUv, likeT }, i) => ({
+    sample,
+    shape,
+    energyUv,
     score: scores[i],
-    asT: waveEvidence(place.likeT),
+    asT: waveEvidence(likeT),
   }));
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
   yield done;
@@ -182,6 +189,8 @@ function usualSizes(beats: readonly Candidate[]): (sample: number) => number {
   };
 }
 
+/** Beats looked at between two steps. */
+const BEATS_A_STEP = 1000;
 /** Beats to each side that tell whether there is a heartbeat at all. */
 const PRESENCE_NEIGHBOURS = 20;
 /** Noise alone gives shapes whose beats are little like one another, and median likeness and size over noise below these. */
@@ -193,7 +202,10 @@ const SURE_COHERENCE = 0.75;
 const LEAST_EVIDENCE = 1;
 
 /** The beats of stretches where most of them are like their shapes or stand out of the noise: noise alone has no heartbeat. */
-function present(beats: readonly Weighed[], shapes: readonly Shape[]): Weighed[] {
+function* present(
+  beats: readonly Weighed[],
+  shapes: readonly Shape[],
+): Generator<number, Weighed[]> {
   const few = new Float64Array(2 * PRESENCE_NEIGHBOURS + 1);
   const medianAbout = (i: number, value: (beat: Weighed) => number) => {
     const first = Math.max(0, i - PRESENCE_NEIGHBOURS);
@@ -202,12 +214,18 @@ function present(beats: readonly Weighed[], shapes: readonly Shape[]): Weighed[]
     return medianInPlace(few, last - first + 1);
   };
   const coherence = ({ shape }: Weighed) => shapes[shape]?.coherence ?? 0;
-  return beats.filter((_, i) => {
+  const isPresent = (i: number) => {
     if (medianAbout(i, ({ overNoise }) => overNoise) > LEAST_OVER_NOISE) return true;
     const alike = medianAbout(i, coherence);
     return (
       (alike > LEAST_COHERENCE && medianAbout(i, ({ likeness }) => likeness) > LEAST_LIKENESS) ||
       (alike > SURE_COHERENCE && medianAbout(i, ({ score }) => score) > LEAST_EVIDENCE)
     );
-  });
+  };
+  const kept: Weighed[] = [];
+  for (let i = 0; i < beats.length; i += 1) {
+    if (isPresent(i)) kept.push(beats[i]);
+    if (i % BEATS_A_STEP === BEATS_A_STEP - 1) yield 0.92;
+  }
+  return kept;
 }

@@ -1,7 +1,7 @@
 import type { KernelSpectrum } from '../numeric/kernel-spectrum';
 import { blockSizeFor, kernelSpectrum, overlapSave } from '../numeric/overlap-save';
 import { SHAPE_LAG_S, type Shape } from './beat-shapes';
-import { type Projected, rarityCosts } from './between-beats';
+import { type Projected, rarityCosts, SIDE_S } from './between-beats';
 import {
   CREST_APART_S,
   type Crest,
@@ -60,7 +60,8 @@ export function* shapePass(
   const found: Candidate[] = [];
   let firstFrom = 0;
   let crestFrom = 0;
-  for (const { from, to, stretch, start } of chunksOf(signal, bands.reach + 2 * half + apart)) {
+  const margin = bands.reach + 2 * half + Math.max(apart, Math.ceil(SIDE_S * rateHz));
+  for (const { from, to, stretch, start } of chunksOf(signal, margin)) {
     const projected = projectBand(filterBand(stretch, bands.shape), searched, plans);
     const near: number[] = [];
     while (firstFrom < first.length && first[firstFrom] < start) firstFrom += 1;
