@@ -1,4 +1,5 @@
 import type { BeatList } from '../src/recording/beat';
+import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import type { Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { BreathingSeries, HeartSegment, RrSeries } from '../src/recording/heart-series';
@@ -55,6 +56,35 @@ export interface ReviewInputs {
   readonly settings: Settings;
   readonly spans: readonly Span[];
   readonly beats: BeatList;
+}
+
+/** The doubts of a review as it stood at an edit; those in its `settled` are left out. */
+export interface DoubtList {
+  readonly edit: number;
+  /** The one that moves a figure most comes first. */
+  readonly open: readonly Doubt[];
+}
+
+/** A doubted beat with its second of heartbeat; the doubt comes without its effect. */
+export interface LookAlike {
+  readonly doubt: Doubt;
+  /** Correlation with the beat asked for at their best alignment, -1 to 1; 1 for that beat itself. */
+  readonly likeness: number;
+  /** uV at the heartbeat's rate, from LookAlikes.beforeS before the beat (of a missed one: of its proposed place) on; NaN where nothing is. */
+  readonly heartbeatUv: Float32Array;
+}
+
+/** The open doubts whose beats are most like that of one of them. */
+export interface LookAlikes {
+  readonly edit: number;
+  /** Samples a second of the rows. */
+  readonly rateHz: number;
+  readonly beforeS: number;
+  readonly asked: LookAlike;
+  /** The most like one first, 24 at most; without the one asked for. */
+  readonly others: readonly LookAlike[];
+  /** The average of the study's most frequent shape over the same second, NaN beyond its ends; null where there is none. */
+  readonly averageUv: Float32Array | null;
 }
 
 /** Facts of the separation that the panes and dialogs show. */
@@ -141,6 +171,24 @@ export interface AnalysisApi {
   /** Reads the signals once and proposes roles, phases, spans and beats; the parts given are taken as they are. */
   propose(job: JobId, given: Given): Promise<Reply<Proposal>>;
   analyse(job: JobId, inputs: ReviewInputs): Promise<Reply<Analysis>>;
+  /** The open doubts of a review, the one that moves a figure most first; `settled` are left out. */
+  doubts(
+    job: JobId,
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+  ): Promise<Reply<DoubtList>>;
+  /** What looks like the beat of an open doubt; a failure of kind `wrong-input` where no such doubt stands at a beat. */
+  lookAlikes(
+    job: JobId,
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    doubtId: string,
+  ): Promise<Reply<LookAlikes>>;
+  /**
+   * The figures that other states of the open study give, in the order asked for; results, signals and columns of the review
+   * itself stay as they are.
+   */
+  figuresOf(job: JobId, states: readonly ReviewInputs[]): Promise<Reply<readonly Findings[]>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   cancel(job: JobId): void;

@@ -1,13 +1,17 @@
 import * as Comlink from 'comlink';
+import type { SettledDoubt } from '../src/recording/doubt';
 import type { Failure, Reply } from '../src/recording/failure';
+import type { Findings } from '../src/recording/findings';
 import type { Roles } from '../src/recording/roles';
 import type {
   Analysis,
   AnalysisApi,
   Columns,
   ColumnsRequest,
+  DoubtList,
   Given,
   JobId,
+  LookAlikes,
   Opened,
   PlacedBeat,
   Proposal,
@@ -39,6 +43,21 @@ export interface AnalysisClient {
   firstRoles(options?: CallOptions): Promise<Reply<Roles>>;
   propose(given: Given, options?: CallOptions): Promise<Reply<Proposal>>;
   analyse(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<Analysis>>;
+  doubts(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    options?: CallOptions,
+  ): Promise<Reply<DoubtList>>;
+  lookAlikes(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    doubtId: string,
+    options?: CallOptions,
+  ): Promise<Reply<LookAlikes>>;
+  figuresOf(
+    states: readonly ReviewInputs[],
+    options?: CallOptions,
+  ): Promise<Reply<readonly Findings[]>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   /** Ends the worker for good. */
@@ -195,6 +214,11 @@ export function createAnalysisClient(
     firstRoles: (options) => call((api, job) => api.firstRoles(job), options),
     propose: (given, options) => call((api, job) => api.propose(job, given), options),
     analyse: (inputs, options) => call((api, job) => api.analyse(job, inputs), options),
+    doubts: (inputs, settled, options) =>
+      call((api, job) => api.doubts(job, inputs, settled), options),
+    lookAlikes: (inputs, settled, doubtId, options) =>
+      call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
+    figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),
     columns: (request) => call((api) => api.columns(request)),
     placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
     close() {

@@ -5,6 +5,7 @@ import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import type { Interval, Span } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
+import { loadRoutes, type Routes } from '../src/separate/routes';
 import { createSeparation, redrawSlowWave, type Separation } from '../src/separate/separation';
 import { keptSamples } from '../src/stomach/kept-samples';
 import { createSpoilWatch, type SpoilWatch } from '../src/trust/spoil-watch';
@@ -91,9 +92,18 @@ export class SignalStore {
   readonly #source: SignalSource;
   readonly #kept = new Map<string, LeadSignals>();
   readonly #drawn = new Map<string, Drawn>();
+  #routes: Routes = new Map();
 
   constructor(source: SignalSource) {
     this.#source = source;
+  }
+
+  /** A store that begins with what is kept here; what either is given later is not seen by the other. */
+  apart(): SignalStore {
+    const other = new SignalStore(this.#source);
+    for (const [key, kept] of this.#kept) other.#kept.set(key, kept);
+    for (const [key, drawn] of this.#drawn) other.#drawn.set(key, drawn);
+    return other;
   }
 
   get(lead: Lead): LeadSignals | null {
@@ -104,6 +114,8 @@ export class SignalStore {
   async provide(wanted: readonly WantedLead[], settings: Settings, job: Job): Promise<void> {
     const missing = joinWanted(wanted).filter((one) => !this.#has(one, settings));
     if (missing.length === 0) return;
+    const { slowRoute, heartRoute } = settings;
+    this.#routes = new Map([...this.#routes, ...(await loadRoutes([slowRoute, heartRoute]))]);
     const readings = missing.map((one) => this.#begin(one, settings));
     await passOverLeads(this.#source, readings, job, 'Reading the recording');
     for (const reading of readings) {
@@ -142,7 +154,7 @@ export class SignalStore {
     const before = this.#drawn.get(key);
     if (before?.from === from && before.drawnBy === drawnBy) return before.output;
     const kept = keptSamples(from.recorded, from.rateHz, spoiled);
-    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing });
+    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing }, this.#routes);
     this.#drawn.set(key, { from, drawnBy, output });
     return output;
   }
@@ -183,7 +195,14 @@ export class SignalStore {
       : null;
     const separation: Separation | null =
       wanted.slow || wanted.heart
-        ? createSeparation({ lead: key, rateHz, sampleCount, settings, wants: wanted })
+        ? createSeparation({
+            lead: key,
+            rateHz,
+            sampleCount,
+            settings,
+            routes: this.#routes,
+            wants: wanted,
+          })
         : null;
     const breathing: BreathingSampler | null = wanted.breathing
       ? createBreathingSampler(rateHz)

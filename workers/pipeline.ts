@@ -3,7 +3,9 @@ import { quickKey } from '../src/decode/quick-key';
 import { type Detection, type DetectionInput, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
 import { NO_BEATS } from '../src/recording/beat';
+import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
+import type { Findings } from '../src/recording/findings';
 import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
@@ -18,8 +20,10 @@ import type {
   Analysis,
   Columns,
   ColumnsRequest,
+  DoubtList,
   Given,
   JobId,
+  LookAlikes,
   Opened,
   PlacedBeat,
   Proposal,
@@ -35,12 +39,20 @@ import {
 import { inTurns, type Job } from './job';
 import { doubtedOf, judgedSpans } from './judged-spans';
 import { columnsOf } from './pipeline-columns';
+import { type DoubtInputs, doubtList, lookAlikes, openDoubts } from './pipeline-doubts';
 import { measureHeartbeats } from './pipeline-measures';
-import { type Computed, createResults, type Results } from './pipeline-results';
+import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
 import { phasesFromAnnotations } from './propose-phases';
 import { proposeRoles, type QrsMeasure } from './propose-roles';
 import { type Remembered, remember } from './remember';
+import { sameReview } from './same-series';
+
+/** Results with what they were computed from. */
+interface Reckoned {
+  readonly from: ResultInputs;
+  readonly computed: Computed;
+}
 
 interface Study {
   readonly source: SignalSource;
@@ -50,6 +62,8 @@ interface Study {
   detection: { readonly key: string; readonly found: Detection } | null;
   heartLead: Lead | null;
   readonly reference: Remembered<ReferenceInputs, Float64Array | null>;
+  /** What the last analysis stood on and gave. */
+  last: Reckoned | null;
   /** Ends when the long work under way does. */
   busy: Promise<void>;
 }
@@ -67,6 +81,21 @@ export interface Pipeline {
   firstRoles(): Promise<Roles>;
   propose(given: Given, job: Job): Promise<Proposal>;
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
+  doubts(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<DoubtList>;
+  /** The open doubts in the order of time without their effects, which takes far less. */
+  openDoubts(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    job: Job,
+  ): Promise<readonly Doubt[]>;
+  lookAlikes(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    doubtId: string,
+    job: Job,
+  ): Promise<LookAlikes>;
+  /** The figures of other states of the study, which leave what was found for the review as it is. */
+  figuresOf(states: readonly ReviewInputs[], job: Job): Promise<readonly Findings[]>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -95,6 +124,7 @@ export function createPipeline(): Pipeline {
         detection: null,
         heartLead: null,
         reference: remember(referenceKey, breathingReference),
+        last: null,
         busy: Promise.resolve(),
       };
       opened = { ticket, study };
@@ -109,6 +139,19 @@ export function createPipeline(): Pipeline {
     firstRoles: () => firstRoles(study()),
     propose: (given, job) => inLine(study(), job, (one) => propose(one, given, job)),
     analyse: (inputs, job) => inLine(study(), job, (one) => analyse(one, inputs, job)),
+    async doubts(inputs, settled, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return doubtList(from, settled, job);
+    },
+    async openDoubts(inputs, settled, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return openDoubts(from, settled, job);
+    },
+    async lookAlikes(inputs, settled, doubtId, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return lookAlikes(from, settled, doubtId, job);
+    },
+    figuresOf: (states, job) => figuresOf(study(), states, job),
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
@@ -265,6 +308,18 @@ async function detectionOf(
 }
 
 async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<Analysis> {
+  const { computed } = await reckon(study, inputs, job);
+  return study.results.deliver(computed);
+}
+
+/** What the doubts of a review stand on: the last analysis where it was of the same review. */
+async function doubtInputs(study: Study, inputs: ReviewInputs, job: Job): Promise<DoubtInputs> {
+  const known = study.last && sameReview(study.last.from.inputs, inputs) ? study.last : null;
+  const { from, computed } = known ?? (await reckon(study, inputs, job));
+  return { ...from, inputs, computed, recording: study.source.recording };
+}
+
+async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Reckoned> {
   const { roles, settings } = inputs;
   await study.signals.provide(wantedOf(roles), settings, job);
   const { heart } = roles;
@@ -291,7 +346,39 @@ async function analyse(study: Study, inputs: ReviewInputs, job: Job): Promise<An
   };
   const first = await study.results.of(from, job);
   const slow = redrawn(study, inputs, from.slow, { first, spoiledOf });
-  return study.results.deliver(slow ? await study.results.of({ ...from, slow }, job) : first);
+  const last = slow ? { ...from, slow } : from;
+  study.last = { from: last, computed: slow ? await study.results.of(last, job) : first };
+  return study.last;
+}
+
+/**
+ * The same study with room of its own for what is found: it begins with the signals and beats that are there, and what it
+ * adds is not seen by the other.
+ */
+const apartFrom = (study: Study): Study => ({
+  ...study,
+  signals: study.signals.apart(),
+  results: createResults(study.source.recording),
+  reference: remember(referenceKey, breathingReference),
+});
+
+async function figuresOf(
+  study: Study,
+  states: readonly ReviewInputs[],
+  job: Job,
+): Promise<readonly Findings[]> {
+  let apart: Study | null = null;
+  const found: Findings[] = [];
+  for (const inputs of states) {
+    job.progress('Computing the figures of other states', found.length / states.length);
+    const quiet: Job = { breathe: () => job.breathe(), progress: () => undefined };
+    const { computed } = await inLine(study, job, () => {
+      apart ??= apartFrom(study);
+      return reckon(apart, inputs, quiet);
+    });
+    found.push(computed.findings);
+  }
+  return found;
 }
 
 /**

@@ -1,5 +1,6 @@
 import type { BeatList } from '../src/recording/beat';
 import type { BreathingSeries } from '../src/recording/heart-series';
+import type { ReviewInputs } from './analysis-api';
 
 /** True where both lists hold the same beats. */
 export function sameBeats(a: BeatList, b: BeatList): boolean {
@@ -13,6 +14,13 @@ export function sameBeats(a: BeatList, b: BeatList): boolean {
 /** True where both series say the same, NaN being equal to itself. */
 export const sameBreathing = (a: BreathingSeries, b: BreathingSeries): boolean =>
   a.from === b.from && sameArray(a.centresS, b.centresS) && sameArray(a.perMinute, b.perMinute);
+
+/** True where both say the same at the same edit. */
+export function sameReview(a: ReviewInputs, b: ReviewInputs): boolean {
+  const rest = ({ edit, roles, phases, settings, spans }: ReviewInputs) =>
+    JSON.stringify([edit, roles, phases, settings, spans]);
+  return sameBeats(a.beats, b.beats) && rest(a) === rest(b);
+}
 
 function sameArray(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
   if (a.length !== b.length) return false;

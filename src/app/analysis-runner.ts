@@ -2,8 +2,10 @@ import type { ReviewInputs } from '../../workers/analysis-api';
 import type { AnalysisClient } from '../../workers/analysis-client';
 import { type AnalysisStore, type SignalAccess, takeAnalysis } from '../review/analysis-store';
 import { asWork, beginWork, endWork } from '../review/idle';
-import type { Session } from '../session/document';
+import { forgetDrawnGains, type ViewStore } from '../review/view-store';
+import type { Session, SessionState } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
+import { keepFigures, markOf } from './figures-kept';
 import type { ShellStore } from './shell-store';
 
 /** Work shorter than this shows no progress line. */
@@ -11,8 +13,13 @@ const SHOW_PROGRESS_AFTER_MS = 200;
 
 /** What the worker is to compute from, as the session stands. */
 export function inputsOf(session: Session): ReviewInputs {
-  const { roles, phases, settings, spans, beats } = session.state;
-  return { edit: editNumber(session), roles, phases, settings, spans, beats };
+  return stateInputs(session.state, editNumber(session));
+}
+
+/** What the worker is to compute from, for any state; figures carry the number of the edit. */
+export function stateInputs(state: SessionState, edit: number): ReviewInputs {
+  const { roles, phases, settings, spans, beats } = state;
+  return { edit, roles, phases, settings, spans, beats };
 }
 
 /** True where both give the same figures: edits of words and protocol do not reach the worker. */
@@ -25,6 +32,10 @@ function sameInputs(a: ReviewInputs, b: ReviewInputs): boolean {
     a.beats === b.beats
   );
 }
+
+/** What the size of a drawn slow wave or heartbeat hangs on. */
+const routesOf = ({ slowRoute, heartRoute, fractional }: ReviewInputs['settings']): string =>
+  JSON.stringify([slowRoute, heartRoute, fractional.order]);
 
 /** True where the signals themselves are to be made again, so that work under way is of no use any more. */
 function otherSignals(a: ReviewInputs, b: ReviewInputs): boolean {
@@ -51,6 +62,7 @@ interface RunnerParts {
   readonly client: AnalysisClient;
   readonly session: SessionStore;
   readonly analysis: AnalysisStore;
+  readonly view: ViewStore;
   readonly shell: ShellStore;
 }
 
@@ -58,9 +70,12 @@ export function createAnalysisRunner({
   client,
   session,
   analysis,
+  view,
   shell,
 }: RunnerParts): AnalysisRunner {
   let sent: ReviewInputs | null = null;
+  /** By which routes the signals in sight were made; null before the first. */
+  let madeBy: string | null = null;
   /** Grows with every study, so that a late reply is not taken for this one's. */
   let visit = 0;
   const abortable = new Set<AbortController>();
@@ -100,10 +115,10 @@ export function createAnalysisRunner({
       analysis.setState({ edit: inputs.edit });
       return;
     }
-    void run(inputs);
+    void run(inputs, markOf(open, inputs.edit));
   }
 
-  async function run(inputs: ReviewInputs): Promise<void> {
+  async function run(inputs: ReviewInputs, mark: object): Promise<void> {
     const anew = !sent || otherSignals(sent, inputs);
     const started = visit;
     sent = inputs;
@@ -119,6 +134,10 @@ export function createAnalysisRunner({
     if (visit !== started) return follow();
     if (reply.ok) {
       takeAnalysis(analysis, reply.value);
+      keepFigures(mark, reply.value.findings);
+      const before = madeBy;
+      madeBy = routesOf(inputs.settings);
+      if (before !== null && before !== madeBy) forgetDrawnGains(view);
       if (anew || reply.value.separation !== null)
         analysis.setState((before) => ({ signalVersion: before.signalVersion + 1 }));
       return follow();
@@ -152,6 +171,7 @@ export function createAnalysisRunner({
     },
     reset() {
       sent = null;
+      madeBy = null;
       visit += 1;
       for (const controller of abortable) controller.abort();
     },

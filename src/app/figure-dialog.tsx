@@ -1,4 +1,5 @@
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
+import { FIGURE_MEANINGS } from '../recording/figure-meanings';
 import type { PhaseFindings } from '../recording/findings';
 import type { Settings } from '../recording/settings';
 import { goToStretch } from '../review/findings-go';
@@ -6,6 +7,7 @@ import { figureWords, stretchWords } from '../review/findings-words';
 import { useAnalysis, useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { EpochTable, SegmentTable } from './figure-data';
+import { FigureHistory } from './figure-history';
 
 interface FigureDialogProps {
   /** Key of the figure catalogue, and the name of the phase or part of it. */
@@ -43,6 +45,7 @@ export function FigureDialog({ figure, phase }: FigureDialogProps) {
       }
     >
       <FigureFacts definition={definition} part={part} settings={settings} />
+      <FigureHistory definition={definition} part={part.name} />
       {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}
       {definition.organ === 'heart' ? <SegmentTable part={part} onGo={go} /> : null}
     </Dialog>
@@ -57,6 +60,7 @@ interface FigureFactsProps {
 
 function FigureFacts({ definition, part, settings }: FigureFactsProps) {
   const { large, small } = figureWords(part.figures[definition.key], definition);
+  const meaning = FIGURE_MEANINGS[definition.key];
   return (
     <>
       <p className="figure-value">
@@ -68,15 +72,15 @@ function FigureFacts({ definition, part, settings }: FigureFactsProps) {
       <dl className="facts-list">
         <div>
           <dt>Meaning</dt>
-          <dd>{definition.definition}</dd>
+          <dd>{meaning.definition}</dd>
         </div>
         <div>
           <dt>Source</dt>
-          <dd>{definition.source}</dd>
+          <dd>{meaning.source}</dd>
         </div>
         <div>
           <dt>Settings</dt>
-          <dd>{definition.settings(settings)}</dd>
+          <dd>{meaning.settings(settings)}</dd>
         </div>
       </dl>
     </>

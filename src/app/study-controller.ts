@@ -6,6 +6,7 @@ import { type Failure, Refusal } from '../recording/failure';
 import type { Recording } from '../recording/recording';
 import { DEFAULT_SETTINGS } from '../recording/settings';
 import { type AnalysisStore, blankAnalysis, type SignalAccess } from '../review/analysis-store';
+import { asWork } from '../review/idle';
 import { lookAtStudy, type ViewStore } from '../review/view-store';
 import type { Edit, Session } from '../session/document';
 import { initialState, studyIdentity } from '../session/initial-state';
@@ -56,9 +57,9 @@ export function createStudyController(parts: ControllerParts): StudyController &
     },
   );
   const hash = createHashClient(() => startModuleWorker(parts.hashWorkerUrl));
-  const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, shell });
+  const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, view, shell });
   const keeping = createStudyKeeping({ keeper, hash, session, shell });
-  const files = createStudyFiles({ session, analysis, shell, keeping });
+  const files = createStudyFiles({ session, analysis, shell, keeping, client });
   const propose = (given: Given) =>
     runner.watched('Reading the recording', (watch) => client.propose(given, watch));
   const edits = createStudyEdits({
@@ -293,6 +294,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       blank();
       lastStudy.clear();
     },
+    figuresOf: (states, options) => asWork(client.figuresOf(states, options)),
     stop: () => analysis.getState().progress?.stop(),
   };
 }

@@ -1,4 +1,4 @@
-import { adequacyReason } from '../recording/adequacy';
+import { adequacyReason, keptPercent } from '../recording/adequacy';
 import type { Adequacy, Findings, PhaseFindings } from '../recording/findings';
 import { isMeal } from '../recording/phase';
 import { formatClock } from '../units/time';
@@ -49,7 +49,7 @@ function rowOf(phase: PhaseFindings, heartLead: boolean, notes: Notes): Adequacy
     const reason = analysed ? adequacyReason(adequacy, keptS, lengthS) : '';
     return {
       minutes: (keptS / 60).toFixed(1),
-      percent: `${lengthS > 0 ? Math.floor((100 * keptS) / lengthS) : 0} %`,
+      percent: `${keptPercent(keptS, lengthS)} %`,
       words: WORDS[adequacy],
       letters: reason === '' ? [] : [notes.letterOf(`${WORDS[adequacy]}: ${reason}`)],
     };

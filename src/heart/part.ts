@@ -28,6 +28,10 @@ export interface PartOfHeart {
   readonly timingSdMs: number;
 }
 
+/** "1 segment", "6 segments". */
+export const counted = (segments: number): string =>
+  segments === 1 ? '1 segment' : `${segments} segments`;
+
 export const minutes = (seconds: Seconds): string => (seconds / 60).toFixed(1);
 
 /** Segments that stand for the part: the full ones, or the single short one. */
@@ -51,7 +55,7 @@ export function irregularSeconds(heart: PartOfHeart): Seconds {
 export function irregularMarks(heart: PartOfHeart): readonly string[] {
   const judged = judgedSegments(heart);
   const count = inState(judged, 'irregular').length;
-  return count > 0 ? [`${count} of ${judged.length} segments irregular, left out`] : [];
+  return count > 0 ? [`${count} of ${counted(judged.length)} irregular, left out`] : [];
 }
 
 /** What to print beside a figure of NN intervals where too many intervals are none; empty where enough are. */
@@ -81,5 +85,5 @@ export function nothingRegular(heart: PartOfHeart): FigureValue | null {
   if (heart.allTime.nnCount === 0) return withheld('no NN interval in this part');
   if (heart.regularTime.nnCount > 0) return null;
   const judged = judgedSegments(heart);
-  return withheld(`the rhythm is irregular in ${judged.length} of ${judged.length} segments`);
+  return withheld(`the rhythm is irregular in ${judged.length} of ${counted(judged.length)}`);
 }

@@ -1,5 +1,6 @@
 import { type Figures, type FigureValue, numberFigure, withheld } from '../recording/figure';
 import {
+  counted,
   irregularMarks,
   judgedSegments,
   minutes,
@@ -32,7 +33,7 @@ function average(
   return {
     ok: true,
     value: values.reduce((sum, value) => sum + value, 0) / values.length,
-    basis: `${values.length} of ${judged.length} segments${length}`,
+    basis: `${values.length} of ${counted(judged.length)}${length}`,
   };
 }
 

@@ -42,9 +42,13 @@ export function coverageOf(lost: readonly Interval[], fromS: Seconds, toS: Secon
 /** Why so little of a phase is left that its figures are limited or not reported; '' where enough is. */
 export function adequacyReason(adequacy: Adequacy, keptS: Seconds, lengthS: Seconds): string {
   if (adequacy === 'enough') return '';
-  const share = lengthS > 0 ? Math.round((100 * keptS) / lengthS) : 0;
-  const lost = 1 - share / 100 > NOT_REPORTABLE_LOSS;
+  const lost = lengthS > 0 && keptS / lengthS < 1 - NOT_REPORTABLE_LOSS - ROUNDING;
   return adequacy === 'not-reportable' && !lost
     ? `${(keptS / 60).toFixed(1)} min kept are too few`
-    : `${share} % kept`;
+    : `${keptPercent(keptS, lengthS)} % kept`;
+}
+
+/** Whole percent kept, rounded down, so that a phase that lost over 30 % never reads as 70 % kept; 0 without a length. */
+export function keptPercent(keptS: Seconds, lengthS: Seconds): number {
+  return lengthS > 0 ? Math.floor((100 * keptS) / lengthS + ROUNDING) : 0;
 }

@@ -5,7 +5,7 @@ export type Organ = 'stomach' | 'heart' | 'breathing';
 /** How a figure is compared between fasting and fed. */
 export type ChangeRule = 'difference' | 'none';
 
-/** One figure of the program: what it is called, how it is written, what it means. Keys are stable; files carry them. */
+/** One figure of the program: what it is called and how it is written. Keys are stable; files carry them. */
 export interface FigureDefinition {
   readonly key: string;
   readonly organ: Organ;
@@ -15,9 +15,12 @@ export interface FigureDefinition {
   readonly change: ChangeRule;
   /** Shown in the short list of the Findings pane; the rest opens below it. */
   readonly main: boolean;
+}
+
+/** What a figure means, where that comes from, and the settings it depends on, in words. */
+export interface FigureMeaning {
   readonly definition: string;
   readonly source: string;
-  /** The settings that the figure depends on, in words. */
   readonly settings: (settings: Settings) => string;
 }
 
@@ -30,8 +33,7 @@ export const figureRow = (
   label: string,
   unit: string,
   decimals: number,
-  rest: Pick<FigureRow, 'definition' | 'source' | 'settings'> &
-    Partial<Pick<FigureRow, 'change' | 'main'>>,
+  rest: Partial<Pick<FigureRow, 'change' | 'main'>> = {},
 ): FigureRow => ({ key, label, unit, decimals, change: 'difference', main: false, ...rest });
 
 /** Source of a rule that is this program's own. */

@@ -3,7 +3,7 @@ import type { Settings } from '../recording/settings';
 import type { Hertz } from '../units/rate';
 import { createGapFiller, maskGaps } from './gaps';
 import type { Drawing, RouteRun, SeparatedSlow } from './route';
-import { ROUTES } from './routes';
+import { type Routes, routeOf } from './routes';
 import { createSlowSampler, slowRateHz } from './slow-rate';
 
 export interface SeparationOptions {
@@ -12,6 +12,8 @@ export interface SeparationOptions {
   readonly rateHz: Hertz;
   readonly sampleCount: number;
   readonly settings: Settings;
+  /** Those that the settings name. */
+  readonly routes: Routes;
   readonly wants: { readonly slow: boolean; readonly heart: boolean };
 }
 
@@ -29,13 +31,15 @@ export interface Separation {
 
 /** The runs that make what is wanted: one for both outputs where they take the same route. */
 function startRuns(options: SeparationOptions): RouteRun[] {
-  const { settings, wants } = options;
+  const { settings, wants, routes } = options;
   const { slowRoute, heartRoute } = settings;
   if (wants.slow && wants.heart && slowRoute === heartRoute)
-    return [ROUTES[slowRoute].start({ ...options, slow: true, heart: true })];
+    return [routeOf(routes, slowRoute).start({ ...options, slow: true, heart: true })];
   const runs: RouteRun[] = [];
-  if (wants.slow) runs.push(ROUTES[slowRoute].start({ ...options, slow: true, heart: false }));
-  if (wants.heart) runs.push(ROUTES[heartRoute].start({ ...options, slow: false, heart: true }));
+  if (wants.slow)
+    runs.push(routeOf(routes, slowRoute).start({ ...options, slow: true, heart: false }));
+  if (wants.heart)
+    runs.push(routeOf(routes, heartRoute).start({ ...options, slow: false, heart: true }));
   return runs;
 }
 
@@ -44,7 +48,8 @@ function startRuns(options: SeparationOptions): RouteRun[] {
  * settings name. Rates from above 0 to several kHz; below 4 Hz the slow wave keeps the lead's rate,
  * and where the rate leaves no band for beats the heartbeat is null. Nothing is read beyond the
  * ends: the signal counts as turned about its end values, and the stretches this touches, with
- * those beside gaps, are given as unclean. Throws where the rate is not above 0.
+ * those beside gaps, are given as unclean. Throws where the rate is not above 0 or a route was not
+ * loaded.
  */
 export function createSeparation(options: SeparationOptions): Separation {
   const { rateHz, wants } = options;
@@ -78,8 +83,9 @@ export function redrawSlowWave(
   slow: SeparatedSlow,
   settings: Settings,
   drawing: Drawing,
+  routes: Routes,
 ): SeparatedSlow {
   if (slow.route !== settings.slowRoute)
     throw new Error(`a slow wave of route ${slow.route} cannot be drawn by ${settings.slowRoute}`);
-  return ROUTES[slow.route].redraw(slow, settings, drawing);
+  return routeOf(routes, slow.route).redraw(slow, settings, drawing);
 }

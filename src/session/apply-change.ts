@@ -1,10 +1,11 @@
 import { changeBeats } from '../recording/beat';
+import type { SettledDoubt } from '../recording/doubt';
 import type { Span } from '../recording/span';
 import type { Change, SessionState, StudyIdentity } from './document';
 
 /**
  * The state after one change. Throws RangeError where the change does not fit the state: a beat or span to take out that
- * is not there, a beat put on an occupied tick, a span id used twice.
+ * is not there, a beat put on an occupied tick, a span or doubt of an id used twice.
  */
 export function applyChange(state: SessionState, change: Change): SessionState {
   switch (change.kind) {
@@ -14,6 +15,8 @@ export function applyChange(state: SessionState, change: Change): SessionState {
       return { ...state, beats: change.after };
     case 'spans':
       return { ...state, spans: changeSpans(state.spans, change.removed, change.added) };
+    case 'doubts':
+      return { ...state, doubts: changeDoubts(state.doubts, change.removed, change.added) };
     case 'field':
       return { ...state, [change.field]: change.after };
     case 'sign':
@@ -28,6 +31,7 @@ export function invert(change: Change): Change {
   switch (change.kind) {
     case 'beats':
     case 'spans':
+    case 'doubts':
       return { ...change, removed: change.added, added: change.removed } as Change;
     case 'all-beats':
     case 'field':
@@ -58,6 +62,25 @@ function changeSpans(
     ids.add(span.id);
   }
   return inSpanOrder([...left, ...added]);
+}
+
+const byId = (a: SettledDoubt, b: SettledDoubt) => Number(a.id > b.id) - Number(a.id < b.id);
+
+function changeDoubts(
+  doubts: readonly SettledDoubt[],
+  removed: readonly SettledDoubt[],
+  added: readonly SettledDoubt[],
+): readonly SettledDoubt[] {
+  const gone = new Set(removed.map(({ id }) => id));
+  const left = doubts.filter(({ id }) => !gone.has(id));
+  if (doubts.length - left.length !== removed.length)
+    throw new RangeError(`no settled doubts ${[...gone].join(', ')}`);
+  const ids = new Set(left.map(({ id }) => id));
+  for (const { id } of added) {
+    if (ids.has(id)) throw new RangeError(`doubt ${id} is settled already`);
+    ids.add(id);
+  }
+  return [...left, ...added].sort(byId);
 }
 
 /** Only what differs between before and after is set, so that taking back a code leaves a hash learnt since. */

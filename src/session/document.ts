@@ -1,13 +1,14 @@
 import type { Beat, BeatList } from '../recording/beat';
+import type { SettledDoubt } from '../recording/doubt';
 import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
 import type { Settings } from '../recording/settings';
-import type { Span } from '../recording/span';
+import type { Interval, Span } from '../recording/span';
 
 /** Version of the session document this program writes; older ones are migrated by named steps. */
-export const SESSION_VERSION = 2;
+export const SESSION_VERSION = 3;
 
 /** The study a session belongs to; names are not kept. */
 export interface StudyIdentity {
@@ -29,6 +30,24 @@ export interface TimedNote {
   readonly id: number;
   readonly atS: number;
   readonly text: string;
+}
+
+/** A complaint at a time, from 0 (none) to 10 (the worst there can be) as the person said it. */
+export interface Symptom {
+  readonly id: number;
+  readonly atS: number;
+  readonly text: string;
+  readonly score: number;
+}
+
+/** A place to return to: where both panes looked, which rows were shown, and why. */
+export interface Bookmark {
+  readonly id: number;
+  readonly minutes: Interval;
+  readonly seconds: Interval;
+  /** Which rows were shown: `reported` for those of the reported lead alone; empty where all were. */
+  readonly rows: readonly string[];
+  readonly note: string;
 }
 
 /** One finished signing: the figures as they were. */
@@ -58,6 +77,10 @@ export interface SessionState {
   readonly beats: BeatList;
   readonly spans: readonly Span[];
   readonly events: readonly TimedNote[];
+  readonly symptoms: readonly Symptom[];
+  /** Doubts that are open no more, in the order of their ids. */
+  readonly doubts: readonly SettledDoubt[];
+  readonly bookmarks: readonly Bookmark[];
   /** Reviewer's own words: remarks and conclusion of the report. */
   readonly notes: string;
   readonly conclusion: string;
@@ -72,6 +95,8 @@ export type ReplacedField =
   | 'phases'
   | 'settings'
   | 'events'
+  | 'symptoms'
+  | 'bookmarks'
   | 'notes'
   | 'conclusion';
 
@@ -81,6 +106,11 @@ export type Change =
   /** All beats replaced at once: first detection, detection again after the heart lead or its route changed. */
   | { readonly kind: 'all-beats'; readonly before: BeatList; readonly after: BeatList }
   | { readonly kind: 'spans'; readonly removed: readonly Span[]; readonly added: readonly Span[] }
+  | {
+      readonly kind: 'doubts';
+      readonly removed: readonly SettledDoubt[];
+      readonly added: readonly SettledDoubt[];
+    }
   | {
       readonly [F in ReplacedField]: {
         readonly kind: 'field';

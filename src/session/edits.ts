@@ -17,6 +17,7 @@ export {
   replaceAllBeats,
   replaceBeatsWithin,
 } from './beat-edits';
+export { keepDoubts, mendDoubts } from './doubt-edits';
 export { addSpan, addSpans, changeSpan, removeSpans } from './span-edits';
 
 /** One field replaced as a whole, as one undo step of the given name; no change where the value is the same. */

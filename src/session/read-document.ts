@@ -76,7 +76,7 @@ function migrated(value: unknown): Readonly<Record<string, unknown>> {
 
 function stateOf(kept: KeptState): SessionState {
   const { study, protocol, events, roles, leadChoice, phases, settings } = kept;
-  const { spans, notes, conclusion, signed } = kept;
+  const { spans, notes, conclusion, signed, symptoms, doubts, bookmarks } = kept;
   return {
     study,
     protocol,
@@ -87,6 +87,9 @@ function stateOf(kept: KeptState): SessionState {
     beats: expandBeats(kept.beats),
     spans,
     events,
+    symptoms,
+    doubts,
+    bookmarks,
     notes,
     conclusion,
     signed,

@@ -1,11 +1,12 @@
 import * as v from 'valibot';
+import { DOUBT_ENDINGS, type SettledDoubt } from '../recording/doubt';
 import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
 import { BREATHING_OUT, type Settings, SLOW_GAINS } from '../recording/settings';
-import { SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
-import type { Signature, StudyIdentity, TimedNote } from './document';
+import { type Interval, SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
+import type { Bookmark, Signature, StudyIdentity, Symptom, TimedNote } from './document';
 
 /** A schema of what a type of the program holds; the compiler fails when the two part. */
 type SchemaOf<T> = v.GenericSchema<unknown, T>;
@@ -58,6 +59,28 @@ export const phases: SchemaOf<readonly Phase[]> = v.array(
 export const events: SchemaOf<readonly TimedNote[]> = v.array(
   v.strictObject({ id: whole, atS: number, text }),
 );
+
+export const symptoms: SchemaOf<readonly Symptom[]> = v.array(
+  v.strictObject({ id: whole, atS: number, text, score: number }),
+);
+
+const interval: SchemaOf<Interval> = v.strictObject({ fromS: number, toS: number });
+
+export const bookmarks: SchemaOf<readonly Bookmark[]> = v.array(
+  v.strictObject({
+    id: whole,
+    minutes: interval,
+    seconds: interval,
+    rows: v.array(text),
+    note: text,
+  }),
+);
+
+export const settledDoubt: SchemaOf<SettledDoubt> = v.strictObject({
+  id: text,
+  ending: v.picklist(DOUBT_ENDINGS),
+  tick: v.nullable(whole),
+});
 
 export const span: SchemaOf<Span> = v.strictObject({
   id: whole,

@@ -2,14 +2,17 @@ import * as v from 'valibot';
 import { BEAT_CLASSES, BEAT_ORIGINS } from '../recording/beat';
 import { SESSION_VERSION } from './document';
 import {
+  bookmarks,
   events,
   phases,
   protocol,
   roles,
   settings,
+  settledDoubt,
   signature,
   span,
   study,
+  symptoms,
   text,
   whole,
 } from './schema-parts';
@@ -42,6 +45,11 @@ const change = v.variant('kind', [
   v.strictObject({ kind: v.literal('beats'), removed: list(beat), added: list(beat) }),
   v.strictObject({ kind: v.literal('all-beats'), before: beats, after: beats }),
   v.strictObject({ kind: v.literal('spans'), removed: list(span), added: list(span) }),
+  v.strictObject({
+    kind: v.literal('doubts'),
+    removed: list(settledDoubt),
+    added: list(settledDoubt),
+  }),
   v.variant('field', [
     replaced('protocol', protocol),
     replaced('roles', roles),
@@ -49,6 +57,8 @@ const change = v.variant('kind', [
     replaced('phases', phases),
     replaced('settings', settings),
     replaced('events', events),
+    replaced('symptoms', symptoms),
+    replaced('bookmarks', bookmarks),
     replaced('notes', text),
     replaced('conclusion', text),
   ]),
@@ -76,6 +86,9 @@ const stateParts = {
   study,
   protocol,
   events,
+  symptoms,
+  doubts: list(settledDoubt),
+  bookmarks,
   roles,
   leadChoice: text,
   phases,
@@ -87,11 +100,8 @@ const stateParts = {
   signed: list(signature),
 };
 
-/** Room for what later versions hold; empty in this one. */
-const none = v.pipe(v.strictTuple([]), v.readonly());
-
 /**
- * The session document, version 1: the state as it is, the state it began with (`start`), and the log that leads from one to
+ * The session document: the state as it is, the state it began with (`start`), and the log that leads from one to
  * the other. `preparedBy` and `readBy` repeat the last names signed, for who reads the file with other tools.
  */
 export const sessionDocument = v.strictObject({
@@ -99,9 +109,6 @@ export const sessionDocument = v.strictObject({
   version: v.literal(SESSION_VERSION),
   program: text,
   ...stateParts,
-  symptoms: none,
-  doubts: none,
-  bookmarks: none,
   preparedBy: text,
   readBy: text,
   start: v.strictObject(stateParts),

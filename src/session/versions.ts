@@ -16,6 +16,9 @@ function withDrawing(value: unknown): unknown {
   return { ...said, ...Object.fromEntries(entries) };
 }
 
+/** What version 2 kept room for beside the state. */
+const NO_LISTS = { symptoms: [], doubts: [], bookmarks: [] };
+
 /** The steps from version 1 on, one a version, without gaps. */
 export const MIGRATIONS: readonly Migration[] = [
   {
@@ -23,6 +26,11 @@ export const MIGRATIONS: readonly Migration[] = [
     name: 'settings say how the slow wave is drawn',
     up: (document) =>
       Object.fromEntries(Object.entries(document).map(([key, one]) => [key, withDrawing(one)])),
+  },
+  {
+    from: 2,
+    name: 'symptoms, settled doubts and bookmarks are part of the state',
+    up: (document) => ({ ...document, start: { ...NO_LISTS, ...Object(document.start) } }),
   },
 ];
 

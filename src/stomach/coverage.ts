@@ -1,4 +1,4 @@
-import { coverageOf } from '../recording/adequacy';
+import { coverageOf, keptPercent } from '../recording/adequacy';
 import type { Adequacy } from '../recording/findings';
 import type { Interval } from '../recording/span';
 import type { Seconds } from '../units/time';
@@ -32,8 +32,8 @@ export function stomachCoverage(
   phase: { readonly fromS: Seconds; readonly toS: Seconds },
   spoiled: readonly Interval[],
 ): StomachCoverage {
-  const { keptS, share, adequacy } = coverageOf(spoiled, phase.fromS, phase.toS);
-  const lost = `${100 - Math.round(100 * share)} % of the phase is lost`;
+  const { keptS, adequacy } = coverageOf(spoiled, phase.fromS, phase.toS);
+  const lost = `${100 - keptPercent(keptS, phase.toS - phase.fromS)} % of the phase is lost`;
   const overHalfLost = adequacy === 'not-reportable' ? `${lost} (over 50 %)` : null;
   const tooShort =
     keptS < NOTHING_BELOW_S - ROUNDING_S

@@ -25,7 +25,7 @@ export async function editBeats(page: Page): Promise<readonly number[]> {
     await page.keyboard.press(edit % 2 === 0 ? 'v' : 'n');
     const settled = () => window.watched.settledMs > 0;
     await page.waitForFunction(settled, null, { polling: POLL_MS });
-    times.push(await page.evaluate(() => window.watched.settledMs - window.watched.editMs));
+    times.push(await page.evaluate(() => window.watched.editFiguresMs - window.watched.editMs));
   }
   const last = (await page.locator('#findings [role="status"]').textContent()) ?? '';
   if (!last.includes(`edit ${EDITS + NOT_COUNTED}`))

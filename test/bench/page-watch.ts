@@ -10,8 +10,9 @@ export interface Watched {
   allRowsMs: number;
   /** All figures stand in Findings and nothing is under way. */
   figuresMs: number;
-  /** The last edit by a key, and the first frame after it with nothing under way. */
+  /** The last edit by a key, the first frame after it with the figures of that edit, and the first with nothing under way. */
   editMs: number;
+  editFiguresMs: number;
   settledMs: number;
   /** Tasks over 50 ms on the main thread. */
   readonly longTasks: { readonly atMs: number; readonly ms: number }[];
@@ -39,6 +40,7 @@ export function watchPage(): void {
     allRowsMs: 0,
     figuresMs: 0,
     editMs: 0,
+    editFiguresMs: 0,
     settledMs: 0,
     longTasks: [],
     frames: [],
@@ -62,6 +64,12 @@ export function watchPage(): void {
   const there = (selector: string) => document.querySelector(selector) !== null;
   const settled = () =>
     document.documentElement.dataset.idle === 'true' && !there('[aria-busy="true"]');
+  /** The edit that the figures in sight belong to, in the words of Findings; what is being computed anew is none. */
+  const figuresOf = () => {
+    const said = document.querySelector('#findings [role="status"]')?.textContent ?? '';
+    return /edit \d+/.exec(said)?.[0] ?? figuresBefore;
+  };
+  let figuresBefore = '';
   const note = (key: 'dialogMs' | 'tracesMs' | 'allRowsMs' | 'figuresMs', seen: () => boolean) => {
     if (watched[key] === 0 && seen()) watched[key] = performance.now();
   };
@@ -72,7 +80,9 @@ export function watchPage(): void {
     if (watched.tracesMs > 0) note('figuresMs', () => there('#findings table') && settled());
     if (watched.tracesMs > 0) note('allRowsMs', () => all().every(isDrawn));
     if (watched.allRowsMs > 0) CanvasRenderingContext2D.prototype.stroke = stroke;
-    if (watched.editMs > 0 && watched.settledMs === 0 && settled())
+    if (watched.editMs > 0 && watched.editFiguresMs === 0 && figuresOf() !== figuresBefore)
+      watched.editFiguresMs = performance.now();
+    if (watched.editFiguresMs > 0 && watched.settledMs === 0 && settled())
       watched.settledMs = performance.now();
     requestAnimationFrame(look);
   };
@@ -93,7 +103,9 @@ export function watchPage(): void {
       watched.agreedMs = performance.now();
   });
   listen('keydown', (_, event) => {
+    figuresBefore = figuresOf();
     watched.editMs = event.timeStamp;
+    watched.editFiguresMs = 0;
     watched.settledMs = 0;
   });
   new PerformanceObserver((list) => {

@@ -2,6 +2,7 @@ import type { HeartOutput } from '../../src/recording/separated';
 import type { RouteName, Settings } from '../../src/recording/settings';
 import type { SeparatedSlow } from '../../src/separate/route';
 import { createSeparation } from '../../src/separate/separation';
+import { ALL_ROUTES } from '../separate/all-routes';
 import { RATE_HZ } from './invented-study';
 
 /** Samples given at once, as the worker does. */
@@ -18,6 +19,7 @@ export function separate(
     rateHz: RATE_HZ,
     sampleCount: samples.length,
     settings: { ...settings, slowRoute: route, heartRoute: route },
+    routes: ALL_ROUTES,
     wants: { slow: true, heart: true },
   });
   for (let from = 0; from < samples.length; from += PIECE)

@@ -160,7 +160,7 @@ describe('figures withheld, with the reason', () => {
     const short = figuresOf({ beats: beatsAfter(sinus(100)), toS: 84 }).figures;
     expect(reason(short.lf_ms2)).toBe('LF needs 2 min; 1.4 min are left');
     expect(reason(short.lf_hf_ratio)).toBe('LF needs 2 min; 1.4 min are left');
-    expect(number(short.hf_ms2).basis).toBe('1 of 1 segments of 1.4 min');
+    expect(number(short.hf_ms2).basis).toBe('1 of 1 segment of 1.4 min');
     const shorter = figuresOf({ beats: beatsAfter(sinus(100)), toS: 54 }).figures;
     expect(reason(shorter.hf_ms2)).toBe('HF needs 1 min; 0.9 min are left');
     expect(number(shorter.rmssd_ms).value).toBeGreaterThan(0);
@@ -198,9 +198,9 @@ describe('figures withheld, with the reason', () => {
       number(calmOnly.figures.heart_rate_bpm).value + 3,
     );
     const alone = figuresOf({ beats, fromS: startS + 1, toS: startS + 301 }).figures;
-    expect(reason(alone.rmssd_ms)).toBe('the rhythm is irregular in 1 of 1 segments');
-    expect(reason(alone.lf_hf_ratio)).toBe('the rhythm is irregular in 1 of 1 segments');
-    expect(reason(alone.sdnn_ms)).toBe('the rhythm is irregular in 1 of 1 segments');
+    expect(reason(alone.rmssd_ms)).toBe('the rhythm is irregular in 1 of 1 segment');
+    expect(reason(alone.lf_hf_ratio)).toBe('the rhythm is irregular in 1 of 1 segment');
+    expect(reason(alone.sdnn_ms)).toBe('the rhythm is irregular in 1 of 1 segment');
     expect(number(alone.heart_rate_bpm).value).toBeGreaterThan(80);
   });
 

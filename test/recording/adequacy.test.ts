@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { adequacy, coverageOf } from '../../src/recording/adequacy';
+import { adequacy, adequacyReason, coverageOf, keptPercent } from '../../src/recording/adequacy';
 
 describe('adequacy of a phase', () => {
   it('is limited only when more than 30 % is lost, not reportable only when more than half is', () => {
@@ -17,6 +17,16 @@ describe('adequacy of a phase', () => {
   it('does not turn exactly 30 % into more by rounding', () => {
     expect(adequacy(0.7 * 0.1, 0.1)).toBe('enough');
     expect(adequacy(3 * 0.7, 3)).toBe('enough');
+  });
+});
+
+describe('percent kept', () => {
+  it('never reads as the limit that a phase has passed', () => {
+    expect(adequacy(0.696 * 600, 600)).toBe('limited');
+    expect(keptPercent(0.696 * 600, 600)).toBe(69);
+    expect(adequacyReason('limited', 0.696 * 600, 600)).toBe('69 % kept');
+    expect(keptPercent(0.7 * 0.1, 0.1)).toBe(70);
+    expect(keptPercent(5, 0)).toBe(0);
   });
 });
 

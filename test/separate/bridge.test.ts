@@ -5,6 +5,7 @@ import { DEFAULT_SETTINGS } from '../../src/recording/settings';
 import { bridged } from '../../src/separate/bridge';
 import { leadSpectra } from '../../src/separate/lead-spectra';
 import { createSeparation, redrawSlowWave } from '../../src/separate/separation';
+import { ALL_ROUTES } from './all-routes';
 
 const RATE_HZ = 4;
 
@@ -106,13 +107,15 @@ describe('in the drawn wave', () => {
       rateHz: RATE,
       sampleCount: lead.length,
       settings: DEFAULT_SETTINGS,
+      routes: ALL_ROUTES,
       wants: { slow: true, heart: false },
     });
     separation.push(lead);
     const { slow } = separation.finish();
     if (!slow) throw new Error('a slow wave was asked for');
     const kept = keptWithout(slow.recorded.length, spoiledS);
-    return redrawSlowWave(slow, DEFAULT_SETTINGS, { dfCpm: 3, kept, breathing: null }).slowWave;
+    return redrawSlowWave(slow, DEFAULT_SETTINGS, { dfCpm: 3, kept, breathing: null }, ALL_ROUTES)
+      .slowWave;
   };
   const plain = draw(clean, []);
   /** Root mean square of what an artefact changes in the two minutes on either side of its stretch. */

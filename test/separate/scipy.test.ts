@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { DEFAULT_SETTINGS, type RouteName } from '../../src/recording/settings';
 import { createSeparation } from '../../src/separate/separation';
+import { ALL_ROUTES } from './all-routes';
 import { mixture } from './mixture';
 
 interface Case {
@@ -37,6 +38,7 @@ function separated(one: Case, route: RouteName, block: number) {
     rateHz: one.rate_hz,
     sampleCount: x.length,
     settings,
+    routes: ALL_ROUTES,
     wants: { slow: true, heart: true },
   });
   for (let at = 0; at < x.length; at += block) separation.push(x.subarray(at, at + block));

@@ -4,6 +4,7 @@ import { DEFAULT_SETTINGS, type RouteName } from '../../src/recording/settings';
 import { createSeparation, type Separated } from '../../src/separate/separation';
 import { largestDifference, noise } from '../numeric/signals';
 import { always, cutAt, cuts, mixed, numbers, sizeOf, times } from '../properties';
+import { ALL_ROUTES } from './all-routes';
 
 const ROUTES: readonly RouteName[] = ['band', 'fractional'];
 const RATE_HZ = 50;
@@ -31,6 +32,7 @@ function separated(blocks: readonly Float64Array[], route: RouteName, rateHz = R
       heartRoute: route,
       fractional: { ...DEFAULT_SETTINGS.fractional, memoryS: 20 },
     },
+    routes: ALL_ROUTES,
     wants: { slow: true, heart: true },
   });
   for (const block of blocks) separation.push(block);
@@ -210,6 +212,7 @@ describe('route band with the gain fitted to the lead', () => {
       rateHz: RATE_HZ,
       sampleCount: x.length,
       settings: DEFAULT_SETTINGS,
+      routes: ALL_ROUTES,
       wants: { slow: true, heart: false },
     });
     separation.push(x);

@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { DEFAULT_SETTINGS, type RouteName, type Settings } from '../../src/recording/settings';
 import { createSeparation, redrawSlowWave } from '../../src/separate/separation';
+import { ALL_ROUTES } from './all-routes';
 
 interface Asked {
   readonly rateHz: number;
@@ -15,6 +16,7 @@ function separate(signal: Float64Array, asked: Asked) {
     rateHz: asked.rateHz,
     sampleCount: signal.length,
     settings: { ...DEFAULT_SETTINGS, ...asked.settings },
+    routes: ALL_ROUTES,
     wants: asked.wants ?? { slow: true, heart: true },
   });
   const block = asked.block ?? 100_000;
@@ -319,12 +321,17 @@ describe('route fractional', () => {
       ...settings,
       fractional: { ...DEFAULT_SETTINGS.fractional, undoLead: true },
     };
-    const undone = redrawSlowWave(slow, undoing, PLAINLY(slow));
+    const undone = redrawSlowWave(slow, undoing, PLAINLY(slow), ALL_ROUTES);
     expect(undone.leadSAt(0.05)).toBeCloseTo(0, 12);
     expect(
       worst(600, 1200, (i) => Math.abs(undone.slowWave[i] - tone(100, 0.05)(i / 4))),
     ).toBeLessThan(0.3);
-    const back = redrawSlowWave(undone, { ...DEFAULT_SETTINGS, ...settings }, PLAINLY(slow));
+    const back = redrawSlowWave(
+      undone,
+      { ...DEFAULT_SETTINGS, ...settings },
+      PLAINLY(slow),
+      ALL_ROUTES,
+    );
     expect(back.slowWave).toEqual(slow.slowWave);
     expect(back.leadSAt(0.05)).toBe(slow.leadSAt(0.05));
   });
@@ -334,7 +341,9 @@ describe('route fractional', () => {
   });
 
   test('refuses to be drawn again by another route', () => {
-    expect(() => redrawSlowWave(slow, DEFAULT_SETTINGS, PLAINLY(slow))).toThrow(/route fractional/);
+    expect(() => redrawSlowWave(slow, DEFAULT_SETTINGS, PLAINLY(slow), ALL_ROUTES)).toThrow(
+      /route fractional/,
+    );
   });
 });
 
@@ -342,6 +351,6 @@ test('route band drawn again for a narrower band is what separation gives for it
   const lead = signalOf(400, 50, (t) => tone(100, 0.05)(t) + tone(100, 0.12)(t));
   const narrow = { ...DEFAULT_SETTINGS, slowBandCpm: [1.5, 5] as const };
   const slow = slowOf(lead, { rateHz: 50 });
-  const redrawn = redrawSlowWave(slow, narrow, PLAINLY(slow));
+  const redrawn = redrawSlowWave(slow, narrow, PLAINLY(slow), ALL_ROUTES);
   expect(redrawn.slowWave).toEqual(slowOf(lead, { rateHz: 50, settings: narrow }).slowWave);
 });

@@ -81,7 +81,9 @@ describe('a session file', () => {
     const document = written();
     expect(Object.keys(document.study)).not.toContain('name');
     expect([document.preparedBy, document.readBy]).toEqual(['A. Tech', 'A. Reader']);
-    expect([document.symptoms, document.doubts, document.bookmarks]).toEqual([[], [], []]);
+    expect(document.symptoms).toMatchObject([{ text: 'nausea', score: 4 }]);
+    expect(document.doubts).toHaveLength(4);
+    expect(document.bookmarks).toMatchObject([{ note: 'early' }]);
   });
 
   it('has one line a line of the log', () => {
@@ -202,7 +204,7 @@ describe('a session of version 1', () => {
 
   it('keeps what a newer program has written into its journal since', () => {
     const document = { version: 1, log: [{ settings: { slowRoute: 'band', slowGain: 'fitted' } }] };
-    expect(migrate(document, 1)).toEqual({
+    expect(migrate(document, 1, MIGRATIONS, 2)).toEqual({
       version: 2,
       log: [{ settings: { slowRoute: 'band', slowGain: 'fitted', breathingOut: 'never' } }],
     });

@@ -4,6 +4,7 @@ import { createSeparation } from '../../src/separate/separation';
 import { bandPeaks } from '../../src/stomach/dominant-peak';
 import { slowWaveRhythm } from '../../src/stomach/slow-wave-rhythm';
 import { windowSpectra } from '../../src/stomach/window-spectrum';
+import { ALL_ROUTES } from '../separate/all-routes';
 import { tally } from './leads';
 
 function separate(signal: Float64Array, rateHz: number, settings: Settings = DEFAULT_SETTINGS) {
@@ -12,6 +13,7 @@ function separate(signal: Float64Array, rateHz: number, settings: Settings = DEF
     rateHz,
     sampleCount: signal.length,
     settings,
+    routes: ALL_ROUTES,
     wants: { slow: true, heart: false },
   });
   separation.push(signal);

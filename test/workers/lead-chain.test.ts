@@ -15,6 +15,7 @@ import { startJob } from '../../workers/job';
 import { passOverLeads } from '../../workers/lead-pass';
 import { noise } from '../numeric/signals';
 import { always, cutAt, cuts, times } from '../properties';
+import { ALL_ROUTES } from '../separate/all-routes';
 
 const RATE_HZ = 250;
 const MINUTES = 30;
@@ -53,6 +54,7 @@ function chain(signal: Float64Array, slowRoute: RouteName) {
     rateHz: RATE_HZ,
     sampleCount: signal.length,
     settings,
+    routes: ALL_ROUTES,
     wants: { slow: true, heart: true },
   });
   separation.push(signal);
@@ -191,6 +193,7 @@ describe('the pass over the file', () => {
       rateHz,
       sampleCount: plus.length,
       settings: DEFAULT_SETTINGS,
+      routes: ALL_ROUTES,
       wants: { slow: true, heart: true },
     });
     const lead = { kind: 'difference', plus: 0, minus: 1 } as const;

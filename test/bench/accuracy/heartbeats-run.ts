@@ -8,6 +8,7 @@ import { addEcgNoise } from '../../../src/simulate/ecg-noise';
 import { createSpoilWatch } from '../../../src/trust/spoil-watch';
 import { TICKS_PER_SAMPLE } from '../../../src/units/ticks';
 import { doubtedOf, judgedSpans } from '../../../workers/judged-spans';
+import { ALL_ROUTES } from '../../separate/all-routes';
 
 const PIECE = 16384;
 const LEAD = { kind: 'channel', channel: 0 } as const;
@@ -90,6 +91,7 @@ export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): 
     rateHz,
     sampleCount: signal.length,
     settings: DEFAULT_SETTINGS,
+    routes: ALL_ROUTES,
     wants: { slow: false, heart: true },
   });
   const watch = createSpoilWatch({
