@@ -11,7 +11,7 @@ export interface HeartSignal {
 }
 
 /** Samples read at once; with margins, and small enough for a worker to stay answerable between two of them. */
-const CHUNK = 12288;
+const CHUNK = 16384;
 /** Width of the energy's running mean: about that of a narrow to middling QRS complex. */
 const ENERGY_S = 0.1;
 /** Two crests of the energy nearer than this count once. */
