@@ -2,7 +2,16 @@ import type { PaneCommands } from '../review/pane-commands';
 import type { AppParts } from './app-context';
 
 /** Headings of the keys page, in its order. */
-export const COMMAND_GROUPS = ['open', 'study', 'work', 'look', 'beats', 'spans', 'page'] as const;
+export const COMMAND_GROUPS = [
+  'open',
+  'study',
+  'work',
+  'look',
+  'beats',
+  'spans',
+  'notes',
+  'page',
+] as const;
 export type CommandGroup = (typeof COMMAND_GROUPS)[number];
 
 export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
@@ -12,6 +21,7 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   look: 'Move and zoom',
   beats: 'Beats',
   spans: 'Spoiled spans',
+  notes: 'Events and symptoms',
   page: 'The page',
 };
 

@@ -1,15 +1,19 @@
 import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
+import { HISTORY_COMMANDS } from './history-commands';
 import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
 import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './shell-commands';
+import { TIME_COMMANDS } from './time-commands';
 
 /** Every act of the page. */
 export const COMMANDS: readonly Command[] = [
   ...STUDY_COMMANDS,
+  ...HISTORY_COMMANDS,
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...TIME_COMMANDS,
   ...BOOKMARK_COMMANDS,
   ...PAGE_COMMANDS,
 ];

@@ -1,4 +1,9 @@
-import type { ReviewInputs, TextReading } from '../../workers/analysis-api';
+import type {
+  FoundWithin,
+  ReviewInputs,
+  TextReading,
+  WithinRequest,
+} from '../../workers/analysis-api';
 import type { CallOptions } from '../../workers/analysis-client';
 import type { Reply } from '../recording/failure';
 import type { Findings } from '../recording/findings';
@@ -59,6 +64,8 @@ export interface StudyController {
   changeSettings(settings: Settings): void;
   changeProtocol(protocol: Protocol): void;
   detectAgain(): void;
+  /** Looks for the beats of a stretch with other choices; nothing of the session changes. */
+  findWithin(request: WithinRequest, options: CallOptions): Promise<Reply<FoundWithin>>;
   downloadSession(): void;
   downloadExports(): void;
   sign(request: SignRequest): void;

@@ -288,6 +288,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
         if (name) shell.getState().tell(`Done again: ${name}`);
       });
     },
+    findWithin: (request, options) => asWork(client.detectWithin(request, options)),
     ...edits.acts,
     ...files.acts,
     closeStudy() {

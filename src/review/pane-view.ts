@@ -6,7 +6,7 @@ import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
 import { beginWork, endWork } from './idle';
 import { makeRowView } from './make-row';
-import { notedEvents } from './noted-events';
+import { notedEvents, notedWords } from './noted-events';
 import type { PaneDom } from './pane-dom';
 import type { PaneStores, RowContext, RowView } from './row-view';
 import type { Row } from './rows';
@@ -95,7 +95,16 @@ export class PaneView {
     const { view, analysis, session } = this.stores;
     const { name } = this.kind;
     const drawnFrom = (state: ViewState) =>
-      [state[name], state.gainsUv, state.levelsDb, state.selection, state.draft] as const;
+      [
+        state[name],
+        state.gainsUv,
+        state.levelsDb,
+        state.selection,
+        state.draft,
+        state.preview,
+        state.phaseDraft,
+        state.identityHidden,
+      ] as const;
     this.stops.push(
       view.subscribe((now, before) => {
         const [a, b] = [drawnFrom(now), drawnFrom(before)];
@@ -159,7 +168,10 @@ export class PaneView {
       bottomPx: this.bottomPx,
       axisPx: this.axisPx,
       coarsest: this.kind.coarsest,
-      phases: this.stores.session.getState().session?.state.phases ?? [],
+      phases:
+        this.stores.view.getState().phaseDraft?.phases ??
+        this.stores.session.getState().session?.state.phases ??
+        [],
       events: notedEvents(this.stores),
       headPx: this.kind.showsPhaseNames ? this.topPx : 0,
       xOf: this.xOf,
@@ -225,7 +237,7 @@ export class PaneView {
     const clock = (atS: number) => clockText(atS, 1, 'h:mm:ss');
     const from = `${this.kind.title}, ${widthText(toS - fromS)} from ${clock(fromS)} to ${clock(toS)}.`;
     const rows = this.rows.map((row) => `${row.describe()}.`).join(' ');
-    this.dom.summary.textContent = `${from} ${rows}`;
+    this.dom.summary.textContent = `${from} ${rows}${notedWords(this.stores, fromS, toS)}`;
     endWork();
   }
 

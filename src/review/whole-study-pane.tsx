@@ -1,8 +1,15 @@
-import { useEffect, useRef } from 'react';
+import { lazy, Suspense, useEffect, useRef } from 'react';
+import { useStore } from 'zustand';
+import { asWork } from './idle';
 import type { PaneProps } from './pane-props';
 import { listenToStage } from './stage';
 import { type StripDom, StripView, stripActs } from './strip-view';
 import { THEMES } from './theme-tokens';
+
+/** Fetched when an edge is moved first. */
+const MovingParts = lazy(() =>
+  asWork(import('./moving')).then((all) => ({ default: all.MovingParts })),
+);
 
 function stripDom(section: HTMLElement): StripDom {
   const part = (name: string) => {
@@ -24,6 +31,10 @@ function stripDom(section: HTMLElement): StripDom {
 
 /** The thin strip over the full duration. */
 export function WholeStudyPane({ stores, act, theme }: PaneProps) {
+  const moving = useStore(
+    stores.view,
+    ({ draft, phaseDraft, bordersShown }) => bordersShown || (draft ?? phaseDraft) !== null,
+  );
   const sectionRef = useRef<HTMLElement>(null);
   const stripRef = useRef<StripView | null>(null);
   const themeRef = useRef(theme);
@@ -56,6 +67,11 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
         <div className="cursor-line" data-part="cursor-line" hidden />
       </div>
       <p className="visually-hidden" data-part="summary" />
+      {moving ? (
+        <Suspense fallback={null}>
+          <MovingParts stores={stores} act={act} />
+        </Suspense>
+      ) : null}
     </section>
   );
 }
