@@ -4,16 +4,16 @@ import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
 import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
 import { quietly, scaled } from './in-steps';
-import type { Judged } from './place-odds';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
+import type { Place } from './unsure-places';
 
 export interface FoundBeats {
   readonly beats: readonly Weighed[];
   readonly shapes: readonly Shape[];
   /** All places that were weighed, ascending; the score of each holds what it is worth as a T wave too. */
-  readonly places: readonly Judged[];
+  readonly places: readonly Place[];
 }
 
 /** A place with its evidence: log-odds of a beat without what the rhythm says. */
@@ -45,7 +45,7 @@ export function* findBeats(signal: HeartSignal, eager = 0): Generator<number, Fo
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
   const evidence = yield* evidenceOf(candidates, levels, rateHz);
   let beats: Weighed[] = [];
-  let places: Judged[] = [];
+  let places: Place[] = [];
   for (let round = 0; round < ROUNDS; round += 1) {
     const sizes = usualSizes(
       round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
@@ -63,7 +63,12 @@ export function* findBeats(signal: HeartSignal, eager = 0): Generator<number, Fo
     beats = path.map((i) => ({ ...candidates[i], score: scores[i] }));
     yield 0.92;
     if (round === ROUNDS - 1)
-      places = candidates.map(({ sample, energyUv }, i) => ({ sample, energyUv, score: worth[i] }));
+      places = candidates.map(({ sample, shape, energyUv }, i) => ({
+        sample,
+        shape,
+        energyUv,
+        score: worth[i],
+      }));
     yield 0.92;
   }
   const kept = eager > 0 ? beats : yield* present(beats, shapes);
