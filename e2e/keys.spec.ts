@@ -88,6 +88,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
   log: ['', 'dialog', /^Log$/],
+  compare: ['', 'dialog', /^Compare with another session$/],
   'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
   bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
@@ -147,10 +148,12 @@ const CHECKS: Readonly<Record<string, Check>> = {
 };
 
 /**
- * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
- * stepped through in room.spec.
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks and
+ * the room view: room.spec; differences of two sessions: history.spec.
  */
 const ELSEWHERE = [
+  'room',
+  ...COMMANDS.filter(({ when }) => when === 'room').map(({ id }) => id),
   'open-file',
   'open-session',
   'open-demo',
@@ -158,6 +161,8 @@ const ELSEWHERE = [
   'download-session',
   'download-results',
   'next-bookmark',
+  'next-difference',
+  'previous-difference',
   'previous-bookmark',
   'stop',
 ];

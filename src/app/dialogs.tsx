@@ -16,6 +16,7 @@ const AboutDialog = later('AboutDialog');
 const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
+const CompareDialog = later('CompareDialog');
 const FigureDialog = later('FigureDialog');
 const FindWithinDialog = later('FindWithinDialog');
 const GoToDialog = later('GoToDialog');
@@ -84,6 +85,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <KeysDialog parts={parts} />;
     case 'about':
       return <AboutDialog />;
+    case 'compare':
+      return <CompareDialog parts={parts} />;
     case 'log':
       return <LogDialog page={parts.page} />;
     case 'sign':

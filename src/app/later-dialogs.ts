@@ -1,6 +1,7 @@
 export { AboutDialog } from './about-dialog';
 export { BeatsBetweenDialog } from './beats-between-dialog';
 export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
+export { CompareDialog } from './compare-dialog';
 export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';
 export { FindWithinDialog } from './find-within-dialog';

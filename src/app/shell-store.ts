@@ -1,6 +1,7 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
+import type { Session } from '../session/document';
 import type { NotedKind } from '../session/note-edits';
 import type { KeptRow } from './controller';
 import type { OwnKeys } from './own-keys';
@@ -37,6 +38,7 @@ export type DialogState =
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
   | { readonly kind: 'log' }
+  | { readonly kind: 'compare' }
   | { readonly kind: 'sign' }
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
@@ -50,6 +52,13 @@ export interface Message {
   readonly text: string;
 }
 
+/** Another session of the open study, to compare with, and the difference gone to last (-1: none yet). */
+export interface Compared {
+  readonly session: Session;
+  readonly fileName: string;
+  readonly at: number;
+}
+
 export interface ShellState {
   readonly dialog: DialogState;
   /** The dialog below a reviewer's dialog; it comes back when that one closes. */
@@ -58,6 +67,7 @@ export interface ShellState {
   readonly messages: readonly Message[];
   /** What the last act did, in the line at the foot; each one takes the place of the one before. */
   readonly status: string;
+  readonly compared: Compared | null;
   /** What that act did to the figures, once it is known; '' until then. */
   readonly statusMore: string;
   readonly theme: ThemeChoice;
@@ -128,6 +138,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       under: NONE,
       messages: [],
       status: '',
+      compared: null,
       statusMore: '',
       openDialog: (dialog) =>
         set((before) => ({
