@@ -223,6 +223,11 @@ describe('keys that a person has changed', () => {
     expect(keysOf(commandOf('class-V'), { 'next-beat': 'V' })).toEqual([]);
   });
 
+  it('can always be given back, also one that a command of the room view shares', () => {
+    for (const one of COMMANDS)
+      for (const key of one.keys) expect(keyFault(one, key, table), one.id).toBeNull();
+  });
+
   it('are read with care', () => {
     expect(readOwnKeys({ 'next-beat': 'J', 'class-N': 7, 'class-V': '' })).toEqual(own);
     expect(readOwnKeys('J')).toEqual({});
