@@ -1,6 +1,6 @@
 import './history.css';
 import { useMemo, useState } from 'react';
-import { type Hide, identityHider, nothingHidden } from '../export/report-hiding';
+import type { Hide } from '../export/report-hiding';
 import type { Interval } from '../recording/span';
 import { LOG_KIND_WORDS, LOG_KINDS, type LogKind } from '../session/log-words';
 import { formatClock } from '../units/time';
@@ -10,6 +10,7 @@ import { heartRateOf, showPlace } from './comparing';
 import { Dialog } from './dialog';
 import { Choice, Field } from './fields';
 import { type LogRow, logRows, useFitting } from './log-list';
+import { useHide } from './use-hide';
 
 /** Lines shown at once. */
 const SHOWN = 100;
@@ -26,13 +27,7 @@ export function LogDialog({ page }: { readonly page: PageActs }) {
     [session, recording],
   );
   const reviewers = useMemo(() => [...new Set(rows.map(({ line }) => line.reviewer))], [rows]);
-  const hide = useMemo(
-    () =>
-      hidden && session && recording
-        ? identityHider(recording, session.state.study)
-        : nothingHidden,
-    [hidden, session, recording],
-  );
+  const hide = useHide();
   if (!session) return null;
   const close = () => shell.getState().closeDialog();
   const go = (place: Interval) => {
