@@ -148,10 +148,12 @@ const CHECKS: Readonly<Record<string, Check>> = {
 };
 
 /**
- * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
- * stepped through in room.spec, differences of two sessions in history.spec.
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks and
+ * the room view: room.spec; differences of two sessions: history.spec.
  */
 const ELSEWHERE = [
+  'room',
+  ...COMMANDS.filter(({ when }) => when === 'room').map(({ id }) => id),
   'open-file',
   'open-session',
   'open-demo',

@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { useState } from 'react';
 import { goTo } from '../review/navigate';
 import type { Edit, SessionState } from '../session/document';
 import {
@@ -12,9 +12,11 @@ import {
 import { timeText } from '../units/typed-time';
 import { useApp, useSession, useView, withReviewer } from './app-context';
 import { Dialog } from './dialog';
+import { editNameShown } from './edit-name';
 import { Choice, Field } from './fields';
 import { blankNote, draftOf, type NoteDraft, type NoteFaults, readNote } from './note-draft';
 import { TimeField, timeRule, useTimeFrame } from './time-field';
+import { useFirstField } from './use-first-field';
 
 /** Where an event or symptom is to be written at once; the dialog closes when it is. */
 interface NoteHere {
@@ -41,26 +43,28 @@ function NotesForm({
   const [changing, setChanging] = useState<KeptNote | null>(null);
   const [tried, setTried] = useState(false);
   const [done, setDone] = useState('');
-  const form = useFocusOn(changing, here === null ? 0 : 1);
+  const { form, again } = useFirstField(here === null ? 0 : 1);
   const read = readNote(draft, frame);
   const close = () => parts.shell.getState().closeDialog();
   const begin = (note: KeptNote | null) => {
     setChanging(note);
     setDraft(note ? draftOf(note) : blankNote(draft.kind, null));
     setTried(false);
+    again();
   };
-  const put = (edit: Edit) =>
+  const put = (edit: Edit, then: () => void) =>
     withReviewer(parts, () => {
       parts.controller.edit(edit);
-      setDone(`Done: ${edit.name}`);
+      const { identityHidden } = parts.view.getState();
+      setDone(`Done: ${editNameShown(edit.name, identityHidden)}`);
+      then();
     });
   const save = () => {
     setTried(true);
     if (!read.ok) return;
     const { note } = read;
-    put(changing ? changeNote(state, changing.id, note) : writeNote(state, note));
-    if (here && !changing) close();
-    else begin(null);
+    const edit = changing ? changeNote(state, changing.id, note) : writeNote(state, note);
+    put(edit, () => (here && !changing ? close() : begin(null)));
   };
   return (
     <Dialog
@@ -79,7 +83,7 @@ function NotesForm({
         </>
       }
     >
-      <fieldset ref={form} className="note-form">
+      <fieldset ref={form}>
         <legend>{changing ? `Change the ${changing.kind}` : 'Write an event or a symptom'}</legend>
         <NoteFields
           draft={draft}
@@ -100,8 +104,7 @@ function NotesForm({
         notes={notesOf(state)}
         onChange={begin}
         onRemove={(note) => {
-          put(removeNote(state, note.kind, note.id));
-          if (changing) begin(null);
+          put(removeNote(state, note.kind, note.id), () => (changing ? begin(null) : again()));
         }}
         onGo={(note) => {
           close();
@@ -110,18 +113,6 @@ function NotesForm({
       />
     </Dialog>
   );
-}
-
-/** Puts the focus into a field of the form: the first one when another note is changed, that of `place` at the beginning. */
-function useFocusOn(changing: KeptNote | null, place: number) {
-  const form = useRef<HTMLFieldSetElement>(null);
-  const at = useRef(place);
-  useEffect(() => {
-    const fields = form.current?.querySelectorAll<HTMLElement>('input[type="text"]');
-    if (changing !== null || at.current > 0) fields?.[at.current]?.focus();
-    at.current = 0;
-  }, [changing]);
-  return form;
 }
 
 interface NoteFieldsProps {
@@ -144,7 +135,7 @@ function NoteFields({ draft, fixed, faults, onChange }: NoteFieldsProps) {
   const type = (parts: Partial<NoteDraft>) => onChange({ ...draft, ...parts });
   const symptom = draft.kind === 'symptom';
   return (
-    <div className="note-fields">
+    <div className={fixed ? 'note-fields fixed' : 'note-fields'}>
       {fixed ? null : (
         <Choice
           label="what it is"

@@ -1,8 +1,16 @@
 import { useState } from 'react';
+import { leftWords, timeLeft } from '../review/minutes-left';
 import type { SessionState } from '../session/document';
 import { formatClock } from '../units/time';
 import { type TimeFrame, timeText } from '../units/typed-time';
-import { type AppParts, useApp, useSession, useView, withReviewer } from './app-context';
+import {
+  type AppParts,
+  useAnalysis,
+  useApp,
+  useSession,
+  useView,
+  withReviewer,
+} from './app-context';
 import { Dialog } from './dialog';
 import { FormActions } from './form-actions';
 import { addRow, type PhaseRow, proposedFed, readPhases, rowsOf } from './phase-draft';
@@ -53,6 +61,7 @@ function PhasesForm({ before }: PhasesFormProps) {
         onField={setField}
         onChange={setRows}
       />
+      <Left state={before} phases={Object.keys(errors).length > 0 ? [] : phases} />
       <RowActs rows={rows} frame={frame} onChange={setRows} />
       <TimeChips field={field} onPut={put} />
     </Dialog>
@@ -85,6 +94,21 @@ function onlyTyped(rows: readonly PhaseRow[], errors: ReturnType<typeof readPhas
   return Object.fromEntries(
     typed.flatMap((row) => (errors[row.id] ? [[row.id, errors[row.id]]] : [])),
   );
+}
+
+/** The minutes of the typed phases and what is left of them; nothing while something is wrong with one. */
+function Left({
+  state,
+  phases,
+}: {
+  readonly state: SessionState;
+  readonly phases: SessionState['phases'];
+}) {
+  const gaps = useAnalysis((now) => now.recording?.gaps) ?? [];
+  if (phases.length === 0) return null;
+  const { spans, roles, study } = state;
+  const left = timeLeft({ phases, spans, roles, gaps, durationS: study.durationS });
+  return <p className="small quiet">{left.map(leftWords).join('; ')}.</p>;
 }
 
 interface RowActsProps {

@@ -12,7 +12,7 @@ const CLASS_WORDS = {
   S: 'supraventricular',
   V: 'ventricular',
   F: 'fusion',
-  Q: 'unknown or not usable',
+  Q: 'not usable, or unknown',
 } as const;
 
 interface BeatBarProps {
@@ -46,7 +46,7 @@ export function BeatBar({ stores, commands }: BeatBarProps) {
           type="button"
           key={beatClass}
           title={hint(`Class ${beatClass}, ${CLASS_WORDS[beatClass]}`, `class-${beatClass}`)}
-          aria-label={`Class ${beatClass}, ${CLASS_WORDS[beatClass]}`}
+          aria-label={`Class ${beatClass}${beatClass === 'Q' ? '' : ','} ${CLASS_WORDS[beatClass]}`}
           onClick={() => commands.classSelected(beatClass)}
         >
           {beatClass === 'Q' ? 'Q not usable' : beatClass}

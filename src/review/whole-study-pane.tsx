@@ -30,7 +30,7 @@ function stripDom(section: HTMLElement): StripDom {
 }
 
 /** The thin strip over the full duration. */
-export function WholeStudyPane({ stores, act, theme }: PaneProps) {
+export function WholeStudyPane({ stores, act, theme, scale }: PaneProps) {
   const moving = useStore(
     stores.view,
     ({ draft, phaseDraft, bordersShown }) => bordersShown || (draft ?? phaseDraft) !== null,
@@ -43,15 +43,15 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
     const section = sectionRef.current;
     if (!section) return undefined;
     const dom = stripDom(section);
-    const strip = new StripView(dom, stores, act, THEMES[themeRef.current]);
-    const deafen = listenToStage(dom.stage, stripActs(strip, stores));
+    const strip = new StripView(dom, stores, act, THEMES[themeRef.current], scale);
+    const deafen = listenToStage(dom.stage, stripActs(strip, stores), scale);
     stripRef.current = strip;
     return () => {
       deafen();
       strip.destroy();
       stripRef.current = null;
     };
-  }, [stores, act]);
+  }, [stores, act, scale]);
   useEffect(() => stripRef.current?.retheme(THEMES[theme]), [theme]);
   return (
     <section className="pane whole" aria-label="Whole study" ref={sectionRef}>

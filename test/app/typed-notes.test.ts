@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { editNameShown } from '../../src/app/edit-name';
 import { blankNote, draftOf, readNote } from '../../src/app/note-draft';
 import { BLANK_SPAN, leadOptions, readSpan, spanDraft } from '../../src/app/span-draft';
 import type { Span } from '../../src/recording/span';
@@ -50,6 +51,16 @@ const SPAN: Span = {
   origin: 'proposed',
   note: 'loud',
 };
+
+describe('the name of an edit', () => {
+  it('leaves out what people wrote while identity is hidden, and nothing else', () => {
+    const written = 'write symptom 0:15:00.5 nausea, Ms Kowalska 6/10';
+    expect(editNameShown(written, true)).toBe('write symptom 0:15:00.5');
+    expect(editNameShown(written, false)).toBe(written);
+    for (const plain of ['change phases', 'exclude 0:01:00-0:02:00', 'class beat at 0:00:01 as V'])
+      expect(editNameShown(plain, true)).toBe(plain);
+  });
+});
 
 describe('a typed span', () => {
   it('is read with both times, for whom, why and on which lead', () => {
