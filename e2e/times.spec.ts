@@ -147,6 +147,8 @@ test('a span is typed, changed and taken away without the mouse, each as one ste
   await dialog.getByLabel('note').fill('coughed twice');
   await page.keyboard.press('Enter');
   await expect(dialog.getByRole('status')).toHaveText('Done: exclude 0:00:30.0-0:00:45.5');
+  await expect(from).toBeFocused();
+  await expect(from).toHaveValue('');
   await settled(page);
   await dialog.getByRole('button', { name: 'Change the span 0:00:30 to 0:00:45.5' }).press('Enter');
   await expect(from).toBeFocused();
@@ -240,6 +242,26 @@ test('an event and a symptom are written where one is, by keys alone, and printe
   ]);
   await press(page, 'Control+z');
   await press(page, 'Control+z');
+});
+
+test('who reviews is asked before the first event is written, which then stands', async ({
+  browser,
+}) => {
+  const fresh = await freshPage(browser);
+  await openStudy(fresh, STEADY);
+  await fresh.keyboard.press('t');
+  const dialog = dialogOf(fresh, 'Events and symptoms');
+  await expect(dialog.getByLabel('what happened')).toBeFocused();
+  await fresh.keyboard.type('coughed');
+  await fresh.keyboard.press('Enter');
+  const who = dialogOf(fresh, 'Who reviews?');
+  await who.getByLabel('Name or initials of the reviewer').fill('T. Technician');
+  await fresh.keyboard.press('Enter');
+  await expect(who).toBeHidden();
+  await expect(dialog).toBeHidden();
+  await settled(fresh);
+  expect(await undoName(fresh)).toBe('write event 0:02:30 coughed');
+  await fresh.context().close();
 });
 
 test('what is written is changed and taken out in one dialog', async () => {

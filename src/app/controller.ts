@@ -4,7 +4,7 @@ import type {
   TextReading,
   WithinRequest,
 } from '../../workers/analysis-api';
-import type { CallOptions } from '../../workers/analysis-client';
+import type { AnalysisClient, CallOptions } from '../../workers/analysis-client';
 import type { Reply } from '../recording/failure';
 import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
@@ -35,6 +35,13 @@ export interface SignRequest {
   readonly conclusion: string;
 }
 
+/** The worker of the open study, lent: one borrower at a time, while the review itself rests. */
+export interface LentWorker {
+  readonly client: AnalysisClient;
+  /** Has the figures of the review itself computed again, after the worker was asked for others. */
+  giveBack(): void;
+}
+
 /**
  * What the shell asks of whoever leads a study through worker, session and stores. Failures are shown by the controller
  * through the shell's store (dialog `failure`, `text-reading` or a message); the promises settle when the act is over.
@@ -56,6 +63,8 @@ export interface StudyController {
   forget(quickKey: string): Promise<void>;
   /** Applies one edit; asks for the reviewer first where none is set. */
   edit(edit: Edit): void;
+  /** The worker, for a copy of the review that shows edits and keeps none. */
+  lend(): LentWorker;
   undo(): void;
   redo(): void;
   /** `reason` says why the reported lead changed; '' where it did not. */

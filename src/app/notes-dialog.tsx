@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { useState } from 'react';
 import { goTo } from '../review/navigate';
 import type { Edit, SessionState } from '../session/document';
 import {
@@ -16,6 +16,7 @@ import { editNameShown } from './edit-name';
 import { Choice, Field } from './fields';
 import { blankNote, draftOf, type NoteDraft, type NoteFaults, readNote } from './note-draft';
 import { TimeField, timeRule, useTimeFrame } from './time-field';
+import { useFirstField } from './use-first-field';
 
 /** Where an event or symptom is to be written at once; the dialog closes when it is. */
 interface NoteHere {
@@ -42,27 +43,28 @@ function NotesForm({
   const [changing, setChanging] = useState<KeptNote | null>(null);
   const [tried, setTried] = useState(false);
   const [done, setDone] = useState('');
-  const form = useFocusOn(changing, here === null ? 0 : 1);
+  const { form, again } = useFirstField(here === null ? 0 : 1);
   const read = readNote(draft, frame);
   const close = () => parts.shell.getState().closeDialog();
   const begin = (note: KeptNote | null) => {
     setChanging(note);
     setDraft(note ? draftOf(note) : blankNote(draft.kind, null));
     setTried(false);
+    again();
   };
-  const put = (edit: Edit) =>
+  const put = (edit: Edit, then: () => void) =>
     withReviewer(parts, () => {
       parts.controller.edit(edit);
       const { identityHidden } = parts.view.getState();
       setDone(`Done: ${editNameShown(edit.name, identityHidden)}`);
+      then();
     });
   const save = () => {
     setTried(true);
     if (!read.ok) return;
     const { note } = read;
-    put(changing ? changeNote(state, changing.id, note) : writeNote(state, note));
-    if (here && !changing) close();
-    else begin(null);
+    const edit = changing ? changeNote(state, changing.id, note) : writeNote(state, note);
+    put(edit, () => (here && !changing ? close() : begin(null)));
   };
   return (
     <Dialog
@@ -102,8 +104,7 @@ function NotesForm({
         notes={notesOf(state)}
         onChange={begin}
         onRemove={(note) => {
-          put(removeNote(state, note.kind, note.id));
-          if (changing) begin(null);
+          put(removeNote(state, note.kind, note.id), () => (changing ? begin(null) : again()));
         }}
         onGo={(note) => {
           close();
@@ -112,18 +113,6 @@ function NotesForm({
       />
     </Dialog>
   );
-}
-
-/** Puts the focus into a field of the form: the first one when another note is changed, that of `place` at the beginning. */
-function useFocusOn(changing: KeptNote | null, place: number) {
-  const form = useRef<HTMLFieldSetElement>(null);
-  const at = useRef(place);
-  useEffect(() => {
-    const fields = form.current?.querySelectorAll<HTMLElement>('input[type="text"]');
-    if (changing !== null || at.current > 0) fields?.[at.current]?.focus();
-    at.current = 0;
-  }, [changing]);
-  return form;
 }
 
 interface NoteFieldsProps {

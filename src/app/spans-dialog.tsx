@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { useState } from 'react';
 import { SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
 import { goToStretch } from '../review/findings-go';
 import type { Edit, Session } from '../session/document';
@@ -17,6 +17,7 @@ import {
   spanDraft,
 } from './span-draft';
 import { TimeField, timeRule, useSnapPlaces, useTimeFrame } from './time-field';
+import { useFirstField } from './use-first-field';
 
 /** All spoiled spans by number: added, changed and taken away from the keyboard. */
 export function SpansDialog() {
@@ -34,29 +35,29 @@ function SpansForm({ session }: { readonly session: Session }) {
   const [draft, setDraft] = useState(() => (changing ? spanDraft(changing) : BLANK_SPAN));
   const [tried, setTried] = useState(false);
   const [done, setDone] = useState('');
-  const form = useFirstField(changing);
+  const { form, again } = useFirstField();
   const read = readSpan(draft, frame, changing);
   const close = () => parts.shell.getState().closeDialog();
   const begin = (span: Span | null) => {
     setChanging(span);
     setDraft(span ? spanDraft(span) : BLANK_SPAN);
     setTried(false);
+    again();
   };
-  const put = (edit: Edit) =>
+  const put = (edit: Edit, then: () => void) =>
     withReviewer(parts, () => {
       if (edit.changes.length > 0) parts.controller.edit(edit);
       setDone(edit.changes.length > 0 ? `Done: ${edit.name}` : 'Nothing was changed.');
+      then();
     });
   const save = () => {
     setTried(true);
     if (!read.ok) return;
     const { parts: typed } = read;
-    put(
-      changing
-        ? changeSpan(session.state, changing.id, changed(changing, typed))
-        : addSpan(session, { ...typed, origin: 'drawn' }),
-    );
-    begin(null);
+    const edit = changing
+      ? changeSpan(session.state, changing.id, changed(changing, typed))
+      : addSpan(session, { ...typed, origin: 'drawn' });
+    put(edit, () => begin(null));
   };
   return (
     <Dialog
@@ -99,8 +100,9 @@ function SpansForm({ session }: { readonly session: Session }) {
         changing={changing?.id ?? null}
         onChange={begin}
         onRemove={(span) => {
-          put(removeSpans(session.state, [span.id]));
-          if (changing?.id === span.id) begin(null);
+          put(removeSpans(session.state, [span.id]), () =>
+            changing?.id === span.id ? begin(null) : again(),
+          );
         }}
         onGo={(span) => {
           close();
@@ -125,18 +127,6 @@ function changed(before: Span, parts: SpanParts): Omit<Span, 'id'> {
     (key) => parts[key] === before[key],
   );
   return { ...parts, origin: same ? before.origin : 'drawn' };
-}
-
-/** The first field of the form has the focus at the beginning, and when another span is changed. */
-function useFirstField(changing: Span | null) {
-  const form = useRef<HTMLFieldSetElement>(null);
-  const before = useRef(changing);
-  useEffect(() => {
-    if (changing !== null && changing !== before.current)
-      form.current?.querySelector('input')?.focus();
-    before.current = changing;
-  }, [changing]);
-  return form;
 }
 
 const TARGETS = SPAN_TARGETS.map(

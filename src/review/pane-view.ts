@@ -1,6 +1,6 @@
 import { leadKey } from '../recording/lead';
 import { drawsDiffer, type SignalAccess } from './analysis-store';
-import { CanvasLayer, watchSize } from './canvas-layer';
+import { boxOf, CanvasLayer, watchSize } from './canvas-layer';
 import { FrameLoop } from './frame-loop';
 import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
@@ -55,15 +55,17 @@ export class PaneView {
     readonly kind: PaneKind,
     rows: readonly Row[],
     public tokens: ThemeTokens,
+    private readonly scale = 1,
   ) {
-    this.under = new CanvasLayer(dom.under);
-    this.over = new CanvasLayer(dom.over);
+    this.under = new CanvasLayer(dom.under, scale);
+    this.over = new CanvasLayer(dom.over, scale);
     this.staleness = new Staleness(stores, this.loop.ask);
     const context: RowContext = {
       stores,
       signals,
       tokens: () => this.tokens,
       stale: () => this.staleness.stale,
+      scale,
       redraw: this.loop.ask,
     };
     this.rows = rows.map((row) => makeRowView(row, dom, context));
@@ -125,12 +127,12 @@ export class PaneView {
 
   private layout(): void {
     const { dom } = this;
-    const stage = dom.stage.getBoundingClientRect();
+    const stage = boxOf(dom.stage, this.scale);
     if (stage.width < 2 || stage.height < 2) return;
     this.widthPx = stage.width;
     this.boxes = this.rows.map((view) => {
       const host = dom.hosts.get(view.row.key);
-      const box = host?.getBoundingClientRect() ?? stage;
+      const box = host ? boxOf(host, this.scale) : stage;
       view.resize(box.width, box.height);
       return { row: view.row, topPx: box.top - stage.top, heightPx: box.height };
     });

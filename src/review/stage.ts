@@ -42,6 +42,7 @@ class Hold {
   constructor(
     private readonly stage: HTMLElement,
     private readonly acts: StageActs,
+    private readonly scale: number,
   ) {}
 
   get active(): boolean {
@@ -50,7 +51,7 @@ class Hold {
 
   place(event: MouseEvent): readonly [number, number] {
     const box = this.stage.getBoundingClientRect();
-    return [event.clientX - box.left, event.clientY - box.top];
+    return [(event.clientX - box.left) / this.scale, (event.clientY - box.top) / this.scale];
   }
 
   down(event: PointerEvent): void {
@@ -97,11 +98,11 @@ class Hold {
   }
 }
 
-/** Listens to pointer and wheel on a pane's drawing. Returns the way to stop. */
-export function listenToStage(stage: HTMLElement, acts: StageActs): () => void {
+/** Listens to pointer and wheel on a pane's drawing, shown `scale` times as large. Returns the way to stop. */
+export function listenToStage(stage: HTMLElement, acts: StageActs, scale = 1): () => void {
   const stop = new AbortController();
   const { signal } = stop;
-  const hold = new Hold(stage, acts);
+  const hold = new Hold(stage, acts, scale);
   const onEscape = (event: KeyboardEvent) => {
     if (event.key !== 'Escape' || !hold.active) return;
     event.stopPropagation();

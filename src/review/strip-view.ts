@@ -4,7 +4,7 @@ import { bookmarkAtS } from '../session/bookmark-edits';
 import type { Bookmark, SessionState } from '../session/document';
 import { drawsDiffer } from './analysis-store';
 import { bookmarkWords, goToBookmark } from './bookmarks';
-import { CanvasLayer, watchSize } from './canvas-layer';
+import { boxOf, CanvasLayer, watchSize } from './canvas-layer';
 import { FrameLoop } from './frame-loop';
 import { panGesture, phaseEdgeGesture, slotEdgeGesture, slotGesture, wheelOver } from './gestures';
 import { Hatch } from './hatch';
@@ -49,8 +49,9 @@ export class StripView {
     private readonly stores: PaneStores,
     private readonly act: PaneActs,
     private tokens: ThemeTokens,
+    private readonly scale = 1,
   ) {
-    this.layer = new CanvasLayer(dom.canvas);
+    this.layer = new CanvasLayer(dom.canvas, scale);
     this.staleness = new Staleness(stores, this.loop.ask);
     const { view, analysis, session } = stores;
     this.stops.push(
@@ -82,7 +83,7 @@ export class StripView {
   }
 
   private layout(): void {
-    const { width, height } = this.dom.stage.getBoundingClientRect();
+    const { width, height } = boxOf(this.dom.stage, this.scale);
     if (width < 2) return;
     this.widthPx = width;
     this.rate = null;

@@ -5,6 +5,7 @@ import type { PaneProps } from './pane-props';
 import { listenToStage } from './stage';
 import { type StripDom, StripView, stripActs } from './strip-view';
 import { THEMES } from './theme-tokens';
+import { PhaseTable } from './twin-tables';
 
 /** Fetched when an edge is moved first. */
 const MovingParts = lazy(() =>
@@ -30,7 +31,7 @@ function stripDom(section: HTMLElement): StripDom {
 }
 
 /** The thin strip over the full duration. */
-export function WholeStudyPane({ stores, act, theme }: PaneProps) {
+export function WholeStudyPane({ stores, act, theme, scale }: PaneProps) {
   const moving = useStore(
     stores.view,
     ({ draft, phaseDraft, bordersShown }) => bordersShown || (draft ?? phaseDraft) !== null,
@@ -43,15 +44,15 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
     const section = sectionRef.current;
     if (!section) return undefined;
     const dom = stripDom(section);
-    const strip = new StripView(dom, stores, act, THEMES[themeRef.current]);
-    const deafen = listenToStage(dom.stage, stripActs(strip, stores));
+    const strip = new StripView(dom, stores, act, THEMES[themeRef.current], scale);
+    const deafen = listenToStage(dom.stage, stripActs(strip, stores), scale);
     stripRef.current = strip;
     return () => {
       deafen();
       strip.destroy();
       stripRef.current = null;
     };
-  }, [stores, act]);
+  }, [stores, act, scale]);
   useEffect(() => stripRef.current?.retheme(THEMES[theme]), [theme]);
   return (
     <section className="pane whole" aria-label="Whole study" ref={sectionRef}>
@@ -67,6 +68,7 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
         <div className="cursor-line" data-part="cursor-line" hidden />
       </div>
       <p className="visually-hidden" data-part="summary" />
+      <PhaseTable stores={stores} />
       {moving ? (
         <Suspense fallback={null}>
           <MovingParts stores={stores} act={act} />

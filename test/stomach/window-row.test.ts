@@ -59,6 +59,15 @@ describe('the background of a row of windows', () => {
     expect(meanOverLevel(hump, 5)).toBeLessThan(1.25);
   });
 
+  test('follows a narrower hump by its flanks', () => {
+    const hump = shapedNoise(
+      LENGTH,
+      (cpm) => 1 / cpm + 0.5 * exp(-0.5 * ((cpm - 6) / 0.8) ** 2),
+      3,
+    );
+    expect(meanOverLevel(hump, 6)).toBeLessThan(1.5);
+  });
+
   test('does not follow a line: a steady wave stands as high over it as it does over the noise', () => {
     const quiet = BACKGROUNDS['1/f'](LENGTH, 22);
     const line = leadOf(LENGTH / 240, (t) => wave(40, 3, t));
@@ -91,6 +100,16 @@ test('a power law is a straight line in log frequency, also under a strong line 
   const marred = law.map((value, k) => (k > 45 && k < 57 ? value + 6 : value));
   const through = smoothLevel(binCpm, count).through(marred, 1, 3);
   for (let k = 10; k < 200; k += 10) expect(Math.abs(through[k] - law[k])).toBeLessThan(0.1);
+});
+
+test('the curve of a row is not tilted at 1 cpm by breathing that fills 8 to 12 cpm', () => {
+  const [binCpm, count] = [15 / 256, 320];
+  const breathing = Float64Array.from({ length: count }, (_, k) =>
+    exp(-0.5 * (k * binCpm - 10) ** 2) > 0.1 ? 4 : 0,
+  );
+  const curve = smoothLevel(binCpm, count).through(breathing, 3, 1.2);
+  for (const cpm of [1.1, 1.5])
+    expect(Math.abs(curve[Math.round(cpm / binCpm)])).toBeLessThan(0.35);
 });
 
 describe('a hole in a window', () => {
