@@ -2,7 +2,16 @@ import type { PaneCommands } from '../review/pane-commands';
 import type { AppParts } from './app-context';
 
 /** Headings of the keys page, in its order. */
-export const COMMAND_GROUPS = ['open', 'study', 'work', 'look', 'beats', 'spans', 'page'] as const;
+export const COMMAND_GROUPS = [
+  'open',
+  'study',
+  'work',
+  'look',
+  'beats',
+  'spans',
+  'doubts',
+  'page',
+] as const;
 export type CommandGroup = (typeof COMMAND_GROUPS)[number];
 
 export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
@@ -12,6 +21,7 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   look: 'Move and zoom',
   beats: 'Beats',
   spans: 'Spoiled spans',
+  doubts: 'Doubts',
   page: 'The page',
 };
 
@@ -42,6 +52,8 @@ export interface Command {
   readonly keys: readonly string[];
   readonly group: CommandGroup;
   readonly when: CommandContext;
+  /** A held key runs it once and not again. */
+  readonly once?: true;
   /** Menu of the top bar it is listed in. */
   readonly menu?: 'open' | 'study' | 'help';
   /** Words with what it would act on now ("Undo move beat"). */

@@ -1,4 +1,5 @@
 import type { Command, CommandParts } from './command';
+import { DOUBT_COMMANDS } from './doubt-commands';
 import { isPlainKey } from './key-names';
 import { PANE_COMMANDS } from './pane-bindings';
 import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './shell-commands';
@@ -9,6 +10,7 @@ export const COMMANDS: readonly Command[] = [
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...DOUBT_COMMANDS,
   ...PAGE_COMMANDS,
 ];
 

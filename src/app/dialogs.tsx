@@ -16,6 +16,7 @@ const AboutDialog = later('AboutDialog');
 const FigureDialog = later('FigureDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
+const LookAlikesDialog = later('LookAlikesDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
@@ -73,6 +74,8 @@ function OneDialog({ state, page }: OneDialogProps) {
       return <FailureDialog failure={state.failure} />;
     case 'figure':
       return <FigureDialog figure={state.key} phase={state.phase} />;
+    case 'look-alikes':
+      return <LookAlikesDialog doubtId={state.doubtId} />;
     case 'choose-same-file':
       return <SameFileDialog code={state.code} page={page} />;
   }

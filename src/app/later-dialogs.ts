@@ -3,6 +3,7 @@ export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';
 export { GoToDialog } from './go-to-dialog';
 export { KeysDialog } from './keys-dialog';
+export { LookAlikesDialog } from './look-alikes-dialog';
 export { PhasesDialog } from './phases-dialog';
 export { ProtocolDialog } from './protocol-dialog';
 export { RolesDialog } from './roles-dialog';

@@ -53,7 +53,9 @@ export function Shell({ parts, renderReport }: ShellProps) {
       <div className={reportShown ? 'app report-open' : 'app'}>
         <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
         {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
-        {studyShown && !reportShown ? <Workspace panes={{ ...panes, theme }} page={page} /> : null}
+        {studyShown && !reportShown ? (
+          <Workspace panes={{ ...panes, theme }} parts={commandParts} />
+        ) : null}
         {studyShown ? null : <StartScreen parts={commandParts} />}
         <FootLine />
         <Messages />

@@ -13,7 +13,7 @@ import type { Keeper } from '../session/keeper';
 import { beginSession, redoableEdit, undoableEdit } from '../session/log';
 import type { SessionStore } from '../session/store';
 import { type AnalysisRunner, createAnalysisRunner } from './analysis-runner';
-import { withReviewer } from './app-context';
+import { type DoubtAccess, withReviewer } from './app-context';
 import type { StudyController } from './controller';
 import { lastStudy } from './last-study';
 import { keptRow, LOST_OPENING, otherFile, otherReading } from './opening-words';
@@ -44,6 +44,7 @@ interface Opening {
 /** Leads a study from the file through worker and session to the stores that the page draws from. */
 export function createStudyController(parts: ControllerParts): StudyController & {
   readonly signals: SignalAccess;
+  readonly doubtAccess: DoubtAccess;
 } {
   const { session, analysis, view, shell, keeper } = parts;
   const client = createAnalysisClient(
@@ -227,6 +228,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
 
   return {
     signals: runner.signals,
+    doubtAccess: client,
     openFile: open,
     openDemo,
     async openSessionFile(file) {

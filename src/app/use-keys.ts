@@ -32,6 +32,7 @@ export function useKeys(parts: CommandParts): void {
       const command = commandForKey(name, parts);
       if (!command || !canRun(command, parts)) return;
       event.preventDefault();
+      if (event.repeat && command.once) return;
       command.run(parts);
     };
     window.addEventListener('keydown', onKeyDown);

@@ -1,6 +1,7 @@
 import { leadKey } from '../recording/lead';
 import { drawsDiffer, type SignalAccess } from './analysis-store';
 import { CanvasLayer, watchSize } from './canvas-layer';
+import { paintDoubt } from './doubt-paint';
 import { FrameLoop } from './frame-loop';
 import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
@@ -95,7 +96,14 @@ export class PaneView {
     const { view, analysis, session } = this.stores;
     const { name } = this.kind;
     const drawnFrom = (state: ViewState) =>
-      [state[name], state.gainsUv, state.levelsDb, state.selection, state.draft] as const;
+      [
+        state[name],
+        state.gainsUv,
+        state.levelsDb,
+        state.selection,
+        state.draft,
+        state.doubt,
+      ] as const;
     this.stops.push(
       view.subscribe((now, before) => {
         const [a, b] = [drawnFrom(now), drawnFrom(before)];
@@ -189,6 +197,7 @@ export class PaneView {
       font: this.over.font(11),
     });
     this.kind.paintOver?.(brush, this);
+    paintDoubt(brush, this);
   }
 
   private placeCursor(): void {

@@ -20,6 +20,16 @@ export interface Draft extends TimeWindow {
   readonly spanId: number | null;
 }
 
+/** The doubt in front as the panes draw it. */
+export interface DoubtMark extends TimeWindow {
+  /** What is proposed, in a word or two: "insert?". */
+  readonly words: string;
+  /** Times of the proposed act; empty where it is about the whole stretch. */
+  readonly atS: readonly number[];
+  /** True where beats stand at those times, whose pins are not to be covered. */
+  readonly onBeats: boolean;
+}
+
 /** Where the panes look; no part of the session and never undone. */
 export interface ViewState {
   readonly durationS: number;
@@ -35,6 +45,7 @@ export interface ViewState {
   readonly levelsDb: readonly [low: number, high: number] | null;
   readonly selection: Selection;
   readonly draft: Draft | null;
+  readonly doubt: DoubtMark | null;
   readonly tool: Tool;
   /** Leads that Minutes draws; null: as many as fit the height of the page. */
   readonly leadsShown: 'all' | 'reported' | null;
@@ -59,6 +70,7 @@ export const createViewStore = (): ViewStore =>
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    doubt: null,
     tool: 'look',
     leadsShown: null,
     identityHidden: false,
@@ -87,6 +99,7 @@ export function lookAtStudy(store: ViewStore, durationS: number): void {
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    doubt: null,
     tool: 'look',
   });
 }
