@@ -15,7 +15,7 @@ export function paintDoubt(brush: CanvasRenderingContext2D, view: PaneView): voi
   if (!inside || (kind.name === 'minutes' && !stretch)) return;
   const places = stretch ? [doubt.fromS, doubt.toS] : doubt.atS;
   const xs = places.map(view.xOf);
-  const high = kind.name === 'seconds' && !doubt.onBeats;
+  const high = kind.name === 'seconds' && !doubt.onPins;
   const topPx = high ? HIGH_PX : view.topPx + BELOW_HEAD_PX;
   brush.save();
   brush.strokeStyle = view.tokens.ink;

@@ -67,10 +67,10 @@ export function doubtMark(doubt: Doubt, stores: PaneStores): DoubtMark {
   const { fromS, toS, mend, tick } = doubt;
   const rateHz = openBeats(stores)?.rateHz;
   const words = tabWords(doubt);
-  if (rateHz === undefined || tick === null) return { fromS, toS, words, atS: [], onBeats: false };
+  if (rateHz === undefined || tick === null) return { fromS, toS, words, atS: [], onPins: true };
   const { removed, added } = mend?.kind === 'beats' ? mend : { removed: [], added: [] };
   const ticks = [...new Set([...removed, ...added].map((one) => one.tick))];
   const places = ticks.length > 0 ? ticks : [tick];
-  const onBeats = added.length === 0 || removed.length > 0;
-  return { fromS, toS, words, atS: places.map((one) => ticksToSeconds(one, rateHz)), onBeats };
+  const onPins = added.length === 0 || removed.length > 0;
+  return { fromS, toS, words, atS: places.map((one) => ticksToSeconds(one, rateHz)), onPins };
 }

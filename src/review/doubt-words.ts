@@ -116,7 +116,8 @@ const large = (value: FigureValue, definition: FigureDefinition): string =>
 export function effectLine(effect: DoubtEffect): string {
   const words = effectWords(effect);
   if (!words) return '';
-  const { name, unit, before, after } = words;
-  const side = (text: string) => (text === '—' ? 'withheld' : text);
-  return `${name} ${side(before)} to ${side(after)}${unit === '' ? '' : ` ${unit}`}`;
+  const { name, before, after } = words;
+  const unit = words.unit === '' ? '' : ` ${words.unit}`;
+  if (after === '—') return `${name} ${before === '—' ? 'withheld' : before + unit} to withheld`;
+  return `${name} ${before === '—' ? 'withheld' : before} to ${after}${unit}`;
 }

@@ -26,8 +26,8 @@ export interface DoubtMark extends TimeWindow {
   readonly words: string;
   /** Times of the proposed act; empty where it is about the whole stretch. */
   readonly atS: readonly number[];
-  /** True where beats stand at those times, whose pins are not to be covered. */
-  readonly onBeats: boolean;
+  /** True where pins stand in the place of the words. */
+  readonly onPins: boolean;
 }
 
 /** Where the panes look; no part of the session and never undone. */
