@@ -42,17 +42,25 @@ const byTime = (time: string): Locator =>
 
 async function steadyBeat(): Promise<SteadyBeat> {
   await settled(page);
+  await expect.poll(async () => (await steadyTimes()).length).toBeGreaterThan(0);
+  const [time] = await steadyTimes();
+  return { pin: byTime(time), atS: secondsOf(time), time };
+}
+
+/** Beats are read out in the order of time, whatever was edited. Times of those in Seconds with three N beats on either side, those nearest to the middle first. */
+async function steadyTimes(): Promise<readonly string[]> {
   const all = await seconds()
     .getByRole('button', { name: /^beat / })
     .evaluateAll((buttons) => buttons.map((one) => one.getAttribute('aria-label') ?? ''));
   const beats = all.map((name) => /^beat (\w) at ([\d:.]+)/.exec(name) ?? ['', '', '']);
+  const times = beats.map(([, , time]) => secondsOf(time));
+  expect(times).toEqual([...times].sort((a, b) => a - b));
   const middle = (beats.length - 1) / 2;
-  const steady = beats
+  return beats
     .map(([, , time], i) => ({ time, i, run: beats.slice(Math.max(0, i - 3), i + 4) }))
     .filter(({ run }) => run.length === 7 && run.every(([, beatClass]) => beatClass === 'N'))
-    .sort((a, b) => Math.abs(a.i - middle) - Math.abs(b.i - middle));
-  const [{ time }] = steady;
-  return { pin: byTime(time), atS: secondsOf(time), time };
+    .sort((a, b) => Math.abs(a.i - middle) - Math.abs(b.i - middle))
+    .map(({ time }) => time);
 }
 
 /** RMSSD, NN share and count in Findings are what the downloaded beats give by hand; returns RMSSD as shown. */

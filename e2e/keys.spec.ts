@@ -75,6 +75,9 @@ const CHECKS: Readonly<Record<string, Check>> = {
   sign: ['', 'dialog', /^Sign$/],
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
+  log: ['', 'dialog', /^Log$/],
+  'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
+  bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
   about: ['', 'dialog', /Bicadence/],
   report: ['', 'view', /^#report$/],
@@ -122,12 +125,19 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'exclude-seconds': ['', 'span', /0:00:2\d.* to 0:00:3\d.* both$/],
   'next-span': ['Control+e Escape Home', 'span', /^Spoiled span 0:00:2\d/],
   'previous-span': ['Control+e Escape End', 'span', /^Spoiled span 0:00:2\d/],
+  'next-doubt': ['', 'status', /^Doubt \d+ of \d+, /],
+  'previous-doubt': ['', 'status', /^Doubt \d+ of \d+, /],
+  'keep-doubt': ['d', 'undo', /^keep what is doubted$/],
+  'look-alikes': ['d', 'dialog', /^Look-alikes$/],
   'span-for-stomach': ['Control+e', 'span', / stomach$/],
   'span-for-heart': ['Control+e', 'span', / heart$/],
   'span-for-both': ['Control+e 1', 'span', / both$/],
 };
 
-/** Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. */
+/**
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
+ * stepped through in room.spec.
+ */
 const ELSEWHERE = [
   'open-file',
   'open-session',
@@ -135,6 +145,9 @@ const ELSEWHERE = [
   'close-study',
   'download-session',
   'download-results',
+  'next-bookmark',
+  'previous-bookmark',
+  'mend-doubt',
   'stop',
 ];
 

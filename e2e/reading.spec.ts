@@ -222,7 +222,11 @@ test.describe('settings', () => {
     await expect(work).toContainText(/\d+ %/);
     await settled(page);
     await expect(work).toBeHidden();
-    expect(await told(page, 'Minutes')).not.toBe(before);
+    const drawn = await told(page, 'Minutes');
+    expect(drawn).not.toBe(before);
+    const gainOf = (words: string) => /slow wave.*?: \S+ to \S+ uV, (\d+) uV/.exec(words)?.[1];
+    expect(gainOf(drawn)).toBeDefined();
+    expect(gainOf(drawn)).not.toBe(gainOf(before));
     await expectDrawn(page, 'Minutes');
     await press(page, 'Control+z');
     expect(await told(page, 'Minutes')).toBe(before);

@@ -2,6 +2,7 @@ import type { ReviewInputs } from '../../workers/analysis-api';
 import type { AnalysisClient } from '../../workers/analysis-client';
 import { type AnalysisStore, type SignalAccess, takeAnalysis } from '../review/analysis-store';
 import { asWork, beginWork, endWork } from '../review/idle';
+import { forgetDrawnGains, type ViewStore } from '../review/view-store';
 import type { Session } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
 import type { ShellStore } from './shell-store';
@@ -25,6 +26,10 @@ export function sameInputs(a: ReviewInputs, b: ReviewInputs): boolean {
     a.beats === b.beats
   );
 }
+
+/** What the size of a drawn slow wave or heartbeat hangs on. */
+const routesOf = ({ slowRoute, heartRoute, fractional }: ReviewInputs['settings']): string =>
+  JSON.stringify([slowRoute, heartRoute, fractional.order]);
 
 /** True where the signals themselves are to be made again, so that work under way is of no use any more. */
 function otherSignals(a: ReviewInputs, b: ReviewInputs): boolean {
@@ -51,6 +56,7 @@ interface RunnerParts {
   readonly client: AnalysisClient;
   readonly session: SessionStore;
   readonly analysis: AnalysisStore;
+  readonly view: ViewStore;
   readonly shell: ShellStore;
 }
 
@@ -58,9 +64,12 @@ export function createAnalysisRunner({
   client,
   session,
   analysis,
+  view,
   shell,
 }: RunnerParts): AnalysisRunner {
   let sent: ReviewInputs | null = null;
+  /** By which routes the signals in sight were made; null before the first. */
+  let madeBy: string | null = null;
   /** Grows with every study, so that a late reply is not taken for this one's. */
   let visit = 0;
   const abortable = new Set<AbortController>();
@@ -119,6 +128,9 @@ export function createAnalysisRunner({
     if (visit !== started) return follow();
     if (reply.ok) {
       takeAnalysis(analysis, reply.value);
+      const before = madeBy;
+      madeBy = routesOf(inputs.settings);
+      if (before !== null && before !== madeBy) forgetDrawnGains(view);
       if (anew || reply.value.separation !== null)
         analysis.setState((before) => ({ signalVersion: before.signalVersion + 1 }));
       return follow();
@@ -152,6 +164,7 @@ export function createAnalysisRunner({
     },
     reset() {
       sent = null;
+      madeBy = null;
       visit += 1;
       for (const controller of abortable) controller.abort();
     },

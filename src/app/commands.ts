@@ -1,3 +1,4 @@
+import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
 import { DOUBT_COMMANDS } from './doubt-commands';
 import { isPlainKey } from './key-names';
@@ -11,6 +12,7 @@ export const COMMANDS: readonly Command[] = [
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
   ...DOUBT_COMMANDS,
+  ...BOOKMARK_COMMANDS,
   ...PAGE_COMMANDS,
 ];
 

@@ -13,10 +13,13 @@ const later = <K extends keyof Later>(name: K) =>
   lazy<Later[K]>(() => asWork(import('./later-dialogs')).then((all) => ({ default: all[name] })));
 
 const AboutDialog = later('AboutDialog');
+const AddBookmarkDialog = later('AddBookmarkDialog');
+const BookmarksDialog = later('BookmarksDialog');
 const FigureDialog = later('FigureDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
 const LookAlikesDialog = later('LookAlikesDialog');
+const LogDialog = later('LogDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
@@ -62,10 +65,16 @@ function OneDialog({ state, page }: OneDialogProps) {
       return <SettingsDialog />;
     case 'go-to':
       return <GoToDialog />;
+    case 'add-bookmark':
+      return <AddBookmarkDialog />;
+    case 'bookmarks':
+      return <BookmarksDialog />;
     case 'keys':
       return <KeysDialog />;
     case 'about':
       return <AboutDialog />;
+    case 'log':
+      return <LogDialog page={page} />;
     case 'sign':
       return <SignDialog />;
     case 'text-reading':

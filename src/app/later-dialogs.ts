@@ -1,8 +1,10 @@
 export { AboutDialog } from './about-dialog';
+export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
 export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';
 export { GoToDialog } from './go-to-dialog';
 export { KeysDialog } from './keys-dialog';
+export { LogDialog } from './log-dialog';
 export { LookAlikesDialog } from './look-alikes-dialog';
 export { PhasesDialog } from './phases-dialog';
 export { ProtocolDialog } from './protocol-dialog';

@@ -3,7 +3,7 @@ import type { Command, CommandParts } from './command';
 import { THEME_CHOICES } from './preferences';
 
 const dialog =
-  (kind: 'roles' | 'phases' | 'protocol' | 'settings' | 'keys' | 'about' | 'sign') =>
+  (kind: 'roles' | 'phases' | 'protocol' | 'settings' | 'keys' | 'about' | 'log' | 'sign') =>
   ({ shell }: CommandParts) =>
     shell.getState().openDialog({ kind });
 
@@ -127,6 +127,15 @@ export const STUDY_COMMANDS: readonly Command[] = [
     ready: ({ session, analysis }) =>
       analysis.getState().fileAtHand && session.getState().session?.state.roles.heart != null,
     run: ({ controller }) => controller.detectAgain(),
+  },
+  {
+    id: 'log',
+    words: 'Log: who changed what…',
+    keys: ['Shift+H'],
+    group: 'study',
+    when: 'study',
+    menu: 'study',
+    run: dialog('log'),
   },
   {
     id: 'sign',

@@ -22,8 +22,11 @@ export type DialogState =
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
+  | { readonly kind: 'add-bookmark' }
+  | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
+  | { readonly kind: 'log' }
   | { readonly kind: 'sign' }
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }

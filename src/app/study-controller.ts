@@ -57,7 +57,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
     },
   );
   const hash = createHashClient(() => startModuleWorker(parts.hashWorkerUrl));
-  const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, shell });
+  const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, view, shell });
   const keeping = createStudyKeeping({ keeper, hash, session, shell });
   const files = createStudyFiles({ session, analysis, shell, keeping });
   const propose = (given: Given) =>

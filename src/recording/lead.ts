@@ -11,7 +11,7 @@ export function leadKey(lead: Lead): string {
 }
 
 /** The lead as people read it, from the channels' labels. */
-export function leadName(lead: Lead, channels: readonly Channel[]): string {
+export function leadName(lead: Lead, channels: readonly Pick<Channel, 'label'>[]): string {
   const label = (index: number) => channels[index]?.label ?? `channel ${index + 1}`;
   return lead.kind === 'channel'
     ? label(lead.channel)
@@ -26,7 +26,7 @@ export function leadChannels(lead: Lead): readonly number[] {
 /**
  * Reads a lead written as a label, "#N", or a difference "A~B" of either ("#2~#3"). Null where a part names no channel.
  */
-export function parseLead(text: string, channels: readonly Channel[]): Lead | null {
+export function parseLead(text: string, channels: readonly Pick<Channel, 'label'>[]): Lead | null {
   const find = (part: string): number | null => {
     const trimmed = part.trim();
     const byNumber = /^#(\d+)$/.exec(trimmed);

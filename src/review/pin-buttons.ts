@@ -40,8 +40,10 @@ export class PinButtons {
     }
     this.layer.tabIndex = pins.length > 0 ? -1 : 0;
     const tabStop = pins.find((pin) => pin.selected)?.tick ?? pins[0]?.tick;
+    let before: HTMLButtonElement | null = null;
     for (const pin of pins) {
-      const held = this.held.get(pin.tick) ?? this.make(pin.tick);
+      const held: Held = this.held.get(pin.tick) ?? this.make(pin.tick, before);
+      before = held.button;
       const words = open ? beatWords(open, pin.index) : '';
       if (words !== held.words) {
         held.words = words;
@@ -68,7 +70,8 @@ export class PinButtons {
     if (target && target !== document.activeElement) target.focus({ preventScroll: true });
   }
 
-  private make(tick: number): Held {
+  /** A button after that of the beat before it, so that they are read in the order of time. */
+  private make(tick: number, before: HTMLButtonElement | null): Held {
     const button = document.createElement('button');
     button.type = 'button';
     button.className = 'pin';
@@ -84,7 +87,8 @@ export class PinButtons {
       event.preventDefault();
       event.stopPropagation();
     });
-    this.layer.append(button);
+    if (before) before.after(button);
+    else this.layer.prepend(button);
     const held = { button, words: '' };
     this.held.set(tick, held);
     return held;

@@ -10,6 +10,8 @@ import type { Draft, Selection } from './view-store';
 
 /** Rows of the strip in CSS pixels from its top; the gutter's names stand beside them. */
 export const PHASE_BOX = { topPx: 4, bottomPx: 22 } as const;
+/** Flag of a bookmark: its head reaches from its time to the right. */
+export const FLAG = { topPx: 1, widthPx: 8, heightPx: 8 } as const;
 const STOMACH_Y_PX = 37;
 const BLOCK_PX = 4;
 const REACH_PX = 8;
@@ -22,6 +24,8 @@ export interface StripScene {
   readonly blocks: readonly StomachBlock[];
   readonly rate: (RateColumns & { readonly limits: readonly [number, number] }) | null;
   readonly spans: readonly Span[];
+  /** Times of the bookmarks in s. */
+  readonly bookmarksS: readonly number[];
   readonly draft: Draft | null;
   readonly selection: Selection;
   readonly xOf: (atS: number) => number;
@@ -38,6 +42,7 @@ export function paintStrip(brush: Brush, scene: StripScene): void {
   paintRate(brush, scene);
   paintSpans(brush, scene);
   paintBlocks(brush, scene);
+  paintFlags(brush, scene);
 }
 
 function paintPhases(brush: Brush, { phases, xOf, tokens, font }: StripScene): void {
@@ -171,5 +176,24 @@ function paintSpans(brush: Brush, scene: StripScene): void {
       bottom - top,
     );
     brush.globalAlpha = 1;
+  }
+}
+
+/** A bookmark: a small flag on a staff over the phases. */
+function paintFlags(brush: Brush, { bookmarksS, xOf, widthPx, tokens }: StripScene): void {
+  for (const atS of bookmarksS) {
+    const x = Math.round(xOf(atS));
+    const way = x + FLAG.widthPx > widthPx ? -1 : 1;
+    brush.beginPath();
+    brush.moveTo(x, FLAG.topPx);
+    brush.lineTo(x + way * FLAG.widthPx, FLAG.topPx + FLAG.heightPx / 2);
+    brush.lineTo(x, FLAG.topPx + FLAG.heightPx);
+    brush.closePath();
+    brush.strokeStyle = tokens.paper;
+    brush.lineWidth = 2;
+    brush.stroke();
+    brush.fillStyle = tokens.ink;
+    brush.fill();
+    brush.fillRect(x - 0.5, FLAG.topPx, 1, PHASE_BOX.bottomPx - FLAG.topPx);
   }
 }

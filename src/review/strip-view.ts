@@ -1,8 +1,10 @@
 import { leadKey } from '../recording/lead';
 import { type Phase, phasesOrWhole } from '../recording/phase';
-import type { SessionState } from '../session/document';
+import { bookmarkAtS } from '../session/bookmark-edits';
+import type { Bookmark, SessionState } from '../session/document';
 import { setField } from '../session/edits';
 import { drawsDiffer } from './analysis-store';
+import { bookmarkWords, goToBookmark } from './bookmarks';
 import { CanvasLayer, watchSize } from './canvas-layer';
 import { FrameLoop } from './frame-loop';
 import { panGesture, slotEdgeGesture, slotGesture, wheelOver } from './gestures';
@@ -15,7 +17,7 @@ import type { PaneStores } from './row-view';
 import type { Gesture, StageActs } from './stage';
 import { Staleness } from './staleness';
 import { stomachBlocks } from './stomach-blocks';
-import { PHASE_BOX, paintStrip, type StripScene } from './strip-paint';
+import { FLAG, PHASE_BOX, paintStrip, type StripScene } from './strip-paint';
 import { stripSpans } from './strip-spans';
 import type { ThemeTokens } from './theme-tokens';
 import { clockText, widthText } from './time-ticks';
@@ -99,6 +101,19 @@ export class StripView {
     return this.draftPhases ?? this.state()?.phases ?? [];
   }
 
+  private bookmarks(): readonly Bookmark[] {
+    return this.state()?.bookmarks ?? [];
+  }
+
+  /** The bookmark whose flag is under a place. */
+  bookmarkAt(x: number, y: number): Bookmark | null {
+    if (y > FLAG.topPx + FLAG.heightPx + 2) return null;
+    const near = this.bookmarks().filter(
+      (one) => Math.abs(x - this.xOf(bookmarkAtS(one))) <= FLAG.widthPx,
+    );
+    return near.at(-1) ?? null;
+  }
+
   /** Shows phases as they would be while a border is dragged; null: as they are. */
   draft(phases: readonly Phase[] | null): void {
     this.draftPhases = phases;
@@ -141,6 +156,7 @@ export class StripView {
         stomach: key ?? null,
         heart: state?.roles.heart ? leadKey(state.roles.heart) : null,
       }),
+      bookmarksS: this.bookmarks().map(bookmarkAtS),
       draft,
       selection,
       xOf: this.xOf,
@@ -164,9 +180,12 @@ export class StripView {
     const limits = scene.rate?.limits;
     const rate = limits ? ` Heart rate on a scale of ${limits[0]} to ${limits[1]} a minute.` : '';
     const spans = `${scene.spans.length} spoiled ${scene.spans.length === 1 ? 'span' : 'spans'}.`;
+    const flags = this.bookmarks().map(
+      (one, i, all) => ` ${bookmarkWords(one, i + 1, all.length)}.`,
+    );
     const told = `Whole study, ${widthText(durationS)}. ${phases.join(', ')}. Stomach row, epochs: ${
       kinds.join(', ') || 'none yet'
-    }.${rate} ${spans}`;
+    }.${rate} ${spans}${flags.join('')}`;
     if (this.dom.summary.textContent !== told) this.dom.summary.textContent = told;
   }
 
@@ -247,6 +266,8 @@ export function stripActs(strip: StripView, { view }: PaneStores): StageActs {
   };
   return {
     press: (x, y) => {
+      const flag = strip.bookmarkAt(x, y);
+      if (flag) return { click: () => goToBookmark(view, flag) };
       const edge = strip.edgeAt(x, y);
       if (edge) return strip.edgeGesture(edge);
       const part = slotAt(x);
@@ -255,6 +276,7 @@ export function stripActs(strip: StripView, { view }: PaneStores): StageActs {
       return stripPan(strip, view, x, click);
     },
     hover: (x, y) => {
+      if (strip.bookmarkAt(x, y)) return 'pointer';
       if (strip.edgeAt(x, y)) return 'ew-resize';
       const part = slotAt(x);
       if (part === 'body') return 'grab';

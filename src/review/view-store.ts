@@ -132,3 +132,11 @@ export function lookAtMinutes(store: ViewStore, centreS: number, widthS?: number
     seconds: still ? seconds : { fromS, toS: fromS + secondsWidth },
   });
 }
+
+/** Lets the rows of drawn signals be fitted anew: by another route they have another size. Recorded rows keep their gains. */
+export function forgetDrawnGains(view: ViewStore): void {
+  const isDrawn = (key: string) => key.includes(':slow-wave:') || key.includes(':heartbeat:');
+  view.setState(({ gainsUv }) => ({
+    gainsUv: Object.fromEntries(Object.entries(gainsUv).filter(([key]) => !isDrawn(key))),
+  }));
+}

@@ -45,7 +45,7 @@ export interface Bookmark {
   readonly id: number;
   readonly minutes: Interval;
   readonly seconds: Interval;
-  /** Keys of the rows that were shown; empty where all were. */
+  /** Which rows were shown: `reported` for those of the reported lead alone; empty where all were. */
   readonly rows: readonly string[];
   readonly note: string;
 }
