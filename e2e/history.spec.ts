@@ -1,7 +1,12 @@
 import { expect, type Locator, type Page, test } from 'playwright/test';
 import {
+  agree,
+  allFigures,
+  chooseFile,
   dialogOf,
   expectNoTroubles,
+  figure,
+  figureButton,
   freshPage,
   goTo,
   openStudy,
@@ -12,6 +17,9 @@ import {
   told,
   words,
 } from './support';
+import { downloadSession, type Offered } from './support-results';
+
+const given = ({ name, bytes }: Offered) => ({ name, mimeType: 'application/json', buffer: bytes });
 
 /** Puts a text into the log's field for words and waits for the lines that hold it. */
 async function seek(dialog: Locator, text: string): Promise<void> {
@@ -88,4 +96,61 @@ test.describe('the log of two reviewers', () => {
     await expect(dialog).toBeHidden();
     expect(await told(page, 'Seconds')).toContain('0:02:5');
   });
+});
+
+test('a figure tells what the edits of this sitting made of it, and of a session from a file too', async ({
+  browser,
+}) => {
+  const page = await freshPage(browser);
+  await openStudy(page, STEADY);
+  await reviewAs(page, 'A. Tech');
+  await goTo(page, '0:31');
+  const found = await figure(page, 'rmssd_ms');
+  await press(page, '.');
+  await press(page, 'Delete');
+  const deleted = await figure(page, 'rmssd_ms');
+  await press(page, '.');
+  await press(page, 'v');
+  const classed = await figure(page, 'rmssd_ms');
+  await reviewAs(page, 'B. Tech');
+  await press(page, 'Control+z');
+  expect(new Set([found, deleted, classed]).size).toBe(3);
+  const wanted = [
+    [/^—as the program found it/, found],
+    [/^1A\. Techdelete beat at 0:00:3/, deleted],
+    [/^2A\. Techclass beat at 0:00:3\d\.\d as V/, classed],
+    [/^3B\. Techundo of edit 2: class beat/, deleted],
+  ] as const;
+  const expectHistory = async () => {
+    const history = dialogOf(page, 'RMSSD').getByRole('region', { name: 'History' });
+    await expect(history).toContainText(`${found} → ${deleted} ms after 3 edits`);
+    const lines = history.locator('tbody tr');
+    await expect(lines).toHaveCount(wanted.length);
+    for (const [i, [what, value]] of wanted.entries()) {
+      await expect(lines.nth(i)).toHaveText(what);
+      await expect(lines.nth(i).locator('td').last()).toHaveText(value);
+    }
+  };
+  await figureButton(page, 'rmssd_ms').click();
+  await expectHistory();
+  await press(page, 'Escape');
+
+  const session = await downloadSession(page);
+  const other = await freshPage(browser);
+  await chooseFile(other, given(session));
+  await other.getByRole('button', { name: 'Choose the file…' }).waitFor();
+  await chooseFile(other, STEADY);
+  await agree(other);
+  const figures = await allFigures(other);
+  await figureButton(other, 'rmssd_ms').click();
+  const history = dialogOf(other, 'RMSSD').getByRole('region', { name: 'History' });
+  await history.getByRole('button', { name: 'Show what the edits changed' }).click();
+  await expect(history).toContainText(`${found} → ${deleted} ms after 3 edits`);
+  await settled(other);
+  await press(other, 'Escape');
+  expect(await allFigures(other)).toEqual(figures);
+  expectNoTroubles(page);
+  expectNoTroubles(other);
+  await other.context().close();
+  await page.context().close();
 });

@@ -184,6 +184,11 @@ export interface AnalysisApi {
     settled: readonly SettledDoubt[],
     doubtId: string,
   ): Promise<Reply<LookAlikes>>;
+  /**
+   * The figures that other states of the open study give, in the order asked for; results, signals and columns of the review
+   * itself stay as they are.
+   */
+  figuresOf(job: JobId, states: readonly ReviewInputs[]): Promise<Reply<readonly Findings[]>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   cancel(job: JobId): void;

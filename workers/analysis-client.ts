@@ -1,6 +1,7 @@
 import * as Comlink from 'comlink';
 import type { SettledDoubt } from '../src/recording/doubt';
 import type { Failure, Reply } from '../src/recording/failure';
+import type { Findings } from '../src/recording/findings';
 import type { Roles } from '../src/recording/roles';
 import type {
   Analysis,
@@ -53,6 +54,10 @@ export interface AnalysisClient {
     doubtId: string,
     options?: CallOptions,
   ): Promise<Reply<LookAlikes>>;
+  figuresOf(
+    states: readonly ReviewInputs[],
+    options?: CallOptions,
+  ): Promise<Reply<readonly Findings[]>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   /** Ends the worker for good. */
@@ -213,6 +218,7 @@ export function createAnalysisClient(
       call((api, job) => api.doubts(job, inputs, settled), options),
     lookAlikes: (inputs, settled, doubtId, options) =>
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
+    figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),
     columns: (request) => call((api) => api.columns(request)),
     placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
     close() {

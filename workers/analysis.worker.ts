@@ -72,6 +72,7 @@ const api: AnalysisApi = {
   doubts: (id, inputs, settled) => inJob(id, (job) => pipeline.doubts(inputs, settled, job)),
   lookAlikes: (id, inputs, settled, doubtId) =>
     inJob(id, (job) => pipeline.lookAlikes(inputs, settled, doubtId, job)),
+  figuresOf: (id, states) => inJob(id, (job) => pipeline.figuresOf(states, job)),
   columns: (request) => reply(() => pipeline.columns(request)),
   placeBeat: (nearS) => reply(() => pipeline.placeBeat(nearS)),
   cancel: (id) => running.get(id)?.cancel(),

@@ -98,6 +98,14 @@ export class SignalStore {
     this.#source = source;
   }
 
+  /** A store that begins with what is kept here; what either is given later is not seen by the other. */
+  apart(): SignalStore {
+    const other = new SignalStore(this.#source);
+    for (const [key, kept] of this.#kept) other.#kept.set(key, kept);
+    for (const [key, drawn] of this.#drawn) other.#drawn.set(key, drawn);
+    return other;
+  }
+
   get(lead: Lead): LeadSignals | null {
     return this.#kept.get(leadKey(lead)) ?? null;
   }

@@ -5,6 +5,7 @@ import { placeBeat } from '../src/heart/place-beat';
 import { NO_BEATS } from '../src/recording/beat';
 import type { SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
+import type { Findings } from '../src/recording/findings';
 import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
@@ -87,6 +88,8 @@ export interface Pipeline {
     doubtId: string,
     job: Job,
   ): Promise<LookAlikes>;
+  /** The figures of other states of the study, which leave what was found for the review as it is. */
+  figuresOf(states: readonly ReviewInputs[], job: Job): Promise<readonly Findings[]>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -138,6 +141,7 @@ export function createPipeline(): Pipeline {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       return lookAlikes(from, settled, doubtId);
     },
+    figuresOf: (states, job) => figuresOf(study(), states, job),
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
@@ -335,6 +339,36 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
   const last = slow ? { ...from, slow } : from;
   study.last = { from: last, computed: slow ? await study.results.of(last, job) : first };
   return study.last;
+}
+
+/**
+ * The same study with room of its own for what is found: it begins with the signals and beats that are there, and what it
+ * adds is not seen by the other.
+ */
+const apartFrom = (study: Study): Study => ({
+  ...study,
+  signals: study.signals.apart(),
+  results: createResults(study.source.recording),
+  reference: remember(referenceKey, breathingReference),
+});
+
+async function figuresOf(
+  study: Study,
+  states: readonly ReviewInputs[],
+  job: Job,
+): Promise<readonly Findings[]> {
+  let apart: Study | null = null;
+  const found: Findings[] = [];
+  for (const inputs of states) {
+    job.progress('Computing the figures of other states', found.length / states.length);
+    const quiet: Job = { breathe: () => job.breathe(), progress: () => undefined };
+    const { computed } = await inLine(study, job, () => {
+      apart ??= apartFrom(study);
+      return reckon(apart, inputs, quiet);
+    });
+    found.push(computed.findings);
+  }
+  return found;
 }
 
 /**

@@ -3,8 +3,9 @@ import type { AnalysisClient } from '../../workers/analysis-client';
 import { type AnalysisStore, type SignalAccess, takeAnalysis } from '../review/analysis-store';
 import { asWork, beginWork, endWork } from '../review/idle';
 import { forgetDrawnGains, type ViewStore } from '../review/view-store';
-import type { Session } from '../session/document';
+import type { Session, SessionState } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
+import { keepFigures, markOf } from './figures-kept';
 import type { ShellStore } from './shell-store';
 
 /** Work shorter than this shows no progress line. */
@@ -12,8 +13,13 @@ const SHOW_PROGRESS_AFTER_MS = 200;
 
 /** What the worker is to compute from, as the session stands. */
 export function inputsOf(session: Session): ReviewInputs {
-  const { roles, phases, settings, spans, beats } = session.state;
-  return { edit: editNumber(session), roles, phases, settings, spans, beats };
+  return stateInputs(session.state, editNumber(session));
+}
+
+/** What the worker is to compute from, for any state; figures carry the number of the edit. */
+export function stateInputs(state: SessionState, edit: number): ReviewInputs {
+  const { roles, phases, settings, spans, beats } = state;
+  return { edit, roles, phases, settings, spans, beats };
 }
 
 /** True where both give the same figures: edits of words and protocol do not reach the worker. */
@@ -109,10 +115,10 @@ export function createAnalysisRunner({
       analysis.setState({ edit: inputs.edit });
       return;
     }
-    void run(inputs);
+    void run(inputs, markOf(open, inputs.edit));
   }
 
-  async function run(inputs: ReviewInputs): Promise<void> {
+  async function run(inputs: ReviewInputs, mark: object): Promise<void> {
     const anew = !sent || otherSignals(sent, inputs);
     const started = visit;
     sent = inputs;
@@ -128,6 +134,7 @@ export function createAnalysisRunner({
     if (visit !== started) return follow();
     if (reply.ok) {
       takeAnalysis(analysis, reply.value);
+      keepFigures(mark, reply.value.findings);
       const before = madeBy;
       madeBy = routesOf(inputs.settings);
       if (before !== null && before !== madeBy) forgetDrawnGains(view);

@@ -1,4 +1,7 @@
-import type { TextReading } from '../../workers/analysis-api';
+import type { ReviewInputs, TextReading } from '../../workers/analysis-api';
+import type { CallOptions } from '../../workers/analysis-client';
+import type { Reply } from '../recording/failure';
+import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
@@ -60,6 +63,11 @@ export interface StudyController {
   downloadExports(): void;
   sign(request: SignRequest): void;
   closeStudy(): void;
+  /** The figures of other states of the open study, in the order asked for; the review's own stay as they are. */
+  figuresOf(
+    states: readonly ReviewInputs[],
+    options: CallOptions,
+  ): Promise<Reply<readonly Findings[]>>;
   /** Stops the long work under way. */
   stop(): void;
 }

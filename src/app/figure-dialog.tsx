@@ -7,6 +7,7 @@ import { figureWords, stretchWords } from '../review/findings-words';
 import { useAnalysis, useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { EpochTable, SegmentTable } from './figure-data';
+import { FigureHistory } from './figure-history';
 
 interface FigureDialogProps {
   /** Key of the figure catalogue, and the name of the phase or part of it. */
@@ -44,6 +45,7 @@ export function FigureDialog({ figure, phase }: FigureDialogProps) {
       }
     >
       <FigureFacts definition={definition} part={part} settings={settings} />
+      <FigureHistory definition={definition} part={part.name} />
       {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}
       {definition.organ === 'heart' ? <SegmentTable part={part} onGo={go} /> : null}
     </Dialog>

@@ -6,6 +6,7 @@ import { type Failure, Refusal } from '../recording/failure';
 import type { Recording } from '../recording/recording';
 import { DEFAULT_SETTINGS } from '../recording/settings';
 import { type AnalysisStore, blankAnalysis, type SignalAccess } from '../review/analysis-store';
+import { asWork } from '../review/idle';
 import { lookAtStudy, type ViewStore } from '../review/view-store';
 import type { Edit, Session } from '../session/document';
 import { initialState, studyIdentity } from '../session/initial-state';
@@ -295,6 +296,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       blank();
       lastStudy.clear();
     },
+    figuresOf: (states, options) => asWork(client.figuresOf(states, options)),
     stop: () => analysis.getState().progress?.stop(),
   };
 }

@@ -104,7 +104,6 @@ function kindOf(change: Change): LogKind {
 
 /** What a line did, in words, and where. */
 export interface LogWords {
-  /** The act: "class beat at 0:12:31.2 as V", "undo of edit 4: move beat at 0:00:12.0". */
   readonly act: string;
   /** From what to what, a sentence each. */
   readonly changes: readonly string[];
@@ -112,14 +111,20 @@ export interface LogWords {
   readonly place: Interval | null;
 }
 
+/** The act of a line in words: "move beat at 0:00:12.0", "undo of edit 4: move beat at 0:00:12.0". */
+export const actWords = ({ line, edit, of }: LogEntry): string =>
+  line.act.kind === 'edit' ? edit.name : `${line.act.kind} of edit ${of}: ${edit.name}`;
+
 /** One line of the log in words; `labels` are those of the study's channels. */
 export function logWords(entry: LogEntry, labels: readonly string[]): LogWords {
-  const { line, edit, of } = entry;
   const differences = entry.changes.flatMap((change) =>
     changeDifferences(change, entry.rateHz, labels),
   );
-  const act = line.act.kind === 'edit' ? edit.name : `${line.act.kind} of edit ${of}: ${edit.name}`;
-  return { act, changes: differences.map(differenceWords), place: placeOfAll(differences) };
+  return {
+    act: actWords(entry),
+    changes: differences.map(differenceWords),
+    place: placeOfAll(differences),
+  };
 }
 
 function changeDifferences(

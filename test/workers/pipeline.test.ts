@@ -1,5 +1,5 @@
 import { openAsBlob, readFileSync } from 'node:fs';
-import { beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { BEAT_CLASSES, type BeatList, changeBeats } from '../../src/recording/beat';
 import { Refusal } from '../../src/recording/failure';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
@@ -129,6 +129,36 @@ describe('the way of a real recording through the steps', () => {
     await pipeline.analyse(inputs({ settings, edit: 6 }), job);
     const back = await pipeline.analyse(inputs({ edit: 5 }), job);
     expect(back.findings).toEqual(first.findings);
+  });
+
+  it('other states give the figures they would give in its place, and leave the review as it is', async () => {
+    const reads = vi.spyOn(Blob.prototype, 'slice');
+    const settings = {
+      ...DEFAULT_SETTINGS,
+      slowRoute: 'fractional',
+      heartRoute: 'fractional',
+    } as const;
+    const half = proposal.beats.ticks.length >> 1;
+    const beats = {
+      ticks: proposal.beats.ticks.slice(0, half),
+      classes: proposal.beats.classes.slice(0, half),
+      origins: proposal.beats.origins.slice(0, half),
+    };
+    const others = [inputs({ settings, edit: 11 }), inputs({ beats, edit: 12 })];
+    const wanted = [];
+    for (const one of others) wanted.push((await pipeline.analyse(one, job)).findings);
+    const own = await pipeline.analyse(inputs({ edit: 13 }), job);
+    const { roles } = proposal;
+    const drawn = pipeline.slowWave(roles.slow[0]);
+    expect(await pipeline.figuresOf(others, job)).toEqual(wanted);
+    expect(wanted[0]).not.toEqual(wanted[1]);
+    expect(pipeline.slowWave(roles.slow[0])).toBe(drawn);
+    expect(reads).toHaveBeenCalled();
+    reads.mockClear();
+    const after = await pipeline.analyse(inputs({ edit: 14 }), job);
+    expect(after).toMatchObject({ separation: null, stomach: null, heart: null });
+    expect(after.findings).toEqual({ ...own.findings, edit: 14 });
+    expect(reads).not.toHaveBeenCalled();
   });
 
   it('a beat put by hand near a QRS stands on it; one put where nothing is, is placed', async () => {
