@@ -65,7 +65,7 @@ export interface DoubtList {
   readonly open: readonly Doubt[];
 }
 
-/** A doubted beat with its second of heartbeat. */
+/** A doubted beat with its second of heartbeat; the doubt comes without its effect. */
 export interface LookAlike {
   readonly doubt: Doubt;
   /** Correlation with the beat asked for at their best alignment, -1 to 1; 1 for that beat itself. */

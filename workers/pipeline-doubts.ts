@@ -1,11 +1,15 @@
-import { beatDoubts } from '../src/heart/beat-doubts';
+import { beatDoubtsInSteps } from '../src/heart/beat-doubts';
+import { type BeatLook, createBeatLooks } from '../src/heart/beat-looks';
+import type { Detection } from '../src/heart/detect';
+import type { BeatDoubtsInput } from '../src/heart/doubt-view';
 import { alikeTo, averageRow, LOOK_BEFORE_S } from '../src/heart/look-alikes';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Recording } from '../src/recording/recording';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import type { DoubtList, LookAlikes } from './analysis-api';
-import type { Job } from './job';
+import { inTurns, type Job } from './job';
+import { withEffects } from './pipeline-doubt-effects';
 import type { Computed, ResultInputs } from './pipeline-results';
 
 /** Everything the doubts of a review are read from. */
@@ -14,16 +18,22 @@ export interface DoubtInputs extends ResultInputs {
   readonly computed: Computed;
 }
 
+/** How beats look, by the detection they are looked at beside; each beat is looked at once. */
+const looks = new WeakMap<Detection, (tick: number) => BeatLook>();
+
+function looksOf(detection: Detection, input: BeatDoubtsInput): (tick: number) => BeatLook {
+  const known = looks.get(detection);
+  if (known) return known;
+  const made = createBeatLooks({ ...input, averages: detection.averages });
+  looks.set(detection, made);
+  return made;
+}
+
 /** All doubts in ascending time without their effects, settled ones too. */
-export function plainDoubts({
-  inputs,
-  heart,
-  heartRateHz,
-  blocked,
-  detection,
-}: DoubtInputs): readonly Doubt[] {
+export async function plainDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[]> {
+  const { inputs, heart, heartRateHz, blocked, detection } = from;
   if (!heart || !detection) return [];
-  return beatDoubts({
+  const input: BeatDoubtsInput = {
     beats: inputs.beats,
     rateHz: heartRateHz,
     heartbeat: heart.heartbeat,
@@ -31,13 +41,18 @@ export function plainDoubts({
     ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
     blocked,
     detection,
-  });
+  };
+  return inTurns(beatDoubtsInSteps(input, looksOf(detection, input)), job, 'Looking for doubts');
 }
 
-const openOf = (from: DoubtInputs, settled: readonly SettledDoubt[]): readonly Doubt[] => {
+async function openOf(
+  from: DoubtInputs,
+  settled: readonly SettledDoubt[],
+  job: Job,
+): Promise<readonly Doubt[]> {
   const done = new Set(settled.map(({ id }) => id));
-  return plainDoubts(from).filter(({ id }) => !done.has(id));
-};
+  return (await plainDoubts(from, job)).filter(({ id }) => !done.has(id));
+}
 
 /** The open doubts with what their mends would do, in the order of it. */
 export async function doubtList(
@@ -45,17 +60,20 @@ export async function doubtList(
   settled: readonly SettledDoubt[],
   job: Job,
 ): Promise<DoubtList> {
-  await job.breathe();
-  return { edit: from.inputs.edit, open: openOf(from, settled) };
+  return {
+    edit: from.inputs.edit,
+    open: await withEffects(from, await openOf(from, settled, job), job),
+  };
 }
 
 /** What looks like the beat of an open doubt. Throws Refusal where no such doubt stands at a beat. */
-export function lookAlikes(
+export async function lookAlikes(
   from: DoubtInputs,
   settled: readonly SettledDoubt[],
   doubtId: string,
-): LookAlikes {
-  const open = openOf(from, settled);
+  job: Job,
+): Promise<LookAlikes> {
+  const open = await openOf(from, settled, job);
   const asked = open.find(({ id }) => id === doubtId);
   const { heart, detection } = from;
   const found =

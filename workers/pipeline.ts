@@ -139,7 +139,7 @@ export function createPipeline(): Pipeline {
     },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
-      return lookAlikes(from, settled, doubtId);
+      return lookAlikes(from, settled, doubtId, job);
     },
     figuresOf: (states, job) => figuresOf(study(), states, job),
     columns: (request) => columnsOf(study().source, study().signals, request),

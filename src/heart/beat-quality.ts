@@ -81,7 +81,8 @@ function heightAt({ samples, usable, rateHz }: HeartSignal, time: number): numbe
   return row[before] - baseline(row, before, rateHz);
 }
 
-function rmsAboutLine(row: Float64Array): number {
+/** Standard deviation of a row about its own line. */
+export function rmsAboutLine(row: Float64Array): number {
   const half = (row.length - 1) / 2;
   let mean = 0;
   let slope = 0;

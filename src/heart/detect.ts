@@ -13,6 +13,7 @@ import { rhythmOf } from './rhythm-path';
 import { rhythmFromBeats } from './rhythm-track';
 import type { Candidate } from './shape-pass';
 import { averagesOf, timesOf } from './timed-beats';
+import { NONE_UNSURE, type UnsurePlaces, unsurePlaces } from './unsure-places';
 import { readFilled, type Samples, usableRanges } from './usable-signal';
 
 export interface DetectionInput {
@@ -45,6 +46,8 @@ export interface Detection {
   readonly legible: readonly boolean[];
   /** Ticks of the beats that little but the rhythm speaks for, ascending: a person should look. */
   readonly doubtful: Float64Array;
+  /** Places, taken for beats or not, where the detector may be wrong by its own odds. */
+  readonly unsure: UnsurePlaces;
   /** Sign of the dominant extreme of the usual beat. */
   readonly sign: 1 | -1;
   /** One a shape, the most frequent first. */
@@ -120,6 +123,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
       times.filter((_, i) => found.beats[i].score < SURE_EVIDENCE),
       (time) => Math.round(time * ticksPerSample),
     ).sort(),
+    unsure: unsurePlaces({ places, decided }, { beats: found.beats, times }, timed, ticksPerSample),
     sign,
     averages: timed.map((average) => shown(average, found.beats, classes, rateHz)),
     noiseUv: measured?.noiseUv ?? Number.NaN,
@@ -134,6 +138,7 @@ function nothing(note: string): Detection {
     beats: { ticks: new Float64Array(0), classes: new Uint8Array(0), origins: new Uint8Array(0) },
     legible: [],
     doubtful: new Float64Array(0),
+    unsure: NONE_UNSURE,
     sign: 1,
     averages: [],
     noiseUv: Number.NaN,

@@ -1,19 +1,11 @@
 import { exp, log } from '../numeric/elementary';
-import { runningMedian } from '../numeric/running-quantile';
-import { medianInPlace } from '../numeric/statistics';
 import { BEAT_CLASSES, type BeatList } from '../recording/beat';
 import type { HeartSignal } from './energy-pass';
+import { type Foretelling, foretellings } from './rhythm-foretold';
 import type { SampleRange } from './usable-signal';
 
-/** Intervals to each side that foretell one, and intervals that tell how well they do so. */
-const NEIGHBOURS = 3;
-const LEARNED_FROM = 41;
 /** Fewer intervals than this tell no spread. */
 const FEWEST = 16;
-/** Normal standard deviation over the median absolute deviation. */
-const SD_PER_MAD = 1.4826;
-/** A rhythm is never believed to keep time better than this (logarithm of RR). */
-const LEAST_SPREAD = 0.03;
 /** Off by more spreads than the first an interval is out of place, if mended it is off by less than the second. */
 const OUT = 3.5;
 const MENDED = 3;
@@ -23,44 +15,6 @@ const EARLY = 6;
 const EARLY_COUNTS = 0.1;
 /** As many beats may be missing from one interval: longer ones than 2 s are no NN anyway. */
 const MOST_MISSED = 3;
-
-/** One way to foretell an interval from those about it, and the spread of how far off it is. */
-interface Foretelling {
-  /** Logarithm of the interval expected in place of intervals first to last. NaN where too few are about. */
-  readonly expected: (first: number, last: number) => number;
-  readonly spread: Float64Array;
-}
-
-type Expected = Foretelling['expected'];
-
-/** The middle of three before and three after: whatever breathing does, a single odd neighbour has no say. */
-function byMiddle(logRr: Float64Array): Expected {
-  const few = new Float64Array(2 * NEIGHBOURS);
-  return (first, last) => {
-    let count = 0;
-    for (let k = 1; k <= NEIGHBOURS; k += 1)
-      for (const i of [first - k, last + k]) {
-        if (!(i >= 0 && i < logRr.length) || Number.isNaN(logRr[i])) continue;
-        few[count] = logRr[i];
-        count += 1;
-      }
-    return count > NEIGHBOURS ? medianInPlace(few, count) : Number.NaN;
-  };
-}
-
-/** The mean of the one before and the one after: follows a strong respiratory arrhythmia. */
-const byNearest =
-  (logRr: Float64Array): Expected =>
-  (first, last) =>
-    first > 0 && last < logRr.length - 1 ? (logRr[first - 1] + logRr[last + 1]) / 2 : Number.NaN;
-
-function foretelling(logRr: Float64Array, expected: Expected): Foretelling {
-  const off = logRr.map((value, i) => Math.abs(value - expected(i, i)));
-  const spread = runningMedian(off, LEARNED_FROM).map((value) =>
-    Number.isNaN(value) ? Number.NaN : Math.max(LEAST_SPREAD, SD_PER_MAD * value),
-  );
-  return { expected, spread };
-}
 
 /** Spreads by which interval i is about twice or three times what is expected: beats are missing in it. 0 where it is not. */
 function missing(i: number, logRr: Float64Array, { expected, spread }: Foretelling): number {
@@ -131,7 +85,7 @@ export function beatsOutOfPlace(
   const logRr = Float64Array.from({ length: timesS.length - 1 }, (_, i) =>
     broken[i] === 1 ? Number.NaN : log(timesS[i + 1] - timesS[i]),
   );
-  const ways = [byMiddle(logRr), byNearest(logRr)].map((way) => foretelling(logRr, way));
+  const ways = foretellings(logRr);
   const misfits: Misfit[] = [];
   for (let beat = 1; beat < timesS.length; beat += 1) {
     const misfit = judged[beat] === 1 ? misfitOf(beat, judged, logRr, ways) : null;

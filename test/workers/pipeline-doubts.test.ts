@@ -56,7 +56,7 @@ describe('the doubts of a real recording', () => {
     const { open } = await pipeline.doubts(without, [], job);
     const asked = open.find(({ tick }) => tick === beatAt(proposal.beats, 61).tick);
     const looks = await pipeline.lookAlikes(without, [], asked?.id ?? '', job);
-    expect(looks.asked.doubt).toEqual(asked);
+    expect(looks.asked.doubt.id).toBe(asked?.id);
     expect(looks.asked.heartbeatUv).toHaveLength(Math.round(looks.rateHz));
     const likeness = looks.others.map((one) => one.likeness);
     expect(likeness).toEqual([...likeness].sort((a, b) => b - a));
