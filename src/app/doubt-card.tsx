@@ -41,8 +41,8 @@ export function DoubtCard({ parts, doubt, at, of }: DoubtCardProps) {
         <Way
           id="mend-doubt"
           parts={parts}
-          words={mendWords(doubt.mend, rateHz ?? 1)}
-          figure={effect ? `${effect.before} → ${effect.after}` : ''}
+          words={mendWords(doubt, rateHz ?? 1)}
+          figure={effect ? changeWords(effect) : ''}
         />
       ) : null}
       <Way
@@ -83,10 +83,15 @@ export function DoubtCard({ parts, doubt, at, of }: DoubtCardProps) {
   );
 }
 
+/** Before and after beside each other; once where they are the same as far as is shown. */
+const changeWords = ({ before, after, same }: EffectWords): string =>
+  same ? before : `${before} → ${after}`;
+
 /** Which figure is moved most, and why one side of it is withheld. */
 function EffectHead({ effect }: { readonly effect: EffectWords | null }) {
   if (!effect) return <p className="doubt-figure quiet small">Moves no figure that is shown.</p>;
-  const { name, unit, reason } = effect;
+  const { name, unit, same } = effect;
+  const reason = same ? 'too small a change to show' : effect.reason;
   return (
     <p className="doubt-figure quiet small">
       <span>{unit === '' ? name : `${name}, ${unit}`}</span>

@@ -65,7 +65,7 @@ function headWords(
   const most = effect && effectWords(effect);
   const all = open.length + settled.length;
   const count = settled.length > 0 ? `${open.length} open of ${all}` : `${open.length} open`;
-  return most ? `${count}; the first moves ${most.name} most` : count;
+  return most && !most.same ? `${count}; the first moves ${most.name} most` : count;
 }
 
 interface OutcomeProps {
@@ -185,7 +185,7 @@ function DoubtRow({ doubt, place, onGo }: DoubtRowProps) {
     <button type="button" className="doubt-row" title={doubt.why} onClick={onGo}>
       <span className="go">{place}</span>
       <span>{KIND_WORDS[doubt.kind]}</span>
-      {words ? (
+      {words && !words.same ? (
         <span className="quiet small">
           {words.name} {words.before} → {words.after}
         </span>

@@ -72,6 +72,8 @@ export function createStudyController(parts: ControllerParts): StudyController &
     confirmed: () => keeping.confirmed(),
   });
   let opening: Opening | null = null;
+  /** The recording of the open study. */
+  let openFile: File | null = null;
   let awaited: Session | null = null;
   /** The attempt to open made last; an earlier one that ends later is let go. */
   let attempt = 0;
@@ -160,13 +162,19 @@ export function createStudyController(parts: ControllerParts): StudyController &
     const begun = kept ?? (await newSession(recording, quickKey, code));
     if (!begun || !here()) return;
     awaited = null;
+    await beginWith(begun, file);
+  }
+
+  /** The session is the one worked on from here; of which file it is, is sure once that has been read to its end. */
+  async function beginWith(begun: Session, file: File | null): Promise<void> {
+    openFile = file;
     session.getState().begin(begun);
     await keeping.begin(begun);
     const closeOther = (failure: Failure) => {
       blank();
       fail(failure);
     };
-    onceFigures(() => keeping.confirm(file, closeOther));
+    if (file) onceFigures(() => keeping.confirm(file, closeOther));
   }
 
   /** Reading the whole file for its hash waits for the first figures, since both want the processor. */
@@ -245,8 +253,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       awaited = read;
       const open = session.getState().session;
       if (open?.state.study.quickKey === quickKey) {
-        session.getState().begin(read);
-        await keeping.begin(read);
+        await beginWith(read, openFile);
       } else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
     },
     continueKept,

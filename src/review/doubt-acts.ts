@@ -30,7 +30,7 @@ export function openNow({
 export function doubtSpoken(doubt: Doubt, place: string, rateHz: number): string {
   const { kind, why, mend, effect } = doubt;
   const line = effect === null ? '' : effectLine(effect);
-  const proposal = mend === null ? '' : ` ${mendWords(mend, rateHz)}${line ? `: ${line}` : ''}.`;
+  const proposal = mend === null ? '' : ` ${mendWords(doubt, rateHz)}${line ? `: ${line}` : ''}.`;
   return `${place}, ${KIND_WORDS[kind]} ${why}${proposal}`;
 }
 

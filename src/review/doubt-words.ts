@@ -1,6 +1,5 @@
 import type { Doubt, DoubtEffect, DoubtKind, Mend } from '../recording/doubt';
-import type { FigureValue } from '../recording/figure';
-import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
+import { FIGURES } from '../recording/figure-catalogue';
 import { figureWords } from '../recording/figure-words';
 import type { SpanTarget } from '../recording/span';
 import { ticksToSeconds } from '../units/ticks';
@@ -32,12 +31,14 @@ export const placeWords = ({ fromS, toS, tick }: Doubt, rateHz: number | null): 
     ? formatClock(ticksToSeconds(tick, rateHz), 1)
     : `${formatClock(fromS)}–${formatClock(toS)}`;
 
-/** What a mend does, as a sentence without its stop: "Insert a beat at 0:12:31.204". */
-export function mendWords(mend: Mend, rateHz: number): string {
-  const at = (tick: number) => formatClock(ticksToSeconds(tick, rateHz), 3);
-  switch (mend.kind) {
+/** What the mend of a doubt does, as a sentence without its stop: "Insert a beat at 0:12:31.204"; '' where it has none. */
+export function mendWords({ mend, tick }: Doubt, rateHz: number): string {
+  const at = (one: number) => formatClock(ticksToSeconds(one, rateHz), 3);
+  switch (mend?.kind) {
+    case undefined:
+      return '';
     case 'beats':
-      return beatsWords(mend, at);
+      return beatsWords(mend, tick, at);
     case 'exclude': {
       const { fromS, toS, target } = mend.span;
       return `Exclude ${formatClock(fromS)}–${formatClock(toS)} for ${TARGET_WORDS[target]}`;
@@ -54,20 +55,22 @@ const classesOnly = ({ removed, added }: BeatsMend): boolean =>
   removed.length === added.length &&
   removed.every(({ tick }) => added.some((one) => one.tick === tick));
 
-function beatsWords(mend: BeatsMend, at: (tick: number) => string): string {
+/** The beat that a doubt stands at needs no time beside the doubt's own. */
+function beatsWords(
+  mend: BeatsMend,
+  standsAt: number | null,
+  at: (tick: number) => string,
+): string {
   const { removed, added } = mend;
   const [first] = added;
   const places = (beats: BeatsMend['added']) => listed(beats.map(({ tick }) => at(tick)));
-  const beats = (count: number) => (count === 1 ? 'a beat' : `${count} beats`);
-  if (classesOnly(mend)) {
-    const what = removed.length === 1 ? 'the beat' : `${removed.length} beats`;
-    return `Class ${what} at ${places(removed)} ${first?.beatClass ?? ''}`;
-  }
-  if (removed.length === 0) return `Insert ${beats(added.length)} at ${places(added)}`;
-  if (added.length === 0) {
-    const what = removed.length === 1 ? 'the beat' : `${removed.length} beats`;
-    return `Remove ${what} at ${places(removed)}`;
-  }
+  const some = removed.length === 1 ? 'the beat' : `${removed.length} beats`;
+  const own = removed.length === 1 && removed[0].tick === standsAt;
+  const where = own ? some : `${some} at ${places(removed)}`;
+  if (classesOnly(mend)) return `Class ${where} ${first?.beatClass ?? ''}`;
+  if (added.length === 0) return `Remove ${where}`;
+  if (removed.length === 0)
+    return `Insert ${added.length === 1 ? 'a beat' : `${added.length} beats`} at ${places(added)}`;
   return `Move the beat from ${places(removed)} to ${places(added)}`;
 }
 
@@ -91,6 +94,8 @@ export interface EffectWords {
   readonly unit: string;
   readonly before: string;
   readonly after: string;
+  /** True where the change is too small for the figure's decimals. */
+  readonly same: boolean;
   /** Why a side is withheld, '' where neither is. */
   readonly reason: string;
 }
@@ -99,25 +104,25 @@ export interface EffectWords {
 export function effectWords({ figure, phase, before, after }: DoubtEffect): EffectWords | null {
   const definition = FIGURES.find(({ key }) => key === figure);
   if (!definition) return null;
+  const sides = [before, after].map((one) => figureWords(one, definition).large);
   const reasons = [before, after].flatMap((one) => (one.kind === 'withheld' ? [one.reason] : []));
   return {
     name: `${definition.label}, ${phase}`,
     unit: definition.unit,
-    before: large(before, definition),
-    after: large(after, definition),
+    before: sides[0],
+    after: sides[1],
+    same: reasons.length === 0 && sides[0] === sides[1],
     reason: reasons[0] ?? '',
   };
 }
-
-const large = (value: FigureValue, definition: FigureDefinition): string =>
-  figureWords(value, definition).large;
 
 /** An effect in one line, as it is read out: "RMSSD, fed 38.2 to 31.4 ms". */
 export function effectLine(effect: DoubtEffect): string {
   const words = effectWords(effect);
   if (!words) return '';
-  const { name, before, after } = words;
+  const { name, before, after, same } = words;
   const unit = words.unit === '' ? '' : ` ${words.unit}`;
+  if (same) return `${name} stays ${before}${unit}`;
   if (after === '—') return `${name} ${before === '—' ? 'withheld' : before + unit} to withheld`;
   return `${name} ${before === '—' ? 'withheld' : before} to ${after}${unit}`;
 }

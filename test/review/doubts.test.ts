@@ -117,7 +117,7 @@ describe('settling doubts one after another', () => {
   it('is read out: where, why, what the mend would do to which figure', () => {
     at.acts.next();
     expect(at.said.at(-1)).toBe(
-      'Doubt 1 of 3, 0:01:40.0, extra beat? It halves an interval. Remove the beat at 0:01:40.000: RMSSD, fed 38.2 to 31.4 ms.',
+      'Doubt 1 of 3, 0:01:40.0, extra beat? It halves an interval. Remove the beat: RMSSD, fed 38.2 to 31.4 ms.',
     );
   });
 
@@ -220,16 +220,18 @@ describe('a mend fits the study', () => {
 
 describe('words', () => {
   it('name what a mend does', () => {
-    expect(mendWords(insertAt(751.204), RATE_HZ)).toBe('Insert a beat at 0:12:31.204');
-    expect(mendWords(removeAt(60), RATE_HZ)).toBe('Remove the beat at 0:01:00.000');
-    expect(mendWords(classV(60), RATE_HZ)).toBe('Class the beat at 0:01:00.000 V');
+    expect(mendWords(doubt(752, insertAt(751.204)), RATE_HZ)).toBe('Insert a beat at 0:12:31.204');
+    expect(mendWords(doubt(60, removeAt(60)), RATE_HZ)).toBe('Remove the beat');
+    expect(mendWords(doubt(61, removeAt(60)), RATE_HZ)).toBe('Remove the beat at 0:01:00.000');
+    expect(mendWords(doubt(60, classV(60)), RATE_HZ)).toBe('Class the beat V');
     const both: Mend = {
       kind: 'beats',
       words: 'insert beats',
       removed: [],
       added: [beatN(60), beatN(61)],
     };
-    expect(mendWords(both, RATE_HZ)).toBe('Insert 2 beats at 0:01:00.000 and 0:01:01.000');
+    const words = mendWords(doubt(62, both), RATE_HZ);
+    expect(words).toBe('Insert 2 beats at 0:01:00.000 and 0:01:01.000');
     expect([insertAt(1), removeAt(1), classV(1)].map((one) => tabWords(doubt(1, one)))).toEqual([
       'insert?',
       'remove?',
@@ -246,6 +248,7 @@ describe('words', () => {
       weight: Number.POSITIVE_INFINITY,
     };
     expect(effectLine(effect)).toBe('HF, fasting 512 ms² to withheld');
+    expect(effectLine({ ...effect, after: numberFigure(512.3) })).toBe('HF, fasting stays 512 ms²');
     expect(effectLine({ ...effect, before: effect.after, after: effect.before })).toBe(
       'HF, fasting withheld to 512 ms²',
     );
