@@ -1,8 +1,10 @@
 import { expect, type Locator, type Page, test } from 'playwright/test';
+import { FIGURES } from '../src/recording/figure-catalogue';
 import {
   allFigures,
   editNumber,
   expectNoTroubles,
+  figure,
   figureNumber,
   freshPage,
   goTo,
@@ -193,6 +195,85 @@ test.describe('by mouse', () => {
   });
 });
 
+test.describe('many at once', () => {
+  test.beforeEach(async () => {
+    await page.mouse.move(2, 2);
+    await goTo(page, '0:31');
+    await press(page, 'Escape');
+  });
+  const many = () => page.getByRole('group', { name: /^\d+ beats from / });
+  const bandAt = async (yShare: number, hold: boolean) => {
+    const { x, y, width, height } = await stageBox(page, 'Seconds');
+    if (hold) await page.keyboard.down('Shift');
+    await drag(
+      page,
+      [x + 0.32 * width, y + yShare * height],
+      [x + 0.71 * width, y + yShare * height],
+    );
+    if (hold) await page.keyboard.up('Shift');
+    await settled(page);
+  };
+
+  test('a drag with Shift picks out the beats between, anywhere in Seconds', async () => {
+    await bandAt(0.7, true);
+    await expect(many()).toBeVisible();
+    const chosen = seconds().locator('button.pin[aria-pressed="true"]');
+    const { x, width } = await stageBox(page, 'Seconds');
+    const places = await chosen.evaluateAll((all) =>
+      all.map((one) => one.getBoundingClientRect().left + 12),
+    );
+    expect(places.length).toBeGreaterThan(2);
+    expect(Math.min(...places)).toBeGreaterThanOrEqual(x + 0.32 * width - 1);
+    expect(Math.max(...places)).toBeLessThanOrEqual(x + 0.71 * width + 1);
+    await expectOneStep(/^class \d+ beats 0:00:.* as Q$/, () =>
+      many()
+        .getByRole('button', { name: /^Class Q/ })
+        .click(),
+    );
+  });
+
+  test('keys grow the selection and delete it in one step', async () => {
+    await press(page, '.');
+    for (let step = 0; step < 3; step += 1) await press(page, '>');
+    await press(page, '<');
+    await expect(page.getByRole('group', { name: /^3 beats from / })).toBeVisible();
+    await expectSeen(/^delete 3 beats 0:00:/, () => press(page, 'Delete'));
+  });
+
+  test('typed times pick out all beats between them', async () => {
+    const beats = await beatsNow();
+    const between = beats.filter(({ time_s }) => Number(time_s) >= 60 && Number(time_s) <= 70);
+    await press(page, 'Shift+V');
+    const dialog = page.getByRole('dialog', { name: 'Select beats from one time to another' });
+    await dialog.getByLabel('From').fill('2:00');
+    await dialog.getByLabel('To').fill('1:00');
+    await page.keyboard.press('Enter');
+    await expect(dialog.getByText('The end must come after the beginning.')).toBeVisible();
+    await dialog.getByLabel('From').fill('1:00');
+    await dialog.getByLabel('To').fill('70');
+    await expect(dialog.getByRole('status')).toContainText(`${between.length} beats from`);
+    await page.keyboard.press('Enter');
+    await expect(dialog).toBeHidden();
+    await expectOneStep(new RegExp(`^class ${between.length} beats .* as V$`), () =>
+      press(page, 'v'),
+    );
+  });
+
+  test('the time of one beat is typed', async () => {
+    const { pin, atS } = await steadyBeat();
+    await pin.click();
+    const time = beatBar().getByLabel('Beat at');
+    await time.fill(`0:00:${(atS + 0.02).toFixed(3)}`);
+    await time.press('Enter');
+    await settled(page);
+    expect(await undoName(page)).toMatch(/^move beat at 0:00:/);
+    const moved = (await beatsNow()).filter(({ origin }) => origin === 'moved');
+    expect(Math.abs(Number(moved[0].time_s) - atS - 0.02)).toBeLessThan(0.002);
+    await page.keyboard.press('Escape');
+    await press(page, 'Control+z');
+  });
+});
+
 test.describe('by keyboard', () => {
   let beat: SteadyBeat;
   test.beforeEach(async () => {
@@ -241,6 +322,22 @@ test.describe('by keyboard', () => {
     await expectSeen(/^add beat at 0:00:/, () => press(page, 'a'));
     await press(page, 'Control+z');
   });
+});
+
+test('an edit is told with what it did to the figures, and undo too', async () => {
+  await goTo(page, '0:31');
+  await press(page, '.');
+  await press(page, 'Delete');
+  const status = page.locator('.foot-status');
+  const told = /^Done: delete beat at 0:00:3\d.*; (.+) fasting (.+) to ([\d.−]+)/;
+  await expect(status).toHaveText(told);
+  const [, label, before, after] = told.exec((await status.textContent()) ?? '') ?? [];
+  const found = FIGURES.find((one) => one.label === label.replace(/,$/, ''));
+  if (!found) throw new Error(`no figure ${label}`);
+  expect(await figure(page, found.key)).toBe(after.replace('−', '-'));
+  await press(page, 'Control+z');
+  await expect(status).toHaveText(/^Undone: delete beat .* fasting .+ to /);
+  expect(await figure(page, found.key)).toBe(before.replace('−', '-'));
 });
 
 test('undo and redo go through all steps, each by its name', async () => {

@@ -139,7 +139,7 @@ test('a doubt in front says where, why, and what keeping and mending would make 
   const atS = (await placeInFront(page)) ?? Number.NaN;
   expect(atS).toBeGreaterThan(fromS);
   expect(atS).toBeLessThan(toS);
-  await expect(page.locator('.foot-status')).toHaveText(/^Doubt 1 of \d+, .*missed beat\?/);
+  await expect(page.locator('[data-part="spoken"]')).toHaveText(/^Doubt 1 of \d+, .*missed beat\?/);
 });
 
 test('a held key settles one doubt and no more', async () => {
@@ -156,7 +156,7 @@ test('undo opens a mended doubt again, in front, and the outcome has a button fo
   const place = await placeInFront(page);
   const open = await openCount();
   await press(page, 'm');
-  await expect(doubtsPane(page).getByRole('status')).toHaveText(
+  await expect(doubtsPane(page).getByRole('status').first()).toHaveText(
     /^Mended: insert beat, .* to \d+ ms²$/,
   );
   expect(await undoName(page)).toBe('insert beat');
@@ -165,7 +165,7 @@ test('undo opens a mended doubt again, in front, and the outcome has a button fo
   await settled(page);
   expect(await placeInFront(page)).toBe(place);
   expect(await openCount()).toBe(open);
-  await expect(doubtsPane(page).getByRole('status')).toBeEmpty();
+  await expect(doubtsPane(page).getByRole('status').first()).toBeEmpty();
 });
 
 test('no doubt is settled while the panes look elsewhere: the key goes there first', async () => {

@@ -1,4 +1,4 @@
-import { expect, type Page, test } from 'playwright/test';
+import { expect, type Locator, type Page, test } from 'playwright/test';
 import { COMMANDS } from '../src/app/commands';
 import { keyWords } from '../src/app/key-names';
 import {
@@ -23,10 +23,16 @@ import { windowOf } from './support-drawing';
 import { downloaded } from './support-results';
 
 let page: Page;
+/** The keys of each command as the keys page shows them. */
+let shown: ReadonlyMap<string, readonly string[]>;
 test.beforeAll(async ({ browser }) => {
   page = await freshPage(browser);
   await openStudy(page);
   await reviewAs(page);
+  await press(page, 'F1');
+  await expect(dialogOf(page, 'Keys')).toBeVisible();
+  shown = await keysOnPage();
+  await press(page, 'Escape');
 });
 test.afterAll(() => page.context().close());
 test.afterEach(() => expectNoTroubles(page));
@@ -57,6 +63,7 @@ const SIGHTS = {
   },
   bar: async () => words(await bar(page).textContent()),
   theme: async () => words(await page.locator('html').getAttribute('data-theme')),
+  doubt: async () => words(await page.locator('[data-part="spoken"]').textContent()),
   focus: () => page.evaluate(() => document.activeElement?.id ?? ''),
   view: () => page.evaluate(() => window.location.hash),
 } satisfies Record<string, () => Promise<string>>;
@@ -108,6 +115,9 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'gain-same': ['r', 'status', /^All rows of the pane: \d+ uV/],
   'next-beat': ['', 'chosen', /^beat [NSVFQ] at 0:00:3\d/],
   'previous-beat': ['', 'chosen', /^beat [NSVFQ] at 0:00:[23]\d/],
+  'extend-later': ['.', 'chosen', /^beat .*; beat [^;]*$/],
+  'extend-earlier': ['.', 'chosen', /^beat .*; beat [^;]*$/],
+  'beats-between': ['', 'dialog', /^Select beats from one time to another$/],
   'beats-in-view': ['', 'chosen', /^(beat .*; ){10,}/],
   'clear-selection': ['.', 'chosen', /^$/],
   'add-beat': ['', 'undo', /^(add|place) beat at 0:00:/],
@@ -125,8 +135,8 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'exclude-seconds': ['', 'span', /0:00:2\d.* to 0:00:3\d.* both$/],
   'next-span': ['Control+e Escape Home', 'span', /^Spoiled span 0:00:2\d/],
   'previous-span': ['Control+e Escape End', 'span', /^Spoiled span 0:00:2\d/],
-  'next-doubt': ['', 'status', /^Doubt \d+ of \d+, /],
-  'previous-doubt': ['', 'status', /^Doubt \d+ of \d+, /],
+  'next-doubt': ['', 'doubt', /^Doubt \d+ of \d+, /],
+  'previous-doubt': ['', 'doubt', /^Doubt \d+ of \d+, /],
   'keep-doubt': ['d', 'undo', /^keep what is doubted$/],
   'look-alikes': ['d', 'dialog', /^Look-alikes$/],
   'span-for-stomach': ['Control+e', 'span', / stomach$/],
@@ -151,12 +161,41 @@ const ELSEWHERE = [
   'stop',
 ];
 
-/** A key of the table as Playwright presses it. */
-const pressed = (name: string): string => {
-  const plain = name.replace('Ctrl+', 'Control+');
+const keyRow = (id: string): Locator =>
+  dialogOf(page, 'Keys').locator(`.keys-list > [data-command="${id}"]`);
+
+async function keysOnPage(): Promise<ReadonlyMap<string, readonly string[]>> {
+  const rows = await dialogOf(page, 'Keys')
+    .locator('.keys-list > [data-command]')
+    .evaluateAll((all) =>
+      all.map((row) => ({
+        id: row.getAttribute('data-command') ?? '',
+        keys: [...row.querySelectorAll('kbd')].map((key) => key.textContent ?? ''),
+      })),
+    );
+  return new Map(rows.map(({ id, keys }) => [id, keys]));
+}
+
+/** A key as a page shows it, as Playwright presses it. */
+const pressed = (shownKey: string): string => {
+  const plain = shownKey
+    .split(' + ')
+    .map((part) => KEYS_SHOWN[part] ?? part)
+    .join('+');
   return /^[A-Z]$/.test(plain) || /^Control\+[A-Z]$/.test(plain)
     ? plain.replace(/[A-Z]$/, (letter) => letter.toLowerCase())
     : plain;
+};
+
+const KEYS_SHOWN: Readonly<Record<string, string>> = {
+  Ctrl: 'Control',
+  '←': 'ArrowLeft',
+  '→': 'ArrowRight',
+  '↑': 'ArrowUp',
+  '↓': 'ArrowDown',
+  'Page up': 'PageUp',
+  'Page down': 'PageDown',
+  Esc: 'Escape',
 };
 
 const PLACE = /^Seconds, 10 s from 0:00:26 to 0:00:36\./;
@@ -182,13 +221,9 @@ function expectMoved(before: string, after: string, way: WindowChange): void {
 
 test('the keys page lists every command with its keys', async () => {
   await press(page, '?');
-  const dialog = dialogOf(page, 'Keys');
-  for (const command of COMMANDS) {
-    const row = dialog.locator('.keys-list > div', {
-      has: page.locator('dt', { hasText: command.words }),
-    });
-    for (const key of command.keys)
-      await expect(row.first().getByText(keyWords(key), { exact: true })).toBeVisible();
+  for (const { id, words: says, keys } of COMMANDS) {
+    await expect(keyRow(id)).toContainText(says);
+    expect(shown.get(id)).toEqual(keys.map(keyWords));
   }
   await press(page, 'Escape');
 });
@@ -201,7 +236,9 @@ test('every command is tested here', () => {
 for (const command of COMMANDS.filter(({ id }) => id in CHECKS))
   test(`${command.words}: ${command.keys.join(', ')}`, async () => {
     const [prepare, sight, wanted] = CHECKS[command.id];
-    for (const key of command.keys) {
+    const keys = shown.get(command.id) ?? [];
+    expect(keys.length).toBe(command.keys.length);
+    for (const key of keys) {
       await begin();
       for (const one of prepare.split(' ').filter((part) => part !== '')) await press(page, one);
       const before = await SIGHTS[sight]();
@@ -247,6 +284,92 @@ test('no key acts while a person types in a field', async () => {
   await note.press('Enter');
   await keptHere(page, edit + 1);
   await begin();
+});
+
+test('no key acts in a list of choices or in text that can be edited', async () => {
+  await begin();
+  await press(page, 'Control+e');
+  const edit = await editNumber(page);
+  await page
+    .getByRole('group', { name: /^Spoiled span / })
+    .getByLabel('cause')
+    .focus();
+  for (const key of ['.', 'n', 'v', 'Delete', 'h']) await page.keyboard.press(key);
+  await settled(page);
+  expect(await SIGHTS.chosen()).toBe('');
+  await page.evaluate(() => {
+    const text = document.createElement('div');
+    text.contentEditable = 'true';
+    text.id = 'typed-text';
+    document.querySelector('main')?.append(text);
+    text.focus();
+  });
+  const before = await editNumber(page);
+  for (const key of ['.', 'v', 'a', 'Delete', '?']) await page.keyboard.press(key);
+  await settled(page);
+  expect(await SIGHTS.dialog()).toBe('');
+  expect(await SIGHTS.chosen()).toBe('');
+  expect(await editNumber(page)).toBe(before);
+  expect(before - edit, 'typing in the list of causes chooses a cause at most').toBeLessThan(4);
+  await page.evaluate(() => document.getElementById('typed-text')?.remove());
+  await begin();
+});
+
+test('a key is changed by the person, shown and obeyed everywhere, and given back', async () => {
+  await begin();
+  await press(page, '?');
+  const dialog = dialogOf(page, 'Keys');
+  await dialog.getByRole('button', { name: 'Change keys' }).click();
+  const change = (says: string) =>
+    dialog.getByRole('button', { name: new RegExp(`key of “${says}”`) });
+  await change('Next beat').click();
+  await page.keyboard.press('Control+s');
+  await expect(dialog.getByRole('alert')).toHaveText(
+    'Ctrl + S is the key of “Download the session”. Choose another key, or give that one another first.',
+  );
+  await page.keyboard.press('Control+w');
+  await expect(dialog.getByRole('alert')).toContainText('kept by the browser');
+  await page.keyboard.press('j');
+  await expect(dialog.getByRole('alert')).toHaveCount(0);
+  expect((await keysOnPage()).get('next-beat')).toEqual(['J']);
+  await change('Drag to exclude, or to look').click();
+  await page.keyboard.press('Escape');
+  await expect(dialog, 'Escape leaves the key as it was').toBeVisible();
+  await change('Drag to exclude, or to look').click();
+  await page.keyboard.press('z');
+  await page.keyboard.press('Escape');
+  await expect(dialog).toBeHidden();
+  await press(page, '.');
+  expect(await SIGHTS.chosen()).toBe('');
+  await press(page, 'j');
+  expect(await SIGHTS.chosen()).toMatch(/^beat /);
+  const drag = page.getByRole('button', { name: 'Exclude by dragging' });
+  await expect(drag).toHaveAttribute('title', 'Drag to exclude, or to look (Z)');
+  const kept = await page.evaluate(() => localStorage.getItem('bicadence.preferences'));
+  expect(JSON.parse(kept ?? '')).toMatchObject({
+    ownKeys: { 'next-beat': 'J', 'toggle-tool': 'Z' },
+  });
+  await press(page, 'F1');
+  await dialog.getByRole('button', { name: 'Back to the given keys (2 changed)' }).click();
+  expect(await keysOnPage()).toEqual(shown);
+  await press(page, 'Escape');
+  await press(page, 'Escape');
+  await press(page, '.');
+  expect(await SIGHTS.chosen()).toMatch(/^beat /);
+  await press(page, 'Escape');
+});
+
+test('a command is found by a word and done from the keys page, without its key', async () => {
+  await begin();
+  await press(page, 'F1');
+  const dialog = dialogOf(page, 'Keys');
+  await dialog.getByLabel('Find a command').fill('beats in sec');
+  await expect(dialog.locator('[data-command]')).toHaveCount(1);
+  await page.keyboard.press('Tab');
+  await dialog.getByRole('button', { name: 'Select the beats in Seconds' }).press('Enter');
+  await expect(dialog).toBeHidden();
+  expect(await SIGHTS.chosen()).toMatch(/^(beat .*; ){10,}/);
+  await press(page, 'Escape');
 });
 
 test('keys of a single character can be turned off; the others go on', async () => {

@@ -73,6 +73,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   const { state } = session;
   const edit = editNumber(session);
   const analysis = await pipeline.analyse({ ...state, edit }, job);
+  const openDoubts = await pipeline.openDoubts({ ...state, edit }, state.doubts, job);
   const files = exportFiles({
     recording: opened.recording,
     state,
@@ -83,6 +84,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     heart: analysis.heart?.value ?? null,
     breathing: analysis.breathing,
     findings: analysis.findings,
+    openDoubts,
   });
   await mkdir(folder, { recursive: true });
   for (const { name, text } of files) await writeFile(join(folder, name), text);

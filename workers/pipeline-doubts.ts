@@ -3,6 +3,7 @@ import { type BeatLook, createBeatLooks } from '../src/heart/beat-looks';
 import type { Detection } from '../src/heart/detect';
 import type { BeatDoubtsInput } from '../src/heart/doubt-view';
 import { alikeTo, averageRow, LOOK_BEFORE_S } from '../src/heart/look-alikes';
+import { stillOpen } from '../src/heart/open-doubts';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Recording } from '../src/recording/recording';
@@ -30,7 +31,7 @@ function looksOf(detection: Detection, input: BeatDoubtsInput): (tick: number) =
 }
 
 /** All doubts in ascending time without their effects, settled ones too. */
-export async function plainDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[]> {
+async function plainDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[]> {
   const { inputs, heart, heartRateHz, blocked, detection } = from;
   if (!heart || !detection) return [];
   const input: BeatDoubtsInput = {
@@ -45,13 +46,14 @@ export async function plainDoubts(from: DoubtInputs, job: Job): Promise<readonly
   return inTurns(beatDoubtsInSteps(input, looksOf(detection, input)), job, 'Looking for doubts');
 }
 
-async function openOf(
+/** The open doubts in the order of time, without their effects. */
+export async function openDoubts(
   from: DoubtInputs,
   settled: readonly SettledDoubt[],
   job: Job,
 ): Promise<readonly Doubt[]> {
-  const done = new Set(settled.map(({ id }) => id));
-  return (await plainDoubts(from, job)).filter(({ id }) => !done.has(id));
+  const all = await plainDoubts(from, job);
+  return stillOpen(all, settled, from.inputs.beats, from.heartRateHz);
 }
 
 /** The open doubts with what their mends would do, in the order of it. */
@@ -62,7 +64,7 @@ export async function doubtList(
 ): Promise<DoubtList> {
   return {
     edit: from.inputs.edit,
-    open: await withEffects(from, await openOf(from, settled, job), job),
+    open: await withEffects(from, await openDoubts(from, settled, job), job),
   };
 }
 
@@ -73,7 +75,7 @@ export async function lookAlikes(
   doubtId: string,
   job: Job,
 ): Promise<LookAlikes> {
-  const open = await openOf(from, settled, job);
+  const open = await openDoubts(from, settled, job);
   const asked = open.find(({ id }) => id === doubtId);
   const { heart, detection } = from;
   const found =

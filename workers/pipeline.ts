@@ -3,7 +3,7 @@ import { quickKey } from '../src/decode/quick-key';
 import { type Detection, type DetectionInput, detectInSteps } from '../src/heart/detect';
 import { placeBeat } from '../src/heart/place-beat';
 import { NO_BEATS } from '../src/recording/beat';
-import type { SettledDoubt } from '../src/recording/doubt';
+import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
@@ -39,7 +39,7 @@ import {
 import { inTurns, type Job } from './job';
 import { doubtedOf, judgedSpans } from './judged-spans';
 import { columnsOf } from './pipeline-columns';
-import { type DoubtInputs, doubtList, lookAlikes } from './pipeline-doubts';
+import { type DoubtInputs, doubtList, lookAlikes, openDoubts } from './pipeline-doubts';
 import { measureHeartbeats } from './pipeline-measures';
 import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { leadChannel, SignalStore, type WantedLead } from './pipeline-signals';
@@ -82,6 +82,12 @@ export interface Pipeline {
   propose(given: Given, job: Job): Promise<Proposal>;
   analyse(inputs: ReviewInputs, job: Job): Promise<Analysis>;
   doubts(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<DoubtList>;
+  /** The open doubts in the order of time without their effects, which takes far less. */
+  openDoubts(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    job: Job,
+  ): Promise<readonly Doubt[]>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -136,6 +142,10 @@ export function createPipeline(): Pipeline {
     async doubts(inputs, settled, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       return doubtList(from, settled, job);
+    },
+    async openDoubts(inputs, settled, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      return openDoubts(from, settled, job);
     },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));

@@ -1,7 +1,8 @@
 import type { KeyboardEvent } from 'react';
+import { useStore } from 'zustand';
 import type { Command, CommandParts } from './command';
 import { canRun } from './commands';
-import { keyWords } from './key-names';
+import { shownKey } from './own-keys';
 
 interface CommandButtonProps {
   readonly command: Command;
@@ -25,14 +26,14 @@ export function stopRepeat(event: KeyboardEvent): void {
 export function CommandButton(props: CommandButtonProps) {
   const { command, parts, className = 'button', showKey = false, after } = props;
   const words = command.wordsNow?.(parts) ?? command.words;
-  const key = command.keys[0];
+  const key = useStore(parts.shell, (state) => shownKey(command, state));
   const able = canRun(command, parts);
   const why = able ? '' : (command.whyNot?.(parts) ?? '');
   return (
     <button
       type="button"
       className={className}
-      title={`${key ? `${words} (${keyWords(key)})` : words}${why ? `: ${why}` : ''}`}
+      title={`${key ? `${words} (${key})` : words}${why ? `: ${why}` : ''}`}
       aria-label={props.readWhole ? words : undefined}
       disabled={!able}
       onKeyDown={command.once ? stopRepeat : undefined}
@@ -44,7 +45,7 @@ export function CommandButton(props: CommandButtonProps) {
       <span>{props.words ?? words}</span>
       {showKey && key ? (
         <span className="key" aria-hidden="true">
-          {keyWords(key)}
+          {key}
         </span>
       ) : null}
     </button>

@@ -1,7 +1,7 @@
 import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
 import { DOUBT_COMMANDS } from './doubt-commands';
-import { isPlainKey } from './key-names';
+import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
 import { OPEN_COMMANDS, PAGE_COMMANDS, STUDY_COMMANDS, WORK_COMMANDS } from './shell-commands';
 
@@ -34,6 +34,8 @@ export function canRun(command: Command, parts: CommandParts): boolean {
 
 /** The command a key stands for now; null where it stands for none, or is a plain key while those are off. */
 export function commandForKey(name: string, parts: CommandParts): Command | null {
-  if (isPlainKey(name) && !parts.shell.getState().plainKeys) return null;
-  return COMMANDS.find((one) => one.keys.includes(name) && canRun(one, parts)) ?? null;
+  const choices = parts.shell.getState();
+  return (
+    COMMANDS.find((one) => actingKeys(one, choices).includes(name) && canRun(one, parts)) ?? null
+  );
 }

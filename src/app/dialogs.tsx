@@ -1,7 +1,7 @@
 import { lazy, Suspense } from 'react';
 import { asWork } from '../review/idle';
 import { useShell } from './app-context';
-import type { PageActs } from './command';
+import type { CommandParts } from './command';
 import { IdentityDialog } from './identity-dialog';
 import type { DialogState } from './shell-store';
 import { FailureDialog, ReviewerDialog } from './small-dialogs';
@@ -13,6 +13,7 @@ const later = <K extends keyof Later>(name: K) =>
   lazy<Later[K]>(() => asWork(import('./later-dialogs')).then((all) => ({ default: all[name] })));
 
 const AboutDialog = later('AboutDialog');
+const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
 const FigureDialog = later('FigureDialog');
@@ -29,14 +30,14 @@ const SignDialog = later('SignDialog');
 const TextReadingDialog = later('TextReadingDialog');
 
 /** The open dialog, and the one below a reviewer's dialog. */
-export function Dialogs({ page }: { readonly page: PageActs }) {
+export function Dialogs({ parts }: { readonly parts: CommandParts }) {
   const dialog = useShell((state) => state.dialog);
   const under = useShell((state) => state.under);
   const shown = [under, dialog].filter((one) => one.kind !== 'none');
   return (
     <Suspense fallback={null}>
       {shown.map((one) => (
-        <OneDialog key={one.kind} state={one} page={page} />
+        <OneDialog key={one.kind} state={one} parts={parts} />
       ))}
     </Suspense>
   );
@@ -44,10 +45,10 @@ export function Dialogs({ page }: { readonly page: PageActs }) {
 
 interface OneDialogProps {
   readonly state: DialogState;
-  readonly page: PageActs;
+  readonly parts: CommandParts;
 }
 
-function OneDialog({ state, page }: OneDialogProps) {
+function OneDialog({ state, parts }: OneDialogProps) {
   switch (state.kind) {
     case 'none':
       return null;
@@ -65,16 +66,18 @@ function OneDialog({ state, page }: OneDialogProps) {
       return <SettingsDialog />;
     case 'go-to':
       return <GoToDialog />;
+    case 'beats-between':
+      return <BeatsBetweenDialog parts={parts} />;
     case 'add-bookmark':
       return <AddBookmarkDialog />;
     case 'bookmarks':
       return <BookmarksDialog />;
     case 'keys':
-      return <KeysDialog />;
+      return <KeysDialog parts={parts} />;
     case 'about':
       return <AboutDialog />;
     case 'log':
-      return <LogDialog page={page} />;
+      return <LogDialog page={parts.page} />;
     case 'sign':
       return <SignDialog />;
     case 'text-reading':
@@ -86,6 +89,6 @@ function OneDialog({ state, page }: OneDialogProps) {
     case 'look-alikes':
       return <LookAlikesDialog doubtId={state.doubtId} />;
     case 'choose-same-file':
-      return <SameFileDialog code={state.code} page={page} />;
+      return <SameFileDialog code={state.code} page={parts.page} />;
   }
 }

@@ -12,7 +12,7 @@ import {
 import type { CommandParts } from './command';
 import { CommandButton, stopRepeat } from './command-button';
 import { canRun, commandOf } from './commands';
-import { keyWords } from './key-names';
+import { shownKey } from './own-keys';
 
 interface DoubtCardProps {
   readonly parts: CommandParts;
@@ -110,19 +110,21 @@ interface WayProps {
 /** One way to settle: its key, what it does, what the figure is then. */
 function Way({ id, parts, words, figure }: WayProps) {
   const command = commandOf(id);
-  const key = keyWords(command.keys[0]);
+  const key = useStore(parts.shell, (state) => shownKey(command, state));
   return (
     <button
       type="button"
       className="doubt-way"
-      title={`${command.words} (${key})`}
+      title={key === '' ? command.words : `${command.words} (${key})`}
       disabled={!canRun(command, parts)}
       onKeyDown={stopRepeat}
       onClick={() => command.run(parts)}
     >
-      <span className="key-cap" aria-hidden="true">
-        {key}
-      </span>
+      {key === '' ? null : (
+        <span className="key-cap" aria-hidden="true">
+          {key}
+        </span>
+      )}
       <span className="doubt-act">{words}</span>
       <strong>{figure}</strong>
     </button>

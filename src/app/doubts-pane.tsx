@@ -42,6 +42,9 @@ export function DoubtsPane({ parts, act }: DoubtsPaneProps) {
         {doubts.outcome ? null : <p className="quiet">{headWords(doubts, open, settled)}</p>}
         <Outcome parts={parts} outcome={doubts.outcome} />
       </header>
+      <p className="unseen" role="status" data-part="spoken">
+        {doubts.spoken}
+      </p>
       <div className="doubts-body" aria-busy={doubts.search.kind === 'looking'}>
         {front ? (
           <DoubtCard parts={parts} doubt={front} at={open.indexOf(front) + 1} of={open.length} />

@@ -1,4 +1,7 @@
 import { useEffect } from 'react';
+import type { Findings } from '../recording/findings';
+import type { AnalysisState } from '../review/analysis-store';
+import { asWork } from '../review/idle';
 import type { LogLine, Session } from '../session/document';
 import type { AppParts } from './app-context';
 import { signatureLost } from './signature-words';
@@ -24,8 +27,30 @@ function afterTheAct(
   });
 }
 
-/** Tells of each edit in the foot line, and of a signature that no longer stands. */
-export function useEditStatus({ session, shell }: Pick<AppParts, 'session' | 'shell'>): void {
+/** What an edit did to the figures, in words; what finds it is fetched with the first edit. */
+async function figuresStatus(before: Findings, after: Findings): Promise<string> {
+  const { mostMoved, movedWords } = await import('../recording/figure-moved');
+  const moved = mostMoved(before, after);
+  return moved ? movedWords(moved) : 'no figure changed';
+}
+
+/** The figures before and after, where those of a later edit of the same study have come. */
+function newFigures(
+  now: AnalysisState,
+  before: AnalysisState,
+): readonly [Findings, Findings] | null {
+  if (!now.findings || !before.findings || now.findings === before.findings) return null;
+  return now.recording === before.recording && now.edit > before.edit
+    ? [before.findings, now.findings]
+    : null;
+}
+
+/** Tells of each edit in the foot line, then of what it did to the figures, and of a signature that no longer stands. */
+export function useEditStatus({
+  session,
+  shell,
+  analysis,
+}: Pick<AppParts, 'session' | 'shell' | 'analysis'>): void {
   useEffect(
     () =>
       session.subscribe((now, before) => {
@@ -39,5 +64,17 @@ export function useEditStatus({ session, shell }: Pick<AppParts, 'session' | 'sh
         });
       }),
     [session, shell],
+  );
+  useEffect(
+    () =>
+      analysis.subscribe((now, before) => {
+        const figures = newFigures(now, before);
+        if (!figures) return;
+        const { status } = shell.getState();
+        void asWork(figuresStatus(...figures)).then((more) => {
+          if (shell.getState().status === status) shell.getState().tellMore(more);
+        });
+      }),
+    [analysis, shell],
   );
 }

@@ -1,12 +1,14 @@
 import { useAnalysis, useShell } from './app-context';
 
-/** The line at the foot of the page: what the last act did, and the work under way with the way to stop it. */
+/** The line at the foot of the page: what the last act did, then what that did to the figures (read out alone), and the work under way with the way to stop it. */
 export function FootLine() {
   const status = useShell((state) => state.status);
+  const more = useShell((state) => state.statusMore);
   return (
     <footer className="foot-line">
-      <p className="foot-status" role="status">
+      <p className="foot-status" role="status" aria-atomic="false">
         {status}
+        {more === '' ? null : <span>; {more}</span>}
       </p>
       <Work />
     </footer>

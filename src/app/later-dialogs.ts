@@ -1,4 +1,5 @@
 export { AboutDialog } from './about-dialog';
+export { BeatsBetweenDialog } from './beats-between-dialog';
 export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
 export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';

@@ -74,6 +74,19 @@ const CLASS_WORDS: Readonly<Record<BeatClass, string>> = {
 const BEATS: readonly Command[] = [
   paneCommand('next-beat', 'Next beat', ['.'], 'beats', (p) => p.selectNextBeat()),
   paneCommand('previous-beat', 'Beat before', [','], 'beats', (p) => p.selectPreviousBeat()),
+  paneCommand('extend-later', 'Select the next beat too', ['>'], 'beats', (p) =>
+    p.extendToNextBeat(),
+  ),
+  paneCommand('extend-earlier', 'Select the beat before too', ['<'], 'beats', (p) =>
+    p.extendToPreviousBeat(),
+  ),
+  paneCommand(
+    'beats-between',
+    'Select beats from one time to another…',
+    ['Shift+V'],
+    'beats',
+    (_, { shell }) => shell.getState().openDialog({ kind: 'beats-between' }),
+  ),
   paneCommand('beats-in-view', 'Select the beats in Seconds', ['Ctrl+A'], 'beats', (p) =>
     p.selectBeatsInView(),
   ),

@@ -2,6 +2,7 @@ import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
 import type { KeptRow } from './controller';
+import type { OwnKeys } from './own-keys';
 import { readPreferences, type ThemeChoice, writePreferences } from './preferences';
 
 /** The dialog that stands over the page. */
@@ -22,6 +23,7 @@ export type DialogState =
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
+  | { readonly kind: 'beats-between' }
   | { readonly kind: 'add-bookmark' }
   | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }
@@ -49,17 +51,24 @@ export interface ShellState {
   readonly messages: readonly Message[];
   /** What the last act did, in the line at the foot; each one takes the place of the one before. */
   readonly status: string;
+  /** What that act did to the figures, once it is known; '' until then. */
+  readonly statusMore: string;
   readonly theme: ThemeChoice;
   /** Keys that are a single letter, digit or sign act only while this is on. */
   readonly plainKeys: boolean;
+  /** Keys the person has given to commands instead of those of the table. */
+  readonly ownKeys: OwnKeys;
   openDialog(dialog: DialogState): void;
   closeDialog(): void;
   say(text: string): void;
   sayProblem(text: string): void;
   tell(status: string): void;
+  /** Adds to the status line what the act did to the figures. */
+  tellMore(statusMore: string): void;
   putAway(id: number): void;
   setTheme(theme: ThemeChoice): void;
   setPlainKeys(on: boolean): void;
+  setOwnKeys(ownKeys: OwnKeys): void;
 }
 
 export type ShellStore = StoreApi<ShellState>;
@@ -101,10 +110,10 @@ export function createShellStore(storage: Storage | null): ShellStore {
       nextId += 1;
       set((before) => ({ messages: withMessage(before.messages, message) }));
     };
-    const prefer = (change: Partial<Pick<ShellState, 'theme' | 'plainKeys'>>) => {
+    const prefer = (change: Partial<Pick<ShellState, 'theme' | 'plainKeys' | 'ownKeys'>>) => {
       set(change);
-      const { theme, plainKeys } = get();
-      writePreferences(storage, { theme, plainKeys });
+      const { theme, plainKeys, ownKeys } = get();
+      writePreferences(storage, { theme, plainKeys, ownKeys });
     };
     return {
       ...readPreferences(storage),
@@ -112,6 +121,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       under: NONE,
       messages: [],
       status: '',
+      statusMore: '',
       openDialog: (dialog) =>
         set((before) => ({
           dialog,
@@ -122,13 +132,18 @@ export function createShellStore(storage: Storage | null): ShellStore {
       say: (text) => add('note', text),
       sayProblem: (text) => add('problem', text),
       tell: (status) => {
-        set({ status });
-        setTimeout(() => set((now) => (now.status === status ? { status: '' } : now)), STATUS_MS);
+        set({ status, statusMore: '' });
+        setTimeout(
+          () => set((now) => (now.status === status ? { status: '', statusMore: '' } : now)),
+          STATUS_MS,
+        );
       },
+      tellMore: (statusMore) => set((now) => (now.status === '' ? now : { statusMore })),
       putAway: (id) =>
         set((before) => ({ messages: before.messages.filter((one) => one.id !== id) })),
       setTheme: (theme) => prefer({ theme }),
       setPlainKeys: (plainKeys) => prefer({ plainKeys }),
+      setOwnKeys: (ownKeys) => prefer({ ownKeys }),
     };
   });
 }

@@ -1,14 +1,17 @@
 import './styles.css';
 import { type ReactNode, useCallback, useEffect, useMemo, useRef } from 'react';
 import { useStore } from 'zustand';
+import { type CommandLinks, CommandLinksProvider } from '../review/command-links';
 import { paneCommands } from '../review/pane-commands';
 import type { PaneProps } from '../review/pane-props';
 import { type AppParts, AppProvider } from './app-context';
 import type { CommandParts, PageActs } from './command';
+import { canRun, commandOf } from './commands';
 import { Dialogs } from './dialogs';
 import { useEditStatus } from './edit-status';
 import { FootLine } from './foot-line';
 import { Messages } from './messages';
+import { shownKey } from './own-keys';
 import { ReportFrame } from './report-frame';
 import { StartScreen } from './start-screen';
 import { TopBar } from './top-bar';
@@ -41,6 +44,7 @@ export function Shell({ parts, renderReport }: ShellProps) {
   useLeaveGuard(session);
   useKeys(commandParts);
   useEditStatus(parts);
+  const links = useLinks(commandParts);
   const otherAsked = useOtherStudyAsked(parts);
   const sessionThere = useStore(session, (state) => state.session !== null);
   const recordingThere = useStore(analysis, (state) => state.recording !== null);
@@ -50,29 +54,47 @@ export function Shell({ parts, renderReport }: ShellProps) {
   const reportShown = studyShown && renderReport !== undefined && hash === REPORT_HASH;
   return (
     <AppProvider value={parts}>
-      <div className={reportShown ? 'app report-open' : 'app'}>
-        <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
-        {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
-        {studyShown && !reportShown ? (
-          <Workspace panes={{ ...panes, theme }} parts={commandParts} />
-        ) : null}
-        {studyShown ? null : <StartScreen parts={commandParts} />}
-        <FootLine />
-        <Messages />
-        <Dialogs page={page} />
-        {over ? <p className="drop-over">Drop the file to open it</p> : null}
-        <input
-          ref={fileInput}
-          type="file"
-          hidden
-          aria-label="File to open"
-          onChange={(event) => {
-            take([...(event.target.files ?? [])]);
-            event.target.value = '';
-          }}
-        />
-      </div>
+      <CommandLinksProvider value={links}>
+        <div className={reportShown ? 'app report-open' : 'app'}>
+          <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
+          {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
+          {studyShown && !reportShown ? (
+            <Workspace panes={{ ...panes, theme }} parts={commandParts} />
+          ) : null}
+          {studyShown ? null : <StartScreen parts={commandParts} />}
+          <FootLine />
+          <Messages />
+          <Dialogs parts={commandParts} />
+          {over ? <p className="drop-over">Drop the file to open it</p> : null}
+          <input
+            ref={fileInput}
+            type="file"
+            hidden
+            aria-label="File to open"
+            onChange={(event) => {
+              take([...(event.target.files ?? [])]);
+              event.target.value = '';
+            }}
+          />
+        </div>
+      </CommandLinksProvider>
     </AppProvider>
+  );
+}
+
+/** What the panes know of the command table: the keys that act now, and the acts. */
+function useLinks(parts: CommandParts): CommandLinks {
+  const ownKeys = useStore(parts.shell, (state) => state.ownKeys);
+  const plainKeys = useStore(parts.shell, (state) => state.plainKeys);
+  return useMemo(
+    () => ({
+      keyOf: (id) => shownKey(commandOf(id), { ownKeys, plainKeys }),
+      run: (id) => {
+        const command = commandOf(id);
+        if (canRun(command, parts)) command.run(parts);
+      },
+    }),
+    [parts, ownKeys, plainKeys],
   );
 }
 

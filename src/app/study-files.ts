@@ -1,3 +1,4 @@
+import type { AnalysisClient } from '../../workers/analysis-client';
 import { type Failure, Refusal } from '../recording/failure';
 import type { AnalysisStore } from '../review/analysis-store';
 import { asWork } from '../review/idle';
@@ -8,6 +9,7 @@ import { sameValue } from '../session/same-value';
 import { editNumber, type SessionStore } from '../session/store';
 import { documentText, sessionToDocument } from '../session/write-document';
 import { PROGRAM } from '../units/program';
+import { inputsOf } from './analysis-runner';
 import type { StudyController } from './controller';
 import { download } from './download';
 import type { ShellStore } from './shell-store';
@@ -18,6 +20,7 @@ interface FileParts {
   readonly analysis: AnalysisStore;
   readonly shell: ShellStore;
   readonly keeping: StudyKeeping;
+  readonly client: Pick<AnalysisClient, 'doubts'>;
 }
 
 /** Said where results or a signature would stand for a file that is not known yet. */
@@ -33,7 +36,7 @@ function continues(longer: readonly LogLine[], shorter: readonly LogLine[]): boo
 }
 
 /** Sessions and results on their way to and from files of the person's. */
-export function createStudyFiles({ session, analysis, shell, keeping }: FileParts) {
+export function createStudyFiles({ session, analysis, shell, keeping, client }: FileParts) {
   const acts: Pick<StudyController, 'downloadSession' | 'downloadExports'> = {
     downloadSession() {
       const open = session.getState().session;
@@ -67,9 +70,14 @@ export function createStudyFiles({ session, analysis, shell, keeping }: FilePart
           shell.getState().sayProblem(NOT_CONFIRMED);
           return;
         }
+        const doubts = await client.doubts(inputsOf(open), state.doubts);
+        if (!doubts.ok) {
+          shell.getState().openDialog({ kind: 'failure', failure: doubts.failure });
+          return;
+        }
         const { resultsZip } = await import('./results-zip');
         const sha256 = session.getState().session?.state.study.sha256 ?? null;
-        const zip = resultsZip({ ...results, sha256 });
+        const zip = resultsZip({ ...results, sha256, openDoubts: doubts.value.open });
         download(`${safeCode(state.study.code)}-results.zip`, zip, 'application/zip');
         shell.getState().say(IDENTIFYING);
       };

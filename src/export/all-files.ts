@@ -11,11 +11,17 @@ export type { ExportInput } from './export-input';
 
 /** All files of results, in a fixed order: what the page puts into one zip and the command line into a folder. */
 export function exportFiles(input: ExportInput): readonly TextFile[] {
-  const { recording, state, stomach, heart } = input;
+  const { recording, state, stomach, heart, openDoubts } = input;
   const rateHz = leadRate(state.roles.heart, recording);
   const beats = rateHz === null ? NO_BEATS : state.beats;
   return [
-    { name: 'beats.csv', text: beatsCsv(beats, rateHz ?? 1, heart?.rr ?? null) },
+    {
+      name: 'beats.csv',
+      text: beatsCsv(beats, rateHz ?? 1, heart?.rr ?? null, {
+        open: openDoubts,
+        settled: state.doubts,
+      }),
+    },
     { name: 'epochs.csv', text: epochsCsv(stomach) },
     { name: 'minutes.csv', text: minutesCsv(input) },
     { name: 'spans.csv', text: spansCsv(state.spans) },

@@ -1,20 +1,45 @@
 import { type BeatList, beatAt } from '../recording/beat';
+import type { Doubt, SettledDoubt } from '../recording/doubt';
 import type { RrSeries } from '../recording/heart-series';
 import type { Hertz } from '../units/rate';
 import { TICKS_PER_SAMPLE, ticksToSeconds } from '../units/ticks';
 import { type Cell, csvText, flagCell, numberCell, timeCell } from './csv';
 
+/** Doubts by the tick of the beat they stand at. */
+export interface DoubtsAtBeats {
+  readonly open: readonly Pick<Doubt, 'tick'>[];
+  readonly settled: readonly SettledDoubt[];
+}
+
 const HEADER = ['time_s', 'sample', 'class', 'origin', 'rr_ms', 'nn', 'doubt'];
 
 /**
  * beats.csv: one row a beat. `rateHz` is the heart lead's own rate; `rr` the intervals, each at the time of the beat that
- * ends it (null: no intervals are known). The doubt column is empty until doubts exist.
+ * ends it (null: no intervals are known). The doubt column holds what stands at the beat: `open`, or how it was settled
+ * where none is open.
  */
-export function beatsCsv(beats: BeatList, rateHz: Hertz, rr: RrSeries | null): string {
-  return csvText(HEADER, beatRows(beats, rateHz, rr));
+export function beatsCsv(
+  beats: BeatList,
+  rateHz: Hertz,
+  rr: RrSeries | null,
+  doubts: DoubtsAtBeats,
+): string {
+  return csvText(HEADER, beatRows(beats, rateHz, rr, doubtWords(doubts)));
 }
 
-function* beatRows(beats: BeatList, rateHz: Hertz, rr: RrSeries | null): Generator<Cell[]> {
+function doubtWords({ open, settled }: DoubtsAtBeats): ReadonlyMap<number | null, string> {
+  const words = new Map<number | null, string>();
+  for (const { tick, ending } of settled) words.set(tick, ending);
+  for (const { tick } of open) words.set(tick, 'open');
+  return words;
+}
+
+function* beatRows(
+  beats: BeatList,
+  rateHz: Hertz,
+  rr: RrSeries | null,
+  doubts: ReadonlyMap<number | null, string>,
+): Generator<Cell[]> {
   const halfTickS = 0.5 / (TICKS_PER_SAMPLE * rateHz);
   let next = 0;
   for (let i = 0; i < beats.ticks.length; i += 1) {
@@ -29,7 +54,7 @@ function* beatRows(beats: BeatList, rateHz: Hertz, rr: RrSeries | null): Generat
       origin,
       ends ? numberCell(rr.rrMs[next], 1) : null,
       ends ? flagCell(rr.nn[next] === 1) : null,
-      null,
+      doubts.get(tick) ?? null,
     ];
   }
 }

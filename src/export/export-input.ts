@@ -1,3 +1,4 @@
+import type { Doubt } from '../recording/doubt';
 import type { Findings } from '../recording/findings';
 import type { BreathingSeries, HeartSegment, RrSeries } from '../recording/heart-series';
 import type { Recording } from '../recording/recording';
@@ -22,4 +23,6 @@ export interface ExportInput {
   /** Of the breathing lead, else derived from the heartbeat; null where there is neither. */
   readonly breathing: BreathingSeries | null;
   readonly findings: Findings;
+  /** The doubts that are open; those that are settled stand in the state. */
+  readonly openDoubts: readonly Doubt[];
 }

@@ -1,4 +1,5 @@
 import { firstBeatAt } from '../recording/beat';
+import type { Doubt } from '../recording/doubt';
 import type { BreathingSeries } from '../recording/heart-series';
 import { type Lead, leadChannels } from '../recording/lead';
 import { phasesOrWhole } from '../recording/phase';
@@ -27,13 +28,17 @@ const HEADER = [
   'spoiled_fraction',
 ];
 
-type Input = Pick<ExportInput, 'recording' | 'state' | 'stomach' | 'heart' | 'breathing'>;
+type Input = Pick<
+  ExportInput,
+  'recording' | 'state' | 'stomach' | 'heart' | 'breathing' | 'openDoubts'
+>;
 
 /**
  * minutes.csv: one row a minute and slow-wave lead, minute after minute; minute 0 begins with the recording and the last may
  * be cut short. Stomach: the epoch whose centre is nearest to the minute's start, at most half a minute away. Heart: the NN
  * intervals that end in the minute, for RMSSD only those outside irregular segments. Breathing: the window centred nearest to the minute's middle, at most half a minute away.
- * Spoiled: the share of the minute that spans for the stomach on the row's lead cover. Open doubts stay empty until they exist.
+ * Spoiled: the share of the minute that spans for the stomach on the row's lead cover. Open doubts: those of beats and of the
+ * row's lead that end in the minute.
  */
 export function minutesCsv(input: Input): string {
   return csvText(HEADER, minuteRows(input));
@@ -70,12 +75,18 @@ function* minuteRows(input: Input): Generator<Cell[]> {
         numberCell(breathing, 1),
         numberCell(beats?.rmssdMs, 1),
         numberCell(rateHz && beatsWithin(state.beats, fromS, toS, rateHz), 0),
-        null,
+        numberCell(openWithin(input.openDoubts, lead, fromS, fromS + 60), 0),
         numberCell(spoiled, SHARE_DECIMALS),
       ];
     }
   }
 }
+
+/** How many open doubts end in [fromS, toS), of beats and spans of all leads or of one lead. */
+const openWithin = (open: readonly Doubt[], lead: string, fromS: number, toS: number): number =>
+  open.filter(
+    (one) => (one.lead === null || one.lead === lead) && one.toS >= fromS && one.toS < toS,
+  ).length;
 
 /** The heart lead's own rate, null where there is none. */
 export function leadRate(lead: Lead | null, recording: Recording): Hertz | null {

@@ -1,8 +1,9 @@
-import { BEAT_CLASSES, BEAT_ORIGINS, type BeatList } from '../recording/beat';
-import { leadName } from '../recording/lead';
+import { BEAT_CLASSES, type BeatList } from '../recording/beat';
+import { leadChannels, leadKey, leadName } from '../recording/lead';
 import type { Recording } from '../recording/recording';
 import type { RhythmBands, RouteName, Settings } from '../recording/settings';
-import { coveredSeconds, type Span } from '../recording/span';
+import { coveredSeconds, type Span, spansOf } from '../recording/span';
+import { type BeatTally, beatTally, programsBeats } from '../session/beat-tally';
 import type { Session, SessionState, Signature } from '../session/document';
 import { formatClock } from '../units/time';
 import type { Hide } from './report-hiding';
@@ -46,33 +47,38 @@ function classCounts({ classes }: BeatList): string {
   return BEAT_CLASSES.map((name, code) => `${name} ${countOf(classes, code)}`).join(', ');
 }
 
-/** Beats by class, what people put in, and what became of the beats first found. */
-export function beatFacts({ start, state }: Session): readonly Fact[] {
-  const { beats } = state;
-  const before = new Map<number, number>();
-  start.beats.ticks.forEach((tick, i) => {
-    before.set(tick, start.beats.classes[i]);
-  });
-  let classed = 0;
-  beats.ticks.forEach((tick, i) => {
-    const was = before.get(tick);
-    if (was !== undefined && was !== beats.classes[i]) classed += 1;
-    before.delete(tick);
-  });
-  const byHand = BEAT_ORIGINS.map((origin, code) => ({
-    origin,
-    count: countOf(beats.origins, code),
-  })).filter(({ origin, count }) => origin !== 'detected' && count > 0);
-  const put = byHand.map(({ origin, count }) => `${count} ${origin}`);
-  const changed = [
-    ...put,
-    ...(before.size > 0 ? [`${before.size} of those first found no longer there`] : []),
-    ...(classed > 0 ? [`${classed} given another class`] : []),
-  ];
+/** Beats by class, what became of those the program found, and what people put in. */
+export function beatFacts(session: Session, recording: Recording): readonly Fact[] {
+  const { beats, roles } = session.state;
+  const rateHz = roles.heart && recording.channels[leadChannels(roles.heart)[0]].rateHz;
   return [
     { name: 'Beats', words: `${beats.ticks.length} (${classCounts(beats)})` },
-    { name: 'Beats edited', words: changed.length > 0 ? changed.join('; ') : 'none' },
+    {
+      name: 'Beats edited',
+      words: rateHz ? tallyWords(beatTally(programsBeats(session), beats, rateHz)) : 'none',
+    },
   ];
+}
+
+/** "of 371 found by the program: 2 removed, 1 moved, 3 given another class (2 N to V, 1 V to N); 4 added, 1 placed". */
+function tallyWords(tally: BeatTally): string {
+  const { found, removed, moved, classed, added, placed, foundAgain } = tally;
+  const given = classed.reduce((sum, { count }) => sum + count, 0);
+  const classes = classed.map(({ from, to, count }) => `${count} ${from} to ${to}`).join(', ');
+  const said = (parts: readonly (readonly [count: number, words: string])[]) =>
+    parts.flatMap(([count, words]) => (count > 0 ? [`${count} ${words}`] : [])).join(', ');
+  const ofFound = said([
+    [removed, 'removed'],
+    [moved, 'moved'],
+    [given, `given another class (${classes})`],
+  ]);
+  const put = said([
+    [added, 'added'],
+    [placed, 'placed'],
+    [foundAgain, 'found by the program when it looked again'],
+  ]);
+  const words = [ofFound && `of ${found} found by the program: ${ofFound}`, put].filter(Boolean);
+  return words.length > 0 ? words.join('; ') : 'none';
 }
 
 const counted = (count: number, what: string): string =>
@@ -96,29 +102,47 @@ export function logFact({ log }: Session, hidden: boolean): Fact {
   return { name: 'Log', words: `${counted(log.length, 'line')}: ${counts.join(', ')} (${by})` };
 }
 
-/** Spoiled spans of one cause: how many, how many minutes of the study, and who set them. */
+/** Spoiled spans of one cause: how many, who set them, and the minutes they take from each organ's figures. */
 export interface SpanRow {
   readonly cause: string;
   readonly spans: number;
+  /** Of the study, whatever it is excluded for. */
   readonly minutes: string;
+  /** Out of the stomach's figures on the reported lead, and out of the heart's; null where there is no heart lead. */
+  readonly stomachMinutes: string;
+  readonly heartMinutes: string | null;
   readonly byHand: number;
   readonly proposed: number;
 }
 
-/** Spoiled spans by cause, in alphabetical order; overlaps of one cause count once. */
-export function spanRows(spans: readonly Span[], durationS: number): readonly SpanRow[] {
-  const causes = [...new Set(spans.map(({ cause }) => cause))].sort();
-  return causes.map((cause) => {
-    const some = spans.filter((span) => span.cause === cause);
+/**
+ * Spoiled spans by cause, in alphabetical order, and of all causes together where there are several; what two spans of a row
+ * cover both counts once.
+ */
+export function spanRows({ spans, roles }: SessionState, durationS: number): readonly SpanRow[] {
+  const minutesOf = (some: readonly Span[]) => (coveredSeconds(some, 0, durationS) / 60).toFixed(1);
+  const reported = leadKey(roles.slow[roles.reported]);
+  const heart = roles.heart && leadKey(roles.heart);
+  const rowOf = (cause: string, some: readonly Span[]): SpanRow => {
     const byHand = some.filter(({ origin }) => origin === 'drawn').length;
     return {
       cause,
       spans: some.length,
-      minutes: (coveredSeconds(some, 0, durationS) / 60).toFixed(1),
+      minutes: minutesOf(some),
+      stomachMinutes: minutesOf(spansOf(some, reported, 'stomach')),
+      heartMinutes: heart && minutesOf(spansOf(some, heart, 'heart')),
       byHand,
       proposed: some.length - byHand,
     };
-  });
+  };
+  const causes = [...new Set(spans.map(({ cause }) => cause))].sort();
+  const rows = causes.map((cause) =>
+    rowOf(
+      cause,
+      spans.filter((span) => span.cause === cause),
+    ),
+  );
+  return rows.length > 1 ? [...rows, rowOf('all causes', spans)] : rows;
 }
 
 const percent = (share: number): string => `${Math.round(100 * share)} %`;

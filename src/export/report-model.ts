@@ -119,11 +119,11 @@ function makingOf(
         signed,
         identityHidden ? hide : null,
       ),
-      ...beatFacts(session),
+      ...beatFacts(session, recording),
       logFact(session, identityHidden),
       ...(notes.length > 0 ? [{ name: 'Of the file', words: hide(notes.join('; ')) }] : []),
     ],
     settings: settingFacts(signed?.settings ?? state.settings),
-    spans: spanRows(state.spans, recording.durationS),
+    spans: spanRows(state, recording.durationS),
   };
 }

@@ -33,7 +33,23 @@ export function* beatDoubtsInSteps(
     if (beat % BEATS_A_STEP === 0) yield 0.5 + (0.5 * beat) / view.count;
   }
   oddsReasons(view).forEach(take);
-  return [...byBeat.values()].sort((a, b) => a.beat - b.beat).map((one) => doubtOf(view, one));
+  const reasons = [...byBeat.values()].sort((a, b) => a.beat - b.beat);
+  return turnsJoined(reasons).map((run) => doubtOf(view, run));
+}
+
+/** Beats in a row that stand upside down are one place: a change of sign lasts. */
+function turnsJoined(reasons: readonly Reason[]): readonly (readonly Reason[])[] {
+  const runs: Reason[][] = [];
+  for (const reason of reasons) {
+    const last = runs.at(-1)?.at(-1);
+    const goesOn =
+      reason.kind === 'sign-change' &&
+      last?.kind === 'sign-change' &&
+      reason.beat - last.beat <= MOST_BETWEEN;
+    if (goesOn) runs.at(-1)?.push(reason);
+    else runs.push([reason]);
+  }
+  return runs;
 }
 
 /** The doubts of beats at once. */
@@ -46,19 +62,23 @@ export function beatDoubts(input: BeatDoubtsInput): readonly Doubt[] {
   }
 }
 
+/** Beats of a stretch of changed sign may be so far apart in the list: one of them in doubt for another reason parts nothing. */
+const MOST_BETWEEN = 2;
 const BEFORE_GAP: readonly Doubt['kind'][] = ['missed-beat'];
 
-function doubtOf({ beats, timesS }: DoubtView, { beat, kind, why, mend }: Reason): Doubt {
+function doubtOf({ beats, timesS }: DoubtView, run: readonly Reason[]): Doubt {
+  const [{ beat, kind, why, mend }] = run;
+  const last = run[run.length - 1].beat;
   const tick = beats.ticks[beat];
   const before = BEFORE_GAP.includes(kind) && beat > 0 ? beat - 1 : beat;
   return {
     id: `${kind}-${tick}`,
     kind,
     fromS: timesS[before],
-    toS: timesS[beat],
+    toS: timesS[last],
     tick,
     lead: null,
-    why,
+    why: run.length > 1 ? `From here on ${last - beat + 1} beats stand upside down. ${why}` : why,
     mend,
     effect: null,
   };

@@ -22,7 +22,7 @@ const ONE_BEAT_MS = 240;
 /** So are two nearer than this of which one looks like no beat. */
 const NEAR_MS = 300;
 /** Where a T wave lies after its beat. */
-const T_WAVE_MS = [180, 500] as const;
+const T_WAVE_MS = [180, 400] as const;
 /** Less like the averages than usual by this much, a complex is odd. */
 const ODD_BY = 0.2;
 const WIDE_LIKE = 0.8;

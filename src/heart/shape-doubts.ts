@@ -1,4 +1,4 @@
-import { exp, log } from '../numeric/elementary';
+import { exp } from '../numeric/elementary';
 import type { BeatClass } from '../recording/beat';
 import { bestLikeness, classMend, type DoubtView, NARROW, type Reason, WIDE } from './doubt-view';
 
@@ -14,6 +14,7 @@ const PLAINLY_NARROW = 0.93;
 /** Likeness upside down, and how much it must exceed that of the right way up. */
 const TURNED = 0.8;
 const TURNED_BY = 0.15;
+const PLAINLY_TURNED = 0.9;
 /** Smaller than this part of the beats about it and within so many standard deviations of the noise, a beat is low. */
 const LOW_PART = 0.5;
 const LOW_OVER_NOISE = 4;
@@ -34,18 +35,29 @@ export function shapeReason(view: DoubtView, beat: number): Reason | null {
   );
 }
 
+/**
+ * A beat upside down. Where many are, they have an average of their own: then it must come on time, since early ventricular
+ * beats may look like normal ones turned over.
+ */
 function turnedReason(view: DoubtView, beat: number): Reason | null {
   const { turned, likeness } = view.look(beat);
-  const most = Math.max(...likeness);
-  if (!(turned >= TURNED && turned > most + TURNED_BY)) return null;
+  const main = likeness[0];
+  if (!(turned >= TURNED && turned > main + TURNED_BY)) return null;
+  const hasOwnAverage = turned <= Math.max(...likeness) + TURNED_BY;
+  if (hasOwnAverage && !(turned >= PLAINLY_TURNED && Math.abs(offRhythm(view, beat)) < FAR))
+    return null;
   return {
     beat,
     kind: 'sign-change',
     strength: 0.75,
-    why: `It is like the average beat upside down (${percent(turned)}), and less so the right way up (${percent(Math.max(0, most))}).`,
+    why: `It is like the average beat upside down (${percent(turned)}), and less so the right way up (${percent(Math.max(0, main))}).`,
     mend: null,
   };
 }
+
+/** Logarithm of the interval before a beat over the foretold one. */
+const offRhythm = ({ ways, logRr }: DoubtView, beat: number): number =>
+  logRr[beat - 1] - ways[0].expected(beat - 1, beat - 1);
 
 /** A beat that looks like beats of another class, and any that the program could not class. */
 function classReason(view: DoubtView, beat: number): Reason | null {
@@ -74,15 +86,12 @@ function classReason(view: DoubtView, beat: number): Reason | null {
 
 /** A wide beat that comes when a normal one is due and looks nearly as much like those. */
 function onTimeReason(view: DoubtView, beat: number, narrow: number, wide: number): Reason | null {
-  const { rrMs, ways, logRr } = view;
-  const usualMs = 1000 * exp(ways[0].expected(beat - 1, beat - 1));
-  const off = Math.abs(logRr[beat - 1] - log(usualMs / 1000));
-  if (!(narrow > wide - NEARLY_BY) || !(off < FAR)) return null;
+  if (!(narrow > wide - NEARLY_BY) || !(Math.abs(offRhythm(view, beat)) < FAR)) return null;
   return {
     beat,
     kind: 'odd-shape',
     strength: 0.3,
-    why: `It is hardly more like the average beat of class ${view.classOf(beat)} (${percent(wide)}) than that of class N (${percent(narrow)}), and comes on time, ${Math.round(rrMs[beat])} ms after the one before.`,
+    why: `It is hardly more like the average beat of class ${view.classOf(beat)} (${percent(wide)}) than that of class N (${percent(narrow)}), and comes on time, ${Math.round(view.rrMs[beat])} ms after the one before.`,
     mend: classMend(view, beat, 'N'),
   };
 }
@@ -104,9 +113,9 @@ function unclassed(view: DoubtView, beat: number, narrow: number, wide: number):
 
 /** A beat that looks as beats do and was set aside for its intervals. */
 function misfit(view: DoubtView, beat: number, like: BeatClass, most: number): Reason {
-  const { rrMs, ways, logRr } = view;
-  const usualMs = 1000 * exp(ways[0].expected(beat - 1, beat - 1));
-  const off = logRr[beat - 1] - log(usualMs / 1000);
+  const { rrMs } = view;
+  const off = offRhythm(view, beat);
+  const usualMs = rrMs[beat] / exp(off);
   const kind = off > FAR ? 'missed-beat' : off < -FAR ? 'early-beat' : 'odd-shape';
   const interval = Number.isNaN(off)
     ? 'what is spoiled or missing before it leaves its interval open'

@@ -44,6 +44,14 @@ function Spans({ rows }: { readonly rows: readonly SpanRow[] }) {
           cells={rows.map(({ cause, minutes }) => [cause, minutes])}
         />
         <SpanLine
+          title="minutes excluded for the stomach, reported lead"
+          cells={rows.map(({ cause, stomachMinutes }) => [cause, stomachMinutes])}
+        />
+        <SpanLine
+          title="minutes excluded for the heart"
+          cells={rows.map(({ cause, heartMinutes }) => [cause, heartMinutes ?? '—'])}
+        />
+        <SpanLine
           title="set by hand / proposed by the program"
           cells={rows.map(({ cause, byHand, proposed }) => [cause, `${byHand} / ${proposed}`])}
         />

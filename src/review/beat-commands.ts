@@ -1,26 +1,20 @@
-import { BEAT_CLASSES, type BeatClass, beatAt, firstBeatAt } from '../recording/beat';
-import type { SessionState } from '../session/document';
+import { BEAT_CLASSES, type BeatClass, firstBeatAt } from '../recording/beat';
 import { addBeat, classBeats, deleteBeats, moveBeat } from '../session/edits';
 import { secondsToTicks, TICKS_PER_SAMPLE, ticksToSeconds } from '../units/ticks';
-import { formatClock } from '../units/time';
+import { formatClock, parseClock } from '../units/time';
 import type { SignalAccess } from './analysis-store';
-import { beatsAtTicks, beatsInView, heartRateHz, rrMsAt } from './beats-in-view';
+import { type BeatChoosing, beatChoosing } from './beat-choosing';
+import { beatsInView } from './beats-in-view';
 import { asWork } from './idle';
 import { insideStudy } from './navigate';
+import { type OpenBeats, openBeats, selectedTicks } from './open-beats';
 import { type PaneActs, tryEdit } from './pane-acts';
 import type { PaneStores } from './row-view';
-import { lookAtSeconds } from './view-store';
+
+export { beatWords, openBeats, selectedTicks } from './open-beats';
 
 /** Acts on beats. */
-export interface BeatCommands {
-  /** Selects the beat after or before the selected one (or the middle of Seconds) and brings it in sight. */
-  selectNextBeat(): void;
-  selectPreviousBeat(): void;
-  /** Selects one beat; with `extend` all from the one selected before up to it. */
-  selectBeat(tick: number, extend: boolean): void;
-  /** Selects every beat inside the Seconds window. */
-  selectBeatsInView(): void;
-  clearSelection(): void;
+export interface BeatCommands extends BeatChoosing {
   /** Adds a beat where the R peak near a time stands; where none is visible, at the time itself, as placed. */
   addBeatNear(atS: number): void;
   addBeatAtCursor(): void;
@@ -31,36 +25,8 @@ export interface BeatCommands {
   /** Moves the one selected beat by whole samples of its lead. */
   moveSelectedBySamples(samples: number): void;
   moveBeatTo(fromTick: number, atS: number): void;
-}
-
-interface Open {
-  readonly state: SessionState;
-  readonly rateHz: number;
-}
-
-/** The open session with the clock of its beats; null without a study or a heart lead. */
-export function openBeats({ session, analysis }: PaneStores): Open | null {
-  const state = session.getState().session?.state;
-  const { recording } = analysis.getState();
-  const rateHz = state && recording ? heartRateHz(state.roles, recording) : null;
-  return state && rateHz ? { state, rateHz } : null;
-}
-
-/** Ticks of the selected beats that are still there, ascending. */
-export function selectedTicks(stores: PaneStores): readonly number[] {
-  const { selection } = stores.view.getState();
-  const open = openBeats(stores);
-  if (selection.kind !== 'beats' || !open) return [];
-  return beatsAtTicks(open.state.beats, selection.ticks).map((beat) => beat.tick);
-}
-
-/** A beat in words: class, time, the interval that ends at it. */
-export function beatWords({ state, rateHz }: Open, index: number): string {
-  const { tick, beatClass, origin } = beatAt(state.beats, index);
-  const rrMs = rrMsAt(state.beats, index, rateHz);
-  const interval = !Number.isNaN(rrMs) ? `, interval ${Math.round(rrMs)} ms` : '';
-  const placed = origin === 'placed' ? ', placed' : '';
-  return `beat ${beatClass} at ${formatClock(ticksToSeconds(tick, rateHz), 3)}${interval}${placed}`;
+  /** Moves a beat to a typed time; one that cannot be read is said. */
+  moveBeatToTyped(fromTick: number, text: string): void;
 }
 
 /** Makes the acts on beats. */
@@ -73,7 +39,7 @@ export function beatCommands(
   const select = (ticks: readonly number[]) =>
     view.setState({ selection: { kind: 'beats', ticks } });
   return {
-    ...choosing(stores, act, select),
+    ...beatChoosing(stores, act),
     ...placing(stores, signals, act, select),
     ...moving(stores, signals, act, select),
     deleteSelectedBeats: () => {
@@ -95,73 +61,6 @@ export function beatCommands(
       tryEdit(stores, act, ({ state }) => classBeats(state, ticks, beatClass, open.rateHz));
     },
   };
-}
-
-type Choosing =
-  | 'selectNextBeat'
-  | 'selectPreviousBeat'
-  | 'selectBeat'
-  | 'selectBeatsInView'
-  | 'clearSelection';
-
-function choosing(
-  stores: PaneStores,
-  act: PaneActs,
-  select: (ticks: readonly number[]) => void,
-): Pick<BeatCommands, Choosing> {
-  const { view } = stores;
-  return {
-    selectNextBeat: () => stepBeat(stores, act, select, 1),
-    selectPreviousBeat: () => stepBeat(stores, act, select, -1),
-    selectBeat: (tick, extend) => {
-      const chosen = selectedTicks(stores);
-      const open = openBeats(stores);
-      if (!extend || chosen.length === 0 || !open) {
-        select([tick]);
-        return;
-      }
-      const from = firstBeatAt(open.state.beats, Math.min(chosen[0], tick));
-      const last = Math.max(chosen[chosen.length - 1], tick);
-      select(
-        Array.from(open.state.beats.ticks.subarray(from, firstBeatAt(open.state.beats, last + 1))),
-      );
-    },
-    selectBeatsInView: () => {
-      const open = openBeats(stores);
-      if (!open) return;
-      const [from, to] = beatsInView(open.state.beats, view.getState().seconds, open.rateHz);
-      select(Array.from(open.state.beats.ticks.subarray(from, to)));
-      act.say(`${to - from} beats selected`);
-    },
-    clearSelection: () => view.setState({ selection: { kind: 'none' } }),
-  };
-}
-
-/** Selects the beat one on from what is selected, brings it in sight and says it. */
-function stepBeat(
-  stores: PaneStores,
-  act: PaneActs,
-  select: (ticks: readonly number[]) => void,
-  way: 1 | -1,
-): void {
-  const open = openBeats(stores);
-  if (!open) return;
-  const { beats } = open.state;
-  const { seconds } = stores.view.getState();
-  const chosen = selectedTicks(stores);
-  const middle = secondsToTicks((seconds.fromS + seconds.toS) / 2, open.rateHz);
-  const edge = way > 0 ? chosen[chosen.length - 1] : chosen[0];
-  const next =
-    way > 0
-      ? firstBeatAt(beats, edge === undefined ? middle : edge + 1)
-      : firstBeatAt(beats, edge ?? middle) - 1;
-  if (next < 0 || next >= beats.ticks.length) {
-    act.say(way > 0 ? 'No beat after this' : 'No beat before this');
-    return;
-  }
-  select([beats.ticks[next]]);
-  bringInSight(stores, ticksToSeconds(beats.ticks[next], open.rateHz));
-  act.say(beatWords(open, next));
 }
 
 function placing(
@@ -211,7 +110,7 @@ function moving(
   signals: SignalAccess,
   act: PaneActs,
   select: (ticks: readonly number[]) => void,
-): Pick<BeatCommands, 'moveSelected' | 'moveSelectedBySamples' | 'moveBeatTo'> {
+): Pick<BeatCommands, 'moveSelected' | 'moveSelectedBySamples' | 'moveBeatTo' | 'moveBeatToTyped'> {
   const moved = async (fromTick: number, wanted: number) => {
     const open = openBeats(stores);
     if (!open) return;
@@ -243,6 +142,16 @@ function moving(
       const open = openBeats(stores);
       if (open) move(fromTick, secondsToTicks(atS, open.rateHz));
     },
+    moveBeatToTyped: (fromTick, text) => {
+      const open = openBeats(stores);
+      const atS = parseClock(text);
+      if (!open) return;
+      if (atS === null || atS > stores.view.getState().durationS)
+        act.reportError(
+          `The beat stays: “${text}” is no time in this recording. Type seconds, m:ss or h:mm:ss.`,
+        );
+      else move(fromTick, secondsToTicks(atS, open.rateHz));
+    },
   };
 }
 
@@ -254,7 +163,7 @@ const ON_PEAK_S = 0.06;
 /** A place for a moved beat that passes none of its neighbours and stays in the study. */
 function betweenNeighbours(
   { view }: PaneStores,
-  { state, rateHz }: Open,
+  { state, rateHz }: OpenBeats,
   fromTick: number,
   wanted: number,
 ): number {
@@ -277,11 +186,4 @@ function beatWithin(stores: PaneStores, tick: number, withinS: number): number |
     .filter((one) => Math.abs(one - tick) < secondsToTicks(withinS, open.rateHz))
     .sort((a, b) => Math.abs(a - tick) - Math.abs(b - tick));
   return near[0] ?? null;
-}
-
-/** Pans Seconds so that a time is clear of its ends. */
-function bringInSight({ view }: PaneStores, atS: number): void {
-  const { fromS, toS } = view.getState().seconds;
-  const margin = (toS - fromS) / 10;
-  if (atS < fromS + margin || atS > toS - margin) lookAtSeconds(view, atS);
 }

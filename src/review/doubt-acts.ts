@@ -37,7 +37,7 @@ export function doubtSpoken(doubt: Doubt, place: string, rateHz: number): string
 /** Puts a doubt in front: the panes travel there, what it is about is picked out, and it is read out. */
 export type BringInFront = (doubt: Doubt) => void;
 
-export function bringer({ stores, doubts, act }: DoubtParts): BringInFront {
+export function bringer({ stores, doubts }: DoubtParts): BringInFront {
   const travel = doubtTraveller(stores.view);
   return (doubt) => {
     doubts.setState({ frontId: doubt.id });
@@ -50,7 +50,7 @@ export function bringer({ stores, doubts, act }: DoubtParts): BringInFront {
     const open = openNow({ stores, doubts });
     const at = open.findIndex(({ id }) => id === doubt.id) + 1;
     const place = `Doubt ${at} of ${open.length}, ${placeWords(doubt, rateHz)}`;
-    act.say(doubtSpoken(doubt, place, rateHz ?? 1));
+    doubts.setState({ spoken: doubtSpoken(doubt, place, rateHz ?? 1) });
   };
 }
 

@@ -24,7 +24,7 @@ const OUTCOME_WORDS: Readonly<Record<DoubtEnding, string>> = { kept: 'Kept', men
  * to the front again, and the panes draw the one in front. Holds as long as the page lives.
  */
 export function followDoubts(parts: DoubtParts, bring: BringInFront): void {
-  const { stores, doubts, act } = parts;
+  const { stores, doubts } = parts;
   const { session, view } = stores;
 
   function settled(edit: Edit, before: Session): void {
@@ -43,10 +43,7 @@ export function followDoubts(parts: DoubtParts, bring: BringInFront): void {
     const after = was.slice(was.indexOf(front) + 1);
     const next = after.find((doubt) => open.includes(doubt)) ?? open[0];
     if (next) bring(next);
-    else {
-      doubts.setState({ frontId: null });
-      act.say(`${OUTCOME_WORDS[ending]}. No open doubts are left.`);
-    }
+    else doubts.setState({ frontId: null, spoken: 'No open doubts are left.' });
   }
 
   function grown(now: Session, before: Session): void {

@@ -44,6 +44,8 @@ export interface DoubtState {
   /** The doubt in front; null: the first open one. */
   readonly frontId: string | null;
   readonly outcome: DoubtOutcome | null;
+  /** The doubt in front as it is read out once the panes have come to it. */
+  readonly spoken: string;
   /** Null until the part of the page that deals with doubts is loaded. */
   readonly acts: DoubtActs | null;
 }
@@ -56,6 +58,7 @@ export const NO_DOUBTS = {
   search: { kind: 'waiting' },
   frontId: null,
   outcome: null,
+  spoken: '',
 } as const satisfies Partial<DoubtState>;
 
 /** The page's list of doubts. */

@@ -1,11 +1,12 @@
 import { useCallback, useMemo } from 'react';
 import { useStore } from 'zustand';
+import { useCommandLinks } from './command-links';
 import { useLeadsShown } from './leads-shown';
 import { MINUTES, minutesActs } from './minutes-view';
 import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
 import { minutesRows, reportedOnly } from './rows';
-import { SpanBar } from './span-bar';
+import { SelectionBar } from './selection-bar';
 import { EpochTable, SpanTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 import { useRoles } from './use-roles';
@@ -34,6 +35,7 @@ export function MinutesPane(props: PaneProps) {
     () => (roles && recording ? minutesRows(roles, recording, { breathing, route }) : []),
     [roles, recording, breathing, route],
   );
+  const { hint } = useCommandLinks();
   const commands = usePaneCommands(props);
   const setUp = useCallback(
     (): PaneSetup => ({ kind: MINUTES, acts: (view) => minutesActs(view, commands) }),
@@ -52,16 +54,25 @@ export function MinutesPane(props: PaneProps) {
       notice={null}
     >
       <div className="pane-switches">
-        <button type="button" aria-pressed={excluding} title="Key E" onClick={commands.toggleTool}>
+        <button
+          type="button"
+          aria-pressed={excluding}
+          title={hint('Drag to exclude, or to look', 'toggle-tool')}
+          onClick={commands.toggleTool}
+        >
           {excluding ? 'Dragging excludes' : 'Exclude by dragging'}
         </button>
         {several && (
-          <button type="button" title="Key L" onClick={commands.toggleLeads}>
+          <button
+            type="button"
+            title={hint('All leads, or the reported one', 'toggle-leads')}
+            onClick={commands.toggleLeads}
+          >
             {shown === 'all' ? 'Reported lead only' : `Show all ${allRoles?.slow.length} leads`}
           </button>
         )}
       </div>
-      <SpanBar stores={stores} commands={commands} />
+      <SelectionBar of="span" stores={stores} commands={commands} />
       <EpochTable stores={stores} commands={commands} />
       <SpanTable stores={stores} commands={commands} />
     </PaneFrame>

@@ -1,3 +1,4 @@
+import { useCommandLinks } from './command-links';
 import type { LookCommands } from './look-commands';
 
 /** Buttons that pan and zoom a pane, for those who neither wheel nor drag. */
@@ -10,20 +11,21 @@ export function PaneMoves({
   readonly title: string;
   readonly commands: LookCommands;
 }) {
+  const { hint } = useCommandLinks();
   const minutes = name === 'minutes';
   const moves = [
-    ['‹', 'earlier', minutes ? commands.minutesLeft : commands.secondsLeft],
-    ['›', 'later', minutes ? commands.minutesRight : commands.secondsRight],
-    ['+', 'closer', minutes ? commands.minutesIn : commands.secondsIn],
-    ['−', 'wider', minutes ? commands.minutesOut : commands.secondsOut],
+    ['‹', 'earlier', 'left', minutes ? commands.minutesLeft : commands.secondsLeft],
+    ['›', 'later', 'right', minutes ? commands.minutesRight : commands.secondsRight],
+    ['+', 'closer', 'in', minutes ? commands.minutesIn : commands.secondsIn],
+    ['−', 'wider', 'out', minutes ? commands.minutesOut : commands.secondsOut],
   ] as const;
   return (
     <div className="pane-moves">
-      {moves.map(([sign, words, act]) => (
+      {moves.map(([sign, words, way, act]) => (
         <button
           type="button"
           key={words}
-          title={`${title}: ${words}`}
+          title={hint(`${title}: ${words}`, `${name}-${way}`)}
           aria-label={`${title}: ${words}`}
           onClick={act}
         >

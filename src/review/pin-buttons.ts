@@ -1,4 +1,4 @@
-import { beatWords, openBeats } from './beat-commands';
+import { beatWords, openBeats } from './open-beats';
 import type { PaneCommands } from './pane-commands';
 import type { PaneView } from './pane-view';
 import { PIN_Y_PX, pinsInView } from './seconds-paint';

@@ -1,10 +1,11 @@
 import { type BeatList, beatAt } from '../recording/beat';
 import { ticksToSeconds } from '../units/ticks';
-import { openBeats, selectedTicks } from './beat-commands';
 import { beatsInView, rrMsAt } from './beats-in-view';
 import { intervalFits } from './interval-fit';
+import { openBeats, selectedTicks } from './open-beats';
 import type { PaneView } from './pane-view';
 import { drawPinHead, PIN_RADIUS_PX } from './pin-shapes';
+import type { TimeWindow } from './view-store';
 
 /** Middle of the pins' heads, in CSS pixels from the pane's top. */
 export const PIN_Y_PX = 13;
@@ -47,6 +48,21 @@ export function pinsInView(view: PaneView, drag: BeatDrag | null): readonly Pin[
     const atS = drag?.tick === tick ? drag.atS : ticksToSeconds(tick, open.rateHz);
     return { index: first + i, tick, atS, x: view.xOf(atS), selected: chosen.has(tick) };
   });
+}
+
+/** Paints the stretch whose beats a drag is picking out: its two ends, and what lies between a little darker. */
+export function paintBand(
+  brush: CanvasRenderingContext2D,
+  view: PaneView,
+  { fromS, toS }: TimeWindow,
+): void {
+  const [left, right] = [view.xOf(fromS), view.xOf(toS)];
+  brush.fillStyle = view.tokens.focus;
+  brush.globalAlpha = 0.12;
+  brush.fillRect(left, 0, right - left, view.bottomPx);
+  brush.globalAlpha = 1;
+  brush.fillRect(left - 1, 0, 2, view.bottomPx);
+  brush.fillRect(right - 1, 0, 2, view.bottomPx);
 }
 
 /** Paints intervals, stems and heads of the pins in view, or says that there are too many. */

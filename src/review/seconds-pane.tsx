@@ -1,11 +1,11 @@
 import { useCallback, useMemo } from 'react';
 import { useStore } from 'zustand';
-import { BeatBar } from './beat-bar';
 import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
 import { PinButtons } from './pin-buttons';
 import { secondsRows } from './rows';
 import { pinKey, type SecondsParts, secondsActs, secondsKind } from './seconds-view';
+import { SelectionBar } from './selection-bar';
 import { BeatTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 import { useRoles } from './use-roles';
@@ -26,7 +26,11 @@ export function SecondsPane(props: PaneProps) {
     (section: HTMLElement): PaneSetup => {
       const stage = section.querySelector('[data-part="stage"]');
       if (!(stage instanceof HTMLElement)) throw new Error('Seconds has no stage');
-      const parts: SecondsParts = { buttons: new PinButtons(stage, commands), drag: null };
+      const parts: SecondsParts = {
+        buttons: new PinButtons(stage, commands),
+        drag: null,
+        band: null,
+      };
       const keys = (event: KeyboardEvent) => {
         const chosen = stores.view.getState().selection.kind === 'beats';
         if (event.target !== stage || !chosen || !pinKey(commands, event)) return;
@@ -60,7 +64,7 @@ export function SecondsPane(props: PaneProps) {
       hasSlot={false}
       notice={noHeart ? NO_HEART : null}
     >
-      <BeatBar stores={stores} commands={commands} />
+      <SelectionBar of="beats" stores={stores} commands={commands} />
       <BeatTable stores={stores} commands={commands} />
     </PaneFrame>
   );

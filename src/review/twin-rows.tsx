@@ -2,9 +2,9 @@ import { useStore } from 'zustand';
 import { beatAt } from '../recording/beat';
 import { ticksToSeconds } from '../units/ticks';
 import { formatClock } from '../units/time';
-import { openBeats, selectedTicks } from './beat-commands';
 import { beatsInView, rrMsAt } from './beats-in-view';
 import { goTo } from './navigate';
+import { openBeats, selectedTicks } from './open-beats';
 import type { PaneStores } from './row-view';
 import type { TwinProps } from './twin-tables';
 

@@ -12,7 +12,8 @@ export type Tool = 'look' | 'exclude';
 /** What is picked out: beats by their ticks, or one spoiled span. */
 export type Selection =
   | { readonly kind: 'none' }
-  | { readonly kind: 'beats'; readonly ticks: readonly number[] }
+  /** `anchor`: the end that stays while the selection grows or shrinks, where it does. */
+  | { readonly kind: 'beats'; readonly ticks: readonly number[]; readonly anchor?: number }
   | { readonly kind: 'span'; readonly id: number };
 
 /** A stretch being drawn or dragged that is no edit yet: a new spoiled span (`spanId` null) or an old one's new place. */

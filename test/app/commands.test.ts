@@ -3,6 +3,14 @@ import { describe, expect, it } from 'vitest';
 import { COMMAND_GROUPS, type CommandParts, GROUP_WORDS } from '../../src/app/command';
 import { COMMANDS, commandForKey, commandOf } from '../../src/app/commands';
 import { isPlainKey, keyName, keyWords } from '../../src/app/key-names';
+import {
+  actingKeys,
+  keyFault,
+  keysOf,
+  type OwnKeys,
+  readOwnKeys,
+  shownKey,
+} from '../../src/app/own-keys';
 import { BEAT_CLASSES } from '../../src/recording/beat';
 
 const press = (key: string, parts: Partial<Parameters<typeof keyName>[0]> = {}) =>
@@ -34,6 +42,14 @@ describe('the table of commands', () => {
     }
     const words = COMMANDS.map((one) => one.words);
     expect(new Set(words).size).toBe(words.length);
+  });
+
+  it('lets each command be reached while keys of a single character are off: by another key, or from the keys page', () => {
+    const page = commandOf('keys');
+    expect(actingKeys(page, { ownKeys: {}, plainKeys: false })).not.toEqual([]);
+    const dialog = readFileSync('src/app/keys-dialog.tsx', 'utf8');
+    expect(dialog).toContain('command.run(parts)');
+    for (const one of COMMANDS) expect(COMMAND_GROUPS, one.id).toContain(one.group);
   });
 
   it('puts every command under a heading of the keys page', () => {
@@ -77,11 +93,11 @@ describe('the table of commands', () => {
 });
 
 /** Parts with a study open and a beat selected; `report` puts the report in the place of the panes. */
-const partsWith = (report: boolean, plainKeys = true): CommandParts => {
+const partsWith = (report: boolean, plainKeys = true, ownKeys: OwnKeys = {}): CommandParts => {
   const parts = {
     session: { getState: () => ({ session: {} }) },
     view: { getState: () => ({ selection: { kind: 'beats', ticks: [1] } }) },
-    shell: { getState: () => ({ plainKeys }) },
+    shell: { getState: () => ({ plainKeys, ownKeys }) },
     page: { reportOpen: () => report, reportThere: true },
   };
   return parts as unknown as CommandParts;
@@ -99,6 +115,51 @@ describe('keys with a study open', () => {
   it('of a single character rest while they are switched off', () => {
     expect(commandForKey('V', partsWith(false, false))).toBeNull();
     expect(commandForKey('Ctrl+S', partsWith(false, false))?.id).toBe('download-session');
+  });
+});
+
+describe('keys that a person has changed', () => {
+  const own = { 'next-beat': 'J' };
+  const table = { commands: COMMANDS, ownKeys: {} };
+
+  it('act, and the given ones no more', () => {
+    expect(commandForKey('J', partsWith(false, true, own))?.id).toBe('next-beat');
+    expect(commandForKey('.', partsWith(false, true, own))).toBeNull();
+    expect(commandForKey('J', partsWith(false))).toBeNull();
+  });
+
+  it('are the ones shown, and rest with the others of a single character', () => {
+    const nextBeat = commandOf('next-beat');
+    expect(shownKey(nextBeat, { ownKeys: own, plainKeys: true })).toBe('J');
+    expect(shownKey(nextBeat, { ownKeys: own, plainKeys: false })).toBe('');
+    expect(actingKeys(commandOf('keys'), { ownKeys: {}, plainKeys: false })).toEqual(['F1']);
+  });
+
+  it('are refused where another command has the key, which is named', () => {
+    const fault = keyFault(commandOf('next-beat'), 'Ctrl+S', table);
+    expect(fault).toContain('“Download the session”');
+    expect(keyFault(commandOf('next-beat'), 'J', table)).toBeNull();
+    expect(keyFault(commandOf('class-N'), 'J', { ...table, ownKeys: own })).toContain(
+      '“Next beat”',
+    );
+    expect(keyFault(commandOf('class-N'), '.', { ...table, ownKeys: own })).toBeNull();
+  });
+
+  it('are refused where the browser or moving about the page needs the key', () => {
+    for (const key of ['Tab', 'Enter', 'Space', 'Escape', 'Ctrl+W', 'Ctrl+C', 'F5'])
+      expect(keyFault(commandOf('next-beat'), key, table), key).toMatch(/kept by the browser/);
+    expect(keyFault(commandOf('clear-selection'), 'Escape', table)).toBeNull();
+  });
+
+  it('never leave two commands with one key, also where the table gives a new command that key', () => {
+    const keys = COMMANDS.flatMap((one) => keysOf(one, { 'next-beat': 'V' }));
+    expect(new Set(keys).size).toBe(keys.length);
+    expect(keysOf(commandOf('class-V'), { 'next-beat': 'V' })).toEqual([]);
+  });
+
+  it('are read with care', () => {
+    expect(readOwnKeys({ 'next-beat': 'J', 'class-N': 7, 'class-V': '' })).toEqual(own);
+    expect(readOwnKeys('J')).toEqual({});
   });
 });
 

@@ -51,6 +51,14 @@ describe('preferences', () => {
     expect(createShellStore(storage).getState()).toMatchObject({ theme: 'dark', plainKeys: false });
   });
 
+  it('hold the keys a person has changed, and nothing of any study', () => {
+    const storage = mapStorage();
+    createShellStore(storage).getState().setOwnKeys({ 'next-beat': 'J' });
+    expect(createShellStore(storage).getState().ownKeys).toEqual({ 'next-beat': 'J' });
+    const kept: unknown = JSON.parse(storage.getItem('bicadence.preferences') ?? '');
+    expect(Object.keys(kept as object).sort()).toEqual(['ownKeys', 'plainKeys', 'theme']);
+  });
+
   it('are the defaults where what is kept makes no sense or storage fails', () => {
     const storage = mapStorage();
     storage.setItem('bicadence.preferences', '{"theme":"plaid","plainKeys":"no"');

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { exportFiles } from '../../src/export/all-files';
 import { minuteOfHeart } from '../../src/export/minute-of-heart';
+import type { Doubt } from '../../src/recording/doubt';
 import { FIGURES } from '../../src/recording/figure-catalogue';
 import { epoch, inventedInput } from './invented-input';
 import { readCsv } from './read-csv';
@@ -13,6 +14,18 @@ const table = (name: string, from = input) => {
   const [header, ...rows] = readCsv(fileOf(name, from));
   return rows.map((row) => Object.fromEntries(row.map((cell, i) => [header[i], cell])));
 };
+/** An open doubt of the beat at a tick. */
+const doubtAt = (tick: number): Doubt => ({
+  id: `extra-beat-${tick}`,
+  kind: 'extra-beat',
+  fromS: 0,
+  toS: 0,
+  tick,
+  lead: null,
+  why: 'Invented.',
+  mend: null,
+  effect: null,
+});
 
 describe('the files of results', () => {
   it('are five, and name nobody', () => {
@@ -56,6 +69,21 @@ describe('beats.csv', () => {
       doubt: '',
     });
     expect(rows[4]).toMatchObject({ time_s: '13.260000', sample: '3315', rr_ms: '860.0', nn: '1' });
+  });
+  it('says at each beat whether a doubt stands there, and how it was settled', () => {
+    const [, kept, open, both] = input.state.beats.ticks;
+    const settled = (tick: number, ending: 'kept' | 'mended') => ({
+      id: `a-${tick}`,
+      ending,
+      tick,
+    });
+    const doubted = {
+      ...input,
+      state: { ...input.state, doubts: [settled(kept, 'kept'), settled(both, 'mended')] },
+      openDoubts: [doubtAt(open), doubtAt(both)],
+    };
+    const column = table('beats.csv', doubted).map(({ doubt }) => doubt);
+    expect(column).toEqual(['', 'kept', 'open', 'open', '', '', '']);
   });
   it('leaves an interval out where it is not known, and goes on in step after it', () => {
     const heart = input.heart;
@@ -121,11 +149,23 @@ describe('minutes.csv', () => {
       rmssd_ms: '42.5',
       beats: '7',
     });
-    expect(second).toMatchObject({ heart_rate_bpm: '', rmssd_ms: '', beats: '0', open_doubts: '' });
+    expect(second).toMatchObject({
+      heart_rate_bpm: '',
+      rmssd_ms: '',
+      beats: '0',
+      open_doubts: '0',
+    });
     const rr = input.heart?.rr;
     if (!rr) throw new Error('heart');
     expect(minuteOfHeart(rr, 0, []).heartRateBpm).toBeCloseTo(73.998, 3);
     expect(minuteOfHeart(rr, 0, []).rmssdMs).toBeCloseTo(42.485, 3);
+  });
+  it('counts the open doubts that end in the minute, those of another lead apart', () => {
+    const at = (toS: number, lead: string | null) => ({ ...doubtAt(1), toS, lead });
+    const lead = input.stomach[0].lead;
+    const openDoubts = [at(10, null), at(59.9, lead), at(60, null), at(61, '#9')];
+    const counts = table('minutes.csv', { ...input, openDoubts }).map((row) => row.open_doubts);
+    expect(counts.slice(0, 2)).toEqual(['2', '1']);
   });
   it('pairs no intervals across one that is not NN, was removed, or ends in another minute', () => {
     const rr = input.heart?.rr;

@@ -113,5 +113,6 @@ export function inventedInput(): ExportInput {
       from: 'lead',
     },
     findings: signature(7).findings,
+    openDoubts: [],
   };
 }

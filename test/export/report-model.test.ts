@@ -1,7 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { reportModel } from '../../src/export/report-model';
 import type { Findings, PhaseFindings } from '../../src/recording/findings';
+import { leadKey } from '../../src/recording/lead';
 import type { Recording } from '../../src/recording/recording';
+import type { Span } from '../../src/recording/span';
 import type { Session, SessionState, Signature } from '../../src/session/document';
 import { appendEdit, beginSession } from '../../src/session/log';
 import { signature } from '../session/invented-session';
@@ -231,9 +233,35 @@ describe('how the figures were made', () => {
       { ...first, id: 1, fromS: 0, toS: 60, cause: 'talk' as const },
       { ...first, id: 2, fromS: 30, toS: 90, cause: 'talk' as const, origin: 'proposed' as const },
     ];
-    expect(model({ state: { spans } }).spans).toEqual([
+    expect(model({ state: { spans } }).spans).toMatchObject([
       { cause: 'talk', spans: 2, minutes: '1.5', byHand: 1, proposed: 1 },
     ]);
+  });
+
+  it('says how many minutes each cause takes from each organ, and all of them together', () => {
+    const [first] = input.state.spans;
+    const { roles } = input.state;
+    const reported = leadKey(roles.slow[roles.reported]);
+    const spanOf = (id: number, fromS: number, toS: number, rest: Partial<Span>): Span => ({
+      ...first,
+      id,
+      fromS,
+      toS,
+      lead: null,
+      target: 'both',
+      ...rest,
+    });
+    const spans = [
+      spanOf(1, 0, 60, { cause: 'talk' }),
+      spanOf(2, 30, 90, { cause: 'move', target: 'heart' }),
+      spanOf(3, 90, 120, { cause: 'move', target: 'stomach', lead: reported }),
+      spanOf(4, 120, 150, { cause: 'move', target: 'stomach', lead: '#9' }),
+    ];
+    const rows = model({ state: { spans } }).spans.map(
+      ({ cause, minutes, stomachMinutes, heartMinutes }) =>
+        [cause, minutes, stomachMinutes, heartMinutes].join(' '),
+    );
+    expect(rows).toEqual(['move 2.0 0.5 1.0', 'talk 1.0 1.0 1.0', 'all causes 2.5 1.5 1.5']);
   });
 
   it('counts beats by class and what people did to them', () => {
@@ -250,7 +278,7 @@ describe('how the figures were made', () => {
         ),
     });
     expect(factOf(making, 'Beats')).toBe('7 (N 6, S 0, V 1, F 0, Q 0)');
-    expect(factOf(making, 'Beats edited')).toBe('1 added; 1 of those first found no longer there');
+    expect(factOf(making, 'Beats edited')).toBe('of 7 found by the program: 1 removed; 1 added');
     expect(factOf(model().making, 'Beats edited')).toBe('none');
   });
 });

@@ -92,7 +92,7 @@ describe('settling doubts one after another', () => {
     expect(at.middle()).toBe(300);
     at.acts.mend();
     expect(at.open()).toEqual([]);
-    expect(at.said.at(-1)).toBe('Mended. No open doubts are left.');
+    expect(at.doubts.getState().spoken).toBe('No open doubts are left.');
     const { beats, doubts } = at.state();
     expect([100, 200, 300].map((s) => beats.ticks.includes(tickAt(s)))).toEqual([
       false,
@@ -116,7 +116,7 @@ describe('settling doubts one after another', () => {
 
   it('is read out: where, why, what the mend would do to which figure', () => {
     at.acts.next();
-    expect(at.said.at(-1)).toBe(
+    expect(at.doubts.getState().spoken).toBe(
       'Doubt 1 of 3, 0:01:40.0, extra beat? It halves an interval. Remove the beat: RMSSD, fed 38.2 to 31.4 ms.',
     );
   });

@@ -50,6 +50,38 @@ describe('choosing beats', () => {
     expect(chosen(study)).toEqual([47, 48, 49, 50, 51, 52]);
   });
 
+  it('grows and shrinks at the loose end, the end it began with staying', () => {
+    const study = paneStudy();
+    study.commands.selectBeat(50 * SECOND, false);
+    study.commands.extendToNextBeat();
+    study.commands.extendToNextBeat();
+    expect(chosen(study)).toEqual([50, 51, 52]);
+    expect(study.said.at(-1)).toBe('3 beats from 0:00:50.0 to 0:00:52.0 selected');
+    study.commands.extendToPreviousBeat();
+    expect(chosen(study)).toEqual([50, 51]);
+    study.commands.extendToPreviousBeat();
+    study.commands.extendToPreviousBeat();
+    expect(chosen(study)).toEqual([49, 50]);
+    study.commands.extendToNextBeat();
+    expect(chosen(study)).toEqual([50]);
+  });
+
+  it('begins with the next beat where none is selected', () => {
+    const study = paneStudy();
+    study.commands.goTo(100.5);
+    study.commands.extendToNextBeat();
+    expect(chosen(study)).toEqual([101]);
+  });
+
+  it('takes all beats of a stretch, both ends included', () => {
+    const study = paneStudy();
+    study.commands.selectBeatsWithin({ fromS: 7, toS: 9.5 });
+    expect(chosen(study)).toEqual([7, 8, 9]);
+    study.commands.selectBeatsWithin({ fromS: 9.2, toS: 9.8 });
+    expect(chosen(study)).toEqual([]);
+    expect(study.said.at(-1)).toBe('No beat selected');
+  });
+
   it('says so at the ends', () => {
     const study = paneStudy();
     study.commands.selectBeat(599 * SECOND, false);
@@ -69,6 +101,28 @@ describe('mending beats', () => {
     expect(beatOf(study, 11 * SECOND)).toEqual(['V', 'detected']);
     study.stores.session.getState().undo();
     expect(beatOf(study, 11 * SECOND)).toEqual(['N', 'detected']);
+  });
+
+  it('deletes many beats in one undo step', () => {
+    const study = paneStudy();
+    study.commands.selectBeatsWithin({ fromS: 10, toS: 14 });
+    study.commands.deleteSelected();
+    expect(study.edits).toEqual(['delete 5 beats 0:00:10.0-0:00:14.0']);
+    expect(study.state().beats.ticks.length).toBe(594);
+    study.stores.session.getState().undo();
+    expect(study.state().beats.ticks.length).toBe(599);
+  });
+
+  it('moves a beat to a typed time, and says what it cannot read', async () => {
+    const study = paneStudy({ placeBeat: async () => ({ tick: 10.25 * SECOND, visible: true }) });
+    study.commands.moveBeatToTyped(10 * SECOND, '0:10.25');
+    await idle();
+    expect(beatOf(study, 10.25 * SECOND)).toEqual(['N', 'moved']);
+    study.commands.moveBeatToTyped(11 * SECOND, 'soon');
+    study.commands.moveBeatToTyped(11 * SECOND, '20:00');
+    expect(study.errors).toHaveLength(2);
+    expect(study.errors[0]).toContain('“soon” is no time');
+    expect(study.edits).toHaveLength(1);
   });
 
   it('is no edit where nothing would change', () => {

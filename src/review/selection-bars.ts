@@ -1,0 +1,2 @@
+export { BeatBar } from './beat-bar';
+export { SpanBar } from './span-bar';
