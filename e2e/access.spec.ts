@@ -120,11 +120,15 @@ test.describe('a study is open', () => {
 
   const dialogs: readonly (readonly [string, string])[] = [
     ['Shift+L', 'Leads and their roles'],
-    ['Shift+P', 'Phases and events'],
+    ['Shift+P', 'Phases'],
+    ['Shift+Z', 'Spoiled spans'],
+    ['Shift+E', 'Events and symptoms'],
     ['Shift+K', 'Meal and protocol'],
     ['Shift+S', 'Settings of the figures'],
     ['Control+g', 'Go to a time'],
     ['?', 'Keys'],
+    ['Shift+V', 'Select beats from one time to another'],
+    ['Shift+W', 'Find the beats of a stretch again'],
     ['Shift+F', 'Sign'],
   ];
   for (const [key, title] of dialogs)
@@ -135,6 +139,29 @@ test.describe('a study is open', () => {
       await page.keyboard.press('Escape');
       await expect(page.getByRole('dialog')).toBeHidden();
     });
+
+  test('the keys page while keys are changed, one refused', async () => {
+    await press(page, 'F1');
+    const dialog = dialogOf(page, 'Keys');
+    await dialog.getByRole('button', { name: 'Change keys' }).click();
+    await dialog.getByRole('button', { name: /key of “Next beat”/ }).click();
+    await page.keyboard.press('v');
+    await expect(dialog.getByRole('alert')).toBeVisible();
+    await expectClean('dialog');
+    await page.keyboard.press('Escape');
+    await page.keyboard.press('Escape');
+    await expect(dialog).toBeHidden();
+  });
+
+  test('the dialog that finds beats again, with a change to take', async () => {
+    await goTo(page, '0:31');
+    await press(page, 'Shift+W');
+    const dialog = dialogOf(page, 'Find the beats of a stretch again');
+    await dialog.getByLabel('R peaks are').selectOption('inverted');
+    await expect(dialog.getByRole('status')).toContainText('moved');
+    await expectClean('dialog');
+    await page.keyboard.press('Escape');
+  });
 
   test('the dialog about the program', async () => {
     await press(page, 'Shift+A');

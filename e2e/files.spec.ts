@@ -72,7 +72,7 @@ test('with edits, spans, phases and other settings too, by the downloaded sessio
   await settings.getByLabel('Route').first().selectOption('fractional');
   await settings.getByRole('button', { name: 'Use these settings' }).click();
   await page.keyboard.press('Shift+P');
-  const phases = page.getByRole('dialog', { name: 'Phases and events' });
+  const phases = page.getByRole('dialog', { name: 'Phases' });
   await phases.getByLabel('to', { exact: true }).first().fill('4:30');
   await phases.getByRole('button', { name: 'Use these phases' }).click();
   const zip = await downloadResults(page);

@@ -4,12 +4,14 @@ import {
   allFigures,
   chooseFile,
   dialogOf,
+  editNumber,
   expectNoTroubles,
   figure,
   figureButton,
   freshPage,
   goTo,
   openStudy,
+  pane,
   press,
   reviewAs,
   STEADY,
@@ -153,4 +155,116 @@ test('a figure tells what the edits of this sitting made of it, and of a session
   expectNoTroubles(other);
   await other.context().close();
   await page.context().close();
+});
+
+test.describe('two sessions of one study', () => {
+  let page: Page;
+  let there: Offered;
+  let thereRmssd: string;
+  test.beforeAll(async ({ browser }) => {
+    const other = await freshPage(browser);
+    await openStudy(other, STEADY);
+    await reviewAs(other, 'B. Tech');
+    await goTo(other, '0:31');
+    await press(other, '.');
+    await press(other, 'v');
+    await press(other, '.');
+    await press(other, 'Delete');
+    thereRmssd = await figure(other, 'rmssd_ms');
+    there = await downloadSession(other);
+    await other.context().close();
+    page = await freshPage(browser);
+    await openStudy(page, STEADY);
+    await reviewAs(page, 'A. Tech');
+    await goTo(page, '3:00');
+    await press(page, 'Control+e');
+    await goTo(page, '0:31');
+    await press(page, 'Escape');
+    await press(page, '.');
+    await press(page, 's');
+    await press(page, 'Escape');
+  });
+  test.afterAll(() => page.context().close());
+  test.afterEach(() => expectNoTroubles(page));
+
+  const openCompare = async (): Promise<Locator> => {
+    await press(page, 'Shift+C');
+    const dialog = dialogOf(page, 'Compare with another session');
+    await expect(dialog).toBeVisible();
+    await settled(page);
+    return dialog;
+  };
+  const choose = async (dialog: Locator, file: ReturnType<typeof given>) => {
+    await dialog.getByLabel('Session to compare with').setInputFiles(file);
+    await settled(page);
+  };
+
+  test('a session of another recording is refused with words', async () => {
+    const dialog = await openCompare();
+    const document = JSON.parse(there.bytes.toString('utf8'));
+    for (const state of [document, document.start])
+      state.study = { ...state.study, sha256: '0'.repeat(64), code: 'OTHER-1' };
+    const bytes = Buffer.from(JSON.stringify(document));
+    await choose(dialog, given({ ...there, bytes }));
+    await expect(dialog).toContainText('That session is of another recording (OTHER-1)');
+    await choose(dialog, given({ ...there, bytes: Buffer.from('no session') }));
+    await expect(dialog).toContainText('This session is damaged');
+    await expect(dialog.getByRole('table')).toHaveCount(0);
+    await press(page, 'Escape');
+  });
+
+  test('the planted differences are found, with agreement and both figures', async () => {
+    const edit = await editNumber(page);
+    const figures = await allFigures(page);
+    const dialog = await openCompare();
+    await choose(dialog, given(there));
+    await expect(dialog).toContainText('Here: 2 edits by A. Tech.');
+    await expect(dialog).toContainText('2 edits by B. Tech.');
+    const rows = (
+      await dialog.getByRole('table', { name: 'Agreement' }).locator('tr').allTextContents()
+    ).map(words);
+    // As many beats as went in (test/fixtures/steady/study.ts): one is gone there, one has another class.
+    expect(rows).toContain('beats37137037099.7 %');
+    expect(rows).toContain('beats of the same class36999.5 %');
+    const places = dialog.getByRole('region', { name: 'Places that differ' }).locator('tbody tr');
+    await expect(places).toHaveCount(3);
+    await expect(places.nth(0)).toHaveText(/beat of another classclass Sclass V$/);
+    await expect(places.nth(1)).toHaveText(/beat only hereclass N at 0:00:3\d\.\d{3}none$/);
+    await expect(places.nth(2)).toHaveText(
+      /^0:02:55stretch excluded by one onlyexcluded for stomach .*, heart .*, cause othercounts$/,
+    );
+    await expect(dialog).toContainText('Leads, settings, phases, events and words are the same.');
+    const rmssd = dialog
+      .getByRole('region', { name: 'Figures' })
+      .locator('tr', { hasText: 'RMSSD, ms' });
+    await expect(rmssd).toHaveText(
+      `RMSSD, msfasting${await figure(page, 'rmssd_ms')}${thereRmssd}`,
+    );
+    await press(page, 'Escape');
+    expect(await editNumber(page)).toBe(edit);
+    expect(await allFigures(page)).toEqual(figures);
+  });
+
+  test('a difference is a click away in the panes, and the others a key', async () => {
+    await goTo(page, '4:30');
+    const dialog = await openCompare();
+    await dialog.getByRole('button', { name: /beat only here$/ }).click();
+    await expect(dialog).toBeHidden();
+    expect(await told(page, 'Seconds')).toMatch(/from 0:00:2\d to 0:00:3\d/);
+    const status = page.locator('.foot-status');
+    await expect(status).toHaveText(
+      /^Difference 2 of 3: beat: here class N at 0:00:3\d\.\d{3}, there none$/,
+    );
+    const chosen = pane(page, 'Seconds').locator('button.pin[aria-pressed="true"]');
+    await expect(chosen).toHaveCount(1);
+    await press(page, 'Shift+J');
+    await expect(status).toHaveText(/^Difference 3 of 3: 0:02:55–0:03:05/);
+    expect(await told(page, 'Seconds')).toContain('0:02:5');
+    await press(page, 'Shift+J');
+    await expect(status).toHaveText(
+      /^Difference 1 of 3: beat at 0:00:3.*here class S, there class V$/,
+    );
+    await press(page, 'Shift+U');
+    await expect(status).toHaveText(/^Difference 3 of 3/);
+  });
 });

@@ -64,6 +64,7 @@ const SIGHTS = {
   bar: async () => words(await bar(page).textContent()),
   theme: async () => words(await page.locator('html').getAttribute('data-theme')),
   doubt: async () => words(await page.locator('[data-part="spoken"]').textContent()),
+  focused: () => page.evaluate(() => document.activeElement?.getAttribute('aria-label') ?? ''),
   focus: () => page.evaluate(() => document.activeElement?.id ?? ''),
   view: () => page.evaluate(() => window.location.hash),
 } satisfies Record<string, () => Promise<string>>;
@@ -76,13 +77,19 @@ type WindowChange = 'earlier' | 'later' | 'closer' | 'wider';
 
 const CHECKS: Readonly<Record<string, Check>> = {
   roles: ['', 'dialog', /^Leads and their roles$/],
-  phases: ['', 'dialog', /^Phases and events$/],
+  phases: ['', 'dialog', /^Phases$/],
+  'phase-borders': ['', 'focused', /^(start|end) of fasting$/],
+  spans: ['', 'dialog', /^Spoiled spans$/],
+  notes: ['', 'dialog', /^Events and symptoms$/],
+  'event-here': ['', 'dialog', /^Events and symptoms$/],
+  'symptom-here': ['', 'dialog', /^Events and symptoms$/],
   protocol: ['', 'dialog', /^Meal and protocol$/],
   settings: ['', 'dialog', /^Settings of the figures$/],
   sign: ['', 'dialog', /^Sign$/],
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
   log: ['', 'dialog', /^Log$/],
+  compare: ['', 'dialog', /^Compare with another session$/],
   'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
   bookmarks: ['', 'dialog', /^Bookmarks$/],
   keys: ['', 'dialog', /^Keys$/],
@@ -118,6 +125,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'extend-later': ['.', 'chosen', /^beat .*; beat [^;]*$/],
   'extend-earlier': ['.', 'chosen', /^beat .*; beat [^;]*$/],
   'beats-between': ['', 'dialog', /^Select beats from one time to another$/],
+  'find-within': ['', 'dialog', /^Find the beats of a stretch again$/],
   'beats-in-view': ['', 'chosen', /^(beat .*; ){10,}/],
   'clear-selection': ['.', 'chosen', /^$/],
   'add-beat': ['', 'undo', /^(add|place) beat at 0:00:/],
@@ -145,10 +153,12 @@ const CHECKS: Readonly<Record<string, Check>> = {
 };
 
 /**
- * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks are
- * stepped through in room.spec.
+ * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks and
+ * the room view: room.spec; differences of two sessions: history.spec.
  */
 const ELSEWHERE = [
+  'room',
+  ...COMMANDS.filter(({ when }) => when === 'room').map(({ id }) => id),
   'open-file',
   'open-session',
   'open-demo',
@@ -156,6 +166,8 @@ const ELSEWHERE = [
   'download-session',
   'download-results',
   'next-bookmark',
+  'next-difference',
+  'previous-difference',
   'previous-bookmark',
   'mend-doubt',
   'stop',

@@ -46,7 +46,7 @@ const reportText = async (): Promise<string> => {
 
 test('phases are typed: wrong ones are told beside the field, good ones are one step', async () => {
   const before = await allFigures(page);
-  const dialog = await openDialog('Shift+P', 'Phases and events');
+  const dialog = await openDialog('Shift+P', 'Phases');
   const [from, to] = [
     dialog.getByLabel('from', { exact: true }),
     dialog.getByLabel('to', { exact: true }),
@@ -72,7 +72,7 @@ test('phases are typed: wrong ones are told beside the field, good ones are one 
 });
 
 test('a time is taken from the file’s annotations', async () => {
-  const dialog = await openDialog('Shift+P', 'Phases and events');
+  const dialog = await openDialog('Shift+P', 'Phases');
   await dialog.getByLabel('to', { exact: true }).first().focus();
   await dialog.getByRole('button', { name: /water 20 °C/ }).click();
   await expect(dialog.getByLabel('to', { exact: true }).first()).toHaveValue('0:02:00.5');
@@ -80,13 +80,14 @@ test('a time is taken from the file’s annotations', async () => {
 });
 
 test('an event is noted and printed', async () => {
-  const dialog = await openDialog('Shift+P', 'Phases and events');
+  const dialog = await openDialog('Shift+E', 'Events and symptoms');
   await dialog.getByLabel('at', { exact: true }).fill('3:15');
   await dialog.getByLabel('what happened').fill('turned over');
-  await dialog.getByRole('button', { name: 'Add event' }).click();
-  await dialog.getByRole('button', { name: 'Use these phases' }).click();
+  await dialog.getByRole('button', { name: 'Write it' }).click();
+  await expect(dialog.getByRole('status')).toHaveText('Done: write event 0:03:15 turned over');
+  await dialog.getByRole('button', { name: 'Close' }).click();
   await settled(page);
-  expect(await undoName(page)).toBe('change events');
+  expect(await undoName(page)).toBe('write event 0:03:15 turned over');
   expect(await reportText()).toMatch(/0:03:15.*turned over/);
   await press(page, 'Control+z');
 });

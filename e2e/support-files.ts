@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { basename } from 'node:path';
 import { gzipSync } from 'node:zlib';
-import { RECORD } from './support';
+import { RECORD, STEADY } from './support';
 
 /** A file as the page is given it. */
 export interface GivenFile {
@@ -31,6 +31,17 @@ function withField([at, length]: readonly [number, number], text: string): Buffe
 /** The record as if it were of a person: an invented one, in the subfields of EDF+. */
 export const namedRecord = (): GivenFile =>
   given('visit-7.edf', withField(PATIENT, 'ZZ-0077 F 02-MAY-1961 Avila_Example'));
+
+/** Five steady minutes, an invented person in every place of the header that can hold one: code, name, text, label, file. */
+export function namedThroughout(): GivenFile {
+  const bytes = readFileSync(STEADY);
+  const write = (text: string, at: number, length: number) =>
+    bytes.write(text.padEnd(length).slice(0, length), at, 'latin1');
+  write('ZZ-0077 F 02-MAY-1961 Avila_Example', 8, 80);
+  write('Startdate 14-MAY-2024 ADM-99 Dr_Prober Rig_7', 88, 80);
+  write('EGG Avila', 256, 16);
+  return given('visit-7.edf', bytes);
+}
 
 /** Cut off inside the header. */
 export const cutHeader = (): GivenFile => given('cut.edf', readFileSync(RECORD).subarray(0, 500));

@@ -128,7 +128,7 @@ export async function putMessagesAway(page: Page): Promise<void> {
 export async function goTo(page: Page, time: string): Promise<void> {
   await page.keyboard.press('Control+g');
   const dialog = dialogOf(page, 'Go to a time');
-  await dialog.getByLabel('Time from the start').fill(time);
+  await dialog.getByLabel('Time', { exact: true }).fill(time);
   await page.keyboard.press('Enter');
   await expect(dialog).toBeHidden();
   await settled(page);

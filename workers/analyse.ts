@@ -12,6 +12,7 @@ import { confirmStudy } from '../src/session/confirm-study';
 import type { Session, SessionState } from '../src/session/document';
 import { initialState, studyIdentity } from '../src/session/initial-state';
 import { beginSession } from '../src/session/log';
+import { notesOf } from '../src/session/note-edits';
 import { textToSession } from '../src/session/read-document';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
@@ -127,6 +128,7 @@ function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionSt
     beatRateHz: roles.heart ? recording.channels[leadChannels(roles.heart)[0]].rateHz : 1,
     phases: state.phases,
     spans: state.spans,
+    notes: notesOf(state),
   });
 }
 

@@ -87,6 +87,27 @@ export interface LookAlikes {
   readonly averageUv: Float32Array | null;
 }
 
+/** Where and how beats are to be looked for once more. */
+export interface WithinRequest extends Interval {
+  /** The lead to look in, and the one whose clock the beats are told by. */
+  readonly lead: Lead;
+  readonly heartLead: Lead;
+  /** Which extreme a beat's time is taken at. */
+  readonly polarity: 'dominant' | 'upright' | 'inverted';
+  readonly eager: 'less' | 'usual' | 'more';
+  readonly spans: readonly Span[];
+  readonly settings: Settings;
+}
+
+/** Beats found in a stretch and about it; nothing of the study's own has changed. */
+export interface FoundWithin {
+  /** Ticks of the heart lead's rate, also beyond the ends of the stretch, as far as was looked. */
+  readonly beats: BeatList;
+  readonly lookedIn: Interval;
+  /** Parts of the stretch in which no beat was looked for. */
+  readonly left: readonly Interval[];
+}
+
 /** Facts of the separation that the panes and dialogs show. */
 export interface SeparationFacts {
   readonly lead: string;
@@ -189,6 +210,8 @@ export interface AnalysisApi {
    * itself stay as they are.
    */
   figuresOf(job: JobId, states: readonly ReviewInputs[]): Promise<Reply<readonly Findings[]>>;
+  /** Finds the beats of a stretch with other choices. */
+  detectWithin(job: JobId, request: WithinRequest): Promise<Reply<FoundWithin>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   cancel(job: JobId): void;

@@ -9,6 +9,7 @@ import type {
   Columns,
   ColumnsRequest,
   DoubtList,
+  FoundWithin,
   Given,
   JobId,
   LookAlikes,
@@ -17,6 +18,7 @@ import type {
   Proposal,
   ReviewInputs,
   TextReading,
+  WithinRequest,
   WorkerNews,
 } from './analysis-api';
 
@@ -58,6 +60,7 @@ export interface AnalysisClient {
     states: readonly ReviewInputs[],
     options?: CallOptions,
   ): Promise<Reply<readonly Findings[]>>;
+  detectWithin(request: WithinRequest, options?: CallOptions): Promise<Reply<FoundWithin>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   /** Ends the worker for good. */
@@ -219,6 +222,7 @@ export function createAnalysisClient(
     lookAlikes: (inputs, settled, doubtId, options) =>
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
     figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),
+    detectWithin: (request, options) => call((api, job) => api.detectWithin(job, request), options),
     columns: (request) => call((api) => api.columns(request)),
     placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
     close() {

@@ -3,80 +3,148 @@ import { heartHalfWidths } from '../src/heart/half-widths';
 import { heartFigures } from '../src/heart/heart-figures';
 import { rrSeries } from '../src/heart/rr-series';
 import { type BeatList, changeBeats, firstBeatAt } from '../src/recording/beat';
-import type { Doubt, DoubtEffect } from '../src/recording/doubt';
-import type { Figures, FigureValue } from '../src/recording/figure';
+import type { Doubt, DoubtEffect, Mend } from '../src/recording/doubt';
+import { type Figures, type FigureValue, numberOf } from '../src/recording/figure';
+import { lostOn } from '../src/recording/lost';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
-import type { Interval } from '../src/recording/span';
+import type { Interval, Span, SpanTarget } from '../src/recording/span';
+import { stomachFigures } from '../src/stomach/figures';
+import { stomachHalfWidths, TIME_KEYS } from '../src/stomach/half-widths';
+import { slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
+import { createStomachMemory, type StomachMemory } from '../src/stomach/stomach-memory';
 import { secondsToTicks } from '../src/units/ticks';
 import type { Job } from './job';
 import type { DoubtInputs } from './pipeline-doubts';
 
-/** Figures of the heart that a doubt of a beat may move, in the order they are shown. */
+/** Figures that a doubt may move, in the order they are shown. */
 const HEART_KEYS = ['heart_rate_bpm', 'rmssd_ms', 'sdnn_ms', 'lf_ms2', 'hf_ms2'] as const;
+const STOMACH_KEYS = ['df_median_cpm', ...TIME_KEYS, 'dp_mean_spectrum_db'] as const;
 /** Beats so far outside a phase are kept beside its own. */
 const BESIDE_S = 10;
 
-/** What the figures of one phase are, and what they would be. */
-interface PhaseEffects {
-  readonly effectOf: (doubt: Doubt) => DoubtEffect | null;
+type Organ = 'heart' | 'stomach';
+
+/** The figures of one organ in one phase as they stand, and as they would be. */
+interface Side {
+  readonly keys: readonly string[];
+  readonly before: Figures;
+  readonly halfWidths: Readonly<Record<string, number>>;
+  readonly after: (mend: Mend) => Figures;
 }
 
-/** The doubts with what each mend does to the figure it moves most, the one that moves one most first; ties by time. */
+/**
+ * The doubts with what each mend does to the figure it moves most in its phase, the one that moves one most first; ties in the
+ * order of time. The slow wave is taken as it is drawn now, though spans that change draw it anew.
+ */
 export async function withEffects(
   from: DoubtInputs,
   doubts: readonly Doubt[],
   job: Job,
 ): Promise<readonly Doubt[]> {
-  const known = new Map<Phase, PhaseEffects>();
   const phases = phasesOrWhole(from.inputs.phases, from.recording.durationS);
+  const sides = new Map<string, Side>();
+  const sideOf = (organ: Organ, phase: Phase, place: number): Side => {
+    const key = `${organ} ${place}`;
+    const side = sides.get(key) ?? (organ === 'heart' ? heartSide : stomachSide)(from, phase);
+    sides.set(key, side);
+    return side;
+  };
   const judged: Doubt[] = [];
   for (const doubt of doubts) {
-    await job.breathe();
-    const phase = phases.find(({ fromS, toS }) => doubt.toS >= fromS && doubt.toS < toS);
-    if (!phase || !doubt.mend) {
+    const place = phases.findIndex(({ fromS, toS }) => doubt.toS >= fromS && doubt.toS < toS);
+    const { mend } = doubt;
+    if (place < 0 || !mend) {
       judged.push(doubt);
       continue;
     }
-    const effects = known.get(phase) ?? heartEffects(from, phase);
-    known.set(phase, effects);
-    judged.push({ ...doubt, effect: effects.effectOf(doubt) });
+    let effect: DoubtEffect | null = null;
+    for (const organ of organsOf(from, mend)) {
+      await job.breathe();
+      effect = greater(
+        effect,
+        greatestOf(phases[place], sideOf(organ, phases[place], place), mend),
+      );
+    }
+    judged.push({ ...doubt, effect });
   }
-  const weight = ({ effect }: Doubt) => effect?.weight ?? 0;
-  return judged.sort((a, b) => weight(b) - weight(a) || a.fromS - b.fromS);
+  return inOrder(judged);
 }
 
-function heartEffects(from: DoubtInputs, phase: Phase): PhaseEffects {
-  const { inputs, heartRateHz: rateHz, blocked, detection, computed } = from;
-  const { settings } = inputs;
-  const near = beatsNear(inputs.beats, phase, rateHz);
-  const figuresOf = (beats: BeatList, without: readonly Interval[]) => {
-    const rr = rrSeries(beats, rateHz, without);
+/** The one that moves a figure most first; a stretch comes before what it holds, since it settles all of that. */
+function inOrder(doubts: readonly Doubt[]): readonly Doubt[] {
+  const ranked = doubts.map((doubt) => {
+    const { kind, fromS, toS } = doubt;
+    const held = (one: Doubt) => kind === 'span' && one.fromS >= fromS && one.toS <= toS;
+    return { doubt, rank: Math.max(0, ...doubts.filter(held).map(weight), weight(doubt)) };
+  });
+  ranked.sort(
+    (a, b) =>
+      Number(b.rank > a.rank) - Number(b.rank < a.rank) ||
+      Number(b.doubt.kind === 'span') - Number(a.doubt.kind === 'span') ||
+      a.doubt.fromS - b.doubt.fromS,
+  );
+  return ranked.map(({ doubt }) => doubt);
+}
+
+const weight = ({ effect }: Doubt): number => effect?.weight ?? 0;
+
+const greater = (a: DoubtEffect | null, b: DoubtEffect | null): DoubtEffect | null =>
+  (b?.weight ?? 0) > (a?.weight ?? 0) ? b : a;
+
+/** Whose figures a mend can reach. */
+function organsOf({ inputs, heart }: DoubtInputs, mend: Mend): readonly Organ[] {
+  const target: SpanTarget | null = mend.kind === 'beats' ? 'heart' : targetOf(inputs.spans, mend);
+  const organs: Organ[] = [];
+  if (heart && (target === 'heart' || target === 'both')) organs.push('heart');
+  if (target === 'stomach' || target === 'both') organs.push('stomach');
+  return organs;
+}
+
+function targetOf(
+  spans: readonly Span[],
+  mend: Exclude<Mend, { kind: 'beats' }>,
+): SpanTarget | null {
+  if (mend.kind === 'exclude') return mend.span.target;
+  return spans.find(({ id }) => id === mend.spanId)?.target ?? null;
+}
+
+/** The spans as a mend would leave them. */
+function spansAfter(spans: readonly Span[], mend: Mend): readonly Span[] {
+  if (mend.kind === 'beats') return spans;
+  if (mend.kind === 'include') return spans.filter(({ id }) => id !== mend.spanId);
+  return [...spans, { ...mend.span, id: Number.NaN }];
+}
+
+function heartSide(from: DoubtInputs, part: Phase): Side {
+  const { inputs, recording, heartRateHz: rateHz, detection, computed } = from;
+  const { settings, roles } = inputs;
+  const near = beatsNear(inputs.beats, part, rateHz);
+  const figuresOf = (beats: BeatList, blocked: readonly Interval[]) => {
+    const rr = rrSeries(beats, rateHz, blocked);
     const timingSdMs = detection?.timingSdMs ?? Number.NaN;
     const breathing = computed.breathing ?? NO_BREATHING;
-    const part = phase;
-    const input = { rr, beats, rateHz, part, blocked: without, settings, timingSdMs, breathing };
+    const input = { rr, beats, rateHz, part, blocked, settings, timingSdMs, breathing };
     return { rr, ...heartFigures(input) };
   };
-  const before = figuresOf(near, blocked);
-  const widths = heartHalfWidths(
-    { rr: before.rr, part: phase, segments: before.segments, settings: settings.variability },
-    before.figures,
-  );
+  const { rr, figures, segments } = figuresOf(near, from.blocked);
   return {
-    effectOf({ mend }) {
-      if (mend?.kind === 'beats') {
-        const after = figuresOf(changeBeats(near, mend.removed, mend.added), blocked);
-        return greatestEffect(phase, before.figures, after.figures, widths);
-      }
-      return null;
+    keys: HEART_KEYS,
+    before: figures,
+    halfWidths: heartHalfWidths({ rr, part, segments, settings: settings.variability }, figures),
+    after(mend) {
+      if (mend.kind === 'beats')
+        return figuresOf(changeBeats(near, mend.removed, mend.added), from.blocked).figures;
+      const spans = spansAfter(inputs.spans, mend);
+      const blocked = roles.heart ? lostOn(roles.heart, 'heart', spans, recording.gaps) : [];
+      return figuresOf(near, blocked).figures;
     },
   };
 }
 
-function beatsNear({ ticks, classes, origins }: BeatList, phase: Phase, rateHz: number): BeatList {
+function beatsNear({ ticks, classes, origins }: BeatList, part: Phase, rateHz: number): BeatList {
   const all = { ticks, classes, origins };
-  const first = firstBeatAt(all, secondsToTicks(phase.fromS - BESIDE_S, rateHz));
-  const end = firstBeatAt(all, secondsToTicks(phase.toS + BESIDE_S, rateHz));
+  const first = firstBeatAt(all, secondsToTicks(part.fromS - BESIDE_S, rateHz));
+  const end = firstBeatAt(all, secondsToTicks(part.toS + BESIDE_S, rateHz));
   return {
     ticks: ticks.subarray(first, end),
     classes: classes.subarray(first, end),
@@ -84,27 +152,51 @@ function beatsNear({ ticks, classes, origins }: BeatList, phase: Phase, rateHz: 
   };
 }
 
-/** The figure that moves most beside its own range; null where none moves. */
-function greatestEffect(
-  phase: Phase,
-  before: Figures,
-  after: Figures,
-  widths: Readonly<Record<string, number>>,
-): DoubtEffect | null {
+/** What an analysis of a slow wave leaves for the next of the same one. */
+const memories = new WeakMap<object, StomachMemory>();
+
+function stomachSide({ inputs, recording, slow, computed }: DoubtInputs, part: Phase): Side {
+  const { settings, roles } = inputs;
+  const lead = roles.slow[roles.reported];
+  const drawn = slow[roles.reported];
+  const memory = memories.get(drawn) ?? createStomachMemory();
+  memories.set(drawn, memory);
+  const phases = phasesOrWhole(inputs.phases, recording.durationS);
+  const { breathing } = computed;
+  const figuresOf = (spans: readonly Span[]) => {
+    const spoiled = lostOn(lead, 'stomach', spans, recording.gaps);
+    const options = { slow: drawn, spoiled, phases, settings, breathing, memory };
+    const analysis = slowWaveRhythm(options);
+    return { analysis, ...stomachFigures({ analysis, phase: part, spoiled, settings }) };
+  };
+  const { analysis, figures, keptS } = figuresOf(inputs.spans);
+  const kept = analysis.rhythm.epochs.filter(
+    (epoch) => epoch.kept && epoch.fromS >= part.fromS && epoch.toS <= part.toS,
+  );
+  return {
+    keys: STOMACH_KEYS,
+    before: figures,
+    halfWidths: stomachHalfWidths(kept, figures, keptS / 60),
+    after: (mend) => figuresOf(spansAfter(inputs.spans, mend)).figures,
+  };
+}
+
+/** The figure that a mend moves most beside its own range; null where it moves none. */
+function greatestOf({ name }: Phase, { keys, before, halfWidths, after }: Side, mend: Mend) {
+  const changed = after(mend);
   let greatest: DoubtEffect | null = null;
-  for (const figure of HEART_KEYS) {
-    const [was, is] = [before[figure], after[figure]];
-    const weight = weightOf(was, is, widths[figure]);
+  for (const figure of keys) {
+    const [was, is] = [before[figure], changed[figure]];
+    const weight = weightOf(was, is, halfWidths[figure]);
     if (!(weight > (greatest?.weight ?? 0))) continue;
-    greatest = { figure, phase: phase.name, before: was, after: is, weight };
+    greatest = { figure, phase: name, before: was, after: is, weight };
   }
   return greatest;
 }
 
 /** Change over half the range's width; over the figure itself where no range is known; Infinity where a figure comes or goes. */
 function weightOf(was: FigureValue, is: FigureValue, half: number | undefined): number {
-  if (was.kind !== is.kind) return Number.POSITIVE_INFINITY;
-  if (was.kind !== 'number' || is.kind !== 'number') return 0;
-  const change = Math.abs(is.value - was.value);
-  return change / (half ?? Math.abs(was.value));
+  if ((was.kind === 'withheld') !== (is.kind === 'withheld')) return Number.POSITIVE_INFINITY;
+  const change = Math.abs(numberOf(is) - numberOf(was));
+  return change > 0 ? change / (half ?? Math.abs(numberOf(was))) : 0;
 }

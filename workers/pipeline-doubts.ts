@@ -2,11 +2,16 @@ import { beatDoubtsInSteps } from '../src/heart/beat-doubts';
 import { type BeatLook, createBeatLooks } from '../src/heart/beat-looks';
 import type { Detection } from '../src/heart/detect';
 import type { BeatDoubtsInput } from '../src/heart/doubt-view';
+import { cleanSpans, doubtedStretches } from '../src/heart/heart-span-doubts';
 import { alikeTo, averageRow, LOOK_BEFORE_S } from '../src/heart/look-alikes';
 import { stillOpen } from '../src/heart/open-doubts';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
+import { lostOn } from '../src/recording/lost';
 import type { Recording } from '../src/recording/recording';
+import { spansOf } from '../src/recording/span';
+import { epochDoubts } from '../src/stomach/epoch-doubts';
+import { slowSpanDoubts } from '../src/stomach/span-doubts';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import type { DoubtList, LookAlikes } from './analysis-api';
 import { inTurns, type Job } from './job';
@@ -32,6 +37,12 @@ function looksOf(detection: Detection, input: BeatDoubtsInput): (tick: number) =
 
 /** All doubts in ascending time without their effects, settled ones too. */
 async function plainDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[]> {
+  const heart = await heartDoubts(from, job);
+  await job.breathe();
+  return [...heart, ...stomachDoubts(from)].sort((a, b) => a.fromS - b.fromS);
+}
+
+async function heartDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[]> {
   const { inputs, heart, heartRateHz, blocked, detection } = from;
   if (!heart || !detection) return [];
   const input: BeatDoubtsInput = {
@@ -43,7 +54,23 @@ async function plainDoubts(from: DoubtInputs, job: Job): Promise<readonly Doubt[
     blocked,
     detection,
   };
-  return inTurns(beatDoubtsInSteps(input, looksOf(detection, input)), job, 'Looking for doubts');
+  const lookAt = looksOf(detection, input);
+  const beats = await inTurns(beatDoubtsInSteps(input, lookAt), job, 'Looking for doubts');
+  const spans = spansOf(inputs.spans, heart.lead, 'heart');
+  return [...beats, ...doubtedStretches(beats, heart.lead), ...cleanSpans(input, lookAt, spans)];
+}
+
+/** Doubts of the reported lead, whose figures are printed. */
+function stomachDoubts({ inputs, recording, slow, computed }: DoubtInputs): readonly Doubt[] {
+  const { roles, settings, spans } = inputs;
+  const { lead, recorded, rateHz } = slow[roles.reported];
+  const gaps = lostOn(roles.slow[roles.reported], 'stomach', [], recording.gaps);
+  const own = spansOf(spans, lead, 'stomach');
+  const { epochs } = computed.stomach[roles.reported].rhythm;
+  return [
+    ...slowSpanDoubts({ lead, recorded, rateHz, spans: own, gaps }),
+    ...epochDoubts(epochs, settings.rhythmBands, settings.epoch.stepS),
+  ];
 }
 
 /** The open doubts in the order of time, without their effects. */

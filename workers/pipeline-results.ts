@@ -8,12 +8,13 @@ import { seenInPassing } from '../src/heart/seen-in-passing';
 import { BEAT_CLASSES, type BeatList } from '../src/recording/beat';
 import type { SeenInPassing } from '../src/recording/figure';
 import type { BreathingSeries } from '../src/recording/heart-series';
-import { leadChannels, leadKey } from '../src/recording/lead';
+import { leadKey } from '../src/recording/lead';
+import { lostOn } from '../src/recording/lost';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
 import type { Recording } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
-import { type Interval, joinIntervals, spansOf } from '../src/recording/span';
+import type { Interval } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { type StomachAnalysis, slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
 import { createStomachMemory } from '../src/stomach/stomach-memory';
@@ -252,11 +253,7 @@ function stomachSpoiled(
   key: string,
 ): readonly Interval[] {
   const lead = roles.slow.find((one) => leadKey(one) === key);
-  const channels = lead ? leadChannels(lead) : [];
-  const gaps = recording.gaps.filter(
-    ({ channel }) => channel === null || channels.includes(channel),
-  );
-  return joinIntervals([...spansOf(spans, key, 'stomach'), ...gaps]);
+  return lead ? lostOn(lead, 'stomach', spans, recording.gaps) : [];
 }
 
 /** What the panes say of a lead's separation; the lead in time is that at its own usual rhythm. */

@@ -101,6 +101,7 @@ export class SignalStore {
   /** A store that begins with what is kept here; what either is given later is not seen by the other. */
   apart(): SignalStore {
     const other = new SignalStore(this.#source);
+    other.#routes = this.#routes;
     for (const [key, kept] of this.#kept) other.#kept.set(key, kept);
     for (const [key, drawn] of this.#drawn) other.#drawn.set(key, drawn);
     return other;

@@ -6,13 +6,14 @@ import { NO_BEATS } from '../src/recording/beat';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import { Refusal } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
-import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { type Lead, leadKey } from '../src/recording/lead';
+import { lostOn } from '../src/recording/lost';
 import { isFasting, phasesOrWhole } from '../src/recording/phase';
 import type { SignalSource } from '../src/recording/recording';
 import type { Roles } from '../src/recording/roles';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
-import { type Interval, joinIntervals, type Span, spansOf } from '../src/recording/span';
+import { type Interval, type Span, spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { leadQuality } from '../src/stomach/lead-quality';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
@@ -21,6 +22,7 @@ import type {
   Columns,
   ColumnsRequest,
   DoubtList,
+  FoundWithin,
   Given,
   JobId,
   LookAlikes,
@@ -29,6 +31,7 @@ import type {
   Proposal,
   ReviewInputs,
   TextReading,
+  WithinRequest,
 } from './analysis-api';
 import {
   breathesWithin,
@@ -96,6 +99,8 @@ export interface Pipeline {
   ): Promise<LookAlikes>;
   /** The figures of other states of the study, which leave what was found for the review as it is. */
   figuresOf(states: readonly ReviewInputs[], job: Job): Promise<readonly Findings[]>;
+  /** Finds the beats of a stretch with other choices; what was found for the review stays as it is. */
+  detectWithin(request: WithinRequest, job: Job): Promise<FoundWithin>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
@@ -152,6 +157,11 @@ export function createPipeline(): Pipeline {
       return lookAlikes(from, settled, doubtId, job);
     },
     figuresOf: (states, job) => figuresOf(study(), states, job),
+    async detectWithin(request, job) {
+      const { source, signals } = study();
+      const { detectWithin } = await import('./pipeline-within');
+      return detectWithin({ source, kept: signals.heart(request.heartLead), request }, job);
+    },
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
@@ -266,11 +276,7 @@ function toJudge(study: Study, lead: Lead, proposed: readonly Omit<Span, 'id'>[]
 
 /** Stretches of a lead that carry no heartbeat: spoiled for the heart, or missing. */
 function blockedOf(study: Study, lead: Lead, spans: readonly Span[]): readonly Interval[] {
-  const channels = leadChannels(lead);
-  const gaps = study.source.recording.gaps.filter(
-    ({ channel }) => channel === null || channels.includes(channel),
-  );
-  return joinIntervals([...spansOf(spans, leadKey(lead), 'heart'), ...gaps]);
+  return lostOn(lead, 'heart', spans, study.source.recording.gaps);
 }
 
 async function detectionOf(

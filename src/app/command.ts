@@ -10,6 +10,8 @@ export const COMMAND_GROUPS = [
   'beats',
   'spans',
   'doubts',
+  'notes',
+  'room',
   'page',
 ] as const;
 export type CommandGroup = (typeof COMMAND_GROUPS)[number];
@@ -22,11 +24,26 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   beats: 'Beats',
   spans: 'Spoiled spans',
   doubts: 'Doubts',
+  notes: 'Events and symptoms',
+  room: 'Room view',
   page: 'The page',
 };
 
-/** Where a command acts: everywhere, only while a study is open, or only while its panes are in sight. */
-export type CommandContext = 'always' | 'study' | 'panes';
+/** Where a command acts: everywhere, only while a study is open, only while its panes are in sight, only in the room view. */
+export type CommandContext = 'always' | 'study' | 'panes' | 'room';
+
+/** What commands ask of the room view. */
+export interface RoomActs {
+  leave(): void;
+  /** Brings the trace row below (1) or above (-1) forward. */
+  stepRow(way: 1 | -1): void;
+  penOn(): boolean;
+  togglePen(): void;
+  /** Moves the pen by CSS pixels; it draws while it is down. */
+  movePen(byX: number, byY: number): void;
+  pressPen(): void;
+  toggleKeys(): void;
+}
 
 /** What commands ask of the page around the stores. */
 export interface PageActs {
@@ -37,6 +54,9 @@ export interface PageActs {
   reportOpen(): boolean;
   /** False while the report view is not part of the page. */
   readonly reportThere: boolean;
+  enterRoom(): void;
+  /** The room view while it is in sight, else null. */
+  readonly room: RoomActs | null;
 }
 
 export interface CommandParts extends AppParts {

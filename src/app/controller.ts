@@ -1,5 +1,10 @@
-import type { ReviewInputs, TextReading } from '../../workers/analysis-api';
-import type { CallOptions } from '../../workers/analysis-client';
+import type {
+  FoundWithin,
+  ReviewInputs,
+  TextReading,
+  WithinRequest,
+} from '../../workers/analysis-api';
+import type { AnalysisClient, CallOptions } from '../../workers/analysis-client';
 import type { Reply } from '../recording/failure';
 import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
@@ -30,6 +35,13 @@ export interface SignRequest {
   readonly conclusion: string;
 }
 
+/** The worker of the open study, lent: one borrower at a time, while the review itself rests. */
+export interface LentWorker {
+  readonly client: AnalysisClient;
+  /** Has the figures of the review itself computed again, after the worker was asked for others. */
+  giveBack(): void;
+}
+
 /**
  * What the shell asks of whoever leads a study through worker, session and stores. Failures are shown by the controller
  * through the shell's store (dialog `failure`, `text-reading` or a message); the promises settle when the act is over.
@@ -51,6 +63,8 @@ export interface StudyController {
   forget(quickKey: string): Promise<void>;
   /** Applies one edit; asks for the reviewer first where none is set. */
   edit(edit: Edit): void;
+  /** The worker, for a copy of the review that shows edits and keeps none. */
+  lend(): LentWorker;
   undo(): void;
   redo(): void;
   /** `reason` says why the reported lead changed; '' where it did not. */
@@ -59,6 +73,8 @@ export interface StudyController {
   changeSettings(settings: Settings): void;
   changeProtocol(protocol: Protocol): void;
   detectAgain(): void;
+  /** Looks for the beats of a stretch with other choices; nothing of the session changes. */
+  findWithin(request: WithinRequest, options: CallOptions): Promise<Reply<FoundWithin>>;
   downloadSession(): void;
   downloadExports(): void;
   sign(request: SignRequest): void;

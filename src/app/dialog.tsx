@@ -4,7 +4,8 @@ interface DialogProps {
   readonly title: string;
   /** Small line beneath the title. */
   readonly subtitle?: string;
-  readonly size?: 'small' | 'medium' | 'large';
+  /** `above`: at the top of the page, clear of Seconds, which stays in sight. */
+  readonly size?: 'small' | 'medium' | 'large' | 'above';
   readonly onClose: () => void;
   /** Runs on the form's submit button or Enter in a field; without it the dialog has no form. */
   readonly onSubmit?: () => void;

@@ -16,17 +16,21 @@ const AboutDialog = later('AboutDialog');
 const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
+const CompareDialog = later('CompareDialog');
 const FigureDialog = later('FigureDialog');
+const FindWithinDialog = later('FindWithinDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
 const LookAlikesDialog = later('LookAlikesDialog');
 const LogDialog = later('LogDialog');
+const NotesDialog = later('NotesDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
 const RolesDialog = later('RolesDialog');
 const SameFileDialog = later('SameFileDialog');
 const SettingsDialog = later('SettingsDialog');
 const SignDialog = later('SignDialog');
+const SpansDialog = later('SpansDialog');
 const TextReadingDialog = later('TextReadingDialog');
 
 /** The open dialog, and the one below a reviewer's dialog. */
@@ -60,12 +64,18 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <RolesDialog />;
     case 'phases':
       return <PhasesDialog />;
+    case 'spans':
+      return <SpansDialog />;
+    case 'notes':
+      return <NotesDialog here={state.here} />;
     case 'protocol':
       return <ProtocolDialog />;
     case 'settings':
       return <SettingsDialog />;
     case 'go-to':
       return <GoToDialog />;
+    case 'find-within':
+      return <FindWithinDialog />;
     case 'beats-between':
       return <BeatsBetweenDialog parts={parts} />;
     case 'add-bookmark':
@@ -76,6 +86,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <KeysDialog parts={parts} />;
     case 'about':
       return <AboutDialog />;
+    case 'compare':
+      return <CompareDialog parts={parts} />;
     case 'log':
       return <LogDialog page={parts.page} />;
     case 'sign':

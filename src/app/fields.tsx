@@ -16,6 +16,8 @@ interface FieldProps {
   readonly onFocus?: () => void;
   /** The label is read out only, where a column heading says it to the eye. */
   readonly labelHidden?: boolean;
+  /** Stands on the field's line, after its unit. */
+  readonly beside?: ReactNode;
 }
 
 /** A one-line field with its label, unit, hint and message. */
@@ -45,6 +47,7 @@ export function Field(props: FieldProps) {
           onChange={(event) => onChange(event.target.value)}
         />
         {unit ? <span className="unit">{unit}</span> : null}
+        {props.beside}
       </span>
       {suggestions ? (
         <datalist id={`${id}-list`}>

@@ -1,41 +1,42 @@
 import { useState } from 'react';
 import { goTo } from '../review/navigate';
-import { formatClock, parseClock } from '../units/time';
+import { readTypedTime, typedTimeFault } from '../units/typed-time';
 import { useApp } from './app-context';
 import { Dialog } from './dialog';
-import { Field } from './fields';
 import { FormActions } from './form-actions';
+import { TimeField, timeRule, useSnapPlaces, useTimeFrame } from './time-field';
 
-/** Goes to a typed time. */
+/** Goes to a typed time, or to that of an annotation or event. */
 export function GoToDialog() {
   const { shell, view } = useApp();
+  const frame = useTimeFrame();
+  const places = useSnapPlaces();
   const [text, setText] = useState('');
   const [tried, setTried] = useState(false);
-  const { durationS } = view.getState();
-  const atS = parseClock(text);
-  const good = atS !== null && atS <= durationS;
   const close = () => shell.getState().closeDialog();
   return (
     <Dialog
       title="Go to a time"
+      subtitle={timeRule(frame)}
       size="small"
       onClose={close}
       onSubmit={() => {
         setTried(true);
-        if (atS === null || !good) return;
+        const read = readTypedTime(text, frame);
+        if (read.kind !== 'study' && read.kind !== 'clock') return;
         close();
-        goTo(view, atS);
+        goTo(view, read.atS);
       }}
       actions={<FormActions stay="Stay here" go="Go" onStay={close} />}
     >
-      <Field
-        label="Time from the start"
+      <TimeField
+        label="Time"
         value={text}
+        frame={frame}
+        places={places}
         onChange={setText}
-        size="short"
         autoFocus
-        hint={`Seconds, m:ss or h:mm:ss, up to ${formatClock(durationS)}.`}
-        error={tried && !good ? 'There is no such time in this recording.' : null}
+        error={tried ? typedTimeFault(text, frame) : null}
       />
     </Dialog>
   );

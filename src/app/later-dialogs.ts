@@ -1,14 +1,18 @@
 export { AboutDialog } from './about-dialog';
 export { BeatsBetweenDialog } from './beats-between-dialog';
 export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
+export { CompareDialog } from './compare-dialog';
 export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';
+export { FindWithinDialog } from './find-within-dialog';
 export { GoToDialog } from './go-to-dialog';
 export { KeysDialog } from './keys-dialog';
 export { LogDialog } from './log-dialog';
 export { LookAlikesDialog } from './look-alikes-dialog';
+export { NotesDialog } from './notes-dialog';
 export { PhasesDialog } from './phases-dialog';
 export { ProtocolDialog } from './protocol-dialog';
 export { RolesDialog } from './roles-dialog';
 export { SettingsDialog } from './settings-dialog';
 export { SignDialog } from './sign-dialog';
+export { SpansDialog } from './spans-dialog';

@@ -1,15 +1,12 @@
 import './history.css';
 import { useMemo, useState } from 'react';
 import { type Hide, identityHider, nothingHidden } from '../export/report-hiding';
-import { leadChannels } from '../recording/lead';
-import type { Recording } from '../recording/recording';
-import type { Roles } from '../recording/roles';
 import type { Interval } from '../recording/span';
-import { goToStretch } from '../review/findings-go';
 import { LOG_KIND_WORDS, LOG_KINDS, type LogKind } from '../session/log-words';
 import { formatClock } from '../units/time';
 import { useAnalysis, useApp, useSession, useView } from './app-context';
 import type { PageActs } from './command';
+import { heartRateOf, showPlace } from './comparing';
 import { Dialog } from './dialog';
 import { Choice, Field } from './fields';
 import { type LogRow, logRows, useFitting } from './log-list';
@@ -18,12 +15,6 @@ import { type LogRow, logRows, useFitting } from './log-list';
 const SHOWN = 100;
 const ALL = 'all';
 
-/** Rate of the heart lead of some roles, null where there is none or the recording is not at hand. */
-const rateOf = (recording: Recording | null) => (roles: Roles) => {
-  if (!recording || !roles.heart) return null;
-  return recording.channels[leadChannels(roles.heart)[0]]?.rateHz ?? null;
-};
-
 /** Who changed what, when, from what to what; a line goes to its place in the panes. */
 export function LogDialog({ page }: { readonly page: PageActs }) {
   const { shell, view } = useApp();
@@ -31,7 +22,7 @@ export function LogDialog({ page }: { readonly page: PageActs }) {
   const recording = useAnalysis((state) => state.recording);
   const hidden = useView((state) => state.identityHidden);
   const rows = useMemo(
-    () => (session ? logRows(session, rateOf(recording)) : []),
+    () => (session ? logRows(session, heartRateOf(recording)) : []),
     [session, recording],
   );
   const reviewers = useMemo(() => [...new Set(rows.map(({ line }) => line.reviewer))], [rows]);
@@ -44,10 +35,9 @@ export function LogDialog({ page }: { readonly page: PageActs }) {
   );
   if (!session) return null;
   const close = () => shell.getState().closeDialog();
-  const go = ({ fromS, toS }: Interval) => {
+  const go = (place: Interval) => {
     close();
-    if (page.reportOpen()) page.toggleReport();
-    goToStretch(view, fromS, toS);
+    showPlace(page, view, place);
   };
   const nameOf = (reviewer: string) =>
     hidden ? `reviewer ${reviewers.length - reviewers.indexOf(reviewer)}` : reviewer;

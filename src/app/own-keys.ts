@@ -37,7 +37,10 @@ const KEPT_KEYS = new Set(
   ].flatMap((row) => row.split(' ')),
 );
 
-/** Why a key cannot be given to a command: what has it, and what to do; null where it can. */
+/**
+ * Why a key cannot be given to a command: what has it, and what to do; null where it can. What the table lets share a key never
+ * acts in one place.
+ */
 export function keyFault(
   command: Command,
   key: string,
@@ -46,7 +49,10 @@ export function keyFault(
   const words = keyWords(key);
   if (KEPT_KEYS.has(key) && !command.keys.includes(key))
     return `${words} is kept by the browser or for moving about the page. Choose another key.`;
-  const holder = commands.find((one) => one !== command && keysOf(one, ownKeys).includes(key));
+  const shared = (one: Command) => command.keys.includes(key) && one.keys.includes(key);
+  const holder = commands.find(
+    (one) => one !== command && !shared(one) && keysOf(one, ownKeys).includes(key),
+  );
   return holder
     ? `${words} is the key of “${holder.words}”. Choose another key, or give that one another first.`
     : null;

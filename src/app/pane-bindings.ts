@@ -87,6 +87,15 @@ const BEATS: readonly Command[] = [
     'beats',
     (_, { shell }) => shell.getState().openDialog({ kind: 'beats-between' }),
   ),
+  paneCommand(
+    'find-within',
+    'Find the beats of a stretch again…',
+    ['Shift+W'],
+    'beats',
+    (_, { shell }) => shell.getState().openDialog({ kind: 'find-within' }),
+    ({ session, analysis }) =>
+      analysis.getState().fileAtHand && session.getState().session?.state.roles.heart != null,
+  ),
   paneCommand('beats-in-view', 'Select the beats in Seconds', ['Ctrl+A'], 'beats', (p) =>
     p.selectBeatsInView(),
   ),

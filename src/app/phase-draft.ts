@@ -1,6 +1,5 @@
 import { FED_AFTER_MEAL_S, isMeal, type Phase } from '../recording/phase';
-import type { TimedNote } from '../session/document';
-import { formatClock, parseClock } from '../units/time';
+import { readTypedTime, type TimeFrame, timeText, typedTimeFault } from '../units/typed-time';
 
 /** A phase as it is being typed. */
 export interface PhaseRow {
@@ -21,10 +20,10 @@ export type PhaseErrors = Readonly<Record<number, PhaseRowErrors>>;
 
 const isMealName = (name: string): boolean => isMeal({ name, fromS: 0, toS: 0 });
 
-/** A time as it is offered for typing: whole seconds without decimals, others with as many as they need. */
-export function timeText(seconds: number): string {
-  const decimals = [0, 1, 2, 3].find((d) => seconds === Number(seconds.toFixed(d))) ?? 3;
-  return formatClock(seconds, decimals);
+/** Seconds of a typed time; null where it is none of the recording's. */
+function typedS(text: string, frame: TimeFrame): number | null {
+  const read = readTypedTime(text, frame);
+  return read.kind === 'study' || read.kind === 'clock' ? read.atS : null;
 }
 
 export const rowsOf = (phases: readonly Phase[]): readonly PhaseRow[] =>
@@ -45,12 +44,13 @@ export function phaseNames(rows: readonly PhaseRow[]): readonly string[] {
 }
 
 /** A row more, of the first usual name that is free, beginning where the last one ends. */
-export function addRow(rows: readonly PhaseRow[], durationS: number): readonly PhaseRow[] {
+export function addRow(rows: readonly PhaseRow[], frame: TimeFrame): readonly PhaseRow[] {
+  const { durationS } = frame;
   const used = new Set(rows.map((row) => row.name));
   const name = phaseNames(rows).find((one) => !used.has(one)) ?? 'fasting';
   const id = 1 + Math.max(-1, ...rows.map((row) => row.id));
   const last = rows.at(-1);
-  const end = last ? parseClock(last.to) : 0;
+  const end = last ? typedS(last.to, frame) : 0;
   const mealBefore = last && isMealName(last.name);
   const from =
     end === null
@@ -64,14 +64,15 @@ export function addRow(rows: readonly PhaseRow[], durationS: number): readonly P
 /** The fed phase put to begin 2 min after its meal's end; null where no meal has an end, or the fed row begins there already. */
 export function proposedFed(
   rows: readonly PhaseRow[],
-  durationS: number,
+  frame: TimeFrame,
 ): { readonly words: string; readonly rows: readonly PhaseRow[] } | null {
+  const { durationS } = frame;
   for (const meal of rows.filter((row) => isMealName(row.name))) {
-    const end = parseClock(meal.to);
+    const end = typedS(meal.to, frame);
     const fromS = (end ?? durationS) + FED_AFTER_MEAL_S;
     const name = meal.name.replace('meal', 'fed');
     const fed = rows.find((row) => row.name === name);
-    if (end === null || fromS >= durationS || (fed && parseClock(fed.from) === fromS)) continue;
+    if (end === null || fromS >= durationS || (fed && typedS(fed.from, frame) === fromS)) continue;
     const from = timeText(fromS);
     const id = 1 + Math.max(-1, ...rows.map((row) => row.id));
     return {
@@ -84,12 +85,10 @@ export function proposedFed(
   return null;
 }
 
-const WANTED = 'Type seconds, m:ss or h:mm:ss.';
-
 /** Reads the rows: phases in ascending order, or what is wrong with each row. */
 export function readPhases(
   rows: readonly PhaseRow[],
-  durationS: number,
+  frame: TimeFrame,
 ): { readonly phases: readonly Phase[]; readonly errors: PhaseErrors } {
   const errors: Record<number, PhaseRowErrors> = {};
   const fault = (id: number, error: PhaseRowErrors) => {
@@ -97,16 +96,16 @@ export function readPhases(
   };
   const read: (Phase & { readonly id: number })[] = [];
   for (const { id, name, from, to } of rows) {
-    const fromS = parseClock(from);
-    const toS = parseClock(to);
-    if (fromS === null) fault(id, { from: WANTED });
-    if (toS === null) fault(id, { to: WANTED });
+    const fromS = typedS(from, frame);
+    const toS = typedS(to, frame);
+    const wrong = { from: typedTimeFault(from, frame), to: typedTimeFault(to, frame) };
+    if (wrong.from !== null) fault(id, { from: wrong.from });
+    if (wrong.to !== null) fault(id, { to: wrong.to });
     if (rows.some((other) => other.id !== id && other.name === name))
       fault(id, { name: `There are two phases “${name}”.` });
     if (fromS === null || toS === null) continue;
-    if (toS > durationS + 1) fault(id, { to: `The recording ends at ${formatClock(durationS)}.` });
     if (fromS >= toS) fault(id, { to: 'The end must come after the start.' });
-    read.push({ id, name, fromS, toS: Math.min(toS, durationS) });
+    read.push({ id, name, fromS, toS });
   }
   read.sort((a, b) => a.fromS - b.fromS);
   read.forEach((phase, i) => {
@@ -115,54 +114,4 @@ export function readPhases(
       fault(phase.id, { from: `Begins before ${before.name} ends at ${timeText(before.toS)}.` });
   });
   return { phases: read.map(({ name, fromS, toS }) => ({ name, fromS, toS })), errors };
-}
-
-/** An event as it is being typed. */
-export interface EventDraft {
-  readonly at: string;
-  readonly text: string;
-}
-
-export const NO_EVENT: EventDraft = { at: '', text: '' };
-
-/** True where nothing of an event has been typed. */
-export const isBlank = ({ at, text }: EventDraft): boolean =>
-  at.trim() === '' && text.trim() === '';
-
-export type GrownEvents =
-  | { readonly ok: true; readonly events: readonly TimedNote[] }
-  | { readonly ok: false; readonly at?: string; readonly text?: string };
-
-/** The events as they are to be kept: with the typed one where something is typed, or what is wrong with it. */
-export function withTypedEvent(
-  events: readonly TimedNote[],
-  draft: EventDraft,
-  durationS: number,
-): GrownEvents {
-  return isBlank(draft) ? { ok: true, events } : addEvent(events, draft, durationS);
-}
-
-/** The events with one more, in ascending time, or what is wrong with the typed one. */
-export function addEvent(
-  events: readonly TimedNote[],
-  { at, text }: EventDraft,
-  durationS: number,
-): GrownEvents {
-  const atS = parseClock(at);
-  const wrongAt =
-    atS === null
-      ? WANTED
-      : atS > durationS
-        ? `The recording ends at ${formatClock(durationS)}.`
-        : null;
-  const wrongText = text.trim() === '' ? 'Say what happened.' : null;
-  if (atS === null || wrongAt !== null || wrongText !== null)
-    return {
-      ok: false,
-      ...(wrongAt === null ? {} : { at: wrongAt }),
-      ...(wrongText === null ? {} : { text: wrongText }),
-    };
-  const id = 1 + Math.max(0, ...events.map((event) => event.id));
-  const grown = [...events, { id, atS, text: text.trim() }];
-  return { ok: true, events: grown.sort((a, b) => a.atS - b.atS) };
 }

@@ -1,8 +1,10 @@
-import { Choice, Field } from './fields';
+import type { TimeFrame } from '../units/typed-time';
+import { Choice } from './fields';
 import { type PhaseErrors, type PhaseRow, phaseNames } from './phase-draft';
+import { TimeField } from './time-field';
 
 /** The time field that annotations are put into. */
-export interface TimeField {
+export interface AimedField {
   readonly id: number;
   readonly name: string;
   readonly end: 'from' | 'to';
@@ -10,14 +12,16 @@ export interface TimeField {
 
 interface PhaseTableProps {
   readonly rows: readonly PhaseRow[];
+  readonly frame: TimeFrame;
   readonly errors: PhaseErrors;
-  readonly field: TimeField | null;
-  readonly onField: (field: TimeField) => void;
+  readonly field: AimedField | null;
+  readonly onField: (field: AimedField) => void;
   readonly onChange: (rows: readonly PhaseRow[]) => void;
 }
 
 /** One row a phase: name, from, to. */
-export function PhaseTable({ rows, errors, field, onField, onChange }: PhaseTableProps) {
+export function PhaseTable(props: PhaseTableProps) {
+  const { rows, frame, errors, field, onField, onChange } = props;
   const change = (id: number, parts: Partial<PhaseRow>) =>
     onChange(rows.map((row) => (row.id === id ? { ...row, ...parts } : row)));
   const names = phaseNames(rows).map((name) => [name, name] as const);
@@ -39,10 +43,10 @@ export function PhaseTable({ rows, errors, field, onField, onChange }: PhaseTabl
               key={end}
               className={field?.id === row.id && field.end === end ? 'time aimed' : 'time'}
             >
-              <Field
+              <TimeField
                 label={end}
-                size="short"
                 value={row[end]}
+                frame={frame}
                 error={errors[row.id]?.[end]}
                 onFocus={() => onField({ id: row.id, name: row.name, end })}
                 onChange={(text) => change(row.id, { [end]: text })}

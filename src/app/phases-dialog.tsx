@@ -1,8 +1,8 @@
 import { useState } from 'react';
-import type { Annotation, Recording } from '../recording/recording';
-import type { SessionState, TimedNote } from '../session/document';
-import { setField } from '../session/edits';
+import { leftWords, timeLeft } from '../review/minutes-left';
+import type { SessionState } from '../session/document';
 import { formatClock } from '../units/time';
+import { type TimeFrame, timeText } from '../units/typed-time';
 import {
   type AppParts,
   useAnalysis,
@@ -12,47 +12,32 @@ import {
   withReviewer,
 } from './app-context';
 import { Dialog } from './dialog';
-import { type EventsDraft, EventsEditor } from './events-editor';
 import { FormActions } from './form-actions';
-import {
-  addRow,
-  NO_EVENT,
-  type PhaseRow,
-  proposedFed,
-  readPhases,
-  rowsOf,
-  timeText,
-  withTypedEvent,
-} from './phase-draft';
-import { PhaseTable, type TimeField } from './phase-table';
+import { addRow, type PhaseRow, proposedFed, readPhases, rowsOf } from './phase-draft';
+import { type AimedField, PhaseTable } from './phase-table';
+import { timeRule, useSnapPlaces, useTimeFrame } from './time-field';
 
 /** Phases by typed times, with the file's annotations and the reviewer's events at hand. */
 export function PhasesDialog() {
   const state = useSession((now) => now.session?.state);
-  const recording = useAnalysis((now) => now.recording);
-  return state ? <PhasesForm before={state} recording={recording} /> : null;
+  return state ? <PhasesForm before={state} /> : null;
 }
 
 interface PhasesFormProps {
   readonly before: SessionState;
-  readonly recording: Recording | null;
 }
 
-function PhasesForm({ before, recording }: PhasesFormProps) {
+function PhasesForm({ before }: PhasesFormProps) {
   const parts = useApp();
-  const { durationS } = before.study;
+  const frame = useTimeFrame();
   const [rows, setRows] = useState(() => rowsOf(before.phases));
-  const [noted, setNoted] = useState(() => eventsDraft(before.events));
-  const [field, setTimeField] = useState<TimeField | null>(null);
+  const [field, setField] = useState<AimedField | null>(null);
   const [tried, setTried] = useState(false);
-  const { phases, errors } = readPhases(rows, durationS);
+  const { phases, errors } = readPhases(rows, frame);
   const close = () => parts.shell.getState().closeDialog();
   const save = () => {
     setTried(true);
-    const grown = withTypedEvent(noted.events, noted.typed, durationS);
-    if (!grown.ok) setNoted({ ...noted, tried: true });
-    if (!grown.ok || Object.keys(errors).length > 0) return;
-    saveAll(parts, before, { phases, events: grown.events }, close);
+    if (Object.keys(errors).length === 0) savePhases(parts, before, phases, close);
   };
   const put = (seconds: number) =>
     setRows((now) =>
@@ -62,54 +47,40 @@ function PhasesForm({ before, recording }: PhasesFormProps) {
     );
   return (
     <Dialog
-      title="Phases and events"
-      subtitle={`Times from the start of the recording, which is ${formatClock(durationS)} long: seconds, m:ss or h:mm:ss.`}
+      title="Phases"
+      subtitle={`The recording is ${formatClock(frame.durationS)} long. ${timeRule(frame)}`}
       onClose={close}
       onSubmit={save}
       actions={<FormActions stay="Leave as it was" go="Use these phases" onStay={close} />}
     >
       <PhaseTable
         rows={rows}
+        frame={frame}
         errors={tried ? errors : onlyTyped(rows, errors)}
         field={field}
-        onField={setTimeField}
+        onField={setField}
         onChange={setRows}
       />
-      <RowActs rows={rows} durationS={durationS} onChange={setRows} />
-      <TimeChips
-        annotations={recording?.annotations ?? []}
-        events={noted.events}
-        field={field}
-        onPut={put}
-      />
-      <EventsEditor draft={noted} durationS={durationS} onChange={setNoted} />
+      <Left state={before} phases={Object.keys(errors).length > 0 ? [] : phases} />
+      <RowActs rows={rows} frame={frame} onChange={setRows} />
+      <TimeChips field={field} onPut={put} />
     </Dialog>
   );
 }
 
-const eventsDraft = (events: readonly TimedNote[]): EventsDraft => ({
-  events,
-  typed: NO_EVENT,
-  tried: false,
-});
-
-/** One undo step for the phases and one for the events, each only where it changed. */
-function saveAll(
+/** One undo step, where anything changed. */
+function savePhases(
   parts: AppParts,
   before: SessionState,
-  { phases, events }: Pick<SessionState, 'phases' | 'events'>,
+  phases: SessionState['phases'],
   close: () => void,
 ): void {
-  const newPhases = phasesText(rowsOf(phases)) !== phasesText(rowsOf(before.phases));
-  const newEvents = events !== before.events;
-  if (!newPhases && !newEvents) {
+  if (phasesText(rowsOf(phases)) === phasesText(rowsOf(before.phases))) {
     close();
     return;
   }
   withReviewer(parts, () => {
-    if (newPhases) parts.controller.changePhases(phases);
-    const now = parts.session.getState().session?.state;
-    if (now && newEvents) parts.controller.edit(setField(now, 'events', events, 'change events'));
+    parts.controller.changePhases(phases);
     close();
   });
 }
@@ -125,21 +96,32 @@ function onlyTyped(rows: readonly PhaseRow[], errors: ReturnType<typeof readPhas
   );
 }
 
+/** The minutes of the typed phases and what is left of them; nothing while something is wrong with one. */
+function Left({
+  state,
+  phases,
+}: {
+  readonly state: SessionState;
+  readonly phases: SessionState['phases'];
+}) {
+  const gaps = useAnalysis((now) => now.recording?.gaps) ?? [];
+  if (phases.length === 0) return null;
+  const { spans, roles, study } = state;
+  const left = timeLeft({ phases, spans, roles, gaps, durationS: study.durationS });
+  return <p className="small quiet">{left.map(leftWords).join('; ')}.</p>;
+}
+
 interface RowActsProps {
   readonly rows: readonly PhaseRow[];
-  readonly durationS: number;
+  readonly frame: TimeFrame;
   readonly onChange: (rows: readonly PhaseRow[]) => void;
 }
 
-function RowActs({ rows, durationS, onChange }: RowActsProps) {
-  const fed = proposedFed(rows, durationS);
+function RowActs({ rows, frame, onChange }: RowActsProps) {
+  const fed = proposedFed(rows, frame);
   return (
     <p className="button-row">
-      <button
-        type="button"
-        className="button slight"
-        onClick={() => onChange(addRow(rows, durationS))}
-      >
+      <button type="button" className="button slight" onClick={() => onChange(addRow(rows, frame))}>
         Add a phase
       </button>
       {fed ? (
@@ -152,33 +134,15 @@ function RowActs({ rows, durationS, onChange }: RowActsProps) {
 }
 
 interface TimeChipsProps {
-  readonly annotations: readonly Annotation[];
-  readonly events: readonly TimedNote[];
-  readonly field: TimeField | null;
+  readonly field: AimedField | null;
   readonly onPut: (seconds: number) => void;
 }
 
-interface Chip {
-  readonly atS: number;
-  readonly text: string;
-}
-
-const sameChip = (a: Chip, b: Chip): boolean => a.atS === b.atS && a.text === b.text;
 const MOST_CHIPS = 80;
 
-function TimeChips({ annotations, events, field, onPut }: TimeChipsProps) {
+function TimeChips({ field, onPut }: TimeChipsProps) {
   const hidden = useView((view) => view.identityHidden);
-  const chips = [
-    ...annotations.flatMap(({ onsetS, durationS, text }) => [
-      { atS: onsetS, text },
-      ...(durationS !== null && durationS > 0
-        ? [{ atS: onsetS + durationS, text: `end of ${text}` }]
-        : []),
-    ]),
-    ...events.map(({ atS, text }) => ({ atS, text })),
-  ]
-    .filter((one, i, all) => all.findIndex((it) => sameChip(it, one)) === i)
-    .sort((a, b) => a.atS - b.atS);
+  const chips = useSnapPlaces();
   if (chips.length === 0)
     return <p className="quiet">The file has no annotations to take times from.</p>;
   return (

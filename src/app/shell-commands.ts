@@ -1,9 +1,10 @@
 import { redoableEdit, undoableEdit } from '../session/log';
 import type { Command, CommandParts } from './command';
+import { editNameShown } from './edit-name';
 import { THEME_CHOICES } from './preferences';
 
 const dialog =
-  (kind: 'roles' | 'phases' | 'protocol' | 'settings' | 'keys' | 'about' | 'log' | 'sign') =>
+  (kind: 'roles' | 'phases' | 'protocol' | 'settings' | 'keys' | 'about' | 'sign') =>
   ({ shell }: CommandParts) =>
     shell.getState().openDialog({ kind });
 
@@ -15,6 +16,9 @@ const redoable = ({ session }: CommandParts) => {
   const open = session.getState().session;
   return open && redoableEdit(open);
 };
+
+const named = ({ view }: CommandParts, edit: { readonly name: string } | null): string =>
+  edit ? editNameShown(edit.name, view.getState().identityHidden) : '';
 
 const figuresThere = ({ analysis }: CommandParts) => analysis.getState().findings !== null;
 const figuresWhyNot = (parts: CommandParts) =>
@@ -93,7 +97,7 @@ export const STUDY_COMMANDS: readonly Command[] = [
   },
   {
     id: 'phases',
-    words: 'Phases and events…',
+    words: 'Phases…',
     keys: ['Shift+P'],
     group: 'study',
     when: 'study',
@@ -129,15 +133,6 @@ export const STUDY_COMMANDS: readonly Command[] = [
     run: ({ controller }) => controller.detectAgain(),
   },
   {
-    id: 'log',
-    words: 'Log: who changed what…',
-    keys: ['Shift+H'],
-    group: 'study',
-    when: 'study',
-    menu: 'study',
-    run: dialog('log'),
-  },
-  {
     id: 'sign',
     words: 'Sign…',
     keys: ['Shift+F'],
@@ -167,7 +162,7 @@ export const WORK_COMMANDS: readonly Command[] = [
     keys: ['Ctrl+Z'],
     group: 'work',
     when: 'study',
-    wordsNow: (parts) => `Undo ${undoable(parts)?.name ?? ''}`.trim(),
+    wordsNow: (parts) => `Undo ${named(parts, undoable(parts))}`.trim(),
     ready: (parts) => undoable(parts) !== null,
     run: ({ controller }) => controller.undo(),
   },
@@ -177,7 +172,7 @@ export const WORK_COMMANDS: readonly Command[] = [
     keys: ['Ctrl+Shift+Z', 'Ctrl+Y'],
     group: 'work',
     when: 'study',
-    wordsNow: (parts) => `Redo ${redoable(parts)?.name ?? ''}`.trim(),
+    wordsNow: (parts) => `Redo ${named(parts, redoable(parts))}`.trim(),
     ready: (parts) => redoable(parts) !== null,
     run: ({ controller }) => controller.redo(),
   },

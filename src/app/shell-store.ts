@@ -1,6 +1,8 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
+import type { Session } from '../session/document';
+import type { NotedKind } from '../session/note-edits';
 import type { KeptRow } from './controller';
 import type { OwnKeys } from './own-keys';
 import { readPreferences, type ThemeChoice, writePreferences } from './preferences';
@@ -20,15 +22,23 @@ export type DialogState =
   | { readonly kind: 'reviewer'; readonly act: () => void }
   | { readonly kind: 'roles' }
   | { readonly kind: 'phases' }
+  | { readonly kind: 'spans' }
+  /** `here`: what is to be written at which time; null: all that is written. */
+  | {
+      readonly kind: 'notes';
+      readonly here: { readonly kind: NotedKind; readonly atS: number } | null;
+    }
   | { readonly kind: 'protocol' }
   | { readonly kind: 'settings' }
   | { readonly kind: 'go-to' }
   | { readonly kind: 'beats-between' }
+  | { readonly kind: 'find-within' }
   | { readonly kind: 'add-bookmark' }
   | { readonly kind: 'bookmarks' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
   | { readonly kind: 'log' }
+  | { readonly kind: 'compare' }
   | { readonly kind: 'sign' }
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
@@ -43,6 +53,13 @@ export interface Message {
   readonly text: string;
 }
 
+/** Another session of the open study, to compare with, and the difference gone to last (-1: none yet). */
+export interface Compared {
+  readonly session: Session;
+  readonly fileName: string;
+  readonly at: number;
+}
+
 export interface ShellState {
   readonly dialog: DialogState;
   /** The dialog below a reviewer's dialog; it comes back when that one closes. */
@@ -51,6 +68,7 @@ export interface ShellState {
   readonly messages: readonly Message[];
   /** What the last act did, in the line at the foot; each one takes the place of the one before. */
   readonly status: string;
+  readonly compared: Compared | null;
   /** What that act did to the figures, once it is known; '' until then. */
   readonly statusMore: string;
   readonly theme: ThemeChoice;
@@ -121,6 +139,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       under: NONE,
       messages: [],
       status: '',
+      compared: null,
       statusMore: '',
       openDialog: (dialog) =>
         set((before) => ({

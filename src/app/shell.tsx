@@ -17,6 +17,7 @@ import { StartScreen } from './start-screen';
 import { TopBar } from './top-bar';
 import { useKeys } from './use-keys';
 import { useFileDrop, useHash, useLeaveGuard, useTheme } from './use-page';
+import { useRoom } from './use-room';
 import { Workspace } from './workspace';
 
 const REPORT_HASH = '#report';
@@ -32,17 +33,18 @@ export function Shell({ parts, renderReport }: ShellProps) {
   const { shell, session, analysis } = parts;
   const fileInput = useRef<HTMLInputElement>(null);
   const hash = useHash();
-  const page = usePageActs(fileInput, renderReport !== undefined);
+  const { room, enter } = useRoom(parts);
+  const page = usePageActs(fileInput, renderReport !== undefined, enter);
   const panes = useMemo(() => panePartsOf(parts), [parts]);
   const commandParts = useMemo<CommandParts>(
     () => ({ ...parts, page, panes: paneCommands(panes.stores, panes.signals, panes.act) }),
     [parts, page, panes],
   );
   const take = useTakeFiles(parts);
-  const over = useFileDrop(take);
-  const theme = useTheme(shell);
+  const over = useFileDrop(room?.parts.refuseFiles ?? take);
+  const theme = useTheme(room?.parts.commands.shell ?? shell);
   useLeaveGuard(session);
-  useKeys(commandParts);
+  useKeys(room ? null : commandParts);
   useEditStatus(parts);
   const links = useLinks(commandParts);
   const otherAsked = useOtherStudyAsked(parts);
@@ -52,6 +54,8 @@ export function Shell({ parts, renderReport }: ShellProps) {
   const studyShown = studyThere && !otherAsked;
   useReviewFirst(studyShown, hash);
   const reportShown = studyShown && renderReport !== undefined && hash === REPORT_HASH;
+  const askedOutside = useStore(shell, (state) => state.dialog.kind !== 'none');
+  if (room) return <room.View parts={room.parts} theme={theme} askedOutside={askedOutside} />;
   return (
     <AppProvider value={parts}>
       <CommandLinksProvider value={links}>
@@ -130,10 +134,16 @@ function panePartsOf(parts: AppParts): Omit<PaneProps, 'theme'> {
 
 type InputRef = { readonly current: HTMLInputElement | null };
 
-function usePageActs(fileInput: InputRef, reportThere: boolean): PageActs {
+function usePageActs(
+  fileInput: InputRef,
+  reportThere: boolean,
+  enter: (page: PageActs) => void,
+): PageActs {
+  const way = useRef(enter);
+  way.current = enter;
   return useMemo(() => {
     const reportOpen = () => reportThere && window.location.hash === REPORT_HASH;
-    return {
+    const page: PageActs = {
       chooseFile: () => choose(fileInput, ''),
       chooseSession: () => choose(fileInput, '.json'),
       toggleReport: () => {
@@ -142,7 +152,10 @@ function usePageActs(fileInput: InputRef, reportThere: boolean): PageActs {
       reportOpen,
       focusFindings: () => document.getElementById('findings')?.focus(),
       reportThere,
+      enterRoom: () => way.current(page),
+      room: null,
     };
+    return page;
   }, [fileInput, reportThere]);
 }
 

@@ -8,13 +8,14 @@ import { DEFAULT_SETTINGS } from '../recording/settings';
 import { type AnalysisStore, blankAnalysis, type SignalAccess } from '../review/analysis-store';
 import { asWork } from '../review/idle';
 import { lookAtStudy, type ViewStore } from '../review/view-store';
-import type { Edit, Session } from '../session/document';
+import type { Session } from '../session/document';
 import { initialState, studyIdentity } from '../session/initial-state';
 import type { Keeper } from '../session/keeper';
 import { beginSession, redoableEdit, undoableEdit } from '../session/log';
 import type { SessionStore } from '../session/store';
 import { type AnalysisRunner, createAnalysisRunner } from './analysis-runner';
 import { type DoubtAccess, withReviewer } from './app-context';
+import { applyEdit } from './apply-edit';
 import type { StudyController } from './controller';
 import { lastStudy } from './last-study';
 import { keptRow, LOST_OPENING, otherFile, otherReading } from './opening-words';
@@ -209,17 +210,6 @@ export function createStudyController(parts: ControllerParts): StudyController &
     return beginSession(initialState(study, { ...reply.value, settings }));
   }
 
-  function edit(one: Edit): void {
-    withReviewer({ session, shell }, () => {
-      try {
-        if (!edits.findsFreed(one)) session.getState().apply(one);
-      } catch (error) {
-        if (!(error instanceof Refusal)) throw error;
-        shell.getState().sayProblem(`${error.failure.message} ${error.failure.remedy}`);
-      }
-    });
-  }
-
   async function openDemo() {
     const reply = await runner.watched('Making the demo study', (watch) => client.demo(watch));
     if (reply.ok) await open(new File([reply.value], 'invented-demo.edf'), null);
@@ -280,7 +270,8 @@ export function createStudyController(parts: ControllerParts): StudyController &
       await keeper.forget(quickKey);
       lastStudy.forget(quickKey);
     },
-    edit,
+    edit: (edit) => applyEdit({ session, shell }, edits, edit),
+    lend: () => ({ client, giveBack: () => runner.refresh() }),
     undo() {
       const open = session.getState().session;
       if (!open || !undoableEdit(open)) return;
@@ -297,6 +288,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
         if (name) shell.getState().tell(`Done again: ${name}`);
       });
     },
+    findWithin: (request, options) => asWork(client.detectWithin(request, options)),
     ...edits.acts,
     ...files.acts,
     closeStudy() {

@@ -98,6 +98,7 @@ interface StudyActsProps {
 }
 
 function StudyActs({ parts, reportShown }: StudyActsProps) {
+  useView((state) => state.identityHidden);
   useSession((state) => state.session);
   useAnalysis((state) => state.findings);
   return (
@@ -106,6 +107,7 @@ function StudyActs({ parts, reportShown }: StudyActsProps) {
       <CommandButton command={commandOf('redo')} parts={parts} words="Redo" readWhole />
       <Menu words="Study" name="study" parts={parts} />
       <CommandButton command={commandOf('settings')} parts={parts} words="Settings" />
+      <CommandButton command={commandOf('room')} parts={parts} words="Room view" />
       {parts.page.reportThere ? (
         <CommandButton
           command={commandOf('report')}

@@ -1,4 +1,4 @@
-import { useEffect } from 'react';
+import { useEffect, useRef } from 'react';
 import type { CommandParts } from './command';
 import { canRun, commandForKey } from './commands';
 import { keyName } from './key-names';
@@ -21,16 +21,28 @@ function belongsToFocus(target: EventTarget | null, name: string): boolean {
   return /Arrow|Home|End/.test(name) && target.closest('[data-own-arrows]') !== null;
 }
 
-/** Runs the commands' keys on the whole page: never while typing, never under an open dialog, never one that was handled. */
-export function useKeys(parts: CommandParts): void {
+/**
+ * Runs the commands' keys on the whole page: never while typing, never under an open dialog, never one that was handled. A key
+ * that stands for nothing now goes to `otherwise`, which says whether it took it. Without parts no key is heard.
+ */
+export function useKeys(
+  parts: CommandParts | null,
+  otherwise: (name: string) => boolean = () => false,
+): void {
+  const rest = useRef(otherwise);
+  rest.current = otherwise;
   useEffect(() => {
+    if (!parts) return;
     const onKeyDown = (event: KeyboardEvent) => {
       if (event.defaultPrevented || event.isComposing || isTyping(event.target)) return;
       if (parts.shell.getState().dialog.kind !== 'none') return;
       const name = keyName(event);
       if (belongsToFocus(event.target, name)) return;
       const command = commandForKey(name, parts);
-      if (!command || !canRun(command, parts)) return;
+      if (!command || !canRun(command, parts)) {
+        if (rest.current(name)) event.preventDefault();
+        return;
+      }
       event.preventDefault();
       if (event.repeat && command.once) return;
       command.run(parts);

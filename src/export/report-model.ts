@@ -3,6 +3,7 @@ import type { Recording } from '../recording/recording';
 import type { Session, Signature } from '../session/document';
 import { formatClock } from '../units/time';
 import { type AdequacyTable, adequacyTable } from './report-adequacy';
+import { type EventRow, eventRows } from './report-events';
 import { type FindingsTable, mainTables, otherTables } from './report-findings';
 import { type Hide, identityHider, nothingHidden } from './report-hiding';
 import { type Fact, identityFacts, type ProtocolFacts, protocolFacts } from './report-identity';
@@ -35,7 +36,8 @@ export interface ReportModel {
   /** What stands above the figures: filters, defects of the file. */
   readonly warnings: readonly string[];
   readonly protocol: ProtocolFacts;
-  readonly events: readonly Fact[];
+  /** Events and symptoms, by time. */
+  readonly events: readonly EventRow[];
   readonly main: readonly FindingsTable[];
   readonly others: readonly FindingsTable[];
   /** Seen in passing, by time. */
@@ -80,7 +82,7 @@ export function reportModel(input: ReportInput): ReportModel {
     adequacy: adequacyTable(findings, state.roles.heart !== null),
     warnings: warningsOf(recording, findings).map(hide),
     protocol: protocolFacts(state.protocol, hide),
-    events: state.events.map(({ atS, text }) => ({ name: formatClock(atS), words: hide(text) })),
+    events: eventRows(state, hide),
     main: mainTables(findings),
     others: otherTables(findings),
     seen: findings.seen.map(({ fromS, toS, text }) => ({

@@ -2,6 +2,7 @@ import { BEAT_CLASSES, type BeatList } from '../recording/beat';
 import type { Phase } from '../recording/phase';
 import type { Annotation } from '../recording/recording';
 import type { Span } from '../recording/span';
+import { type Noted, notedWords } from '../session/note-edits';
 import type { Hertz } from '../units/rate';
 import { ticksToSeconds } from '../units/ticks';
 import type { Seconds } from '../units/time';
@@ -29,6 +30,8 @@ export interface SeparatedInput {
   readonly beatRateHz: Hertz;
   readonly phases: readonly Phase[];
   readonly spans: readonly Span[];
+  /** Events and symptoms that reviewers wrote. */
+  readonly notes: readonly Noted[];
 }
 
 const MOST_DIGITAL = 32767;
@@ -69,7 +72,7 @@ function digitised(signal: SeparatedSignal, recordS: number, records: number): E
 }
 
 function annotationsOf(input: SeparatedInput): readonly Annotation[] {
-  const { beats, beatRateHz, phases, spans } = input;
+  const { beats, beatRateHz, phases, spans, notes } = input;
   return [
     ...phases.map(({ name, fromS, toS }) => ({
       onsetS: fromS,
@@ -81,6 +84,11 @@ function annotationsOf(input: SeparatedInput): readonly Annotation[] {
       durationS: toS - fromS,
       text: `spoiled: ${cause}, ${target}, ${lead ?? 'all leads'}`,
     })),
+    ...notes.map((note) => ({
+      onsetS: note.atS,
+      durationS: null,
+      text: `${note.kind}: ${notedWords(note)}`,
+    })),
     ...Array.from(beats.ticks, (tick, i) => ({
       onsetS: ticksToSeconds(tick, beatRateHz),
       durationS: null,
@@ -91,7 +99,7 @@ function annotationsOf(input: SeparatedInput): readonly Annotation[] {
 
 /**
  * separated.edf of files.md: EDF+C (Kemp & Olivan 2003) with the slow wave of each lead and the heartbeat of the heart lead,
- * phases, spoiled spans and beats as annotations. Where there are no samples the signals are 0 and a span says so. A signal
+ * phases, spoiled spans, events, symptoms and beats as annotations. Where there are no samples the signals are 0 and a span says so. A signal
  * whose rate has no whole number of samples in any record of up to a minute is left out. Identity is the study's code.
  */
 export function separatedEdf(input: SeparatedInput): readonly Uint8Array<ArrayBuffer>[] {

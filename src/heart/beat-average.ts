@@ -115,26 +115,35 @@ function climb(samples: Float64Array, from: number, sign: 1 | -1, rateHz: number
 }
 
 /** Where the time of a beat is read: the extreme of the study's sign, or the other where that is no landmark. */
-function fiducialOf(average: Omit<ShapeAverage, 'fiducial'>, sign: 1 | -1, rateHz: number): number {
+function fiducialOf(
+  average: Omit<ShapeAverage, 'fiducial'>,
+  sign: 1 | -1,
+  rateHz: number,
+  least: number,
+): number {
   const { samples, middle } = average;
   const { high, low, up, down } = extremes(samples, middle, rateHz);
   const [own, other] = sign > 0 ? [up, down] : [down, up];
-  const use = own >= LEAST_EXTREME * other ? sign : sign > 0 ? -1 : 1;
+  const use = own >= least * other ? sign : sign > 0 ? -1 : 1;
   return crestPlace(samples, climb(samples, use > 0 ? high : low, use, rateHz), use);
 }
 
 /** Averages this much like the main one take their fiducial point from it. */
 const SAME_COURSE = 0.9;
 
-/** Averages with their fiducial points, those like the first one with the same point of the course. */
+/**
+ * Averages with their fiducial points, those like the first one with the same point of the course. The extreme of `sign` is
+ * taken where it is at least `least` of the opposite one.
+ */
 export function withFiducials(
   averages: readonly Omit<ShapeAverage, 'fiducial'>[],
   sign: 1 | -1,
   rateHz: number,
+  least = LEAST_EXTREME,
 ): ShapeAverage[] {
   if (averages.length === 0) return [];
   const [main] = averages;
-  const point = fiducialOf(main, sign, rateHz);
+  const point = fiducialOf(main, sign, rateHz, least);
   const search = Math.round(EXTREME_HALF_S * rateHz);
   return averages.map((average, k) => {
     if (k === 0) return { ...average, fiducial: point };
@@ -142,7 +151,7 @@ export function withFiducials(
     const same = likeness > SAME_COURSE;
     return {
       ...average,
-      fiducial: same ? place + point - main.middle : fiducialOf(average, sign, rateHz),
+      fiducial: same ? place + point - main.middle : fiducialOf(average, sign, rateHz, least),
     };
   });
 }

@@ -1,4 +1,5 @@
 import type { Doubt } from '../recording/doubt';
+import { type Interval, joinIntervals } from '../recording/span';
 import { type BeatLook, createBeatLooks } from './beat-looks';
 import { type BeatDoubtsInput, type DoubtView, doubtView, type Reason } from './doubt-view';
 import { gapReason } from './gap-doubts';
@@ -23,19 +24,32 @@ export function* beatDoubtsInSteps(
     if (looks.length % BEATS_A_STEP === 0) yield (0.5 * looks.length) / input.beats.ticks.length;
   }
   const view = doubtView(input, looks);
+  const excluded = joinIntervals(input.blocked);
   const byBeat = new Map<number, Reason>();
   const take = (reason: Reason | null) => {
-    const before = reason && byBeat.get(reason.beat);
-    if (reason && !(before && before.strength >= reason.strength)) byBeat.set(reason.beat, reason);
+    if (!reason || isWithin(view.timesS[reason.beat], excluded)) return;
+    const before = byBeat.get(reason.beat);
+    if (!before || reason.strength > before.strength) byBeat.set(reason.beat, reason);
   };
   for (let beat = 0; beat < view.count; beat += 1) {
     for (const find of [gapReason, rhythmReason, shapeReason]) take(find(view, beat));
     if (beat % BEATS_A_STEP === 0) yield 0.5 + (0.5 * beat) / view.count;
   }
   oddsReasons(view).forEach(take);
-  const reasons = [...byBeat.values()].sort((a, b) => a.beat - b.beat);
+  const reasons = [...byBeat.values()]
+    .filter(({ beat, kind }) => !isEarlyByOther(kind, byBeat.get(beat - 1)))
+    .sort((a, b) => a.beat - b.beat);
   return turnsJoined(reasons).map((run) => doubtOf(view, run));
 }
+
+const isWithin = (timeS: number, stretches: readonly Interval[]) =>
+  stretches.some(({ fromS, toS }) => timeS >= fromS && timeS < toS);
+
+const TOO_MANY: readonly Doubt['kind'][] = ['extra-beat', 'tall-wave', 'two-candidates'];
+
+/** A beat that comes early only after one that is itself too many. */
+const isEarlyByOther = (kind: Doubt['kind'], before: Reason | undefined): boolean =>
+  kind === 'early-beat' && before !== undefined && TOO_MANY.includes(before.kind);
 
 /** Beats in a row that stand upside down are one place: a change of sign lasts. */
 function turnsJoined(reasons: readonly Reason[]): readonly (readonly Reason[])[] {

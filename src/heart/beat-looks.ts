@@ -1,4 +1,4 @@
-import { BEAT_CLASSES, type BeatClass } from '../recording/beat';
+import type { BeatClass } from '../recording/beat';
 import type { Hertz } from '../units/rate';
 import { align, TIMING_HALF_S, type Timer, timerOf } from './align';
 import { rmsAboutLine } from './beat-quality';
@@ -114,5 +114,3 @@ export function likenessTo(
   });
   return most;
 }
-
-export const classAt = (classes: Uint8Array, i: number): BeatClass => BEAT_CLASSES[classes[i]];

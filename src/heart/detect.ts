@@ -27,6 +27,10 @@ export interface DetectionInput {
   readonly excluded?: readonly Interval[];
   /** Stretches, ascending, in which beats count only where what is found there can be read. */
   readonly doubted?: readonly Interval[];
+  /** Log-odds given to every place beside its evidence: above 0 more is taken for a beat, below 0 less; 0 unless given. */
+  readonly eager?: number;
+  /** Sign of the extreme that a beat's time is taken at; the dominant one of the usual beat unless given. */
+  readonly sign?: 1 | -1;
 }
 
 /** The average of the beats of one shape, as a person may look at it. */
@@ -81,7 +85,7 @@ export function detectBeats(
 
 /** detectBeats in small steps, each some 10 ms; yields the part done, so that a worker can answer in between or stop. */
 export function* detectInSteps(input: DetectionInput): Generator<number, Detection> {
-  const { heartbeat, rateHz, ticksPerSample, excluded = [], doubted = [] } = input;
+  const { heartbeat, rateHz, ticksPerSample, excluded = [], doubted = [], eager = 0 } = input;
   if (!(rateHz >= LOWEST_RATE_HZ))
     return nothing(`No heartbeat can be read at ${rateHz} samples a second.`);
   const signal: HeartSignal = {
@@ -90,7 +94,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
     usable: usableRanges(heartbeat, rateHz, excluded),
     bands: qrsBands(rateHz),
   };
-  const { shapes, places, beats: all } = yield* findBeats(signal);
+  const { shapes, places, beats: all } = yield* findBeats(signal, eager);
   yield 0.93;
   const allS = all.map(({ sample }) => sample / rateHz);
   const rhythm = rhythmBy(all, rateHz);
@@ -102,8 +106,8 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const found = { shapes, beats: all.filter((_, i) => !isWithin(allS[i], barred)) };
   if (found.beats.length < 2) return nothing('No heartbeat was found in this lead.');
   const averages = yield* averagesOf(signal, found.beats);
-  const sign = averages.length > 0 ? dominantSign(averages[0], rateHz) : 1;
-  const timed = withFiducials(averages, sign, rateHz);
+  const sign = input.sign ?? (averages.length > 0 ? dominantSign(averages[0], rateHz) : 1);
+  const timed = withFiducials(averages, sign, rateHz, input.sign && LEAST_ASKED);
   const times = yield* timesOf(signal, found.beats, timed, sign);
   yield 0.99;
   const classes = classesOf(signal, found);
@@ -152,6 +156,8 @@ function nothing(note: string): Detection {
 const SURE_EVIDENCE = 2.3;
 /** Beats too many and missed to be expected about a beat that is not in doubt, at most. */
 const LEAST_DOUBT = 0.03;
+/** Part of the opposite extreme from which an extreme that was asked for is taken. */
+const LEAST_ASKED = 0.1;
 /** Rhythm of beats found; of fewer than tell it one that says little. */
 const rhythmBy = (beats: readonly Candidate[], rateHz: number) =>
   rhythmFromBeats(

@@ -27,8 +27,11 @@ const NO_RHYTHM: RhythmAt = { rrS: 0.8, spread: 10, sure: 0, rare: 0 };
 /** What a T wave's time and energy weigh beside its shape, by the same regression as the evidence. */
 const WAVE_WEIGHT = 0.37;
 
-/** Finds the beats: first by energy and rhythm, then by shape, energy and rhythm together. */
-export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
+/**
+ * Finds the beats: first by energy and rhythm, then by shape, energy and rhythm together. `eager` is added to the log-odds of
+ * every place; above 0, beats of stretches that look like noise alone are given too.
+ */
+export function* findBeats(signal: HeartSignal, eager = 0): Generator<number, FoundBeats> {
   const { rateHz, samples } = signal;
   const energy = yield* scaled(energyPass(signal), 0, 0.3);
   const levels = levelsOf(energy, Math.ceil(samples.length / rateHz));
@@ -45,7 +48,7 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
     const sizes = usualSizes(
       round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
     );
-    const scores = evidence.map((value, i) => value + sizeEvidence(candidates[i], sizes));
+    const scores = evidence.map((value, i) => value + eager + sizeEvidence(candidates[i], sizes));
     yield 0.92;
     const hosts = round === 0 ? likeliest(candidates, first, rateHz) : beats;
     const times = beats.map((beat) => beat.sample / rateHz);
@@ -58,7 +61,7 @@ export function* findBeats(signal: HeartSignal): Generator<number, FoundBeats> {
       places = candidates.map((place, i) => ({ ...place, score: worth[i] }));
     yield 0.92;
   }
-  return { beats: present(beats, shapes), shapes, places };
+  return { beats: eager > 0 ? beats : present(beats, shapes), shapes, places };
 }
 
 /** Places weighed between two steps. */

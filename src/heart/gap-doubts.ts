@@ -23,14 +23,14 @@ const MADE_UP = 2.25;
 const ECTOPIC: readonly BeatClass[] = ['S', 'V', 'F'];
 
 /** How long an interval is beside what is foretold. */
-export interface LongInterval {
+interface LongInterval {
   readonly usualMs: number;
   /** How many usual intervals it makes, where the rhythm's own spread lets it be told; null else. */
   readonly parts: number | null;
 }
 
 /** Whether the interval that ends at a beat is long enough to hide one. */
-export function longInterval({ logRr, ways }: DoubtView, beat: number): LongInterval | null {
+function longInterval({ logRr, ways }: DoubtView, beat: number): LongInterval | null {
   const i = beat - 1;
   let parts: number | null = null;
   let usual = Number.NaN;
@@ -56,7 +56,7 @@ interface Seen {
 }
 
 /** The place between two times that is most like a beat; null where there is no room. */
-export function bestBetween(view: DoubtView, fromS: number, toS: number): Seen | null {
+function bestBetween(view: DoubtView, fromS: number, toS: number): Seen | null {
   const { heartbeat, heartbeatHz, ticksPerSample, detection } = view;
   const half = Math.round(TIMING_HALF_S * heartbeatHz);
   const search = Math.floor(((toS - fromS) / 2 - APART_S) * heartbeatHz);

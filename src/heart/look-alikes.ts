@@ -8,7 +8,7 @@ import { readFilled, type Samples, usableRanges } from './usable-signal';
 export const LOOK_BEFORE_S = 0.4;
 const LOOK_AFTER_S = 0.6;
 /** Beats less like one another than this (normalised correlation) do not look alike. */
-export const LEAST_ALIKE = 0.8;
+const LEAST_ALIKE = 0.8;
 const MOST_ALIKE = 24;
 /** How far two beats are shifted against each other to lie best. */
 const SHIFT_S = 0.06;
@@ -28,7 +28,7 @@ export interface LooksInput {
 }
 
 /** Where the beat of a doubt lies: of a missing beat where it would be put; null where none stands or would stand. */
-export function beatOfDoubt({ kind, tick, mend }: Doubt): number | null {
+function beatOfDoubt({ kind, tick, mend }: Doubt): number | null {
   if (kind !== 'missed-beat') return tick;
   return mend?.kind === 'beats' ? (mend.added[0]?.tick ?? null) : null;
 }

@@ -24,6 +24,12 @@ export const numberFigure = (
   marks: readonly string[] = [],
 ): FigureValue => ({ kind: 'number', value, basis, marks });
 
+/** A figure as a number, one given as a count as its percentage; NaN where it is withheld. */
+export function numberOf(figure: FigureValue): number {
+  if (figure.kind === 'number') return figure.value;
+  return figure.kind === 'count' ? (100 * figure.count) / figure.of : Number.NaN;
+}
+
 /** Figures of one phase by key of the figure catalogue. */
 export type Figures = Readonly<Record<string, FigureValue>>;
 

@@ -9,7 +9,7 @@ const bands = (s: Settings) => `${epochs(s)}; limits ${bandsName(s.rhythmBands)}
 export const STOMACH_MEANINGS: Readonly<Record<string, FigureMeaning>> = {
   df_median_cpm: {
     definition:
-      'Median of the dominant frequency over the kept epochs that have a rhythm. DF is the largest local maximum of the spectrum in the search band, refined by a parabola through the logarithm of three points.',
+      'Median of the dominant frequency over the kept epochs that have a rhythm. DF is the largest local maximum of the spectrum in the search band where that stands out by itself, else the local maximum for which the epoch and the independent minutes beside it together have the most evidence, where that is enough; refined by a parabola through the logarithm of three points.',
     source: 'Chen 1996, World J Gastroenterol 2(Suppl 1):9 (concept)',
     settings: epochs,
   },
@@ -51,7 +51,7 @@ export const STOMACH_MEANINGS: Readonly<Record<string, FigureMeaning>> = {
   },
   time_none_pct: {
     definition:
-      'Share of the kept epochs in which no peak stands out of the recording’s own local background.',
+      'Share of the kept epochs in which no peak stands out of the recording’s own local background, neither by itself nor with the minutes beside it.',
     source: OWN_RULE,
     settings: bands,
   },

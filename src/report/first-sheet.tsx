@@ -57,13 +57,12 @@ function Warnings({ texts }: { readonly texts: readonly string[] }) {
   );
 }
 
-function Protocol({ model: { protocol, events } }: { readonly model: ReportModel }) {
+function Protocol({ model: { protocol } }: { readonly model: ReportModel }) {
   const { stated, notStated } = protocol;
   return (
     <Part title="Protocol">
       {stated.length > 0 && <Facts facts={stated} inLine />}
       {notStated.length > 0 && <p className="report-small">Not stated: {notStated.join(', ')}.</p>}
-      {events.length > 0 && <Facts facts={events} inLine />}
     </Part>
   );
 }

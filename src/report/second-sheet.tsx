@@ -1,3 +1,4 @@
+import type { EventRow } from '../export/report-events';
 import type { ReportModel } from '../export/report-model';
 import type { SignatureRow } from '../export/report-signatures';
 import { CAUTIONS } from '../recording/cautions';
@@ -31,6 +32,7 @@ export function SecondSheet({ model }: { readonly model: ReportModel }) {
           <Facts facts={model.seen} />
         </Part>
       )}
+      <Events rows={model.events} />
       <Part title="Remarks">
         <p className="report-own">{model.notes === '' ? 'None written.' : model.notes}</p>
       </Part>
@@ -43,6 +45,40 @@ export function SecondSheet({ model }: { readonly model: ReportModel }) {
         <p>{CAUTIONS.join(' ')}</p>
       </footer>
     </>
+  );
+}
+
+/** What happened and what was felt, each in its phase. */
+function Events({ rows }: { readonly rows: readonly EventRow[] }) {
+  if (rows.length === 0) return null;
+  const scored = rows.some(({ score }) => score !== '');
+  return (
+    <Part title={scored ? 'Events and symptoms' : 'Events'}>
+      <table className="report-table report-events">
+        <thead>
+          <tr>
+            <th scope="col">Time</th>
+            <th scope="col" className="report-left">
+              Phase
+            </th>
+            <th scope="col" className="report-left">
+              {scored ? 'Event, or symptom as the person said it' : 'Event'}
+            </th>
+            {scored && <th scope="col">Score, 10 is worst</th>}
+          </tr>
+        </thead>
+        <tbody>
+          {rows.map(({ time, phase, what, score }) => (
+            <tr key={`${time} ${what} ${score}`}>
+              <th scope="row">{time}</th>
+              <td className="report-left">{phase}</td>
+              <td className="report-left report-free">{what}</td>
+              {scored && <td>{score === '' ? '–' : score}</td>}
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </Part>
   );
 }
 

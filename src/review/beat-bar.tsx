@@ -12,7 +12,7 @@ const CLASS_WORDS = {
   S: 'supraventricular',
   V: 'ventricular',
   F: 'fusion',
-  Q: 'unknown or not usable',
+  Q: 'not usable, or unknown',
 } as const;
 
 interface BeatBarProps {
@@ -24,7 +24,7 @@ interface BeatBarProps {
 export function BeatBar({ stores, commands }: BeatBarProps) {
   useStore(stores.view, (state) => state.selection);
   useStore(stores.session, (state) => state.session?.state.beats);
-  const { hint } = useCommandLinks();
+  const { hint, run } = useCommandLinks();
   const ticks = selectedTicks(stores);
   const open = openBeats(stores);
   if (ticks.length === 0 || !open) return null;
@@ -46,7 +46,7 @@ export function BeatBar({ stores, commands }: BeatBarProps) {
           type="button"
           key={beatClass}
           title={hint(`Class ${beatClass}, ${CLASS_WORDS[beatClass]}`, `class-${beatClass}`)}
-          aria-label={`Class ${beatClass}, ${CLASS_WORDS[beatClass]}`}
+          aria-label={`Class ${beatClass}${beatClass === 'Q' ? '' : ','} ${CLASS_WORDS[beatClass]}`}
           onClick={() => commands.classSelected(beatClass)}
         >
           {beatClass === 'Q' ? 'Q not usable' : beatClass}
@@ -58,6 +58,13 @@ export function BeatBar({ stores, commands }: BeatBarProps) {
         onClick={() => commands.deleteSelectedBeats()}
       >
         Delete
+      </button>
+      <button
+        type="button"
+        title={hint('Find the beats of this stretch again, with other choices', 'find-within')}
+        onClick={() => run('find-within')}
+      >
+        Find again…
       </button>
       <button
         type="button"

@@ -54,6 +54,18 @@ export function bookmarkFrom(
   return { bookmark: all[at], number: at + 1 };
 }
 
+/** The bookmark whose middle lies in what Seconds shows, the nearest where there are several; null where there is none. */
+export function bookmarkHere(
+  bookmarks: readonly Bookmark[],
+  { seconds }: Pick<Bookmark, 'seconds'>,
+): { readonly bookmark: Bookmark; readonly number: number } | null {
+  const all = inBookmarkOrder(bookmarks);
+  const off = (one: Bookmark) => Math.abs(bookmarkAtS(one) - middle(seconds));
+  const inSight = all.filter((one) => off(one) <= width(seconds) / 2);
+  const bookmark = inSight.sort((a, b) => off(a) - off(b)).at(0);
+  return bookmark ? { bookmark, number: all.indexOf(bookmark) + 1 } : null;
+}
+
 /** A bookmark in words: its number among all, its time, its note. */
 export function bookmarkWords(bookmark: Bookmark, number: number, count: number): string {
   const note = bookmark.note === '' ? '' : `: ${bookmark.note}`;

@@ -5,10 +5,14 @@ export class CanvasLayer {
   widthPx = 0;
   heightPx = 0;
 
-  constructor(private readonly canvas: HTMLCanvasElement) {}
+  /** `scale`: how much larger than CSS pixels the canvas is shown. */
+  constructor(
+    private readonly canvas: HTMLCanvasElement,
+    private readonly scale = 1,
+  ) {}
 
   resize(widthPx: number, heightPx: number): void {
-    this.ratio = window.devicePixelRatio || 1;
+    this.ratio = (window.devicePixelRatio || 1) * this.scale;
     this.family = getComputedStyle(this.canvas).fontFamily;
     this.widthPx = widthPx;
     this.heightPx = heightPx;
@@ -31,6 +35,15 @@ export class CanvasLayer {
   font(sizePx: number, weight = 400): string {
     return `${weight} ${sizePx}px ${this.family}`;
   }
+}
+
+/** Where an element stands, in its own CSS pixels, where it is shown `scale` times as large. */
+export function boxOf(
+  element: Element,
+  scale: number,
+): { readonly top: number; readonly width: number; readonly height: number } {
+  const { top, width, height } = element.getBoundingClientRect();
+  return { top: top / scale, width: width / scale, height: height / scale };
 }
 
 /**

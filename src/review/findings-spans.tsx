@@ -5,6 +5,7 @@ import type { Edit } from '../session/document';
 import { changeSpan, removeSpans } from '../session/edits';
 import type { SessionStore } from '../session/store';
 import { formatClock } from '../units/time';
+import { useCommandLinks } from './command-links';
 import { goToStretch } from './findings-go';
 import type { ViewStore } from './view-store';
 
@@ -24,6 +25,7 @@ export function FindingsSpans({ session, view, onEdit }: FindingsSpansProps) {
   const [open, setOpen] = useState(false);
   const [all, setAll] = useState(false);
   const id = useId();
+  const { hint, run } = useCommandLinks();
   const selected = selection.kind === 'span' ? selection.id : null;
   useEffect(() => {
     if (selected !== null) setOpen(true);
@@ -58,6 +60,16 @@ export function FindingsSpans({ session, view, onEdit }: FindingsSpansProps) {
         ) : null}
         {open && spans.length === 0 ? (
           <p className="quiet">Nothing is excluded. Draw a span on the traces to exclude it.</p>
+        ) : null}
+        {open ? (
+          <button
+            type="button"
+            className="button slight"
+            title={hint('All of them with typed times', 'spans')}
+            onClick={() => run('spans')}
+          >
+            By number…
+          </button>
         ) : null}
         {open && spans.length > shown.length ? (
           <button type="button" className="button slight" onClick={() => setAll(true)}>

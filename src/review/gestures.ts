@@ -1,7 +1,11 @@
+import type { Phase } from '../recording/phase';
 import type { Span } from '../recording/span';
 import { dragEnd, panBy, type WindowName, zoomAt } from './navigate';
+import { movePhaseEdge, type PhaseEdge } from './phase-edges';
+import type { Pointing } from './pointed-time';
+import { moveSpanEnd, type SpanEnd } from './span-ends';
 import type { Gesture } from './stage';
-import { lookAtMinutes, lookAtSeconds, type ViewStore } from './view-store';
+import { type Draft, lookAtMinutes, lookAtSeconds, type ViewStore } from './view-store';
 
 /** A drawing's way between pixels and time. */
 export interface TimePlace {
@@ -69,33 +73,27 @@ export function slotEdgeGesture(
   };
 }
 
-/** A time kept inside what a pane shows: nobody excludes what they do not see. */
-function insideWindow(store: ViewStore, name: WindowName, atS: number): number {
-  const { fromS, toS } = store.getState()[name];
-  return Math.min(Math.max(fromS, atS), toS);
-}
-
 /** Draws a new spoiled span from where the press began. */
 export function drawSpanGesture(
   store: ViewStore,
-  name: WindowName,
-  place: TimePlace,
+  pointed: Pointing,
   startX: number,
   done: (fromS: number, toS: number) => void,
   click: (x: number) => void,
 ): Gesture {
-  const anchor = insideWindow(store, name, place.sAt(startX));
-  const stretch = (x: number) => {
-    const other = insideWindow(store, name, place.sAt(x));
-    return { fromS: Math.min(anchor, other), toS: Math.max(anchor, other) };
+  const anchor = pointed(startX, true).atS;
+  const draft = (x: number, free: boolean): Draft => {
+    const moved = pointed(x, free);
+    const [fromS, toS] = [Math.min(anchor, moved.atS), Math.max(anchor, moved.atS)];
+    return { fromS, toS, spanId: null, moved };
   };
   const clear = () => store.setState({ draft: null });
   return {
     cursor: 'crosshair',
-    move: (x) => store.setState({ draft: { ...stretch(x), spanId: null } }),
-    drop: (x) => {
+    move: (x, _, free) => store.setState({ draft: draft(x, free) }),
+    drop: (x, _, free) => {
       clear();
-      const { fromS, toS } = stretch(x);
+      const { fromS, toS } = draft(x, free);
       if (toS > fromS) done(fromS, toS);
     },
     click,
@@ -103,31 +101,45 @@ export function drawSpanGesture(
   };
 }
 
-const LEAST_SPAN_S = 0.1;
-
 /** Drags one end of a spoiled span. */
 export function spanEndGesture(
   store: ViewStore,
-  name: WindowName,
-  place: TimePlace,
+  pointed: Pointing,
   span: Span,
-  end: 'left' | 'right',
+  end: SpanEnd,
   done: (fromS: number, toS: number) => void,
 ): Gesture {
-  const stretch = (x: number) => {
-    const at = insideWindow(store, name, place.sAt(x));
-    return end === 'left'
-      ? { fromS: Math.min(at, span.toS - LEAST_SPAN_S), toS: span.toS }
-      : { fromS: span.fromS, toS: Math.max(at, span.fromS + LEAST_SPAN_S) };
-  };
   const clear = () => store.setState({ draft: null });
   return {
     cursor: 'ew-resize',
-    move: (x) => store.setState({ draft: { ...stretch(x), spanId: span.id } }),
-    drop: (x) => {
+    move: (x, _, free) => store.setState({ draft: moveSpanEnd(span, end, pointed(x, free)) }),
+    drop: (x, _, free) => {
       clear();
-      const { fromS, toS } = stretch(x);
+      const { fromS, toS } = moveSpanEnd(span, end, pointed(x, free));
       done(fromS, toS);
+    },
+    cancel: clear,
+  };
+}
+
+/** Drags a border of a phase; the phases are changed in one step when it is let go. */
+export function phaseEdgeGesture(
+  store: ViewStore,
+  pointed: Pointing,
+  phases: readonly Phase[],
+  edge: PhaseEdge,
+  done: (phases: readonly Phase[]) => void,
+): Gesture {
+  const { durationS } = store.getState();
+  const moved = (x: number, free: boolean) =>
+    movePhaseEdge(phases, edge, pointed(x, free), durationS);
+  const clear = () => store.setState({ phaseDraft: null });
+  return {
+    cursor: 'ew-resize',
+    move: (x, _, free) => store.setState({ phaseDraft: moved(x, free) }),
+    drop: (x, _, free) => {
+      clear();
+      done(moved(x, free).phases);
     },
     cancel: clear,
   };

@@ -1,4 +1,5 @@
 import type { Phase } from '../recording/phase';
+import type { NotedEvent } from './noted-events';
 import type { ThemeTokens } from './theme-tokens';
 import { timeTicks } from './time-ticks';
 import type { TimeWindow } from './view-store';
@@ -13,7 +14,7 @@ export interface GridScene {
   readonly coarsest: 'h:mm' | 'h:mm:ss';
   readonly phases: readonly Phase[];
   /** What was noted at a time, ascending; marked above the rows where there is room. */
-  readonly events: readonly { readonly atS: number; readonly text: string }[];
+  readonly events: readonly NotedEvent[];
   /** Room for names of phases above the rows, 0 for none. */
   readonly headPx: number;
   readonly xOf: (atS: number) => number;
@@ -80,7 +81,7 @@ const EVENT_TEXT_PX = 120;
 const NAME_Y_PX = 8;
 const EVENT_UP_PX = 6;
 
-/** Events: a tick over all rows, and the text beside it as far as it reaches before the next one. */
+/** Events: a dotted line over all rows, and the text beside it as far as it reaches before the next one; symptoms: dashed. */
 function paintEvents(brush: CanvasRenderingContext2D, scene: GridScene): void {
   const { window, topPx, bottomPx, headPx, xOf, tokens, widthPx } = scene;
   if (headPx === 0) return;
@@ -88,9 +89,9 @@ function paintEvents(brush: CanvasRenderingContext2D, scene: GridScene): void {
   brush.strokeStyle = tokens.quiet;
   brush.fillStyle = tokens.quiet;
   brush.textAlign = 'left';
-  brush.setLineDash([1, 4]);
-  seen.forEach(({ atS, text }, i) => {
+  seen.forEach(({ atS, text, score }, i) => {
     const x = Math.round(xOf(atS)) + 0.5;
+    brush.setLineDash(score === null ? [1, 4] : [5, 3]);
     brush.beginPath();
     brush.moveTo(x, topPx - 8);
     brush.lineTo(x, bottomPx);

@@ -2,6 +2,7 @@ import type { Span } from '../recording/span';
 import {
   drawSpanGesture,
   panGesture,
+  phaseEdgeGesture,
   slotEdgeGesture,
   slotGesture,
   spanEndGesture,
@@ -10,6 +11,8 @@ import {
 import { endNear, slotPart } from './hit';
 import type { PaneCommands } from './pane-commands';
 import type { PaneKind, PaneView } from './pane-view';
+import { edgeNear, type PhaseEdge } from './phase-edges';
+import { type Pointing, pointing } from './pointed-time';
 import { selectedSpan } from './span-commands';
 import type { Gesture, StageActs } from './stage';
 import { lookAtSeconds } from './view-store';
@@ -57,6 +60,14 @@ export function roundStretch(view: PaneView, atS: number): number {
   return Math.min(rounded, durationS);
 }
 
+/** Reads the pointer over a pane: nobody excludes what they do not see, so a time stays inside what is shown. */
+function pointedIn(view: PaneView): Pointing {
+  const { fromS, toS } = view.window;
+  return pointing(view.stores, view, (atS) =>
+    roundStretch(view, Math.min(Math.max(fromS, atS), toS)),
+  );
+}
+
 /** What a press does in any pane before its own drags: an end of the selected span, or a new span. */
 export function spanGesture(
   view: PaneView,
@@ -69,15 +80,23 @@ export function spanGesture(
   const span = selectedSpan(view.stores);
   const end = selectedEndAt(view, x);
   if (span && end)
-    return spanEndGesture(store, view.kind.name, view, span, end, (fromS, toS) =>
-      commands.changeSelectedSpan(
-        end === 'left' ? { fromS: roundStretch(view, fromS) } : { toS: roundStretch(view, toS) },
-      ),
+    return spanEndGesture(store, pointedIn(view), span, end, (fromS, toS) =>
+      commands.changeSelectedSpan(end === 'left' ? { fromS } : { toS }),
     );
   if (!excludes) return null;
-  const exclude = (fromS: number, toS: number) =>
-    commands.excludeRange(roundStretch(view, fromS), roundStretch(view, toS));
-  return drawSpanGesture(store, view.kind.name, view, x, exclude, click);
+  return drawSpanGesture(store, pointedIn(view), x, commands.excludeRange, click);
+}
+
+/** The border of a phase under a place in the head of Minutes, where the phases' names stand. */
+function borderAt(view: PaneView, x: number, y: number): PhaseEdge | null {
+  const phases = view.stores.session.getState().session?.state.phases ?? [];
+  return y < view.topPx ? edgeNear(phases, x, view.xOf) : null;
+}
+
+function borderGesture(view: PaneView, commands: PaneCommands, edge: PhaseEdge): Gesture {
+  const phases = view.stores.session.getState().session?.state.phases ?? [];
+  const pointed = pointing(view.stores, view, (atS) => roundStretch(view, atS));
+  return phaseEdgeGesture(view.stores.view, pointed, phases, edge, commands.changePhases);
 }
 
 /** Selects the spoiled span under a place, or nothing. */
@@ -99,7 +118,9 @@ export function minutesActs(view: PaneView, commands: PaneCommands): StageActs {
     return slotPart(x, view.xOf(seconds.fromS), view.xOf(seconds.toS));
   };
   return {
-    press: (x, _y, event) => {
+    press: (x, y, event) => {
+      const edge = borderAt(view, x, y);
+      if (edge) return borderGesture(view, commands, edge);
       const excludes = event.altKey || store.getState().tool === 'exclude';
       const spoiled = spanGesture(view, commands, x, excludes, click);
       if (spoiled) return spoiled;
@@ -108,8 +129,8 @@ export function minutesActs(view: PaneView, commands: PaneCommands): StageActs {
       if (part) return slotEdgeGesture(store, 'seconds', part, view, x);
       return panGesture(store, 'minutes', view, x, click);
     },
-    hover: (x) => {
-      if (selectedEndAt(view, x)) return 'ew-resize';
+    hover: (x, y) => {
+      if (selectedEndAt(view, x) || borderAt(view, x, y)) return 'ew-resize';
       if (store.getState().tool === 'exclude') return 'crosshair';
       const part = slotAt(x);
       if (part === 'body') return 'grab';

@@ -3,11 +3,17 @@ import { type BeatCommands, beatCommands } from './beat-commands';
 import { type GainCommands, gainCommands } from './gain-commands';
 import { type LookCommands, lookCommands } from './look-commands';
 import type { PaneActs } from './pane-acts';
+import { type PhaseCommands, phaseCommands } from './phase-commands';
 import type { PaneStores } from './row-view';
 import { type SpanCommands, spanCommands } from './span-commands';
 
 /** Every act of the panes, for the shell's command table and for pins and buttons. */
-export interface PaneCommands extends LookCommands, GainCommands, BeatCommands, SpanCommands {
+export interface PaneCommands
+  extends LookCommands,
+    GainCommands,
+    BeatCommands,
+    SpanCommands,
+    PhaseCommands {
   /** Deletes the selected beats, or takes away the selected spoiled span. */
   deleteSelected(): void;
 }
@@ -25,6 +31,7 @@ export function paneCommands(
     ...gainCommands(stores, signals, act),
     ...beats,
     ...spans,
+    ...phaseCommands(stores, act),
     deleteSelected: () => {
       if (stores.view.getState().selection.kind === 'span') spans.deleteSelectedSpan();
       else beats.deleteSelectedBeats();

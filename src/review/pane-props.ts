@@ -9,4 +9,6 @@ export interface PaneProps {
   readonly signals: SignalAccess;
   readonly act: PaneActs;
   readonly theme: ThemeName;
+  /** How much larger than CSS pixels the pane is shown, 1 unless given. */
+  readonly scale?: number;
 }

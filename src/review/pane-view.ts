@@ -1,13 +1,13 @@
 import { leadKey } from '../recording/lead';
 import { drawsDiffer, type SignalAccess } from './analysis-store';
-import { CanvasLayer, watchSize } from './canvas-layer';
+import { boxOf, CanvasLayer, watchSize } from './canvas-layer';
 import { paintDoubt } from './doubt-paint';
 import { FrameLoop } from './frame-loop';
 import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
 import { beginWork, endWork } from './idle';
 import { makeRowView } from './make-row';
-import { notedEvents } from './noted-events';
+import { notedEvents, notedWords } from './noted-events';
 import type { PaneDom } from './pane-dom';
 import type { PaneStores, RowContext, RowView } from './row-view';
 import type { Row } from './rows';
@@ -56,15 +56,17 @@ export class PaneView {
     readonly kind: PaneKind,
     rows: readonly Row[],
     public tokens: ThemeTokens,
+    private readonly scale = 1,
   ) {
-    this.under = new CanvasLayer(dom.under);
-    this.over = new CanvasLayer(dom.over);
+    this.under = new CanvasLayer(dom.under, scale);
+    this.over = new CanvasLayer(dom.over, scale);
     this.staleness = new Staleness(stores, this.loop.ask);
     const context: RowContext = {
       stores,
       signals,
       tokens: () => this.tokens,
       stale: () => this.staleness.stale,
+      scale,
       redraw: this.loop.ask,
     };
     this.rows = rows.map((row) => makeRowView(row, dom, context));
@@ -103,6 +105,9 @@ export class PaneView {
         state.selection,
         state.draft,
         state.doubt,
+        state.preview,
+        state.phaseDraft,
+        state.identityHidden,
       ] as const;
     this.stops.push(
       view.subscribe((now, before) => {
@@ -124,12 +129,12 @@ export class PaneView {
 
   private layout(): void {
     const { dom } = this;
-    const stage = dom.stage.getBoundingClientRect();
+    const stage = boxOf(dom.stage, this.scale);
     if (stage.width < 2 || stage.height < 2) return;
     this.widthPx = stage.width;
     this.boxes = this.rows.map((view) => {
       const host = dom.hosts.get(view.row.key);
-      const box = host?.getBoundingClientRect() ?? stage;
+      const box = host ? boxOf(host, this.scale) : stage;
       view.resize(box.width, box.height);
       return { row: view.row, topPx: box.top - stage.top, heightPx: box.height };
     });
@@ -167,7 +172,10 @@ export class PaneView {
       bottomPx: this.bottomPx,
       axisPx: this.axisPx,
       coarsest: this.kind.coarsest,
-      phases: this.stores.session.getState().session?.state.phases ?? [],
+      phases:
+        this.stores.view.getState().phaseDraft?.phases ??
+        this.stores.session.getState().session?.state.phases ??
+        [],
       events: notedEvents(this.stores),
       headPx: this.kind.showsPhaseNames ? this.topPx : 0,
       xOf: this.xOf,
@@ -234,7 +242,7 @@ export class PaneView {
     const clock = (atS: number) => clockText(atS, 1, 'h:mm:ss');
     const from = `${this.kind.title}, ${widthText(toS - fromS)} from ${clock(fromS)} to ${clock(toS)}.`;
     const rows = this.rows.map((row) => `${row.describe()}.`).join(' ');
-    this.dom.summary.textContent = `${from} ${rows}`;
+    this.dom.summary.textContent = `${from} ${rows}${notedWords(this.stores, fromS, toS)}`;
     endWork();
   }
 

@@ -1,4 +1,6 @@
 import type { Phase } from '../recording/phase';
+import { nearestWithin } from './hit';
+import type { Moved, PhaseDraft } from './view-store';
 
 /** A border of one phase, or of two that touch, that can be dragged. */
 export interface PhaseEdge {
@@ -10,6 +12,7 @@ export interface PhaseEdge {
 
 const TOUCH_S = 0.5;
 const LEAST_PHASE_S = 10;
+const EDGE_PX = 6;
 
 /** Borders of phases in ascending time; the end of one and the beginning of the next are one border where they touch. */
 export function phaseEdges(phases: readonly Phase[]): readonly PhaseEdge[] {
@@ -26,15 +29,15 @@ export function phaseEdges(phases: readonly Phase[]): readonly PhaseEdge[] {
 }
 
 /**
- * Phases with one border moved to a whole second near `atS`, kept inside the study, clear of the other phases, and so that no
- * phase is shorter than 10 s.
+ * Phases with one border moved to a time, kept inside the study, clear of the other phases, and so that no phase is shorter than
+ * 10 s. What it was snapped to is told only where it got there.
  */
 export function movePhaseEdge(
   phases: readonly Phase[],
   edge: PhaseEdge,
-  atS: number,
+  { atS, snap }: Moved,
   durationS: number,
-): readonly Phase[] {
+): PhaseDraft {
   let least = 0;
   let most = durationS;
   phases.forEach((phase, index) => {
@@ -44,10 +47,28 @@ export function movePhaseEdge(
     else if (phase.fromS >= edge.atS - TOUCH_S && index !== edge.ends)
       most = Math.min(most, phase.fromS);
   });
-  const place = Math.min(Math.max(Math.round(atS), least), Math.max(least, most));
-  return phases.map((phase, index) => {
-    if (index === edge.ends) return { ...phase, toS: place };
-    if (index === edge.begins) return { ...phase, fromS: place };
-    return phase;
-  });
+  const place = Math.min(Math.max(atS, least), Math.max(least, most));
+  return {
+    phases: phases.map((phase, index) => {
+      if (index === edge.ends) return { ...phase, toS: place };
+      if (index === edge.begins) return { ...phase, fromS: place };
+      return phase;
+    }),
+    moved: { atS: place, snap: place === atS ? snap : null },
+  };
+}
+
+/** The border of a phase within 6 px of a place, or null; of several, the nearest. */
+export function edgeNear(
+  phases: readonly Phase[],
+  x: number,
+  xOf: (atS: number) => number,
+): PhaseEdge | null {
+  const edges = phaseEdges(phases);
+  const found = nearestWithin(
+    x,
+    edges.map((edge) => xOf(edge.atS)),
+    EDGE_PX,
+  );
+  return found === null ? null : edges[found];
 }

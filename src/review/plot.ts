@@ -5,6 +5,8 @@ export interface PlotParts {
   readonly stroke: () => string;
   /** Line width in CSS pixels. */
   readonly width: number;
+  /** How much larger than CSS pixels the plot is shown. */
+  readonly scale: number;
   readonly path: (u: uPlot) => Path2D | null;
   readonly before?: (u: uPlot) => void;
   readonly after?: (u: uPlot) => void;
@@ -34,7 +36,7 @@ export function makePlot(host: HTMLElement, parts: PlotParts): uPlot {
         {},
         {
           stroke: parts.stroke,
-          width: parts.width,
+          width: parts.width * parts.scale,
           points: { show: false },
           pxAlign: 0,
           paths: (u) => {
@@ -51,6 +53,11 @@ export function makePlot(host: HTMLElement, parts: PlotParts): uPlot {
     NOTHING,
     host,
   );
+}
+
+/** Gives a plot the size of its host in CSS pixels, as fine as it is shown. */
+export function resizePlot(u: uPlot, widthPx: number, heightPx: number, scale: number): void {
+  u.setSize({ width: Math.max(1, widthPx * scale), height: Math.max(1, heightPx * scale) });
 }
 
 /** Shows [fromS, toS) and [low, high] and draws at once; the path is made anew only where scales or data changed. */

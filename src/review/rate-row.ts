@@ -1,6 +1,6 @@
 import type uPlot from 'uplot';
 import { heartRateLine, rateLimits } from './heart-rate';
-import { makePlot, plotScale, showWindow } from './plot';
+import { makePlot, plotScale, resizePlot, showWindow } from './plot';
 import { ratePath, type ValueLine } from './rate-path';
 import type { RowContext, RowView } from './row-view';
 import type { ResultRow } from './rows';
@@ -27,13 +27,14 @@ export class RateRowView implements RowView {
     this.u = makePlot(host, {
       stroke: () => context.tokens()[context.stale() ? 'quiet' : row.hue],
       width: 1,
+      scale: context.scale,
       path: (u) => this.path(u),
     });
   }
 
   resize(widthPx: number, heightPx: number): void {
     this.widthPx = widthPx;
-    this.u.setSize({ width: Math.max(1, widthPx), height: Math.max(1, heightPx) });
+    resizePlot(this.u, widthPx, heightPx, this.context.scale);
   }
 
   draw(window: TimeWindow): void {
@@ -70,7 +71,7 @@ export class RateRowView implements RowView {
   private path(u: uPlot): Path2D | null {
     if (!this.line || !this.limits) return null;
     const path = new Path2D();
-    ratePath(path, this.line, this.window, this.widthPx, plotScale(u));
+    ratePath(path, this.line, this.window, this.widthPx * this.context.scale, plotScale(u));
     return path;
   }
 

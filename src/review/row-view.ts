@@ -18,6 +18,8 @@ export interface RowContext {
   readonly tokens: () => ThemeTokens;
   /** Results are older than the last edit: drawn grey. */
   readonly stale: () => boolean;
+  /** How much larger than CSS pixels the row is shown: plots are made that much finer. */
+  readonly scale: number;
   /** Asks for a draw in the next frame. */
   readonly redraw: () => void;
 }

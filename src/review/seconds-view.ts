@@ -6,6 +6,7 @@ import { openBeats } from './open-beats';
 import type { PaneCommands } from './pane-commands';
 import type { PaneKind, PaneView } from './pane-view';
 import type { PinButtons } from './pin-buttons';
+import { paintPreview } from './preview-paint';
 import {
   type BeatDrag,
   PIN_Y_PX,
@@ -37,6 +38,7 @@ export function secondsKind(parts: SecondsParts): PaneKind {
     paintOver: (brush, view) => {
       if (parts.band) paintBand(brush, view, parts.band);
       paintBeats(brush, view, parts.drag);
+      paintPreview(brush, view);
     },
     drawn: (view) => parts.buttons.place(view),
   };

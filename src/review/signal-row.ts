@@ -8,7 +8,7 @@ import { crestsPerMinute } from './crest-counts';
 import { wholeStudyGain } from './fit';
 import { middleUv } from './gain';
 import { asWork } from './idle';
-import { makePlot, plotScale, showWindow } from './plot';
+import { makePlot, plotScale, resizePlot, showWindow } from './plot';
 import type { RowContext, RowView } from './row-view';
 import type { SignalRow } from './rows';
 import type { TimeWindow } from './view-store';
@@ -46,6 +46,7 @@ export class SignalRowView implements RowView {
     this.u = makePlot(host, {
       stroke: () => context.tokens()[row.hue],
       width: row.hue === 'quiet' ? 1 : 1.25,
+      scale: context.scale,
       path: (u) => this.path(u),
       before: (u) => this.shadeUnclean(u),
       after: (u) => this.markCrests(u),
@@ -77,7 +78,7 @@ export class SignalRowView implements RowView {
     this.widthPx = widthPx;
     this.heightPx = heightPx;
     this.family = getComputedStyle(this.u.root).fontFamily;
-    this.u.setSize({ width: Math.max(1, widthPx), height: Math.max(1, heightPx) });
+    resizePlot(this.u, widthPx, heightPx, this.context.scale);
   }
 
   draw(window: TimeWindow): void {
@@ -85,7 +86,7 @@ export class SignalRowView implements RowView {
     const { durationS, gainsUv } = view.getState();
     this.window = window;
     if (analysis.getState().fileAtHand) {
-      this.feed.see(window, durationS, this.widthPx);
+      this.feed.see(window, durationS, this.widthPx * this.context.scale);
       if (gainsUv[this.row.key] === undefined) this.fit(window);
     }
     const gain = gainsUv[this.row.key] ?? 100;

@@ -1,8 +1,10 @@
+import './borders.css';
 import { useStore } from 'zustand';
 import { SPAN_CAUSES, SPAN_TARGETS } from '../recording/span';
 import { formatClock } from '../units/time';
 import type { PaneStores } from './row-view';
 import { type SpanCommands, selectedSpan } from './span-commands';
+import { SpanEndField } from './span-end-field';
 
 const TARGET_WORDS = { stomach: 'stomach', heart: 'heart', both: 'stomach and heart' } as const;
 
@@ -21,9 +23,9 @@ export function SpanBar({
   const place = `${formatClock(span.fromS, 1)} to ${formatClock(span.toS, 1)}`;
   return (
     <fieldset className="span-bar" aria-label={`Spoiled span ${place}`}>
-      <span className="span-place">
-        {span.origin === 'proposed' ? 'Proposed' : 'Drawn'} {place}
-      </span>
+      <span className="span-place">{span.origin === 'proposed' ? 'Proposed' : 'Drawn'}</span>
+      <SpanEndField key={`left ${span.id}`} end="left" {...{ stores, commands, span }} />
+      <SpanEndField key={`right ${span.id}`} end="right" {...{ stores, commands, span }} />
       <Choice
         words="excluded for"
         value={span.target}

@@ -92,17 +92,19 @@ function paintSpan(
 
 function labelSpan(
   brush: CanvasRenderingContext2D,
-  { tokens, topPx, font }: SpanScene,
+  { tokens, topPx, font, window, xOf }: SpanScene,
   span: Span,
   left: number,
   width: number,
 ): void {
   const words = span.target === 'both' ? span.cause : `${span.cause}, ${span.target}`;
   brush.font = font;
-  const text = brush.measureText(words).width <= width - 6 ? words : span.cause;
+  const from = Math.max(left, xOf(window.fromS));
+  const to = Math.min(left + width, xOf(window.toS));
+  const text = brush.measureText(words).width <= to - from - 6 ? words : span.cause;
   const room = brush.measureText(text).width;
-  if (room > width - 6) return;
-  const middle = left + width / 2;
+  if (room > to - from - 6) return;
+  const middle = (from + to) / 2;
   brush.fillStyle = tokens.paper;
   brush.fillRect(middle - room / 2 - 3, topPx + 1, room + 6, 15);
   brush.fillStyle = tokens.ink;

@@ -4,7 +4,7 @@ import type { Settings } from '../recording/settings';
 import { dfPieces } from './df-line';
 import { Hatch } from './hatch';
 import { asWork } from './idle';
-import { makePlot, plotScale, showWindow } from './plot';
+import { makePlot, plotScale, resizePlot, showWindow } from './plot';
 import { colourLevels, fittedLevels, rampTable } from './ramp';
 import type { RowContext, RowView } from './row-view';
 import type { ResultRow } from './rows';
@@ -50,6 +50,7 @@ export class SpectrogramRowView implements RowView {
     this.u = makePlot(host, {
       stroke: () => context.tokens().dfLine,
       width: 1,
+      scale: context.scale,
       path: () => null,
       before: (u) => this.paint(u),
       after: (u) => this.drawDf(u),
@@ -57,7 +58,7 @@ export class SpectrogramRowView implements RowView {
   }
 
   resize(widthPx: number, heightPx: number): void {
-    this.u.setSize({ width: Math.max(1, widthPx), height: Math.max(1, heightPx) });
+    resizePlot(this.u, widthPx, heightPx, this.context.scale);
     this.ratio = this.u.bbox.width / Math.max(1, widthPx);
   }
 

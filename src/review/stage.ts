@@ -1,10 +1,10 @@
 /** What a press on a pane's drawing does from then on; places are CSS pixels from the drawing's left top corner. */
 export interface Gesture {
   readonly cursor?: string;
-  /** Held and moved beyond 4 px. */
-  move?(x: number, y: number): void;
+  /** Held and moved beyond 4 px; `free` while Alt or Shift keeps the place from snapping. */
+  move?(x: number, y: number, free: boolean): void;
   /** Let go after a move. */
-  drop?(x: number, y: number): void;
+  drop?(x: number, y: number, free: boolean): void;
   /** Let go without a move. */
   click?(x: number, y: number): void;
   /** Escape, or the pointer was taken away: back to before the press. */
@@ -23,13 +23,26 @@ export interface StageActs {
 
 const STILL_PX = 4;
 
+interface Held {
+  readonly gesture: Gesture;
+  readonly x: number;
+  readonly y: number;
+  /** Alt was down already: it says what the press does, not how. */
+  readonly alt: boolean;
+  moved: boolean;
+}
+
+const isFree = ({ alt }: Held, { shiftKey, altKey }: PointerEvent): boolean =>
+  shiftKey || (altKey && !alt);
+
 /** The press that is held, and what it has become. */
 class Hold {
-  private held: { gesture: Gesture; x: number; y: number; moved: boolean } | null = null;
+  private held: Held | null = null;
 
   constructor(
     private readonly stage: HTMLElement,
     private readonly acts: StageActs,
+    private readonly scale: number,
   ) {}
 
   get active(): boolean {
@@ -38,7 +51,7 @@ class Hold {
 
   place(event: MouseEvent): readonly [number, number] {
     const box = this.stage.getBoundingClientRect();
-    return [event.clientX - box.left, event.clientY - box.top];
+    return [(event.clientX - box.left) / this.scale, (event.clientY - box.top) / this.scale];
   }
 
   down(event: PointerEvent): void {
@@ -46,7 +59,7 @@ class Hold {
     const [x, y] = this.place(event);
     const gesture = this.acts.press(x, y, event);
     if (!gesture) return;
-    this.held = { gesture, x, y, moved: false };
+    this.held = { gesture, x, y, alt: event.altKey, moved: false };
     this.stage.setPointerCapture(event.pointerId);
   }
 
@@ -61,15 +74,16 @@ class Hold {
     if (!held.moved && Math.abs(x - held.x) < STILL_PX && Math.abs(y - held.y) < STILL_PX) return;
     held.moved = true;
     stage.style.cursor = held.gesture.cursor ?? 'grabbing';
-    held.gesture.move?.(x, y);
+    held.gesture.move?.(x, y, isFree(held, event));
   }
 
   up(event: PointerEvent): void {
     if (!this.held) return;
     const { gesture, moved } = this.held;
+    const free = isFree(this.held, event);
     const [x, y] = this.place(event);
     this.release();
-    if (moved) gesture.drop?.(x, y);
+    if (moved) gesture.drop?.(x, y, free);
     else gesture.click?.(x, y);
   }
 
@@ -84,11 +98,11 @@ class Hold {
   }
 }
 
-/** Listens to pointer and wheel on a pane's drawing. Returns the way to stop. */
-export function listenToStage(stage: HTMLElement, acts: StageActs): () => void {
+/** Listens to pointer and wheel on a pane's drawing, shown `scale` times as large. Returns the way to stop. */
+export function listenToStage(stage: HTMLElement, acts: StageActs, scale = 1): () => void {
   const stop = new AbortController();
   const { signal } = stop;
-  const hold = new Hold(stage, acts);
+  const hold = new Hold(stage, acts, scale);
   const onEscape = (event: KeyboardEvent) => {
     if (event.key !== 'Escape' || !hold.active) return;
     event.stopPropagation();

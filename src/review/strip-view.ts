@@ -2,17 +2,18 @@ import { leadKey } from '../recording/lead';
 import { type Phase, phasesOrWhole } from '../recording/phase';
 import { bookmarkAtS } from '../session/bookmark-edits';
 import type { Bookmark, SessionState } from '../session/document';
-import { setField } from '../session/edits';
 import { drawsDiffer } from './analysis-store';
 import { bookmarkWords, goToBookmark } from './bookmarks';
-import { CanvasLayer, watchSize } from './canvas-layer';
+import { boxOf, CanvasLayer, watchSize } from './canvas-layer';
 import { FrameLoop } from './frame-loop';
-import { panGesture, slotEdgeGesture, slotGesture, wheelOver } from './gestures';
+import { panGesture, phaseEdgeGesture, slotEdgeGesture, slotGesture, wheelOver } from './gestures';
 import { Hatch } from './hatch';
 import { heartRateLine, rateColumns, rateLimits } from './heart-rate';
-import { nearestWithin, slotPart } from './hit';
-import { type PaneActs, tryEdit } from './pane-acts';
-import { movePhaseEdge, type PhaseEdge, phaseEdges } from './phase-edges';
+import { slotPart } from './hit';
+import type { PaneActs } from './pane-acts';
+import { changePhases } from './phase-commands';
+import { edgeNear, type PhaseEdge } from './phase-edges';
+import { pointing } from './pointed-time';
 import type { PaneStores } from './row-view';
 import type { Gesture, StageActs } from './stage';
 import { Staleness } from './staleness';
@@ -33,15 +34,12 @@ export interface StripDom {
   readonly summary: HTMLElement;
 }
 
-const EDGE_PX = 6;
-
 /** The strip over the whole study: phases, stomach row, heart rate, spoiled spans, the Minutes slot. */
 export class StripView {
   private readonly loop = new FrameLoop(() => this.draw());
   private readonly layer: CanvasLayer;
   private readonly hatch = new Hatch();
   private readonly stops: (() => void)[] = [];
-  private draftPhases: readonly Phase[] | null = null;
   private rate: { source: object; columns: StripScene['rate'] } | null = null;
   private readonly staleness: Staleness;
   private widthPx = 1;
@@ -51,8 +49,9 @@ export class StripView {
     private readonly stores: PaneStores,
     private readonly act: PaneActs,
     private tokens: ThemeTokens,
+    private readonly scale = 1,
   ) {
-    this.layer = new CanvasLayer(dom.canvas);
+    this.layer = new CanvasLayer(dom.canvas, scale);
     this.staleness = new Staleness(stores, this.loop.ask);
     const { view, analysis, session } = stores;
     this.stops.push(
@@ -65,7 +64,8 @@ export class StripView {
       }),
       view.subscribe((now, before) => {
         if (now.durationS !== before.durationS || now.draft !== before.draft) this.loop.ask();
-        if (now.selection !== before.selection) this.loop.ask();
+        if (now.selection !== before.selection || now.phaseDraft !== before.phaseDraft)
+          this.loop.ask();
         if (now.minutes !== before.minutes || now.seconds !== before.seconds) this.placeSlots();
         if (now.cursorS !== before.cursorS) this.placeCursor();
       }),
@@ -83,7 +83,7 @@ export class StripView {
   }
 
   private layout(): void {
-    const { width, height } = this.dom.stage.getBoundingClientRect();
+    const { width, height } = boxOf(this.dom.stage, this.scale);
     if (width < 2) return;
     this.widthPx = width;
     this.rate = null;
@@ -98,7 +98,7 @@ export class StripView {
   }
 
   phases(): readonly Phase[] {
-    return this.draftPhases ?? this.state()?.phases ?? [];
+    return this.stores.view.getState().phaseDraft?.phases ?? this.state()?.phases ?? [];
   }
 
   private bookmarks(): readonly Bookmark[] {
@@ -112,12 +112,6 @@ export class StripView {
       (one) => Math.abs(x - this.xOf(bookmarkAtS(one))) <= FLAG.widthPx,
     );
     return near.at(-1) ?? null;
-  }
-
-  /** Shows phases as they would be while a border is dragged; null: as they are. */
-  draft(phases: readonly Phase[] | null): void {
-    this.draftPhases = phases;
-    this.loop.ask();
   }
 
   private rateNow(durationS: number): StripScene['rate'] {
@@ -211,31 +205,15 @@ export class StripView {
   /** The border of a phase under a place in the phases' row. */
   edgeAt(x: number, y: number): PhaseEdge | null {
     if (y > PHASE_BOX.bottomPx) return null;
-    const edges = phaseEdges(this.phases());
-    const found = nearestWithin(
-      x,
-      edges.map((edge) => this.xOf(edge.atS)),
-      EDGE_PX,
-    );
-    return found === null ? null : edges[found];
+    return edgeNear(this.phases(), x, this.xOf);
   }
 
-  /** Drags a border of a phase; the phases are changed in one step when it is let go. */
   edgeGesture(edge: PhaseEdge): Gesture {
-    const before = this.phases();
-    const { durationS } = this.stores.view.getState();
-    const moved = (x: number) => movePhaseEdge(before, edge, this.sAt(x), durationS);
-    return {
-      cursor: 'ew-resize',
-      move: (x) => this.draft(moved(x)),
-      drop: (x) => {
-        this.draft(null);
-        tryEdit(this.stores, this.act, ({ state }) =>
-          setField(state, 'phases', moved(x), 'move border of a phase'),
-        );
-      },
-      cancel: () => this.draft(null),
-    };
+    const { stores } = this;
+    const pointed = pointing(stores, this, Math.round);
+    return phaseEdgeGesture(stores.view, pointed, this.phases(), edge, (phases) =>
+      changePhases(stores, this.act, phases),
+    );
   }
 
   destroy(): void {

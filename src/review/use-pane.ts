@@ -23,7 +23,7 @@ export function usePane(
   rows: readonly Row[],
   setUp: (section: HTMLElement) => PaneSetup,
 ): RefObject<HTMLElement | null> {
-  const { stores, signals, theme } = props;
+  const { stores, signals, theme, scale } = props;
   const sectionRef = useRef<HTMLElement>(null);
   const viewRef = useRef<PaneView | null>(null);
   const themeRef = useRef(theme);
@@ -33,8 +33,16 @@ export function usePane(
     if (!section || rows.length === 0) return undefined;
     const setup = setUp(section);
     const dom = paneDom(section, rows);
-    const view = new PaneView(dom, stores, signals, setup.kind, rows, THEMES[themeRef.current]);
-    const deafen = listenToStage(dom.stage, setup.acts(view));
+    const view = new PaneView(
+      dom,
+      stores,
+      signals,
+      setup.kind,
+      rows,
+      THEMES[themeRef.current],
+      scale,
+    );
+    const deafen = listenToStage(dom.stage, setup.acts(view), scale);
     viewRef.current = view;
     return () => {
       deafen();
@@ -42,7 +50,7 @@ export function usePane(
       view.destroy();
       viewRef.current = null;
     };
-  }, [stores, signals, rows, setUp]);
+  }, [stores, signals, rows, setUp, scale]);
   useEffect(() => viewRef.current?.retheme(THEMES[theme]), [theme]);
   return sectionRef;
 }

@@ -1,4 +1,5 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
+import type { Phase } from '../recording/phase';
 
 /** A window in time, in seconds from the start of the recording. */
 export interface TimeWindow {
@@ -16,9 +17,29 @@ export type Selection =
   | { readonly kind: 'beats'; readonly ticks: readonly number[]; readonly anchor?: number }
   | { readonly kind: 'span'; readonly id: number };
 
+/** Where an edge is being moved to, and what stands at that time where it was snapped to something. */
+export interface Moved {
+  readonly atS: number;
+  readonly snap: string | null;
+}
+
 /** A stretch being drawn or dragged that is no edit yet: a new spoiled span (`spanId` null) or an old one's new place. */
 export interface Draft extends TimeWindow {
   readonly spanId: number | null;
+  readonly moved: Moved;
+}
+
+/** Phases as they would be while one of their borders is moved. */
+export interface PhaseDraft {
+  readonly phases: readonly Phase[];
+  readonly moved: Moved;
+}
+
+/** Beats that finding them again in a stretch would change, before it is taken. */
+export interface BeatPreview extends TimeWindow {
+  readonly gained: readonly number[];
+  readonly lost: readonly number[];
+  readonly moved: readonly (readonly [fromTick: number, toTick: number])[];
 }
 
 /** The doubt in front as the panes draw it. */
@@ -47,6 +68,10 @@ export interface ViewState {
   readonly selection: Selection;
   readonly draft: Draft | null;
   readonly doubt: DoubtMark | null;
+  readonly preview: BeatPreview | null;
+  readonly phaseDraft: PhaseDraft | null;
+  /** True while the borders of phases stand in Whole study to be moved by keys. */
+  readonly bordersShown: boolean;
   readonly tool: Tool;
   /** Leads that Minutes draws; null: as many as fit the height of the page. */
   readonly leadsShown: 'all' | 'reported' | null;
@@ -72,6 +97,9 @@ export const createViewStore = (): ViewStore =>
     selection: { kind: 'none' },
     draft: null,
     doubt: null,
+    preview: null,
+    phaseDraft: null,
+    bordersShown: false,
     tool: 'look',
     leadsShown: null,
     identityHidden: false,
@@ -101,6 +129,9 @@ export function lookAtStudy(store: ViewStore, durationS: number): void {
     selection: { kind: 'none' },
     draft: null,
     doubt: null,
+    preview: null,
+    phaseDraft: null,
+    bordersShown: false,
     tool: 'look',
   });
 }

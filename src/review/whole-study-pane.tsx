@@ -1,8 +1,15 @@
-import { useEffect, useRef } from 'react';
+import { lazy, Suspense, useEffect, useRef } from 'react';
+import { useStore } from 'zustand';
+import { asWork } from './idle';
 import type { PaneProps } from './pane-props';
 import { listenToStage } from './stage';
 import { type StripDom, StripView, stripActs } from './strip-view';
 import { THEMES } from './theme-tokens';
+
+/** Fetched when an edge is moved first. */
+const MovingParts = lazy(() =>
+  asWork(import('./moving')).then((all) => ({ default: all.MovingParts })),
+);
 
 function stripDom(section: HTMLElement): StripDom {
   const part = (name: string) => {
@@ -23,7 +30,11 @@ function stripDom(section: HTMLElement): StripDom {
 }
 
 /** The thin strip over the full duration. */
-export function WholeStudyPane({ stores, act, theme }: PaneProps) {
+export function WholeStudyPane({ stores, act, theme, scale }: PaneProps) {
+  const moving = useStore(
+    stores.view,
+    ({ draft, phaseDraft, bordersShown }) => bordersShown || (draft ?? phaseDraft) !== null,
+  );
   const sectionRef = useRef<HTMLElement>(null);
   const stripRef = useRef<StripView | null>(null);
   const themeRef = useRef(theme);
@@ -32,15 +43,15 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
     const section = sectionRef.current;
     if (!section) return undefined;
     const dom = stripDom(section);
-    const strip = new StripView(dom, stores, act, THEMES[themeRef.current]);
-    const deafen = listenToStage(dom.stage, stripActs(strip, stores));
+    const strip = new StripView(dom, stores, act, THEMES[themeRef.current], scale);
+    const deafen = listenToStage(dom.stage, stripActs(strip, stores), scale);
     stripRef.current = strip;
     return () => {
       deafen();
       strip.destroy();
       stripRef.current = null;
     };
-  }, [stores, act]);
+  }, [stores, act, scale]);
   useEffect(() => stripRef.current?.retheme(THEMES[theme]), [theme]);
   return (
     <section className="pane whole" aria-label="Whole study" ref={sectionRef}>
@@ -56,6 +67,11 @@ export function WholeStudyPane({ stores, act, theme }: PaneProps) {
         <div className="cursor-line" data-part="cursor-line" hidden />
       </div>
       <p className="visually-hidden" data-part="summary" />
+      {moving ? (
+        <Suspense fallback={null}>
+          <MovingParts stores={stores} act={act} />
+        </Suspense>
+      ) : null}
     </section>
   );
 }

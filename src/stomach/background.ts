@@ -3,6 +3,7 @@ import { median } from '../numeric/statistics';
 import type { Cpm } from '../units/rate';
 import type { Seconds } from '../units/time';
 import type { Band, SpectrumPeak } from './dominant-peak';
+import { EULER, logFrequencies } from './smooth-level';
 
 /** Where the background is estimated; 0.5 cpm keeps clear of what taking off a line takes away. */
 const FIT_CPM = { lowCpm: 0.5, highCpm: 15 };
@@ -25,8 +26,6 @@ const OUTLIER_LOG = 3;
 /** Exponents of a 1/f^b background that are believed. */
 const LEAST_EXPONENT = 0;
 const MOST_EXPONENT = 3;
-/** Mean of the logarithm of an exponential variable of mean 1 is minus this (Euler's constant). */
-const EULER = 0.5772156649015329;
 /** Independent values of a Hann periodogram lie this many unpadded bins apart (its noise bandwidth). */
 const HANN_BANDWIDTH_BINS = 1.5;
 
@@ -88,6 +87,7 @@ function backgroundPoints(
   const floor = 1e-12 * density.reduce((most, value) => Math.max(most, value), 1e-280);
   const multiples = HARMONICS.filter((ratio) => ratio * peakCpm >= LEAST_HALF_CPM * widening);
   const points: LogPoint[] = [];
+  const logs = logFrequencies(binCpm, density.length);
   for (let k = Math.ceil(FIT_CPM.lowCpm / binCpm); k < density.length - 1; k++) {
     const cpm = k * binCpm;
     if (cpm > FIT_CPM.highCpm) break;
@@ -95,7 +95,7 @@ function backgroundPoints(
     const near = (ratio: number) =>
       Math.abs(cpm - ratio * peakCpm) < HARMONIC_CLEARANCE_CPM * widening;
     if (multiples.some(near)) continue;
-    points.push({ cpm, x: log(cpm), y: log(Math.max(floor, density[k])) });
+    points.push({ cpm, x: logs[k], y: log(Math.max(floor, density[k])) });
   }
   return points;
 }
@@ -150,6 +150,8 @@ const BESIDE = 0.12;
 /** What holes add, per spoiled fraction: side peaks to choose the highest from (measured in test/stomach/false-rhythm). */
 const PER_SPOILED = 0.6;
 const CALIBRATED_FALSE_ALARM = 0.05;
+/** A peak so far above what is asked (natural logarithm) is no hump's. */
+const FAR_ABOVE_LOG = 2;
 
 /**
  * How far above its background (natural logarithm of the ratio) the highest of the peaks of a band
@@ -207,19 +209,26 @@ export function standsOut(
     readonly independent: number;
     /** Stronger lines, which the holes of a spoiled window spread. */
     readonly besideCpm?: readonly Cpm[];
-    /** What the minutes beside it lend, as a multiple of the background: so much less is asked of the peak. */
-    readonly lent?: () => number;
+    /** The least background at the peak that the windows beside it allow, uV2/Hz; asked for near the limit only. */
+    readonly leastBackground?: () => number;
+    /** A longer window that holds this one: its background is as good, and known nearer to slow peaks. */
+    readonly whole?: Spectrum;
   },
 ): boolean {
   if (!(peak.density > 0)) return false;
   const { binCpm, lengthS, spoiledFraction } = spectrum;
   const { height, background: density } = freedOfLeaks(spectrum, peak, options.besideCpm ?? []);
+  const thresholdOver = ({ leverage }: Background) =>
+    peakThreshold(options.falseAlarm, options.independent, leverage) +
+    PER_SPOILED * spoiledFraction;
   const background = backgroundAt(density, binCpm, peak.cpm, lengthS);
   if (!background) return false;
-  const threshold =
-    peakThreshold(options.falseAlarm, options.independent, background.leverage) +
-    PER_SPOILED * spoiledFraction;
-  const times = height / background.density;
-  if (log(times) > threshold) return true;
-  return options.lent !== undefined && log(times + options.lent()) > threshold;
+  const threshold = thresholdOver(background);
+  const above = log(height / background.density) - threshold;
+  if (above > FAR_ABOVE_LOG) return true;
+  if (above > 0)
+    return !options.leastBackground || log(height / options.leastBackground()) > threshold;
+  const { whole } = options;
+  const longer = whole && backgroundAt(whole.density, whole.binCpm, peak.cpm, whole.lengthS);
+  return longer ? log(height / longer.density) > thresholdOver(longer) : false;
 }

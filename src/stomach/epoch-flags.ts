@@ -69,9 +69,14 @@ const inside = (cpm: Cpm, { lowCpm, highCpm }: Band) => cpm >= lowCpm && cpm <= 
 const FLANK_CPM = 1.5;
 const FLANK_TIMES = 4;
 
-function onFlank({ density, binCpm }: Spectrum, peakCpm: Cpm, { lowCpm, highCpm }: Band): boolean {
+function onFlank(
+  { density, binCpm }: Spectrum,
+  peakCpm: Cpm,
+  { lowCpm, highCpm }: Band,
+  times: number,
+): boolean {
   if (!inside(peakCpm, { lowCpm: lowCpm - FLANK_CPM, highCpm: highCpm + FLANK_CPM })) return false;
-  const least = FLANK_TIMES * density[Math.round(peakCpm / binCpm)];
+  const least = times * density[Math.round(peakCpm / binCpm)];
   const from = Math.max(0, Math.round(lowCpm / binCpm));
   return density.subarray(from, Math.round(highCpm / binCpm)).some((value) => value > least);
 }
@@ -89,6 +94,7 @@ export function atBreathing(
   part: Spectrum & SampledPart,
   peakCpm: Cpm,
   breathing: Band | null,
+  standsAlone: boolean,
 ): boolean {
   if (breathing === null) return false;
   const { density, binCpm, lengthS, rateHz } = part;
@@ -96,7 +102,8 @@ export function atBreathing(
   const at = (ratio: number) =>
     widened({ lowCpm: ratio * seen.lowCpm, highCpm: ratio * seen.highCpm }, 60 / lengthS);
   const power = (ratio: number) => bandSum(density, binCpm, at(ratio));
-  if (inside(peakCpm, at(1)) || onFlank(part, peakCpm, at(1))) return true;
+  if (inside(peakCpm, at(1)) || onFlank(part, peakCpm, at(1), standsAlone ? FLANK_TIMES : 1))
+    return true;
   if (inside(peakCpm, at(0.5))) return power(1) >= power(0.5) && isLocked(part, peakCpm);
   return inside(peakCpm, at(2)) && power(1) >= LEAST_SHARE_OF_DOUBLE * power(2);
 }

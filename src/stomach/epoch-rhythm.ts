@@ -13,8 +13,9 @@ import {
 } from './dominant-peak';
 import { atBreathing, atHalfOfCrests, onDrift } from './epoch-flags';
 import { halfPeaks, isLocked, type SampledPart } from './harmonic';
-import { lentSupport } from './lent-support';
 import { rhythmOf } from './rhythm-class';
+import { steadyPeak } from './steady-wave';
+import { leastBackground, type WindowRow } from './window-row';
 
 /** An epoch or one half of it. */
 export type EpochPart = Spectrum & SampledPart;
@@ -26,8 +27,8 @@ export interface EpochInput extends EpochPart {
   readonly breathing: Band | null;
   /** Its two halves; null where one of them is too spoiled. Asked for only when needed. */
   readonly halves: () => readonly [EpochPart, EpochPart] | null;
-  /** Windows of the same phase and length that share no sample with it, the nearest two on either side. */
-  readonly beside: readonly Spectrum[];
+  /** The epoch among the windows beside it; null where these are too few to say anything. */
+  readonly row: WindowRow | null;
 }
 
 export interface EpochRhythm {
@@ -44,6 +45,8 @@ const searchBand = (settings: Settings): Band => settings.rhythmBands;
 interface Dominant {
   readonly peak: SpectrumPeak;
   readonly outstanding: boolean;
+  /** True where it stands out by itself, without the windows beside it. */
+  readonly alone: boolean;
   /** True where a higher peak, its locked double, has given way to it. */
   readonly harmonic: boolean;
 }
@@ -64,28 +67,42 @@ function fundamentalOf(part: EpochPart, peak: SpectrumPeak, settings: Settings) 
   );
 }
 
+/** What else is known when a part is judged: the row of an epoch, or the epoch that a half is of. */
+interface Around {
+  readonly row?: WindowRow | null;
+  readonly whole?: EpochPart;
+}
+
 function dominantOf(
   part: EpochPart,
   falseAlarm: number,
   settings: Settings,
-  beside: readonly Spectrum[] = [],
+  { row = null, whole }: Around,
 ): Dominant | null {
   const band = searchBand(settings);
-  const peak = highestPeak(bandPeaks(part.density, part.binCpm, band));
-  if (!peak) return null;
-  const independent = independentValues(band, part.lengthS);
-  const lent = () => lentSupport(beside, peak.cpm);
-  const outstanding = standsOut(part, peak, { falseAlarm, independent, lent });
-  const lower = outstanding ? fundamentalOf(part, peak, settings) : null;
-  return { peak: lower ?? peak, outstanding, harmonic: lower !== null };
+  const peaks = bandPeaks(part.density, part.binCpm, band);
+  const highest = highestPeak(peaks);
+  if (!highest) return null;
+  const alone = standsOut(part, highest, {
+    falseAlarm,
+    independent: independentValues(band, part.lengthS),
+    ...(whole && { whole }),
+    ...(row && { leastBackground: () => leastBackground(row, part.density, highest) }),
+  });
+  const peak = alone ? highest : row && steadyPeak(row, part.density, peaks, falseAlarm);
+  if (!peak) return { peak: highest, outstanding: false, alone, harmonic: false };
+  const lower = fundamentalOf(part, peak, settings);
+  return { peak: lower ?? peak, outstanding: true, alone, harmonic: lower !== null };
 }
 
 /** Least change of DF from one half to the other that is more than one half can resolve. */
 const LEAST_CHANGE_CELLS = 3;
-/** From one half to the other a wave and its harmonic may wander apart by this share of the double. */
-const DOUBLE_ACROSS_HALVES = 0.15;
+/** From one half to the other a wave and its harmonic may wander apart by this share of the double, and at least so much. */
+const DOUBLE_ACROSS_HALVES = { share: 0.15, leastCpm: 0.75 };
 /** A line whose power falls below this share from one half to the other is not there in the other. */
-const GONE = 0.1;
+const GONE = 0.2;
+/** So far the wave of the slower half may have wandered in the other. */
+const WANDER_CPM = 0.3;
 
 interface HalfRhythm {
   readonly half: EpochPart;
@@ -93,12 +110,15 @@ interface HalfRhythm {
 }
 
 /** True where the faster half's peak is a harmonic of the slower's rhythm, which is there in it as well. */
-function isSameWave(slower: HalfRhythm, faster: HalfRhythm, settings: Settings): boolean {
+function isSameWave(slower: HalfRhythm, faster: HalfRhythm): boolean {
   const double = 2 * slower.peak.cpm;
-  if (Math.abs(faster.peak.cpm - double) > DOUBLE_ACROSS_HALVES * double) return false;
+  const { share, leastCpm } = DOUBLE_ACROSS_HALVES;
+  if (Math.abs(faster.peak.cpm - double) > Math.max(share * double, leastCpm)) return false;
   const { half, peak } = faster;
-  const peaks = bandPeaks(besidePeak(half, peak.cpm), half.binCpm, searchBand(settings));
-  return halfPeaks(peak, peaks).some(({ density }) => density >= GONE * slower.peak.density);
+  const from = Math.max(1, Math.round((slower.peak.cpm - WANDER_CPM) / half.binCpm));
+  const to = Math.round((slower.peak.cpm + WANDER_CPM) / half.binCpm);
+  const near = besidePeak(half, peak.cpm).subarray(from, to + 1);
+  return near.some((density) => density >= GONE * slower.peak.density);
 }
 
 /** True where two peaks are of different bands and clearly apart. */
@@ -119,41 +139,40 @@ function changesInside(input: EpochInput, settings: Settings): boolean {
   );
   if (!first || !second || !differ(first, second, input.lengthS, settings)) return false;
   const found = halves.flatMap((half): HalfRhythm[] => {
-    const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings);
-    if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing)) return [];
+    const dominant = dominantOf(half, settings.epoch.falseAlarm / 2, settings, { whole: input });
+    if (!dominant?.outstanding || atBreathing(half, dominant.peak.cpm, input.breathing, true))
+      return [];
     return [{ half, peak: dominant.peak }];
   });
   if (found.length < 2) return false;
   const [slower, faster] = found.sort((a, b) => a.peak.cpm - b.peak.cpm);
-  return (
-    differ(slower.peak, faster.peak, input.lengthS, settings) &&
-    !isSameWave(slower, faster, settings)
-  );
+  return differ(slower.peak, faster.peak, input.lengthS, settings) && !isSameWave(slower, faster);
 }
 
-function flagsOf(input: EpochInput, peak: SpectrumPeak, harmonic: boolean, settings: Settings) {
+function flagsOf(input: EpochInput, { peak, alone, harmonic }: Dominant, settings: Settings) {
   const { density, binCpm } = input;
   const flags: EpochFlag[] = [];
   if (harmonic) flags.push('harmonic');
   if (!harmonic && atHalfOfCrests(peak.cpm, input.crestCpm)) flags.push('half');
-  if (atBreathing(input, peak.cpm, input.breathing)) flags.push('breathing');
+  if (atBreathing(input, peak.cpm, input.breathing, alone)) flags.push('breathing');
   if (onDrift(density, binCpm, peak, settings.rhythmBands)) flags.push('drift');
   return flags;
 }
 
 /**
  * DF, DP, peak share, rhythm and flags of one kept epoch. The dominant peak is the highest local
- * maximum of the search band; a locked double gives way to its lower peak; two rhythms in its
- * halves make it mixed; without a peak that stands out of the local background there is no rhythm;
- * a peak that may be breathing or drift is not decidable.
+ * maximum of the search band where that stands out by itself, else the one for which the epoch and
+ * the independent windows beside it have the most evidence, where that is enough; a locked double
+ * gives way to its lower peak; two rhythms in its halves make it mixed; without such a peak there is
+ * no rhythm; a peak that may be breathing or drift is not decidable.
  */
 export function epochRhythm(input: EpochInput, settings: Settings): EpochRhythm {
   const { density, binCpm } = input;
   const filled: readonly EpochFlag[] = input.spoiledFraction > 0 ? ['filled'] : [];
-  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input.beside);
+  const found = dominantOf(input, settings.epoch.falseAlarm, settings, input);
   if (!found) return { dfCpm: null, dpDb: null, peakShare: null, rhythm: 'none', flags: filled };
-  const { peak, outstanding, harmonic } = found;
-  const flags = outstanding ? flagsOf(input, peak, harmonic, settings) : [];
+  const { peak, outstanding } = found;
+  const flags = outstanding ? flagsOf(input, found, settings) : [];
   return {
     dfCpm: peak.cpm,
     dpDb: densityDb(peak.density),

@@ -7,6 +7,7 @@ import {
   withheld,
 } from '../recording/figure';
 import type { Adequacy } from '../recording/findings';
+import type { BreathingSeries } from '../recording/heart-series';
 import type { Epoch, EpochFlag, Rhythm } from '../recording/rhythm';
 import type { Settings } from '../recording/settings';
 import type { Interval } from '../recording/span';
@@ -74,7 +75,23 @@ function flagMarks(epochs: readonly Epoch[]): string[] {
   });
 }
 
-const NO_RHYTHM = 'no kept epoch has a rhythm that can be told';
+/** Why no epoch gives a DF: none is kept, or what they are instead of a rhythm. */
+function noRhythm(epochs: readonly Epoch[]): string {
+  if (epochs.length === 0) return NOTHING_KEPT;
+  const counts = WITHOUT_RHYTHM.flatMap(([rhythm, words]) => {
+    const count = epochs.filter((epoch) => epoch.rhythm === rhythm).length;
+    return count > 0 ? [{ count, words }] : [];
+  });
+  if (counts.length === 1) return `every kept epoch is ${counts[0].words}`;
+  const list = counts.map(({ count, words }) => `${count} ${words}`).join(', ');
+  return `no kept epoch has a rhythm of one band: ${list}`;
+}
+
+const WITHOUT_RHYTHM: readonly (readonly [Rhythm, string])[] = [
+  ['none', 'without rhythm'],
+  ['mixed', 'mixed'],
+  ['undecided', 'not decidable (may be breathing or drift)'],
+];
 const TOO_FEW = 'fewer than two epochs have a rhythm';
 const NOTHING_KEPT = 'no epoch is kept';
 
@@ -89,7 +106,7 @@ function frequencyFigures(
   const from = (least: number, value: () => number, extra: readonly string[] = []): FigureValue =>
     df.length >= least
       ? numberFigure(value(), basis, [...marks, ...extra])
-      : withheld(df.length === 0 ? NO_RHYTHM : TOO_FEW);
+      : withheld(df.length === 0 ? noRhythm(epochs) : TOO_FEW);
   const instability = (values: readonly number[]) =>
     overHalfLost === null ? from(2, () => instabilityPercent(values)) : withheld(overHalfLost);
   return {
@@ -102,15 +119,30 @@ function frequencyFigures(
   };
 }
 
+const MAY_BE_BREATHING =
+  'slow breathing (5-8 a minute) cannot be told from tachygastria here: breathing is not known';
+
+/** True where the breathing rate is told nowhere from one time to another. */
+function isBreathingUnknown(
+  breathing: BreathingSeries | null,
+  { fromS, toS }: StomachFiguresOptions['phase'],
+): boolean {
+  if (breathing === null || breathing.from === 'none') return true;
+  const { centresS, perMinute } = breathing;
+  return !centresS.some((t, i) => t >= fromS && t < toS && Number.isFinite(perMinute[i]));
+}
+
 function timeFigure(
   epochs: readonly Epoch[],
   rhythm: Rhythm,
   coverage: StomachCoverage,
+  breathingUnknown: boolean,
 ): FigureValue {
   if (coverage.percentages === 'withheld') return withheld(coverage.reason);
   if (epochs.length === 0) return withheld(NOTHING_KEPT);
   const count = epochs.filter((epoch) => epoch.rhythm === rhythm).length;
-  const { marks } = coverage;
+  const doubt = rhythm === 'tachy' && count > 0 && breathingUnknown ? [MAY_BE_BREATHING] : [];
+  const marks = [...coverage.marks, ...doubt];
   if (coverage.percentages === 'count')
     return { kind: 'count', count, of: epochs.length, what: 'epochs', marks };
   const basis = `${count} of ${plural(epochs.length, 'epoch')}`;
@@ -162,7 +194,8 @@ export function stomachFigures(options: StomachFiguresOptions): StomachFigures {
   const coverage = stomachCoverage(phase, [...spoiled, ...analysis.missing]);
   const { epochs, spectra } = keptEpochs(analysis, phase.fromS, phase.toS);
   const spectrum = meanSpectrum(spectra, analysis.binCpm, settings.rhythmBands);
-  const time = (rhythm: Rhythm) => timeFigure(epochs, rhythm, coverage);
+  const breathingUnknown = isBreathingUnknown(analysis.breathing, phase);
+  const time = (rhythm: Rhythm) => timeFigure(epochs, rhythm, coverage, breathingUnknown);
   return {
     figures: {
       ...frequencyFigures(epochs, coverage),

@@ -1,4 +1,6 @@
 import type { Cpm } from '../units/rate';
+import { type OverBackground, overBackground } from './over-background';
+import { type SmoothLevel, smoothLevel } from './smooth-level';
 import { type PreparedWindow, type WindowSpectraOptions, windowSpectra } from './window-spectrum';
 
 /** Windows of one length of one lead, each made once however many ask for it. */
@@ -11,6 +13,9 @@ export interface SharedWindows {
   /** The window that begins at a sample; `first` is moved back where it would run past the end. */
   at(first: number): PreparedWindow;
   densityAt(first: number): Float64Array;
+  /** Its density over its own background line; where it has holes, with these bridged. */
+  overAt(first: number): OverBackground;
+  readonly smooth: SmoothLevel;
   /** Density of the window that begins at a sample with lines at these frequencies taken off; not kept. */
   densityWithout(first: number, frequenciesCpm: readonly Cpm[]): Float64Array;
 }
@@ -18,6 +23,7 @@ export interface SharedWindows {
 interface MadeWindow {
   readonly window: PreparedWindow;
   density: Float64Array | null;
+  over: OverBackground | null;
 }
 
 const sameLead = (a: WindowSpectraOptions, b: WindowSpectraOptions) =>
@@ -51,25 +57,36 @@ export function sharedWindows(
   const length = spectra.taper.length;
   const last = options.signal.length - length;
   const made = before ? stillGood(options, before, length) : new Map<number, MadeWindow>();
+  const smooth = smoothLevel(spectra.binCpm, spectra.binCount);
   const madeAt = (first: number): MadeWindow => {
     const from = Math.min(first, last);
     let one = made.get(from);
     if (!one) {
-      one = { window: spectra.prepare(from), density: null };
+      one = { window: spectra.prepare(from), density: null, over: null };
       made.set(from, one);
     }
     return one;
   };
+  const densityAt = (first: number) => {
+    const one = madeAt(first);
+    one.density ??= spectra.density(one.window);
+    return one.density;
+  };
   return {
     options,
     made,
+    smooth,
     binCpm: spectra.binCpm,
     binCount: spectra.binCount,
     at: (first) => madeAt(first).window,
-    densityAt(first) {
+    densityAt,
+    overAt(first) {
       const one = madeAt(first);
-      one.density ??= spectra.density(one.window);
-      return one.density;
+      one.over ??= overBackground(
+        one.window.spoiledFraction > 0 ? spectra.densityBridged(one.window) : densityAt(first),
+        smooth,
+      );
+      return one.over;
     },
     densityWithout: (first, frequenciesCpm) =>
       spectra.densityWithout(madeAt(first).window, frequenciesCpm),

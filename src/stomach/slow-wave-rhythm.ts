@@ -13,6 +13,7 @@ import { keptSamples, missingStretches } from './kept-samples';
 import { type SharedWindows, sharedWindows } from './shared-windows';
 import { runningSpectrogram } from './spectrogram';
 import { createStomachMemory, judgedEpoch, type StomachMemory } from './stomach-memory';
+import { rowOf, type WindowRow } from './window-row';
 
 export interface SlowWaveRhythmOptions {
   readonly slow: SlowOutput;
@@ -36,6 +37,8 @@ export interface StomachAnalysis {
   readonly binCpm: number;
   /** Stretches of the lead without samples. */
   readonly missing: readonly Interval[];
+  /** The breathing its epochs were judged beside; null where nothing is known of it. */
+  readonly breathing: BreathingSeries | null;
 }
 
 interface Lead {
@@ -45,6 +48,9 @@ interface Lead {
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
 }
+
+/** Windows beside an epoch that have a say in it, and its own. */
+const ROW_PLACES = [-4, -3, -2, -1, 0, 1, 2, 3, 4];
 
 function partOf(windows: SharedWindows, first: number): EpochPart {
   const { samples, kept, spoiledFraction } = windows.at(first);
@@ -76,18 +82,21 @@ function halvesOf(lead: Lead, first: number): readonly [EpochPart, EpochPart] | 
   return before && after ? [before, after] : null;
 }
 
-/** The two windows before an epoch and the two after it that share no sample with it, where the phase and what is kept allow. */
-function besideOf(lead: Lead, phase: Interval, first: number): readonly EpochPart[] {
+/** An epoch among the windows before and after it that share no sample, where the phase and what is kept allow. */
+function rowAt(lead: Lead, phase: Interval, first: number): WindowRow | null {
   const { windows, options } = lead;
   const { rateHz } = options.slow;
   const length = Math.round(options.settings.epoch.lengthS * rateHz);
-  return [-2, -1, 1, 2].flatMap((place) => {
+  const found = ROW_PLACES.flatMap((place) => {
     const from = first + place * length;
     const inside = from >= phase.fromS * rateHz - 1 && from + length <= phase.toS * rateHz + 1;
     if (!inside || from < 0 || from + length > options.slow.forSpectra.length) return [];
     const { spoiledFraction } = windows.at(from);
-    return spoiledFraction > options.settings.epoch.maxSpoiled ? [] : [partOf(windows, from)];
+    return spoiledFraction > options.settings.epoch.maxSpoiled
+      ? []
+      : [{ place, over: windows.overAt(from) }];
   });
+  return rowOf(found, windows);
 }
 
 function epochInput(lead: Lead, phase: Interval, first: number, fromS: Seconds): EpochInput {
@@ -98,7 +107,7 @@ function epochInput(lead: Lead, phase: Interval, first: number, fromS: Seconds):
     crestCpm: crestRateCpm(crestsS, fromS, fromS + lengthS),
     breathing: breathingOf(options.breathing, fromS, fromS + lengthS),
     halves: () => halvesOf(lead, first),
-    beside: besideOf(lead, phase, first),
+    row: rowAt(lead, phase, first),
   };
 }
 
@@ -175,5 +184,6 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
     epochSpectra: analysed.map(({ spectrum }) => spectrum),
     binCpm: lead.windows.binCpm,
     missing,
+    breathing: options.breathing,
   };
 }

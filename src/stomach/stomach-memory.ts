@@ -1,11 +1,12 @@
 import type { Settings } from '../recording/settings';
 import { type EpochInput, type EpochRhythm, epochRhythm } from './epoch-rhythm';
+import type { OverBackground } from './over-background';
 import type { SharedWindows } from './shared-windows';
 
 interface Judged {
   readonly circumstances: string;
-  /** Spectra of the windows beside it. */
-  readonly beside: readonly Float64Array[];
+  /** The row it was judged in. */
+  readonly row: readonly OverBackground[];
   readonly rhythm: EpochRhythm;
 }
 
@@ -35,11 +36,10 @@ export function judgedEpoch(
     settings.epoch,
   ]);
   const known = memory.judged.get(input.density);
-  const beside = input.beside.map(({ density }) => density);
-  const sameBeside =
-    known?.beside.length === beside.length && beside.every((one, i) => one === known.beside[i]);
-  if (known && sameBeside && known.circumstances === circumstances) return known.rhythm;
+  const row = input.row?.windows.map(({ over }) => over) ?? [];
+  const sameRow = known?.row.length === row.length && row.every((one, i) => one === known.row[i]);
+  if (known && sameRow && known.circumstances === circumstances) return known.rhythm;
   const rhythm = epochRhythm(input, settings);
-  memory.judged.set(input.density, { circumstances, beside, rhythm });
+  memory.judged.set(input.density, { circumstances, row, rhythm });
   return rhythm;
 }

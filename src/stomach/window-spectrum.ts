@@ -3,6 +3,7 @@ import { nextPowerOfTwo } from '../numeric/fft';
 import { powerDensity } from '../numeric/spectrum';
 import { hannPeriodic } from '../numeric/windows';
 import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
+import { bridged } from './bridged';
 import { withoutLines } from './without-lines';
 
 /** Frequencies beyond this are not needed by any stomach figure: breathing whose half lies in the band is below. */
@@ -29,6 +30,8 @@ export interface WindowSpectra {
   density(window: PreparedWindow): Float64Array;
   /** The same of what is left when lines at these frequencies are fitted to the kept samples and taken off. */
   densityWithout(window: PreparedWindow, frequenciesCpm: readonly Cpm[]): Float64Array;
+  /** Density with straight lines across what was spoiled: no leak of a drift, but less power of a wave. */
+  densityBridged(window: PreparedWindow): Float64Array;
 }
 
 export interface WindowSpectraOptions {
@@ -98,6 +101,7 @@ export function windowSpectra(options: WindowSpectraOptions): WindowSpectra {
       };
     },
     density: ({ samples, spoiledFraction }) => densityOf(samples, spoiledFraction),
+    densityBridged: ({ samples, kept: there }) => densityOf(bridged(samples, there, rateHz), 0),
     densityWithout({ samples, kept: there, spoiledFraction }, frequenciesCpm) {
       const weights = taper.map((value, i) => (there[i] === 0 ? 0 : value));
       return densityOf(withoutLines(samples, weights, frequenciesCpm, rateHz), spoiledFraction);

@@ -1,6 +1,12 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { COMMAND_GROUPS, type CommandParts, GROUP_WORDS } from '../../src/app/command';
+import {
+  COMMAND_GROUPS,
+  type Command,
+  type CommandParts,
+  GROUP_WORDS,
+  type RoomActs,
+} from '../../src/app/command';
 import { COMMANDS, commandForKey, commandOf } from '../../src/app/commands';
 import { isPlainKey, keyName, keyWords } from '../../src/app/key-names';
 import {
@@ -11,6 +17,7 @@ import {
   readOwnKeys,
   shownKey,
 } from '../../src/app/own-keys';
+import { ACTS_IN_ROOM } from '../../src/app/room-commands';
 import { BEAT_CLASSES } from '../../src/recording/beat';
 
 const press = (key: string, parts: Partial<Parameters<typeof keyName>[0]> = {}) =>
@@ -25,13 +32,42 @@ const press = (key: string, parts: Partial<Parameters<typeof keyName>[0]> = {}) 
   });
 
 describe('the table of commands', () => {
-  it('gives no key to two commands: panes lie within a study, a study within the page', () => {
-    const clashes = COMMANDS.flatMap((a, i) =>
-      COMMANDS.slice(i + 1).flatMap((b) =>
-        a.keys.filter((key) => b.keys.includes(key)).map((key) => `${key}: ${a.id}, ${b.id}`),
-      ),
+  const clashesAmong = (commands: readonly Command[]) =>
+    commands.flatMap((a, i) =>
+      commands
+        .slice(i + 1)
+        .flatMap((b) =>
+          a.keys.filter((key) => b.keys.includes(key)).map((key) => `${key}: ${a.id}, ${b.id}`),
+        ),
     );
-    expect(clashes).toEqual([]);
+
+  it('gives no key to two commands: panes lie within a study, a study within the page', () => {
+    expect(clashesAmong(COMMANDS.filter(({ when }) => when !== 'room'))).toEqual([]);
+  });
+
+  it('gives no key to two commands of the room view, but arrows to the pen and Escape to what is selected first', () => {
+    const inRoom = COMMANDS.filter(({ id, when }) => when === 'room' || ACTS_IN_ROOM.test(id));
+    expect(clashesAmong(inRoom.filter(({ id }) => !id.startsWith('pen-')))).toEqual([
+      'Escape: clear-selection, leave-room',
+    ]);
+  });
+
+  it('lets nothing act in the room view that opens, prints, saves, signs or shows a dialog', () => {
+    const inRoom = COMMANDS.filter(({ id, when }) => when === 'room' || ACTS_IN_ROOM.test(id));
+    expect(inRoom.filter(({ words }) => /…|download|sign|report|print|file/i.test(words))).toEqual(
+      [],
+    );
+    const resting = COMMANDS.filter((one) => !inRoom.includes(one)).map(({ id }) => id);
+    const named = [
+      'open-file',
+      'open-session',
+      'open-demo',
+      'download-session',
+      'download-results',
+    ];
+    expect(resting).toEqual(
+      expect.arrayContaining([...named, 'report', 'sign', 'reviewer', 'keys']),
+    );
   });
 
   it('names each command once, with words and at least one key', () => {
@@ -93,12 +129,17 @@ describe('the table of commands', () => {
 });
 
 /** Parts with a study open and a beat selected; `report` puts the report in the place of the panes. */
-const partsWith = (report: boolean, plainKeys = true, ownKeys: OwnKeys = {}): CommandParts => {
+const partsWith = (
+  report: boolean,
+  plainKeys = true,
+  ownKeys: OwnKeys = {},
+  room: Partial<RoomActs> | null = null,
+): CommandParts => {
   const parts = {
     session: { getState: () => ({ session: {} }) },
     view: { getState: () => ({ selection: { kind: 'beats', ticks: [1] } }) },
     shell: { getState: () => ({ plainKeys, ownKeys }) },
-    page: { reportOpen: () => report, reportThere: true },
+    page: { reportOpen: () => report, reportThere: true, room },
   };
   return parts as unknown as CommandParts;
 };
@@ -115,6 +156,30 @@ describe('keys with a study open', () => {
   it('of a single character rest while they are switched off', () => {
     expect(commandForKey('V', partsWith(false, false))).toBeNull();
     expect(commandForKey('Ctrl+S', partsWith(false, false))?.id).toBe('download-session');
+  });
+});
+
+describe('keys in the room view', () => {
+  const room = (penOn: boolean) => partsWith(false, true, {}, { penOn: () => penOn });
+
+  it('edit and step the copy, and open, save or sign nothing', () => {
+    expect(commandForKey('V', room(false))?.id).toBe('class-V');
+    expect(commandForKey('ArrowDown', room(false))?.id).toBe('row-below');
+    expect(commandForKey('Escape', room(false))?.id).toBe('clear-selection');
+    for (const key of ['Ctrl+O', 'Ctrl+S', 'Ctrl+Shift+S', 'Shift+R', 'Shift+F', 'Ctrl+G', 'Alt+B'])
+      expect(commandForKey(key, room(false)), key).toBeNull();
+  });
+
+  it('move the pen while it is on', () => {
+    expect(commandForKey('ArrowLeft', room(false))?.id).toBe('seconds-left');
+    expect(commandForKey('ArrowLeft', room(true))?.id).toBe('pen-left');
+    expect(commandForKey('Space', room(true))?.id).toBe('pen-press');
+    expect(commandForKey('Space', room(false))).toBeNull();
+  });
+
+  it('of its own rest outside of it', () => {
+    expect(commandForKey('D', partsWith(false))?.id).not.toBe('pen');
+    expect(commandForKey('ArrowUp', partsWith(false))).toBeNull();
   });
 });
 
@@ -152,7 +217,8 @@ describe('keys that a person has changed', () => {
   });
 
   it('never leave two commands with one key, also where the table gives a new command that key', () => {
-    const keys = COMMANDS.flatMap((one) => keysOf(one, { 'next-beat': 'V' }));
+    const outside = COMMANDS.filter(({ when }) => when !== 'room');
+    const keys = outside.flatMap((one) => keysOf(one, { 'next-beat': 'V' }));
     expect(new Set(keys).size).toBe(keys.length);
     expect(keysOf(commandOf('class-V'), { 'next-beat': 'V' })).toEqual([]);
   });

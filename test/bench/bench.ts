@@ -5,6 +5,7 @@ import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
 import { heartbeats } from './accuracy/heartbeats';
 import { detection } from './detection';
+import { doubts } from './doubts/doubts';
 import { loadWords, machineFacts } from './machine';
 import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
@@ -21,6 +22,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   'page-size': pageSize,
   accuracy,
   heartbeats,
+  doubts,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]

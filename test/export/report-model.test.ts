@@ -85,6 +85,7 @@ describe('who the report is of', () => {
         conclusion: words,
         leadChoice: words,
         events: [{ id: 1, atS: 3, text: words }],
+        symptoms: [{ id: 1, atS: 3, text: words, score: 4 }],
         protocol: { ...input.state.protocol, medicines: words },
       },
       session: sign({ ...signature(0), sha256: secrets.sha256, notes: words, conclusion: words }),
@@ -103,6 +104,29 @@ describe('who the report is of', () => {
       state: { conclusion: 'Ann: annular, leeway, slee. (Lee)' },
     });
     expect(conclusion).toBe('[hidden]: annular, leeway, slee. ([hidden])');
+  });
+});
+
+describe('events and symptoms', () => {
+  it('are printed in the order of time, each with its phase, symptoms with their score', () => {
+    const { events } = model({
+      state: {
+        phases: [
+          { name: 'fasting', fromS: 0, toS: 1800 },
+          { name: 'fed', fromS: 2400, toS: 5400 },
+        ],
+        events: [
+          { id: 2, atS: 1800, text: 'drank 200 ml' },
+          { id: 1, atS: 5400, text: 'sat up' },
+        ],
+        symptoms: [{ id: 1, atS: 1799.5, text: 'nausea', score: 6 }],
+      },
+    });
+    expect(events).toEqual([
+      { time: '0:29:59.5', phase: 'fasting', what: 'nausea', score: '6 of 10' },
+      { time: '0:30:00', phase: '–', what: 'drank 200 ml', score: '' },
+      { time: '1:30:00', phase: 'fed', what: 'sat up', score: '' },
+    ]);
   });
 });
 

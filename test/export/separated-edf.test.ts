@@ -33,6 +33,10 @@ const input: SeparatedInput = {
       note: '',
     },
   ],
+  notes: [
+    { kind: 'event', atS: 40.5, text: 'drank 200 ml' },
+    { kind: 'symptom', atS: 50, text: 'nausea', score: 6 },
+  ],
 };
 
 const opened = (made: SeparatedInput) =>
@@ -57,7 +61,7 @@ describe('the separated signals as EDF+', () => {
     expect(heart[201]).toBeCloseTo(-5, 1);
   });
 
-  it('carry phases, spoiled spans and beats at their times, and the study by its code alone', async () => {
+  it('carry phases, spoiled spans, events, symptoms and beats at their times, and the study by its code alone', async () => {
     const { recording } = await opened(input);
     const told = recording.annotations.map(({ onsetS, durationS, text }) => [
       onsetS,
@@ -66,6 +70,8 @@ describe('the separated signals as EDF+', () => {
     ]);
     expect(told).toContainEqual([0, 60, 'fasting']);
     expect(told).toContainEqual([25, 5, 'spoiled: gap, both, #1']);
+    expect(told).toContainEqual([40.5, null, 'event: drank 200 ml']);
+    expect(told).toContainEqual([50, null, 'symptom: nausea 6/10']);
     expect(told).toContainEqual([10, null, 'beat N']);
     expect(told).toContainEqual([11.001, null, 'beat V']);
     expect(recording.identity).toMatchObject({ code: 'INV-3', name: null });

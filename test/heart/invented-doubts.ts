@@ -1,6 +1,6 @@
 import { beatDoubts } from '../../src/heart/beat-doubts';
 import { type Detection, detectBeats } from '../../src/heart/detect';
-import { type Beat, type BeatList, beatAt, beatsOf, changeBeats } from '../../src/recording/beat';
+import { type Beat, type BeatList, beatAt, changeBeats } from '../../src/recording/beat';
 import type { Doubt } from '../../src/recording/doubt';
 import { heartbeatOf } from './record208';
 import {
@@ -87,7 +87,3 @@ export function classed(beats: BeatList, index: number, beatClass: Beat['beatCla
   const beat = beatAt(beats, index);
   return changeBeats(beats, [beat], [{ ...beat, beatClass }]);
 }
-
-export const rows = (beats: BeatList): readonly Beat[] =>
-  Array.from(beats.ticks, (_, i) => beatAt(beats, i));
-export { beatsOf };

@@ -1,8 +1,11 @@
 import { readFileSync } from 'node:fs';
 import { bandPassTaps, convolveSame } from '../../src/numeric/fir';
 
-/** The real recording of test/fixtures/record208, read by the offsets of Kemp 1992 and not by our own reader. */
-const folder = new URL('../fixtures/record208/', import.meta.url);
+/**
+ * The real recording of test/fixtures/record208, read by the offsets of Kemp 1992 and not by our own reader. Source and built
+ * bench lie equally deep.
+ */
+const folder = new URL('../../test/fixtures/record208/', import.meta.url);
 export const RATE_HZ = 360;
 const SECONDS = 300;
 

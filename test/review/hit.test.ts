@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { endNear, nearestWithin, slotPart } from '../../src/review/hit';
-import { movePhaseEdge, phaseEdges } from '../../src/review/phase-edges';
+import { edgeNear, movePhaseEdge, phaseEdges } from '../../src/review/phase-edges';
 
 describe('what of a slot lies under the pointer', () => {
   it('is its edges within 6 px and its body between', () => {
@@ -58,18 +58,35 @@ describe('the borders of phases', () => {
     expect(shared).toEqual({ atS: 1800, ends: 0, begins: 1 });
   });
 
-  it('move both phases that touch, to whole seconds', () => {
-    const moved = movePhaseEdge(phases, shared, 1912.4, 5400);
-    expect([moved[0].toS, moved[1].fromS]).toEqual([1912, 1912]);
-    expect(moved[2]).toBe(phases[2]);
+  const moved = (edge: typeof shared, atS: number, durationS: number) =>
+    movePhaseEdge(phases, edge, { atS, snap: null }, durationS).phases;
+
+  it('move both phases that touch', () => {
+    const [fasting, meal, fed] = moved(shared, 1912, 5400);
+    expect([fasting.toS, meal.fromS]).toEqual([1912, 1912]);
+    expect(fed).toBe(phases[2]);
+  });
+
+  it('are grasped within 6 px', () => {
+    const xOf = (atS: number) => atS / 10;
+    expect(edgeNear(phases, 185, xOf)).toEqual(shared);
+    expect(edgeNear(phases, 187, xOf)).toBeNull();
+    expect(edgeNear(phases, 247, xOf)?.atS).toBe(2520);
   });
 
   it('never swallow a phase, cross another or leave the study', () => {
-    expect(movePhaseEdge(phases, shared, 9000, 5400)[1]).toMatchObject({ fromS: 2390, toS: 2400 });
-    expect(movePhaseEdge(phases, shared, -5, 5400)[0]).toMatchObject({ fromS: 0, toS: 10 });
+    expect(moved(shared, 9000, 5400)[1]).toMatchObject({ fromS: 2390, toS: 2400 });
+    expect(moved(shared, -5, 5400)[0]).toMatchObject({ fromS: 0, toS: 10 });
     const fedStart = phaseEdges(phases)[3];
-    expect(movePhaseEdge(phases, fedStart, 100, 5400)[2].fromS).toBe(2400);
+    expect(moved(fedStart, 100, 5400)[2].fromS).toBe(2400);
     const end = phaseEdges(phases)[4];
-    expect(movePhaseEdge(phases, end, 9999, 5500)[2].toS).toBe(5500);
+    expect(moved(end, 9999, 5500)[2].toS).toBe(5500);
+  });
+
+  it('say what they were snapped to only where they got there', () => {
+    const at = (atS: number) =>
+      movePhaseEdge(phases, shared, { atS, snap: 'meal begins' }, 5400).moved;
+    expect(at(1912.25)).toEqual({ atS: 1912.25, snap: 'meal begins' });
+    expect(at(2395)).toEqual({ atS: 2390, snap: null });
   });
 });

@@ -58,6 +58,20 @@ describe('a change of rhythm inside an epoch', () => {
     expect(shareOf(changing(from, to, place), 'mixed')).toBeGreaterThanOrEqual(0.95);
   });
 
+  test.each([
+    [3, 1.5],
+    [1.5, 3],
+  ])('from %d to %d cpm, one the double of the other, is mixed in 90 of 100', (from, to) => {
+    expect(shareOf(changing(from, to, 0.5), 'mixed')).toBeGreaterThanOrEqual(0.9);
+  });
+
+  test.each([1.5, 3])('%d cpm with a second harmonic of its own size or larger is not', (cpm) => {
+    for (const size of [0.5, 1, 1.5, 3]) {
+      const { uv } = wandering(cpm, 60, { harmonics: [[size, 0.7]] });
+      expect(shareOf(sumOf(uv, quiet), 'mixed')).toBeLessThanOrEqual(0.02);
+    }
+  });
+
   test('to just the double is a change, since the slow wave is gone after it', () => {
     const louder = sumOf(changing(3.2, 6.4, 0.5), noise);
     expect(shareOf(louder, 'mixed')).toBeGreaterThanOrEqual(0.9);
@@ -123,6 +137,17 @@ describe('breathing in the band of the stomach', () => {
     const { uv, cpm } = breath(6, { wanderCpm: 0.1, harmonics: [[1.2, 0.5]] });
     expect(shareOf(sumOf(uv, quiet), 'undecided', { breathing: ratesOf(cpm, 2) })).toBe(1);
   });
+
+  test.each([8, 10, 12])(
+    'at %d a minute, strong and uneven, leaves no rhythm in the noise beneath it',
+    (perMinute) => {
+      const { uv, cpm } = breath(perMinute, { wanderCpm: 1, harmonics: [[0.5, 0.4]] });
+      const signal = sumOf(uv, BACKGROUNDS['1/f^2'](LENGTH, 12));
+      const around = { breathing: ratesOf(cpm) };
+      const claimed = ['brady', 'normo', 'tachy'].map((one) => shareOf(signal, one, around));
+      expect(claimed.reduce((a, b) => a + b, 0)).toBeLessThanOrEqual(0.06);
+    },
+  );
 
   test('just above it leaves no tachygastria on its flank', () => {
     const { uv, cpm } = breath(9.6, { wanderCpm: 0.6 });

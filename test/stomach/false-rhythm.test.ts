@@ -41,8 +41,8 @@ describe('a background without a wave', () => {
     expect(meanOf(all)).toBeLessThanOrEqual(0.05);
   });
 
-  test('with a broad hump four times the rest is called a rhythm in under a quarter: a known limit', () => {
-    expect(meanOf(shares.get(HUMP) ?? [])).toBeLessThan(0.25);
+  test('with a broad hump four times the rest is called a rhythm in about 5 of 100 all the same', () => {
+    expect(meanOf(shares.get(HUMP) ?? [])).toBeLessThanOrEqual(0.07);
   });
 
   test('coughs every 20 s in a strong drift over white noise make no 3 cpm of their own', () => {

@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import type { FigureValue } from '../../src/recording/figure';
 import { FIGURES } from '../../src/recording/figure-catalogue';
+import type { BreathingSeries } from '../../src/recording/heart-series';
 import type { Epoch, Rhythm } from '../../src/recording/rhythm';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
 import type { Interval } from '../../src/recording/span';
@@ -61,6 +62,7 @@ function analysisOf(made: readonly Made[]): StomachAnalysis {
     epochSpectra: made.map(({ dfCpm = 3, density = 8e5 }) => peaked(dfCpm, density)),
     binCpm: BIN_CPM,
     missing: [],
+    breathing: null,
   };
 }
 
@@ -154,6 +156,58 @@ describe('DF and DP of a phase', () => {
     const { figures: one } = figuresOf([...times(1, 'normo'), ...times(9, 'none')]);
     expect(one.df_instability_pct.kind).toBe('withheld');
     expect(instabilityPercent([3, 3])).toBe(0);
+  });
+});
+
+describe('the reason for no DF', () => {
+  const reasonOf = (made: readonly Made[]) => figuresOf(made).figures.df_median_cpm;
+
+  test('says that nothing is decidable where breathing may be behind every peak', () => {
+    expect(reasonOf(times(20, 'undecided'))).toEqual({
+      kind: 'withheld',
+      reason: 'every kept epoch is not decidable (may be breathing or drift)',
+    });
+  });
+
+  test('counts what the epochs are where they differ', () => {
+    expect(
+      reasonOf([...times(12, 'none'), ...times(3, 'mixed'), ...times(5, 'undecided')]),
+    ).toEqual({
+      kind: 'withheld',
+      reason:
+        'no kept epoch has a rhythm of one band: 12 without rhythm, 3 mixed, 5 not decidable (may be breathing or drift)',
+    });
+  });
+
+  test('is that nothing is kept where nothing is', () => {
+    expect(reasonOf([])).toEqual({ kind: 'withheld', reason: 'no epoch is kept' });
+  });
+});
+
+describe('tachygastria where breathing is not known', () => {
+  const DOUBT = expect.stringContaining('cannot be told from tachygastria');
+  const series = (perMinute: number): BreathingSeries => ({
+    centresS: Float64Array.from({ length: 30 }, (_, i) => 60 * i + 30),
+    perMinute: new Float64Array(30).fill(perMinute),
+    from: 'derived',
+  });
+  const tachyOf = (made: readonly Made[], breathing: BreathingSeries | null) =>
+    stomachFigures({
+      analysis: { ...analysisOf(made), breathing },
+      phase: { name: 'fasting', fromS: 0, toS: 1800 },
+      spoiled: [],
+      settings: DEFAULT_SETTINGS,
+    }).figures.time_tachy_pct;
+  const some = [...times(20, 'normo'), ...times(7, 'tachy')];
+
+  test('may be slow breathing, and the figure says so', () => {
+    expect(tachyOf(some, null)).toMatchObject({ marks: [DOUBT] });
+    expect(tachyOf(some, series(Number.NaN))).toMatchObject({ marks: [DOUBT] });
+  });
+
+  test('is not doubted for that where the breathing is known or there is none of it', () => {
+    expect(tachyOf(some, series(15))).toMatchObject({ marks: [] });
+    expect(tachyOf(times(27, 'normo'), null)).toMatchObject({ marks: [] });
   });
 });
 

@@ -33,7 +33,7 @@ describe('the doubts of a real recording', () => {
       spans: proposal.spans.map((span, i) => ({ ...span, id: i + 1 })),
       beats: changeBeats(proposal.beats, [lost], []),
     };
-  });
+  }, 60_000);
 
   it('hold the place of a beat that was taken away, at the beat after the gap', async () => {
     const { edit, open } = await pipeline.doubts(without, [], job);
@@ -50,6 +50,38 @@ describe('the doubts of a real recording', () => {
     const left = await pipeline.doubts(without, [{ id, ending: 'kept', tick }], job);
     expect(left.open.map((one) => one.id)).not.toContain(id);
     expect(left.open).toHaveLength(open.length - 1);
+  });
+
+  it('foretell what the mend does to a figure: the figure of the mended beats', async () => {
+    const { open } = await pipeline.doubts(without, [], job);
+    const doubt = open.find(({ tick }) => tick === beatAt(proposal.beats, 61).tick);
+    if (doubt?.mend?.kind !== 'beats' || !doubt.effect) throw new Error('no effect');
+    const { figure, phase, before, after, weight } = doubt.effect;
+    const now = await pipeline.analyse(without, job);
+    const beats = changeBeats(without.beats, doubt.mend.removed, doubt.mend.added);
+    const then = await pipeline.analyse({ ...without, beats, edit: 2 }, job);
+    const of = ({ findings }: typeof now) =>
+      findings.phases.find(({ name }) => name === phase)?.figures[figure];
+    expect(before).toEqual(of(now));
+    expect(after).toEqual(of(then));
+    expect(weight).toBeGreaterThan(0);
+  });
+
+  it('come in the order of what they move, and are given up where the work is stopped', async () => {
+    const { open } = await pipeline.doubts(without, [], job);
+    const own = open.filter(({ kind }) => kind !== 'span').map(({ effect }) => effect?.weight ?? 0);
+    expect(own).toEqual([...own].sort((a, b) => b - a));
+    const stopped = startJob(() => undefined);
+    stopped.cancel();
+    await expect(pipeline.doubts(without, [], stopped.job)).rejects.toThrow(Refusal);
+  });
+
+  it('are the same for the files, in the order of time and without their effects', async () => {
+    const { open } = await pipeline.doubts(without, [], job);
+    const plain = await pipeline.openDoubts(without, [], job);
+    expect(plain.map(({ id }) => id).sort()).toEqual(open.map(({ id }) => id).sort());
+    const times = plain.map(({ fromS }) => fromS);
+    expect(times).toEqual([...times].sort((a, b) => a - b));
   });
 
   it('look alike where their beats do, the most alike first', async () => {

@@ -3,6 +3,7 @@ import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { BEAT_CLASSES, type BeatList, changeBeats } from '../../src/recording/beat';
 import { Refusal } from '../../src/recording/failure';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
+import type { Span } from '../../src/recording/span';
 import { ticksToSeconds } from '../../src/units/ticks';
 import type { Proposal, ReviewInputs } from '../../workers/analysis-api';
 import { type Job, startJob } from '../../workers/job';
@@ -138,20 +139,24 @@ describe('the way of a real recording through the steps', () => {
       slowRoute: 'fractional',
       heartRoute: 'fractional',
     } as const;
-    const half = proposal.beats.ticks.length >> 1;
-    const beats = {
-      ticks: proposal.beats.ticks.slice(0, half),
-      classes: proposal.beats.classes.slice(0, half),
-      origins: proposal.beats.origins.slice(0, half),
+    const drawnSpan: Span = {
+      id: 1,
+      fromS: 100,
+      toS: 130,
+      lead: null,
+      target: 'both',
+      cause: 'talk',
+      origin: 'drawn',
+      note: '',
     };
-    const others = [inputs({ settings, edit: 11 }), inputs({ beats, edit: 12 })];
+    const others = [inputs({ spans: [drawnSpan], edit: 10 }), inputs({ settings, edit: 11 })];
     const wanted = [];
     for (const one of others) wanted.push((await pipeline.analyse(one, job)).findings);
     const own = await pipeline.analyse(inputs({ edit: 13 }), job);
     const { roles } = proposal;
     const drawn = pipeline.slowWave(roles.slow[0]);
     expect(await pipeline.figuresOf(others, job)).toEqual(wanted);
-    expect(wanted[0]).not.toEqual(wanted[1]);
+    expect(wanted[0]).not.toEqual({ ...wanted[1], edit: 10 });
     expect(pipeline.slowWave(roles.slow[0])).toBe(drawn);
     expect(reads).toHaveBeenCalled();
     reads.mockClear();

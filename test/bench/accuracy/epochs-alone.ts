@@ -105,7 +105,7 @@ function foundWaves(): readonly Measured[] {
         `found at ${cpm} cpm, ${gainDb} dB over the background within 1 cpm`,
         found(clean),
         gainDb === 0 && cpm > 2 ? '95' : '',
-        `${found(spoiled).toFixed(0)} with eight spans of 5 s; the highest peak is the wave's in ${sharePct(clean, near).toFixed(0)} %`,
+        `${found(spoiled).toFixed(0)} with eight spans of 5 s; DF is the wave's in ${sharePct(clean, near).toFixed(0)} %`,
       );
     }),
   );

@@ -1,4 +1,5 @@
 import { detectBeats } from '../../../src/heart/detect';
+import type { BeatDoubtsInput } from '../../../src/heart/doubt-view';
 import { createRandom } from '../../../src/numeric/random';
 import { leadKey } from '../../../src/recording/lead';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
@@ -82,6 +83,8 @@ export interface Found {
   readonly timesS: readonly number[];
   /** The spans for the heart that the program proposes in the end. */
   readonly proposed: readonly Interval[];
+  /** What the doubts of these beats are read from. */
+  readonly doubted: BeatDoubtsInput;
 }
 
 /** Beats as the program finds them: separation by the default route, its own spoiled spans, then detection. */
@@ -109,16 +112,28 @@ export function findAsProgram({ signal, rateHz, stepUv, railUv }: LeadToScore): 
   const spans = watch.finish();
   const doubted = doubtedOf(LEAD, spans);
   const empty = spans.filter((span) => span.target !== 'stomach' && !doubted.includes(span));
-  const { beats, legible } = detectBeats({
+  const ticksPerSample = TICKS_PER_SAMPLE * heart.decimation;
+  const detection = detectBeats({
     heartbeat: heart.heartbeat,
     rateHz: heart.rateHz,
-    ticksPerSample: TICKS_PER_SAMPLE * heart.decimation,
+    ticksPerSample,
     excluded: joinIntervals(empty),
     doubted,
   });
+  const { beats, legible } = detection;
   const kept = judgedSpans(spans, doubted, legible).filter(({ target }) => target !== 'stomach');
+  const blocked = joinIntervals(kept);
   return {
     timesS: Array.from(beats.ticks, (tick) => tick / (TICKS_PER_SAMPLE * rateHz)),
-    proposed: joinIntervals(kept),
+    proposed: blocked,
+    doubted: {
+      beats,
+      rateHz,
+      heartbeat: heart.heartbeat,
+      heartbeatHz: heart.rateHz,
+      ticksPerSample,
+      blocked,
+      detection,
+    },
   };
 }

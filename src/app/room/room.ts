@@ -1,0 +1,2 @@
+export { makeRoom } from './room-parts';
+export { RoomView } from './room-view';
