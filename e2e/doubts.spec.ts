@@ -183,7 +183,7 @@ test('look-alikes are drawn together and settled as one step, but for those left
     if (/odd shape/.test((await doubtCard(page).textContent()) ?? '')) break;
     await press(page, 'd');
   }
-  await press(page, 'j');
+  await press(page, 'u');
   const dialog = dialogOf(page, 'Look-alikes');
   const boxes = dialog.getByRole('checkbox');
   await expect(boxes.first()).toBeVisible();

@@ -26,7 +26,7 @@ export const DOUBT_COMMANDS: readonly Command[] = [
   doubtCommand('previous-doubt', 'Doubt before', 'P', (acts) => acts.previous()),
   doubtCommand('mend-doubt', 'Doubt: take the proposed mend', 'M', (acts) => acts.mend()),
   doubtCommand('keep-doubt', 'Doubt: keep as it is', 'K', (acts) => acts.keep()),
-  doubtCommand('look-alikes', 'Doubt: settle look-alikes together…', 'J', (acts) =>
+  doubtCommand('look-alikes', 'Doubt: settle look-alikes together…', 'U', (acts) =>
     acts.lookAlikes(),
   ),
 ];
