@@ -144,7 +144,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'next-span': ['Control+e Escape Home', 'span', /^Spoiled span 0:00:2\d/],
   'previous-span': ['Control+e Escape End', 'span', /^Spoiled span 0:00:2\d/],
   'next-doubt': ['', 'doubt', /^Doubt \d+ of \d+, /],
-  'previous-doubt': ['', 'doubt', /^Doubt \d+ of \d+, /],
+  'previous-doubt': ['d', 'doubt', /^Doubt \d+ of \d+, /],
   'keep-doubt': ['d', 'undo', /^keep what is doubted$/],
   'look-alikes': ['d', 'dialog', /^Look-alikes$/],
   'span-for-stomach': ['Control+e', 'span', / stomach$/],
