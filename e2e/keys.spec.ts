@@ -259,6 +259,46 @@ for (const command of COMMANDS.filter(({ id }) => id in CHECKS))
     }
   });
 
+test('the widths of both panes are typed, with or without a time', async () => {
+  await begin();
+  const widths = dialogOf(page, 'Go to a time');
+  await press(page, 'Control+g');
+  await widths.getByLabel('Width of Minutes').fill('2');
+  await widths.getByLabel('Width of Seconds').fill('20');
+  await page.keyboard.press('Enter');
+  await expect(widths).toBeHidden();
+  expect(await SIGHTS.seconds()).toMatch(/^Seconds, 20 s from 0:00:21 to 0:00:41\./);
+  expect(await SIGHTS.minutes()).toMatch(/^Minutes, 2 min /);
+  await press(page, 'Control+g');
+  await widths.getByLabel('Width of Seconds').fill('wide');
+  await page.keyboard.press('Enter');
+  await expect(widths.getByText('Type a number, 1 or more.')).toBeVisible();
+  await page.keyboard.press('Escape');
+  await press(page, 'w');
+});
+
+test('each pane has its tables for those who do not see it', async () => {
+  await begin();
+  const open = async (name: 'Whole study' | 'Minutes' | 'Seconds', title: string) => {
+    const twin = pane(page, name).locator('details.twin', { hasText: title });
+    await twin.locator('summary').focus();
+    await page.keyboard.press('Enter');
+    const rows = twin.getByRole('table').locator('tbody tr');
+    await expect(rows.first()).toBeVisible();
+    const text = words((await rows.first().locator('td').allTextContents()).join(' '));
+    await twin.locator('summary').press('Enter');
+    return { count: await rows.count(), text };
+  };
+  expect((await open('Whole study', 'Phases as a table')).text).toMatch(
+    /^fasting 0:00:00 0:05:00 5\.0 \d\.\d \d\.\d \d+ \w+/,
+  );
+  expect((await open('Minutes', 'Heart rate and breathing')).text).toMatch(
+    /^0:00:00 \d+ \d+ \d+ \d+ /,
+  );
+  expect((await open('Minutes', 'Epochs in Minutes')).text).toMatch(/ fasting 0:0/);
+  expect((await open('Seconds', 'Beats in Seconds')).text).toMatch(/^0:00:2\d\.\d{3} [NSVFQ] /);
+});
+
 test('files are given and asked for by keys', async () => {
   await begin();
   const session = await downloaded(page, () => page.keyboard.press('Control+s'));

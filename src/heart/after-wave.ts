@@ -19,6 +19,8 @@ const MOST_COST = 12;
 /** Evidence from which a beat is taken for sure. */
 const SURE_SCORE = 4;
 const MOST_HOSTS = 600;
+/** Places between two rests. */
+const PLACES_A_STEP = 2000;
 
 /** A beat that has an after-wave. */
 export interface Host {
@@ -31,6 +33,8 @@ export interface Weighed extends Host {
   readonly energyUv: number;
   /** Evidence that it is a beat; positive for. */
   readonly score: number;
+  /** What its shape says against a beat if it may be a T wave; 0 or less. */
+  readonly asT: number;
 }
 
 /**
@@ -38,15 +42,17 @@ export interface Weighed extends Host {
  * The energy that usually follows a beat is learned for each shape (`courses`, as part of the beat's own
  * energy), so that a T wave is known by coming after every beat at its time and of its size, however tall it is.
  */
-export function afterWaveCosts(
+export function* afterWaveCosts(
   places: readonly Weighed[],
   courses: ReadonlyMap<number, Float64Array>,
   energy: Energy,
   rateHz: number,
   rrAt: (sample: number) => number,
-): Float64Array {
+  weight: number,
+): Generator<void, Float64Array> {
   const costs = new Float64Array(places.length);
   for (let j = 0, first = 0; j < places.length; j += 1) {
+    if (j % PLACES_A_STEP === PLACES_A_STEP - 1) yield;
     const latest = latestWaveS(rrAt(places[j].sample));
     while (places[first].sample < places[j].sample - LAST_S * rateHz) first += 1;
     for (let i = first; i < j; i += 1) {
@@ -58,7 +64,7 @@ export function afterWaveCosts(
       const usual = course ? greatestNear(course, at) : 0;
       costs[j] = Math.min(
         costs[j],
-        sure * waveCost(places[j].energyUv / places[i].energyUv, usual),
+        sure * (weight * waveCost(places[j].energyUv / places[i].energyUv, usual) + places[j].asT),
       );
     }
   }
@@ -79,14 +85,15 @@ function greatestNear(course: Float64Array, at: number): number {
 }
 
 /** Energy after the beats of each shape with beats enough, and of all beats as -1: medians over `hosts`. */
-export function usualCourses(
+export function* usualCourses(
   hosts: readonly Host[],
   energy: Energy,
   rateHz: number,
-): Map<number, Float64Array> {
+): Generator<void, Map<number, Float64Array>> {
   const courses = new Map([[-1, usualCourse(hosts, energy, rateHz)]]);
   for (const shape of new Set(hosts.map((host) => host.shape))) {
     const own = hosts.filter((host) => host.shape === shape);
+    yield;
     if (own.length >= 8) courses.set(shape, usualCourse(own, energy, rateHz));
   }
   return courses;

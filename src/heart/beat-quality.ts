@@ -10,6 +10,8 @@ const SD_PER_MAD = 1.4826;
 const QUIET_PART = 0.62;
 /** Quiet places looked at, at most; spread over the study. */
 const MOST_PLACES = 2000;
+/** Beats between two rests. */
+const BEATS_A_STEP = 300;
 
 /** What the beats measure on the heartbeat signal. */
 export interface BeatQuality {
@@ -26,11 +28,11 @@ export interface BeatQuality {
  * answer to the slope of the noise over its bend at a beat. The noise is taken where it is, between the beats, so it need not
  * be white. `times` in samples, ascending.
  */
-export function measureBeats(
+export function* measureBeats(
   signal: HeartSignal,
   main: ShapeAverage,
   times: ArrayLike<number>,
-): BeatQuality {
+): Generator<void, BeatQuality> {
   const bend = bendOf(main);
   const every = Math.max(1, times.length / MOST_PLACES);
   const errors: number[] = [];
@@ -47,6 +49,7 @@ export function measureBeats(
       noise.push(rmsAboutLine(row));
     }
     heights.push(heightAt(signal, times[i]));
+    if (heights.length % BEATS_A_STEP === 0) yield;
   }
   if (heights.length === 0) return { heightUv: 0, noiseUv: Number.NaN, timingSdMs: Number.NaN };
   return {

@@ -1,11 +1,11 @@
 import { median } from '../numeric/statistics';
 import { latestWaveS } from './after-wave';
 import { type Growing, type Match, matchMiddle, middle, type Rows, rms } from './beat-rows';
-import { noiseByHalfSecond } from './between-beats';
+import { noiseByHalfSecond, SIDE_S } from './between-beats';
 import { distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
-import { type SideWave, sideWaves } from './side-waves';
+import { likeSideWave, type SideWave, sideWaves } from './side-waves';
 
 /** Half of the window a complex is known by, and how far a complex may lie from where it was found. */
 const SHAPE_HALF_S = 0.12;
@@ -57,7 +57,30 @@ export function* learnShapes(
   const distinct = distinctShapes(grown, windows, rateHz, bands);
   yield 1;
   const settled = yield* settle(windows, distinct, rateHz);
-  return byWorth(settled.filter(({ count }) => count >= Math.max(2, 0.001 * windows.rows.length)));
+  const kept = settled.filter(
+    (shape) =>
+      shape.count >= Math.max(2, 0.001 * windows.rows.length) &&
+      !settled.some((other) => isSideWaveOf(shape, other, windows.lag)),
+  );
+  return byWorth(kept);
+}
+
+/**
+ * A shape this much rarer than another that is this much like one of its side waves, and of its size, is that wave standing
+ * alone: a beat that always follows would be as frequent. Large ones are T waves as tall as R, and taken for beats in number.
+ */
+const WAVE_RARER = 0.5;
+const LARGE_COUNT = 0.1;
+const WAVE_LIKENESS = 0.97;
+const SMALL_PART = 0.5;
+const SMALL_LIKENESS = 0.85;
+
+function isSideWaveOf(shape: Shape, other: Shape, lag: number): boolean {
+  if (!(shape.count < WAVE_RARER * other.count)) return false;
+  const isSmall = shape.norm < SMALL_PART * other.norm;
+  if (!isSmall && shape.count < LARGE_COUNT * other.count) return false;
+  const alike = likeSideWave(shape.average, shape.half, 2 * lag, other.waves);
+  return alike > (isSmall ? SMALL_LIKENESS : WAVE_LIKENESS);
 }
 
 function byWorth([main, ...others]: readonly Shape[]): Shape[] {
@@ -71,10 +94,11 @@ function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<
   const lag = Math.round(SHAPE_LAG_S * rateHz);
   const rowHalf = Math.round(ROW_HALF_S * rateHz);
   const every = Math.max(1, beats.length / MOST_BEATS);
+  const margin = bands.reach + half + Math.ceil(SIDE_S * rateHz);
   const rows: Float64Array[] = [];
   const noise: number[] = [];
   let taken = 0;
-  for (const { from, to, stretch, start } of chunksOf(signal, bands.reach + rowHalf)) {
+  for (const { from, to, stretch, start } of chunksOf(signal, margin)) {
     if (Math.floor(taken) >= beats.length) break;
     if (beats[Math.floor(taken)] >= to) continue;
     const shape = filterBand(stretch, bands.shape);

@@ -3,7 +3,7 @@ import { quantileInPlace } from '../numeric/statistics';
 import type { Shape } from './beat-shapes';
 
 /** A stretch of signal is judged by so much on either side. */
-const SIDE_S = 1.5;
+export const SIDE_S = 1.5;
 
 /**
  * Quantile of x (`length` values) over the 1.5 s before or after each half second from `from` on, whichever is more, so that a burst of noise

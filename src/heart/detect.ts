@@ -5,6 +5,7 @@ import { measureBeats } from './beat-quality';
 import { classifyBeats, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
+import { quietly } from './in-steps';
 import { legibleStretches } from './legible';
 import { withMisfitsUnusable } from './out-of-place';
 import { decidedPlaces, expectedWrong, loudPlaces } from './place-odds';
@@ -88,17 +89,16 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const { heartbeat, rateHz, ticksPerSample, excluded = [], doubted = [], eager = 0 } = input;
   if (!(rateHz >= LOWEST_RATE_HZ))
     return nothing(`No heartbeat can be read at ${rateHz} samples a second.`);
-  const signal: HeartSignal = {
-    samples: heartbeat,
-    rateHz,
-    usable: usableRanges(heartbeat, rateHz, excluded),
-    bands: qrsBands(rateHz),
-  };
+  const usable = usableRanges(heartbeat, rateHz, excluded);
+  yield 0;
+  const signal: HeartSignal = { samples: heartbeat, rateHz, usable, bands: qrsBands(rateHz) };
+  yield 0;
   const { shapes, places, beats: all } = yield* findBeats(signal, eager);
   yield 0.93;
   const allS = all.map(({ sample }) => sample / rateHz);
   const rhythm = rhythmBy(all, rateHz);
   const decided = decidedPlaces(all, places, rateHz, rhythm);
+  yield 0.93;
   const isLoud = loudPlaces(all, places, decided, rateHz);
   yield 0.93;
   const legible = legibleStretches(doubted, allS, decided, (s) => rhythm(s).rrS);
@@ -112,16 +112,19 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   yield 0.99;
   const classes = classesOf(signal, found);
   yield 0.99;
-  const measured = timed.length > 0 ? measureBeats(signal, timed[0], times) : null;
+  const measured =
+    timed.length > 0 ? yield* quietly(measureBeats(signal, timed[0], times), 0.99) : null;
   yield 0.99;
   const list = listOf(times, classes, ticksPerSample);
+  const judged = withMisfitsUnusable(
+    list,
+    signal,
+    ticksPerSample,
+    (fromS, toS) => expectedWrong(decided, fromS, toS) > LEAST_DOUBT || isLoud(fromS, toS),
+  );
+  yield 0.99;
   return {
-    beats: withMisfitsUnusable(
-      list,
-      signal,
-      ticksPerSample,
-      (fromS, toS) => expectedWrong(decided, fromS, toS) > LEAST_DOUBT || isLoud(fromS, toS),
-    ),
+    beats: judged,
     legible,
     doubtful: Float64Array.from(
       times.filter((_, i) => found.beats[i].score < SURE_EVIDENCE),

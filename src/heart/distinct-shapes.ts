@@ -1,4 +1,5 @@
 import { type Growing, likeness, matchMiddle, middle, type Rows, rms } from './beat-rows';
+import { meanFrequency } from './classify';
 import { filterBand, type QrsBands, rmsAbout } from './qrs-bands';
 
 /** Averages more alike than this are one shape. */
@@ -15,6 +16,24 @@ const EARLIEST_P_S = 0.26;
 const RARE_PART = 0.5;
 const CARRIED_PART_IF_RARE = 1.1;
 const ENERGY_S = 0.1;
+/** A P wave never has more than this part of its beat's energy in the QRS band. */
+const MOST_P_PART = 1.5;
+
+/** P waves that were taken for beats are not so many times as frequent as their complexes. */
+const LEAST_COMPLEXES = 0.3;
+/** The complexes carry it, this alike and with this part of its size. */
+const P_LIKENESS = 0.9;
+const LEAST_P_SIZE = 0.7;
+/** It is slower than its complex by so much. */
+const P_SLOWER = 0.9;
+/** Its middle lies at least so long before that of the complex: nearer it may be a part of it. */
+const LATEST_P_S = 0.11;
+
+interface Weighted {
+  readonly shape: Growing;
+  /** Energy of its average in the QRS band. */
+  readonly energy: number;
+}
 
 /**
  * Leaves out shapes nearly alike to a stronger one, and those that most beats of a stronger shape carry with them: T and P
@@ -27,7 +46,7 @@ export function distinctShapes(
   bands: QrsBands,
 ): Growing[] {
   const { half, rowHalf } = rows;
-  const kept: { shape: Growing; energy: number }[] = [];
+  const kept: Weighted[] = [];
   const strength = ({ sum }: Growing) => rms(middle(sum, half));
   for (const shape of [...shapes].sort((a, b) => strength(b) - strength(a))) {
     const energy = qrsEnergy(shape, rowHalf, rateHz, bands);
@@ -38,7 +57,35 @@ export function distinctShapes(
     );
     if (!known) kept.push({ shape, energy });
   }
-  return kept.map(({ shape }) => shape);
+  return kept
+    .filter((one) => !kept.some((other) => isTallP(one, other, rows, rateHz)))
+    .map(({ shape }) => shape);
+}
+
+/**
+ * Whether a shape is the P wave of another, however tall: nearer before it than two beats ever are, and slower. A QRS complex
+ * is the quicker of the two.
+ */
+function isTallP(one: Weighted, other: Weighted, rows: Rows, rateHz: number): boolean {
+  const { half, rowHalf } = rows;
+  if (one === other || other.shape.count < LEAST_COMPLEXES * one.shape.count) return false;
+  if (one.energy > MOST_P_PART * other.energy) return false;
+  const own = middle(one.shape.sum, half);
+  const start = rowHalf - half;
+  const earliest = Math.max(0, start - Math.round(EARLIEST_P_S * rateHz));
+  const { value, at } = likeness(
+    other.shape.sum,
+    own,
+    earliest,
+    start - Math.round(LATEST_P_S * rateHz),
+    1,
+  );
+  const there = rms(other.shape.sum.subarray(at, at + own.length)) / other.shape.count;
+  return (
+    value > P_LIKENESS &&
+    there > (LEAST_P_SIZE * rms(own)) / one.shape.count &&
+    meanFrequency(own) < P_SLOWER * meanFrequency(middle(other.shape.sum, half))
+  );
 }
 
 /** Energy of an average in the QRS band: the greatest root mean square over 100 ms near its middle. */

@@ -11,7 +11,7 @@ export interface HeartSignal {
 }
 
 /** Samples read at once; with margins, and small enough for a worker to stay answerable between two of them. */
-const CHUNK = 32768;
+const CHUNK = 16384;
 /** Width of the energy's running mean: about that of a narrow to middling QRS complex. */
 const ENERGY_S = 0.1;
 /** Two crests of the energy nearer than this count once. */
@@ -53,7 +53,7 @@ export function* energyPass(signal: HeartSignal): Generator<number, Energy> {
     const energy = stretch;
     for (let i = 0; i < energy.length; i += 1) energy[i] = rms(i);
     for (let i = Math.ceil(from / step) * step; i < to; i += step)
-      if (isUsable(usable, i, apart)) envelope[i / step] = energy[i - start];
+      if (isUsable(usable, i)) envelope[i / step] = energy[i - start];
     for (const at of crestsIn(energy, from - start, to - start, apart))
       if (isUsable(usable, at + start)) crests.push({ sample: at + start, energyUv: energy[at] });
     yield to / samples.length;
@@ -87,8 +87,11 @@ const LEVEL_HALF_S = 9;
 /** A stretch differs from the study's usual beat energy by at most this factor, as after a change of posture. */
 const LEVEL_RANGE = 4;
 
-/** Levels by second; NaN where nothing is usable near. */
-export function levelsOf(energy: Energy, seconds: number): Levels {
+/** Seconds looked at between two rests. */
+const SECONDS_A_STEP = 600;
+
+/** Levels by second; NaN where nothing is usable near. Takes a rest now and then. */
+export function* levelsOf(energy: Energy, seconds: number): Generator<void, Levels> {
   const noise = new Float64Array(seconds);
   const few = new Float64Array(Math.ceil(3 * energy.envelopeHz) + 2);
   for (let s = 0; s < seconds; s += 1) {
@@ -98,7 +101,9 @@ export function levelsOf(energy: Energy, seconds: number): Levels {
     for (let i = from; i < to; i += 1)
       if (!Number.isNaN(energy.envelope[i])) few[count++] = energy.envelope[i];
     noise[s] = count > energy.envelopeHz / 4 ? quantileInPlace(few, 0.2, count) : Number.NaN;
+    if (s % SECONDS_A_STEP === 0) yield;
   }
+  yield;
   return { noise, beat: beatLevels(energy, seconds, few) };
 }
 

@@ -78,12 +78,16 @@ function unseen({ bestLikeness, likeness }: Candidate): number {
   return UNSEEN.weight * hidden * unsure;
 }
 
+/** What likeness to a P or T wave says against a beat; of a T wave only where there is a beat that it may belong to. */
+export const waveEvidence = (alike: number): number =>
+  LIKE_WAVE.weight * Math.max(0, alike - LIKE_WAVE.from);
+
 /**
  * Evidence of shape, quickness and energy together: log-odds of a beat without what the rhythm and its size say, about -15
  * to 15. `beatUv` and `noiseUv` are the levels of its second.
  */
 export function placeEvidence(candidate: Candidate, beatUv: number, noiseUv: number): number {
-  const { energyUv, shape, likeness, share, likeWave, overNoise, rmsUv } = candidate;
+  const { energyUv, shape, likeness, share, likeP, overNoise, rmsUv } = candidate;
   if (!(energyUv > LEAST_ENERGY_UV && beatUv > LEAST_ENERGY_UV)) return NONE;
   if (shape < 0) return energyEvidence(energyUv, beatUv, noiseUv) - SHAPELESS_COST;
   const unlike = 0.5 * log(Math.max(1e-3, 1 - likeness ** 2));
@@ -95,7 +99,7 @@ export function placeEvidence(candidate: Candidate, beatUv: number, noiseUv: num
     unseen(candidate) +
     UNLIKE.weight * Math.max(UNLIKE.from, unlike) +
     SHARE * log(share) +
-    LIKE_WAVE.weight * Math.max(0, likeWave - LIKE_WAVE.from) +
+    waveEvidence(likeP) +
     QUICK.weight * Math.max(0, quick - QUICK.from) +
     OVER_NOISE.weight * within(logOf(overNoise), OVER_NOISE.from, OVER_NOISE.to) +
     ENERGY.weight * Math.max(0, energy - ENERGY.from) +

@@ -2,16 +2,18 @@ import { medianInPlace } from '../numeric/statistics';
 import { afterWaveCosts, type Host, usualCourses } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
 import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
-import { firstEvidence, placeEvidence, sizeEvidence } from './evidence';
+import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
+import { quietly, scaled } from './in-steps';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
+import type { Place } from './unsure-places';
 
 export interface FoundBeats {
   readonly beats: readonly Weighed[];
   readonly shapes: readonly Shape[];
   /** All places that were weighed, ascending; the score of each holds what it is worth as a T wave too. */
-  readonly places: readonly Weighed[];
+  readonly places: readonly Place[];
 }
 
 /** A place with its evidence: log-odds of a beat without what the rhythm says. */
@@ -34,34 +36,43 @@ const WAVE_WEIGHT = 0.37;
 export function* findBeats(signal: HeartSignal, eager = 0): Generator<number, FoundBeats> {
   const { rateHz, samples } = signal;
   const energy = yield* scaled(energyPass(signal), 0, 0.3);
-  const levels = levelsOf(energy, Math.ceil(samples.length / rateHz));
+  const levels = yield* quietly(levelsOf(energy, Math.ceil(samples.length / rateHz)), 0.3);
   yield 0.3;
-  const fallback = rhythmFromEnergy(energy, levels);
+  const fallback = yield* quietly(rhythmFromEnergy(energy, levels), 0.3);
   yield 0.3;
   const first = yield* firstBeats(energy, levels, rateHz, fallback);
   const shapes = yield* scaled(learnShapes(signal, first), 0.3, 0.5);
   const candidates = yield* scaled(shapePass(signal, shapes, energy, first), 0.5, 0.9);
   const evidence = yield* evidenceOf(candidates, levels, rateHz);
   let beats: Weighed[] = [];
-  let places: Weighed[] = [];
+  let places: Place[] = [];
   for (let round = 0; round < ROUNDS; round += 1) {
     const sizes = usualSizes(
       round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
     );
+    yield 0.92;
     const scores = evidence.map((value, i) => value + eager + sizeEvidence(candidates[i], sizes));
     yield 0.92;
     const hosts = round === 0 ? likeliest(candidates, first, rateHz) : beats;
+    yield 0.92;
     const times = beats.map((beat) => beat.sample / rateHz);
     const rhythm = round === 0 ? () => NO_RHYTHM : rhythmFromBeats(times, fallback);
+    yield 0.92;
     const around = { energy, rateHz, rhythm, done: 0.92 };
     const { path, worth } = yield* likelyPath(candidates, scores, hosts, around, WAVE_WEIGHT);
     beats = path.map((i) => ({ ...candidates[i], score: scores[i] }));
     yield 0.92;
     if (round === ROUNDS - 1)
-      places = candidates.map((place, i) => ({ ...place, score: worth[i] }));
+      places = candidates.map(({ sample, shape, energyUv }, i) => ({
+        sample,
+        shape,
+        energyUv,
+        score: worth[i],
+      }));
     yield 0.92;
   }
-  return { beats: eager > 0 ? beats : present(beats, shapes), shapes, places };
+  const kept = eager > 0 ? beats : yield* present(beats, shapes);
+  return { beats: kept, shapes, places };
 }
 
 /** Places weighed between two steps. */
@@ -81,15 +92,6 @@ function* evidenceOf(
   return evidence;
 }
 
-/** Runs a pass and reports its part of the whole. */
-function* scaled<T>(pass: Generator<number, T>, from: number, to: number): Generator<number, T> {
-  for (;;) {
-    const step = pass.next();
-    if (step.done) return step.value;
-    yield from + (to - from) * step.value;
-  }
-}
-
 interface Surroundings {
   readonly energy: Energy;
   readonly rateHz: number;
@@ -100,32 +102,32 @@ interface Surroundings {
 
 /** The likeliest beats among places, T waves of likely beats held back; yields `done` in between. */
 function* likelyPath(
-  places: readonly (Host & { readonly energyUv: number })[],
+  places: readonly (Host & { readonly energyUv: number; readonly likeT: number })[],
   scores: readonly number[],
   hosts: readonly Host[],
   { energy, rateHz, rhythm, done }: Surroundings,
   weight: number,
 ): Generator<number, { readonly path: number[]; readonly worth: readonly number[] }> {
-  const weighed = places.map((place, i) => ({ ...place, score: scores[i] }));
+  const weighed = places.map(({ sample, shape, energyUv, likeT }, i) => ({
+    sample,
+    shape,
+    energyUv,
+    score: scores[i],
+    asT: waveEvidence(likeT),
+  }));
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
   yield done;
-  const courses = usualCourses(hosts, energy, rateHz);
+  const courses = yield* quietly(usualCourses(hosts, energy, rateHz), done);
   yield done;
-  const costs = afterWaveCosts(weighed, courses, energy, rateHz, rrAt);
+  const costs = yield* quietly(
+    afterWaveCosts(weighed, courses, energy, rateHz, rrAt, weight),
+    done,
+  );
   yield done;
   const times = places.map((place) => place.sample / rateHz);
-  const worth = scores.map((score, i) => score + weight * costs[i]);
+  const worth = scores.map((score, i) => score + costs[i]);
   const path = yield* quietly(bestPath(times, worth, rhythm), done);
   return { path, worth };
-}
-
-/** Runs a pass that says nothing of its progress. */
-function* quietly<T>(pass: Generator<void, T>, done: number): Generator<number, T> {
-  for (;;) {
-    const step = pass.next();
-    if (step.done) return step.value;
-    yield done;
-  }
 }
 
 function* firstBeats(
@@ -141,7 +143,7 @@ function* firstBeats(
     return firstEvidence(energyUv, levels.beat[s], levels.noise[s]);
   });
   yield 0.3;
-  const places = crests.map((crest) => ({ ...crest, shape: 0 }));
+  const places = crests.map((crest) => ({ ...crest, shape: 0, likeT: 0 }));
   let rhythm = start;
   let path: number[] = yield* quietly(bestPath(times, scores, rhythm), 0.3);
   for (let round = 0; round < 2; round += 1) {
@@ -195,6 +197,8 @@ function usualSizes(beats: readonly Candidate[]): (sample: number) => number {
   };
 }
 
+/** Beats looked at between two steps. */
+const BEATS_A_STEP = 1000;
 /** Beats to each side that tell whether there is a heartbeat at all. */
 const PRESENCE_NEIGHBOURS = 20;
 /** Noise alone gives shapes whose beats are little like one another, and median likeness and size over noise below these. */
@@ -206,7 +210,10 @@ const SURE_COHERENCE = 0.75;
 const LEAST_EVIDENCE = 1;
 
 /** The beats of stretches where most of them are like their shapes or stand out of the noise: noise alone has no heartbeat. */
-function present(beats: readonly Weighed[], shapes: readonly Shape[]): Weighed[] {
+function* present(
+  beats: readonly Weighed[],
+  shapes: readonly Shape[],
+): Generator<number, Weighed[]> {
   const few = new Float64Array(2 * PRESENCE_NEIGHBOURS + 1);
   const medianAbout = (i: number, value: (beat: Weighed) => number) => {
     const first = Math.max(0, i - PRESENCE_NEIGHBOURS);
@@ -215,12 +222,18 @@ function present(beats: readonly Weighed[], shapes: readonly Shape[]): Weighed[]
     return medianInPlace(few, last - first + 1);
   };
   const coherence = ({ shape }: Weighed) => shapes[shape]?.coherence ?? 0;
-  return beats.filter((_, i) => {
+  const isPresent = (i: number) => {
     if (medianAbout(i, ({ overNoise }) => overNoise) > LEAST_OVER_NOISE) return true;
     const alike = medianAbout(i, coherence);
     return (
       (alike > LEAST_COHERENCE && medianAbout(i, ({ likeness }) => likeness) > LEAST_LIKENESS) ||
       (alike > SURE_COHERENCE && medianAbout(i, ({ score }) => score) > LEAST_EVIDENCE)
     );
-  });
+  };
+  const kept: Weighed[] = [];
+  for (let i = 0; i < beats.length; i += 1) {
+    if (isPresent(i)) kept.push(beats[i]);
+    if (i % BEATS_A_STEP === BEATS_A_STEP - 1) yield 0.92;
+  }
+  return kept;
 }

@@ -57,7 +57,7 @@ export function intervalFit(rrS: number, rhythm: RhythmAt, beforeS = rhythm.rrS)
 }
 
 /** Candidates between two rests. */
-const A_STEP = 2000;
+const A_STEP = 500;
 
 /**
  * The beats among candidates: the sequence with the greatest sum of each beat's own evidence and of how each interval

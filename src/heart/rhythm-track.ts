@@ -6,6 +6,8 @@ const SHORTEST_RR_S = 0.3;
 const LONGEST_RR_S = 2;
 const WINDOW_S = 20;
 const STEP_S = 10;
+/** Looks between two rests. */
+const LOOKS_A_STEP = 60;
 const FIRST_SPREAD = 0.15;
 const LEAST_SPREAD = 0.06;
 const MOST_SPREAD = 0.3;
@@ -20,9 +22,12 @@ const NEIGHBOURS = 8;
 
 /**
  * The usual RR interval before any beat is known: the lag, from 0.3 to 2 s, at which the QRS energy of 20 s is most like
- * itself; of lags nearly as good the shortest, so that two intervals are not taken for one.
+ * itself; of lags nearly as good the shortest, so that two intervals are not taken for one. Takes a rest now and then.
  */
-export function rhythmFromEnergy(energy: Energy, levels: Levels): (timeS: number) => RhythmAt {
+export function* rhythmFromEnergy(
+  energy: Energy,
+  levels: Levels,
+): Generator<void, (timeS: number) => RhythmAt> {
   const { envelope, envelopeHz } = energy;
   const steps = Math.max(1, Math.ceil(envelope.length / (STEP_S * envelopeHz)));
   const rr = new Float64Array(steps);
@@ -39,6 +44,7 @@ export function rhythmFromEnergy(energy: Energy, levels: Levels): (timeS: number
     }
     for (let i = 0; i < part.length; i += 1) part[i] -= sum / part.length;
     rr[k] = bestLag(part, envelopeHz) / envelopeHz;
+    if (k % LOOKS_A_STEP === 0) yield;
   }
   const rhythms = Array.from(rr, (_, k) =>
     rhythmOf(median(rr.subarray(Math.max(0, k - 2), k + 3)), FIRST_SPREAD, MOST_UNUSUAL),

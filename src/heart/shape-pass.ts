@@ -1,7 +1,7 @@
 import type { KernelSpectrum } from '../numeric/kernel-spectrum';
 import { blockSizeFor, kernelSpectrum, overlapSave } from '../numeric/overlap-save';
 import { SHAPE_LAG_S, type Shape } from './beat-shapes';
-import { type Projected, rarityCosts } from './between-beats';
+import { type Projected, rarityCosts, SIDE_S } from './between-beats';
 import {
   CREST_APART_S,
   type Crest,
@@ -37,8 +37,9 @@ export interface Candidate {
   readonly energyUv: number;
   /** Share of the learned beats that have the shape. */
   readonly share: number;
-  /** How much it is like a P or T wave of the usual beats, 0 to 1. */
-  readonly likeWave: number;
+  /** How much it is like a P wave and like a T wave of the usual beats, 0 to 1. */
+  readonly likeP: number;
+  readonly likeT: number;
   /** Root mean square of the shape band over the window about it. */
   readonly rmsUv: number;
 }
@@ -59,7 +60,8 @@ export function* shapePass(
   const found: Candidate[] = [];
   let firstFrom = 0;
   let crestFrom = 0;
-  for (const { from, to, stretch, start } of chunksOf(signal, bands.reach + 2 * half + apart)) {
+  const margin = bands.reach + 2 * half + Math.max(apart, Math.ceil(SIDE_S * rateHz));
+  for (const { from, to, stretch, start } of chunksOf(signal, margin)) {
     const projected = projectBand(filterBand(stretch, bands.shape), searched, plans);
     const near: number[] = [];
     while (firstFrom < first.length && first[firstFrom] < start) firstFrom += 1;
@@ -107,7 +109,8 @@ function unlike({ sample, energyUv }: Crest): Candidate {
     bestLikeness: 1,
     energyUv,
     share: 1,
-    likeWave: 0,
+    likeP: 0,
+    likeT: 0,
     rmsUv: energyUv,
   };
 }

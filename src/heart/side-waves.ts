@@ -7,15 +7,18 @@ const T_S = [0.15, 0.5] as const;
 const P_HALF_S = 0.055;
 const T_HALF_S = 0.09;
 /** A side wave below this part of its beat's own size is no rival. */
-const LEAST_PART = 0.12;
+const LEAST_PART = 0.08;
 /** A side wave is of usual size within these multiples of it. */
 const USUAL_SIZE = [0.5, 1.6] as const;
 const STEP = 2;
 
-/** A P or T wave in the shape band: uV about its middle, falling to 0 at both ends. */
+/** A P or T wave in the shape band, its mean and slope taken out. */
 export interface SideWave {
-  readonly samples: Float64Array;
-  /** Root of the sum of squares. */
+  readonly kind: 'P' | 'T';
+  /** uV about its middle, weighted by `taper`, which falls to 0 at both ends. */
+  readonly weights: Float64Array;
+  readonly taper: Float64Array;
+  /** Root of the weighted sum of squares. */
   readonly norm: number;
 }
 
@@ -32,22 +35,19 @@ export function sideWaves(
 ): SideWave[] {
   const own = rms(sum.subarray(centre - half, centre + half + 1)) / count;
   const waves: SideWave[] = [];
-  for (const { within, halfS } of [
-    { within: P_S, halfS: P_HALF_S },
-    { within: T_S, halfS: T_HALF_S },
-  ]) {
+  for (const { kind, within, halfS } of [
+    { kind: 'P', within: P_S, halfS: P_HALF_S },
+    { kind: 'T', within: T_S, halfS: T_HALF_S },
+  ] as const) {
     const [fromS, toS] = within;
     const reach = Math.round(halfS * rateHz);
     const from = Math.max(reach, centre + Math.round(fromS * rateHz));
     const to = Math.min(sum.length - 1 - reach, centre + Math.round(toS * rateHz));
-    const stretches: Float64Array[] = [];
+    const stretches: SideWave[] = [];
     for (let at = from; at <= to; at += STEP)
-      stretches.push(tapered(sum.subarray(at - reach, at + reach + 1), count));
-    const best = greatestCrest(stretches.map(rms));
-    if (best.value > LEAST_PART * own) {
-      const samples = stretches[best.at];
-      waves.push({ samples, norm: best.value * Math.sqrt(samples.length) });
-    }
+      stretches.push(sideWaveOf(kind, sum.subarray(at - reach, at + reach + 1), count));
+    const best = greatestCrest(stretches.map(({ norm }) => norm / Math.sqrt(2 * reach + 1)));
+    if (best.value > LEAST_PART * own) waves.push(stretches[best.at]);
   }
   return waves;
 }
@@ -60,10 +60,24 @@ function greatestCrest(x: readonly number[]): { at: number; value: number } {
   return best;
 }
 
-/** A stretch over a count, weighted by a parabola that is 0 beyond its ends. */
-function tapered(x: Float64Array, count: number): Float64Array {
-  const half = (x.length + 1) / 2;
-  return x.map((value, i) => (value / count) * (1 - ((i + 1 - half) / half) ** 2));
+/** Mean and slope are taken out: the slow feet of the QRS complex beside a wave tilt it. */
+function sideWaveOf(kind: SideWave['kind'], x: Float64Array, count: number): SideWave {
+  const half = (x.length - 1) / 2;
+  const taper = x.map((_, i) => (1 - ((i - half) / (half + 1)) ** 2) ** 2);
+  let [level, tilt, mass, spread] = [0, 0, 0, 0];
+  x.forEach((value, i) => {
+    level += (taper[i] * value) / count;
+    tilt += (taper[i] * (i - half) * value) / count;
+    mass += taper[i];
+    spread += taper[i] * (i - half) ** 2;
+  });
+  let power = 0;
+  const weights = x.map((value, i) => {
+    const rest = value / count - level / mass - ((i - half) * tilt) / spread;
+    power += taper[i] * rest * rest;
+    return taper[i] * rest;
+  });
+  return { kind, weights, taper, norm: Math.sqrt(power) };
 }
 
 /** How much a place is like a side wave of usual size, 0 to 1: likeness within `lag` samples, less where size is far off. */
@@ -74,20 +88,26 @@ export function likeSideWave(
   waves: readonly SideWave[],
 ): number {
   let most = 0;
-  for (const { samples, norm } of waves) {
-    const reach = (samples.length - 1) / 2;
+  for (const { weights, taper, norm } of waves) {
+    const reach = (weights.length - 1) / 2;
     const from = Math.max(reach, at - lag);
     const to = Math.min(band.length - 1 - reach, at + lag);
     for (let place = from; place <= to; place += STEP) {
-      let product = 0;
-      let power = 1e-30;
-      for (let i = 0, j = place - reach; i < samples.length; i += STEP, j += STEP) {
-        const weight = 1 - ((i - reach) / (reach + 1)) ** 2;
-        product += samples[i] * weight * band[j];
-        power += (weight * band[j]) ** 2;
+      let [product, power, level, tilt, mass, spread] = [0, 1e-30, 0, 0, 0, 0];
+      for (let i = 0, j = place - reach; i < weights.length; i += STEP, j += STEP) {
+        const w = taper[i];
+        const wx = w * band[j];
+        const t = i - reach;
+        product += weights[i] * band[j];
+        power += wx * band[j];
+        level += wx;
+        tilt += t * wx;
+        mass += w;
+        spread += w * t * t;
       }
+      power -= (level * level) / mass + (tilt * tilt) / spread;
       const size = (STEP * product) / norm ** 2;
-      const alike = product / Math.sqrt((power * norm ** 2) / STEP);
+      const alike = product / Math.sqrt((Math.max(power, 1e-12) * norm ** 2) / STEP);
       most = Math.max(most, alike * usualSize(size));
     }
   }

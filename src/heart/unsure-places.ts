@@ -20,7 +20,8 @@ export const NONE_UNSURE: UnsurePlaces = {
   taken: new Uint8Array(0),
 };
 
-interface Place extends Judged {
+/** A place as it was weighed, with the shape that fits it best. */
+export interface Place extends Judged {
   readonly shape: number;
 }
 

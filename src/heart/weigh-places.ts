@@ -81,6 +81,8 @@ export function weigher(
   );
   const noise = noiseByHalfSecond(rest, projected.band.length, rateHz, from, to, 0.5);
   const waves = usualWaves(shapes, learned, reach);
+  const pWaves = waves.filter(({ kind }) => kind === 'P');
+  const tWaves = waves.filter(({ kind }) => kind === 'T');
   return ({ sample, shape, likeness, size }) => {
     const moment = Math.min(
       noise.length - 1,
@@ -96,7 +98,8 @@ export function weigher(
       overNoise: fits[shape][sample] / (Math.sqrt(noisePower / WINDOW_FREEDOM) + 1e-12),
       bestLikeness: norm / Math.sqrt(norm ** 2 + noisePower),
       share: count / learned,
-      likeWave: likeSideWave(projected.band, sample, reach, waves),
+      likeP: likeSideWave(projected.band, sample, reach, pWaves),
+      likeT: likeSideWave(projected.band, sample, reach, tWaves),
       rmsUv: projected.normAt(sample) / Math.sqrt(2 * half + 1),
     };
   };

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { detectBeats } from '../../src/heart/detect';
 import { type EcgRecordSpec, ecgRecord } from '../../src/simulate/ecg-record';
 import type { EcgRhythmSpec } from '../../src/simulate/ecg-rhythm';
+import { PLAIN_SINUS, QUIET } from '../simulate/plain-ecg';
 import { heartbeatOf } from './record208';
 import { matchBeats } from './score';
 import { addBeats, addNoise, NARROW, planBeats, testRandom } from './simulated-heart';
@@ -9,20 +10,7 @@ import { addBeats, addNoise, NARROW, planBeats, testRandom } from './simulated-h
 const RATE = 360;
 const SECONDS = 300;
 
-const SINUS: EcgRhythmSpec = {
-  base: 'sinus',
-  rateBpm: 72,
-  breathing: 0.04,
-  wander: 0.03,
-  jitter: 0.01,
-  breathsPerMin: 15,
-  chances: { ventricular: 0, atrial: 0, pause: 0 },
-  aberrant: 0,
-  blocked: 0,
-  again: 0,
-  foci: 1,
-  episodes: [],
-};
+const SINUS: EcgRhythmSpec = { ...PLAIN_SINUS, rateBpm: 72, breathing: 0.04, wander: 0.03 };
 
 const CLEAN: EcgRecordSpec = {
   seed: 5,
@@ -36,21 +24,7 @@ const CLEAN: EcgRecordSpec = {
   shapeSpread: 0.04,
   turnsPerHour: 0,
   atrialUv: 60,
-  noise: {
-    wanderUv: 60,
-    muscleUv: 8,
-    burstsPerMin: 0,
-    burstUv: 0,
-    burstS: 1,
-    motionPerMin: 0,
-    motionUv: 0,
-    humUv: 5,
-    humHz: 60,
-    stepsPerHour: 0,
-    stepUv: 0,
-    popsPerHour: 0,
-    popUv: 0,
-  },
+  noise: { ...QUIET, wanderUv: 60, muscleUv: 8, humUv: 5, humHz: 60 },
   digitiser: { stepUv: 5, railUv: 5120 },
 };
 
@@ -76,6 +50,30 @@ describe('in a surface ECG the beat detector', () => {
       ],
     };
     expect(errorsOf({ rhythm })).toMatchObject({ missed: 0, extra: 0 });
+  });
+
+  it('makes no shape of beats from lone P waves, whichever the heart', () => {
+    const rhythm: EcgRhythmSpec = {
+      ...SINUS,
+      episodes: [
+        { rhythm: 'wenckebach', everyS: 40, lengthS: 30 },
+        { rhythm: 'block', everyS: 60, lengthS: 30 },
+      ],
+    };
+    for (const seed of [6, 9, 12, 14, 16])
+      for (const family of ['narrow', 'leftBundle'] as const) {
+        const { missed, extra } = errorsOf({ rhythm, family, seed, durationS: 150 });
+        expect(missed, `${family} ${seed}`).toBeLessThanOrEqual(1);
+        expect(extra, `${family} ${seed}`).toBeLessThanOrEqual(1);
+      }
+  });
+
+  it('finds the last beat, however near the end', () => {
+    const { signal, beats } = ecgRecord(CLEAN);
+    const lastS = beats[beats.length - 1].timeS;
+    const cut = signal.slice(0, Math.ceil((lastS + 0.06) * RATE));
+    const found = timesOf(cut);
+    expect(Math.abs(found[found.length - 1] - lastS)).toBeLessThan(0.05);
   });
 
   it('does not halve a tachycardia that begins between two beats', () => {

@@ -18,7 +18,8 @@ const PLACE: Candidate = {
   bestLikeness: 1,
   energyUv: 20,
   share: 0.5,
-  likeWave: 0,
+  likeP: 0,
+  likeT: 0,
   rmsUv: 5,
 };
 const BEAT_UV = 40;
@@ -35,7 +36,7 @@ const SLOPES: readonly (readonly [name: string, slope: number])[] = [
   ['small', (sizeOf(0.8) - sizeOf(0.4)) / Math.log(2)],
   ['large', (sizeOf(2) - sizeOf(1)) / Math.log(2)],
   ['share', (evidence({ share: 0.8 }) - evidence({ share: 0.4 })) / Math.log(2)],
-  ['likeWave', (evidence({ likeWave: 0.95 }) - evidence({ likeWave: 0.85 })) / 0.1],
+  ['likeWave', (evidence({ likeP: 0.95 }) - evidence({ likeP: 0.85 })) / 0.1],
   ['quick', (evidence({ rmsUv: 10 }) - evidence({ rmsUv: 20 })) / Math.log(2)],
   ['overNoise', (evidence({ overNoise: 8 }) - evidence({ overNoise: 4 })) / Math.log(2)],
   [

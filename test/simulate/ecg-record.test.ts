@@ -2,39 +2,11 @@ import { describe, expect, it } from 'vitest';
 import { createRandom } from '../../src/numeric/random';
 import { addEcgNoise, type EcgNoiseSpec } from '../../src/simulate/ecg-noise';
 import { type EcgRhythmSpec, ecgRhythm } from '../../src/simulate/ecg-rhythm';
+import { PLAIN_SINUS, QUIET } from './plain-ecg';
 
-const SINUS: EcgRhythmSpec = {
-  base: 'sinus',
-  rateBpm: 75,
-  breathing: 0,
-  wander: 0,
-  jitter: 0.01,
-  breathsPerMin: 15,
-  chances: { ventricular: 0, atrial: 0, pause: 0 },
-  aberrant: 0,
-  blocked: 0,
-  again: 0,
-  foci: 1,
-  episodes: [],
-};
 const rhythm = (change: Partial<EcgRhythmSpec>) =>
-  ecgRhythm({ ...SINUS, ...change }, 600, createRandom(7));
+  ecgRhythm({ ...PLAIN_SINUS, ...change }, 600, createRandom(7));
 
-const QUIET: EcgNoiseSpec = {
-  wanderUv: 0,
-  muscleUv: 0,
-  burstsPerMin: 0,
-  burstUv: 0,
-  burstS: 1,
-  motionPerMin: 0,
-  motionUv: 0,
-  humUv: 0,
-  humHz: 50,
-  stepsPerHour: 0,
-  stepUv: 0,
-  popsPerHour: 0,
-  popUv: 0,
-};
 const noise = (change: Partial<EcgNoiseSpec>) => {
   const signal = new Float64Array(360 * 300);
   addEcgNoise(signal, 360, { ...QUIET, ...change }, createRandom(3));
