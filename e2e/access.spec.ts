@@ -130,6 +130,8 @@ test.describe('a study is open', () => {
     ['Shift+V', 'Select beats from one time to another'],
     ['Shift+W', 'Find the beats of a stretch again'],
     ['Shift+F', 'Sign'],
+    ['Shift+H', 'Log'],
+    ['Shift+C', 'Compare with another session'],
   ];
   for (const [key, title] of dialogs)
     test(`the dialog "${title}"`, async () => {
@@ -173,6 +175,24 @@ test.describe('a study is open', () => {
   test('the dialog of a figure', async () => {
     await figureButton(page, 'rmssd_ms').first().click();
     await expect(page.getByRole('dialog')).toBeVisible();
+    await expectClean('dialog');
+    await page.keyboard.press('Escape');
+  });
+
+  test('two sessions side by side', async () => {
+    await reviewAs(page);
+    const { bytes } = await downloadSession(page);
+    await goTo(page, '0:31');
+    await press(page, '.');
+    await press(page, 'v');
+    await press(page, 'Shift+C');
+    await page.getByLabel('Session to compare with').setInputFiles({
+      name: 'other.bicadence.json',
+      mimeType: 'application/json',
+      buffer: bytes,
+    });
+    const dialog = dialogOf(page, 'Compare with another session');
+    await expect(dialog.getByRole('region', { name: 'Figures' })).toBeVisible();
     await expectClean('dialog');
     await page.keyboard.press('Escape');
   });

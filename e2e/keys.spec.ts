@@ -63,6 +63,7 @@ const SIGHTS = {
   },
   bar: async () => words(await bar(page).textContent()),
   theme: async () => words(await page.locator('html').getAttribute('data-theme')),
+  doubt: async () => words(await page.locator('[data-part="spoken"]').textContent()),
   focused: () => page.evaluate(() => document.activeElement?.getAttribute('aria-label') ?? ''),
   focus: () => page.evaluate(() => document.activeElement?.id ?? ''),
   view: () => page.evaluate(() => window.location.hash),
@@ -142,6 +143,10 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'exclude-seconds': ['', 'span', /0:00:2\d.* to 0:00:3\d.* both$/],
   'next-span': ['Control+e Escape Home', 'span', /^Spoiled span 0:00:2\d/],
   'previous-span': ['Control+e Escape End', 'span', /^Spoiled span 0:00:2\d/],
+  'next-doubt': ['', 'doubt', /^Doubt \d+ of \d+, /],
+  'previous-doubt': ['d', 'doubt', /^Doubt \d+ of \d+, /],
+  'keep-doubt': ['d', 'undo', /^keep what is doubted$/],
+  'look-alikes': ['d', 'dialog', /^Look-alikes$/],
   'span-for-stomach': ['Control+e', 'span', / stomach$/],
   'span-for-heart': ['Control+e', 'span', / heart$/],
   'span-for-both': ['Control+e 1', 'span', / both$/],
@@ -164,6 +169,7 @@ const ELSEWHERE = [
   'next-difference',
   'previous-difference',
   'previous-bookmark',
+  'mend-doubt',
   'stop',
 ];
 
@@ -258,6 +264,46 @@ for (const command of COMMANDS.filter(({ id }) => id in CHECKS))
         await press(page, pressed(key));
     }
   });
+
+test('the widths of both panes are typed, with or without a time', async () => {
+  await begin();
+  const widths = dialogOf(page, 'Go to a time');
+  await press(page, 'Control+g');
+  await widths.getByLabel('Width of Minutes').fill('2');
+  await widths.getByLabel('Width of Seconds').fill('20');
+  await page.keyboard.press('Enter');
+  await expect(widths).toBeHidden();
+  expect(await SIGHTS.seconds()).toMatch(/^Seconds, 20 s from 0:00:21 to 0:00:41\./);
+  expect(await SIGHTS.minutes()).toMatch(/^Minutes, 2 min /);
+  await press(page, 'Control+g');
+  await widths.getByLabel('Width of Seconds').fill('wide');
+  await page.keyboard.press('Enter');
+  await expect(widths.getByText('Type a number, 1 or more.')).toBeVisible();
+  await page.keyboard.press('Escape');
+  await press(page, 'w');
+});
+
+test('each pane has its tables for those who do not see it', async () => {
+  await begin();
+  const open = async (name: 'Whole study' | 'Minutes' | 'Seconds', title: string) => {
+    const twin = pane(page, name).locator('details.twin', { hasText: title });
+    await twin.locator('summary').focus();
+    await page.keyboard.press('Enter');
+    const rows = twin.getByRole('table').locator('tbody tr');
+    await expect(rows.first()).toBeVisible();
+    const text = words((await rows.first().locator('td').allTextContents()).join(' '));
+    await twin.locator('summary').press('Enter');
+    return { count: await rows.count(), text };
+  };
+  expect((await open('Whole study', 'Phases as a table')).text).toMatch(
+    /^fasting 0:00:00 0:05:00 5\.0 \d\.\d \d\.\d \d+ \w+/,
+  );
+  expect((await open('Minutes', 'Heart rate and breathing')).text).toMatch(
+    /^0:00:00 \d+ \d+ \d+ \d+ /,
+  );
+  expect((await open('Minutes', 'Epochs in Minutes')).text).toMatch(/ fasting 0:0/);
+  expect((await open('Seconds', 'Beats in Seconds')).text).toMatch(/^0:00:2\d\.\d{3} [NSVFQ] /);
+});
 
 test('files are given and asked for by keys', async () => {
   await begin();

@@ -7,20 +7,22 @@ import type { CommandParts } from './command';
 import { Dialog } from './dialog';
 import { FormActions } from './form-actions';
 import { RangeFields, rangeAtFirst, readRange } from './range-fields';
+import { timeRule, useTimeFrame } from './time-field';
 
 /** Selects the beats from one typed time to another. */
 export function BeatsBetweenDialog({ parts }: { readonly parts: CommandParts }) {
   const { shell, view } = useApp();
+  const frame = useTimeFrame();
   const [draft, setDraft] = useState(() => rangeAtFirst(parts));
   const [tried, setTried] = useState(false);
-  const { durationS } = view.getState();
-  const range = readRange(draft, durationS);
+  const range = readRange(draft, frame);
   const open = openBeats(parts);
   const ticks = range.ok && open ? ticksWithin(open, range.window) : [];
   const close = () => shell.getState().closeDialog();
   return (
     <Dialog
       title="Select beats from one time to another"
+      subtitle={timeRule(frame)}
       size="small"
       onClose={close}
       onSubmit={() => {
@@ -35,7 +37,7 @@ export function BeatsBetweenDialog({ parts }: { readonly parts: CommandParts }) 
       <RangeFields
         draft={draft}
         onDraft={setDraft}
-        durationS={durationS}
+        frame={frame}
         faults={tried && !range.ok ? range : null}
       />
       <p role="status">{open && range.ok ? `${beatsWords(ticks, open.rateHz)}.` : '\u00a0'}</p>

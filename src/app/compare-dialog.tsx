@@ -1,6 +1,5 @@
 import './history.css';
 import { useMemo, useRef, useState } from 'react';
-import { type Hide, identityHider, nothingHidden } from '../export/report-hiding';
 import { type Failure, Refusal } from '../recording/failure';
 import { asWork } from '../review/idle';
 import { otherStudy } from '../session/compare-sessions';
@@ -17,6 +16,7 @@ import { Dialog } from './dialog';
 import { shownKey } from './own-keys';
 import type { Compared } from './shell-store';
 import { FailureWords } from './small-dialogs';
+import { useHide } from './use-hide';
 
 /** Reads a session to compare the open one with; a failure where it is none, or one of another study. */
 async function readOther(file: File, open: Session): Promise<Session | Failure> {
@@ -124,10 +124,7 @@ function Comparison({ session, other, parts }: ComparisonProps) {
     () => comparisonOf(session.state, other.session.state, recording),
     [session.state, other.session.state, recording],
   );
-  const hide: Hide = useMemo(
-    () => (hidden && recording ? identityHider(recording, session.state.study) : nothingHidden),
-    [hidden, recording, session.state.study],
-  );
+  const hide = useHide();
   const hint = useShell((state) => {
     const [next, before] = STEPS.map((id) => shownKey(commandOf(id), state));
     const keys = next && before ? ` In the panes ${next} goes to the next, ${before} back.` : '';

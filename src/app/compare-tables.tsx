@@ -49,7 +49,7 @@ export function Agreement({
       <caption>Agreement</caption>
       <thead>
         <tr>
-          <th scope="col"> </th>
+          <th scope="col">what</th>
           <th scope="col">here</th>
           <th scope="col">there</th>
           <th scope="col">in both</th>

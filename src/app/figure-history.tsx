@@ -12,6 +12,7 @@ import { stateInputs } from './analysis-runner';
 import { useAnalysis, useApp, useSession, useView } from './app-context';
 import { keepFigures, keptFigures, markOf } from './figures-kept';
 import { FailureWords } from './small-dialogs';
+import { useHide } from './use-hide';
 
 /** Edits looked at one by one; what went before them is told together. */
 const MOST_EDITS = 40;
@@ -150,6 +151,7 @@ function stepsOf(props: KnownProps): readonly Step[] {
 
 function History(props: KnownProps) {
   const hidden = useView((state) => state.identityHidden);
+  const hide = useHide();
   const steps = stepsOf(props);
   const { session, definition, part } = props;
   const [first, last] = [steps[0], steps[steps.length - 1]];
@@ -182,7 +184,7 @@ function History(props: KnownProps) {
             <tr key={edit}>
               <th scope="row">{edit === 0 ? '—' : edit}</th>
               {hidden ? null : <td>{who}</td>}
-              <td>{what}</td>
+              <td>{hide(what)}</td>
               <td>{words}</td>
             </tr>
           ))}

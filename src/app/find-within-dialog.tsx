@@ -26,6 +26,7 @@ import {
 import { FormActions } from './form-actions';
 import { RangeFields, rangeAtFirst, readRange } from './range-fields';
 import { FailureWords } from './small-dialogs';
+import { timeRule, useTimeFrame } from './time-field';
 
 /** Finds the beats of a stretch again with other choices; what would change is drawn in Seconds before it is taken. */
 export function FindWithinDialog() {
@@ -40,8 +41,8 @@ export function FindWithinDialog() {
     polarity: 'dominant',
     eager: 'usual',
   });
-  const { durationS } = view.getState();
-  const read = readRange(range, durationS);
+  const frame = useTimeFrame();
+  const read = readRange(range, frame);
   const [before] = useState(() => {
     const { minutes, seconds } = view.getState();
     return { minutes, seconds };
@@ -67,6 +68,7 @@ export function FindWithinDialog() {
   return (
     <Dialog
       title="Find the beats of a stretch again"
+      subtitle={timeRule(frame)}
       size="above"
       onClose={leave}
       onSubmit={take}
@@ -83,7 +85,7 @@ export function FindWithinDialog() {
         <RangeFields
           draft={range}
           onDraft={setRange}
-          durationS={durationS}
+          frame={frame}
           faults={read.ok ? null : read}
         />
         <Choice

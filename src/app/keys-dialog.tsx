@@ -149,7 +149,7 @@ function ChangeRow({ command }: { readonly command: Command }) {
           className="button slight"
           aria-label={
             listening
-              ? `Press the new key of “${command.words}”; Escape leaves the old one`
+              ? `Press a key… to be the key of “${command.words}”; Escape leaves the old one`
               : `Change the key of “${command.words}”`
           }
           onClick={() => {
@@ -179,8 +179,10 @@ function ChangeRow({ command }: { readonly command: Command }) {
         ) : null}
       </dd>
       {fault === null ? null : (
-        <dd className="field-error" role="alert">
-          {fault}
+        <dd className="key-fault">
+          <p className="field-error" role="alert">
+            {fault}
+          </p>
         </dd>
       )}
     </div>

@@ -1,6 +1,6 @@
 import './history.css';
-import { useMemo, useState } from 'react';
-import { type Hide, identityHider, nothingHidden } from '../export/report-hiding';
+import { memo, useMemo, useState } from 'react';
+import type { Hide } from '../export/report-hiding';
 import type { Interval } from '../recording/span';
 import { LOG_KIND_WORDS, LOG_KINDS, type LogKind } from '../session/log-words';
 import { formatClock } from '../units/time';
@@ -10,9 +10,10 @@ import { heartRateOf, showPlace } from './comparing';
 import { Dialog } from './dialog';
 import { Choice, Field } from './fields';
 import { type LogRow, logRows, useFitting } from './log-list';
+import { useHide } from './use-hide';
 
 /** Lines shown at once. */
-const SHOWN = 100;
+const SHOWN = 50;
 const ALL = 'all';
 
 /** Who changed what, when, from what to what; a line goes to its place in the panes. */
@@ -26,21 +27,22 @@ export function LogDialog({ page }: { readonly page: PageActs }) {
     [session, recording],
   );
   const reviewers = useMemo(() => [...new Set(rows.map(({ line }) => line.reviewer))], [rows]);
-  const hide = useMemo(
-    () =>
-      hidden && session && recording
-        ? identityHider(recording, session.state.study)
-        : nothingHidden,
-    [hidden, session, recording],
+  const hide = useHide();
+  const shown = useMemo(
+    (): Shown => ({
+      hide,
+      hidden,
+      nameOf: (reviewer) =>
+        hidden ? `reviewer ${reviewers.length - reviewers.indexOf(reviewer)}` : reviewer,
+      go: (place) => {
+        shell.getState().closeDialog();
+        showPlace(page, view, place);
+      },
+    }),
+    [hide, hidden, reviewers, shell, page, view],
   );
   if (!session) return null;
   const close = () => shell.getState().closeDialog();
-  const go = (place: Interval) => {
-    close();
-    showPlace(page, view, place);
-  };
-  const nameOf = (reviewer: string) =>
-    hidden ? `reviewer ${reviewers.length - reviewers.indexOf(reviewer)}` : reviewer;
   return (
     <Dialog
       title="Log"
@@ -51,7 +53,7 @@ export function LogDialog({ page }: { readonly page: PageActs }) {
       {rows.length === 0 ? (
         <p>Nothing has been edited yet: all is as the program proposed it.</p>
       ) : (
-        <LogList rows={rows} reviewers={reviewers} shown={{ hide, hidden, nameOf, go }} />
+        <LogList rows={rows} reviewers={reviewers} shown={shown} />
       )}
     </Dialog>
   );
@@ -146,7 +148,13 @@ function LogTable({ rows, shown }: Pick<LogListProps, 'rows' | 'shown'>) {
   );
 }
 
-function LogLineRow({ row, shown }: { readonly row: LogRow; readonly shown: Shown }) {
+interface LogLineProps {
+  readonly row: LogRow;
+  readonly shown: Shown;
+}
+
+/** Drawn once, however often the list around it is. */
+const LogLineRow = memo(function LogLineRow({ row, shown }: LogLineProps) {
   const { n, atUtc, reviewer } = row.line;
   const { act, changes, place } = row.words();
   const { hide } = shown;
@@ -177,4 +185,4 @@ function LogLineRow({ row, shown }: { readonly row: LogRow; readonly shown: Show
       </td>
     </tr>
   );
-}
+});

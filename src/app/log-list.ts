@@ -54,7 +54,9 @@ export function fits(row: LogRow, { kind, reviewer, text }: LogFilter): boolean 
 }
 
 /** Lines looked through in one turn, so that typing never waits for a long log. */
-const LINES_A_TURN = 250;
+const LINES_A_TURN = 200;
+/** The list is drawn after the first turn, then after so many. */
+const TURNS_A_DRAWING = 8;
 
 export interface FittingRows {
   readonly rows: readonly LogRow[];
@@ -76,7 +78,9 @@ export function useFitting(rows: readonly LogRow[], filter: LogFilter): FittingR
         for (const row of asked.rows.slice(from, from + LINES_A_TURN))
           if (fits(row, asked)) fitting.push(row);
         const complete = from + LINES_A_TURN >= asked.rows.length;
-        if (current) setFound({ rows: [...fitting], complete, of: asked });
+        const turn = from / LINES_A_TURN;
+        if (current && (complete || turn % TURNS_A_DRAWING === 0))
+          setFound({ rows: [...fitting], complete, of: asked });
       }
     };
     void asWork(look());

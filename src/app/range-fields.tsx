@@ -1,9 +1,10 @@
 import { openBeats, selectedTicks } from '../review/open-beats';
 import type { TimeWindow } from '../review/view-store';
 import { ticksToSeconds } from '../units/ticks';
-import { formatClock, parseClock } from '../units/time';
+import { formatClock } from '../units/time';
+import { readTypedTime, type TimeFrame, typedTimeFault } from '../units/typed-time';
 import type { AppParts } from './app-context';
-import { Field } from './fields';
+import { TimeField } from './time-field';
 
 /** A stretch as it is being typed. */
 export interface RangeDraft {
@@ -30,50 +31,41 @@ export function rangeAtFirst(parts: Pick<AppParts, 'view' | 'session' | 'analysi
   };
 }
 
-/** Reads a typed stretch inside a study. */
-export function readRange({ from, to }: RangeDraft, durationS: number): RangeRead {
-  const [fromS, toS] = [parseClock(from), parseClock(to)];
-  const end = formatClock(durationS, 1);
-  const fault = (atS: number | null) =>
-    atS === null
-      ? 'Type seconds, m:ss or h:mm:ss.'
-      : atS > durationS + 0.1
-        ? `The recording ends at ${end}.`
-        : null;
-  const wrong = { from: fault(fromS), to: fault(toS) };
-  if (fromS === null || toS === null || wrong.from !== null || wrong.to !== null)
-    return { ok: false, ...wrong };
-  return toS > fromS
-    ? { ok: true, window: { fromS, toS: Math.min(toS, durationS) } }
+/** Reads a typed stretch of a study. */
+export function readRange({ from, to }: RangeDraft, frame: TimeFrame): RangeRead {
+  const [first, last] = [readTypedTime(from, frame), readTypedTime(to, frame)];
+  if (!('atS' in first) || !('atS' in last))
+    return { ok: false, from: typedTimeFault(from, frame), to: typedTimeFault(to, frame) };
+  return last.atS > first.atS
+    ? { ok: true, window: { fromS: first.atS, toS: last.atS } }
     : { ok: false, from: null, to: 'The end must come after the beginning.' };
 }
 
 interface RangeFieldsProps {
   readonly draft: RangeDraft;
   readonly onDraft: (draft: RangeDraft) => void;
-  readonly durationS: number;
+  readonly frame: TimeFrame;
   readonly faults: { readonly from: string | null; readonly to: string | null } | null;
 }
 
 /** The two times of a stretch. */
-export function RangeFields({ draft, onDraft, durationS, faults }: RangeFieldsProps) {
+export function RangeFields({ draft, onDraft, frame, faults }: RangeFieldsProps) {
   return (
     <div className="field-grid range-fields">
-      <Field
+      <TimeField
         label="From"
         value={draft.from}
+        frame={frame}
         onChange={(from) => onDraft({ ...draft, from })}
-        size="short"
         autoFocus
         error={faults?.from}
       />
-      <Field
+      <TimeField
         label="To"
         value={draft.to}
+        frame={frame}
         onChange={(to) => onDraft({ ...draft, to })}
-        size="short"
         error={faults?.to}
-        hint={`up to ${formatClock(durationS)}`}
       />
     </div>
   );

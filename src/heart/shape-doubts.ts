@@ -29,8 +29,8 @@ export function shapeReason(view: DoubtView, beat: number): Reason | null {
   if (!view.isOwn(beat) || Number.isNaN(bestLikeness(view.look(beat)))) return null;
   return (
     turnedReason(view, beat) ??
-    classReason(view, beat) ??
     lowReason(view, beat) ??
+    classReason(view, beat) ??
     oddReason(view, beat)
   );
 }
@@ -139,7 +139,7 @@ function lowReason(view: DoubtView, beat: number): Reason | null {
     kind: 'low-beat',
     strength: 0.5,
     why: `It is ${Math.round(Math.max(0, heightUv))} uV high, where ${Math.round(view.usualSize(beat) * view.detection.heightUv)} uV are usual, over a noise of ${Math.round(noiseUv)} uV.`,
-    mend: null,
+    mend: view.classOf(beat) === 'Q' ? null : classMend(view, beat, 'Q'),
   };
 }
 

@@ -1,7 +1,9 @@
+import { useId, useState } from 'react';
 import { useStore } from 'zustand';
-import { BEAT_CLASSES } from '../recording/beat';
+import { BEAT_CLASSES, type BeatClass } from '../recording/beat';
 import { ticksToSeconds } from '../units/ticks';
 import { formatClock } from '../units/time';
+import { readTypedTime, timeOfDay, typedTimeFault } from '../units/typed-time';
 import type { BeatCommands } from './beat-commands';
 import { useCommandLinks } from './command-links';
 import { beatsWords, openBeats, selectedTicks } from './open-beats';
@@ -14,6 +16,10 @@ const CLASS_WORDS = {
   F: 'fusion',
   Q: 'not usable, or unknown',
 } as const;
+
+/** A class in words that hold what its button shows. */
+const classWords = (beatClass: BeatClass): string =>
+  `Class ${beatClass}${beatClass === 'Q' ? '' : ','} ${CLASS_WORDS[beatClass]}`;
 
 interface BeatBarProps {
   readonly stores: PaneStores;
@@ -38,15 +44,17 @@ export function BeatBar({ stores, commands }: BeatBarProps) {
         <BeatTime
           key={one}
           time={formatClock(ticksToSeconds(one, open.rateHz), 3)}
-          onTime={(text) => commands.moveBeatToTyped(one, text)}
+          tick={one}
+          stores={stores}
+          commands={commands}
         />
       )}
       {BEAT_CLASSES.map((beatClass) => (
         <button
           type="button"
           key={beatClass}
-          title={hint(`Class ${beatClass}, ${CLASS_WORDS[beatClass]}`, `class-${beatClass}`)}
-          aria-label={`Class ${beatClass}${beatClass === 'Q' ? '' : ','} ${CLASS_WORDS[beatClass]}`}
+          title={hint(classWords(beatClass), `class-${beatClass}`)}
+          aria-label={classWords(beatClass)}
           onClick={() => commands.classSelected(beatClass)}
         >
           {beatClass === 'Q' ? 'Q not usable' : beatClass}
@@ -77,29 +85,53 @@ export function BeatBar({ stores, commands }: BeatBarProps) {
   );
 }
 
-interface BeatTimeProps {
+interface BeatTimeProps extends BeatBarProps {
+  readonly tick: number;
   readonly time: string;
-  readonly onTime: (text: string) => void;
 }
 
-/** The time of the one selected beat; another time typed here moves it. */
-function BeatTime({ time, onTime }: BeatTimeProps) {
+/** The time of the one selected beat; another time typed here moves it, Escape takes back what was typed. */
+function BeatTime({ stores, commands, tick, time }: BeatTimeProps) {
+  const id = useId();
+  const study = useStore(stores.session, (now) => now.session?.state.study);
+  const [typed, setTyped] = useState(time);
+  const [fault, setFault] = useState<string | null>(null);
+  const frame = {
+    durationS: study?.durationS ?? 0,
+    startOfDayS: timeOfDay(study?.start ?? null),
+  };
+  const change = (text: string) => {
+    setTyped(text);
+    setFault(null);
+  };
+  const keep = () => {
+    const read = readTypedTime(typed, frame);
+    if ('atS' in read && typed !== time) commands.moveBeatTo(tick, read.atS);
+    setFault(typedTimeFault(typed, frame));
+  };
   return (
     <label title="Type another time and press Enter to move the beat">
       Beat at
       <input
         type="text"
-        defaultValue={time}
+        value={typed}
         autoComplete="off"
         spellCheck={false}
+        aria-invalid={fault === null ? undefined : true}
+        aria-describedby={fault === null ? undefined : id}
+        onChange={(event) => change(event.target.value)}
         onKeyDown={(event) => {
-          if (event.key === 'Enter' && event.currentTarget.value !== time)
-            onTime(event.currentTarget.value);
+          if (event.key === 'Enter') keep();
+          else if (event.key === 'Escape' && typed !== time) change(time);
+          else if (event.key === 'Escape') event.currentTarget.blur();
         }}
-        onBlur={(event) => {
-          event.currentTarget.value = time;
-        }}
+        onBlur={() => change(time)}
       />
+      {fault === null ? null : (
+        <span id={id} role="alert" className="span-fault">
+          {fault}
+        </span>
+      )}
     </label>
   );
 }

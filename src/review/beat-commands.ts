@@ -1,7 +1,7 @@
 import { BEAT_CLASSES, type BeatClass, firstBeatAt } from '../recording/beat';
 import { addBeat, classBeats, deleteBeats, moveBeat } from '../session/edits';
 import { secondsToTicks, TICKS_PER_SAMPLE, ticksToSeconds } from '../units/ticks';
-import { formatClock, parseClock } from '../units/time';
+import { formatClock } from '../units/time';
 import type { SignalAccess } from './analysis-store';
 import { type BeatChoosing, beatChoosing } from './beat-choosing';
 import { beatsInView } from './beats-in-view';
@@ -25,8 +25,6 @@ export interface BeatCommands extends BeatChoosing {
   /** Moves the one selected beat by whole samples of its lead. */
   moveSelectedBySamples(samples: number): void;
   moveBeatTo(fromTick: number, atS: number): void;
-  /** Moves a beat to a typed time; one that cannot be read is said. */
-  moveBeatToTyped(fromTick: number, text: string): void;
 }
 
 /** Makes the acts on beats. */
@@ -110,7 +108,7 @@ function moving(
   signals: SignalAccess,
   act: PaneActs,
   select: (ticks: readonly number[]) => void,
-): Pick<BeatCommands, 'moveSelected' | 'moveSelectedBySamples' | 'moveBeatTo' | 'moveBeatToTyped'> {
+): Pick<BeatCommands, 'moveSelected' | 'moveSelectedBySamples' | 'moveBeatTo'> {
   const moved = async (fromTick: number, wanted: number) => {
     const open = openBeats(stores);
     if (!open) return;
@@ -141,16 +139,6 @@ function moving(
     moveBeatTo: (fromTick, atS) => {
       const open = openBeats(stores);
       if (open) move(fromTick, secondsToTicks(atS, open.rateHz));
-    },
-    moveBeatToTyped: (fromTick, text) => {
-      const open = openBeats(stores);
-      const atS = parseClock(text);
-      if (!open) return;
-      if (atS === null || atS > stores.view.getState().durationS)
-        act.reportError(
-          `The beat stays: “${text}” is no time in this recording. Type seconds, m:ss or h:mm:ss.`,
-        );
-      else move(fromTick, secondsToTicks(atS, open.rateHz));
     },
   };
 }

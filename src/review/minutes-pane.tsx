@@ -7,7 +7,7 @@ import { PaneFrame } from './pane-frame';
 import type { PaneProps } from './pane-props';
 import { minutesRows, reportedOnly } from './rows';
 import { SelectionBar } from './selection-bar';
-import { EpochTable, SpanTable } from './twin-tables';
+import { EpochTable, RateTable, SpanTable } from './twin-tables';
 import { type PaneSetup, usePane, usePaneCommands } from './use-pane';
 import { useRoles } from './use-roles';
 
@@ -74,6 +74,7 @@ export function MinutesPane(props: PaneProps) {
       </div>
       <SelectionBar of="span" stores={stores} commands={commands} />
       <EpochTable stores={stores} commands={commands} />
+      <RateTable stores={stores} />
       <SpanTable stores={stores} commands={commands} />
     </PaneFrame>
   );

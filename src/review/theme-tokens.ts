@@ -105,11 +105,26 @@ export const CSS_NAMES: Readonly<Record<FlatToken, string>> = {
   dfHalo: '--df-halo',
 };
 
-/** Sets the custom properties of a theme on the document's root, with `data-theme` and the matching colour scheme. */
+/** Sizes of type, by the custom properties that styles name them by: two of text, one of figures, one of headings. */
+export const TYPE_SIZES = {
+  '--text': '14px',
+  '--small': '12px',
+  '--figure': '15px',
+  '--head': '18px',
+} as const;
+
+/** The distances that styles choose from, in CSS pixels; 1 is a hairline. Smaller ones lie within a control, larger between parts. */
+export const SPACINGS_PX = [1, 2, 4, 6, 8, 10, 12, 16, 20, 24, 32, 64] as const;
+
+/** Radii of corners in CSS pixels: marks, controls, panels, dialogs. */
+export const RADII_PX = [2, 4, 6, 8] as const;
+
+/** Sets the custom properties of a theme and the sizes of type on the document's root, with `data-theme` and the matching colour scheme. */
 export function applyTheme(page: Document, name: ThemeName): void {
   const { style, dataset } = page.documentElement;
   for (const [token, property] of Object.entries(CSS_NAMES))
     style.setProperty(property, THEMES[name][token as FlatToken]);
+  for (const [property, size] of Object.entries(TYPE_SIZES)) style.setProperty(property, size);
   style.setProperty('color-scheme', name);
   dataset.theme = name;
 }

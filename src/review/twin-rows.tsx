@@ -8,6 +8,8 @@ import { openBeats, selectedTicks } from './open-beats';
 import type { PaneStores } from './row-view';
 import type { TwinProps } from './twin-tables';
 
+export { PhaseRows, RateRows } from './twin-study-rows';
+
 const MOST_ROWS = 500;
 
 /** The beats of the Seconds window, each a way to select it. */

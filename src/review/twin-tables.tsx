@@ -16,6 +16,8 @@ const rows = <K extends keyof Rows>(name: K) =>
 
 const BeatRows = rows('BeatRows');
 const EpochRows = rows('EpochRows');
+const PhaseRows = rows('PhaseRows');
+const RateRows = rows('RateRows');
 const SpanRows = rows('SpanRows');
 
 /** A table in place of a drawing, hidden until it is reached by keyboard; its rows are made only while it is open. */
@@ -41,6 +43,20 @@ export function BeatTable(props: TwinProps) {
 /** The epochs of the Minutes window. */
 export function EpochTable({ stores }: TwinProps) {
   return <Twin title="Epochs in Minutes as a table">{() => <EpochRows stores={stores} />}</Twin>;
+}
+
+/** The phases of the whole study. */
+export function PhaseTable({ stores }: Pick<TwinProps, 'stores'>) {
+  return <Twin title="Phases as a table">{() => <PhaseRows stores={stores} />}</Twin>;
+}
+
+/** Heart rate and breathing of the Minutes window. */
+export function RateTable({ stores }: Pick<TwinProps, 'stores'>) {
+  return (
+    <Twin title="Heart rate and breathing in Minutes as a table">
+      {() => <RateRows stores={stores} />}
+    </Twin>
+  );
 }
 
 /** All spoiled spans, each a way to select it. */

@@ -5,6 +5,7 @@ import type { PaneProps } from './pane-props';
 import { listenToStage } from './stage';
 import { type StripDom, StripView, stripActs } from './strip-view';
 import { THEMES } from './theme-tokens';
+import { PhaseTable } from './twin-tables';
 
 /** Fetched when an edge is moved first. */
 const MovingParts = lazy(() =>
@@ -67,6 +68,7 @@ export function WholeStudyPane({ stores, act, theme, scale }: PaneProps) {
         <div className="cursor-line" data-part="cursor-line" hidden />
       </div>
       <p className="visually-hidden" data-part="summary" />
+      <PhaseTable stores={stores} />
       {moving ? (
         <Suspense fallback={null}>
           <MovingParts stores={stores} act={act} />

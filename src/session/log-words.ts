@@ -1,4 +1,4 @@
-import type { SettledDoubt } from '../recording/doubt';
+import { DOUBT_KINDS, type SettledDoubt } from '../recording/doubt';
 import type { Roles } from '../recording/roles';
 import type { Interval } from '../recording/span';
 import type { Hertz } from '../units/rate';
@@ -173,6 +173,12 @@ function doubtDifferences(
   ];
 }
 
+/** " (early beat)": a doubt's id begins with its kind; '' where it does not. */
+function kindWords({ id }: SettledDoubt): string {
+  const kind = DOUBT_KINDS.find((one) => id.startsWith(one));
+  return kind ? ` (${kind.replaceAll('-', ' ')})` : '';
+}
+
 function settledWords(
   doubts: readonly SettledDoubt[],
   rateHz: Hertz | null,
@@ -183,7 +189,7 @@ function settledWords(
   return doubts.map((doubt) => {
     const atS = doubt.tick === null || rateHz === null ? null : ticksToSeconds(doubt.tick, rateHz);
     return {
-      what: doubt.tick === null ? 'doubt' : `doubt at beat ${tickWords(doubt.tick, rateHz)}`,
+      what: `doubt${kindWords(doubt)}${doubt.tick === null ? '' : ` at beat ${tickWords(doubt.tick, rateHz)}`}`,
       ...sides(doubt),
       place: atS === null ? null : { fromS: atS, toS: atS },
     };

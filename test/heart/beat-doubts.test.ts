@@ -11,7 +11,7 @@ import {
   withBeat,
   without,
 } from './invented-doubts';
-import { TALL_T } from './simulated-heart';
+import { TALL_T, testRandom } from './simulated-heart';
 
 const TICKS_PER_S = 64 * RATE_HZ;
 
@@ -122,6 +122,46 @@ describe('the doubts of a heart whose beats are known', () => {
   });
 });
 
+describe('places where the detector itself was unsure', () => {
+  const heart = inventedHeart({ ventricular: 0, supraventricular: 0 });
+  const at = (index: number) => heart.beats.ticks[index];
+  const unsureAt = (tick: number, wrong: number, taken: 0 | 1) =>
+    doubtsOf(
+      {
+        ...heart,
+        detection: {
+          ...heart.detection,
+          unsure: {
+            ticks: Float64Array.of(tick),
+            wrong: Float64Array.of(wrong),
+            taken: Uint8Array.of(taken),
+          },
+        },
+      },
+      heart.beats,
+    );
+
+  it('a beat that little speaks for is listed with its odds, to be removed', () => {
+    const [doubt] = unsureAt(at(50), 0.3, 1);
+    expect(doubt).toMatchObject({ kind: 'low-beat', tick: at(50), mend: { words: 'remove beat' } });
+    expect(doubt.why).toContain('30 %');
+  });
+
+  it('something not taken is listed at the beat after it: late as a missed beat, early as a tall wave', () => {
+    const late = at(50) + 0.7 * (at(51) - at(50));
+    expect(unsureAt(Math.round(late), 0.2, 0)).toMatchObject([
+      { kind: 'missed-beat', tick: at(51), mend: { added: [{ tick: Math.round(late) }] } },
+    ]);
+    const early = at(50) + Math.round(0.3 * TICKS_PER_S);
+    expect(unsureAt(early, 0.2, 0)).toMatchObject([{ kind: 'tall-wave', tick: at(51) }]);
+  });
+
+  it('is nothing where the odds are small, or where a beat stands by now', () => {
+    expect(unsureAt(at(50), 0.02, 1)).toEqual([]);
+    expect(unsureAt(at(50) + 64, 0.5, 0)).toEqual([]);
+  });
+});
+
 describe('a rhythm that is irregular by itself', () => {
   it('does not fill the list: intervals are judged by the spread of the rhythm they are in', () => {
     const heart = inventedHeart({ spread: 0.2, ventricular: 0, supraventricular: 0, breathRr: 0 });
@@ -143,6 +183,22 @@ describe('what spoils single beats', () => {
     expect(Math.abs(found[0].fromS - heart.truth[turned[0]].timeS)).toBeLessThan(0.1);
     expect(Math.abs(found[0].toS - heart.truth[turned[1]].timeS)).toBeLessThan(0.1);
     expect(found[0].why).toContain('8 beats stand upside down');
+  });
+
+  it('a beat of low height in noise is listed', () => {
+    const heart = inventedHeart({ ventricular: 0, supraventricular: 0 }, (signal, truth) => {
+      const random = testRandom(4);
+      const from = Math.round((truth[90].timeS - 0.45) * RATE_HZ);
+      for (let i = 0; i < 0.8 * RATE_HZ; i += 1)
+        signal[from + i] = 0.3 * signal[from + i] + 25 * random.normal();
+    });
+    const { timeS } = heart.truth[90];
+    const here = doubtsOf(heart, heart.beats).filter(
+      ({ fromS, toS }) => fromS < timeS + 0.15 && toS > timeS - 0.15,
+    );
+    expect(here).toHaveLength(1);
+    expect(here[0].kind).toBe('low-beat');
+    expect(here[0].why).toMatch(/uV high, where \d+ uV are usual/);
   });
 
   it('tall T waves are no beats and raise no doubt where the rhythm is plain', () => {

@@ -113,18 +113,6 @@ describe('mending beats', () => {
     expect(study.state().beats.ticks.length).toBe(599);
   });
 
-  it('moves a beat to a typed time, and says what it cannot read', async () => {
-    const study = paneStudy({ placeBeat: async () => ({ tick: 10.25 * SECOND, visible: true }) });
-    study.commands.moveBeatToTyped(10 * SECOND, '0:10.25');
-    await idle();
-    expect(beatOf(study, 10.25 * SECOND)).toEqual(['N', 'moved']);
-    study.commands.moveBeatToTyped(11 * SECOND, 'soon');
-    study.commands.moveBeatToTyped(11 * SECOND, '20:00');
-    expect(study.errors).toHaveLength(2);
-    expect(study.errors[0]).toContain('“soon” is no time');
-    expect(study.edits).toHaveLength(1);
-  });
-
   it('is no edit where nothing would change', () => {
     const study = paneStudy();
     study.commands.selectBeat(10 * SECOND, false);

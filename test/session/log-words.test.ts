@@ -133,7 +133,7 @@ describe('a line of the log in words', () => {
       'signature added: amended by A. Reader, figures of edit 1, because “a beat was missed”',
     ]);
     expect(wordsOf(() => keepDoubts([doubtAt(tickAt(1269.6), null)])).changes).toEqual([
-      'doubt at beat 0:21:09.600: open → kept',
+      'doubt (early beat) at beat 0:21:09.600: open → kept',
     ]);
   });
 

