@@ -63,6 +63,7 @@ const SIGHTS = {
   },
   bar: async () => words(await bar(page).textContent()),
   theme: async () => words(await page.locator('html').getAttribute('data-theme')),
+  doubt: async () => words(await page.locator('[data-part="spoken"]').textContent()),
   focused: () => page.evaluate(() => document.activeElement?.getAttribute('aria-label') ?? ''),
   focus: () => page.evaluate(() => document.activeElement?.id ?? ''),
   view: () => page.evaluate(() => window.location.hash),
@@ -142,6 +143,10 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'exclude-seconds': ['', 'span', /0:00:2\d.* to 0:00:3\d.* both$/],
   'next-span': ['Control+e Escape Home', 'span', /^Spoiled span 0:00:2\d/],
   'previous-span': ['Control+e Escape End', 'span', /^Spoiled span 0:00:2\d/],
+  'next-doubt': ['', 'doubt', /^Doubt \d+ of \d+, /],
+  'previous-doubt': ['d', 'doubt', /^Doubt \d+ of \d+, /],
+  'keep-doubt': ['d', 'undo', /^keep what is doubted$/],
+  'look-alikes': ['d', 'dialog', /^Look-alikes$/],
   'span-for-stomach': ['Control+e', 'span', / stomach$/],
   'span-for-heart': ['Control+e', 'span', / heart$/],
   'span-for-both': ['Control+e 1', 'span', / both$/],
@@ -164,6 +169,7 @@ const ELSEWHERE = [
   'next-difference',
   'previous-difference',
   'previous-bookmark',
+  'mend-doubt',
   'stop',
 ];
 

@@ -6,6 +6,7 @@ import { Shell } from './app/shell';
 import { createShellStore } from './app/shell-store';
 import { createStudyController } from './app/study-controller';
 import { createAnalysisStore } from './review/analysis-store';
+import { createDoubtStore } from './review/doubt-store';
 import { asWork } from './review/idle';
 import { createViewStore } from './review/view-store';
 import { browserStores } from './session/browser-stores';
@@ -18,6 +19,7 @@ const browser = browserStores();
 const session = createSessionStore(nowUtc);
 const analysis = createAnalysisStore();
 const view = createViewStore();
+const doubts = createDoubtStore();
 const shell = createShellStore(browser.localStorage);
 const stores = { session, analysis, view, shell };
 const keeper = createKeeper({ ...browser, program: PROGRAM, nowUtc });
@@ -34,7 +36,13 @@ const root = document.getElementById('root');
 if (root)
   createRoot(root).render(
     <Shell
-      parts={{ ...stores, controller, signals: controller.signals }}
+      parts={{
+        ...stores,
+        doubts,
+        controller,
+        signals: controller.signals,
+        doubtAccess: controller.doubtAccess,
+      }}
       renderReport={renderReport}
     />,
   );

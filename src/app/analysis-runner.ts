@@ -23,7 +23,7 @@ export function stateInputs(state: SessionState, edit: number): ReviewInputs {
 }
 
 /** True where both give the same figures: edits of words and protocol do not reach the worker. */
-function sameInputs(a: ReviewInputs, b: ReviewInputs): boolean {
+export function sameInputs(a: ReviewInputs, b: ReviewInputs): boolean {
   return (
     a.roles === b.roles &&
     a.phases === b.phases &&

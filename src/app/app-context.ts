@@ -1,10 +1,15 @@
 import { createContext, useContext } from 'react';
 import { useStore } from 'zustand';
+import type { AnalysisClient } from '../../workers/analysis-client';
 import type { AnalysisState, AnalysisStore, SignalAccess } from '../review/analysis-store';
+import type { DoubtStore } from '../review/doubt-store';
 import type { ViewState, ViewStore } from '../review/view-store';
 import type { SessionStore, SessionStoreState } from '../session/store';
 import type { StudyController } from './controller';
 import type { ShellState, ShellStore } from './shell-store';
+
+/** Doubts and what looks like them, on demand. */
+export type DoubtAccess = Pick<AnalysisClient, 'doubts' | 'lookAlikes'>;
 
 /** The parts the page is made of; main.tsx joins them. */
 export interface AppParts {
@@ -14,6 +19,8 @@ export interface AppParts {
   readonly shell: ShellStore;
   readonly controller: StudyController;
   readonly signals: SignalAccess;
+  readonly doubts: DoubtStore;
+  readonly doubtAccess: DoubtAccess;
 }
 
 const PartsContext = createContext<AppParts | null>(null);

@@ -1,3 +1,4 @@
+import type { KeyboardEvent } from 'react';
 import { useStore } from 'zustand';
 import type { Command, CommandParts } from './command';
 import { canRun } from './commands';
@@ -16,6 +17,11 @@ interface CommandButtonProps {
   readonly after?: () => void;
 }
 
+/** A held Enter presses a button again and again; this lets it press once. */
+export function stopRepeat(event: KeyboardEvent): void {
+  if (event.repeat) event.preventDefault();
+}
+
 /** A button for a command of the table: its words, its key in the tooltip, off while it cannot act. */
 export function CommandButton(props: CommandButtonProps) {
   const { command, parts, className = 'button', showKey = false, after } = props;
@@ -30,6 +36,7 @@ export function CommandButton(props: CommandButtonProps) {
       title={`${key ? `${words} (${key})` : words}${why ? `: ${why}` : ''}`}
       aria-label={props.readWhole ? words : undefined}
       disabled={!able}
+      onKeyDown={command.once ? stopRepeat : undefined}
       onClick={() => {
         command.run(parts);
         after?.();

@@ -9,6 +9,7 @@ export const COMMAND_GROUPS = [
   'look',
   'beats',
   'spans',
+  'doubts',
   'notes',
   'room',
   'page',
@@ -22,6 +23,7 @@ export const GROUP_WORDS: Readonly<Record<CommandGroup, string>> = {
   look: 'Move and zoom',
   beats: 'Beats',
   spans: 'Spoiled spans',
+  doubts: 'Doubts',
   notes: 'Events and symptoms',
   room: 'Room view',
   page: 'The page',
@@ -70,6 +72,8 @@ export interface Command {
   readonly keys: readonly string[];
   readonly group: CommandGroup;
   readonly when: CommandContext;
+  /** A held key runs it once and not again. */
+  readonly once?: true;
   /** Menu of the top bar it is listed in. */
   readonly menu?: 'open' | 'study' | 'help';
   /** Words with what it would act on now ("Undo move beat"). */

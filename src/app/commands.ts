@@ -1,5 +1,6 @@
 import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
+import { DOUBT_COMMANDS } from './doubt-commands';
 import { HISTORY_COMMANDS } from './history-commands';
 import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
@@ -15,6 +16,7 @@ export const COMMANDS: readonly Command[] = [
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,
   ...PANE_COMMANDS,
+  ...DOUBT_COMMANDS,
   ...TIME_COMMANDS,
   ...BOOKMARK_COMMANDS,
   ...ROOM_DOOR,

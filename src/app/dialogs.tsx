@@ -21,6 +21,7 @@ const FigureDialog = later('FigureDialog');
 const FindWithinDialog = later('FindWithinDialog');
 const GoToDialog = later('GoToDialog');
 const KeysDialog = later('KeysDialog');
+const LookAlikesDialog = later('LookAlikesDialog');
 const LogDialog = later('LogDialog');
 const NotesDialog = later('NotesDialog');
 const PhasesDialog = later('PhasesDialog');
@@ -97,6 +98,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <FailureDialog failure={state.failure} />;
     case 'figure':
       return <FigureDialog figure={state.key} phase={state.phase} />;
+    case 'look-alikes':
+      return <LookAlikesDialog doubtId={state.doubtId} />;
     case 'choose-same-file':
       return <SameFileDialog code={state.code} page={parts.page} />;
   }

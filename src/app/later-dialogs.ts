@@ -8,6 +8,7 @@ export { FindWithinDialog } from './find-within-dialog';
 export { GoToDialog } from './go-to-dialog';
 export { KeysDialog } from './keys-dialog';
 export { LogDialog } from './log-dialog';
+export { LookAlikesDialog } from './look-alikes-dialog';
 export { NotesDialog } from './notes-dialog';
 export { PhasesDialog } from './phases-dialog';
 export { ProtocolDialog } from './protocol-dialog';

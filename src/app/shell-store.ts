@@ -43,6 +43,7 @@ export type DialogState =
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
   | { readonly kind: 'figure'; readonly key: string; readonly phase: string }
+  | { readonly kind: 'look-alikes'; readonly doubtId: string }
   | { readonly kind: 'choose-same-file'; readonly code: string; readonly quickKey: string };
 
 /** A short word to the person, said politely; `problem` stays until it is put away. */

@@ -63,7 +63,7 @@ export function Shell({ parts, renderReport }: ShellProps) {
           <TopBar parts={commandParts} studyShown={studyShown} reportShown={reportShown} />
           {reportShown ? <ReportFrame parts={commandParts}>{renderReport()}</ReportFrame> : null}
           {studyShown && !reportShown ? (
-            <Workspace panes={{ ...panes, theme }} page={page} />
+            <Workspace panes={{ ...panes, theme }} parts={commandParts} />
           ) : null}
           {studyShown ? null : <StartScreen parts={commandParts} />}
           <FootLine />

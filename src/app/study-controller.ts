@@ -14,7 +14,7 @@ import type { Keeper } from '../session/keeper';
 import { beginSession, redoableEdit, undoableEdit } from '../session/log';
 import type { SessionStore } from '../session/store';
 import { type AnalysisRunner, createAnalysisRunner } from './analysis-runner';
-import { withReviewer } from './app-context';
+import { type DoubtAccess, withReviewer } from './app-context';
 import { applyEdit } from './apply-edit';
 import type { StudyController } from './controller';
 import { lastStudy } from './last-study';
@@ -46,6 +46,7 @@ interface Opening {
 /** Leads a study from the file through worker and session to the stores that the page draws from. */
 export function createStudyController(parts: ControllerParts): StudyController & {
   readonly signals: SignalAccess;
+  readonly doubtAccess: DoubtAccess;
 } {
   const { session, analysis, view, shell, keeper } = parts;
   const client = createAnalysisClient(
@@ -72,6 +73,8 @@ export function createStudyController(parts: ControllerParts): StudyController &
     confirmed: () => keeping.confirmed(),
   });
   let opening: Opening | null = null;
+  /** The recording of the open study. */
+  let openFile: File | null = null;
   let awaited: Session | null = null;
   /** The attempt to open made last; an earlier one that ends later is let go. */
   let attempt = 0;
@@ -160,13 +163,19 @@ export function createStudyController(parts: ControllerParts): StudyController &
     const begun = kept ?? (await newSession(recording, quickKey, code));
     if (!begun || !here()) return;
     awaited = null;
+    await beginWith(begun, file);
+  }
+
+  /** The session is the one worked on from here; of which file it is, is sure once that has been read to its end. */
+  async function beginWith(begun: Session, file: File | null): Promise<void> {
+    openFile = file;
     session.getState().begin(begun);
     await keeping.begin(begun);
     const closeOther = (failure: Failure) => {
       blank();
       fail(failure);
     };
-    onceFigures(() => keeping.confirm(file, closeOther));
+    if (file) onceFigures(() => keeping.confirm(file, closeOther));
   }
 
   /** Reading the whole file for its hash waits for the first figures, since both want the processor. */
@@ -218,6 +227,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
 
   return {
     signals: runner.signals,
+    doubtAccess: client,
     openFile: open,
     openDemo,
     async openSessionFile(file) {
@@ -233,8 +243,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
       awaited = read;
       const open = session.getState().session;
       if (open?.state.study.quickKey === quickKey) {
-        session.getState().begin(read);
-        await keeping.begin(read);
+        await beginWith(read, openFile);
       } else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
     },
     continueKept,

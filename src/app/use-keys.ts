@@ -44,6 +44,7 @@ export function useKeys(
         return;
       }
       event.preventDefault();
+      if (event.repeat && command.once) return;
       command.run(parts);
     };
     window.addEventListener('keydown', onKeyDown);

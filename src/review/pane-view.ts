@@ -1,6 +1,7 @@
 import { leadKey } from '../recording/lead';
 import { drawsDiffer, type SignalAccess } from './analysis-store';
 import { boxOf, CanvasLayer, watchSize } from './canvas-layer';
+import { paintDoubt } from './doubt-paint';
 import { FrameLoop } from './frame-loop';
 import { paintGrid } from './grid-paint';
 import { Hatch } from './hatch';
@@ -103,6 +104,7 @@ export class PaneView {
         state.levelsDb,
         state.selection,
         state.draft,
+        state.doubt,
         state.preview,
         state.phaseDraft,
         state.identityHidden,
@@ -203,6 +205,7 @@ export class PaneView {
       font: this.over.font(11),
     });
     this.kind.paintOver?.(brush, this);
+    paintDoubt(brush, this);
   }
 
   private placeCursor(): void {

@@ -42,6 +42,16 @@ export interface BeatPreview extends TimeWindow {
   readonly moved: readonly (readonly [fromTick: number, toTick: number])[];
 }
 
+/** The doubt in front as the panes draw it. */
+export interface DoubtMark extends TimeWindow {
+  /** What is proposed, in a word or two: "insert?". */
+  readonly words: string;
+  /** Times of the proposed act; empty where it is about the whole stretch. */
+  readonly atS: readonly number[];
+  /** True where pins stand in the place of the words. */
+  readonly onPins: boolean;
+}
+
 /** Where the panes look; no part of the session and never undone. */
 export interface ViewState {
   readonly durationS: number;
@@ -57,6 +67,7 @@ export interface ViewState {
   readonly levelsDb: readonly [low: number, high: number] | null;
   readonly selection: Selection;
   readonly draft: Draft | null;
+  readonly doubt: DoubtMark | null;
   readonly preview: BeatPreview | null;
   readonly phaseDraft: PhaseDraft | null;
   /** True while the borders of phases stand in Whole study to be moved by keys. */
@@ -85,6 +96,7 @@ export const createViewStore = (): ViewStore =>
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    doubt: null,
     preview: null,
     phaseDraft: null,
     bordersShown: false,
@@ -116,6 +128,7 @@ export function lookAtStudy(store: ViewStore, durationS: number): void {
     levelsDb: null,
     selection: { kind: 'none' },
     draft: null,
+    doubt: null,
     preview: null,
     phaseDraft: null,
     bordersShown: false,

@@ -116,6 +116,17 @@ describe('the table of commands', () => {
       }
   });
 
+  it('runs what settles doubts once for a held key', () => {
+    const once = COMMANDS.filter((one) => one.once).map((one) => one.id);
+    expect(once.sort()).toEqual([
+      'keep-doubt',
+      'look-alikes',
+      'mend-doubt',
+      'next-doubt',
+      'previous-doubt',
+    ]);
+  });
+
   it('leaves alone the keys that browsers keep for tabs and windows', () => {
     const kept = ['Ctrl+T', 'Ctrl+N', 'Ctrl+W', 'Ctrl+Tab', 'Ctrl+Shift+T', 'Ctrl+Shift+N', 'F5'];
     for (const { keys } of COMMANDS) for (const key of keys) expect(kept).not.toContain(key);
@@ -138,6 +149,7 @@ const partsWith = (
   const parts = {
     session: { getState: () => ({ session: {} }) },
     view: { getState: () => ({ selection: { kind: 'beats', ticks: [1] } }) },
+    doubts: { getState: () => ({ acts: {}, listed: [] }) },
     shell: { getState: () => ({ plainKeys, ownKeys }) },
     page: { reportOpen: () => report, reportThere: true, room },
   };
@@ -178,7 +190,7 @@ describe('keys in the room view', () => {
   });
 
   it('of its own rest outside of it', () => {
-    expect(commandForKey('D', partsWith(false))?.id).not.toBe('pen');
+    expect(commandForKey('D', partsWith(false))?.id).toBe('next-doubt');
     expect(commandForKey('ArrowUp', partsWith(false))).toBeNull();
   });
 });

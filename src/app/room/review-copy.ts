@@ -49,6 +49,7 @@ export function copyReview(
     ...parts.view.getState(),
     cursorS: null,
     draft: null,
+    doubt: null,
     phaseDraft: null,
     bordersShown: false,
     selection: { kind: 'none' },

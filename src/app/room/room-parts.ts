@@ -1,4 +1,5 @@
 import type { Findings } from '../../recording/findings';
+import { createDoubtStore } from '../../review/doubt-store';
 import { paneCommands } from '../../review/pane-commands';
 import type { PaneProps } from '../../review/pane-props';
 import type { Row } from '../../review/rows';
@@ -68,6 +69,8 @@ export function makeRoom(parts: AppParts, page: PageActs, leave: () => void): Ro
       ...copy,
       controller,
       signals: runner.signals,
+      doubts: createDoubtStore(),
+      doubtAccess: parts.doubtAccess,
       panes: paneCommands(panes.stores, panes.signals, panes.act),
       page: { ...page, reportOpen: () => false, room: acts },
     },
