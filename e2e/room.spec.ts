@@ -48,6 +48,7 @@ async function leave(): Promise<void> {
   await press(page, 'F9');
   await expect(room()).toHaveCount(0);
   await expect(pane(page, 'Minutes')).toBeVisible();
+  await expect(page.getByRole('button', { name: 'Room view' })).toBeFocused();
 }
 
 async function bookmark(time: string, note: string): Promise<void> {
@@ -143,6 +144,7 @@ test.describe('the room view', () => {
     expect(await everythingReadable(), 'the review does say it').toMatch(IDENTITY);
     const before = await storageKeys();
     await enter();
+    await expect(page.getByRole('heading', { name: 'Room view' })).toBeFocused();
     await expect(room()).toContainText('Shown, not saved');
     const rows = new Set<string>();
     for (let i = 0; i < 12; i += 1) {

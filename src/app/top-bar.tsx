@@ -107,7 +107,12 @@ function StudyActs({ parts, reportShown }: StudyActsProps) {
       <CommandButton command={commandOf('redo')} parts={parts} words="Redo" readWhole />
       <Menu words="Study" name="study" parts={parts} />
       <CommandButton command={commandOf('settings')} parts={parts} words="Settings" />
-      <CommandButton command={commandOf('room')} parts={parts} words="Room view" />
+      <CommandButton
+        command={commandOf('room')}
+        parts={parts}
+        words="Room view"
+        className="button room-door"
+      />
       {parts.page.reportThere ? (
         <CommandButton
           command={commandOf('report')}

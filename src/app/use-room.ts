@@ -20,7 +20,13 @@ export function useRoom(parts: AppParts): {
   readonly enter: (page: PageActs) => void;
 } {
   const [room, setRoom] = useState<OpenRoom | null>(null);
-  useEffect(() => () => room?.parts.end(), [room]);
+  useEffect(() => {
+    if (!room) return;
+    return () => {
+      room.parts.end();
+      document.querySelector<HTMLElement>('.room-door')?.focus();
+    };
+  }, [room]);
   const enter = (page: PageActs) => {
     const begin = ({ makeRoom, RoomView }: Room) =>
       setRoom({ View: RoomView, parts: makeRoom(parts, page, () => setRoom(null)) });

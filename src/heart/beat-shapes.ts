@@ -66,8 +66,8 @@ export function* learnShapes(
 }
 
 /**
- * A shape this much rarer than another that is this much like one of its side waves, and of its size, is that wave standing
- * alone: a beat that always follows would be as frequent. Large ones are T waves as tall as R, and taken for beats in number.
+ * A shape this much rarer than another that is this much like one of its side waves, and of its size, is that wave: a beat that
+ * always follows would be as frequent. P waves stand alone and are small; T waves are taken for beats in number, or not at all.
  */
 const WAVE_RARER = 0.5;
 const LARGE_COUNT = 0.1;
@@ -77,10 +77,16 @@ const SMALL_LIKENESS = 0.85;
 
 function isSideWaveOf(shape: Shape, other: Shape, lag: number): boolean {
   if (!(shape.count < WAVE_RARER * other.count)) return false;
+  const like = (kind: SideWave['kind']) =>
+    likeSideWave(
+      shape.average,
+      shape.half,
+      2 * lag,
+      other.waves.filter((wave) => wave.kind === kind),
+    );
   const isSmall = shape.norm < SMALL_PART * other.norm;
-  if (!isSmall && shape.count < LARGE_COUNT * other.count) return false;
-  const alike = likeSideWave(shape.average, shape.half, 2 * lag, other.waves);
-  return alike > (isSmall ? SMALL_LIKENESS : WAVE_LIKENESS);
+  if (isSmall && like('P') > SMALL_LIKENESS) return true;
+  return shape.count >= LARGE_COUNT * other.count && like('T') > WAVE_LIKENESS;
 }
 
 function byWorth([main, ...others]: readonly Shape[]): Shape[] {

@@ -16,20 +16,21 @@ export interface SmoothLevel {
   through(y: Float64Array, degree: number, most: number): Float64Array;
 }
 
-let known: { readonly binCpm: number; readonly logs: Float64Array } | null = null;
+/** By bin width: epochs have one, their halves another. */
+const known = new Map<number, Float64Array>();
 
-/** Natural logarithms of the frequencies of `count` bins; 0 for bin 0. Those of the last bin width are kept. */
+/** Natural logarithms of the frequencies of at least `count` bins; 0 for bin 0. Kept by bin width. */
 export function logFrequencies(binCpm: number, count: number): Float64Array {
-  if (known === null || known.binCpm !== binCpm || known.logs.length < count) {
-    const logs = Float64Array.from({ length: count }, (_, k) => (k === 0 ? 0 : log(k * binCpm)));
-    known = { binCpm, logs };
-  }
-  return known.logs.subarray(0, count);
+  const before = known.get(binCpm);
+  if (before && before.length >= count) return before;
+  const logs = Float64Array.from({ length: count }, (_, k) => (k === 0 ? 0 : log(k * binCpm)));
+  known.set(binCpm, logs);
+  return logs;
 }
 
 /** Polynomials in log frequency, orthonormal over the bins from..end under the weights of `product`. */
 function orthonormal(binCpm: number, count: number, from: number, end: number): Float64Array[] {
-  const x = logFrequencies(binCpm, count);
+  const x = logFrequencies(binCpm, count).subarray(0, count);
   const made: Float64Array[] = [];
   for (let degree = 0; degree <= MOST_DEGREE; degree += 1) {
     const last = made[degree - 1];
@@ -56,6 +57,7 @@ export function smoothLevel(binCpm: number, count: number): SmoothLevel {
   const from = Math.ceil(FIT_CPM.lowCpm / binCpm);
   const end = Math.min(count - 1, Math.floor(FIT_CPM.highCpm / binCpm) + 1);
   const basis = orthonormal(binCpm, count, from, end);
+  const weighted = basis.map((one) => one.map((value, k) => (k === 0 ? 0 : value / k)));
   return {
     through(y, degree, most) {
       const level = new Float64Array(count);
@@ -64,8 +66,10 @@ export function smoothLevel(binCpm: number, count: number): SmoothLevel {
         if (pass > 0)
           for (let k = from; k < end; k += 1) heard[k] = y[k] - level[k] > most ? level[k] : y[k];
         level.fill(0);
-        for (const one of basis.slice(0, degree + 1)) {
-          const share = product(heard, one, from, end);
+        for (let d = 0; d <= degree; d += 1) {
+          const [one, heavy] = [basis[d], weighted[d]];
+          let share = 0;
+          for (let k = from; k < end; k += 1) share += heard[k] * heavy[k];
           for (let k = 1; k < count; k += 1) level[k] += share * one[k];
         }
       }

@@ -16,12 +16,6 @@ function wavesOf(step: number, count: number): readonly [Float64Array, Float64Ar
   return [re, im];
 }
 
-function product(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
-  return sum;
-}
-
 /** Part of a wave's energy below which what is left of it by the waves before is rounding. */
 const NOTHING_NEW = 1e-9;
 
@@ -36,29 +30,27 @@ export function withoutLines(
   rateHz: Hertz,
 ): Float64Array {
   const rest = Float64Array.from(x);
-  /** Orthonormal waves, 0 where a sample has no say, and the same times the weights. */
-  const made: { readonly wave: Float64Array; readonly weighted: Float64Array }[] = [];
-  const takeOff = (from: Float64Array, { wave, weighted }: (typeof made)[number]) => {
-    const share = product(from, weighted);
-    for (let i = 0; i < from.length; i++) from[i] -= share * wave[i];
+  const made: Float64Array[] = [];
+  const product = (a: Float64Array, b: Float64Array) => {
+    let sum = 0;
+    for (let i = 0; i < a.length; i++) sum += weights[i] * a[i] * b[i];
+    return sum;
+  };
+  const takeOff = (from: Float64Array, wave: Float64Array) => {
+    const share = product(from, wave);
+    for (let i = 0; i < from.length; i++) if (weights[i] > 0) from[i] -= share * wave[i];
   };
   for (const cpm of frequenciesCpm) {
     const step = (2 * Math.PI * cpmToHz(cpm)) / rateHz;
     for (const wave of wavesOf(step, x.length)) {
-      const weighted = wave.map((value, i) => value * weights[i]);
-      for (let i = 0; i < wave.length; i++) if (weights[i] === 0) wave[i] = 0;
-      const before = product(wave, weighted);
+      const before = product(wave, wave);
       for (const earlier of made) takeOff(wave, earlier);
-      for (let i = 0; i < wave.length; i++) weighted[i] = wave[i] * weights[i];
-      const energy = product(wave, weighted);
+      const energy = product(wave, wave);
       if (!(energy > NOTHING_NEW * before)) continue;
       const norm = 1 / Math.sqrt(energy);
-      for (let i = 0; i < wave.length; i++) {
-        wave[i] *= norm;
-        weighted[i] *= norm;
-      }
-      made.push({ wave, weighted });
-      takeOff(rest, { wave, weighted });
+      for (let i = 0; i < wave.length; i++) wave[i] *= norm;
+      made.push(wave);
+      takeOff(rest, wave);
     }
   }
   return rest;

@@ -84,6 +84,13 @@ describe('the doubts of a real recording', () => {
     expect(times).toEqual([...times].sort((a, b) => a - b));
   });
 
+  it('carry the edit they were asked for, though it reached no figure', async () => {
+    await pipeline.analyse(without, job);
+    const { edit, open } = await pipeline.doubts({ ...without, edit: 9 }, [], job);
+    expect(edit).toBe(9);
+    expect(open).toEqual((await pipeline.doubts(without, [], job)).open);
+  });
+
   it('look alike where their beats do, the most alike first', async () => {
     const { open } = await pipeline.doubts(without, [], job);
     const asked = open.find(({ tick }) => tick === beatAt(proposal.beats, 61).tick);

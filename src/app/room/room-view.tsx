@@ -1,5 +1,5 @@
 import './room.css';
-import { type CSSProperties, type ReactNode, useEffect, useSyncExternalStore } from 'react';
+import { type CSSProperties, type ReactNode, useEffect, useRef, useSyncExternalStore } from 'react';
 import { useStore } from 'zustand';
 import { bookmarkHere, bookmarkWords } from '../../review/bookmarks';
 import { WholeStudyPane } from '../../review/panes';
@@ -43,6 +43,8 @@ export function RoomView({ parts, theme, askedOutside }: RoomViewProps) {
     room.setState({ rowKey: row.key });
     panes.stores.view.setState({ selectedRow: row.key });
   }, [row, room, panes]);
+  const heading = useRef<HTMLHeadingElement>(null);
+  useEffect(() => heading.current?.focus(), []);
   useRoomKeys(commands);
   useEditStatus(commands);
   const invented = commands.analysis.getState().recording?.invented ?? false;
@@ -50,7 +52,9 @@ export function RoomView({ parts, theme, askedOutside }: RoomViewProps) {
     <AppProvider value={commands}>
       <div className="room" style={{ '--room-scale': scale } as CSSProperties}>
         <header className="room-bar">
-          <h1>Room view</h1>
+          <h1 ref={heading} tabIndex={-1}>
+            Room view
+          </h1>
           <p>
             <strong>Shown, not saved.</strong> Edits made here end with it.
           </p>

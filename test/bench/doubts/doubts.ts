@@ -39,7 +39,8 @@ const line = (
   unit: string,
   budget: string,
   note: string,
-): Measured => ({ part: PART, what, value, unit, decimals: 1, budget, note });
+  decimals = 1,
+): Measured => ({ part: PART, what, value, unit, decimals, budget, note });
 
 /** Share of errors that stand in the list, with how many of each kind do. */
 function shareLine(what: string, errors: Listed['errors'], budget: string): Measured {
@@ -93,7 +94,8 @@ function plantedLines(name: string, cases: readonly DoubtCase[], each: number): 
       strokes / settled,
       '',
       '1.3',
-      `${settled} doubts of ${worked} studies, ${byHand} put right by hand; ${left} errors left`,
+      `${settled} doubts of ${worked} ${worked === 1 ? 'study' : 'studies'}, ${byHand} put right by hand; ${left} errors left`,
+      2,
     ),
   ];
 }
@@ -101,7 +103,7 @@ function plantedLines(name: string, cases: readonly DoubtCase[], each: number): 
 /**
  * How many of the detector's errors (EC57: missed, too many, of another class) stand in the list of doubts and how long it is:
  * on the simulated studies, on the real record, and on the hard invented records; and the same for errors planted with a fixed
- * seed, which a technician who knows the truth mends by keys.
+ * seed, which a technician who knows the truth mends by keys. Doubts of beats alone: those of spans and epochs are few.
  */
 export const doubts: Part = async ({ say }: Bench): Promise<readonly Measured[]> => {
   const simulated = [...simulatedCases()];
