@@ -58,7 +58,7 @@ interface FoundProps {
 function Found({ found, onClose }: FoundProps) {
   const parts = useApp();
   const acts = useStore(parts.doubts, (state) => state.acts);
-  const [left, setLeft] = useState<ReadonlySet<string>>(new Set());
+  const [left, setLeft] = useState(() => otherwiseProposed(found));
   const rows = useMemo(() => [found.asked, ...found.others], [found]);
   const rateHz = openBeats(parts)?.rateHz ?? null;
   const taken = rows.filter(({ doubt }) => !left.has(doubt.id));
@@ -131,6 +131,13 @@ function Found({ found, onClose }: FoundProps) {
       </ul>
     </Dialog>
   );
+}
+
+/** What is left out to begin with: beats for which something else is proposed than for the one in doubt. */
+function otherwiseProposed({ asked, others }: LookAlikes): ReadonlySet<string> {
+  const words = tabWords(asked.doubt);
+  const unlike = others.filter(({ doubt }) => tabWords(doubt) !== words);
+  return new Set(unlike.map(({ doubt }) => doubt.id));
 }
 
 const countWords = (count: number): string => (count === 1 ? 'the one' : `all ${count}`);

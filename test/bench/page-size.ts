@@ -1,4 +1,4 @@
-import { existsSync, readFileSync, statSync } from 'node:fs';
+import { existsSync, readdirSync, readFileSync, statSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { gzipSync } from 'node:zlib';
 import type { Bench, Measured, Part } from './measured';
@@ -6,6 +6,9 @@ import { pathOf } from './places';
 
 const PART = 'page size';
 const ENTRY = 'index.html';
+
+/** What the page fetches by itself once the first figures stand, by the names of its chunks. */
+const BY_ITSELF = /^(pipeline-doubts|doubts-pane)-.*\.(js|css)$/;
 
 /** Files that a built file makes the browser load at once; what `import()` brings later is left out. */
 function loadedBy(text: string, file: string): readonly string[] {
@@ -26,13 +29,15 @@ function loadedBy(text: string, file: string): readonly string[] {
 /** Everything the page has loaded once a study is open, by its path in the built folder. */
 function loadedFiles(folder: string): readonly string[] {
   const found = new Set([ENTRY]);
+  const assets = readdirSync(join(folder, 'assets'));
+  for (const file of assets.filter((name) => BY_ITSELF.test(name))) found.add(`assets/${file}`);
   for (const file of found)
     for (const next of loadedBy(readFileSync(join(folder, file), 'utf8'), file))
       if (existsSync(join(folder, next))) found.add(next);
   return [...found];
 }
 
-/** What comes over the wire before the report is opened: page, styles, both workers. */
+/** What comes over the wire before the report is opened and before a person asks for more: page, styles, workers, doubts. */
 export const pageSize: Part = async (_: Bench): Promise<readonly Measured[]> => {
   const folder = pathOf('dist');
   const files = loadedFiles(folder).map((file) => ({
