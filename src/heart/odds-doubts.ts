@@ -1,13 +1,21 @@
 import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import { TICKS_PER_SAMPLE } from '../units/ticks';
+import type { BeatLook } from './beat-looks';
 import { type DoubtView, insertion, type Reason, removal } from './doubt-view';
 
 /** From this chance of being wrong on a place is listed. */
 const LEAST_WRONG = 0.04;
+/** A beat so like an average of the study, at about its size, is one whatever the rhythm says, unless it is more likely none. */
+const PLAINLY_LIKE = 0.9;
+const PLAINLY_LARGE = 0.6;
+const LIKELY_NONE = 0.5;
 /** A place nearer to a beat than this is that beat. */
 const SAME_BEAT_S = 0.15;
 
 const percent = (share: number) => `${Math.max(1, Math.round(100 * share))} %`;
+
+const isPlain = ({ likeness, best, size }: BeatLook) =>
+  best >= 0 && likeness[best] >= PLAINLY_LIKE && size >= PLAINLY_LARGE;
 
 /** Places where the detector's own odds leave room for the other decision. */
 export function oddsReasons(view: DoubtView): readonly Reason[] {
@@ -22,11 +30,12 @@ export function oddsReasons(view: DoubtView): readonly Reason[] {
     if (taken[k] === 1) {
       const at = firstAtOrAfter(beats.ticks, tick);
       if (beats.ticks[at] !== tick || !view.isOwn(at)) return;
+      if (wrong[k] < LIKELY_NONE && isPlain(view.look(at))) return;
       reasons.push({
         beat: at,
         kind: 'low-beat',
         strength: wrong[k],
-        why: `Little speaks for it: by shape, energy and rhythm the chance that it is no beat is ${percent(wrong[k])}.`,
+        why: `By shape, energy and rhythm the chance that it is no beat is ${percent(wrong[k])}.`,
         mend: removal(view, at),
       });
     } else if (!isBeat && near > 0 && near < view.count && !Number.isNaN(rrMs[near])) {

@@ -11,7 +11,7 @@ export const KIND_WORDS: Readonly<Record<DoubtKind, string>> = {
   'extra-beat': 'extra beat?',
   'early-beat': 'early beat?',
   'odd-shape': 'odd shape?',
-  'low-beat': 'low beat?',
+  'low-beat': 'weak beat?',
   'tall-wave': 'tall wave?',
   'two-candidates': 'which of two?',
   'sign-change': 'turned over?',

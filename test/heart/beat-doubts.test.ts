@@ -125,12 +125,12 @@ describe('the doubts of a heart whose beats are known', () => {
 describe('places where the detector itself was unsure', () => {
   const heart = inventedHeart({ ventricular: 0, supraventricular: 0 });
   const at = (index: number) => heart.beats.ticks[index];
-  const unsureAt = (tick: number, wrong: number, taken: 0 | 1) =>
+  const unsureAt = (tick: number, wrong: number, taken: 0 | 1, seen = heart) =>
     doubtsOf(
       {
-        ...heart,
+        ...seen,
         detection: {
-          ...heart.detection,
+          ...seen.detection,
           unsure: {
             ticks: Float64Array.of(tick),
             wrong: Float64Array.of(wrong),
@@ -138,13 +138,23 @@ describe('places where the detector itself was unsure', () => {
           },
         },
       },
-      heart.beats,
+      seen.beats,
     );
 
   it('a beat that little speaks for is listed with its odds, to be removed', () => {
-    const [doubt] = unsureAt(at(50), 0.3, 1);
+    const [doubt] = unsureAt(at(50), 0.6, 1);
     expect(doubt).toMatchObject({ kind: 'low-beat', tick: at(50), mend: { words: 'remove beat' } });
-    expect(doubt.why).toContain('30 %');
+    expect(doubt.why).toContain('60 %');
+  });
+
+  it('a beat that looks like the study’s others at their size is not asked about for the rhythm alone', () => {
+    expect(unsureAt(at(50), 0.3, 1)).toEqual([]);
+    const faint = { ...heart, heartbeat: heart.heartbeat.slice() };
+    const middle = Math.round(at(50) / 64);
+    const half = Math.round(0.15 * RATE_HZ);
+    for (let i = middle - half; i <= middle + half; i += 1) faint.heartbeat[i] *= 0.4;
+    const listed = unsureAt(at(50), 0.3, 1, faint).map(({ tick }) => tick);
+    expect(listed).toEqual([at(50)]);
   });
 
   it('something not taken is listed at the beat after it: late as a missed beat, early as a tall wave', () => {
