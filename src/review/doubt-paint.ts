@@ -2,7 +2,7 @@ import type { PaneView } from './pane-view';
 
 const TAB_PX = 18;
 const PAD_PX = 6;
-/** Tabs stand beside the pins' heads, lower where a pin stands in their place or a pane has its own words there. */
+/** Tabs stand beside the pins' heads; where a pin stands in their place, below the intervals written on either side of it. */
 const HIGH_PX = 4;
 const BELOW_HEAD_PX = 2;
 
@@ -16,7 +16,7 @@ export function paintDoubt(brush: CanvasRenderingContext2D, view: PaneView): voi
   const places = stretch ? [doubt.fromS, doubt.toS] : doubt.atS;
   const xs = places.map(view.xOf);
   const high = kind.name === 'seconds' && !doubt.onPins;
-  const topPx = high ? HIGH_PX : view.topPx + BELOW_HEAD_PX;
+  const topPx = high ? HIGH_PX : belowIntervals(view);
   brush.save();
   brush.strokeStyle = view.tokens.ink;
   brush.lineWidth = 1.5;
@@ -30,6 +30,11 @@ export function paintDoubt(brush: CanvasRenderingContext2D, view: PaneView): voi
   brush.restore();
   const middles = stretch ? [(Math.max(0, xs[0]) + Math.min(widthPx, xs[1])) / 2] : xs;
   for (const x of middles) paintTab(brush, view, doubt.words, [x, topPx]);
+}
+
+function belowIntervals({ boxes, topPx }: PaneView): number {
+  const interval = boxes.find(({ row }) => row.kind === 'interval');
+  return interval ? interval.topPx + interval.heightPx : topPx + BELOW_HEAD_PX;
 }
 
 function paintTab(
