@@ -13,6 +13,8 @@ export interface Rows {
   readonly latest: number;
   /** Median RR in samples. */
   readonly usualRr: number;
+  /** Median of two RR intervals together, in samples. */
+  readonly pairRr: number;
   /** Samples stepped over when two windows are compared. */
   readonly step: number;
 }

@@ -2,7 +2,7 @@ import { median } from '../numeric/statistics';
 import { latestWaveS } from './after-wave';
 import { type Growing, type Match, matchMiddle, middle, type Rows, rms } from './beat-rows';
 import { noiseByHalfSecond, SIDE_S } from './between-beats';
-import { distinctShapes } from './distinct-shapes';
+import { type Distinct, distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
 import { filterBand, rmsAbout } from './qrs-bands';
 import { likeSideWave, type SideWave, sideWaves } from './side-waves';
@@ -122,7 +122,8 @@ function* readWindows(signal: HeartSignal, beats: readonly number[]): Generator<
   const usualRr = Math.round(median(rr));
   const latest = Math.min(rowHalf - half, Math.round(latestWaveS(usualRr / rateHz) * rateHz));
   const step = Math.max(1, Math.floor(rateHz / 120));
-  return { rows, noise, half, rowHalf, lag, latest, usualRr, step };
+  const pairRr = median(beats.slice(2).map((at, i) => at - beats[i]));
+  return { rows, noise, half, rowHalf, lag, latest, usualRr, pairRr, step };
 }
 
 /** Noise lowers the likeness of a complex to its average by this factor. */
@@ -190,34 +191,35 @@ function offCentre(sum: Float64Array, half: number, lag: number): number {
 /** Shares the rows out once more among the shapes, and averages those that fit. */
 function* settle(
   windows: Rows,
-  shapes: readonly Growing[],
+  shapes: readonly Distinct[],
   rateHz: number,
 ): Generator<number, Shape[]> {
   const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
-  const sums = shapes.map(({ strict }) => ({
+  const sums = shapes.map(({ shape: { strict }, isTallT }) => ({
     sum: new Float64Array(2 * rowHalf + 1),
     count: 0,
     power: 0,
     strict,
+    isTallT,
   }));
   for (let i = 0; i < rows.length; i += 1) {
     if (i % ROWS_A_STEP === 0) yield 1;
     const row = rows[i];
-    const matches = shapes.map(({ sum }) => matchMiddle(row, sum, windows, windows.step));
+    const matches = shapes.map(({ shape }) => matchMiddle(row, shape.sum, windows, windows.step));
     let best = 0;
     matches.forEach((match, k) => {
       if (match.value > matches[best].value) best = k;
     });
     if (matches.length === 0) continue;
     const factor = noiseFactor(rms(middle(row, half)), noise[i]);
-    const wanted = shapes[best].strict ? STRICT_LIKENESS : LEAST_LIKENESS * factor;
+    const wanted = shapes[best].shape.strict ? STRICT_LIKENESS : LEAST_LIKENESS * factor;
     if (matches[best].value < wanted) continue;
-    const { at } = matchMiddle(row, shapes[best].sum, windows, 1);
+    const { at } = matchMiddle(row, shapes[best].shape.sum, windows, 1);
     addRow(sums[best], row, at, windows);
     sums[best].power += rms(row.subarray(at, at + 2 * half + 1)) ** 2;
   }
   return sums
-    .filter(({ count }) => count > 0)
+    .filter(({ count, isTallT }) => count > 0 && !isTallT)
     .map((group) => ({ ...group, alike: coherence(group, half) }))
     .filter(({ alike }) => alike > LEAST_COHERENCE)
     .map(({ sum, count, strict, alike }) => {

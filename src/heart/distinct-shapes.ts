@@ -29,6 +29,23 @@ const P_SLOWER = 0.9;
 /** Its middle lies at least so long before that of the complex: nearer it may be a part of it. */
 const LATEST_P_S = 0.11;
 
+/** T waves crest in this time after the middle of their complex (common practice, no source). */
+const EARLIEST_T_S = 0.18;
+const LATEST_T_S = 0.42;
+/** A shape that is a T wave is carried by its complexes this alike, with this part of its size, and slower by so much. */
+const T_LIKENESS = 0.95;
+const LEAST_T_SIZE = 0.6;
+const T_SLOWER = 0.6;
+/** Where a beat and what follows take longer together, an early beat and its pause may be meant (common practice, no source). */
+const LONGEST_PAIR_S = 1.1;
+
+/** A shape learned from what was taken for beats. */
+export interface Distinct {
+  readonly shape: Growing;
+  /** It is the T wave of another, and no beat. */
+  readonly isTallT: boolean;
+}
+
 interface Weighted {
   readonly shape: Growing;
   /** Energy of its average in the QRS band. */
@@ -37,14 +54,14 @@ interface Weighted {
 
 /**
  * Leaves out shapes nearly alike to a stronger one, and those that most beats of a stronger shape carry with them: T and P
- * waves.
+ * waves. T waves as tall as their complexes stay, named so: what is like them is to join no shape of beats.
  */
 export function distinctShapes(
   shapes: readonly Growing[],
   rows: Rows,
   rateHz: number,
   bands: QrsBands,
-): Growing[] {
+): Distinct[] {
   const { half, rowHalf } = rows;
   const kept: Weighted[] = [];
   const strength = ({ sum }: Growing) => rms(middle(sum, half));
@@ -57,9 +74,11 @@ export function distinctShapes(
     );
     if (!known) kept.push({ shape, energy });
   }
-  return kept
-    .filter((one) => !kept.some((other) => isTallP(one, other, rows, rateHz)))
-    .map(({ shape }) => shape);
+  const complexes = kept.filter((one) => !kept.some((other) => isTallP(one, other, rows, rateHz)));
+  return complexes.map((one) => ({
+    shape: one.shape,
+    isTallT: complexes.some((other) => isTallT(one, other, rows, rateHz)),
+  }));
 }
 
 /**
@@ -85,6 +104,31 @@ function isTallP(one: Weighted, other: Weighted, rows: Rows, rateHz: number): bo
     value > P_LIKENESS &&
     there > (LEAST_P_SIZE * rms(own)) / one.shape.count &&
     meanFrequency(own) < P_SLOWER * meanFrequency(middle(other.shape.sum, half))
+  );
+}
+
+/**
+ * Whether a shape is the T wave of another, however tall: it follows each of its beats at a delay that blurs nothing, and is far
+ * slower. A ventricular beat that follows every beat is quicker, or comes later and brings a pause.
+ */
+function isTallT(one: Weighted, other: Weighted, rows: Rows, rateHz: number): boolean {
+  const { half, rowHalf, pairRr } = rows;
+  if (one === other || other.shape.count < LEAST_COMPLEXES * one.shape.count) return false;
+  if (!(pairRr <= LONGEST_PAIR_S * rateHz)) return false;
+  const own = middle(one.shape.sum, half);
+  const start = rowHalf - half;
+  const { value, at } = likeness(
+    other.shape.sum,
+    own,
+    start + Math.round(EARLIEST_T_S * rateHz),
+    start + Math.round(LATEST_T_S * rateHz),
+    1,
+  );
+  const there = rms(other.shape.sum.subarray(at, at + own.length)) / other.shape.count;
+  return (
+    value > T_LIKENESS &&
+    there > (LEAST_T_SIZE * rms(own)) / one.shape.count &&
+    meanFrequency(own) < T_SLOWER * meanFrequency(middle(other.shape.sum, half))
   );
 }
 
