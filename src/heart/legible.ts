@@ -11,8 +11,8 @@ const HOLDS_INTERVALS = 2.2;
 const LEAST_BEATS = 0.5;
 
 /** Nor can they where more than this share of what was found fits neither a shape nor the rhythm, of at least so many. */
-const MOST_MISFITS = 0.2;
-const FEWEST_MISFITS = 3;
+const MOST_MISFITS = 0.35;
+const FEWEST_MISFITS = 5;
 
 /** Whether what was found in a stretch of the study is no reading of it: too much of it is class Q. */
 export function isMisread({ fromS, toS }: Interval, beats: BeatList, ticksPerS: number): boolean {
