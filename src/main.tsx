@@ -29,7 +29,7 @@ const Report = lazy(() =>
 );
 const renderReport = () => (
   <Suspense fallback={<output>Loading the report.</output>}>
-    <Report {...stores} signals={controller.signals} />
+    <Report {...stores} signals={controller.signals} doubts={doubts} />
   </Suspense>
 );
 const root = document.getElementById('root');

@@ -1,4 +1,6 @@
 import { useState } from 'react';
+import { useStore } from 'zustand';
+import { openDoubts } from '../review/open-doubts';
 import type { SessionState, Signature } from '../session/document';
 import { formatClock } from '../units/time';
 import { useAnalysis, useApp, useSession } from './app-context';
@@ -21,7 +23,9 @@ export function SignDialog() {
 }
 
 function SignForm({ state }: { readonly state: SessionState }) {
-  const { controller, shell, session } = useApp();
+  const { controller, shell, session, doubts } = useApp();
+  const listed = useStore(doubts, (now) => now.listed);
+  const open = listed ? openDoubts(listed, state).length : null;
   const [draft, setDraft] = useState(() => signDraft(state, session.getState().reviewer));
   const [tried, setTried] = useState(false);
   const edit = useSession((now) => now.session?.log.length ?? 0);
@@ -46,6 +50,13 @@ function SignForm({ state }: { readonly state: SessionState }) {
       {current ? null : (
         <p className="tab" role="status">
           Figures are of an earlier edit. Wait until they belong to edit {edit}.
+        </p>
+      )}
+      {open === 0 ? null : (
+        <p className="tab">
+          {open === null
+            ? 'The doubts have not been looked for yet.'
+            : `${open === 1 ? 'One doubt is' : `${open} doubts are`} open: what is in doubt counts as it stands.`}
         </p>
       )}
       <SignFields

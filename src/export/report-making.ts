@@ -1,4 +1,5 @@
 import { BEAT_CLASSES, type BeatList } from '../recording/beat';
+import type { DoubtEnding } from '../recording/doubt';
 import { leadChannels, leadKey, leadName } from '../recording/lead';
 import type { Recording } from '../recording/recording';
 import type { RhythmBands, RouteName, Settings } from '../recording/settings';
@@ -38,6 +39,23 @@ export function studyFacts(
     { name: 'Program', words: program },
     ...(hide ? [] : [{ name: 'SHA-256', words: sha256 }]),
   ];
+}
+
+/** What became of the places where the program was unsure; `open` is null while they have not been looked for. */
+export function doubtFact({ doubts }: SessionState, open: number | null): Fact {
+  const ended = (ending: DoubtEnding) => doubts.filter((one) => one.ending === ending).length;
+  const still = open === null ? 'not looked for yet' : `${open} open`;
+  return {
+    name: 'Doubts',
+    words: `${still}, ${ended('kept')} kept as they were, ${ended('mended')} mended`,
+  };
+}
+
+/** What is said beside the figures while doubts are open; none where none is. */
+export function doubtWarnings(open: number | null): readonly string[] {
+  if (!open) return [];
+  const what = open === 1 ? 'One doubt is' : `${open} doubts are`;
+  return [`${what} open: beats, spans and epochs in doubt count as they stand.`];
 }
 
 const countOf = (codes: Uint8Array, code: number): number =>

@@ -9,6 +9,8 @@ import { type Hide, identityHider, nothingHidden } from './report-hiding';
 import { type Fact, identityFacts, type ProtocolFacts, protocolFacts } from './report-identity';
 import {
   beatFacts,
+  doubtFact,
+  doubtWarnings,
   logFact,
   type SpanRow,
   settingFacts,
@@ -58,6 +60,8 @@ export interface ReportInput {
   readonly findings: Findings;
   readonly program: string;
   readonly identityHidden: boolean;
+  /** How many doubts are open; null while they have not been looked for. */
+  readonly openDoubts: number | null;
 }
 
 /** The report of a session as it stands; a signed one prints figures, settings and words as they were signed. */
@@ -80,7 +84,7 @@ export function reportModel(input: ReportInput): ReportModel {
     identityHidden,
     identity: identityFacts(recording, state, identityHidden),
     adequacy: adequacyTable(findings, state.roles.heart !== null),
-    warnings: warningsOf(recording, findings).map(hide),
+    warnings: [...warningsOf(recording, findings), ...doubtWarnings(input.openDoubts)].map(hide),
     protocol: protocolFacts(state.protocol, hide),
     events: eventRows(state, hide),
     main: mainTables(findings),
@@ -106,7 +110,7 @@ const foundWords = ({ what, place }: Recording['found'][number]): string =>
   place === null ? what : `${what} (${place})`;
 
 function makingOf(
-  { recording, session, program, identityHidden }: ReportInput,
+  { recording, session, program, identityHidden, openDoubts }: ReportInput,
   signed: Signature | null,
   hide: Hide,
 ): Pick<ReportModel, 'making' | 'settings' | 'spans'> {
@@ -122,6 +126,7 @@ function makingOf(
         identityHidden ? hide : null,
       ),
       ...beatFacts(session, recording),
+      doubtFact(state, openDoubts),
       logFact(session, identityHidden),
       ...(notes.length > 0 ? [{ name: 'Of the file', words: hide(notes.join('; ')) }] : []),
     ],

@@ -6,7 +6,7 @@ import { classifyBeats, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
 import { quietly } from './in-steps';
-import { legibleStretches } from './legible';
+import { isMisread, legibleStretches } from './legible';
 import { withMisfitsUnusable } from './out-of-place';
 import { decidedPlaces, expectedWrong, loudPlaces } from './place-odds';
 import { filterBand, LOWEST_RATE_HZ, qrsBands } from './qrs-bands';
@@ -123,9 +123,11 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
     (fromS, toS) => expectedWrong(decided, fromS, toS) > LEAST_DOUBT || isLoud(fromS, toS),
   );
   yield 0.99;
+  const ticksPerS = ticksPerSample * rateHz;
+  const misread = doubted.filter((one, k) => legible[k] && isMisread(one, judged, ticksPerS));
   return {
-    beats: judged,
-    legible,
+    beats: outside(judged, misread, ticksPerS),
+    legible: legible.map((reads, k) => reads && !misread.includes(doubted[k])),
     doubtful: Float64Array.from(
       times.filter((_, i) => found.beats[i].score < SURE_EVIDENCE),
       (time) => Math.round(time * ticksPerSample),
@@ -137,6 +139,17 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
     heightUv: measured?.heightUv ?? Number.NaN,
     timingSdMs: measured?.timingSdMs ?? Number.NaN,
     notes: [],
+  };
+}
+
+/** The beats that lie in none of the stretches. */
+function outside(beats: BeatList, stretches: readonly Interval[], ticksPerS: number): BeatList {
+  if (stretches.length === 0) return beats;
+  const isOutside = (_: number, i: number) => !isWithin(beats.ticks[i] / ticksPerS, stretches);
+  return {
+    ticks: beats.ticks.filter(isOutside),
+    classes: beats.classes.filter(isOutside),
+    origins: beats.origins.filter(isOutside),
   };
 }
 

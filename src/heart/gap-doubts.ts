@@ -97,12 +97,11 @@ function reasonOf(view: DoubtView, beat: number, { usualMs, parts }: LongInterva
     : [LIKE_A_BEAT, LEAST_SIZE];
   const isSeen = seen !== null && seen.likeness >= leastLike && seen.size >= leastSize;
   if (isMultiple) {
-    const times = parts === 2 ? 'twice' : `${parts} times`;
     return {
       beat,
       kind: 'missed-beat',
       strength: isSeen ? 0.95 : 0.5,
-      why: `The interval of ${rr} ms is about ${times} its neighbours' ${usual} ms.`,
+      why: `The interval of ${rr} ms is ${timesWords(rr / usual)} its neighbours' ${usual} ms.`,
       mend: insertion(view, beatsAt(view, fromS, toS, parts, isSeen ? seen : null)),
     };
   }
@@ -115,6 +114,9 @@ function reasonOf(view: DoubtView, beat: number, { usualMs, parts }: LongInterva
     mend: insertion(view, [seenBeat(view, seen, fromS, usualMs)]),
   };
 }
+
+const timesWords = (ratio: number): string =>
+  Math.abs(ratio - 2) < 0.2 ? 'about twice' : `about ${ratio.toFixed(1)} times`;
 
 /** Whether the interval is the pause after an early ectopic beat. */
 const isMadeUp = ({ classOf, rrMs }: DoubtView, beat: number, usualMs: number) =>

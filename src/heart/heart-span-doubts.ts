@@ -42,7 +42,7 @@ function stretchOf(doubts: readonly Doubt[], lead: string): Doubt {
     toS,
     tick: null,
     lead,
-    why: `From ${formatClock(fromS)} on ${doubts.length} beats in ${Math.round(toS - fromS)} s are doubted: the heartbeat may be spoiled there, and no span excludes it.`,
+    why: `${doubts.length} beats are doubted in the ${Math.round(toS - fromS)} s from ${formatClock(fromS)} on: the heartbeat may be spoiled there, and no span excludes it.`,
     mend: {
       kind: 'exclude',
       words: 'exclude stretch',

@@ -1,6 +1,6 @@
 import type { Doubt } from '../recording/doubt';
 import type { Hertz } from '../units/rate';
-import { align, TIMING_HALF_S, timerOf } from './align';
+import { align, timerOf } from './align';
 import type { AverageBeat } from './detect';
 import { readFilled, type Samples, usableRanges } from './usable-signal';
 
@@ -8,7 +8,11 @@ import { readFilled, type Samples, usableRanges } from './usable-signal';
 export const LOOK_BEFORE_S = 0.4;
 const LOOK_AFTER_S = 0.6;
 /** Beats less like one another than this (normalised correlation) do not look alike. */
-const LEAST_ALIKE = 0.8;
+const LEAST_ALIKE = 0.85;
+/** Compared over the QRS complex, its run-in and the beginning of ST: over less, any steep noise is like a beat. */
+const COMPARED_HALF_S = 0.2;
+/** Nor do beats of other size, as a share of the one asked for. */
+const SIZES = [0.5, 2] as const;
 const MOST_ALIKE = 24;
 /** How far two beats are shifted against each other to lie best. */
 const SHIFT_S = 0.06;
@@ -51,8 +55,8 @@ export function averageRow({ samples, centre }: AverageBeat, rateHz: Hertz): Flo
 }
 
 /**
- * The doubts whose beats are most like that of one of them: normalised correlation of the QRS complexes at their best
- * alignment of at least LEAST_ALIKE, the most like one first, MOST_ALIKE at most, without the one asked for. Null where no beat
+ * The doubts whose beats are most like that of one of them: normalised correlation about the QRS complexes at their best
+ * alignment of at least LEAST_ALIKE, of like size, the most like one first, MOST_ALIKE at most, without the one asked for. Null where no beat
  * belongs to it.
  */
 export function alikeTo(
@@ -63,15 +67,15 @@ export function alikeTo(
   const { rateHz, ticksPerSample } = input;
   const tick = beatOfDoubt(asked);
   if (tick === null) return null;
-  const half = Math.round(TIMING_HALF_S * rateHz);
+  const half = Math.round(COMPARED_HALF_S * rateHz);
   const search = Math.round(SHIFT_S * rateHz);
   const reach = half + search + MARGIN;
   const timer = timerOf(filledAbout(input, tick, half));
   const others = doubts.flatMap((doubt): Alike[] => {
     const place = doubt.id === asked.id ? null : beatOfDoubt(doubt);
     if (place === null) return [];
-    const { likeness } = align(filledAbout(input, place, reach), timer, reach, search);
-    if (!(likeness >= LEAST_ALIKE)) return [];
+    const { likeness, size } = align(filledAbout(input, place, reach), timer, reach, search);
+    if (!(likeness >= LEAST_ALIKE && size >= SIZES[0] && size <= SIZES[1])) return [];
     return [{ doubt, likeness, heartbeatUv: rowOf(input, place) }];
   });
   others.sort((a, b) => b.likeness - a.likeness || a.doubt.fromS - b.doubt.fromS);

@@ -4,7 +4,7 @@ import type { BeatLook } from './beat-looks';
 import { type DoubtView, insertion, type Reason, removal } from './doubt-view';
 
 /** From this chance of being wrong on a place is listed. */
-const LEAST_WRONG = 0.04;
+const LEAST_WRONG = 0.15;
 /** A beat so like an average of the study, at about its size, is one whatever the rhythm says, unless it is more likely none. */
 const PLAINLY_LIKE = 0.9;
 const PLAINLY_LARGE = 0.6;

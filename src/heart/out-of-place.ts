@@ -139,5 +139,18 @@ export function withMisfitsUnusable(
     return one === NORMAL && isDoubtful(fromS, toS) ? 1 : 0;
   });
   const flags = beatsOutOfPlace(timesS, judged, brokenIntervals(samples, usable));
-  return { ...beats, classes: beats.classes.map((one, i) => (flags[i] === 1 ? UNUSABLE : one)) };
+  const classes = beats.classes.map((one, i) =>
+    flags[i] === 1 || (judged[i] === 1 && isAmidMisfits(flags, i)) ? UNUSABLE : one,
+  );
+  return { ...beats, classes };
+}
+
+/** Where so many of the six beats about a doubtful one contradict the rhythm, that it does not is chance. */
+const MISFITS_ABOUT = 2;
+const ABOUT = 3;
+
+function isAmidMisfits(flags: Uint8Array, beat: number): boolean {
+  let misfits = 0;
+  for (let i = Math.max(0, beat - ABOUT); i <= beat + ABOUT; i += 1) misfits += flags[i] ?? 0;
+  return misfits >= MISFITS_ABOUT;
 }

@@ -62,6 +62,6 @@ export function movedWords({ definition, phase, before, after }: MovedFigure): s
     `${largeWords(value, definition)}${value.kind === 'number' && unit !== '' ? ` ${unit}` : ''}`;
   if (after.kind === 'withheld')
     return `${what} ${withUnit(before)}, now withheld: ${after.reason}`;
-  if (before.kind === 'withheld') return `${what} is there now: ${withUnit(after)}`;
+  if (before.kind === 'withheld') return `${what} ${withUnit(after)}, withheld before`;
   return `${what} ${largeWords(before, definition)} to ${withUnit(after)}`;
 }

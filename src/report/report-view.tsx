@@ -2,7 +2,9 @@ import { useEffect, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { reportModel } from '../export/report-model';
 import type { AnalysisStore, SignalAccess } from '../review/analysis-store';
+import type { DoubtStore } from '../review/doubt-store';
 import { asWork } from '../review/idle';
+import { openDoubts } from '../review/open-doubts';
 import type { ViewStore } from '../review/view-store';
 import type { SessionState } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
@@ -22,22 +24,31 @@ export interface ReportViewProps {
   readonly analysis: AnalysisStore;
   readonly view: ViewStore;
   readonly signals: SignalAccess;
+  readonly doubts: DoubtStore;
 }
 
 const WAVE_COLUMNS = 960;
 
 /** The report of the session as it stands, drawn again with every edit. */
-export function ReportView({ session, analysis, view, signals }: ReportViewProps) {
+export function ReportView({ session, analysis, view, signals, doubts }: ReportViewProps) {
   const open = useStore(session, (state) => state.session);
   const { recording, findings, edit } = useStore(analysis);
   const identityHidden = useStore(view, (state) => state.identityHidden);
+  const listed = useStore(doubts, (state) => state.listed);
   const pictures = usePictures(open?.state ?? null, analysis, signals);
   const model = useMemo(
     () =>
       open && recording && findings
-        ? reportModel({ recording, session: open, findings, program: PROGRAM, identityHidden })
+        ? reportModel({
+            recording,
+            session: open,
+            findings,
+            program: PROGRAM,
+            identityHidden,
+            openDoubts: listed && openDoubts(listed, open.state).length,
+          })
         : null,
-    [open, recording, findings, identityHidden],
+    [open, recording, findings, identityHidden, listed],
   );
   usePageFoot(model?.foot ?? null);
   const page = useFocusOnce(model !== null);

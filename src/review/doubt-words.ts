@@ -100,11 +100,15 @@ export interface EffectWords {
   readonly reason: string;
 }
 
+const WITHHELD = 'withheld';
+
 /** An effect in words; null where the figure is none of the catalogue. */
 export function effectWords({ figure, phase, before, after }: DoubtEffect): EffectWords | null {
   const definition = FIGURES.find(({ key }) => key === figure);
   if (!definition) return null;
-  const sides = [before, after].map((one) => figureWords(one, definition).large);
+  const sides = [before, after].map((one) =>
+    one.kind === 'withheld' ? WITHHELD : figureWords(one, definition).large,
+  );
   const reasons = [before, after].flatMap((one) => (one.kind === 'withheld' ? [one.reason] : []));
   return {
     name: `${definition.label}, ${phase}`,
@@ -123,6 +127,7 @@ export function effectLine(effect: DoubtEffect): string {
   const { name, before, after, same } = words;
   const unit = words.unit === '' ? '' : ` ${words.unit}`;
   if (same) return `${name} stays ${before}${unit}`;
-  if (after === '—') return `${name} ${before === '—' ? 'withheld' : before + unit} to withheld`;
-  return `${name} ${before === '—' ? 'withheld' : before} to ${after}${unit}`;
+  if (after === WITHHELD)
+    return `${name} ${before === WITHHELD ? before : before + unit} to withheld`;
+  return `${name} ${before} to ${after}${unit}`;
 }

@@ -37,7 +37,7 @@ export function stomachCoverage(
   const overHalfLost = adequacy === 'not-reportable' ? `${lost} (over 50 %)` : null;
   const tooShort =
     keptS < NOTHING_BELOW_S - ROUNDING_S
-      ? `${(keptS / 60).toFixed(1)} clean minutes (under 10)`
+      ? `${(Math.floor(keptS / 6) / 10).toFixed(1)} clean minutes (under 10)`
       : null;
   const reason = overHalfLost ?? tooShort;
   const counted = keptS < COUNTS_BELOW_S - ROUNDING_S ? 'count' : 'percent';

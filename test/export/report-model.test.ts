@@ -29,9 +29,17 @@ interface Given {
   readonly findings?: Partial<Findings>;
   readonly session?: (session: Session) => Session;
   readonly hidden?: boolean;
+  readonly openDoubts?: number | null;
 }
 
-function model({ state, recording, findings, session, hidden = false }: Given = {}) {
+function model({
+  state,
+  recording,
+  findings,
+  session,
+  hidden = false,
+  openDoubts = 0,
+}: Given = {}) {
   const begun = beginSession({ ...input.state, ...state });
   return reportModel({
     recording: { ...input.recording, ...recording },
@@ -39,6 +47,7 @@ function model({ state, recording, findings, session, hidden = false }: Given = 
     findings: { ...input.findings, ...findings },
     program: 'Bicadence 0.1.0',
     identityHidden: hidden,
+    openDoubts,
   });
 }
 
@@ -54,6 +63,28 @@ const sign =
 
 const factOf = (facts: readonly { name: string; words: string }[], name: string) =>
   facts.find((fact) => fact.name === name)?.words;
+
+describe('doubts', () => {
+  const doubts = [
+    { id: 'early-beat-1', ending: 'kept', tick: 1 },
+    { id: 'extra-beat-2', ending: 'mended', tick: 2 },
+    { id: 'extra-beat-3', ending: 'mended', tick: 3 },
+  ] as const;
+
+  it('are counted as they were left, and open ones are said before the figures', () => {
+    const { making, warnings } = model({ state: { doubts }, openDoubts: 4 });
+    expect(factOf(making, 'Doubts')).toBe('4 open, 1 kept as they were, 2 mended');
+    expect(warnings).toContain(
+      '4 doubts are open: beats, spans and epochs in doubt count as they stand.',
+    );
+    expect(model({ openDoubts: 1 }).warnings.join()).toContain('One doubt is open');
+  });
+
+  it('are said not to have been looked for while they have not, and nothing where none is open', () => {
+    expect(factOf(model({ openDoubts: null }).making, 'Doubts')).toMatch(/^not looked for yet/);
+    expect(model({ openDoubts: 0 }).warnings.join()).not.toContain('doubt');
+  });
+});
 
 describe('who the report is of', () => {
   it('is said with code, name and birth year, and that invented data is invented', () => {

@@ -48,7 +48,7 @@ describe('the doubts of a heart whose beats are known', () => {
     const beats = without(without(heart.beats, gone), gone);
     const doubt = doubtAt(beats, at(gone + 2));
     expect(doubt?.mend).toMatchObject({ words: 'insert 2 beats' });
-    expect(doubt?.why).toContain('3 times');
+    expect(doubt?.why).toMatch(/is about (2\.9|3\.0|3\.1) times/);
   });
 
   it('a missed ventricular beat leaves no double interval, yet is seen in the pause', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { alikeTo, averageRow, LOOK_BEFORE_S } from '../../src/heart/look-alikes';
+import { createRandom } from '../../src/numeric/random';
 import type { Doubt } from '../../src/recording/doubt';
 import { inventedHeart, nthOf, RATE_HZ } from './invented-doubts';
 
@@ -21,6 +22,16 @@ describe('the look-alikes of a doubted beat', () => {
       [wide[1].id, wide[2].id].sort(),
     );
     for (const { likeness } of found?.others ?? []) expect(likeness).toBeGreaterThan(0.95);
+  });
+
+  it('are no noise, however steep and tall, and no beat of another size', () => {
+    const noisy = { ...input, heartbeat: heart.heartbeat.slice() };
+    const places = narrow.map(({ tick }) => Math.round((tick ?? 0) / 64));
+    const random = createRandom(4);
+    for (let i = -60; i <= 60; i += 1) noisy.heartbeat[places[1] + i] = 200 * random.gaussian();
+    for (let i = -60; i <= 60; i += 1) noisy.heartbeat[places[2] + i] *= 0.3;
+    expect(alikeTo(noisy, narrow[0], narrow)?.others).toEqual([]);
+    expect(alikeTo(input, narrow[0], narrow)?.others).toHaveLength(2);
   });
 
   it('come with a second of heartbeat, the beat 0.4 s after its start', () => {

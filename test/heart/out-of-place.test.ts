@@ -111,6 +111,18 @@ describe('detected beats', () => {
     expect(lettersOf(judged)).toBe(`${'N'.repeat(60)}Q${'N'.repeat(beats.length - 62)}`);
   });
 
+  it('are no proof of a rhythm where two of the six about them contradict it: doubtful ones are of class Q too', () => {
+    const list = detect(beats.filter((_, i) => i !== 60 && i !== 62));
+    const usable = [{ from: 0, to: 120 * rateHz }];
+    const judged = (fromS: number, toS: number) =>
+      lettersOf(withMisfitsUnusable(list, { usable, rateHz }, 64, (a, b) => a < toS && b > fromS));
+    const single = judged(beats[60].timeS - 0.1, beats[62].timeS + 0.1);
+    expect(single.slice(58, 63)).toMatch(/^NN?Q+N*$/);
+    const wide = judged(beats[56].timeS, beats[66].timeS);
+    expect(wide.slice(58, 63)).toBe('QQQQQ');
+    expect(wide.slice(0, 56) + wide.slice(66)).toMatch(/^N+$/);
+  });
+
   it('bear none where a spoiled span hides the missed beat', () => {
     const atS = beats[60].timeS;
     expect(lettersOf(detect(beats, [atS - 0.2, atS + 0.2]))).toBe('N'.repeat(beats.length - 1));

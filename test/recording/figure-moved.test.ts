@@ -49,7 +49,7 @@ describe('the figure that an edit moved most', () => {
       part('fed', { rmssd_ms: numberFigure(38), sdnn_ms: withheld('too few NN') }),
     );
     const after = findings(part('fed', { rmssd_ms: numberFigure(20), sdnn_ms: numberFigure(50) }));
-    expect(told(before, after)).toBe('SDNN, 5 min, fed is there now: 50.0 ms');
+    expect(told(before, after)).toBe('SDNN, 5 min, fed 50.0 ms, withheld before');
     expect(told(after, before)).toBe('SDNN, 5 min, fed 50.0 ms, now withheld: too few NN');
   });
 

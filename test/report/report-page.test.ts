@@ -23,6 +23,7 @@ function page(signed: boolean): string {
       )
     : begun;
   const model = reportModel({
+    openDoubts: 0,
     recording,
     session,
     findings,
