@@ -364,3 +364,23 @@ test('undo and redo go through all steps, each by its name', async () => {
   for (const _ of names) await press(page, 'Control+z');
   expect(await allFigures(page)).toEqual(start);
 });
+
+test('finding all beats again asks first where beats were mended by hand, and one undo brings them back', async () => {
+  await goTo(page, '0:31');
+  const start = await allFigures(page);
+  await press(page, '.');
+  await press(page, 'v');
+  const mended = await allFigures(page);
+  await press(page, 'Shift+D');
+  const dialog = page.getByRole('dialog', { name: 'Find all beats again?' });
+  await dialog.getByRole('button', { name: 'Leave them' }).click();
+  expect(await allFigures(page)).toEqual(mended);
+  await press(page, 'Shift+D');
+  await dialog.getByRole('button', { name: 'Find all again' }).click();
+  await settled(page);
+  expect(await undoName(page)).toBe('detect beats again');
+  expect(await allFigures(page)).toEqual(start);
+  await press(page, 'Control+z');
+  expect(await allFigures(page)).toEqual(mended);
+  await press(page, 'Control+z');
+});

@@ -95,7 +95,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   keys: ['', 'dialog', /^Keys$/],
   about: ['', 'dialog', /Bicadence/],
   report: ['', 'view', /^#report$/],
-  'detect-again': ['. Delete', 'undo', /^detect beats again$/],
+  'detect-again': ['. Delete', 'dialog', /^Find all beats again\?$/],
   undo: ['. v', 'undo', /^$/],
   redo: ['. v Control+z', 'undo', /^class beat .* as V$/],
   'hide-identity': ['', 'bar', /identity hidden/],

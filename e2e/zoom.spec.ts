@@ -5,6 +5,7 @@ import {
   LONG_MS,
   openStudy,
   press,
+  RECORD,
   reviewAs,
   STEADY,
   settled,
@@ -94,4 +95,24 @@ for (const viewport of SCREENS)
       await expect(keys).toBeInViewport();
       await press(page, 'F9');
     });
+  });
+
+for (const viewport of [
+  { width: 1280, height: 720 },
+  { width: 1920, height: 1080 },
+])
+  test(`at ${viewport.width}x${viewport.height} the review fills the window and nothing lies below it`, async ({
+    browser,
+  }) => {
+    const page = await freshPage(browser, { viewport });
+    await openStudy(page, RECORD);
+    await expect(page.getByRole('region', { name: 'Doubts' })).toContainText('open');
+    await settled(page);
+    const { tall, wide } = await page.evaluate(() => ({
+      tall: document.documentElement.scrollHeight,
+      wide: document.documentElement.scrollWidth,
+    }));
+    expect([wide, tall]).toEqual([viewport.width, viewport.height]);
+    expectNoTroubles(page);
+    await page.context().close();
   });

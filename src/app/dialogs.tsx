@@ -13,6 +13,7 @@ const later = <K extends keyof Later>(name: K) =>
   lazy<Later[K]>(() => asWork(import('./later-dialogs')).then((all) => ({ default: all[name] })));
 
 const AboutDialog = later('AboutDialog');
+const AllBeatsAgainDialog = later('AllBeatsAgainDialog');
 const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
@@ -60,6 +61,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <IdentityDialog key={state.quickKey} state={state} />;
     case 'reviewer':
       return <ReviewerDialog act={state.act} />;
+    case 'all-beats-again':
+      return <AllBeatsAgainDialog act={state.act} />;
     case 'roles':
       return <RolesDialog />;
     case 'phases':

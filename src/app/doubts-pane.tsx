@@ -66,9 +66,9 @@ function headWords(
   if (!listed) return search.kind === 'looking' ? 'being looked for' : '';
   const effect = open.length > 0 ? open[0].effect : null;
   const most = effect && effectWords(effect);
-  const all = open.length + settled.length;
-  const count = settled.length > 0 ? `${open.length} open of ${all}` : `${open.length} open`;
-  return most && !most.same ? `${count}; the first moves ${most.name} most` : count;
+  const count =
+    settled.length > 0 ? `${open.length} open, ${settled.length} settled` : `${open.length} open`;
+  return most && !most.same ? `${count}; first what moves ${most.name}` : count;
 }
 
 interface OutcomeProps {

@@ -1,4 +1,5 @@
 export { AboutDialog } from './about-dialog';
+export { AllBeatsAgainDialog } from './all-beats-again-dialog';
 export { BeatsBetweenDialog } from './beats-between-dialog';
 export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
 export { CompareDialog } from './compare-dialog';

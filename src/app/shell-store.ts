@@ -20,6 +20,7 @@ export type DialogState =
     }
   /** Asks who edits; `act` runs once the name is set. Stands on top of the dialog that was open. */
   | { readonly kind: 'reviewer'; readonly act: () => void }
+  | { readonly kind: 'all-beats-again'; readonly act: () => void }
   | { readonly kind: 'roles' }
   | { readonly kind: 'phases' }
   | { readonly kind: 'spans' }

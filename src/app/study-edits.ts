@@ -143,6 +143,15 @@ export function createStudyEdits(parts: EditParts): StudyEdits {
     apply(joined(rest.name, [rest, addSpans(latest, fresh, 'propose spans'), ...beats]));
   }
 
+  function findAllAgain(open: Session): void {
+    const { roles, phases, spans, settings } = open.state;
+    const given: Given = { roles, phases, spans, settings };
+    void proposed(open, given, 'Stopped. The beats are as they were.').then((found) => {
+      if (found)
+        apply(replaceAllBeats(found.latest.state, found.proposal.beats, 'detect beats again'));
+    });
+  }
+
   const acts: EditActs = {
     changeRoles(roles, reason) {
       withOpen((open) => {
@@ -173,12 +182,12 @@ export function createStudyEdits(parts: EditParts): StudyEdits {
       withOpen((open) => apply(setField(open.state, 'protocol', protocol, 'change protocol'))),
     detectAgain() {
       withOpen((open) => {
-        const { roles, phases, spans, settings } = open.state;
-        const given: Given = { roles, phases, spans, settings };
-        void proposed(open, given, 'Stopped. The beats are as they were.').then((found) => {
-          if (found)
-            apply(replaceAllBeats(found.latest.state, found.proposal.beats, 'detect beats again'));
-        });
+        if (!beatsWereMended(open)) findAllAgain(open);
+        else
+          shell.getState().openDialog({
+            kind: 'all-beats-again',
+            act: () => withOpen((now) => findAllAgain(now)),
+          });
       });
     },
     sign(request) {

@@ -35,9 +35,20 @@ export function openDoubts(listed: readonly Doubt[], state: SessionState): reado
   );
 }
 
-/** The doubt in front: the one of the id where it is open, else the first; null where none is open. */
-export const doubtInFront = (open: readonly Doubt[], frontId: string | null): Doubt | null =>
-  open.find(({ id }) => id === frontId) ?? open[0] ?? null;
+/** Where a doubt of a beat stands, by its id: that does not change when the same beat is doubted for another reason. */
+const beatOf = (id: string): string | undefined => /-\d+$/.exec(id)?.[0];
+
+/**
+ * The doubt in front: the one of the id where it is open, else another of the same beat, else the first; null where none is
+ * open.
+ */
+export function doubtInFront(open: readonly Doubt[], frontId: string | null): Doubt | null {
+  const same = open.find(({ id }) => id === frontId);
+  if (same) return same;
+  const beat = frontId === null ? undefined : beatOf(frontId);
+  const there = beat === undefined ? undefined : open.find(({ id }) => beatOf(id) === beat);
+  return there ?? open[0] ?? null;
+}
 
 /** Those of some doubts whose mends can be done as one step: where two touch the same beat or span, the first counts. */
 export function mendableTogether(doubts: readonly Doubt[]): readonly Doubt[] {

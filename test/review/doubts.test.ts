@@ -7,7 +7,7 @@ import { followDoubts, outcomeWords } from '../../src/review/doubt-follow';
 import { createDoubtStore } from '../../src/review/doubt-store';
 import { inSight } from '../../src/review/doubt-travel';
 import { effectLine, mendWords, tabWords } from '../../src/review/doubt-words';
-import { mendableTogether, mendFits, openDoubts } from '../../src/review/open-doubts';
+import { doubtInFront, mendableTogether, mendFits, openDoubts } from '../../src/review/open-doubts';
 import { lookAtSeconds } from '../../src/review/view-store';
 import { paneStudy, RATE_HZ } from './pane-study';
 
@@ -215,6 +215,22 @@ describe('a mend fits the study', () => {
   it('as one step with others only where no two touch the same beat', () => {
     const list = [doubt(100, removeAt(100)), doubt(101, classV(100)), doubt(200, classV(200))];
     expect(mendableTogether(list).map(({ tick }) => tick)).toEqual([tickAt(100), tickAt(200)]);
+  });
+});
+
+describe('the doubt in front', () => {
+  const at = (id: string): Doubt => ({ ...doubt(1, null), id });
+  const open = [at('missed-beat-100'), at('odd-shape-300'), at('span-#1-40')];
+
+  it('stays at its beat when a new list doubts that for another reason', () => {
+    expect(doubtInFront(open, 'odd-shape-300')).toBe(open[1]);
+    expect(doubtInFront(open, 'early-beat-300')).toBe(open[1]);
+  });
+
+  it('is the first where its place is in doubt no more, and none where no doubt is open', () => {
+    expect(doubtInFront(open, 'early-beat-200')).toBe(open[0]);
+    expect(doubtInFront(open, null)).toBe(open[0]);
+    expect(doubtInFront([], 'early-beat-200')).toBeNull();
   });
 });
 
