@@ -1,5 +1,6 @@
 import { lazy, Suspense } from 'react';
 import { createRoot } from 'react-dom/client';
+import { useStore } from 'zustand';
 import analysisWorkerUrl from '../workers/analysis.worker?worker&url';
 import hashWorkerUrl from '../workers/hash.worker?worker&url';
 import { Shell } from './app/shell';
@@ -8,6 +9,7 @@ import { createStudyController } from './app/study-controller';
 import { createAnalysisStore } from './review/analysis-store';
 import { createDoubtStore } from './review/doubt-store';
 import { asWork } from './review/idle';
+import { openDoubts } from './review/open-doubts';
 import { createViewStore } from './review/view-store';
 import { browserStores } from './session/browser-stores';
 import { createKeeper } from './session/keeper';
@@ -27,9 +29,15 @@ const controller = createStudyController({ ...stores, keeper, analysisWorkerUrl,
 const Report = lazy(() =>
   asWork(import('./report/report-view')).then(({ ReportView }) => ({ default: ReportView })),
 );
+function ReportNow() {
+  const listed = useStore(doubts, (now) => now.listed);
+  const state = useStore(session, (now) => now.session?.state);
+  const open = listed && state ? openDoubts(listed, state).length : null;
+  return <Report {...stores} signals={controller.signals} openDoubts={open} />;
+}
 const renderReport = () => (
   <Suspense fallback={<output>Loading the report.</output>}>
-    <Report {...stores} signals={controller.signals} doubts={doubts} />
+    <ReportNow />
   </Suspense>
 );
 const root = document.getElementById('root');

@@ -5,8 +5,9 @@ import type { Command, CommandParts } from './command';
 const writeHere =
   (kind: NotedKind) =>
   ({ shell, view }: CommandParts) => {
-    const { cursorS, seconds } = view.getState();
-    const atS = cursorS ?? (seconds.fromS + seconds.toS) / 2;
+    const { cursorS, minutes, seconds } = view.getState();
+    const near = cursorS !== null && cursorS >= minutes.fromS && cursorS <= minutes.toS;
+    const atS = near ? cursorS : (seconds.fromS + seconds.toS) / 2;
     shell.getState().openDialog({ kind: 'notes', here: { kind, atS: Math.round(atS * 10) / 10 } });
   };
 

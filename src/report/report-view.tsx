@@ -2,9 +2,7 @@ import { useEffect, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { reportModel } from '../export/report-model';
 import type { AnalysisStore, SignalAccess } from '../review/analysis-store';
-import type { DoubtStore } from '../review/doubt-store';
 import { asWork } from '../review/idle';
-import { openDoubts } from '../review/open-doubts';
 import type { ViewStore } from '../review/view-store';
 import type { SessionState } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
@@ -24,17 +22,18 @@ export interface ReportViewProps {
   readonly analysis: AnalysisStore;
   readonly view: ViewStore;
   readonly signals: SignalAccess;
-  readonly doubts: DoubtStore;
+  /** How many doubts are open; null while they have not been looked for. */
+  readonly openDoubts: number | null;
 }
 
 const WAVE_COLUMNS = 960;
 
 /** The report of the session as it stands, drawn again with every edit. */
-export function ReportView({ session, analysis, view, signals, doubts }: ReportViewProps) {
+export function ReportView(props: ReportViewProps) {
+  const { session, analysis, view, signals, openDoubts } = props;
   const open = useStore(session, (state) => state.session);
   const { recording, findings, edit } = useStore(analysis);
   const identityHidden = useStore(view, (state) => state.identityHidden);
-  const listed = useStore(doubts, (state) => state.listed);
   const pictures = usePictures(open?.state ?? null, analysis, signals);
   const model = useMemo(
     () =>
@@ -45,10 +44,10 @@ export function ReportView({ session, analysis, view, signals, doubts }: ReportV
             findings,
             program: PROGRAM,
             identityHidden,
-            openDoubts: listed && openDoubts(listed, open.state).length,
+            openDoubts,
           })
         : null,
-    [open, recording, findings, identityHidden, listed],
+    [open, recording, findings, identityHidden, openDoubts],
   );
   usePageFoot(model?.foot ?? null);
   const page = useFocusOnce(model !== null);
