@@ -7,9 +7,9 @@ import { PLACED_KINDS, type PlacedDifference, type PlacedKind } from '../session
 import { formatClock } from '../units/time';
 import { Choice } from './fields';
 
-/** Rounded down, so that no difference reads as full agreement. */
+/** Where anything differs it never reads as full agreement. */
 const percentWords = (percent: number | null): string =>
-  percent === null ? '—' : `${(Math.floor(10 * percent + 1e-9) / 10).toFixed(1)} %`;
+  percent === null ? '—' : `${(percent < 100 ? Math.min(percent, 99.9) : percent).toFixed(1)} %`;
 
 interface AgreementRow {
   readonly what: string;
