@@ -9,7 +9,7 @@ import { createStudyController } from './app/study-controller';
 import { createAnalysisStore } from './review/analysis-store';
 import { createDoubtStore } from './review/doubt-store';
 import { asWork } from './review/idle';
-import { openDoubts } from './review/open-doubts';
+import { countOpen } from './review/open-doubts';
 import { createViewStore } from './review/view-store';
 import { browserStores } from './session/browser-stores';
 import { createKeeper } from './session/keeper';
@@ -32,7 +32,7 @@ const Report = lazy(() =>
 function ReportNow() {
   const listed = useStore(doubts, (now) => now.listed);
   const state = useStore(session, (now) => now.session?.state);
-  const open = listed && state ? openDoubts(listed, state).length : null;
+  const open = countOpen(listed, state);
   return <Report {...stores} signals={controller.signals} openDoubts={open} />;
 }
 const renderReport = () => (

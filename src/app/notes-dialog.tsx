@@ -11,8 +11,8 @@ import {
 } from '../session/note-edits';
 import { timeText } from '../units/typed-time';
 import { useApp, useSession, useView, withReviewer } from './app-context';
-import { Dialog } from './dialog';
 import { editNameShown } from './edit-name';
+import { EntryDialog } from './entry-dialog';
 import { Choice, Field } from './fields';
 import { blankNote, draftOf, type NoteDraft, type NoteFaults, readNote } from './note-draft';
 import { TimeField, timeRule, useTimeFrame } from './time-field';
@@ -67,39 +67,27 @@ function NotesForm({
     put(edit, () => (here && !changing ? close() : begin(null)));
   };
   return (
-    <Dialog
+    <EntryDialog
       title="Events and symptoms"
       subtitle={timeRule(frame)}
-      onClose={close}
-      onSubmit={save}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Close
-          </button>
-          <button type="submit" className="button strong">
-            {changing ? 'Change it' : 'Write it'}
-          </button>
-        </>
-      }
-    >
-      <fieldset ref={form}>
-        <legend>{changing ? `Change the ${changing.kind}` : 'Write an event or a symptom'}</legend>
+      size="medium"
+      legend={changing ? `Change the ${changing.kind}` : 'Write an event or a symptom'}
+      fields={
         <NoteFields
           draft={draft}
           fixed={changing !== null}
           faults={tried && !read.ok ? read.faults : {}}
           onChange={setDraft}
         />
-        {changing ? (
-          <button type="button" className="button slight" onClick={() => begin(null)}>
-            Leave it as it was
-          </button>
-        ) : null}
-      </fieldset>
-      <p role="status" className="small done-line">
-        {done}
-      </p>
+      }
+      form={form}
+      go="Write it"
+      changing={changing !== null}
+      done={done}
+      onSave={save}
+      onLeave={() => begin(null)}
+      onClose={close}
+    >
       <NoteTable
         notes={notesOf(state)}
         onChange={begin}
@@ -111,7 +99,7 @@ function NotesForm({
           goTo(parts.view, note.atS);
         }}
       />
-    </Dialog>
+    </EntryDialog>
   );
 }
 

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { useStore } from 'zustand';
-import { openDoubts } from '../review/open-doubts';
+import { openDoubtsWords } from '../recording/doubt';
+import { countOpen } from '../review/open-doubts';
 import type { SessionState, Signature } from '../session/document';
 import { formatClock } from '../units/time';
 import { useAnalysis, useApp, useSession } from './app-context';
@@ -25,7 +26,7 @@ export function SignDialog() {
 function SignForm({ state }: { readonly state: SessionState }) {
   const { controller, shell, session, doubts } = useApp();
   const listed = useStore(doubts, (now) => now.listed);
-  const open = listed ? openDoubts(listed, state).length : null;
+  const open = countOpen(listed, state);
   const [draft, setDraft] = useState(() => signDraft(state, session.getState().reviewer));
   const [tried, setTried] = useState(false);
   const edit = useSession((now) => now.session?.log.length ?? 0);
@@ -54,9 +55,7 @@ function SignForm({ state }: { readonly state: SessionState }) {
       )}
       {open === 0 ? null : (
         <p className="tab">
-          {open === null
-            ? 'The doubts have not been looked for yet.'
-            : `${open === 1 ? 'One doubt is' : `${open} doubts are`} open: what is in doubt counts as it stands.`}
+          {open === null ? 'The doubts have not been looked for yet.' : openDoubtsWords(open)}
         </p>
       )}
       <SignFields

@@ -5,7 +5,7 @@ import type { Edit, Session } from '../session/document';
 import { addSpan, changeSpan, removeSpans } from '../session/edits';
 import { timeText } from '../units/typed-time';
 import { useApp, useSession, useView, withReviewer } from './app-context';
-import { Dialog } from './dialog';
+import { EntryDialog } from './entry-dialog';
 import { Choice, Field } from './fields';
 import {
   BLANK_SPAN,
@@ -60,41 +60,26 @@ function SpansForm({ session }: { readonly session: Session }) {
     put(edit, () => begin(null));
   };
   return (
-    <Dialog
+    <EntryDialog
       title="Spoiled spans"
       subtitle={timeRule(frame)}
       size="large"
-      onClose={close}
-      onSubmit={save}
-      actions={
-        <>
-          <button type="button" className="button" onClick={close}>
-            Close
-          </button>
-          <button type="submit" className="button strong">
-            {changing ? 'Change it' : 'Exclude it'}
-          </button>
-        </>
-      }
-    >
-      <fieldset ref={form}>
-        <legend>
-          {changing ? `Change the span at ${timeText(changing.fromS)}` : 'Exclude a stretch'}
-        </legend>
+      legend={changing ? `Change the span at ${timeText(changing.fromS)}` : 'Exclude a stretch'}
+      fields={
         <SpanFields
           draft={draft}
           faults={tried && !read.ok ? read.faults : {}}
           onChange={setDraft}
         />
-        {changing ? (
-          <button type="button" className="button slight" onClick={() => begin(null)}>
-            Leave it as it was
-          </button>
-        ) : null}
-      </fieldset>
-      <p role="status" className="small done-line">
-        {done}
-      </p>
+      }
+      form={form}
+      go="Exclude it"
+      changing={changing !== null}
+      done={done}
+      onSave={save}
+      onLeave={() => begin(null)}
+      onClose={close}
+    >
       <SpanTable
         spans={spans}
         changing={changing?.id ?? null}
@@ -110,7 +95,7 @@ function SpansForm({ session }: { readonly session: Session }) {
           goToStretch(parts.view, span.fromS, span.toS);
         }}
       />
-    </Dialog>
+    </EntryDialog>
   );
 }
 

@@ -51,13 +51,6 @@ export function doubtFact({ doubts }: SessionState, open: number | null): Fact {
   };
 }
 
-/** What is said beside the figures while doubts are open; none where none is. */
-export function doubtWarnings(open: number | null): readonly string[] {
-  if (!open) return [];
-  const what = open === 1 ? 'One doubt is' : `${open} doubts are`;
-  return [`${what} open: beats, spans and epochs in doubt count as they stand.`];
-}
-
 const countOf = (codes: Uint8Array, code: number): number =>
   codes.reduce((sum, one) => sum + (one === code ? 1 : 0), 0);
 

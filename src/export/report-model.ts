@@ -1,3 +1,4 @@
+import { openDoubtsWords } from '../recording/doubt';
 import type { Findings } from '../recording/findings';
 import type { Recording } from '../recording/recording';
 import type { Session, Signature } from '../session/document';
@@ -10,7 +11,6 @@ import { type Fact, identityFacts, type ProtocolFacts, protocolFacts } from './r
 import {
   beatFacts,
   doubtFact,
-  doubtWarnings,
   logFact,
   type SpanRow,
   settingFacts,
@@ -84,7 +84,10 @@ export function reportModel(input: ReportInput): ReportModel {
     identityHidden,
     identity: identityFacts(recording, state, identityHidden),
     adequacy: adequacyTable(findings, state.roles.heart !== null),
-    warnings: [...warningsOf(recording, findings), ...doubtWarnings(input.openDoubts)].map(hide),
+    warnings: [
+      ...warningsOf(recording, findings),
+      ...(input.openDoubts ? [openDoubtsWords(input.openDoubts)] : []),
+    ].map(hide),
     protocol: protocolFacts(state.protocol, hide),
     events: eventRows(state, hide),
     main: mainTables(findings),

@@ -1,5 +1,5 @@
 import type { Doubt } from '../recording/doubt';
-import { type Interval, joinIntervals } from '../recording/span';
+import { isWithin, joinIntervals } from '../recording/span';
 import { type BeatLook, createBeatLooks } from './beat-looks';
 import { type BeatDoubtsInput, type DoubtView, doubtView, type Reason } from './doubt-view';
 import { gapReason } from './gap-doubts';
@@ -41,9 +41,6 @@ export function* beatDoubtsInSteps(
     .sort((a, b) => a.beat - b.beat);
   return turnsJoined(reasons).map((run) => doubtOf(view, run));
 }
-
-const isWithin = (timeS: number, stretches: readonly Interval[]) =>
-  stretches.some(({ fromS, toS }) => timeS >= fromS && timeS < toS);
 
 const TOO_MANY: readonly Doubt['kind'][] = ['extra-beat', 'tall-wave', 'two-candidates'];
 

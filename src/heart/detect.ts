@@ -1,5 +1,5 @@
 import { BEAT_CLASSES, BEAT_ORIGINS, type BeatClass, type BeatList } from '../recording/beat';
-import type { Interval } from '../recording/span';
+import { type Interval, isWithin } from '../recording/span';
 import { dominantSign, type ShapeAverage, withFiducials } from './beat-average';
 import { measureBeats } from './beat-quality';
 import { classifyBeats, meanFrequency } from './classify';
@@ -180,9 +180,6 @@ const rhythmBy = (beats: readonly Candidate[], rateHz: number) =>
     beats.map(({ sample }) => sample / rateHz),
     () => rhythmOf(1, 0.3, 0.1),
   );
-
-const isWithin = (timeS: number, intervals: readonly Interval[]) =>
-  intervals.some(({ fromS, toS }) => timeS >= fromS && timeS < toS);
 
 function classesOf(
   signal: HeartSignal,

@@ -133,3 +133,6 @@ export function insertion({ beats }: DoubtView, wanted: readonly Beat[]): Mend |
   const words = added.length === 1 ? `${verb} beat` : `${verb} ${added.length} beats`;
   return { kind: 'beats', words, removed: [], added };
 }
+
+/** A share in the words of a doubt: "96 %". */
+export const percent = (share: number): string => `${Math.round(100 * share)} %`;

@@ -1,7 +1,7 @@
 import { exp, log } from '../numeric/elementary';
 import type { Beat, BeatClass } from '../recording/beat';
 import { align, TIMING_HALF_S, timerOf } from './align';
-import { type DoubtView, insertion, type Reason } from './doubt-view';
+import { type DoubtView, insertion, percent, type Reason } from './doubt-view';
 import { placeBeat } from './place-beat';
 
 /** Longer than foretold by so many spreads an interval is long; as a multiple it is off by less than the second. */
@@ -121,8 +121,6 @@ const timesWords = (ratio: number): string =>
 /** Whether the interval is the pause after an early ectopic beat. */
 const isMadeUp = ({ classOf, rrMs }: DoubtView, beat: number, usualMs: number) =>
   ECTOPIC.includes(classOf(beat - 1)) && !(rrMs[beat - 1] + rrMs[beat] > MADE_UP * usualMs);
-
-const percent = (share: number) => `${Math.round(100 * share)} %`;
 
 /** A beat that was seen, of its average's class; early ones of the normal shape are supraventricular. */
 function seenBeat(

@@ -1,7 +1,7 @@
 import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import { TICKS_PER_SAMPLE } from '../units/ticks';
 import type { BeatLook } from './beat-looks';
-import { type DoubtView, insertion, type Reason, removal } from './doubt-view';
+import { type DoubtView, insertion, percent, type Reason, removal } from './doubt-view';
 
 /** From this chance of being wrong on a place is listed. */
 const LEAST_WRONG = 0.15;
@@ -11,8 +11,6 @@ const PLAINLY_LARGE = 0.6;
 const LIKELY_NONE = 0.5;
 /** A place nearer to a beat than this is that beat. */
 const SAME_BEAT_S = 0.15;
-
-const percent = (share: number) => `${Math.max(1, Math.round(100 * share))} %`;
 
 const isPlain = ({ likeness, best, size }: BeatLook) =>
   best >= 0 && likeness[best] >= PLAINLY_LIKE && size >= PLAINLY_LARGE;

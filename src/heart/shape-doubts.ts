@@ -1,6 +1,14 @@
 import { exp } from '../numeric/elementary';
 import type { BeatClass } from '../recording/beat';
-import { bestLikeness, classMend, type DoubtView, NARROW, type Reason, WIDE } from './doubt-view';
+import {
+  bestLikeness,
+  classMend,
+  type DoubtView,
+  NARROW,
+  percent,
+  type Reason,
+  WIDE,
+} from './doubt-view';
 
 /** More like the averages of the other kind by this much, a beat is of the wrong class. */
 const CLEARER_BY = 0.05;
@@ -21,8 +29,6 @@ const LOW_OVER_NOISE = 4;
 
 /** An interval off by more than this (logarithm) is what a beat was set aside for. */
 const FAR = 0.13;
-
-const percent = (share: number) => `${Math.round(100 * share)} %`;
 
 /** Why a beat does not look as its class does; null where it does. */
 export function shapeReason(view: DoubtView, beat: number): Reason | null {

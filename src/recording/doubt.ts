@@ -71,3 +71,7 @@ export interface SettledDoubt {
   readonly ending: DoubtEnding;
   readonly tick: number | null;
 }
+
+/** What is said beside figures while doubts are open. */
+export const openDoubtsWords = (open: number): string =>
+  `${open === 1 ? 'One doubt is' : `${open} doubts are`} open: beats, spans and epochs in doubt count as they stand.`;

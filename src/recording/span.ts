@@ -51,6 +51,10 @@ export interface Interval {
   readonly toS: Seconds;
 }
 
+/** Whether a time lies in one of the intervals; each holds its start and not its end. */
+export const isWithin = (atS: Seconds, intervals: readonly Interval[]): boolean =>
+  intervals.some(({ fromS, toS }) => atS >= fromS && atS < toS);
+
 /** Overlapping and touching intervals joined, in ascending order; empty ones left out. */
 export function joinIntervals(intervals: readonly Interval[]): readonly Interval[] {
   const sorted = intervals.filter((one) => one.toS > one.fromS).sort((a, b) => a.fromS - b.fromS);

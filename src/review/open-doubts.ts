@@ -35,6 +35,12 @@ export function openDoubts(listed: readonly Doubt[], state: SessionState): reado
   );
 }
 
+/** How many doubts are open; null while they have not been looked for. */
+export const countOpen = (
+  listed: readonly Doubt[] | null,
+  state: SessionState | undefined,
+): number | null => (listed && state ? openDoubts(listed, state).length : null);
+
 /** Where a doubt of a beat stands, by its id: that does not change when the same beat is doubted for another reason. */
 const beatOf = (id: string): string | undefined => /-\d+$/.exec(id)?.[0];
 

@@ -1,6 +1,6 @@
 import { median } from '../numeric/statistics';
 import { type Beat, type BeatList, beatAt } from '../recording/beat';
-import type { Interval } from '../recording/span';
+import { type Interval, isWithin } from '../recording/span';
 import type { Hertz } from '../units/rate';
 import { ticksToSeconds } from '../units/ticks';
 import { formatClock } from '../units/time';
@@ -46,9 +46,7 @@ export function foundWithin(inputs: FoundWithinInputs): FoundChange {
   const foundS = secondsOf(found, rateHz);
   const { pairs, onlyFirst, onlySecond } = matchBeats(currentS, foundS);
   const isOpen = (atS: number) =>
-    atS >= inputs.within.fromS &&
-    atS <= inputs.within.toS &&
-    !inputs.left.some(({ fromS, toS }) => atS >= fromS && atS < toS);
+    atS >= inputs.within.fromS && atS <= inputs.within.toS && !isWithin(atS, inputs.left);
   const lost = onlyFirst.filter((i) => isOpen(currentS[i]));
   const moved =
     times === 'take'
