@@ -225,6 +225,18 @@ export function createStudyController(parts: ControllerParts): StudyController &
     else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
   }
 
+  /** One step back or forth through the edits, told with what it was. */
+  const step =
+    (due: typeof undoableEdit, take: () => string | null, told: string): (() => void) =>
+    () => {
+      const open = session.getState().session;
+      if (!open || !due(open)) return;
+      withReviewer({ session, shell }, () => {
+        const name = take();
+        if (name) shell.getState().tell(`${told}: ${name}`);
+      });
+    };
+
   return {
     signals: runner.signals,
     doubtAccess: client,
@@ -272,22 +284,8 @@ export function createStudyController(parts: ControllerParts): StudyController &
     },
     edit: (edit) => applyEdit({ session, shell }, edits, edit),
     lend: () => ({ client, giveBack: () => runner.refresh() }),
-    undo() {
-      const open = session.getState().session;
-      if (!open || !undoableEdit(open)) return;
-      withReviewer({ session, shell }, () => {
-        const name = session.getState().undo();
-        if (name) shell.getState().tell(`Undone: ${name}`);
-      });
-    },
-    redo() {
-      const open = session.getState().session;
-      if (!open || !redoableEdit(open)) return;
-      withReviewer({ session, shell }, () => {
-        const name = session.getState().redo();
-        if (name) shell.getState().tell(`Done again: ${name}`);
-      });
-    },
+    undo: step(undoableEdit, () => session.getState().undo(), 'Undone'),
+    redo: step(redoableEdit, () => session.getState().redo(), 'Done again'),
     findWithin: (request, options) => asWork(client.detectWithin(request, options)),
     ...edits.acts,
     ...files.acts,
