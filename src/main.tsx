@@ -1,4 +1,4 @@
-import { lazy, Suspense } from 'react';
+import { lazy, Suspense, useMemo } from 'react';
 import { createRoot } from 'react-dom/client';
 import { useStore } from 'zustand';
 import analysisWorkerUrl from '../workers/analysis.worker?worker&url';
@@ -8,6 +8,7 @@ import { createShellStore } from './app/shell-store';
 import { createStudyController } from './app/study-controller';
 import { createAnalysisStore } from './review/analysis-store';
 import { createDoubtStore } from './review/doubt-store';
+import { createEvidenceStore, evidenceAt } from './review/evidence-store';
 import { asWork } from './review/idle';
 import { countOpen } from './review/open-doubts';
 import { createViewStore } from './review/view-store';
@@ -22,6 +23,7 @@ const session = createSessionStore(nowUtc);
 const analysis = createAnalysisStore();
 const view = createViewStore();
 const doubts = createDoubtStore();
+const evidence = createEvidenceStore();
 const shell = createShellStore(browser.localStorage);
 const stores = { session, analysis, view, shell };
 const keeper = createKeeper({ ...browser, program: PROGRAM, nowUtc });
@@ -33,7 +35,10 @@ function ReportNow() {
   const listed = useStore(doubts, (now) => now.listed);
   const state = useStore(session, (now) => now.session?.state);
   const open = countOpen(listed, state);
-  return <Report {...stores} signals={controller.signals} openDoubts={open} />;
+  const edit = useStore(session, (now) => now.session?.log.length ?? 0);
+  const found = useStore(evidence);
+  const known = useMemo(() => evidenceAt(found, edit), [found, edit]);
+  return <Report {...stores} signals={controller.signals} openDoubts={open} evidence={known} />;
 }
 const renderReport = () => (
   <Suspense fallback={<output>Loading the report.</output>}>
@@ -50,6 +55,8 @@ if (root)
         controller,
         signals: controller.signals,
         doubtAccess: controller.doubtAccess,
+        evidence,
+        evidenceAccess: controller.evidenceAccess,
       }}
       renderReport={renderReport}
     />,

@@ -75,6 +75,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   const edit = editNumber(session);
   const analysis = await pipeline.analyse({ ...state, edit }, job);
   const openDoubts = await pipeline.openDoubts({ ...state, edit }, state.doubts, job);
+  const evidence = await pipeline.allEvidence({ ...state, edit }, state.doubts, job);
   const files = exportFiles({
     recording: opened.recording,
     state,
@@ -86,6 +87,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     breathing: analysis.breathing,
     findings: analysis.findings,
     openDoubts,
+    evidence,
   });
   await mkdir(folder, { recursive: true });
   for (const { name, text } of files) await writeFile(join(folder, name), text);

@@ -1,5 +1,6 @@
 import type { BeatList } from '../src/recording/beat';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
+import type { Evidence, EvidencePart } from '../src/recording/evidence/evidence';
 import type { Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { BreathingSeries, HeartSegment, RrSeries } from '../src/recording/heart-series';
@@ -64,6 +65,15 @@ export interface DoubtList {
   /** The one that moves a figure most comes first. */
   readonly open: readonly Doubt[];
 }
+
+/** One part of the evidence of a review as it stood at an edit. */
+export type EvidenceReply = {
+  readonly [P in EvidencePart]: {
+    readonly edit: number;
+    readonly part: P;
+    readonly value: Evidence[P];
+  };
+}[EvidencePart];
 
 /** A doubted beat with its second of heartbeat; the doubt comes without its effect. */
 export interface LookAlike {
@@ -198,6 +208,13 @@ export interface AnalysisApi {
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
   ): Promise<Reply<DoubtList>>;
+  /** One part of the evidence beside the figures. The doubts that are not among `settled` are open. */
+  evidence(
+    job: JobId,
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    part: EvidencePart,
+  ): Promise<Reply<EvidenceReply>>;
   /** What looks like the beat of an open doubt; a failure of kind `wrong-input` where no such doubt stands at a beat. */
   lookAlikes(
     job: JobId,

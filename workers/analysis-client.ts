@@ -1,5 +1,6 @@
 import * as Comlink from 'comlink';
 import type { SettledDoubt } from '../src/recording/doubt';
+import type { EvidencePart } from '../src/recording/evidence/evidence';
 import type { Failure, Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { Roles } from '../src/recording/roles';
@@ -9,6 +10,7 @@ import type {
   Columns,
   ColumnsRequest,
   DoubtList,
+  EvidenceReply,
   FoundWithin,
   Given,
   JobId,
@@ -50,6 +52,12 @@ export interface AnalysisClient {
     settled: readonly SettledDoubt[],
     options?: CallOptions,
   ): Promise<Reply<DoubtList>>;
+  evidence(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    part: EvidencePart,
+    options?: CallOptions,
+  ): Promise<Reply<EvidenceReply>>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -219,6 +227,8 @@ export function createAnalysisClient(
     analyse: (inputs, options) => call((api, job) => api.analyse(job, inputs), options),
     doubts: (inputs, settled, options) =>
       call((api, job) => api.doubts(job, inputs, settled), options),
+    evidence: (inputs, settled, part, options) =>
+      call((api, job) => api.evidence(job, inputs, settled, part), options),
     lookAlikes: (inputs, settled, doubtId, options) =>
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
     figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),

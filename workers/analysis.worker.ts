@@ -70,6 +70,8 @@ const api: AnalysisApi = {
   propose: (id, given) => inJob(id, (job) => pipeline.propose(given, job)),
   analyse: (id, inputs) => inJob(id, (job) => pipeline.analyse(inputs, job)),
   doubts: (id, inputs, settled) => inJob(id, (job) => pipeline.doubts(inputs, settled, job)),
+  evidence: (id, inputs, settled, part) =>
+    inJob(id, (job) => pipeline.evidence(inputs, settled, part, job)),
   lookAlikes: (id, inputs, settled, doubtId) =>
     inJob(id, (job) => pipeline.lookAlikes(inputs, settled, doubtId, job)),
   figuresOf: (id, states) => inJob(id, (job) => pipeline.figuresOf(states, job)),

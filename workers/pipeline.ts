@@ -1,6 +1,7 @@
 import { openRecording } from '../src/decode/formats';
 import { quickKey } from '../src/decode/quick-key';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
+import type { Evidence, EvidencePart } from '../src/recording/evidence/evidence';
 import type { Findings } from '../src/recording/findings';
 import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
@@ -11,6 +12,7 @@ import type {
   Columns,
   ColumnsRequest,
   DoubtList,
+  EvidenceReply,
   FoundWithin,
   Given,
   JobId,
@@ -26,6 +28,7 @@ import type { Job } from './job';
 import { analyse, doubtInputs, figuresOf } from './pipeline-analyse';
 import { placeNear } from './pipeline-beats';
 import { columnsOf } from './pipeline-columns';
+import type { EvidenceInputs } from './pipeline-evidence';
 import { firstRoles, propose } from './pipeline-propose';
 import { createStudy, inLine, type Study } from './pipeline-study';
 
@@ -49,6 +52,15 @@ export interface Pipeline {
     settled: readonly SettledDoubt[],
     job: Job,
   ): Promise<readonly Doubt[]>;
+  /** One part of the evidence beside the figures. */
+  evidence(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    part: EvidencePart,
+    job: Job,
+  ): Promise<EvidenceReply>;
+  /** All parts of it, one after the other. */
+  allEvidence(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<Evidence>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -75,6 +87,16 @@ export function createPipeline(): Pipeline {
     if (!current) throw new Error('no study is open in the worker');
     return current;
   };
+  /** The figures' inputs and the doubts that are open beside them. */
+  async function evidenceInputs(
+    inputs: ReviewInputs,
+    settled: readonly SettledDoubt[],
+    job: Job,
+  ): Promise<EvidenceInputs> {
+    const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+    const { openDoubts } = await import('./pipeline-doubts');
+    return { ...from, study: study(), open: await openDoubts(from, settled, job) };
+  }
   return {
     async open(ticket, file, fileName, reading, job) {
       const source = await openRecording(file, fileName, reading);
@@ -101,6 +123,16 @@ export function createPipeline(): Pipeline {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       const { openDoubts } = await import('./pipeline-doubts');
       return openDoubts(from, settled, job);
+    },
+    async evidence(inputs, settled, part, job) {
+      const from = await evidenceInputs(inputs, settled, job);
+      const { evidenceReply } = await import('./pipeline-evidence');
+      return evidenceReply(part, from, job);
+    },
+    async allEvidence(inputs, settled, job) {
+      const from = await evidenceInputs(inputs, settled, job);
+      const { allEvidence } = await import('./pipeline-evidence');
+      return allEvidence(from, job);
     },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));

@@ -3,9 +3,11 @@ import { useStore } from 'zustand';
 import type { AnalysisClient } from '../../workers/analysis-client';
 import type { AnalysisState, AnalysisStore, SignalAccess } from '../review/analysis-store';
 import type { DoubtStore } from '../review/doubt-store';
+import type { EvidenceStore } from '../review/evidence-store';
 import type { ViewState, ViewStore } from '../review/view-store';
 import type { SessionStore, SessionStoreState } from '../session/store';
 import type { StudyController } from './controller';
+import type { EvidenceAccess } from './evidence-runner';
 import type { ShellState, ShellStore } from './shell-store';
 
 /** Doubts and what looks like them, on demand. */
@@ -21,6 +23,8 @@ export interface AppParts {
   readonly signals: SignalAccess;
   readonly doubts: DoubtStore;
   readonly doubtAccess: DoubtAccess;
+  readonly evidence: EvidenceStore;
+  readonly evidenceAccess: EvidenceAccess;
 }
 
 const PartsContext = createContext<AppParts | null>(null);

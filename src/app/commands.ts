@@ -1,6 +1,7 @@
 import { BOOKMARK_COMMANDS } from './bookmark-commands';
 import type { Command, CommandParts } from './command';
 import { DOUBT_COMMANDS } from './doubt-commands';
+import { EVIDENCE_COMMANDS } from './evidence-commands';
 import { HISTORY_COMMANDS } from './history-commands';
 import { actingKeys } from './own-keys';
 import { PANE_COMMANDS } from './pane-bindings';
@@ -12,6 +13,7 @@ import { TIME_COMMANDS } from './time-commands';
 export const COMMANDS: readonly Command[] = [
   ...ROOM_COMMANDS,
   ...STUDY_COMMANDS,
+  ...EVIDENCE_COMMANDS,
   ...HISTORY_COMMANDS,
   ...OPEN_COMMANDS,
   ...WORK_COMMANDS,

@@ -18,6 +18,7 @@ const BeatsBetweenDialog = later('BeatsBetweenDialog');
 const AddBookmarkDialog = later('AddBookmarkDialog');
 const BookmarksDialog = later('BookmarksDialog');
 const CompareDialog = later('CompareDialog');
+const EvidenceDialog = later('EvidenceDialog');
 const FigureDialog = later('FigureDialog');
 const FindWithinDialog = later('FindWithinDialog');
 const GoToDialog = later('GoToDialog');
@@ -101,6 +102,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <FailureDialog failure={state.failure} />;
     case 'figure':
       return <FigureDialog figure={state.key} phase={state.phase} />;
+    case 'evidence':
+      return <EvidenceDialog first={state.page} />;
     case 'look-alikes':
       return <LookAlikesDialog doubtId={state.doubtId} />;
     case 'choose-same-file':

@@ -3,8 +3,9 @@ import { followDoubts } from '../review/doubt-follow';
 import type { PaneActs } from '../review/pane-acts';
 import type { AppParts } from './app-context';
 import { runDoubts } from './doubt-runner';
+import { runEvidence } from './evidence-runner';
 
-/** Begins to look for doubts and to act on them, once for the life of the page. */
+/** Begins to look for doubts and to act on them, and to compute the evidence, once for the life of the page. */
 export function startDoubts(parts: AppParts, act: PaneActs): void {
   const { doubts, shell } = parts;
   if (doubts.getState().acts !== null) return;
@@ -17,4 +18,5 @@ export function startDoubts(parts: AppParts, act: PaneActs): void {
   const bring = bringer(own);
   followDoubts(own, bring);
   doubts.setState({ acts: doubtActs(own, bring, runDoubts(parts)) });
+  runEvidence(parts);
 }

@@ -3,6 +3,7 @@ export { AllBeatsAgainDialog } from './all-beats-again-dialog';
 export { BeatsBetweenDialog } from './beats-between-dialog';
 export { AddBookmarkDialog, BookmarksDialog } from './bookmark-dialogs';
 export { CompareDialog } from './compare-dialog';
+export { EvidenceDialog } from './evidence-dialog';
 export { FigureDialog } from './figure-dialog';
 export { SameFileDialog, TextReadingDialog } from './file-dialogs';
 export { FindWithinDialog } from './find-within-dialog';

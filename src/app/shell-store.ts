@@ -4,6 +4,7 @@ import type { FoundInFile, Recording } from '../recording/recording';
 import type { Session } from '../session/document';
 import type { NotedKind } from '../session/note-edits';
 import type { KeptRow } from './controller';
+import type { EvidencePageId } from './evidence-page-id';
 import type { OwnKeys } from './own-keys';
 import { readPreferences, type ThemeChoice, writePreferences } from './preferences';
 
@@ -44,6 +45,7 @@ export type DialogState =
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
   | { readonly kind: 'figure'; readonly key: string; readonly phase: string }
+  | { readonly kind: 'evidence'; readonly page: EvidencePageId }
   | { readonly kind: 'look-alikes'; readonly doubtId: string }
   | { readonly kind: 'choose-same-file'; readonly code: string; readonly quickKey: string };
 

@@ -17,6 +17,7 @@ import { type AnalysisRunner, createAnalysisRunner } from './analysis-runner';
 import { type DoubtAccess, withReviewer } from './app-context';
 import { applyEdit } from './apply-edit';
 import type { StudyController } from './controller';
+import type { EvidenceAccess } from './evidence-runner';
 import { lastStudy } from './last-study';
 import { keptRow, LOST_OPENING, otherFile, otherReading } from './opening-words';
 import type { ShellStore } from './shell-store';
@@ -47,6 +48,7 @@ interface Opening {
 export function createStudyController(parts: ControllerParts): StudyController & {
   readonly signals: SignalAccess;
   readonly doubtAccess: DoubtAccess;
+  readonly evidenceAccess: EvidenceAccess;
 } {
   const { session, analysis, view, shell, keeper } = parts;
   const client = createAnalysisClient(
@@ -240,6 +242,7 @@ export function createStudyController(parts: ControllerParts): StudyController &
   return {
     signals: runner.signals,
     doubtAccess: client,
+    evidenceAccess: client,
     openFile: open,
     openDemo,
     async openSessionFile(file) {

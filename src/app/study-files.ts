@@ -1,5 +1,6 @@
 import type { AnalysisClient } from '../../workers/analysis-client';
-import { type Failure, Refusal } from '../recording/failure';
+import { EVIDENCE_PARTS, type Evidence, wholeOf } from '../recording/evidence/evidence';
+import { type Failure, Refusal, type Reply } from '../recording/failure';
 import type { AnalysisStore } from '../review/analysis-store';
 import { asWork } from '../review/idle';
 import type { LogLine, Session } from '../session/document';
@@ -20,7 +21,7 @@ interface FileParts {
   readonly analysis: AnalysisStore;
   readonly shell: ShellStore;
   readonly keeping: StudyKeeping;
-  readonly client: Pick<AnalysisClient, 'doubts'>;
+  readonly client: Pick<AnalysisClient, 'doubts' | 'evidence'>;
 }
 
 /** Said where results or a signature would stand for a file that is not known yet. */
@@ -33,6 +34,20 @@ const IDENTIFYING =
 /** True where the longer log goes on where the shorter one ends. */
 function continues(longer: readonly LogLine[], shorter: readonly LogLine[]): boolean {
   return shorter.length <= longer.length && shorter.every((line, i) => sameValue(line, longer[i]));
+}
+
+/** All parts of the evidence; those computed already cost nothing. */
+async function wholeEvidence(
+  client: Pick<AnalysisClient, 'evidence'>,
+  open: Session,
+): Promise<Reply<Evidence>> {
+  const made: Partial<Evidence> = {};
+  for (const part of EVIDENCE_PARTS) {
+    const reply = await client.evidence(inputsOf(open), open.state.doubts, part);
+    if (!reply.ok) return reply;
+    Object.assign(made, { [part]: reply.value.value });
+  }
+  return { ok: true, value: wholeOf(made) };
 }
 
 /** Sessions and results on their way to and from files of the person's. */
@@ -75,9 +90,19 @@ export function createStudyFiles({ session, analysis, shell, keeping, client }: 
           shell.getState().openDialog({ kind: 'failure', failure: doubts.failure });
           return;
         }
+        const evidence = await wholeEvidence(client, open);
+        if (!evidence.ok) {
+          shell.getState().openDialog({ kind: 'failure', failure: evidence.failure });
+          return;
+        }
         const { resultsZip } = await import('./results-zip');
         const sha256 = session.getState().session?.state.study.sha256 ?? null;
-        const zip = resultsZip({ ...results, sha256, openDoubts: doubts.value.open });
+        const zip = resultsZip({
+          ...results,
+          sha256,
+          openDoubts: doubts.value.open,
+          evidence: evidence.value,
+        });
         download(`${safeCode(state.study.code)}-results.zip`, zip, 'application/zip');
         shell.getState().say(IDENTIFYING);
       };

@@ -16,7 +16,7 @@ interface WorkspaceProps {
 
 /** A study on the page: Whole study above, the two panes below it, findings and doubts beside them. */
 export function Workspace({ panes, parts }: WorkspaceProps) {
-  const { session, analysis, view, shell, controller } = useApp();
+  const { session, analysis, view, shell, controller, evidence } = useApp();
   const fileAtHand = useAnalysis((state) => state.fileAtHand);
   const working = useAnalysis((state) => state.progress !== null);
   return (
@@ -43,6 +43,8 @@ export function Workspace({ panes, parts }: WorkspaceProps) {
             view={view}
             onFigure={(key, phase) => shell.getState().openDialog({ kind: 'figure', key, phase })}
             onEdit={(edit) => controller.edit(edit)}
+            evidence={evidence}
+            onEvidence={(page) => shell.getState().openDialog({ kind: 'evidence', page })}
           />
         </div>
         <Suspense fallback={<div className="doubts" />}>

@@ -1,4 +1,5 @@
 import type { Doubt } from '../recording/doubt';
+import type { Evidence } from '../recording/evidence/evidence';
 import type { Findings } from '../recording/findings';
 import type { BreathingSeries, HeartSegment, RrSeries } from '../recording/heart-series';
 import type { Recording } from '../recording/recording';
@@ -25,4 +26,5 @@ export interface ExportInput {
   readonly findings: Findings;
   /** The doubts that are open; those that are settled stand in the state. */
   readonly openDoubts: readonly Doubt[];
+  readonly evidence: Evidence;
 }

@@ -2,6 +2,7 @@ import type { FigureValue } from '../recording/figure';
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
 import type { FigureChange, PhaseFindings } from '../recording/findings';
 import { leadKey } from '../recording/lead';
+import { evidenceJson } from './evidence/evidence-json';
 import type { ExportInput } from './export-input';
 import { roundedTo } from './write-number';
 
@@ -47,6 +48,7 @@ export function findingsJson(input: Omit<ExportInput, 'stomach' | 'heart'>): str
       text: one.text,
     })),
     warnings: findings.warnings.map(({ about, text }) => ({ about, text })),
+    evidence: evidenceJson(input.evidence),
   };
   return `${JSON.stringify(document, null, 2)}\n`;
 }

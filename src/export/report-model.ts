@@ -1,4 +1,6 @@
 import { openDoubtsWords } from '../recording/doubt';
+import type { Evidence } from '../recording/evidence/evidence';
+import { evidenceLines } from '../recording/evidence/evidence-words';
 import type { Findings } from '../recording/findings';
 import type { Recording } from '../recording/recording';
 import type { Session, Signature } from '../session/document';
@@ -44,6 +46,8 @@ export interface ReportModel {
   readonly others: readonly FindingsTable[];
   /** Seen in passing, by time. */
   readonly seen: readonly Fact[];
+  /** How far the figures can be believed, line by line; empty until it has been computed. */
+  readonly evidence: readonly Fact[];
   readonly notes: string;
   readonly conclusion: string;
   /** Newest last; the one in force is current. */
@@ -62,6 +66,8 @@ export interface ReportInput {
   readonly identityHidden: boolean;
   /** How many doubts are open; null while they have not been looked for. */
   readonly openDoubts: number | null;
+  /** The parts of the evidence that belong to these figures. */
+  readonly evidence: Partial<Evidence>;
 }
 
 /** The report of a session as it stands; a signed one prints figures, settings and words as they were signed. */
@@ -95,6 +101,10 @@ export function reportModel(input: ReportInput): ReportModel {
     seen: findings.seen.map(({ fromS, toS, text }) => ({
       name: `${formatClock(fromS)}–${formatClock(toS)}`,
       words: hide(text),
+    })),
+    evidence: evidenceLines(input.evidence).map(({ name, words, mark }) => ({
+      name,
+      words: hide(mark === null ? words : `${words} (${mark})`),
     })),
     notes: hide(signed?.notes ?? state.notes),
     conclusion: hide(signed?.conclusion ?? state.conclusion),

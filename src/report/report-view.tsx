@@ -1,6 +1,7 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { reportModel } from '../export/report-model';
+import type { Evidence } from '../recording/evidence/evidence';
 import type { AnalysisStore, SignalAccess } from '../review/analysis-store';
 import { asWork } from '../review/idle';
 import type { ViewStore } from '../review/view-store';
@@ -24,13 +25,15 @@ export interface ReportViewProps {
   readonly signals: SignalAccess;
   /** How many doubts are open; null while they have not been looked for. */
   readonly openDoubts: number | null;
+  /** The parts of the evidence that belong to the last edit. */
+  readonly evidence: Partial<Evidence>;
 }
 
 const WAVE_COLUMNS = 960;
 
 /** The report of the session as it stands, drawn again with every edit. */
 export function ReportView(props: ReportViewProps) {
-  const { session, analysis, view, signals, openDoubts } = props;
+  const { session, analysis, view, signals, openDoubts, evidence } = props;
   const open = useStore(session, (state) => state.session);
   const { recording, findings, edit } = useStore(analysis);
   const identityHidden = useStore(view, (state) => state.identityHidden);
@@ -45,9 +48,10 @@ export function ReportView(props: ReportViewProps) {
             program: PROGRAM,
             identityHidden,
             openDoubts,
+            evidence,
           })
         : null,
-    [open, recording, findings, identityHidden, openDoubts],
+    [open, recording, findings, identityHidden, openDoubts, evidence],
   );
   usePageFoot(model?.foot ?? null);
   const page = useFocusOnce(model !== null);

@@ -12,6 +12,11 @@ export function ThirdSheet({ model }: { readonly model: ReportModel }) {
           <Figures key={table.inOrderOf.join()} table={table} caption="All other figures" />
         ))}
       </Part>
+      {model.evidence.length > 0 && (
+        <Part title="How far to believe it">
+          <Facts facts={model.evidence} />
+        </Part>
+      )}
       <Part title="How it was made">
         <Facts facts={model.making} />
         <h3>Settings</h3>

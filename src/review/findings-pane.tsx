@@ -1,15 +1,18 @@
 import './findings-pane.css';
 import { useState } from 'react';
 import { useStore } from 'zustand';
+import type { EvidencePart } from '../recording/evidence/evidence';
 import type { Findings } from '../recording/findings';
 import type { Edit } from '../session/document';
 import type { SessionStore } from '../session/store';
 import { formatClock } from '../units/time';
 import type { AnalysisStore } from './analysis-store';
+import type { EvidenceStore } from './evidence-store';
 import { goToStretch } from './findings-go';
 import { FindingsSpans } from './findings-spans';
 import { FindingsTable } from './findings-table';
 import { firstPair } from './findings-words';
+import { TrustLines } from './trust-lines';
 import type { ViewStore } from './view-store';
 
 export interface FindingsPaneProps {
@@ -19,10 +22,13 @@ export interface FindingsPaneProps {
   /** Opens the definition of a figure, for a phase of the findings. */
   readonly onFigure: (key: string, phase: string) => void;
   readonly onEdit: (edit: Edit) => void;
+  readonly evidence: EvidenceStore;
+  readonly onEvidence: (part: EvidencePart) => void;
 }
 
 /** The column of numbers: figures by phase, what stands above them, what was seen in passing, the spoiled spans. */
-export function FindingsPane({ session, analysis, view, onFigure, onEdit }: FindingsPaneProps) {
+export function FindingsPane(props: FindingsPaneProps) {
+  const { session, analysis, view, onFigure, onEdit, evidence, onEvidence } = props;
   const findings = useStore(analysis, (state) => state.findings);
   const computed = useStore(analysis, (state) => state.edit);
   const edit = useStore(session, (state) => state.session?.log.length ?? 0);
@@ -48,6 +54,7 @@ export function FindingsPane({ session, analysis, view, onFigure, onEdit }: Find
           <Seen findings={findings} onGo={go} />
         </div>
       ) : null}
+      {findings ? <TrustLines evidence={evidence} edit={edit} onOpen={onEvidence} /> : null}
       <FindingsSpans session={session} view={view} onEdit={onEdit} />
     </section>
   );

@@ -4,6 +4,7 @@ import type { Channel } from '../../src/recording/channel';
 import type { Epoch } from '../../src/recording/rhythm';
 import { secondsToTicks } from '../../src/units/ticks';
 import { inventedState, RATE_HZ, signature, span } from '../session/invented-session';
+import { INVENTED_EVIDENCE } from './invented-evidence';
 
 /** RR intervals in ms of check value CV-23 (field notes, Task Force 1996 definitions). */
 export const CV_23_RR_MS = [800, 810, 790, 860, 800, 805];
@@ -73,6 +74,7 @@ export function inventedInput(): ExportInput {
     sha256: 'ab'.repeat(32),
     program: 'Bicadence 0.1.0',
     edit: 7,
+    evidence: INVENTED_EVIDENCE,
     stomach: [
       {
         lead: '#1~#2',

@@ -48,6 +48,7 @@ function model({
     program: 'Bicadence 0.1.0',
     identityHidden: hidden,
     openDoubts,
+    evidence: {},
   });
 }
 

@@ -24,6 +24,7 @@ function page(signed: boolean): string {
     : begun;
   const model = reportModel({
     openDoubts: 0,
+    evidence: {},
     recording,
     session,
     findings,

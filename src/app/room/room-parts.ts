@@ -71,6 +71,8 @@ export function makeRoom(parts: AppParts, page: PageActs, leave: () => void): Ro
       signals: runner.signals,
       doubts: createDoubtStore(),
       doubtAccess: parts.doubtAccess,
+      evidence: parts.evidence,
+      evidenceAccess: parts.evidenceAccess,
       panes: paneCommands(panes.stores, panes.signals, panes.act),
       page: { ...page, reportOpen: () => false, room: acts },
     },

@@ -1,0 +1,50 @@
+import type { ReactNode } from 'react';
+import type { Evidence, EvidencePart } from '../../recording/evidence/evidence';
+import { LeadsPage } from './leads-page';
+import { OpinionsPage } from './opinions-page';
+import { PlantedPage } from './planted-page';
+import { RangesPage } from './ranges-page';
+import { TogetherPage } from './together-page';
+
+type PageOf<P extends EvidencePart> = {
+  readonly title: string;
+  /** What the page is for, in a sentence above it. */
+  readonly about: string;
+  readonly page: (value: Evidence[P]) => ReactNode;
+};
+
+/** The pages of the evidence dialog, one a part. */
+export const EVIDENCE_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
+  planted: {
+    title: 'Planted check',
+    about:
+      'Known slow waves and heartbeats planted in this recording’s own noise, taken the same way as the study’s own.',
+    page: (value) => <PlantedPage value={value} />,
+  },
+  ranges: {
+    title: 'Ranges',
+    about:
+      'How far each figure could be from the truth: by chance, by open doubts, by other limits.',
+    page: (value) => <RangesPage value={value} />,
+  },
+  opinions: {
+    title: 'Second opinions',
+    about: 'What other methods make of the same minutes.',
+    page: (value) => <OpinionsPage value={value} />,
+  },
+  leads: {
+    title: 'Several leads',
+    about: 'What leads that share no electrode say of each other. No claim of propagation.',
+    page: (value) => <LeadsPage value={value} />,
+  },
+  together: {
+    title: 'Both rhythms',
+    about: 'Stomach and heart over the same minutes. Exploratory: no reference values exist.',
+    page: (value) => <TogetherPage value={value} />,
+  },
+};
+
+/** The page of a part that is there, drawn; null where it is not. */
+export function evidencePage<P extends EvidencePart>(part: P, value: Evidence[P]): ReactNode {
+  return EVIDENCE_PAGES[part].page(value);
+}

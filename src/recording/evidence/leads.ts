@@ -1,0 +1,4 @@
+/** Placeholder of the part `leads`, to be filled before it reaches main. */
+export interface LeadsEvidence {
+  readonly lines: readonly string[];
+}
