@@ -5,7 +5,7 @@ export const EVIDENCE_COMMANDS: readonly Command[] = [
   {
     id: 'evidence',
     words: 'Evidence: how far to believe it…',
-    keys: ['Shift+W'],
+    keys: ['Shift+V'],
     group: 'study',
     when: 'study',
     menu: 'study',
