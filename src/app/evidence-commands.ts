@@ -5,7 +5,7 @@ export const EVIDENCE_COMMANDS: readonly Command[] = [
   {
     id: 'evidence',
     words: 'Evidence: how far to believe it…',
-    keys: ['Shift+V'],
+    keys: ['Shift+O'],
     group: 'study',
     when: 'study',
     menu: 'study',
