@@ -8,6 +8,7 @@ import { useAnalysis, useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { EpochTable, SegmentTable } from './figure-data';
 import { FigureHistory } from './figure-history';
+import { FigureRangesList } from './figure-ranges';
 
 interface FigureDialogProps {
   /** Key of the figure catalogue, and the name of the phase or part of it. */
@@ -45,6 +46,7 @@ export function FigureDialog({ figure, phase }: FigureDialogProps) {
       }
     >
       <FigureFacts definition={definition} part={part} settings={settings} />
+      <FigureRangesList definition={definition} part={part.name} />
       <FigureHistory definition={definition} part={part.name} />
       {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}
       {definition.organ === 'heart' ? <SegmentTable part={part} onGo={go} /> : null}

@@ -1,3 +1,6 @@
+import type { Range } from '../numeric/chance-range';
+import { type RangesEvidence, rangeOfChange, rangesOfFigure } from '../recording/evidence/ranges';
+import { rangeWords } from '../recording/evidence/ranges-words';
 import type { FigureValue } from '../recording/figure';
 import { FIGURES, type FigureDefinition, type Organ } from '../recording/figure-catalogue';
 import { changeWords, figureWords } from '../recording/figure-words';
@@ -17,6 +20,8 @@ export interface FindingsCell {
   /** Said in the cell itself, after the value: a change in decibel as a factor. */
   readonly small: string;
   readonly letters: readonly string[];
+  /** Beneath the value, its nominal 95 % range by chance; empty where none is told. */
+  readonly range: string;
 }
 
 export interface FindingsRow {
@@ -45,6 +50,7 @@ export interface FindingsTable {
   /** True where a change column holds dashes for figures that are never compared. */
   readonly hasNotCompared: boolean;
   readonly hasWithheld: boolean;
+  readonly hasRanges: boolean;
 }
 
 /** Fed phases side by side in one table; more of them go into a table below. */
@@ -70,16 +76,20 @@ interface WantedGroup {
 
 /**
  * The main figures of stomach and heart before and after the meal, with what else moved in the same minutes. Meals are left
- * out. One table, or more where a long study has many fed phases; fasting stands first in each.
+ * out. One table, or more where a long study has many fed phases; fasting stands first in each. Ranges by chance stand beneath
+ * the values where they are given.
  */
-export function mainTables(findings: Findings): readonly FindingsTable[] {
+export function mainTables(
+  findings: Findings,
+  ranges: RangesEvidence | null = null,
+): readonly FindingsTable[] {
   const organs: readonly Organ[] = ['stomach', 'heart'];
   const groups = organs.map((organ) => ({
     organ,
     figures: FIGURES.filter((figure) => figure.main && figure.organ === organ),
     beside: FIGURES.filter((figure) => explains(figure, organ)),
   }));
-  return tablesOf(findings, groups);
+  return tablesOf(findings, groups, ranges);
 }
 
 /** Every figure that mainTables leaves out, in the order of the catalogue. */
@@ -91,14 +101,19 @@ export function otherTables(findings: Findings): readonly FindingsTable[] {
     figures: others.filter((figure) => figure.organ === organ),
     beside: [],
   }));
-  return tablesOf(findings, groups);
+  return tablesOf(findings, groups, null);
 }
 
-function tablesOf(findings: Findings, wanted: readonly WantedGroup[]): readonly FindingsTable[] {
+function tablesOf(
+  findings: Findings,
+  wanted: readonly WantedGroup[],
+  ranges: RangesEvidence | null,
+): readonly FindingsTable[] {
   return partsSideBySide(findings.phases).map((parts) => {
     const notes = createNotes();
     const columns = columnsOf(parts, findings.changes);
-    const row = (figure: FigureDefinition) => rowOf(figure, { columns, parts, findings, notes });
+    const row = (figure: FigureDefinition) =>
+      rowOf(figure, { columns, parts, findings, ranges, notes });
     const groups = wanted.map(({ organ, figures, beside }) => ({
       organ,
       title: TITLES[organ],
@@ -115,6 +130,7 @@ function tablesOf(findings: Findings, wanted: readonly WantedGroup[]): readonly 
       inOrderOf: parts.length > 1 ? parts.map(({ name }) => name) : [],
       hasNotCompared: cells.some(({ kind }) => kind === 'not-compared'),
       hasWithheld: cells.some(({ kind }) => kind === 'withheld'),
+      hasRanges: cells.some(({ range }) => range !== ''),
     };
   });
 }
@@ -151,24 +167,31 @@ interface RowContext {
   readonly columns: readonly FindingsColumn[];
   readonly parts: readonly PhaseFindings[];
   readonly findings: Findings;
+  readonly ranges: RangesEvidence | null;
   readonly notes: Notes;
 }
 
 function rowOf(figure: FigureDefinition, context: RowContext): FindingsRow {
-  const { columns, parts, findings, notes } = context;
+  const { columns, parts, findings, ranges, notes } = context;
   const values = parts.map(({ figures }) => figures[figure.key]);
   const texts = rowTexts(values);
   const letters = texts.shared.map((text) => notes.letterOf(text));
   const cells = columns.map(({ kind, name }) => {
     if (kind === 'change') {
       const change = findings.changes.find(({ key, to }) => key === figure.key && to === name);
-      return changeCell(change?.value, figure, notes);
+      const range = ranges && change && rangeOfChange(ranges, figure.key, change.from, name);
+      return changeCell(change?.value, figure, notes, range);
     }
     const place = parts.findIndex((part) => part.name === name);
-    return phaseCell(values[place], figure, texts.own[place], notes);
+    const range = ranges && rangesOfFigure(ranges, name, figure.key);
+    const cell = phaseCell(values[place], figure, texts.own[place], notes);
+    return { ...cell, range: wordsOf(range?.chance, figure) };
   });
   return { key: figure.key, name: nameOf(figure), letters, cells };
 }
+
+const wordsOf = (range: Range | null | undefined, { decimals }: FigureDefinition): string =>
+  range ? rangeWords(range, decimals) : '';
 
 const nameOf = ({ label, unit }: FigureDefinition): string =>
   unit === '' ? label : `${label} (${unit})`;
@@ -225,21 +248,29 @@ function phaseCell(
   const { large, small } = figureWords(value, figure);
   const withheld = !value || value.kind === 'withheld';
   const letters = (withheld ? small : texts).map((text) => notes.letterOf(text));
-  return { kind: withheld ? 'withheld' : 'value', words: large, small: '', letters };
+  return { kind: withheld ? 'withheld' : 'value', words: large, small: '', letters, range: '' };
 }
 
 function changeCell(
   value: FigureValue | undefined,
   figure: FigureDefinition,
   notes: Notes,
+  range: Range | null | undefined,
 ): FindingsCell {
   if (figure.change === 'none' || !value)
-    return { kind: 'not-compared', words: '–', small: '', letters: [] };
+    return { kind: 'not-compared', words: '–', small: '', letters: [], range: '' };
   const { large, small } = changeWords(value, figure);
   if (value.kind !== 'number') {
     const kind = value.kind === 'withheld' ? 'withheld' : 'value';
-    return { kind, words: large, small: '', letters: small.map((text) => notes.letterOf(text)) };
+    const letters = small.map((text) => notes.letterOf(text));
+    return { kind, words: large, small: '', letters, range: '' };
   }
   const letters = value.marks.map((text) => notes.letterOf(text));
-  return { kind: 'value', words: large, small: value.basis ?? '', letters };
+  return {
+    kind: 'value',
+    words: large,
+    small: value.basis ?? '',
+    letters,
+    range: wordsOf(range, figure),
+  };
 }

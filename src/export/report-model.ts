@@ -78,6 +78,9 @@ export function reportModel(input: ReportInput): ReportModel {
   const status = reportStatus(session);
   const signed = status.kind === 'draft' ? null : status.signature;
   const findings = signed?.findings ?? input.findings;
+  const differences = signed ? differencesSinceSigning(signed.findings, input.findings) : [];
+  // Ranges are computed of the figures as they are now; they stand beside signed ones only where these are the same.
+  const hold = differences.length === 0;
   const words = hide(statusWords(status, session.log.length, identityHidden));
   return {
     kind: status.kind,
@@ -96,7 +99,7 @@ export function reportModel(input: ReportInput): ReportModel {
     ].map(hide),
     protocol: protocolFacts(state.protocol, hide),
     events: eventRows(state, hide),
-    main: mainTables(findings),
+    main: mainTables(findings, hold ? (input.evidence.ranges ?? null) : null),
     others: otherTables(findings),
     seen: findings.seen.map(({ fromS, toS, text }) => ({
       name: `${formatClock(fromS)}–${formatClock(toS)}`,
@@ -109,7 +112,7 @@ export function reportModel(input: ReportInput): ReportModel {
     notes: hide(signed?.notes ?? state.notes),
     conclusion: hide(signed?.conclusion ?? state.conclusion),
     signatures: signatureRows(status, identityHidden, hide),
-    differences: signed ? differencesSinceSigning(signed.findings, input.findings) : [],
+    differences,
     ...makingOf(input, signed, hide),
   };
 }

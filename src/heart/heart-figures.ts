@@ -70,7 +70,8 @@ function countFigures(input: HeartFiguresInput, heart: PartOfHeart): Figures {
   };
 }
 
-function partOf(input: HeartFiguresInput): PartOfHeart {
+/** One part of the study as its heart figures see it. */
+export function partOfHeart(input: HeartFiguresInput): PartOfHeart {
   const { rr, part, settings, timingSdMs, breathing } = input;
   const { first, end } = intervalsWithin(rr, part.fromS, part.toS);
   const segments = segmentsOnce(input);
@@ -99,7 +100,7 @@ function partOf(input: HeartFiguresInput): PartOfHeart {
  * Figures of variability leave out irregular segments; heart rate and mean NN do not.
  */
 export function heartFigures(input: HeartFiguresInput): HeartFigures {
-  const heart = partOf(input);
+  const heart = partOfHeart(input);
   return {
     figures: {
       ...timeFigures(heart),

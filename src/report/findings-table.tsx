@@ -46,10 +46,11 @@ export function Figures({
 
 /** How the table and its notes are to be read. */
 function readingWords(table: FindingsTable): readonly string[] {
-  const { columns, inOrderOf, hasNotCompared, hasWithheld } = table;
+  const { columns, inOrderOf, hasNotCompared, hasWithheld, hasRanges } = table;
   const compared = columns.flatMap(({ kind, name }) => (kind === 'change' ? [name] : []));
   return [
     ...(compared.length > 0 ? [`Change: ${compared.join(', ')} less fasting.`] : []),
+    ...(hasRanges ? ['Beneath a figure: its range by chance, nominal 95 %.'] : []),
     ...(hasNotCompared ? ['–: not compared between phases.'] : []),
     ...(hasWithheld ? ['—: withheld; its letter says why.'] : []),
     ...(inOrderOf.length > 0
@@ -117,7 +118,7 @@ function Row({
 }
 
 function Cell({
-  cell: { kind, words, small, letters },
+  cell: { kind, words, small, letters, range },
   column,
 }: {
   readonly cell: FindingsCell;
@@ -135,6 +136,7 @@ function Cell({
       {words}
       {small !== '' && <small> ({small})</small>}
       <Letters letters={letters} />
+      {range !== '' && <span className="report-range">{range}</span>}
     </td>
   );
 }

@@ -10,7 +10,7 @@ import type { AnalysisStore } from './analysis-store';
 import type { EvidenceStore } from './evidence-store';
 import { goToStretch } from './findings-go';
 import { FindingsSpans } from './findings-spans';
-import { FindingsTable } from './findings-table';
+import { FindingsTable, type RangesShown } from './findings-table';
 import { firstPair } from './findings-words';
 import { TrustLines } from './trust-lines';
 import type { ViewStore } from './view-store';
@@ -35,6 +35,8 @@ export function FindingsPane(props: FindingsPaneProps) {
   const working = useStore(analysis, (state) => state.progress !== null);
   const stopped = useStore(analysis, (state) => state.stopped);
   const stale = findings !== null && computed < edit;
+  const found = useStore(evidence, (state) => state.found.ranges);
+  const ranges = found ? { value: found.value, stale: found.edit !== edit } : null;
   const go = (fromS: number, toS: number) => goToStretch(view, fromS, toS);
   return (
     <section className="findings" id="findings" tabIndex={-1} aria-labelledby="findings-title">
@@ -50,7 +52,7 @@ export function FindingsPane(props: FindingsPaneProps) {
           aria-busy={stale && !stopped}
         >
           <Warnings findings={findings} />
-          <PhaseFigures findings={findings} onFigure={onFigure} onGo={go} />
+          <PhaseFigures findings={findings} ranges={ranges} onFigure={onFigure} onGo={go} />
           <Seen findings={findings} onGo={go} />
         </div>
       ) : null}
@@ -90,11 +92,12 @@ function Warnings({ findings }: { readonly findings: Findings }) {
 
 interface PhaseFiguresProps {
   readonly findings: Findings;
+  readonly ranges: RangesShown | null;
   readonly onFigure: (key: string, phase: string) => void;
   readonly onGo: (fromS: number, toS: number) => void;
 }
 
-function PhaseFigures({ findings, onFigure, onGo }: PhaseFiguresProps) {
+function PhaseFigures({ findings, ranges, onFigure, onGo }: PhaseFiguresProps) {
   const [picked, setPicked] = useState<{ left?: string; right?: string }>({});
   const [all, setAll] = useState(false);
   const [left, right] = firstPair(findings);
@@ -104,6 +107,7 @@ function PhaseFigures({ findings, onFigure, onGo }: PhaseFiguresProps) {
     <>
       <FindingsTable
         findings={findings}
+        ranges={ranges}
         left={there(picked.left) ?? left}
         right={there(picked.right) ?? right}
         all={all}

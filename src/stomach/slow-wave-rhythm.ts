@@ -28,9 +28,9 @@ export interface SlowWaveRhythmOptions {
   readonly memory?: StomachMemory;
 }
 
-/** The rhythm of one lead with the spectra its phases' figures are made of. */
-export interface StomachAnalysis {
-  readonly rhythm: SlowWaveRhythm;
+/** The judged epochs of one lead with the spectra its phases' figures are made of. */
+export interface EpochAnalysis {
+  readonly rhythm: Pick<SlowWaveRhythm, 'epochs'>;
   /** One an epoch of rhythm.epochs: power density in uV2/Hz of the recorded lead; null where not kept. */
   readonly epochSpectra: readonly (Float64Array | null)[];
   /** Bin k of a spectrum lies at k * binCpm. */
@@ -39,6 +39,11 @@ export interface StomachAnalysis {
   readonly missing: readonly Interval[];
   /** The breathing its epochs were judged beside; null where nothing is known of it. */
   readonly breathing: BreathingSeries | null;
+}
+
+/** The rhythm of one lead with what the panes draw of it. */
+export interface StomachAnalysis extends EpochAnalysis {
+  readonly rhythm: SlowWaveRhythm;
 }
 
 interface Lead {
@@ -143,21 +148,14 @@ function windowsOf(
   return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
-/**
- * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
- * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
- * spectra; a phase that reaches past the lead ends with it.
- */
-export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
-  const { slow, spoiled, phases, settings } = options;
+function leadOf(options: SlowWaveRhythmOptions): Lead {
+  const { slow, spoiled, settings } = options;
   const { lengthS } = settings.epoch;
-  const endS = slow.forSpectra.length / slow.rateHz;
   const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
-  const missing = missingStretches(slow.forSpectra, slow.rateHz);
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
-  const lead: Lead = {
+  return {
     memory,
     options,
     windows: memory.windows,
@@ -168,22 +166,58 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-  const analysed = phases.flatMap((phase) =>
+}
+
+/** Judges the epochs of every phase, one after the other; yields what part of them is done. */
+function* judged(lead: Lead): Generator<number, EpochAnalysis> {
+  const { slow, phases, settings, breathing } = lead.options;
+  const endS = slow.forSpectra.length / slow.rateHz;
+  const laid = phases.flatMap((phase) =>
     epochStarts(
       { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
       settings.epoch,
-    ).map((fromS) => analyseEpoch(lead, phase, fromS)),
+    ).map((fromS) => ({ phase, fromS })),
   );
+  const analysed: ReturnType<typeof analyseEpoch>[] = [];
+  for (const { phase, fromS } of laid) {
+    analysed.push(analyseEpoch(lead, phase, fromS));
+    yield analysed.length / laid.length;
+  }
   return {
+    rhythm: { epochs: analysed.map(({ epoch }) => epoch) },
+    epochSpectra: analysed.map(({ spectrum }) => spectrum),
+    binCpm: lead.windows.binCpm,
+    missing: missingStretches(slow.forSpectra, slow.rateHz),
+    breathing,
+  };
+}
+
+/** The epochs of `slowWaveRhythm` without the picture of their running spectrum, an epoch a step. */
+export function* epochsInSteps(options: SlowWaveRhythmOptions): Generator<number, EpochAnalysis> {
+  const lead = leadOf(options);
+  yield 0;
+  return yield* judged(lead);
+}
+
+/**
+ * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
+ * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
+ * spectra; a phase that reaches past the lead ends with it.
+ */
+export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
+  const { slow, settings } = options;
+  const lead = leadOf(options);
+  const steps = judged(lead);
+  let step = steps.next();
+  while (!step.done) step = steps.next();
+  const analysis = step.value;
+  return {
+    ...analysis,
     rhythm: {
       lead: slow.lead,
-      epochs: analysed.map(({ epoch }) => epoch),
+      epochs: analysis.rhythm.epochs,
       spectrogram: runningSpectrogram(lead.windows, slow.forSpectra.length, slow.rateHz, settings),
       crestsS: lead.crestsS,
     },
-    epochSpectra: analysed.map(({ spectrum }) => spectrum),
-    binCpm: lead.windows.binCpm,
-    missing,
-    breathing: options.breathing,
   };
 }
