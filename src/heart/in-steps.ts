@@ -19,3 +19,27 @@ export function* quietly<T>(pass: Generator<void, T>, done: number): Generator<n
     yield done;
   }
 }
+
+/** What a pass returns, without a rest. */
+export function atOnce<T>(pass: Generator<unknown, T>): T {
+  for (;;) {
+    const step = pass.next();
+    if (step.done) return step.value;
+  }
+}
+
+/** Items made into others between two rests. */
+const ITEMS_A_STEP = 1500;
+
+/** An array's map that takes a rest now and then. */
+export function* mapInSteps<A, B>(
+  items: readonly A[],
+  make: (item: A, i: number) => B,
+): Generator<void, B[]> {
+  const made: B[] = [];
+  for (let i = 0; i < items.length; i += 1) {
+    made.push(make(items[i], i));
+    if (i % ITEMS_A_STEP === ITEMS_A_STEP - 1) yield;
+  }
+  return made;
+}
