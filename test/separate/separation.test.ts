@@ -354,3 +354,10 @@ test('route band drawn again for a narrower band is what separation gives for it
   const redrawn = redrawSlowWave(slow, narrow, PLAINLY(slow), ALL_ROUTES);
   expect(redrawn.slowWave).toEqual(slowOf(lead, { rateHz: 50, settings: narrow }).slowWave);
 });
+
+test('route band draws the slow wave once, when it is first asked for', () => {
+  const slow = slowOf(signalOf(400, 50, tone(100, 0.05)), { rateHz: 50 });
+  slow.recorded.fill(0);
+  expect(middleSize(slow.slowWave)).toBe(0);
+  expect(slow.slowWave).toBe(slow.slowWave);
+});
