@@ -76,7 +76,7 @@ function meanAt(lead: Float64Array, places: readonly number[]): number {
 
 /**
  * The most likely values at `wanted` given what lies on the sides, each side having a level of its own (kriging with an
- * unknown mean a side; Matheron 1963): the values without level, and the two levels.
+ * unknown mean a side; Matheron 1963): the values without level, and the two levels. A lead that is 0 throughout stays so.
  */
 function mostLikely(
   lead: Float64Array,
@@ -90,7 +90,8 @@ function mostLikely(
   const matrix = new Float64Array(n * n);
   for (let i = 0; i < n; i += 1)
     for (let j = 0; j <= i; j += 1) matrix[i * n + j] = at(Math.abs(places[i] - places[j]));
-  for (let i = 0; i < n; i += 1) matrix[i * n + i] *= 1 + UNFORESEEN;
+  const power = at(0) > 0 ? at(0) : 1;
+  for (let i = 0; i < n; i += 1) matrix[i * n + i] = power * (1 + UNFORESEEN);
   const [nearBefore, nearAfter] = [meanAt(lead, before), meanAt(lead, after)];
   const values = Float64Array.from(
     places,
