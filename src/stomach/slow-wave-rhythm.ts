@@ -42,13 +42,21 @@ export interface StomachAnalysis {
   readonly breathing: BreathingSeries | null;
 }
 
+/** Samples missing for so long are a stop of the recorder, which no epoch reaches across; fewer are left out like spoiled ones. */
+const STOP_S = 1;
+
 interface Lead {
   readonly memory: StomachMemory;
   readonly options: SlowWaveRhythmOptions;
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
+  /** Stops of the recorder. */
+  readonly stops: readonly Interval[];
 }
+
+const reachesAcross = (stops: readonly Interval[], fromS: Seconds, toS: Seconds): boolean =>
+  stops.some((stop) => stop.fromS < toS && stop.toS > fromS);
 
 /** Windows beside an epoch that have a say in it, and its own. */
 const ROW_PLACES = [-4, -3, -2, -1, 0, 1, 2, 3, 4];
@@ -93,7 +101,8 @@ function rowAt(lead: Lead, phase: Interval, first: number): WindowRow | null {
     const inside = from >= phase.fromS * rateHz - 1 && from + length <= phase.toS * rateHz + 1;
     if (!inside || from < 0 || from + length > options.slow.forSpectra.length) return [];
     const { spoiledFraction } = windows.at(from);
-    return spoiledFraction > options.settings.epoch.maxSpoiled
+    const stopped = reachesAcross(lead.stops, from / rateHz, (from + length) / rateHz);
+    return stopped || spoiledFraction > options.settings.epoch.maxSpoiled
       ? []
       : [{ place, over: windows.overAt(from) }];
   });
@@ -124,7 +133,8 @@ function analyseEpoch(lead: Lead, phase: Phase, fromS: Seconds) {
     toS: fromS + lengthS,
     spoiledFraction,
   };
-  if (spoiledFraction > maxSpoiled || spoiledFraction === 1) {
+  const stopped = reachesAcross(lead.stops, fromS, fromS + lengthS);
+  if (stopped || spoiledFraction > maxSpoiled || spoiledFraction === 1) {
     const nothing = { dfCpm: null, dpDb: null, peakShare: null, rhythm: null, flags: [] };
     const epoch: Epoch = { ...place, kept: false, ...nothing };
     return { epoch, spectrum: null };
@@ -147,7 +157,7 @@ function windowsOf(
 /**
  * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
  * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
- * spectra; a phase that reaches past the lead ends with it.
+ * spectra, and an epoch in which the recorder stopped is not kept; a phase that reaches past the lead ends with it.
  */
 export const slowWaveRhythm = (options: SlowWaveRhythmOptions): StomachAnalysis =>
   atOnce(slowWaveRhythmInSteps(options));
@@ -170,6 +180,7 @@ export function* slowWaveRhythmInSteps(
     options,
     windows: memory.windows,
     halfWindows: memory.halfWindows,
+    stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
     crestsS: crestTimes(slow.slowWave, {
       rateHz: slow.rateHz,
       highCpm: settings.rhythmBands.highCpm,
