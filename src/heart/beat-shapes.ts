@@ -1,10 +1,10 @@
+import { quietly } from '../numeric/in-steps';
 import { median } from '../numeric/statistics';
 import { latestWaveS } from './after-wave';
 import { type Growing, type Match, matchMiddle, middle, type Rows, rms } from './beat-rows';
 import { noiseByHalfSecond, SIDE_S } from './between-beats';
 import { type Distinct, distinctShapes } from './distinct-shapes';
 import { chunksOf, type HeartSignal } from './energy-pass';
-import { quietly } from './in-steps';
 import { filterBand, rmsAbout } from './qrs-bands';
 import { likeSideWave, type SideWave, sideWaves } from './side-waves';
 

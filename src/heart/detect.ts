@@ -1,3 +1,4 @@
+import { quietly } from '../numeric/in-steps';
 import { BEAT_CLASSES, BEAT_ORIGINS, type BeatClass, type BeatList } from '../recording/beat';
 import { type Interval, isWithin } from '../recording/span';
 import { dominantSign, type ShapeAverage, withFiducials } from './beat-average';
@@ -5,7 +6,6 @@ import { measureBeats } from './beat-quality';
 import { classifyBeats, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
-import { quietly } from './in-steps';
 import { isMisread, legibleStretches } from './legible';
 import { withMisfitsUnusable } from './out-of-place';
 import { decidedPlaces, expectedWrong, loudPlaces } from './place-odds';

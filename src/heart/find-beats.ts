@@ -1,3 +1,4 @@
+import { mapInSteps, quietly, scaled } from '../numeric/in-steps';
 import { medianInPlace } from '../numeric/statistics';
 import { afterWaveCosts, type Host, usualCourses } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
@@ -10,7 +11,6 @@ import {
   levelsOf,
 } from './energy-pass';
 import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
-import { mapInSteps, quietly, scaled } from './in-steps';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';

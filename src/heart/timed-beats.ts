@@ -1,7 +1,7 @@
+import { quietly } from '../numeric/in-steps';
 import { averageBeats, type ShapeAverage, timeBeat } from './beat-average';
 import { isOfShape } from './classify';
 import type { HeartSignal } from './energy-pass';
-import { quietly } from './in-steps';
 import type { Candidate } from './shape-pass';
 import { crestPlace } from './sub-sample';
 import { readFilled } from './usable-signal';

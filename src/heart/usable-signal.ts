@@ -1,5 +1,5 @@
+import { atOnce } from '../numeric/in-steps';
 import type { Interval } from '../recording/span';
-import { atOnce } from './in-steps';
 
 /** A stretch of samples, `from` included, `to` not. */
 export interface SampleRange {

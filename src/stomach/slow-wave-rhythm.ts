@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import type { Epoch, SlowWaveRhythm } from '../recording/rhythm';
@@ -158,7 +159,13 @@ function windowsOf(
  * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
  * spectra, and an epoch in which the recorder stopped is not kept; a phase that reaches past the lead ends with it.
  */
-export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
+export const slowWaveRhythm = (options: SlowWaveRhythmOptions): StomachAnalysis =>
+  atOnce(slowWaveRhythmInSteps(options));
+
+/** slowWaveRhythm with a rest after each epoch. */
+export function* slowWaveRhythmInSteps(
+  options: SlowWaveRhythmOptions,
+): Generator<void, StomachAnalysis> {
   const { slow, spoiled, phases, settings } = options;
   const { lengthS } = settings.epoch;
   const endS = slow.forSpectra.length / slow.rateHz;
@@ -167,6 +174,7 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
+  yield;
   const lead: Lead = {
     memory,
     options,
@@ -179,17 +187,26 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-  const analysed = phases.flatMap((phase) =>
-    epochStarts(
-      { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
-      settings.epoch,
-    ).map((fromS) => analyseEpoch(lead, phase, fromS)),
+  yield;
+  const analysed: ReturnType<typeof analyseEpoch>[] = [];
+  for (const phase of phases) {
+    const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
+    for (const fromS of epochStarts(within, settings.epoch)) {
+      analysed.push(analyseEpoch(lead, phase, fromS));
+      yield;
+    }
+  }
+  const spectrogram = runningSpectrogram(
+    lead.windows,
+    slow.forSpectra.length,
+    slow.rateHz,
+    settings,
   );
   return {
     rhythm: {
       lead: slow.lead,
       epochs: analysed.map(({ epoch }) => epoch),
-      spectrogram: runningSpectrogram(lead.windows, slow.forSpectra.length, slow.rateHz, settings),
+      spectrogram: yield* spectrogram,
       crestsS: lead.crestsS,
     },
     epochSpectra: analysed.map(({ spectrum }) => spectrum),

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { detectBeats } from '../../src/heart/detect';
-import { atOnce } from '../../src/heart/in-steps';
 import { beatsOutOfPlace, withMisfitsUnusable } from '../../src/heart/out-of-place';
+import { atOnce } from '../../src/numeric/in-steps';
 import { BEAT_CLASSES } from '../../src/recording/beat';
 import { heartbeatOf } from './record208';
 import { randomIntervals, randomOf, sinusIntervals, withEarlyBeats } from './rhythms';

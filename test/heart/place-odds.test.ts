@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import { atOnce } from '../../src/heart/in-steps';
 import { legibleStretches } from '../../src/heart/legible';
 import { decidedPlaces, expectedWrong, loudPlaces } from '../../src/heart/place-odds';
 import { rhythmOf } from '../../src/heart/rhythm-path';
+import { atOnce } from '../../src/numeric/in-steps';
 
 const rateHz = 100;
 const steady = () => rhythmOf(0.8, 0.06, 0.05);

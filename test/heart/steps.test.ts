@@ -2,12 +2,12 @@ import { describe, expect, it } from 'vitest';
 import type { Shape } from '../../src/heart/beat-shapes';
 import { classifyBeats } from '../../src/heart/classify';
 import { detectInSteps } from '../../src/heart/detect';
-import { atOnce, mapInSteps } from '../../src/heart/in-steps';
 import { withMisfitsUnusable } from '../../src/heart/out-of-place';
 import { decidedPlaces } from '../../src/heart/place-odds';
 import { rhythmOf } from '../../src/heart/rhythm-path';
 import { rhythmFromBeats } from '../../src/heart/rhythm-track';
 import type { Candidate } from '../../src/heart/shape-pass';
+import { atOnce, mapInSteps } from '../../src/numeric/in-steps';
 import type { BeatList } from '../../src/recording/beat';
 import { addBeats, addNoise, NARROW, planBeats } from './simulated-heart';
 
