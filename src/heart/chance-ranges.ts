@@ -5,12 +5,14 @@ import {
   type Ordered,
   rangeAbout,
 } from '../numeric/chance-range';
+import { quietly } from '../numeric/in-steps';
 import { median, wilson } from '../numeric/statistics';
 import { type Figures, numberOf } from '../recording/figure';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import { BREATHING_STEP_S } from './breathing-peak';
 import { type HeartFiguresInput, partOfHeart } from './heart-figures';
+
 import { judgedSegments, type PartOfHeart } from './part';
 import type { SegmentResult } from './segments';
 
@@ -39,9 +41,8 @@ type Told = readonly [key: string, range: ChanceRange | null];
 export function* heartChanceRanges(
   input: HeartRangesInput,
 ): Generator<number, Readonly<Record<string, ChanceRange>>> {
-  const heart = partOfHeart(input);
+  const heart = yield* quietly(partOfHeart(input), 0);
   const { figures } = input;
-  yield 0;
   const groups = [rateRanges, stepRanges, spreadRanges, powerRanges];
   const told: [string, ChanceRange][] = [];
   for (const [place, rangesOf] of groups.entries())

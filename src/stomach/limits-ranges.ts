@@ -64,7 +64,7 @@ export function* limitsRanges(
       const own = { ...settings, rhythmBands, epoch: { ...settings.epoch, lengthS } };
       const steps = epochsInSteps({ ...options, settings: own, memory });
       let step = steps.next();
-      for (; !step.done; step = steps.next()) yield (done + step.value) / variants;
+      for (; !step.done; step = steps.next()) yield done / variants;
       done += 1;
       for (const part of parts) {
         const { figures } = stomachFigures({

@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import type { Epoch, SlowWaveRhythm } from '../recording/rhythm';
@@ -46,13 +47,21 @@ export interface StomachAnalysis extends EpochAnalysis {
   readonly rhythm: SlowWaveRhythm;
 }
 
+/** Samples missing for so long are a stop of the recorder, which no epoch reaches across; fewer are left out like spoiled ones. */
+const STOP_S = 1;
+
 interface Lead {
   readonly memory: StomachMemory;
   readonly options: SlowWaveRhythmOptions;
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
+  /** Stops of the recorder. */
+  readonly stops: readonly Interval[];
 }
+
+const reachesAcross = (stops: readonly Interval[], fromS: Seconds, toS: Seconds): boolean =>
+  stops.some((stop) => stop.fromS < toS && stop.toS > fromS);
 
 /** Windows beside an epoch that have a say in it, and its own. */
 const ROW_PLACES = [-4, -3, -2, -1, 0, 1, 2, 3, 4];
@@ -97,7 +106,8 @@ function rowAt(lead: Lead, phase: Interval, first: number): WindowRow | null {
     const inside = from >= phase.fromS * rateHz - 1 && from + length <= phase.toS * rateHz + 1;
     if (!inside || from < 0 || from + length > options.slow.forSpectra.length) return [];
     const { spoiledFraction } = windows.at(from);
-    return spoiledFraction > options.settings.epoch.maxSpoiled
+    const stopped = reachesAcross(lead.stops, from / rateHz, (from + length) / rateHz);
+    return stopped || spoiledFraction > options.settings.epoch.maxSpoiled
       ? []
       : [{ place, over: windows.overAt(from) }];
   });
@@ -128,7 +138,8 @@ function analyseEpoch(lead: Lead, phase: Phase, fromS: Seconds) {
     toS: fromS + lengthS,
     spoiledFraction,
   };
-  if (spoiledFraction > maxSpoiled || spoiledFraction === 1) {
+  const stopped = reachesAcross(lead.stops, fromS, fromS + lengthS);
+  if (stopped || spoiledFraction > maxSpoiled || spoiledFraction === 1) {
     const nothing = { dfCpm: null, dpDb: null, peakShare: null, rhythm: null, flags: [] };
     const epoch: Epoch = { ...place, kept: false, ...nothing };
     return { epoch, spectrum: null };
@@ -148,75 +159,84 @@ function windowsOf(
   return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
-function leadOf(options: SlowWaveRhythmOptions): Lead {
-  const { slow, spoiled, settings } = options;
+interface Judged {
+  readonly lead: Lead;
+  readonly analysis: EpochAnalysis;
+}
+
+/** Judges the epochs of every phase, with a rest after each. */
+function* judgedLead(options: SlowWaveRhythmOptions): Generator<void, Judged> {
+  const { slow, spoiled, phases, settings, breathing } = options;
   const { lengthS } = settings.epoch;
+  const endS = slow.forSpectra.length / slow.rateHz;
   const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
+  const missing = missingStretches(slow.forSpectra, slow.rateHz);
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
-  return {
+  yield;
+  const lead: Lead = {
     memory,
     options,
     windows: memory.windows,
     halfWindows: memory.halfWindows,
+    stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
     crestsS: crestTimes(slow.slowWave, {
       rateHz: slow.rateHz,
       highCpm: settings.rhythmBands.highCpm,
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-}
-
-/** Judges the epochs of every phase, one after the other; yields what part of them is done. */
-function* judged(lead: Lead): Generator<number, EpochAnalysis> {
-  const { slow, phases, settings, breathing } = lead.options;
-  const endS = slow.forSpectra.length / slow.rateHz;
-  const laid = phases.flatMap((phase) =>
-    epochStarts(
-      { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
-      settings.epoch,
-    ).map((fromS) => ({ phase, fromS })),
-  );
+  yield;
   const analysed: ReturnType<typeof analyseEpoch>[] = [];
-  for (const { phase, fromS } of laid) {
-    analysed.push(analyseEpoch(lead, phase, fromS));
-    yield analysed.length / laid.length;
+  for (const phase of phases) {
+    const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
+    for (const fromS of epochStarts(within, settings.epoch)) {
+      analysed.push(analyseEpoch(lead, phase, fromS));
+      yield;
+    }
   }
-  return {
+  const analysis = {
     rhythm: { epochs: analysed.map(({ epoch }) => epoch) },
     epochSpectra: analysed.map(({ spectrum }) => spectrum),
     binCpm: lead.windows.binCpm,
-    missing: missingStretches(slow.forSpectra, slow.rateHz),
+    missing,
     breathing,
   };
+  return { lead, analysis };
 }
 
-/** The epochs of `slowWaveRhythm` without the picture of their running spectrum, an epoch a step. */
-export function* epochsInSteps(options: SlowWaveRhythmOptions): Generator<number, EpochAnalysis> {
-  const lead = leadOf(options);
-  yield 0;
-  return yield* judged(lead);
+/** The epochs of `slowWaveRhythm` alone, without what the panes draw, with a rest after each. */
+export function* epochsInSteps(options: SlowWaveRhythmOptions): Generator<void, EpochAnalysis> {
+  return (yield* judgedLead(options)).analysis;
 }
 
 /**
  * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
  * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
- * spectra; a phase that reaches past the lead ends with it.
+ * spectra, and an epoch in which the recorder stopped is not kept; a phase that reaches past the lead ends with it.
  */
-export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
+export const slowWaveRhythm = (options: SlowWaveRhythmOptions): StomachAnalysis =>
+  atOnce(slowWaveRhythmInSteps(options));
+
+/** slowWaveRhythm with a rest after each epoch. */
+export function* slowWaveRhythmInSteps(
+  options: SlowWaveRhythmOptions,
+): Generator<void, StomachAnalysis> {
   const { slow, settings } = options;
-  const lead = leadOf(options);
-  const steps = judged(lead);
-  let step = steps.next();
-  while (!step.done) step = steps.next();
-  const analysis = step.value;
+  const { lead, analysis } = yield* judgedLead(options);
+  const spectrogram = runningSpectrogram(
+    lead.windows,
+    slow.forSpectra.length,
+    slow.rateHz,
+    settings,
+  );
   return {
     ...analysis,
     rhythm: {
       lead: slow.lead,
       epochs: analysis.rhythm.epochs,
-      spectrogram: runningSpectrogram(lead.windows, slow.forSpectra.length, slow.rateHz, settings),
+      spectrogram: yield* spectrogram,
       crestsS: lead.crestsS,
     },
   };

@@ -4,6 +4,7 @@ import type { Decision, Undecided } from '../../src/heart/decisions';
 import { heartDoubtRanges } from '../../src/heart/doubt-ranges';
 import { heartFigures } from '../../src/heart/heart-figures';
 import { rrSeries } from '../../src/heart/rr-series';
+import { atOnce } from '../../src/numeric/in-steps';
 import { type Beat, type BeatList, beatAt, changeBeats } from '../../src/recording/beat';
 import { numberOf } from '../../src/recording/figure';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
@@ -87,10 +88,7 @@ function rangesOf(undecided: Undecided) {
     breathing: NO_BREATHING,
     known: new Map(),
   });
-  for (;;) {
-    const next = steps.next();
-    if (next.done) return next.value;
-  }
+  return atOnce(steps);
 }
 
 const extremes = (ways: ReturnType<typeof everyWay>, key: string) => {

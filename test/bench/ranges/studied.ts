@@ -3,6 +3,7 @@ import { heartChanceRanges } from '../../../src/heart/chance-ranges';
 import { heartFigures } from '../../../src/heart/heart-figures';
 import { rrSeries } from '../../../src/heart/rr-series';
 import type { ChanceRange } from '../../../src/numeric/chance-range';
+import { atOnce } from '../../../src/numeric/in-steps';
 import type { Figures } from '../../../src/recording/figure';
 import { DEFAULT_SETTINGS } from '../../../src/recording/settings';
 import { stomachChanceRanges } from '../../../src/stomach/chance-ranges';
@@ -26,7 +27,7 @@ export function stomachStudied(lead: Float64Array, minutes: number): Studied {
   const { figures, keptS } = stomachFigures({ analysis, phase: part, spoiled: [], settings });
   return {
     figures,
-    ranges: finished(stomachChanceRanges({ analysis, part, figures, keptS, settings })),
+    ranges: atOnce(stomachChanceRanges({ analysis, part, figures, keptS, settings })),
   };
 }
 
@@ -44,11 +45,5 @@ export function heartStudied(rrMs: readonly number[], minutes: number): Studied 
     breathing: NO_BREATHING,
   };
   const { figures } = heartFigures(input);
-  return { figures, ranges: finished(heartChanceRanges({ ...input, figures })) };
-}
-
-function finished<T>(steps: Generator<number, T>): T {
-  let step = steps.next();
-  while (!step.done) step = steps.next();
-  return step.value;
+  return { figures, ranges: atOnce(heartChanceRanges({ ...input, figures })) };
 }
