@@ -20,7 +20,7 @@ import { lostOn } from '../src/recording/lost';
 import { phasesOrWhole } from '../src/recording/phase';
 import type { Interval, Span } from '../src/recording/span';
 import { stomachChanceRanges } from '../src/stomach/chance-ranges';
-import { limitsRanges, type PartLimits } from '../src/stomach/limits-ranges';
+import { type LimitsMemory, limitsRanges, type PartLimits } from '../src/stomach/limits-ranges';
 import { inTurns, type Job } from './job';
 import { spansAfter } from './pipeline-doubt-effects';
 import type { EvidenceInputs } from './pipeline-evidence';
@@ -187,11 +187,19 @@ async function heartChance(from: EvidenceInputs, job: Job): Promise<readonly ByK
   return found;
 }
 
+/** What was tried of a study's drawn leads; of a long one nothing is kept, since it would be hundreds of megabytes. */
+const tried = new WeakMap<object, LimitsMemory>();
+const KEPT_UP_TO_S = 4 * 3600;
+
 async function byLimits(
   { inputs, recording, slow, computed }: EvidenceInputs,
   job: Job,
 ): Promise<ReadonlyMap<string, PartLimits>> {
   const { settings, roles, spans } = inputs;
+  const { forSpectra } = slow[roles.reported];
+  const isLong = recording.durationS > KEPT_UP_TO_S;
+  const memories: LimitsMemory | null = isLong ? null : (tried.get(forSpectra) ?? new Map());
+  if (memories) tried.set(forSpectra, memories);
   const steps = limitsRanges(
     {
       slow: slow[roles.reported],
@@ -201,6 +209,7 @@ async function byLimits(
       breathing: computed.breathing,
     },
     computed.findings.phases,
+    memories,
   );
   return inTurns(steps, job, 'Trying other limits');
 }

@@ -184,7 +184,10 @@ function* peakRanges(
   const sum = new Float64Array(about[0].length);
   const drawnPeak = (places: Int32Array) => {
     sum.fill(0);
-    for (const place of places) for (let k = 0; k < sum.length; k += 1) sum[k] += about[place][k];
+    for (let i = 0; i < places.length; i += 1) {
+      const one = about[places[i]];
+      for (let k = 0; k < sum.length; k += 1) sum[k] += one[k];
+    }
     return dominantPeak(sum, binCpm, { lowCpm: 0, highCpm: sum.length * binCpm });
   };
   const range = (

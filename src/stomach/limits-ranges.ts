@@ -4,7 +4,7 @@ import { BAND_PRESETS, bandsName, type RhythmBands, type Settings } from '../rec
 import type { Seconds } from '../units/time';
 import { stomachFigures } from './figures';
 import { epochsInSteps, type SlowWaveRhythmOptions } from './slow-wave-rhythm';
-import { createStomachMemory } from './stomach-memory';
+import { createStomachMemory, type StomachMemory } from './stomach-memory';
 
 /** Lengths of epochs in use. */
 const LENGTHS_S: readonly Seconds[] = [180, 240, 300];
@@ -21,6 +21,9 @@ const KEYS = [
   'share_normo_pct',
   'share_tachy_pct',
 ] as const;
+
+/** What trying limits leaves for the next time: windows by epoch length, judged epochs by length and limits. */
+export type LimitsMemory = Map<string, StomachMemory>;
 
 interface NamedPart {
   readonly name: string;
@@ -47,11 +50,13 @@ const wordsOf = (bands: RhythmBands, lengthS: Seconds): string =>
 /**
  * The lowest and highest of each percentage under every published set of limits (BAND_PRESETS) and under epochs of 3, 4 and
  * 5 min, all combinations, beside the settings in force; by the name of the part. Each is computed from the start, as the
- * printed figures are. Yields how far it is. Percentages that a variant withholds leave it out.
+ * printed figures are. Yields how far it is. Percentages that a variant withholds leave it out. A memory kept from call to call
+ * spares what has not changed; results are the same without one.
  */
 export function* limitsRanges(
   options: Omit<SlowWaveRhythmOptions, 'memory'>,
   parts: readonly NamedPart[],
+  kept: LimitsMemory | null,
 ): Generator<number, ReadonlyMap<string, PartLimits>> {
   const { settings, spoiled } = options;
   const { lengths, bands } = variantsOf(settings);
@@ -59,12 +64,16 @@ export function* limitsRanges(
   const variants = lengths.length * bands.length;
   let done = 0;
   for (const lengthS of lengths) {
-    const memory = createStomachMemory();
+    const memories: LimitsMemory = kept ?? new Map();
+    const windows = memoryAt(memories, String(lengthS));
     for (const rhythmBands of bands) {
+      const memory = memoryAt(memories, wordsOf(rhythmBands, lengthS));
+      Object.assign(memory, { windows: windows.windows, halfWindows: windows.halfWindows });
       const own = { ...settings, rhythmBands, epoch: { ...settings.epoch, lengthS } };
       const steps = epochsInSteps({ ...options, settings: own, memory });
       let step = steps.next();
       for (; !step.done; step = steps.next()) yield done / variants;
+      Object.assign(windows, { windows: memory.windows, halfWindows: memory.halfWindows });
       done += 1;
       for (const part of parts) {
         const { figures } = stomachFigures({
@@ -81,6 +90,12 @@ export function* limitsRanges(
     }
   }
   return new Map([...found].map(([name, ranges]) => [name, Object.fromEntries(ranges)]));
+}
+
+function memoryAt(memories: LimitsMemory, name: string): StomachMemory {
+  const memory = memories.get(name) ?? createStomachMemory();
+  memories.set(name, memory);
+  return memory;
 }
 
 function widen(ranges: Map<string, LimitsRange>, figures: Figures, by: string): void {

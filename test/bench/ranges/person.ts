@@ -37,9 +37,14 @@ export type State = 'fasting' | 'fed';
 /** A wander of variance 1, asked for at ascending times. */
 function wander(random: Random, timeS: number): (stepS: number) => number {
   let value = random.gaussian();
+  let [lastS, keep, fresh] = [0, 1, 0];
   return (stepS) => {
-    const keep = Math.exp(-stepS / timeS);
-    value = keep * value + Math.sqrt(1 - keep * keep) * random.gaussian();
+    if (stepS !== lastS) {
+      keep = Math.exp(-stepS / timeS);
+      fresh = Math.sqrt(1 - keep * keep);
+      lastS = stepS;
+    }
+    value = keep * value + fresh * random.gaussian();
     return value;
   };
 }
