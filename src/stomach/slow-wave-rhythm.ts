@@ -143,21 +143,15 @@ function windowsOf(
   return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
-/**
- * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
- * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
- * spectra; a phase that reaches past the lead ends with it.
- */
-export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
-  const { slow, spoiled, phases, settings } = options;
+/** A lead ready to be judged: its windows, those kept from before where nothing of them has changed, and its crests. */
+function leadOf(options: SlowWaveRhythmOptions): Lead {
+  const { slow, spoiled, settings } = options;
   const { lengthS } = settings.epoch;
-  const endS = slow.forSpectra.length / slow.rateHz;
   const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
-  const missing = missingStretches(slow.forSpectra, slow.rateHz);
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
-  const lead: Lead = {
+  return {
     memory,
     options,
     windows: memory.windows,
@@ -168,12 +162,54 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-  const analysed = phases.flatMap((phase) =>
+}
+
+/** Epochs of the phases, one after the other. */
+function* epochsOf(lead: Lead): Generator<number, ReturnType<typeof analyseEpoch>[]> {
+  const { slow, phases, settings } = lead.options;
+  const endS = slow.forSpectra.length / slow.rateHz;
+  const laid = phases.flatMap((phase) =>
     epochStarts(
       { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
       settings.epoch,
-    ).map((fromS) => analyseEpoch(lead, phase, fromS)),
+    ).map((fromS) => ({ phase, fromS })),
   );
+  const analysed: ReturnType<typeof analyseEpoch>[] = [];
+  for (const { phase, fromS } of laid) {
+    analysed.push(analyseEpoch(lead, phase, fromS));
+    yield analysed.length / laid.length;
+  }
+  return analysed;
+}
+
+/** Epochs with the spectra they were judged by. */
+export type JudgedEpochs = Pick<StomachAnalysis, 'epochSpectra' | 'binCpm'> & {
+  readonly epochs: readonly Epoch[];
+};
+
+/** The epochs alone, as slowWaveRhythm judges them, in steps of one; yields the part done. */
+export function* judgedEpochs(options: SlowWaveRhythmOptions): Generator<number, JudgedEpochs> {
+  const lead = leadOf(options);
+  const analysed = yield* epochsOf(lead);
+  return {
+    epochs: analysed.map(({ epoch }) => epoch),
+    epochSpectra: analysed.map(({ spectrum }) => spectrum),
+    binCpm: lead.windows.binCpm,
+  };
+}
+
+/**
+ * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
+ * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
+ * spectra; a phase that reaches past the lead ends with it.
+ */
+export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
+  const { slow, settings } = options;
+  const lead = leadOf(options);
+  const steps = epochsOf(lead);
+  let step = steps.next();
+  while (!step.done) step = steps.next();
+  const analysed = step.value;
   return {
     rhythm: {
       lead: slow.lead,
@@ -183,7 +219,7 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
     },
     epochSpectra: analysed.map(({ spectrum }) => spectrum),
     binCpm: lead.windows.binCpm,
-    missing,
+    missing: missingStretches(slow.forSpectra, slow.rateHz),
     breathing: options.breathing,
   };
 }
