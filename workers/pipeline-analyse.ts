@@ -1,6 +1,6 @@
 import type { Findings } from '../src/recording/findings';
 import { type Lead, leadKey } from '../src/recording/lead';
-import { type Interval, spansOf } from '../src/recording/span';
+import { spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import type { Analysis, ReviewInputs } from './analysis-api';
 import { breathesWithin } from './breathing-reference';
@@ -9,7 +9,7 @@ import { blockedOf, detectionOf, proposedSpans, toJudge } from './pipeline-beats
 import type { DoubtInputs } from './pipeline-doubts';
 import { wantedOf } from './pipeline-propose';
 import type { Computed } from './pipeline-results';
-import { leadChannel } from './pipeline-signals';
+import { leadChannel, type SlowWish } from './pipeline-signals';
 import { apartFrom, inLine, type Reckoned, type Study } from './pipeline-study';
 import { sameReview } from './same-series';
 
@@ -44,11 +44,17 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
         job,
       )
     : null;
+  const parts =
+    settings.slowRoute === 'beat-average'
+      ? await (await import('./pipeline-average')).heartPartsOf(study, inputs, job)
+      : null;
+  const wishOf = (lead: Lead): SlowWish => ({
+    spoiled: spoiledOf(lead),
+    heartPart: parts?.get(leadKey(lead)) ?? null,
+  });
   const from = {
     inputs,
-    slow: roles.slow.map((lead) =>
-      study.signals.slow(lead, settings, { spoiled: spoiledOf(lead) }),
-    ),
+    slow: roles.slow.map((lead) => study.signals.slow(lead, settings, wishOf(lead))),
     heart: heart ? study.signals.heart(heart) : null,
     heartRateHz: heart ? leadChannel(study.source.recording, heart).rateHz : 0,
     blocked: heart ? blockedOf(study, heart, inputs.spans) : [],
@@ -56,7 +62,7 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
     breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
   };
   const first = await study.results.of(from, job);
-  const slow = redrawn(study, inputs, from.slow, { first, spoiledOf });
+  const slow = redrawn(study, inputs, from.slow, { first, wishOf });
   const last = slow ? { ...from, slow } : from;
   study.last = { from: last, computed: slow ? await study.results.of(last, job) : first };
   return study.last;
@@ -90,15 +96,14 @@ function redrawn(
   study: Study,
   { roles, settings }: ReviewInputs,
   drawn: readonly SeparatedSlow[],
-  known: { readonly first: Computed; readonly spoiledOf: (lead: Lead) => readonly Interval[] },
+  known: { readonly first: Computed; readonly wishOf: (lead: Lead) => SlowWish },
 ): readonly SeparatedSlow[] | null {
-  const { first, spoiledOf } = known;
-  const wish = (lead: Lead) => ({ spoiled: spoiledOf(lead) });
+  const { first, wishOf } = known;
   if (settings.slowRoute === 'fractional')
     return settings.fractional.undoLead
       ? roles.slow.map((lead) =>
           study.signals.slow(lead, settings, {
-            ...wish(lead),
+            ...wishOf(lead),
             dfCpm: study.results.usualCpm(leadKey(lead)),
           }),
         )
@@ -116,6 +121,6 @@ function redrawn(
       rateHz,
       length: recorded.length,
     });
-    return study.signals.slow(lead, settings, { ...wish(lead), breathing });
+    return study.signals.slow(lead, settings, { ...wishOf(lead), breathing });
   });
 }

@@ -113,7 +113,7 @@ const marginOf = (rateHz: Hertz) => Math.round(MARGIN_S * rateHz);
 function bridgedLead(
   recorded: Float64Array,
   rateHz: Hertz,
-  { kept, breathing }: Omit<Drawing, 'dfCpm'>,
+  { kept, breathing }: Pick<Drawing, 'kept' | 'breathing'>,
 ): Bridged | null {
   const first = leadSpectra(recorded, kept, rateHz, 'zero');
   if (!first) return null;
@@ -156,12 +156,13 @@ function drawingTaps(
   return cascadeKernels(band, centredKernel(gain)).taps;
 }
 
-function drawBand(
+/** The slow wave of a lead at the slow rate by route `band`. */
+export function drawBand(
   lead: string,
   recorded: Float64Array,
   rateHz: Hertz,
   settings: Settings,
-  drawing: Omit<Drawing, 'dfCpm'>,
+  drawing: Pick<Drawing, 'kept' | 'breathing'>,
 ): SeparatedSlow {
   const ready = bridgedLead(recorded, rateHz, drawing);
   const taps = drawingTaps(rateHz, settings, ready?.spectra ?? null);
@@ -183,6 +184,7 @@ function drawBand(
     unclean: uncleanStretches(gaps, recorded.length, rateHz, { afterS: feltS, beforeS: feltS }),
     leadSAt: () => 0,
     derivativeLeadSAt: () => 0,
+    wide: null,
     notes: [
       drawnWords(settings, Math.round(taps.length / rateHz), ready !== null),
       ...breathingWords(ready?.breathingOut ?? []),
