@@ -4,8 +4,8 @@ export const LAGRANGE_COUNT = 6;
 
 /**
  * Weights of six neighbouring samples, from LAGRANGE_FIRST on, for the value `fraction` (0 to below 1) of a sample after
- * sample 0: the polynomial of degree 5 through them (Lagrange). For a wave of at least five samples a cycle it is within 1 %
- * of its size, for one of ten within 0.02 %.
+ * sample 0: the polynomial of degree 5 through them (Lagrange). For a wave of at least five samples a cycle it is within 2 %
+ * of its size, for one of ten within 0.03 %.
  */
 export function lagrangeWeights(fraction: number): Float64Array {
   const weights = new Float64Array(LAGRANGE_COUNT);
