@@ -1,6 +1,7 @@
 import type { Settings } from '../recording/settings';
-import { bandRoute, drawBand } from './band';
-import type { Drawing, HeartPart, Route, SeparatedSlow } from './route';
+import { drawBand, drawnWhenAsked, present, undrawn } from './band';
+import type { HeartPart, Route, SeparatedSlow } from './route';
+import { slowRateHz } from './slow-rate';
 import { carriesBeats, createWideSampler } from './wide-lead';
 
 const NOTHING_OUT = {
@@ -19,40 +20,45 @@ function takenOutWords(
   return `The average heartbeat is taken out at ${part.beats} beats: from ${beforeMs} ms before to ${afterMs} ms after R at most, mean of ${beats} beats of the same class nearby, in each beat's own size.`;
 }
 
-function redraw(slow: SeparatedSlow, settings: Settings, drawing: Drawing): SeparatedSlow {
-  const part = slow.wide ? drawing.heartPart : null;
-  const lead = part ? slow.recorded.map((value, i) => value - part.uv[i]) : slow.recorded;
-  const drawn = drawBand(slow.lead, lead, slow.rateHz, settings, drawing);
-  return {
-    ...drawn,
-    route: 'beat-average',
-    recorded: slow.recorded,
-    wide: slow.wide,
-    notes: [...drawn.notes, takenOutWords(slow, part, settings)],
-  };
-}
-
 /**
  * Route `beat-average`: the local average heartbeat is taken out of the lead, then route `band`; spectra are those of the lead
- * without it. The heartbeat itself is that of `band`, since the beats have to be found first. Until they are, the
- * wave is drawn with the heartbeats in it.
+ * without it. It makes no heartbeat, since the beats have to be found in one first. Until they are, the wave is drawn with the
+ * heartbeats in it. Throws where a heartbeat is asked of it.
  */
 export const beatAverageRoute: Route = {
-  start(job) {
-    const band = bandRoute.start(job);
-    const wide = job.slow && carriesBeats(job.rateHz) ? createWideSampler(job.rateHz) : null;
+  start({ lead, rateHz, settings, heart }) {
+    if (heart) throw new Error('route beat-average makes no heartbeat');
+    const wide = carriesBeats(rateHz) ? createWideSampler(rateHz) : null;
     return {
       push(block) {
-        band.push(block);
         wide?.push(block);
       },
       finish(recorded, facts) {
-        const { slow, heart } = band.finish(recorded, facts);
-        if (!slow) return { slow, heart };
-        const unmade = { ...slow, wide: wide?.finish(facts) ?? null };
-        return { slow: { ...unmade, route: 'beat-average' }, heart };
+        const slowHz = slowRateHz(rateHz);
+        const rest = undrawn(lead, recorded, slowHz, settings);
+        const drawing = { kept: present(recorded), breathing: null };
+        return {
+          slow: drawnWhenAsked(
+            { ...rest, route: 'beat-average', wide: wide?.finish(facts) ?? null },
+            () => drawBand(recorded, slowHz, settings, drawing),
+          ),
+          heart: null,
+        };
       },
     };
   },
-  redraw,
+  *redraw(slow, settings, drawing) {
+    const { lead, recorded, rateHz, wide } = slow;
+    const part = wide ? drawing.heartPart : null;
+    const without = part ? recorded.map((value, i) => value - part.uv[i]) : recorded;
+    const drawn = yield* drawBand(without, rateHz, settings, drawing);
+    return {
+      ...undrawn(lead, recorded, rateHz, settings),
+      route: 'beat-average',
+      forSpectra: without,
+      wide,
+      slowWave: drawn.slowWave,
+      notes: [...drawn.notes, takenOutWords(slow, part, settings)],
+    };
+  },
 };
