@@ -3,7 +3,7 @@ import type { PlantedRate } from '../src/recording/evidence/planted';
 import type { BreathingSeries } from '../src/recording/heart-series';
 import type { Epoch } from '../src/recording/rhythm';
 import type { Interval } from '../src/recording/span';
-import type { Drawing, SeparatedSlow } from '../src/separate/route';
+import type { SeparatedSlow } from '../src/separate/route';
 import { keptSamples } from '../src/stomach/kept-samples';
 import { type JudgedEpochs, judgedEpochs } from '../src/stomach/slow-wave-rhythm';
 import { usualCpm } from '../src/stomach/usual-cpm';
@@ -11,8 +11,8 @@ import { windowSpectra } from '../src/stomach/window-spectrum';
 import type { Leftover } from '../src/trust/leftover';
 import { PLANTED_CPM, patternCpm, plantedWave } from '../src/trust/planted-wave';
 import type { CheckPlan } from '../src/trust/stretches';
-import type { Job } from './job';
-import { drawnAgain, type RoutedLead, withChange } from './pipeline-planted-route';
+import { type Job, withRests } from './job';
+import { type DrawnWith, drawnAgain, type RoutedLead, withChange } from './pipeline-planted-route';
 
 /** The planted waves' phases: the same each time. */
 const SEED = 20_260_502;
@@ -37,7 +37,7 @@ export interface SlowCheck {
   /** The lead's own epochs. */
   readonly epochs: readonly Epoch[];
   readonly plan: CheckPlan;
-  readonly drawing: Omit<Drawing, 'dfCpm'>;
+  readonly drawing: Omit<DrawnWith, 'dfCpm'>;
 }
 
 /** A lead with something planted, as the program draws and judges it. */
@@ -46,24 +46,21 @@ export interface Judged {
   readonly judged: JudgedEpochs;
 }
 
-export async function judge(
+export const judge = (
   { lead, spoiled, breathing, plan }: SlowCheck,
   drawn: SeparatedSlow,
   job: Job,
-): Promise<JudgedEpochs> {
-  const steps = judgedEpochs({
-    slow: drawn,
-    spoiled,
-    phases: plan.phases,
-    settings: lead.settings,
-    breathing,
-  });
-  for (;;) {
-    const step = steps.next();
-    if (step.done) return step.value;
-    await job.breathe();
-  }
-}
+): Promise<JudgedEpochs> =>
+  withRests(
+    judgedEpochs({
+      slow: drawn,
+      spoiled,
+      phases: plan.phases,
+      settings: lead.settings,
+      breathing,
+    }),
+    job,
+  );
 
 /** Draws and judges the lead with a change, the drawn wave put back by its lead at the rhythm found where the settings ask for it. */
 export async function drawAndJudge(
@@ -73,12 +70,12 @@ export async function drawAndJudge(
 ): Promise<Judged> {
   const { lead, drawing } = check;
   const changed = await withChange(lead, change, job);
-  const drawn = drawnAgain(lead, changed, { ...drawing, dfCpm: USUAL_CPM });
+  const drawn = await drawnAgain(lead, changed, { ...drawing, dfCpm: USUAL_CPM }, job);
   await job.breathe();
   const judged = await judge(check, drawn, job);
   if (!lead.settings.fractional.undoLead || drawn.powerResponse === null) return { drawn, judged };
   return {
-    drawn: drawnAgain(lead, changed, { ...drawing, dfCpm: usualCpm(judged) }),
+    drawn: await drawnAgain(lead, changed, { ...drawing, dfCpm: usualCpm(judged) }, job),
     judged,
   };
 }

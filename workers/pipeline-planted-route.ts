@@ -1,8 +1,11 @@
+import type { BeatList } from '../src/recording/beat';
 import type { Settings } from '../src/recording/settings';
+import { heartPart } from '../src/separate/heart-part';
 import type { Drawing, SeparatedSlow } from '../src/separate/route';
 import { loadRoutes, type Routes } from '../src/separate/routes';
-import { createSeparation, redrawSlowWave } from '../src/separate/separation';
-import type { Job } from './job';
+import { createSeparation, redrawInSteps } from '../src/separate/separation';
+import type { WideLead } from '../src/separate/wide-lead';
+import { type Job, withRests } from './job';
 
 const PIECE_SAMPLES = 16_384;
 
@@ -14,6 +17,8 @@ export interface RoutedLead {
   readonly rateHz: number;
   readonly sampleCount: number;
   readonly routes: Routes;
+  /** The study's beats and the rate of their ticks, for routes that take heartbeats out; null without a heart lead. */
+  readonly beats: { readonly list: BeatList; readonly rateHz: number } | null;
 }
 
 /** The route of a lead's drawn slow wave at hand. */
@@ -21,9 +26,11 @@ export async function routedLead(
   slow: SeparatedSlow,
   settings: Settings,
   channel: { readonly rateHz: number; readonly sampleCount: number },
+  beats: RoutedLead['beats'],
 ): Promise<RoutedLead> {
   const { rateHz, sampleCount } = channel;
-  return { slow, settings, rateHz, sampleCount, routes: await loadRoutes([settings.slowRoute]) };
+  const routes = await loadRoutes([settings.slowRoute]);
+  return { slow, settings, rateHz, sampleCount, routes, beats };
 }
 
 /** Samples [from, to) at a lead's own rate of what is given at the slow one, by cubics through four (Catmull & Rom 1974). */
@@ -61,6 +68,12 @@ async function filteredChange(lead: RoutedLead, change: Float64Array, job: Job) 
   return separation.finish().slow?.forSpectra ?? null;
 }
 
+/** A lead at a rate that shows its heartbeats, with a change at the slow rate added. */
+function wideWith(wide: WideLead, change: Float64Array, slowRateHz: number): WideLead {
+  const added = upsampled(change, wide.rateHz / slowRateHz, 0, wide.samples.length);
+  return { ...wide, samples: wide.samples.map((value, i) => value + added[i]) };
+}
+
 /**
  * The lead as it would have come out of its route, had `change` (at the slow rate, uV) been in the recording. Where spectra are
  * those of the recorded lead, the change is added to that, and the wave is drawn from it; where the route filtered the samples
@@ -73,16 +86,36 @@ export async function withChange(
 ): Promise<SeparatedSlow> {
   const { slow } = lead;
   const recorded = slow.recorded.map((value, i) => value + change[i]);
-  if (slow.powerResponse === null) return { ...slow, recorded, forSpectra: recorded };
+  const wide = slow.wide && wideWith(slow.wide, change, slow.rateHz);
+  if (slow.powerResponse === null) return { ...slow, recorded, forSpectra: recorded, wide };
   const filtered = await filteredChange(lead, change, job);
   if (!filtered) throw new Error('the route gives no slow wave');
   const forSpectra = slow.forSpectra.map((value, i) => value + filtered[i]);
-  return { ...slow, recorded, forSpectra };
+  return { ...slow, recorded, forSpectra, wide };
 }
 
-/** Such a lead drawn by its route. */
-export const drawnAgain = (
-  { settings, routes }: RoutedLead,
+/** What a wave is drawn with, beside what hangs on the lead itself. */
+export type DrawnWith = Omit<Drawing, 'heartPart'>;
+
+/** Such a lead drawn by its route; where that takes heartbeats out, they are averaged in this lead anew. */
+export async function drawnAgain(
+  { settings, routes, beats }: RoutedLead,
   changed: SeparatedSlow,
-  drawing: Drawing,
-): SeparatedSlow => redrawSlowWave(changed, settings, drawing, routes);
+  drawing: DrawnWith,
+  job: Job,
+): Promise<SeparatedSlow> {
+  const part =
+    changed.wide && beats
+      ? await withRests(
+          heartPart({
+            wide: changed.wide,
+            beats: beats.list,
+            beatRateHz: beats.rateHz,
+            kept: drawing.kept,
+            settings: settings.beatAverage,
+          }),
+          job,
+        )
+      : null;
+  return withRests(redrawInSteps(changed, settings, { ...drawing, heartPart: part }, routes), job);
+}

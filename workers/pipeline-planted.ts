@@ -36,8 +36,9 @@ export async function slowCheckOf(from: EvidenceInputs, job: Job): Promise<SlowC
   const leftover = await leftoverOfLead({ slow, spoiled, rhythm }, job);
   if (!leftover) return null;
   const { recorded, rateHz } = slow;
+  const beats = roles.heart ? { list: inputs.beats, rateHz: from.heartRateHz } : null;
   return {
-    lead: await routedLead(slow, settings, leadChannel(recording, lead)),
+    lead: await routedLead(slow, settings, leadChannel(recording, lead), beats),
     leftover,
     spoiled,
     breathing: computed.breathing,

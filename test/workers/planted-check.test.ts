@@ -45,7 +45,7 @@ async function checkOf(recorded: Float64Array, settings: Settings): Promise<Slow
   const leftover = await leftoverOfLead({ slow, spoiled: [], rhythm }, job);
   if (!leftover) throw new Error('there is a leftover');
   return {
-    lead: await routedLead(slow, settings, { rateHz: RATE_HZ, sampleCount: recorded.length }),
+    lead: await routedLead(slow, settings, { rateHz: RATE_HZ, sampleCount: recorded.length }, null),
     leftover,
     spoiled: [],
     breathing: null,
@@ -182,8 +182,8 @@ describe('the planted check of a slow wave', () => {
   it('exposes a route that draws the wave late, or draws something else', async () => {
     const broken = (draw: (drawn: Float64Array) => Float64Array): Route => ({
       ...bandRoute,
-      redraw(...args) {
-        const drawn = bandRoute.redraw(...args);
+      *redraw(...args) {
+        const drawn = yield* bandRoute.redraw(...args);
         return { ...drawn, slowWave: draw(drawn.slowWave) };
       },
     });
