@@ -194,8 +194,17 @@ export async function figure(page: Page, key: string, phase = 'fasting'): Promis
 export const figureNumber = async (page: Page, key: string, phase = 'fasting'): Promise<number> =>
   Number(await figure(page, key, phase));
 
-/** All figures in sight, in words, to compare a whole column at once. */
+/** All figures in sight with what each stands on, to compare a whole column at once; their ranges follow later. */
 export async function allFigures(page: Page): Promise<readonly string[]> {
   await settled(page);
-  return findings(page).locator('button.figure').allInnerTexts();
+  return findings(page)
+    .locator('button.figure')
+    .evaluateAll((buttons) =>
+      buttons.map((button) =>
+        (button.getAttribute('title') ?? '')
+          .split('\n')
+          .filter((line) => !line.includes(' by chance, '))
+          .join('; '),
+      ),
+    );
 }

@@ -56,7 +56,8 @@ interface Lead {
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
-  /** Stops of the recorder. */
+  /** Stretches without samples, and those of them that are stops of the recorder. */
+  readonly missing: readonly Interval[];
   readonly stops: readonly Interval[];
 }
 
@@ -159,35 +160,35 @@ function windowsOf(
   return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
-interface Judged {
-  readonly lead: Lead;
-  readonly analysis: EpochAnalysis;
-}
-
-/** Judges the epochs of every phase, with a rest after each. */
-function* judgedLead(options: SlowWaveRhythmOptions): Generator<void, Judged> {
-  const { slow, spoiled, phases, settings, breathing } = options;
+/** A lead ready to be judged: its windows, those kept from before where nothing of them has changed, and its crests. */
+function* leadOf(options: SlowWaveRhythmOptions): Generator<void, Lead> {
+  const { slow, spoiled, settings } = options;
   const { lengthS } = settings.epoch;
-  const endS = slow.forSpectra.length / slow.rateHz;
   const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
   const missing = missingStretches(slow.forSpectra, slow.rateHz);
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
   yield;
-  const lead: Lead = {
+  return {
     memory,
     options,
     windows: memory.windows,
     halfWindows: memory.halfWindows,
     stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
+    missing,
     crestsS: crestTimes(slow.slowWave, {
       rateHz: slow.rateHz,
       highCpm: settings.rhythmBands.highCpm,
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-  yield;
+}
+
+/** Epochs of the phases with their spectra, with a rest after each. */
+function* epochsOf(lead: Lead): Generator<void, JudgedEpochs> {
+  const { slow, phases, settings } = lead.options;
+  const endS = slow.forSpectra.length / slow.rateHz;
   const analysed: ReturnType<typeof analyseEpoch>[] = [];
   for (const phase of phases) {
     const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
@@ -196,19 +197,30 @@ function* judgedLead(options: SlowWaveRhythmOptions): Generator<void, Judged> {
       yield;
     }
   }
-  const analysis = {
-    rhythm: { epochs: analysed.map(({ epoch }) => epoch) },
+  return {
+    epochs: analysed.map(({ epoch }) => epoch),
     epochSpectra: analysed.map(({ spectrum }) => spectrum),
     binCpm: lead.windows.binCpm,
-    missing,
-    breathing,
   };
-  return { lead, analysis };
 }
 
-/** The epochs of `slowWaveRhythm` alone, without what the panes draw, with a rest after each. */
+/** Epochs with the spectra they were judged by. */
+export type JudgedEpochs = Pick<StomachAnalysis, 'epochSpectra' | 'binCpm'> & {
+  readonly epochs: readonly Epoch[];
+};
+
+/** The epochs alone, as slowWaveRhythm judges them, with a rest after each. */
+export function* judgedEpochs(options: SlowWaveRhythmOptions): Generator<void, JudgedEpochs> {
+  return yield* epochsOf(yield* leadOf(options));
+}
+
+/** All that figures are made of, without what the panes draw, with a rest after each epoch. */
 export function* epochsInSteps(options: SlowWaveRhythmOptions): Generator<void, EpochAnalysis> {
-  return (yield* judgedLead(options)).analysis;
+  const lead = yield* leadOf(options);
+  yield;
+  const { epochs, epochSpectra, binCpm } = yield* epochsOf(lead);
+  const { missing } = lead;
+  return { rhythm: { epochs }, epochSpectra, binCpm, missing, breathing: options.breathing };
 }
 
 /**
@@ -224,20 +236,16 @@ export function* slowWaveRhythmInSteps(
   options: SlowWaveRhythmOptions,
 ): Generator<void, StomachAnalysis> {
   const { slow, settings } = options;
-  const { lead, analysis } = yield* judgedLead(options);
-  const spectrogram = runningSpectrogram(
-    lead.windows,
-    slow.forSpectra.length,
-    slow.rateHz,
-    settings,
-  );
+  const lead = yield* leadOf(options);
+  yield;
+  const { epochs, epochSpectra, binCpm } = yield* epochsOf(lead);
+  const { length } = slow.forSpectra;
+  const spectrogram = runningSpectrogram(lead.windows, length, slow.rateHz, settings);
   return {
-    ...analysis,
-    rhythm: {
-      lead: slow.lead,
-      epochs: analysis.rhythm.epochs,
-      spectrogram: yield* spectrogram,
-      crestsS: lead.crestsS,
-    },
+    rhythm: { lead: slow.lead, epochs, spectrogram: yield* spectrogram, crestsS: lead.crestsS },
+    epochSpectra,
+    binCpm,
+    missing: lead.missing,
+    breathing: options.breathing,
   };
 }

@@ -1,4 +1,5 @@
 import type { Evidence } from '../../src/recording/evidence/evidence';
+import { INVENTED_PLANTED } from './invented-planted';
 import { INVENTED_RANGES } from './invented-ranges';
 
 /** Evidence of an invented study; each part is filled in by whoever tests what is written of it. */
@@ -7,5 +8,5 @@ export const INVENTED_EVIDENCE: Evidence = {
   opinions: { lines: [] },
   leads: { lines: [] },
   together: { lines: [] },
-  planted: { lines: [] },
+  planted: INVENTED_PLANTED,
 };
