@@ -3,7 +3,8 @@ import { breathingChanceRange, heartChanceRanges } from '../src/heart/chance-ran
 import type { Decision, Undecided } from '../src/heart/decisions';
 import { heartDoubtRanges } from '../src/heart/doubt-ranges';
 import type { SegmentResult } from '../src/heart/segments';
-import { type ChanceRange, differenceRange } from '../src/numeric/chance-range';
+import { type ChanceRange, differenceRange, type Range } from '../src/numeric/chance-range';
+import { pow } from '../src/numeric/elementary';
 import type { Doubt } from '../src/recording/doubt';
 import type {
   ChangeRange,
@@ -134,8 +135,15 @@ function changeRanges(
     });
     if (value.kind !== 'number' || !before || !after) return [];
     const { low, high } = differenceRange(before, after);
-    return Number.isFinite(low) && Number.isFinite(high) ? [{ key, from, to, low, high }] : [];
+    if (!Number.isFinite(low) || !Number.isFinite(high)) return [];
+    return [{ key, from, to, low, high, ratio: ratioOf(key, { low, high }) }];
   });
+}
+
+/** A change in dB as one of the ratio of powers. */
+function ratioOf(key: string, { low, high }: Range): Range | null {
+  if (FIGURES.find((figure) => figure.key === key)?.unit !== 'dB') return null;
+  return { low: pow(10, low / 10), high: pow(10, high / 10) };
 }
 
 async function stomachChance(

@@ -77,6 +77,6 @@ function changeFacts(
     .filter((one) => one.key === key && one.to === part)
     .map((one) => ({
       name: `Change from ${one.from}`,
-      words: `${rangeWords(one, decimals)} ${unit}${unit === 'dB' ? `, ${ratioWords(one)}` : ''} by chance, nominal 95 %`,
+      words: `${rangeWords(one, decimals)} ${unit}${one.ratio ? `, ${ratioWords(one)}` : ''} by chance, nominal 95 %`,
     }));
 }

@@ -32,6 +32,15 @@ export const INVENTED_RANGES: RangesEvidence = {
       ],
     },
   ],
-  changes: [{ key: 'dp_mean_spectrum_db', from: 'fasting', to: 'fed', low: -0.44, high: 3.81 }],
+  changes: [
+    {
+      key: 'dp_mean_spectrum_db',
+      from: 'fasting',
+      to: 'fed',
+      low: -0.44,
+      high: 3.81,
+      ratio: { low: 0.9036, high: 2.4044 },
+    },
+  ],
   openHeartDoubts: 3,
 };

@@ -166,7 +166,7 @@ function ChangesTable({ changes }: { readonly changes: readonly ChangeRange[] })
                   {figure.label} <span className="quiet">{figure.unit}</span>
                 </th>
                 <td>{rangeWords(one, figure.decimals)}</td>
-                <td>{figure.unit === 'dB' ? ratioWords(one) : '—'}</td>
+                <td>{ratioWords(one)}</td>
               </tr>
             )),
         )}

@@ -35,10 +35,14 @@ export const rangesJson = ({ phases, changes, openHeartDoubts }: RangesEvidence)
       ]),
     ),
   })),
-  changes: changes.map(({ key, from, to, ...range }) => ({
+  changes: changes.map(({ key, from, to, ratio, ...range }) => ({
     key,
     from,
     to,
     by_chance: ends(key, range),
+    ratio_by_chance: ratio && {
+      low: roundedTo(ratio.low, 2),
+      high: roundedTo(ratio.high, 2),
+    },
   })),
 });

@@ -1,8 +1,7 @@
 import type { Range } from '../../numeric/chance-range';
-import { pow } from '../../numeric/elementary';
 import { FIGURES, type FigureDefinition } from '../figure-catalogue';
 import type { EvidenceLine } from './evidence-line';
-import type { DoubtsRange, LimitsRange, RangesEvidence } from './ranges';
+import type { ChangeRange, DoubtsRange, LimitsRange, RangesEvidence } from './ranges';
 
 const minus = (text: string): string => text.replace(/^-(?=0(\.0*)?$)/, '').replace('-', '−');
 
@@ -12,9 +11,9 @@ export function rangeWords({ low, high }: Range, decimals: number): string {
   return `${from}${low < 0 ? ' to ' : '–'}${to}`;
 }
 
-/** A range of a difference in dB as one of the ratio: "× 0.9–2.4". */
-export const ratioWords = ({ low, high }: Range): string =>
-  `× ${rangeWords({ low: pow(10, low / 10), high: pow(10, high / 10) }, 1)}`;
+/** A change in dB as one of the ratio of powers: "× 0.9–2.4"; a dash of any other. */
+export const ratioWords = ({ ratio }: ChangeRange): string =>
+  ratio ? `× ${rangeWords(ratio, 1)}` : '—';
 
 export const exactWords = ({ exact }: DoubtsRange): string =>
   exact ? 'exact' : 'each doubt’s effect added up';

@@ -35,6 +35,8 @@ export interface ChangeRange extends Range {
   readonly key: string;
   readonly from: string;
   readonly to: string;
+  /** Of a change in dB, the same as a ratio of powers; null of any other. */
+  readonly ratio: Range | null;
 }
 
 export interface RangesEvidence {
