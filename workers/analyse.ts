@@ -2,17 +2,15 @@ import { createHash } from 'node:crypto';
 import { createReadStream, openAsBlob } from 'node:fs';
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { basename, extname, join } from 'node:path';
-import { exportFiles } from '../src/export/all-files';
-import { separatedEdf } from '../src/export/separated-edf';
-import { NO_BEATS } from '../src/recording/beat';
+import { bytesOf } from '../src/export/result-file';
 import { Refusal } from '../src/recording/failure';
-import { leadChannels, leadKey } from '../src/recording/lead';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
+import { excerptWaves } from '../src/report/excerpt-waves';
+import { resultFiles } from '../src/report/result-files';
 import { confirmStudy } from '../src/session/confirm-study';
-import type { Session, SessionState } from '../src/session/document';
+import type { Session } from '../src/session/document';
 import { initialState, studyIdentity } from '../src/session/initial-state';
 import { beginSession } from '../src/session/log';
-import { notesOf } from '../src/session/note-edits';
 import { textToSession } from '../src/session/read-document';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
@@ -76,9 +74,11 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
   const analysis = await pipeline.analyse({ ...state, edit }, job);
   const openDoubts = await pipeline.openDoubts({ ...state, edit }, state.doubts, job);
   const evidence = await pipeline.allEvidence({ ...state, edit }, state.doubts, job);
-  const files = exportFiles({
+  const lead = state.roles.slow[state.roles.reported];
+  const files = resultFiles({
     recording: opened.recording,
     state,
+    session,
     sha256,
     program: PROGRAM,
     edit,
@@ -88,50 +88,15 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     findings: analysis.findings,
     openDoubts,
     evidence,
+    age: null,
+    signals: await pipeline.separated({ ...state, edit }, job),
+    waves: await excerptWaves(
+      { lead, phases: state.phases, durationS: opened.recording.durationS },
+      (request) => pipeline.columns(request),
+    ),
   });
   await mkdir(folder, { recursive: true });
-  for (const { name, text } of files) await writeFile(join(folder, name), text);
-  const separated = separatedOf(pipeline, opened, state);
-  await writeFile(join(folder, 'separated.edf'), Buffer.concat(separated));
-}
-
-/** What made the slow wave, in the 80 characters of a header's field. */
-const slowPrefilter = ({ slowRoute, slowBandCpm, slowGain, breathingOut }: Settings): string =>
-  slowRoute === 'band'
-    ? `slow wave, band ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
-    : `slow wave, ${slowRoute}`;
-
-/** The separated signals of the analysed state, as an EDF+ file. */
-function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionState) {
-  const { roles, settings } = state;
-  const heartbeat = roles.heart && pipeline.heartbeat(roles.heart);
-  return separatedEdf({
-    code: state.study.code,
-    start: recording.start.kind === 'known' ? recording.start.local : null,
-    durationS: recording.durationS,
-    program: PROGRAM,
-    slow: roles.slow.flatMap((lead) => {
-      const drawn = pipeline.slowWave(lead);
-      if (!drawn) return [];
-      const { rateHz, slowWave } = drawn;
-      const prefilter = slowPrefilter(settings);
-      return [{ label: `slow ${leadKey(lead)}`, rateHz, samples: slowWave, prefilter }];
-    }),
-    heart:
-      roles.heart && heartbeat
-        ? {
-            label: `heart ${leadKey(roles.heart)}`,
-            rateHz: heartbeat.rateHz,
-            samples: heartbeat.heartbeat,
-            prefilter: `heartbeat, route ${settings.heartRoute}`,
-          }
-        : null,
-    beats: heartbeat ? state.beats : NO_BEATS,
-    beatRateHz: roles.heart ? recording.channels[leadChannels(roles.heart)[0]].rateHz : 1,
-    phases: state.phases,
-    spans: state.spans,
-    notes: notesOf(state),
-  });
+  for (const file of files) await writeFile(join(folder, file.name), bytesOf(file));
 }
 
 /** Folder names of several studies: the file's name without its ending, told apart by a number where two are equal. */

@@ -3,10 +3,7 @@ import { quickKey } from '../src/decode/quick-key';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import type { Evidence, EvidencePart } from '../src/recording/evidence/evidence';
 import type { Findings } from '../src/recording/findings';
-import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
-import type { HeartOutput } from '../src/recording/separated';
-import type { SeparatedSlow } from '../src/separate/route';
 import type {
   Analysis,
   Columns,
@@ -21,11 +18,12 @@ import type {
   PlacedBeat,
   Proposal,
   ReviewInputs,
+  SeparatedSignals,
   TextReading,
   WithinRequest,
 } from './analysis-api';
 import type { Job } from './job';
-import { analyse, doubtInputs, figuresOf } from './pipeline-analyse';
+import { analyse, doubtInputs, figuresOf, separatedSignals } from './pipeline-analyse';
 import { placeNear } from './pipeline-beats';
 import { columnsOf } from './pipeline-columns';
 import type { EvidenceInputs } from './pipeline-evidence';
@@ -73,10 +71,8 @@ export interface Pipeline {
   detectWithin(request: WithinRequest, job: Job): Promise<FoundWithin>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
-  /** The slow wave of a lead as it was drawn last; null before the first analysis. */
-  slowWave(lead: Lead): SeparatedSlow | null;
-  /** The heartbeat of a lead; null where it was not read for one. */
-  heartbeat(lead: Lead): HeartOutput | null;
+  /** The separated signals of a review, as they are drawn. */
+  separated(inputs: ReviewInputs, job: Job): Promise<SeparatedSignals>;
 }
 
 /** A pipeline with no study open. What few reviews ask for is fetched when it is. */
@@ -147,7 +143,6 @@ export function createPipeline(): Pipeline {
     },
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
-    slowWave: (lead) => study().signals.drawn(lead),
-    heartbeat: (lead) => study().signals.heart(lead),
+    separated: (inputs, job) => inLine(study(), job, (one) => separatedSignals(one, inputs, job)),
   };
 }

@@ -20,6 +20,7 @@ export function identityFacts(
   { identity, start, invented }: Recording,
   { study }: SessionState,
   hidden: boolean,
+  age: string | null,
 ): readonly Fact[] {
   const data = invented || study.invented ? [INVENTED] : [];
   if (hidden) return [{ name: 'Identity', words: 'identity hidden' }, ...data];
@@ -28,6 +29,7 @@ export function identityFacts(
     { name: 'Code', words: study.code },
     ...(name === null ? [] : [{ name: 'Name', words: name }]),
     ...(birthYear === null ? [] : [{ name: 'Born', words: String(birthYear) }]),
+    ...(age === null ? [] : [{ name: 'Age', words: age }]),
     ...(sex === null ? [] : [{ name: 'Sex', words: sex }]),
     { name: 'Recorded', words: start.kind === 'known' ? recordedWords(start.local) : 'not known' },
     ...data,

@@ -66,6 +66,8 @@ export interface ReportInput {
   readonly identityHidden: boolean;
   /** How many doubts are open; null while they have not been looked for. */
   readonly openDoubts: number | null;
+  /** Age in words where the results go out without identity; null where the header's own fields are printed. */
+  readonly age: string | null;
   /** The parts of the evidence that belong to these figures. */
   readonly evidence: Partial<Evidence>;
 }
@@ -88,7 +90,7 @@ export function reportModel(input: ReportInput): ReportModel {
       words.replace(/^Draft/, 'DRAFT'),
     ].join(' · '),
     identityHidden,
-    identity: identityFacts(recording, state, identityHidden),
+    identity: identityFacts(recording, state, identityHidden, input.age),
     adequacy: adequacyTable(findings, state.roles.heart !== null),
     warnings: [
       ...warningsOf(recording, findings),
