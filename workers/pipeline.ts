@@ -3,7 +3,10 @@ import { quickKey } from '../src/decode/quick-key';
 import type { Doubt, SettledDoubt } from '../src/recording/doubt';
 import type { Evidence, EvidencePart } from '../src/recording/evidence/evidence';
 import type { Findings } from '../src/recording/findings';
+import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
+import type { HeartOutput } from '../src/recording/separated';
+import type { SeparatedSlow } from '../src/separate/route';
 import type {
   Analysis,
   Columns,
@@ -73,6 +76,10 @@ export interface Pipeline {
   placeBeat(nearS: number): PlacedBeat;
   /** The separated signals of a review, as they are drawn. */
   separated(inputs: ReviewInputs, job: Job): Promise<SeparatedSignals>;
+  /** The slow wave of a lead as it was drawn last; null before the first analysis. */
+  slowWave(lead: Lead): SeparatedSlow | null;
+  /** The heartbeat of a lead; null where it was not read for one. */
+  heartbeat(lead: Lead): HeartOutput | null;
 }
 
 /** A pipeline with no study open. What few reviews ask for is fetched when it is. */
@@ -143,6 +150,8 @@ export function createPipeline(): Pipeline {
     },
     columns: (request) => columnsOf(study().source, study().signals, request),
     placeBeat: (nearS) => placeNear(study(), nearS),
+    slowWave: (lead) => study().signals.drawn(lead),
+    heartbeat: (lead) => study().signals.heart(lead),
     separated: (inputs, job) => inLine(study(), job, (one) => separatedSignals(one, inputs, job)),
   };
 }

@@ -1,3 +1,4 @@
+/// <reference path="./inline-css.d.ts" />
 import { createElement } from 'react';
 import { renderToStaticMarkup } from 'react-dom/server';
 import type { ReportModel } from '../export/report-model';
