@@ -1,9 +1,9 @@
-/// <reference path="./inline-css.d.ts" />
+/// <reference path="./raw-css.d.ts" />
 import { createElement } from 'react';
 import { renderToStaticMarkup } from 'react-dom/server';
 import type { ReportModel } from '../export/report-model';
 import { cssString, shortFoot } from './foot-text';
-import styles from './report.css?inline';
+import styles from './report.css?raw';
 import { ReportPage } from './report-page';
 import type { ReportPictures } from './report-pictures';
 

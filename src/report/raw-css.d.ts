@@ -1,4 +1,4 @@
-declare module '*.css?inline' {
+declare module '*.css?raw' {
   const text: string;
   export default text;
 }
