@@ -123,27 +123,29 @@ function FileTable({ files, making, before }: FileTableProps) {
           <tr key={file.name}>
             <th scope="row">{file.name}</th>
             <td>{HOLDS[file.name]}</td>
-            <td className="results-acts">
-              {file.name.endsWith('.svg') ? (
+            <td>
+              <div className="results-acts">
+                {file.name.endsWith('.svg') ? (
+                  <button
+                    type="button"
+                    className="button slight"
+                    aria-label={`Download ${file.name} as PNG`}
+                    onClick={() => void asWork(savePng(file))}
+                  >
+                    PNG
+                  </button>
+                ) : null}
                 <button
                   type="button"
                   className="button slight"
-                  aria-label={`Download ${file.name} as PNG`}
-                  onClick={() => void asWork(savePng(file))}
+                  aria-label={`Download ${file.name}`}
+                  onClick={() =>
+                    download(`${before}${file.name}`, making.bytesOf(file), typeOf(file.name))
+                  }
                 >
-                  PNG
+                  {file.name.endsWith('.svg') ? 'SVG' : 'Download'}
                 </button>
-              ) : null}
-              <button
-                type="button"
-                className="button slight"
-                aria-label={`Download ${file.name}`}
-                onClick={() =>
-                  download(`${before}${file.name}`, making.bytesOf(file), typeOf(file.name))
-                }
-              >
-                {file.name.endsWith('.svg') ? 'SVG' : 'Download'}
-              </button>
+              </div>
             </td>
           </tr>
         ))}

@@ -12,8 +12,16 @@ export interface Fact {
 const INVENTED: Fact = { name: 'Data', words: 'invented by the program, of no person' };
 
 /** Said where identity is hidden: what people typed is printed as they typed it. */
-export const HIDDEN_WARNING =
+const HIDDEN_WARNING =
   'Code, name, dates, file name and hash are left out. Texts typed by people may still say who it is: read them before you hand this on.';
+
+/** What has to be known of the identity as it is printed. */
+export function identityNote(hidden: boolean, age: string | null): string {
+  if (hidden) return HIDDEN_WARNING;
+  return age === null
+    ? 'Identity as the file’s header has it, not verified.'
+    : 'Without identity: X stands for it, all dates are moved by one shift, and what people wrote is left out. A heartbeat trace can itself identify a person.';
+}
 
 /** Who the study is of, as the file's header says; a hidden identity says only that it is. */
 export function identityFacts(
