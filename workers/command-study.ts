@@ -28,7 +28,11 @@ async function proposedSession(
 ): Promise<Session> {
   const { route } = request;
   const settings: Settings = route
-    ? { ...DEFAULT_SETTINGS, slowRoute: route, heartRoute: route }
+    ? {
+        ...DEFAULT_SETTINGS,
+        slowRoute: route,
+        heartRoute: route === 'beat-average' ? 'band' : route,
+      }
     : DEFAULT_SETTINGS;
   const proposal = await proposalOf(pipeline, recording, request, settings, job);
   const study = studyIdentity(recording, quickKey, codeOf(request.code, recording, sha256));

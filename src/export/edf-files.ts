@@ -10,8 +10,8 @@ import { type SeparatedSignal, separatedEdf } from './separated-edf';
 
 /** What made the slow wave, in the 80 characters of a header's field. */
 const slowPrefilter = ({ slowRoute, slowBandCpm, slowGain, breathingOut }: Settings): string =>
-  slowRoute === 'band'
-    ? `slow wave, band ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
+  slowRoute !== 'fractional'
+    ? `slow wave, ${slowRoute} ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
     : `slow wave, ${slowRoute}`;
 
 /** separated.edf and annotations.edf of a review. */
