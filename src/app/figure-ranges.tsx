@@ -1,10 +1,11 @@
 import { useStore } from 'zustand';
+import { byWords } from '../recording/evidence/limits-words';
 import {
   type FigureRanges,
   type RangesEvidence,
   rangesOfFigure,
 } from '../recording/evidence/ranges';
-import { byWords, exactWords, rangeWords, ratioWords } from '../recording/evidence/ranges-words';
+import { exactWords, rangeWords, ratioWords } from '../recording/evidence/ranges-words';
 import type { FigureDefinition } from '../recording/figure-catalogue';
 import { useApp, useSession } from './app-context';
 

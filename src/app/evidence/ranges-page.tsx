@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { byWords } from '../../recording/evidence/limits-words';
 import {
   type ChangeRange,
   type FigureRanges,
@@ -6,7 +7,7 @@ import {
   type RangesEvidence,
   rangesOfFigure,
 } from '../../recording/evidence/ranges';
-import { byWords, exactWords, rangeWords, ratioWords } from '../../recording/evidence/ranges-words';
+import { exactWords, rangeWords, ratioWords } from '../../recording/evidence/ranges-words';
 import { FIGURES, type FigureDefinition, type Organ } from '../../recording/figure-catalogue';
 import { figureWords } from '../../recording/figure-words';
 import { useAnalysis } from '../app-context';

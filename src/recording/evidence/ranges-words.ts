@@ -1,7 +1,7 @@
 import type { Range } from '../../numeric/chance-range';
 import { FIGURES, type FigureDefinition } from '../figure-catalogue';
 import type { EvidenceLine } from './evidence-line';
-import type { ChangeRange, DoubtsRange, LimitsRange, RangesEvidence } from './ranges';
+import type { ChangeRange, DoubtsRange, RangesEvidence } from './ranges';
 
 const minus = (text: string): string => text.replace(/^-(?=0(\.0*)?$)/, '').replace('-', '−');
 
@@ -17,12 +17,6 @@ export const ratioWords = ({ ratio }: ChangeRange): string =>
 
 export const exactWords = ({ exact }: DoubtsRange): string =>
   exact ? 'exact' : 'each doubt’s effect added up';
-
-/** "73 under 1-2-4-9 cpm, epochs of 4 min; 81 under ..."; empty where limits change nothing. */
-export function byWords({ low, high, lowBy, highBy }: LimitsRange, decimals: number): string {
-  const [least, most] = [low, high].map((value) => value.toFixed(decimals));
-  return least === most ? '' : `${least} under ${lowBy}; ${most} under ${highBy}`;
-}
 
 const definitionOf = (key: string): FigureDefinition | undefined =>
   FIGURES.find((figure) => figure.key === key);
