@@ -47,10 +47,11 @@ export function OpinionsPage({ value }: PageProps) {
 
 function AgreementTable({ value }: PageProps) {
   return (
-    <table className="data-table">
+    <table className="data-table opinions-table">
       <caption>
-        Epochs with a rhythm in which a method finds DF again within {SAME_CPM} cpm, and the median
-        of what it finds
+        Median of what each method finds, and in how many epochs with a rhythm that is DF within{' '}
+        {SAME_CPM} cpm. Burg and multitaper are said to disagree under {LEAST_AGREEMENT_PCT} % of
+        epochs, crests where their median is further than that from DF.
       </caption>
       <thead>
         <tr>
@@ -95,9 +96,7 @@ function AgreementCell({ agreement }: { readonly agreement: Agreement }) {
 function verdictOf({ hannCpm, disagreements }: PartOpinions): string {
   if (hannCpm === null) return 'no epoch with a rhythm';
   const said = disagreements.filter(({ key }) => key === 'df_median_cpm');
-  return said.length > 0
-    ? said.map(({ words }) => words).join('; ')
-    : `all agree (at least ${LEAST_AGREEMENT_PCT} % of epochs)`;
+  return said.length > 0 ? said.map(({ words }) => words).join('; ') : 'agree';
 }
 
 /** Every kept epoch with what each method finds in it, opened when wanted. */
@@ -148,7 +147,7 @@ function Powers({ value }: PageProps) {
   if (rows.length === 0)
     return <p>No phase has LF or HF by both methods: the figures say why they are withheld.</p>;
   return (
-    <table className="data-table">
+    <table className="data-table opinions-table">
       <caption>
         Lomb-Scargle on the beats themselves, as printed, and Welch on intervals resampled at 4 Hz;
         they are said to disagree where they differ by over {MOST_POWER_DIFFERENCE_PCT} %

@@ -17,15 +17,10 @@ export function differenceWords({ lombMs2, welchMs2 }: PowerPair): string {
 const wholePhases = ({ parts }: OpinionsEvidence): readonly PartOpinions[] =>
   parts.filter(({ name, phase }) => name === phase);
 
-const crestWords = ({ crests }: PartOpinions): string =>
-  crests.medianCpm === null
-    ? 'no crests to count'
-    : `${crests.medianCpm.toFixed(2)} crests a minute`;
-
-function frequencyWords(part: PartOpinions): string {
-  const { name, hannCpm, burg, multitaper } = part;
+function frequencyWords({ name, hannCpm, burg, multitaper, crests }: PartOpinions): string {
   if (hannCpm === null) return `${name}: no epoch with a rhythm`;
-  return `${name}: Burg ${samePercent(burg)} %, multitaper ${samePercent(multitaper)} % of ${burg.of} epochs within ${SAME_CPM} cpm; ${crestWords(part)} beside DF ${hannCpm.toFixed(2)}`;
+  const rate = crests.medianCpm === null ? 'none' : crests.medianCpm.toFixed(2);
+  return `${name}: Burg ${samePercent(burg)} %, multitaper ${samePercent(multitaper)} % of ${burg.of}, crests ${rate} for DF ${hannCpm.toFixed(2)}`;
 }
 
 function powerWords({ name, powers }: PartOpinions): string {
@@ -50,14 +45,14 @@ export function opinionsLines(value: OpinionsEvidence): readonly EvidenceLine[] 
   return [
     {
       name: 'DF by other methods',
-      words: phases.map(frequencyWords).join('. '),
+      words: `epochs within ${SAME_CPM} cpm of DF. ${phases.map(frequencyWords).join('; ')}`,
       mark: markOf(phases, ['df_median_cpm']),
     },
     ...(withPowers.length > 0
       ? [
           {
             name: 'Welch beside Lomb-Scargle',
-            words: withPowers.map(powerWords).join('. '),
+            words: withPowers.map(powerWords).join('; '),
             mark: markOf(withPowers, ['lf_ms2', 'hf_ms2']),
           },
         ]
