@@ -16,7 +16,7 @@ const signed = (value: number, decimals: number): string =>
 export const pairName = ({ firstName, secondName }: LeadPair): string =>
   `${firstName} and ${secondName}`;
 
-/** Coupling of a phase in words: "87 % of 27 epochs (95 % by chance 41–99)". */
+/** Coupling of a phase in words: "87 % (95 % by chance 41–99)". */
 export function couplingWords({ coupling, couplingRange }: PairInPhase): string {
   switch (coupling.kind) {
     case 'number': {
@@ -26,7 +26,7 @@ export function couplingWords({ coupling, couplingRange }: PairInPhase): string 
     case 'count':
       return `${coupling.count} of ${coupling.of} ${coupling.what}`;
     case 'withheld':
-      return `no percentage: ${coupling.reason}`;
+      return `in no percentage (${coupling.reason})`;
   }
 }
 

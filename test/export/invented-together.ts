@@ -1,0 +1,93 @@
+import type { SharedMedian, TogetherEvidence } from '../../src/recording/evidence/together';
+
+const median = (value: number | null, windows: number): SharedMedian => ({ value, windows });
+
+/** Two invented phases: one tested, with every rival, and a meal. */
+export const INVENTED_TOGETHER: TogetherEvidence = {
+  heartRead: true,
+  breathingFrom: 'derived',
+  windows: [
+    {
+      phase: 'fasting',
+      fromS: 0,
+      toS: 240,
+      dfCpm: 2.949,
+      dpDb: 51.26,
+      rhythm: 'normo',
+      heartRateBpm: 64.04,
+      hfMs2: 571.2,
+      breathingPerMin: 14.61,
+    },
+    {
+      phase: 'fasting',
+      fromS: 60,
+      toS: 300,
+      dfCpm: null,
+      dpDb: null,
+      rhythm: 'none',
+      heartRateBpm: null,
+      hfMs2: null,
+      breathingPerMin: null,
+    },
+  ],
+  phases: [
+    {
+      name: 'fasting',
+      fromS: 0,
+      toS: 1800,
+      windows: 27,
+      shared: 22,
+      dfCpm: median(2.949, 22),
+      dpDb: median(51.26, 22),
+      heartRateBpm: median(64.04, 22),
+      hfMs2: median(571.2, 19),
+      breathingPerMin: median(null, 0),
+      modulation: {
+        kind: 'found',
+        dfCpm: 2.949,
+        cycles: 84.4,
+        minutes: 28.6,
+        rrMeanMs: 937,
+        depthPct: 0.8123,
+        chancePct: 0.4056,
+        longestDeg: 212.4,
+        p: 0.002,
+        surrogates: 999,
+        leastShiftS: 60,
+        steadiness: 0.31,
+        binsMs: [-7, -6, -3, 0, 3, 6, 7, 6, 3, 0, -3, -6],
+        rivals: {
+          breathing: {
+            verdict: 'not-seen',
+            coherence: 0.0512,
+            level: 0.1081,
+            perMin: 14.61,
+            multiple: null,
+          },
+          waves: { verdict: 'seen', powerRatio: 3.4, secondDepthPct: 0.31 },
+          leak: {
+            verdict: 'not-seen',
+            leakUv: 0.262,
+            slowUv: 110.4,
+            withoutDepthPct: 0.81,
+            withoutP: 0.002,
+            heightP: 0.44,
+          },
+        },
+      },
+    },
+    {
+      name: 'meal',
+      fromS: 1800,
+      toS: 2400,
+      windows: 7,
+      shared: 0,
+      dfCpm: median(null, 0),
+      dpDb: median(null, 0),
+      heartRateBpm: median(null, 0),
+      hfMs2: median(null, 0),
+      breathingPerMin: median(null, 0),
+      modulation: { kind: 'withheld', reason: 'the meal is shown and not analysed' },
+    },
+  ],
+};
