@@ -146,6 +146,7 @@ export async function modulationOf(
     chancePct: percent(found.chanceDepth),
     longestDeg: (found.peakRad * DEGREES + 360) % 360,
     p: found.p,
+    pOfSurrogates: found.pOfSurrogates,
     surrogates: found.surrogates,
     leastShiftS: LEAST_SHIFT_S,
     steadiness: found.steadiness,

@@ -37,16 +37,16 @@ export interface LagWithRange {
 /**
  * Coherence of two leads at DF and, where it stands above the level of unrelated noise, how much later the second is: minus
  * the phase of the cross-spectrum over 2 pi DF (Carter 1987), with the range that the coherence leaves it (Bendat & Piersol
- * 1980). x and y are the leads at one rate and of one length, NaN where they are spoiled or missing. A lag is known up to
+ * 1980, for as many independent looks at a steady wave as the overlapping segments are worth). x and y are the leads at one rate and of one length, NaN where they are spoiled or missing. A lag is known up to
  * whole cycles only.
  */
 export function lagAtDf(x: Float64Array, y: Float64Array, options: LagOptions): LagAtDf {
   const freqHz = cpmToHz(options.dfCpm);
   const found = coherenceAt(x, y, { ...options, freqHz, falseAlarm: FALSE_ALARM });
-  const { coherence, level, segments, averages, phaseRad } = found;
+  const { coherence, level, segments, looks, phaseRad } = found;
   if (coherence === null || !(coherence > level)) return { coherence, level, segments, lag: null };
   const perRadian = 1 / (2 * Math.PI * freqHz);
   const lagS = phaseRad === 0 ? 0 : -phaseRad * perRadian;
-  const half = Z95 * crossPhaseSd(coherence, averages) * perRadian;
+  const half = Z95 * crossPhaseSd(coherence, looks) * perRadian;
   return { coherence, level, segments, lag: { lagS, lowS: lagS - half, highS: lagS + half } };
 }

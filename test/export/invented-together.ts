@@ -52,6 +52,7 @@ export const INVENTED_TOGETHER: TogetherEvidence = {
         chancePct: 0.4056,
         longestDeg: 212.4,
         p: 0.002,
+        pOfSurrogates: 0.001,
         surrogates: 999,
         leastShiftS: 60,
         steadiness: 0.31,

@@ -2,8 +2,8 @@ import { formatClock, type Seconds } from '../../units/time';
 
 /** Drawing units of the charts; text of 13 is at least 12 px where the dialog has its full width. */
 export const CHART_WIDTH = 900;
-export const CHART_LEFT = 96;
-const CHART_RIGHT = 12;
+export const CHART_LEFT = 116;
+const CHART_RIGHT = 22;
 
 /** A stretch of the study as a chart's width shows it. */
 export interface TimeScale {

@@ -5,7 +5,7 @@ import { CHART_LEFT, CHART_WIDTH, valueScale } from './chart-scale';
 const TOP = 12;
 const BOTTOM = 132;
 const HEIGHT = 172;
-const END_X = CHART_LEFT + 560;
+const END_X = CHART_LEFT + 540;
 const TICKS_DEG = [0, 90, 180, 270, 360];
 
 type Found = Extract<PhaseModulation, { kind: 'found' }>;

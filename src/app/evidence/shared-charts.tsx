@@ -4,7 +4,7 @@ import { CHART_WIDTH, type TimeScale, timeScale, valueScale } from './chart-scal
 
 const TOP = 24;
 const ROW = 58;
-const GAP = 16;
+const GAP = 22;
 
 interface Row {
   readonly name: string;
@@ -16,9 +16,9 @@ interface Row {
 const ROWS: readonly Row[] = [
   { name: 'DF', unit: 'cpm', organ: 'stomach', of: ({ dfCpm }) => dfCpm },
   { name: 'DP', unit: 'dB', organ: 'stomach', of: ({ dpDb }) => dpDb },
-  { name: 'Rate', unit: '1/min', organ: 'heart', of: ({ heartRateBpm }) => heartRateBpm },
+  { name: 'Heart rate', unit: '1/min', organ: 'heart', of: ({ heartRateBpm }) => heartRateBpm },
   { name: 'HF', unit: 'ms²', organ: 'heart', of: ({ hfMs2 }) => hfMs2 },
-  { name: 'Breaths', unit: '1/min', organ: 'breathing', of: (one) => one.breathingPerMin },
+  { name: 'Breathing', unit: '1/min', organ: 'breathing', of: (one) => one.breathingPerMin },
 ];
 
 interface SharedChartsProps {

@@ -1,10 +1,10 @@
 import './chart.css';
+import { rivalRows } from '../../recording/evidence/rival-words';
 import type { SharedPhase, TogetherEvidence } from '../../recording/evidence/together';
 import {
   depthWords,
   EXPLORATORY,
   modulationVerdict,
-  rivalRows,
   steadyWords,
 } from '../../recording/evidence/together-words';
 import { PhaseBins } from './phase-bins';

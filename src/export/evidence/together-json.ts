@@ -63,6 +63,7 @@ function modulationJson(one: PhaseModulation) {
     chance_95_pct: roundedTo(one.chancePct, 3),
     rr_longest_at_deg: roundedTo(one.longestDeg, 0),
     p: roundedTo(one.p, 4),
+    p_of_surrogates: roundedTo(one.pOfSurrogates, 4),
     surrogates: one.surrogates,
     least_shift_s: one.leastShiftS,
     steadiness: roundedTo(one.steadiness, 2),

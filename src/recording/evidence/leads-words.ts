@@ -1,3 +1,4 @@
+import { isMeal } from '../phase';
 import type { EvidenceLine } from './evidence-line';
 import type { LagFound, LeadPair, LeadsEvidence, PairInPhase } from './leads';
 
@@ -16,7 +17,7 @@ const signed = (value: number, decimals: number): string =>
 export const pairName = ({ firstName, secondName }: LeadPair): string =>
   `${firstName} and ${secondName}`;
 
-/** Coupling of a phase in words: "87 % (95 % by chance 41–99)". */
+/** Coupling of a phase in words: "73 % (95 % by chance 41–99)". */
 export function couplingWords({ coupling, couplingRange }: PairInPhase): string {
   switch (coupling.kind) {
     case 'number': {
@@ -26,7 +27,7 @@ export function couplingWords({ coupling, couplingRange }: PairInPhase): string 
     case 'count':
       return `${coupling.count} of ${coupling.of} ${coupling.what}`;
     case 'withheld':
-      return `in no percentage (${coupling.reason})`;
+      return `not given: ${coupling.reason}`;
   }
 }
 
@@ -34,11 +35,13 @@ export function couplingWords({ coupling, couplingRange }: PairInPhase): string 
 export function lagWords(pair: LeadPair, lag: LagFound): string {
   if (lag.kind === 'withheld') return `no lag: ${lag.reason}`;
   const { lagS, lowS, highS } = lag;
+  const range = (low: number, high: number) =>
+    `(95 % by chance ${signed(low, 1)} to ${signed(high, 1)})`;
   if (lowS <= 0 && highS >= 0)
-    return `neither earlier (lag ${signed(lagS, 1)} s, 95 % by chance ${signed(lowS, 1)} to ${signed(highS, 1)})`;
-  const [earlier, sign] = lagS > 0 ? [pair.firstName, 1] : [pair.secondName, -1];
-  const ends = [sign * lowS, sign * highS].sort((a, b) => a - b).map((one) => signed(one, 1));
-  return `${earlier} earlier by ${signed(Math.abs(lagS), 1)} s (95 % by chance ${ends.join(' to ')})`;
+    return `neither earlier, lag ${signed(lagS, 1)} s ${range(lowS, highS)}`;
+  return lagS > 0
+    ? `${pair.firstName} earlier by ${signed(lagS, 1)} s ${range(lowS, highS)}`
+    : `${pair.secondName} earlier by ${signed(-lagS, 1)} s ${range(-highS, -lowS)}`;
 }
 
 /** Coherence at DF beside the level of unrelated noise; a dash where it could not be computed. */
@@ -48,7 +51,13 @@ export const coherenceWords = (lag: LagFound): string =>
     : `${lag.coherence.toFixed(2)} (noise under ${lag.level.toFixed(2)})`;
 
 const phaseWords = (pair: Compared, phase: PairInPhase): string =>
-  `${phase.name}: coupled ${couplingWords(phase)}; ${lagWords(pair, phase.lag)}`;
+  `${phase.name}: coupled ${couplingWords(phase)}; ${lagWords(pair, phase.lag)}.`;
+
+/** Meals are on the page only, unless there is nothing else. */
+const phasesOf = ({ phases }: Compared): readonly PairInPhase[] => {
+  const others = phases.filter((phase) => !isMeal(phase));
+  return others.length > 0 ? others : phases;
+};
 
 /** What the trust section of Findings and the report say of it. No line says more than which lead is earlier. */
 export function leadsLines({ leadCount, pairs }: LeadsEvidence): readonly EvidenceLine[] {
@@ -57,7 +66,9 @@ export function leadsLines({ leadCount, pairs }: LeadsEvidence): readonly Eviden
   const compared = pairs.filter((pair) => pair.kind === 'compared');
   const lines = compared.slice(0, MOST_LINES).map((pair) => ({
     name: pairName(pair),
-    words: `${pair.phases.map((phase) => phaseWords(pair, phase)).join('. ')}.`,
+    words: phasesOf(pair)
+      .map((phase) => phaseWords(pair, phase))
+      .join(' '),
     mark: pair.mark,
   }));
   const more = compared.length - lines.length;

@@ -1,11 +1,5 @@
 import type { EvidenceLine } from './evidence-line';
-import type {
-  PhaseModulation,
-  Rivals,
-  RivalVerdict,
-  SharedPhase,
-  TogetherEvidence,
-} from './together';
+import type { PhaseModulation, RivalVerdict, SharedPhase, TogetherEvidence } from './together';
 
 type Found = Extract<PhaseModulation, { kind: 'found' }>;
 
@@ -15,65 +9,22 @@ const SIGNIFICANT = 0.05;
 
 export const EXPLORATORY = 'exploratory, no reference values';
 
-const percent = (value: number): string => `${value.toFixed(2)} %`;
+/** "0.41 %". */
+export const depthPercent = (value: number): string => `${value.toFixed(2)} %`;
 
 /** p as printed: never 0, since it cannot be less than one over all shifts and one. */
-export const pWords = (p: number): string => (p < 0.01 ? p.toFixed(3) : p.toFixed(2));
+export const pWords = (p: number): string => (p < 0.1 ? p.toFixed(3) : p.toFixed(2));
 
 /** Depth, what chance gives, p and cycles of one phase. */
 export function depthWords({ depthPct, chancePct, p, cycles, surrogates }: Found): string {
-  return `RR ±${percent(depthPct)} with the slow wave’s phase; chance alone stays under ±${percent(chancePct)} in 95 of 100 (p ${pWords(p)}, ${surrogates} circular shifts, ${cycles.toFixed(0)} cycles)`;
+  return `RR ±${depthPercent(depthPct)} by the slow wave’s phase, by chance up to ±${depthPercent(chancePct)} (95 %); p ${pWords(p)}, ${surrogates} shifts, ${cycles.toFixed(0)} cycles`;
 }
 
-const VERDICT: Readonly<Record<RivalVerdict, string>> = {
+export const VERDICT_WORDS: Readonly<Record<RivalVerdict, string>> = {
   seen: 'seen',
   'not-seen': 'not seen',
   'not-tested': 'not tested',
 };
-
-/** What each rival explanation comes to, with what it was judged by. */
-export function rivalRows({ breathing, waves, leak }: Rivals): readonly {
-  readonly name: string;
-  readonly verdict: string;
-  readonly words: string;
-}[] {
-  return [
-    { name: 'Breathing', verdict: VERDICT[breathing.verdict], words: breathingWords(breathing) },
-    { name: '0.1 Hz waves', verdict: VERDICT[waves.verdict], words: wavesWords(waves) },
-    { name: 'Leakage of the heartbeat', verdict: VERDICT[leak.verdict], words: leakWords(leak) },
-  ];
-}
-
-function breathingWords({ coherence, level, perMin, multiple }: Rivals['breathing']): string {
-  const shared =
-    coherence === null || level === null
-      ? 'coherence of RR and breathing at DF could not be computed'
-      : `RR and breathing at DF: coherence ${coherence.toFixed(2)}, noise under ${level.toFixed(2)}`;
-  if (perMin === null) return `${shared}; breathing rate not known`;
-  const near = multiple === null ? 'near no whole multiple of DF' : `near ${multiple} times DF`;
-  return `${shared}; breathing ${perMin.toFixed(1)} a minute, ${near}`;
-}
-
-function wavesWords({ powerRatio, secondDepthPct }: Rivals['waves']): string {
-  const ratio =
-    powerRatio === null
-      ? 'power of RR at twice DF could not be computed'
-      : `RR has ${powerRatio.toFixed(powerRatio < 10 ? 1 : 0)} times as much power about twice DF as about DF`;
-  return `${ratio}; it goes ±${percent(secondDepthPct)} twice a cycle`;
-}
-
-function leakWords({ leakUv, slowUv, withoutDepthPct, withoutP, heightP }: Rivals['leak']): string {
-  const share =
-    leakUv === null
-      ? 'what the beats put into the lead could not be measured'
-      : `the beats put about ${leakUv.toFixed(leakUv < 10 ? 1 : 0)} µV of ${slowUv.toFixed(0)} µV into the lead near DF`;
-  const without =
-    withoutDepthPct === null || withoutP === null
-      ? ''
-      : `; with that taken out RR ±${percent(withoutDepthPct)} (p ${pWords(withoutP)})`;
-  const heights = heightP === null ? '' : `; R height with the same phase p ${pWords(heightP)}`;
-  return share + without + heights;
-}
 
 /** What limits the test itself; null where nothing does. */
 export const steadyWords = ({ steadiness }: Found): string | null =>
@@ -90,7 +41,7 @@ function rivalSummary({ rivals }: Found): string {
       .map((key) => names[key]);
   const parts = (['seen', 'not-seen', 'not-tested'] as const).flatMap((verdict) => {
     const list = having(verdict);
-    return list.length > 0 ? [`${VERDICT[verdict]}: ${list.join(', ')}`] : [];
+    return list.length > 0 ? [`${VERDICT_WORDS[verdict]}: ${list.join(', ')}`] : [];
   });
   return `other explanations ${parts.join('; ')}`;
 }
@@ -118,7 +69,7 @@ export function togetherLines(value: TogetherEvidence): readonly EvidenceLine[] 
   }
   return tested.map(({ name, modulation }) => ({
     name: `Both rhythms, ${name}`,
-    words: `${depthWords(modulation)}: ${modulationVerdict(modulation)}`,
+    words: `${modulationVerdict(modulation)}: ${depthWords(modulation)}`,
     mark: [EXPLORATORY, steadyWords(modulation), rivalSummary(modulation)]
       .filter((one) => one !== null)
       .join('; '),

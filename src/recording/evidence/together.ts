@@ -60,7 +60,9 @@ export type PhaseModulation =
       readonly chancePct: number;
       /** Degrees after the crest of the slow wave at which RR is longest, 0 to 360. */
       readonly longestDeg: number;
+      /** By shifts of all sizes, and by the surrogates alone, which is never the larger. */
       readonly p: number;
+      readonly pOfSurrogates: number;
       readonly surrogates: number;
       readonly leastShiftS: Seconds;
       /** 0 to 1; near 1 the rhythm is so steady that the test tells little. */
