@@ -55,7 +55,9 @@ const kept = new WeakMap<Study, { readonly key: string; readonly value: LeadsEvi
 function keyOf({ inputs, computed, slow, recording }: EvidenceInputs): string {
   return JSON.stringify([
     slow.map(({ recorded }) => identity(recorded)),
-    computed.stomach.map(identity),
+    computed.stomach.map(({ rhythm }) =>
+      rhythm.epochs.map(({ kept, dfCpm, rhythm: one }) => [kept, dfCpm, one]),
+    ),
     phasesOrWhole(inputs.phases, recording.durationS),
     inputs.spans,
     inputs.roles.slow,

@@ -17,8 +17,9 @@ export interface BothSpec {
   readonly beatAreaUvS?: number;
   readonly slowUv?: number;
   readonly noiseUv?: number;
-  /** Peak of RR's own wave near 0.1 Hz in ms. */
+  /** Peak of RR's own wave in ms, and its rate: near 0.1 Hz unless given. */
   readonly wavesMs?: number;
+  readonly wavesHz?: number;
 }
 
 export interface BothRhythms {
@@ -58,12 +59,12 @@ function cyclesOf(
 
 export function bothRhythms(spec: BothSpec): BothRhythms {
   const { seed, minutes = 30, dfCpm = 3, wanderCpm = 0.1, depthPct = 0, longestRad = 1 } = spec;
-  const { beatAreaUvS = 0, slowUv = 100, noiseUv = 25, wavesMs = 18 } = spec;
+  const { beatAreaUvS = 0, slowUv = 100, noiseUv = 25, wavesMs = 18, wavesHz = 0.1 } = spec;
   const random = createRandom(seed);
   const length = minutes * 60 * RATE_HZ;
   const slow = cyclesOf(random, length, dfCpm / 60, wanderCpm / 60, 120);
   const breath = cyclesOf(random, length, 0.25, 0.012, 20);
-  const waves = cyclesOf(random, length, 0.1, 0.015, 15);
+  const waves = cyclesOf(random, length, wavesHz, 0.15 * wavesHz, 15);
   const height = wandering(random, 20 * RATE_HZ);
   const trend = wandering(random, 60 * RATE_HZ);
   const course = Float64Array.from(slow, (cycles, i) => {
