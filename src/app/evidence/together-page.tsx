@@ -7,6 +7,7 @@ import {
   modulationVerdict,
   steadyWords,
 } from '../../recording/evidence/together-words';
+import { written } from './chart-scale';
 import { PhaseBins } from './phase-bins';
 import { SharedCharts } from './shared-charts';
 import { PhaseTable, WindowTable } from './shared-tables';
@@ -40,7 +41,9 @@ export function TogetherPage({ value }: { readonly value: TogetherEvidence }) {
         <p>
           The reported lead is band-passed within 0.5 cpm of DF and its phase taken; NN intervals
           are put into twelve bins of that phase, and a cosine is fitted to their means. The same is
-          done with RR moved in a circle by at least 60 s: so much follows the phase by chance.
+          done with RR moved in a circle by at least 60 s: so much follows the phase by chance. p is
+          the share of shifts that go as deep, those under 60 s counted too where that makes it
+          larger.
         </p>
         {phases.map((phase) => (
           <Modulation key={phase.name} phase={phase} />
@@ -71,6 +74,10 @@ function Modulation({ phase }: { readonly phase: SharedPhase }) {
         {steady === null ? '' : ` Note: ${steady}.`}
       </p>
       <PhaseBins found={modulation} phase={name} />
+      <p className="small">
+        RR about its mean from the crest on, ms:{' '}
+        {modulation.binsMs.map((one) => written(one, 1)).join(', ')}.
+      </p>
       <table className="evidence-words">
         <caption>Other explanations</caption>
         <tbody>
