@@ -1,5 +1,6 @@
 import type { Evidence } from '../../src/recording/evidence/evidence';
 import { INVENTED_LEADS } from './invented-leads';
+import { INVENTED_PLANTED } from './invented-planted';
 import { INVENTED_TOGETHER } from './invented-together';
 
 /** Evidence of an invented study; each part is filled in by whoever tests what is written of it. */
@@ -8,5 +9,5 @@ export const INVENTED_EVIDENCE: Evidence = {
   opinions: { lines: [] },
   leads: INVENTED_LEADS,
   together: INVENTED_TOGETHER,
-  planted: { lines: [] },
+  planted: INVENTED_PLANTED,
 };

@@ -1,3 +1,4 @@
+import { cos } from '../../numeric/elementary';
 import type { PhaseModulation } from '../../recording/evidence/together';
 import { ValueAxis } from './chart-axes';
 import { CHART_LEFT, CHART_WIDTH, valueScale } from './chart-scale';
@@ -21,7 +22,7 @@ export function PhaseBins({ found, phase }: { readonly found: Found; readonly ph
   const perUnit = (BOTTOM - TOP) / (values.high - values.low);
   const y = (value: number) => BOTTOM - (value - values.low) * perUnit;
   const cosine = Array.from({ length: 73 }, (_, k) => {
-    const value = depthMs * Math.cos((5 * k - longestDeg) * RADIANS);
+    const value = depthMs * cos((5 * k - longestDeg) * RADIANS);
     return `${k === 0 ? 'M' : 'L'}${xOf(5 * k).toFixed(1)} ${y(value).toFixed(1)}`;
   }).join('');
   const width = 360 / binsMs.length;
