@@ -1,52 +1,14 @@
 import type { Evidence } from '../../src/recording/evidence/evidence';
+import { INVENTED_LEADS } from './invented-leads';
+import { INVENTED_OPINIONS } from './invented-opinions';
+import { INVENTED_PLANTED } from './invented-planted';
+import { INVENTED_TOGETHER } from './invented-together';
 
 /** Evidence of an invented study; each part is filled in by whoever tests what is written of it. */
 export const INVENTED_EVIDENCE: Evidence = {
   ranges: { lines: [] },
-  opinions: {
-    lead: '#1',
-    epochs: [
-      {
-        phase: 'fasting',
-        centreS: 120,
-        hannCpm: 3.012,
-        burgCpm: 3.0309,
-        burgOrder: 41,
-        multitaperCpm: 2.9987,
-        crestCpm: 3.1,
-      },
-      {
-        phase: 'fasting',
-        centreS: 180,
-        hannCpm: null,
-        burgCpm: null,
-        burgOrder: 12,
-        multitaperCpm: 5.2,
-        crestCpm: null,
-      },
-    ],
-    parts: [
-      {
-        name: 'fasting',
-        phase: 'fasting',
-        fromS: 0,
-        toS: 1800,
-        hannCpm: 3.012,
-        burg: { same: 26, of: 27, medianCpm: 3.03 },
-        multitaper: { same: 20, of: 27, medianCpm: 3.2 },
-        crests: { same: 27, of: 27, medianCpm: 3.1 },
-        powers: [
-          { key: 'lf_ms2', lombMs2: 410.26, welchMs2: 402.11 },
-          { key: 'hf_ms2', lombMs2: 300, welchMs2: 420 },
-        ],
-        disagreements: [
-          { key: 'df_median_cpm', words: 'multitaper agrees in 20 of 27 epochs' },
-          { key: 'hf_ms2', words: 'Welch gives 420 ms²' },
-        ],
-      },
-    ],
-  },
-  leads: { lines: [] },
-  together: { lines: [] },
-  planted: { lines: [] },
+  opinions: INVENTED_OPINIONS,
+  leads: INVENTED_LEADS,
+  together: INVENTED_TOGETHER,
+  planted: INVENTED_PLANTED,
 };

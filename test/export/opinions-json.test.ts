@@ -1,9 +1,9 @@
 import { expect, test } from 'vitest';
 import { opinionsJson } from '../../src/export/evidence/opinions-json';
-import { INVENTED_EVIDENCE } from './invented-evidence';
+import { INVENTED_OPINIONS } from './invented-opinions';
 
 test('second opinions are written by phase and by epoch, in snake_case, rounded', () => {
-  expect(opinionsJson(INVENTED_EVIDENCE.opinions)).toEqual({
+  expect(opinionsJson(INVENTED_OPINIONS)).toEqual({
     lead: '#1',
     same_within_cpm: 0.25,
     least_agreement_pct: 90,

@@ -1,6 +1,6 @@
 import { formatClock, type Seconds } from '../../units/time';
 
-/** Drawing units of the charts; text of 13 is at least 12 px where the dialog has its full width. */
+/** Drawing units of the charts; the charts are never drawn smaller than these. */
 export const CHART_WIDTH = 900;
 export const CHART_LEFT = 116;
 const CHART_RIGHT = 22;
