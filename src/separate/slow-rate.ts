@@ -1,4 +1,6 @@
+import { lowPassTaps } from '../numeric/fir';
 import { createInstantSampler, type InstantSampler } from '../numeric/sample-at';
+import { symmetricResponses } from '../numeric/symmetric-response';
 import { kaiserTaps } from '../numeric/windows';
 import { SLOW_RATE_HZ } from '../recording/separated';
 import type { Hertz } from '../units/rate';
@@ -21,6 +23,18 @@ export function slowRateHz(rateHz: Hertz): Hertz {
 export function slowSamplerReachS(rateHz: Hertz): Seconds {
   if (rateHz <= SLOW_RATE_HZ) return 0;
   return (kaiserTaps(ATTENUATION_DB, STOP_HZ - PASS_HZ, rateHz) - 1) / 2 / rateHz;
+}
+
+/** Gain of the low-pass before 4 Hz on a lead of that rate; 1 where the lead is taken as it is. */
+export function slowSamplerResponses(rateHz: Hertz, freqsHz: Float64Array): Float64Array {
+  if (rateHz <= SLOW_RATE_HZ) return new Float64Array(freqsHz.length).fill(1);
+  const taps = lowPassTaps({
+    rateHz,
+    passHz: PASS_HZ,
+    stopHz: STOP_HZ,
+    attenuationDb: ATTENUATION_DB,
+  });
+  return symmetricResponses(taps, rateHz, freqsHz);
 }
 
 /**

@@ -1,0 +1,109 @@
+import { lowPassTaps } from '../numeric/fir';
+import { grunwaldLetnikovResponses, type Responses } from '../numeric/grunwald-letnikov-responses';
+import { centredKernel } from '../numeric/kernel';
+import { blockSizeFor, overlapSave } from '../numeric/overlap-save';
+import { savitzkyGolayWeights } from '../numeric/savitzky-golay';
+import { symmetricResponses } from '../numeric/symmetric-response';
+import type { Settings } from '../recording/settings';
+import type { Hertz } from '../units/rate';
+import type { Seconds } from '../units/time';
+import { heartBandAt, heartBandKernel } from './band';
+import { foldingTaps, windowSamples } from './fractional-kernels';
+import { heartDecimation } from './heart-rate';
+import { slowSamplerResponses } from './slow-rate';
+
+export type Organ = 'slow' | 'heart';
+
+/** A lead at a rate at which all that its route's output can hold is still there. */
+export interface FoldedLead {
+  readonly samples: Float64Array;
+  readonly rateHz: Hertz;
+}
+
+/** Least rate a slow wave's stretch is folded to: beyond half of it nothing passes the low-pass before 4 Hz. */
+const LEAST_SLOW_HZ = 25;
+const SLOW_ATTENUATION_DB = 80;
+
+const slowDecimation = (rateHz: Hertz): number => Math.max(1, Math.floor(rateHz / LEAST_SLOW_HZ));
+
+function slowFoldingTaps(rateHz: Hertz, decimation: number): Float64Array {
+  if (decimation === 1) return Float64Array.of(1);
+  const outputHz = rateHz / decimation;
+  return lowPassTaps({
+    rateHz,
+    passHz: 0.25 * outputHz,
+    stopHz: 0.5 * outputHz,
+    attenuationDb: SLOW_ATTENUATION_DB,
+  });
+}
+
+/**
+ * A lead's samples folded as the routes fold them: for the heart to the heartbeat's own rate by the route's own low-pass,
+ * for the slow wave to 25 Hz or more. Ends are turned about their end values; NaN is not allowed.
+ */
+export function foldedLead(organ: Organ, samples: Float64Array, rateHz: Hertz): FoldedLead {
+  const decimate = organ === 'heart' ? heartDecimation(rateHz) : slowDecimation(rateHz);
+  if (decimate === 1) return { samples, rateHz };
+  const taps =
+    organ === 'heart' ? foldingTaps(rateHz, decimate) : slowFoldingTaps(rateHz, decimate);
+  const kernel = centredKernel(taps);
+  const [folded] = overlapSave(samples, {
+    blockSize: blockSizeFor([kernel], samples.length, decimate),
+    kernels: [kernel],
+    decimate,
+    ends: 'reflect-odd',
+  });
+  return { samples: folded, rateHz: rateHz / decimate };
+}
+
+/** Where and for what responses are wanted. */
+export interface ResponseAsk {
+  readonly organ: Organ;
+  /** The lead's own rate, at which the route filters. */
+  readonly rateHz: Hertz;
+  readonly freqsHz: Float64Array;
+}
+
+/**
+ * Responses of route `fractional` by its derivatives, the low-pass before 4 Hz included for the slow wave; scaled as they
+ * come. They are those of the very kernels the route convolves with.
+ */
+export function derivativeResponses(
+  orders: readonly number[],
+  memoryS: Seconds,
+  { organ, rateHz, freqsHz }: ResponseAsk,
+): readonly Responses[] {
+  const passed = organ === 'slow' ? slowSamplerResponses(rateHz, freqsHz) : null;
+  return orders.map((order) => {
+    const past = Math.round(memoryS * rateHz);
+    const { re, im } = grunwaldLetnikovResponses(order, 1 / rateHz, past, freqsHz);
+    if (!passed) return { re, im };
+    return {
+      re: re.map((value, k) => value * passed[k]),
+      im: im.map((value, k) => value * passed[k]),
+    };
+  });
+}
+
+/** Gains of the smoothing windows, which are real; one row a window. */
+export function smoothingResponses(
+  windowsMs: readonly number[],
+  polynomialOrder: number,
+  { rateHz, freqsHz }: ResponseAsk,
+): readonly Float64Array[] {
+  return windowsMs.map((windowMs) => {
+    const window = windowSamples(windowMs, rateHz, polynomialOrder);
+    return symmetricResponses(savitzkyGolayWeights(window, polynomialOrder), rateHz, freqsHz);
+  });
+}
+
+/** Response of route `band` for the heartbeat, which is real; null where the rate leaves no band. */
+export function heartBandResponses(
+  { heartBandHz }: Pick<Settings, 'heartBandHz'>,
+  { rateHz, freqsHz }: ResponseAsk,
+): Float64Array | null {
+  const outputHz = rateHz / heartDecimation(rateHz);
+  const band = heartBandAt(outputHz, heartBandHz);
+  if (!band) return null;
+  return symmetricResponses(heartBandKernel(rateHz, outputHz, band).taps, rateHz, freqsHz);
+}
