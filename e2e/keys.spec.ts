@@ -90,6 +90,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   reviewer: ['', 'dialog', /^Who reviews\?$/],
   'go-to': ['', 'dialog', /^Go to a time$/],
   log: ['', 'dialog', /^Log$/],
+  evidence: ['', 'dialog', /^Evidence$/],
   compare: ['', 'dialog', /^Compare with another session$/],
   'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
   bookmarks: ['', 'dialog', /^Bookmarks$/],
