@@ -143,7 +143,8 @@ async function readStretch(
   return { ...cut, firstSample: from + cut.firstSample };
 }
 
-async function readLead(
+/** The samples [from, to) of a lead in its own samples. */
+export async function readLead(
   source: SignalSource,
   lead: Lead,
   from: number,

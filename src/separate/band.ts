@@ -208,6 +208,14 @@ const breathingWords = (takenOut: readonly Interval[]): readonly string[] =>
       ]
     : [];
 
+/** Taps by which route `band` draws a lead at the slow rate without holes; those of the even band where it is too short to fit a gain to. */
+export const slowDrawingTaps = (
+  lead: Float64Array,
+  rateHz: Hertz,
+  settings: Settings,
+): Float64Array =>
+  drawingTaps(rateHz, settings, leadSpectra(lead, present(lead), rateHz, 'bridged'));
+
 /** The heartbeat's filter at work; null where the rate leaves no band. */
 function startHeart(job: RouteJob) {
   const decimation = heartDecimation(job.rateHz);

@@ -1,16 +1,17 @@
-import { lowPassTaps } from '../numeric/fir';
+import { convolveSame, lowPassTaps } from '../numeric/fir';
 import { grunwaldLetnikovResponses, type Responses } from '../numeric/grunwald-letnikov-responses';
 import { centredKernel } from '../numeric/kernel';
 import { blockSizeFor, overlapSave } from '../numeric/overlap-save';
+import type { Random } from '../numeric/random';
 import { savitzkyGolayWeights } from '../numeric/savitzky-golay';
 import { symmetricResponses } from '../numeric/symmetric-response';
 import type { Settings } from '../recording/settings';
 import type { Hertz } from '../units/rate';
 import type { Seconds } from '../units/time';
-import { heartBandAt, heartBandKernel } from './band';
+import { heartBandAt, heartBandKernel, slowDrawingTaps } from './band';
 import { foldingTaps, windowSamples } from './fractional-kernels';
 import { heartDecimation } from './heart-rate';
-import { slowSamplerResponses } from './slow-rate';
+import { createSlowSampler, slowRateHz, slowSamplerResponses } from './slow-rate';
 
 export type Organ = 'slow' | 'heart';
 
@@ -23,6 +24,8 @@ export interface FoldedLead {
 /** Least rate a slow wave's stretch is folded to: beyond half of it nothing passes the low-pass before 4 Hz. */
 const LEAST_SLOW_HZ = 25;
 const SLOW_ATTENUATION_DB = 80;
+/** Where the route's low-pass before the heartbeat's rate begins to fall, as a share of that rate. */
+const FOLDED_PASS = 0.32;
 
 const slowDecimation = (rateHz: Hertz): number => Math.max(1, Math.floor(rateHz / LEAST_SLOW_HZ));
 
@@ -74,9 +77,8 @@ export function derivativeResponses(
   { organ, rateHz, freqsHz }: ResponseAsk,
 ): readonly Responses[] {
   const passed = organ === 'slow' ? slowSamplerResponses(rateHz, freqsHz) : null;
-  return orders.map((order) => {
-    const past = Math.round(memoryS * rateHz);
-    const { re, im } = grunwaldLetnikovResponses(order, 1 / rateHz, past, freqsHz);
+  const past = Math.round(memoryS * rateHz);
+  return grunwaldLetnikovResponses(orders, 1 / rateHz, past, freqsHz).map(({ re, im }) => {
     if (!passed) return { re, im };
     return {
       re: re.map((value, k) => value * passed[k]),
@@ -100,10 +102,54 @@ export function smoothingResponses(
 /** Response of route `band` for the heartbeat, which is real; null where the rate leaves no band. */
 export function heartBandResponses(
   { heartBandHz }: Pick<Settings, 'heartBandHz'>,
-  { rateHz, freqsHz }: ResponseAsk,
+  { rateHz, freqsHz }: Pick<ResponseAsk, 'rateHz' | 'freqsHz'>,
 ): Float64Array | null {
   const outputHz = rateHz / heartDecimation(rateHz);
   const band = heartBandAt(outputHz, heartBandHz);
   if (!band) return null;
   return symmetricResponses(heartBandKernel(rateHz, outputHz, band).taps, rateHz, freqsHz);
+}
+
+/** A folded lead at the slow rate. */
+export function slowLead({ samples, rateHz }: FoldedLead): FoldedLead {
+  const sampler = createSlowSampler(rateHz);
+  sampler.push(samples);
+  return { samples: sampler.finish(), rateHz: slowRateHz(rateHz) };
+}
+
+/**
+ * Response of route `band` for the slow wave, which is real: the low-pass before 4 Hz and the filter that the route draws
+ * this very lead with.
+ */
+export function slowBandResponses(
+  lead: FoldedLead,
+  settings: Settings,
+  { freqsHz }: Pick<ResponseAsk, 'freqsHz'>,
+): Float64Array {
+  const slow = slowLead(lead);
+  const taps = slowDrawingTaps(slow.samples, slow.rateHz, settings);
+  const passed = slowSamplerResponses(lead.rateHz, freqsHz);
+  return symmetricResponses(taps, slow.rateHz, freqsHz).map((gain, k) => gain * passed[k]);
+}
+
+/**
+ * White noise of root mean square 1 up to half of the rate that a lead of `rateHz` is folded to, low-passed as what is folded
+ * for the heart is.
+ */
+export function foldedNoise(
+  organ: Organ,
+  length: number,
+  rateHz: Hertz,
+  random: Random,
+): Float64Array {
+  const noise = Float64Array.from({ length }, () => random.gaussian());
+  if (organ === 'slow' || heartDecimation(rateHz) === 1) return noise;
+  const outputHz = rateHz / heartDecimation(rateHz);
+  const taps = lowPassTaps({
+    rateHz: outputHz,
+    passHz: FOLDED_PASS * outputHz,
+    stopHz: 0.5 * outputHz,
+    attenuationDb: 60,
+  });
+  return convolveSame(noise, taps, 'zero');
 }

@@ -4,7 +4,7 @@ import type { StretchProducts } from './stretch-products';
 
 /** How well a drawn signal matches what is known. */
 export interface MatchScore {
-  /** Signal over error in dB after the best scale and delay; 0 where nothing of it is there. */
+  /** Power of what follows the known signal over power of the rest, in the drawn signal, dB; from -20 to 60. */
   readonly snrDb: number;
   /** Seconds the drawn signal is ahead. */
   readonly aheadS: Seconds;
@@ -23,8 +23,8 @@ export interface FilteredProducts {
 const PLACES = 41;
 /** Groups whose product is below this share of the largest say nothing of the delay. */
 const LEAST_SHARE = 1e-3;
-/** A match better than this cannot be told from a perfect one. */
-const LEAST_ERROR = 1e-9;
+/** Nothing in common, or all of it, is not written beyond these. */
+const LIMITS_DB = [-20, 60] as const;
 
 /** What the search for the best delay uses of one stretch, whatever the route; made once for all cells. */
 interface DelayTable {
@@ -145,10 +145,17 @@ export function filtered(
   return made;
 }
 
+/** rho^2 / (1 - rho^2) in dB from rho^2 = both / all, within the limits. */
+function decibels(both: number, all: number): number {
+  if (!(both > 0 && all > 0)) return LIMITS_DB[0];
+  const ratio = both / Math.max(1e-12 * both, all - both);
+  return Math.max(LIMITS_DB[0], Math.min(LIMITS_DB[1], 10 * log10(ratio)));
+}
+
 /**
- * Score of the route that `by` is behind followed by a real gain, from the products alone (Parseval): the drawn signal
- * y against the target s after the best scale above 0 and the best delay, 10 log10 of |s|^2 / |s - a y|^2, which is
- * -10 log10(1 - rho^2) with rho their correlation.
+ * Score of the route that `by` is behind followed by a real gain, from the products alone (Parseval): what the drawn signal
+ * holds of the target after the best scale above 0 and the best delay, over what else it holds: 10 log10 of
+ * rho^2 / (1 - rho^2) with rho their correlation.
  */
 export function scoreOf(
   { products, delays, turns }: ReadyStretch,
@@ -171,9 +178,8 @@ export function scoreOf(
   const off = curve < 0 ? -slope / curve : 0;
   const inside = Math.abs(off) <= delays.stepS;
   const most = Math.max(0, inside ? level + (slope * off) / 2 : level);
-  const likeness = power > 0 && targetPower > 0 ? (most * most) / (power * targetPower) : 0;
   return {
-    snrDb: -10 * log10(Math.max(LEAST_ERROR, 1 - likeness)),
+    snrDb: decibels(most * most, power * targetPower),
     aheadS: delays.firstS + place * delays.stepS + (inside ? off : 0),
   };
 }
