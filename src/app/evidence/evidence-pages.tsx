@@ -1,25 +1,38 @@
 import type { ReactNode } from 'react';
 import type { Evidence, EvidencePart } from '../../recording/evidence/evidence';
+import type { EvidencePageId } from '../evidence-page-id';
 import { LeadsPage } from './leads-page';
 import { OpinionsPage } from './opinions-page';
 import { PlantedPage } from './planted-page';
 import { RangesPage } from './ranges-page';
 import { TogetherPage } from './together-page';
 
-type PageOf<P extends EvidencePart> = {
+interface PageHead {
   readonly title: string;
   /** What the page is for, in a sentence above it. */
   readonly about: string;
+}
+
+interface PageOf<P extends EvidencePart> extends PageHead {
   readonly page: (value: Evidence[P]) => ReactNode;
+}
+
+type Pages = { readonly [P in EvidencePart]: PageOf<P> } & {
+  readonly [P in Exclude<EvidencePageId, EvidencePart>]: PageHead;
 };
 
-/** The pages of the evidence dialog, one a part. */
-export const EVIDENCE_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
+/** The pages of the evidence dialog, one a part, and those that are no part of it. */
+export const EVIDENCE_PAGES: Pages = {
   planted: {
     title: 'Planted check',
     about:
       'Known slow waves and heartbeats planted in this recording’s own noise, taken the same way as the study’s own.',
     page: (value) => <PlantedPage value={value} />,
+  },
+  'settings-map': {
+    title: 'Which settings',
+    about:
+      'How well route fractional would do on this recording with other settings, beside the other routes. The program changes none by itself.',
   },
   ranges: {
     title: 'Ranges',
