@@ -1,4 +1,5 @@
 import type { Lead } from '../src/recording/lead';
+import { lostOn } from '../src/recording/lost';
 import type { Settings } from '../src/recording/settings';
 import {
   MAP_ORDERS,
@@ -9,7 +10,7 @@ import {
   type NoMap,
   type OrganMap,
 } from '../src/recording/settings-map';
-import { type Interval, withoutIntervals } from '../src/recording/span';
+import { type Interval, type Span, withoutIntervals } from '../src/recording/span';
 import {
   derivativeResponses,
   type FoldedLead,
@@ -48,8 +49,25 @@ export interface KnownStretch {
 
 export const noMap = (reason: string): NoMap => ({ kind: 'no-map', reason });
 
-/** The middle of the longest stretch with nothing lost, as long as a map wants at most; null where none is long enough. */
+/**
+ * The middle of the longest stretch of a lead with nothing spoiled or missing, for either organ if there is one and else for
+ * the map's own, as long as a map wants at most; null where none is long enough.
+ */
 export function mapStretch(
+  organ: MapOrgan,
+  lead: Lead,
+  { recording }: Study['source'],
+  spans: readonly Span[],
+): Interval | null {
+  const lostTo = (one: 'stomach' | 'heart') => lostOn(lead, one, spans, recording.gaps);
+  const [stomach, heart] = [lostTo('stomach'), lostTo('heart')];
+  return (
+    longestClean(organ, recording.durationS, [...stomach, ...heart]) ??
+    longestClean(organ, recording.durationS, organ === 'slow' ? stomach : heart)
+  );
+}
+
+function longestClean(
   organ: MapOrgan,
   durationS: number,
   lost: readonly Interval[],

@@ -31,11 +31,10 @@ function placedIn(
 /** The map of the heartbeat: the beats' own averages at their own times, in what else the heart lead holds there. */
 export async function heartMap(work: MapWork): Promise<OrganMap | NoMap> {
   const { study, from, job } = work;
-  const { inputs, heart, heartRateHz, blocked } = from;
+  const { inputs, heart, heartRateHz } = from;
   const { roles, settings, beats } = inputs;
-  const { recording } = study.source;
   if (!roles.heart || !heart) return noMap('No lead is read for the heartbeat.');
-  const stretch = mapStretch('heart', recording.durationS, blocked);
+  const stretch = mapStretch('heart', roles.heart, study.source, inputs.spans);
   if (!stretch) return noMap('No four minutes in a row are free of spoiled stretches.');
   const folded = await foldedStretch(work, 'heart', roles.heart, stretch);
   if (!folded) return noMap('Samples are missing in the longest clean stretch.');

@@ -93,7 +93,7 @@ export async function slowMap(work: MapWork): Promise<OrganMap | NoMap> {
   const lead = roles.slow[roles.reported];
   if (!lead) return noMap('No lead is read for the slow wave.');
   const lost = lostOn(lead, 'stomach', spans, recording.gaps);
-  const stretch = mapStretch('slow', recording.durationS, lost);
+  const stretch = mapStretch('slow', lead, study.source, spans);
   if (!stretch) return noMap('No four minutes in a row are free of spoiled stretches.');
   const slow = study.signals.recorded(lead);
   const { rhythm } = from.computed.stomach[roles.reported];
