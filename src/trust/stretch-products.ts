@@ -25,7 +25,7 @@ const RAMP_S: Seconds = 60;
 const SINGLE_TO_HZ = 0.2;
 /** Groups are this share of their frequency wide, and no wider than this. */
 const SHARE = 0.02;
-const WIDEST_HZ = 0.05;
+const WIDEST_HZ = 0.2;
 
 /** Weights of a stretch: cosine ramps (Tukey 1967) of a minute, a quarter of the stretch at most, at both ends. */
 export function stretchTaper(length: number, rateHz: Hertz): Float64Array {

@@ -7,6 +7,7 @@ import { heartbeats } from './accuracy/heartbeats';
 import { detection } from './detection';
 import { doubts } from './doubts/doubts';
 import { loadWords, machineFacts } from './machine';
+import { maps } from './maps';
 import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
 import { pageSize } from './page-size';
@@ -16,6 +17,7 @@ import { markdownTable, plainTable } from './table';
 
 const PARTS: Readonly<Record<string, Part>> = {
   separation,
+  maps,
   detection,
   pipeline,
   opening,
