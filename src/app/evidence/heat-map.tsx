@@ -136,8 +136,9 @@ function Row(props: RowProps) {
               onClick={() => onCell({ order, window })}
               onKeyDown={onKey}
             >
-              {marks[0] ? <i className="best">○</i> : null}
-              {marks[1] ? <i className="as-set">×</i> : null}
+              {marks[0] || marks[1] ? (
+                <i className={marks[0] || undefined}>{marks[1] ? '×' : ''}</i>
+              ) : null}
             </button>
           </td>
         );

@@ -8,7 +8,12 @@ export interface Cell {
   readonly window: number;
 }
 
-export const scoreText = (snrDb: number): string => `${snrDb.toFixed(1)} dB`;
+export const scoreNumber = (snrDb: number): string => {
+  const text = snrDb.toFixed(1).replace('-', '−');
+  return text === '−0.0' ? '0.0' : text;
+};
+
+export const scoreText = (snrDb: number): string => `${scoreNumber(snrDb)} dB`;
 
 export const windowText = (windowMs: number): string =>
   windowMs >= 1000 ? `${(windowMs / 1000).toFixed(1)} s` : `${windowMs} ms`;
@@ -30,7 +35,7 @@ export function aheadText({ organ }: OrganMap, aheadS: number): string {
   if (Math.abs(aheadS) < small) return '';
   const size = Math.abs(aheadS);
   const text = organ === 'slow' ? `${size.toFixed(1)} s` : `${Math.round(1000 * size)} ms`;
-  return `, ${text} ${aheadS > 0 ? 'ahead' : 'behind'}, undone here`;
+  return `, drawn ${text} ${aheadS > 0 ? 'early' : 'late'}, which the score leaves out`;
 }
 
 /** What is known, in what, where. */

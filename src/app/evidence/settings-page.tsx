@@ -20,6 +20,7 @@ import {
   cellText,
   cellWords,
   proposalWords,
+  scoreNumber,
   scoreText,
   settingText,
   stretchWords,
@@ -274,7 +275,7 @@ function Numbers({ title, map, scores }: NumbersProps) {
                 <tr key={order}>
                   <th scope="row">{order.toFixed(2)}</th>
                   {map.windowsMs.map((windowMs, w) => (
-                    <td key={windowMs}>{scores.cells[a][w].snrDb.toFixed(1)}</td>
+                    <td key={windowMs}>{scoreNumber(scores.cells[a][w].snrDb)}</td>
                   ))}
                 </tr>
               ))}
