@@ -6,7 +6,7 @@ import { leadSpectra } from '../src/separate/lead-spectra';
 import { keptSamples } from '../src/stomach/kept-samples';
 import { type Leftover, leftoverOf } from '../src/trust/leftover';
 import { LINE_REACH_S } from '../src/trust/line-band';
-import { inTurns, type Job } from './job';
+import { inTurns, type Job, withRests } from './job';
 
 /** The refill's own generator: the same noise for the same lead, settings and edits. */
 const SEED = 20_260_501;
@@ -29,11 +29,11 @@ export async function leftoverOfLead(
 ): Promise<Leftover | null> {
   const { recorded, rateHz } = slow;
   const kept = keptSamples(recorded, rateHz, spoiled);
-  const spectra = leadSpectra(recorded, kept, rateHz, 'zero');
+  const spectra = await withRests(leadSpectra(recorded, kept, rateHz, 'zero'), job);
   if (!spectra) return null;
   await job.breathe();
   const margin = Math.ceil(LINE_REACH_S * rateHz);
-  const whole = bridged(recorded, kept, rateHz, spectra, margin);
+  const whole = await withRests(bridged(recorded, kept, rateHz, spectra, margin), job);
   await job.breathe();
   const random = createRandom(SEED);
   const inputs = { recorded, whole, margin, kept, rateHz, epochs: rhythm.epochs, random };

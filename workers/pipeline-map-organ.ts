@@ -11,16 +11,11 @@ import {
   type OrganMap,
 } from '../src/recording/settings-map';
 import { type Interval, type Span, withoutIntervals } from '../src/recording/span';
-import {
-  derivativeResponses,
-  type FoldedLead,
-  foldedLead,
-  smoothingResponses,
-} from '../src/separate/route-responses';
+import { type FoldedLead, foldedLead, fractionalResponses } from '../src/separate/route-responses';
 import { filtered, type ReadyStretch, readyStretch, scoreOf } from '../src/trust/match-score';
 import { scoreMapInSteps } from '../src/trust/score-map';
 import { stretchProducts } from '../src/trust/stretch-products';
-import { inTurns, type Job } from './job';
+import { inTurns, type Job, withRests } from './job';
 import type { DoubtInputs } from './pipeline-doubts';
 import { leadChannel } from './pipeline-signals';
 import type { Study } from './pipeline-study';
@@ -100,7 +95,7 @@ export async function foldedStretch(
   );
   await job.breathe();
   if (!samples.every(Number.isFinite)) return null;
-  return { ...foldedLead(organ, samples, rateHz), firstSample: first };
+  return { ...(await withRests(foldedLead(organ, samples, rateHz), job)), firstSample: first };
 }
 
 interface Scored {
@@ -125,26 +120,18 @@ async function scoresOf(
   await job.breathe();
   const stretch = readyStretch(products, MOST_AHEAD_S[organ]);
   await job.breathe();
-  const { order, memoryS, polynomialOrder, slowWindowMs, heartWindowMs } = settings.fractional;
+  const { order, slowWindowMs, heartWindowMs } = settings.fractional;
   const ask = { organ, rateHz, freqsHz: products.freqsHz };
-  const derivatives = derivativeResponses([...MAP_ORDERS, order], memoryS, ask);
+  const factors = fractionalResponses(settings.fractional, ask);
   await job.breathe();
-  const windowMs = organ === 'slow' ? slowWindowMs : heartWindowMs;
-  const smoothings = smoothingResponses([...MAP_WINDOWS_MS[organ], windowMs], polynomialOrder, ask);
+  const { re, im } = factors.derivative(order);
+  const gain = factors.smoothing(organ === 'slow' ? slowWindowMs : heartWindowMs);
+  const asSet = scoreOf(stretch, filtered(products, re, im), gain);
   await job.breathe();
-  const own = derivatives[MAP_ORDERS.length];
-  const asSet = scoreOf(
-    stretch,
-    filtered(products, own.re, own.im),
-    smoothings[MAP_WINDOWS_MS[organ].length],
-  );
   const bars = await barsOf(stretch, lead);
   await job.breathe();
   const cells = await inTurns(
-    scoreMapInSteps(stretch, {
-      derivatives: derivatives.slice(0, MAP_ORDERS.length),
-      smoothings: smoothings.slice(0, MAP_WINDOWS_MS[organ].length),
-    }),
+    scoreMapInSteps(stretch, factors, MAP_ORDERS, MAP_WINDOWS_MS[organ]),
     job,
     step,
   );

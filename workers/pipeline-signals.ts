@@ -6,11 +6,11 @@ import type { Settings } from '../src/recording/settings';
 import type { Interval, Span } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import { loadRoutes, type Routes } from '../src/separate/routes';
-import { createSeparation, redrawSlowWave, type Separation } from '../src/separate/separation';
+import { createSeparation, redrawInSteps, type Separation } from '../src/separate/separation';
 import { keptSamples } from '../src/stomach/kept-samples';
 import { createSpoilWatch, type SpoilWatch } from '../src/trust/spoil-watch';
 import { type BreathingSampler, createBreathingSampler } from './breathing-sampler';
-import type { Job } from './job';
+import { type Job, withRests } from './job';
 import { type LeadConsumer, type LeadToRead, passOverLeads } from './lead-pass';
 import { identity } from './remember';
 
@@ -84,7 +84,7 @@ interface Drawn {
 }
 
 interface Reading extends LeadToRead {
-  readonly finish: () => LeadSignals;
+  readonly finish: () => Generator<void, LeadSignals>;
 }
 
 /** The signals of leads, read from the file once and kept until settings make them others. */
@@ -120,7 +120,7 @@ export class SignalStore {
     const readings = missing.map((one) => this.#begin(one, settings));
     await passOverLeads(this.#source, readings, job, 'Reading the recording');
     for (const reading of readings) {
-      const made = reading.finish();
+      const made = await withRests(reading.finish(), job);
       await job.breathe();
       const before = this.#kept.get(made.key);
       this.#kept.set(made.key, {
@@ -145,9 +145,9 @@ export class SignalStore {
 
   /**
    * The slow wave of a lead under the settings, what is spoiled for the stomach bridged and breathing taken out where a
-   * reference is given; throws where it was not provided.
+   * reference is given; throws where it was not provided. Takes a rest now and then.
    */
-  slow(lead: Lead, settings: Settings, wish: SlowWish): SeparatedSlow {
+  *slow(lead: Lead, settings: Settings, wish: SlowWish): Generator<void, SeparatedSlow> {
     const key = leadKey(lead);
     const from = this.#parted(lead);
     const { spoiled, dfCpm = USUAL_CPM, breathing = null } = wish;
@@ -155,7 +155,8 @@ export class SignalStore {
     const before = this.#drawn.get(key);
     if (before?.from === from && before.drawnBy === drawnBy) return before.output;
     const kept = keptSamples(from.recorded, from.rateHz, spoiled);
-    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing }, this.#routes);
+    const drawing = { dfCpm, kept, breathing };
+    const output = yield* redrawInSteps(from, settings, drawing, this.#routes);
     this.#drawn.set(key, { from, drawnBy, output });
     return output;
   }
@@ -212,13 +213,18 @@ export class SignalStore {
     return {
       lead,
       consumers: all.filter((one) => one !== null),
-      finish: () => {
+      *finish() {
         const parted = separation?.finish();
+        yield;
+        const columns = pyramid.finish();
+        yield;
+        const proposedSpans = watch ? yield* watch.finishInSteps() : [];
+        yield;
         return {
           lead,
           key,
-          pyramid: pyramid.finish(),
-          proposedSpans: watch?.finish() ?? [],
+          pyramid: columns,
+          proposedSpans,
           slow: parted?.slow ? { madeBy: slowMadeBy(settings), output: parted.slow } : null,
           heart: parted?.heart ? { madeBy: heartMadeBy(settings), output: parted.heart } : null,
           breathing: breathing?.finish() ?? null,

@@ -123,20 +123,19 @@ function byLumps({ weights, width, moments }: Order, angle: number, put: Put): v
 }
 
 /**
- * Frequency responses of Gruenwald-Letnikov derivatives (Podlubny 1999) of orders 0 to 1 with steps of stepS seconds and a
+ * Frequency responses of Gruenwald-Letnikov derivatives (Podlubny 1999) by order, 0 to 1, with steps of stepS seconds and a
  * memory of `memorySamples` past samples, as grunwaldLetnikovResponse gives one by one, to 2e-6 of their size: the closed
  * form of the unlimited memory less what the limit drops. Frequencies from 0 to half of 1 / stepS.
  */
 export function grunwaldLetnikovResponses(
-  orders: readonly number[],
   stepS: number,
   memorySamples: number,
   freqsHz: Float64Array,
-): readonly Responses[] {
+): (order: number) => Responses {
   const past = Math.floor(memorySamples);
   const angles = freqsHz.map((hz) => 2 * Math.PI * hz * stepS);
   const turns = Array.from(angles, (angle) => (past * angle < FAR ? null : turnOf(angle, past)));
-  return orders.map((order) => {
+  return (order) => {
     const one = orderOf(order, past);
     const scale = pow(stepS, -order);
     const re = new Float64Array(freqsHz.length);
@@ -150,5 +149,5 @@ export function grunwaldLetnikovResponses(
       else byLumps(one, angles[k], put);
     });
     return { re, im };
-  });
+  };
 }

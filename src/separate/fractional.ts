@@ -195,5 +195,8 @@ function start(job: RouteJob): RouteRun {
  */
 export const fractionalRoute: Route = {
   start,
-  redraw: (slow, settings, { dfCpm }) => draw(slow, settings, dfCpm),
+  *redraw(slow, settings, { dfCpm }) {
+    yield;
+    return draw(slow, settings, dfCpm);
+  },
 };

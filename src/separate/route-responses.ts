@@ -1,15 +1,15 @@
 import { convolveSame, lowPassTaps } from '../numeric/fir';
 import { grunwaldLetnikovResponses, type Responses } from '../numeric/grunwald-letnikov-responses';
 import { centredKernel } from '../numeric/kernel';
-import { blockSizeFor, overlapSave } from '../numeric/overlap-save';
+import { blockSizeFor, createOverlapSave } from '../numeric/overlap-save';
 import type { Random } from '../numeric/random';
 import { savitzkyGolayWeights } from '../numeric/savitzky-golay';
 import { symmetricResponses } from '../numeric/symmetric-response';
 import type { Settings } from '../recording/settings';
 import type { Hertz } from '../units/rate';
-import type { Seconds } from '../units/time';
-import { heartBandAt, heartBandKernel, slowDrawingTaps } from './band';
+import { slowDrawingTaps } from './band';
 import { foldingTaps, windowSamples } from './fractional-kernels';
+import { heartBandAt, heartBandKernel } from './heart-band';
 import { heartDecimation } from './heart-rate';
 import { createSlowSampler, slowRateHz, slowSamplerResponses } from './slow-rate';
 
@@ -40,22 +40,41 @@ function slowFoldingTaps(rateHz: Hertz, decimation: number): Float64Array {
   });
 }
 
+/** Samples folded between one rest and the next. */
+const PIECE = 65_536;
+
 /**
  * A lead's samples folded as the routes fold them: for the heart to the heartbeat's own rate by the route's own low-pass,
  * for the slow wave to 25 Hz or more. Ends are turned about their end values; NaN is not allowed.
  */
-export function foldedLead(organ: Organ, samples: Float64Array, rateHz: Hertz): FoldedLead {
+export function* foldedLead(
+  organ: Organ,
+  samples: Float64Array,
+  rateHz: Hertz,
+): Generator<void, FoldedLead> {
   const decimate = organ === 'heart' ? heartDecimation(rateHz) : slowDecimation(rateHz);
   if (decimate === 1) return { samples, rateHz };
   const taps =
     organ === 'heart' ? foldingTaps(rateHz, decimate) : slowFoldingTaps(rateHz, decimate);
   const kernel = centredKernel(taps);
-  const [folded] = overlapSave(samples, {
-    blockSize: blockSizeFor([kernel], samples.length, decimate),
+  const filter = createOverlapSave({
+    blockSize: blockSizeFor([kernel], PIECE, decimate),
     kernels: [kernel],
     decimate,
     ends: 'reflect-odd',
   });
+  const parts: Float64Array[] = [];
+  for (let from = 0; from < samples.length; from += PIECE) {
+    parts.push(filter.push(samples.subarray(from, from + PIECE))[0]);
+    yield;
+  }
+  parts.push(filter.finish()[0]);
+  const folded = new Float64Array(parts.reduce((sum, part) => sum + part.length, 0));
+  let at = 0;
+  for (const part of parts) {
+    folded.set(part, at);
+    at += part.length;
+  }
   return { samples: folded, rateHz: rateHz / decimate };
 }
 
@@ -67,36 +86,33 @@ export interface ResponseAsk {
   readonly freqsHz: Float64Array;
 }
 
-/**
- * Responses of route `fractional` by its derivatives, the low-pass before 4 Hz included for the slow wave; scaled as they
- * come. They are those of the very kernels the route convolves with.
- */
-export function derivativeResponses(
-  orders: readonly number[],
-  memoryS: Seconds,
-  { organ, rateHz, freqsHz }: ResponseAsk,
-): readonly Responses[] {
-  const passed = organ === 'slow' ? slowSamplerResponses(rateHz, freqsHz) : null;
-  const past = Math.round(memoryS * rateHz);
-  return grunwaldLetnikovResponses(orders, 1 / rateHz, past, freqsHz).map(({ re, im }) => {
-    if (!passed) return { re, im };
-    return {
-      re: re.map((value, k) => value * passed[k]),
-      im: im.map((value, k) => value * passed[k]),
-    };
-  });
+/** The two factors of route `fractional`: any cell of a map is the product of one of each. */
+export interface FractionalResponses {
+  /** By order; the low-pass before 4 Hz included for the slow wave. Scaled as they come. */
+  readonly derivative: (order: number) => Responses;
+  /** By window, real. */
+  readonly smoothing: (windowMs: number) => Float64Array;
 }
 
-/** Gains of the smoothing windows, which are real; one row a window. */
-export function smoothingResponses(
-  windowsMs: readonly number[],
-  polynomialOrder: number,
-  { rateHz, freqsHz }: ResponseAsk,
-): readonly Float64Array[] {
-  return windowsMs.map((windowMs) => {
-    const window = windowSamples(windowMs, rateHz, polynomialOrder);
-    return symmetricResponses(savitzkyGolayWeights(window, polynomialOrder), rateHz, freqsHz);
-  });
+/** Responses of the very kernels that route `fractional` convolves with. */
+export function fractionalResponses(
+  { memoryS, polynomialOrder }: Pick<Settings['fractional'], 'memoryS' | 'polynomialOrder'>,
+  { organ, rateHz, freqsHz }: ResponseAsk,
+): FractionalResponses {
+  const passed = organ === 'slow' ? slowSamplerResponses(rateHz, freqsHz) : null;
+  const bare = grunwaldLetnikovResponses(1 / rateHz, Math.round(memoryS * rateHz), freqsHz);
+  return {
+    derivative(order) {
+      const { re, im } = bare(order);
+      if (!passed) return { re, im };
+      const times = (part: Float64Array) => part.map((value, k) => value * passed[k]);
+      return { re: times(re), im: times(im) };
+    },
+    smoothing(windowMs) {
+      const window = windowSamples(windowMs, rateHz, polynomialOrder);
+      return symmetricResponses(savitzkyGolayWeights(window, polynomialOrder), rateHz, freqsHz);
+    },
+  };
 }
 
 /** Response of route `band` for the heartbeat, which is real; null where the rate leaves no band. */

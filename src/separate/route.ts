@@ -46,6 +46,9 @@ export interface Drawing {
 /** One way of parting slow wave and heartbeat. */
 export interface Route {
   start(job: RouteJob): RouteRun;
-  /** Draws the slow wave again from what is in memory, for other settings of the same route or another drawing. */
-  redraw(slow: SeparatedSlow, settings: Settings, drawing: Drawing): SeparatedSlow;
+  /**
+   * Draws the slow wave again from what is in memory, for other settings of the same route or another drawing; with a rest
+   * now and then.
+   */
+  redraw(slow: SeparatedSlow, settings: Settings, drawing: Drawing): Generator<void, SeparatedSlow>;
 }

@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import type { Epoch, SlowWaveRhythm } from '../recording/rhythm';
@@ -41,13 +42,21 @@ export interface StomachAnalysis {
   readonly breathing: BreathingSeries | null;
 }
 
+/** Samples missing for so long are a stop of the recorder, which no epoch reaches across; fewer are left out like spoiled ones. */
+const STOP_S = 1;
+
 interface Lead {
   readonly memory: StomachMemory;
   readonly options: SlowWaveRhythmOptions;
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
+  /** Stops of the recorder. */
+  readonly stops: readonly Interval[];
 }
+
+const reachesAcross = (stops: readonly Interval[], fromS: Seconds, toS: Seconds): boolean =>
+  stops.some((stop) => stop.fromS < toS && stop.toS > fromS);
 
 /** Windows beside an epoch that have a say in it, and its own. */
 const ROW_PLACES = [-4, -3, -2, -1, 0, 1, 2, 3, 4];
@@ -92,7 +101,8 @@ function rowAt(lead: Lead, phase: Interval, first: number): WindowRow | null {
     const inside = from >= phase.fromS * rateHz - 1 && from + length <= phase.toS * rateHz + 1;
     if (!inside || from < 0 || from + length > options.slow.forSpectra.length) return [];
     const { spoiledFraction } = windows.at(from);
-    return spoiledFraction > options.settings.epoch.maxSpoiled
+    const stopped = reachesAcross(lead.stops, from / rateHz, (from + length) / rateHz);
+    return stopped || spoiledFraction > options.settings.epoch.maxSpoiled
       ? []
       : [{ place, over: windows.overAt(from) }];
   });
@@ -123,7 +133,8 @@ function analyseEpoch(lead: Lead, phase: Phase, fromS: Seconds) {
     toS: fromS + lengthS,
     spoiledFraction,
   };
-  if (spoiledFraction > maxSpoiled || spoiledFraction === 1) {
+  const stopped = reachesAcross(lead.stops, fromS, fromS + lengthS);
+  if (stopped || spoiledFraction > maxSpoiled || spoiledFraction === 1) {
     const nothing = { dfCpm: null, dpDb: null, peakShare: null, rhythm: null, flags: [] };
     const epoch: Epoch = { ...place, kept: false, ...nothing };
     return { epoch, spectrum: null };
@@ -146,9 +157,15 @@ function windowsOf(
 /**
  * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
  * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
- * spectra; a phase that reaches past the lead ends with it.
+ * spectra, and an epoch in which the recorder stopped is not kept; a phase that reaches past the lead ends with it.
  */
-export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
+export const slowWaveRhythm = (options: SlowWaveRhythmOptions): StomachAnalysis =>
+  atOnce(slowWaveRhythmInSteps(options));
+
+/** slowWaveRhythm with a rest after each epoch. */
+export function* slowWaveRhythmInSteps(
+  options: SlowWaveRhythmOptions,
+): Generator<void, StomachAnalysis> {
   const { slow, spoiled, phases, settings } = options;
   const { lengthS } = settings.epoch;
   const endS = slow.forSpectra.length / slow.rateHz;
@@ -157,28 +174,39 @@ export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis 
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
+  yield;
   const lead: Lead = {
     memory,
     options,
     windows: memory.windows,
     halfWindows: memory.halfWindows,
+    stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
     crestsS: crestTimes(slow.slowWave, {
       rateHz: slow.rateHz,
       highCpm: settings.rhythmBands.highCpm,
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-  const analysed = phases.flatMap((phase) =>
-    epochStarts(
-      { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
-      settings.epoch,
-    ).map((fromS) => analyseEpoch(lead, phase, fromS)),
+  yield;
+  const analysed: ReturnType<typeof analyseEpoch>[] = [];
+  for (const phase of phases) {
+    const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
+    for (const fromS of epochStarts(within, settings.epoch)) {
+      analysed.push(analyseEpoch(lead, phase, fromS));
+      yield;
+    }
+  }
+  const spectrogram = runningSpectrogram(
+    lead.windows,
+    slow.forSpectra.length,
+    slow.rateHz,
+    settings,
   );
   return {
     rhythm: {
       lead: slow.lead,
       epochs: analysed.map(({ epoch }) => epoch),
-      spectrogram: runningSpectrogram(lead.windows, slow.forSpectra.length, slow.rateHz, settings),
+      spectrogram: yield* spectrogram,
       crestsS: lead.crestsS,
     },
     epochSpectra: analysed.map(({ spectrum }) => spectrum),

@@ -1,11 +1,8 @@
 import { sin } from '../../src/numeric/elementary';
+import { atOnce } from '../../src/numeric/in-steps';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
 import { MAP_ORDERS, MAP_WINDOWS_MS, type MapOrgan } from '../../src/recording/settings-map';
-import {
-  derivativeResponses,
-  foldedLead,
-  smoothingResponses,
-} from '../../src/separate/route-responses';
+import { foldedLead, fractionalResponses } from '../../src/separate/route-responses';
 import { readyStretch } from '../../src/trust/match-score';
 import { scoreMapInSteps } from '../../src/trust/score-map';
 import { stretchProducts } from '../../src/trust/stretch-products';
@@ -29,20 +26,15 @@ const MOST_AHEAD_S: Readonly<Record<MapOrgan, number>> = { slow: 5, heart: 0.03 
 
 /** One map from a lead's samples on: folding, spectra, responses and all cells. */
 function map(organ: MapOrgan, samples: Float64Array): number {
-  const { memoryS, polynomialOrder } = DEFAULT_SETTINGS.fractional;
-  const lead = foldedLead(organ, samples, RATE_HZ);
+  const lead = atOnce(foldedLead(organ, samples, RATE_HZ));
   const turn = (2 * Math.PI * (organ === 'slow' ? 0.05 : 1.2)) / lead.rateHz;
   const target = lead.samples.map((_, i) => sin(turn * i) ** (organ === 'slow' ? 1 : 2));
   const products = stretchProducts(target, lead.samples, lead.rateHz);
   const ask = { organ, rateHz: RATE_HZ, freqsHz: products.freqsHz };
-  const steps = scoreMapInSteps(readyStretch(products, MOST_AHEAD_S[organ]), {
-    derivatives: derivativeResponses(MAP_ORDERS, memoryS, ask),
-    smoothings: smoothingResponses(MAP_WINDOWS_MS[organ], polynomialOrder, ask),
-  });
-  for (;;) {
-    const step = steps.next();
-    if (step.done) return step.value.reduce((cells, row) => cells + row.length, 0);
-  }
+  const factors = fractionalResponses(DEFAULT_SETTINGS.fractional, ask);
+  const stretch = readyStretch(products, MOST_AHEAD_S[organ]);
+  const rows = atOnce(scoreMapInSteps(stretch, factors, MAP_ORDERS, MAP_WINDOWS_MS[organ]));
+  return rows.reduce((cells, row) => cells + row.length, 0);
 }
 
 /** A map of each organ against two ordinary separations of the same stretch at 1 kHz, in turns. */

@@ -33,7 +33,7 @@ describe('responses at many frequencies at once', () => {
     [1, 60],
   ])('of a derivative of order %d over %d s are the sums of its weights', (order, memoryS) => {
     for (const rateHz of [250, 1000]) {
-      const [table] = grunwaldLetnikovResponses([order], 1 / rateHz, memoryS * rateHz, FREQS);
+      const table = grunwaldLetnikovResponses(1 / rateHz, memoryS * rateHz, FREQS)(order);
       FREQS.forEach((hz, k) => {
         const one = grunwaldLetnikovResponse(order, 1 / rateHz, memoryS * rateHz, hz);
         const size = Math.max(1e-6, Math.hypot(one.re, one.im));

@@ -354,3 +354,15 @@ test('route band drawn again for a narrower band is what separation gives for it
   const redrawn = redrawSlowWave(slow, narrow, PLAINLY(slow), ALL_ROUTES);
   expect(redrawn.slowWave).toEqual(slowOf(lead, { rateHz: 50, settings: narrow }).slowWave);
 });
+
+test('a lead that is 0 throughout, as an unconnected one may be, is drawn as 0', () => {
+  const slow = slowOf(new Float64Array(400 * 50), { rateHz: 50 });
+  expect(middleSize(slow.slowWave, 0)).toBe(0);
+});
+
+test('route band draws the slow wave once, when it is first asked for', () => {
+  const slow = slowOf(signalOf(400, 50, tone(100, 0.05)), { rateHz: 50 });
+  slow.recorded.fill(0);
+  expect(middleSize(slow.slowWave)).toBe(0);
+  expect(slow.slowWave).toBe(slow.slowWave);
+});

@@ -1,3 +1,4 @@
+import { atOnce } from '../../src/numeric/in-steps';
 import { cubicSpline } from '../../src/numeric/spline';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
 import {
@@ -6,11 +7,7 @@ import {
   type MapOrgan,
   type MapScore,
 } from '../../src/recording/settings-map';
-import {
-  derivativeResponses,
-  foldedLead,
-  smoothingResponses,
-} from '../../src/separate/route-responses';
+import { foldedLead, fractionalResponses } from '../../src/separate/route-responses';
 import { createSeparation } from '../../src/separate/separation';
 import { simulateSources } from '../../src/simulate/simulate-study';
 import { PLAIN_LEAD, PLAIN_STUDY, type SimulationSpec } from '../../src/simulate/spec';
@@ -57,18 +54,13 @@ export function mapOf(
   { lead, target, rateHz }: Mixture,
   passedBy: MapOrgan = organ,
 ): readonly (readonly MapScore[])[] {
-  const x = foldedLead(passedBy, lead, rateHz);
-  const s = foldedLead(passedBy, target, rateHz);
+  const x = atOnce(foldedLead(passedBy, lead, rateHz));
+  const s = atOnce(foldedLead(passedBy, target, rateHz));
   const products = stretchProducts(s.samples, x.samples, x.rateHz);
   const ask = { organ: passedBy, rateHz, freqsHz: products.freqsHz };
-  const steps = scoreMapInSteps(readyStretch(products, MOST_AHEAD_S[organ]), {
-    derivatives: derivativeResponses(MAP_ORDERS, DEFAULT_SETTINGS.fractional.memoryS, ask),
-    smoothings: smoothingResponses(MAP_WINDOWS_MS[organ], 2, ask),
-  });
-  for (;;) {
-    const step = steps.next();
-    if (step.done) return step.value;
-  }
+  const factors = fractionalResponses(DEFAULT_SETTINGS.fractional, ask);
+  const stretch = readyStretch(products, MOST_AHEAD_S[organ]);
+  return atOnce(scoreMapInSteps(stretch, factors, MAP_ORDERS, MAP_WINDOWS_MS[organ]));
 }
 
 /** What route fractional itself draws of a lead. */

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
 import { MAP_ORDERS, MAP_WINDOWS_MS, type MapOrgan } from '../../src/recording/settings-map';
 import { foldedLead } from '../../src/separate/route-responses';
@@ -30,7 +31,7 @@ describe.each(['slow', 'heart'] as const)('a map of the %s side', (organ) => {
       const known =
         organ === 'slow'
           ? target.filter((_, i) => i % (rateHz / 4) === 0)
-          : foldedLead('heart', target, rateHz).samples;
+          : atOnce(foldedLead('heart', target, rateHz)).samples;
       const score = timeScorer(organ, known, organ === 'slow' ? 4 : 250);
       const map = mapOf(organ, mixture);
       expect(CELLS[organ]).toHaveLength(20);
