@@ -1,5 +1,5 @@
 import type { Phase } from '../src/recording/phase';
-import type { RouteName } from '../src/recording/settings';
+import { type RouteName, SLOW_ROUTES } from '../src/recording/settings';
 import { parseClock } from '../src/units/time';
 
 /** What the command line asks for. */
@@ -25,7 +25,7 @@ export const USAGE = `npm run analyse -- STUDY... [options]
   --heart LEAD     the heart lead
   --breath LEAD    the breathing lead
   --phases LIST    fasting:0-1800,meal:1800-2400,fed:2400-5400 (seconds or h:mm:ss)
-  --route NAME     band or fractional
+  --route NAME     band, fractional or beat-average
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
   --out DIR        where the files go (default: here)
@@ -46,7 +46,6 @@ const OPTIONS = [
   'unit',
   'out',
 ];
-const ROUTES: readonly RouteName[] = ['band', 'fractional'];
 
 /** Reads the arguments after the program's name. Throws WrongArguments. */
 export function parseArguments(words: readonly string[]): AnalyseRequest {
@@ -97,8 +96,8 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
 
 function parseRoute(name: string | undefined): RouteName | null {
   if (name === undefined) return null;
-  const route = ROUTES.find((one) => one === name);
-  if (!route) throw new WrongArguments(`--route is ${ROUTES.join(' or ')}, not "${name}"`);
+  const route = SLOW_ROUTES.find((one) => one === name);
+  if (!route) throw new WrongArguments(`--route is ${SLOW_ROUTES.join(' or ')}, not "${name}"`);
   return route;
 }
 

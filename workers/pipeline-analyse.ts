@@ -1,6 +1,6 @@
 import type { Findings } from '../src/recording/findings';
 import { type Lead, leadKey } from '../src/recording/lead';
-import { type Interval, spansOf } from '../src/recording/span';
+import { spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import type { Analysis, ReviewInputs } from './analysis-api';
 import { breathesWithin } from './breathing-reference';
@@ -9,7 +9,7 @@ import { blockedOf, detectionOf, proposedSpans, toJudge } from './pipeline-beats
 import type { DoubtInputs } from './pipeline-doubts';
 import { wantedOf } from './pipeline-propose';
 import type { Computed } from './pipeline-results';
-import { leadChannel } from './pipeline-signals';
+import { leadChannel, type SlowWish } from './pipeline-signals';
 import { apartFrom, inLine, type Reckoned, type Study } from './pipeline-study';
 import { sameReview } from './same-series';
 
@@ -34,7 +34,6 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
   const { roles, settings } = inputs;
   await study.signals.provide(wantedOf(roles), settings, job);
   const { heart } = roles;
-  const spoiledOf = (lead: Lead) => spansOf(inputs.spans, leadKey(lead), 'stomach');
   const found = heart
     ? await detectionOf(
         study,
@@ -44,9 +43,17 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
         job,
       )
     : null;
+  const parts =
+    settings.slowRoute === 'beat-average'
+      ? await (await import('./pipeline-average')).heartPartsOf(study, inputs, job)
+      : null;
+  const wishOf = (lead: Lead): SlowWish => ({
+    spoiled: spansOf(inputs.spans, leadKey(lead), 'stomach'),
+    heartPart: parts?.get(leadKey(lead)) ?? null,
+  });
   const slow: SeparatedSlow[] = [];
   for (const lead of roles.slow) {
-    const drawing = study.signals.slow(lead, settings, { spoiled: spoiledOf(lead) });
+    const drawing = study.signals.slow(lead, settings, wishOf(lead));
     slow.push(await withRests(drawing, job));
     await job.breathe();
   }
@@ -60,7 +67,7 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
     breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
   };
   const first = await study.results.of(from, job);
-  const again = await withRests(redrawn(study, inputs, slow, { first, spoiledOf }), job);
+  const again = await withRests(redrawn(study, inputs, slow, { first, wishOf }), job);
   const last = again ? { ...from, slow: again } : from;
   study.last = { from: last, computed: again ? await study.results.of(last, job) : first };
   return study.last;
@@ -94,16 +101,15 @@ function* redrawn(
   study: Study,
   { roles, settings }: ReviewInputs,
   drawn: readonly SeparatedSlow[],
-  known: { readonly first: Computed; readonly spoiledOf: (lead: Lead) => readonly Interval[] },
+  known: { readonly first: Computed; readonly wishOf: (lead: Lead) => SlowWish },
 ): Generator<void, readonly SeparatedSlow[] | null> {
-  const { first, spoiledOf } = known;
+  const { first, wishOf } = known;
   const again: SeparatedSlow[] = [];
   if (settings.slowRoute === 'fractional') {
     if (!settings.fractional.undoLead) return null;
     for (const lead of roles.slow) {
       const dfCpm = study.results.usualCpm(leadKey(lead));
-      const wish = { spoiled: spoiledOf(lead), dfCpm };
-      again.push(yield* study.signals.slow(lead, settings, wish));
+      again.push(yield* study.signals.slow(lead, settings, { ...wishOf(lead), dfCpm }));
     }
     return again;
   }
@@ -120,8 +126,7 @@ function* redrawn(
       rateHz,
       length: recorded.length,
     });
-    const wish = { spoiled: spoiledOf(lead), breathing };
-    again.push(yield* study.signals.slow(lead, settings, wish));
+    again.push(yield* study.signals.slow(lead, settings, { ...wishOf(lead), breathing }));
   }
   return again;
 }

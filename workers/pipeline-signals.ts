@@ -4,7 +4,7 @@ import type { Recording, SignalSource } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import type { Interval, Span } from '../src/recording/span';
-import type { SeparatedSlow } from '../src/separate/route';
+import type { HeartPart, SeparatedSlow } from '../src/separate/route';
 import { loadRoutes, type Routes } from '../src/separate/routes';
 import { createSeparation, redrawInSteps, type Separation } from '../src/separate/separation';
 import { keptSamples } from '../src/stomach/kept-samples';
@@ -43,8 +43,8 @@ export function leadChannel(recording: Recording, lead: Lead) {
 
 /** Settings that make the slow wave another signal altogether; the band's limits only draw it again. */
 const slowMadeBy = ({ slowRoute, fractional }: Settings): string =>
-  slowRoute === 'band'
-    ? 'band'
+  slowRoute !== 'fractional'
+    ? slowRoute
     : JSON.stringify([slowRoute, { ...fractional, undoLead: false, heartWindowMs: 0 }]);
 
 const heartMadeBy = ({ heartRoute, heartBandHz, fractional }: Settings): string =>
@@ -62,17 +62,19 @@ export interface SlowWish {
   readonly spoiled: readonly Interval[];
   readonly dfCpm?: number;
   readonly breathing?: Float64Array | null;
+  /** Under route `beat-average`, what the heartbeats leave in the lead. */
+  readonly heartPart?: HeartPart | null;
 }
 
 /** All that a drawn slow wave depends on beside the parted lead. */
 function drawnByOf(
   { slowRoute, slowBandCpm, slowGain, fractional }: Settings,
-  { spoiled, dfCpm, breathing }: Required<SlowWish>,
+  { spoiled, dfCpm, breathing, heartPart }: Required<SlowWish>,
 ): string {
   return JSON.stringify(
-    slowRoute === 'band'
-      ? [slowBandCpm, slowGain, breathing && identity(breathing), spoiled]
-      : fractional.undoLead && dfCpm,
+    slowRoute === 'fractional'
+      ? fractional.undoLead && dfCpm
+      : [slowBandCpm, slowGain, identity(breathing), identity(heartPart), spoiled],
   );
 }
 
@@ -133,7 +135,7 @@ export class SignalStore {
   }
 
   /** The lead at the slow wave's rate, before any band; throws where it was not provided. */
-  recorded(lead: Lead): Pick<SeparatedSlow, 'recorded' | 'rateHz'> {
+  recorded(lead: Lead): Pick<SeparatedSlow, 'recorded' | 'rateHz' | 'wide'> {
     return this.#parted(lead);
   }
 
@@ -150,12 +152,12 @@ export class SignalStore {
   *slow(lead: Lead, settings: Settings, wish: SlowWish): Generator<void, SeparatedSlow> {
     const key = leadKey(lead);
     const from = this.#parted(lead);
-    const { spoiled, dfCpm = USUAL_CPM, breathing = null } = wish;
-    const drawnBy = drawnByOf(settings, { spoiled, dfCpm, breathing });
+    const { spoiled, dfCpm = USUAL_CPM, breathing = null, heartPart = null } = wish;
+    const drawnBy = drawnByOf(settings, { spoiled, dfCpm, breathing, heartPart });
     const before = this.#drawn.get(key);
     if (before?.from === from && before.drawnBy === drawnBy) return before.output;
     const kept = keptSamples(from.recorded, from.rateHz, spoiled);
-    const drawing = { dfCpm, kept, breathing };
+    const drawing = { dfCpm, kept, breathing, heartPart };
     const output = yield* redrawInSteps(from, settings, drawing, this.#routes);
     this.#drawn.set(key, { from, drawnBy, output });
     return output;

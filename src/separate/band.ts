@@ -49,7 +49,7 @@ export function slowBandTaps(rateHz: Hertz, bandCpm: readonly [Cpm, Cpm]): Float
 }
 
 /** Samples that are there, 1, and those in gaps, 0. */
-const present = (recorded: Float64Array) =>
+export const present = (recorded: Float64Array) =>
   Uint8Array.from(recorded, (value) => (Number.isNaN(value) ? 0 : 1));
 
 /** A lead that a filter can run over, and the spectra of what was there. */
@@ -67,7 +67,7 @@ const marginOf = (rateHz: Hertz) => Math.round(MARGIN_S * rateHz);
 function* bridgedLead(
   recorded: Float64Array,
   rateHz: Hertz,
-  { kept, breathing }: Omit<Drawing, 'dfCpm'>,
+  { kept, breathing }: Pick<Drawing, 'kept' | 'breathing'>,
 ): Generator<void, Bridged | null> {
   const first = yield* leadSpectra(recorded, kept, rateHz, 'zero');
   if (!first) return null;
@@ -115,7 +115,7 @@ function drawingTaps(
 type Drawn = Pick<SeparatedSlow, 'slowWave' | 'notes'>;
 
 /** All of a slow wave but its drawing. */
-function undrawn(
+export function undrawn(
   lead: string,
   recorded: Float64Array,
   rateHz: Hertz,
@@ -134,11 +134,12 @@ function undrawn(
     unclean: uncleanStretches(nanRuns(recorded), recorded.length, rateHz, reach),
     leadSAt: () => 0,
     derivativeLeadSAt: () => 0,
+    wide: null,
   };
 }
 
 /** A slow wave that is drawn once, when it is first asked for. */
-function drawnWhenAsked(
+export function drawnWhenAsked(
   rest: Omit<SeparatedSlow, keyof Drawn>,
   draw: () => Generator<void, Drawn>,
 ): SeparatedSlow {
@@ -158,11 +159,12 @@ function drawnWhenAsked(
   };
 }
 
-function* drawBand(
+/** The slow wave of a lead at the slow rate by route `band`, with a rest now and then. */
+export function* drawBand(
   recorded: Float64Array,
   rateHz: Hertz,
   settings: Settings,
-  drawing: Omit<Drawing, 'dfCpm'>,
+  drawing: Pick<Drawing, 'kept' | 'breathing'>,
 ): Generator<void, Drawn> {
   const ready = yield* bridgedLead(recorded, rateHz, drawing);
   yield;

@@ -118,6 +118,7 @@ function slowOutput(
     unclean: uncleanStretches(facts.gaps, facts.sampleCount, rateHz, reach),
     leadSAt: derivativeLeadSAt,
     derivativeLeadSAt,
+    wide: null,
     notes: describe(settings, kernels),
   };
   return draw(undrawn, settings, SLOW_SCALE_HZ * 60);

@@ -115,8 +115,8 @@ describe('in the drawn wave', () => {
     const { slow } = separation.finish();
     if (!slow) throw new Error('a slow wave was asked for');
     const kept = keptWithout(slow.recorded.length, spoiledS);
-    return redrawSlowWave(slow, DEFAULT_SETTINGS, { dfCpm: 3, kept, breathing: null }, ALL_ROUTES)
-      .slowWave;
+    const drawing = { dfCpm: 3, kept, breathing: null, heartPart: null };
+    return redrawSlowWave(slow, DEFAULT_SETTINGS, drawing, ALL_ROUTES).slowWave;
   };
   const plain = draw(clean, []);
   /** Root mean square of what an artefact changes in the two minutes on either side of its stretch. */

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { DEFAULT_SETTINGS, type RouteName, type Settings } from '../../src/recording/settings';
+import { DEFAULT_SETTINGS, type HeartRouteName, type Settings } from '../../src/recording/settings';
 import { createSeparation, redrawSlowWave } from '../../src/separate/separation';
 import { ALL_ROUTES } from './all-routes';
 
@@ -58,7 +58,7 @@ function worst(from: number, to: number, missAt: (i: number) => number): number 
   return largest;
 }
 
-const both = (route: RouteName) => ({
+const both = (route: HeartRouteName) => ({
   slowRoute: route,
   heartRoute: route,
   slowGain: 'even' as const,
@@ -70,6 +70,7 @@ const PLAINLY = (slow: { readonly recorded: Float64Array }) => ({
   dfCpm: 3,
   kept: new Uint8Array(slow.recorded.length).fill(1),
   breathing: null,
+  heartPart: null,
 });
 
 describe('the anti-aliased 4 Hz lead', () => {
