@@ -25,7 +25,7 @@ import { readLead } from './pipeline-within';
 const LEAST_S = 240;
 const MOST_S: Readonly<Record<MapOrgan, number>> = { slow: 1200, heart: 600 };
 /** How far a drawn signal may be ahead of or behind what is known. */
-const MOST_AHEAD_S: Readonly<Record<MapOrgan, number>> = { slow: 5, heart: 0.03 };
+export const MOST_AHEAD_S: Readonly<Record<MapOrgan, number>> = { slow: 5, heart: 0.03 };
 
 /** What a map of one organ is made from. */
 export interface MapWork {
