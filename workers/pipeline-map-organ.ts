@@ -42,6 +42,8 @@ export interface KnownStretch {
   readonly noise: Float64Array;
 }
 
+export const NO_STRETCH = 'No four minutes in a row are free of spoiled stretches.';
+
 export const noMap = (reason: string): NoMap => ({ kind: 'no-map', reason });
 
 /**

@@ -3,10 +3,17 @@ import { createRandom } from '../src/numeric/random';
 import { BEAT_CLASSES, type BeatList } from '../src/recording/beat';
 import { leadKey } from '../src/recording/lead';
 import type { MapBar, NoMap, OrganMap } from '../src/recording/settings-map';
-import { foldedNoise, heartBandResponses } from '../src/separate/route-responses';
-import { filtered, type ReadyStretch, scoreOf } from '../src/trust/match-score';
+import { heartBandResponses, heartNoise } from '../src/separate/route-responses';
+import { type ReadyStretch, scoreOf } from '../src/trust/match-score';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
-import { foldedStretch, type MapWork, mapStretch, noMap, organMap } from './pipeline-map-organ';
+import {
+  foldedStretch,
+  type MapWork,
+  mapStretch,
+  NO_STRETCH,
+  noMap,
+  organMap,
+} from './pipeline-map-organ';
 
 /** Generator of the noise that is added: the same for the same study. */
 const SEED = 20_260_512;
@@ -35,7 +42,7 @@ export async function heartMap(work: MapWork): Promise<OrganMap | NoMap> {
   const { roles, settings, beats } = inputs;
   if (!roles.heart || !heart) return noMap('No lead is read for the heartbeat.');
   const stretch = mapStretch('heart', roles.heart, study.source, inputs.spans);
-  if (!stretch) return noMap('No four minutes in a row are free of spoiled stretches.');
+  if (!stretch) return noMap(NO_STRETCH);
   const folded = await foldedStretch(work, 'heart', roles.heart, stretch);
   if (!folded) return noMap('Samples are missing in the longest clean stretch.');
   const { samples, rateHz, firstSample } = folded;
@@ -46,17 +53,14 @@ export async function heartMap(work: MapWork): Promise<OrganMap | NoMap> {
   const noiseUv = Math.sqrt(
     train.samples.reduce((sum, value) => sum + value * value, 0) / train.samples.length,
   );
-  const noise = foldedNoise('heart', samples.length, heartRateHz, createRandom(SEED)).map(
+  const noise = heartNoise(samples.length, heartRateHz, createRandom(SEED)).map(
     (value) => noiseUv * value,
   );
   await job.breathe();
   const barsOf = (ready: ReadyStretch): readonly MapBar[] => {
     const { freqsHz } = ready.products;
     const gain = heartBandResponses(settings, { rateHz: heartRateHz, freqsHz });
-    if (!gain) return [];
-    const zero = new Float64Array(freqsHz.length);
-    const one = zero.map(() => 1);
-    return [{ route: 'band', ...scoreOf(ready, filtered(ready.products, one, zero), gain) }];
+    return gain ? [{ route: 'band', ...scoreOf(ready, ready.products, gain) }] : [];
   };
   return organMap(
     { lead: { samples, rateHz }, target: train.samples, noise },

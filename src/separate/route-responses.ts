@@ -149,17 +149,12 @@ export function slowBandResponses(
 }
 
 /**
- * White noise of root mean square 1 up to half of the rate that a lead of `rateHz` is folded to, low-passed as what is folded
- * for the heart is.
+ * White noise of root mean square 1 up to half of the heartbeat's rate of a lead of `rateHz`, low-passed as what is folded to
+ * it is.
  */
-export function foldedNoise(
-  organ: Organ,
-  length: number,
-  rateHz: Hertz,
-  random: Random,
-): Float64Array {
+export function heartNoise(length: number, rateHz: Hertz, random: Random): Float64Array {
   const noise = Float64Array.from({ length }, () => random.gaussian());
-  if (organ === 'slow' || heartDecimation(rateHz) === 1) return noise;
+  if (heartDecimation(rateHz) === 1) return noise;
   const outputHz = rateHz / heartDecimation(rateHz);
   const taps = lowPassTaps({
     rateHz: outputHz,
