@@ -11,7 +11,7 @@ import { slowDrawingTaps } from './band';
 import { foldingTaps, windowSamples } from './fractional-kernels';
 import { heartBandAt, heartBandKernel } from './heart-band';
 import { heartDecimation } from './heart-rate';
-import { createSlowSampler, slowRateHz, slowSamplerResponses } from './slow-rate';
+import { createSlowSampler, SLOW_LOW_PASS, slowRateHz } from './slow-rate';
 
 export type Organ = 'slow' | 'heart';
 
@@ -113,6 +113,12 @@ export function fractionalResponses(
       return symmetricResponses(savitzkyGolayWeights(window, polynomialOrder), rateHz, freqsHz);
     },
   };
+}
+
+/** Gain of the low-pass before 4 Hz on a lead of that rate; 1 where the lead is taken as it is. */
+function slowSamplerResponses(rateHz: Hertz, freqsHz: Float64Array): Float64Array {
+  if (slowRateHz(rateHz) === rateHz) return new Float64Array(freqsHz.length).fill(1);
+  return symmetricResponses(lowPassTaps({ rateHz, ...SLOW_LOW_PASS }), rateHz, freqsHz);
 }
 
 /** Response of route `band` for the heartbeat, which is real; null where the rate leaves no band. */

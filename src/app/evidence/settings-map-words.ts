@@ -35,7 +35,7 @@ export function aheadText({ organ }: OrganMap, aheadS: number): string {
   if (Math.abs(aheadS) < small) return '';
   const size = Math.abs(aheadS);
   const text = organ === 'slow' ? `${size.toFixed(1)} s` : `${Math.round(1000 * size)} ms`;
-  return `, drawn ${text} ${aheadS > 0 ? 'early' : 'late'}, which the score leaves out`;
+  return `, drawn ${text} ${aheadS > 0 ? 'early' : 'late'}`;
 }
 
 /** What is known, in what, where. */
