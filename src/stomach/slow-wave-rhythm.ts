@@ -51,7 +51,8 @@ interface Lead {
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
-  /** Stops of the recorder. */
+  /** Stretches without samples, and those of them that are stops of the recorder. */
+  readonly missing: readonly Interval[];
   readonly stops: readonly Interval[];
 }
 
@@ -154,6 +155,60 @@ function windowsOf(
   return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
+/** A lead ready to be judged: its windows, those kept from before where nothing of them has changed, and its crests. */
+function* leadOf(options: SlowWaveRhythmOptions): Generator<void, Lead> {
+  const { slow, spoiled, settings } = options;
+  const { lengthS } = settings.epoch;
+  const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
+  const missing = missingStretches(slow.forSpectra, slow.rateHz);
+  const memory = options.memory ?? createStomachMemory();
+  memory.windows = windowsOf(options, kept, lengthS, memory.windows);
+  memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
+  yield;
+  return {
+    memory,
+    options,
+    windows: memory.windows,
+    halfWindows: memory.halfWindows,
+    stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
+    missing,
+    crestsS: crestTimes(slow.slowWave, {
+      rateHz: slow.rateHz,
+      highCpm: settings.rhythmBands.highCpm,
+      unclean: joinIntervals([...slow.unclean, ...spoiled]),
+    }),
+  };
+}
+
+/** Epochs of the phases with their spectra, with a rest after each. */
+function* epochsOf(lead: Lead): Generator<void, JudgedEpochs> {
+  const { slow, phases, settings } = lead.options;
+  const endS = slow.forSpectra.length / slow.rateHz;
+  const analysed: ReturnType<typeof analyseEpoch>[] = [];
+  for (const phase of phases) {
+    const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
+    for (const fromS of epochStarts(within, settings.epoch)) {
+      analysed.push(analyseEpoch(lead, phase, fromS));
+      yield;
+    }
+  }
+  return {
+    epochs: analysed.map(({ epoch }) => epoch),
+    epochSpectra: analysed.map(({ spectrum }) => spectrum),
+    binCpm: lead.windows.binCpm,
+  };
+}
+
+/** Epochs with the spectra they were judged by. */
+export type JudgedEpochs = Pick<StomachAnalysis, 'epochSpectra' | 'binCpm'> & {
+  readonly epochs: readonly Epoch[];
+};
+
+/** The epochs alone, as slowWaveRhythm judges them, with a rest after each. */
+export function* judgedEpochs(options: SlowWaveRhythmOptions): Generator<void, JudgedEpochs> {
+  return yield* epochsOf(yield* leadOf(options));
+}
+
 /**
  * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
  * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
@@ -166,52 +221,17 @@ export const slowWaveRhythm = (options: SlowWaveRhythmOptions): StomachAnalysis 
 export function* slowWaveRhythmInSteps(
   options: SlowWaveRhythmOptions,
 ): Generator<void, StomachAnalysis> {
-  const { slow, spoiled, phases, settings } = options;
-  const { lengthS } = settings.epoch;
-  const endS = slow.forSpectra.length / slow.rateHz;
-  const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
-  const missing = missingStretches(slow.forSpectra, slow.rateHz);
-  const memory = options.memory ?? createStomachMemory();
-  memory.windows = windowsOf(options, kept, lengthS, memory.windows);
-  memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
+  const { slow, settings } = options;
+  const lead = yield* leadOf(options);
   yield;
-  const lead: Lead = {
-    memory,
-    options,
-    windows: memory.windows,
-    halfWindows: memory.halfWindows,
-    stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
-    crestsS: crestTimes(slow.slowWave, {
-      rateHz: slow.rateHz,
-      highCpm: settings.rhythmBands.highCpm,
-      unclean: joinIntervals([...slow.unclean, ...spoiled]),
-    }),
-  };
-  yield;
-  const analysed: ReturnType<typeof analyseEpoch>[] = [];
-  for (const phase of phases) {
-    const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
-    for (const fromS of epochStarts(within, settings.epoch)) {
-      analysed.push(analyseEpoch(lead, phase, fromS));
-      yield;
-    }
-  }
-  const spectrogram = runningSpectrogram(
-    lead.windows,
-    slow.forSpectra.length,
-    slow.rateHz,
-    settings,
-  );
+  const { epochs, epochSpectra, binCpm } = yield* epochsOf(lead);
+  const { length } = slow.forSpectra;
+  const spectrogram = runningSpectrogram(lead.windows, length, slow.rateHz, settings);
   return {
-    rhythm: {
-      lead: slow.lead,
-      epochs: analysed.map(({ epoch }) => epoch),
-      spectrogram: yield* spectrogram,
-      crestsS: lead.crestsS,
-    },
-    epochSpectra: analysed.map(({ spectrum }) => spectrum),
-    binCpm: lead.windows.binCpm,
-    missing,
+    rhythm: { lead: slow.lead, epochs, spectrogram: yield* spectrogram, crestsS: lead.crestsS },
+    epochSpectra,
+    binCpm,
+    missing: lead.missing,
     breathing: options.breathing,
   };
 }

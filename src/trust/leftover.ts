@@ -1,4 +1,5 @@
 import { exp, log10 } from '../numeric/elementary';
+import { quietly } from '../numeric/in-steps';
 import type { Random } from '../numeric/random';
 import type { Epoch } from '../recording/rhythm';
 import type { Hertz } from '../units/rate';
@@ -180,32 +181,23 @@ export function* leftoverOf(from: LeftoverInputs): Generator<number, Leftover> {
       return frame ? [{ track, frame }] : [];
     });
   const lines = [...placed(found.tracks)];
-  for (const { frame } of lines) yield* saying(takeOut(bare, frame, from), 0.2);
+  for (const { frame } of lines) yield* quietly(takeOut(bare, frame, from), 0.2);
   const inside = bare.subarray(margin, margin + length);
-  const first = yield* saying(levelWindows(inside, kept, rateHz), 0.4);
+  const first = yield* quietly(levelWindows(inside, kept, rateHz), 0.4);
   const harmonics = placed(standingHarmonics(first, found));
-  for (const { frame } of harmonics) yield* saying(takeOut(bare, frame, from), 0.5);
+  for (const { frame } of harmonics) yield* quietly(takeOut(bare, frame, from), 0.5);
   lines.push(...harmonics);
   const windows =
-    harmonics.length > 0 ? yield* saying(levelWindows(inside, kept, rateHz), 0.6) : first;
+    harmonics.length > 0 ? yield* quietly(levelWindows(inside, kept, rateHz), 0.6) : first;
   const tracks = lines.map(({ track }) => track);
   const noise = new Float64Array(whole.length);
-  for (const line of lines) yield* saying(refill(noise, line, { windows, tracks }, from), 0.8);
+  for (const line of lines) yield* quietly(refill(noise, line, { windows, tracks }, from), 0.8);
   const change = inside.map((value, i) => value - whole[margin + i] + noise[margin + i]);
-  const rest = yield* saying(restOf(change, from, lines, windows), 0.9);
+  const rest = yield* quietly(restOf(change, from, lines, windows), 0.9);
   return {
     lead: recorded.map((value, i) => value + change[i]),
     change,
     tracks,
     restDb: rest === null ? null : 10 * log10(rest),
   };
-}
-
-/** Runs a pass that says nothing of its progress; yields the part of the whole that is done. */
-function* saying<T>(pass: Generator<void, T>, done: number): Generator<number, T> {
-  for (;;) {
-    const step = pass.next();
-    if (step.done) return step.value;
-    yield done;
-  }
 }
