@@ -1,20 +1,11 @@
 import { sin } from '../src/numeric/elementary';
 import { createRandom } from '../src/numeric/random';
 import { cubicSpline } from '../src/numeric/spline';
-import { median } from '../src/numeric/statistics';
 import { leadKey } from '../src/recording/lead';
-import { lostOn } from '../src/recording/lost';
-import type { Epoch } from '../src/recording/rhythm';
 import type { NoMap, OrganMap } from '../src/recording/settings-map';
-import type { Interval } from '../src/recording/span';
 import type { FoldedLead } from '../src/separate/route-responses';
-import { keptSamples } from '../src/stomach/kept-samples';
-import { hasRhythm } from '../src/stomach/rhythm-class';
 import { usualCpm } from '../src/stomach/usual-cpm';
-import { windowSpectra } from '../src/stomach/window-spectrum';
-import type { Leftover } from '../src/trust/leftover';
 import { cpmToHz } from '../src/units/rate';
-import { leftoverOfLead } from './pipeline-leftover';
 import { slowBars } from './pipeline-map-bars';
 import {
   foldedStretch,
@@ -25,61 +16,23 @@ import {
   noMap,
   organMap,
 } from './pipeline-map-organ';
+import { slowCheckOf } from './pipeline-planted';
+import { ownHeight } from './pipeline-planted-slow';
 import { leadChannel } from './pipeline-signals';
 
 /** Generator of the noise that is added: the same for the same study. */
 const SEED = 20_260_511;
 /** The frequency up to which added noise is as strong as the planted wave: what a lead at 4 Hz can hold. */
 const NOISE_TO_HZ = 2;
-/** A wave's power lies within this of its frequency in an epoch. */
-const LOBE_CPM = 0.5;
-const MOST_EPOCHS = 100;
-
+/** The study's usual wave. */
 interface OwnWave {
   readonly cpm: number;
   readonly uv: number;
 }
 
-/** The study's usual wave: median DF, and median height over what the leftover holds there. */
-function ownWave(
-  { recorded, rateHz }: { readonly recorded: Float64Array; readonly rateHz: number },
-  leftover: Leftover,
-  spoiled: readonly Interval[],
-  epochs: readonly Epoch[],
-  lengthS: number,
-): OwnWave | null {
-  const powerIn = (signal: Float64Array) => {
-    const kept = keptSamples(signal, rateHz, spoiled);
-    const spectra = windowSpectra({ signal, kept, rateHz, lengthS, powerResponse: null });
-    return (fromS: number, cpm: number) => {
-      const density = spectra.density(
-        spectra.prepare(Math.max(0, Math.ceil(fromS * rateHz - 1e-6))),
-      );
-      const from = Math.max(1, Math.round((cpm - LOBE_CPM) / spectra.binCpm));
-      const to = Math.min(density.length - 1, Math.round((cpm + LOBE_CPM) / spectra.binCpm));
-      let power = 0;
-      for (let k = from; k <= to; k += 1) power += (density[k] * spectra.binCpm) / 60;
-      return power;
-    };
-  };
-  const own = powerIn(recorded);
-  const rest = powerIn(leftover.lead);
-  const rhythmic = epochs.filter(hasRhythm);
-  const kept = rhythmic.length > 0 ? rhythmic : epochs.filter((one) => one.kept);
-  const every = Math.max(1, kept.length / MOST_EPOCHS);
-  const some = kept.filter((_, k) => Math.floor(k / every) !== Math.floor((k - 1) / every));
-  const heights = some.map(({ fromS, dfCpm }) => {
-    const cpm = dfCpm ?? usualCpm({ epochs });
-    const beside = rhythmic.length > 0 ? rest(fromS, cpm) : 0;
-    return Math.sqrt(2 * Math.max(0, own(fromS, cpm) - beside));
-  });
-  const uv = heights.length > 0 ? median(heights) : 0;
-  return uv > 0 ? { cpm: usualCpm({ epochs }), uv } : null;
-}
-
 /** What the leftover's lines are to the recording, brought from the slow rate to that of a folded stretch. */
 function changeAt(
-  { change }: Leftover,
+  change: Float64Array,
   slowHz: number,
   fromS: number,
   { samples, rateHz }: FoldedLead,
@@ -124,18 +77,17 @@ export async function slowMap(work: MapWork): Promise<OrganMap | NoMap> {
   if (!lead) return noMap('No lead is read for the slow wave.');
   const stretch = mapStretch('slow', lead, study.source, spans);
   if (!stretch) return noMap(NO_STRETCH);
-  const lost = lostOn(lead, 'stomach', spans, recording.gaps);
-  const slow = study.signals.recorded(lead);
-  const { rhythm } = from.computed.stomach[roles.reported];
-  const leftover = await leftoverOfLead({ slow, spoiled: lost, rhythm }, job);
-  const own = leftover && ownWave(slow, leftover, lost, rhythm.epochs, settings.epoch.lengthS);
-  if (!leftover || !own) return noMap('No epoch of the reported lead is kept.');
+  const check = await slowCheckOf({ ...from, study, open: [] }, job);
+  const height = check && ownHeight(check);
+  if (!check || !height) return noMap('No epoch of the reported lead is kept.');
+  const own = { cpm: usualCpm(check), uv: height.ownUv };
   await job.breathe();
   const folded = await foldedStretch(work, 'slow', lead, stretch);
   if (!folded) return noMap('Samples are missing in the longest clean stretch.');
   const { rateHz } = leadChannel(recording, lead);
   const fromS = folded.firstSample / rateHz;
-  const known = plantedIn(folded, changeAt(leftover, slow.rateHz, fromS, folded), own);
+  const slowHz = check.lead.slow.rateHz;
+  const known = plantedIn(folded, changeAt(check.leftover.change, slowHz, fromS, folded), own);
   await job.breathe();
   const beatRateHz = roles.heart ? leadChannel(recording, roles.heart).rateHz : null;
   const here = beatRateHz === null ? null : { beats, beatRateHz, fromS };

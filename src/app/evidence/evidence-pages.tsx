@@ -17,22 +17,13 @@ interface PageOf<P extends EvidencePart> extends PageHead {
   readonly page: (value: Evidence[P]) => ReactNode;
 }
 
-type Pages = { readonly [P in EvidencePart]: PageOf<P> } & {
-  readonly [P in Exclude<EvidencePageId, EvidencePart>]: PageHead;
-};
-
-/** The pages of the evidence dialog, one a part, and those that are no part of it. */
-export const EVIDENCE_PAGES: Pages = {
+/** The pages of the parts of the evidence. */
+const PART_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
   planted: {
     title: 'Planted check',
     about:
       'Known slow waves and heartbeats planted in this recording’s own noise, taken the same way as the study’s own.',
     page: (value) => <PlantedPage value={value} />,
-  },
-  'settings-map': {
-    title: 'Which settings',
-    about:
-      'How well route fractional would do on this recording with other settings, beside the other routes. The program changes none by itself.',
   },
   ranges: {
     title: 'Ranges',
@@ -57,7 +48,17 @@ export const EVIDENCE_PAGES: Pages = {
   },
 };
 
+/** All pages of the evidence dialog: those of the parts, and those that are no part of it. */
+export const EVIDENCE_PAGES: Readonly<Record<EvidencePageId, PageHead>> = {
+  ...PART_PAGES,
+  'settings-map': {
+    title: 'Which settings',
+    about:
+      'How well route fractional would do on this recording with other settings, beside the other routes. The program changes none by itself.',
+  },
+};
+
 /** The page of a part that is there, drawn; null where it is not. */
 export function evidencePage<P extends EvidencePart>(part: P, value: Evidence[P]): ReactNode {
-  return EVIDENCE_PAGES[part].page(value);
+  return PART_PAGES[part].page(value);
 }
