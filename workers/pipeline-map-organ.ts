@@ -16,10 +16,10 @@ import { filtered, type ReadyStretch, readyStretch, scoreOf } from '../src/trust
 import { scoreMapInSteps } from '../src/trust/score-map';
 import { stretchProducts } from '../src/trust/stretch-products';
 import { inTurns, type Job, withRests } from './job';
+import { readLead } from './lead-pass';
 import type { DoubtInputs } from './pipeline-doubts';
 import { leadChannel } from './pipeline-signals';
 import type { Study } from './pipeline-study';
-import { readLead } from './pipeline-within';
 
 /** Shortest and longest stretch a map is made on. */
 const LEAST_S = 240;
