@@ -2,12 +2,13 @@ import './findings-pane.css';
 import { useState } from 'react';
 import { useStore } from 'zustand';
 import type { EvidencePart } from '../recording/evidence/evidence';
+import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import type { Findings } from '../recording/findings';
 import type { Edit } from '../session/document';
 import type { SessionStore } from '../session/store';
 import { formatClock } from '../units/time';
 import type { AnalysisStore } from './analysis-store';
-import type { EvidenceStore } from './evidence-store';
+import { type EvidenceStore, evidenceAt } from './evidence-store';
 import { goToStretch } from './findings-go';
 import { FindingsSpans } from './findings-spans';
 import { FindingsTable, type RangesShown } from './findings-table';
@@ -29,14 +30,15 @@ export interface FindingsPaneProps {
 /** The column of numbers: figures by phase, what stands above them, what was seen in passing, the spoiled spans. */
 export function FindingsPane(props: FindingsPaneProps) {
   const { session, analysis, view, onFigure, onEdit, evidence, onEvidence } = props;
-  const findings = useStore(analysis, (state) => state.findings);
+  const figures = useStore(analysis, (state) => state.findings);
+  const found = useStore(evidence, (state) => state.found);
   const computed = useStore(analysis, (state) => state.edit);
   const edit = useStore(session, (state) => state.session?.log.length ?? 0);
   const working = useStore(analysis, (state) => state.progress !== null);
   const stopped = useStore(analysis, (state) => state.stopped);
+  const findings = figures && withEvidenceMarks(figures, evidenceAt(found, computed));
   const stale = findings !== null && computed < edit;
-  const found = useStore(evidence, (state) => state.found.ranges);
-  const ranges = found ? { value: found.value, stale: found.edit !== edit } : null;
+  const ranges = found.ranges && { value: found.ranges.value, stale: found.ranges.edit !== edit };
   const go = (fromS: number, toS: number) => goToStretch(view, fromS, toS);
   return (
     <section className="findings" id="findings" tabIndex={-1} aria-labelledby="findings-title">
@@ -52,7 +54,7 @@ export function FindingsPane(props: FindingsPaneProps) {
           aria-busy={stale && !stopped}
         >
           <Warnings findings={findings} />
-          <PhaseFigures findings={findings} ranges={ranges} onFigure={onFigure} onGo={go} />
+          <PhaseFigures findings={findings} ranges={ranges ?? null} onFigure={onFigure} onGo={go} />
           <Seen findings={findings} onGo={go} />
         </div>
       ) : null}
