@@ -156,7 +156,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
 
 /**
  * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks and
- * the room view: room.spec; differences of two sessions: history.spec.
+ * the room view: room.spec; differences of two sessions: history.spec; the self-check: evidence-self-check.spec.
  */
 const ELSEWHERE = [
   'room',
@@ -172,6 +172,7 @@ const ELSEWHERE = [
   'previous-difference',
   'previous-bookmark',
   'mend-doubt',
+  'self-check',
   'stop',
 ];
 

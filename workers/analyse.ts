@@ -7,6 +7,7 @@ import { separatedEdf } from '../src/export/separated-edf';
 import { NO_BEATS } from '../src/recording/beat';
 import { Refusal } from '../src/recording/failure';
 import { leadChannels, leadKey } from '../src/recording/lead';
+import { failedChecks } from '../src/recording/self-check';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
 import { confirmStudy } from '../src/session/confirm-study';
 import type { Session, SessionState } from '../src/session/document';
@@ -20,8 +21,9 @@ import type { Opened } from './analysis-api';
 import { checkRoles, codeOf, phasesWithin } from './command-choices';
 import { type AnalyseRequest, parseArguments, USAGE, WrongArguments } from './command-line';
 import { proposalOf } from './command-proposal';
+import { isSelfCheck, selfCheckText } from './command-self-check';
 import { type Job, startJob } from './job';
-import { createPipeline, type Pipeline } from './pipeline';
+import { createPipeline, type Pipeline, selfCheck } from './pipeline';
 
 async function proposedSession(
   pipeline: Pipeline,
@@ -152,7 +154,15 @@ function reasonOf(error: unknown): string {
   return [message, place ? `(${place})` : '', remedy].filter((part) => part !== '').join(' ');
 }
 
+/** Prints every check value with what this machine made of it; 1 where one failed. */
+async function printSelfCheck(): Promise<number> {
+  const check = await selfCheck(startJob(() => undefined).job);
+  process.stdout.write(`${PROGRAM}\n${selfCheckText(check)}`);
+  return failedChecks(check) > 0 ? 1 : 0;
+}
+
 async function main(words: readonly string[]): Promise<number> {
+  if (isSelfCheck(words)) return printSelfCheck();
   const request = parseArguments(words);
   const folders = foldersOf(request.studies, request.out);
   let failed = 0;

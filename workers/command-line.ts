@@ -18,6 +18,7 @@ export interface AnalyseRequest {
 }
 
 export const USAGE = `npm run analyse -- STUDY... [options]
+npm run analyse -- --self-check
   --session FILE   the review to compute from (one study only)
   --code CODE      what the study is called (one study only; default: the header's code, else study- and
                    the first 8 digits of its SHA-256)
@@ -29,7 +30,9 @@ export const USAGE = `npm run analyse -- STUDY... [options]
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
   --out DIR        where the files go (default: here)
-LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed, 2 wrong arguments.`;
+  --self-check     runs the program's check values on this machine and prints each; goes alone
+LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed or a check
+failed, 2 wrong arguments.`;
 
 /** Wrong arguments, in words for the person. */
 export class WrongArguments extends Error {}

@@ -1,20 +1,28 @@
 import type { ReactNode } from 'react';
 import type { Evidence, EvidencePart } from '../../recording/evidence/evidence';
+import type { EvidencePageId } from '../evidence-page-id';
 import { LeadsPage } from './leads-page';
 import { OpinionsPage } from './opinions-page';
 import { PlantedPage } from './planted-page';
 import { RangesPage } from './ranges-page';
 import { TogetherPage } from './together-page';
 
-type PageOf<P extends EvidencePart> = {
+interface PageHead {
   readonly title: string;
   /** What the page is for, in a sentence above it. */
   readonly about: string;
+}
+
+interface PageOf<P extends EvidencePart> extends PageHead {
   readonly page: (value: Evidence[P]) => ReactNode;
+}
+
+type Pages = { readonly [P in EvidencePart]: PageOf<P> } & {
+  readonly [P in Exclude<EvidencePageId, EvidencePart>]: PageHead;
 };
 
-/** The pages of the evidence dialog, one a part. */
-export const EVIDENCE_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
+/** The pages of the evidence dialog, one a part, and those that stand on no part. */
+export const EVIDENCE_PAGES: Pages = {
   planted: {
     title: 'Planted check',
     about:
@@ -41,6 +49,11 @@ export const EVIDENCE_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
     title: 'Both rhythms',
     about: 'Stomach and heart over the same minutes. Exploratory: no reference values exist.',
     page: (value) => <TogetherPage value={value} />,
+  },
+  'self-check': {
+    title: 'Self-check',
+    about:
+      'Known values run through the very code that makes the figures, on this machine. It needs no study.',
   },
 };
 
