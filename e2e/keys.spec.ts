@@ -91,6 +91,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'go-to': ['', 'dialog', /^Go to a time$/],
   log: ['', 'dialog', /^Log$/],
   evidence: ['', 'dialog', /^Evidence$/],
+  'site-reference': ['', 'dialog', /^Reference values of the site$/],
   compare: ['', 'dialog', /^Compare with another session$/],
   'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
   bookmarks: ['', 'dialog', /^Bookmarks$/],

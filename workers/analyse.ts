@@ -9,12 +9,14 @@ import { Refusal } from '../src/recording/failure';
 import { leadChannels, leadKey } from '../src/recording/lead';
 import { failedChecks } from '../src/recording/self-check';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
+import type { SiteReference } from '../src/recording/site-reference';
 import { confirmStudy } from '../src/session/confirm-study';
 import type { Session, SessionState } from '../src/session/document';
 import { initialState, studyIdentity } from '../src/session/initial-state';
 import { beginSession } from '../src/session/log';
 import { notesOf } from '../src/session/note-edits';
 import { textToSession } from '../src/session/read-document';
+import { siteReferenceOf } from '../src/session/read-site-reference';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
 import type { Opened } from './analysis-api';
@@ -56,13 +58,21 @@ async function keptSession(
   return session;
 }
 
+const referenceIn = async (path: string | null): Promise<SiteReference | null> =>
+  path === null ? null : siteReferenceOf(await readFile(path, 'utf8'), basename(path));
+
 async function sha256Of(path: string): Promise<string> {
   const hash = createHash('sha256');
   for await (const chunk of createReadStream(path)) hash.update(chunk);
   return hash.digest('hex');
 }
 
-async function analyseStudy(path: string, folder: string, request: AnalyseRequest): Promise<void> {
+async function analyseStudy(
+  path: string,
+  folder: string,
+  request: AnalyseRequest,
+  siteReference: SiteReference | null,
+): Promise<void> {
   const { job } = startJob(() => undefined);
   const pipeline = createPipeline();
   const file = await openAsBlob(path);
@@ -90,6 +100,7 @@ async function analyseStudy(path: string, folder: string, request: AnalyseReques
     findings: analysis.findings,
     openDoubts,
     evidence,
+    siteReference,
   });
   await mkdir(folder, { recursive: true });
   for (const { name, text } of files) await writeFile(join(folder, name), text);
@@ -165,10 +176,11 @@ async function main(words: readonly string[]): Promise<number> {
   if (isSelfCheck(words)) return printSelfCheck();
   const request = parseArguments(words);
   const folders = foldersOf(request.studies, request.out);
+  const siteReference = await referenceIn(request.reference);
   let failed = 0;
   for (const [i, path] of request.studies.entries()) {
     try {
-      await analyseStudy(path, folders[i], request);
+      await analyseStudy(path, folders[i], request, siteReference);
       process.stdout.write(`${path}: written to ${folders[i]}\n`);
     } catch (error) {
       if (error instanceof WrongArguments) throw error;

@@ -15,6 +15,8 @@ export interface AnalyseRequest {
   readonly rateHz: number | null;
   readonly unit: string | null;
   readonly out: string;
+  /** File with the site's reference values. */
+  readonly reference: string | null;
 }
 
 export const USAGE = `npm run analyse -- STUDY... [options]
@@ -29,6 +31,7 @@ npm run analyse -- --self-check
   --route NAME     band or fractional
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
+  --reference FILE reference values of the site, to stand beside the figures they fit
   --out DIR        where the files go (default: here)
   --self-check     runs the program's check values on this machine and prints each; goes alone
 LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed or a check
@@ -48,6 +51,7 @@ const OPTIONS = [
   'rate',
   'unit',
   'out',
+  'reference',
 ];
 const ROUTES: readonly RouteName[] = ['band', 'fractional'];
 
@@ -95,6 +99,7 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
     rateHz: parseRate(single.get('rate')),
     unit: single.get('unit') ?? null,
     out: single.get('out') ?? '.',
+    reference: single.get('reference') ?? null,
   };
 }
 

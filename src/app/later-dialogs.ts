@@ -17,4 +17,5 @@ export { ProtocolDialog } from './protocol-dialog';
 export { RolesDialog } from './roles-dialog';
 export { SettingsDialog } from './settings-dialog';
 export { SignDialog } from './sign-dialog';
+export { SiteReferenceDialog } from './site-reference-dialog';
 export { SpansDialog } from './spans-dialog';

@@ -102,6 +102,7 @@ export function createStudyFiles({ session, analysis, shell, keeping, client }: 
           sha256,
           openDoubts: doubts.value.open,
           evidence: evidence.value,
+          siteReference: shell.getState().siteReference?.reference ?? null,
         });
         download(`${safeCode(state.study.code)}-results.zip`, zip, 'application/zip');
         shell.getState().say(IDENTIFYING);
