@@ -27,13 +27,12 @@ import {
 import { expectDrawn } from './support-drawing';
 import {
   cutHeader,
+  dropFile,
   type GivenFile,
   namedRecord,
   noDuration,
-  of24Bit,
   packed,
   recordFile,
-  withGaps,
 } from './support-files';
 
 test('by the file chooser: who it is comes first, and nothing of it is drawn before', async ({
@@ -63,20 +62,7 @@ test('by the file chooser: who it is comes first, and nothing of it is drawn bef
 
 test('by dropping it on the page', async ({ browser }) => {
   const page = await freshPage(browser);
-  const { name, buffer } = recordFile();
-  const data = await page.evaluateHandle(
-    ({ name, text }) => {
-      const transfer = new DataTransfer();
-      const bytes = Uint8Array.from(atob(text), (letter) => letter.charCodeAt(0));
-      transfer.items.add(new File([bytes], name));
-      return transfer;
-    },
-    { name, text: buffer.toString('base64') },
-  );
-  const target = page.locator('body');
-  await target.dispatchEvent('dragover', { dataTransfer: data });
-  await expect(page.getByText('Drop the file to open it')).toBeVisible();
-  await target.dispatchEvent('drop', { dataTransfer: data });
+  await dropFile(page, recordFile());
   const dialog = dialogOf(page, IDENTITY);
   await expect(dialog).toContainText('record208-abdomen.edf', { timeout: LONG_MS });
   await agree(page);
@@ -146,8 +132,6 @@ test.describe('with a recording open', () => {
   const broken: readonly (readonly [string, () => GivenFile, RegExp])[] = [
     ['cut off inside its header', cutHeader, /ends inside its header: 500 of \d+ bytes/],
     ['with records of no length', noDuration, /duration of a record/],
-    ['with gaps (EDF+D)', withGaps, /EDF\+D/],
-    ['of 24 bits', of24Bit, /24-bit/],
     ['that is packed', packed, /gzip/],
   ];
   for (const [what, file, says] of broken)

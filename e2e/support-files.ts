@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { basename } from 'node:path';
 import { gzipSync } from 'node:zlib';
+import { expect, type Page } from 'playwright/test';
 import { RECORD, STEADY } from './support';
 
 /** A file as the page is given it. */
@@ -19,7 +20,6 @@ const given = (name: string, buffer: Buffer): GivenFile => ({
 /** Fields of an EDF header by their first byte and length (Kemp 1992; EDF+ 2003 for the last). */
 const PATIENT = [8, 80] as const;
 const RECORD_DURATION = [244, 8] as const;
-const RESERVED = [192, 44] as const;
 
 /** The record with a field of its header written anew. */
 function withField([at, length]: readonly [number, number], text: string): Buffer {
@@ -46,15 +46,58 @@ export function namedThroughout(): GivenFile {
 /** Cut off inside the header. */
 export const cutHeader = (): GivenFile => given('cut.edf', readFileSync(RECORD).subarray(0, 500));
 
-/** Says of itself that it has gaps. */
-export const withGaps = (): GivenFile => given('gaps.edf', withField(RESERVED, 'EDF+D'));
+/** How the record lies in its bytes. */
+function layoutOf(bytes: Buffer) {
+  const text = (at: number, length: number) => bytes.toString('latin1', at, at + length).trim();
+  const signals = Number(text(252, 4));
+  const samples = Array.from({ length: signals }, (_, i) =>
+    Number(text(256 + 216 * signals + 8 * i, 8)),
+  );
+  const recordSamples = samples.reduce((sum, one) => sum + one, 0);
+  return {
+    signals,
+    recordSamples,
+    headerBytes: 256 * (signals + 1),
+    records: Number(text(236, 8)),
+  };
+}
 
-/** A header of the 24-bit sister format. */
+/** The steady minutes without the records of 30 s in their middle: a recording that was stopped and went on (EDF+D). */
+export function withGap(): GivenFile {
+  const bytes = readFileSync(STEADY);
+  const { headerBytes, recordSamples, records } = layoutOf(bytes);
+  const kept = Buffer.concat([
+    bytes.subarray(0, headerBytes + 2 * recordSamples * 120),
+    bytes.subarray(headerBytes + 2 * recordSamples * 150),
+  ]);
+  kept.write('EDF+D'.padEnd(44), 192, 'latin1');
+  kept.write(String(records - 30).padEnd(8), 236, 'latin1');
+  return given('stopped.edf', kept);
+}
+
+/** The steady minutes with their 16-bit samples written as 24-bit ones (BDF+). */
 export function of24Bit(): GivenFile {
-  const bytes = withField(RESERVED, '24BIT');
-  bytes[0] = 0xff;
-  bytes.write('BIOSEMI', 1, 'latin1');
-  return given('wide.bdf', bytes);
+  const bytes = readFileSync(STEADY);
+  const { headerBytes, signals } = layoutOf(bytes);
+  const head = Buffer.from(bytes.subarray(0, headerBytes));
+  head.write('\u00ffBIOSEMI', 0, 'latin1');
+  head.write('BDF+C'.padEnd(44), 192, 'latin1');
+  head.write('BDF Annotations'.padEnd(16), 256 + 16 * (signals - 1), 'latin1');
+  const last = 256 + 216 * signals + 8 * (signals - 1);
+  const annotated = Number(head.toString('latin1', last, last + 8));
+  const words = (bytes.length - headerBytes) / 2;
+  const record = layoutOf(bytes).recordSamples;
+  const wide = Buffer.alloc(3 * words);
+  for (let word = 0; word < words; word += 1) {
+    const inRecord = word % record;
+    const at = headerBytes + 2 * word;
+    if (inRecord < record - annotated) wide.writeIntLE(bytes.readInt16LE(at), 3 * word, 3);
+    else {
+      const from = 3 * (word - inRecord + record - annotated) + 2 * (inRecord - record + annotated);
+      bytes.copy(wide, from, at, at + 2);
+    }
+  }
+  return given('wide.bdf', Buffer.concat([head, wide]));
 }
 
 /** Packed, under the name of a recording. */
@@ -98,6 +141,23 @@ export function timedText(name: string, unit: string, perMicrovolt: number): Giv
     (value, i) => `${(i / rateHz).toFixed(6)},${(Math.round(value) * perMicrovolt).toFixed(3)}`,
   );
   return textOf(name, `time (s),E1 (${unit})`, rows);
+}
+
+/** Drops a file on the page. */
+export async function dropFile(page: Page, { name, buffer }: GivenFile): Promise<void> {
+  const data = await page.evaluateHandle(
+    ({ name, text }) => {
+      const transfer = new DataTransfer();
+      const bytes = Uint8Array.from(atob(text), (letter) => letter.charCodeAt(0));
+      transfer.items.add(new File([bytes], name));
+      return transfer;
+    },
+    { name, text: buffer.toString('base64') },
+  );
+  const target = page.locator('body');
+  await target.dispatchEvent('dragover', { dataTransfer: data });
+  await expect(page.getByText('Drop the file to open it')).toBeVisible();
+  await target.dispatchEvent('drop', { dataTransfer: data });
 }
 
 /** The record as the page would be given it by hand. */

@@ -36,7 +36,11 @@ async function proposedSession(
 ): Promise<Session> {
   const { route } = request;
   const settings: Settings = route
-    ? { ...DEFAULT_SETTINGS, slowRoute: route, heartRoute: route }
+    ? {
+        ...DEFAULT_SETTINGS,
+        slowRoute: route,
+        heartRoute: route === 'beat-average' ? 'band' : route,
+      }
     : DEFAULT_SETTINGS;
   const proposal = await proposalOf(pipeline, recording, request, settings, job);
   const study = studyIdentity(recording, quickKey, codeOf(request.code, recording, sha256));
@@ -110,8 +114,8 @@ async function analyseStudy(
 
 /** What made the slow wave, in the 80 characters of a header's field. */
 const slowPrefilter = ({ slowRoute, slowBandCpm, slowGain, breathingOut }: Settings): string =>
-  slowRoute === 'band'
-    ? `slow wave, band ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
+  slowRoute !== 'fractional'
+    ? `slow wave, ${slowRoute} ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
     : `slow wave, ${slowRoute}`;
 
 /** The separated signals of the analysed state, as an EDF+ file. */

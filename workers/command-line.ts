@@ -1,5 +1,5 @@
 import type { Phase } from '../src/recording/phase';
-import type { RouteName } from '../src/recording/settings';
+import { type RouteName, SLOW_ROUTES } from '../src/recording/settings';
 import { parseClock } from '../src/units/time';
 
 /** What the command line asks for. */
@@ -28,7 +28,7 @@ npm run analyse -- --self-check
   --heart LEAD     the heart lead
   --breath LEAD    the breathing lead
   --phases LIST    fasting:0-1800,meal:1800-2400,fed:2400-5400 (seconds or h:mm:ss)
-  --route NAME     band or fractional
+  --route NAME     band, fractional or beat-average
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
   --reference FILE reference values of the site, to stand beside the figures they fit
@@ -53,7 +53,6 @@ const OPTIONS = [
   'out',
   'reference',
 ];
-const ROUTES: readonly RouteName[] = ['band', 'fractional'];
 
 /** Reads the arguments after the program's name. Throws WrongArguments. */
 export function parseArguments(words: readonly string[]): AnalyseRequest {
@@ -105,8 +104,8 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
 
 function parseRoute(name: string | undefined): RouteName | null {
   if (name === undefined) return null;
-  const route = ROUTES.find((one) => one === name);
-  if (!route) throw new WrongArguments(`--route is ${ROUTES.join(' or ')}, not "${name}"`);
+  const route = SLOW_ROUTES.find((one) => one === name);
+  if (!route) throw new WrongArguments(`--route is ${SLOW_ROUTES.join(' or ')}, not "${name}"`);
   return route;
 }
 

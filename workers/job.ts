@@ -53,6 +53,15 @@ export async function inTurns<T>(work: Generator<number, T>, job: Job, step: str
   }
 }
 
+/** Drives a generator with turns for others in between, saying nothing of how far it is; returns its result. */
+export async function withRests<T>(work: Generator<unknown, T>, job: Job): Promise<T> {
+  for (;;) {
+    const next = work.next();
+    if (next.done) return next.value;
+    await job.breathe();
+  }
+}
+
 function nextTurn(): Promise<void> {
   return new Promise((resolve) => {
     const { port1, port2 } = new MessageChannel();

@@ -1,15 +1,15 @@
 import type { Findings } from '../src/recording/findings';
 import { type Lead, leadKey } from '../src/recording/lead';
-import { type Interval, spansOf } from '../src/recording/span';
+import { spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
 import type { Analysis, ReviewInputs } from './analysis-api';
 import { breathesWithin } from './breathing-reference';
-import type { Job } from './job';
+import { type Job, withRests } from './job';
 import { blockedOf, detectionOf, proposedSpans, toJudge } from './pipeline-beats';
 import type { DoubtInputs } from './pipeline-doubts';
 import { wantedOf } from './pipeline-propose';
 import type { Computed } from './pipeline-results';
-import { leadChannel } from './pipeline-signals';
+import { leadChannel, type SlowWish } from './pipeline-signals';
 import { apartFrom, inLine, type Reckoned, type Study } from './pipeline-study';
 import { sameReview } from './same-series';
 
@@ -34,7 +34,6 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
   const { roles, settings } = inputs;
   await study.signals.provide(wantedOf(roles), settings, job);
   const { heart } = roles;
-  const spoiledOf = (lead: Lead) => spansOf(inputs.spans, leadKey(lead), 'stomach');
   const found = heart
     ? await detectionOf(
         study,
@@ -44,11 +43,23 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
         job,
       )
     : null;
+  const parts =
+    settings.slowRoute === 'beat-average'
+      ? await (await import('./pipeline-average')).heartPartsOf(study, inputs, job)
+      : null;
+  const wishOf = (lead: Lead): SlowWish => ({
+    spoiled: spansOf(inputs.spans, leadKey(lead), 'stomach'),
+    heartPart: parts?.get(leadKey(lead)) ?? null,
+  });
+  const slow: SeparatedSlow[] = [];
+  for (const lead of roles.slow) {
+    const drawing = study.signals.slow(lead, settings, wishOf(lead));
+    slow.push(await withRests(drawing, job));
+    await job.breathe();
+  }
   const from = {
     inputs,
-    slow: roles.slow.map((lead) =>
-      study.signals.slow(lead, settings, { spoiled: spoiledOf(lead) }),
-    ),
+    slow,
     heart: heart ? study.signals.heart(heart) : null,
     heartRateHz: heart ? leadChannel(study.source.recording, heart).rateHz : 0,
     blocked: heart ? blockedOf(study, heart, inputs.spans) : [],
@@ -56,9 +67,9 @@ async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Rec
     breathing: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
   };
   const first = await study.results.of(from, job);
-  const slow = redrawn(study, inputs, from.slow, { first, spoiledOf });
-  const last = slow ? { ...from, slow } : from;
-  study.last = { from: last, computed: slow ? await study.results.of(last, job) : first };
+  const again = await withRests(redrawn(study, inputs, slow, { first, wishOf }), job);
+  const last = again ? { ...from, slow: again } : from;
+  study.last = { from: last, computed: again ? await study.results.of(last, job) : first };
   return study.last;
 }
 
@@ -84,38 +95,38 @@ export async function figuresOf(
 
 /**
  * The slow waves drawn once more where the first results ask for it: at each lead's own rhythm, where the derivative's lead
- * is undone, or without breathing, where it lies inside the band; null where the first drawing holds.
+ * is undone, or without breathing, where it lies inside the band; null where the first drawing holds. Takes a rest now and then.
  */
-function redrawn(
+function* redrawn(
   study: Study,
   { roles, settings }: ReviewInputs,
   drawn: readonly SeparatedSlow[],
-  known: { readonly first: Computed; readonly spoiledOf: (lead: Lead) => readonly Interval[] },
-): readonly SeparatedSlow[] | null {
-  const { first, spoiledOf } = known;
-  const wish = (lead: Lead) => ({ spoiled: spoiledOf(lead) });
-  if (settings.slowRoute === 'fractional')
-    return settings.fractional.undoLead
-      ? roles.slow.map((lead) =>
-          study.signals.slow(lead, settings, {
-            ...wish(lead),
-            dfCpm: study.results.usualCpm(leadKey(lead)),
-          }),
-        )
-      : null;
+  known: { readonly first: Computed; readonly wishOf: (lead: Lead) => SlowWish },
+): Generator<void, readonly SeparatedSlow[] | null> {
+  const { first, wishOf } = known;
+  const again: SeparatedSlow[] = [];
+  if (settings.slowRoute === 'fractional') {
+    if (!settings.fractional.undoLead) return null;
+    for (const lead of roles.slow) {
+      const dfCpm = study.results.usualCpm(leadKey(lead));
+      again.push(yield* study.signals.slow(lead, settings, { ...wishOf(lead), dfCpm }));
+    }
+    return again;
+  }
   if (
     settings.breathingOut === 'never' ||
     !breathesWithin(first.breathing, settings.slowBandCpm[1])
   )
     return null;
-  return roles.slow.map((lead, i) => {
-    const { rateHz, recorded } = drawn[i];
+  for (const lead of roles.slow) {
+    const { rateHz, recorded } = drawn[again.length];
     const breathing = study.reference.of({
       breath: roles.breath ? (study.signals.get(roles.breath)?.breathing ?? null) : null,
       heights: first.heights,
       rateHz,
       length: recorded.length,
     });
-    return study.signals.slow(lead, settings, { ...wish(lead), breathing });
-  });
+    again.push(yield* study.signals.slow(lead, settings, { ...wishOf(lead), breathing }));
+  }
+  return again;
 }

@@ -1,6 +1,6 @@
 import { NO_BREATHING } from '../src/heart/breathing';
 import { heartHalfWidths } from '../src/heart/half-widths';
-import { heartFigures } from '../src/heart/heart-figures';
+import { heartFiguresInSteps } from '../src/heart/heart-figures';
 import { rrSeries } from '../src/heart/rr-series';
 import { type BeatList, changeBeats, firstBeatAt } from '../src/recording/beat';
 import type { Doubt, DoubtEffect, Mend } from '../src/recording/doubt';
@@ -10,10 +10,10 @@ import { type Phase, phasesOrWhole } from '../src/recording/phase';
 import type { Interval, Span, SpanTarget } from '../src/recording/span';
 import { stomachFigures } from '../src/stomach/figures';
 import { stomachHalfWidths, TIME_KEYS } from '../src/stomach/half-widths';
-import { slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
+import { slowWaveRhythmInSteps } from '../src/stomach/slow-wave-rhythm';
 import { createStomachMemory, type StomachMemory } from '../src/stomach/stomach-memory';
 import { secondsToTicks } from '../src/units/ticks';
-import type { Job } from './job';
+import { type Job, withRests } from './job';
 import type { DoubtInputs } from './pipeline-doubts';
 
 /** Figures that a doubt may move, in the order they are shown. */
@@ -29,7 +29,7 @@ interface Side {
   readonly keys: readonly string[];
   readonly before: Figures;
   readonly halfWidths: Readonly<Record<string, number>>;
-  readonly after: (mend: Mend) => Figures;
+  readonly after: (mend: Mend) => Generator<void, Figures>;
 }
 
 /**
@@ -43,9 +43,10 @@ export async function withEffects(
 ): Promise<readonly Doubt[]> {
   const phases = phasesOrWhole(from.inputs.phases, from.recording.durationS);
   const sides = new Map<string, Side>();
-  const sideOf = (organ: Organ, phase: Phase, place: number): Side => {
+  const sideOf = async (organ: Organ, phase: Phase, place: number): Promise<Side> => {
     const key = `${organ} ${place}`;
-    const side = sides.get(key) ?? (organ === 'heart' ? heartSide : stomachSide)(from, phase);
+    const made = organ === 'heart' ? heartSide : stomachSide;
+    const side = sides.get(key) ?? (await withRests(made(from, phase), job));
     sides.set(key, side);
     return side;
   };
@@ -60,10 +61,9 @@ export async function withEffects(
     let effect: DoubtEffect | null = null;
     for (const organ of organsOf(from, mend)) {
       await job.breathe();
-      effect = greater(
-        effect,
-        greatestOf(phases[place], sideOf(organ, phases[place], place), mend),
-      );
+      const side = await sideOf(organ, phases[place], place);
+      const changed = await withRests(side.after(mend), job);
+      effect = greater(effect, greatestOf(phases[place], side, changed));
     }
     judged.push({ ...doubt, effect });
   }
@@ -115,28 +115,29 @@ function spansAfter(spans: readonly Span[], mend: Mend): readonly Span[] {
   return [...spans, { ...mend.span, id: Number.NaN }];
 }
 
-function heartSide(from: DoubtInputs, part: Phase): Side {
+function* heartSide(from: DoubtInputs, part: Phase): Generator<void, Side> {
   const { inputs, recording, heartRateHz: rateHz, detection, computed } = from;
   const { settings, roles } = inputs;
   const near = beatsNear(inputs.beats, part, rateHz);
-  const figuresOf = (beats: BeatList, blocked: readonly Interval[]) => {
+  const figuresOf = function* (beats: BeatList, blocked: readonly Interval[]) {
     const rr = rrSeries(beats, rateHz, blocked);
     const timingSdMs = detection?.timingSdMs ?? Number.NaN;
     const breathing = computed.breathing ?? NO_BREATHING;
     const input = { rr, beats, rateHz, part, blocked, settings, timingSdMs, breathing };
-    return { rr, ...heartFigures(input) };
+    return { rr, ...(yield* heartFiguresInSteps(input)) };
   };
-  const { rr, figures, segments } = figuresOf(near, from.blocked);
+  const { rr, figures, segments } = yield* figuresOf(near, from.blocked);
   return {
     keys: HEART_KEYS,
     before: figures,
     halfWidths: heartHalfWidths({ rr, part, segments, settings: settings.variability }, figures),
-    after(mend) {
+    *after(mend) {
       if (mend.kind === 'beats')
-        return figuresOf(changeBeats(near, mend.removed, mend.added), from.blocked).figures;
+        return (yield* figuresOf(changeBeats(near, mend.removed, mend.added), from.blocked))
+          .figures;
       const spans = spansAfter(inputs.spans, mend);
       const blocked = roles.heart ? lostOn(roles.heart, 'heart', spans, recording.gaps) : [];
-      return figuresOf(near, blocked).figures;
+      return (yield* figuresOf(near, blocked)).figures;
     },
   };
 }
@@ -155,7 +156,10 @@ function beatsNear({ ticks, classes, origins }: BeatList, part: Phase, rateHz: n
 /** What an analysis of a slow wave leaves for the next of the same one. */
 const memories = new WeakMap<object, StomachMemory>();
 
-function stomachSide({ inputs, recording, slow, computed }: DoubtInputs, part: Phase): Side {
+function* stomachSide(
+  { inputs, recording, slow, computed }: DoubtInputs,
+  part: Phase,
+): Generator<void, Side> {
   const { settings, roles } = inputs;
   const lead = roles.slow[roles.reported];
   const drawn = slow[roles.reported];
@@ -163,13 +167,13 @@ function stomachSide({ inputs, recording, slow, computed }: DoubtInputs, part: P
   memories.set(drawn, memory);
   const phases = phasesOrWhole(inputs.phases, recording.durationS);
   const { breathing } = computed;
-  const figuresOf = (spans: readonly Span[]) => {
+  const figuresOf = function* (spans: readonly Span[]) {
     const spoiled = lostOn(lead, 'stomach', spans, recording.gaps);
     const options = { slow: drawn, spoiled, phases, settings, breathing, memory };
-    const analysis = slowWaveRhythm(options);
+    const analysis = yield* slowWaveRhythmInSteps(options);
     return { analysis, ...stomachFigures({ analysis, phase: part, spoiled, settings }) };
   };
-  const { analysis, figures, keptS } = figuresOf(inputs.spans);
+  const { analysis, figures, keptS } = yield* figuresOf(inputs.spans);
   const kept = analysis.rhythm.epochs.filter(
     (epoch) => epoch.kept && epoch.fromS >= part.fromS && epoch.toS <= part.toS,
   );
@@ -177,13 +181,14 @@ function stomachSide({ inputs, recording, slow, computed }: DoubtInputs, part: P
     keys: STOMACH_KEYS,
     before: figures,
     halfWidths: stomachHalfWidths(kept, figures, keptS / 60),
-    after: (mend) => figuresOf(spansAfter(inputs.spans, mend)).figures,
+    *after(mend) {
+      return (yield* figuresOf(spansAfter(inputs.spans, mend))).figures;
+    },
   };
 }
 
 /** The figure that a mend moves most beside its own range; null where it moves none. */
-function greatestOf({ name }: Phase, { keys, before, halfWidths, after }: Side, mend: Mend) {
-  const changed = after(mend);
+function greatestOf({ name }: Phase, { keys, before, halfWidths }: Side, changed: Figures) {
   let greatest: DoubtEffect | null = null;
   for (const figure of keys) {
     const [was, is] = [before[figure], changed[figure]];

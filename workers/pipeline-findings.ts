@@ -27,7 +27,7 @@ export interface FindingsInputs {
   readonly phases: readonly Phase[];
   /** Null where no heart lead is read. */
   readonly heart: {
-    readonly figuresOf: (part: Part) => HeartFigures;
+    readonly figuresOf: (part: Part) => Generator<void, HeartFigures>;
     readonly seen: readonly SeenInPassing[];
   } | null;
   readonly stomach: readonly StomachAnalysis[];
@@ -37,37 +37,43 @@ export interface FindingsInputs {
   readonly breathing: BreathingSeries | null;
 }
 
-/** The figures of every phase and part with their changes, what the filters of the leads mean for them, and what was seen. */
-export function findingsOf(from: FindingsInputs): Findings {
+/**
+ * The figures of every phase and part with their changes, what the filters of the leads mean for them, and what was seen.
+ * Takes a rest after each part.
+ */
+export function* findingsInSteps(from: FindingsInputs): Generator<void, Findings> {
   const { recording, inputs, phases, heart, stomach, spoiled } = from;
   const { roles, settings, spans } = inputs;
   const reported = roles.slow[roles.reported];
   const stomachFilters = filterWarnings(channelsOf(recording, reported));
   const heartFilters = roles.heart ? filterWarnings(channelsOf(recording, roles.heart)) : null;
   const onReported = spans.filter(({ lead }) => lead === null || lead === leadKey(reported));
-  const phaseFindings = partsOf(phases).map((part): PhaseFindings => {
+  const phaseFindings: PhaseFindings[] = [];
+  for (const part of partsOf(phases)) {
     const slow = stomachFigures({
       analysis: stomach[roles.reported],
       phase: part,
       spoiled,
       settings,
     });
-    const beat = heart?.figuresOf(part);
+    yield;
+    const beat = heart ? yield* heart.figuresOf(part) : null;
+    yield;
     const figures = {
       ...slow.figures,
       ...(beat?.figures ?? withoutHeart(from.breathing, part)),
       movement_pct: movementFigure(onReported, part),
     };
     const withStomach = withholdOrgan(figures, 'stomach', stomachFilters.withholdStomach);
-    return {
+    phaseFindings.push({
       ...part,
       keptStomachS: slow.keptS,
       keptHeartS: beat?.keptS ?? 0,
       adequacyStomach: slow.adequacy,
       adequacyHeart: beat?.adequacy ?? 'not-reportable',
       figures: withholdOrgan(withStomach, 'heart', heartFilters?.withholdHeart ?? null),
-    };
-  });
+    });
+  }
   return {
     edit: inputs.edit,
     phases: phaseFindings,

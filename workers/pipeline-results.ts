@@ -1,13 +1,13 @@
 import { beatHeights } from '../src/heart/beat-heights';
 import { breathingFromLead } from '../src/heart/breathing';
-import { breathingFromBeats } from '../src/heart/breathing-from-beats';
+import { breathingFromBeatsInSteps } from '../src/heart/breathing-from-beats';
 import type { Detection } from '../src/heart/detect';
-import { heartFigures } from '../src/heart/heart-figures';
+import { type HeartFigures, heartFiguresInSteps } from '../src/heart/heart-figures';
 import { beatTimes, rrSeries } from '../src/heart/rr-series';
 import { seenInPassing } from '../src/heart/seen-in-passing';
 import { BEAT_CLASSES, type BeatList } from '../src/recording/beat';
 import type { SeenInPassing } from '../src/recording/figure';
-import type { BreathingSeries } from '../src/recording/heart-series';
+import type { BreathingSeries, HeartSegment } from '../src/recording/heart-series';
 import { leadKey } from '../src/recording/lead';
 import { lostOn } from '../src/recording/lost';
 import { type Phase, phasesOrWhole } from '../src/recording/phase';
@@ -16,16 +16,16 @@ import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import type { Interval } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
-import { type StomachAnalysis, slowWaveRhythm } from '../src/stomach/slow-wave-rhythm';
+import { type StomachAnalysis, slowWaveRhythmInSteps } from '../src/stomach/slow-wave-rhythm';
 import { createStomachMemory } from '../src/stomach/stomach-memory';
 import { usualCpm } from '../src/stomach/usual-cpm';
 import { cpmToHz } from '../src/units/rate';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import type { Analysis, HeartResults, ReviewInputs, SeparationFacts } from './analysis-api';
 import type { Part } from './findings';
-import type { Job } from './job';
-import { findingsOf } from './pipeline-findings';
-import { identity, lastEqual, type Remembered, remember } from './remember';
+import { type Job, withRests } from './job';
+import { findingsInSteps } from './pipeline-findings';
+import { identity, lastEqual, type Remembered, remember, rememberInSteps } from './remember';
 import { sameBeats, sameBreathing } from './same-series';
 
 /** Everything the figures are computed from. */
@@ -81,7 +81,7 @@ interface HeartSide {
   readonly heights: BeatHeights;
   readonly results: HeartResults;
   readonly breathing: BreathingSeries;
-  readonly figuresOf: (part: Part) => ReturnType<typeof heartFigures>;
+  readonly figuresOf: (part: Part) => Generator<void, HeartFigures>;
   readonly seen: readonly SeenInPassing[];
 }
 
@@ -93,17 +93,22 @@ export function createResults(recording: Recording): Results {
     (samples: { samples: Float64Array; rateHz: number }) => String(identity(samples.samples)),
     ({ samples, rateHz }) => breathingFromLead(samples, rateHz),
   );
-  const heartStep = remember(heartKey, (from: HeartInputs) => heartSideOf(from, recording));
-  const stomachSteps = new Map<string, Remembered<StomachInputs, StomachAnalysis>>();
+  const heartStep = rememberInSteps(heartKey, (from: HeartInputs) => heartSideOf(from, recording));
+  const stomachSteps = new Map<
+    string,
+    Remembered<StomachInputs, Generator<void, StomachAnalysis>>
+  >();
   const usual = new Map<string, number>();
   let delivered: Computed['marks'] = { separation: '', stomach: '', heart: '' };
 
-  function stomachOf(inputs: StomachInputs): StomachAnalysis {
+  function stomachOf(inputs: StomachInputs): Generator<void, StomachAnalysis> {
     const { lead } = inputs.slow;
     const known = stomachSteps.get(lead);
     if (known) return known.of(inputs);
     const memory = createStomachMemory();
-    const step = remember(stomachKey, (one: StomachInputs) => slowWaveRhythm({ ...one, memory }));
+    const step = rememberInSteps(stomachKey, (one: StomachInputs) =>
+      slowWaveRhythmInSteps({ ...one, memory }),
+    );
     stomachSteps.set(lead, step);
     return step.of(inputs);
   }
@@ -116,13 +121,16 @@ export function createResults(recording: Recording): Results {
       const phases = phasesOrWhole(inputs.phases, recording.durationS);
       const fromLead = from.breathing ? leadBreathing.of(from.breathing) : null;
       const heart = from.heart
-        ? heartStep.of({
-            ...from,
-            heart: from.heart,
-            beats: beatsAsBefore(inputs.beats),
-            phases,
-            fromLead,
-          })
+        ? await withRests(
+            heartStep.of({
+              ...from,
+              heart: from.heart,
+              beats: beatsAsBefore(inputs.beats),
+              phases,
+              fromLead,
+            }),
+            job,
+          )
         : null;
       const series = heart?.breathing ?? fromLead;
       const breathing = series && breathingAsBefore(series);
@@ -130,11 +138,12 @@ export function createResults(recording: Recording): Results {
       for (const one of slow) {
         await job.breathe();
         const spoiled = stomachSpoiled(recording, inputs, one.lead);
-        stomach.push(stomachOf({ slow: one, spoiled, phases, settings, breathing }));
+        const lead = { slow: one, spoiled, phases, settings, breathing };
+        stomach.push(await withRests(stomachOf(lead), job));
         usual.set(one.lead, usualCpm(stomach[stomach.length - 1].rhythm));
         job.progress('Reading the rhythm', stomach.length / slow.length);
       }
-      const findings = findingsOf({
+      const reading = findingsInSteps({
         recording,
         inputs,
         phases,
@@ -147,6 +156,7 @@ export function createResults(recording: Recording): Results {
         ),
         breathing: fromLead,
       });
+      const findings = await withRests(reading, job);
       const rhythms = stomach.map(identity).join();
       return {
         edit: inputs.edit,
@@ -196,22 +206,25 @@ const heartKey = (from: HeartInputs): string =>
     from.inputs.settings.variability,
   ]);
 
-function heartSideOf(from: HeartInputs, recording: Recording): HeartSide {
+function* heartSideOf(from: HeartInputs, recording: Recording): Generator<void, HeartSide> {
   const { heart, beats, blocked, detection, fromLead } = from;
   const { settings } = from.inputs;
   const rateHz = from.heartRateHz;
   const ticksPerSample = TICKS_PER_SAMPLE * heart.decimation;
   const rr = rrSeries(beats, rateHz, blocked);
   const heightsUv = beatHeights(heart.heartbeat, heart.rateHz, beats, ticksPerSample);
+  yield;
+  const { durationS } = recording;
   const breathing =
-    fromLead ??
-    breathingFromBeats({ rr, beats, rateHz, heightsUv, durationS: recording.durationS });
+    fromLead ?? (yield* breathingFromBeatsInSteps({ rr, beats, rateHz, heightsUv, durationS }));
   const timingSdMs = detection?.timingSdMs ?? Number.NaN;
   const figuresOf = (part: Part) =>
-    heartFigures({ rr, beats, rateHz, part, blocked, settings, timingSdMs, breathing });
-  const segments = from.phases.flatMap(
-    (phase) => figuresOf({ ...phase, phase: phase.name }).segments,
-  );
+    heartFiguresInSteps({ rr, beats, rateHz, part, blocked, settings, timingSdMs, breathing });
+  const segments: HeartSegment[] = [];
+  for (const phase of from.phases) {
+    segments.push(...(yield* figuresOf({ ...phase, phase: phase.name })).segments);
+    yield;
+  }
   return {
     results: {
       rr,

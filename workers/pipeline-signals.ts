@@ -4,13 +4,13 @@ import type { Recording, SignalSource } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import type { Settings } from '../src/recording/settings';
 import type { Interval, Span } from '../src/recording/span';
-import type { SeparatedSlow } from '../src/separate/route';
+import type { HeartPart, SeparatedSlow } from '../src/separate/route';
 import { loadRoutes, type Routes } from '../src/separate/routes';
-import { createSeparation, redrawSlowWave, type Separation } from '../src/separate/separation';
+import { createSeparation, redrawInSteps, type Separation } from '../src/separate/separation';
 import { keptSamples } from '../src/stomach/kept-samples';
 import { createSpoilWatch, type SpoilWatch } from '../src/trust/spoil-watch';
 import { type BreathingSampler, createBreathingSampler } from './breathing-sampler';
-import type { Job } from './job';
+import { type Job, withRests } from './job';
 import { type LeadConsumer, type LeadToRead, passOverLeads } from './lead-pass';
 import { identity } from './remember';
 
@@ -43,8 +43,8 @@ export function leadChannel(recording: Recording, lead: Lead) {
 
 /** Settings that make the slow wave another signal altogether; the band's limits only draw it again. */
 const slowMadeBy = ({ slowRoute, fractional }: Settings): string =>
-  slowRoute === 'band'
-    ? 'band'
+  slowRoute !== 'fractional'
+    ? slowRoute
     : JSON.stringify([slowRoute, { ...fractional, undoLead: false, heartWindowMs: 0 }]);
 
 const heartMadeBy = ({ heartRoute, heartBandHz, fractional }: Settings): string =>
@@ -62,17 +62,19 @@ export interface SlowWish {
   readonly spoiled: readonly Interval[];
   readonly dfCpm?: number;
   readonly breathing?: Float64Array | null;
+  /** Under route `beat-average`, what the heartbeats leave in the lead. */
+  readonly heartPart?: HeartPart | null;
 }
 
 /** All that a drawn slow wave depends on beside the parted lead. */
 function drawnByOf(
   { slowRoute, slowBandCpm, slowGain, fractional }: Settings,
-  { spoiled, dfCpm, breathing }: Required<SlowWish>,
+  { spoiled, dfCpm, breathing, heartPart }: Required<SlowWish>,
 ): string {
   return JSON.stringify(
-    slowRoute === 'band'
-      ? [slowBandCpm, slowGain, breathing && identity(breathing), spoiled]
-      : fractional.undoLead && dfCpm,
+    slowRoute === 'fractional'
+      ? fractional.undoLead && dfCpm
+      : [slowBandCpm, slowGain, identity(breathing), identity(heartPart), spoiled],
   );
 }
 
@@ -84,7 +86,7 @@ interface Drawn {
 }
 
 interface Reading extends LeadToRead {
-  readonly finish: () => LeadSignals;
+  readonly finish: () => Generator<void, LeadSignals>;
 }
 
 /** The signals of leads, read from the file once and kept until settings make them others. */
@@ -120,7 +122,7 @@ export class SignalStore {
     const readings = missing.map((one) => this.#begin(one, settings));
     await passOverLeads(this.#source, readings, job, 'Reading the recording');
     for (const reading of readings) {
-      const made = reading.finish();
+      const made = await withRests(reading.finish(), job);
       await job.breathe();
       const before = this.#kept.get(made.key);
       this.#kept.set(made.key, {
@@ -133,7 +135,7 @@ export class SignalStore {
   }
 
   /** The lead at the slow wave's rate, before any band; throws where it was not provided. */
-  recorded(lead: Lead): Pick<SeparatedSlow, 'recorded' | 'rateHz'> {
+  recorded(lead: Lead): Pick<SeparatedSlow, 'recorded' | 'rateHz' | 'wide'> {
     return this.#parted(lead);
   }
 
@@ -145,17 +147,18 @@ export class SignalStore {
 
   /**
    * The slow wave of a lead under the settings, what is spoiled for the stomach bridged and breathing taken out where a
-   * reference is given; throws where it was not provided.
+   * reference is given; throws where it was not provided. Takes a rest now and then.
    */
-  slow(lead: Lead, settings: Settings, wish: SlowWish): SeparatedSlow {
+  *slow(lead: Lead, settings: Settings, wish: SlowWish): Generator<void, SeparatedSlow> {
     const key = leadKey(lead);
     const from = this.#parted(lead);
-    const { spoiled, dfCpm = USUAL_CPM, breathing = null } = wish;
-    const drawnBy = drawnByOf(settings, { spoiled, dfCpm, breathing });
+    const { spoiled, dfCpm = USUAL_CPM, breathing = null, heartPart = null } = wish;
+    const drawnBy = drawnByOf(settings, { spoiled, dfCpm, breathing, heartPart });
     const before = this.#drawn.get(key);
     if (before?.from === from && before.drawnBy === drawnBy) return before.output;
     const kept = keptSamples(from.recorded, from.rateHz, spoiled);
-    const output = redrawSlowWave(from, settings, { dfCpm, kept, breathing }, this.#routes);
+    const drawing = { dfCpm, kept, breathing, heartPart };
+    const output = yield* redrawInSteps(from, settings, drawing, this.#routes);
     this.#drawn.set(key, { from, drawnBy, output });
     return output;
   }
@@ -212,13 +215,18 @@ export class SignalStore {
     return {
       lead,
       consumers: all.filter((one) => one !== null),
-      finish: () => {
+      *finish() {
         const parted = separation?.finish();
+        yield;
+        const columns = pyramid.finish();
+        yield;
+        const proposedSpans = watch ? yield* watch.finishInSteps() : [];
+        yield;
         return {
           lead,
           key,
-          pyramid: pyramid.finish(),
-          proposedSpans: watch?.finish() ?? [],
+          pyramid: columns,
+          proposedSpans,
           slow: parted?.slow ? { madeBy: slowMadeBy(settings), output: parted.slow } : null,
           heart: parted?.heart ? { madeBy: heartMadeBy(settings), output: parted.heart } : null,
           breathing: breathing?.finish() ?? null,

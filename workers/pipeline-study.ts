@@ -3,6 +3,7 @@ import type { Lead } from '../src/recording/lead';
 import type { SignalSource } from '../src/recording/recording';
 import { breathingReference, type ReferenceInputs, referenceKey } from './breathing-reference';
 import type { Job } from './job';
+import type { KeptHeartPart } from './pipeline-average';
 import { type Computed, createResults, type ResultInputs, type Results } from './pipeline-results';
 import { SignalStore } from './pipeline-signals';
 import type { QrsMeasure } from './propose-roles';
@@ -23,6 +24,8 @@ export interface Study {
   detection: { readonly key: string; readonly found: Detection } | null;
   heartLead: Lead | null;
   readonly reference: Remembered<ReferenceInputs, Float64Array | null>;
+  /** What the heartbeats leave in each lead, by its key, and what that was made of; used by route `beat-average` only. */
+  readonly heartParts: Map<string, KeptHeartPart>;
   /** What the last analysis stood on and gave. */
   last: Reckoned | null;
   /** Ends when the long work under way does. */
@@ -39,6 +42,7 @@ export function createStudy(source: SignalSource): Study {
     detection: null,
     heartLead: null,
     reference: remember(referenceKey, breathingReference),
+    heartParts: new Map(),
     last: null,
     busy: Promise.resolve(),
   };
@@ -53,6 +57,7 @@ export const apartFrom = (study: Study): Study => ({
   signals: study.signals.apart(),
   results: createResults(study.source.recording),
   reference: remember(referenceKey, breathingReference),
+  heartParts: new Map(study.heartParts),
 });
 
 /** Long work on one study is done one piece after the other, since each piece changes what the next one finds. */

@@ -18,6 +18,23 @@ export function remember<I, T>(
   };
 }
 
+/** The same for a step that takes a rest now and then; one that was given up leaves what was remembered. */
+export function rememberInSteps<I, T>(
+  key: (inputs: I) => string,
+  compute: (inputs: I) => Generator<void, T>,
+): Remembered<I, Generator<void, T>> {
+  let last: { readonly key: string; readonly result: T } | null = null;
+  return {
+    *of(inputs) {
+      const now = key(inputs);
+      if (last?.key === now) return last.result;
+      const result = yield* compute(inputs);
+      last = { key: now, result };
+      return result;
+    },
+  };
+}
+
 const numbers = new WeakMap<object, number>();
 let next = 1;
 

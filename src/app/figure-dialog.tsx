@@ -1,3 +1,5 @@
+import { useStore } from 'zustand';
+import { besideNoneWords } from '../recording/evidence/planted-words';
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
 import { FIGURE_MEANINGS } from '../recording/figure-meanings';
 import type { PhaseFindings } from '../recording/findings';
@@ -46,11 +48,22 @@ export function FigureDialog({ figure, phase }: FigureDialogProps) {
       }
     >
       <FigureFacts definition={definition} part={part} settings={settings} />
+      {figure === 'time_none_pct' ? <WouldHaveBeenFound /> : null}
       <FigureHistory definition={definition} part={part.name} />
       {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}
       {definition.organ === 'heart' ? <SegmentTable part={part} onGo={go} /> : null}
     </Dialog>
   );
+}
+
+/** Beside "no rhythm": how large a wave would have been found, once that is known; grey while it is of an earlier edit. */
+function WouldHaveBeenFound() {
+  const { evidence } = useApp();
+  const planted = useStore(evidence, (state) => state.found.planted);
+  const edit = useSession(({ session }) => session?.log.length ?? 0);
+  const words = planted ? besideNoneWords(planted.value) : null;
+  if (words === null) return null;
+  return <p className={planted?.edit === edit ? undefined : 'stale'}>{words}</p>;
 }
 
 interface FigureFactsProps {

@@ -21,9 +21,14 @@ import {
   truncationWords,
 } from './settings-words';
 
-const ROUTES = [
+const HEART_ROUTES = [
   ['band', 'band: a filter without delay'],
   ['fractional', 'fractional: derivative and smoothing'],
+] as const;
+const SLOW_ROUTES = [
+  HEART_ROUTES[0],
+  ['beat-average', 'beat-average: the average heartbeat out, then the band'],
+  HEART_ROUTES[1],
 ] as const;
 const OWN = 'own';
 
@@ -155,11 +160,12 @@ function Separation(props: SectionProps) {
         <Choice
           label="Route"
           value={draft.slowRoute}
-          options={ROUTES}
+          options={SLOW_ROUTES}
           onChange={(slowRoute) => onChange({ ...draft, slowRoute })}
         />
         <Numbers {...props} keys={['slowLow', 'slowHigh']} />
-        {draft.slowRoute === 'band' ? (
+        <Numbers {...props} keys={['averageBefore', 'averageAfter', 'averageBeats']} />
+        {draft.slowRoute !== 'fractional' ? (
           <>
             <Choice
               label="Frequencies in the band"
@@ -182,7 +188,7 @@ function Separation(props: SectionProps) {
         <Choice
           label="Route"
           value={draft.heartRoute}
-          options={ROUTES}
+          options={HEART_ROUTES}
           onChange={(heartRoute) => onChange({ ...draft, heartRoute })}
         />
         <Numbers {...props} keys={['heartLow', 'heartHigh']} />

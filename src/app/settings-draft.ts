@@ -1,4 +1,10 @@
-import type { BreathingOut, RouteName, Settings, SlowGain } from '../recording/settings';
+import type {
+  BreathingOut,
+  HeartRouteName,
+  RouteName,
+  Settings,
+  SlowGain,
+} from '../recording/settings';
 import { type NumberBounds, numberText, readNumber } from './number-field';
 
 export type SettingKey =
@@ -11,6 +17,9 @@ export type SettingKey =
   | 'slowWindow'
   | 'heartWindow'
   | 'polynomial'
+  | 'averageBefore'
+  | 'averageAfter'
+  | 'averageBeats'
   | 'bandLow'
   | 'normoLow'
   | 'normoHigh'
@@ -52,6 +61,9 @@ export const SETTING_FIELDS: readonly SettingField[] = [
   field('slowWindow', 'Slow window', [20, 20000, 'ms'], (s) => s.fractional.slowWindowMs),
   field('heartWindow', 'Heart window', [4, 1000, 'ms'], (s) => s.fractional.heartWindowMs),
   field('polynomial', 'Polynomial', [1, 4, ''], (s) => s.fractional.polynomialOrder, true),
+  field('averageBefore', 'Before R', [50, 600, 'ms'], (s) => s.beatAverage.beforeMs, true),
+  field('averageAfter', 'After R', [100, 1000, 'ms'], (s) => s.beatAverage.afterMs, true),
+  field('averageBeats', 'Beats averaged', [4, 1000, ''], (s) => s.beatAverage.beats, true),
   field('bandLow', 'brady from', [0.1, 20, 'cpm'], (s) => s.rhythmBands.lowCpm),
   field('normoLow', 'normo from', [0.2, 20, 'cpm'], (s) => s.rhythmBands.normoLowCpm),
   field('normoHigh', 'tachy from', [0.3, 20, 'cpm'], (s) => s.rhythmBands.normoHighCpm),
@@ -71,7 +83,7 @@ export const SETTING_FIELDS: readonly SettingField[] = [
 /** Settings as they are being typed. */
 export interface SettingsDraft {
   readonly slowRoute: RouteName;
-  readonly heartRoute: RouteName;
+  readonly heartRoute: HeartRouteName;
   readonly undoLead: boolean;
   readonly slowGain: SlowGain;
   readonly breathingOut: BreathingOut;
@@ -112,11 +124,15 @@ const ROUTE_GROUPS: readonly {
   readonly keys: readonly SettingKey[];
   readonly acts: (chosen: RouteChoice) => boolean;
 }[] = [
-  { keys: ['slowLow', 'slowHigh'], acts: ({ slowRoute }) => slowRoute === 'band' },
+  { keys: ['slowLow', 'slowHigh'], acts: ({ slowRoute }) => slowRoute !== 'fractional' },
   { keys: ['heartLow', 'heartHigh'], acts: ({ heartRoute }) => heartRoute === 'band' },
   {
     keys: ['order', 'memory', 'polynomial'],
     acts: ({ slowRoute, heartRoute }) => slowRoute === 'fractional' || heartRoute === 'fractional',
+  },
+  {
+    keys: ['averageBefore', 'averageAfter', 'averageBeats'],
+    acts: ({ slowRoute }) => slowRoute === 'beat-average',
   },
   { keys: ['slowWindow'], acts: ({ slowRoute }) => slowRoute === 'fractional' },
   { keys: ['heartWindow'], acts: ({ heartRoute }) => heartRoute === 'fractional' },
@@ -182,6 +198,11 @@ function settingsOf(draft: SettingsDraft, v: Readonly<Record<SettingKey, number>
       heartWindowMs: v.heartWindow,
       polynomialOrder: v.polynomial,
       undoLead: draft.undoLead,
+    },
+    beatAverage: {
+      beforeMs: v.averageBefore,
+      afterMs: v.averageAfter,
+      beats: v.averageBeats,
     },
     rhythmBands: {
       lowCpm: v.bandLow,

@@ -36,6 +36,8 @@ export function slowRouteWords({
   slowRoute,
   slowGain,
 }: Pick<SettingsDraft, 'slowRoute' | 'slowGain'>): string {
+  if (slowRoute === 'beat-average')
+    return `The average heartbeat is taken out of the lead first. ${GAIN_WORDS[slowGain]} The rhythm is computed on the lead without heartbeats, before the band. For weak waves under large T waves or early beats; a beat that was missed stays in, so mend the beats first.`;
   return slowRoute === 'band'
     ? `${GAIN_WORDS[slowGain]} The rhythm is computed on the lead before it.`
     : 'Drawn: the derivative of the lead, smoothed, with no band limits. The rhythm is computed on it, with what the derivative does to each frequency divided out.';

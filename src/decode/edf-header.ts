@@ -1,4 +1,5 @@
 import type { FoundInFile } from '../recording/recording';
+import type { SampleBytes } from './digital-numbers';
 import { fieldInteger, fieldNumber, fieldText } from './edf-fields';
 import {
   FIXED_BYTES,
@@ -27,6 +28,7 @@ export interface EdfHeader {
   readonly recordDurationS: number;
   /** Samples of all signals in one record. */
   readonly recordSamples: number;
+  readonly sampleBytes: SampleBytes;
   readonly signals: readonly EdfSignal[];
   readonly found: readonly FoundInFile[];
 }
@@ -36,11 +38,15 @@ export const placeOf = (field: FixedField, name: string): string =>
   `byte ${FIXED_FIELDS[field][0]}, ${name}`;
 
 /**
- * Reads the header of an EDF or EDF+ file with 16-bit samples (Kemp 1992; Kemp & Olivan 2003), at most 131 kB whatever it
- * claims. Defects that leave the samples readable are named in `found`; others are thrown as a Refusal of kind
+ * Reads the header of an EDF or EDF+ file (Kemp 1992; Kemp & Olivan 2003) or of the same with 24-bit samples (BDF, BDF+), at
+ * most 131 kB whatever it claims. Defects that leave the samples readable are named in `found`; others are thrown as a Refusal of kind
  * `broken-format` (or `wrong-input` where the file holds no signal).
  */
-export async function readEdfHeader(file: Blob, fileName: string): Promise<EdfHeader> {
+export async function readEdfHeader(
+  file: Blob,
+  fileName: string,
+  sampleBytes: SampleBytes,
+): Promise<EdfHeader> {
   const fixed = await readBytes(file, fileName, 0, FIXED_BYTES);
   if (fixed.length < FIXED_BYTES) throw endsInHeader(fileName, file.size, FIXED_BYTES);
   const text = (name: FixedField) => fieldText(fixedField(fixed, name));
@@ -51,18 +57,19 @@ export async function readEdfHeader(file: Blob, fileName: string): Promise<EdfHe
   noteHeaderLength(text('headerBytes'), headerBytes, found);
   const bytes = await readBytes(file, fileName, 0, headerBytes);
   const signals = readSignals(bytes, signalCount, fileName, found);
-  if (bytes.some((byte) => byte > 126))
+  const strange = bytes.findIndex((byte, at) => byte > 126 && at > 0);
+  if (strange > 0)
     found.push({
       severity: 'note',
       what: 'the header holds characters outside ASCII; they were read as UTF-8 or Latin-1',
-      place: `byte ${bytes.findIndex((byte) => byte > 126)}`,
+      place: `byte ${strange}`,
     });
   const last = signals[signals.length - 1];
   const recordSamples = last.firstSample + last.samplesPerRecord;
   const recordDurationS = readDuration(fileName, text('recordDuration'), found);
   const dataBytes = file.size - headerBytes;
   const recordCount = countRecords(
-    { fileName, text: text('recordCount'), dataBytes, recordBytes: 2 * recordSamples },
+    { fileName, text: text('recordCount'), dataBytes, recordBytes: sampleBytes * recordSamples },
     found,
   );
   return {
@@ -75,6 +82,7 @@ export async function readEdfHeader(file: Blob, fileName: string): Promise<EdfHe
     recordCount,
     recordDurationS,
     recordSamples,
+    sampleBytes,
     signals,
     found,
   };

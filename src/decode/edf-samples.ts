@@ -1,6 +1,9 @@
 import type { SignalBlock } from '../recording/recording';
 import type { Hertz } from '../units/rate';
-import { readAhead, readBytes, SLICE_BYTES } from './file-bytes';
+import { digitalNumbers } from './digital-numbers';
+import type { EdfRecords } from './edf-records';
+import { readAhead, SLICE_BYTES } from './file-bytes';
+import { firstPlace, placesOf, type RecordRun } from './record-runs';
 
 /** Where one channel's samples lie in each record, and how a digital number becomes its value. */
 export interface ChannelLayout {
@@ -12,133 +15,167 @@ export interface ChannelLayout {
   readonly step: number;
 }
 
-/** The records of a file, all checked to be inside it. */
-export interface RecordLayout {
-  readonly headerBytes: number;
-  readonly recordCount: number;
-  readonly recordSamples: number;
-  readonly recordDurationS: number;
-}
-
-/** Some whole records as 16-bit numbers. */
-export interface RecordSlice {
-  readonly firstRecord: number;
-  readonly records: number;
-  readonly words: Int16Array;
-}
+/** Longest piece of a gap in one block. */
+const GAP_SAMPLES = 262_144;
 
 /**
- * The sample part of an EDF file: read by slices of about 4 MB with two ahead, never whole. Samples are little-endian, as
- * are all machines that run this. Rejects with a Refusal where the file can no longer be read.
+ * The samples of an EDF or BDF file on the recording's clock: each channel on its own even grid, NaN where the runs of records
+ * leave a gap.
  */
 export class EdfSamples {
   constructor(
-    private readonly file: Blob,
-    private readonly fileName: string,
-    private readonly layout: RecordLayout,
+    private readonly records: EdfRecords,
     private readonly channels: readonly ChannelLayout[],
+    private readonly runs: readonly RecordRun[],
   ) {}
-
-  /** Records [from, to) in slices of whole records, at least one record each. */
-  slices(from: number, to: number): AsyncGenerator<RecordSlice> {
-    const { headerBytes, recordSamples } = this.layout;
-    const recordBytes = 2 * recordSamples;
-    const each = Math.max(1, Math.floor(SLICE_BYTES / recordBytes));
-    return readAhead(Math.ceil((to - from) / each), async (index) => {
-      const firstRecord = from + index * each;
-      const records = Math.min(each, to - firstRecord);
-      const start = headerBytes + firstRecord * recordBytes;
-      const bytes = await readBytes(this.file, this.fileName, start, start + records * recordBytes);
-      return { firstRecord, records, words: new Int16Array(bytes.buffer) };
-    });
-  }
 
   /** Samples [from, to) of one channel, clipped to what exists. */
   async read(channel: number, from: number, to: number): Promise<Float64Array> {
-    const layout = this.channels[channel];
-    if (!layout) throw new RangeError(`no channel ${channel}`);
+    const layout = this.layoutOf(channel);
     const { samplesPerRecord } = layout;
+    const { recordDurationS } = this.records.layout;
     const start = Math.max(0, Math.floor(from));
-    const end = Math.min(samplesPerRecord * this.layout.recordCount, Math.floor(to));
-    const samples = new Float64Array(Math.max(0, end - start));
-    if (samples.length === 0) return samples;
-    if (2 * this.layout.recordSamples > SLICE_BYTES) {
-      await this.readWithinRecords(layout, start, samples);
-      return samples;
+    const end = Math.min(placesOf(this.runs, samplesPerRecord, recordDurationS), Math.floor(to));
+    const samples = new Float64Array(Math.max(0, end - start)).fill(Number.NaN);
+    for (const run of this.runs) {
+      const first = firstPlace(run, samplesPerRecord, recordDurationS);
+      const low = Math.max(start, first);
+      const high = Math.min(end, first + run.records * samplesPerRecord);
+      if (low >= high) continue;
+      const inFile = run.firstRecord * samplesPerRecord + low - first;
+      await this.fill(layout, inFile, samples.subarray(low - start, high - start));
     }
-    const firstRecord = Math.floor(start / samplesPerRecord);
-    for await (const slice of this.slices(firstRecord, Math.ceil(end / samplesPerRecord)))
-      for (let record = 0; record < slice.records; record += 1) {
-        const at = (slice.firstRecord + record) * samplesPerRecord;
-        const low = Math.max(start, at);
-        const high = Math.min(end, at + samplesPerRecord);
-        const word = record * this.layout.recordSamples + layout.firstSample + low - at;
-        scale(slice.words, word, high - low, layout, samples, low - start);
-      }
     return samples;
   }
 
-  /** All samples of the channels in order; `firstSamples` are indexes in each channel's own rate. */
+  /** All samples of the channels in order; `firstSamples` are places on each channel's own grid. */
   async *blocks(channels: readonly number[]): AsyncGenerator<SignalBlock> {
-    const layouts = channels.map((channel) => {
-      const layout = this.channels[channel];
-      if (!layout) throw new RangeError(`no channel ${channel}`);
-      return layout;
-    });
-    const { recordCount, recordDurationS, recordSamples } = this.layout;
-    if (2 * recordSamples > SLICE_BYTES) {
-      yield* this.partsOfRecords(layouts);
-      return;
+    const layouts = channels.map((channel) => this.layoutOf(channel));
+    const { recordDurationS } = this.records.layout;
+    let before: { readonly run: RecordRun; readonly ends: readonly number[] } | null = null;
+    for (const run of this.runs) {
+      const firsts = layouts.map((one) => firstPlace(run, one.samplesPerRecord, recordDurationS));
+      if (before) yield* this.emptyBlocks(before.run, run, { ends: before.ends, firsts });
+      yield* this.records.long
+        ? this.partsOfRecords(run, layouts, firsts)
+        : this.wholeRecords(run, layouts, firsts);
+      before = {
+        run,
+        ends: layouts.map((one, i) => firsts[i] + run.records * one.samplesPerRecord),
+      };
     }
-    for await (const { firstRecord, records, words } of this.slices(0, recordCount))
+  }
+
+  private layoutOf(channel: number): ChannelLayout {
+    const layout = this.channels[channel];
+    if (!layout) throw new RangeError(`no channel ${channel}`);
+    return layout;
+  }
+
+  /** The gap between two runs, in pieces. */
+  private *emptyBlocks(
+    before: RecordRun,
+    after: RecordRun,
+    places: { readonly ends: readonly number[]; readonly firsts: readonly number[] },
+  ): Generator<SignalBlock> {
+    const { recordCount, recordDurationS } = this.records.layout;
+    const endS = before.startS + before.records * recordDurationS;
+    const lengths = places.firsts.map((first, i) => first - places.ends[i]);
+    const pieces = Math.ceil(Math.max(0, ...lengths) / GAP_SAMPLES);
+    const at = (length: number, piece: number) => Math.floor((length * piece) / pieces);
+    for (let piece = 0; piece < pieces; piece += 1)
       yield {
-        fromS: firstRecord * recordDurationS,
-        firstSamples: layouts.map((layout) => firstRecord * layout.samplesPerRecord),
-        samples: layouts.map((layout) => channelOf(words, records, recordSamples, layout)),
-        done: (firstRecord + records) / recordCount,
+        fromS: endS + ((after.startS - endS) * piece) / pieces,
+        firstSamples: places.ends.map((end, i) => end + at(lengths[i], piece)),
+        samples: lengths.map((length) =>
+          new Float64Array(at(length, piece + 1) - at(length, piece)).fill(Number.NaN),
+        ),
+        done: after.firstRecord / recordCount,
       };
   }
 
+  private async *wholeRecords(
+    run: RecordRun,
+    layouts: readonly ChannelLayout[],
+    firsts: readonly number[],
+  ): AsyncGenerator<SignalBlock> {
+    const { recordCount, recordDurationS, recordSamples, sampleBytes } = this.records.layout;
+    const end = run.firstRecord + run.records;
+    for await (const { firstRecord, records, bytes } of this.records.slices(run.firstRecord, end)) {
+      const before = firstRecord - run.firstRecord;
+      const words = digitalNumbers(bytes, sampleBytes);
+      yield {
+        fromS: run.startS + before * recordDurationS,
+        firstSamples: layouts.map((one, i) => firsts[i] + before * one.samplesPerRecord),
+        samples: layouts.map((layout) => channelOf(words, records, recordSamples, layout)),
+        done: (firstRecord + records) / recordCount,
+      };
+    }
+  }
+
   /** Records longer than a slice: each is read in equal parts of its duration, channel by channel. */
-  private async *partsOfRecords(layouts: readonly ChannelLayout[]): AsyncGenerator<SignalBlock> {
-    const { recordCount, recordDurationS, recordSamples } = this.layout;
-    const parts = Math.ceil((2 * recordSamples) / SLICE_BYTES);
-    const total = recordCount * parts;
+  private async *partsOfRecords(
+    run: RecordRun,
+    layouts: readonly ChannelLayout[],
+    firsts: readonly number[],
+  ): AsyncGenerator<SignalBlock> {
+    const { recordCount, recordDurationS } = this.records.layout;
+    const parts = Math.ceil(this.records.recordBytes / SLICE_BYTES);
     const boundary = (layout: ChannelLayout, part: number) =>
       Math.floor((layout.samplesPerRecord * part) / parts);
-    yield* readAhead(total, async (index): Promise<SignalBlock> => {
-      const record = Math.floor(index / parts);
+    yield* readAhead(run.records * parts, async (index): Promise<SignalBlock> => {
+      const before = Math.floor(index / parts);
+      const record = run.firstRecord + before;
       const part = index % parts;
       const samples: Float64Array[] = [];
       for (const layout of layouts) {
         const from = boundary(layout, part);
         const piece = new Float64Array(boundary(layout, part + 1) - from);
-        await this.readWithinRecords(layout, record * layout.samplesPerRecord + from, piece);
+        await this.fillWithinRecords(layout, record * layout.samplesPerRecord + from, piece);
         samples.push(piece);
       }
       return {
-        fromS: (record + part / parts) * recordDurationS,
-        firstSamples: layouts.map((one) => record * one.samplesPerRecord + boundary(one, part)),
+        fromS: run.startS + (before + part / parts) * recordDurationS,
+        firstSamples: layouts.map(
+          (one, i) => firsts[i] + before * one.samplesPerRecord + boundary(one, part),
+        ),
         samples,
-        done: (index + 1) / total,
+        done: (record + (part + 1) / parts) / recordCount,
       };
     });
   }
 
-  /** Fills `out` with the channel's samples from `start` on, one read a record. */
-  private async readWithinRecords(
+  /** Fills `out` with the channel's samples as they lie in the file, from its `start`th on. */
+  private async fill(layout: ChannelLayout, start: number, out: Float64Array): Promise<void> {
+    if (this.records.long) return this.fillWithinRecords(layout, start, out);
+    const { samplesPerRecord } = layout;
+    const { recordSamples, sampleBytes } = this.records.layout;
+    const end = start + out.length;
+    const firstRecord = Math.floor(start / samplesPerRecord);
+    const slices = this.records.slices(firstRecord, Math.ceil(end / samplesPerRecord));
+    for await (const slice of slices) {
+      const words = digitalNumbers(slice.bytes, sampleBytes);
+      for (let record = 0; record < slice.records; record += 1) {
+        const at = (slice.firstRecord + record) * samplesPerRecord;
+        const low = Math.max(start, at);
+        const high = Math.min(end, at + samplesPerRecord);
+        const word = record * recordSamples + layout.firstSample + low - at;
+        scale(words, word, high - low, layout, out, low - start);
+      }
+    }
+  }
+
+  private async fillWithinRecords(
     layout: ChannelLayout,
     start: number,
     out: Float64Array,
   ): Promise<void> {
-    const { headerBytes, recordSamples } = this.layout;
     for (let filled = 0; filled < out.length; ) {
       const record = Math.floor((start + filled) / layout.samplesPerRecord);
       const within = start + filled - record * layout.samplesPerRecord;
       const count = Math.min(out.length - filled, layout.samplesPerRecord - within);
-      const at = headerBytes + 2 * (record * recordSamples + layout.firstSample + within);
-      const bytes = await readBytes(this.file, this.fileName, at, at + 2 * count);
-      scale(new Int16Array(bytes.buffer), 0, count, layout, out, filled);
+      const words = await this.records.within(record, layout.firstSample + within, count);
+      scale(words, 0, count, layout, out, filled);
       filled += count;
     }
   }
@@ -149,7 +186,7 @@ export const rateOf = (samplesPerRecord: number, recordDurationS: number): Hertz
   samplesPerRecord / recordDurationS;
 
 function channelOf(
-  words: Int16Array,
+  words: Int16Array | Int32Array,
   records: number,
   recordSamples: number,
   layout: ChannelLayout,
@@ -169,7 +206,7 @@ function channelOf(
 }
 
 function scale(
-  words: Int16Array,
+  words: Int16Array | Int32Array,
   from: number,
   count: number,
   { digitalMin, valueAtMin, step }: ChannelLayout,

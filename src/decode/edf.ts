@@ -3,40 +3,50 @@ import type { Annotation, FoundInFile, Recording, SignalSource } from '../record
 import { microvoltsPerUnit } from '../units/voltage';
 import { type EdfHeader, readEdfHeader } from './edf-header';
 import { readIdentity, readStart, saysInvented } from './edf-identity';
+import { EdfRecords } from './edf-records';
 import { type ChannelLayout, EdfSamples, rateOf } from './edf-samples';
 import { type EdfSignal, physicalValue } from './edf-signals';
 import { type FileTimes, readFileTimes } from './edf-times';
+import type { EdfVariant } from './edf-variant';
 import { uniqueLabels } from './labels';
 import { readPrefilter } from './prefilter';
+import { gapsBetween, lengthOf, placesOf } from './record-runs';
 import { quoted, refusal } from './refusals';
 
 /**
- * Opens an EDF or contiguous EDF+ file (Kemp 1992; Kemp & Olivan 2003). Throws a Refusal where the header or the record times
- * cannot be used, or where no signal is in V, mV, uV or nV. Samples are read when they are asked for.
+ * Opens an EDF or EDF+ file (Kemp 1992; Kemp & Olivan 2003), or the same with 24-bit samples (BDF, BDF+). Gaps between records
+ * stay gaps. Throws a Refusal where the header cannot be used, or where no signal is in V, mV, uV or nV. Samples are read when
+ * they are asked for.
  */
 export async function openEdf(
   file: Blob,
   fileName: string,
-  format: 'EDF' | 'EDF+C',
+  variant: EdfVariant,
 ): Promise<SignalSource> {
-  const header = await readEdfHeader(file, fileName);
-  const ordinary = header.signals.filter((signal) => !signal.annotations);
+  const header = await readEdfHeader(file, fileName, variant.sampleBytes);
   const found: FoundInFile[] = [...header.found];
-  const channels = ordinary.length > 0 ? channelsOf(ordinary, header, found) : [];
-  refuseWithoutVoltage(fileName, ordinary, channels);
-  const samples = new EdfSamples(file, fileName, header, ordinary.map(layoutOf));
-  const times = await readFileTimes({ header, samples, fileName, format }, found);
+  const ordinary = withoutTriggers(header, found);
+  const labelled = ordinary.length > 0 ? channelsOf(ordinary, header, found) : [];
+  refuseWithoutVoltage(fileName, ordinary, labelled);
+  const records = new EdfRecords(file, fileName, header);
+  const times = await readFileTimes({ header, records, variant }, found);
+  const { runs } = times;
+  const { recordDurationS } = header;
+  const samples = new EdfSamples(records, ordinary.map(layoutOf), runs);
   const recording: Recording = {
-    format,
+    format: variant.name,
     fileName,
     sizeBytes: file.size,
     identity: readIdentity(header),
     start: readStart(header, times.firstOnsetS, found),
-    durationS: header.recordCount * header.recordDurationS,
-    channels,
+    durationS: lengthOf(runs, recordDurationS),
+    channels: labelled.map((channel, i) => ({
+      ...channel,
+      sampleCount: placesOf(runs, ordinary[i].samplesPerRecord, recordDurationS),
+    })),
     annotations: fromFirstSample(times),
     found,
-    gaps: [],
+    gaps: gapsBetween(runs, recordDurationS),
     invented: saysInvented(header),
   };
   return {
@@ -53,6 +63,21 @@ function fromFirstSample({ annotations, firstOnsetS }: FileTimes): readonly Anno
       ? [...annotations]
       : annotations.map((one) => ({ ...one, onsetS: one.onsetS - firstOnsetS }));
   return shifted.sort((a, b) => a.onsetS - b.onsetS);
+}
+
+/**
+ * The signals that hold samples. The trigger words of 24-bit recorders, labelled Status, are no signal: they are never drawn
+ * or filtered.
+ */
+function withoutTriggers(header: EdfHeader, found: FoundInFile[]): readonly EdfSignal[] {
+  const isTrigger = ({ label }: EdfSignal) => header.sampleBytes === 3 && /^status$/i.test(label);
+  if (header.signals.some(isTrigger))
+    found.push({
+      severity: 'note',
+      what: 'the signal “Status” holds trigger words and was left out',
+      place: `signal ${header.signals.findIndex(isTrigger) + 1}`,
+    });
+  return header.signals.filter((signal) => !signal.annotations && !isTrigger(signal));
 }
 
 function unitOf(signal: EdfSignal): ChannelUnit {

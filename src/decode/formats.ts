@@ -2,6 +2,7 @@ import type { SignalSource } from '../recording/recording';
 import { openEdf } from './edf';
 import { fieldText } from './edf-fields';
 import { FIXED_BYTES, fixedField } from './edf-layout';
+import type { EdfVariant } from './edf-variant';
 import { readBytes } from './file-bytes';
 import type { Format, Recognition } from './format';
 import { refusal } from './refusals';
@@ -26,62 +27,32 @@ const EDF_VERSION = /^0[ \0]{7}$/;
 /** Byte 255, then letters (24-bit files). */
 const BDF_VERSION = /^\xff[ -~]{7}$/;
 
-function notYet(fileName: string, name: string, why: string, remedy: string) {
-  return refusal('not-supported', fileName, {
-    message: `this is ${name}, ${why}; such files cannot be read yet.`,
-    place: 'byte 192, reserved',
-    remedy,
-  });
-}
-
-const refuse24Bit = async (_file: Blob, fileName: string) => {
-  throw notYet(
-    fileName,
-    'a BDF or BDF+ file',
-    'with 24-bit samples',
-    'Export the recording as EDF or EDF+C (16 bit), scaled so that the abdominal leads fit.',
-  );
-};
+/** A row for one of the formats that share the layout of EDF. */
+const edfFormat = (
+  variant: EdfVariant,
+  extensions: readonly string[],
+  version: RegExp,
+  reserved: RegExp,
+): Format => ({
+  name: variant.name,
+  extensions,
+  recognises: (head) => headerRecognition(head, version, reserved),
+  open: (file, fileName) => openEdf(file, fileName, variant),
+});
 
 /** The table of formats. A new one is a row here and a file of its own. */
 export const FORMATS: readonly Format[] = [
-  {
-    name: 'EDF',
-    extensions: ['edf', 'rec'],
-    recognises: (head) => headerRecognition(head, EDF_VERSION, /^(?!EDF\+)/),
-    open: (file, fileName) => openEdf(file, fileName, 'EDF'),
-  },
-  {
-    name: 'EDF+C',
-    extensions: ['edf'],
-    recognises: (head) => headerRecognition(head, EDF_VERSION, /^EDF\+(?!D)/),
-    open: (file, fileName) => openEdf(file, fileName, 'EDF+C'),
-  },
-  {
-    name: 'EDF+D',
-    extensions: ['edf'],
-    recognises: (head) => headerRecognition(head, EDF_VERSION, /^EDF\+D/),
-    open: async (_file, fileName) => {
-      throw notYet(
-        fileName,
-        'an EDF+D file',
-        'a recording with gaps',
-        'Export it as EDF+C, or each uninterrupted part to a file of its own.',
-      );
-    },
-  },
-  {
-    name: 'BDF',
-    extensions: ['bdf'],
-    recognises: (head) => headerRecognition(head, BDF_VERSION, /^(?!BDF\+)/),
-    open: refuse24Bit,
-  },
-  {
-    name: 'BDF+',
-    extensions: ['bdf'],
-    recognises: (head) => headerRecognition(head, BDF_VERSION, /^BDF\+/),
-    open: refuse24Bit,
-  },
+  edfFormat(
+    { name: 'EDF', sampleBytes: 2, plus: 'none' },
+    ['edf', 'rec'],
+    EDF_VERSION,
+    /^(?!EDF\+)/,
+  ),
+  edfFormat({ name: 'EDF+C', sampleBytes: 2, plus: 'C' }, ['edf'], EDF_VERSION, /^EDF\+(?!D)/),
+  edfFormat({ name: 'EDF+D', sampleBytes: 2, plus: 'D' }, ['edf'], EDF_VERSION, /^EDF\+D/),
+  edfFormat({ name: 'BDF', sampleBytes: 3, plus: 'none' }, ['bdf'], BDF_VERSION, /^(?!BDF\+)/),
+  edfFormat({ name: 'BDF+C', sampleBytes: 3, plus: 'C' }, ['bdf'], BDF_VERSION, /^BDF\+(?!D)/),
+  edfFormat({ name: 'BDF+D', sampleBytes: 3, plus: 'D' }, ['bdf'], BDF_VERSION, /^BDF\+D/),
   {
     name: 'delimited text',
     extensions: ['csv', 'tsv', 'txt', 'asc', 'dat'],
@@ -135,6 +106,6 @@ export async function openRecording(
     remedy:
       likeness !== null && /archive/.test(likeness)
         ? 'Unpack it and choose the recording inside.'
-        : 'Choose an EDF, EDF+C or delimited text file.',
+        : 'Choose an EDF, EDF+, BDF, BDF+ or delimited text file.',
   });
 }

@@ -1,4 +1,5 @@
 import { NO_BEATS } from '../recording/beat';
+import { gapBetween } from '../recording/lost';
 import { beatsCsv } from './beats-csv';
 import { epochsCsv } from './epochs-csv';
 import type { ExportInput } from './export-input';
@@ -17,9 +18,13 @@ export function exportFiles(input: ExportInput): readonly TextFile[] {
   return [
     {
       name: 'beats.csv',
-      text: beatsCsv(beats, rateHz ?? 1, heart?.rr ?? null, {
-        open: openDoubts,
-        settled: state.doubts,
+      text: beatsCsv({
+        beats,
+        rateHz: rateHz ?? 1,
+        rr: heart?.rr ?? null,
+        doubts: { open: openDoubts, settled: state.doubts },
+        gapBetween: (fromS, toS) =>
+          state.roles.heart !== null && gapBetween(state.roles.heart, recording.gaps, fromS, toS),
       }),
     },
     { name: 'epochs.csv', text: epochsCsv(stomach) },

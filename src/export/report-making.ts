@@ -169,13 +169,21 @@ const drawingWords = ({ slowGain, breathingOut }: Settings): string =>
       : 'breathing taken out where that measurably helps',
   ].join(', ');
 
+/** How the average heartbeat is made, under the route that takes it out. */
+const averageWords = ({ slowRoute, beatAverage }: Settings): string =>
+  slowRoute === 'beat-average'
+    ? ` (${beatAverage.beforeMs} ms before to ${beatAverage.afterMs} ms after R, ${beatAverage.beats} beats)`
+    : '';
+
 function routeWords(route: RouteName, organ: 'slow' | 'heart', settings: Settings): string {
   const band =
     organ === 'slow'
       ? `${settings.slowBandCpm.join('–')} cpm`
       : `${settings.heartBandHz.join('–')} Hz`;
   if (route !== 'fractional')
-    return organ === 'slow' ? `${route}, ${band}, ${drawingWords(settings)}` : `${route}, ${band}`;
+    return organ === 'slow'
+      ? `${route}${averageWords(settings)}, ${band}, ${drawingWords(settings)}`
+      : `${route}, ${band}`;
   const { order, memoryS, slowWindowMs, heartWindowMs, polynomialOrder } = settings.fractional;
   const windowMs = organ === 'slow' ? slowWindowMs : heartWindowMs;
   return `fractional, order ${order}, memory ${memoryS} s, window ${windowMs} ms, polynomial ${polynomialOrder}`;

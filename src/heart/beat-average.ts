@@ -12,6 +12,8 @@ const SEARCH_S = 0.03;
 /** Beats an average is made of, at most; spread over the study. */
 const MOST_BEATS = 600;
 const ROUNDS = 3;
+/** Beats added up or aligned between two rests. */
+const ROWS_A_STEP = 50;
 /** Where the dominant extreme is looked for, about the middle of the complex. */
 const EXTREME_HALF_S = 0.09;
 /** Below this part of the opposite extreme the extreme of the study's sign is no landmark. */
@@ -44,12 +46,12 @@ function rowAbout(signal: HeartSignal, sample: number, before: number, after: nu
 
 const searchOf = (rateHz: number) => Math.max(2, Math.round(SEARCH_S * rateHz));
 
-/** Averages the beats found at whole samples, aligned to one another between samples. */
-export function averageBeats(
+/** Averages the beats found at whole samples, aligned to one another between samples. Takes a rest now and then. */
+export function* averageBeats(
   signal: HeartSignal,
   shape: number,
   beats: readonly number[],
-): Omit<ShapeAverage, 'fiducial'> {
+): Generator<void, Omit<ShapeAverage, 'fiducial'>> {
   const { rateHz } = signal;
   const middle = Math.round(BEFORE_S * rateHz);
   const length = middle + Math.round(AFTER_S * rateHz) + 1;
@@ -65,11 +67,17 @@ export function averageBeats(
   let timer = timerOf(samples.slice(middle - half, middle + half + 1));
   for (let round = 0; round < ROUNDS; round += 1) {
     samples = new Float64Array(length);
-    for (let r = 0; r < rows.length; r += 1) addShifted(samples, rows[r], places[r] - middle);
+    for (let r = 0; r < rows.length; r += 1) {
+      addShifted(samples, rows[r], places[r] - middle);
+      if (r % ROWS_A_STEP === ROWS_A_STEP - 1) yield;
+    }
     for (let i = 0; i < length; i += 1) samples[i] /= rows.length;
     timer = timerOf(samples.slice(middle - half, middle + half + 1));
-    const now = timer;
-    places = rows.map((row) => align(row, now, middle + margin, search).place);
+    places = [];
+    for (const row of rows) {
+      places.push(align(row, timer, middle + margin, search).place);
+      if (places.length % ROWS_A_STEP === 0) yield;
+    }
   }
   return { shape, count: beats.length, samples, middle, timer };
 }

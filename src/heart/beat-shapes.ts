@@ -1,3 +1,4 @@
+import { quietly } from '../numeric/in-steps';
 import { median } from '../numeric/statistics';
 import { latestWaveS } from './after-wave';
 import { type Growing, type Match, matchMiddle, middle, type Rows, rms } from './beat-rows';
@@ -16,7 +17,9 @@ const ROW_HALF_S = 0.58;
 const MOST_BEATS = 4000;
 const MOST_SHAPES = 12;
 /** Beats compared with the shapes between two steps. */
-const ROWS_A_STEP = 200;
+const ROWS_A_STEP = 100;
+/** Rows whose noise is measured between two steps. */
+const FACTORS_A_STEP = 1000;
 /** Least likeness of a noiseless complex to the average of its shape. */
 const LEAST_LIKENESS = 0.86;
 /** A row is clear where noise lowers its likeness no more than this, or little more than usual. */
@@ -54,7 +57,7 @@ export function* learnShapes(
   const windows = yield* readWindows(signal, beats);
   const { rateHz, bands } = signal;
   const grown = yield* grow(windows);
-  const distinct = distinctShapes(grown, windows, rateHz, bands);
+  const distinct = yield* quietly(distinctShapes(grown, windows, rateHz, bands), 1);
   yield 1;
   const settled = yield* settle(windows, distinct, rateHz);
   const kept = settled.filter(
@@ -134,7 +137,11 @@ function noiseFactor(rmsUv: number, noiseUv: number): number {
 /** Sorts the rows into shapes in order of time: each joins the shape it is most like, or starts one. */
 function* grow(windows: Rows): Generator<number, Growing[]> {
   const { rows, noise, half } = windows;
-  const factors = rows.map((row, i) => noiseFactor(rms(middle(row, half)), noise[i]));
+  const factors: number[] = [];
+  for (const row of rows) {
+    factors.push(noiseFactor(rms(middle(row, half)), noise[factors.length]));
+    if (factors.length % FACTORS_A_STEP === 0) yield 1;
+  }
   const clear = Math.min(CLEAR_FACTOR, CLEAR_PART * median(factors));
   let shapes: Growing[] = [];
   for (let i = 0; i < rows.length; i += 1) {
@@ -194,7 +201,7 @@ function* settle(
   shapes: readonly Distinct[],
   rateHz: number,
 ): Generator<number, Shape[]> {
-  const { rows, noise, half, rowHalf, lag, latest, usualRr } = windows;
+  const { rows, noise, half, rowHalf } = windows;
   const sums = shapes.map(({ shape: { strict }, isTallT }) => ({
     sum: new Float64Array(2 * rowHalf + 1),
     count: 0,
@@ -218,29 +225,36 @@ function* settle(
     addRow(sums[best], row, at, windows);
     sums[best].power += rms(row.subarray(at, at + 2 * half + 1)) ** 2;
   }
-  return sums
-    .filter(({ count, isTallT }) => count > 0 && !isTallT)
-    .map((group) => ({ ...group, alike: coherence(group, half) }))
-    .filter(({ alike }) => alike > LEAST_COHERENCE)
-    .map(({ sum, count, strict, alike }) => {
-      const centre = rowHalf + offCentre(sum, half, lag);
-      const average = sum.slice(centre - half, centre + half + 1).map((value) => value / count);
-      const norm = rms(average) * Math.sqrt(average.length);
-      const after = Math.max(half, Math.min(rowHalf - 2 * lag, latest + half, usualRr - half));
-      const before = Math.max(half, Math.min(rowHalf - 2 * lag, half + 3 * lag, usualRr - after));
-      const course = sum.slice(centre - before, centre + after + 1);
-      for (let i = 0; i < course.length; i += 1)
-        course[i] *= Math.min(1, i / lag, (course.length - 1 - i) / lag) / count;
-      return {
-        average,
-        half,
-        norm,
-        count,
-        course,
-        before,
-        waves: sideWaves({ sum, count, strict }, centre, half, rateHz),
-        coherence: alike,
-      };
-    })
-    .sort((a, b) => b.count - a.count);
+  const settled: Shape[] = [];
+  for (const group of sums) {
+    yield 1;
+    if (!(group.count > 0) || group.isTallT) continue;
+    const alike = coherence(group, half);
+    if (alike > LEAST_COHERENCE) settled.push(shapeOf(group, alike, windows, rateHz));
+  }
+  return settled.sort((a, b) => b.count - a.count);
+}
+
+/** A shape from the sum of its beats' rows, cut out about the middle of their energy. */
+function shapeOf(group: Growing, alike: number, windows: Rows, rateHz: number): Shape {
+  const { half, rowHalf, lag, latest, usualRr } = windows;
+  const { sum, count, strict } = group;
+  const centre = rowHalf + offCentre(sum, half, lag);
+  const average = sum.slice(centre - half, centre + half + 1).map((value) => value / count);
+  const norm = rms(average) * Math.sqrt(average.length);
+  const after = Math.max(half, Math.min(rowHalf - 2 * lag, latest + half, usualRr - half));
+  const before = Math.max(half, Math.min(rowHalf - 2 * lag, half + 3 * lag, usualRr - after));
+  const course = sum.slice(centre - before, centre + after + 1);
+  for (let i = 0; i < course.length; i += 1)
+    course[i] *= Math.min(1, i / lag, (course.length - 1 - i) / lag) / count;
+  return {
+    average,
+    half,
+    norm,
+    count,
+    course,
+    before,
+    waves: sideWaves({ sum, count, strict }, centre, half, rateHz),
+    coherence: alike,
+  };
 }

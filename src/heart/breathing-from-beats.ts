@@ -1,5 +1,6 @@
 import { removeLine } from '../numeric/detrend';
 import { firstAtOrAfter } from '../numeric/first-at-or-after';
+import { atOnce } from '../numeric/in-steps';
 import { medianAbsoluteDeviation, medianInPlace } from '../numeric/statistics';
 import { BEAT_CLASSES, type BeatList } from '../recording/beat';
 import type { BreathingSeries, RrSeries } from '../recording/heart-series';
@@ -18,6 +19,8 @@ import { beatTimes } from './rr-series';
 
 const RESAMPLED_RATE_HZ = 4;
 const SAMPLES = BREATHING_WINDOW_S * RESAMPLED_RATE_HZ;
+/** Windows looked at between two rests. */
+const WINDOWS_A_STEP = 10;
 /** Share of a window's time that NN intervals must fill. */
 const LEAST_KEPT = 0.75;
 /** Values further from the median than this many spreads are drawn in: one odd beat is no breath. */
@@ -135,7 +138,13 @@ function nnSecondsUpTo({ rrMs, nn }: RrSeries): Float64Array {
  * share in 60 s windows every 30 s. Nothing above half the window's heart rate can be seen (45 % of it is the ceiling);
  * NaN where NN fill under three quarters of a window or no peak is clear; one below 9 a minute must be seen in R height too.
  */
-export function breathingFromBeats(input: BreathingFromBeatsInput): BreathingSeries {
+export const breathingFromBeats = (input: BreathingFromBeatsInput): BreathingSeries =>
+  atOnce(breathingFromBeatsInSteps(input));
+
+/** breathingFromBeats with a rest now and then. */
+export function* breathingFromBeatsInSteps(
+  input: BreathingFromBeatsInput,
+): Generator<void, BreathingSeries> {
   const { rr, beats, rateHz, heightsUv, durationS } = input;
   if (rr.rrMs.length < 20) return NO_BREATHING;
   const normal = BEAT_CLASSES.indexOf('N');
@@ -148,7 +157,7 @@ export function breathingFromBeats(input: BreathingFromBeatsInput): BreathingSer
   const intervals = pointsWhere(rr.timesS, rr.rrMs, (i) => rr.nn[i] === 1);
   const upTo = nnSecondsUpTo(rr);
   const centresS = breathingCentres(durationS);
-  const perMinute = centresS.map((centreS) => {
+  const rateAbout = (centreS: Seconds): number => {
     const fromS = centreS - BREATHING_WINDOW_S / 2;
     const first = firstAtOrAfter(rr.timesS, fromS);
     const end = firstAtOrAfter(rr.timesS, fromS + BREATHING_WINDOW_S);
@@ -157,6 +166,11 @@ export function breathingFromBeats(input: BreathingFromBeatsInput): BreathingSer
     const ofHeight = shapeOf(resampled(heights, fromS), false);
     const ofIntervals = shapeOf(resampled(intervals, fromS), true);
     return rateOf(ofHeight, ofIntervals, 0.45 * beatsPerMinute);
-  });
+  };
+  const perMinute = new Float64Array(centresS.length);
+  for (let k = 0; k < perMinute.length; k += 1) {
+    if (k % WINDOWS_A_STEP === 0) yield;
+    perMinute[k] = rateAbout(centresS[k]);
+  }
   return { centresS, perMinute, from: 'derived' };
 }

@@ -29,6 +29,9 @@ const VERY_WIDE = 0.65;
 /** Shapes that are somewhat wide are ventricular where so many of their beats are early; those hardly wider where these are. */
 const OFTEN_EARLY = 0.4;
 const MOSTLY_EARLY = 0.7;
+/** Beats classed between two rests. */
+const BEATS_A_STEP = 100;
+
 /** What the shape of a group of beats says. */
 type ShapeKind = 'main' | 'usual' | 'wide';
 
@@ -36,19 +39,20 @@ type ShapeKind = 'main' | 'usual' | 'wide';
  * Classes of the beats (ANSI/AAMI EC57 letters) from shape, against the study's own averages, and timing: N like the most
  * frequent shape; V of a shape that is very wide beside it, or wide and mostly early; S like N but early in a regular rhythm; Q not
  * clear. F is left to people. A proposal to be reviewed, not a diagnosis. `meanHz` gives a candidate's own mean frequency.
+ * Takes a rest now and then.
  */
-export function classifyBeats(
+export function* classifyBeats(
   beats: readonly Candidate[],
   shapes: readonly Shape[],
   rhythmAt: (sample: number) => RhythmAt,
   meanHz: (beat: Candidate) => number,
-): BeatClass[] {
+): Generator<void, BeatClass[]> {
   const ratios = beats.map((beat, i) =>
     i > 0 ? (beat.sample - beats[i - 1].sample) / rhythmAt(beat.sample).rrS : 1,
   );
   const main = mainShape(beats, shapes.length);
   const kinds = shapes.map((_, k) => shapeKind(k, main, shapes, beats, ratios));
-  return beats.map((beat, i) => {
+  const classOf = (beat: Candidate, i: number): BeatClass => {
     const rhythm = rhythmAt(beat.sample);
     if (!isOfShape(beat)) return oddClass(beat, ratios[i], shapes[main], meanHz);
     if (beat.overNoise < UNCLEAR && beat.likeness < PLAIN_LIKENESS) return 'Q';
@@ -63,7 +67,13 @@ export function classifyBeats(
     const early =
       ratios[i] < CLEARLY_EARLY && rhythm.spread < REGULAR_SPREAD && clearlyOfShape(beat);
     return early && ratios[i - 1] > CLEARLY_EARLY ? 'S' : 'N';
-  });
+  };
+  const classes: BeatClass[] = [];
+  for (const beat of beats) {
+    classes.push(classOf(beat, classes.length));
+    if (classes.length % BEATS_A_STEP === 0) yield;
+  }
+  return classes;
 }
 
 /** Whether a beat is of the shape that fits it best. */

@@ -1,3 +1,4 @@
+import { quietly } from '../numeric/in-steps';
 import { BEAT_CLASSES, BEAT_ORIGINS, type BeatClass, type BeatList } from '../recording/beat';
 import { type Interval, isWithin } from '../recording/span';
 import { dominantSign, type ShapeAverage, withFiducials } from './beat-average';
@@ -5,7 +6,6 @@ import { measureBeats } from './beat-quality';
 import { classifyBeats, meanFrequency } from './classify';
 import type { HeartSignal } from './energy-pass';
 import { type FoundBeats, findBeats } from './find-beats';
-import { quietly } from './in-steps';
 import { isMisread, legibleStretches } from './legible';
 import { withMisfitsUnusable } from './out-of-place';
 import { decidedPlaces, expectedWrong, loudPlaces } from './place-odds';
@@ -15,7 +15,7 @@ import { rhythmFromBeats } from './rhythm-track';
 import type { Candidate } from './shape-pass';
 import { averagesOf, timesOf } from './timed-beats';
 import { NONE_UNSURE, type UnsurePlaces, unsurePlaces } from './unsure-places';
-import { readFilled, type Samples, usableRanges } from './usable-signal';
+import { readFilled, type Samples, usableInSteps } from './usable-signal';
 
 export interface DetectionInput {
   /** Heartbeat signal in uV (zero phase, about 0.5-40 Hz) at `rateHz`, from the recording's first sample on; NaN in gaps. */
@@ -84,20 +84,20 @@ export function detectBeats(
   }
 }
 
-/** detectBeats in small steps, each some 10 ms; yields the part done, so that a worker can answer in between or stop. */
+/** detectBeats in small steps, each a few ms; yields the part done, so that a worker can answer in between or stop. */
 export function* detectInSteps(input: DetectionInput): Generator<number, Detection> {
   const { heartbeat, rateHz, ticksPerSample, excluded = [], doubted = [], eager = 0 } = input;
   if (!(rateHz >= LOWEST_RATE_HZ))
     return nothing(`No heartbeat can be read at ${rateHz} samples a second.`);
-  const usable = usableRanges(heartbeat, rateHz, excluded);
+  const usable = yield* quietly(usableInSteps(heartbeat, rateHz, excluded), 0);
   yield 0;
   const signal: HeartSignal = { samples: heartbeat, rateHz, usable, bands: qrsBands(rateHz) };
   yield 0;
   const { shapes, places, beats: all } = yield* findBeats(signal, eager);
   yield 0.93;
   const allS = all.map(({ sample }) => sample / rateHz);
-  const rhythm = rhythmBy(all, rateHz);
-  const decided = decidedPlaces(all, places, rateHz, rhythm);
+  const rhythm = yield* quietly(rhythmBy(all, rateHz), 0.93);
+  const decided = yield* quietly(decidedPlaces(all, places, rateHz, rhythm), 0.93);
   yield 0.93;
   const isLoud = loudPlaces(all, places, decided, rateHz);
   yield 0.93;
@@ -110,17 +110,17 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const timed = withFiducials(averages, sign, rateHz, input.sign && LEAST_ASKED);
   const times = yield* timesOf(signal, found.beats, timed, sign);
   yield 0.99;
-  const classes = classesOf(signal, found);
+  const classes = yield* quietly(classesOf(signal, found), 0.99);
   yield 0.99;
   const measured =
     timed.length > 0 ? yield* quietly(measureBeats(signal, timed[0], times), 0.99) : null;
   yield 0.99;
   const list = listOf(times, classes, ticksPerSample);
-  const judged = withMisfitsUnusable(
-    list,
-    signal,
-    ticksPerSample,
-    (fromS, toS) => expectedWrong(decided, fromS, toS) > LEAST_DOUBT || isLoud(fromS, toS),
+  const isDoubtful = (fromS: number, toS: number) =>
+    expectedWrong(decided, fromS, toS) > LEAST_DOUBT || isLoud(fromS, toS);
+  const judged = yield* quietly(
+    withMisfitsUnusable(list, signal, ticksPerSample, isDoubtful),
+    0.99,
   );
   yield 0.99;
   const ticksPerS = ticksPerSample * rateHz;
@@ -181,12 +181,12 @@ const rhythmBy = (beats: readonly Candidate[], rateHz: number) =>
     () => rhythmOf(1, 0.3, 0.1),
   );
 
-function classesOf(
+function* classesOf(
   signal: HeartSignal,
   { beats, shapes }: Pick<FoundBeats, 'beats' | 'shapes'>,
-): BeatClass[] {
+): Generator<void, BeatClass[]> {
   const { rateHz, bands, samples, usable } = signal;
-  const rhythm = rhythmBy(beats, rateHz);
+  const rhythm = yield* rhythmBy(beats, rateHz);
   const half = Math.round(0.12 * rateHz);
   const meanHz = ({ sample }: Candidate) => {
     const margin = half + bands.reach;
@@ -200,7 +200,7 @@ function classesOf(
     const { rrS, ...rest } = rhythm(sample / rateHz);
     return { rrS: rrS * rateHz, ...rest };
   };
-  return classifyBeats(beats, shapes, rhythmAt, meanHz);
+  return yield* classifyBeats(beats, shapes, rhythmAt, meanHz);
 }
 
 /** Beats at whole ticks, strictly ascending: of two at one tick the first stays. */

@@ -54,14 +54,15 @@ interface Weighted {
 
 /**
  * Leaves out shapes nearly alike to a stronger one, and those that most beats of a stronger shape carry with them: T and P
- * waves. T waves as tall as their complexes stay, named so: what is like them is to join no shape of beats.
+ * waves. T waves as tall as their complexes stay, named so: what is like them is to join no shape of beats. Takes a rest
+ * after each shape.
  */
-export function distinctShapes(
+export function* distinctShapes(
   shapes: readonly Growing[],
   rows: Rows,
   rateHz: number,
   bands: QrsBands,
-): Distinct[] {
+): Generator<void, Distinct[]> {
   const { half, rowHalf } = rows;
   const kept: Weighted[] = [];
   const strength = ({ sum }: Growing) => rms(middle(sum, half));
@@ -73,6 +74,7 @@ export function distinctShapes(
         isCarried(shape, other.shape, rows, energy / other.energy, rateHz),
     );
     if (!known) kept.push({ shape, energy });
+    yield;
   }
   const complexes = kept.filter((one) => !kept.some((other) => isTallP(one, other, rows, rateHz)));
   return complexes.map((one) => ({

@@ -88,7 +88,10 @@ const LEVEL_HALF_S = 9;
 const LEVEL_RANGE = 4;
 
 /** Seconds looked at between two rests. */
-const SECONDS_A_STEP = 600;
+const SECONDS_A_STEP = 200;
+
+/** The same where the beats' level is made of those of a few seconds. */
+const LEVELS_A_STEP = 2000;
 
 /** Levels by second; NaN where nothing is usable near. Takes a rest now and then. */
 export function* levelsOf(energy: Energy, seconds: number): Generator<void, Levels> {
@@ -104,10 +107,14 @@ export function* levelsOf(energy: Energy, seconds: number): Generator<void, Leve
     if (s % SECONDS_A_STEP === 0) yield;
   }
   yield;
-  return { noise, beat: beatLevels(energy, seconds, few) };
+  return { noise, beat: yield* beatLevels(energy, seconds, few) };
 }
 
-function beatLevels(energy: Energy, seconds: number, few: Float64Array): Float64Array {
+function* beatLevels(
+  energy: Energy,
+  seconds: number,
+  few: Float64Array,
+): Generator<void, Float64Array> {
   const greatest = new Float64Array(seconds + 1);
   const rate = energy.envelopeHz;
   for (let i = 0; i < energy.envelope.length; i += 1) {
@@ -116,6 +123,7 @@ function beatLevels(energy: Energy, seconds: number, few: Float64Array): Float64
   }
   const pairs = new Float64Array(seconds);
   for (let s = 0; s < seconds; s += 1) pairs[s] = Math.max(greatest[s], greatest[s + 1]);
+  yield;
   const level = new Float64Array(seconds);
   for (let s = 0; s < seconds; s += 1) {
     let count = 0;
@@ -123,6 +131,7 @@ function beatLevels(energy: Energy, seconds: number, few: Float64Array): Float64
     for (let j = Math.max(0, s - LEVEL_HALF_S); j <= last; j += 1)
       if (pairs[j] > 0) few[count++] = pairs[j];
     level[s] = count > 0 ? quantileInPlace(few, 0.5, count) : Number.NaN;
+    if (s % LEVELS_A_STEP === LEVELS_A_STEP - 1) yield;
   }
   const known = level.filter((value) => !Number.isNaN(value));
   const usual = quantileInPlace(known, 0.5);

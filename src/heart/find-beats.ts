@@ -1,9 +1,16 @@
+import { mapInSteps, quietly, scaled } from '../numeric/in-steps';
 import { medianInPlace } from '../numeric/statistics';
 import { afterWaveCosts, type Host, usualCourses } from './after-wave';
 import { learnShapes, type Shape } from './beat-shapes';
-import { type Energy, energyPass, type HeartSignal, type Levels, levelsOf } from './energy-pass';
+import {
+  type Crest,
+  type Energy,
+  energyPass,
+  type HeartSignal,
+  type Levels,
+  levelsOf,
+} from './energy-pass';
 import { firstEvidence, placeEvidence, sizeEvidence, waveEvidence } from './evidence';
-import { quietly, scaled } from './in-steps';
 import { bestPath, type RhythmAt } from './rhythm-path';
 import { rhythmFromBeats, rhythmFromEnergy } from './rhythm-track';
 import { type Candidate, shapePass } from './shape-pass';
@@ -47,28 +54,29 @@ export function* findBeats(signal: HeartSignal, eager = 0): Generator<number, Fo
   let beats: Weighed[] = [];
   let places: Place[] = [];
   for (let round = 0; round < ROUNDS; round += 1) {
-    const sizes = usualSizes(
-      round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats,
-    );
-    yield 0.92;
-    const scores = evidence.map((value, i) => value + eager + sizeEvidence(candidates[i], sizes));
+    const alike = round === 0 ? candidates.filter(({ likeness }) => likeness > ALIKE) : beats;
+    const sizes = yield* quietly(usualSizes(alike), 0.92);
+    const score = (value: number, i: number) => value + eager + sizeEvidence(candidates[i], sizes);
+    const scores = yield* quietly(mapInSteps(evidence, score), 0.92);
     yield 0.92;
     const hosts = round === 0 ? likeliest(candidates, first, rateHz) : beats;
     yield 0.92;
     const times = beats.map((beat) => beat.sample / rateHz);
-    const rhythm = round === 0 ? () => NO_RHYTHM : rhythmFromBeats(times, fallback);
+    const rhythm =
+      round === 0 ? () => NO_RHYTHM : yield* quietly(rhythmFromBeats(times, fallback), 0.92);
     yield 0.92;
     const around = { energy, rateHz, rhythm, done: 0.92 };
     const { path, worth } = yield* likelyPath(candidates, scores, hosts, around, WAVE_WEIGHT);
-    beats = path.map((i) => ({ ...candidates[i], score: scores[i] }));
+    const taken = mapInSteps(path, (i) => ({ ...candidates[i], score: scores[i] }));
+    beats = yield* quietly(taken, 0.92);
     yield 0.92;
-    if (round === ROUNDS - 1)
-      places = candidates.map(({ sample, shape, energyUv }, i) => ({
-        sample,
-        shape,
-        energyUv,
-        score: worth[i],
-      }));
+    const asPlace = ({ sample, shape, energyUv }: Candidate, i: number) => ({
+      sample,
+      shape,
+      energyUv,
+      score: worth[i],
+    });
+    if (round === ROUNDS - 1) places = yield* quietly(mapInSteps(candidates, asPlace), 0.92);
     yield 0.92;
   }
   const kept = eager > 0 ? beats : yield* present(beats, shapes);
@@ -108,13 +116,16 @@ function* likelyPath(
   { energy, rateHz, rhythm, done }: Surroundings,
   weight: number,
 ): Generator<number, { readonly path: number[]; readonly worth: readonly number[] }> {
-  const weighed = places.map(({ sample, shape, energyUv, likeT }, i) => ({
-    sample,
-    shape,
-    energyUv,
-    score: scores[i],
-    asT: waveEvidence(likeT),
-  }));
+  const weighed = yield* quietly(
+    mapInSteps(places, ({ sample, shape, energyUv, likeT }, i) => ({
+      sample,
+      shape,
+      energyUv,
+      score: scores[i],
+      asT: waveEvidence(likeT),
+    })),
+    done,
+  );
   const rrAt = (sample: number) => rhythm(sample / rateHz).rrS;
   yield done;
   const courses = yield* quietly(usualCourses(hosts, energy, rateHz), done);
@@ -138,20 +149,20 @@ function* firstBeats(
 ): Generator<number, number[]> {
   const { crests } = energy;
   const times = crests.map(({ sample }) => sample / rateHz);
-  const scores = crests.map(({ sample, energyUv }) => {
+  const evidence = ({ sample, energyUv }: Crest) => {
     const s = Math.min(levels.beat.length - 1, Math.floor(sample / rateHz));
     return firstEvidence(energyUv, levels.beat[s], levels.noise[s]);
-  });
+  };
+  const scores = yield* quietly(mapInSteps(crests, evidence), 0.3);
   yield 0.3;
-  const places = crests.map((crest) => ({ ...crest, shape: 0, likeT: 0 }));
+  const asPlace = ({ sample, energyUv }: Crest) => ({ sample, energyUv, shape: 0, likeT: 0 });
+  const places = yield* quietly(mapInSteps(crests, asPlace), 0.3);
   let rhythm = start;
   let path: number[] = yield* quietly(bestPath(times, scores, rhythm), 0.3);
   for (let round = 0; round < 2; round += 1) {
     const hosts = path.map((i) => places[i]);
-    rhythm = rhythmFromBeats(
-      path.map((i) => times[i]),
-      rhythm,
-    );
+    const found = path.map((i) => times[i]);
+    rhythm = yield* quietly(rhythmFromBeats(found, rhythm), 0.3);
     yield 0.3;
     const around = { energy, rateHz, rhythm, done: 0.3 };
     path = (yield* likelyPath(places, scores, hosts, around, 1)).path;
@@ -179,10 +190,10 @@ function likeliest(
   return hosts;
 }
 
-/** The usual size of beats near a sample: the median of those about it. */
-function usualSizes(beats: readonly Candidate[]): (sample: number) => number {
+/** The usual size of beats near a sample: the median of those about it. Takes a rest now and then. */
+function* usualSizes(beats: readonly Candidate[]): Generator<void, (sample: number) => number> {
   const few = new Float64Array(2 * NEIGHBOURS + 1);
-  const sizes = beats.map((_, i) => {
+  const sizes = yield* mapInSteps(beats, (_, i) => {
     const first = Math.max(0, i - NEIGHBOURS);
     const last = Math.min(beats.length - 1, i + NEIGHBOURS);
     for (let j = first; j <= last; j += 1) few[j - first] = beats[j].size;

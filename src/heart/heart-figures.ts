@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import { coverageOf } from '../recording/adequacy';
 import { BEAT_CLASSES, type BeatList, firstBeatAt } from '../recording/beat';
 import { type Figures, type FigureValue, numberFigure, withheld } from '../recording/figure';
@@ -70,10 +71,10 @@ function countFigures(input: HeartFiguresInput, heart: PartOfHeart): Figures {
   };
 }
 
-function partOf(input: HeartFiguresInput): PartOfHeart {
+function* partOf(input: HeartFiguresInput): Generator<void, PartOfHeart> {
   const { rr, part, settings, timingSdMs, breathing } = input;
   const { first, end } = intervalsWithin(rr, part.fromS, part.toS);
-  const segments = segmentsOnce(input);
+  const segments = yield* segmentsOnce(input);
   const regular = regularNn(rr, segments);
   const { keptS, adequacy } = coverageOf(input.blocked, part.fromS, part.toS);
   return {
@@ -98,8 +99,12 @@ function partOf(input: HeartFiguresInput): PartOfHeart {
  * defines them: each a number with what it stands on and the marks it needs, or withheld with its reason.
  * Figures of variability leave out irregular segments; heart rate and mean NN do not.
  */
-export function heartFigures(input: HeartFiguresInput): HeartFigures {
-  const heart = partOf(input);
+export const heartFigures = (input: HeartFiguresInput): HeartFigures =>
+  atOnce(heartFiguresInSteps(input));
+
+/** heartFigures with a rest now and then. */
+export function* heartFiguresInSteps(input: HeartFiguresInput): Generator<void, HeartFigures> {
+  const heart = yield* partOf(input);
   return {
     figures: {
       ...timeFigures(heart),

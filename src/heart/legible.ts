@@ -1,3 +1,4 @@
+import { firstAtOrAfter } from '../numeric/first-at-or-after';
 import { BEAT_CLASSES, type BeatList, firstBeatAt } from '../recording/beat';
 import type { Interval } from '../recording/span';
 import { type Decided, expectedWrong } from './place-odds';
@@ -23,7 +24,7 @@ export function isMisread({ fromS, toS }: Interval, beats: BeatList, ticksPerS: 
 }
 
 /**
- * Whether beats (s) can be read in each of some stretches, by what was found there: few are to be expected too many or
+ * Whether beats (s, ascending) can be read in each of some stretches, by what was found there: few are to be expected too many or
  * missed, and it is not all but empty of beats that the rhythm about it lets expect. True where there is nothing to go wrong.
  */
 export function legibleStretches(
@@ -33,7 +34,7 @@ export function legibleStretches(
   usualRrS: (timeS: number) => number,
 ): boolean[] {
   return stretches.map(({ fromS, toS }) => {
-    const count = beatsS.filter((s) => s >= fromS && s < toS).length;
+    const count = Math.max(0, firstAtOrAfter(beatsS, toS) - firstAtOrAfter(beatsS, fromS));
     const expected = (toS - fromS) / usualRrS(fromS);
     if (expected > HOLDS_INTERVALS && count < LEAST_BEATS * expected) return false;
     return expectedWrong(decided, fromS, toS) < MOST_WRONG * Math.max(FEWEST, count);

@@ -15,6 +15,8 @@ const EARLY = 6;
 const EARLY_COUNTS = 0.1;
 /** As many beats may be missing from one interval: longer ones than 2 s are no NN anyway. */
 const MOST_MISSED = 3;
+/** Beats looked at between two rests. */
+const BEATS_A_STEP = 1000;
 
 /** Spreads by which interval i is about twice or three times what is expected: beats are missing in it. 0 where it is not. */
 function missing(i: number, logRr: Float64Array, { expected, spread }: Foretelling): number {
@@ -73,26 +75,32 @@ function misfitOf(
  * itself: how far its intervals are off what those about them foretell (median absolute deviation of 41), so that respiratory
  * arrhythmia and rhythms that nothing foretells are left as they are; there is no fixed percentage. The plainest misfit is
  * taken out first and its neighbours judged without it. Only beats whose `judged` is 1 are flagged, and intervals whose
- * `broken` is 1 (something unusable lies between) tell nothing. `timesS` ascend; `broken` has one value less.
+ * `broken` is 1 (something unusable lies between) tell nothing. `timesS` ascend; `broken` has one value less. Takes a rest
+ * now and then.
  */
-export function beatsOutOfPlace(
+export function* beatsOutOfPlace(
   timesS: ArrayLike<number>,
   judged: ArrayLike<number>,
   broken: ArrayLike<number>,
-): Uint8Array {
+): Generator<void, Uint8Array> {
   const flags = new Uint8Array(timesS.length);
   if (timesS.length <= FEWEST) return flags;
   const logRr = Float64Array.from({ length: timesS.length - 1 }, (_, i) =>
     broken[i] === 1 ? Number.NaN : log(timesS[i + 1] - timesS[i]),
   );
+  yield;
   const ways = foretellings(logRr);
+  yield;
   const misfits: Misfit[] = [];
   for (let beat = 1; beat < timesS.length; beat += 1) {
     const misfit = judged[beat] === 1 ? misfitOf(beat, judged, logRr, ways) : null;
     if (misfit && misfit.spreads > 0) misfits.push(misfit);
+    if (beat % BEATS_A_STEP === 0) yield;
   }
   misfits.sort((a, b) => b.spreads - a.spreads || a.beat - b.beat);
-  for (const { beat } of misfits) {
+  for (let k = 0; k < misfits.length; k += 1) {
+    if (k % BEATS_A_STEP === BEATS_A_STEP - 1) yield;
+    const { beat } = misfits[k];
     const now = misfitOf(beat, judged, logRr, ways);
     if (!(now.spreads > 0)) continue;
     flags[beat] = 1;
@@ -123,22 +131,24 @@ const BESIDE_S = 0.1;
 /**
  * The beats with those of class N that contradict the rhythm about them put in class Q, as far as they are in doubt: a pause
  * in which nothing lies that might be a beat is one, and so is an early beat that is plain to see. `isDoubtful` says whether
- * a beat too many or missed is to be feared between two times (s); `usable` in samples.
+ * a beat too many or missed is to be feared between two times (s); `usable` in samples. Takes a rest now and then.
  */
-export function withMisfitsUnusable(
+export function* withMisfitsUnusable(
   beats: BeatList,
   { usable, rateHz }: Pick<HeartSignal, 'usable' | 'rateHz'>,
   ticksPerSample: number,
   isDoubtful: (fromS: number, toS: number) => boolean,
-): BeatList {
+): Generator<void, BeatList> {
   const samples = beats.ticks.map((tick) => tick / ticksPerSample);
   const timesS = samples.map((sample) => sample / rateHz);
-  const judged = beats.classes.map((one, i) => {
+  const judged = new Uint8Array(timesS.length);
+  for (let i = 0; i < judged.length; i += 1) {
+    if (i % BEATS_A_STEP === BEATS_A_STEP - 1) yield;
     const fromS = (timesS[i - 1] ?? 0) + BESIDE_S;
     const toS = (timesS[i + 1] ?? timesS[i] + 1) - BESIDE_S;
-    return one === NORMAL && isDoubtful(fromS, toS) ? 1 : 0;
-  });
-  const flags = beatsOutOfPlace(timesS, judged, brokenIntervals(samples, usable));
+    judged[i] = beats.classes[i] === NORMAL && isDoubtful(fromS, toS) ? 1 : 0;
+  }
+  const flags = yield* beatsOutOfPlace(timesS, judged, brokenIntervals(samples, usable));
   const classes = beats.classes.map((one, i) =>
     flags[i] === 1 || (judged[i] === 1 && isAmidMisfits(flags, i)) ? UNUSABLE : one,
   );

@@ -27,6 +27,8 @@ const LOUD_PART = 0.5;
 const LONE_PART = 0.12;
 const P_WAVE_S = 0.26;
 const T_WAVE_S = 0.45;
+/** Places decided between two rests. */
+const PLACES_A_STEP = 1000;
 /** Log-odds beyond this are certain. */
 const CERTAIN = 30;
 
@@ -35,17 +37,17 @@ const chance = (logOdds: number) => 1 / (1 + exp(-Math.min(CERTAIN, Math.max(-CE
 /**
  * The chance of each place of being decided wrongly, given the other beats: its odds are its own and what it changes in how
  * the intervals about it fit the rhythm; 0 for places that are part of a beat beside them. `beats` are those taken of
- * `places`, both ascending.
+ * `places`, both ascending. Takes a rest now and then.
  */
-export function decidedPlaces(
+export function* decidedPlaces(
   beats: readonly Judged[],
   places: readonly Judged[],
   rateHz: number,
   rhythmAt: (timeS: number) => RhythmAt,
-): Decided {
+): Generator<void, Decided> {
   const beatS = Float64Array.from(beats, ({ sample }) => sample / rateHz);
   const timesS = Float64Array.from(places, ({ sample }) => sample / rateHz);
-  const wrong = timesS.map((timeS, j) => {
+  const isWrong = (timeS: number, j: number) => {
     const i = firstAtOrAfter(beatS, timeS - SAME_BEAT_S);
     const isNear = i < beatS.length && beatS[i] <= timeS + SAME_BEAT_S;
     const isBeat = isNear && beatS[i] === timeS;
@@ -59,7 +61,12 @@ export function decidedPlaces(
       intervalFit(after - timeS, rhythm) -
       intervalFit(after - before, rhythm);
     return chance(isBeat ? -odds : odds);
-  });
+  };
+  const wrong = new Float64Array(timesS.length);
+  for (let j = 0; j < wrong.length; j += 1) {
+    wrong[j] = isWrong(timesS[j], j);
+    if (j % PLACES_A_STEP === PLACES_A_STEP - 1) yield;
+  }
   return { timesS, wrong };
 }
 

@@ -7,7 +7,7 @@ const LONGEST_RR_S = 2;
 const WINDOW_S = 20;
 const STEP_S = 10;
 /** Looks between two rests. */
-const LOOKS_A_STEP = 60;
+const LOOKS_A_STEP = 30;
 const FIRST_SPREAD = 0.15;
 const LEAST_SPREAD = 0.06;
 const MOST_SPREAD = 0.3;
@@ -71,11 +71,14 @@ function bestLag(x: Float64Array, rateHz: number): number {
   return Math.round(0.8 * rateHz);
 }
 
-/** The usual RR interval and its spread near each beat, from the beats found so far (ascending, s). */
-export function rhythmFromBeats(
+/** Beats looked at between two rests. */
+const BEATS_A_STEP = 2000;
+
+/** The usual RR interval and its spread near each beat, from the beats found so far (ascending, s). Takes a rest now and then. */
+export function* rhythmFromBeats(
   timesS: ArrayLike<number>,
   before: (timeS: number) => RhythmAt,
-): (timeS: number) => RhythmAt {
+): Generator<void, (timeS: number) => RhythmAt> {
   const count = timesS.length;
   if (count < NEIGHBOURS) return before;
   const usual = new Float64Array(count);
@@ -91,6 +94,7 @@ export function rhythmFromBeats(
       few[k] = Math.abs(logRatio(timesS[j] - timesS[j - 1], usual[i]));
     const measured = 1.5 * medianInPlace(few, n);
     spread[i] = Math.min(MOST_SPREAD, Math.max(LEAST_SPREAD, measured));
+    if (i % BEATS_A_STEP === BEATS_A_STEP - 1) yield;
   }
   const unusual = unusualShares(timesS, usual, spread);
   const rhythms = Array.from(usual, (rrS, i) => rhythmOf(rrS, spread[i], unusual[i]));

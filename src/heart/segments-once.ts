@@ -83,19 +83,24 @@ function rhythmOf({ rr, beats, rateHz, blocked }: SegmentsAsked): RhythmFlags {
 
 /**
  * The segments of a part of the study. Phases and pieces of them share segments ("fed" and "fed 0-30") and an edit changes
- * one or two of a day's 288, so a segment is worked out anew only when its intervals differ from the last time.
+ * one or two of a day's 288, so a segment is worked out anew only when its intervals differ from the last time. Takes a rest
+ * after each such segment.
  */
-export function segmentsOnce(asked: SegmentsAsked): readonly SegmentResult[] {
+export function* segmentsOnce(asked: SegmentsAsked): Generator<void, readonly SegmentResult[]> {
   const { rr, part, settings } = asked;
   const input = { rr, rhythm: rhythmOf(asked), settings: settings.variability };
   const laid = layOut(part, settings.variability.segmentS);
   const alone = laid.length === 1;
-  return laid.map((one) => {
+  const results: SegmentResult[] = [];
+  for (const one of laid) {
     const key = keyOf(one, alone, settings);
     const { first, end } = intervalsWithin(rr, one.fromS, one.toS);
     const known = recall(key, input, first, end);
     const result = known ?? segmentOf(input, part.name, one, alone);
-    if (!known) remember(key, input, result);
-    return { ...result, shown: { ...result.shown, phase: part.name } };
-  });
+    results.push({ ...result, shown: { ...result.shown, phase: part.name } });
+    if (known) continue;
+    remember(key, input, result);
+    yield;
+  }
+  return results;
 }

@@ -63,6 +63,7 @@ export function* shapePass(
   const margin = bands.reach + 2 * half + Math.max(apart, Math.ceil(SIDE_S * rateHz));
   for (const { from, to, stretch, start } of chunksOf(signal, margin)) {
     const projected = projectBand(filterBand(stretch, bands.shape), searched, plans);
+    yield from / samples.length;
     const near: number[] = [];
     while (firstFrom < first.length && first[firstFrom] < start) firstFrom += 1;
     for (let i = firstFrom; i < first.length && first[i] < start + stretch.length; i += 1)
@@ -81,6 +82,7 @@ export function* shapePass(
       from: from - start,
       to: to - start,
     });
+    yield from / samples.length;
     for (const fit of fitted) {
       const sample = fit.sample + start;
       const energyUv = energyAt(energy, sample / rateHz);

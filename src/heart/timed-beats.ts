@@ -1,3 +1,4 @@
+import { quietly } from '../numeric/in-steps';
 import { averageBeats, type ShapeAverage, timeBeat } from './beat-average';
 import { isOfShape } from './classify';
 import type { HeartSignal } from './energy-pass';
@@ -22,7 +23,8 @@ export function* averagesOf(
   }
   const averages: Omit<ShapeAverage, 'fiducial'>[] = [];
   for (const [shape, group] of groups) {
-    if (group.length >= FEWEST) averages.push(averageBeats(signal, shape, group));
+    if (group.length >= FEWEST)
+      averages.push(yield* quietly(averageBeats(signal, shape, group), 0.94));
     yield 0.94;
   }
   return averages.sort((a, b) => b.count - a.count);
@@ -34,7 +36,7 @@ const ODD_HALF_S = 0.06;
 const MARGIN = 9;
 
 /** Beats timed between two steps. */
-const BEATS_A_STEP = 500;
+const BEATS_A_STEP = 250;
 
 /** Times of the beats below the sample, in samples. */
 export function* timesOf(

@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import type { Interval } from '../recording/span';
 
 /** A stretch of samples, `from` included, `to` not. */
@@ -8,15 +9,25 @@ export interface SampleRange {
 
 export type Samples = Float32Array | Float64Array;
 
+/** Samples looked at between two rests. */
+const SAMPLES_A_STEP = 250_000;
+
 /**
  * The stretches of a signal that can be read: neither NaN nor excluded, ascending and apart. Excluded intervals are in
  * seconds from sample 0.
  */
-export function usableRanges(
+export const usableRanges = (
   samples: Samples,
   rateHz: number,
   excluded: readonly Interval[],
-): SampleRange[] {
+): SampleRange[] => atOnce(usableInSteps(samples, rateHz, excluded));
+
+/** usableRanges with a rest now and then. */
+export function* usableInSteps(
+  samples: Samples,
+  rateHz: number,
+  excluded: readonly Interval[],
+): Generator<void, SampleRange[]> {
   const barred = excluded
     .map(({ fromS, toS }) => ({
       from: Math.ceil(fromS * rateHz),
@@ -27,6 +38,7 @@ export function usableRanges(
   let next = 0;
   let from = -1;
   for (let i = 0; i <= samples.length; i += 1) {
+    if (i % SAMPLES_A_STEP === SAMPLES_A_STEP - 1) yield;
     while (next < barred.length && barred[next].to <= i) next += 1;
     const bad =
       i === samples.length ||

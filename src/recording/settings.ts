@@ -1,7 +1,20 @@
 import type { Cpm, Hertz } from '../units/rate';
 import type { Seconds } from '../units/time';
 
-export type RouteName = 'band' | 'fractional';
+/** The heartbeat has no route `beat-average`: the beats that are averaged have to be found in it first. */
+export const HEART_ROUTES = ['band', 'fractional'] as const;
+export type HeartRouteName = (typeof HEART_ROUTES)[number];
+export const SLOW_ROUTES = ['band', 'beat-average', 'fractional'] as const;
+export type RouteName = (typeof SLOW_ROUTES)[number];
+
+/** How the average heartbeat is made that route `beat-average` takes out. */
+export interface BeatAverageSettings {
+  /** How far it reaches at most before and after R; less where beats come close. */
+  readonly beforeMs: number;
+  readonly afterMs: number;
+  /** Beats of the same class nearby that it is the mean of. */
+  readonly beats: number;
+}
 
 /** How route `band` weighs the frequencies inside its band: all alike, or by how far each stands out of the lead's own background. */
 export const SLOW_GAINS = ['fitted', 'even'] as const;
@@ -22,7 +35,7 @@ export interface RhythmBands {
 /** Everything that changes a figure and that a person may choose; stored with the session and printed with the report. */
 export interface Settings {
   readonly slowRoute: RouteName;
-  readonly heartRoute: RouteName;
+  readonly heartRoute: HeartRouteName;
   readonly slowBandCpm: readonly [low: Cpm, high: Cpm];
   readonly slowGain: SlowGain;
   readonly breathingOut: BreathingOut;
@@ -38,6 +51,7 @@ export interface Settings {
     /** Shift the drawn slow wave back by the lead in time that the derivative gives it at DF. */
     readonly undoLead: boolean;
   };
+  readonly beatAverage: BeatAverageSettings;
   readonly rhythmBands: RhythmBands;
   readonly epoch: {
     readonly lengthS: Seconds;
@@ -71,6 +85,7 @@ export const DEFAULT_SETTINGS: Settings = {
     polynomialOrder: 2,
     undoLead: false,
   },
+  beatAverage: { beforeMs: 300, afterMs: 500, beats: 60 },
   rhythmBands: { lowCpm: 1, normoLowCpm: 2, normoHighCpm: 4, highCpm: 9 },
   epoch: { lengthS: 240, stepS: 60, maxSpoiled: 0.25, falseAlarm: 0.05 },
   variability: { segmentS: 300, lfHz: [0.04, 0.15], hfHz: [0.15, 0.4], minNnShare: 0.9 },

@@ -1,4 +1,5 @@
 import { type BeatList, beatAt } from '../recording/beat';
+import { gapBetween } from '../recording/lost';
 import { ticksToSeconds } from '../units/ticks';
 import { beatsInView, rrMsAt } from './beats-in-view';
 import { intervalFits } from './interval-fit';
@@ -146,7 +147,9 @@ function paintIntervals(
   const open = openBeats(view.stores);
   if (!box || !open) return;
   const { tokens } = view;
-  const { beats } = open.state;
+  const { beats, roles } = open.state;
+  const { heart } = roles;
+  const gaps = view.stores.analysis.getState().recording?.gaps ?? [];
   const yOf = (rrMs: number) => {
     const share = (Math.min(HIGH_MS, Math.max(LOW_MS, rrMs)) - LOW_MS) / (HIGH_MS - LOW_MS);
     return box.topPx + box.heightPx - 3 - share * (box.heightPx - 8);
@@ -160,6 +163,7 @@ function paintIntervals(
   let writtenTo = 0;
   for (let i = 1; i < pins.length; i += 1) {
     const [before, pin] = [pins[i - 1], pins[i]];
+    if (heart && gapBetween(heart, gaps, before.atS, pin.atS)) continue;
     const shown = (pin.atS - before.atS) * 1000;
     const y = yOf(shown);
     const odd = !intervalFits(rrMs, pin.index - first);

@@ -1,21 +1,18 @@
-import { bandPassTaps, convolveSame, highPassTaps, lowPassTaps } from '../numeric/fir';
-import { cascadeKernels, centredKernel, type Kernel } from '../numeric/kernel';
-import { blockSizeFor } from '../numeric/kernel-spectrum';
+import { bandPassTaps, convolveSame } from '../numeric/fir';
+import { atOnce } from '../numeric/in-steps';
+import { cascadeKernels, centredKernel } from '../numeric/kernel';
 import { nanRuns } from '../numeric/nan-runs';
-import { createOverlapSave } from '../numeric/overlap-save';
-import type { HeartOutput } from '../recording/separated';
 import type { Settings, SlowGain } from '../recording/settings';
 import type { Interval } from '../recording/span';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
 import { formatClock } from '../units/time';
 import { withoutBreathing } from './breathing-out';
 import { bridged } from './bridge';
-import { createChunks } from './chunks';
 import { fittedGain, gainTaps } from './fitted-gain';
-import { type LeadFacts, maskGaps } from './gaps';
-import { heartDecimation } from './heart-rate';
+import { maskGaps } from './gaps';
+import { FELT_SHARE, startHeart } from './heart-band';
 import { type LeadSpectra, leadSpectra } from './lead-spectra';
-import type { Drawing, Route, RouteJob, SeparatedSlow } from './route';
+import type { Drawing, Route, SeparatedSlow } from './route';
 import { slowRateHz } from './slow-rate';
 import { uncleanStretches } from './unclean';
 import { withoutHoles } from './without-holes';
@@ -29,13 +26,6 @@ const GAIN_HALF_S = 120;
 /** What the lead is foretold by at both ends, so that a filter has something to run over. */
 const MARGIN_S = 180;
 const SLOW_ATTENUATION_DB = 44;
-const HEART_ATTENUATION_DB = 60;
-/**
- * Share of a filter's half length within which the end of a lead is felt: beyond it the drawn wave
- * is within 2 uV of the one drawn from a lead that goes on (100 uV wave over 1/f drift, by trial).
- */
-const FELT_SHARE = 0.55;
-
 /**
  * Taps of the slow wave's zero-phase band-pass (windowed sinc, Kaiser 1974) at the slow rate;
  * `bandCpm` are its -6 dB points (the upper one lowered below half the rate), 44 dB down at half
@@ -58,44 +48,8 @@ export function slowBandTaps(rateHz: Hertz, bandCpm: readonly [Cpm, Cpm]): Float
   });
 }
 
-/** The band the heartbeat keeps at a rate: the upper edge at most 0.4 of it; null where nothing is left. */
-export function heartBandAt(
-  rateHz: Hertz,
-  bandHz: readonly [Hertz, Hertz],
-): readonly [Hertz, Hertz] | null {
-  const high = Math.min(bandHz[1], 0.4 * rateHz);
-  return high > 2 * bandHz[0] ? [bandHz[0], high] : null;
-}
-
-/**
- * The heartbeat's zero-phase filter at the lead's own rate: a high-pass and a low-pass in one
- * (windowed sincs, Kaiser 1974), -6 dB at the band's edges, the upper transition wide enough not
- * to ring. `outputRateHz` is the rate it is folded to.
- */
-export function heartBandKernel(
-  rateHz: Hertz,
-  outputRateHz: Hertz,
-  bandHz: readonly [Hertz, Hertz],
-): Kernel {
-  const [low, high] = bandHz;
-  const above = Math.min(0.2 * high, outputRateHz / 2 - high);
-  const highPass = highPassTaps({
-    rateHz,
-    stopHz: low * (1 - EDGE_WIDTH),
-    passHz: low * (1 + EDGE_WIDTH),
-    attenuationDb: HEART_ATTENUATION_DB,
-  });
-  const lowPass = lowPassTaps({
-    rateHz,
-    passHz: high - above,
-    stopHz: high + above,
-    attenuationDb: HEART_ATTENUATION_DB,
-  });
-  return cascadeKernels(centredKernel(highPass), centredKernel(lowPass));
-}
-
 /** Samples that are there, 1, and those in gaps, 0. */
-const present = (recorded: Float64Array) =>
+export const present = (recorded: Float64Array) =>
   Uint8Array.from(recorded, (value) => (Number.isNaN(value) ? 0 : 1));
 
 /** A lead that a filter can run over, and the spectra of what was there. */
@@ -110,22 +64,23 @@ interface Bridged {
 const marginOf = (rateHz: Hertz) => Math.round(MARGIN_S * rateHz);
 
 /** The lead with what is spoiled or missing bridged and breathing taken out; null where too little is there to go by. */
-function bridgedLead(
+function* bridgedLead(
   recorded: Float64Array,
   rateHz: Hertz,
-  { kept, breathing }: Omit<Drawing, 'dfCpm'>,
-): Bridged | null {
-  const first = leadSpectra(recorded, kept, rateHz, 'zero');
+  { kept, breathing }: Pick<Drawing, 'kept' | 'breathing'>,
+): Generator<void, Bridged | null> {
+  const first = yield* leadSpectra(recorded, kept, rateHz, 'zero');
   if (!first) return null;
   const margin = marginOf(rateHz);
-  const whole = bridged(recorded, kept, rateHz, first, margin);
+  const whole = yield* bridged(recorded, kept, rateHz, first, margin);
+  yield;
   const inside = whole.subarray(margin, margin + recorded.length);
   const { lead, takenOut } = breathing
     ? withoutBreathing(inside, breathing, rateHz)
     : { lead: inside, takenOut: [] };
   whole.set(lead, margin);
   const untouched = takenOut.length === 0 && !kept.includes(0);
-  const spectra = untouched ? first : leadSpectra(lead, kept, rateHz, 'bridged');
+  const spectra = untouched ? first : yield* leadSpectra(lead, kept, rateHz, 'bridged');
   return spectra && { lead, whole, spectra, breathingOut: takenOut };
 }
 
@@ -156,33 +111,71 @@ function drawingTaps(
   return cascadeKernels(band, centredKernel(gain)).taps;
 }
 
-function drawBand(
+/** What of a slow wave the drawing makes. */
+type Drawn = Pick<SeparatedSlow, 'slowWave' | 'notes'>;
+
+/** All of a slow wave but its drawing. */
+export function undrawn(
   lead: string,
   recorded: Float64Array,
   rateHz: Hertz,
-  settings: Settings,
-  drawing: Omit<Drawing, 'dfCpm'>,
-): SeparatedSlow {
-  const ready = bridgedLead(recorded, rateHz, drawing);
-  const taps = drawingTaps(rateHz, settings, ready?.spectra ?? null);
-  const gaps = nanRuns(recorded);
-  const slowWave = ready
-    ? convolveWithin(ready, taps, settings.slowGain)
-    : convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
-  maskGaps(slowWave, gaps, 1);
-  const bandTaps = slowBandTaps(rateHz, settings.slowBandCpm).length;
+  { slowBandCpm }: Settings,
+): Omit<SeparatedSlow, keyof Drawn> {
+  const bandTaps = slowBandTaps(rateHz, slowBandCpm).length;
   const feltS = (FELT_SHARE * (bandTaps - 1)) / 2 / rateHz;
+  const reach = { afterS: feltS, beforeS: feltS };
   return {
     lead,
     route: 'band',
     rateHz,
     recorded,
-    slowWave,
     forSpectra: recorded,
     powerResponse: null,
-    unclean: uncleanStretches(gaps, recorded.length, rateHz, { afterS: feltS, beforeS: feltS }),
+    unclean: uncleanStretches(nanRuns(recorded), recorded.length, rateHz, reach),
     leadSAt: () => 0,
     derivativeLeadSAt: () => 0,
+    wide: null,
+  };
+}
+
+/** A slow wave that is drawn once, when it is first asked for. */
+export function drawnWhenAsked(
+  rest: Omit<SeparatedSlow, keyof Drawn>,
+  draw: () => Generator<void, Drawn>,
+): SeparatedSlow {
+  let drawn: Drawn | null = null;
+  const once = () => {
+    drawn ??= atOnce(draw());
+    return drawn;
+  };
+  return {
+    ...rest,
+    get slowWave() {
+      return once().slowWave;
+    },
+    get notes() {
+      return once().notes;
+    },
+  };
+}
+
+/** The slow wave of a lead at the slow rate by route `band`, with a rest now and then. */
+export function* drawBand(
+  recorded: Float64Array,
+  rateHz: Hertz,
+  settings: Settings,
+  drawing: Pick<Drawing, 'kept' | 'breathing'>,
+): Generator<void, Drawn> {
+  const ready = yield* bridgedLead(recorded, rateHz, drawing);
+  yield;
+  const taps = drawingTaps(rateHz, settings, ready?.spectra ?? null);
+  yield;
+  const slowWave = ready
+    ? convolveWithin(ready, taps, settings.slowGain)
+    : convolveSame(withoutHoles(recorded), taps, 'reflect-odd');
+  maskGaps(slowWave, nanRuns(recorded), 1);
+  return {
+    slowWave,
     notes: [
       drawnWords(settings, Math.round(taps.length / rateHz), ready !== null),
       ...breathingWords(ready?.breathingOut ?? []),
@@ -208,42 +201,6 @@ const breathingWords = (takenOut: readonly Interval[]): readonly string[] =>
       ]
     : [];
 
-/** The heartbeat's filter at work; null where the rate leaves no band. */
-function startHeart(job: RouteJob) {
-  const decimation = heartDecimation(job.rateHz);
-  const rateHz = job.rateHz / decimation;
-  const band = heartBandAt(rateHz, job.settings.heartBandHz);
-  if (!band) return null;
-  const kernel = heartBandKernel(job.rateHz, rateHz, band);
-  const filter = createOverlapSave({
-    blockSize: blockSizeFor([kernel], job.sampleCount, decimation),
-    kernels: [kernel],
-    decimate: decimation,
-    ends: 'reflect-odd',
-  });
-  const chunks = createChunks(Math.ceil(job.sampleCount / decimation));
-  return {
-    push(block: Float64Array): void {
-      chunks.add(filter.push(block)[0]);
-    },
-    finish(facts: LeadFacts): HeartOutput {
-      chunks.add(filter.finish()[0]);
-      const heartbeat = chunks.joined();
-      maskGaps(heartbeat, facts.gaps, decimation);
-      const feltS = (FELT_SHARE * kernel.origin) / job.rateHz;
-      const reach = { afterS: feltS, beforeS: feltS };
-      return {
-        lead: job.lead,
-        rateHz,
-        heartbeat,
-        decimation,
-        unclean: uncleanStretches(facts.gaps, facts.sampleCount, job.rateHz, reach),
-        notes: [`Heartbeat by a zero-phase band-pass of ${band[0]}-${band[1]} Hz (-6 dB).`],
-      };
-    },
-  };
-}
-
 /**
  * Route `band`: slow wave and heartbeat by zero-phase FIR band-passes. Linear, without delay; rhythm
  * figures are computed on the lead before the slow wave's band-pass.
@@ -259,17 +216,23 @@ export const bandRoute: Route = {
         const rateHz = slowRateHz(job.rateHz);
         return {
           slow: job.slow
-            ? drawBand(job.lead, recorded, rateHz, job.settings, {
-                kept: present(recorded),
-                breathing: null,
-              })
+            ? drawnWhenAsked(undrawn(job.lead, recorded, rateHz, job.settings), () =>
+                drawBand(recorded, rateHz, job.settings, {
+                  kept: present(recorded),
+                  breathing: null,
+                }),
+              )
             : null,
           heart: heart ? heart.finish(facts) : null,
         };
       },
     };
   },
-  redraw(slow, settings, drawing) {
-    return drawBand(slow.lead, slow.recorded, slow.rateHz, settings, drawing);
+  *redraw(slow, settings, drawing) {
+    const { lead, recorded, rateHz } = slow;
+    return {
+      ...undrawn(lead, recorded, rateHz, settings),
+      ...(yield* drawBand(recorded, rateHz, settings, drawing)),
+    };
   },
 };

@@ -76,7 +76,7 @@ function meanAt(lead: Float64Array, places: readonly number[]): number {
 
 /**
  * The most likely values at `wanted` given what lies on the sides, each side having a level of its own (kriging with an
- * unknown mean a side; Matheron 1963): the values without level, and the two levels.
+ * unknown mean a side; Matheron 1963): the values without level, and the two levels. A lead that is 0 throughout stays so.
  */
 function mostLikely(
   lead: Float64Array,
@@ -90,7 +90,8 @@ function mostLikely(
   const matrix = new Float64Array(n * n);
   for (let i = 0; i < n; i += 1)
     for (let j = 0; j <= i; j += 1) matrix[i * n + j] = at(Math.abs(places[i] - places[j]));
-  for (let i = 0; i < n; i += 1) matrix[i * n + i] *= 1 + UNFORESEEN;
+  const power = at(0) > 0 ? at(0) : 1;
+  for (let i = 0; i < n; i += 1) matrix[i * n + i] = power * (1 + UNFORESEEN);
   const [nearBefore, nearAfter] = [meanAt(lead, before), meanAt(lead, after)];
   const values = Float64Array.from(
     places,
@@ -127,15 +128,16 @@ function mostLikely(
  * A slow lead whose missing stretches (`kept` 0: gaps and what is spoiled) are bridged by the most likely course given the
  * minute on either side and the lead's own spectrum, and whose level goes on across them without a step, so that a filter
  * has nothing to ring on. `margin` samples are added at both ends, foretold in the same way. The level after a stretch is
- * that before it; only what lies below the band is changed by that. O(stretches), each about 240^3 / 6 multiplications.
+ * that before it; only what lies below the band is changed by that. O(stretches), each about 240^3 / 6 multiplications; takes
+ * a rest after each.
  */
-export function bridged(
+export function* bridged(
   lead: Float64Array,
   kept: Uint8Array,
   rateHz: Hertz,
   spectra: LeadSpectra,
   margin: number,
-): Float64Array {
+): Generator<void, Float64Array> {
   const length = lead.length + 2 * margin;
   const whole = new Float64Array(length);
   whole.set(lead, margin);
@@ -151,10 +153,11 @@ export function bridged(
   );
   const isMissing = new Uint8Array(length);
   for (const { from, to } of stretches) isMissing.fill(1, from, to);
-  stretches.forEach((stretch) => {
+  for (const stretch of stretches) {
+    yield;
     const before = sideOf(isMissing, stretch.from - 1, -1, every, most);
     const after = sideOf(isMissing, stretch.to, 1, every, most);
-    if (before.length + after.length === 0) return;
+    if (before.length + after.length === 0) continue;
     const { filled, levelBefore, levelAfter } = mostLikely(
       whole,
       { before, after },
@@ -165,6 +168,6 @@ export function bridged(
     for (let t = 0; t < filled.length; t += 1) whole[stretch.from + t] = level + filled[t];
     const shift = before.length > 0 && after.length > 0 ? levelBefore - levelAfter : 0;
     for (let i = stretch.to; i < length; i += 1) whole[i] += shift;
-  });
+  }
   return whole;
 }

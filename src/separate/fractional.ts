@@ -118,6 +118,7 @@ function slowOutput(
     unclean: uncleanStretches(facts.gaps, facts.sampleCount, rateHz, reach),
     leadSAt: derivativeLeadSAt,
     derivativeLeadSAt,
+    wide: null,
     notes: describe(settings, kernels),
   };
   return draw(undrawn, settings, SLOW_SCALE_HZ * 60);
@@ -195,5 +196,8 @@ function start(job: RouteJob): RouteRun {
  */
 export const fractionalRoute: Route = {
   start,
-  redraw: (slow, settings, { dfCpm }) => draw(slow, settings, dfCpm),
+  *redraw(slow, settings, { dfCpm }) {
+    yield;
+    return draw(slow, settings, dfCpm);
+  },
 };

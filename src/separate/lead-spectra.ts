@@ -6,6 +6,8 @@ import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
 
 const WINDOW_S = 240;
 const STEP_S = 60;
+/** Windows between two rests. */
+const WINDOWS_A_STEP = 15;
 /** Largest part of a window, weighted by the taper, that may be missing. */
 const MOST_MISSING = 0.25;
 
@@ -25,14 +27,14 @@ export type Missing = 'zero' | 'bridged';
 /**
  * Periodograms of 240 s Hann windows a minute apart (the whole lead where it is shorter), zero-padded to the next power of
  * two of at least four times; the line is taken off. Missing samples (`kept` 0) are 0 after that and the power of a line is
- * made whole, unless they have been bridged. Null where no window is three quarters there.
+ * made whole, unless they have been bridged. Null where no window is three quarters there. Takes a rest now and then.
  */
-export function leadSpectra(
+export function* leadSpectra(
   lead: Float64Array,
   kept: Uint8Array,
   rateHz: Hertz,
   missing: Missing,
-): LeadSpectra | null {
+): Generator<void, LeadSpectra | null> {
   const length = Math.min(lead.length, Math.round(WINDOW_S * rateHz));
   if (length < 2) return null;
   const step = Math.max(1, Math.round(STEP_S * rateHz));
@@ -41,6 +43,7 @@ export function leadSpectra(
   const size = nextPowerOfTwo(4 * Math.round(WINDOW_S * rateHz));
   const windows: Float64Array[] = [];
   for (let from = 0; from + length <= lead.length; from += step) {
+    if ((from / step) % WINDOWS_A_STEP === WINDOWS_A_STEP - 1) yield;
     const mask = kept.subarray(from, from + length);
     const present = taper.reduce((sum, weight, i) => sum + weight * mask[i], 0);
     if (present < (1 - MOST_MISSING) * whole) continue;

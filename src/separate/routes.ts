@@ -5,6 +5,7 @@ import type { Route } from './route';
 /** Every route by its name; a new one is a file and a line here. What few recordings take is fetched when one does. */
 const ROUTES: Readonly<Record<RouteName, () => Promise<Route>>> = {
   band: async () => bandRoute,
+  'beat-average': async () => (await import('./beat-average')).beatAverageRoute,
   fractional: async () => (await import('./fractional')).fractionalRoute,
 };
 

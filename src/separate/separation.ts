@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import type { HeartOutput } from '../recording/separated';
 import type { Settings } from '../recording/settings';
 import type { Hertz } from '../units/rate';
@@ -79,13 +80,21 @@ export function createSeparation(options: SeparationOptions): Separation {
  * The slow wave drawn again for other settings of the same route, other spoiled stretches or another reference for
  * breathing, from what is in memory. Throws where the route is another: then the lead has to be read again.
  */
-export function redrawSlowWave(
+export const redrawSlowWave = (
   slow: SeparatedSlow,
   settings: Settings,
   drawing: Drawing,
   routes: Routes,
-): SeparatedSlow {
+): SeparatedSlow => atOnce(redrawInSteps(slow, settings, drawing, routes));
+
+/** redrawSlowWave with a rest now and then. */
+export function* redrawInSteps(
+  slow: SeparatedSlow,
+  settings: Settings,
+  drawing: Drawing,
+  routes: Routes,
+): Generator<void, SeparatedSlow> {
   if (slow.route !== settings.slowRoute)
     throw new Error(`a slow wave of route ${slow.route} cannot be drawn by ${settings.slowRoute}`);
-  return routeOf(routes, slow.route).redraw(slow, settings, drawing);
+  return yield* routeOf(routes, slow.route).redraw(slow, settings, drawing);
 }

@@ -38,7 +38,8 @@ export function createSlowSampler(rateHz: Hertz): InstantSampler {
   });
 }
 
-function createCollector(): InstantSampler {
+/** Takes samples as they are. */
+export function createCollector(): InstantSampler {
   const parts: Float64Array[] = [];
   let length = 0;
   return {

@@ -1,8 +1,8 @@
 import { type BeatList, beatAt } from '../recording/beat';
+import { matchBeats } from '../recording/match-beats';
 import type { Hertz } from '../units/rate';
 import { ticksToSeconds } from '../units/ticks';
 import { formatClock, type Seconds } from '../units/time';
-import { matchBeats } from './match-beats';
 import type { PlacedDifference } from './placed-difference';
 
 /** The same beat counts as moved where its times lie at least so far apart. */

@@ -8,7 +8,7 @@ import type { Settings } from '../recording/settings';
 import type { Interval, Span } from '../recording/span';
 
 /** Version of the session document this program writes; older ones are migrated by named steps. */
-export const SESSION_VERSION = 3;
+export const SESSION_VERSION = 4;
 
 /** The study a session belongs to; names are not kept. */
 export interface StudyIdentity {

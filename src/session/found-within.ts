@@ -1,11 +1,11 @@
 import { median } from '../numeric/statistics';
 import { type Beat, type BeatList, beatAt } from '../recording/beat';
+import { matchBeats } from '../recording/match-beats';
 import { type Interval, isWithin } from '../recording/span';
 import type { Hertz } from '../units/rate';
 import { ticksToSeconds } from '../units/ticks';
 import { formatClock } from '../units/time';
 import type { Edit } from './document';
-import { matchBeats } from './match-beats';
 
 /** What looking for beats again in a stretch would change. */
 export interface FoundChange {

@@ -4,7 +4,13 @@ import type { Findings } from '../recording/findings';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
-import { BREATHING_OUT, type Settings, SLOW_GAINS } from '../recording/settings';
+import {
+  BREATHING_OUT,
+  HEART_ROUTES,
+  type Settings,
+  SLOW_GAINS,
+  SLOW_ROUTES,
+} from '../recording/settings';
 import { type Interval, SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
 import type { Bookmark, Signature, StudyIdentity, Symptom, TimedNote } from './document';
 
@@ -93,11 +99,9 @@ export const span: SchemaOf<Span> = v.strictObject({
   note: text,
 });
 
-const route = v.picklist(['band', 'fractional']);
-
 export const settings: SchemaOf<Settings> = v.strictObject({
-  slowRoute: route,
-  heartRoute: route,
+  slowRoute: v.picklist(SLOW_ROUTES),
+  heartRoute: v.picklist(HEART_ROUTES),
   slowBandCpm: pair,
   slowGain: v.picklist(SLOW_GAINS),
   breathingOut: v.picklist(BREATHING_OUT),
@@ -110,6 +114,7 @@ export const settings: SchemaOf<Settings> = v.strictObject({
     polynomialOrder: number,
     undoLead: v.boolean(),
   }),
+  beatAverage: v.strictObject({ beforeMs: number, afterMs: number, beats: number }),
   rhythmBands: v.strictObject({
     lowCpm: number,
     normoLowCpm: number,

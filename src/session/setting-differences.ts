@@ -26,6 +26,9 @@ const ROWS: readonly Row[] = [
   ['heart window', (s) => `${s.fractional.heartWindowMs} ms`],
   ['polynomial order', (s) => String(s.fractional.polynomialOrder)],
   ['lead in time of the drawn wave', (s) => (s.fractional.undoLead ? 'undone' : 'left')],
+  ['average heartbeat, before R', (s) => `${s.beatAverage.beforeMs} ms`],
+  ['average heartbeat, after R', (s) => `${s.beatAverage.afterMs} ms`],
+  ['beats of an average', (s) => String(s.beatAverage.beats)],
   [
     'limits of the rhythm',
     ({ rhythmBands: { lowCpm, normoLowCpm, normoHighCpm, highCpm } }) =>

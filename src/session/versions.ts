@@ -7,14 +7,24 @@ export interface Migration {
   readonly up: (document: Readonly<Record<string, unknown>>) => Readonly<Record<string, unknown>>;
 }
 
-/** A value with every settings object in it, wherever it stands, given what version 1 did without saying so. */
-function withDrawing(value: unknown): unknown {
-  if (Array.isArray(value)) return value.map(withDrawing);
+/** A value with every settings object in it, wherever it stands, given settings it did without saying so. */
+function withSettings(value: unknown, said: Readonly<Record<string, unknown>>): unknown {
+  if (Array.isArray(value)) return value.map((one) => withSettings(one, said));
   if (typeof value !== 'object' || value === null) return value;
-  const entries = Object.entries(value).map(([key, one]) => [key, withDrawing(one)] as const);
-  const said = 'slowRoute' in value ? { slowGain: 'even', breathingOut: 'never' } : {};
-  return { ...said, ...Object.fromEntries(entries) };
+  const entries = Object.entries(value).map(([key, one]) => [key, withSettings(one, said)]);
+  return { ...('slowRoute' in value ? said : {}), ...Object.fromEntries(entries) };
 }
+
+const inEveryPart = (
+  document: Readonly<Record<string, unknown>>,
+  said: Readonly<Record<string, unknown>>,
+) =>
+  Object.fromEntries(Object.entries(document).map(([key, one]) => [key, withSettings(one, said)]));
+
+/** Version 1 drew the band as it is. */
+const DRAWING_OF_1 = { slowGain: 'even', breathingOut: 'never' };
+/** What no session before version 4 used. */
+const BEAT_AVERAGE_OF_3 = { beatAverage: { beforeMs: 300, afterMs: 500, beats: 60 } };
 
 /** What version 2 kept room for beside the state. */
 const NO_LISTS = { symptoms: [], doubts: [], bookmarks: [] };
@@ -24,13 +34,17 @@ export const MIGRATIONS: readonly Migration[] = [
   {
     from: 1,
     name: 'settings say how the slow wave is drawn',
-    up: (document) =>
-      Object.fromEntries(Object.entries(document).map(([key, one]) => [key, withDrawing(one)])),
+    up: (document) => inEveryPart(document, DRAWING_OF_1),
   },
   {
     from: 2,
     name: 'symptoms, settled doubts and bookmarks are part of the state',
     up: (document) => ({ ...document, start: { ...NO_LISTS, ...Object(document.start) } }),
+  },
+  {
+    from: 3,
+    name: 'settings say how average heartbeats are made',
+    up: (document) => inEveryPart(document, BEAT_AVERAGE_OF_3),
   },
 ];
 

@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import type { BreathingSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import type { Epoch, SlowWaveRhythm } from '../recording/rhythm';
@@ -41,13 +42,22 @@ export interface StomachAnalysis {
   readonly breathing: BreathingSeries | null;
 }
 
+/** Samples missing for so long are a stop of the recorder, which no epoch reaches across; fewer are left out like spoiled ones. */
+const STOP_S = 1;
+
 interface Lead {
   readonly memory: StomachMemory;
   readonly options: SlowWaveRhythmOptions;
   readonly windows: SharedWindows;
   readonly halfWindows: SharedWindows;
   readonly crestsS: Float64Array;
+  /** Stretches without samples, and those of them that are stops of the recorder. */
+  readonly missing: readonly Interval[];
+  readonly stops: readonly Interval[];
 }
+
+const reachesAcross = (stops: readonly Interval[], fromS: Seconds, toS: Seconds): boolean =>
+  stops.some((stop) => stop.fromS < toS && stop.toS > fromS);
 
 /** Windows beside an epoch that have a say in it, and its own. */
 const ROW_PLACES = [-4, -3, -2, -1, 0, 1, 2, 3, 4];
@@ -92,7 +102,8 @@ function rowAt(lead: Lead, phase: Interval, first: number): WindowRow | null {
     const inside = from >= phase.fromS * rateHz - 1 && from + length <= phase.toS * rateHz + 1;
     if (!inside || from < 0 || from + length > options.slow.forSpectra.length) return [];
     const { spoiledFraction } = windows.at(from);
-    return spoiledFraction > options.settings.epoch.maxSpoiled
+    const stopped = reachesAcross(lead.stops, from / rateHz, (from + length) / rateHz);
+    return stopped || spoiledFraction > options.settings.epoch.maxSpoiled
       ? []
       : [{ place, over: windows.overAt(from) }];
   });
@@ -123,7 +134,8 @@ function analyseEpoch(lead: Lead, phase: Phase, fromS: Seconds) {
     toS: fromS + lengthS,
     spoiledFraction,
   };
-  if (spoiledFraction > maxSpoiled || spoiledFraction === 1) {
+  const stopped = reachesAcross(lead.stops, fromS, fromS + lengthS);
+  if (stopped || spoiledFraction > maxSpoiled || spoiledFraction === 1) {
     const nothing = { dfCpm: null, dpDb: null, peakShare: null, rhythm: null, flags: [] };
     const epoch: Epoch = { ...place, kept: false, ...nothing };
     return { epoch, spectrum: null };
@@ -143,47 +155,83 @@ function windowsOf(
   return sharedWindows({ signal: forSpectra, kept, rateHz, lengthS, powerResponse }, before);
 }
 
-/**
- * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
- * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
- * spectra; a phase that reaches past the lead ends with it.
- */
-export function slowWaveRhythm(options: SlowWaveRhythmOptions): StomachAnalysis {
-  const { slow, spoiled, phases, settings } = options;
+/** A lead ready to be judged: its windows, those kept from before where nothing of them has changed, and its crests. */
+function* leadOf(options: SlowWaveRhythmOptions): Generator<void, Lead> {
+  const { slow, spoiled, settings } = options;
   const { lengthS } = settings.epoch;
-  const endS = slow.forSpectra.length / slow.rateHz;
   const kept = keptSamples(slow.forSpectra, slow.rateHz, spoiled);
   const missing = missingStretches(slow.forSpectra, slow.rateHz);
   const memory = options.memory ?? createStomachMemory();
   memory.windows = windowsOf(options, kept, lengthS, memory.windows);
   memory.halfWindows = windowsOf(options, kept, lengthS / 2, memory.halfWindows);
-  const lead: Lead = {
+  yield;
+  return {
     memory,
     options,
     windows: memory.windows,
     halfWindows: memory.halfWindows,
+    stops: missing.filter(({ fromS, toS }) => toS - fromS >= STOP_S),
+    missing,
     crestsS: crestTimes(slow.slowWave, {
       rateHz: slow.rateHz,
       highCpm: settings.rhythmBands.highCpm,
       unclean: joinIntervals([...slow.unclean, ...spoiled]),
     }),
   };
-  const analysed = phases.flatMap((phase) =>
-    epochStarts(
-      { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) },
-      settings.epoch,
-    ).map((fromS) => analyseEpoch(lead, phase, fromS)),
-  );
+}
+
+/** Epochs of the phases with their spectra, with a rest after each. */
+function* epochsOf(lead: Lead): Generator<void, JudgedEpochs> {
+  const { slow, phases, settings } = lead.options;
+  const endS = slow.forSpectra.length / slow.rateHz;
+  const analysed: ReturnType<typeof analyseEpoch>[] = [];
+  for (const phase of phases) {
+    const within = { fromS: Math.max(0, phase.fromS), toS: Math.min(phase.toS, endS) };
+    for (const fromS of epochStarts(within, settings.epoch)) {
+      analysed.push(analyseEpoch(lead, phase, fromS));
+      yield;
+    }
+  }
   return {
-    rhythm: {
-      lead: slow.lead,
-      epochs: analysed.map(({ epoch }) => epoch),
-      spectrogram: runningSpectrogram(lead.windows, slow.forSpectra.length, slow.rateHz, settings),
-      crestsS: lead.crestsS,
-    },
+    epochs: analysed.map(({ epoch }) => epoch),
     epochSpectra: analysed.map(({ spectrum }) => spectrum),
     binCpm: lead.windows.binCpm,
-    missing,
+  };
+}
+
+/** Epochs with the spectra they were judged by. */
+export type JudgedEpochs = Pick<StomachAnalysis, 'epochSpectra' | 'binCpm'> & {
+  readonly epochs: readonly Epoch[];
+};
+
+/** The epochs alone, as slowWaveRhythm judges them, with a rest after each. */
+export function* judgedEpochs(options: SlowWaveRhythmOptions): Generator<void, JudgedEpochs> {
+  return yield* epochsOf(yield* leadOf(options));
+}
+
+/**
+ * Rhythm of the slow wave of one lead: epochs laid in each phase and judged, the running spectrum
+ * of the whole lead, and the crests of the drawn wave. Spoiled and missing samples are left out of
+ * spectra, and an epoch in which the recorder stopped is not kept; a phase that reaches past the lead ends with it.
+ */
+export const slowWaveRhythm = (options: SlowWaveRhythmOptions): StomachAnalysis =>
+  atOnce(slowWaveRhythmInSteps(options));
+
+/** slowWaveRhythm with a rest after each epoch. */
+export function* slowWaveRhythmInSteps(
+  options: SlowWaveRhythmOptions,
+): Generator<void, StomachAnalysis> {
+  const { slow, settings } = options;
+  const lead = yield* leadOf(options);
+  yield;
+  const { epochs, epochSpectra, binCpm } = yield* epochsOf(lead);
+  const { length } = slow.forSpectra;
+  const spectrogram = runningSpectrogram(lead.windows, length, slow.rateHz, settings);
+  return {
+    rhythm: { lead: slow.lead, epochs, spectrogram: yield* spectrogram, crestsS: lead.crestsS },
+    epochSpectra,
+    binCpm,
+    missing: lead.missing,
     breathing: options.breathing,
   };
 }

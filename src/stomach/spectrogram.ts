@@ -5,17 +5,20 @@ import { densityDb } from './dominant-peak';
 import { epochStarts } from './epoch-layout';
 import type { SharedWindows } from './shared-windows';
 
+/** Columns made between two rests. */
+const COLUMNS_A_STEP = 10;
+
 /**
  * The running spectrum of a whole lead for the eye: windows as long as an epoch, one every step from
  * its first sample on whatever the phases, the bins that cover the rhythm bands, dB re 1 uV2/Hz.
- * A column is NaN where the window would not be kept as an epoch.
+ * A column is NaN where the window would not be kept as an epoch. Takes a rest now and then.
  */
-export function runningSpectrogram(
+export function* runningSpectrogram(
   windows: SharedWindows,
   sampleCount: number,
   rateHz: Hertz,
   settings: Settings,
-): Spectrogram {
+): Generator<void, Spectrogram> {
   const { lengthS, stepS, maxSpoiled } = settings.epoch;
   const { lowCpm, highCpm } = settings.rhythmBands;
   const { binCpm, binCount: available } = windows;
@@ -24,13 +27,14 @@ export function runningSpectrogram(
   const binCount = Math.max(0, lastBin - firstBin + 1);
   const starts = epochStarts({ fromS: 0, toS: sampleCount / rateHz }, { lengthS, stepS });
   const levelDb = new Float32Array(starts.length * binCount).fill(Number.NaN);
-  starts.forEach((fromS, column) => {
-    const window = windows.at(Math.round(fromS * rateHz));
-    if (window.spoiledFraction > maxSpoiled) return;
-    const density = windows.densityAt(Math.round(fromS * rateHz));
+  for (let column = 0; column < starts.length; column += 1) {
+    if (column % COLUMNS_A_STEP === COLUMNS_A_STEP - 1) yield;
+    const first = Math.round(starts[column] * rateHz);
+    if (windows.at(first).spoiledFraction > maxSpoiled) continue;
+    const density = windows.densityAt(first);
     for (let k = 0; k < binCount; k++)
       levelDb[column * binCount + k] = densityDb(density[firstBin + k]);
-  });
+  }
   return {
     centresS: Float64Array.from(starts, (fromS) => fromS + lengthS / 2),
     firstCpm: firstBin * binCpm,

@@ -92,11 +92,17 @@ function settledFrom({ track, usualSwing, columnS }: SlowPart, stepAt: number): 
   return Math.min(track.length, from + Math.round(settlingS / columnS));
 }
 
-function slowPart(columns: BaseColumns, mean: Float64Array, stepUv: number): SlowPart {
+function* slowPart(
+  columns: BaseColumns,
+  mean: Float64Array,
+  stepUv: number,
+): Generator<void, SlowPart> {
   const { columnS } = columns;
   const levelHalf = Math.round(LEVEL_HALF_S / columnS);
   const track = slowTrack(mean, columnS);
+  yield;
   const swing = slidingRange(track, track, swingWidth(columnS));
+  yield;
   const change = changeAcross(track, Math.max(1, Math.round(STEP_HALF_S / columnS)));
   const changes = change.map((value) => Math.abs(value));
   return {
@@ -155,11 +161,12 @@ function trimmed({ from, to }: Excursion, x: Float64Array): Excursion {
  * Pops, coughs and talk: what nothing about it foretells, of a size that a filter would make a wave of, from the first to the
  * last such half second.
  */
-function surprises(slow: SlowPart, mean: Float64Array): readonly SlowMovement[] {
+function* surprises(slow: SlowPart, mean: Float64Array): Generator<void, readonly SlowMovement[]> {
   const { columnS, usualSwing } = slow;
-  const found = unforeseen(mean, columnS);
+  const found = yield* unforeseen(mean, columnS);
   if (!found) return [];
   const { sizeUv, every } = found;
+  yield;
   const level = ownLevel(sizeUv, Math.round(LEVEL_HALF_S / columnS / every), 0);
   const limit = (times: number, share: number) =>
     level.map((value, i) =>
@@ -179,17 +186,19 @@ function surprises(slow: SlowPart, mean: Float64Array): readonly SlowMovement[] 
 /**
  * Stretches where the slow part of the lead swings far more within 8 s than is usual about that time: movements, and steps
  * (an electrode's jump) until they have settled. A window that only reaches the movement with its edge is not counted.
- * `mean` is each column's, NaN where it does not count. Those found may overlap.
+ * `mean` is each column's, NaN where it does not count. Those found may overlap. Takes a rest now and then.
  */
-export function slowMovements(
+export function* slowMovements(
   columns: BaseColumns,
   mean: Float64Array,
   stepUv: number,
-): readonly SlowMovement[] {
-  const slow = slowPart(columns, mean, stepUv);
+): Generator<void, readonly SlowMovement[]> {
+  const slow = yield* slowPart(columns, mean, stepUv);
+  yield;
   const apartFrom = (others: readonly SlowMovement[]) => (one: SlowMovement) =>
     !others.some((other) => other.from < one.to && one.from < other.to);
   const large = swings(slow, columns.count);
   const steps = [...large, ...smallSteps(slow).filter(apartFrom(large))];
-  return [...steps, ...surprises(slow, mean).filter(apartFrom(steps))];
+  yield;
+  return [...steps, ...(yield* surprises(slow, mean)).filter(apartFrom(steps))];
 }

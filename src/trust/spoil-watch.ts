@@ -1,3 +1,4 @@
+import { atOnce } from '../numeric/in-steps';
 import {
   coveredSeconds,
   type Interval,
@@ -33,6 +34,8 @@ export interface SpoilWatch {
   push(block: Float64Array): void;
   /** The proposals, ascending, after the last sample. */
   finish(): readonly ProposedSpan[];
+  /** The same with a rest now and then. */
+  finishInSteps(): Generator<void, readonly ProposedSpan[]>;
 }
 
 /** A heartbeat cannot be judged below this rate, nor spoiled. */
@@ -97,31 +100,32 @@ function emptyStretches(columns: BaseColumns, options: SpoilWatchOptions): reado
 }
 
 /** Stretches that spoil the heart: muscle bursts, and jumps that a detector would take for beats. */
-function heartBursts(
+function* heartBursts(
   columns: BaseColumns,
   taken: readonly Interval[],
   options: SpoilWatchOptions,
-): readonly Interval[] {
+): Generator<void, readonly Interval[]> {
   if (options.rateHz < HEART_NEEDS_HZ) return [];
   const { columnS } = columns;
   const roughness = outside(columns.roughness, columnS, taken);
   const likeQrs = outside(columns.likeQrs, columnS, taken);
-  const rough = roughStretches(columns, roughness, likeQrs, options.stepUv);
+  const rough = yield* roughStretches(columns, roughness, likeQrs, options.stepUv);
   const low = outside(columns.low, columnS, taken);
   const high = outside(columns.high, columnS, taken);
   const mean = outside(columns.mean, columnS, taken);
+  yield;
   const jumps = jumpStretches(columns, low, high, mean, options.stepUv);
   return paddedAndJoined(columnIntervals([...rough, ...jumps], columnS), HEART_PAD_S, HEART_NEAR_S);
 }
 
 /** Steps and movements of the slow part of the lead. */
-function stomachMovements(
+function* stomachMovements(
   columns: BaseColumns,
   taken: readonly Interval[],
   stepUv: number,
-): { readonly steps: readonly Interval[]; readonly swings: readonly Interval[] } {
+): Generator<void, { readonly steps: readonly Interval[]; readonly swings: readonly Interval[] }> {
   const { columnS } = columns;
-  const found = slowMovements(columns, outside(columns.mean, columnS, taken), stepUv);
+  const found = yield* slowMovements(columns, outside(columns.mean, columnS, taken), stepUv);
   const isStep = (one: { stepAt: number | null }) => one.stepAt !== null;
   const pick = (list: typeof found) => paddedAndJoined(columnIntervals(list, columnS), 1, 6);
   const steps = pick(found.filter(isStep));
@@ -161,13 +165,14 @@ function unite(
   return { both: [...joinIntervals(both)], heart: [...left], stomach: [...joinIntervals(alone)] };
 }
 
-function movements(
+function* movements(
   columns: BaseColumns,
   taken: readonly Interval[],
   options: SpoilWatchOptions,
-): readonly Found[] {
-  const bursts = heartBursts(columns, taken, options);
-  const { steps, swings } = stomachMovements(columns, taken, options.stepUv);
+): Generator<void, readonly Found[]> {
+  const bursts = yield* heartBursts(columns, taken, options);
+  yield;
+  const { steps, swings } = yield* stomachMovements(columns, taken, options.stepUv);
   const step = unite(bursts, steps);
   const burst = unite(step.heart, swings);
   return [
@@ -195,30 +200,33 @@ const NOTES: Readonly<Partial<Record<SpanCause, string>>> = {
 export function createSpoilWatch(options: SpoilWatchOptions): SpoilWatch {
   const base = createBaseColumns(options);
   const startS = options.startS ?? 0;
+  const finishInSteps = function* (): Generator<void, readonly ProposedSpan[]> {
+    const columns = base.finish();
+    const endS = columns.sampleCount / options.rateHz;
+    const empty = emptyStretches(columns, options);
+    const taken = empty.flatMap((found) => found.intervals);
+    yield;
+    const all = [...empty, ...(yield* movements(columns, taken, options))];
+    return all
+      .flatMap(({ target, cause, intervals }) =>
+        intervals.map(
+          ({ fromS, toS }): ProposedSpan => ({
+            fromS: startS + Math.max(0, fromS),
+            toS: startS + Math.min(endS, toS),
+            lead: options.lead,
+            target,
+            cause,
+            origin: 'proposed',
+            note: NOTES[cause] ?? '',
+          }),
+        ),
+      )
+      .filter((span) => span.toS > span.fromS)
+      .sort((a, b) => a.fromS - b.fromS || a.toS - b.toS);
+  };
   return {
     push: (block) => base.push(block),
-    finish() {
-      const columns = base.finish();
-      const endS = columns.sampleCount / options.rateHz;
-      const empty = emptyStretches(columns, options);
-      const taken = empty.flatMap((found) => found.intervals);
-      const all = [...empty, ...movements(columns, taken, options)];
-      return all
-        .flatMap(({ target, cause, intervals }) =>
-          intervals.map(
-            ({ fromS, toS }): ProposedSpan => ({
-              fromS: startS + Math.max(0, fromS),
-              toS: startS + Math.min(endS, toS),
-              lead: options.lead,
-              target,
-              cause,
-              origin: 'proposed',
-              note: NOTES[cause] ?? '',
-            }),
-          ),
-        )
-        .filter((span) => span.toS > span.fromS)
-        .sort((a, b) => a.fromS - b.fromS || a.toS - b.toS);
-    },
+    finish: () => atOnce(finishInSteps()),
+    finishInSteps,
   };
 }

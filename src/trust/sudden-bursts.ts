@@ -80,17 +80,21 @@ function medianWithin(x: Float64Array, { from, to }: Excursion): number {
 /**
  * Muscle bursts and hum: stretches where the roughness between the beats is far over the recording's own level, as long as
  * beats cannot be read there for certain. `roughness` and `likeQrs` are the columns' own, NaN where they do not count.
+ * Takes a rest now and then.
  */
-export function roughStretches(
+export function* roughStretches(
   { columnS }: BaseColumns,
   roughness: Float64Array,
   likeQrs: Float64Array,
   stepUv: number,
-): readonly Excursion[] {
+): Generator<void, readonly Excursion[]> {
   const between = betweenBeats(roughness, columnS);
+  yield;
   const level = ownLevel(between, Math.round(LEVEL_HALF_S / columnS), 0.7 * stepUv);
   const leave = times(level, ROUGH.leave);
+  yield;
   const disturbance = betweenBeats(likeQrs, columnS);
+  yield;
   const beats = times(beatLevel(likeQrs, columnS, 0), HARMLESS_SHARE);
   return excursionsAbove(between, times(level, ROUGH.enter), leave)
     .filter((found) => !(medianWithin(disturbance, found) < medianWithin(beats, found)))

@@ -45,9 +45,12 @@ function errors(x: Float64Array, coefficients: Float64Array, side: 1 | -1): Floa
 /**
  * What an autoregressive model of the lead's own changes (Burg 1975) cannot foretell from either side: next to nothing of
  * slow waves, breathing and drift, all of a pop, a cough or an edge. `mean` is each column's; beside NaN nothing is told.
- * Null where columns are too few or too far apart.
+ * Null where columns are too few or too far apart. Takes a rest now and then.
  */
-export function unforeseen(mean: Float64Array, columnS: Seconds): Unforeseen | null {
+export function* unforeseen(
+  mean: Float64Array,
+  columnS: Seconds,
+): Generator<void, Unforeseen | null> {
   const every = Math.round(STEP_S / columnS);
   const rateHz = 1 / columnS;
   if (every < 2 || mean.length < FEWEST * every) return null;
@@ -58,6 +61,7 @@ export function unforeseen(mean: Float64Array, columnS: Seconds): Unforeseen | n
     attenuationDb: ATTENUATION_DB,
   });
   const smooth = convolveSame(held(mean), taps, 'reflect-odd');
+  yield;
   const changes = new Float64Array(Math.floor(smooth.length / every));
   for (let i = 1; i < changes.length; i += 1)
     changes[i] = smooth[i * every] - smooth[(i - 1) * every];
@@ -66,8 +70,10 @@ export function unforeseen(mean: Float64Array, columnS: Seconds): Unforeseen | n
     changes.map((change) => Math.max(-most, Math.min(most, change))),
     ORDER,
   );
+  yield;
   const before = errors(changes, coefficients, 1);
   const after = errors(changes, coefficients, -1);
+  yield;
   const reach = Math.ceil(taps.length / 2);
   const sizeUv = changes.map((_, i) => {
     const at = i * every;

@@ -59,6 +59,11 @@ describe('fields of a route', () => {
     expect(settingActs('slowWindow', fractional)).toBe(true);
     expect(settingActs('heartWindow', fractional)).toBe(false);
     expect(settingActs('falseAlarm', fractional)).toBe(true);
+    const average = { slowRoute: 'beat-average', heartRoute: 'band' } as const;
+    expect(settingActs('averageBeats', average)).toBe(true);
+    expect(settingActs('slowLow', average)).toBe(true);
+    expect(settingActs('averageBeats', band)).toBe(false);
+    expect(settingActs('order', average)).toBe(false);
   });
 
   it('cannot be wrong where they do not act: what was in force stays in them', () => {
@@ -82,6 +87,9 @@ describe('fields of a route', () => {
     expect(slowRouteWords({ slowRoute: 'band', slowGain: 'even' })).toMatch(/within this band/);
     expect(slowRouteWords({ slowRoute: 'fractional', slowGain: 'even' })).toMatch(
       /derivative.*no band limits/,
+    );
+    expect(slowRouteWords({ slowRoute: 'beat-average', slowGain: 'even' })).toMatch(
+      /heartbeat is taken out.*within this band.*mend the beats/,
     );
     expect(heartRouteWords({ heartRoute: 'fractional' })).not.toMatch(/within this band/);
   });

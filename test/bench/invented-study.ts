@@ -1,6 +1,7 @@
 import { writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { type EdfPlusContents, writeEdfPlus } from '../../src/export/edf-plus';
+import type { TrueBeat } from '../../src/simulate/beat-times';
 import { DEMO_SPEC } from '../../src/simulate/demo';
 import { simulateStudy } from '../../src/simulate/simulate-study';
 import { type ArtefactSpec, PLAIN_LEAD, type SimulationSpec } from '../../src/simulate/spec';
@@ -17,6 +18,7 @@ export interface InventedStudy {
   /** uV, one array a lead. */
   readonly signals: readonly Float64Array[];
   readonly labels: readonly string[];
+  readonly beats: readonly TrueBeat[];
 }
 
 const LEADS: SimulationSpec['leads'] = [
@@ -43,7 +45,7 @@ function artefactsOf(minutes: number): readonly ArtefactSpec[] {
 
 /** Four abdominal leads at 1 kHz with beats, ectopic beats, breathing, drift, hum, noise and spoiled stretches. */
 export function inventedStudy(minutes: number): InventedStudy {
-  const { signals, labels, rateHz } = simulateStudy({
+  const { signals, labels, rateHz, truth } = simulateStudy({
     ...DEMO_SPEC,
     seed: 7,
     durationS: minutes * MINUTE_S,
@@ -52,7 +54,7 @@ export function inventedStudy(minutes: number): InventedStudy {
     artefacts: artefactsOf(minutes),
     digitiser: { stepUv: STEP_UV, railUv: RAIL_UV },
   });
-  return { minutes, rateHz, signals, labels };
+  return { minutes, rateHz, signals, labels, beats: truth.beats };
 }
 
 function digital(signal: Float64Array): Int16Array {

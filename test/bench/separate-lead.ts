@@ -1,5 +1,5 @@
 import type { HeartOutput } from '../../src/recording/separated';
-import type { RouteName, Settings } from '../../src/recording/settings';
+import type { HeartRouteName, Settings } from '../../src/recording/settings';
 import type { SeparatedSlow } from '../../src/separate/route';
 import { createSeparation } from '../../src/separate/separation';
 import { ALL_ROUTES } from '../separate/all-routes';
@@ -11,7 +11,7 @@ const PIECE = 16384;
 /** One lead at 1 kHz parted into both outputs by the code the worker runs. */
 export function separate(
   samples: Float64Array,
-  route: RouteName,
+  route: HeartRouteName,
   settings: Settings,
 ): { readonly slow: SeparatedSlow; readonly heart: HeartOutput } {
   const separation = createSeparation({

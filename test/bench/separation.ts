@@ -1,8 +1,13 @@
 import { readFile, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { overlapSave } from '../../src/numeric/overlap-save';
+import { beatsOf } from '../../src/recording/beat';
 import { DEFAULT_SETTINGS, type Settings } from '../../src/recording/settings';
 import { prepareFractional } from '../../src/separate/fractional';
+import { heartPart } from '../../src/separate/heart-part';
+import { createWideSampler } from '../../src/separate/wide-lead';
+import type { TrueBeat } from '../../src/simulate/beat-times';
+import { secondsToTicks } from '../../src/units/ticks';
 import { inventedStudy, RATE_HZ } from './invented-study';
 import {
   type Bench,
@@ -71,6 +76,36 @@ async function rounds(samples: Float64Array, scipy: ScipyScript | null): Promise
       ? { plain: middle(runs.plain), fft: middle(runs.fft), band: middle(runs.scipyBand) }
       : null,
   };
+}
+
+/** What route `beat-average` does beyond `band`: the wide form of a lead, once, and its averages after every edit of a beat. */
+async function averaging(
+  samples: Float64Array,
+  trueBeats: readonly TrueBeat[],
+): Promise<readonly Measured[]> {
+  const sampler = createWideSampler(RATE_HZ);
+  sampler.push(samples);
+  const wide = sampler.finish({ sampleCount: samples.length, gaps: [], meanUv: 0 });
+  const beats = beatsOf(
+    trueBeats.map(({ timeS, beatClass }) => ({
+      tick: secondsToTicks(timeS, RATE_HZ),
+      beatClass,
+      origin: 'detected',
+    })),
+  );
+  const kept = new Uint8Array(Math.ceil((4 * samples.length) / RATE_HZ)).fill(1);
+  const settings = SETTINGS.beatAverage;
+  const runs: Timed[] = [];
+  for (let round = 0; round <= ROUNDS; round += 1)
+    runs.push(
+      await timed(() => {
+        const work = heartPart({ wide, beats, beatRateHz: RATE_HZ, kept, settings });
+        while (!work.next().done);
+      }),
+    );
+  return [
+    timeLine(PART, 'beat-average: averages and low-pass of one lead', medianTimed(runs.slice(1))),
+  ];
 }
 
 /** What the ends of the longest filter reach (route band, slow wave); inside both sides filter the same samples. */
@@ -154,7 +189,8 @@ function ratios({ fractional, band, scipy }: Rounds): readonly Measured[] {
 
 /** One lead of 1 kHz parted into slow wave and heartbeat by both routes, beside scipy on the same samples. */
 export const separation: Part = async ({ minutes, folder, say }: Bench) => {
-  const [samples] = inventedStudy(minutes).signals;
+  const { signals, beats } = inventedStudy(minutes);
+  const [samples] = signals;
   const file = join(folder, 'lead.f64');
   await writeFile(file, new Uint8Array(samples.buffer, samples.byteOffset, samples.byteLength));
   const version = scipyVersion(say);
@@ -167,6 +203,7 @@ export const separation: Part = async ({ minutes, folder, say }: Bench) => {
       timeLine(PART, 'fractional: kernel spectra, once', kernels),
       timeLine(PART, 'fractional: one lead, both outputs', taken.fractional),
       timeLine(PART, 'band: one lead, both outputs', taken.band),
+      ...(await averaging(samples, beats)),
       ...ratios(taken),
       ...(scipy ? await differences(samples, scipy, folder) : []),
     ];

@@ -203,19 +203,6 @@ describe('what cannot be read is refused with its place and the remedy', () => {
     });
   });
 
-  it('EDF+C whose records do not follow one another', async () => {
-    const onset = (text: string) => annotationBytes(12, text, 0x14, 0x14, 0);
-    const failure = await refused(
-      open({
-        reserved: 'EDF+C',
-        signals: [{ records }, annotationSignal([onset('+0'), onset('+1'), onset('+7.5')])],
-      }),
-    );
-    expect(failure.kind).toBe('not-supported');
-    expect(failure.message).toMatch(/record 3 starts at 7.5 s where 2 s would follow/);
-    expect(failure.place).toBe('record 3, byte 808');
-  });
-
   it('a file cut inside its header', async () => {
     const file = edfBytes(good);
     for (const size of [9, 100, 256, 511])

@@ -1,4 +1,5 @@
 import type { Evidence } from '../../src/recording/evidence/evidence';
+import { INVENTED_PLANTED } from './invented-planted';
 
 /** Evidence of an invented study; each part is filled in by whoever tests what is written of it. */
 export const INVENTED_EVIDENCE: Evidence = {
@@ -6,5 +7,5 @@ export const INVENTED_EVIDENCE: Evidence = {
   opinions: { lines: [] },
   leads: { lines: [] },
   together: { lines: [] },
-  planted: { lines: [] },
+  planted: INVENTED_PLANTED,
 };

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { detectBeats } from '../../src/heart/detect';
 import { beatsOutOfPlace, withMisfitsUnusable } from '../../src/heart/out-of-place';
+import { atOnce } from '../../src/numeric/in-steps';
 import { BEAT_CLASSES } from '../../src/recording/beat';
 import { heartbeatOf } from './record208';
 import { randomIntervals, randomOf, sinusIntervals, withEarlyBeats } from './rhythms';
@@ -13,10 +14,12 @@ function timesAfter(rrMs: ArrayLike<number>): number[] {
 }
 
 const flagsOf = (times: readonly number[], broken: readonly number[] = []) =>
-  beatsOutOfPlace(
-    times,
-    times.map(() => 1),
-    Array.from(times.slice(1), (_, i) => (broken.includes(i) ? 1 : 0)),
+  atOnce(
+    beatsOutOfPlace(
+      times,
+      times.map(() => 1),
+      Array.from(times.slice(1), (_, i) => (broken.includes(i) ? 1 : 0)),
+    ),
   );
 const flagged = (times: readonly number[], broken: readonly number[] = []) =>
   [...flagsOf(times, broken)].flatMap((flag, i) => (flag === 1 ? [i] : []));
@@ -66,7 +69,9 @@ describe('a beat that contradicts the rhythm about it', () => {
     expect(flagged(missed)).toEqual([101]);
     expect(flagged(missed, [100])).toEqual([]);
     const judged = missed.map((_, i) => (i === 101 ? 0 : 1));
-    expect([...beatsOutOfPlace(missed, judged, missed.slice(1).fill(0))].includes(1)).toBe(false);
+    expect([...atOnce(beatsOutOfPlace(missed, judged, missed.slice(1).fill(0)))].includes(1)).toBe(
+      false,
+    );
   });
 
   it('is none among too few beats to learn a rhythm from', () => {
@@ -102,11 +107,13 @@ describe('detected beats', () => {
     const list = detect(beats.filter((_, i) => i !== 60));
     const usable = [{ from: 0, to: 120 * rateHz }];
     const missedAtS = beats[60].timeS;
-    const judged = withMisfitsUnusable(
-      list,
-      { usable, rateHz },
-      64,
-      (fromS, toS) => fromS < missedAtS && toS > missedAtS,
+    const judged = atOnce(
+      withMisfitsUnusable(
+        list,
+        { usable, rateHz },
+        64,
+        (fromS, toS) => fromS < missedAtS && toS > missedAtS,
+      ),
     );
     expect(lettersOf(judged)).toBe(`${'N'.repeat(60)}Q${'N'.repeat(beats.length - 62)}`);
   });
@@ -115,7 +122,9 @@ describe('detected beats', () => {
     const list = detect(beats.filter((_, i) => i !== 60 && i !== 62));
     const usable = [{ from: 0, to: 120 * rateHz }];
     const judged = (fromS: number, toS: number) =>
-      lettersOf(withMisfitsUnusable(list, { usable, rateHz }, 64, (a, b) => a < toS && b > fromS));
+      lettersOf(
+        atOnce(withMisfitsUnusable(list, { usable, rateHz }, 64, (a, b) => a < toS && b > fromS)),
+      );
     const single = judged(beats[60].timeS - 0.1, beats[62].timeS + 0.1);
     expect(single.slice(58, 63)).toMatch(/^NN?Q+N*$/);
     const wide = judged(beats[56].timeS, beats[66].timeS);

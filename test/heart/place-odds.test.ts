@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { legibleStretches } from '../../src/heart/legible';
 import { decidedPlaces, expectedWrong, loudPlaces } from '../../src/heart/place-odds';
 import { rhythmOf } from '../../src/heart/rhythm-path';
+import { atOnce } from '../../src/numeric/in-steps';
 
 const rateHz = 100;
 const steady = () => rhythmOf(0.8, 0.06, 0.05);
@@ -12,11 +13,13 @@ const at = (timeS: number, score: number, energyUv = 100) => ({
 });
 const usual = Array.from({ length: 20 }, (_, i) => at(0.8 * i, 6));
 const decide = (beats: typeof usual, others: typeof usual = []) =>
-  decidedPlaces(
-    beats,
-    [...beats, ...others].sort((a, b) => a.sample - b.sample),
-    rateHz,
-    steady,
+  atOnce(
+    decidedPlaces(
+      beats,
+      [...beats, ...others].sort((a, b) => a.sample - b.sample),
+      rateHz,
+      steady,
+    ),
   );
 
 describe('the chance that a place was decided wrongly', () => {

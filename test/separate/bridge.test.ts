@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
+import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
 import { bridged } from '../../src/separate/bridge';
@@ -25,9 +26,9 @@ function keptWithout(length: number, stretches: readonly (readonly [number, numb
 }
 
 function bridge(lead: Float64Array, kept: Uint8Array, margin = 0) {
-  const spectra = leadSpectra(lead, kept, RATE_HZ, 'zero');
+  const spectra = atOnce(leadSpectra(lead, kept, RATE_HZ, 'zero'));
   if (!spectra) throw new Error('enough of the lead is there');
-  return bridged(lead, kept, RATE_HZ, spectra, margin);
+  return atOnce(bridged(lead, kept, RATE_HZ, spectra, margin));
 }
 
 const rootMeanSquare = (values: readonly number[]) =>
@@ -51,7 +52,7 @@ describe('a bridged stretch', () => {
     const { rate_hz, size, from, to, filled_from: first } = reference;
     const kept = new Uint8Array(reference.lead.length).fill(1).fill(0, from, to);
     const spectra = { windows: [mean], mean, binCpm: (60 * rate_hz) / size, size };
-    const whole = bridged(Float64Array.from(reference.lead), kept, rate_hz, spectra, 0);
+    const whole = atOnce(bridged(Float64Array.from(reference.lead), kept, rate_hz, spectra, 0));
     reference.filled.forEach((value, i) => {
       expect(Math.abs(whole[first + i] - value)).toBeLessThan(1e-6);
     });
@@ -114,8 +115,8 @@ describe('in the drawn wave', () => {
     const { slow } = separation.finish();
     if (!slow) throw new Error('a slow wave was asked for');
     const kept = keptWithout(slow.recorded.length, spoiledS);
-    return redrawSlowWave(slow, DEFAULT_SETTINGS, { dfCpm: 3, kept, breathing: null }, ALL_ROUTES)
-      .slowWave;
+    const drawing = { dfCpm: 3, kept, breathing: null, heartPart: null };
+    return redrawSlowWave(slow, DEFAULT_SETTINGS, drawing, ALL_ROUTES).slowWave;
   };
   const plain = draw(clean, []);
   /** Root mean square of what an artefact changes in the two minutes on either side of its stretch. */

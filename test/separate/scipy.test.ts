@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
-import { DEFAULT_SETTINGS, type RouteName } from '../../src/recording/settings';
+import { DEFAULT_SETTINGS, type HeartRouteName } from '../../src/recording/settings';
 import { createSeparation } from '../../src/separate/separation';
 import { ALL_ROUTES } from './all-routes';
 import { mixture } from './mixture';
@@ -24,7 +24,7 @@ const reference: {
   cases: Case[];
 } = JSON.parse(readFileSync(new URL('../reference/separate-scipy.json', import.meta.url), 'utf8'));
 
-function separated(one: Case, route: RouteName, block: number) {
+function separated(one: Case, route: HeartRouteName, block: number) {
   const x = mixture(one.rate_hz, reference.seconds);
   const settings = {
     ...DEFAULT_SETTINGS,

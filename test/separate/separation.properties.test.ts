@@ -1,12 +1,12 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { DEFAULT_SETTINGS, type RouteName } from '../../src/recording/settings';
+import { DEFAULT_SETTINGS, type HeartRouteName } from '../../src/recording/settings';
 import { createSeparation, type Separated } from '../../src/separate/separation';
 import { largestDifference, noise } from '../numeric/signals';
 import { always, cutAt, cuts, mixed, numbers, sizeOf, times } from '../properties';
 import { ALL_ROUTES } from './all-routes';
 
-const ROUTES: readonly RouteName[] = ['band', 'fractional'];
+const ROUTES: readonly HeartRouteName[] = ['band', 'fractional'];
 const RATE_HZ = 50;
 const SECONDS = 400;
 
@@ -20,7 +20,11 @@ function wide(draw: number): Float64Array {
   });
 }
 
-function separated(blocks: readonly Float64Array[], route: RouteName, rateHz = RATE_HZ): Separated {
+function separated(
+  blocks: readonly Float64Array[],
+  route: HeartRouteName,
+  rateHz = RATE_HZ,
+): Separated {
   const separation = createSeparation({
     lead: '#1',
     rateHz,

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { DEFAULT_SETTINGS, type RouteName, type Settings } from '../../src/recording/settings';
+import { DEFAULT_SETTINGS, type HeartRouteName, type Settings } from '../../src/recording/settings';
 import { createSeparation, redrawSlowWave } from '../../src/separate/separation';
 import { ALL_ROUTES } from './all-routes';
 
@@ -58,7 +58,7 @@ function worst(from: number, to: number, missAt: (i: number) => number): number 
   return largest;
 }
 
-const both = (route: RouteName) => ({
+const both = (route: HeartRouteName) => ({
   slowRoute: route,
   heartRoute: route,
   slowGain: 'even' as const,
@@ -70,6 +70,7 @@ const PLAINLY = (slow: { readonly recorded: Float64Array }) => ({
   dfCpm: 3,
   kept: new Uint8Array(slow.recorded.length).fill(1),
   breathing: null,
+  heartPart: null,
 });
 
 describe('the anti-aliased 4 Hz lead', () => {
@@ -353,4 +354,16 @@ test('route band drawn again for a narrower band is what separation gives for it
   const slow = slowOf(lead, { rateHz: 50 });
   const redrawn = redrawSlowWave(slow, narrow, PLAINLY(slow), ALL_ROUTES);
   expect(redrawn.slowWave).toEqual(slowOf(lead, { rateHz: 50, settings: narrow }).slowWave);
+});
+
+test('a lead that is 0 throughout, as an unconnected one may be, is drawn as 0', () => {
+  const slow = slowOf(new Float64Array(400 * 50), { rateHz: 50 });
+  expect(middleSize(slow.slowWave, 0)).toBe(0);
+});
+
+test('route band draws the slow wave once, when it is first asked for', () => {
+  const slow = slowOf(signalOf(400, 50, tone(100, 0.05)), { rateHz: 50 });
+  slow.recorded.fill(0);
+  expect(middleSize(slow.slowWave)).toBe(0);
+  expect(slow.slowWave).toBe(slow.slowWave);
 });

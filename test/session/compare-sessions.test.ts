@@ -1,11 +1,11 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { beatsOf } from '../../src/recording/beat';
+import { matchBeats } from '../../src/recording/match-beats';
 import { DEFAULT_SETTINGS } from '../../src/recording/settings';
 import { compareSessions, otherStudy } from '../../src/session/compare-sessions';
 import { differenceWords } from '../../src/session/difference';
 import type { SessionState } from '../../src/session/document';
-import { matchBeats } from '../../src/session/match-beats';
 import { secondsToTicks } from '../../src/units/ticks';
 import { always, numbers } from '../properties';
 import { inventedState, RATE_HZ, span } from './invented-session';

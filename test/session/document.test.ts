@@ -211,6 +211,15 @@ describe('a session of version 1', () => {
   });
 });
 
+describe('a session of version 3', () => {
+  it('is given the average heartbeat of its day in every settings object', () => {
+    const session = textToSession(readFileSync('test/fixtures/session-v3.json', 'utf8'));
+    const said = { beatAverage: { beforeMs: 300, afterMs: 500, beats: 60 } };
+    expect(session.state.settings).toMatchObject(said);
+    for (const signed of session.state.signed) expect(signed.settings).toMatchObject(said);
+  });
+});
+
 describe('the name of a session file', () => {
   it('is the code in characters that every system allows', () => {
     expect(sessionFileName(worked)).toBe('INV-8.bicadence.json');

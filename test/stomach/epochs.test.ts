@@ -123,10 +123,10 @@ describe('spoiled stretches', () => {
     expect(spectrogram.levelDb[4 * spectrogram.binCount]).not.toBeNaN();
   });
 
-  test('act like gaps, whatever was recorded in them', () => {
-    const spoiled = [{ fromS: 100, toS: 110 }];
-    const wild = lead.map((value, i) => (i >= 400 && i < 440 ? 1e6 : value));
-    const gap = lead.map((value, i) => (i >= 400 && i < 440 ? Number.NaN : value));
+  test('act like a few missing samples, whatever was recorded in them', () => {
+    const spoiled = [{ fromS: 100, toS: 100.75 }];
+    const wild = lead.map((value, i) => (i >= 400 && i < 403 ? 1e6 : value));
+    const gap = lead.map((value, i) => (i >= 400 && i < 403 ? Number.NaN : value));
     const [a, b] = [rhythmOfLead(wild, { spoiled }), rhythmOfLead(gap)];
     expect(a.rhythm.epochs).toEqual(b.rhythm.epochs);
     expect(b.missing).toEqual(spoiled);
@@ -139,6 +139,26 @@ describe('spoiled stretches', () => {
       { spoiled: [{ fromS: 60, toS: 90 }] },
     ).rhythm.epochs[0];
     expect(Math.abs((torn.dpDb ?? 0) - (clean.dpDb ?? 0))).toBeLessThan(0.1);
+  });
+});
+
+describe('a stop of the recorder', () => {
+  const stopped = (fromS: number, toS: number) =>
+    leadOf(20, (t) => wave(100, 3, t)).map((value, i) =>
+      i >= 4 * fromS && i < 4 * toS ? Number.NaN : value,
+    );
+
+  test('is reached across by no epoch, however short it is', () => {
+    const { epochs } = rhythmOfLead(stopped(500, 502)).rhythm;
+    for (const { fromS, toS, kept } of epochs) expect(kept).toBe(toS <= 500 || fromS >= 502);
+    expect(epochs.filter(({ kept }) => kept)).toHaveLength(13);
+  });
+
+  test('leaves the epochs beside it as they are', () => {
+    const whole = rhythmOfLead(leadOf(20, (t) => wave(100, 3, t))).rhythm.epochs;
+    for (const epoch of rhythmOfLead(stopped(500, 502)).rhythm.epochs)
+      if (epoch.kept)
+        expect(epoch.dfCpm).toBe(whole.find(({ fromS }) => fromS === epoch.fromS)?.dfCpm);
   });
 });
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
 import { coveredSeconds } from '../../src/recording/span';
 import { settlingTimeS } from '../../src/trust/settling';
@@ -106,9 +107,11 @@ describe('what nothing foretells', () => {
   };
 
   it('is a pop in its own seconds, not in those that a prediction has seen it in', () => {
-    const found = unforeseen(
-      columns((t) => (t >= EVENT_S && t < EVENT_S + 1 ? 1000 : 0)),
-      0.1,
+    const found = atOnce(
+      unforeseen(
+        columns((t) => (t >= EVENT_S && t < EVENT_S + 1 ? 1000 : 0)),
+        0.1,
+      ),
     );
     if (!found) throw new Error('there are columns enough');
     const at = (fromS: number, toS: number) =>
@@ -119,16 +122,18 @@ describe('what nothing foretells', () => {
   });
 
   it('is next to nothing of a slow wave and breathing', () => {
-    const found = unforeseen(
-      columns(() => 0),
-      0.1,
+    const found = atOnce(
+      unforeseen(
+        columns(() => 0),
+        0.1,
+      ),
     );
     const sizes = found ? [...found.sizeUv].sort((a, b) => a - b) : [];
     expect(sizes[Math.floor(0.99 * sizes.length)]).toBeLessThan(15);
   });
 
   it('is not told where columns are too few or a second apart', () => {
-    expect(unforeseen(new Float64Array(100), 0.1)).toBeNull();
-    expect(unforeseen(new Float64Array(5000), 1)).toBeNull();
+    expect(atOnce(unforeseen(new Float64Array(100), 0.1))).toBeNull();
+    expect(atOnce(unforeseen(new Float64Array(5000), 1))).toBeNull();
   });
 });

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { Refusal } from '../../src/recording/failure';
 import type { SignalBlock, SignalSource } from '../../src/recording/recording';
-import { inTurns, startJob } from '../../workers/job';
+import { inTurns, startJob, withRests } from '../../workers/job';
 import { passOverLeads } from '../../workers/lead-pass';
 
 describe('long work', () => {
@@ -28,6 +28,8 @@ describe('long work', () => {
       return 'beats';
     }
     expect(await inTurns(two(), job, 'looking')).toBe('beats');
+    expect(told).toEqual([0.5]);
+    expect(await withRests(two(), job)).toBe('beats');
     expect(told).toEqual([0.5]);
   });
 });

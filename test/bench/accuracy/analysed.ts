@@ -25,7 +25,7 @@ export interface Analysed {
 }
 
 /** The study as an EDF+ file, rounded as its digitiser says. */
-function fileOf({ signals, labels }: SimulatedStudy, spec: SimulationSpec): Blob {
+export function fileOf({ signals, labels }: SimulatedStudy, spec: SimulationSpec): Blob {
   const { digitiser, durationS, rateHz } = spec;
   if (!digitiser) throw new Error('a study for a file has a digitiser');
   const { stepUv, railUv } = digitiser;
