@@ -17,12 +17,8 @@ interface PageOf<P extends EvidencePart> extends PageHead {
   readonly page: (value: Evidence[P]) => ReactNode;
 }
 
-type Pages = { readonly [P in EvidencePart]: PageOf<P> } & {
-  readonly [P in Exclude<EvidencePageId, EvidencePart>]: PageHead;
-};
-
-/** The pages of the evidence dialog, one a part, and those that stand on no part. */
-export const EVIDENCE_PAGES: Pages = {
+/** The pages of the evidence dialog, one a part. */
+const PART_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
   planted: {
     title: 'Planted check',
     about:
@@ -50,6 +46,10 @@ export const EVIDENCE_PAGES: Pages = {
     about: 'Stomach and heart over the same minutes. Exploratory: no reference values exist.',
     page: (value) => <TogetherPage value={value} />,
   },
+};
+
+/** Those that stand on no part. */
+const OTHER_PAGES: Readonly<Record<Exclude<EvidencePageId, EvidencePart>, PageHead>> = {
   'self-check': {
     title: 'Self-check',
     about:
@@ -59,5 +59,11 @@ export const EVIDENCE_PAGES: Pages = {
 
 /** The page of a part that is there, drawn; null where it is not. */
 export function evidencePage<P extends EvidencePart>(part: P, value: Evidence[P]): ReactNode {
-  return EVIDENCE_PAGES[part].page(value);
+  return PART_PAGES[part].page(value);
 }
+
+/** Title of a page and what it is for. */
+export const EVIDENCE_PAGES: Readonly<Record<EvidencePageId, PageHead>> = {
+  ...PART_PAGES,
+  ...OTHER_PAGES,
+};
