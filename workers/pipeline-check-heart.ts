@@ -1,7 +1,9 @@
+import { beatScore } from '../src/heart/planted-beats';
 import { rmssdFloorMs } from '../src/heart/timing-floor';
 import { timeDomain, triangularIndex } from '../src/heart/variability';
 import { lombBandPowers, welchBandPowers } from '../src/heart/variability-spectrum';
 import { sin } from '../src/numeric/elementary';
+import { matchBeats } from '../src/recording/match-beats';
 import { DEFAULT_SETTINGS } from '../src/recording/settings';
 import { ARITHMETIC, type CheckValue, EXACT, within, withinShare } from './check-value';
 
@@ -27,7 +29,21 @@ function byLomb(): number[] {
   return [lf, hf, lf / hf, (100 * lf) / (lf + hf), (100 * hf) / (lf + hf)];
 }
 
-/** From intervals to the heart's figures. */
+/** Matched beats and those of one list only, of one beat at 1 s and another. */
+function countsOf(atS: number): number[] {
+  const { pairs, onlyFirst, onlySecond } = matchBeats([1], [atS]);
+  return [pairs.length, onlyFirst.length, onlySecond.length];
+}
+
+/** Sensitivity and positive predictivity in percent of 98 of 100 beats found, with one too many. */
+function scores(): number[] {
+  const put = Array.from({ length: 100 }, (_, i) => i + 1);
+  const found = [...put.slice(0, 97), 97.5, 98].sort((a, b) => a - b);
+  const { sensitivityPct, predictivityPct } = beatScore(put, found, []);
+  return [sensitivityPct ?? Number.NaN, predictivityPct ?? Number.NaN];
+}
+
+/** From intervals to the heart's figures, and how beats are matched. */
 export const HEART_CHECKS: readonly CheckValue[] = [
   {
     id: 'CV-23',
@@ -117,5 +133,21 @@ export const HEART_CHECKS: readonly CheckValue[] = [
     expected: [2],
     tolerance: EXACT,
     got: () => [triangularIndex(Float64Array.from(BINS), new Uint8Array(BINS.length).fill(1))],
+  },
+  {
+    id: 'CV-45',
+    what: 'A beat at 1.000 s and one at 1.149 s, at 1.151 s: matched, only in the first, only in the second',
+    source: 'ANSI/AAMI EC57 (150 ms)',
+    expected: [1, 0, 0, 0, 1, 1],
+    tolerance: EXACT,
+    got: () => [...countsOf(1.149), ...countsOf(1.151)],
+  },
+  {
+    id: 'CV-46',
+    what: '98 of 100 beats found and one too many: sensitivity, positive predictivity, %',
+    source: 'ANSI/AAMI EC57',
+    expected: [98, 98.99],
+    tolerance: within(0.01),
+    got: scores,
   },
 ];
