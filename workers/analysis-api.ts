@@ -128,6 +128,16 @@ export interface SeparationFacts {
   readonly leadS: number;
 }
 
+/** The separated signals as they were drawn last, in uV; NaN where there is nothing. */
+export interface SeparatedSignals {
+  readonly slow: readonly {
+    readonly lead: string;
+    readonly rateHz: number;
+    readonly samples: Float64Array;
+  }[];
+  readonly heart: { readonly rateHz: number; readonly samples: Float32Array } | null;
+}
+
 export interface HeartResults {
   readonly rr: RrSeries;
   readonly segments: readonly HeartSegment[];
@@ -232,6 +242,8 @@ export interface AnalysisApi {
   figuresOf(job: JobId, states: readonly ReviewInputs[]): Promise<Reply<readonly Findings[]>>;
   /** Finds the beats of a stretch with other choices. */
   detectWithin(job: JobId, request: WithinRequest): Promise<Reply<FoundWithin>>;
+  /** The separated signals of a review. */
+  separated(job: JobId, inputs: ReviewInputs): Promise<Reply<SeparatedSignals>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   cancel(job: JobId): void;

@@ -20,6 +20,7 @@ import type {
   PlacedBeat,
   Proposal,
   ReviewInputs,
+  SeparatedSignals,
   TextReading,
   WithinRequest,
   WorkerNews,
@@ -72,6 +73,7 @@ export interface AnalysisClient {
     options?: CallOptions,
   ): Promise<Reply<readonly Findings[]>>;
   detectWithin(request: WithinRequest, options?: CallOptions): Promise<Reply<FoundWithin>>;
+  separated(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<SeparatedSignals>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   /** Ends the worker for good. */
@@ -237,6 +239,7 @@ export function createAnalysisClient(
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
     figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),
     detectWithin: (request, options) => call((api, job) => api.detectWithin(job, request), options),
+    separated: (inputs, options) => call((api, job) => api.separated(job, inputs), options),
     columns: (request) => call((api) => api.columns(request)),
     placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
     close() {

@@ -77,6 +77,7 @@ const api: AnalysisApi = {
     inJob(id, (job) => pipeline.lookAlikes(inputs, settled, doubtId, job)),
   figuresOf: (id, states) => inJob(id, (job) => pipeline.figuresOf(states, job)),
   detectWithin: (id, request) => inJob(id, (job) => pipeline.detectWithin(request, job)),
+  separated: (id, inputs) => inJob(id, (job) => pipeline.separated(inputs, job)),
   columns: (request) => reply(() => pipeline.columns(request)),
   placeBeat: (nearS) => reply(() => pipeline.placeBeat(nearS)),
   cancel: (id) => running.get(id)?.cancel(),

@@ -17,6 +17,8 @@ export interface AnalyseRequest {
   readonly out: string;
   /** File with the site's reference values. */
   readonly reference: string | null;
+  /** Whether what is written says whose study it is. */
+  readonly withoutIdentity: boolean;
 }
 
 export const USAGE = `npm run analyse -- STUDY... [options]
@@ -32,7 +34,9 @@ npm run analyse -- --self-check
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
   --reference FILE reference values of the site, to stand beside the figures they fit
-  --out DIR        where the files go (default: here)
+  --out DIR        where the files go (default: here); several studies get a folder each and one studies.csv
+  --without-identity
+                   X for who it is, dates moved, no texts that people wrote, no file names
   --self-check     runs the program's check values on this machine and prints each; goes alone
 LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed or a check
 failed, 2 wrong arguments.`;
@@ -53,12 +57,15 @@ const OPTIONS = [
   'out',
   'reference',
 ];
+/** Options without a value. */
+const FLAGS = ['without-identity'];
 
 /** Reads the arguments after the program's name. Throws WrongArguments. */
 export function parseArguments(words: readonly string[]): AnalyseRequest {
   const single = new Map<string, string>();
   const slow: string[] = [];
   const studies: string[] = [];
+  const flags = new Set<string>();
   for (let i = 0; i < words.length; i += 1) {
     const word = words[i];
     if (!word.startsWith('--')) {
@@ -66,6 +73,10 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
       continue;
     }
     const name = word.slice(2);
+    if (FLAGS.includes(name)) {
+      flags.add(name);
+      continue;
+    }
     if (!OPTIONS.includes(name)) throw new WrongArguments(`there is no option ${word}`);
     const value = words.at(i + 1);
     if (value === undefined || value.startsWith('--'))
@@ -99,6 +110,7 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
     unit: single.get('unit') ?? null,
     out: single.get('out') ?? '.',
     reference: single.get('reference') ?? null,
+    withoutIdentity: flags.has('without-identity'),
   };
 }
 

@@ -22,11 +22,12 @@ import type {
   PlacedBeat,
   Proposal,
   ReviewInputs,
+  SeparatedSignals,
   TextReading,
   WithinRequest,
 } from './analysis-api';
 import type { Job } from './job';
-import { analyse, doubtInputs, figuresOf } from './pipeline-analyse';
+import { analyse, doubtInputs, figuresOf, separatedSignals } from './pipeline-analyse';
 import { placeNear } from './pipeline-beats';
 import { columnsOf } from './pipeline-columns';
 import type { EvidenceInputs } from './pipeline-evidence';
@@ -74,6 +75,8 @@ export interface Pipeline {
   detectWithin(request: WithinRequest, job: Job): Promise<FoundWithin>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
+  /** The separated signals of a review, as they are drawn. */
+  separated(inputs: ReviewInputs, job: Job): Promise<SeparatedSignals>;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
   slowWave(lead: Lead): SeparatedSlow | null;
   /** The heartbeat of a lead; null where it was not read for one. */
@@ -150,6 +153,7 @@ export function createPipeline(): Pipeline {
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
     heartbeat: (lead) => study().signals.heart(lead),
+    separated: (inputs, job) => inLine(study(), job, (one) => separatedSignals(one, inputs, job)),
   };
 }
 

@@ -10,7 +10,13 @@ import { type AdequacyTable, adequacyTable } from './report-adequacy';
 import { type EventRow, eventRows } from './report-events';
 import { type FindingsTable, mainTables, otherTables } from './report-findings';
 import { type Hide, identityHider, nothingHidden } from './report-hiding';
-import { type Fact, identityFacts, type ProtocolFacts, protocolFacts } from './report-identity';
+import {
+  type Fact,
+  identityFacts,
+  identityNote,
+  type ProtocolFacts,
+  protocolFacts,
+} from './report-identity';
 import {
   beatFacts,
   doubtFact,
@@ -37,6 +43,8 @@ export interface ReportModel {
   readonly foot: string;
   readonly identityHidden: boolean;
   readonly identity: readonly Fact[];
+  /** What has to be known of what the identity says. */
+  readonly identityNote: string;
   readonly adequacy: AdequacyTable;
   /** What stands above the figures: filters, defects of the file. */
   readonly warnings: readonly string[];
@@ -67,6 +75,8 @@ export interface ReportInput {
   readonly identityHidden: boolean;
   /** How many doubts are open; null while they have not been looked for. */
   readonly openDoubts: number | null;
+  /** Age in words where the results go out without identity; null where the header's own fields are printed. */
+  readonly age: string | null;
   /** The parts of the evidence that belong to these figures. */
   readonly evidence: Partial<Evidence>;
   /** Reference values that the site keeps; null where it gave none. */
@@ -92,7 +102,8 @@ export function reportModel(input: ReportInput): ReportModel {
       words.replace(/^Draft/, 'DRAFT'),
     ].join(' · '),
     identityHidden,
-    identity: identityFacts(recording, state, identityHidden),
+    identity: identityFacts(recording, state, identityHidden, input.age),
+    identityNote: identityNote(identityHidden, input.age),
     adequacy: adequacyTable(findings, state.roles.heart !== null),
     warnings: [
       ...warningsOf(recording, findings),
@@ -139,7 +150,7 @@ const foundWords = ({ what, place }: Recording['found'][number]): string =>
   place === null ? what : `${what} (${place})`;
 
 function makingOf(
-  { recording, session, program, identityHidden, openDoubts }: ReportInput,
+  { recording, session, program, identityHidden, openDoubts, age }: ReportInput,
   signed: Signature | null,
   hide: Hide,
 ): Pick<ReportModel, 'making' | 'settings' | 'spans'> {
@@ -153,6 +164,7 @@ function makingOf(
         signed?.program ?? program,
         signed,
         identityHidden ? hide : null,
+        age === null ? 'not computed yet' : 'left out',
       ),
       ...beatFacts(session, recording),
       doubtFact(state, openDoubts),

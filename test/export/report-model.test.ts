@@ -50,6 +50,7 @@ function model({
     openDoubts,
     evidence: {},
     siteReference: null,
+    age: null,
   });
 }
 

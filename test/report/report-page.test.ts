@@ -3,7 +3,7 @@ import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { reportModel } from '../../src/export/report-model';
 import { CAUTIONS } from '../../src/recording/cautions';
-import { cssString } from '../../src/report/page-foot';
+import { cssString } from '../../src/report/foot-text';
 import { ReportPage } from '../../src/report/report-page';
 import { reportPictures } from '../../src/report/report-pictures';
 import { appendEdit, beginSession } from '../../src/session/log';
@@ -26,6 +26,7 @@ function page(signed: boolean): string {
     openDoubts: 0,
     evidence: {},
     siteReference: null,
+    age: null,
     recording,
     session,
     findings,
