@@ -37,7 +37,7 @@ function ReportNow() {
   const state = useStore(session, (now) => now.session?.state);
   const open = countOpen(listed, state);
   const edit = useStore(session, (now) => now.session?.log.length ?? 0);
-  const found = useStore(evidence);
+  const found = useStore(evidence, (now) => now.found);
   const known = useMemo(() => evidenceAt(found, edit), [found, edit]);
   const siteReference = useStore(shell, (now) => now.siteReference?.reference ?? null);
   return (

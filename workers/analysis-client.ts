@@ -5,6 +5,7 @@ import type { Failure, Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { Roles } from '../src/recording/roles';
 import type { SelfCheck } from '../src/recording/self-check';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type {
   Analysis,
   AnalysisApi,
@@ -62,6 +63,7 @@ export interface AnalysisClient {
   ): Promise<Reply<EvidenceReply>>;
   /** Needs no study to be open. */
   selfCheck(options?: CallOptions): Promise<Reply<SelfCheck>>;
+  settingsMap(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<SettingsMap>>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -235,6 +237,7 @@ export function createAnalysisClient(
     evidence: (inputs, settled, part, options) =>
       call((api, job) => api.evidence(job, inputs, settled, part), options),
     selfCheck: (options) => call((api, job) => api.selfCheck(job), options),
+    settingsMap: (inputs, options) => call((api, job) => api.settingsMap(job, inputs), options),
     lookAlikes: (inputs, settled, doubtId, options) =>
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
     figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),

@@ -73,6 +73,7 @@ const api: AnalysisApi = {
   evidence: (id, inputs, settled, part) =>
     inJob(id, (job) => pipeline.evidence(inputs, settled, part, job)),
   selfCheck: (id) => inJob(id, selfCheck),
+  settingsMap: (id, inputs) => inJob(id, (job) => pipeline.settingsMap(inputs, job)),
   lookAlikes: (id, inputs, settled, doubtId) =>
     inJob(id, (job) => pipeline.lookAlikes(inputs, settled, doubtId, job)),
   figuresOf: (id, states) => inJob(id, (job) => pipeline.figuresOf(states, job)),

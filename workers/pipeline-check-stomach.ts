@@ -9,6 +9,7 @@ import { epochStarts } from '../src/stomach/epoch-layout';
 import { instabilityPercent, stomachFigures } from '../src/stomach/figures';
 import { meanSpectrum } from '../src/stomach/mean-spectrum';
 import { rhythmOf } from '../src/stomach/rhythm-class';
+import { epochsOfPair } from '../src/stomach/slow-wave-coupling';
 import { windowSpectra } from '../src/stomach/window-spectrum';
 import { ARITHMETIC, type CheckValue, EXACT, within } from './check-value';
 import { changesOf } from './findings';

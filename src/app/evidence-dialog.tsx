@@ -7,12 +7,14 @@ import { useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { EVIDENCE_PAGES, evidencePage } from './evidence/evidence-pages';
 import { SelfCheckPage } from './evidence/self-check-page';
+import { SettingsPage } from './evidence/settings-page';
 import type { EvidencePageId } from './evidence-page-id';
 import { FailureWords } from './small-dialogs';
 
 /** Order of the pages, the question asked most first. */
 const ORDER: readonly EvidencePageId[] = [
   'planted',
+  'settings-map',
   'ranges',
   'opinions',
   'leads',
@@ -20,14 +22,15 @@ const ORDER: readonly EvidencePageId[] = [
   'self-check',
 ];
 
-const isOfStudy = (page: EvidencePageId): page is EvidencePart => page !== 'self-check';
+/** The self-check alone needs no study. */
+const needsStudy = (page: EvidencePageId): boolean => page !== 'self-check';
 
 /** How far each number can be believed, a page a question. */
 export function EvidenceDialog({ first }: { readonly first: EvidencePageId }) {
   const { shell } = useApp();
   const [page, setPage] = useState<EvidencePageId>(first);
   const open = useSession(({ session }) => session !== null);
-  const pages = open ? ORDER : ORDER.filter((one) => !isOfStudy(one));
+  const pages = open ? ORDER : ORDER.filter((one) => !needsStudy(one));
   return (
     <Dialog
       title={open ? 'Evidence' : EVIDENCE_PAGES[page].title}
@@ -51,10 +54,21 @@ export function EvidenceDialog({ first }: { readonly first: EvidencePageId }) {
         </nav>
       ) : null}
       <section className="evidence-page" aria-label={EVIDENCE_PAGES[page].title}>
-        {isOfStudy(page) ? <PartPage key={page} part={page} /> : <SelfCheckPage />}
+        <OnePage page={page} />
       </section>
     </Dialog>
   );
+}
+
+function OnePage({ page }: { readonly page: EvidencePageId }) {
+  switch (page) {
+    case 'settings-map':
+      return <SettingsPage />;
+    case 'self-check':
+      return <SelfCheckPage />;
+    default:
+      return <PartPage key={page} part={page} />;
+  }
 }
 
 /** A computed part, grey while it is of an earlier edit; what is missing says why. */

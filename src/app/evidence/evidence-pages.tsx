@@ -17,7 +17,7 @@ interface PageOf<P extends EvidencePart> extends PageHead {
   readonly page: (value: Evidence[P]) => ReactNode;
 }
 
-/** The pages of the evidence dialog, one a part. */
+/** The pages of the parts of the evidence. */
 const PART_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
   planted: {
     title: 'Planted check',
@@ -48,8 +48,14 @@ const PART_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
   },
 };
 
-/** Those that stand on no part. */
-const OTHER_PAGES: Readonly<Record<Exclude<EvidencePageId, EvidencePart>, PageHead>> = {
+/** All pages of the evidence dialog: those of the parts, and those that are no part of it. */
+export const EVIDENCE_PAGES: Readonly<Record<EvidencePageId, PageHead>> = {
+  ...PART_PAGES,
+  'settings-map': {
+    title: 'Which settings',
+    about:
+      'How well route fractional would do on this recording with other settings, beside the other routes. The program changes none by itself.',
+  },
   'self-check': {
     title: 'Self-check',
     about:
@@ -61,9 +67,3 @@ const OTHER_PAGES: Readonly<Record<Exclude<EvidencePageId, EvidencePart>, PageHe
 export function evidencePage<P extends EvidencePart>(part: P, value: Evidence[P]): ReactNode {
   return PART_PAGES[part].page(value);
 }
-
-/** Title of a page and what it is for. */
-export const EVIDENCE_PAGES: Readonly<Record<EvidencePageId, PageHead>> = {
-  ...PART_PAGES,
-  ...OTHER_PAGES,
-};
