@@ -63,24 +63,34 @@ function printedRatio(db: number): string {
   return value?.kind === 'number' ? (value.basis ?? '') : 'withheld';
 }
 
+/** Epochs one a minute with the DF given. */
+const epochsOf = (dfCpm: readonly number[]): readonly Epoch[] =>
+  dfCpm.map((cpm, i) => ({
+    lead: '#1',
+    phase: 'fasting',
+    fromS: 60 * i,
+    toS: 60 * i + 240,
+    kept: true,
+    spoiledFraction: 0,
+    dfCpm: cpm,
+    dpDb: 50,
+    peakShare: 0.9,
+    rhythm: rhythmOf(cpm, BANDS),
+    flags: [],
+  }));
+
+/** Percent of epochs in which two leads are coupled. */
+function coupledPercent(): number {
+  const pairs = epochsOfPair(
+    epochsOf([3, 3.1, 2.9, 3.5, 3]),
+    epochsOf([3.1, 3.25, 3.15, 3.4, 2.9]),
+  );
+  return (100 * pairs.filter(({ coupled }) => coupled).length) / pairs.length;
+}
+
 /** Percent of time in the normal band of 27 epochs of which 20 are. */
 function twentyOf27(): number {
-  const epochs = Array.from(
-    { length: 27 },
-    (_, i): Epoch => ({
-      lead: '#1',
-      phase: 'fasting',
-      fromS: 60 * i,
-      toS: 60 * i + 240,
-      kept: true,
-      spoiledFraction: 0,
-      dfCpm: i < 20 ? 3 : 5,
-      dpDb: 50,
-      peakShare: 0.9,
-      rhythm: i < 20 ? 'normo' : 'tachy',
-      flags: [],
-    }),
-  );
+  const epochs = epochsOf(Array.from({ length: 27 }, (_, i) => (i < 20 ? 3 : 5)));
   const none = new Float64Array(0);
   const spectrogram = {
     centresS: none,
@@ -201,6 +211,14 @@ export const STOMACH_CHECKS: readonly CheckValue[] = [
     expected: [4.714],
     tolerance: within(0.001),
     got: () => [instabilityPercent([3, 2.9, 3.1, 3, 2.8, 3.2])],
+  },
+  {
+    id: 'CV-21',
+    what: 'Coupling of 3.0 3.1 2.9 3.5 3.0 with 3.1 3.25 3.15 3.4 2.9 cpm (under 0.2 apart), %',
+    source: ARITHMETIC,
+    expected: [80],
+    tolerance: EXACT,
+    got: () => [coupledPercent()],
   },
   {
     id: 'CV-54',
