@@ -1,11 +1,14 @@
-import type { Range } from '../numeric/chance-range';
-import { type RangesEvidence, rangeOfChange, rangesOfFigure } from '../recording/evidence/ranges';
-import { rangeWords } from '../recording/evidence/ranges-words';
 import type { FigureValue } from '../recording/figure';
 import { FIGURES, type FigureDefinition, type Organ } from '../recording/figure-catalogue';
 import { changeWords, figureWords } from '../recording/figure-words';
 import type { FigureChange, Findings, PhaseFindings } from '../recording/findings';
 import { isFasting, isFed, isMeal } from '../recording/phase';
+import {
+  type RangesFor,
+  rangeGrounds,
+  rangeWords,
+  SITE_REFERENCE,
+} from '../recording/site-reference';
 import { createNotes, inTurn, type Note, type Notes } from './report-notes';
 
 /** A column of figures: those of a phase or part, or what changed from fasting to a phase. */
@@ -19,9 +22,9 @@ export interface FindingsCell {
   readonly words: string;
   /** Said in the cell itself, after the value: a change in decibel as a factor. */
   readonly small: string;
+  /** The ranges that the site keeps for this figure in this phase; their letters say what they hold for. */
+  readonly ranges: readonly string[];
   readonly letters: readonly string[];
-  /** Beneath the value, its nominal 95 % range by chance; empty where none is told. */
-  readonly range: string;
 }
 
 export interface FindingsRow {
@@ -50,7 +53,10 @@ export interface FindingsTable {
   /** True where a change column holds dashes for figures that are never compared. */
   readonly hasNotCompared: boolean;
   readonly hasWithheld: boolean;
+  /** True where ranges of the site stand beside figures. */
   readonly hasRanges: boolean;
+  /** Ranges by chance that stand beneath the values, by `placeOf`; empty where none are told. */
+  readonly chances: Readonly<Record<string, string>>;
 }
 
 /** Fed phases side by side in one table; more of them go into a table below. */
@@ -76,13 +82,9 @@ interface WantedGroup {
 
 /**
  * The main figures of stomach and heart before and after the meal, with what else moved in the same minutes. Meals are left
- * out. One table, or more where a long study has many fed phases; fasting stands first in each. Ranges by chance stand beneath
- * the values where they are given.
+ * out. One table, or more where a long study has many fed phases; fasting stands first in each.
  */
-export function mainTables(
-  findings: Findings,
-  ranges: RangesEvidence | null = null,
-): readonly FindingsTable[] {
+export function mainTables(findings: Findings, ranges: RangesFor): readonly FindingsTable[] {
   const organs: readonly Organ[] = ['stomach', 'heart'];
   const groups = organs.map((organ) => ({
     organ,
@@ -93,7 +95,7 @@ export function mainTables(
 }
 
 /** Every figure that mainTables leaves out, in the order of the catalogue. */
-export function otherTables(findings: Findings): readonly FindingsTable[] {
+export function otherTables(findings: Findings, ranges: RangesFor): readonly FindingsTable[] {
   const others = FIGURES.filter(({ main }) => !main);
   const organs = [...new Set(others.map(({ organ }) => organ))];
   const groups = organs.map((organ) => ({
@@ -101,19 +103,19 @@ export function otherTables(findings: Findings): readonly FindingsTable[] {
     figures: others.filter((figure) => figure.organ === organ),
     beside: [],
   }));
-  return tablesOf(findings, groups, null);
+  return tablesOf(findings, groups, ranges);
 }
 
 function tablesOf(
   findings: Findings,
   wanted: readonly WantedGroup[],
-  ranges: RangesEvidence | null,
+  ranges: RangesFor,
 ): readonly FindingsTable[] {
   return partsSideBySide(findings.phases).map((parts) => {
     const notes = createNotes();
     const columns = columnsOf(parts, findings.changes);
     const row = (figure: FigureDefinition) =>
-      rowOf(figure, { columns, parts, findings, ranges, notes });
+      rowOf(figure, { columns, parts, findings, notes, ranges });
     const groups = wanted.map(({ organ, figures, beside }) => ({
       organ,
       title: TITLES[organ],
@@ -130,7 +132,8 @@ function tablesOf(
       inOrderOf: parts.length > 1 ? parts.map(({ name }) => name) : [],
       hasNotCompared: cells.some(({ kind }) => kind === 'not-compared'),
       hasWithheld: cells.some(({ kind }) => kind === 'withheld'),
-      hasRanges: cells.some(({ range }) => range !== ''),
+      hasRanges: cells.some((cell) => cell.ranges.length > 0),
+      chances: {},
     };
   });
 }
@@ -167,31 +170,26 @@ interface RowContext {
   readonly columns: readonly FindingsColumn[];
   readonly parts: readonly PhaseFindings[];
   readonly findings: Findings;
-  readonly ranges: RangesEvidence | null;
   readonly notes: Notes;
+  readonly ranges: RangesFor;
 }
 
 function rowOf(figure: FigureDefinition, context: RowContext): FindingsRow {
-  const { columns, parts, findings, ranges, notes } = context;
+  const { columns, parts, findings, notes, ranges } = context;
   const values = parts.map(({ figures }) => figures[figure.key]);
   const texts = rowTexts(values);
   const letters = texts.shared.map((text) => notes.letterOf(text));
   const cells = columns.map(({ kind, name }) => {
     if (kind === 'change') {
       const change = findings.changes.find(({ key, to }) => key === figure.key && to === name);
-      const range = ranges && change && rangeOfChange(ranges, figure.key, change.from, name);
-      return changeCell(change?.value, figure, notes, range);
+      return changeCell(change?.value, figure, notes);
     }
     const place = parts.findIndex((part) => part.name === name);
-    const range = ranges && rangesOfFigure(ranges, name, figure.key);
     const cell = phaseCell(values[place], figure, texts.own[place], notes);
-    return { ...cell, range: wordsOf(range?.chance, figure) };
+    return withRanges(cell, ranges(figure.key, parts[place]), notes);
   });
   return { key: figure.key, name: nameOf(figure), letters, cells };
 }
-
-const wordsOf = (range: Range | null | undefined, { decimals }: FigureDefinition): string =>
-  range ? rangeWords(range, decimals) : '';
 
 const nameOf = ({ label, unit }: FigureDefinition): string =>
   unit === '' ? label : `${label} (${unit})`;
@@ -248,29 +246,34 @@ function phaseCell(
   const { large, small } = figureWords(value, figure);
   const withheld = !value || value.kind === 'withheld';
   const letters = (withheld ? small : texts).map((text) => notes.letterOf(text));
-  return { kind: withheld ? 'withheld' : 'value', words: large, small: '', letters, range: '' };
+  return { kind: withheld ? 'withheld' : 'value', words: large, small: '', ranges: [], letters };
+}
+
+/** A cell with the site's ranges and the letters of what they hold for. */
+function withRanges(cell: FindingsCell, ranges: ReturnType<RangesFor>, notes: Notes): FindingsCell {
+  const grounds = ranges.map((range) =>
+    notes.letterOf(`${SITE_REFERENCE}: ${rangeGrounds(range)}`),
+  );
+  return {
+    ...cell,
+    ranges: [...new Set(ranges.map(rangeWords))],
+    letters: [...cell.letters, ...grounds],
+  };
 }
 
 function changeCell(
   value: FigureValue | undefined,
   figure: FigureDefinition,
   notes: Notes,
-  range: Range | null | undefined,
 ): FindingsCell {
   if (figure.change === 'none' || !value)
-    return { kind: 'not-compared', words: '–', small: '', letters: [], range: '' };
+    return { kind: 'not-compared', words: '–', small: '', ranges: [], letters: [] };
   const { large, small } = changeWords(value, figure);
   if (value.kind !== 'number') {
     const kind = value.kind === 'withheld' ? 'withheld' : 'value';
     const letters = small.map((text) => notes.letterOf(text));
-    return { kind, words: large, small: '', letters, range: '' };
+    return { kind, words: large, small: '', ranges: [], letters };
   }
   const letters = value.marks.map((text) => notes.letterOf(text));
-  return {
-    kind: 'value',
-    words: large,
-    small: value.basis ?? '',
-    letters,
-    range: wordsOf(range, figure),
-  };
+  return { kind: 'value', words: large, small: value.basis ?? '', ranges: [], letters };
 }
