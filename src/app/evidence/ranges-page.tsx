@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { byWords } from '../../recording/evidence/limits-words';
+import { rangeWords } from '../../recording/evidence/range-words';
 import {
   type ChangeRange,
   type FigureRanges,
@@ -7,7 +8,7 @@ import {
   type RangesEvidence,
   rangesOfFigure,
 } from '../../recording/evidence/ranges';
-import { exactWords, rangeWords, ratioWords } from '../../recording/evidence/ranges-words';
+import { exactWords, ratioWords } from '../../recording/evidence/ranges-words';
 import { FIGURES, type FigureDefinition, type Organ } from '../../recording/figure-catalogue';
 import { figureWords } from '../../recording/figure-words';
 import { useAnalysis } from '../app-context';
