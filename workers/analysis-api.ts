@@ -10,6 +10,7 @@ import type { Recording } from '../src/recording/recording';
 import type { SlowWaveRhythm } from '../src/recording/rhythm';
 import type { RoleReasons, Roles } from '../src/recording/roles';
 import type { Settings } from '../src/recording/settings';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type { Interval, Span } from '../src/recording/span';
 
 /** Number a call is cancelled by. */
@@ -225,6 +226,8 @@ export interface AnalysisApi {
     settled: readonly SettledDoubt[],
     part: EvidencePart,
   ): Promise<Reply<EvidenceReply>>;
+  /** How well the routes would do on a stretch of the study with other settings; no review changes. */
+  settingsMap(job: JobId, inputs: ReviewInputs): Promise<Reply<SettingsMap>>;
   /** What looks like the beat of an open doubt; a failure of kind `wrong-input` where no such doubt stands at a beat. */
   lookAlikes(
     job: JobId,

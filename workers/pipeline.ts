@@ -6,6 +6,7 @@ import type { Findings } from '../src/recording/findings';
 import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
 import type { HeartOutput } from '../src/recording/separated';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type { SeparatedSlow } from '../src/separate/route';
 import type {
   Analysis,
@@ -62,6 +63,8 @@ export interface Pipeline {
   ): Promise<EvidenceReply>;
   /** All parts of it, one after the other. */
   allEvidence(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<Evidence>;
+  /** How well the routes would do on a stretch of the study with other settings. */
+  settingsMap(inputs: ReviewInputs, job: Job): Promise<SettingsMap>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -136,6 +139,11 @@ export function createPipeline(): Pipeline {
       const from = await evidenceInputs(inputs, settled, job);
       const { allEvidence } = await import('./pipeline-evidence');
       return allEvidence(from, job);
+    },
+    async settingsMap(inputs, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      const { settingsMap } = await import('./pipeline-settings-map');
+      return settingsMap({ study: study(), from, job });
     },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
