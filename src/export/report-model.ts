@@ -1,5 +1,6 @@
 import { openDoubtsWords } from '../recording/doubt';
 import type { Evidence } from '../recording/evidence/evidence';
+import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import { evidenceLines } from '../recording/evidence/evidence-words';
 import type { Findings } from '../recording/findings';
 import type { Recording } from '../recording/recording';
@@ -87,7 +88,7 @@ export function reportModel(input: ReportInput): ReportModel {
   const hide = identityHidden ? identityHider(recording, state.study) : nothingHidden;
   const status = reportStatus(session);
   const signed = status.kind === 'draft' ? null : status.signature;
-  const findings = signed?.findings ?? input.findings;
+  const findings = signed?.findings ?? withEvidenceMarks(input.findings, input.evidence);
   const words = hide(statusWords(status, session.log.length, identityHidden));
   return {
     kind: status.kind,
