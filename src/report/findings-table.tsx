@@ -46,12 +46,13 @@ export function Figures({
 
 /** How the table and its notes are to be read. */
 function readingWords(table: FindingsTable): readonly string[] {
-  const { columns, inOrderOf, hasNotCompared, hasWithheld } = table;
+  const { columns, inOrderOf, hasNotCompared, hasWithheld, hasRanges } = table;
   const compared = columns.flatMap(({ kind, name }) => (kind === 'change' ? [name] : []));
   return [
     ...(compared.length > 0 ? [`Change: ${compared.join(', ')} less fasting.`] : []),
     ...(hasNotCompared ? ['–: not compared between phases.'] : []),
     ...(hasWithheld ? ['—: withheld; its letter says why.'] : []),
+    ...(hasRanges ? ['site: a reference of this site; its letter says for what and whence.'] : []),
     ...(inOrderOf.length > 0
       ? [`Counts in the notes are in the order ${inOrderOf.join(', ')}.`]
       : []),
@@ -117,7 +118,7 @@ function Row({
 }
 
 function Cell({
-  cell: { kind, words, small, letters },
+  cell: { kind, words, small, ranges, letters },
   column,
 }: {
   readonly cell: FindingsCell;
@@ -135,6 +136,11 @@ function Cell({
       {words}
       {small !== '' && <small> ({small})</small>}
       <Letters letters={letters} />
+      {ranges.map((range) => (
+        <small key={range} className="report-range">
+          site {range}
+        </small>
+      ))}
     </td>
   );
 }
