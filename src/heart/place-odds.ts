@@ -10,6 +10,9 @@ export interface Judged {
   readonly score: number;
   /** QRS energy there. */
   readonly energyUv: number;
+  /** How much it is like a P wave and like a T wave of the usual beats, 0 to 1. */
+  readonly likeP: number;
+  readonly likeT: number;
 }
 
 /** What was decided of places, with the chance that it is wrong. */
@@ -25,6 +28,12 @@ const SAME_BEAT_S = 0.15;
 const LOUD_PART = 0.5;
 /** Where no P or T wave of the beats about it is due, this part is enough: what is left of a beat that a lead hardly sees. */
 const LONE_PART = 0.12;
+/**
+ * What is this much like a P wave of the usual beats, and of its size, is one wherever it lies: a blocked one hides no beat.
+ * What is like their T wave is one where a T wave is due.
+ */
+const IS_P_WAVE = 0.8;
+const IS_T_WAVE = 0.9;
 const P_WAVE_S = 0.26;
 const T_WAVE_S = 0.45;
 /** Places decided between two rests. */
@@ -87,12 +96,14 @@ export function loudPlaces(
 ): (fromS: number, toS: number) => boolean {
   const usualUv = medianInPlace(Float64Array.from(beats, ({ energyUv }) => energyUv));
   const beatS = Float64Array.from(beats, ({ sample }) => sample / rateHz);
-  const leastUv = (timeS: number) => {
+  const leastUv = (timeS: number, { likeP, likeT }: Judged) => {
     const next = firstAtOrAfter(beatS, timeS);
     const [before, after] = [timeS - beatS[next - 1], beatS[next] - timeS];
-    if (before <= SAME_BEAT_S || after <= SAME_BEAT_S) return Number.POSITIVE_INFINITY;
-    return (before < T_WAVE_S || after < P_WAVE_S ? LOUD_PART : LONE_PART) * usualUv;
+    const isBeat = before <= SAME_BEAT_S || after <= SAME_BEAT_S;
+    if (isBeat || (before < T_WAVE_S && likeT > IS_T_WAVE)) return Number.POSITIVE_INFINITY;
+    const isWave = before < T_WAVE_S || after < P_WAVE_S || likeP > IS_P_WAVE;
+    return (isWave ? LOUD_PART : LONE_PART) * usualUv;
   };
-  const loudS = timesS.filter((timeS, j) => places[j].energyUv > leastUv(timeS));
+  const loudS = timesS.filter((timeS, j) => places[j].energyUv > leastUv(timeS, places[j]));
   return (fromS, toS) => loudS[firstAtOrAfter(loudS, fromS)] < toS;
 }
