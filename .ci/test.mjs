@@ -2,6 +2,7 @@
 import { spawnSync } from 'node:child_process';
 import { mkdirSync, readFileSync, rmSync } from 'node:fs';
 import { findOrGetBrowser } from '../e2e/browser.mjs';
+import { getEdflib } from '../test/fixtures/edflib/get.mjs';
 
 const CACHE = 'node_modules/.cache';
 const UNIT_RESULTS = `${CACHE}/unit-results.json`;
@@ -39,6 +40,7 @@ mkdirSync(CACHE, { recursive: true });
 for (const project of ['src', 'workers', 'workers/tsconfig.node.json', 'test', 'e2e'])
   step(`types of ${project}`, 'npx', ['tsc', '-p', project]);
 step('lint and format', 'npx', ['biome', 'check', '--error-on-warnings', '.']);
+getEdflib();
 counted(
   'unit and reference tests',
   'npx',

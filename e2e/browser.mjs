@@ -1,6 +1,6 @@
-import { execFileSync } from 'node:child_process';
-import { existsSync, readFileSync } from 'node:fs';
+import { existsSync } from 'node:fs';
 import { chromium } from 'playwright';
+import { installOnDebian, run } from '../.ci/debian.mjs';
 
 const PLACES = ['/usr/bin/chromium', '/usr/bin/chromium-browser-stable', '/snap/bin/chromium'];
 
@@ -23,16 +23,10 @@ export function findBrowser() {
 export function findOrGetBrowser() {
   const found = findBrowser();
   if (found) return found;
-  const root = process.getuid?.() === 0;
   try {
-    if (isDebian() && root) {
-      run('apt-get', ['update', '-qq']);
-      run('apt-get', ['install', '-y', '-qq', '--no-install-recommends', 'chromium']);
-    } else if (isDebian() && process.env.CI) {
-      run('sudo', ['-n', 'apt-get', 'update', '-qq']);
-      run('sudo', ['-n', 'apt-get', 'install', '-y', '-qq', '--no-install-recommends', 'chromium']);
-    } else {
-      run('npx', ['playwright', 'install', ...(root ? ['--with-deps'] : []), 'chromium']);
+    if (!installOnDebian(['chromium'])) {
+      const withDeps = process.getuid?.() === 0 ? ['--with-deps'] : [];
+      run(['npx', 'playwright', 'install', ...withDeps, 'chromium']);
     }
   } catch (error) {
     console.error(String(error instanceof Error ? error.message : error).split('\n')[0]);
@@ -43,17 +37,4 @@ export function findOrGetBrowser() {
       'No browser for the browser tests: install one (Debian: sudo apt-get install chromium; elsewhere: npx playwright install chromium) or set CHROMIUM to its path.',
     );
   return fetched;
-}
-
-function isDebian() {
-  if (!existsSync('/etc/os-release')) return false;
-  return /^ID=debian$/m.test(readFileSync('/etc/os-release', 'utf8'));
-}
-
-function run(command, args) {
-  console.log(`> ${command} ${args.join(' ')}`);
-  execFileSync(command, args, {
-    stdio: ['ignore', 'inherit', 'inherit'],
-    env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' },
-  });
 }

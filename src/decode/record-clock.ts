@@ -12,9 +12,10 @@ export type RecordTimes =
   /** The file's times contradict themselves: records are laid end to end. */
   | { readonly kind: 'untrusted'; readonly why: string; readonly record: number };
 
-/** Gaps may be this many times as long as the records, and an hour more. */
+/** Gaps may be this many times as long as the records, and an hour or so many samples of the fastest signal more. */
 const MOST_GAP = 20;
 const SPARE_GAP_S = 3600;
+const SPARE_GAP_SAMPLES = 3_600_000;
 
 /**
  * Puts records on the recording's clock by the times they state (Kemp & Olivan 2003: in EDF+D the only truth about time). A
@@ -29,7 +30,7 @@ export class RecordClock {
   private driftS = 0;
   private fault: { readonly why: string; readonly record: number } | null = null;
 
-  /** `toleranceS`: how far a record's time may be from the end of the record before it and still follow on. */
+  /** `toleranceS`, a sample of the fastest signal: how far a record's time may be from the end of the record before it and still follow on. */
   constructor(
     private readonly recordDurationS: Seconds,
     private readonly toleranceS: Seconds,
@@ -52,7 +53,8 @@ export class RecordClock {
       this.runs[this.runs.length - 1] = { ...run, records: run.records + 1 };
       return;
     }
-    const most = MOST_GAP * (record + 1) * this.recordDurationS + SPARE_GAP_S;
+    const spareS = Math.min(SPARE_GAP_S, SPARE_GAP_SAMPLES * this.toleranceS);
+    const most = MOST_GAP * (record + 1) * this.recordDurationS + spareS;
     if (lateS < 0) this.fail(record, `begins at ${shown(atS)} s, before the record before it ends`);
     else if (atS > most)
       this.fail(

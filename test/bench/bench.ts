@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
 import { heartbeats } from './accuracy/heartbeats';
+import { brokenFiles } from './broken-files';
 import { detection } from './detection';
 import { doubts } from './doubts/doubts';
 import { loadWords, machineFacts } from './machine';
@@ -23,6 +24,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   accuracy,
   heartbeats,
   doubts,
+  'broken-files': brokenFiles,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]

@@ -116,6 +116,13 @@ describe('times that contradict themselves', () => {
     expect(source.recording.found[0].what).toMatch(/record 3 begins at .* cannot be trusted/);
   });
 
+  it('a gap that would take a thousand times the memory of the file is not laid out', async () => {
+    const onsets = ['+0', '+1800'];
+    const { recording } = await open(withTimes(onsets, { recordDuration: '1E-6' }));
+    expect(recording.gaps).toEqual([]);
+    expect(recording.channels.map(({ sampleCount }) => sampleCount)).toEqual([8, 4]);
+  });
+
   it('a gap in a file that calls itself uninterrupted is kept, with a warning', async () => {
     const { recording } = await open(withTimes(['+0', '+1', '+7.5'], { reserved: 'EDF+C' }));
     expect(recording.gaps).toEqual([{ channel: null, fromS: 2, toS: 7.5 }]);
