@@ -3,6 +3,7 @@ import { legibleStretches } from '../../src/heart/legible';
 import { decidedPlaces, expectedWrong, loudPlaces } from '../../src/heart/place-odds';
 import { rhythmOf } from '../../src/heart/rhythm-path';
 import { atOnce } from '../../src/numeric/in-steps';
+import type { Interval } from '../../src/recording/span';
 
 const rateHz = 100;
 const steady = () => rhythmOf(0.8, 0.06, 0.05);
@@ -51,10 +52,11 @@ describe('the chance that a place was decided wrongly', () => {
 
 it('a beat may be hidden in what is as loud as one, or weaker where no P or T wave is due, but not in a T wave or a blocked P wave', () => {
   const paused = usual.filter((_, i) => i !== 10);
-  const isLoud = (...others: typeof usual) => {
+  const isLoudIn = (doubted: readonly Interval[], ...others: typeof usual) => {
     const places = [...paused, ...others].sort((a, b) => a.sample - b.sample);
-    return loudPlaces(paused, places, decide(paused, others), rateHz)(7.3, 8.7);
+    return loudPlaces(paused, places, decide(paused, others), rateHz, doubted)(7.3, 8.7);
   };
+  const isLoud = (...others: typeof usual) => isLoudIn([], ...others);
   expect(isLoud(at(7.6, -20, 90))).toBe(true);
   expect(isLoud(at(7.6, -20, 30))).toBe(false);
   expect(isLoud(at(8, -20, 30))).toBe(true);
@@ -62,6 +64,9 @@ it('a beat may be hidden in what is as loud as one, or weaker where no P or T wa
   expect(isLoud(at(8, -20, 30, 0.95))).toBe(false);
   expect(isLoud(at(8, -20, 60, 0.95))).toBe(true);
   expect(isLoud(at(7.6, -20, 90, 0, 0.95))).toBe(false);
+  const burst = [{ fromS: 7, toS: 9 }];
+  expect(isLoudIn(burst, at(7.6, -20, 90, 0, 0.95))).toBe(true);
+  expect(isLoudIn(burst, at(8, -20, 30, 0.95))).toBe(true);
   expect(isLoud(at(8, -20, 90, 0, 0.95))).toBe(true);
 });
 
