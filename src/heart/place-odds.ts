@@ -23,9 +23,9 @@ export interface Decided {
   readonly wrong: Float64Array;
 }
 
-/** A place nearer to a beat than this is that beat. */
+/** A place nearer to a beat than this is that beat: the window of ANSI/AAMI EC57. */
 const SAME_BEAT_S = 0.15;
-/** A beat may be hidden in what has this part of a usual beat's energy, whatever its shape. */
+/** A beat may be hidden in what has this part of a usual beat's energy, whatever its shape. This and the next are choices. */
 const LOUD_PART = 0.5;
 /** Where no P or T wave of the beats about it is due, this part is enough: what is left of a beat that a lead hardly sees. */
 const LONE_PART = 0.12;
