@@ -9,7 +9,9 @@ import type { Phase } from '../src/recording/phase';
 import type { Recording } from '../src/recording/recording';
 import type { SlowWaveRhythm } from '../src/recording/rhythm';
 import type { RoleReasons, Roles } from '../src/recording/roles';
+import type { SelfCheck } from '../src/recording/self-check';
 import type { Settings } from '../src/recording/settings';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type { Interval, Span } from '../src/recording/span';
 
 /** Number a call is cancelled by. */
@@ -218,6 +220,8 @@ export interface AnalysisApi {
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
   ): Promise<Reply<DoubtList>>;
+  /** The check values through the code that makes the figures; needs no study to be open. */
+  selfCheck(job: JobId): Promise<Reply<SelfCheck>>;
   /** One part of the evidence beside the figures. The doubts that are not among `settled` are open. */
   evidence(
     job: JobId,
@@ -225,6 +229,8 @@ export interface AnalysisApi {
     settled: readonly SettledDoubt[],
     part: EvidencePart,
   ): Promise<Reply<EvidenceReply>>;
+  /** How well the routes would do on a stretch of the study with other settings; no review changes. */
+  settingsMap(job: JobId, inputs: ReviewInputs): Promise<Reply<SettingsMap>>;
   /** What looks like the beat of an open doubt; a failure of kind `wrong-input` where no such doubt stands at a beat. */
   lookAlikes(
     job: JobId,

@@ -33,7 +33,7 @@ const PICTURE_STEP_S = 0.5;
 const PICTURE_CPM = 10;
 
 /** Median height of the study's own wave, its leftover's power taken off; of its highest peaks where it has no rhythm. */
-function ownHeight(check: SlowCheck): Pick<PlantedSlow, 'ownUv' | 'ownFrom'> | null {
+export function ownHeight(check: SlowCheck): Pick<PlantedSlow, 'ownUv' | 'ownFrom'> | null {
   const { epochs, lead, leftover } = check;
   const own = lobePower(check, lead.slow.recorded);
   const rest = lobePower(check, leftover.lead);

@@ -5,7 +5,9 @@ import type { Evidence, EvidencePart } from '../src/recording/evidence/evidence'
 import type { Findings } from '../src/recording/findings';
 import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
+import type { SelfCheck } from '../src/recording/self-check';
 import type { HeartOutput } from '../src/recording/separated';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type { SeparatedSlow } from '../src/separate/route';
 import type {
   Analysis,
@@ -62,6 +64,8 @@ export interface Pipeline {
   ): Promise<EvidenceReply>;
   /** All parts of it, one after the other. */
   allEvidence(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<Evidence>;
+  /** How well the routes would do on a stretch of the study with other settings. */
+  settingsMap(inputs: ReviewInputs, job: Job): Promise<SettingsMap>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -137,6 +141,11 @@ export function createPipeline(): Pipeline {
       const { allEvidence } = await import('./pipeline-evidence');
       return allEvidence(from, job);
     },
+    async settingsMap(inputs, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      const { settingsMap } = await import('./pipeline-settings-map');
+      return settingsMap({ study: study(), from, job });
+    },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       const { lookAlikes } = await import('./pipeline-doubts');
@@ -154,4 +163,10 @@ export function createPipeline(): Pipeline {
     heartbeat: (lead) => study().signals.heart(lead),
     separated: (inputs, job) => inLine(study(), job, (one) => separatedSignals(one, inputs, job)),
   };
+}
+
+/** The check values through the code that makes the figures, on invented studies of their own; needs no study to be open. */
+export async function selfCheck(job: Job): Promise<SelfCheck> {
+  const { allChecks, runChecks } = await import('./pipeline-self-check');
+  return runChecks(allChecks(createPipeline), job);
 }

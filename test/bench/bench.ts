@@ -3,28 +3,34 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
+import { evidence } from './accuracy/evidence';
 import { heartbeats } from './accuracy/heartbeats';
 import { brokenFiles } from './broken-files';
 import { detection } from './detection';
 import { doubts } from './doubts/doubts';
 import { loadWords, machineFacts } from './machine';
+import { maps } from './maps';
 import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
 import { pageSize } from './page-size';
 import { pipeline } from './pipeline';
+import { ranges } from './ranges/ranges';
 import { separation } from './separation';
 import { markdownTable, plainTable } from './table';
 
 const PARTS: Readonly<Record<string, Part>> = {
   separation,
+  maps,
   detection,
   pipeline,
   opening,
   'page-size': pageSize,
   accuracy,
+  evidence,
   heartbeats,
   doubts,
   'broken-files': brokenFiles,
+  ranges,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]
