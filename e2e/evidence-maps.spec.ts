@@ -50,7 +50,8 @@ test('a map shows each cell’s figure by mouse and by keys, and a cell is taken
   const found = await new AxeBuilder({ page }).include('dialog').analyze();
   expect(found.violations.map(({ id }) => id)).toEqual([]);
 
-  await use.click();
+  await next.focus();
+  await page.keyboard.press('Enter');
   await expect(heart.getByText(/what is in use \(fractional, order 0\.55/)).toBeVisible({
     timeout: LONG_MS,
   });
