@@ -75,8 +75,9 @@ test('the slow wave has its map, all figures as a table, and routes beside it', 
   await page.keyboard.press('Shift+O');
   const slow = await mapOf(page, 'Slow wave');
   await expect(slow.getByRole('row', { name: /^route band/ })).toBeVisible();
-  await slow.getByText('All figures of this map').click();
-  const table = slow.getByRole('table', { name: /score in dB by order and window/ });
+  const dialog = dialogOf(page, 'Evidence');
+  await dialog.getByText('Slow wave: all figures of the map').click();
+  const table = dialog.getByRole('table', { name: /score in dB by order and window/ });
   await expect(table.getByRole('row')).toHaveCount(22);
   await expect(slow.getByText(/this study’s own median/)).toBeVisible();
   expectNoTroubles(page);
