@@ -40,7 +40,7 @@ export const createEvidenceStore = (): EvidenceStore =>
   createStore<EvidenceState>()(() => ({ ...NO_EVIDENCE, acts: null, linesOf: null }));
 
 /** The parts that belong to an edit. */
-export function evidenceAt({ found }: EvidenceState, edit: number): Partial<Evidence> {
+export function evidenceAt(found: EvidenceState['found'], edit: number): Partial<Evidence> {
   return Object.fromEntries(
     Object.entries(found)
       .filter(([, one]) => one.edit === edit)
