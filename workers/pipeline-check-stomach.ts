@@ -91,17 +91,9 @@ function coupledPercent(): number {
 /** Percent of time in the normal band of 27 epochs of which 20 are. */
 function twentyOf27(): number {
   const epochs = epochsOf(Array.from({ length: 27 }, (_, i) => (i < 20 ? 3 : 5)));
-  const none = new Float64Array(0);
-  const spectrogram = {
-    centresS: none,
-    firstCpm: 1,
-    stepCpm: 1,
-    binCount: 0,
-    levelDb: new Float32Array(0),
-  };
   const { figures } = stomachFigures({
     analysis: {
-      rhythm: { lead: '#1', epochs, spectrogram, crestsS: none },
+      rhythm: { epochs },
       epochSpectra: epochs.map(() => new Float64Array(32).fill(1)),
       binCpm: 0.5,
       missing: [],

@@ -13,6 +13,7 @@ import { useAnalysis, useApp, useSession, useShell } from './app-context';
 import { Dialog } from './dialog';
 import { EpochTable, SegmentTable } from './figure-data';
 import { FigureHistory } from './figure-history';
+import { FigureRangesList } from './figure-ranges';
 
 interface FigureDialogProps {
   /** Key of the figure catalogue, and the name of the phase or part of it. */
@@ -53,6 +54,7 @@ export function FigureDialog({ figure, phase }: FigureDialogProps) {
       }
     >
       <FigureFacts definition={definition} part={part} settings={settings} />
+      <FigureRangesList definition={definition} part={part.name} />
       {figure === 'time_none_pct' ? <WouldHaveBeenFound /> : null}
       <FigureHistory definition={definition} part={part.name} />
       {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}

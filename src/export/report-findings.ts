@@ -55,6 +55,8 @@ export interface FindingsTable {
   readonly hasWithheld: boolean;
   /** True where ranges of the site stand beside figures. */
   readonly hasRanges: boolean;
+  /** Ranges by chance that stand beneath the values, by `placeOf`; empty where none are told. */
+  readonly chances: Readonly<Record<string, string>>;
 }
 
 /** Fed phases side by side in one table; more of them go into a table below. */
@@ -131,6 +133,7 @@ function tablesOf(
       hasNotCompared: cells.some(({ kind }) => kind === 'not-compared'),
       hasWithheld: cells.some(({ kind }) => kind === 'withheld'),
       hasRanges: cells.some((cell) => cell.ranges.length > 0),
+      chances: {},
     };
   });
 }

@@ -8,6 +8,7 @@ import { type RangesFor, rangesOf, type SiteReference } from '../recording/site-
 import type { Session, Signature } from '../session/document';
 import { formatClock } from '../units/time';
 import { type AdequacyTable, adequacyTable } from './report-adequacy';
+import { withChances } from './report-chances';
 import { type EventRow, eventRows } from './report-events';
 import { type FindingsTable, mainTables, otherTables } from './report-findings';
 import { type Hide, identityHider, nothingHidden } from './report-hiding';
@@ -92,6 +93,9 @@ export function reportModel(input: ReportInput): ReportModel {
   const status = reportStatus(session);
   const signed = status.kind === 'draft' ? null : status.signature;
   const findings = signed?.findings ?? withEvidenceMarks(input.findings, input.evidence);
+  const differences = signed ? differencesSinceSigning(signed.findings, input.findings) : [];
+  // Ranges are computed of the figures as they are now; they stand beside signed ones only where these are the same.
+  const hold = differences.length === 0;
   const ranges = hiddenIn(rangesOf(input.siteReference, state.protocol), hide);
   const words = hide(statusWords(status, session.log.length, identityHidden));
   return {
@@ -112,7 +116,9 @@ export function reportModel(input: ReportInput): ReportModel {
     ].map(hide),
     protocol: protocolFacts(state.protocol, hide),
     events: eventRows(state, hide),
-    main: mainTables(findings, ranges),
+    main: mainTables(findings, ranges).map((table) =>
+      withChances(table, hold ? (input.evidence.ranges ?? null) : null),
+    ),
     others: otherTables(findings, ranges),
     seen: findings.seen.map(({ fromS, toS, text }) => ({
       name: `${formatClock(fromS)}–${formatClock(toS)}`,
@@ -125,7 +131,7 @@ export function reportModel(input: ReportInput): ReportModel {
     notes: hide(signed?.notes ?? state.notes),
     conclusion: hide(signed?.conclusion ?? state.conclusion),
     signatures: signatureRows(status, identityHidden, hide),
-    differences: signed ? differencesSinceSigning(signed.findings, input.findings) : [],
+    differences,
     ...makingOf(input, signed, hide),
   };
 }

@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
+import { evidence } from './accuracy/evidence';
 import { heartbeats } from './accuracy/heartbeats';
 import { brokenFiles } from './broken-files';
 import { detection } from './detection';
@@ -13,6 +14,7 @@ import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
 import { pageSize } from './page-size';
 import { pipeline } from './pipeline';
+import { ranges } from './ranges/ranges';
 import { separation } from './separation';
 import { markdownTable, plainTable } from './table';
 
@@ -24,9 +26,11 @@ const PARTS: Readonly<Record<string, Part>> = {
   opening,
   'page-size': pageSize,
   accuracy,
+  evidence,
   heartbeats,
   doubts,
   'broken-files': brokenFiles,
+  ranges,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]
