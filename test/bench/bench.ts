@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
+import { evidence } from './accuracy/evidence';
 import { heartbeats } from './accuracy/heartbeats';
 import { brokenFiles } from './broken-files';
 import { detection } from './detection';
@@ -25,6 +26,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   opening,
   'page-size': pageSize,
   accuracy,
+  evidence,
   heartbeats,
   doubts,
   'broken-files': brokenFiles,
