@@ -118,9 +118,7 @@ describe('what is printed', () => {
 });
 
 describe('the command as it is built', () => {
-  // Below node_modules, where the built command finds its packages.
-  mkdirSync('node_modules/.cache', { recursive: true });
-  const folder = mkdtempSync('node_modules/.cache/self-check-');
+  let folder = '';
   const run = async () => {
     try {
       const { stdout } = await promisify(execFile)('node', [
@@ -135,6 +133,9 @@ describe('the command as it is built', () => {
   };
 
   beforeAll(async () => {
+    // Below node_modules, where the built command finds its packages.
+    mkdirSync('node_modules/.cache', { recursive: true });
+    folder = mkdtempSync('node_modules/.cache/self-check-');
     await build({
       mode: 'node',
       logLevel: 'error',
