@@ -12,6 +12,7 @@ import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
 import { pageSize } from './page-size';
 import { pipeline } from './pipeline';
+import { planted } from './planted/planted';
 import { separation } from './separation';
 import { markdownTable, plainTable } from './table';
 
@@ -25,6 +26,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   heartbeats,
   doubts,
   'broken-files': brokenFiles,
+  planted,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]
