@@ -10,6 +10,8 @@ const END_S = 0.04;
 const MOST_BEATS = 600;
 /** A beat is taken out at no more than so many times the average's size. */
 const LARGEST = 2;
+/** Beats looked at between turns for others. */
+const BEATS_A_TURN = 40;
 /** Samples that interpolation needs beside a row. */
 const SIDE = 10;
 
@@ -52,13 +54,13 @@ function rowAt(
   return row.map((value, i) => value - before - slope * (i - (end - 1) / 2));
 }
 
-/** Average of the beats of one class over some stretches; null where none can be read. */
-export function leadAverage(
+/** Average of the beats of one class over some stretches, with a rest now and then; null where none can be read. */
+export function* leadAverage(
   stretches: readonly BeatStretch[],
   beatClass: number,
   rateHz: number,
   usualRrS: number,
-): LeadAverage | null {
+): Generator<void, LeadAverage | null> {
   const reach = (side: 'before' | 'after') =>
     Math.round(Math.min(REACH_S[side], REACH_SHARE[side] * usualRrS) * rateHz);
   const centre = reach('before');
@@ -78,6 +80,7 @@ export function leadAverage(
     if (!row) continue;
     for (let i = 0; i < length; i += 1) sum[i] += row[i];
     count += 1;
+    if (count % BEATS_A_TURN === 0) yield;
   }
   if (count === 0) return null;
   const samples = sum.map((value, i) => {
@@ -123,16 +126,17 @@ function sizeOf(
  * A stretch of the heart lead less its beats: each less the average of its class in its own size (the local average beat).
  * What an average leaves of a beat stays, so the places of beats are left out where anything is scored.
  */
-export function withoutBeats(
+export function* withoutBeats(
   stretch: BeatStretch,
   averages: ReadonlyMap<number, LeadAverage>,
   rateHz: number,
-): Float64Array {
+): Generator<void, Float64Array> {
   const end = Math.max(1, Math.round(END_S * rateHz));
   const out = stretch.samples.slice();
-  stretch.places.forEach((place, k) => {
+  for (const [k, place] of stretch.places.entries()) {
     const average = averages.get(stretch.classes[k]);
     if (average) addAverage(out, average, place, -sizeOf(stretch, place, average, end));
-  });
+    if (k % BEATS_A_TURN === BEATS_A_TURN - 1) yield;
+  }
   return out;
 }

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { addAverage, leadAverage, withoutBeats } from '../../src/heart/heart-leftover';
 import { beatScore, plantedTimes, rmssdOfTimes } from '../../src/heart/planted-beats';
+import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
 
 const RATE_HZ = 250;
@@ -34,9 +35,9 @@ const stretch = {
 };
 
 describe('the leftover of a heart lead', () => {
-  const average = leadAverage([stretch], 0, RATE_HZ, 0.9);
+  const average = atOnce(leadAverage([stretch], 0, RATE_HZ, 0.9));
   if (!average) throw new Error('there is an average');
-  const left = withoutBeats(stretch, new Map([[0, average]]), RATE_HZ);
+  const left = atOnce(withoutBeats(stretch, new Map([[0, average]]), RATE_HZ));
   const rmsNear = (x: Float64Array, halfS: number) => {
     let [squares, count] = [0, 0];
     for (const timeS of timesS)
