@@ -9,6 +9,7 @@ import {
   expectNoTroubles,
   freshPage,
   goTo,
+  LONG_MS,
   openStudy,
   press,
   RECORD,
@@ -16,10 +17,13 @@ import {
   RECORD_FOLDER,
   reviewAs,
 } from './support';
-import { downloadResults, downloadSession, unzipStored } from './support-results';
+import { downloaded, downloadResults, downloadSession, unzipStored } from './support-results';
 
 const ROOT = fileURLToPath(new URL('..', import.meta.url));
-const NAMES = ['beats.csv', 'epochs.csv', 'minutes.csv', 'spans.csv', 'findings.json'];
+const NAMES = [
+  ...['beats.csv', 'epochs.csv', 'minutes.csv', 'spans.csv', 'findings.json', 'report.html'],
+  ...['spectrogram.svg', 'slow-waves.svg', 'trend.svg', 'separated.edf', 'annotations.edf'],
+];
 const run = promisify(execFile);
 const analyse = (...words: readonly string[]) =>
   run(process.execPath, ['workers/dist/analyse.mjs', ...words], { cwd: ROOT });
@@ -38,13 +42,15 @@ test.afterAll(async () => {
 });
 test.afterEach(() => expectNoTroubles(page));
 
-/** The page's zip holds, byte for byte, what the command line wrote into a folder beside the separated signals. */
-async function expectSameBytes(out: string): Promise<void> {
-  const zip = await downloadResults(page);
-  expect(zip.name).toBe(`${RECORD_CODE}-results.zip`);
+/** The page's zip holds, byte for byte, what the command line wrote into a folder. */
+async function expectSameBytes(out: string, withoutIdentity = false): Promise<void> {
+  const zip = await downloadResults(page, withoutIdentity);
+  expect(zip.name).toBe(
+    withoutIdentity ? 'results-without-identity.zip' : `${RECORD_CODE}-results.zip`,
+  );
   const files = unzipStored(zip.bytes);
   expect([...files.keys()]).toEqual(NAMES);
-  expect((await readdir(out)).sort()).toEqual([...NAMES, 'separated.edf'].sort());
+  expect((await readdir(out)).sort()).toEqual([...NAMES].sort());
   for (const [name, bytes] of files) {
     const written = await readFile(join(out, name));
     expect(bytes.toString('utf8'), name).toBe(written.toString('utf8'));
@@ -84,6 +90,33 @@ test('with edits, spans, phases and other settings too, by the downloaded sessio
   expect((await downloadResults(page)).bytes.equals(zip.bytes), 'the same again').toBe(true);
   const findings = JSON.parse(await readFile(join(out, 'findings.json'), 'utf8'));
   expect(findings).toMatchObject({ edit: 6, settings: { slow_route: 'fractional' } });
+});
+
+test('without identity too, and then nothing says whose they are', async () => {
+  const session = join(folder, 'bare.bicadence.json');
+  await writeFile(session, (await downloadSession(page)).bytes);
+  const out = join(folder, 'bare');
+  await analyse(RECORD, '--session', session, '--without-identity', '--out', out);
+  await expectSameBytes(out, true);
+  for (const name of NAMES) {
+    const text = (await readFile(join(out, name))).toString('latin1');
+    expect(text, name).not.toMatch(/MITDB|T\. Technician|2020-03-01|record208/);
+  }
+});
+
+test('each file by itself, and a picture as PNG', async () => {
+  await press(page, 'Control+Shift+s');
+  const dialog = page.getByRole('dialog', { name: 'Download the results' });
+  const one = (name: string) => dialog.getByRole('button', { name, exact: true });
+  await expect(one('Download beats.csv')).toBeVisible({ timeout: LONG_MS });
+  const beats = await downloaded(page, () => one('Download beats.csv').click());
+  expect(beats.name).toBe(`${RECORD_CODE}-beats.csv`);
+  expect(beats.bytes.toString('utf8')).toMatch(/^time_s,sample,/);
+  const png = await downloaded(page, () => one('Download trend.svg as PNG').click());
+  expect(png.name).toBe(`${RECORD_CODE}-trend.png`);
+  expect(png.bytes.subarray(1, 4).toString('latin1')).toBe('PNG');
+  expect(png.bytes.readUInt32BE(16)).toBe(2400);
+  await press(page, 'Escape');
 });
 
 test('the command line refuses a session of another study, and says why', async () => {

@@ -1,6 +1,6 @@
 import { readFile } from 'node:fs/promises';
 import { expect, type Page } from 'playwright/test';
-import { settled } from './support';
+import { dialogOf, LONG_MS, settled } from './support';
 
 /** A file that the page offered. */
 export interface Offered {
@@ -19,9 +19,17 @@ export const downloadSession = (page: Page): Promise<Offered> =>
   downloaded(page, () => page.keyboard.press('Control+s'));
 
 /** The zip of results as the page writes it. */
-export async function downloadResults(page: Page): Promise<Offered> {
+export async function downloadResults(page: Page, withoutIdentity = false): Promise<Offered> {
   await settled(page);
-  return downloaded(page, () => page.keyboard.press('Control+Shift+s'));
+  await page.keyboard.press('Control+Shift+s');
+  const dialog = dialogOf(page, 'Download the results');
+  const all = dialog.getByRole('button', { name: 'All as one zip' });
+  await expect(all).toBeEnabled({ timeout: LONG_MS });
+  if (withoutIdentity) await dialog.getByLabel('Without identity').check();
+  const offered = await downloaded(page, () => all.click());
+  await dialog.getByRole('button', { name: 'Close' }).click();
+  await expect(dialog).toBeHidden();
+  return offered;
 }
 
 const LOCAL_HEADER = 0x04034b50;

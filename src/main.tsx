@@ -36,7 +36,7 @@ function ReportNow() {
   const state = useStore(session, (now) => now.session?.state);
   const open = countOpen(listed, state);
   const edit = useStore(session, (now) => now.session?.log.length ?? 0);
-  const found = useStore(evidence);
+  const found = useStore(evidence, (now) => now.found);
   const known = useMemo(() => evidenceAt(found, edit), [found, edit]);
   return <Report {...stores} signals={controller.signals} openDoubts={open} evidence={known} />;
 }

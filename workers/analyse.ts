@@ -1,154 +1,13 @@
-import { createHash } from 'node:crypto';
-import { createReadStream, openAsBlob } from 'node:fs';
-import { mkdir, readFile, writeFile } from 'node:fs/promises';
-import { basename, extname, join } from 'node:path';
-import { exportFiles } from '../src/export/all-files';
-import { separatedEdf } from '../src/export/separated-edf';
-import { NO_BEATS } from '../src/recording/beat';
+import { mkdir, writeFile } from 'node:fs/promises';
+import { join } from 'node:path';
+import { bytesOf } from '../src/export/result-file';
+import { type StudyOutcome, studiesCsv } from '../src/export/studies-csv';
 import { Refusal } from '../src/recording/failure';
-import { leadChannels, leadKey } from '../src/recording/lead';
-import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
-import { confirmStudy } from '../src/session/confirm-study';
-import type { Session, SessionState } from '../src/session/document';
-import { initialState, studyIdentity } from '../src/session/initial-state';
-import { beginSession } from '../src/session/log';
-import { notesOf } from '../src/session/note-edits';
-import { textToSession } from '../src/session/read-document';
-import { editNumber } from '../src/session/store';
-import { PROGRAM } from '../src/units/program';
-import type { Opened } from './analysis-api';
-import { checkRoles, codeOf, phasesWithin } from './command-choices';
+import { resultFiles } from '../src/report/result-files';
+import { resultsWithoutIdentity } from '../src/report/results-without-identity';
+import { folderNames } from './command-folders';
 import { type AnalyseRequest, parseArguments, USAGE, WrongArguments } from './command-line';
-import { proposalOf } from './command-proposal';
-import { type Job, startJob } from './job';
-import { createPipeline, type Pipeline } from './pipeline';
-
-async function proposedSession(
-  pipeline: Pipeline,
-  { recording, quickKey }: Opened,
-  request: AnalyseRequest,
-  sha256: string,
-  job: Job,
-): Promise<Session> {
-  const { route } = request;
-  const settings: Settings = route
-    ? {
-        ...DEFAULT_SETTINGS,
-        slowRoute: route,
-        heartRoute: route === 'beat-average' ? 'band' : route,
-      }
-    : DEFAULT_SETTINGS;
-  const proposal = await proposalOf(pipeline, recording, request, settings, job);
-  const study = studyIdentity(recording, quickKey, codeOf(request.code, recording, sha256));
-  return confirmStudy(
-    beginSession(initialState(study, { ...proposal, settings })),
-    sha256,
-    quickKey,
-  );
-}
-
-async function keptSession(
-  path: string,
-  { recording, quickKey }: Opened,
-  sha256: string,
-): Promise<Session> {
-  const session = confirmStudy(textToSession(await readFile(path, 'utf8')), sha256, quickKey);
-  checkRoles(session.state.roles, recording);
-  phasesWithin(session.state.phases, recording);
-  return session;
-}
-
-async function sha256Of(path: string): Promise<string> {
-  const hash = createHash('sha256');
-  for await (const chunk of createReadStream(path)) hash.update(chunk);
-  return hash.digest('hex');
-}
-
-async function analyseStudy(path: string, folder: string, request: AnalyseRequest): Promise<void> {
-  const { job } = startJob(() => undefined);
-  const pipeline = createPipeline();
-  const file = await openAsBlob(path);
-  const reading = { rateHz: request.rateHz, unit: request.unit };
-  const opened = await pipeline.open(1, file, basename(path), reading, job);
-  pipeline.accept(opened.ticket);
-  const sha256 = await sha256Of(path);
-  const session = request.session
-    ? await keptSession(request.session, opened, sha256)
-    : await proposedSession(pipeline, opened, request, sha256, job);
-  const { state } = session;
-  const edit = editNumber(session);
-  const analysis = await pipeline.analyse({ ...state, edit }, job);
-  const openDoubts = await pipeline.openDoubts({ ...state, edit }, state.doubts, job);
-  const evidence = await pipeline.allEvidence({ ...state, edit }, state.doubts, job);
-  const files = exportFiles({
-    recording: opened.recording,
-    state,
-    sha256,
-    program: PROGRAM,
-    edit,
-    stomach: analysis.stomach ?? [],
-    heart: analysis.heart?.value ?? null,
-    breathing: analysis.breathing,
-    findings: analysis.findings,
-    openDoubts,
-    evidence,
-  });
-  await mkdir(folder, { recursive: true });
-  for (const { name, text } of files) await writeFile(join(folder, name), text);
-  const separated = separatedOf(pipeline, opened, state);
-  await writeFile(join(folder, 'separated.edf'), Buffer.concat(separated));
-}
-
-/** What made the slow wave, in the 80 characters of a header's field. */
-const slowPrefilter = ({ slowRoute, slowBandCpm, slowGain, breathingOut }: Settings): string =>
-  slowRoute !== 'fractional'
-    ? `slow wave, ${slowRoute} ${slowBandCpm.join('-')} cpm, gain ${slowGain}, breathing out ${breathingOut}`
-    : `slow wave, ${slowRoute}`;
-
-/** The separated signals of the analysed state, as an EDF+ file. */
-function separatedOf(pipeline: Pipeline, { recording }: Opened, state: SessionState) {
-  const { roles, settings } = state;
-  const heartbeat = roles.heart && pipeline.heartbeat(roles.heart);
-  return separatedEdf({
-    code: state.study.code,
-    start: recording.start.kind === 'known' ? recording.start.local : null,
-    durationS: recording.durationS,
-    program: PROGRAM,
-    slow: roles.slow.flatMap((lead) => {
-      const drawn = pipeline.slowWave(lead);
-      if (!drawn) return [];
-      const { rateHz, slowWave } = drawn;
-      const prefilter = slowPrefilter(settings);
-      return [{ label: `slow ${leadKey(lead)}`, rateHz, samples: slowWave, prefilter }];
-    }),
-    heart:
-      roles.heart && heartbeat
-        ? {
-            label: `heart ${leadKey(roles.heart)}`,
-            rateHz: heartbeat.rateHz,
-            samples: heartbeat.heartbeat,
-            prefilter: `heartbeat, route ${settings.heartRoute}`,
-          }
-        : null,
-    beats: heartbeat ? state.beats : NO_BEATS,
-    beatRateHz: roles.heart ? recording.channels[leadChannels(roles.heart)[0]].rateHz : 1,
-    phases: state.phases,
-    spans: state.spans,
-    notes: notesOf(state),
-  });
-}
-
-/** Folder names of several studies: the file's name without its ending, told apart by a number where two are equal. */
-function foldersOf(paths: readonly string[], out: string): readonly string[] {
-  if (paths.length === 1) return [out];
-  const used = new Map<string, number>();
-  return paths.map((path) => {
-    const name = basename(path, extname(path));
-    const count = (used.get(name) ?? 0) + 1;
-    used.set(name, count);
-    return join(out, count === 1 ? name : `${name}-${count}`);
-  });
-}
+import { analyseStudy } from './command-study';
 
 function reasonOf(error: unknown): string {
   if (!(error instanceof Refusal)) return error instanceof Error ? error.message : String(error);
@@ -156,21 +15,43 @@ function reasonOf(error: unknown): string {
   return [message, place ? `(${place})` : '', remedy].filter((part) => part !== '').join(' ');
 }
 
+/** Analyses one study and writes its files; what went wrong is told and belongs to that study alone. */
+async function outcomeOf(
+  path: string,
+  name: string,
+  folder: string,
+  request: AnalyseRequest,
+): Promise<StudyOutcome> {
+  const { withoutIdentity } = request;
+  try {
+    const all = await analyseStudy(path, request);
+    const input = withoutIdentity ? resultsWithoutIdentity(all) : all;
+    await mkdir(folder, { recursive: true });
+    for (const file of resultFiles(input)) await writeFile(join(folder, file.name), bytesOf(file));
+    process.stdout.write(`${path}: written to ${folder}\n`);
+    return { kind: 'analysed', folder: name, input };
+  } catch (error) {
+    if (error instanceof WrongArguments) throw error;
+    const reason = reasonOf(error);
+    process.stderr.write(`${path}: ${reason}\n`);
+    const told = withoutIdentity ? 'not analysed; the reason stood on standard error' : reason;
+    return { kind: 'failed', folder: name, reason: told };
+  }
+}
+
 async function main(words: readonly string[]): Promise<number> {
   const request = parseArguments(words);
-  const folders = foldersOf(request.studies, request.out);
-  let failed = 0;
-  for (const [i, path] of request.studies.entries()) {
-    try {
-      await analyseStudy(path, folders[i], request);
-      process.stdout.write(`${path}: written to ${folders[i]}\n`);
-    } catch (error) {
-      if (error instanceof WrongArguments) throw error;
-      failed += 1;
-      process.stderr.write(`${path}: ${reasonOf(error)}\n`);
-    }
+  const { studies, out, withoutIdentity } = request;
+  const several = studies.length > 1;
+  const names = folderNames(studies, withoutIdentity);
+  const outcomes: StudyOutcome[] = [];
+  for (const [i, path] of studies.entries())
+    outcomes.push(await outcomeOf(path, names[i], several ? join(out, names[i]) : out, request));
+  if (several) {
+    await mkdir(out, { recursive: true });
+    await writeFile(join(out, 'studies.csv'), studiesCsv(outcomes));
   }
-  return failed > 0 ? 1 : 0;
+  return outcomes.some(({ kind }) => kind === 'failed') ? 1 : 0;
 }
 
 try {

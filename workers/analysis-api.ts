@@ -10,6 +10,7 @@ import type { Recording } from '../src/recording/recording';
 import type { SlowWaveRhythm } from '../src/recording/rhythm';
 import type { RoleReasons, Roles } from '../src/recording/roles';
 import type { Settings } from '../src/recording/settings';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type { Interval, Span } from '../src/recording/span';
 
 /** Number a call is cancelled by. */
@@ -127,6 +128,16 @@ export interface SeparationFacts {
   readonly leadS: number;
 }
 
+/** The separated signals as they were drawn last, in uV; NaN where there is nothing. */
+export interface SeparatedSignals {
+  readonly slow: readonly {
+    readonly lead: string;
+    readonly rateHz: number;
+    readonly samples: Float64Array;
+  }[];
+  readonly heart: { readonly rateHz: number; readonly samples: Float32Array } | null;
+}
+
 export interface HeartResults {
   readonly rr: RrSeries;
   readonly segments: readonly HeartSegment[];
@@ -215,6 +226,8 @@ export interface AnalysisApi {
     settled: readonly SettledDoubt[],
     part: EvidencePart,
   ): Promise<Reply<EvidenceReply>>;
+  /** How well the routes would do on a stretch of the study with other settings; no review changes. */
+  settingsMap(job: JobId, inputs: ReviewInputs): Promise<Reply<SettingsMap>>;
   /** What looks like the beat of an open doubt; a failure of kind `wrong-input` where no such doubt stands at a beat. */
   lookAlikes(
     job: JobId,
@@ -229,6 +242,8 @@ export interface AnalysisApi {
   figuresOf(job: JobId, states: readonly ReviewInputs[]): Promise<Reply<readonly Findings[]>>;
   /** Finds the beats of a stretch with other choices. */
   detectWithin(job: JobId, request: WithinRequest): Promise<Reply<FoundWithin>>;
+  /** The separated signals of a review. */
+  separated(job: JobId, inputs: ReviewInputs): Promise<Reply<SeparatedSignals>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   cancel(job: JobId): void;

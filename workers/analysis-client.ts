@@ -4,6 +4,7 @@ import type { EvidencePart } from '../src/recording/evidence/evidence';
 import type { Failure, Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { Roles } from '../src/recording/roles';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type {
   Analysis,
   AnalysisApi,
@@ -19,6 +20,7 @@ import type {
   PlacedBeat,
   Proposal,
   ReviewInputs,
+  SeparatedSignals,
   TextReading,
   WithinRequest,
   WorkerNews,
@@ -58,6 +60,7 @@ export interface AnalysisClient {
     part: EvidencePart,
     options?: CallOptions,
   ): Promise<Reply<EvidenceReply>>;
+  settingsMap(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<SettingsMap>>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -69,6 +72,7 @@ export interface AnalysisClient {
     options?: CallOptions,
   ): Promise<Reply<readonly Findings[]>>;
   detectWithin(request: WithinRequest, options?: CallOptions): Promise<Reply<FoundWithin>>;
+  separated(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<SeparatedSignals>>;
   columns(request: ColumnsRequest): Promise<Reply<Columns>>;
   placeBeat(nearS: number): Promise<Reply<PlacedBeat>>;
   /** Ends the worker for good. */
@@ -229,10 +233,12 @@ export function createAnalysisClient(
       call((api, job) => api.doubts(job, inputs, settled), options),
     evidence: (inputs, settled, part, options) =>
       call((api, job) => api.evidence(job, inputs, settled, part), options),
+    settingsMap: (inputs, options) => call((api, job) => api.settingsMap(job, inputs), options),
     lookAlikes: (inputs, settled, doubtId, options) =>
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),
     figuresOf: (states, options) => call((api, job) => api.figuresOf(job, states), options),
     detectWithin: (request, options) => call((api, job) => api.detectWithin(job, request), options),
+    separated: (inputs, options) => call((api, job) => api.separated(job, inputs), options),
     columns: (request) => call((api) => api.columns(request)),
     placeBeat: (nearS) => call((api) => api.placeBeat(nearS)),
     close() {

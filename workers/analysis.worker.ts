@@ -72,10 +72,12 @@ const api: AnalysisApi = {
   doubts: (id, inputs, settled) => inJob(id, (job) => pipeline.doubts(inputs, settled, job)),
   evidence: (id, inputs, settled, part) =>
     inJob(id, (job) => pipeline.evidence(inputs, settled, part, job)),
+  settingsMap: (id, inputs) => inJob(id, (job) => pipeline.settingsMap(inputs, job)),
   lookAlikes: (id, inputs, settled, doubtId) =>
     inJob(id, (job) => pipeline.lookAlikes(inputs, settled, doubtId, job)),
   figuresOf: (id, states) => inJob(id, (job) => pipeline.figuresOf(states, job)),
   detectWithin: (id, request) => inJob(id, (job) => pipeline.detectWithin(request, job)),
+  separated: (id, inputs) => inJob(id, (job) => pipeline.separated(inputs, job)),
   columns: (request) => reply(() => pipeline.columns(request)),
   placeBeat: (nearS) => reply(() => pipeline.placeBeat(nearS)),
   cancel: (id) => running.get(id)?.cancel(),

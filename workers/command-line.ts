@@ -15,6 +15,8 @@ export interface AnalyseRequest {
   readonly rateHz: number | null;
   readonly unit: string | null;
   readonly out: string;
+  /** Whether what is written says whose study it is. */
+  readonly withoutIdentity: boolean;
 }
 
 export const USAGE = `npm run analyse -- STUDY... [options]
@@ -28,7 +30,9 @@ export const USAGE = `npm run analyse -- STUDY... [options]
   --route NAME     band, fractional or beat-average
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
-  --out DIR        where the files go (default: here)
+  --out DIR        where the files go (default: here); several studies get a folder each and one studies.csv
+  --without-identity
+                   X for who it is, dates moved, no texts that people wrote, no file names
 LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed, 2 wrong arguments.`;
 
 /** Wrong arguments, in words for the person. */
@@ -46,12 +50,15 @@ const OPTIONS = [
   'unit',
   'out',
 ];
+/** Options without a value. */
+const FLAGS = ['without-identity'];
 
 /** Reads the arguments after the program's name. Throws WrongArguments. */
 export function parseArguments(words: readonly string[]): AnalyseRequest {
   const single = new Map<string, string>();
   const slow: string[] = [];
   const studies: string[] = [];
+  const flags = new Set<string>();
   for (let i = 0; i < words.length; i += 1) {
     const word = words[i];
     if (!word.startsWith('--')) {
@@ -59,6 +66,10 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
       continue;
     }
     const name = word.slice(2);
+    if (FLAGS.includes(name)) {
+      flags.add(name);
+      continue;
+    }
     if (!OPTIONS.includes(name)) throw new WrongArguments(`there is no option ${word}`);
     const value = words.at(i + 1);
     if (value === undefined || value.startsWith('--'))
@@ -91,6 +102,7 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
     rateHz: parseRate(single.get('rate')),
     unit: single.get('unit') ?? null,
     out: single.get('out') ?? '.',
+    withoutIdentity: flags.has('without-identity'),
   };
 }
 

@@ -46,3 +46,16 @@ export function leadSamples(
   const minus = samplesOf(lead.minus);
   return samplesOf(lead.plus).map((value, i) => value - minus[i]);
 }
+
+/** Samples [from, to) of a lead, read from the file. */
+export async function readLead(
+  source: SignalSource,
+  lead: Lead,
+  from: number,
+  to: number,
+): Promise<Float64Array> {
+  const channels = leadChannels(lead);
+  const read: Float64Array[] = [];
+  for (const channel of channels) read.push(await source.read(channel, from, to));
+  return leadSamples(lead, (channel) => read[channels.indexOf(channel)]);
+}

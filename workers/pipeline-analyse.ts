@@ -2,7 +2,7 @@ import type { Findings } from '../src/recording/findings';
 import { type Lead, leadKey } from '../src/recording/lead';
 import { spansOf } from '../src/recording/span';
 import type { SeparatedSlow } from '../src/separate/route';
-import type { Analysis, ReviewInputs } from './analysis-api';
+import type { Analysis, ReviewInputs, SeparatedSignals } from './analysis-api';
 import { breathesWithin } from './breathing-reference';
 import { type Job, withRests } from './job';
 import { blockedOf, detectionOf, proposedSpans, toJudge } from './pipeline-beats';
@@ -28,6 +28,19 @@ export async function doubtInputs(
   const known = study.last && sameReview(study.last.from.inputs, inputs) ? study.last : null;
   const { from, computed } = known ?? (await reckon(study, inputs, job));
   return { ...from, inputs, computed, recording: study.source.recording };
+}
+
+/** The separated signals of a review, as they are drawn for it. */
+export async function separatedSignals(
+  study: Study,
+  inputs: ReviewInputs,
+  job: Job,
+): Promise<SeparatedSignals> {
+  const { slow, heart } = await doubtInputs(study, inputs, job);
+  return {
+    slow: slow.map(({ lead, rateHz, slowWave }) => ({ lead, rateHz, samples: slowWave })),
+    heart: heart && { rateHz: heart.rateHz, samples: heart.heartbeat },
+  };
 }
 
 async function reckon(study: Study, inputs: ReviewInputs, job: Job): Promise<Reckoned> {

@@ -3,7 +3,7 @@ import {
   addAverage,
   type LeadAverage,
   leadAverage,
-  withoutBeats,
+  withoutOwnBeats,
 } from '../src/heart/heart-leftover';
 import {
   type BeatScore,
@@ -188,7 +188,7 @@ export async function plantedHeart(
   const planted = read.map(({ within }) => plantedTimes(within.fromS, within.toS, rrS, random));
   const leftovers: Float64Array[] = [];
   for (const stretch of read)
-    leftovers.push(await withRests(withoutBeats(stretch, averages, rateHz), job));
+    leftovers.push(await withRests(withoutOwnBeats(stretch, averages, rateHz), job));
   const routes = await loadRoutes([inputs.settings.heartRoute]);
   const check = { from, read, leftovers, average, planted, rateHz, routes };
   const results: PlantedBeats[] = [];

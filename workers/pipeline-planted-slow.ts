@@ -33,7 +33,7 @@ const PICTURE_STEP_S = 0.5;
 const PICTURE_CPM = 10;
 
 /** Median height of the study's own wave, its leftover's power taken off; of its highest peaks where it has no rhythm. */
-async function ownHeight(
+export async function ownHeight(
   check: SlowCheck,
   job: Job,
 ): Promise<Pick<PlantedSlow, 'ownUv' | 'ownFrom'> | null> {

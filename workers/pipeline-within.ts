@@ -1,7 +1,7 @@
 import { detectInSteps } from '../src/heart/detect';
 import { type BeatList, NO_BEATS } from '../src/recording/beat';
 import { Refusal } from '../src/recording/failure';
-import { type Lead, leadChannels, leadFault, leadKey, sameLead } from '../src/recording/lead';
+import { leadChannels, leadFault, leadKey, sameLead } from '../src/recording/lead';
 import type { SignalSource } from '../src/recording/recording';
 import type { HeartOutput } from '../src/recording/separated';
 import { type Interval, joinIntervals, spansOf } from '../src/recording/span';
@@ -11,7 +11,7 @@ import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import { formatClock } from '../src/units/time';
 import type { FoundWithin, WithinRequest } from './analysis-api';
 import { inTurns, type Job } from './job';
-import { leadSamples } from './lead-pass';
+import { readLead } from './lead-pass';
 
 /** Looked at to each side of the stretch, so that the shapes and the rhythm of its surroundings are known. */
 const AROUND_S = 60;
@@ -141,18 +141,6 @@ async function readStretch(
   const startS = from / rateHz;
   const cut = cutFrom(heart, { fromS: within.fromS - startS, toS: within.toS - startS });
   return { ...cut, firstSample: from + cut.firstSample };
-}
-
-async function readLead(
-  source: SignalSource,
-  lead: Lead,
-  from: number,
-  to: number,
-): Promise<Float64Array> {
-  const channels = leadChannels(lead);
-  const read: Float64Array[] = [];
-  for (const channel of channels) read.push(await source.read(channel, from, to));
-  return leadSamples(lead, (channel) => read[channels.indexOf(channel)]);
 }
 
 /** Beats with their ticks told by another clock; of two that fall on one tick the first stays. */

@@ -6,6 +6,7 @@ import type { Findings } from '../src/recording/findings';
 import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
 import type { HeartOutput } from '../src/recording/separated';
+import type { SettingsMap } from '../src/recording/settings-map';
 import type { SeparatedSlow } from '../src/separate/route';
 import type {
   Analysis,
@@ -21,11 +22,12 @@ import type {
   PlacedBeat,
   Proposal,
   ReviewInputs,
+  SeparatedSignals,
   TextReading,
   WithinRequest,
 } from './analysis-api';
 import type { Job } from './job';
-import { analyse, doubtInputs, figuresOf } from './pipeline-analyse';
+import { analyse, doubtInputs, figuresOf, separatedSignals } from './pipeline-analyse';
 import { placeNear } from './pipeline-beats';
 import { columnsOf } from './pipeline-columns';
 import type { EvidenceInputs } from './pipeline-evidence';
@@ -61,6 +63,8 @@ export interface Pipeline {
   ): Promise<EvidenceReply>;
   /** All parts of it, one after the other. */
   allEvidence(inputs: ReviewInputs, settled: readonly SettledDoubt[], job: Job): Promise<Evidence>;
+  /** How well the routes would do on a stretch of the study with other settings. */
+  settingsMap(inputs: ReviewInputs, job: Job): Promise<SettingsMap>;
   lookAlikes(
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
@@ -73,6 +77,8 @@ export interface Pipeline {
   detectWithin(request: WithinRequest, job: Job): Promise<FoundWithin>;
   columns(request: ColumnsRequest): Promise<Columns>;
   placeBeat(nearS: number): PlacedBeat;
+  /** The separated signals of a review, as they are drawn. */
+  separated(inputs: ReviewInputs, job: Job): Promise<SeparatedSignals>;
   /** The slow wave of a lead as it was drawn last; null before the first analysis. */
   slowWave(lead: Lead): SeparatedSlow | null;
   /** The heartbeat of a lead; null where it was not read for one. */
@@ -134,6 +140,11 @@ export function createPipeline(): Pipeline {
       const { allEvidence } = await import('./pipeline-evidence');
       return allEvidence(from, job);
     },
+    async settingsMap(inputs, job) {
+      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+      const { settingsMap } = await import('./pipeline-settings-map');
+      return settingsMap({ study: study(), from, job });
+    },
     async lookAlikes(inputs, settled, doubtId, job) {
       const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
       const { lookAlikes } = await import('./pipeline-doubts');
@@ -149,5 +160,6 @@ export function createPipeline(): Pipeline {
     placeBeat: (nearS) => placeNear(study(), nearS),
     slowWave: (lead) => study().signals.drawn(lead),
     heartbeat: (lead) => study().signals.heart(lead),
+    separated: (inputs, job) => inLine(study(), job, (one) => separatedSignals(one, inputs, job)),
   };
 }

@@ -11,6 +11,7 @@ import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
 import type { Settings } from '../recording/settings';
+import type { ResultInput } from '../report/result-files';
 import type { Edit, Signature } from '../session/document';
 
 /** A session kept in this browser, as the start screen lists it: by code, never by name. */
@@ -76,7 +77,8 @@ export interface StudyController {
   /** Looks for the beats of a stretch with other choices; nothing of the session changes. */
   findWithin(request: WithinRequest, options: CallOptions): Promise<Reply<FoundWithin>>;
   downloadSession(): void;
-  downloadExports(): void;
+  /** All that the files of results are made of, once figures and file are certain; null after the person was told why not. */
+  gatherResults(): Promise<ResultInput | null>;
   sign(request: SignRequest): void;
   closeStudy(): void;
   /** The figures of other states of the open study, in the order asked for; the review's own stay as they are. */

@@ -28,6 +28,7 @@ const LogDialog = later('LogDialog');
 const NotesDialog = later('NotesDialog');
 const PhasesDialog = later('PhasesDialog');
 const ProtocolDialog = later('ProtocolDialog');
+const ResultsDialog = later('ResultsDialog');
 const RolesDialog = later('RolesDialog');
 const SameFileDialog = later('SameFileDialog');
 const SettingsDialog = later('SettingsDialog');
@@ -102,6 +103,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <FailureDialog failure={state.failure} />;
     case 'figure':
       return <FigureDialog figure={state.key} phase={state.phase} />;
+    case 'results':
+      return <ResultsDialog />;
     case 'evidence':
       return <EvidenceDialog first={state.page} />;
     case 'look-alikes':

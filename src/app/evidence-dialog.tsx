@@ -6,11 +6,21 @@ import type { EvidenceSearch, Found } from '../review/evidence-store';
 import { useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { EVIDENCE_PAGES, evidencePage } from './evidence/evidence-pages';
+import { SettingsPage } from './evidence/settings-page';
 import type { EvidencePageId } from './evidence-page-id';
 import { FailureWords } from './small-dialogs';
 
 /** Order of the pages, the question asked most first. */
-const ORDER: readonly EvidencePart[] = ['planted', 'ranges', 'opinions', 'leads', 'together'];
+const ORDER: readonly EvidencePageId[] = [
+  'planted',
+  'settings-map',
+  'ranges',
+  'opinions',
+  'leads',
+  'together',
+];
+
+const isOfStudy = (page: EvidencePageId): page is EvidencePart => page !== 'settings-map';
 
 /** How far each number can be believed, a page a question. */
 export function EvidenceDialog({ first }: { readonly first: EvidencePageId }) {
@@ -37,7 +47,7 @@ export function EvidenceDialog({ first }: { readonly first: EvidencePageId }) {
         ))}
       </nav>
       <section className="evidence-page" aria-label={EVIDENCE_PAGES[page].title}>
-        <PartPage key={page} part={page} />
+        {isOfStudy(page) ? <PartPage key={page} part={page} /> : <SettingsPage />}
       </section>
     </Dialog>
   );

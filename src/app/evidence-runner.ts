@@ -2,13 +2,14 @@ import type { ReviewInputs } from '../../workers/analysis-api';
 import type { AnalysisClient } from '../../workers/analysis-client';
 import type { SettledDoubt } from '../recording/doubt';
 import { EVIDENCE_PARTS, type EvidencePart } from '../recording/evidence/evidence';
+import { evidenceLines } from '../recording/evidence/evidence-words';
 import type { DoubtStore } from '../review/doubt-store';
 import type { EvidenceSearch, EvidenceStore } from '../review/evidence-store';
 import { NO_EVIDENCE } from '../review/evidence-store';
 import type { SessionStore } from '../session/store';
 import { inputsOf, sameInputs } from './analysis-runner';
 
-export type EvidenceAccess = Pick<AnalysisClient, 'evidence'>;
+export type EvidenceAccess = Pick<AnalysisClient, 'evidence' | 'settingsMap'>;
 
 interface RunnerParts {
   readonly session: SessionStore;
@@ -109,6 +110,7 @@ export function runEvidence({ session, doubts, evidence, evidenceAccess }: Runne
     if (now.search !== before.search || now.edit !== before.edit) follow();
   });
   evidence.setState({
+    linesOf: evidenceLines,
     acts: {
       stop: () => running?.abort(),
       again() {

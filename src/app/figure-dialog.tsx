@@ -1,9 +1,11 @@
 import { useStore } from 'zustand';
+import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import { besideNoneWords } from '../recording/evidence/planted-words';
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
 import { FIGURE_MEANINGS } from '../recording/figure-meanings';
 import type { PhaseFindings } from '../recording/findings';
 import type { Settings } from '../recording/settings';
+import { evidenceAt } from '../review/evidence-store';
 import { goToStretch } from '../review/findings-go';
 import { figureWords, stretchWords } from '../review/findings-words';
 import { useAnalysis, useApp, useSession } from './app-context';
@@ -19,9 +21,12 @@ interface FigureDialogProps {
 
 /** One figure: its value, what it means, where that comes from, the settings in force, and the data behind it. */
 export function FigureDialog({ figure, phase }: FigureDialogProps) {
-  const { shell, view } = useApp();
+  const { shell, view, evidence } = useApp();
   const settings = useSession((state) => state.session?.state.settings);
-  const findings = useAnalysis((state) => state.findings);
+  const figures = useAnalysis((state) => state.findings);
+  const edit = useAnalysis((state) => state.edit);
+  const found = useStore(evidence, (state) => state.found);
+  const findings = figures && withEvidenceMarks(figures, evidenceAt(found, edit));
   const definition = FIGURES.find((one) => one.key === figure);
   const part = findings?.phases.find((one) => one.name === phase);
   if (!definition || !part || !settings) return null;

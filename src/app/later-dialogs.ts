@@ -14,6 +14,7 @@ export { LookAlikesDialog } from './look-alikes-dialog';
 export { NotesDialog } from './notes-dialog';
 export { PhasesDialog } from './phases-dialog';
 export { ProtocolDialog } from './protocol-dialog';
+export { ResultsDialog } from './results-dialog';
 export { RolesDialog } from './roles-dialog';
 export { SettingsDialog } from './settings-dialog';
 export { SignDialog } from './sign-dialog';

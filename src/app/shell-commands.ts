@@ -73,14 +73,14 @@ export const OPEN_COMMANDS: readonly Command[] = [
   },
   {
     id: 'download-results',
-    words: 'Download the results',
+    words: 'Download the results…',
     keys: ['Ctrl+Shift+S'],
     group: 'open',
     when: 'study',
     menu: 'study',
     ready: figuresThere,
     whyNot: figuresWhyNot,
-    run: ({ controller }) => controller.downloadExports(),
+    run: ({ shell }) => shell.getState().openDialog({ kind: 'results' }),
   },
 ];
 

@@ -45,6 +45,7 @@ export type DialogState =
   | { readonly kind: 'text-reading'; readonly file: File; readonly failure: Failure }
   | { readonly kind: 'failure'; readonly failure: Failure }
   | { readonly kind: 'figure'; readonly key: string; readonly phase: string }
+  | { readonly kind: 'results' }
   | { readonly kind: 'evidence'; readonly page: EvidencePageId }
   | { readonly kind: 'look-alikes'; readonly doubtId: string }
   | { readonly kind: 'choose-same-file'; readonly code: string; readonly quickKey: string };

@@ -63,7 +63,14 @@ export function createStudyController(parts: ControllerParts): StudyController &
   const hash = createHashClient(() => startModuleWorker(parts.hashWorkerUrl));
   const runner: AnalysisRunner = createAnalysisRunner({ client, session, analysis, view, shell });
   const keeping = createStudyKeeping({ keeper, hash, session, shell });
-  const files = createStudyFiles({ session, analysis, shell, keeping, client });
+  const files = createStudyFiles({
+    session,
+    analysis,
+    shell,
+    keeping,
+    client,
+    watched: runner.watched,
+  });
   const propose = (given: Given) =>
     runner.watched('Reading the recording', (watch) => client.propose(given, watch));
   const edits = createStudyEdits({

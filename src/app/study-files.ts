@@ -1,18 +1,17 @@
-import type { AnalysisClient } from '../../workers/analysis-client';
-import { EVIDENCE_PARTS, type Evidence, wholeOf } from '../recording/evidence/evidence';
-import { type Failure, Refusal, type Reply } from '../recording/failure';
+import { type Failure, Refusal } from '../recording/failure';
 import type { AnalysisStore } from '../review/analysis-store';
 import { asWork } from '../review/idle';
 import type { LogLine, Session } from '../session/document';
-import { safeCode, sessionFileName } from '../session/file-name';
+import { sessionFileName } from '../session/file-name';
 import { textToSession } from '../session/read-document';
 import { sameValue } from '../session/same-value';
 import { editNumber, type SessionStore } from '../session/store';
 import { documentText, sessionToDocument } from '../session/write-document';
 import { PROGRAM } from '../units/program';
-import { inputsOf } from './analysis-runner';
+import type { AnalysisRunner } from './analysis-runner';
 import type { StudyController } from './controller';
 import { download } from './download';
+import type { ResultClient } from './results-from-worker';
 import type { ShellStore } from './shell-store';
 import type { StudyKeeping } from './study-keeping';
 
@@ -21,7 +20,8 @@ interface FileParts {
   readonly analysis: AnalysisStore;
   readonly shell: ShellStore;
   readonly keeping: StudyKeeping;
-  readonly client: Pick<AnalysisClient, 'doubts' | 'evidence'>;
+  readonly client: ResultClient;
+  readonly watched: AnalysisRunner['watched'];
 }
 
 /** Said where results or a signature would stand for a file that is not known yet. */
@@ -36,23 +36,10 @@ function continues(longer: readonly LogLine[], shorter: readonly LogLine[]): boo
   return shorter.length <= longer.length && shorter.every((line, i) => sameValue(line, longer[i]));
 }
 
-/** All parts of the evidence; those computed already cost nothing. */
-async function wholeEvidence(
-  client: Pick<AnalysisClient, 'evidence'>,
-  open: Session,
-): Promise<Reply<Evidence>> {
-  const made: Partial<Evidence> = {};
-  for (const part of EVIDENCE_PARTS) {
-    const reply = await client.evidence(inputsOf(open), open.state.doubts, part);
-    if (!reply.ok) return reply;
-    Object.assign(made, { [part]: reply.value.value });
-  }
-  return { ok: true, value: wholeOf(made) };
-}
-
 /** Sessions and results on their way to and from files of the person's. */
-export function createStudyFiles({ session, analysis, shell, keeping, client }: FileParts) {
-  const acts: Pick<StudyController, 'downloadSession' | 'downloadExports'> = {
+export function createStudyFiles(parts: FileParts) {
+  const { session, analysis, shell, keeping, client, watched } = parts;
+  const acts: Pick<StudyController, 'downloadSession' | 'gatherResults'> = {
     downloadSession() {
       const open = session.getState().session;
       if (!open) return;
@@ -61,52 +48,42 @@ export function createStudyFiles({ session, analysis, shell, keeping, client }: 
       keeping.inFile(fileName);
       shell.getState().say(`Saved as ${fileName}. ${IDENTIFYING}`);
     },
-    downloadExports() {
+    async gatherResults() {
       const open = session.getState().session;
       const { recording, stomach, heart, breathing, findings, edit } = analysis.getState();
-      if (!open || !recording || !findings) return;
+      if (!open || !recording || !findings) return null;
       if (edit !== editNumber(open)) {
         shell.getState().sayProblem('The figures are not up to date yet. Download once they are.');
-        return;
+        return null;
       }
-      const { state } = open;
-      const results = {
+      if (!(await keeping.confirmed())) {
+        shell.getState().sayProblem(NOT_CONFIRMED);
+        return null;
+      }
+      const { resultsFromWorker } = await asWork(import('./results-from-worker'));
+      const fromWorker = await watched('Getting the results together', (watch) =>
+        resultsFromWorker(client, open, recording.durationS, watch),
+      );
+      if (!fromWorker.ok) {
+        if (fromWorker.failure.kind !== 'cancelled')
+          shell.getState().openDialog({ kind: 'failure', failure: fromWorker.failure });
+        return null;
+      }
+      const sha256 = session.getState().session?.state.study.sha256 ?? null;
+      return {
+        ...fromWorker.value,
         recording,
-        state,
+        session: open,
+        state: open.state,
+        sha256,
         program: PROGRAM,
         edit,
         stomach,
         heart,
         breathing,
         findings,
+        age: null,
       };
-      const save = async () => {
-        if (!(await keeping.confirmed())) {
-          shell.getState().sayProblem(NOT_CONFIRMED);
-          return;
-        }
-        const doubts = await client.doubts(inputsOf(open), state.doubts);
-        if (!doubts.ok) {
-          shell.getState().openDialog({ kind: 'failure', failure: doubts.failure });
-          return;
-        }
-        const evidence = await wholeEvidence(client, open);
-        if (!evidence.ok) {
-          shell.getState().openDialog({ kind: 'failure', failure: evidence.failure });
-          return;
-        }
-        const { resultsZip } = await import('./results-zip');
-        const sha256 = session.getState().session?.state.study.sha256 ?? null;
-        const zip = resultsZip({
-          ...results,
-          sha256,
-          openDoubts: doubts.value.open,
-          evidence: evidence.value,
-        });
-        download(`${safeCode(state.study.code)}-results.zip`, zip, 'application/zip');
-        shell.getState().say(IDENTIFYING);
-      };
-      void asWork(save());
     },
   };
 

@@ -1,3 +1,4 @@
+import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import type { FigureValue } from '../recording/figure';
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
 import type { FigureChange, PhaseFindings } from '../recording/findings';
@@ -18,7 +19,8 @@ const CAUTIONS = [
  * (`count`, `of`, `what`) or withheld (`withheld`: the reason). Throws Error where a key is not in the catalogue.
  */
 export function findingsJson(input: Omit<ExportInput, 'stomach' | 'heart'>): string {
-  const { state, findings } = input;
+  const { state, evidence } = input;
+  const findings = withEvidenceMarks(input.findings, evidence);
   const { study, roles } = state;
   const document = {
     format: 'bicadence-findings',
@@ -48,7 +50,7 @@ export function findingsJson(input: Omit<ExportInput, 'stomach' | 'heart'>): str
       text: one.text,
     })),
     warnings: findings.warnings.map(({ about, text }) => ({ about, text })),
-    evidence: evidenceJson(input.evidence),
+    evidence: evidenceJson(evidence),
   };
   return `${JSON.stringify(document, null, 2)}\n`;
 }

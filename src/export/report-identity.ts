@@ -12,14 +12,23 @@ export interface Fact {
 const INVENTED: Fact = { name: 'Data', words: 'invented by the program, of no person' };
 
 /** Said where identity is hidden: what people typed is printed as they typed it. */
-export const HIDDEN_WARNING =
+const HIDDEN_WARNING =
   'Code, name, dates, file name and hash are left out. Texts typed by people may still say who it is: read them before you hand this on.';
+
+/** What has to be known of the identity as it is printed. */
+export function identityNote(hidden: boolean, age: string | null): string {
+  if (hidden) return HIDDEN_WARNING;
+  return age === null
+    ? 'Identity as the file’s header has it, not verified.'
+    : 'Without identity: X stands for it, all dates are moved by one shift, and what people wrote is left out. A heartbeat trace can itself identify a person.';
+}
 
 /** Who the study is of, as the file's header says; a hidden identity says only that it is. */
 export function identityFacts(
   { identity, start, invented }: Recording,
   { study }: SessionState,
   hidden: boolean,
+  age: string | null,
 ): readonly Fact[] {
   const data = invented || study.invented ? [INVENTED] : [];
   if (hidden) return [{ name: 'Identity', words: 'identity hidden' }, ...data];
@@ -28,6 +37,7 @@ export function identityFacts(
     { name: 'Code', words: study.code },
     ...(name === null ? [] : [{ name: 'Name', words: name }]),
     ...(birthYear === null ? [] : [{ name: 'Born', words: String(birthYear) }]),
+    ...(age === null ? [] : [{ name: 'Age', words: age }]),
     ...(sex === null ? [] : [{ name: 'Sex', words: sex }]),
     { name: 'Recorded', words: start.kind === 'known' ? recordedWords(start.local) : 'not known' },
     ...data,

@@ -17,6 +17,7 @@ export function studyFacts(
   program: string,
   signed: Signature | null,
   hide: Hide | null,
+  noHash: string,
 ): readonly Fact[] {
   const { channels, durationS, format } = recording;
   const free = hide ?? ((text: string) => text);
@@ -26,7 +27,7 @@ export function studyFacts(
     .filter((_, place) => place !== roles.reported)
     .map((lead) => free(leadName(lead, channels)));
   const derived = roles.heart ? 'no lead; derived from the heartbeat' : 'no lead';
-  const sha256 = signed?.sha256 ?? study.sha256 ?? 'not computed yet';
+  const sha256 = signed?.sha256 ?? study.sha256 ?? noHash;
   return [
     {
       name: 'Recording',

@@ -1,5 +1,6 @@
 import { openDoubtsWords } from '../recording/doubt';
 import type { Evidence } from '../recording/evidence/evidence';
+import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import { evidenceLines } from '../recording/evidence/evidence-words';
 import type { Findings } from '../recording/findings';
 import type { Recording } from '../recording/recording';
@@ -9,7 +10,13 @@ import { type AdequacyTable, adequacyTable } from './report-adequacy';
 import { type EventRow, eventRows } from './report-events';
 import { type FindingsTable, mainTables, otherTables } from './report-findings';
 import { type Hide, identityHider, nothingHidden } from './report-hiding';
-import { type Fact, identityFacts, type ProtocolFacts, protocolFacts } from './report-identity';
+import {
+  type Fact,
+  identityFacts,
+  identityNote,
+  type ProtocolFacts,
+  protocolFacts,
+} from './report-identity';
 import {
   beatFacts,
   doubtFact,
@@ -36,6 +43,8 @@ export interface ReportModel {
   readonly foot: string;
   readonly identityHidden: boolean;
   readonly identity: readonly Fact[];
+  /** What has to be known of what the identity says. */
+  readonly identityNote: string;
   readonly adequacy: AdequacyTable;
   /** What stands above the figures: filters, defects of the file. */
   readonly warnings: readonly string[];
@@ -66,6 +75,8 @@ export interface ReportInput {
   readonly identityHidden: boolean;
   /** How many doubts are open; null while they have not been looked for. */
   readonly openDoubts: number | null;
+  /** Age in words where the results go out without identity; null where the header's own fields are printed. */
+  readonly age: string | null;
   /** The parts of the evidence that belong to these figures. */
   readonly evidence: Partial<Evidence>;
 }
@@ -77,7 +88,7 @@ export function reportModel(input: ReportInput): ReportModel {
   const hide = identityHidden ? identityHider(recording, state.study) : nothingHidden;
   const status = reportStatus(session);
   const signed = status.kind === 'draft' ? null : status.signature;
-  const findings = signed?.findings ?? input.findings;
+  const findings = signed?.findings ?? withEvidenceMarks(input.findings, input.evidence);
   const words = hide(statusWords(status, session.log.length, identityHidden));
   return {
     kind: status.kind,
@@ -88,7 +99,8 @@ export function reportModel(input: ReportInput): ReportModel {
       words.replace(/^Draft/, 'DRAFT'),
     ].join(' · '),
     identityHidden,
-    identity: identityFacts(recording, state, identityHidden),
+    identity: identityFacts(recording, state, identityHidden, input.age),
+    identityNote: identityNote(identityHidden, input.age),
     adequacy: adequacyTable(findings, state.roles.heart !== null),
     warnings: [
       ...warningsOf(recording, findings),
@@ -123,7 +135,7 @@ const foundWords = ({ what, place }: Recording['found'][number]): string =>
   place === null ? what : `${what} (${place})`;
 
 function makingOf(
-  { recording, session, program, identityHidden, openDoubts }: ReportInput,
+  { recording, session, program, identityHidden, openDoubts, age }: ReportInput,
   signed: Signature | null,
   hide: Hide,
 ): Pick<ReportModel, 'making' | 'settings' | 'spans'> {
@@ -137,6 +149,7 @@ function makingOf(
         signed?.program ?? program,
         signed,
         identityHidden ? hide : null,
+        age === null ? 'not computed yet' : 'left out',
       ),
       ...beatFacts(session, recording),
       doubtFact(state, openDoubts),

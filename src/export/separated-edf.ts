@@ -1,13 +1,8 @@
-import { BEAT_CLASSES, type BeatList } from '../recording/beat';
-import type { Phase } from '../recording/phase';
-import type { Annotation } from '../recording/recording';
-import type { Span } from '../recording/span';
-import { type Noted, notedWords } from '../session/note-edits';
 import type { Hertz } from '../units/rate';
-import { ticksToSeconds } from '../units/ticks';
 import type { Seconds } from '../units/time';
 import { type EdfPlusContents, type EdfPlusSignal, writeEdfPlus } from './edf-plus';
 import { fitHeaderNumber } from './edf-plus-header';
+import { type AnnotatedReview, reviewAnnotations } from './review-annotations';
 
 /** One separated signal in uV, NaN where there is none. */
 export interface SeparatedSignal {
@@ -17,7 +12,7 @@ export interface SeparatedSignal {
   readonly prefilter: string;
 }
 
-export interface SeparatedInput {
+export interface SeparatedInput extends AnnotatedReview {
   readonly code: string;
   /** Local start as the study's header has it; null where unknown. */
   readonly start: string | null;
@@ -25,13 +20,6 @@ export interface SeparatedInput {
   readonly program: string;
   readonly slow: readonly SeparatedSignal[];
   readonly heart: SeparatedSignal | null;
-  readonly beats: BeatList;
-  /** Rate that the beats' ticks count in. */
-  readonly beatRateHz: Hertz;
-  readonly phases: readonly Phase[];
-  readonly spans: readonly Span[];
-  /** Events and symptoms that reviewers wrote. */
-  readonly notes: readonly Noted[];
 }
 
 const MOST_DIGITAL = 32767;
@@ -71,32 +59,6 @@ function digitised(signal: SeparatedSignal, recordS: number, records: number): E
   };
 }
 
-function annotationsOf(input: SeparatedInput): readonly Annotation[] {
-  const { beats, beatRateHz, phases, spans, notes } = input;
-  return [
-    ...phases.map(({ name, fromS, toS }) => ({
-      onsetS: fromS,
-      durationS: toS - fromS,
-      text: name,
-    })),
-    ...spans.map(({ fromS, toS, cause, target, lead }) => ({
-      onsetS: fromS,
-      durationS: toS - fromS,
-      text: `spoiled: ${cause}, ${target}, ${lead ?? 'all leads'}`,
-    })),
-    ...notes.map((note) => ({
-      onsetS: note.atS,
-      durationS: null,
-      text: `${note.kind}: ${notedWords(note)}`,
-    })),
-    ...Array.from(beats.ticks, (tick, i) => ({
-      onsetS: ticksToSeconds(tick, beatRateHz),
-      durationS: null,
-      text: `beat ${BEAT_CLASSES[beats.classes[i]]}`,
-    })),
-  ];
-}
-
 /**
  * separated.edf of files.md: EDF+C (Kemp & Olivan 2003) with the slow wave of each lead and the heartbeat of the heart lead,
  * phases, spoiled spans, events, symptoms and beats as annotations. Where there are no samples the signals are 0 and a span says so. A signal
@@ -119,7 +81,7 @@ export function separatedEdf(input: SeparatedInput): readonly Uint8Array<ArrayBu
     recordDurationS: recordS,
     recordCount: records,
     signals: signals.map((signal) => digitised(signal, recordS, records)),
-    annotations: annotationsOf(input).filter(({ onsetS }) => onsetS >= 0),
+    annotations: reviewAnnotations(input),
   };
   return writeEdfPlus(contents);
 }

@@ -1,10 +1,5 @@
 import { crc32 } from './crc32';
-
-/** A file of text on its way out. */
-export interface TextFile {
-  readonly name: string;
-  readonly text: string;
-}
+import { bytesOf, type ResultFile } from './result-file';
 
 /** 1980-01-01 00:00, the earliest that a zip can say: the same files give the same bytes on every day. */
 const DOS_TIME = 0;
@@ -17,15 +12,16 @@ const MOST = 0xffffffff;
  * A zip of files that are stored as they are, with fixed dates (PKWARE APPNOTE 6.3: local headers, central directory, end
  * record). Throws RangeError above 65,534 files or 4 GB, which want a form of zip this does not write.
  */
-export function storedZip(files: readonly TextFile[]): Uint8Array<ArrayBuffer> {
+export function storedZip(files: readonly ResultFile[]): Uint8Array<ArrayBuffer> {
   if (files.length >= 0xffff) throw new RangeError('too many files for a zip');
   const encoder = new TextEncoder();
   const parts: Uint8Array[] = [];
   const directory: Uint8Array[] = [];
   let offset = 0;
-  for (const { name, text } of files) {
+  for (const file of files) {
+    const { name } = file;
     const nameBytes = encoder.encode(name);
-    const bytes = encoder.encode(text);
+    const bytes = bytesOf(file);
     const common = commonFields(name, nameBytes, bytes);
     const local = joined([fields([4, 0x04034b50]), common, nameBytes, bytes]);
     directory.push(joined([directoryStart(), common, directoryEnd(offset), nameBytes]));

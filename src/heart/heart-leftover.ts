@@ -126,7 +126,7 @@ function sizeOf(
  * A stretch of the heart lead less its beats: each less the average of its class in its own size (the local average beat).
  * What an average leaves of a beat stays, so the places of beats are left out where anything is scored.
  */
-export function* withoutBeats(
+export function* withoutOwnBeats(
   stretch: BeatStretch,
   averages: ReadonlyMap<number, LeadAverage>,
   rateHz: number,

@@ -78,6 +78,17 @@ export function effectiveAverages(count: number, taper: Float64Array, step: numb
   return count / (1 + 2 * excess);
 }
 
+/**
+ * The number of independent looks at a steady wave in noise that `count` overlapping tapered stretches are worth: a mean of
+ * values correlated like the tapers, count / (1 + 2 sum (1 - j/count) rho_j). Fewer than for their powers (effectiveAverages).
+ */
+export function effectiveLooks(count: number, taper: Float64Array, step: number): number {
+  let excess = 0;
+  for (let j = 1; j < count && j * step < taper.length; j++)
+    excess += (1 - j / count) * overlapCorrelation(taper, j * step);
+  return count / (1 + 2 * excess);
+}
+
 /** Impulse response of an ideal low-pass at time `atS`, seconds from its centre: 2 f sinc(2 f t). */
 export function idealLowPass(cutoffHz: number, atS: number): number {
   return 2 * cutoffHz * sinc(2 * cutoffHz * atS);

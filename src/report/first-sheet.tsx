@@ -1,4 +1,3 @@
-import { HIDDEN_WARNING } from '../export/report-identity';
 import type { ReportModel } from '../export/report-model';
 import { Adequacy } from './adequacy-table';
 import { Facts, Part, Picture } from './report-parts';
@@ -18,11 +17,7 @@ export function FirstSheet({
         <h1>Gastric rhythm and heart-rate variability</h1>
         <Status model={model} />
         <Facts facts={model.identity} inLine />
-        <p className="report-small">
-          {model.identityHidden
-            ? HIDDEN_WARNING
-            : 'Identity as the file’s header has it, not verified.'}
-        </p>
+        <p className="report-small">{model.identityNote}</p>
       </header>
       <Part title="How much could be used">
         <Adequacy table={model.adequacy} />

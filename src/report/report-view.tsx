@@ -8,14 +8,10 @@ import type { ViewStore } from '../review/view-store';
 import type { SessionState } from '../session/document';
 import { editNumber, type SessionStore } from '../session/store';
 import { PROGRAM } from '../units/program';
+import { excerptWaves } from './excerpt-waves';
 import { usePageFoot } from './page-foot';
 import { ReportPage } from './report-page';
-import {
-  excerptsOf,
-  type PictureInput,
-  type ReportPictures,
-  reportPictures,
-} from './report-pictures';
+import { type PictureInput, type ReportPictures, reportPictures } from './report-pictures';
 import './report.css';
 
 export interface ReportViewProps {
@@ -28,8 +24,6 @@ export interface ReportViewProps {
   /** The parts of the evidence that belong to the last edit. */
   readonly evidence: Partial<Evidence>;
 }
-
-const WAVE_COLUMNS = 960;
 
 /** The report of the session as it stands, drawn again with every edit. */
 export function ReportView(props: ReportViewProps) {
@@ -49,6 +43,7 @@ export function ReportView(props: ReportViewProps) {
             identityHidden,
             openDoubts,
             evidence,
+            age: null,
           })
         : null,
     [open, recording, findings, identityHidden, openDoubts, evidence],
@@ -111,14 +106,9 @@ function useWaves(
   useEffect(() => {
     if (!lead || !phases || version === null) return;
     let current = true;
-    const asked = excerptsOf(phases, durationS).map(async (excerpt) => {
-      const { fromS, toS } = excerpt;
-      const request = { lead, signal: 'slow-wave', fromS, toS, columns: WAVE_COLUMNS } as const;
-      const columns = await signals.columns(request);
-      return columns ? [{ excerpt, columns }] : [];
-    });
-    void asWork(Promise.all(asked)).then((found) => {
-      if (current) setDrawn({ version, waves: found.flat() });
+    const asked = excerptWaves({ lead, phases, durationS }, (request) => signals.columns(request));
+    void asWork(asked).then((found) => {
+      if (current) setDrawn({ version, waves: found });
     });
     return () => {
       current = false;

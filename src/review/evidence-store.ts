@@ -1,5 +1,6 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Evidence, EvidencePart } from '../recording/evidence/evidence';
+import type { evidenceLines } from '../recording/evidence/evidence-words';
 import type { Failure } from '../recording/failure';
 
 /** Where one part of the evidence stands. What was found before stays beside it, grey where it is of an earlier edit. */
@@ -25,8 +26,9 @@ export interface EvidenceActs {
 export interface EvidenceState {
   readonly found: { readonly [P in EvidencePart]?: Found<P> };
   readonly searches: Readonly<Partial<Record<EvidencePart, EvidenceSearch>>>;
-  /** Null until the part of the page that computes evidence is loaded. */
+  /** Null until the part of the page that computes evidence is loaded; so are its words. */
   readonly acts: EvidenceActs | null;
+  readonly linesOf: typeof evidenceLines | null;
 }
 
 export type EvidenceStore = StoreApi<EvidenceState>;
@@ -35,10 +37,10 @@ export const NO_EVIDENCE = { found: {}, searches: {} } as const satisfies Partia
 
 /** The page's evidence. */
 export const createEvidenceStore = (): EvidenceStore =>
-  createStore<EvidenceState>()(() => ({ ...NO_EVIDENCE, acts: null }));
+  createStore<EvidenceState>()(() => ({ ...NO_EVIDENCE, acts: null, linesOf: null }));
 
 /** The parts that belong to an edit. */
-export function evidenceAt({ found }: EvidenceState, edit: number): Partial<Evidence> {
+export function evidenceAt(found: EvidenceState['found'], edit: number): Partial<Evidence> {
   return Object.fromEntries(
     Object.entries(found)
       .filter(([, one]) => one.edit === edit)

@@ -2,12 +2,13 @@ import './findings-pane.css';
 import { useState } from 'react';
 import { useStore } from 'zustand';
 import type { EvidencePart } from '../recording/evidence/evidence';
+import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import type { Findings } from '../recording/findings';
 import type { Edit } from '../session/document';
 import type { SessionStore } from '../session/store';
 import { formatClock } from '../units/time';
 import type { AnalysisStore } from './analysis-store';
-import type { EvidenceStore } from './evidence-store';
+import { type EvidenceStore, evidenceAt } from './evidence-store';
 import { goToStretch } from './findings-go';
 import { FindingsSpans } from './findings-spans';
 import { FindingsTable } from './findings-table';
@@ -29,11 +30,13 @@ export interface FindingsPaneProps {
 /** The column of numbers: figures by phase, what stands above them, what was seen in passing, the spoiled spans. */
 export function FindingsPane(props: FindingsPaneProps) {
   const { session, analysis, view, onFigure, onEdit, evidence, onEvidence } = props;
-  const findings = useStore(analysis, (state) => state.findings);
+  const figures = useStore(analysis, (state) => state.findings);
+  const found = useStore(evidence, (state) => state.found);
   const computed = useStore(analysis, (state) => state.edit);
   const edit = useStore(session, (state) => state.session?.log.length ?? 0);
   const working = useStore(analysis, (state) => state.progress !== null);
   const stopped = useStore(analysis, (state) => state.stopped);
+  const findings = figures && withEvidenceMarks(figures, evidenceAt(found, computed));
   const stale = findings !== null && computed < edit;
   const go = (fromS: number, toS: number) => goToStretch(view, fromS, toS);
   return (

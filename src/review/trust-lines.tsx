@@ -1,6 +1,5 @@
 import { useStore } from 'zustand';
 import { EVIDENCE_PARTS, type EvidencePart } from '../recording/evidence/evidence';
-import { evidenceLines } from '../recording/evidence/evidence-words';
 import { type EvidenceStore, evidenceFound } from './evidence-store';
 
 interface TrustLinesProps {
@@ -13,7 +12,7 @@ interface TrustLinesProps {
 /** The trust section of Findings: how far to believe the figures above, a line each; every line opens its page. */
 export function TrustLines({ evidence, edit, onOpen }: TrustLinesProps) {
   const state = useStore(evidence);
-  const lines = evidenceLines(evidenceFound(state));
+  const lines = state.linesOf?.(evidenceFound(state)) ?? [];
   const busy = EVIDENCE_PARTS.some((part) => state.searches[part]?.kind === 'looking');
   return (
     <section className="trust" aria-labelledby="trust-title">

@@ -55,16 +55,17 @@ function groupsOf({ classes, origins }: BeatList) {
 }
 
 /** Mean of the intervals (in samples) before or after some beats, pauses shortened; NaN where there is none. */
-function usualInterval(
+function meanInterval(
   at: Float64Array,
   members: readonly number[],
   step: -1 | 1,
   longest: number,
+  counts: (k: number, other: number) => boolean,
 ): number {
   let [sum, count] = [0, 0];
   for (const k of members) {
     const other = k + step;
-    if (other < 0 || other >= at.length) continue;
+    if (other < 0 || other >= at.length || !counts(k, other)) continue;
     sum += Math.min(longest, Math.abs(at[other] - at[k]));
     count += 1;
   }
@@ -87,9 +88,14 @@ export function* placeBeats(
   const hasRoom = new Uint8Array(at.length);
   const { groups, others } = groupsOf(beats);
   const most = [beforeMs, afterMs].map((ms) => Math.ceil((ms / 1000) * rateHz));
+  const isSame = (k: number, other: number) => beats.classes[k] === beats.classes[other];
+  /** The usual interval to beats of the same class; to any where there are none. */
+  const usual = (near: readonly number[], step: -1 | 1): number =>
+    meanInterval(at, near, step, PAUSE_S * rateHz, isSame) ||
+    meanInterval(at, near, step, PAUSE_S * rateHz, () => true);
   const lay = (k: number, near: readonly number[]): void => {
-    const prior = usualInterval(at, near, -1, PAUSE_S * rateHz);
-    const next = usualInterval(at, near, 1, PAUSE_S * rateHz);
+    const prior = usual(near, -1);
+    const next = usual(near, 1);
     before[k] = Math.floor(Math.min(most[0], SHARE_BEFORE * prior || most[0]));
     after[k] = Math.floor(Math.min(most[1], SHARE_AFTER * next || most[1]));
     const tooSoon = at[k] - at[k - 1] < ROOM * prior || at[k + 1] - at[k] < ROOM * next;

@@ -4,11 +4,15 @@ import type { PlacedBeats } from './beat-extents';
 /** Neighbouring beats this far apart tell the level between them by a cubic; else a straight line has to do. */
 const NEAREST_S = 0.3;
 const FARTHEST_S = 1.8;
+/** A level this part of the beat before's own stretch behind it is clear of its waves. */
+const CLEAR_AFTER = 0.75;
 
 /** The level of the lead just before a beat's own stretch, where no heart wave stands: place in samples and uV. */
 export interface Levels {
   readonly at: Float64Array;
   readonly uv: Float64Array;
+  /** 0 where the beat before is so near that its own waves stand there. */
+  readonly isClear: Uint8Array;
 }
 
 /** Six-point weights of a beat: all samples at whole distances from it lie between the lead's in the same way. */
@@ -31,7 +35,16 @@ const levelOf = (read: (offset: number) => number, offset: number): number =>
 export function levelsBefore(beats: PlacedBeats, samples: Float64Array): Levels {
   const at = beats.at.map((place, k) => place - beats.before[k]);
   const uv = beats.at.map((place, k) => levelOf(readerAt(samples, place), -beats.before[k]));
-  return { at, uv };
+  const isClear = Uint8Array.from(at, (start, k) =>
+    k > 0 && start - beats.at[k - 1] < CLEAR_AFTER * beats.after[k - 1] ? 0 : 1,
+  );
+  return { at, uv, isClear };
+}
+
+/** The next beat in a direction whose level is clear, among three; one that is not there where there is none. */
+function clearFrom({ isClear }: Levels, k: number, step: -1 | 1): number {
+  for (let i = k + step; Math.abs(i - k) <= 3; i += step) if (isClear[i] === 1) return i;
+  return -1;
 }
 
 /** Newton's divided differences: the coefficients of the polynomial through some points. */
@@ -46,7 +59,8 @@ function dividedDifferences(x: readonly number[], y: readonly number[]): number[
 /** What the lead would be without the heart about a beat: by the levels before it and its neighbours. */
 function courseAbout(beats: PlacedBeats, levels: Levels, k: number, endUv: number) {
   const { at, uv } = levels;
-  const near = [k - 1, k, k + 1, k + 2];
+  const next = clearFrom(levels, k, 1);
+  const near = [clearFrom(levels, k, -1), k, next, clearFrom(levels, next, 1)];
   const apart = near.slice(1).map((i) => (at[i] - at[i - 1]) / beats.rateHz);
   const regular = apart.every((s) => s >= NEAREST_S && s <= FARTHEST_S);
   if (regular && near.every((i) => Number.isFinite(uv[i]))) {

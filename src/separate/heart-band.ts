@@ -20,7 +20,7 @@ const HEART_ATTENUATION_DB = 60;
 export const FELT_SHARE = 0.55;
 
 /** The band the heartbeat keeps at a rate: the upper edge at most 0.4 of it; null where nothing is left. */
-function heartBandAt(
+export function heartBandAt(
   rateHz: Hertz,
   bandHz: readonly [Hertz, Hertz],
 ): readonly [Hertz, Hertz] | null {
@@ -33,7 +33,7 @@ function heartBandAt(
  * (windowed sincs, Kaiser 1974), -6 dB at the band's edges, the upper transition wide enough not
  * to ring. `outputRateHz` is the rate it is folded to.
  */
-function heartBandKernel(
+export function heartBandKernel(
   rateHz: Hertz,
   outputRateHz: Hertz,
   bandHz: readonly [Hertz, Hertz],

@@ -8,9 +8,7 @@ import type { Seconds } from '../units/time';
  * The low-pass before 4 Hz: flat within 0.1 % to 0.25 Hz, at least 60 dB down from 0.8 Hz on, so
  * that nothing near 4 Hz or its multiples can fold onto 0-9 cpm and no beat is left to be seen.
  */
-const PASS_HZ = 0.25;
-const STOP_HZ = 0.8;
-const ATTENUATION_DB = 66;
+export const SLOW_LOW_PASS = { passHz: 0.25, stopHz: 0.8, attenuationDb: 66 } as const;
 
 /** Rate of the slow wave of a lead: 4 Hz, or the lead's own where that is lower. */
 export function slowRateHz(rateHz: Hertz): Hertz {
@@ -20,7 +18,8 @@ export function slowRateHz(rateHz: Hertz): Hertz {
 /** Half the length of the low-pass before 4 Hz in seconds; 0 where the lead is taken as it is. */
 export function slowSamplerReachS(rateHz: Hertz): Seconds {
   if (rateHz <= SLOW_RATE_HZ) return 0;
-  return (kaiserTaps(ATTENUATION_DB, STOP_HZ - PASS_HZ, rateHz) - 1) / 2 / rateHz;
+  const { attenuationDb, stopHz, passHz } = SLOW_LOW_PASS;
+  return (kaiserTaps(attenuationDb, stopHz - passHz, rateHz) - 1) / 2 / rateHz;
 }
 
 /**
@@ -32,9 +31,7 @@ export function createSlowSampler(rateHz: Hertz): InstantSampler {
   return createInstantSampler({
     rateHz,
     outputRateHz: SLOW_RATE_HZ,
-    passHz: PASS_HZ,
-    stopHz: STOP_HZ,
-    attenuationDb: ATTENUATION_DB,
+    ...SLOW_LOW_PASS,
   });
 }
 

@@ -1,13 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { copyReview } from '../../src/app/room/review-copy';
+import { createShellStore } from '../../src/app/shell-store';
 import {
   identityTexts,
   plainLabel,
   recordingWithout,
   stateWithout,
   without,
-} from '../../src/app/room/without-identity';
-import { createShellStore } from '../../src/app/shell-store';
+} from '../../src/export/without-identity';
 import type { Recording } from '../../src/recording/recording';
 import { deleteBeats, setField } from '../../src/session/edits';
 import { paneStudy, RATE_HZ, recordingOf } from '../review/pane-study';

@@ -8,6 +8,7 @@ import { brokenFiles } from './broken-files';
 import { detection } from './detection';
 import { doubts } from './doubts/doubts';
 import { loadWords, machineFacts } from './machine';
+import { maps } from './maps';
 import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
 import { pageSize } from './page-size';
@@ -18,6 +19,7 @@ import { markdownTable, plainTable } from './table';
 
 const PARTS: Readonly<Record<string, Part>> = {
   separation,
+  maps,
   detection,
   pipeline,
   opening,

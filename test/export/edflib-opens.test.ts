@@ -2,6 +2,7 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { annotationsEdf } from '../../src/export/annotations-edf';
 import { separatedEdf } from '../../src/export/separated-edf';
 import { edflibProgram, type ReadByEdflib, readByEdflib } from '../fixtures/edflib/program';
 import { SEPARATED_INPUT } from './separated-input';
@@ -57,6 +58,27 @@ describe.skipIf(missing)('separated.edf opened by EDFlib', () => {
       [25, '5', 'spoiled: gap, both, #1'],
       [40.5, '', 'event: drank 200 ml'],
       [50, '', 'symptom: nausea 6/10'],
+    ]);
+  });
+});
+
+describe.skipIf(missing)('annotations.edf opened by EDFlib', () => {
+  it('is an EDF+ file of annotations alone, the same as those beside the signals', () => {
+    if (!program) throw new Error('no EDFlib: apt-get install gcc libedf-dev');
+    const folder = mkdtempSync(join(tmpdir(), 'bicadence-edflib-'));
+    const path = join(folder, 'annotations.edf');
+    writeFileSync(path, Buffer.concat([...annotationsEdf(SEPARATED_INPUT)]));
+    const read = readByEdflib(program, path);
+    rmSync(folder, { recursive: true });
+    expect(read).toMatchObject({
+      filetype: 1,
+      duration_s: 100,
+      patient_code: 'INV-3',
+      channels: [],
+    });
+    expect(read.annotations.map(([, , text]) => text)).toEqual([
+      ...['fasting', 'beat N', 'beat V', 'spoiled: gap, both, #1'],
+      ...['event: drank 200 ml', 'symptom: nausea 6/10'],
     ]);
   });
 });

@@ -1,14 +1,18 @@
 import { describe, expect, it } from 'vitest';
-import { exportFiles } from '../../src/export/all-files';
 import { minuteOfHeart } from '../../src/export/minute-of-heart';
+import { bytesOf, type ResultFile } from '../../src/export/result-file';
+import { tableFiles } from '../../src/export/table-files';
 import type { Doubt } from '../../src/recording/doubt';
 import { FIGURES } from '../../src/recording/figure-catalogue';
 import { epoch, inventedInput } from './invented-input';
 import { readCsv } from './read-csv';
 
 const input = inventedInput();
-const fileOf = (name: string, from = input) =>
-  exportFiles(from).find((file) => file.name === name)?.text ?? '';
+const textOf = (file: ResultFile): string => new TextDecoder().decode(bytesOf(file));
+const fileOf = (name: string, from = input) => {
+  const file = tableFiles(from).find((one) => one.name === name);
+  return file ? textOf(file) : '';
+};
 /** Rows as records by the header. */
 const table = (name: string, from = input) => {
   const [header, ...rows] = readCsv(fileOf(name, from));
@@ -29,7 +33,7 @@ const doubtAt = (tick: number): Doubt => ({
 
 describe('the files of results', () => {
   it('are five, and name nobody', () => {
-    const files = exportFiles(input);
+    const files = tableFiles(input);
     expect(files.map((file) => file.name)).toEqual([
       'beats.csv',
       'epochs.csv',
@@ -37,7 +41,7 @@ describe('the files of results', () => {
       'spans.csv',
       'findings.json',
     ]);
-    for (const { text } of files) {
+    for (const text of files.map(textOf)) {
       expect(text.endsWith('\n')).toBe(true);
       expect(text).not.toMatch(/Anna|Kowalska|1980|\r/);
     }
@@ -306,6 +310,6 @@ describe('findings.json', () => {
     const [phase] = input.findings.phases;
     const strange = { ...phase, figures: { mood: { kind: 'withheld', reason: '' } as const } };
     const other = { ...input, findings: { ...input.findings, phases: [strange] } };
-    expect(() => exportFiles(other)).toThrow('mood');
+    expect(() => tableFiles(other)).toThrow('mood');
   });
 });

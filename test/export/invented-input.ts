@@ -1,4 +1,4 @@
-import type { ExportInput } from '../../src/export/all-files';
+import type { ExportInput } from '../../src/export/export-input';
 import { beatsOf } from '../../src/recording/beat';
 import type { Channel } from '../../src/recording/channel';
 import type { Epoch } from '../../src/recording/rhythm';

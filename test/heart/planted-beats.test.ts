@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { addAverage, leadAverage, withoutBeats } from '../../src/heart/heart-leftover';
+import { addAverage, leadAverage, withoutOwnBeats } from '../../src/heart/heart-leftover';
 import { beatScore, plantedTimes, rmssdOfTimes } from '../../src/heart/planted-beats';
 import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
@@ -37,7 +37,7 @@ const stretch = {
 describe('the leftover of a heart lead', () => {
   const average = atOnce(leadAverage([stretch], 0, RATE_HZ, 0.9));
   if (!average) throw new Error('there is an average');
-  const left = atOnce(withoutBeats(stretch, new Map([[0, average]]), RATE_HZ));
+  const left = atOnce(withoutOwnBeats(stretch, new Map([[0, average]]), RATE_HZ));
   const rmsNear = (x: Float64Array, halfS: number) => {
     let [squares, count] = [0, 0];
     for (const timeS of timesS)

@@ -3,7 +3,7 @@ import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { reportModel } from '../../src/export/report-model';
 import { CAUTIONS } from '../../src/recording/cautions';
-import { cssString } from '../../src/report/page-foot';
+import { cssString } from '../../src/report/foot-text';
 import { ReportPage } from '../../src/report/report-page';
 import { reportPictures } from '../../src/report/report-pictures';
 import { appendEdit, beginSession } from '../../src/session/log';
@@ -25,6 +25,7 @@ function page(signed: boolean): string {
   const model = reportModel({
     openDoubts: 0,
     evidence: {},
+    age: null,
     recording,
     session,
     findings,

@@ -201,6 +201,32 @@ describe('what the heartbeats leave in a lead at 4 Hz', () => {
     expect(less.uv.subarray(from, to)).not.toEqual(part.uv.subarray(from, to));
   });
 
+  test('forgets a glitch of any size to the last digit once no average holds it', () => {
+    const hit = lead.map((uv, i) => (i === Math.round(100.3 * RATE_HZ) ? 4e12 : uv));
+    const after = partOf(opened(hit), beats);
+    expect(Math.max(...after.uv.subarray(400, 420))).toBeGreaterThan(1e8);
+    expect(after.uv.subarray(800)).toEqual(part.uv.subarray(800));
+  });
+
+  test('is told by beats with room: those with an early beat on their T wave enter no average', () => {
+    const early = times.filter((_, i) => i % 4 === 1).map((t) => t + 0.42);
+    const spoilt = times.filter((_, i) => i % 4 !== 2);
+    const all = [...spoilt, ...early].sort((a, b) => a - b);
+    const wide = (t: number) => {
+      const near = early.reduce((best, e) => (Math.abs(t - e) < Math.abs(t - best) ? e : best));
+      return 1500 * Math.exp(-0.5 * ((t - near) / 0.03) ** 2);
+    };
+    const truth = at4Hz(tWaves(300, all, wide));
+    const isEarly = (i: number) => (early.includes(all[i]) ? ({ beatClass: 'V' } as const) : {});
+    const found = partOf(
+      opened(tWaves(300, all, (t) => wide(t) + wave3(t))),
+      beatsAt(all, isEarly),
+    );
+    const left = spread(found.uv.map((uv, i) => uv - truth[i]));
+    expect(left.sd).toBeLessThan(7);
+    expect(spread(truth).sd).toBeGreaterThan(40);
+  });
+
   test('goes on over stretches in which no beats were found, without a step', () => {
     const found = times.filter((t) => t > 40 && (t < 120 || t > 180) && t < 260);
     const holed = partOf(slow, beatsAt(found));

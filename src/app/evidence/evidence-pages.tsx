@@ -1,20 +1,24 @@
 import type { ReactNode } from 'react';
 import type { Evidence, EvidencePart } from '../../recording/evidence/evidence';
+import type { EvidencePageId } from '../evidence-page-id';
 import { LeadsPage } from './leads-page';
 import { OpinionsPage } from './opinions-page';
 import { PlantedPage } from './planted-page';
 import { RangesPage } from './ranges-page';
 import { TogetherPage } from './together-page';
 
-type PageOf<P extends EvidencePart> = {
+interface PageHead {
   readonly title: string;
   /** What the page is for, in a sentence above it. */
   readonly about: string;
-  readonly page: (value: Evidence[P]) => ReactNode;
-};
+}
 
-/** The pages of the evidence dialog, one a part. */
-export const EVIDENCE_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
+interface PageOf<P extends EvidencePart> extends PageHead {
+  readonly page: (value: Evidence[P]) => ReactNode;
+}
+
+/** The pages of the parts of the evidence. */
+const PART_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
   planted: {
     title: 'Planted check',
     about:
@@ -44,7 +48,17 @@ export const EVIDENCE_PAGES: { readonly [P in EvidencePart]: PageOf<P> } = {
   },
 };
 
+/** All pages of the evidence dialog: those of the parts, and those that are no part of it. */
+export const EVIDENCE_PAGES: Readonly<Record<EvidencePageId, PageHead>> = {
+  ...PART_PAGES,
+  'settings-map': {
+    title: 'Which settings',
+    about:
+      'How well route fractional would do on this recording with other settings, beside the other routes. The program changes none by itself.',
+  },
+};
+
 /** The page of a part that is there, drawn; null where it is not. */
 export function evidencePage<P extends EvidencePart>(part: P, value: Evidence[P]): ReactNode {
-  return EVIDENCE_PAGES[part].page(value);
+  return PART_PAGES[part].page(value);
 }

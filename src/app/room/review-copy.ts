@@ -1,10 +1,15 @@
+import {
+  findingsWithout,
+  identityTexts,
+  recordingWithout,
+  stateWithout,
+} from '../../export/without-identity';
 import { type AnalysisStore, createAnalysisStore } from '../../review/analysis-store';
 import { createViewStore, type ViewStore } from '../../review/view-store';
 import { beginSession } from '../../session/log';
 import { createSessionStore, type SessionStore } from '../../session/store';
 import type { AppParts } from '../app-context';
 import { createShellStore, type ShellStore } from '../shell-store';
-import { findingsWithout, identityTexts, recordingWithout, stateWithout } from './without-identity';
 
 /** Stores of a review that nothing keeps and that do not say whose it is. */
 export interface ReviewCopy {

@@ -1,8 +1,9 @@
-import type { Channel } from '../../recording/channel';
-import type { Findings } from '../../recording/findings';
-import { EMPTY_PROTOCOL } from '../../recording/protocol';
-import type { Recording } from '../../recording/recording';
-import type { Session, SessionState } from '../../session/document';
+import type { Channel } from '../recording/channel';
+import type { Findings } from '../recording/findings';
+import type { Phase } from '../recording/phase';
+import { EMPTY_PROTOCOL } from '../recording/protocol';
+import type { Recording } from '../recording/recording';
+import type { Session, SessionState } from '../session/document';
 
 /** Shorter parts of a name or code stand in ordinary words too. */
 const LEAST_LETTERS = 3;
@@ -113,4 +114,42 @@ export function findingsWithout(findings: Findings, identity: readonly string[])
     seen: [],
     warnings: [],
   };
+}
+
+/** Names of phases that say nothing but what was done; any other may be typed freely. */
+const PLAIN_PHASE =
+  /^(baseline|fasting|meal|drink|water|sham|fed|rest|sleep|recovery|whole study)(-\d+)?$/i;
+
+/**
+ * Puts a number for every phase whose name may say who it is, also where the name begins that of a part ("fed 0-30"), and
+ * leaves all other texts as they are.
+ */
+export function namesOfPhases(
+  phases: readonly Phase[],
+  identity: readonly string[],
+): (text: string) => string {
+  const names = [...new Set(phases.map(({ name }) => name))];
+  const plain = new Map(
+    names.map((name, i) => [
+      name,
+      PLAIN_PHASE.test(name) && without(name, identity) === name ? name : `phase ${i + 1}`,
+    ]),
+  );
+  return (text) => {
+    const known = plain.get(text);
+    if (known !== undefined) return known;
+    const whole = names.find((name) => text.startsWith(`${name} `));
+    return whole === undefined ? text : `${plain.get(whole)}${text.slice(whole.length)}`;
+  };
+}
+
+/** The same plain data with every text in it changed; numbers, arrays of numbers and keys stay. */
+export function deepTexts<T>(value: T, change: (text: string) => string): T;
+export function deepTexts(value: unknown, change: (text: string) => string): unknown {
+  if (typeof value === 'string') return change(value);
+  if (Array.isArray(value)) return value.map((one) => deepTexts(one, change));
+  if (typeof value !== 'object' || value === null || ArrayBuffer.isView(value)) return value;
+  return Object.fromEntries(
+    Object.entries(value).map(([key, one]) => [key, deepTexts(one, change)]),
+  );
 }

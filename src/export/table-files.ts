@@ -5,20 +5,18 @@ import { epochsCsv } from './epochs-csv';
 import type { ExportInput } from './export-input';
 import { findingsJson } from './findings-json';
 import { leadRate, minutesCsv } from './minutes-csv';
+import type { ResultFile } from './result-file';
 import { spansCsv } from './spans-csv';
-import type { TextFile } from './stored-zip';
 
-export type { ExportInput } from './export-input';
-
-/** All files of results, in a fixed order: what the page puts into one zip and the command line into a folder. */
-export function exportFiles(input: ExportInput): readonly TextFile[] {
+/** The tables and figures of a review, in a fixed order. */
+export function tableFiles(input: ExportInput): readonly ResultFile[] {
   const { recording, state, stomach, heart, openDoubts } = input;
   const rateHz = leadRate(state.roles.heart, recording);
   const beats = rateHz === null ? NO_BEATS : state.beats;
   return [
     {
       name: 'beats.csv',
-      text: beatsCsv({
+      content: beatsCsv({
         beats,
         rateHz: rateHz ?? 1,
         rr: heart?.rr ?? null,
@@ -27,9 +25,9 @@ export function exportFiles(input: ExportInput): readonly TextFile[] {
           state.roles.heart !== null && gapBetween(state.roles.heart, recording.gaps, fromS, toS),
       }),
     },
-    { name: 'epochs.csv', text: epochsCsv(stomach) },
-    { name: 'minutes.csv', text: minutesCsv(input) },
-    { name: 'spans.csv', text: spansCsv(state.spans) },
-    { name: 'findings.json', text: findingsJson(input) },
+    { name: 'epochs.csv', content: epochsCsv(stomach) },
+    { name: 'minutes.csv', content: minutesCsv(input) },
+    { name: 'spans.csv', content: spansCsv(state.spans) },
+    { name: 'findings.json', content: findingsJson(input) },
   ];
 }
