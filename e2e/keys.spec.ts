@@ -91,6 +91,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
   'go-to': ['', 'dialog', /^Go to a time$/],
   log: ['', 'dialog', /^Log$/],
   evidence: ['', 'dialog', /^Evidence$/],
+  'site-reference': ['', 'dialog', /^Reference values of the site$/],
   compare: ['', 'dialog', /^Compare with another session$/],
   'add-bookmark': ['', 'dialog', /^Bookmark this place$/],
   bookmarks: ['', 'dialog', /^Bookmarks$/],
@@ -157,7 +158,7 @@ const CHECKS: Readonly<Record<string, Check>> = {
 
 /**
  * Commands that leave the study or give a file; the tests below have them. `stop` needs long work: reading.spec. Bookmarks and
- * the room view: room.spec; differences of two sessions: history.spec.
+ * the room view: room.spec; differences of two sessions: history.spec; the self-check: evidence-self-check.spec.
  */
 const ELSEWHERE = [
   'room',
@@ -172,6 +173,7 @@ const ELSEWHERE = [
   'previous-difference',
   'previous-bookmark',
   'mend-doubt',
+  'self-check',
   'stop',
 ];
 

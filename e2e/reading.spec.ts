@@ -245,7 +245,7 @@ test.describe('settings', () => {
       else await work.getByRole('button', { name: 'Stop' }).click();
       await expect(page.getByRole('region', { name: 'Messages' })).toContainText('Stopped.');
       await expect(work).toBeHidden();
-      await expect(findings(page).getByRole('status')).not.toContainText('updating');
+      await expect(findings(page).getByRole('status').first()).not.toContainText('updating');
       if ((await undoName(page)) === 'change settings') await press(page, 'Control+z');
       expect(await allFigures(page)).toEqual(before);
       await goTo(page, '0:20:00');

@@ -194,8 +194,15 @@ export async function figure(page: Page, key: string, phase = 'fasting'): Promis
 export const figureNumber = async (page: Page, key: string, phase = 'fasting'): Promise<number> =>
   Number(await figure(page, key, phase));
 
-/** All figures in sight, in words, to compare a whole column at once. */
+/** All figures in sight with what each stands on, to compare a whole column at once; what the evidence says of them follows later. */
 export async function allFigures(page: Page): Promise<readonly string[]> {
   await settled(page);
-  return findings(page).locator('button.figure').allInnerTexts();
+  const titles = await findings(page)
+    .locator('button.figure')
+    .evaluateAll((buttons) => buttons.map((button) => button.getAttribute('title') ?? ''));
+  return titles.map((title) => {
+    const [figure, ...small] = title.split('\n');
+    const basis = small.filter((line) => /^\d/.test(line) && !line.includes(' by chance, '));
+    return [figure, ...basis].join('; ');
+  });
 }

@@ -5,6 +5,7 @@ import analysisWorkerUrl from '../workers/analysis.worker?worker&url';
 import hashWorkerUrl from '../workers/hash.worker?worker&url';
 import { Shell } from './app/shell';
 import { createShellStore } from './app/shell-store';
+import { recallReference } from './app/site-reference-kept';
 import { createStudyController } from './app/study-controller';
 import { createAnalysisStore } from './review/analysis-store';
 import { createDoubtStore } from './review/doubt-store';
@@ -38,7 +39,16 @@ function ReportNow() {
   const edit = useStore(session, (now) => now.session?.log.length ?? 0);
   const found = useStore(evidence, (now) => now.found);
   const known = useMemo(() => evidenceAt(found, edit), [found, edit]);
-  return <Report {...stores} signals={controller.signals} openDoubts={open} evidence={known} />;
+  const siteReference = useStore(shell, (now) => now.siteReference?.reference ?? null);
+  return (
+    <Report
+      {...stores}
+      signals={controller.signals}
+      openDoubts={open}
+      evidence={known}
+      siteReference={siteReference}
+    />
+  );
 }
 const renderReport = () => (
   <Suspense fallback={<output>Loading the report.</output>}>
@@ -61,4 +71,5 @@ if (root)
       renderReport={renderReport}
     />,
   );
+void recallReference(shell, browser.localStorage);
 void controller.resume();

@@ -3,11 +3,17 @@ import { join } from 'node:path';
 import { bytesOf } from '../src/export/result-file';
 import { type StudyOutcome, studiesCsv } from '../src/export/studies-csv';
 import { Refusal } from '../src/recording/failure';
+import { failedChecks } from '../src/recording/self-check';
+import type { SiteReference } from '../src/recording/site-reference';
 import { resultFiles } from '../src/report/result-files';
 import { resultsWithoutIdentity } from '../src/report/results-without-identity';
+import { PROGRAM } from '../src/units/program';
 import { folderNames } from './command-folders';
 import { type AnalyseRequest, parseArguments, USAGE, WrongArguments } from './command-line';
-import { analyseStudy } from './command-study';
+import { isSelfCheck, selfCheckText } from './command-self-check';
+import { analyseStudy, referenceIn } from './command-study';
+import { startJob } from './job';
+import { selfCheck } from './pipeline';
 
 function reasonOf(error: unknown): string {
   if (!(error instanceof Refusal)) return error instanceof Error ? error.message : String(error);
@@ -21,10 +27,11 @@ async function outcomeOf(
   name: string,
   folder: string,
   request: AnalyseRequest,
+  siteReference: SiteReference | null,
 ): Promise<StudyOutcome> {
   const { withoutIdentity } = request;
   try {
-    const all = await analyseStudy(path, request);
+    const all = await analyseStudy(path, request, siteReference);
     const input = withoutIdentity ? resultsWithoutIdentity(all) : all;
     await mkdir(folder, { recursive: true });
     for (const file of resultFiles(input)) await writeFile(join(folder, file.name), bytesOf(file));
@@ -39,14 +46,25 @@ async function outcomeOf(
   }
 }
 
+/** Prints every check value with what this machine made of it; 1 where one failed. */
+async function printSelfCheck(): Promise<number> {
+  const check = await selfCheck(startJob(() => undefined).job);
+  process.stdout.write(`${PROGRAM}\n${selfCheckText(check)}`);
+  return failedChecks(check) > 0 ? 1 : 0;
+}
+
 async function main(words: readonly string[]): Promise<number> {
+  if (isSelfCheck(words)) return printSelfCheck();
   const request = parseArguments(words);
   const { studies, out, withoutIdentity } = request;
   const several = studies.length > 1;
+  const siteReference = await referenceIn(request.reference);
   const names = folderNames(studies, withoutIdentity);
   const outcomes: StudyOutcome[] = [];
-  for (const [i, path] of studies.entries())
-    outcomes.push(await outcomeOf(path, names[i], several ? join(out, names[i]) : out, request));
+  for (const [i, path] of studies.entries()) {
+    const folder = several ? join(out, names[i]) : out;
+    outcomes.push(await outcomeOf(path, names[i], folder, request, siteReference));
+  }
   if (several) {
     await mkdir(out, { recursive: true });
     await writeFile(join(out, 'studies.csv'), studiesCsv(outcomes));

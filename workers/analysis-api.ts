@@ -9,6 +9,7 @@ import type { Phase } from '../src/recording/phase';
 import type { Recording } from '../src/recording/recording';
 import type { SlowWaveRhythm } from '../src/recording/rhythm';
 import type { RoleReasons, Roles } from '../src/recording/roles';
+import type { SelfCheck } from '../src/recording/self-check';
 import type { Settings } from '../src/recording/settings';
 import type { SettingsMap } from '../src/recording/settings-map';
 import type { Interval, Span } from '../src/recording/span';
@@ -219,6 +220,8 @@ export interface AnalysisApi {
     inputs: ReviewInputs,
     settled: readonly SettledDoubt[],
   ): Promise<Reply<DoubtList>>;
+  /** The check values through the code that makes the figures; needs no study to be open. */
+  selfCheck(job: JobId): Promise<Reply<SelfCheck>>;
   /** One part of the evidence beside the figures. The doubts that are not among `settled` are open. */
   evidence(
     job: JobId,

@@ -4,6 +4,7 @@ import type { EvidencePart } from '../src/recording/evidence/evidence';
 import type { Failure, Reply } from '../src/recording/failure';
 import type { Findings } from '../src/recording/findings';
 import type { Roles } from '../src/recording/roles';
+import type { SelfCheck } from '../src/recording/self-check';
 import type { SettingsMap } from '../src/recording/settings-map';
 import type {
   Analysis,
@@ -60,6 +61,8 @@ export interface AnalysisClient {
     part: EvidencePart,
     options?: CallOptions,
   ): Promise<Reply<EvidenceReply>>;
+  /** Needs no study to be open. */
+  selfCheck(options?: CallOptions): Promise<Reply<SelfCheck>>;
   settingsMap(inputs: ReviewInputs, options?: CallOptions): Promise<Reply<SettingsMap>>;
   lookAlikes(
     inputs: ReviewInputs,
@@ -233,6 +236,7 @@ export function createAnalysisClient(
       call((api, job) => api.doubts(job, inputs, settled), options),
     evidence: (inputs, settled, part, options) =>
       call((api, job) => api.evidence(job, inputs, settled, part), options),
+    selfCheck: (options) => call((api, job) => api.selfCheck(job), options),
     settingsMap: (inputs, options) => call((api, job) => api.settingsMap(job, inputs), options),
     lookAlikes: (inputs, settled, doubtId, options) =>
       call((api, job) => api.lookAlikes(job, inputs, settled, doubtId), options),

@@ -2,7 +2,7 @@ import * as Comlink from 'comlink';
 import { type Failure, Refusal, type Reply } from '../src/recording/failure';
 import type { AnalysisApi, JobId, WorkerNews } from './analysis-api';
 import { type Job, type JobControl, startJob } from './job';
-import { createPipeline } from './pipeline';
+import { createPipeline, selfCheck } from './pipeline';
 
 const SIGN_OF_LIFE_MS = 1000;
 /** Progress is told at most this often, so that telling costs nothing. */
@@ -72,6 +72,7 @@ const api: AnalysisApi = {
   doubts: (id, inputs, settled) => inJob(id, (job) => pipeline.doubts(inputs, settled, job)),
   evidence: (id, inputs, settled, part) =>
     inJob(id, (job) => pipeline.evidence(inputs, settled, part, job)),
+  selfCheck: (id) => inJob(id, selfCheck),
   settingsMap: (id, inputs) => inJob(id, (job) => pipeline.settingsMap(inputs, job)),
   lookAlikes: (id, inputs, settled, doubtId) =>
     inJob(id, (job) => pipeline.lookAlikes(inputs, settled, doubtId, job)),

@@ -15,11 +15,14 @@ export interface AnalyseRequest {
   readonly rateHz: number | null;
   readonly unit: string | null;
   readonly out: string;
+  /** File with the site's reference values. */
+  readonly reference: string | null;
   /** Whether what is written says whose study it is. */
   readonly withoutIdentity: boolean;
 }
 
 export const USAGE = `npm run analyse -- STUDY... [options]
+npm run analyse -- --self-check
   --session FILE   the review to compute from (one study only)
   --code CODE      what the study is called (one study only; default: the header's code, else study- and
                    the first 8 digits of its SHA-256)
@@ -30,10 +33,13 @@ export const USAGE = `npm run analyse -- STUDY... [options]
   --route NAME     band, fractional or beat-average
   --rate HZ        sampling rate of delimited text without a time column
   --unit UNIT      unit of delimited text that names none: V, mV, uV, nV
+  --reference FILE reference values of the site, to stand beside the figures they fit
   --out DIR        where the files go (default: here); several studies get a folder each and one studies.csv
   --without-identity
                    X for who it is, dates moved, no texts that people wrote, no file names
-LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed, 2 wrong arguments.`;
+  --self-check     runs the program's check values on this machine and prints each; goes alone
+LEAD is a label or #N; a difference of two is A~B (#2~#3). Exit status: 0 done, 1 a study could not be analysed or a check
+failed, 2 wrong arguments.`;
 
 /** Wrong arguments, in words for the person. */
 export class WrongArguments extends Error {}
@@ -49,6 +55,7 @@ const OPTIONS = [
   'rate',
   'unit',
   'out',
+  'reference',
 ];
 /** Options without a value. */
 const FLAGS = ['without-identity'];
@@ -102,6 +109,7 @@ export function parseArguments(words: readonly string[]): AnalyseRequest {
     rateHz: parseRate(single.get('rate')),
     unit: single.get('unit') ?? null,
     out: single.get('out') ?? '.',
+    reference: single.get('reference') ?? null,
     withoutIdentity: flags.has('without-identity'),
   };
 }

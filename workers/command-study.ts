@@ -3,6 +3,7 @@ import { createReadStream, openAsBlob } from 'node:fs';
 import { readFile } from 'node:fs/promises';
 import { basename } from 'node:path';
 import { DEFAULT_SETTINGS, type Settings } from '../src/recording/settings';
+import type { SiteReference } from '../src/recording/site-reference';
 import { excerptWaves } from '../src/report/excerpt-waves';
 import type { ResultInput } from '../src/report/result-files';
 import { confirmStudy } from '../src/session/confirm-study';
@@ -10,6 +11,7 @@ import type { Session } from '../src/session/document';
 import { initialState, studyIdentity } from '../src/session/initial-state';
 import { beginSession } from '../src/session/log';
 import { textToSession } from '../src/session/read-document';
+import { siteReferenceOf } from '../src/session/read-site-reference';
 import { editNumber } from '../src/session/store';
 import { PROGRAM } from '../src/units/program';
 import type { Opened } from './analysis-api';
@@ -60,8 +62,19 @@ async function sha256Of(path: string): Promise<string> {
   return hash.digest('hex');
 }
 
-/** Everything that is written of one study, computed from its file alone. Throws Refusal where it cannot be analysed. */
-export async function analyseStudy(path: string, request: AnalyseRequest): Promise<ResultInput> {
+/** The site's reference values of a file; null where none is named. Throws Refusal with row and column of what is wrong. */
+export const referenceIn = async (path: string | null): Promise<SiteReference | null> =>
+  path === null ? null : siteReferenceOf(await readFile(path, 'utf8'), basename(path));
+
+/**
+ * Everything that is written of one study, computed from its file alone, beside the site's reference values. Throws Refusal
+ * where it cannot be analysed.
+ */
+export async function analyseStudy(
+  path: string,
+  request: AnalyseRequest,
+  siteReference: SiteReference | null,
+): Promise<ResultInput> {
   const { job } = startJob(() => undefined);
   const pipeline = createPipeline();
   const file = await openAsBlob(path);
@@ -91,6 +104,7 @@ export async function analyseStudy(path: string, request: AnalyseRequest): Promi
     findings: analysis.findings,
     openDoubts,
     evidence,
+    siteReference,
     age: null,
     signals: await pipeline.separated({ ...state, edit }, job),
     waves: await excerptWaves(

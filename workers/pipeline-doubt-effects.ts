@@ -109,7 +109,7 @@ function targetOf(
 }
 
 /** The spans as a mend would leave them. */
-function spansAfter(spans: readonly Span[], mend: Mend): readonly Span[] {
+export function spansAfter(spans: readonly Span[], mend: Mend): readonly Span[] {
   if (mend.kind === 'beats') return spans;
   if (mend.kind === 'include') return spans.filter(({ id }) => id !== mend.spanId);
   return [...spans, { ...mend.span, id: Number.NaN }];

@@ -18,7 +18,7 @@ import { BEAT_CLASSES } from '../src/recording/beat';
 import type { NotPlanted, PlantedBeats, PlantedHeart } from '../src/recording/evidence/planted';
 import { leadKey } from '../src/recording/lead';
 import { phasesOrWhole } from '../src/recording/phase';
-import type { Interval } from '../src/recording/span';
+import { type Interval, isWithin } from '../src/recording/span';
 import { loadRoutes, type Routes } from '../src/separate/routes';
 import { heartStretches, overStretches } from '../src/trust/stretches';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
@@ -185,7 +185,8 @@ export async function plantedHeart(
     return none(`Fewer than ${FEWEST_BEATS} normal beats stand in the stretches looked at.`);
   const { averages, average, rrS } = found;
   const random = createRandom(SEED);
-  const planted = read.map(({ within }) => plantedTimes(within.fromS, within.toS, rrS, random));
+  const known = read.map(({ within }) => plantedTimes(within.fromS, within.toS, rrS, random));
+  const planted = known.map((times) => times.filter((timeS) => !isWithin(timeS, from.blocked)));
   const leftovers: Float64Array[] = [];
   for (const stretch of read)
     leftovers.push(await withRests(withoutOwnBeats(stretch, averages, rateHz), job));
@@ -212,7 +213,7 @@ export async function plantedHeart(
     stretchS: median(stretches.map(({ fromS, toS }) => toS - fromS)),
     ownUv: heightOf(average, rateHz),
     averaged: average.count,
-    rmssdMs: median(planted.map(rmssdOfTimes)),
+    rmssdMs: median(known.map(rmssdOfTimes)),
     meanRrMs: 1000 * rrS,
     beats: results,
     picture,

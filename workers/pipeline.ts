@@ -5,6 +5,7 @@ import type { Evidence, EvidencePart } from '../src/recording/evidence/evidence'
 import type { Findings } from '../src/recording/findings';
 import type { Lead } from '../src/recording/lead';
 import type { Roles } from '../src/recording/roles';
+import type { SelfCheck } from '../src/recording/self-check';
 import type { HeartOutput } from '../src/recording/separated';
 import type { SettingsMap } from '../src/recording/settings-map';
 import type { SeparatedSlow } from '../src/separate/route';
@@ -162,4 +163,10 @@ export function createPipeline(): Pipeline {
     heartbeat: (lead) => study().signals.heart(lead),
     separated: (inputs, job) => inLine(study(), job, (one) => separatedSignals(one, inputs, job)),
   };
+}
+
+/** The check values through the code that makes the figures, on invented studies of their own; needs no study to be open. */
+export async function selfCheck(job: Job): Promise<SelfCheck> {
+  const { allChecks, runChecks } = await import('./pipeline-self-check');
+  return runChecks(allChecks(createPipeline), job);
 }

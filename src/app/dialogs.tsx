@@ -33,6 +33,7 @@ const RolesDialog = later('RolesDialog');
 const SameFileDialog = later('SameFileDialog');
 const SettingsDialog = later('SettingsDialog');
 const SignDialog = later('SignDialog');
+const SiteReferenceDialog = later('SiteReferenceDialog');
 const SpansDialog = later('SpansDialog');
 const TextReadingDialog = later('TextReadingDialog');
 
@@ -87,6 +88,8 @@ function OneDialog({ state, parts }: OneDialogProps) {
       return <AddBookmarkDialog />;
     case 'bookmarks':
       return <BookmarksDialog />;
+    case 'site-reference':
+      return <SiteReferenceDialog />;
     case 'keys':
       return <KeysDialog parts={parts} />;
     case 'about':

@@ -6,6 +6,7 @@ import type { EvidenceSearch, Found } from '../review/evidence-store';
 import { useApp, useSession } from './app-context';
 import { Dialog } from './dialog';
 import { EVIDENCE_PAGES, evidencePage } from './evidence/evidence-pages';
+import { SelfCheckPage } from './evidence/self-check-page';
 import { SettingsPage } from './evidence/settings-page';
 import type { EvidencePageId } from './evidence-page-id';
 import { FailureWords } from './small-dialogs';
@@ -18,39 +19,56 @@ const ORDER: readonly EvidencePageId[] = [
   'opinions',
   'leads',
   'together',
+  'self-check',
 ];
 
-const isOfStudy = (page: EvidencePageId): page is EvidencePart => page !== 'settings-map';
+/** The self-check alone needs no study. */
+const needsStudy = (page: EvidencePageId): boolean => page !== 'self-check';
 
 /** How far each number can be believed, a page a question. */
 export function EvidenceDialog({ first }: { readonly first: EvidencePageId }) {
   const { shell } = useApp();
   const [page, setPage] = useState<EvidencePageId>(first);
+  const open = useSession(({ session }) => session !== null);
+  const pages = open ? ORDER : ORDER.filter((one) => !needsStudy(one));
   return (
     <Dialog
-      title="Evidence"
+      title={open ? 'Evidence' : EVIDENCE_PAGES[page].title}
       subtitle={EVIDENCE_PAGES[page].about}
       size="large"
       onClose={() => shell.getState().closeDialog()}
     >
-      <nav className="evidence-nav" aria-label="Pages of the evidence">
-        {ORDER.map((one) => (
-          <button
-            key={one}
-            type="button"
-            className="button slight"
-            aria-current={one === page ? 'page' : undefined}
-            onClick={() => setPage(one)}
-          >
-            {EVIDENCE_PAGES[one].title}
-          </button>
-        ))}
-      </nav>
+      {pages.length > 1 ? (
+        <nav className="evidence-nav" aria-label="Pages of the evidence">
+          {pages.map((one) => (
+            <button
+              key={one}
+              type="button"
+              className="button slight"
+              aria-current={one === page ? 'page' : undefined}
+              onClick={() => setPage(one)}
+            >
+              {EVIDENCE_PAGES[one].title}
+            </button>
+          ))}
+        </nav>
+      ) : null}
       <section className="evidence-page" aria-label={EVIDENCE_PAGES[page].title}>
-        {isOfStudy(page) ? <PartPage key={page} part={page} /> : <SettingsPage />}
+        <OnePage page={page} />
       </section>
     </Dialog>
   );
+}
+
+function OnePage({ page }: { readonly page: EvidencePageId }) {
+  switch (page) {
+    case 'settings-map':
+      return <SettingsPage />;
+    case 'self-check':
+      return <SelfCheckPage />;
+    default:
+      return <PartPage key={page} part={page} />;
+  }
 }
 
 /** A computed part, grey while it is of an earlier edit; what is missing says why. */

@@ -9,7 +9,7 @@ import { NO_EVIDENCE } from '../review/evidence-store';
 import type { SessionStore } from '../session/store';
 import { inputsOf, sameInputs } from './analysis-runner';
 
-export type EvidenceAccess = Pick<AnalysisClient, 'evidence' | 'settingsMap'>;
+export type EvidenceAccess = Pick<AnalysisClient, 'evidence' | 'settingsMap' | 'selfCheck'>;
 
 interface RunnerParts {
   readonly session: SessionStore;

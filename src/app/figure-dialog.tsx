@@ -5,13 +5,15 @@ import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
 import { FIGURE_MEANINGS } from '../recording/figure-meanings';
 import type { PhaseFindings } from '../recording/findings';
 import type { Settings } from '../recording/settings';
+import { rangeGrounds, rangesOf, rangeWords } from '../recording/site-reference';
 import { evidenceAt } from '../review/evidence-store';
 import { goToStretch } from '../review/findings-go';
 import { figureWords, stretchWords } from '../review/findings-words';
-import { useAnalysis, useApp, useSession } from './app-context';
+import { useAnalysis, useApp, useSession, useShell } from './app-context';
 import { Dialog } from './dialog';
 import { EpochTable, SegmentTable } from './figure-data';
 import { FigureHistory } from './figure-history';
+import { FigureRangesList } from './figure-ranges';
 
 interface FigureDialogProps {
   /** Key of the figure catalogue, and the name of the phase or part of it. */
@@ -52,6 +54,7 @@ export function FigureDialog({ figure, phase }: FigureDialogProps) {
       }
     >
       <FigureFacts definition={definition} part={part} settings={settings} />
+      <FigureRangesList definition={definition} part={part.name} />
       {figure === 'time_none_pct' ? <WouldHaveBeenFound /> : null}
       <FigureHistory definition={definition} part={part.name} />
       {definition.organ === 'stomach' ? <EpochTable part={part} onGo={go} /> : null}
@@ -79,6 +82,10 @@ interface FigureFactsProps {
 function FigureFacts({ definition, part, settings }: FigureFactsProps) {
   const { large, small } = figureWords(part.figures[definition.key], definition);
   const meaning = FIGURE_MEANINGS[definition.key];
+  const reference = useShell((state) => state.siteReference);
+  const protocol = useSession((state) => state.session?.state.protocol);
+  const ranges =
+    reference && protocol ? rangesOf(reference.reference, protocol)(definition.key, part) : [];
   return (
     <>
       <p className="figure-value">
@@ -100,6 +107,14 @@ function FigureFacts({ definition, part, settings }: FigureFactsProps) {
           <dt>Settings</dt>
           <dd>{meaning.settings(settings)}</dd>
         </div>
+        {ranges.map((range) => (
+          <div key={rangeGrounds(range)}>
+            <dt>Reference of this site</dt>
+            <dd>
+              {rangeWords(range)} {definition.unit} ({rangeGrounds(range)})
+            </dd>
+          </div>
+        ))}
       </dl>
     </>
   );

@@ -18,4 +18,5 @@ export { ResultsDialog } from './results-dialog';
 export { RolesDialog } from './roles-dialog';
 export { SettingsDialog } from './settings-dialog';
 export { SignDialog } from './sign-dialog';
+export { SiteReferenceDialog } from './site-reference-dialog';
 export { SpansDialog } from './spans-dialog';

@@ -1,6 +1,7 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Failure } from '../recording/failure';
 import type { FoundInFile, Recording } from '../recording/recording';
+import type { KeptReference } from '../recording/site-reference';
 import type { Session } from '../session/document';
 import type { NotedKind } from '../session/note-edits';
 import type { KeptRow } from './controller';
@@ -37,6 +38,7 @@ export type DialogState =
   | { readonly kind: 'find-within' }
   | { readonly kind: 'add-bookmark' }
   | { readonly kind: 'bookmarks' }
+  | { readonly kind: 'site-reference' }
   | { readonly kind: 'keys' }
   | { readonly kind: 'about' }
   | { readonly kind: 'log' }
@@ -80,6 +82,8 @@ export interface ShellState {
   readonly plainKeys: boolean;
   /** Keys the person has given to commands instead of those of the table. */
   readonly ownKeys: OwnKeys;
+  /** Reference values of the site, kept in this browser; null where it has none. */
+  readonly siteReference: KeptReference | null;
   openDialog(dialog: DialogState): void;
   closeDialog(): void;
   say(text: string): void;
@@ -144,6 +148,7 @@ export function createShellStore(storage: Storage | null): ShellStore {
       messages: [],
       status: '',
       compared: null,
+      siteReference: null,
       statusMore: '',
       openDialog: (dialog) =>
         set((before) => ({

@@ -82,6 +82,7 @@ export function createStudyFiles(parts: FileParts) {
         heart,
         breathing,
         findings,
+        siteReference: shell.getState().siteReference?.reference ?? null,
         age: null,
       };
     },

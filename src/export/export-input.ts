@@ -4,6 +4,7 @@ import type { Findings } from '../recording/findings';
 import type { BreathingSeries, HeartSegment, RrSeries } from '../recording/heart-series';
 import type { Recording } from '../recording/recording';
 import type { SlowWaveRhythm } from '../recording/rhythm';
+import type { SiteReference } from '../recording/site-reference';
 import type { SessionState } from '../session/document';
 
 /** What the page and the command line both have once a study is analysed. */
@@ -27,4 +28,6 @@ export interface ExportInput {
   /** The doubts that are open; those that are settled stand in the state. */
   readonly openDoubts: readonly Doubt[];
   readonly evidence: Evidence;
+  /** Reference values that the site keeps; null where it gave none. */
+  readonly siteReference: SiteReference | null;
 }

@@ -3,6 +3,7 @@ import type { FigureValue } from '../recording/figure';
 import { FIGURES, type FigureDefinition } from '../recording/figure-catalogue';
 import type { FigureChange, PhaseFindings } from '../recording/findings';
 import { leadKey } from '../recording/lead';
+import { type RangesFor, rangesOf, type SiteRange } from '../recording/site-reference';
 import { evidenceJson } from './evidence/evidence-json';
 import type { ExportInput } from './export-input';
 import { roundedTo } from './write-number';
@@ -16,12 +17,14 @@ const CAUTIONS = [
 /**
  * findings.json: every figure by phase with its unit, what it stands on, coverage, settings, program and the study's SHA-256.
  * Keys are stable; figures are in the order of the catalogue, rounded to its decimals. A figure is a number (`value`), a count
- * (`count`, `of`, `what`) or withheld (`withheld`: the reason). Throws Error where a key is not in the catalogue.
+ * (`count`, `of`, `what`) or withheld (`withheld`: the reason); the site's ranges that fit a number stand in its
+ * `references_of_this_site`. Throws Error where a key is not in the catalogue.
  */
 export function findingsJson(input: Omit<ExportInput, 'stomach' | 'heart'>): string {
   const { state, evidence } = input;
   const findings = withEvidenceMarks(input.findings, evidence);
   const { study, roles } = state;
+  const ranges = rangesOf(input.siteReference, state.protocol);
   const document = {
     format: 'bicadence-findings',
     version: 1,
@@ -42,7 +45,7 @@ export function findingsJson(input: Omit<ExportInput, 'stomach' | 'heart'>): str
       breath: roles.breath && leadKey(roles.breath),
     },
     settings: inSnakeCase(state.settings),
-    phases: findings.phases.map(phasePart),
+    phases: findings.phases.map((part) => phasePart(part, ranges)),
     changes: findings.changes.map(changePart),
     seen_in_passing: findings.seen.map((one) => ({
       from_s: seconds(one.fromS),
@@ -57,7 +60,7 @@ export function findingsJson(input: Omit<ExportInput, 'stomach' | 'heart'>): str
 
 const seconds = (value: number) => roundedTo(value, 6);
 
-function phasePart(part: PhaseFindings) {
+function phasePart(part: PhaseFindings, ranges: RangesFor) {
   const lengthS = part.toS - part.fromS;
   const coverage = (keptS: number) => (lengthS > 0 ? roundedTo(keptS / lengthS, 4) : null);
   wantKnown(Object.keys(part.figures));
@@ -74,7 +77,13 @@ function phasePart(part: PhaseFindings) {
     adequacy_stomach: part.adequacyStomach,
     adequacy_heart: part.adequacyHeart,
     figures: Object.fromEntries(
-      given.map((figure) => [figure.key, figurePart(figure, part.figures[figure.key])]),
+      given.map((figure) => [
+        figure.key,
+        {
+          ...figurePart(figure, part.figures[figure.key]),
+          ...rangePart(ranges(figure.key, part)),
+        },
+      ]),
     ),
   };
 }
@@ -99,6 +108,13 @@ function figurePart({ unit, decimals }: FigureDefinition, figure: FigureValue) {
     case 'withheld':
       return { unit, withheld: figure.reason };
   }
+}
+
+/** The site's ranges beside a figure, as its file has them; nothing where none fits. */
+function rangePart(ranges: readonly SiteRange[]) {
+  return ranges.length === 0
+    ? {}
+    : { references_of_this_site: ranges.map(({ figure: _, ...range }) => inSnakeCase(range)) };
 }
 
 function wantKnown(keys: readonly string[]): void {

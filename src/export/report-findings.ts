@@ -3,6 +3,12 @@ import { FIGURES, type FigureDefinition, type Organ } from '../recording/figure-
 import { changeWords, figureWords } from '../recording/figure-words';
 import type { FigureChange, Findings, PhaseFindings } from '../recording/findings';
 import { isFasting, isFed, isMeal } from '../recording/phase';
+import {
+  type RangesFor,
+  rangeGrounds,
+  rangeWords,
+  SITE_REFERENCE,
+} from '../recording/site-reference';
 import { createNotes, inTurn, type Note, type Notes } from './report-notes';
 
 /** A column of figures: those of a phase or part, or what changed from fasting to a phase. */
@@ -16,6 +22,8 @@ export interface FindingsCell {
   readonly words: string;
   /** Said in the cell itself, after the value: a change in decibel as a factor. */
   readonly small: string;
+  /** The ranges that the site keeps for this figure in this phase; their letters say what they hold for. */
+  readonly ranges: readonly string[];
   readonly letters: readonly string[];
 }
 
@@ -45,6 +53,10 @@ export interface FindingsTable {
   /** True where a change column holds dashes for figures that are never compared. */
   readonly hasNotCompared: boolean;
   readonly hasWithheld: boolean;
+  /** True where ranges of the site stand beside figures. */
+  readonly hasRanges: boolean;
+  /** Ranges by chance that stand beneath the values, by `placeOf`; empty where none are told. */
+  readonly chances: Readonly<Record<string, string>>;
 }
 
 /** Fed phases side by side in one table; more of them go into a table below. */
@@ -72,18 +84,18 @@ interface WantedGroup {
  * The main figures of stomach and heart before and after the meal, with what else moved in the same minutes. Meals are left
  * out. One table, or more where a long study has many fed phases; fasting stands first in each.
  */
-export function mainTables(findings: Findings): readonly FindingsTable[] {
+export function mainTables(findings: Findings, ranges: RangesFor): readonly FindingsTable[] {
   const organs: readonly Organ[] = ['stomach', 'heart'];
   const groups = organs.map((organ) => ({
     organ,
     figures: FIGURES.filter((figure) => figure.main && figure.organ === organ),
     beside: FIGURES.filter((figure) => explains(figure, organ)),
   }));
-  return tablesOf(findings, groups);
+  return tablesOf(findings, groups, ranges);
 }
 
 /** Every figure that mainTables leaves out, in the order of the catalogue. */
-export function otherTables(findings: Findings): readonly FindingsTable[] {
+export function otherTables(findings: Findings, ranges: RangesFor): readonly FindingsTable[] {
   const others = FIGURES.filter(({ main }) => !main);
   const organs = [...new Set(others.map(({ organ }) => organ))];
   const groups = organs.map((organ) => ({
@@ -91,14 +103,19 @@ export function otherTables(findings: Findings): readonly FindingsTable[] {
     figures: others.filter((figure) => figure.organ === organ),
     beside: [],
   }));
-  return tablesOf(findings, groups);
+  return tablesOf(findings, groups, ranges);
 }
 
-function tablesOf(findings: Findings, wanted: readonly WantedGroup[]): readonly FindingsTable[] {
+function tablesOf(
+  findings: Findings,
+  wanted: readonly WantedGroup[],
+  ranges: RangesFor,
+): readonly FindingsTable[] {
   return partsSideBySide(findings.phases).map((parts) => {
     const notes = createNotes();
     const columns = columnsOf(parts, findings.changes);
-    const row = (figure: FigureDefinition) => rowOf(figure, { columns, parts, findings, notes });
+    const row = (figure: FigureDefinition) =>
+      rowOf(figure, { columns, parts, findings, notes, ranges });
     const groups = wanted.map(({ organ, figures, beside }) => ({
       organ,
       title: TITLES[organ],
@@ -115,6 +132,8 @@ function tablesOf(findings: Findings, wanted: readonly WantedGroup[]): readonly 
       inOrderOf: parts.length > 1 ? parts.map(({ name }) => name) : [],
       hasNotCompared: cells.some(({ kind }) => kind === 'not-compared'),
       hasWithheld: cells.some(({ kind }) => kind === 'withheld'),
+      hasRanges: cells.some((cell) => cell.ranges.length > 0),
+      chances: {},
     };
   });
 }
@@ -152,10 +171,11 @@ interface RowContext {
   readonly parts: readonly PhaseFindings[];
   readonly findings: Findings;
   readonly notes: Notes;
+  readonly ranges: RangesFor;
 }
 
 function rowOf(figure: FigureDefinition, context: RowContext): FindingsRow {
-  const { columns, parts, findings, notes } = context;
+  const { columns, parts, findings, notes, ranges } = context;
   const values = parts.map(({ figures }) => figures[figure.key]);
   const texts = rowTexts(values);
   const letters = texts.shared.map((text) => notes.letterOf(text));
@@ -165,7 +185,8 @@ function rowOf(figure: FigureDefinition, context: RowContext): FindingsRow {
       return changeCell(change?.value, figure, notes);
     }
     const place = parts.findIndex((part) => part.name === name);
-    return phaseCell(values[place], figure, texts.own[place], notes);
+    const cell = phaseCell(values[place], figure, texts.own[place], notes);
+    return withRanges(cell, ranges(figure.key, parts[place]), notes);
   });
   return { key: figure.key, name: nameOf(figure), letters, cells };
 }
@@ -225,7 +246,19 @@ function phaseCell(
   const { large, small } = figureWords(value, figure);
   const withheld = !value || value.kind === 'withheld';
   const letters = (withheld ? small : texts).map((text) => notes.letterOf(text));
-  return { kind: withheld ? 'withheld' : 'value', words: large, small: '', letters };
+  return { kind: withheld ? 'withheld' : 'value', words: large, small: '', ranges: [], letters };
+}
+
+/** A cell with the site's ranges and the letters of what they hold for. */
+function withRanges(cell: FindingsCell, ranges: ReturnType<RangesFor>, notes: Notes): FindingsCell {
+  const grounds = ranges.map((range) =>
+    notes.letterOf(`${SITE_REFERENCE}: ${rangeGrounds(range)}`),
+  );
+  return {
+    ...cell,
+    ranges: [...new Set(ranges.map(rangeWords))],
+    letters: [...cell.letters, ...grounds],
+  };
 }
 
 function changeCell(
@@ -234,12 +267,13 @@ function changeCell(
   notes: Notes,
 ): FindingsCell {
   if (figure.change === 'none' || !value)
-    return { kind: 'not-compared', words: '–', small: '', letters: [] };
+    return { kind: 'not-compared', words: '–', small: '', ranges: [], letters: [] };
   const { large, small } = changeWords(value, figure);
   if (value.kind !== 'number') {
     const kind = value.kind === 'withheld' ? 'withheld' : 'value';
-    return { kind, words: large, small: '', letters: small.map((text) => notes.letterOf(text)) };
+    const letters = small.map((text) => notes.letterOf(text));
+    return { kind, words: large, small: '', ranges: [], letters };
   }
   const letters = value.marks.map((text) => notes.letterOf(text));
-  return { kind: 'value', words: large, small: value.basis ?? '', letters };
+  return { kind: 'value', words: large, small: value.basis ?? '', ranges: [], letters };
 }

@@ -4,9 +4,11 @@ import { withEvidenceMarks } from '../recording/evidence/evidence-marks';
 import { evidenceLines } from '../recording/evidence/evidence-words';
 import type { Findings } from '../recording/findings';
 import type { Recording } from '../recording/recording';
+import { type RangesFor, rangesOf, type SiteReference } from '../recording/site-reference';
 import type { Session, Signature } from '../session/document';
 import { formatClock } from '../units/time';
 import { type AdequacyTable, adequacyTable } from './report-adequacy';
+import { withChances } from './report-chances';
 import { type EventRow, eventRows } from './report-events';
 import { type FindingsTable, mainTables, otherTables } from './report-findings';
 import { type Hide, identityHider, nothingHidden } from './report-hiding';
@@ -79,6 +81,8 @@ export interface ReportInput {
   readonly age: string | null;
   /** The parts of the evidence that belong to these figures. */
   readonly evidence: Partial<Evidence>;
+  /** Reference values that the site keeps; null where it gave none. */
+  readonly siteReference: SiteReference | null;
 }
 
 /** The report of a session as it stands; a signed one prints figures, settings and words as they were signed. */
@@ -89,6 +93,10 @@ export function reportModel(input: ReportInput): ReportModel {
   const status = reportStatus(session);
   const signed = status.kind === 'draft' ? null : status.signature;
   const findings = signed?.findings ?? withEvidenceMarks(input.findings, input.evidence);
+  const differences = signed ? differencesSinceSigning(signed.findings, input.findings) : [];
+  // Ranges are computed of the figures as they are now; they stand beside signed ones only where these are the same.
+  const hold = differences.length === 0;
+  const ranges = hiddenIn(rangesOf(input.siteReference, state.protocol), hide);
   const words = hide(statusWords(status, session.log.length, identityHidden));
   return {
     kind: status.kind,
@@ -108,8 +116,10 @@ export function reportModel(input: ReportInput): ReportModel {
     ].map(hide),
     protocol: protocolFacts(state.protocol, hide),
     events: eventRows(state, hide),
-    main: mainTables(findings),
-    others: otherTables(findings),
+    main: mainTables(findings, ranges).map((table) =>
+      withChances(table, hold ? (input.evidence.ranges ?? null) : null),
+    ),
+    others: otherTables(findings, ranges),
     seen: findings.seen.map(({ fromS, toS, text }) => ({
       name: `${formatClock(fromS)}–${formatClock(toS)}`,
       words: hide(text),
@@ -121,10 +131,22 @@ export function reportModel(input: ReportInput): ReportModel {
     notes: hide(signed?.notes ?? state.notes),
     conclusion: hide(signed?.conclusion ?? state.conclusion),
     signatures: signatureRows(status, identityHidden, hide),
-    differences: signed ? differencesSinceSigning(signed.findings, input.findings) : [],
+    differences,
     ...makingOf(input, signed, hide),
   };
 }
+
+/** The site's ranges with what could identify a person taken out of their words. */
+const hiddenIn =
+  (ranges: RangesFor, hide: Hide): RangesFor =>
+  (figure, part) =>
+    ranges(figure, part).map((range) => ({
+      ...range,
+      posture: hide(range.posture),
+      meal: hide(range.meal),
+      population: hide(range.population),
+      source: hide(range.source),
+    }));
 
 function warningsOf({ found }: Recording, { warnings }: Findings): readonly string[] {
   const inFile = found.filter(({ severity }) => severity === 'warning').map(foundWords);

@@ -99,7 +99,7 @@ export function* detectInSteps(input: DetectionInput): Generator<number, Detecti
   const rhythm = yield* quietly(rhythmBy(all, rateHz), 0.93);
   const decided = yield* quietly(decidedPlaces(all, places, rateHz, rhythm), 0.93);
   yield 0.93;
-  const isLoud = loudPlaces(all, places, decided, rateHz);
+  const isLoud = loudPlaces(all, places, decided, rateHz, doubted);
   yield 0.93;
   const legible = legibleStretches(doubted, allS, decided, (s) => rhythm(s).rrS);
   const barred = doubted.filter((_, k) => !legible[k]);

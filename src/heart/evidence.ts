@@ -1,9 +1,12 @@
 import { log } from '../numeric/elementary';
 import type { Candidate } from './shape-pass';
 
-/** Spread of the logarithm of a beat's energy about the usual: breathing alone moves it by half. */
+/**
+ * Spread of the logarithm of a beat's energy about the usual. A choice, wider than that of usual beats (0.11 by
+ * `npm run bench -- evidence`): breathing alone may move it by half, and early beats are low.
+ */
 const ENERGY_SPREAD = 0.35;
-/** Crests of noise against its own level, and the spread of the logarithm of that. */
+/** Crests of noise against its own level, and the spread of the logarithm of that: 1.4 and 0.30 in the bench; the former is a choice. */
 const NOISE_CREST = 2.2;
 const NOISE_SPREAD = 0.35;
 /** Weaker QRS energy than this is no heartbeat: that of an R peak of about 1 uV. */
@@ -39,7 +42,7 @@ export function firstEvidence(energyUv: number, beatUv: number, noiseUv: number)
   return 2 + energyEvidence(energyUv, beatUv, Math.min(noiseUv, beatUv / 4));
 }
 
-/** What a beat costs where no shape could be learned. */
+/** What a beat costs where no shape could be learned: a choice, of which the bench did not notice 1 to 6. */
 const SHAPELESS_COST = 3;
 
 /**
@@ -65,10 +68,16 @@ const OVER_NOISE = { weight: 0.6, from: -2, to: 5 };
 const ENERGY = { weight: 1.25, from: -1.2 };
 const MORE_ENERGY = -3.2;
 
-/** Where noise leaves a usual beat less like its shape than `seen`, only what is as like as `sure` is believed. */
+/**
+ * Where noise leaves a usual beat less like its shape than `seen`, only what is as like as `sure` is believed: a choice, which
+ * the bench notices at 25 uV alone.
+ */
 const UNSEEN = { weight: -8, seen: 0.6, unsure: 0.6, sure: 0.9 };
 
-/** Noise makes a beat less like its shape: what it takes from a usual beat's likeness is given back by this, up to so much. */
+/**
+ * Noise makes a beat less like its shape: what it takes from a usual beat's likeness is given back by this, up to so much. In
+ * the bench places lack 7 to 9 times it, up to 0.25; with 7 more beats are found and more is taken for one.
+ */
 const NOISY = { weight: 5, most: 0.25 };
 
 /** What speaks against a place where noise hides a usual beat; 0 where it does not, or where the shape is plain all the same. */

@@ -70,10 +70,12 @@ export function* findBeats(signal: HeartSignal, eager = 0): Generator<number, Fo
     const taken = mapInSteps(path, (i) => ({ ...candidates[i], score: scores[i] }));
     beats = yield* quietly(taken, 0.92);
     yield 0.92;
-    const asPlace = ({ sample, shape, energyUv }: Candidate, i: number) => ({
+    const asPlace = ({ sample, shape, energyUv, likeP, likeT }: Candidate, i: number) => ({
       sample,
       shape,
       energyUv,
+      likeP,
+      likeT,
       score: worth[i],
     });
     if (round === ROUNDS - 1) places = yield* quietly(mapInSteps(candidates, asPlace), 0.92);

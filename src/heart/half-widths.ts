@@ -1,19 +1,15 @@
-import { type BlockBootstrapOptions, blockBootstrap } from '../numeric/block-bootstrap';
-import { createRandom } from '../numeric/random';
+import { halfWidth } from '../numeric/half-width';
 import type { Figures } from '../recording/figure';
 import type { HeartSegment, RrSeries } from '../recording/heart-series';
 import type { Phase } from '../recording/phase';
 import type { Settings } from '../recording/settings';
 import { intervalsWithin } from './rr-series';
 
-const REPLICATES = 200;
 /** About a minute of beats: what is drawn together keeps breathing and slower swings. */
 const BLOCK = 60;
 /** Blocks a part must hold at least for the draw to say anything. */
 const FEWEST_BLOCKS = 4;
-const RANGE = [0.025, 0.975] as const;
 const Z95 = 1.959963984540054;
-const RANDOM = 1;
 
 interface PartOfSeries {
   readonly rr: RrSeries;
@@ -79,7 +75,6 @@ function columns({ rr, part, segments }: PartOfSeries) {
 function bootstrapped(from: PartOfSeries): readonly (readonly [string, number])[] {
   const { rrMs, about, steps } = columns(from);
   const count = rrMs.length;
-  if (count < FEWEST_BLOCKS * BLOCK) return [];
   const meanOf = (values: readonly number[]) => (places: Int32Array) => {
     let sum = 0;
     let n = 0;
@@ -90,17 +85,8 @@ function bootstrapped(from: PartOfSeries): readonly (readonly [string, number])[
     }
     return sum / n;
   };
-  const half = (statistic: (places: Int32Array) => number): number => {
-    const options: BlockBootstrapOptions = {
-      count,
-      blockLength: BLOCK,
-      replicates: REPLICATES,
-      random: createRandom(RANDOM),
-      quantiles: RANGE,
-    };
-    const [low, high] = blockBootstrap(options, statistic).values;
-    return (high - low) / 2;
-  };
+  const half = (statistic: (places: Int32Array) => number): number =>
+    halfWidth({ count, blockLength: BLOCK, fewestBlocks: FEWEST_BLOCKS }, statistic);
   const [rate, square, step] = [meanOf(rrMs), meanOf(about), meanOf(steps)];
   return [
     ['heart_rate_bpm', half((places) => 60000 / rate(places))],

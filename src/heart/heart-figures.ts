@@ -71,7 +71,8 @@ function countFigures(input: HeartFiguresInput, heart: PartOfHeart): Figures {
   };
 }
 
-function* partOf(input: HeartFiguresInput): Generator<void, PartOfHeart> {
+/** One part of the study as its heart figures see it. */
+export function* partOfHeart(input: HeartFiguresInput): Generator<void, PartOfHeart> {
   const { rr, part, settings, timingSdMs, breathing } = input;
   const { first, end } = intervalsWithin(rr, part.fromS, part.toS);
   const segments = yield* segmentsOnce(input);
@@ -104,7 +105,7 @@ export const heartFigures = (input: HeartFiguresInput): HeartFigures =>
 
 /** heartFigures with a rest now and then. */
 export function* heartFiguresInSteps(input: HeartFiguresInput): Generator<void, HeartFigures> {
-  const heart = yield* partOf(input);
+  const heart = yield* partOfHeart(input);
   return {
     figures: {
       ...timeFigures(heart),

@@ -1,3 +1,4 @@
+import { removeLine } from '../numeric/detrend';
 import { cos } from '../numeric/elementary';
 import { addShifted } from './sub-sample';
 
@@ -10,6 +11,8 @@ const END_S = 0.04;
 const MOST_BEATS = 600;
 /** A beat is taken out at no more than so many times the average's size. */
 const LARGEST = 2;
+/** Half of the stretch in which a beat's size is read. */
+const QRS_HALF_S = 0.08;
 /** Beats looked at between turns for others. */
 const BEATS_A_TURN = 40;
 /** Samples that interpolation needs beside a row. */
@@ -105,21 +108,29 @@ export function addAverage(
     if (first + i >= 0 && first + i < samples.length) samples[first + i] += size * shifted[i];
 }
 
-/** How large a beat is beside its average, by least squares; 1 where it reaches beyond the stretch. */
+/**
+ * How large a beat is beside its average, by least squares over the QRS complex, lines taken off both, so that a beat close
+ * behind it has no say; 1 where it reaches beyond the stretch.
+ */
 function sizeOf(
-  stretch: BeatStretch,
+  { samples }: BeatStretch,
   place: number,
-  { samples, centre }: LeadAverage,
-  end: number,
-) {
-  const row = rowAt(stretch, place, centre, samples.length, end);
-  if (!row) return 1;
-  let [own, both] = [0, 0];
+  { samples: average, centre }: LeadAverage,
+  half: number,
+): number {
+  const from = place - half;
+  if (from < SIDE || from + 2 * half + 1 + SIDE > samples.length) return 1;
+  const beat = new Float64Array(2 * half + 1);
+  addShifted(beat, samples, from);
+  if (beat.some(Number.isNaN)) return 1;
+  const row = removeLine(beat);
+  const own = removeLine(average.slice(centre - half, centre + half + 1));
+  let [power, both] = [0, 0];
   for (let i = 0; i < row.length; i += 1) {
-    own += samples[i] ** 2;
-    both += samples[i] * row[i];
+    power += own[i] * own[i];
+    both += own[i] * row[i];
   }
-  return own > 0 ? Math.max(0, Math.min(LARGEST, both / own)) : 0;
+  return power > 0 ? Math.max(0, Math.min(LARGEST, both / power)) : 0;
 }
 
 /**
@@ -131,11 +142,11 @@ export function* withoutOwnBeats(
   averages: ReadonlyMap<number, LeadAverage>,
   rateHz: number,
 ): Generator<void, Float64Array> {
-  const end = Math.max(1, Math.round(END_S * rateHz));
+  const half = Math.round(QRS_HALF_S * rateHz);
   const out = stretch.samples.slice();
   for (const [k, place] of stretch.places.entries()) {
     const average = averages.get(stretch.classes[k]);
-    if (average) addAverage(out, average, place, -sizeOf(stretch, place, average, end));
+    if (average) addAverage(out, average, place, -sizeOf(stretch, place, average, half));
     if (k % BEATS_A_TURN === BEATS_A_TURN - 1) yield;
   }
   return out;

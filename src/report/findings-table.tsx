@@ -1,3 +1,4 @@
+import { placeOf } from '../export/report-chances';
 import type {
   FindingsCell,
   FindingsColumn,
@@ -34,7 +35,7 @@ export function Figures({
           </tr>
         </thead>
         {groups.map((group) => (
-          <Group key={group.organ} group={group} columns={columns} />
+          <Group key={group.organ} group={group} columns={columns} chances={table.chances} />
         ))}
       </table>
       <Notes notes={notes}>
@@ -46,12 +47,16 @@ export function Figures({
 
 /** How the table and its notes are to be read. */
 function readingWords(table: FindingsTable): readonly string[] {
-  const { columns, inOrderOf, hasNotCompared, hasWithheld } = table;
+  const { columns, inOrderOf, hasNotCompared, hasWithheld, hasRanges, chances } = table;
   const compared = columns.flatMap(({ kind, name }) => (kind === 'change' ? [name] : []));
   return [
     ...(compared.length > 0 ? [`Change: ${compared.join(', ')} less fasting.`] : []),
+    ...(Object.keys(chances).length > 0
+      ? ['Beneath a figure: its range by chance, nominal 95 %.']
+      : []),
     ...(hasNotCompared ? ['–: not compared between phases.'] : []),
     ...(hasWithheld ? ['—: withheld; its letter says why.'] : []),
+    ...(hasRanges ? ['site: a reference of this site; its letter says for what and whence.'] : []),
     ...(inOrderOf.length > 0
       ? [`Counts in the notes are in the order ${inOrderOf.join(', ')}.`]
       : []),
@@ -61,9 +66,11 @@ function readingWords(table: FindingsTable): readonly string[] {
 function Group({
   group: { organ, title, rows, beside },
   columns,
+  chances,
 }: {
   readonly group: FindingsGroup;
   readonly columns: readonly FindingsColumn[];
+  readonly chances: FindingsTable['chances'];
 }) {
   const width = columns.length + 1;
   return (
@@ -75,7 +82,7 @@ function Group({
           </th>
         </tr>
         {rows.map((row) => (
-          <Row key={row.key} row={row} columns={columns} />
+          <Row key={row.key} row={row} columns={columns} chances={chances} />
         ))}
       </tbody>
       {beside.length > 0 && (
@@ -88,7 +95,7 @@ function Group({
             </th>
           </tr>
           {beside.map((row) => (
-            <Row key={row.key} row={row} columns={columns} />
+            <Row key={row.key} row={row} columns={columns} chances={chances} />
           ))}
         </tbody>
       )}
@@ -97,11 +104,13 @@ function Group({
 }
 
 function Row({
-  row: { name, letters, cells },
+  row: { key, name, letters, cells },
   columns,
+  chances,
 }: {
   readonly row: FindingsRow;
   readonly columns: readonly FindingsColumn[];
+  readonly chances: FindingsTable['chances'];
 }) {
   return (
     <tr>
@@ -110,18 +119,25 @@ function Row({
         <Letters letters={letters} />
       </th>
       {columns.map((column, place) => (
-        <Cell key={`${column.kind} ${column.name}`} cell={cells[place]} column={column.kind} />
+        <Cell
+          key={`${column.kind} ${column.name}`}
+          cell={cells[place]}
+          column={column.kind}
+          chance={chances[placeOf(key, column)]}
+        />
       ))}
     </tr>
   );
 }
 
 function Cell({
-  cell: { kind, words, small, letters },
+  cell: { kind, words, small, ranges, letters },
   column,
+  chance,
 }: {
   readonly cell: FindingsCell;
   readonly column: FindingsColumn['kind'];
+  readonly chance: string | undefined;
 }) {
   if (kind === 'not-compared')
     return (
@@ -135,6 +151,12 @@ function Cell({
       {words}
       {small !== '' && <small> ({small})</small>}
       <Letters letters={letters} />
+      {chance !== undefined && <span className="report-chance">{chance}</span>}
+      {ranges.map((range) => (
+        <small key={range} className="report-range">
+          site {range}
+        </small>
+      ))}
     </td>
   );
 }

@@ -2,6 +2,7 @@ import { useEffect, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { reportModel } from '../export/report-model';
 import type { Evidence } from '../recording/evidence/evidence';
+import type { SiteReference } from '../recording/site-reference';
 import type { AnalysisStore, SignalAccess } from '../review/analysis-store';
 import { asWork } from '../review/idle';
 import type { ViewStore } from '../review/view-store';
@@ -23,11 +24,13 @@ export interface ReportViewProps {
   readonly openDoubts: number | null;
   /** The parts of the evidence that belong to the last edit. */
   readonly evidence: Partial<Evidence>;
+  /** Reference values that the site keeps; null where it gave none. */
+  readonly siteReference: SiteReference | null;
 }
 
 /** The report of the session as it stands, drawn again with every edit. */
 export function ReportView(props: ReportViewProps) {
-  const { session, analysis, view, signals, openDoubts, evidence } = props;
+  const { session, analysis, view, signals, openDoubts, evidence, siteReference } = props;
   const open = useStore(session, (state) => state.session);
   const { recording, findings, edit } = useStore(analysis);
   const identityHidden = useStore(view, (state) => state.identityHidden);
@@ -43,10 +46,11 @@ export function ReportView(props: ReportViewProps) {
             identityHidden,
             openDoubts,
             evidence,
+            siteReference,
             age: null,
           })
         : null,
-    [open, recording, findings, identityHidden, openDoubts, evidence],
+    [open, recording, findings, identityHidden, openDoubts, evidence, siteReference],
   );
   usePageFoot(model?.foot ?? null);
   const page = useFocusOnce(model !== null);

@@ -51,6 +51,7 @@ export function resultFiles(input: ResultInput): readonly ResultFile[] {
     identityHidden: false,
     openDoubts: openDoubts.length,
     evidence,
+    siteReference: input.siteReference,
     age: input.age,
   });
   return [

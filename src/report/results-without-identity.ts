@@ -25,7 +25,8 @@ export function ageWords({ identity, start }: Recording): string {
 
 /**
  * The results of a review without whose they are: X for the identity fields, the recording's start and all other times moved
- * to the first day of 1985 by one shift, no free text, no names of reviewers, no texts of the log, no hash, no file name. What
+ * to the first day of 1985 by one shift, no free text, no names of reviewers, no texts of the log, no hash, no file name, none of the site's
+ * reference values, whose words may say where it was. What
  * is computed stays as it is. A heartbeat trace can itself identify a person.
  */
 export function resultsWithoutIdentity(input: ResultInput): ResultInput {
@@ -55,6 +56,7 @@ export function resultsWithoutIdentity(input: ResultInput): ResultInput {
     state: bareSession.state,
     sha256: null,
     age: ageWords(recording),
+    siteReference: null,
     findings: deepTexts(findings, plain),
     evidence: deepTexts(evidence, plain),
     stomach: deepTexts(stomach, plain),

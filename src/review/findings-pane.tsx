@@ -11,7 +11,7 @@ import type { AnalysisStore } from './analysis-store';
 import { type EvidenceStore, evidenceAt } from './evidence-store';
 import { goToStretch } from './findings-go';
 import { FindingsSpans } from './findings-spans';
-import { FindingsTable } from './findings-table';
+import { FindingsTable, type RangesShown } from './findings-table';
 import { firstPair } from './findings-words';
 import { TrustLines } from './trust-lines';
 import type { ViewStore } from './view-store';
@@ -38,6 +38,7 @@ export function FindingsPane(props: FindingsPaneProps) {
   const stopped = useStore(analysis, (state) => state.stopped);
   const findings = figures && withEvidenceMarks(figures, evidenceAt(found, computed));
   const stale = findings !== null && computed < edit;
+  const ranges = found.ranges && { value: found.ranges.value, stale: found.ranges.edit !== edit };
   const go = (fromS: number, toS: number) => goToStretch(view, fromS, toS);
   return (
     <section className="findings" id="findings" tabIndex={-1} aria-labelledby="findings-title">
@@ -53,7 +54,7 @@ export function FindingsPane(props: FindingsPaneProps) {
           aria-busy={stale && !stopped}
         >
           <Warnings findings={findings} />
-          <PhaseFigures findings={findings} onFigure={onFigure} onGo={go} />
+          <PhaseFigures findings={findings} ranges={ranges ?? null} onFigure={onFigure} onGo={go} />
           <Seen findings={findings} onGo={go} />
         </div>
       ) : null}
@@ -93,11 +94,12 @@ function Warnings({ findings }: { readonly findings: Findings }) {
 
 interface PhaseFiguresProps {
   readonly findings: Findings;
+  readonly ranges: RangesShown | null;
   readonly onFigure: (key: string, phase: string) => void;
   readonly onGo: (fromS: number, toS: number) => void;
 }
 
-function PhaseFigures({ findings, onFigure, onGo }: PhaseFiguresProps) {
+function PhaseFigures({ findings, ranges, onFigure, onGo }: PhaseFiguresProps) {
   const [picked, setPicked] = useState<{ left?: string; right?: string }>({});
   const [all, setAll] = useState(false);
   const [left, right] = firstPair(findings);
@@ -107,6 +109,7 @@ function PhaseFigures({ findings, onFigure, onGo }: PhaseFiguresProps) {
     <>
       <FindingsTable
         findings={findings}
+        ranges={ranges}
         left={there(picked.left) ?? left}
         right={there(picked.right) ?? right}
         all={all}

@@ -1,3 +1,6 @@
+import type { Range } from '../numeric/chance-range';
+import { type RangesEvidence, rangeOfChange, rangesOfFigure } from '../recording/evidence/ranges';
+import { rangeWords } from '../recording/evidence/ranges-words';
 import type { FigureValue } from '../recording/figure';
 import type { FigureDefinition, Organ } from '../recording/figure-catalogue';
 import { FIGURES } from '../recording/figure-catalogue';
@@ -22,8 +25,16 @@ const ORGAN_WORDS: Readonly<Record<Organ, string>> = {
   breathing: 'Breathing and movement',
 };
 
+/** Ranges of the figures, and whether they are of an edit before the last. */
+export interface RangesShown {
+  readonly value: RangesEvidence;
+  readonly stale: boolean;
+}
+
 interface FindingsTableProps {
   readonly findings: Findings;
+  /** Null until they are there. */
+  readonly ranges: RangesShown | null;
   readonly left: string;
   readonly right: string | null;
   readonly all: boolean;
@@ -34,7 +45,7 @@ interface FindingsTableProps {
 
 /** Figures of two phases side by side and the change between them, an organ at a time. */
 export function FindingsTable(props: FindingsTableProps) {
-  const { findings, left, right, all, onPick, onGo, onFigure } = props;
+  const { findings, ranges, left, right, all, onPick, onGo, onFigure } = props;
   const phases = [left, right]
     .map((name) => findings.phases.find((phase) => phase.name === name))
     .filter((phase) => phase !== undefined);
@@ -53,7 +64,7 @@ export function FindingsTable(props: FindingsTableProps) {
       <caption className="unseen">Figures by phase</caption>
       <thead>
         <tr>
-          <td />
+          <td className="findings-legend">{ranges ? 'Small: 95 % range by chance' : ''}</td>
           {heads}
           {phases.length === 2 ? <th scope="col">change</th> : null}
         </tr>
@@ -65,6 +76,7 @@ export function FindingsTable(props: FindingsTableProps) {
           definitions={FIGURES.filter((one) => one.organ === organ && (all || one.main))}
           phases={phases}
           findings={findings}
+          ranges={ranges}
           onFigure={onFigure}
         />
       ))}
@@ -114,10 +126,11 @@ interface OrganRowsProps {
   readonly definitions: readonly FigureDefinition[];
   readonly phases: readonly PhaseFindings[];
   readonly findings: Findings;
+  readonly ranges: RangesShown | null;
   readonly onFigure: (key: string, phase: string) => void;
 }
 
-function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRowsProps) {
+function OrganRows({ organ, definitions, phases, findings, ranges, onFigure }: OrganRowsProps) {
   const [left, right] = phases;
   const shared = phases.map((phase) =>
     sharedWords(definitions.map((one) => phase.figures[one.key])),
@@ -160,6 +173,7 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
               key={i === 0 ? 'left' : 'right'}
               words={figureWords(phase.figures[definition.key], definition)}
               said={{ ...shared[i], marks: marksOf(definition) }}
+              range={chanceOf(ranges, phase.name, definition)}
               about={`${definition.label}, ${phase.name}`}
               onOpen={() => onFigure(definition.key, phase.name)}
             />
@@ -168,6 +182,7 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
             <FigureCell
               words={changeWords(changes[row], definition)}
               said={{ basis: NOT_COMPARED, reason: sharedChange.reason, marks: [] }}
+              range={chanceOfChange(ranges, left, right, definition)}
               about={`${definition.label}, change`}
               onOpen={() => onFigure(definition.key, right.name)}
             />
@@ -177,6 +192,25 @@ function OrganRows({ organ, definitions, phases, findings, onFigure }: OrganRows
     </tbody>
   );
 }
+
+const shown = (
+  ranges: RangesShown,
+  range: Range | null | undefined,
+  { decimals }: FigureDefinition,
+): RangeShown | null =>
+  range ? { words: rangeWords(range, decimals), stale: ranges.stale } : null;
+
+const chanceOf = (ranges: RangesShown | null, phase: string, figure: FigureDefinition) =>
+  ranges && shown(ranges, rangesOfFigure(ranges.value, phase, figure.key)?.chance, figure);
+
+const chanceOfChange = (
+  ranges: RangesShown | null,
+  from: PhaseFindings | undefined,
+  to: PhaseFindings,
+  figure: FigureDefinition,
+) =>
+  ranges &&
+  shown(ranges, rangeOfChange(ranges.value, figure.key, from?.name ?? '', to.name), figure);
 
 function changeOf(
   findings: Findings,
@@ -234,31 +268,49 @@ const shortUnit = (unit: string): string => unit.replace('% of time', '%');
 const squareOf = ({ key, organ }: FigureDefinition): string =>
   key === 'movement_pct' ? 'movement' : organ;
 
+interface RangeShown {
+  readonly words: string;
+  readonly stale: boolean;
+}
+
 interface FigureCellProps {
   readonly words: FigureWords;
+  /** The range by chance; it takes the place of what the figure stands on, which is read out and told in the figure's page. */
+  readonly range: RangeShown | null;
   /** Words said once above or plain to see: only read out here. */
   readonly said: SharedWords & { readonly marks: readonly string[] };
   readonly about: string;
   readonly onOpen: () => void;
 }
 
-function FigureCell({ words, said, about, onOpen }: FigureCellProps) {
+function FigureCell({ words, range, said, about, onOpen }: FigureCellProps) {
   const own = words.small.filter((line) => !said.marks.includes(line));
-  const small = smallWords(own, said);
+  const small = smallWords(own, said).filter((line) => range === null || !isBasis(line));
   const heard = words.small.filter((line) => !small.includes(line));
+  const rangeLine = range === null ? [] : [`${range.words} by chance, nominal 95 %`];
   return (
     <td>
       <button
         type="button"
         className="figure"
-        title={[`${about}: ${words.large}`, ...words.small].join('\n')}
+        title={[`${about}: ${words.large}`, ...rangeLine, ...words.small].join('\n')}
         onClick={onOpen}
       >
         <span className="unseen">{about}: </span>
         <span className="figure-large">{words.large}</span>
+        {range === null ? null : (
+          <span className={`figure-small figure-range${range.stale ? ' stale' : ''}`}>
+            <span className="unseen">, </span>
+            {range.words}
+            <span className="unseen"> by chance</span>
+          </span>
+        )}
         {small.length > 0 ? <span className="figure-small">{small.join('; ')}</span> : null}
         {heard.length > 0 ? <span className="unseen">, {heard.join('; ')}</span> : null}
       </button>
     </td>
   );
 }
+
+/** What a figure stands on: "22 epochs", "19 of 26", "1882 NN". */
+const isBasis = (line: string): boolean => /^\d[\d.]*( of \d[\d.]*)?( \p{L}+)?$/u.test(line);

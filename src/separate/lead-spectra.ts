@@ -2,6 +2,7 @@ import { removeLine } from '../numeric/detrend';
 import { nextPowerOfTwo } from '../numeric/fft';
 import { powerDensity } from '../numeric/spectrum';
 import { hannPeriodic } from '../numeric/windows';
+import { zeroedWindow } from '../numeric/zeroed-window';
 import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
 
 const WINDOW_S = 240;
@@ -45,32 +46,20 @@ export function* leadSpectra(
   for (let from = 0; from + length <= lead.length; from += step) {
     if ((from / step) % WINDOWS_A_STEP === WINDOWS_A_STEP - 1) yield;
     const mask = kept.subarray(from, from + length);
-    const present = taper.reduce((sum, weight, i) => sum + weight * mask[i], 0);
-    if (present < (1 - MOST_MISSING) * whole) continue;
-    const values = lead.slice(from, from + length);
-    windows.push(
-      missing === 'bridged'
-        ? powerDensity(removeLine(values), taper, rateHz, size)
-        : zeroedDensity(values, mask, taper, rateHz, size, (whole / present) ** 2),
-    );
+    const values = lead.subarray(from, from + length);
+    const { samples, keptTaper } = zeroedWindow(values, mask, taper);
+    if (keptTaper < (1 - MOST_MISSING) * whole) continue;
+    if (missing === 'bridged') {
+      windows.push(powerDensity(removeLine(values), taper, rateHz, size));
+      continue;
+    }
+    const correction = (whole / keptTaper) ** 2;
+    const density = powerDensity(samples, taper, rateHz, size);
+    windows.push(density.map((value) => correction * value));
   }
   if (windows.length === 0) return null;
   const mean = new Float64Array(windows[0].length);
   for (const one of windows) for (let k = 0; k < mean.length; k += 1) mean[k] += one[k];
   for (let k = 0; k < mean.length; k += 1) mean[k] /= windows.length;
   return { windows, mean, binCpm: hzToCpm(rateHz / size), size };
-}
-
-function zeroedDensity(
-  values: Float64Array,
-  mask: Uint8Array,
-  taper: Float64Array,
-  rateHz: Hertz,
-  size: number,
-  correction: number,
-): Float64Array {
-  for (let i = 0; i < values.length; i += 1) if (mask[i] === 0) values[i] = 0;
-  const level = removeLine(values, mask);
-  for (let i = 0; i < level.length; i += 1) level[i] *= mask[i];
-  return powerDensity(level, taper, rateHz, size).map((value) => correction * value);
 }

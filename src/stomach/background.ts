@@ -1,4 +1,5 @@
 import { exp, log, pow } from '../numeric/elementary';
+import { type LogPoint, lineAt, type PowerLawLine, powerLawLine } from '../numeric/power-law-line';
 import { median } from '../numeric/statistics';
 import type { Cpm } from '../units/rate';
 import type { Seconds } from '../units/time';
@@ -23,9 +24,6 @@ const LOG_MEDIAN = -0.36651292058166435;
 const DRIFT_REACH_CELLS = 4;
 /** Bins so far above a first fit (natural logarithm) are other lines, not background. */
 const OUTLIER_LOG = 3;
-/** Exponents of a 1/f^b background that are believed. */
-const LEAST_EXPONENT = 0;
-const MOST_EXPONENT = 3;
 /** Independent values of a Hann periodogram lie this many unpadded bins apart (its noise bandwidth). */
 const HANN_BANDWIDTH_BINS = 1.5;
 
@@ -47,46 +45,19 @@ export interface Background {
   readonly leverage: number;
 }
 
-interface LogPoint {
+interface SpectrumPoint extends LogPoint {
   readonly cpm: Cpm;
-  readonly x: number;
-  readonly y: number;
 }
-
-interface LogLine {
-  readonly meanX: number;
-  readonly meanY: number;
-  readonly slope: number;
-  readonly squares: number;
-  readonly count: number;
-}
-
-function logLine(points: readonly LogPoint[]): LogLine {
-  const count = points.length;
-  const meanX = points.reduce((sum, point) => sum + point.x, 0) / count;
-  const meanY = points.reduce((sum, point) => sum + point.y, 0) / count;
-  let squares = 0;
-  let product = 0;
-  for (const { x, y } of points) {
-    squares += (x - meanX) ** 2;
-    product += (x - meanX) * (y - meanY);
-  }
-  const exponent = squares > 0 ? -product / squares : 0;
-  const slope = -Math.min(MOST_EXPONENT, Math.max(LEAST_EXPONENT, exponent));
-  return { meanX, meanY, slope, squares, count };
-}
-
-const lineAt = (line: LogLine, x: number) => line.meanY + line.slope * (x - line.meanX);
 
 function backgroundPoints(
   density: Float64Array,
   binCpm: number,
   peakCpm: Cpm,
   widening: number,
-): LogPoint[] {
+): SpectrumPoint[] {
   const floor = 1e-12 * density.reduce((most, value) => Math.max(most, value), 1e-280);
   const multiples = HARMONICS.filter((ratio) => ratio * peakCpm >= LEAST_HALF_CPM * widening);
-  const points: LogPoint[] = [];
+  const points: SpectrumPoint[] = [];
   const logs = logFrequencies(binCpm, density.length);
   for (let k = Math.ceil(FIT_CPM.lowCpm / binCpm); k < density.length - 1; k++) {
     const cpm = k * binCpm;
@@ -102,8 +73,8 @@ function backgroundPoints(
 
 /** How far (natural logarithm) the flanks of a peak lie above the line: 0 where they do not, or are too short to tell. */
 function raiseOf(
-  points: readonly LogPoint[],
-  line: LogLine,
+  points: readonly SpectrumPoint[],
+  line: PowerLawLine,
   peakCpm: Cpm,
   { reachCpm, least }: { readonly reachCpm: number; readonly least: number },
 ): number {
@@ -128,9 +99,9 @@ export function backgroundAt(
   const widening = CLEARANCE_LENGTH_S / lengthS;
   const points = backgroundPoints(density, binCpm, peakCpm, widening);
   if (points.length < 8) return null;
-  const first = logLine(points);
+  const first = powerLawLine(points);
   const kept = points.filter(({ x, y }) => y - lineAt(first, x) < OUTLIER_LOG);
-  const line = logLine(kept);
+  const line = powerLawLine(kept);
   const x = log(peakCpm);
   const binsPerValue = (HANN_BANDWIDTH_BINS * 60) / lengthS / binCpm;
   const spread = line.squares > 0 ? (x - line.meanX) ** 2 / line.squares : 0;

@@ -17,10 +17,10 @@ import { densityOfDb } from './decibel';
 import { densityDb } from './dominant-peak';
 import { bandShares, type MeanSpectrum, meanSpectrum } from './mean-spectrum';
 import { hasRhythm } from './rhythm-class';
-import type { StomachAnalysis } from './slow-wave-rhythm';
+import type { EpochAnalysis } from './slow-wave-rhythm';
 
 export interface StomachFiguresOptions {
-  readonly analysis: StomachAnalysis;
+  readonly analysis: EpochAnalysis;
   /** A phase, or a named part of one: the epochs wholly inside it count. */
   readonly phase: { readonly name: string; readonly fromS: Seconds; readonly toS: Seconds };
   /** Spoiled stretches that act on the stomach's figures of this lead. */
@@ -35,7 +35,7 @@ export interface StomachFigures {
 }
 
 /** Kept epochs of a phase with their spectra. */
-interface KeptEpochs {
+export interface KeptEpochs {
   readonly epochs: readonly Epoch[];
   readonly spectra: readonly Float64Array[];
 }
@@ -43,7 +43,8 @@ interface KeptEpochs {
 const EDGE_S = 1e-6;
 const plural = (count: number, what: string) => `${count} ${what}${count === 1 ? '' : 's'}`;
 
-function keptEpochs(analysis: StomachAnalysis, fromS: Seconds, toS: Seconds): KeptEpochs {
+/** The kept epochs that lie wholly inside a stretch. */
+export function keptEpochs(analysis: EpochAnalysis, fromS: Seconds, toS: Seconds): KeptEpochs {
   const epochs: Epoch[] = [];
   const spectra: Float64Array[] = [];
   analysis.rhythm.epochs.forEach((epoch, i) => {

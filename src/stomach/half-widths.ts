@@ -1,5 +1,4 @@
-import { blockBootstrap } from '../numeric/block-bootstrap';
-import { createRandom } from '../numeric/random';
+import { halfWidth } from '../numeric/half-width';
 import { mean, median, wilson } from '../numeric/statistics';
 import { type Figures, numberOf } from '../recording/figure';
 import type { Epoch } from '../recording/rhythm';
@@ -7,8 +6,6 @@ import { densityOfDb } from './decibel';
 import { densityDb } from './dominant-peak';
 import { hasRhythm } from './rhythm-class';
 
-const REPLICATES = 200;
-const RANDOM = 1;
 /** Epochs that share samples are drawn together: four of 240 s every 60 s. */
 const BLOCK = 4;
 const FEWEST_BLOCKS = 3;
@@ -47,27 +44,21 @@ export function stomachHalfWidths(
   return Object.fromEntries(
     [
       ...shares,
-      ['df_median_cpm', halfWidth(df, median)] as const,
-      ['dp_mean_spectrum_db', halfWidth(power, (values) => densityDb(mean(values)))] as const,
+      ['df_median_cpm', epochsHalfWidth(df, median)] as const,
+      ['dp_mean_spectrum_db', epochsHalfWidth(power, (values) => densityDb(mean(values)))] as const,
     ].filter(([, half]) => half > 0 && Number.isFinite(half)),
   );
 }
 
-function halfWidth(values: readonly number[], of: (drawn: Float64Array) => number): number {
-  if (values.length < FEWEST_BLOCKS * BLOCK) return Number.NaN;
+function epochsHalfWidth(values: readonly number[], of: (drawn: Float64Array) => number): number {
   const drawn = new Float64Array(values.length);
-  const options = {
-    count: values.length,
-    blockLength: BLOCK,
-    replicates: REPLICATES,
-    random: createRandom(RANDOM),
-    quantiles: [0.025, 0.975],
-  };
-  const [low, high] = blockBootstrap(options, (places) => {
-    places.forEach((place, i) => {
-      drawn[i] = values[place];
-    });
-    return of(drawn);
-  }).values;
-  return (high - low) / 2;
+  return halfWidth(
+    { count: values.length, blockLength: BLOCK, fewestBlocks: FEWEST_BLOCKS },
+    (places) => {
+      places.forEach((place, i) => {
+        drawn[i] = values[place];
+      });
+      return of(drawn);
+    },
+  );
 }

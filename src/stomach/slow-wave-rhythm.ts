@@ -29,9 +29,9 @@ export interface SlowWaveRhythmOptions {
   readonly memory?: StomachMemory;
 }
 
-/** The rhythm of one lead with the spectra its phases' figures are made of. */
-export interface StomachAnalysis {
-  readonly rhythm: SlowWaveRhythm;
+/** The judged epochs of one lead with the spectra its phases' figures are made of. */
+export interface EpochAnalysis {
+  readonly rhythm: Pick<SlowWaveRhythm, 'epochs'>;
   /** One an epoch of rhythm.epochs: power density in uV2/Hz of the recorded lead; null where not kept. */
   readonly epochSpectra: readonly (Float64Array | null)[];
   /** Bin k of a spectrum lies at k * binCpm. */
@@ -40,6 +40,11 @@ export interface StomachAnalysis {
   readonly missing: readonly Interval[];
   /** The breathing its epochs were judged beside; null where nothing is known of it. */
   readonly breathing: BreathingSeries | null;
+}
+
+/** The rhythm of one lead with what the panes draw of it. */
+export interface StomachAnalysis extends EpochAnalysis {
+  readonly rhythm: SlowWaveRhythm;
 }
 
 /** Samples missing for so long are a stop of the recorder, which no epoch reaches across; fewer are left out like spoiled ones. */
@@ -207,6 +212,15 @@ export type JudgedEpochs = Pick<StomachAnalysis, 'epochSpectra' | 'binCpm'> & {
 /** The epochs alone, as slowWaveRhythm judges them, with a rest after each. */
 export function* judgedEpochs(options: SlowWaveRhythmOptions): Generator<void, JudgedEpochs> {
   return yield* epochsOf(yield* leadOf(options));
+}
+
+/** All that figures are made of, without what the panes draw, with a rest after each epoch. */
+export function* epochsInSteps(options: SlowWaveRhythmOptions): Generator<void, EpochAnalysis> {
+  const lead = yield* leadOf(options);
+  yield;
+  const { epochs, epochSpectra, binCpm } = yield* epochsOf(lead);
+  const { missing } = lead;
+  return { rhythm: { epochs }, epochSpectra, binCpm, missing, breathing: options.breathing };
 }
 
 /**

@@ -1,7 +1,7 @@
-import { fitLine } from '../numeric/detrend';
 import { nextPowerOfTwo } from '../numeric/fft';
 import { powerDensity } from '../numeric/spectrum';
 import { hannPeriodic } from '../numeric/windows';
+import { zeroedWindow } from '../numeric/zeroed-window';
 import { type Cpm, type Hertz, hzToCpm } from '../units/rate';
 import { bridged } from './bridged';
 import { withoutLines } from './without-lines';
@@ -85,14 +85,7 @@ export function windowSpectra(options: WindowSpectraOptions): WindowSpectra {
       const raw = signal.subarray(first, first + length);
       const weights = kept.subarray(first, first + length);
       if (raw.length < length) throw new Error(`no ${length} samples from ${first} on`);
-      const line = fitLine(raw, weights);
-      const samples = new Float64Array(length);
-      let keptTaper = 0;
-      for (let i = 0; i < length; i++) {
-        if (weights[i] === 0) continue;
-        samples[i] = raw[i] - line.mean - line.slope * (i - line.centre);
-        keptTaper += taper[i];
-      }
+      const { samples, keptTaper } = zeroedWindow(raw, weights, taper);
       const spoiledFraction = Math.min(1, Math.max(0, 1 - keptTaper / taperSum));
       return {
         samples,

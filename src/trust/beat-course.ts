@@ -1,5 +1,6 @@
 import { convolveSame } from '../numeric/fir';
 import { gaussianEnvelope } from '../numeric/gaussian-band';
+import { inPieces } from '../numeric/in-pieces';
 import { onGrid } from '../numeric/on-grid';
 import type { Hertz } from '../units/rate';
 import type { Seconds } from '../units/time';
@@ -18,8 +19,23 @@ export interface CourseGrid {
   readonly length: number;
 }
 
-/** x less its own Gaussian mean over the samples that are there; NaN stays NaN. */
-export function withoutSlowCourse(x: Float64Array, rateHz: Hertz): Float64Array {
+const PIECE_S: Seconds = 1800;
+
+/** x less its own Gaussian mean over the samples that are there; NaN stays NaN. Yields the part that is done. */
+export function* withoutSlowCourse(
+  x: Float64Array,
+  rateHz: Hertz,
+): Generator<number, Float64Array> {
+  const out = new Float64Array(x.length);
+  const margin = Math.ceil(4 * SLOW_SPREAD_S * rateHz) + 1;
+  yield* inPieces(x.length, Math.ceil(PIECE_S * rateHz), margin, (piece) => {
+    const rest = restOfPiece(x.subarray(piece.from, piece.to), rateHz);
+    out.set(rest.subarray(piece.coreFrom - piece.from, piece.coreTo - piece.from), piece.coreFrom);
+  });
+  return out;
+}
+
+function restOfPiece(x: Float64Array, rateHz: Hertz): Float64Array {
   const envelope = gaussianEnvelope(rateHz, SLOW_SPREAD_S);
   const there = x.map((value) => (Number.isNaN(value) ? 0 : 1));
   const values = x.map((value) => (Number.isNaN(value) ? 0 : value));
@@ -36,7 +52,7 @@ export function beatCourse(
   timesS: Float64Array,
   values: Float64Array,
   grid: CourseGrid,
-): Float64Array {
+): Generator<number, Float64Array> {
   return withoutSlowCourse(onGrid(timesS, values, grid, LONGEST_S), grid.rateHz);
 }
 

@@ -144,20 +144,20 @@ const EVERY_SHIFT = 10;
 /**
  * Modulation of a course by a phase with its surrogate test: the course is moved in a circle by 60 s or more either way, so
  * that both keep their own rhythm and lose only what ties them. The shifts are the same for the same length. Yields how far
- * it is, 0 to 1. Throws RangeError where the stretch holds no such shift or some bin of phase is never seen.
+ * it is, 0 to 1. Null where the stretch holds no such shift or some bin of phase is never seen.
  */
 export function* phaseModulation(
   input: ModulationInput,
   surrogates = SURROGATES,
-): Generator<number, Modulation> {
+): Generator<number, Modulation | null> {
   const { phase, usable, course, rateHz } = input;
   const n = phase.length;
   const least = Math.ceil(LEAST_SHIFT_S * rateHz);
-  if (!(n > 2 * least)) throw new RangeError(`${n / rateHz} s hold no shift of ${LEAST_SHIFT_S} s`);
+  if (!(n > 2 * least)) return null;
   const bin = binsOf(input);
   const seen = emptyBins();
   binned(bin, course, 0, seen);
-  if (seen.counts.some((count) => count === 0)) throw new RangeError('a bin of phase is empty');
+  if (seen.counts.some((count) => count === 0)) return null;
   const [along, across] = fitted(seen, 0);
   const depth = Math.hypot(along, across);
   const cosines = phase.map((angle, i) => (usable[i] === 1 ? cos(angle) : Number.NaN));

@@ -2,6 +2,7 @@ import { hilbertPhase } from '../numeric/analytic-signal';
 import { removeLine } from '../numeric/detrend';
 import { convolveSame } from '../numeric/fir';
 import { gaussianBandSpreadS, gaussianBandTaps, gaussianEnvelope } from '../numeric/gaussian-band';
+import { inPieces } from '../numeric/in-pieces';
 import { type Cpm, cpmToHz, type Hertz } from '../units/rate';
 
 /** Half width of the band about DF, where its gain is one half. */
@@ -36,12 +37,36 @@ function filled(x: Float64Array, kept: Uint8Array): Float64Array {
   return out;
 }
 
+/** Longest piece worked on at once, and what is worked on beside it: twice the filter's reach of about 90 s. */
+const PIECE_S = 600;
+const BESIDE_S = 180;
+
 /**
  * The phase of the slow wave over a stretch: the lead band-passed about DF (Gaussian, half the gain at +-0.5 cpm) and the
  * angle of its analytic signal (Gabor 1946). `samples` may hold NaN where `kept` is 0. Samples before and after the stretch
- * that is asked about keep its ends clean; about 70 s on either side do.
+ * that is asked about keep its ends clean; about 70 s on either side do. Yields the part that is done.
  */
-export function slowPhase(
+export function* slowPhase(
+  samples: Float64Array,
+  kept: Uint8Array,
+  rateHz: Hertz,
+  dfCpm: Cpm,
+): Generator<number, SlowPhase> {
+  const { length } = samples;
+  const band = new Float64Array(length);
+  const phase = new Float64Array(length);
+  const usable = new Uint8Array(length);
+  const [core, margin] = [PIECE_S, BESIDE_S].map((seconds) => Math.ceil(seconds * rateHz));
+  yield* inPieces(length, core, margin, ({ from, to, coreFrom, coreTo }) => {
+    const one = phaseOfPiece(samples.subarray(from, to), kept.subarray(from, to), rateHz, dfCpm);
+    band.set(one.band.subarray(coreFrom - from, coreTo - from), coreFrom);
+    phase.set(one.phase.subarray(coreFrom - from, coreTo - from), coreFrom);
+    usable.set(one.usable.subarray(coreFrom - from, coreTo - from), coreFrom);
+  });
+  return { band, phase, usable };
+}
+
+function phaseOfPiece(
   samples: Float64Array,
   kept: Uint8Array,
   rateHz: Hertz,

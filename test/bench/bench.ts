@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { accuracy } from './accuracy/accuracy';
+import { evidence } from './accuracy/evidence';
 import { heartbeats } from './accuracy/heartbeats';
 import { brokenFiles } from './broken-files';
 import { detection } from './detection';
@@ -14,6 +15,7 @@ import { opening } from './opening';
 import { pageSize } from './page-size';
 import { pipeline } from './pipeline';
 import { planted } from './planted/planted';
+import { ranges } from './ranges/ranges';
 import { separation } from './separation';
 import { markdownTable, plainTable } from './table';
 
@@ -25,10 +27,12 @@ const PARTS: Readonly<Record<string, Part>> = {
   opening,
   'page-size': pageSize,
   accuracy,
+  evidence,
   heartbeats,
   doubts,
   'broken-files': brokenFiles,
   planted,
+  ranges,
 };
 
 const USAGE = `npm run bench -- [PART]... [--minutes N] [--markdown]

@@ -4,6 +4,7 @@ import { bytesOf, type ResultFile } from '../../src/export/result-file';
 import { tableFiles } from '../../src/export/table-files';
 import type { Doubt } from '../../src/recording/doubt';
 import { FIGURES } from '../../src/recording/figure-catalogue';
+import type { SiteRange } from '../../src/recording/site-reference';
 import { epoch, inventedInput } from './invented-input';
 import { readCsv } from './read-csv';
 
@@ -296,6 +297,44 @@ describe('findings.json', () => {
     expect(findings().changes).toEqual([
       { key: 'rmssd_ms', from: 'fasting', to: 'fed', unit: 'ms', withheld: 'no fed' },
     ]);
+  });
+  it('has the site’s ranges beside the numbers they fit, and no such key elsewhere', () => {
+    const range: SiteRange = {
+      figure: 'rmssd_ms',
+      phase: 'fasting',
+      minMinutes: 0.5,
+      maxMinutes: 60,
+      posture: '',
+      meal: '',
+      low: 11,
+      high: null,
+      population: 'invented people',
+      source: '<b>invented</b>',
+    };
+    const [fasting] = findings().phases;
+    const minutes = (fasting.to_s - fasting.from_s) / 60;
+    expect(minutes).toBeGreaterThan(0.5);
+    const siteReference = { ranges: [range, { ...range, figure: 'lf_ms2' }] };
+    const [beside] = JSON.parse(fileOf('findings.json', { ...input, siteReference })).phases;
+    expect(beside.figures).toEqual({
+      ...fasting.figures,
+      rmssd_ms: {
+        ...fasting.figures.rmssd_ms,
+        references_of_this_site: [
+          {
+            high: null,
+            low: 11,
+            max_minutes: 60,
+            meal: '',
+            min_minutes: 0.5,
+            phase: 'fasting',
+            population: 'invented people',
+            posture: '',
+            source: '<b>invented</b>',
+          },
+        ],
+      },
+    });
   });
   it('has its figures in the order of the catalogue, whatever order they were made in', () => {
     const [fasting] = findings().phases;

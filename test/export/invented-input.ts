@@ -75,6 +75,7 @@ export function inventedInput(): ExportInput {
     program: 'Bicadence 0.1.0',
     edit: 7,
     evidence: INVENTED_EVIDENCE,
+    siteReference: null,
     stomach: [
       {
         lead: '#1~#2',

@@ -2,12 +2,17 @@ import { describe, expect, it } from 'vitest';
 import {
   type FindingsCell,
   type FindingsTable,
-  mainTables,
-  otherTables,
+  mainTables as mainTablesWith,
+  otherTables as otherTablesWith,
 } from '../../src/export/report-findings';
 import { type Figures, type FigureValue, numberFigure, withheld } from '../../src/recording/figure';
 import { FIGURES } from '../../src/recording/figure-catalogue';
 import type { FigureChange, Findings, PhaseFindings } from '../../src/recording/findings';
+import { EMPTY_PROTOCOL } from '../../src/recording/protocol';
+import { rangesOf, type SiteRange } from '../../src/recording/site-reference';
+
+const mainTables = (all: Findings) => mainTablesWith(all, () => []);
+const otherTables = (all: Findings) => otherTablesWith(all, () => []);
 
 const part = (name: string, figures: Figures, phase = name): PhaseFindings => ({
   name,
@@ -181,5 +186,39 @@ describe('the figures as the report prints them', () => {
     expect(more).toEqual([]);
     expect(table.columns).toEqual([{ kind: 'phase', name: 'whole' }]);
     expect([table.inOrderOf, table.hasNotCompared]).toEqual([[], false]);
+  });
+});
+
+describe('the ranges that a site keeps', () => {
+  const range: SiteRange = {
+    figure: 'df_median_cpm',
+    phase: 'fasting',
+    minMinutes: 25,
+    maxMinutes: 35,
+    posture: '',
+    meal: '',
+    low: 2.1,
+    high: 4.3,
+    population: 'invented people',
+    source: 'invented <b>paper</b>',
+  };
+  const reference = { ranges: [range, { ...range, phase: 'fed' as const, high: null }] };
+  const values = [numberFigure(3), numberFigure(3.1), withheld('too short')];
+  const [table] = mainTablesWith(
+    oneFigure('df_median_cpm', values, numberFigure(0.1)),
+    rangesOf(reference, EMPTY_PROTOCOL),
+  );
+  const { cells } = rowOf(table, 'df_median_cpm');
+
+  it('stand in the cell of the phase they fit, not beside a change or a withheld figure', () => {
+    expect(cells.map(({ ranges }) => ranges)).toEqual([['2.1–4.3'], ['at least 2.1'], [], []]);
+    expect(table.hasRanges).toBe(true);
+  });
+
+  it('name what they hold for and their source in a note, as text', () => {
+    expect(textsOf(table, cells[0].letters)).toEqual([
+      'reference of this site: fasting of 25–35 min; invented people; source: invented <b>paper</b>',
+    ]);
+    expect(rowOf(table, 'rmssd_ms').cells.every(({ ranges }) => ranges.length === 0)).toBe(true);
   });
 });

@@ -49,6 +49,7 @@ function model({
     identityHidden: hidden,
     openDoubts,
     evidence: {},
+    siteReference: null,
     age: null,
   });
 }

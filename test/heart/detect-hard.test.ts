@@ -64,8 +64,7 @@ describe('in a surface ECG the beat detector', () => {
     for (const seed of [6, 9, 12, 14, 16])
       for (const family of ['narrow', 'leftBundle'] as const) {
         const { missed, extra } = errorsOf({ rhythm, family, seed, durationS: 150 });
-        expect(missed, `${family} ${seed}`).toBeLessThanOrEqual(1);
-        expect(extra, `${family} ${seed}`).toBeLessThanOrEqual(1);
+        expect({ missed, extra }, `${family} ${seed}`).toEqual({ missed: 0, extra: 0 });
       }
   });
 
@@ -84,7 +83,7 @@ describe('in a surface ECG the beat detector', () => {
     };
     for (const family of ['narrow', 'leftBundle'] as const) {
       const { missed, extra } = errorsOf({ rhythm, family });
-      expect(missed, family).toBeLessThanOrEqual(2);
+      expect(missed, family).toBeLessThanOrEqual(1);
       expect(extra, family).toBe(0);
     }
   });
@@ -92,15 +91,14 @@ describe('in a surface ECG the beat detector', () => {
   it('makes no beat in pauses of up to six seconds, and finds the escape beats that end them', () => {
     const rhythm = { ...SINUS, rateBpm: 60, chances: { ventricular: 0, atrial: 0, pause: 0.05 } };
     const { missed, extra } = errorsOf({ rhythm });
-    expect(missed).toBeLessThanOrEqual(1);
-    expect(extra).toBe(0);
+    expect({ missed, extra }).toEqual({ missed: 0, extra: 0 });
   });
 
   it('finds wide beats of many shapes among T waves as tall as R', () => {
     const rhythm = { ...SINUS, foci: 3, chances: { ventricular: 0.08, atrial: 0, pause: 0 } };
     const { missed, extra, of } = errorsOf({ rhythm, family: 'tallT' });
     expect(missed).toBeLessThanOrEqual(0.03 * of);
-    expect(extra).toBeLessThanOrEqual(0.03 * of);
+    expect(extra).toBeLessThanOrEqual(1);
   });
 
   it('takes no T wave that follows each beat at one delay, as tall as it is', () => {
@@ -123,7 +121,7 @@ describe('in a surface ECG the beat detector', () => {
     };
     for (const seed of [7, 15]) {
       const { missed, extra, of } = errorsOf({ rhythm, family: 'tallT', seed });
-      expect(missed, `${seed}`).toBeLessThanOrEqual(0.03 * of);
+      expect(missed, `${seed}`).toBeLessThanOrEqual(0.02 * of);
       expect(extra, `${seed}`).toBeLessThanOrEqual(1);
     }
   });
@@ -139,15 +137,15 @@ describe('in a surface ECG the beat detector', () => {
       base: 'fibrillation',
       episodes: [{ rhythm: 'flutter', everyS: 60, lengthS: 40 }],
     };
-    const { missed, extra, of } = errorsOf({ rhythm });
-    expect(missed).toBeLessThanOrEqual(0.003 * of);
+    const { missed, extra } = errorsOf({ rhythm });
+    expect(missed).toBeLessThanOrEqual(1);
     expect(extra).toBe(0);
   });
 
   it('is not led astray by steps of many mV and pops', () => {
     const noise = { ...CLEAN.noise, stepsPerHour: 60, stepUv: 3000, popsPerHour: 60, popUv: 1000 };
     const { missed, extra, of } = errorsOf({ noise });
-    expect(missed).toBeLessThanOrEqual(0.01 * of);
+    expect(missed).toBeLessThanOrEqual(1);
     expect(extra).toBeLessThanOrEqual(0.01 * of);
   });
 });

@@ -3,13 +3,16 @@ import { legibleStretches } from '../../src/heart/legible';
 import { decidedPlaces, expectedWrong, loudPlaces } from '../../src/heart/place-odds';
 import { rhythmOf } from '../../src/heart/rhythm-path';
 import { atOnce } from '../../src/numeric/in-steps';
+import type { Interval } from '../../src/recording/span';
 
 const rateHz = 100;
 const steady = () => rhythmOf(0.8, 0.06, 0.05);
-const at = (timeS: number, score: number, energyUv = 100) => ({
+const at = (timeS: number, score: number, energyUv = 100, likeP = 0, likeT = 0) => ({
   sample: Math.round(timeS * rateHz),
   score,
   energyUv,
+  likeP,
+  likeT,
 });
 const usual = Array.from({ length: 20 }, (_, i) => at(0.8 * i, 6));
 const decide = (beats: typeof usual, others: typeof usual = []) =>
@@ -47,16 +50,24 @@ describe('the chance that a place was decided wrongly', () => {
   });
 });
 
-it('a beat may be hidden in what is as loud as one, or weaker where no P or T wave is due, but not in a T wave', () => {
+it('a beat may be hidden in what is as loud as one, or weaker where no P or T wave is due, but not in a T wave or a blocked P wave', () => {
   const paused = usual.filter((_, i) => i !== 10);
-  const isLoud = (...others: typeof usual) => {
+  const isLoudIn = (doubted: readonly Interval[], ...others: typeof usual) => {
     const places = [...paused, ...others].sort((a, b) => a.sample - b.sample);
-    return loudPlaces(paused, places, decide(paused, others), rateHz)(7.3, 8.7);
+    return loudPlaces(paused, places, decide(paused, others), rateHz, doubted)(7.3, 8.7);
   };
+  const isLoud = (...others: typeof usual) => isLoudIn([], ...others);
   expect(isLoud(at(7.6, -20, 90))).toBe(true);
   expect(isLoud(at(7.6, -20, 30))).toBe(false);
   expect(isLoud(at(8, -20, 30))).toBe(true);
   expect(isLoud(at(8, -20, 8))).toBe(false);
+  expect(isLoud(at(8, -20, 30, 0.95))).toBe(false);
+  expect(isLoud(at(8, -20, 60, 0.95))).toBe(true);
+  expect(isLoud(at(7.6, -20, 90, 0, 0.95))).toBe(false);
+  const burst = [{ fromS: 7, toS: 9 }];
+  expect(isLoudIn(burst, at(7.6, -20, 90, 0, 0.95))).toBe(true);
+  expect(isLoudIn(burst, at(8, -20, 30, 0.95))).toBe(true);
+  expect(isLoud(at(8, -20, 90, 0, 0.95))).toBe(true);
 });
 
 describe('a stretch', () => {

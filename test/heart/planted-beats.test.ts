@@ -53,6 +53,18 @@ describe('the leftover of a heart lead', () => {
     expect(rmsNear(left, 0.03)).toBeLessThan(8);
   });
 
+  it('takes a beat out whole that another of another shape follows closely', () => {
+    const wideUv = (s: number) => 400 * Math.exp(-((s / 0.05) ** 2));
+    const place = timesS[50];
+    const after = place + 0.45;
+    const close = {
+      ...stretch,
+      samples: lead.map((value, i) => value + wideUv(i / RATE_HZ - after)),
+    };
+    const out = atOnce(withoutOwnBeats(close, new Map([[0, average]]), RATE_HZ));
+    expect(Math.abs(out[Math.round(place * RATE_HZ)])).toBeLessThan(60);
+  });
+
   it('has an average of the beats’ own height', () => {
     expect(average.samples[average.centre]).toBeGreaterThan(190);
     expect(average.samples[average.centre]).toBeLessThan(205);

@@ -73,6 +73,8 @@ describe('between two rests the detector', () => {
     const places = Array.from({ length: MANY }, (_, i) => ({
       sample: 40 * i,
       energyUv: 1,
+      likeP: 0,
+      likeT: 0,
       get score() {
         asked += 1;
         return 1;

@@ -2,7 +2,14 @@ import { describe, expect, it } from 'vitest';
 import type { ShapeAverage } from '../../src/heart/beat-average';
 import { unsurePlaces } from '../../src/heart/unsure-places';
 
-const place = (sample: number, shape = 0) => ({ sample, shape, score: 0, energyUv: 0 });
+const place = (sample: number, shape = 0) => ({
+  sample,
+  shape,
+  score: 0,
+  energyUv: 0,
+  likeP: 0,
+  likeT: 0,
+});
 
 describe('the places a detector was unsure of', () => {
   const average = { shape: 0, fiducial: 57.5, middle: 50 } as ShapeAverage;

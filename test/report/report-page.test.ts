@@ -25,6 +25,7 @@ function page(signed: boolean): string {
   const model = reportModel({
     openDoubts: 0,
     evidence: {},
+    siteReference: null,
     age: null,
     recording,
     session,

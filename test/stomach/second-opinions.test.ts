@@ -78,6 +78,23 @@ describe('second opinions on one window', () => {
     expect(near(ask(two).multitaperCpm, 6)).toBeLessThan(0.05);
   });
 
+  test('find the stronger of two waves though it wanders and the weaker does not', () => {
+    const background = noise(960, 0, 5, 8);
+    const wanders = (t: number) =>
+      100 * Math.cos((2 * Math.PI * 2.5 * t) / 60 + 3.5 * Math.sin((2 * Math.PI * t) / 110));
+    const two = leadOf(4, (t) => wanders(t) + wave(40, 6, t)).map((uv, i) => uv + background[i]);
+    expect(near(ask(two).burgCpm, 2.5)).toBeLessThan(2);
+  });
+
+  test('see past a hole in a drift, across which a line is laid', () => {
+    const kept = new Uint8Array(960).fill(1).fill(0, 250, 330);
+    const background = noise(960, 1, 3, 2);
+    const drifting = (t: number) => wave(20, 3, t) + 300 * Math.sin((2 * Math.PI * t) / 240);
+    const signal = leadOf(4, drifting).map((uv, i) => uv + background[i]);
+    expect(near(ask(signal, kept).burgCpm, 3)).toBeLessThan(0.25);
+    expect(near(ask(signal, kept).multitaperCpm, 3)).toBeLessThan(0.25);
+  });
+
   test('see past a hole in which something else was recorded', () => {
     const kept = new Uint8Array(960).fill(1).fill(0, 400, 460);
     const holed = leadOf(4, (t) => wave(80, 3, t)).map((uv, i) => (kept[i] === 1 ? uv : 9000));

@@ -1,3 +1,4 @@
+import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
 import { beatCourse } from '../../src/trust/beat-course';
 import { type Modulation, phaseModulation } from '../../src/trust/phase-modulation';
@@ -107,12 +108,11 @@ export function modulationIn(
   surrogates = 500,
 ): Modulation {
   const kept = new Uint8Array(lead.length).fill(1);
-  const { phase, usable } = slowPhase(lead, kept, RATE_HZ, dfCpm);
+  const { phase, usable } = atOnce(slowPhase(lead, kept, RATE_HZ, dfCpm));
   const middles = rrMs.map((one, i) => beatTimesS[i] + one / 2000);
-  const course = beatCourse(middles, rrMs, { firstS: 0, rateHz: RATE_HZ, length: lead.length });
-  const work = phaseModulation({ phase, usable, course, rateHz: RATE_HZ }, surrogates);
-  for (;;) {
-    const next = work.next();
-    if (next.done) return next.value;
-  }
+  const grid = { firstS: 0, rateHz: RATE_HZ, length: lead.length };
+  const course = atOnce(beatCourse(middles, rrMs, grid));
+  const found = atOnce(phaseModulation({ phase, usable, course, rateHz: RATE_HZ }, surrogates));
+  if (!found) throw new Error('no modulation can be computed');
+  return found;
 }

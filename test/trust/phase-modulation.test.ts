@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { atOnce } from '../../src/numeric/in-steps';
 import { beatPulses } from '../../src/trust/beat-course';
 import { leakVerdict } from '../../src/trust/leak';
 import { LEAST_SHIFT_S, PHASE_BINS, phaseModulation } from '../../src/trust/phase-modulation';
@@ -49,26 +50,25 @@ describe('RR by the phase of the slow wave', () => {
     const inside = (i: number) => i >= 2000 && i < 2000 + 50 * RATE_HZ;
     const usable = Uint8Array.from(phase, (_, i) => (inside(i) ? 1 : 0));
     const course = phase.map((angle, i) => (inside(i) ? Math.cos(angle) : 0));
-    const work = phaseModulation({ phase, usable, course, rateHz: RATE_HZ });
-    let next = work.next();
-    while (!next.done) next = work.next();
-    expect(next.value.depth).toBeGreaterThan(0.9);
-    expect(next.value.chanceDepth).toBe(0);
-    expect(next.value.pOfSurrogates).toBe(1 / 1000);
-    expect(next.value.p).toBeGreaterThanOrEqual(next.value.pOfSurrogates);
+    const found = atOnce(phaseModulation({ phase, usable, course, rateHz: RATE_HZ }));
+    if (!found) throw new Error('no modulation');
+    expect(found.depth).toBeGreaterThan(0.9);
+    expect(found.chanceDepth).toBe(0);
+    expect(found.pOfSurrogates).toBe(1 / 1000);
+    expect(found.p).toBeGreaterThanOrEqual(found.pOfSurrogates);
     expect(LEAST_SHIFT_S).toBe(60);
-    expect(next.value.counts).toHaveLength(PHASE_BINS);
+    expect(found.counts).toHaveLength(PHASE_BINS);
   });
 
   it('is not computed where no such shift fits, or a phase is never seen', () => {
-    const few = { phase: new Float64Array(400), usable: new Uint8Array(400).fill(1), rateHz: 4 };
-    expect(() => phaseModulation({ ...few, course: new Float64Array(400) }).next()).toThrow(
-      'no shift',
-    );
-    const one = { phase: new Float64Array(4000), usable: new Uint8Array(4000).fill(1), rateHz: 4 };
-    expect(() => phaseModulation({ ...one, course: new Float64Array(4000) }).next()).toThrow(
-      'empty',
-    );
+    const still = (samples: number) => ({
+      phase: new Float64Array(samples),
+      usable: new Uint8Array(samples).fill(1),
+      course: new Float64Array(samples),
+      rateHz: RATE_HZ,
+    });
+    expect(atOnce(phaseModulation(still(400)))).toBeNull();
+    expect(atOnce(phaseModulation(still(4000)))).toBeNull();
   });
 
   it('is known to tell little where the rhythm never wanders', () => {

@@ -17,6 +17,8 @@ describe('the command line', () => {
       out: 'results',
     });
     expect(parseArguments(['a.edf', '--code', ' INV-7 ']).code).toBe('INV-7');
+    expect(parseArguments(['a.edf', '--reference', 'ours.csv']).reference).toBe('ours.csv');
+    expect(request.reference).toBeNull();
     expect(request.code).toBeNull();
     expect(request.phases?.at(-1)).toEqual({ name: 'fed', fromS: 2520, toS: 5400 });
   });

@@ -224,6 +224,9 @@ describe('studies that carry little', () => {
     if (modulation.kind !== 'found') throw new Error(modulation.reason);
     expect(modulation.rivals.leak.verdict).toBe('seen');
     expect(modulation.rivals.leak.leakUv).toBeGreaterThan(0.5);
+    expect(modulation.p).toBeLessThan(0.05);
+    expect(modulation.rivals.leak.withoutDepthPct).toBeLessThan(modulation.depthPct / 2);
+    expect(modulation.rivals.leak.withoutP).toBeGreaterThan(0.05);
   });
 });
 

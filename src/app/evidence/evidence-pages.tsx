@@ -56,6 +56,11 @@ export const EVIDENCE_PAGES: Readonly<Record<EvidencePageId, PageHead>> = {
     about:
       'How well route fractional would do on this recording with other settings, beside the other routes. The program changes none by itself.',
   },
+  'self-check': {
+    title: 'Self-check',
+    about:
+      'Known values run through the very code that makes the figures, on this machine. It needs no study.',
+  },
 };
 
 /** The page of a part that is there, drawn; null where it is not. */

@@ -22,7 +22,7 @@ export function LeadsPage({ value }: { readonly value: LeadsEvidence }) {
   const compared = pairs.filter((pair) => pair.kind === 'compared');
   const left = pairs.filter((pair) => pair.kind === 'left-out');
   return (
-    <>
+    <div className="evidence-sheet">
       <p>
         Coupled: the rhythm of both leads is normo and their DF lie within {withinCpm} cpm of each
         other (the usual value, from memory), in percent of the epochs kept on both. The lag is how
@@ -35,7 +35,7 @@ export function LeadsPage({ value }: { readonly value: LeadsEvidence }) {
         <ComparedPair key={`${pair.first} ${pair.second}`} pair={pair} />
       ))}
       {left.length > 0 ? <LeftOut pairs={left} /> : null}
-    </>
+    </div>
   );
 }
 

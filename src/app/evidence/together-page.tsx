@@ -22,7 +22,7 @@ const BREATHING_FROM = {
 export function TogetherPage({ value }: { readonly value: TogetherEvidence }) {
   const { heartRead, breathingFrom, windows, phases } = value;
   return (
-    <>
+    <div className="evidence-sheet">
       <p>
         A window is an epoch of the reported lead. HF here is that of windows as long as an epoch,
         which is not the standard 5 min: it does not compare with the HF of Findings.{' '}
@@ -49,7 +49,7 @@ export function TogetherPage({ value }: { readonly value: TogetherEvidence }) {
           <Modulation key={phase.name} phase={phase} />
         ))}
       </section>
-    </>
+    </div>
   );
 }
 

@@ -44,11 +44,11 @@ export function lagWords(pair: LeadPair, lag: LagFound): string {
     : `${pair.secondName} earlier by ${signed(-lagS, 1)} s ${range(-highS, -lowS)}`;
 }
 
-/** Coherence at DF beside the level of unrelated noise; a dash where it could not be computed. */
+/** Coherence at DF, never rounded up to 1, beside the level of unrelated noise; a dash where it could not be computed. */
 export const coherenceWords = (lag: LagFound): string =>
   lag.coherence === null || lag.level === null
     ? '—'
-    : `${lag.coherence.toFixed(2)} (noise under ${lag.level.toFixed(2)})`;
+    : `${(Math.floor(100 * lag.coherence) / 100).toFixed(2)} (noise under ${lag.level.toFixed(2)})`;
 
 const phaseWords = (pair: Compared, phase: PairInPhase): string =>
   `${phase.name}: coupled ${couplingWords(phase)}; ${lagWords(pair, phase.lag)}.`;
