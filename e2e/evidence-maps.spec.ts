@@ -50,7 +50,8 @@ test('a map shows each cell’s figure by mouse and by keys, and a cell is taken
   const found = await new AxeBuilder({ page }).include('dialog').analyze();
   expect(found.violations.map(({ id }) => id)).toEqual([]);
 
-  await use.click();
+  await next.focus();
+  await page.keyboard.press('Enter');
   await expect(heart.getByText(/what is in use \(fractional, order 0\.55/)).toBeVisible({
     timeout: LONG_MS,
   });
@@ -74,8 +75,9 @@ test('the slow wave has its map, all figures as a table, and routes beside it', 
   await page.keyboard.press('Shift+O');
   const slow = await mapOf(page, 'Slow wave');
   await expect(slow.getByRole('row', { name: /^route band/ })).toBeVisible();
-  await slow.getByText('All figures of this map').click();
-  const table = slow.getByRole('table', { name: /score in dB by order and window/ });
+  const dialog = dialogOf(page, 'Evidence');
+  await dialog.getByText('Slow wave: all figures of the map').click();
+  const table = dialog.getByRole('table', { name: /score in dB by order and window/ });
   await expect(table.getByRole('row')).toHaveCount(22);
   await expect(slow.getByText(/this study’s own median/)).toBeVisible();
   expectNoTroubles(page);

@@ -15,12 +15,14 @@ import {
   goTo,
   IDENTITY,
   keptHere,
+  LONG_MS,
   openStudy,
   press,
   RECORD,
   RECORD_CODE,
   RECORD_FOLDER,
   reviewAs,
+  STEADY,
   settled,
   undoName,
 } from './support';
@@ -196,6 +198,20 @@ test.describe('work on one study', () => {
     expectNoTroubles(other);
     await other.context().close();
   });
+});
+
+test('a reload asks for the file of an invented study that is not the demo, instead of making the demo', async ({
+  browser,
+}) => {
+  const page = await freshPage(browser);
+  await openStudy(page, STEADY);
+  await expect(page.getByText('invented data', { exact: true }).first()).toBeVisible();
+  await page.reload();
+  await expect(page.getByText(SAME_FILE).first()).toBeVisible({ timeout: LONG_MS });
+  await chooseFile(page, STEADY);
+  await agree(page);
+  await expect(page.getByText('invented data', { exact: true }).first()).toBeVisible();
+  await page.context().close();
 });
 
 test('a second tab on the same study loses nothing and says so', async ({ browser }) => {

@@ -1,3 +1,4 @@
+import { digitalNumbers } from '../src/decode/digital-numbers';
 import { parseRecordAnnotations } from '../src/decode/edf-annotations';
 import { fullYear } from '../src/decode/edf-fields';
 import { openRecording } from '../src/decode/formats';
@@ -60,7 +61,7 @@ function beforeStart(): (string | number)[] {
   return parseRecordAnnotations(text).annotations.flatMap((one) => [one.onsetS, one.text]);
 }
 
-/** The reader of EDF files. */
+/** The reader of EDF and BDF files. */
 export const DECODE_CHECKS: readonly CheckValue[] = [
   {
     id: 'CV-32',
@@ -122,5 +123,13 @@ export const DECODE_CHECKS: readonly CheckValue[] = [
     expected: [-0.065, 'pre-trigger'],
     tolerance: EXACT,
     got: beforeStart,
+  },
+  {
+    id: 'CV-39',
+    what: '24-bit samples (BDF): 00 00 80, FF FF 7F, 40 0D 03',
+    source: ARITHMETIC,
+    expected: [-8_388_608, 8_388_607, 200_000],
+    tolerance: EXACT,
+    got: () => digitalNumbers(Uint8Array.of(0, 0, 0x80, 0xff, 0xff, 0x7f, 0x40, 0x0d, 0x03), 3),
   },
 ];

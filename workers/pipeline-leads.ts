@@ -141,9 +141,7 @@ function markOf(
   );
   const marks = [
     ...(referenceOpen
-      ? [
-          'a common reference cannot be excluded: what comes from it looks like coupling without lag',
-        ]
+      ? ['a common reference cannot be excluded: it would look like coupling without lag']
       : []),
     ...(filters[0] === filters[1]
       ? []

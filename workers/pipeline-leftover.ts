@@ -1,5 +1,5 @@
 import { createRandom } from '../src/numeric/random';
-import type { SlowWaveRhythm } from '../src/recording/rhythm';
+import type { Epoch, SlowWaveRhythm } from '../src/recording/rhythm';
 import type { Interval } from '../src/recording/span';
 import { bridged } from '../src/separate/bridge';
 import { leadSpectra } from '../src/separate/lead-spectra';
@@ -19,6 +19,12 @@ export interface LeftoverOf {
   readonly rhythm: Pick<SlowWaveRhythm, 'epochs'>;
 }
 
+/** The leftover made last of a lead's epochs: planted check and maps ask for the same one. */
+const known = new WeakMap<
+  readonly Epoch[],
+  { readonly recorded: Float64Array; readonly spoiled: string; readonly leftover: Leftover }
+>();
+
 /**
  * The leftover of a lead: what the planted check plants in. What is spoiled or missing is bridged before the lines are read
  * off, and stays as it was recorded. Null where no four minutes of the lead are three quarters there.
@@ -28,6 +34,9 @@ export async function leftoverOfLead(
   job: Job,
 ): Promise<Leftover | null> {
   const { recorded, rateHz } = slow;
+  const before = known.get(rhythm.epochs);
+  const stretches = JSON.stringify(spoiled);
+  if (before?.recorded === recorded && before.spoiled === stretches) return before.leftover;
   const kept = keptSamples(recorded, rateHz, spoiled);
   const spectra = await withRests(leadSpectra(recorded, kept, rateHz, 'zero'), job);
   if (!spectra) return null;
@@ -37,5 +46,7 @@ export async function leftoverOfLead(
   await job.breathe();
   const random = createRandom(SEED);
   const inputs = { recorded, whole, margin, kept, rateHz, epochs: rhythm.epochs, random };
-  return inTurns(leftoverOf(inputs), job, 'Taking the study’s own waves out');
+  const leftover = await inTurns(leftoverOf(inputs), job, 'Taking the study’s own waves out');
+  known.set(rhythm.epochs, { recorded, spoiled: stretches, leftover });
+  return leftover;
 }

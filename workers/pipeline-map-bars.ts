@@ -3,9 +3,9 @@ import type { Settings } from '../src/recording/settings';
 import type { MapBar } from '../src/recording/settings-map';
 import { drawBand } from '../src/separate/band';
 import { heartPart } from '../src/separate/heart-part';
-import { type FoldedLead, slowBandResponses, slowLead } from '../src/separate/route-responses';
+import { type FoldedLead, slowLead } from '../src/separate/route-responses';
 import { carriesBeats } from '../src/separate/wide-lead';
-import { type ReadyStretch, readyStretch, scoreOf } from '../src/trust/match-score';
+import { readyStretch, scoreOf } from '../src/trust/match-score';
 import { stretchProducts } from '../src/trust/stretch-products';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
 import { type Job, withRests } from './job';
@@ -31,55 +31,62 @@ function beatsFrom({ beats, beatRateHz, fromS }: BeatsHere, lengthS: number): Be
   };
 }
 
-/**
- * Score of route `beat-average`, which is not linear: run once in time on the very lead, and what it draws held against the
- * target by the same measure. Null where the lead has too few samples a second or there is no heart lead.
- */
-async function beatAverageBar(
+/** A lead at the slow rate, drawn by route `band`. */
+async function bandOf({ samples, rateHz }: FoldedLead, settings: Settings, job: Job) {
+  const kept = new Uint8Array(samples.length).fill(1);
+  const { slowWave } = await withRests(
+    drawBand(samples, rateHz, settings, { kept, breathing: null }),
+    job,
+  );
+  return slowWave;
+}
+
+/** A stretch at the slow rate without its average heartbeats; null where none can be taken out. */
+export async function withoutBeats(
   planted: FoldedLead,
-  target: Float64Array,
-  here: BeatsHere | null,
+  slow: FoldedLead,
+  here: BeatsHere,
   settings: Settings,
   job: Job,
-): Promise<MapBar | null> {
-  if (!here || !carriesBeats(planted.rateHz)) return null;
-  const slow = slowLead(planted);
-  const kept = new Uint8Array(slow.samples.length).fill(1);
+): Promise<FoldedLead | null> {
+  if (!carriesBeats(planted.rateHz)) return null;
   const part = await withRests(
     heartPart({
       wide: { rateHz: planted.rateHz, samples: Float32Array.from(planted.samples) },
       beats: beatsFrom(here, planted.samples.length / planted.rateHz),
       beatRateHz: here.beatRateHz,
-      kept,
+      kept: new Uint8Array(slow.samples.length).fill(1),
       settings: settings.beatAverage,
     }),
     job,
   );
   if (part.beats === 0) return null;
-  const without = slow.samples.map((value, i) => value - (part.uv[i] ?? 0));
-  const { slowWave } = await withRests(
-    drawBand(without, slow.rateHz, settings, { kept, breathing: null }),
-    job,
-  );
-  const known = slowLead({ samples: target, rateHz: planted.rateHz }).samples;
-  const drawn = readyStretch(stretchProducts(known, slowWave, slow.rateHz), MOST_AHEAD_S.slow);
-  const one = new Float64Array(drawn.products.freqsHz.length).fill(1);
-  return { route: 'beat-average', ...scoreOf(drawn, drawn.products, one) };
+  return { ...slow, samples: slow.samples.map((value, i) => value - (part.uv[i] ?? 0)) };
 }
 
-/** Scores of the routes that have no map, on the lead that holds the target. */
+/**
+ * Scores of the routes that have no map, on the lead that holds the target. Each is run once in time, as it draws a study:
+ * `beat-average` is not linear, and the filter fitted to a lead is longer than the ramps of a stretch. Breathing is not taken
+ * out.
+ */
 export async function slowBars(
-  ready: ReadyStretch,
   planted: FoldedLead,
   target: Float64Array,
-  here: BeatsHere | null,
+  here: BeatsHere,
   settings: Settings,
   job: Job,
 ): Promise<readonly MapBar[]> {
-  const gain = slowBandResponses(planted, settings, ready.products);
+  const slow = slowLead(planted);
   await job.breathe();
-  const band = scoreOf(ready, ready.products, gain);
+  const known = slowLead({ samples: target, rateHz: planted.rateHz }).samples;
   await job.breathe();
-  const average = await beatAverageBar(planted, target, here, settings, job);
-  return [{ route: 'band', ...band }, ...(average ? [average] : [])];
+  const scoreIn = async (lead: FoldedLead) => {
+    const drawn = await bandOf(lead, settings, job);
+    const products = stretchProducts(known, drawn, lead.rateHz);
+    const one = new Float64Array(products.freqsHz.length).fill(1);
+    return scoreOf(readyStretch(products, MOST_AHEAD_S.slow), products, one);
+  };
+  const band: MapBar = { route: 'band', ...(await scoreIn(slow)) };
+  const bare = await withoutBeats(planted, slow, here, settings, job);
+  return bare ? [band, { route: 'beat-average', ...(await scoreIn(bare)) }] : [band];
 }

@@ -1,12 +1,18 @@
 import { sin } from '../src/numeric/elementary';
 import { createRandom } from '../src/numeric/random';
 import { cubicSpline } from '../src/numeric/spline';
+import { NO_BEATS } from '../src/recording/beat';
 import { leadKey } from '../src/recording/lead';
+import type { Epoch } from '../src/recording/rhythm';
+import type { Settings } from '../src/recording/settings';
 import type { NoMap, OrganMap } from '../src/recording/settings-map';
-import type { FoldedLead } from '../src/separate/route-responses';
+import type { Interval } from '../src/recording/span';
+import { type FoldedLead, slowLead } from '../src/separate/route-responses';
 import { usualCpm } from '../src/stomach/usual-cpm';
 import { cpmToHz } from '../src/units/rate';
-import { slowBars } from './pipeline-map-bars';
+import type { Job } from './job';
+import { leftoverOfLead } from './pipeline-leftover';
+import { type BeatsHere, slowBars, withoutBeats } from './pipeline-map-bars';
 import {
   foldedStretch,
   type KnownStretch,
@@ -30,20 +36,38 @@ interface OwnWave {
   readonly uv: number;
 }
 
-/** What the leftover's lines are to the recording, brought from the slow rate to that of a folded stretch. */
-function changeAt(
-  change: Float64Array,
-  slowHz: number,
-  fromS: number,
-  { samples, rateHz }: FoldedLead,
-): Float64Array {
-  const first = Math.max(0, Math.floor(fromS * slowHz) - 8);
-  const last = Math.min(change.length, Math.ceil((fromS + samples.length / rateHz) * slowHz) + 8);
-  const times = Float64Array.from({ length: last - first }, (_, i) => (first + i) / slowHz);
-  return cubicSpline(
-    times,
-    change.subarray(first, last),
-  )(Float64Array.from({ length: samples.length }, (_, i) => fromS + i / rateHz));
+/**
+ * What takes the study's own wave out of a stretch and puts its noise in the place: read off the stretch without its
+ * heartbeats, so that what they leave inside the band stays in it; at the rate of the folded stretch. Null where too little
+ * of it is there.
+ */
+async function changeOf(
+  folded: FoldedLead,
+  epochs: readonly Epoch[],
+  { here, settings }: { readonly here: BeatsHere & Interval; readonly settings: Settings },
+  job: Job,
+): Promise<Float64Array | null> {
+  const slow = slowLead(folded);
+  await job.breathe();
+  const bare = (await withoutBeats(folded, slow, here, settings, job)) ?? slow;
+  const inside = epochs.filter(({ fromS, toS }) => fromS >= here.fromS && toS <= here.toS);
+  const shifted = inside.map((epoch) => ({
+    ...epoch,
+    fromS: epoch.fromS - here.fromS,
+    toS: epoch.toS - here.fromS,
+  }));
+  const leftover = await leftoverOfLead(
+    {
+      slow: { recorded: bare.samples, rateHz: bare.rateHz },
+      spoiled: [],
+      rhythm: { epochs: shifted },
+    },
+    job,
+  );
+  if (!leftover) return null;
+  const { change } = leftover;
+  const times = change.map((_, i) => i / bare.rateHz);
+  return cubicSpline(times, change)(folded.samples.map((_, i) => i / folded.rateHz));
 }
 
 /** The stretch with a wave in place of its own, and the noise that is added for the second map. */
@@ -85,19 +109,23 @@ export async function slowMap(work: MapWork): Promise<OrganMap | NoMap> {
   const folded = await foldedStretch(work, 'slow', lead, stretch);
   if (!folded) return noMap('Samples are missing in the longest clean stretch.');
   const { rateHz } = leadChannel(recording, lead);
-  const fromS = folded.firstSample / rateHz;
-  const slowHz = check.lead.slow.rateHz;
-  const known = plantedIn(folded, changeAt(check.leftover.change, slowHz, fromS, folded), own);
+  const here = {
+    beats: roles.heart ? beats : NO_BEATS,
+    beatRateHz: leadChannel(recording, roles.heart ?? lead).rateHz,
+    fromS: folded.firstSample / rateHz,
+    toS: stretch.toS,
+  };
+  const change = await changeOf(folded, check.epochs, { here, settings }, job);
+  if (!change) return noMap('No epoch of the reported lead is kept.');
+  const known = plantedIn(folded, change, own);
   await job.breathe();
-  const beatRateHz = roles.heart ? leadChannel(recording, roles.heart).rateHz : null;
-  const here = beatRateHz === null ? null : { beats, beatRateHz, fromS };
   return organMap(
     known,
     {
       organ: 'slow',
       rateHz,
       settings,
-      barsOf: (ready, planted) => slowBars(ready, planted, known.target, here, settings, job),
+      barsOf: (_, planted) => slowBars(planted, known.target, here, settings, job),
     },
     {
       lead: leadKey(lead),

@@ -3,7 +3,7 @@ import { SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
 import { goToStretch } from '../review/findings-go';
 import type { Edit, Session } from '../session/document';
 import { addSpan, changeSpan, removeSpans } from '../session/edits';
-import { timeText } from '../units/typed-time';
+import { timeColumn, timeText } from '../units/typed-time';
 import { useApp, useSession, useView, withReviewer } from './app-context';
 import { EntryDialog } from './entry-dialog';
 import { Choice, Field } from './fields';
@@ -175,6 +175,7 @@ function SpanTable({ spans, changing, onChange, onRemove, onGo }: SpanTableProps
   const hidden = useView((view) => view.identityHidden);
   const names = new Map(state ? leadOptions(state.roles, state.study.channelLabels, spans) : []);
   if (spans.length === 0) return <p className="quiet">Nothing is excluded.</p>;
+  const timeOf = timeColumn(spans.flatMap(({ fromS, toS }) => [fromS, toS]));
   return (
     <table className="acts-table">
       <caption>Spoiled spans</caption>
@@ -189,16 +190,16 @@ function SpanTable({ spans, changing, onChange, onRemove, onGo }: SpanTableProps
       </thead>
       <tbody>
         {spans.map((span) => {
-          const place = `${timeText(span.fromS)} to ${timeText(span.toS)}`;
+          const place = `${timeOf(span.fromS)} to ${timeOf(span.toS)}`;
           return (
             <tr key={span.id} aria-current={span.id === changing ? 'true' : undefined}>
               <td>
                 <button type="button" className="go" onClick={() => onGo(span)}>
-                  {timeText(span.fromS)}
+                  {timeOf(span.fromS)}
                   <span className="unseen">: go there</span>
                 </button>
               </td>
-              <td>{timeText(span.toS)}</td>
+              <td>{timeOf(span.toS)}</td>
               <td>{span.target === 'both' ? 'stomach and heart' : span.target}</td>
               <td>{span.cause}</td>
               <td>{names.get(span.lead ?? '') ?? span.lead}</td>

@@ -124,7 +124,7 @@ function KeptSession({ row, onForgotten }: KeptSessionProps) {
     <li>
       <button
         type="button"
-        className="kept-open"
+        className="button kept-open"
         onClick={() => void controller.continueKept(row.quickKey)}
       >
         <strong>{row.code}</strong>

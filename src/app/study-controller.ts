@@ -219,19 +219,22 @@ export function createStudyController(parts: ControllerParts): StudyController &
     return beginSession(initialState(study, { ...reply.value, settings }));
   }
 
-  async function openDemo() {
+  /** Makes and opens the demo study; false where a size is asked for that is not its: another invented study. */
+  async function demoOf(sizeBytes: number | null): Promise<boolean> {
     const reply = await runner.watched('Making the demo study', (watch) => client.demo(watch));
+    if (reply.ok && sizeBytes !== null && reply.value.size !== sizeBytes) return false;
     if (reply.ok) await open(new File([reply.value], 'invented-demo.edf'), null);
     else fail(reply.failure);
+    return true;
   }
 
   async function continueKept(quickKey: string) {
     const kept = await keptSession(quickKey);
     if (!kept) return;
     awaited = kept;
-    const { code, invented } = kept.state.study;
-    if (invented) await openDemo();
-    else shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
+    const { code, invented, sizeBytes } = kept.state.study;
+    if (invented && (await demoOf(sizeBytes))) return;
+    if (awaited === kept) shell.getState().openDialog({ kind: 'choose-same-file', code, quickKey });
   }
 
   /** One step back or forth through the edits, told with what it was. */
@@ -251,7 +254,9 @@ export function createStudyController(parts: ControllerParts): StudyController &
     doubtAccess: client,
     evidenceAccess: client,
     openFile: open,
-    openDemo,
+    async openDemo() {
+      await demoOf(null);
+    },
     async openSessionFile(file) {
       const read = await files.readSession(file);
       if (!read) return;

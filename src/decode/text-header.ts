@@ -60,7 +60,7 @@ function fitted(line: string, cells: readonly string[], layout: TextLayout): rea
 }
 
 const UNIT_WORD =
-  /^[([]?\s*([munkµμ]?V|s|ms|us|µs|μs|sec|min|h|seconds|a\.?u\.?|%|-|°C|C|ohm|kohm)?\s*[)\]]?$/;
+  /^[([]?\s*([munkµμ]?V|s|ms|us|µs|μs|sec|min|h|seconds|clock|h{1,2}:mm:ss(\.s+)?|a\.?u\.?|%|-|°C|C|ohm|kohm)?\s*[)\]]?$/;
 
 function isUnitsRow(cells: readonly string[]): boolean {
   return cells.every((cell) => UNIT_WORD.test(cell)) && cells.some((cell) => cell !== '');

@@ -21,8 +21,8 @@ export interface AdequacyRow {
   readonly stomach: KeptPart;
   /** Null where the study has no heart lead. */
   readonly heart: KeptPart | null;
-  /** False for a meal: its minutes are drawn, no figure is made of them. */
-  readonly analysed: boolean;
+  /** False for a meal: its figures stand in Findings and the files, the report prints none of them. */
+  readonly printed: boolean;
 }
 
 export interface AdequacyTable {
@@ -44,9 +44,9 @@ export function adequacyTable({ phases }: Findings, heartLead: boolean): Adequac
 
 function rowOf(phase: PhaseFindings, heartLead: boolean, notes: Notes): AdequacyRow {
   const lengthS = phase.toS - phase.fromS;
-  const analysed = !isMeal({ ...phase, name: phase.phase });
+  const printed = !isMeal({ ...phase, name: phase.phase });
   const kept = (keptS: number, adequacy: Adequacy): KeptPart => {
-    const reason = analysed ? adequacyReason(adequacy, keptS, lengthS) : '';
+    const reason = printed ? adequacyReason(adequacy, keptS, lengthS) : '';
     return {
       minutes: (keptS / 60).toFixed(1),
       percent: `${keptPercent(keptS, lengthS)} %`,
@@ -60,6 +60,6 @@ function rowOf(phase: PhaseFindings, heartLead: boolean, notes: Notes): Adequacy
     minutes: (lengthS / 60).toFixed(1),
     stomach: kept(phase.keptStomachS, phase.adequacyStomach),
     heart: heartLead ? kept(phase.keptHeartS, phase.adequacyHeart) : null,
-    analysed,
+    printed,
   };
 }

@@ -66,13 +66,13 @@ function Row({ row }: { readonly row: AdequacyRow }) {
       <th scope="row">{row.phase}</th>
       <td>{row.stretch}</td>
       <td>{row.minutes}</td>
-      <Kept part={row.stomach} analysed={row.analysed} />
-      <Kept part={row.heart} analysed={row.analysed} />
+      <Kept part={row.stomach} printed={row.printed} />
+      <Kept part={row.heart} printed={row.printed} />
     </tr>
   );
 }
 
-function Kept({ part, analysed }: { readonly part: KeptPart | null; readonly analysed: boolean }) {
+function Kept({ part, printed }: { readonly part: KeptPart | null; readonly printed: boolean }) {
   if (!part)
     return (
       <td colSpan={3} className="report-left report-kept-from">
@@ -84,7 +84,7 @@ function Kept({ part, analysed }: { readonly part: KeptPart | null; readonly ana
       <td>{part.minutes}</td>
       <td>{part.percent}</td>
       <td className="report-left">
-        {analysed ? part.words : 'shown, not analysed'}
+        {printed ? part.words : 'in Findings, not here'}
         <Letters letters={part.letters} />
       </td>
     </>

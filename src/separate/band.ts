@@ -201,14 +201,6 @@ const breathingWords = (takenOut: readonly Interval[]): readonly string[] =>
       ]
     : [];
 
-/** Taps by which route `band` draws a lead at the slow rate without holes; those of the even band where it is too short to fit a gain to. */
-export const slowDrawingTaps = (
-  lead: Float64Array,
-  rateHz: Hertz,
-  settings: Settings,
-): Float64Array =>
-  drawingTaps(rateHz, settings, atOnce(leadSpectra(lead, present(lead), rateHz, 'bridged')));
-
 /**
  * Route `band`: slow wave and heartbeat by zero-phase FIR band-passes. Linear, without delay; rhythm
  * figures are computed on the lead before the slow wave's band-pass.

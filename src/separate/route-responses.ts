@@ -7,7 +7,6 @@ import { savitzkyGolayWeights } from '../numeric/savitzky-golay';
 import { symmetricResponses } from '../numeric/symmetric-response';
 import type { Settings } from '../recording/settings';
 import type { Hertz } from '../units/rate';
-import { slowDrawingTaps } from './band';
 import { foldingTaps, windowSamples } from './fractional-kernels';
 import { heartBandAt, heartBandKernel } from './heart-band';
 import { heartDecimation } from './heart-rate';
@@ -137,21 +136,6 @@ export function slowLead({ samples, rateHz }: FoldedLead): FoldedLead {
   const sampler = createSlowSampler(rateHz);
   sampler.push(samples);
   return { samples: sampler.finish(), rateHz: slowRateHz(rateHz) };
-}
-
-/**
- * Response of route `band` for the slow wave, which is real: the low-pass before 4 Hz and the filter that the route draws
- * this very lead with.
- */
-export function slowBandResponses(
-  lead: FoldedLead,
-  settings: Settings,
-  { freqsHz }: Pick<ResponseAsk, 'freqsHz'>,
-): Float64Array {
-  const slow = slowLead(lead);
-  const taps = slowDrawingTaps(slow.samples, slow.rateHz, settings);
-  const passed = slowSamplerResponses(lead.rateHz, freqsHz);
-  return symmetricResponses(taps, slow.rateHz, freqsHz).map((gain, k) => gain * passed[k]);
 }
 
 /**

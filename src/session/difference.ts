@@ -58,13 +58,15 @@ interface RowWords<T> {
   /** All that is said of it beside that. */
   readonly words: (row: T) => string;
   readonly place: (row: T) => Interval;
+  /** Where a row that is there before and after differs; its place after where left out. */
+  readonly moved?: (was: T, row: T) => Interval;
 }
 
 /** Rows of two lists that are there only before, only after, or read otherwise. */
 export function listDifferences<T>(
   before: readonly T[],
   after: readonly T[],
-  { key, what, words, place }: RowWords<T>,
+  { key, what, words, place, moved }: RowWords<T>,
 ): readonly Difference[] {
   const old = new Map(before.map((row) => [key(row), row]));
   const left = new Map(after.map((row) => [key(row), row]));
@@ -74,7 +76,8 @@ export function listDifferences<T>(
     const to = words(row);
     if (!was) return [{ what: what(row), from: null, to, place: place(row) }];
     const from = words(was);
-    return from === to ? [] : [{ what: what(row), from, to, place: place(row) }];
+    const where = moved ? moved(was, row) : place(row);
+    return from === to ? [] : [{ what: what(row), from, to, place: where }];
   });
   return [
     ...gone.map((row) => ({ what: what(row), from: words(row), to: null, place: place(row) })),

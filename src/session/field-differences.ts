@@ -2,6 +2,7 @@ import { type Lead, leadName } from '../recording/lead';
 import type { Phase } from '../recording/phase';
 import type { Protocol } from '../recording/protocol';
 import type { Roles } from '../recording/roles';
+import type { Interval } from '../recording/span';
 import { formatClock } from '../units/time';
 import { type Difference, listDifferences, quoted, stretchOf } from './difference';
 import type { Bookmark, Change, Symptom, TimedNote } from './document';
@@ -58,7 +59,17 @@ const PHASE_ROWS = {
   what: ({ name }: Phase) => `phase ${name}`,
   words: stretchOf,
   place: ({ fromS, toS }: Phase) => ({ fromS, toS }),
+  moved: movedBorders,
 };
+
+/** From the first to the last time that a border of a phase was moved from or to. */
+function movedBorders(was: Phase, now: Phase): Interval {
+  const times = [
+    ...(was.fromS === now.fromS ? [] : [was.fromS, now.fromS]),
+    ...(was.toS === now.toS ? [] : [was.toS, now.toS]),
+  ];
+  return { fromS: Math.min(...times), toS: Math.max(...times) };
+}
 
 const idOf = ({ id }: { readonly id: number }) => id;
 const momentOf = ({ atS }: TimedNote) => ({ fromS: atS, toS: atS });

@@ -28,7 +28,7 @@ const SHARE = 0.02;
 const WIDEST_HZ = 0.2;
 
 /** Weights of a stretch: cosine ramps (Tukey 1967) of a minute, a quarter of the stretch at most, at both ends. */
-export function stretchTaper(length: number, rateHz: Hertz): Float64Array {
+function stretchTaper(length: number, rateHz: Hertz): Float64Array {
   const ramp = Math.min(Math.round(RAMP_S * rateHz), Math.floor(length / 4));
   const taper = new Float64Array(length).fill(1);
   for (let i = 0; i < ramp; i += 1) {

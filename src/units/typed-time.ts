@@ -83,8 +83,17 @@ function onClock(time: ClockTime | 'unreadable', { durationS, startOfDayS }: Tim
 
 /** A time as it is offered for typing: whole seconds without decimals, others with as many as they need, 3 at most. */
 export function timeText(seconds: Seconds): string {
-  const decimals = [0, 1, 2, 3].find((d) => seconds === Number(seconds.toFixed(d))) ?? 3;
-  return formatClock(seconds, decimals);
+  return formatClock(seconds, decimalsOf(seconds));
+}
+
+/** How many decimals of a second, 3 at most, a time needs to be written as it is. */
+const decimalsOf = (seconds: Seconds): number =>
+  [0, 1, 2, 3].find((d) => seconds === Number(seconds.toFixed(d))) ?? 3;
+
+/** Writes the times of one column with as many decimals as the one that needs most. */
+export function timeColumn(times: readonly Seconds[]): (seconds: Seconds) => string {
+  const decimals = times.reduce((most, one) => Math.max(most, decimalsOf(one)), 0);
+  return (seconds) => formatClock(seconds, decimals);
 }
 
 /** The time on the clock, "09:24:34", with " +1" on the day after the recording began. Null where the start is not known. */

@@ -12,7 +12,7 @@ describe('what is said of several leads', () => {
       {
         name: 'EGG1 − EGG2 and EGG3',
         words:
-          'fasting: coupled 74 % (95 % by chance 41–92); EGG3 earlier by 1.6 s (95 % by chance 1.4 to 1.8). fed: coupled not given: 9.5 clean minutes (under 10); no lag: coherence is not above that of unrelated noise.',
+          'fasting: coupled 74 % (41–92); EGG3 earlier by 1.6 s (1.4 to 1.8). fed: coupled not given: 9.5 clean minutes (under 10); no lag: coherence is not above that of unrelated noise. Ranges are 95 % by chance.',
         mark: 'the file states different filters',
       },
       {
@@ -29,7 +29,7 @@ describe('what is said of several leads', () => {
     const lag = { ...pair.phases[0].lag, lagS: -0.04, lowS: -0.3, highS: 0.22 };
     const phases = [{ ...pair.phases[0], lag }];
     const [line] = leadsLines({ ...INVENTED_LEADS, pairs: [{ ...pair, phases }] });
-    expect(line.words).toContain('neither earlier, lag 0.0 s (95 % by chance −0.3 to 0.2)');
+    expect(line.words).toContain('neither earlier, lag 0.0 s (−0.3 to 0.2)');
     expect(line.words).not.toContain('propag');
   });
 

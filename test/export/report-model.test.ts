@@ -165,7 +165,7 @@ describe('events and symptoms', () => {
 });
 
 describe('what the figures stand on', () => {
-  it('is a line a phase; a meal is shown and not analysed, without a verdict', () => {
+  it('is a line a phase; a meal, whose figures the report does not print, has no verdict', () => {
     const { rows, notes } = model({
       findings: {
         phases: [
@@ -178,9 +178,9 @@ describe('what the figures stand on', () => {
       stretch: '0:00:00–0:30:00',
       minutes: '30.0',
       stomach: { minutes: '29.4', percent: '98 %', words: 'enough', letters: [] },
-      analysed: true,
+      printed: true,
     });
-    expect(rows[1].analysed).toBe(false);
+    expect(rows[1].printed).toBe(false);
     expect(notes).toEqual([]);
   });
 

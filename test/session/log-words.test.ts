@@ -14,6 +14,7 @@ import {
   setField,
   sign,
 } from '../../src/session/edits';
+import { fieldDifferences } from '../../src/session/field-differences';
 import { appendEdit, appendRedo, appendUndo, beginSession } from '../../src/session/log';
 import { LOG_KINDS, logEntries, logWords } from '../../src/session/log-words';
 import { secondsToTicks } from '../../src/units/ticks';
@@ -118,6 +119,16 @@ describe('a line of the log in words', () => {
       'phase fed: 0:40:00–1:30:00 → 0:42:00–1:30:00',
       'phase meal added: 0:30:00–0:40:00',
     ]);
+    const border = fieldDifferences(
+      {
+        kind: 'field',
+        field: 'phases',
+        before: [{ name: 'fed', fromS: 2400, toS: 5400 }],
+        after: [{ name: 'fed', fromS: 2520, toS: 5400 }],
+      },
+      [],
+    );
+    expect(border.map(({ place }) => place)).toEqual([{ fromS: 2400, toS: 2520 }]);
     const longer = { ...DEFAULT_SETTINGS, epoch: { ...DEFAULT_SETTINGS.epoch, lengthS: 300 } };
     expect(wordsOf(({ state }) => setField(state, 'settings', longer, 'settings')).changes).toEqual(
       ['epoch: 240 s → 300 s'],

@@ -54,6 +54,14 @@ describe('of a wave alone', () => {
     });
   });
 
+  test('a delay between those that are tried costs nothing', () => {
+    const { target, rateHz } = MIXTURES.slow;
+    const later = target.map((_, i) => target[Math.max(0, i - 13)]);
+    const { snrDb, aheadS } = mapOf('slow', { lead: later, target, rateHz })[0][0];
+    expect(aheadS).toBeCloseTo(-0.13, 2);
+    expect(snrDb).toBeGreaterThan(40);
+  });
+
   test('without derivative and smoothing nothing is lost', () => {
     const { target, rateHz } = MIXTURES.slow;
     expect(mapOf('slow', { lead: target, target, rateHz })[0][0].snrDb).toBeGreaterThan(55);

@@ -3,6 +3,7 @@ import {
   clockText,
   readTypedTime,
   type TimeFrame,
+  timeColumn,
   timeOfDay,
   typedTimeFault,
   typedTimeHelp,
@@ -17,6 +18,15 @@ const UNDATED: TimeFrame = { durationS: 3600, startOfDayS: null };
 
 const study = (atS: number) => ({ kind: 'study', atS });
 const clock = (atS: number) => ({ kind: 'clock', atS });
+
+describe('a column of times', () => {
+  it('has as many decimals as the time that needs most, 3 at most', () => {
+    const times = [60, 61.5, 3600];
+    expect(times.map(timeColumn(times))).toEqual(['0:01:00.0', '0:01:01.5', '1:00:00.0']);
+    expect([60, 61].map(timeColumn([60, 61]))).toEqual(['0:01:00', '0:01:01']);
+    expect(timeColumn([1 / 3])(1 / 3)).toBe('0:00:00.333');
+  });
+});
 
 describe('a time typed from the start', () => {
   it.each([

@@ -7,6 +7,8 @@ import { CHART_WIDTH, timeScale, valueScale } from './chart-scale';
 const TOP = 24;
 const BOTTOM = 244;
 const HEIGHT = BOTTOM + 24;
+/** Room above and below, so that methods that differ by hundredths look alike. */
+const LEAST_ROOM_CPM = 0.6;
 
 /** One epoch's frequency by one method, as a mark of the method's own shape. */
 type MarkOf = (x: number, y: number) => string;
@@ -53,9 +55,11 @@ function spanOf({ parts }: OpinionsEvidence): readonly [Seconds, Seconds] {
 /** The dominant frequency of every kept epoch by each method, over time. */
 export function DfTracks({ value }: { readonly value: OpinionsEvidence }) {
   const scale = timeScale(...spanOf(value));
-  const all = value.epochs.flatMap((epoch) => METHODS.map(({ of }) => of(epoch)));
+  const all = value.epochs
+    .flatMap((epoch) => METHODS.map(({ of }) => of(epoch)))
+    .filter((one) => one !== null);
   const values = valueScale(
-    all.filter((one) => one !== null),
+    all.flatMap((cpm) => [cpm - LEAST_ROOM_CPM, cpm + LEAST_ROOM_CPM]),
     6,
   );
   const y = (cpm: Cpm): number =>

@@ -27,7 +27,7 @@ interface HeatMapProps {
 }
 
 /** Index of the value nearest to another. */
-export function nearest(values: readonly number[], value: number): number {
+function nearest(values: readonly number[], value: number): number {
   let best = 0;
   values.forEach((one, k) => {
     if (Math.abs(one - value) < Math.abs(values[best] - value)) best = k;

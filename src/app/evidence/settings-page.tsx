@@ -24,7 +24,6 @@ import {
   scoreText,
   settingText,
   stretchWords,
-  windowText,
 } from './settings-map-words';
 
 type Work =
@@ -85,6 +84,8 @@ export function SettingsPage() {
             <OrganPart key="slow" title="Slow wave" map={map.slow} {...{ noisy, settings }} />
             <OrganPart key="heart" title="Heartbeat" map={map.heart} {...{ noisy, settings }} />
           </div>
+          <Numbers title="Slow wave" map={map.slow} noisy={noisy} />
+          <Numbers title="Heartbeat" map={map.heart} noisy={noisy} />
         </div>
       ) : null}
     </>
@@ -158,7 +159,6 @@ function MapPart({ title, map, noisy, settings }: OrganPartProps & { readonly ma
         </p>
       ) : null}
       <p className="small quiet">{stretchWords(map)}</p>
-      <Numbers {...{ title, map, scores }} />
     </>
   );
 }
@@ -244,28 +244,24 @@ function Bars({ map, scores }: { readonly map: OrganMap; readonly scores: MapSco
   );
 }
 
-interface NumbersProps {
-  readonly title: string;
-  readonly map: OrganMap;
-  readonly scores: MapScores;
-}
-
-/** The map as a table, made when it is asked for. */
-function Numbers({ title, map, scores }: NumbersProps) {
+/** A map as a table, made when it is asked for. */
+function Numbers({ title, map, noisy }: Omit<OrganPartProps, 'settings'>) {
   const [open, setOpen] = useState(false);
+  if (map.kind === 'no-map') return null;
+  const scores = noisy ? map.noisy : map.recorded;
   return (
     <details onToggle={(event) => setOpen(event.currentTarget.open)}>
-      <summary>All figures of this map</summary>
+      <summary>{title}: all figures of the map</summary>
       {open ? (
         <div className="map-numbers">
           <table>
-            <caption>{title}: score in dB by order and window</caption>
+            <caption>{title}: score in dB by order and window in ms</caption>
             <thead>
               <tr>
                 <th scope="col">order</th>
                 {map.windowsMs.map((windowMs) => (
                   <th key={windowMs} scope="col">
-                    {windowText(windowMs)}
+                    {windowMs}
                   </th>
                 ))}
               </tr>

@@ -17,12 +17,18 @@ const signed = (value: number, decimals: number): string =>
 export const pairName = ({ firstName, secondName }: LeadPair): string =>
   `${firstName} and ${secondName}`;
 
+/** Said of a range where it stands alone; in a line that says it once, nothing. */
+const BY_CHANCE = '95 % by chance ';
+
 /** Coupling of a phase in words: "73 % (95 % by chance 41–99)". */
-export function couplingWords({ coupling, couplingRange }: PairInPhase): string {
+export function couplingWords(
+  { coupling, couplingRange }: PairInPhase,
+  ranges = BY_CHANCE,
+): string {
   switch (coupling.kind) {
     case 'number': {
       const range = couplingRange?.map((one) => one.toFixed(0)).join('–');
-      return `${coupling.value.toFixed(0)} %${range === undefined ? '' : ` (95 % by chance ${range})`}`;
+      return `${coupling.value.toFixed(0)} %${range === undefined ? '' : ` (${ranges}${range})`}`;
     }
     case 'count':
       return `${coupling.count} of ${coupling.of} ${coupling.what}`;
@@ -32,11 +38,10 @@ export function couplingWords({ coupling, couplingRange }: PairInPhase): string 
 }
 
 /** Which lead is earlier and by how much, with its range; a range that holds 0 names no order. */
-export function lagWords(pair: LeadPair, lag: LagFound): string {
+export function lagWords(pair: LeadPair, lag: LagFound, ranges = BY_CHANCE): string {
   if (lag.kind === 'withheld') return `no lag: ${lag.reason}`;
   const { lagS, lowS, highS } = lag;
-  const range = (low: number, high: number) =>
-    `(95 % by chance ${signed(low, 1)} to ${signed(high, 1)})`;
+  const range = (low: number, high: number) => `(${ranges}${signed(low, 1)} to ${signed(high, 1)})`;
   if (lowS <= 0 && highS >= 0)
     return `neither earlier, lag ${signed(lagS, 1)} s ${range(lowS, highS)}`;
   return lagS > 0
@@ -51,7 +56,7 @@ export const coherenceWords = (lag: LagFound): string =>
     : `${(Math.floor(100 * lag.coherence) / 100).toFixed(2)} (noise under ${lag.level.toFixed(2)})`;
 
 const phaseWords = (pair: Compared, phase: PairInPhase): string =>
-  `${phase.name}: coupled ${couplingWords(phase)}; ${lagWords(pair, phase.lag)}.`;
+  `${phase.name}: coupled ${couplingWords(phase, '')}; ${lagWords(pair, phase.lag, '')}.`;
 
 /** Meals are on the page only, unless there is nothing else. */
 const phasesOf = ({ phases }: Compared): readonly PairInPhase[] => {
@@ -68,7 +73,8 @@ export function leadsLines({ leadCount, pairs }: LeadsEvidence): readonly Eviden
     name: pairName(pair),
     words: phasesOf(pair)
       .map((phase) => phaseWords(pair, phase))
-      .join(' '),
+      .join(' ')
+      .concat(' Ranges are 95 % by chance.'),
     mark: pair.mark,
   }));
   const more = compared.length - lines.length;
