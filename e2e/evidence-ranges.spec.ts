@@ -24,7 +24,7 @@ test.afterEach(() => expectNoTroubles(page));
 
 /** The ends of the first range in some words. */
 function endsOf(text: string | null): readonly [number, number] {
-  const found = /(−?[\d.]+)(?:–| to )(−?[\d.]+)/.exec(words(text));
+  const found = /(−?[\d.]+)(?:–| to |…)(−?[\d.]+)/.exec(words(text));
   if (!found) throw new Error(`no range in: ${text}`);
   const [low, high] = found.slice(1).map((end) => Number(end.replace('−', '-')));
   return [low, high];

@@ -94,6 +94,12 @@ export function createPipeline(): Pipeline {
     if (!current) throw new Error('no study is open in the worker');
     return current;
   };
+  /** What evidence stood on last: its parts are asked for one after the other, and the doubts are the same for all. */
+  let stoodOn: {
+    readonly from: Pick<EvidenceInputs, 'computed'>;
+    readonly settledIds: string;
+    readonly open: readonly Doubt[];
+  } | null = null;
   /** The figures' inputs and the doubts that are open beside them. */
   async function evidenceInputs(
     inputs: ReviewInputs,
@@ -101,8 +107,13 @@ export function createPipeline(): Pipeline {
     job: Job,
   ): Promise<EvidenceInputs> {
     const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
+    const settledIds = settled.map(({ id }) => id).join(' ');
+    if (stoodOn && stoodOn.from.computed === from.computed && stoodOn.settledIds === settledIds)
+      return { ...from, study: study(), open: stoodOn.open };
     const { openDoubts } = await import('./pipeline-doubts');
-    return { ...from, study: study(), open: await openDoubts(from, settled, job) };
+    const open = await openDoubts(from, settled, job);
+    stoodOn = { from, settledIds, open };
+    return { ...from, study: study(), open };
   }
   return {
     async open(ticket, file, fileName, reading, job) {

@@ -1,11 +1,12 @@
 import { useStore } from 'zustand';
 import { byWords } from '../recording/evidence/limits-words';
+import { rangeWords } from '../recording/evidence/range-words';
 import {
   type FigureRanges,
   type RangesEvidence,
   rangesOfFigure,
 } from '../recording/evidence/ranges';
-import { exactWords, rangeWords, ratioWords } from '../recording/evidence/ranges-words';
+import { exactWords, ratioWords } from '../recording/evidence/ranges-words';
 import type { FigureDefinition } from '../recording/figure-catalogue';
 import { useApp, useSession } from './app-context';
 

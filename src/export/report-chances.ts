@@ -1,5 +1,5 @@
+import { rangeWords } from '../recording/evidence/range-words';
 import type { RangesEvidence } from '../recording/evidence/ranges';
-import { rangeWords } from '../recording/evidence/ranges-words';
 import { FIGURES } from '../recording/figure-catalogue';
 import type { FindingsColumn, FindingsTable } from './report-findings';
 

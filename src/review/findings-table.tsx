@@ -1,6 +1,6 @@
 import type { Range } from '../numeric/chance-range';
+import { rangeWords } from '../recording/evidence/range-words';
 import { type RangesEvidence, rangeOfChange, rangesOfFigure } from '../recording/evidence/ranges';
-import { rangeWords } from '../recording/evidence/ranges-words';
 import type { FigureValue } from '../recording/figure';
 import type { FigureDefinition, Organ } from '../recording/figure-catalogue';
 import { FIGURES } from '../recording/figure-catalogue';
@@ -300,9 +300,8 @@ function FigureCell({ words, range, said, about, onOpen }: FigureCellProps) {
         <span className="figure-large">{words.large}</span>
         {range === null ? null : (
           <span className={`figure-small figure-range${range.stale ? ' stale' : ''}`}>
-            <span className="unseen">, </span>
-            {range.words}
-            <span className="unseen"> by chance</span>
+            <span aria-hidden="true">{range.words.replace(' to ', '…')}</span>
+            <span className="unseen">, {range.words} by chance</span>
           </span>
         )}
         {small.length > 0 ? <span className="figure-small">{small.join('; ')}</span> : null}

@@ -1,5 +1,7 @@
 import { useState } from 'react';
+import type { Range } from '../../numeric/chance-range';
 import { byWords } from '../../recording/evidence/limits-words';
+import { rangeWords } from '../../recording/evidence/range-words';
 import {
   type ChangeRange,
   type FigureRanges,
@@ -7,7 +9,7 @@ import {
   type RangesEvidence,
   rangesOfFigure,
 } from '../../recording/evidence/ranges';
-import { exactWords, rangeWords, ratioWords } from '../../recording/evidence/ranges-words';
+import { exactWords, ratioWords } from '../../recording/evidence/ranges-words';
 import { FIGURES, type FigureDefinition, type Organ } from '../../recording/figure-catalogue';
 import { figureWords } from '../../recording/figure-words';
 import { useAnalysis } from '../app-context';
@@ -114,6 +116,12 @@ function PhaseTable({ phase, value }: PhaseTableProps) {
   );
 }
 
+/** A range whose ends are printed alike is no range. */
+const apartWords = (range: Range, decimals: number): string =>
+  range.low.toFixed(decimals) === range.high.toFixed(decimals)
+    ? 'unchanged'
+    : rangeWords(range, decimals);
+
 interface RangeRowProps {
   readonly figure: FigureDefinition;
   readonly ranges: FigureRanges;
@@ -132,11 +140,11 @@ function RangeRow({ figure, ranges: { chance, doubts, limits }, phase }: RangeRo
       <td>{figureWords(printed, figure).large}</td>
       <td>{chance ? rangeWords(chance, decimals) : '—'}</td>
       <td>
-        {doubts ? rangeWords(doubts, decimals) : '—'}
+        {doubts ? apartWords(doubts, decimals) : '—'}
         {doubts ? <span className="figure-small">{exactWords(doubts)}</span> : null}
       </td>
       <td>
-        {limits ? rangeWords(limits, decimals) : '—'}
+        {limits ? apartWords(limits, decimals) : '—'}
         {limits ? <span className="figure-small">{byWords(limits, decimals)}</span> : null}
       </td>
     </tr>

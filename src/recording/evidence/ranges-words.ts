@@ -1,15 +1,8 @@
 import type { Range } from '../../numeric/chance-range';
 import { FIGURES, type FigureDefinition } from '../figure-catalogue';
 import type { EvidenceLine } from './evidence-line';
+import { rangeWords } from './range-words';
 import type { ChangeRange, DoubtsRange, RangesEvidence } from './ranges';
-
-const minus = (text: string): string => text.replace(/^-(?=0(\.0*)?$)/, '').replace('-', '−');
-
-/** "2.71–2.99"; "−0.20 to 0.41" where one end is below 0. */
-export function rangeWords({ low, high }: Range, decimals: number): string {
-  const [from, to] = [low, high].map((value) => minus(value.toFixed(decimals)));
-  return `${from}${low < 0 ? ' to ' : '–'}${to}`;
-}
 
 /** A change in dB as one of the ratio of powers: "× 0.9–2.4"; a dash of any other. */
 export const ratioWords = ({ ratio }: ChangeRange): string =>
