@@ -1,10 +1,9 @@
 import { detectInSteps } from '../src/heart/detect';
 import {
   addAverage,
-  type BeatStretch,
   type LeadAverage,
   leadAverage,
-  withoutBeats,
+  withoutOwnBeats,
 } from '../src/heart/heart-leftover';
 import {
   type BeatScore,
@@ -17,109 +16,34 @@ import { createRandom } from '../src/numeric/random';
 import { median } from '../src/numeric/statistics';
 import { BEAT_CLASSES } from '../src/recording/beat';
 import type { NotPlanted, PlantedBeats, PlantedHeart } from '../src/recording/evidence/planted';
-import { type Lead, leadChannels, leadKey } from '../src/recording/lead';
+import { leadKey } from '../src/recording/lead';
 import { phasesOrWhole } from '../src/recording/phase';
-import type { Interval } from '../src/recording/span';
+import { type Interval, isWithin } from '../src/recording/span';
 import { loadRoutes, type Routes } from '../src/separate/routes';
-import { createSeparation } from '../src/separate/separation';
 import { heartStretches, overStretches } from '../src/trust/stretches';
 import { TICKS_PER_SAMPLE } from '../src/units/ticks';
-import { inTurns, type Job } from './job';
-import { leadSamples } from './lead-pass';
+import { type Job, withRests } from './job';
 import type { EvidenceInputs } from './pipeline-evidence';
+import {
+  ownTimes,
+  type ReadStretch,
+  readStretches,
+  routedTogether,
+} from './pipeline-planted-stretches';
 import { leadChannel } from './pipeline-signals';
 
 /** Times of the planted beats: the same each time. */
 const SEED = 20_260_503;
 /** Parts of the study's own height that are planted. */
 const SHARES = [1, 0.25] as const;
-/** Read to each side of a stretch, so that no filter feels the ends of what is read. */
-const MARGIN_S = 10;
 /** Beats of class N, in the stretches looked at, that an average needs. */
 const FEWEST_BEATS = 20;
 const NORMAL = BEAT_CLASSES.indexOf('N');
 const PICTURE_S = 10;
-const PIECE_SAMPLES = 16_384;
 /** Half of the stretch in which the height of an average is read, from trough to crest. */
 const QRS_HALF_S = 0.08;
 
-/** A stretch of the heart lead as it was read: its first sample and the samples, with its beats. */
-interface ReadStretch extends BeatStretch {
-  readonly within: Interval;
-  readonly firstSample: number;
-}
-
 const none = (reason: string): NotPlanted => ({ kind: 'not-planted', reason });
-
-/** The stretches of the heart lead, read from the file with a margin to each side. */
-async function readStretches(
-  from: EvidenceInputs,
-  lead: Lead,
-  stretches: readonly Interval[],
-  job: Job,
-): Promise<readonly ReadStretch[]> {
-  const { study, inputs, recording, heart } = from;
-  const { rateHz, sampleCount } = leadChannel(recording, lead);
-  const decimation = heart?.decimation ?? 1;
-  const channels = leadChannels(lead);
-  const read: ReadStretch[] = [];
-  for (const within of stretches) {
-    const first = Math.max(0, Math.floor((within.fromS - MARGIN_S) * rateHz));
-    const firstSample = first - (first % decimation);
-    const end = Math.min(sampleCount, Math.ceil((within.toS + MARGIN_S) * rateHz));
-    const whole = end - ((end - firstSample) % decimation);
-    const parts: Float64Array[] = [];
-    for (const channel of channels)
-      parts.push(await study.source.read(channel, firstSample, whole));
-    const samples = leadSamples(lead, (channel) => parts[channels.indexOf(channel)]);
-    const places: number[] = [];
-    const classes: number[] = [];
-    inputs.beats.ticks.forEach((tick, k) => {
-      const place = tick / TICKS_PER_SAMPLE - firstSample;
-      if (place < 0 || place >= samples.length) return;
-      places.push(place);
-      classes.push(inputs.beats.classes[k]);
-    });
-    read.push({ within, firstSample, samples, places, classes });
-    await job.breathe();
-  }
-  return read;
-}
-
-/** The stretches with something in them, through the heart's route, one after the other in one signal. */
-async function routedTogether(
-  from: EvidenceInputs,
-  rateHz: number,
-  stretches: readonly Float64Array[],
-  routes: Routes,
-  job: Job,
-) {
-  const parts: Float32Array[] = [];
-  for (const samples of stretches) {
-    const separation = createSeparation({
-      lead: from.heart?.lead ?? '',
-      rateHz,
-      sampleCount: samples.length,
-      settings: from.inputs.settings,
-      routes,
-      wants: { slow: false, heart: true },
-    });
-    for (let i = 0; i < samples.length; i += PIECE_SAMPLES) {
-      separation.push(samples.subarray(i, i + PIECE_SAMPLES));
-      await job.breathe();
-    }
-    const { heart } = separation.finish();
-    if (heart) parts.push(heart.heartbeat);
-  }
-  const whole = new Float32Array(parts.reduce((sum, part) => sum + part.length, 0));
-  let at = 0;
-  const starts = parts.map((part) => {
-    whole.set(part, at);
-    at += part.length;
-    return at - part.length;
-  });
-  return { whole, starts };
-}
 
 /** What is planted in and how it is taken. */
 interface HeartCheck {
@@ -137,13 +61,16 @@ interface HeartCheck {
 async function foundIn(check: HeartCheck, share: number, job: Job) {
   const { from, read, leftovers, average, planted, rateHz, routes } = check;
   const decimation = from.heart?.decimation ?? 1;
-  const with_ = leftovers.map((leftover, k) => {
+  const filled: Float64Array[] = [];
+  for (const [k, leftover] of leftovers.entries()) {
     const samples = leftover.slice();
-    for (const timeS of planted[k])
+    for (const timeS of planted[k]) {
       addAverage(samples, average, timeS * rateHz - read[k].firstSample, share);
-    return samples;
-  });
-  const { whole, starts } = await routedTogether(from, rateHz, with_, routes, job);
+      await job.breathe();
+    }
+    filled.push(samples);
+  }
+  const { whole, starts } = await routedTogether(from, rateHz, filled, routes, job);
   const outHz = rateHz / decimation;
   const excluded = read.flatMap(({ within, firstSample, samples }, k): Interval[] => {
     const shiftS = starts[k] / outHz - firstSample / rateHz;
@@ -157,15 +84,14 @@ async function foundIn(check: HeartCheck, share: number, job: Job) {
     const before = { fromS: starts[k] / outHz, toS: within.fromS + shiftS };
     return [before, ...inside, { fromS: within.toS + shiftS, toS: endS }];
   });
-  const { beats } = await inTurns(
+  const { beats } = await withRests(
     detectInSteps({
       heartbeat: whole,
       rateHz: outHz,
       ticksPerSample: TICKS_PER_SAMPLE * decimation,
       excluded: excluded.filter(({ fromS, toS }) => toS > fromS),
     }),
-    { breathe: () => job.breathe(), progress: () => undefined },
-    '',
+    job,
   );
   const times = read.map(({ firstSample, samples }, k) => {
     const shift = firstSample - starts[k] * decimation;
@@ -177,9 +103,6 @@ async function foundIn(check: HeartCheck, share: number, job: Job) {
   });
   return { times, whole, starts, outHz };
 }
-
-const ownTimes = ({ places, firstSample }: ReadStretch, rateHz: number): readonly number[] =>
-  places.map((place) => (place + firstSample) / rateHz);
 
 function beatsOf(share: number, scores: readonly BeatScore[]): PlantedBeats {
   const over = (value: (one: BeatScore) => number | null) => overStretches(scores.map(value));
@@ -222,7 +145,7 @@ function heightOf({ samples, centre }: LeadAverage, rateHz: number): number {
 }
 
 /** Averages of the classes, and the usual interval between beats; null where the normal ones are too few. */
-function averagesOf(read: readonly ReadStretch[], rateHz: number) {
+async function averagesOf(read: readonly ReadStretch[], rateHz: number, job: Job) {
   const normal = read.reduce(
     (sum, { classes }) => sum + classes.filter((one) => one === NORMAL).length,
     0,
@@ -234,10 +157,11 @@ function averagesOf(read: readonly ReadStretch[], rateHz: number) {
       .map((stretch) => usualInterval(ownTimes(stretch, rateHz))),
   );
   const averages = new Map<number, LeadAverage>();
-  BEAT_CLASSES.forEach((name, beatClass) => {
-    const average = name === 'Q' ? null : leadAverage(read, beatClass, rateHz, rrS);
+  for (const [beatClass, name] of BEAT_CLASSES.entries()) {
+    if (name === 'Q') continue;
+    const average = await withRests(leadAverage(read, beatClass, rateHz, rrS), job);
     if (average) averages.set(beatClass, average);
-  });
+  }
   const average = averages.get(NORMAL);
   return average ? { averages, average, rrS } : null;
 }
@@ -256,17 +180,16 @@ export async function plantedHeart(
   if (stretches.length === 0) return none('No minute of the study lies in a phase.');
   const { rateHz } = leadChannel(recording, lead);
   const read = await readStretches(from, lead, stretches, job);
-  const found = averagesOf(read, rateHz);
+  const found = await averagesOf(read, rateHz, job);
   if (!found)
     return none(`Fewer than ${FEWEST_BEATS} normal beats stand in the stretches looked at.`);
   const { averages, average, rrS } = found;
   const random = createRandom(SEED);
-  const planted = read.map(({ within }) => plantedTimes(within.fromS, within.toS, rrS, random));
+  const known = read.map(({ within }) => plantedTimes(within.fromS, within.toS, rrS, random));
+  const planted = known.map((times) => times.filter((timeS) => !isWithin(timeS, from.blocked)));
   const leftovers: Float64Array[] = [];
-  for (const stretch of read) {
-    leftovers.push(withoutBeats(stretch, averages, rateHz));
-    await job.breathe();
-  }
+  for (const stretch of read)
+    leftovers.push(await withRests(withoutOwnBeats(stretch, averages, rateHz), job));
   const routes = await loadRoutes([inputs.settings.heartRoute]);
   const check = { from, read, leftovers, average, planted, rateHz, routes };
   const results: PlantedBeats[] = [];
@@ -290,7 +213,7 @@ export async function plantedHeart(
     stretchS: median(stretches.map(({ fromS, toS }) => toS - fromS)),
     ownUv: heightOf(average, rateHz),
     averaged: average.count,
-    rmssdMs: median(planted.map(rmssdOfTimes)),
+    rmssdMs: median(known.map(rmssdOfTimes)),
     meanRrMs: 1000 * rrS,
     beats: results,
     picture,

@@ -33,18 +33,23 @@ const PICTURE_STEP_S = 0.5;
 const PICTURE_CPM = 10;
 
 /** Median height of the study's own wave, its leftover's power taken off; of its highest peaks where it has no rhythm. */
-export function ownHeight(check: SlowCheck): Pick<PlantedSlow, 'ownUv' | 'ownFrom'> | null {
+export async function ownHeight(
+  check: SlowCheck,
+  job: Job,
+): Promise<Pick<PlantedSlow, 'ownUv' | 'ownFrom'> | null> {
   const { epochs, lead, leftover } = check;
   const own = lobePower(check, lead.slow.recorded);
   const rest = lobePower(check, leftover.lead);
   const kept = epochs.filter((one) => one.kept && one.dfCpm !== null);
   const rhythmic = kept.filter(hasRhythm);
   const ownFrom = rhythmic.length > 0 ? 'rhythm' : 'peaks';
-  const heights = some(ownFrom === 'rhythm' ? rhythmic : kept, MOST_EPOCHS).map((epoch) => {
+  const heights: number[] = [];
+  for (const epoch of some(ownFrom === 'rhythm' ? rhythmic : kept, MOST_EPOCHS)) {
     const cpm = epoch.dfCpm ?? Number.NaN;
     const beside = ownFrom === 'rhythm' ? rest(epoch, cpm).power : 0;
-    return Math.sqrt(2 * Math.max(0, own(epoch, cpm).power - beside));
-  });
+    heights.push(Math.sqrt(2 * Math.max(0, own(epoch, cpm).power - beside)));
+    await job.breathe();
+  }
   const ownUv = heights.length > 0 ? median(heights) : 0;
   return ownUv > 0 ? { ownUv, ownFrom } : null;
 }
@@ -55,16 +60,24 @@ function countsOf({ spoiled }: SlowCheck, drawn: SeparatedSlow): Uint8Array {
   return keptSamples(drawn.slowWave, drawn.rateHz, lost);
 }
 
-function epochScores(check: SlowCheck, planted: Planted, uv: number, epochs: readonly Epoch[]) {
+async function epochScores(
+  check: SlowCheck,
+  planted: Planted,
+  uv: number,
+  epochs: readonly Epoch[],
+  job: Job,
+): Promise<readonly PlantedEpoch[]> {
   const alone = lobePower(check, planted.unit);
   const { rhythmBands } = check.lead.settings;
-  return epochs
-    .filter(({ kept }) => kept)
-    .map((epoch): PlantedEpoch => {
-      const cpm = planted.cpmAt((epoch.fromS + epoch.toS) / 2);
-      const dpDb = 10 * log10(uv * uv * alone(epoch, cpm).highest);
-      return plantedEpoch(epoch, planted.cpmAt, dpDb, rhythmBands);
-    });
+  const scores: PlantedEpoch[] = [];
+  for (const epoch of epochs) {
+    if (!epoch.kept) continue;
+    const cpm = planted.cpmAt((epoch.fromS + epoch.toS) / 2);
+    const dpDb = 10 * log10(uv * uv * alone(epoch, cpm).highest);
+    scores.push(plantedEpoch(epoch, planted.cpmAt, dpDb, rhythmBands));
+    await job.breathe();
+  }
+  return scores;
 }
 
 const meanOf = (values: readonly (number | null)[]): number | null => {
@@ -108,24 +121,25 @@ function pictureOf(
   };
 }
 
-function scoresOf(check: SlowCheck, planted: Planted, uv: number, found: Judged): PlantedWave {
+async function scoresOf(
+  check: SlowCheck,
+  planted: Planted,
+  uv: number,
+  found: Judged,
+  job: Job,
+): Promise<PlantedWave> {
   const { plan } = check;
   const { drawn, judged } = found;
-  const epochs = epochScores(check, planted, uv, judged.epochs);
+  const epochs = await epochScores(check, planted, uv, judged.epochs, job);
   const counts = countsOf(check, drawn);
   const wave = planted.unit.map((value) => uv * value);
-  const scores = plan.stretches.map(({ fromS, toS }) =>
-    waveScore(
-      drawn.slowWave,
-      wave,
-      {
-        counts,
-        from: Math.ceil(fromS * drawn.rateHz),
-        to: Math.min(drawn.slowWave.length, Math.floor(toS * drawn.rateHz)),
-      },
-      drawn.rateHz,
-    ),
-  );
+  const scores: (WaveScore | null)[] = [];
+  for (const { fromS, toS } of plan.stretches) {
+    const from = Math.ceil(fromS * drawn.rateHz);
+    const to = Math.min(drawn.slowWave.length, Math.floor(toS * drawn.rateHz));
+    scores.push(waveScore(drawn.slowWave, wave, { counts, from, to }, drawn.rateHz));
+    await job.breathe();
+  }
   const byStretch = plan.stretches.map((stretch) =>
     epochs.filter(({ centreS }) => isWithin(centreS, [stretch])),
   );
@@ -157,7 +171,7 @@ export async function plantedWaves(
   for (const planted of all)
     for (const uv of heightsUv) {
       const found = await drawAndJudge(check, plus(check.leftover.change, planted.unit, uv), job);
-      waves.push(scoresOf(check, planted, uv, found));
+      waves.push(await scoresOf(check, planted, uv, found, job));
       job.progress('Planting known waves', waves.length / (all.length * heightsUv.length));
       await job.breathe();
     }
@@ -169,7 +183,7 @@ export async function plantedSlow(check: SlowCheck, job: Job): Promise<PlantedSl
   const none = (reason: string): NotPlanted => ({ kind: 'not-planted', reason });
   const { leftover, plan, lead } = check;
   if (plan.phases.length === 0) return none('No phase holds an epoch of four minutes.');
-  const own = ownHeight(check);
+  const own = await ownHeight(check, job);
   if (!own) return none('No epoch of the lead is kept.');
   const alone = await drawAndJudge(check, leftover.change, job);
   const epochs = alone.judged.epochs.filter(({ kept }) => kept).length;

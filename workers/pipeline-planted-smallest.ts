@@ -42,7 +42,11 @@ export async function smallestWaves(
   for (const planted of plantedRates(check)) {
     if (planted.rate.kind === 'drift') continue;
     const { cpm } = planted.rate;
-    const powers = some(kept, MOST_EPOCHS).map((epoch) => noise(epoch, cpm).power);
+    const powers: number[] = [];
+    for (const epoch of some(kept, MOST_EPOCHS)) {
+      powers.push(noise(epoch, cpm).power);
+      await job.breathe();
+    }
     const firstUv = Math.sqrt(2 * median(powers));
     const full = await drawAndJudge(check, plus(check.leftover.change, planted.unit, firstUv), job);
     const { uv, mostShare } = await smallestWave(firstUv, async (size) => {

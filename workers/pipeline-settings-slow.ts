@@ -102,7 +102,7 @@ export async function slowMap(work: MapWork): Promise<OrganMap | NoMap> {
   const stretch = mapStretch('slow', lead, study.source, spans);
   if (!stretch) return noMap(NO_STRETCH);
   const check = await slowCheckOf({ ...from, study, open: [] }, job);
-  const height = check && ownHeight(check);
+  const height = check && (await ownHeight(check, job));
   if (!check || !height) return noMap('No epoch of the reported lead is kept.');
   const own = { cpm: usualCpm(check), uv: height.ownUv };
   await job.breathe();

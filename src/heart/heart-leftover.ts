@@ -1,3 +1,4 @@
+import { removeLine } from '../numeric/detrend';
 import { cos } from '../numeric/elementary';
 import { addShifted } from './sub-sample';
 
@@ -10,6 +11,10 @@ const END_S = 0.04;
 const MOST_BEATS = 600;
 /** A beat is taken out at no more than so many times the average's size. */
 const LARGEST = 2;
+/** Half of the stretch in which a beat's size is read. */
+const QRS_HALF_S = 0.08;
+/** Beats looked at between turns for others. */
+const BEATS_A_TURN = 40;
 /** Samples that interpolation needs beside a row. */
 const SIDE = 10;
 
@@ -52,13 +57,13 @@ function rowAt(
   return row.map((value, i) => value - before - slope * (i - (end - 1) / 2));
 }
 
-/** Average of the beats of one class over some stretches; null where none can be read. */
-export function leadAverage(
+/** Average of the beats of one class over some stretches, with a rest now and then; null where none can be read. */
+export function* leadAverage(
   stretches: readonly BeatStretch[],
   beatClass: number,
   rateHz: number,
   usualRrS: number,
-): LeadAverage | null {
+): Generator<void, LeadAverage | null> {
   const reach = (side: 'before' | 'after') =>
     Math.round(Math.min(REACH_S[side], REACH_SHARE[side] * usualRrS) * rateHz);
   const centre = reach('before');
@@ -78,6 +83,7 @@ export function leadAverage(
     if (!row) continue;
     for (let i = 0; i < length; i += 1) sum[i] += row[i];
     count += 1;
+    if (count % BEATS_A_TURN === 0) yield;
   }
   if (count === 0) return null;
   const samples = sum.map((value, i) => {
@@ -102,37 +108,46 @@ export function addAverage(
     if (first + i >= 0 && first + i < samples.length) samples[first + i] += size * shifted[i];
 }
 
-/** How large a beat is beside its average, by least squares; 1 where it reaches beyond the stretch. */
+/**
+ * How large a beat is beside its average, by least squares over the QRS complex, lines taken off both, so that a beat close
+ * behind it has no say; 1 where it reaches beyond the stretch.
+ */
 function sizeOf(
-  stretch: BeatStretch,
+  { samples }: BeatStretch,
   place: number,
-  { samples, centre }: LeadAverage,
-  end: number,
-) {
-  const row = rowAt(stretch, place, centre, samples.length, end);
-  if (!row) return 1;
-  let [own, both] = [0, 0];
+  { samples: average, centre }: LeadAverage,
+  half: number,
+): number {
+  const from = place - half;
+  if (from < SIDE || from + 2 * half + 1 + SIDE > samples.length) return 1;
+  const beat = new Float64Array(2 * half + 1);
+  addShifted(beat, samples, from);
+  if (beat.some(Number.isNaN)) return 1;
+  const row = removeLine(beat);
+  const own = removeLine(average.slice(centre - half, centre + half + 1));
+  let [power, both] = [0, 0];
   for (let i = 0; i < row.length; i += 1) {
-    own += samples[i] ** 2;
-    both += samples[i] * row[i];
+    power += own[i] * own[i];
+    both += own[i] * row[i];
   }
-  return own > 0 ? Math.max(0, Math.min(LARGEST, both / own)) : 0;
+  return power > 0 ? Math.max(0, Math.min(LARGEST, both / power)) : 0;
 }
 
 /**
  * A stretch of the heart lead less its beats: each less the average of its class in its own size (the local average beat).
  * What an average leaves of a beat stays, so the places of beats are left out where anything is scored.
  */
-export function withoutBeats(
+export function* withoutOwnBeats(
   stretch: BeatStretch,
   averages: ReadonlyMap<number, LeadAverage>,
   rateHz: number,
-): Float64Array {
-  const end = Math.max(1, Math.round(END_S * rateHz));
+): Generator<void, Float64Array> {
+  const half = Math.round(QRS_HALF_S * rateHz);
   const out = stretch.samples.slice();
-  stretch.places.forEach((place, k) => {
+  for (const [k, place] of stretch.places.entries()) {
     const average = averages.get(stretch.classes[k]);
-    if (average) addAverage(out, average, place, -sizeOf(stretch, place, average, end));
-  });
+    if (average) addAverage(out, average, place, -sizeOf(stretch, place, average, half));
+    if (k % BEATS_A_TURN === BEATS_A_TURN - 1) yield;
+  }
   return out;
 }

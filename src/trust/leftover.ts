@@ -4,7 +4,14 @@ import type { Random } from '../numeric/random';
 import type { Epoch } from '../recording/rhythm';
 import type { Hertz } from '../units/rate';
 import type { Seconds } from '../units/time';
-import { type LineFrame, lineFrame, narrowOf, noiseAbout, turnedBack } from './line-band';
+import {
+  type LineFrame,
+  lineFrame,
+  narrowOf,
+  noiseAbout,
+  type Placed,
+  turnedBack,
+} from './line-band';
 import { harmonicOf, type LineTrack, lineTracks, trackCpm } from './line-tracks';
 import {
   backgroundSlope,
@@ -23,6 +30,8 @@ const FEWEST_WINDOWS = 3;
 const REST_CPM = 0.25;
 /** The level of a refill is told again so often. */
 const LEVEL_STEP_S: Seconds = 60;
+/** Windows looked at between turns for others. */
+const WINDOWS_A_TURN = 16;
 
 export interface LeftoverInputs {
   /** The lead at the slow wave's rate in uV, NaN in gaps. */
@@ -49,11 +58,15 @@ export interface Leftover {
 }
 
 /** Mean over the windows of a line's stretch of its density near a multiple over the level there; null of too few. */
-function standing(windows: LevelWindows, track: LineTrack, density: (atS: Seconds) => number) {
+function* standing(
+  windows: LevelWindows,
+  track: LineTrack,
+  density: (atS: Seconds) => number,
+): Generator<void, { readonly mean: number; readonly count: number }> {
   const { centresS, logs, binCpm } = windows;
   let [sum, count] = [0, 0];
-  centresS.forEach((atS, w) => {
-    if (atS < track.fromS || atS > track.toS) return;
+  for (const [w, atS] of centresS.entries()) {
+    if (atS < track.fromS || atS > track.toS) continue;
     const cpm = trackCpm(track, atS);
     const level = density(atS);
     const first = Math.max(1, Math.round((cpm - REST_CPM) / binCpm));
@@ -62,7 +75,8 @@ function standing(windows: LevelWindows, track: LineTrack, density: (atS: Second
     for (let k = first; k <= last; k += 1) power += exp(logs[w][k]);
     sum += power / (last - first + 1) / level;
     count += 1;
-  });
+    if (w % WINDOWS_A_TURN === WINDOWS_A_TURN - 1) yield;
+  }
   return { mean: sum / count, count };
 }
 
@@ -83,23 +97,34 @@ interface Line {
   readonly frame: LineFrame;
 }
 
+/** Lines among the samples of a lead; those that do not touch it are left out. */
+function* placed(tracks: readonly LineTrack[], place: Placed): Generator<void, Line[]> {
+  const lines: Line[] = [];
+  for (const track of tracks) {
+    const frame = yield* lineFrame(track, place);
+    if (frame) lines.push({ track, frame });
+  }
+  return lines;
+}
+
 /** The harmonics of lines that stand out of the lead without the lines, or were flagged. */
-function standingHarmonics(
+function* standingHarmonics(
   windows: LevelWindows,
   { tracks, doubled }: ReturnType<typeof lineTracks>,
-): readonly LineTrack[] {
+): Generator<void, readonly LineTrack[]> {
   const slope = backgroundSlope(windows, tracks);
-  return tracks.flatMap((track, t) =>
-    HARMONICS.flatMap((multiple) => {
+  const found: LineTrack[] = [];
+  for (const [t, track] of tracks.entries())
+    for (const multiple of HARMONICS) {
       const harmonic = harmonicOf(track, multiple);
-      if (trackCpm(harmonic, track.fromS) > HIGHEST_CPM) return [];
-      if (multiple === 2 && doubled[t]) return [harmonic];
+      if (trackCpm(harmonic, track.fromS) > HIGHEST_CPM) continue;
       const level = (atS: Seconds) =>
         neighbourLevel(windows, harmonic, tracks, slope, atS)?.density ?? Number.NaN;
-      const { mean, count } = standing(windows, harmonic, level);
-      return count >= FEWEST_WINDOWS && mean > STANDS_OUT ? [harmonic] : [];
-    }),
-  );
+      const { mean, count } = yield* standing(windows, harmonic, level);
+      const standsOut = count >= FEWEST_WINDOWS && mean > STANDS_OUT;
+      if (standsOut || (multiple === 2 && doubled[t])) found.push(harmonic);
+    }
+  return found;
 }
 
 /**
@@ -154,7 +179,7 @@ function* restOf(
     const others = tracks.filter((one) => one !== track);
     const level = (atS: Seconds) =>
       neighbourLevel(empty, track, others, slope, atS)?.density ?? Number.NaN;
-    const found = standing(windows, track, level);
+    const found = yield* standing(windows, track, level);
     if (!(found.count > 0 && Number.isFinite(found.mean))) continue;
     sum += found.mean * found.count;
     count += found.count;
@@ -175,16 +200,12 @@ export function* leftoverOf(from: LeftoverInputs): Generator<number, Leftover> {
   const { length } = recorded;
   const found = lineTracks(epochs);
   const bare = whole.slice();
-  const placed = (tracks: readonly LineTrack[]): readonly Line[] =>
-    tracks.flatMap((track) => {
-      const frame = lineFrame(track, { rateHz, margin, length });
-      return frame ? [{ track, frame }] : [];
-    });
-  const lines = [...placed(found.tracks)];
+  const lines = yield* quietly(placed(found.tracks, { rateHz, margin, length }), 0.1);
   for (const { frame } of lines) yield* quietly(takeOut(bare, frame, from), 0.2);
   const inside = bare.subarray(margin, margin + length);
   const first = yield* quietly(levelWindows(inside, kept, rateHz), 0.4);
-  const harmonics = placed(standingHarmonics(first, found));
+  const standing = yield* quietly(standingHarmonics(first, found), 0.4);
+  const harmonics = yield* quietly(placed(standing, { rateHz, margin, length }), 0.45);
   for (const { frame } of harmonics) yield* quietly(takeOut(bare, frame, from), 0.5);
   lines.push(...harmonics);
   const windows =

@@ -17,8 +17,10 @@ const POINT_S = 2;
 const NOISE_POINTS = 256;
 /** Below this share of the line's own frequency a background rises no further. */
 const LOWEST_SHARE = 0.2;
-/** Points between turns for others. */
-const TURN = 400;
+/** Points, and samples, between turns for others. */
+const TURN = 200;
+const SAMPLES_A_TURN = 4000;
+const BINS_A_TURN = 8;
 
 /** Where a track lies among the samples of a lead that begins `margin` samples before time 0. */
 export interface Placed {
@@ -73,7 +75,10 @@ function weightsOf(first: number, count: number, length: number, fade: number): 
 }
 
 /** The frame of a line among the samples of a lead; null where it does not touch the lead. */
-export function lineFrame(track: LineTrack, { rateHz, margin, length }: Placed): LineFrame | null {
+export function* lineFrame(
+  track: LineTrack,
+  { rateHz, margin, length }: Placed,
+): Generator<void, LineFrame | null> {
   const first = Math.max(0, Math.floor(track.fromS * rateHz));
   const end = Math.min(length, Math.ceil(track.toS * rateHz));
   if (end <= first) return null;
@@ -91,6 +96,7 @@ export function lineFrame(track: LineTrack, { rateHz, margin, length }: Placed):
     re[i] = cos(angle);
     im[i] = sin(angle);
     cycles += cpmToHz(trackCpm(track, (first + i - before) / rateHz)) / rateHz;
+    if (i % SAMPLES_A_TURN === SAMPLES_A_TURN - 1) yield;
   }
   const weight = weightsOf(first, count, length, Math.round(FADE_S * rateHz));
   return { first, count, before, re, im, weight, every, points };
@@ -148,20 +154,24 @@ interface NoiseShape {
 }
 const shapes = new Map<string, NoiseShape>();
 
-function noiseShape(rateHz: Hertz, pointS: Seconds): NoiseShape {
+function* noiseShape(rateHz: Hertz, pointS: Seconds): Generator<void, NoiseShape> {
   const key = `${rateHz} ${pointS}`;
   const known = shapes.get(key);
   if (known) return known;
   const taps = lineTaps(rateHz);
+  const taken = new Float64Array(NOISE_POINTS);
+  for (let bin = 0; bin <= NOISE_POINTS / 2; bin += 1) {
+    const share = firResponse(taps, bin / (NOISE_POINTS * pointS), rateHz).re;
+    taken[bin] = Math.min(1, Math.max(0, share));
+    taken[(NOISE_POINTS - bin) % NOISE_POINTS] = taken[bin];
+    if (bin % BINS_A_TURN === BINS_A_TURN - 1) yield;
+  }
   const byBin = (value: (bin: number) => number) =>
     Float64Array.from({ length: NOISE_POINTS }, (_, m) =>
       value(m < NOISE_POINTS / 2 ? m : m - NOISE_POINTS),
     );
   const made = {
-    taken: byBin((bin) => {
-      const hz = Math.abs(bin) / (NOISE_POINTS * pointS);
-      return Math.min(1, Math.max(0, firResponse(taps, hz, rateHz).re));
-    }),
+    taken,
     cos: byBin((bin) => cos((2 * Math.PI * bin) / NOISE_POINTS)),
     sin: byBin((bin) => sin((2 * Math.PI * bin) / NOISE_POINTS)),
   };
@@ -213,7 +223,8 @@ export function* noiseAbout(
 ): Generator<void, Narrow> {
   const { points, every } = frame;
   const pointS = every / rateHz;
-  const taps = refillTaps(noiseShape(rateHz, pointS), background, pointS);
+  const taps = refillTaps(yield* noiseShape(rateHz, pointS), background, pointS);
+  yield;
   const total = points + 2 * taps.half;
   const white = Float64Array.from({ length: 2 * total }, () => random.gaussian());
   const [re, im] = [new Float64Array(points), new Float64Array(points)];

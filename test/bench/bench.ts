@@ -14,6 +14,7 @@ import type { Bench, Measured, Part } from './measured';
 import { opening } from './opening';
 import { pageSize } from './page-size';
 import { pipeline } from './pipeline';
+import { planted } from './planted/planted';
 import { ranges } from './ranges/ranges';
 import { separation } from './separation';
 import { markdownTable, plainTable } from './table';
@@ -30,6 +31,7 @@ const PARTS: Readonly<Record<string, Part>> = {
   heartbeats,
   doubts,
   'broken-files': brokenFiles,
+  planted,
   ranges,
 };
 

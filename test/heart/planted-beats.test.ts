@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import { addAverage, leadAverage, withoutBeats } from '../../src/heart/heart-leftover';
+import { addAverage, leadAverage, withoutOwnBeats } from '../../src/heart/heart-leftover';
 import { beatScore, plantedTimes, rmssdOfTimes } from '../../src/heart/planted-beats';
+import { atOnce } from '../../src/numeric/in-steps';
 import { createRandom } from '../../src/numeric/random';
 
 const RATE_HZ = 250;
@@ -34,9 +35,9 @@ const stretch = {
 };
 
 describe('the leftover of a heart lead', () => {
-  const average = leadAverage([stretch], 0, RATE_HZ, 0.9);
+  const average = atOnce(leadAverage([stretch], 0, RATE_HZ, 0.9));
   if (!average) throw new Error('there is an average');
-  const left = withoutBeats(stretch, new Map([[0, average]]), RATE_HZ);
+  const left = atOnce(withoutOwnBeats(stretch, new Map([[0, average]]), RATE_HZ));
   const rmsNear = (x: Float64Array, halfS: number) => {
     let [squares, count] = [0, 0];
     for (const timeS of timesS)
@@ -50,6 +51,18 @@ describe('the leftover of a heart lead', () => {
   it('holds the lead’s noise at the places of beats of several sizes, and little else', () => {
     expect(rmsNear(lead, 0.03)).toBeGreaterThan(80);
     expect(rmsNear(left, 0.03)).toBeLessThan(8);
+  });
+
+  it('takes a beat out whole that another of another shape follows closely', () => {
+    const wideUv = (s: number) => 400 * Math.exp(-((s / 0.05) ** 2));
+    const place = timesS[50];
+    const after = place + 0.45;
+    const close = {
+      ...stretch,
+      samples: lead.map((value, i) => value + wideUv(i / RATE_HZ - after)),
+    };
+    const out = atOnce(withoutOwnBeats(close, new Map([[0, average]]), RATE_HZ));
+    expect(Math.abs(out[Math.round(place * RATE_HZ)])).toBeLessThan(60);
   });
 
   it('has an average of the beats’ own height', () => {

@@ -141,6 +141,8 @@ describe('the stretches of a check', () => {
     const { stretches } = checkPlan(phases, 2400);
     expect(stretches).toHaveLength(8);
     for (const { fromS, toS } of stretches) expect(toS - fromS).toBeGreaterThanOrEqual(240);
+    expect(stretches.map(({ fromS }) => fromS)).toEqual([0, 270, 540, 810, 1260, 1545, 1830, 2115]);
+    expect(stretches.at(-1)?.toS).toBe(2400);
     expect(checkPlan(phases, 2400).phases.map(({ name }) => name)).toEqual(['fasting', 'fed']);
   });
 
