@@ -125,6 +125,28 @@ describe('results without identity', () => {
       expect(`${name} ${textOf(bytes).match(NAMES)}`).toBe(`${name} null`);
   });
 
+  it('leave out the site’s reference values, whose words may say where it was', () => {
+    const range = {
+      figure: 'rmssd_ms',
+      phase: 'fasting' as const,
+      minMinutes: 0.5,
+      maxMinutes: 60,
+      posture: '',
+      meal: '',
+      low: 11,
+      high: 99,
+      population: 'our patients',
+      source: 'Clinic of Ward 7',
+    };
+    const input = { ...named(), siteReference: { ranges: [range] } };
+    const holds = (one: ResultInput) =>
+      [...files(one)]
+        .filter(([, bytes]) => /Clinic of|our patients/.test(textOf(bytes)))
+        .map(([name]) => name);
+    expect(holds(input)).toEqual(['findings.json', 'report.html']);
+    expect(holds(resultsWithoutIdentity(input))).toEqual([]);
+  });
+
   it('have X where the header names the person, and begin on the first day of 1985', async () => {
     const source = await openRecording(
       new Blob([bare.get('separated.edf') ?? new Uint8Array()]),
