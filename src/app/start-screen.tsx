@@ -42,7 +42,8 @@ function OpenWays({ parts }: { readonly parts: CommandParts }) {
       <section aria-labelledby="start-open">
         <h3 id="start-open">Open a recording</h3>
         <p>
-          EDF, EDF+, BDF, BDF+ or delimited text. Choose a file, or drop one anywhere on this page. {PRIVACY}
+          EDF, EDF+, BDF, BDF+ or delimited text. Choose a file, or drop one anywhere on this page.{' '}
+          {PRIVACY}
         </p>
         <p className="button-row">
           <button type="button" className="button strong" onClick={page.chooseFile}>
