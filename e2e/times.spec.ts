@@ -150,7 +150,9 @@ test('a span is typed, changed and taken away without the mouse, each as one ste
   await expect(from).toBeFocused();
   await expect(from).toHaveValue('');
   await settled(page);
-  await dialog.getByRole('button', { name: 'Change the span 0:00:30.0 to 0:00:45.5' }).press('Enter');
+  await dialog
+    .getByRole('button', { name: 'Change the span 0:00:30.0 to 0:00:45.5' })
+    .press('Enter');
   await expect(from).toBeFocused();
   await expect(from).toHaveValue('0:00:30');
   await to.fill('0:50');
@@ -165,7 +167,9 @@ test('a span is typed, changed and taken away without the mouse, each as one ste
   await press(page, 'Control+z');
   await backAndForth(before);
   await openDialog('Shift+Z', 'Spoiled spans');
-  await dialog.getByRole('button', { name: 'Remove the span 0:00:30.0 to 0:00:45.5' }).press('Enter');
+  await dialog
+    .getByRole('button', { name: 'Remove the span 0:00:30.0 to 0:00:45.5' })
+    .press('Enter');
   await expect(dialog.getByText('Nothing is excluded.')).toBeVisible();
   await page.keyboard.press('Escape');
   await settled(page);
