@@ -27,7 +27,7 @@ export async function editBeats(page: Page): Promise<readonly number[]> {
     await page.waitForFunction(settled, null, { polling: POLL_MS });
     times.push(await page.evaluate(() => window.watched.editFiguresMs - window.watched.editMs));
   }
-  const last = (await page.locator('#findings [role="status"]').textContent()) ?? '';
+  const last = (await page.locator('#findings .findings-head [role="status"]').textContent()) ?? '';
   if (!last.includes(`edit ${EDITS + NOT_COUNTED}`))
     throw new Error(`the figures are ${last}, not of edit ${EDITS + NOT_COUNTED}`);
   return times.slice(NOT_COUNTED);
