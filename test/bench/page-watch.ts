@@ -66,7 +66,8 @@ export function watchPage(): void {
     document.documentElement.dataset.idle === 'true' && !there('[aria-busy="true"]');
   /** The edit that the figures in sight belong to, in the words of Findings; what is being computed anew is none. */
   const figuresOf = () => {
-    const said = document.querySelector('#findings .findings-head [role="status"]')?.textContent ?? '';
+    const said =
+      document.querySelector('#findings .findings-head [role="status"]')?.textContent ?? '';
     return /edit \d+/.exec(said)?.[0] ?? figuresBefore;
   };
   let figuresBefore = '';
