@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { SPAN_CAUSES, SPAN_TARGETS, type Span } from '../recording/span';
 import { goToStretch } from '../review/findings-go';
+import { HeadRow } from '../review/head-row';
 import type { Edit, Session } from '../session/document';
 import { addSpan, changeSpan, removeSpans } from '../session/edits';
 import { timeColumn, timeText } from '../units/typed-time';
@@ -179,15 +180,7 @@ function SpanTable({ spans, changing, onChange, onRemove, onGo }: SpanTableProps
   return (
     <table className="acts-table">
       <caption>Spoiled spans</caption>
-      <thead>
-        <tr>
-          {['from', 'to', 'excluded for', 'cause', 'lead', 'note', 'origin', 'acts'].map((name) => (
-            <th scope="col" key={name}>
-              {name}
-            </th>
-          ))}
-        </tr>
-      </thead>
+      <HeadRow names={['from', 'to', 'excluded for', 'cause', 'lead', 'note', 'origin', 'acts']} />
       <tbody>
         {spans.map((span) => {
           const place = `${timeOf(span.fromS)} to ${timeOf(span.toS)}`;

@@ -3,6 +3,7 @@ import { beatAt } from '../recording/beat';
 import { ticksToSeconds } from '../units/ticks';
 import { formatClock } from '../units/time';
 import { beatsInView, rrMsAt } from './beats-in-view';
+import { HeadRow } from './head-row';
 import { goTo } from './navigate';
 import { openBeats, selectedTicks } from './open-beats';
 import type { PaneStores } from './row-view';
@@ -78,15 +79,7 @@ export function EpochRows({ stores }: { readonly stores: PaneStores }) {
       <caption>
         Epochs from {formatClock(fromS)} to {formatClock(toS)}
       </caption>
-      <thead>
-        <tr>
-          {['lead', 'phase', 'from', 'to', 'DF, cpm', 'DP, dB', 'rhythm', 'flags'].map((name) => (
-            <th scope="col" key={name}>
-              {name}
-            </th>
-          ))}
-        </tr>
-      </thead>
+      <HeadRow names={['lead', 'phase', 'from', 'to', 'DF, cpm', 'DP, dB', 'rhythm', 'flags']} />
       <tbody>
         {epochs.map((one) => (
           <tr key={`${one.lead} ${one.fromS}`}>
@@ -111,15 +104,7 @@ export function SpanRows({ stores, commands }: TwinProps) {
   return (
     <table>
       <caption>Spoiled spans</caption>
-      <thead>
-        <tr>
-          {['from', 'to', 'excluded for', 'cause', 'lead', 'origin', 'place'].map((name) => (
-            <th scope="col" key={name}>
-              {name}
-            </th>
-          ))}
-        </tr>
-      </thead>
+      <HeadRow names={['from', 'to', 'excluded for', 'cause', 'lead', 'origin', 'place']} />
       <tbody>
         {[...spans]
           .sort((a, b) => a.fromS - b.fromS)

@@ -1,24 +1,13 @@
 import { useStore } from 'zustand';
 import { leadKey } from '../recording/lead';
 import { formatClock } from '../units/time';
+import { HeadRow } from './head-row';
 import { goTo } from './navigate';
 import { ratesByMinute } from './rate-by-minute';
 import type { PaneStores } from './row-view';
 
 const MOST_ROWS = 500;
 const NONE = '–';
-
-const headings = (names: readonly string[]) => (
-  <thead>
-    <tr>
-      {names.map((name) => (
-        <th scope="col" key={name}>
-          {name}
-        </th>
-      ))}
-    </tr>
-  </thead>
-);
 
 const RHYTHMS = ['brady', 'normo', 'tachy', 'none', 'mixed', 'undecided'] as const;
 
@@ -42,16 +31,18 @@ export function PhaseRows({ stores }: { readonly stores: PaneStores }) {
   return (
     <table>
       <caption>Phases</caption>
-      {headings([
-        'phase',
-        'from',
-        'to',
-        'minutes',
-        'kept, stomach',
-        'kept, heart',
-        'epochs by rhythm',
-        'place',
-      ])}
+      <HeadRow
+        names={[
+          'phase',
+          'from',
+          'to',
+          'minutes',
+          'kept, stomach',
+          'kept, heart',
+          'epochs by rhythm',
+          'place',
+        ]}
+      />
       <tbody>
         {phases.map((phase) => {
           const found = findings?.phases.find(({ name }) => name === phase.name);
@@ -95,7 +86,9 @@ export function RateRows({ stores }: { readonly stores: PaneStores }) {
         Heart rate and breathing from {formatClock(window.fromS)} to {formatClock(window.toS)}, a
         minute
       </caption>
-      {headings(['minute from', 'NN intervals', 'heart rate', 'lowest', 'highest', 'breathing'])}
+      <HeadRow
+        names={['minute from', 'NN intervals', 'heart rate', 'lowest', 'highest', 'breathing']}
+      />
       <tbody>
         {rows.map((row) => (
           <tr key={row.fromS}>

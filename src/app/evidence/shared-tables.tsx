@@ -1,4 +1,5 @@
 import type { SharedMedian, SharedPhase, SharedWindow } from '../../recording/evidence/together';
+import { HeadRow } from '../../review/head-row';
 import { formatClock } from '../../units/time';
 import { written } from './chart-scale';
 
@@ -16,17 +17,7 @@ export function PhaseTable({ phases }: { readonly phases: readonly SharedPhase[]
   return (
     <table className="data-table">
       <caption>Medians by phase</caption>
-      <thead>
-        <tr>
-          <th scope="col">phase</th>
-          <th scope="col">windows of both</th>
-          {COLUMNS.map((name) => (
-            <th scope="col" key={name}>
-              {name}
-            </th>
-          ))}
-        </tr>
-      </thead>
+      <HeadRow names={['phase', 'windows of both', ...COLUMNS]} />
       <tbody>
         {phases.map((phase) => (
           <tr key={phase.name}>
@@ -50,17 +41,7 @@ export function PhaseTable({ phases }: { readonly phases: readonly SharedPhase[]
 export function WindowTable({ windows }: { readonly windows: readonly SharedWindow[] }) {
   return (
     <table className="data-table">
-      <thead>
-        <tr>
-          <th scope="col">centre</th>
-          <th scope="col">rhythm</th>
-          {COLUMNS.map((name) => (
-            <th scope="col" key={name}>
-              {name}
-            </th>
-          ))}
-        </tr>
-      </thead>
+      <HeadRow names={['centre', 'rhythm', ...COLUMNS]} />
       <tbody>
         {windows.map((one) => (
           <tr key={`${one.phase} ${one.fromS}`}>
