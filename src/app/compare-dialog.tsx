@@ -13,6 +13,7 @@ import { FiguresCompared } from './compare-figures';
 import { Agreement, OtherDifferences, Places } from './compare-tables';
 import { comparisonOf, goToDifference } from './comparing';
 import { Dialog } from './dialog';
+import { FileInput } from './file-input';
 import { shownKey } from './own-keys';
 import type { Compared } from './shell-store';
 import { FailureWords } from './small-dialogs';
@@ -81,17 +82,11 @@ export function CompareDialog({ parts }: { readonly parts: CommandParts }) {
         </>
       }
     >
-      <input
-        ref={input}
-        type="file"
+      <FileInput
+        input={input}
+        label="Session to compare with"
         accept=".json"
-        hidden
-        aria-label="Session to compare with"
-        onChange={(event) => {
-          const [file] = event.target.files ?? [];
-          if (file) void asWork(take(file));
-          event.target.value = '';
-        }}
+        onFile={(file) => void asWork(take(file))}
       />
       {failure ? <FailureWords failure={failure} /> : null}
       {shown ? <Comparison session={session} other={shown} parts={parts} /> : <Explained />}

@@ -7,6 +7,7 @@ import { browserStores } from '../session/browser-stores';
 import { faultList, readSiteReference } from '../session/read-site-reference';
 import { useApp, useShell, useView } from './app-context';
 import { Dialog } from './dialog';
+import { FileInput } from './file-input';
 import { dropReference, keepReference } from './site-reference-kept';
 
 /** What was wrong with a file that was chosen: its name and what to mend, line by line. */
@@ -56,17 +57,11 @@ export function SiteReferenceDialog() {
         </>
       }
     >
-      <input
-        ref={input}
-        type="file"
-        hidden
-        aria-label="File with reference values"
+      <FileInput
+        input={input}
+        label="File with reference values"
         accept=".csv,.txt,.tsv"
-        onChange={({ target }) => {
-          const file = target.files?.[0];
-          target.value = '';
-          if (file) void asWork(choose(file));
-        }}
+        onFile={(file) => void asWork(choose(file))}
       />
       {refused ? <RefusedWords refused={refused} kept={kept !== null} /> : null}
       {kept ? <Ranges kept={kept} /> : <Explained />}
