@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import type { ResultInput } from '../report/result-files';
 import { asWork } from '../review/idle';
 import { safeCode } from '../session/file-name';
@@ -39,7 +39,10 @@ export function ResultsDialog() {
   const code = useSession((state) => state.session?.state.study.code) ?? '';
   const [bare, setBare] = useState(false);
   const { input, making } = useResults();
-  const files = input && making ? making.filesOf(input, bare) : null;
+  const files = useMemo(
+    () => (input && making ? making.filesOf(input, bare) : null),
+    [input, making, bare],
+  );
   const close = () => shell.getState().closeDialog();
   const before = bare ? '' : `${safeCode(code)}-`;
   const all = bare ? 'results-without-identity.zip' : `${safeCode(code)}-results.zip`;
