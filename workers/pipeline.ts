@@ -96,7 +96,7 @@ export function createPipeline(): Pipeline {
   };
   /** What evidence stood on last: its parts are asked for one after the other, and the doubts are the same for all. */
   let stoodOn: {
-    readonly from: Pick<EvidenceInputs, 'computed'>;
+    readonly computed: EvidenceInputs['computed'];
     readonly settledIds: string;
     readonly open: readonly Doubt[];
   } | null = null;
@@ -108,11 +108,11 @@ export function createPipeline(): Pipeline {
   ): Promise<EvidenceInputs> {
     const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
     const settledIds = settled.map(({ id }) => id).join(' ');
-    if (stoodOn && stoodOn.from.computed === from.computed && stoodOn.settledIds === settledIds)
+    if (stoodOn && stoodOn.computed === from.computed && stoodOn.settledIds === settledIds)
       return { ...from, study: study(), open: stoodOn.open };
     const { openDoubts } = await import('./pipeline-doubts');
     const open = await openDoubts(from, settled, job);
-    stoodOn = { from, settledIds, open };
+    stoodOn = { computed: from.computed, settledIds, open };
     return { ...from, study: study(), open };
   }
   return {
@@ -126,6 +126,7 @@ export function createPipeline(): Pipeline {
     accept(ticket) {
       if (opened?.ticket !== ticket) return false;
       current = opened.study;
+      stoodOn = null;
       opened = null;
       return true;
     },
@@ -137,11 +138,7 @@ export function createPipeline(): Pipeline {
       const { doubtList } = await import('./pipeline-doubts');
       return doubtList(from, settled, job);
     },
-    async openDoubts(inputs, settled, job) {
-      const from = await inLine(study(), job, (one) => doubtInputs(one, inputs, job));
-      const { openDoubts } = await import('./pipeline-doubts');
-      return openDoubts(from, settled, job);
-    },
+    openDoubts: async (inputs, settled, job) => (await evidenceInputs(inputs, settled, job)).open,
     async evidence(inputs, settled, part, job) {
       const from = await evidenceInputs(inputs, settled, job);
       const { evidenceReply } = await import('./pipeline-evidence');
