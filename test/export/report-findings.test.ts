@@ -10,6 +10,7 @@ import { FIGURES } from '../../src/recording/figure-catalogue';
 import type { FigureChange, Findings, PhaseFindings } from '../../src/recording/findings';
 import { EMPTY_PROTOCOL } from '../../src/recording/protocol';
 import { rangesOf, type SiteRange } from '../../src/recording/site-reference';
+import { INVENTED_RANGE } from '../recording/invented-range';
 
 const mainTables = (all: Findings) => mainTablesWith(all, () => []);
 const otherTables = (all: Findings) => otherTablesWith(all, () => []);
@@ -190,18 +191,7 @@ describe('the figures as the report prints them', () => {
 });
 
 describe('the ranges that a site keeps', () => {
-  const range: SiteRange = {
-    figure: 'df_median_cpm',
-    phase: 'fasting',
-    minMinutes: 25,
-    maxMinutes: 35,
-    posture: '',
-    meal: '',
-    low: 2.1,
-    high: 4.3,
-    population: 'invented people',
-    source: 'invented <b>paper</b>',
-  };
+  const range: SiteRange = { ...INVENTED_RANGE, source: 'invented <b>paper</b>' };
   const reference = { ranges: [range, { ...range, phase: 'fed' as const, high: null }] };
   const values = [numberFigure(3), numberFigure(3.1), withheld('too short')];
   const [table] = mainTablesWith(

@@ -8,19 +8,7 @@ import {
   rangeWords,
   type SiteRange,
 } from '../../src/recording/site-reference';
-
-const RANGE: SiteRange = {
-  figure: 'df_median_cpm',
-  phase: 'fasting',
-  minMinutes: 25,
-  maxMinutes: 35,
-  posture: '',
-  meal: '',
-  low: 2.1,
-  high: 4.3,
-  population: 'invented people',
-  source: 'invented paper',
-};
+import { INVENTED_RANGE } from './invented-range';
 
 interface Case {
   readonly range?: Partial<SiteRange>;
@@ -43,7 +31,7 @@ function stands({ range, phase = 'fasting', minutes = 30, value, protocol }: Cas
     adequacyHeart: 'enough',
     figures: { df_median_cpm: value ?? numberFigure(3), rmssd_ms: numberFigure(30) },
   };
-  const reference = { ranges: [{ ...RANGE, ...range }] };
+  const reference = { ranges: [{ ...INVENTED_RANGE, ...range }] };
   const found = rangesOf(reference, { ...EMPTY_PROTOCOL, ...protocol });
   expect(found('rmssd_ms', part)).toEqual([]);
   return found('df_median_cpm', part).length === 1;
@@ -90,7 +78,7 @@ describe('a range of the site stands beside a figure', () => {
 
 describe('a range in words', () => {
   it('may be open on one side, and says nothing of normal or abnormal', () => {
-    expect(rangeWords(RANGE)).toBe('2.1–4.3');
+    expect(rangeWords(INVENTED_RANGE)).toBe('2.1–4.3');
     expect(rangeWords({ low: 61, high: null })).toBe('at least 61');
     expect(rangeWords({ low: null, high: 30 })).toBe('at most 30');
     expect(rangeWords({ low: -1.5, high: 2 })).toBe('−1.5–2');
@@ -98,7 +86,13 @@ describe('a range in words', () => {
 
   it('says what it holds for and where it comes from', () => {
     expect(
-      rangeGrounds({ ...RANGE, posture: 'lying', meal: 'soup', minMinutes: 30, maxMinutes: 30 }),
+      rangeGrounds({
+        ...INVENTED_RANGE,
+        posture: 'lying',
+        meal: 'soup',
+        minMinutes: 30,
+        maxMinutes: 30,
+      }),
     ).toBe('fasting of 30 min; lying; meal: soup; invented people; source: invented paper');
   });
 });
